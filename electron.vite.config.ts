@@ -1,0 +1,34 @@
+import react from '@vitejs/plugin-react'
+import { defineConfig } from 'electron-vite'
+
+// The host also runs under plain Node 20 (browser shell, command line), so the main bundle must not use later syntax.
+const node = 'node20.19'
+
+export default defineConfig({
+  main: {
+    build: {
+      target: node,
+      sourcemap: true,
+      rolldownOptions: {
+        input: {
+          app: 'main/electron/app.ts',
+          cli: 'main/cli/cli.ts',
+          start: 'main/cli/start.ts',
+          'worker-entry': 'main/host/worker-entry.ts',
+        },
+        output: { entryFileNames: '[name].js', chunkFileNames: 'chunks/[name]-[hash].js' },
+      },
+    },
+  },
+  preload: {
+    build: {
+      externalizeDeps: false,
+      rolldownOptions: { input: { preload: 'main/preload/preload.ts' }, output: { format: 'cjs', entryFileNames: '[name].cjs' } },
+    },
+  },
+  renderer: {
+    root: 'renderer',
+    plugins: [react()],
+    build: { minify: true, rolldownOptions: { input: 'renderer/index.html' } },
+  },
+})

@@ -1,0 +1,135 @@
+import * as z from 'zod/mini'
+import type { StudyResult } from '../tasks/study-result.ts'
+import { studyChangeSchema } from './study-change.ts'
+import type { StudyDocument } from './study-document.ts'
+
+/** Largest piece of a file that one `upload.append` carries. */
+export const uploadChunkBytes = 1 << 20
+/** Largest single export that is read; a larger one is refused with a word. */
+export const largestUploadBytes = 512 * 2 ** 20
+
+const id = z.string().check(z.regex(/^[0-9a-zA-Z-]{1,64}$/))
+const bytes = z.instanceof(Uint8Array)
+const nothing = z.strictObject({})
+
+/**
+ * Every request a page, a desktop window or the command line can make, with the schema its input is parsed by.
+ * One table of handlers in `main/host/handlers` answers them; IPC and HTTP only carry them.
+ */
+export const requestSchemas = {
+  'program.describe': nothing,
+  'study.read': nothing,
+  'study.change': z.strictObject({ revision: z.int(), change: studyChangeSchema }),
+  'study.undo': z.strictObject({ revision: z.int() }),
+  'study.redo': z.strictObject({ revision: z.int() }),
+  'study.new': nothing,
+  'study.open-demo': nothing,
+  'study.recent': nothing,
+  'study.open-recent': z.strictObject({ studyId: id }),
+  'study.save-copy': nothing,
+  'study.evaluate': z.strictObject({ revision: z.int() }),
+  'upload.begin': z.strictObject({
+    fileName: z.string().check(z.minLength(1), z.maxLength(400)),
+    byteLength: z.int().check(z.nonnegative()),
+  }),
+  'upload.append': z.strictObject({
+    uploadId: id,
+    bytes: bytes.check(z.refine((b) => b.byteLength <= uploadChunkBytes, 'a piece of an upload is at most 1 MiB')),
+  }),
+  'upload.discard': z.strictObject({ uploadId: id }),
+  'runs.import': z.strictObject({ uploadIds: z.array(id).check(z.minLength(1), z.maxLength(500)) }),
+  'work.cancel': z.strictObject({ work: z.enum(['import', 'evaluate']) }),
+  'results.export': z.strictObject({ revision: z.int(), format: z.enum(['csv', 'json', 'svg']) }),
+} as const
+
+export type RequestName = keyof typeof requestSchemas
+export type RequestInput<Name extends RequestName> = z.infer<(typeof requestSchemas)[Name]>
+
+/** The study as a replica holds it. `revision` counts up by one with every change, undo, redo or opened study. */
+export interface StudySnapshot {
+  readonly revision: number
+  readonly document: StudyDocument
+  readonly undo: string | null
+  readonly redo: string | null
+}
+
+/** A file that could not be used, in words a person can act on. */
+export interface RefusedFile {
+  readonly fileName: string
+  /** 1-based; null where no single line is at fault. */
+  readonly line: number | null
+  readonly reason: string
+  /** What to do about it. */
+  readonly remedy: string
+}
+
+export interface ImportAnswer {
+  readonly addedRunIds: readonly string[]
+  readonly refused: readonly RefusedFile[]
+  /** Set when a saved study was among the files and has replaced the one before. */
+  readonly openedStudy: boolean
+  readonly snapshot: StudySnapshot
+}
+
+export interface FileOut {
+  readonly fileName: string
+  readonly mediaType: string
+  readonly bytes: Uint8Array
+}
+
+export interface RecentStudy {
+  readonly studyId: string
+  readonly name: string
+  readonly runs: number
+  /** ISO 8601, UTC. */
+  readonly changedAt: string
+}
+
+export interface RequestAnswers {
+  'program.describe': { readonly name: 'rampfold'; readonly version: string; readonly shell: 'browser' | 'desktop' | 'command-line' }
+  'study.read': StudySnapshot
+  'study.change': StudySnapshot
+  'study.undo': StudySnapshot
+  'study.redo': StudySnapshot
+  'study.new': StudySnapshot
+  'study.open-demo': StudySnapshot
+  'study.recent': { readonly studies: readonly RecentStudy[] }
+  'study.open-recent': StudySnapshot
+  'study.save-copy': FileOut
+  'study.evaluate': { readonly revision: number; readonly result: StudyResult }
+  'upload.begin': { readonly uploadId: string }
+  'upload.append': { readonly receivedBytes: number }
+  'upload.discard': Record<string, never>
+  'runs.import': ImportAnswer
+  'work.cancel': Record<string, never>
+  'results.export': { readonly files: readonly FileOut[] }
+}
+
+/** What the host tells every window without being asked. */
+export type HostEvent =
+  | { readonly kind: 'study-changed'; readonly revision: number }
+  | {
+      readonly kind: 'progress'
+      readonly work: 'import' | 'evaluate'
+      readonly done: number
+      readonly total: number
+      readonly what: string
+    }
+
+/** A way to reach the host; the renderer has one for each shell, tests have their own. */
+export interface HostTransport {
+  /** Rejects with a `KineticsError` the host sent, `Cancelled`, or a plain `Error` when the host cannot be reached. */
+  call<Name extends RequestName>(name: Name, input: RequestInput<Name>): Promise<RequestAnswers[Name]>
+  /** Returns the call that ends the subscription. */
+  subscribe(listener: (event: HostEvent) => void): () => void
+}
+
+/** The one method a desktop window is given; encoded by `wire.ts`, like the body of an HTTP request. */
+export interface DesktopBridge {
+  request(name: string, body: Uint8Array): Promise<Uint8Array>
+  subscribe(listener: (event: Uint8Array) => void): () => void
+}
+
+/** Names shared by preload, IPC gate and HTTP server, so that none is written twice. */
+export const channels = { request: 'rampfold:request', event: 'rampfold:event', bridge: 'rampfold' } as const
+export const httpPaths = { request: '/request/', events: '/events' } as const

@@ -1,0 +1,127 @@
+import * as z from 'zod/mini'
+import { methodIds } from '../isoconversional/result.ts'
+import type { RunInfo, Window } from '../series/run.ts'
+import { signalQuantities } from '../series/signal-quantity.ts'
+import { baselineKinds, type AnalysisSettings } from '../tasks/study-input.ts'
+
+/** Limits that keep a hostile or damaged file from exhausting the machine. */
+export const studyLimits = { runs: 200, levels: 2000, text: 4000, signals: 64, notes: 1000 } as const
+
+const text = z.string().check(z.maxLength(studyLimits.text))
+const finite = z.number().check(z.refine(Number.isFinite, 'must be a finite number'))
+const positive = finite.check(z.positive())
+
+export const windowSchema = z.union([
+  z
+    .object({ kind: z.literal('temperature'), start_K: finite, end_K: finite })
+    .check(z.refine((w) => w.end_K > w.start_K && w.start_K > 0, 'a window ends above its start')),
+  z
+    .object({ kind: z.literal('time'), start_s: finite, end_s: finite })
+    .check(z.refine((w) => w.end_s > w.start_s, 'a window ends after its start')),
+])
+
+const signalInfoSchema = z.object({
+  quantity: z.enum(signalQuantities),
+  unit: z.enum(['kg', '1', 'W', 'W/kg']),
+  label: text,
+  fileUnit: text,
+})
+const evidenceSchema = z.record(text, z.union([text, finite, z.null()]))
+
+export const runInfoSchema = z.object({
+  id: text,
+  label: text,
+  file: z.object({ name: text, sha256: z.string().check(z.regex(/^[0-9a-f]{64}$/)), byteLength: z.int().check(z.nonnegative()) }),
+  columnsKey: z.string().check(z.regex(/^[0-9a-f]{64}$/)),
+  rows: z.int().check(z.positive()),
+  hasTime: z.boolean(),
+  signals: z.array(signalInfoSchema).check(z.minLength(1), z.maxLength(studyLimits.signals)),
+  nominalHeatingRate: z.nullable(
+    z.object({ heatingRate_K_per_s: positive, source: z.enum(['option', 'heading', 'preamble', 'name']), text }),
+  ),
+  initialMass_kg: z.nullable(positive),
+  exothermic: z.nullable(z.enum(['up', 'down'])),
+  metadata: z.array(z.object({ key: text, value: text })).check(z.maxLength(studyLimits.notes)),
+  importNotes: z
+    .array(
+      z.object({
+        code: z.enum([
+          'rows-set-aside',
+          'columns-set-aside',
+          'several-columns-of-one-quantity',
+          'unit-from-values',
+          'heading-missing',
+          'time-missing',
+          'file-left-out',
+        ]),
+        severity: z.enum(['caution', 'note']),
+        message: text,
+        evidence: evidenceSchema,
+      }),
+    )
+    .check(z.maxLength(studyLimits.notes)),
+  importDecisions: z.array(z.object({ step: text, value: text, reason: text })).check(z.maxLength(studyLimits.notes)),
+  use: z.boolean(),
+  window: z.nullable(windowSchema),
+})
+
+export const levelsSchema = z.array(finite.check(z.gt(0), z.lt(1))).check(
+  z.minLength(1),
+  z.maxLength(studyLimits.levels),
+  z.refine((levels) => levels.every((level, i) => i === 0 || level > (levels[i - 1] ?? 0)), 'levels ascend'),
+)
+
+export const settingsSchema = z.object({
+  signal: z.nullable(z.enum(signalQuantities)),
+  levels: levelsSchema,
+  methods: z.nullable(z.array(z.enum(methodIds)).check(z.minLength(1))),
+  window: z.nullable(windowSchema),
+  baseline: z.enum(baselineKinds),
+  meanRange: z.tuple([finite, finite]),
+})
+
+/** The study as saved and as every replica holds it: small plain data; the columns live beside it, named by `columnsKey`. */
+export const studyDocumentSchema = z.object({
+  format: z.literal('rampfold.study/1'),
+  id: z.string().check(z.regex(/^[0-9a-z-]{1,64}$/)),
+  name: text,
+  runs: z.array(runInfoSchema).check(z.maxLength(studyLimits.runs)),
+  /** Notes about files that were left out on request; shown as findings until the study ends. */
+  importNotes: runInfoSchema.shape.importNotes,
+  settings: settingsSchema,
+})
+
+export interface StudyDocument {
+  readonly format: 'rampfold.study/1'
+  readonly id: string
+  readonly name: string
+  readonly runs: readonly RunInfo[]
+  readonly importNotes: RunInfo['importNotes']
+  readonly settings: AnalysisSettings
+}
+
+/** 0.05 to 0.95 in steps of 0.05, as the 2011 recommendations ask for (source `ictac-2011`). */
+export const defaultLevels: readonly number[] = Array.from({ length: 19 }, (_, i) => (i + 1) / 20)
+
+export const defaultSettings: AnalysisSettings = {
+  signal: null,
+  levels: defaultLevels,
+  methods: null,
+  window: null,
+  baseline: 'area-proportional',
+  meanRange: [0.1, 0.9],
+}
+
+export const emptyStudy = (id: string, name = 'Untitled study'): StudyDocument => ({
+  format: 'rampfold.study/1',
+  id,
+  name,
+  runs: [],
+  importNotes: [],
+  settings: defaultSettings,
+})
+
+/** Parses a study read from a disk or a wire; throws the schema's error, which names the field. */
+export const parseStudyDocument = (value: unknown): StudyDocument => studyDocumentSchema.parse(value)
+
+export type { Window }

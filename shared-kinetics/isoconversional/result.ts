@@ -1,0 +1,76 @@
+import type { SeriesAtLevels } from '../series/series-at-levels.ts'
+import type { Column } from '../units/quantity.ts'
+import type { SourceKey } from '../sources.ts'
+
+/** Ids of the methods this version can run, in the order in which they are listed everywhere. */
+export const methodIds = ['friedman', 'ofw', 'kas', 'starink', 'vyazovkin', 'isothermal-integral'] as const
+export type MethodId = (typeof methodIds)[number]
+
+/** Why a level has a number, or why it has none. */
+export const levelStatuses = [
+  'ok',
+  'level-not-reached',
+  'too-few-programmes',
+  'rate-not-positive',
+  'line-not-determined',
+  'minimum-at-bound',
+  'minimum-flat',
+  'several-minima',
+] as const
+export type LevelStatus = (typeof levelStatuses)[number]
+
+export interface MethodInfo {
+  readonly id: MethodId
+  readonly label: string
+  /** Author, year, journal: what is printed beside a result. */
+  readonly sources: readonly SourceKey[]
+  /** Programmes the method is made for. */
+  readonly appliesTo: readonly ('constant-heating-rate' | 'isothermal' | 'general')[]
+  /** `line`: a straight line through the runs at each level; `minimum`: the minimum of Phi(Ea) at each level. */
+  readonly evidence: 'line' | 'minimum'
+}
+
+/** The straight line of one level: y against x = 1/T, one point a run. */
+export interface LevelLine {
+  readonly x_per_K: Column<'1/K'>
+  readonly y: Float64Array
+  /** dy/dx in K, and y at x = 0; NaN where the line is not determined. */
+  readonly slope_K: number
+  readonly intercept: number
+}
+
+/** Phi(Ea) sampled around its minimum at one level, for drawing. */
+export interface LevelPhi {
+  readonly Ea_J_per_mol: Column<'J/mol'>
+  readonly phi: Float64Array
+  readonly phiMinimum: number
+  /** Phi at the ends of the interval; NaN without an interval. */
+  readonly phiThreshold: number
+}
+
+/** Ea against conversion by one method. All columns are as long as the levels; where status is not `ok` the numbers are NaN. */
+export interface IsoconversionalResult {
+  readonly method: MethodId
+  readonly interval: { readonly kind: 'student-t'; readonly level: 0.95; readonly dof: number; readonly pointwise: true }
+  readonly Ea: Column<'J/mol'>
+  /** One standard error of the regression, n - 2 degrees of freedom; NaN with fewer than three distinct programmes. */
+  readonly standardError: Column<'J/mol'>
+  readonly lower95: Column<'J/mol'>
+  readonly upper95: Column<'J/mol'>
+  /** ln[A f(alpha)] with A in 1/s where the method gives it (Friedman's intercept), else NaN. */
+  readonly lnAf: Float64Array
+  readonly lnAfStandardError: Float64Array
+  readonly r2: Float64Array
+  readonly status: readonly LevelStatus[]
+  /** Evidence at each level: one of the two is empty. */
+  readonly lines: readonly LevelLine[]
+  readonly phi: readonly LevelPhi[]
+}
+
+/** Called by long loops; throws `Cancelled` when the work is no longer wanted. */
+export interface TaskContext {
+  readonly checkCancelled: () => void
+  readonly progress: (done: number, total: number) => void
+}
+
+export type IsoconversionalMethod = (series: SeriesAtLevels, context: TaskContext) => IsoconversionalResult

@@ -1,0 +1,109 @@
+import type { LevelStatus, MethodId } from '../isoconversional/result.ts'
+import type { Finding } from '../review/finding.ts'
+import type { Window } from '../series/run.ts'
+import type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
+
+/** A number, or null where it is not to be had. */
+export type Maybe = number | null
+
+/** One run as evaluated. Field names carry their units, since this crosses processes. */
+export interface RunResult {
+  readonly runId: string
+  readonly label: string
+  readonly fileName: string
+  readonly column: string
+  readonly sha256: string
+  readonly signal: SignalQuantity
+  readonly signalUnit: SignalUnit
+  readonly programme: 'constant-heating-rate' | 'isothermal' | 'general'
+  /** Replicates of one programme share this number. */
+  readonly programmeGroup: number
+  readonly nominalHeatingRate_K_per_min: Maybe
+  readonly heatingRate_K_per_min: Maybe
+  readonly heatingRateStandardError_K_per_min: Maybe
+  readonly heatingRateSource: 'measured' | 'option' | 'nominal' | null
+  /** Mean temperature over the window of an isothermal run. */
+  readonly holdTemperature_K: Maybe
+  readonly rows: number
+  readonly initialMass_kg: Maybe
+  /** In temperature for constant heating rates, in time for the rest; the window that was used. */
+  readonly window: Window
+  readonly peak_K: Maybe
+  readonly enthalpy_J_per_g: Maybe
+  /** At each level: where the run stands. null where it does not reach the level. */
+  readonly temperatureAtLevel_K: readonly Maybe[]
+  readonly timeAtLevel_s: readonly Maybe[]
+  readonly reactionRateAtLevel_per_s: readonly Maybe[]
+  readonly signalAtLevel: readonly Maybe[]
+  /** For drawing only: thinned to at most about 1,000 points that keep every local extreme, columns of one length. Whole run, window or not. */
+  readonly curve: {
+    readonly time_s: Float64Array
+    readonly temperature_K: Float64Array
+    /** In `signalUnit`. */
+    readonly signal: Float64Array
+    /** NaN outside the window. */
+    readonly conversion: Float64Array
+    readonly reactionRate_per_s: Float64Array
+    /** The baseline under a heat-flow signal, in `signalUnit`; NaN outside the window, empty for other signals. */
+    readonly baseline: Float64Array
+  }
+}
+
+export interface LineResult {
+  readonly x_per_K: readonly Maybe[]
+  readonly y: readonly Maybe[]
+  readonly slope_K: Maybe
+  readonly intercept: Maybe
+}
+
+export interface PhiResult {
+  readonly Ea_kJ_per_mol: readonly number[]
+  readonly phi: readonly number[]
+  readonly phiMinimum: Maybe
+  readonly phiThreshold: Maybe
+}
+
+/** Ea against conversion by one method: every array as long as `StudyResult.levels`, null where status is not `ok`. */
+export interface ProfileResult {
+  readonly method: MethodId
+  readonly label: string
+  readonly sources: readonly string[]
+  readonly evidence: 'line' | 'minimum'
+  readonly interval: { readonly kind: 'student-t'; readonly level: 0.95; readonly dof: number; readonly pointwise: true }
+  readonly Ea_kJ_per_mol: readonly Maybe[]
+  readonly standardError_kJ_per_mol: readonly Maybe[]
+  readonly lower95_kJ_per_mol: readonly Maybe[]
+  readonly upper95_kJ_per_mol: readonly Maybe[]
+  readonly lnAf_per_s: readonly Maybe[]
+  readonly lnAfStandardError: readonly Maybe[]
+  readonly r2: readonly Maybe[]
+  readonly status: readonly LevelStatus[]
+  /** Indexed by level; empty where the method has the other kind of evidence. `x`/`y` are in the order of `StudyResult.runs`. */
+  readonly lines: readonly LineResult[]
+  readonly phi: readonly PhiResult[]
+  /** Mean of Ea over the levels of `settings.meanRange` that are `ok`, and the spread (max - min) there. */
+  readonly mean: { readonly from: number; readonly to: number; readonly Ea_kJ_per_mol: Maybe; readonly spread_kJ_per_mol: Maybe }
+}
+
+export interface KissingerResult {
+  readonly Ea_kJ_per_mol: number
+  readonly standardError_kJ_per_mol: Maybe
+  readonly lower95_kJ_per_mol: Maybe
+  readonly upper95_kJ_per_mol: Maybe
+  readonly lnA_per_s: number
+  readonly peaks_K: readonly number[]
+}
+
+/** Everything that follows from a study's runs and settings. Derived, never edited. */
+export interface StudyResult {
+  readonly levels: readonly number[]
+  /** The signal that was analysed. */
+  readonly signal: SignalQuantity | null
+  /** Signals present in every used run: what a person may choose from. */
+  readonly signalsToChooseFrom: readonly SignalQuantity[]
+  /** Used runs that could be evaluated, slowest programme first. */
+  readonly runs: readonly RunResult[]
+  readonly profiles: readonly ProfileResult[]
+  readonly kissinger: KissingerResult | null
+  readonly findings: readonly Finding[]
+}
