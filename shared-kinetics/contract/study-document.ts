@@ -1,11 +1,33 @@
 import * as z from 'zod/mini'
-import { methodIds } from '../isoconversional/result.ts'
-import type { RunInfo, Window } from '../series/run.ts'
-import { signalQuantities } from '../series/signal-quantity.ts'
-import { baselineKinds, type AnalysisSettings } from '../tasks/study-input.ts'
+import type { MethodId } from '../isoconversional/result.ts'
+import type { ImportNote, NominalSource, RunInfo, Window } from '../series/run.ts'
+import type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
+import type { AnalysisSettings, BaselineKind } from '../tasks/study-input.ts'
 
 /** Limits that keep a hostile or damaged file from exhausting the machine. */
 export const studyLimits = { runs: 200, levels: 2000, text: 4000, signals: 64, notes: 1000 } as const
+
+/** The members of a union of names as a list; the compiler refuses one that is missing or too many. */
+const namesOf = <Name extends string>(names: Readonly<Record<Name, true>>): readonly Name[] => Object.keys(names) as Name[]
+
+const methodSchema = z.enum(
+  namesOf<MethodId>({ friedman: true, ofw: true, kas: true, starink: true, vyazovkin: true, 'isothermal-integral': true }),
+)
+const signalQuantitySchema = z.enum(namesOf<SignalQuantity>({ mass: true, conversion: true, 'heat-release': true, 'heat-flow': true }))
+const signalUnitSchema = z.enum(namesOf<SignalUnit>({ kg: true, '1': true, W: true, 'W/kg': true }))
+const baselineSchema = z.enum(namesOf<BaselineKind>({ 'area-proportional': true, straight: true }))
+const nominalSourceSchema = z.enum(namesOf<NominalSource>({ option: true, heading: true, preamble: true, name: true }))
+const importNoteCodeSchema = z.enum(
+  namesOf<ImportNote['code']>({
+    'rows-set-aside': true,
+    'columns-set-aside': true,
+    'several-columns-of-one-quantity': true,
+    'unit-from-values': true,
+    'heading-missing': true,
+    'time-missing': true,
+    'file-left-out': true,
+  }),
+)
 
 const text = z.string().check(z.maxLength(studyLimits.text))
 const finite = z.number().check(z.refine(Number.isFinite, 'must be a finite number'))
@@ -21,8 +43,8 @@ export const windowSchema = z.union([
 ])
 
 const signalInfoSchema = z.object({
-  quantity: z.enum(signalQuantities),
-  unit: z.enum(['kg', '1', 'W', 'W/kg']),
+  quantity: signalQuantitySchema,
+  unit: signalUnitSchema,
   label: text,
   fileUnit: text,
 })
@@ -36,24 +58,14 @@ export const runInfoSchema = z.object({
   rows: z.int().check(z.positive()),
   hasTime: z.boolean(),
   signals: z.array(signalInfoSchema).check(z.minLength(1), z.maxLength(studyLimits.signals)),
-  nominalHeatingRate: z.nullable(
-    z.object({ heatingRate_K_per_s: positive, source: z.enum(['option', 'heading', 'preamble', 'name']), text }),
-  ),
+  nominalHeatingRate: z.nullable(z.object({ heatingRate_K_per_s: positive, source: nominalSourceSchema, text })),
   initialMass_kg: z.nullable(positive),
   exothermic: z.nullable(z.enum(['up', 'down'])),
   metadata: z.array(z.object({ key: text, value: text })).check(z.maxLength(studyLimits.notes)),
   importNotes: z
     .array(
       z.object({
-        code: z.enum([
-          'rows-set-aside',
-          'columns-set-aside',
-          'several-columns-of-one-quantity',
-          'unit-from-values',
-          'heading-missing',
-          'time-missing',
-          'file-left-out',
-        ]),
+        code: importNoteCodeSchema,
         severity: z.enum(['caution', 'note']),
         message: text,
         evidence: evidenceSchema,
@@ -72,11 +84,11 @@ export const levelsSchema = z.array(finite.check(z.gt(0), z.lt(1))).check(
 )
 
 export const settingsSchema = z.object({
-  signal: z.nullable(z.enum(signalQuantities)),
+  signal: z.nullable(signalQuantitySchema),
   levels: levelsSchema,
-  methods: z.nullable(z.array(z.enum(methodIds)).check(z.minLength(1))),
+  methods: z.nullable(z.array(methodSchema).check(z.minLength(1))),
   window: z.nullable(windowSchema),
-  baseline: z.enum(baselineKinds),
+  baseline: baselineSchema,
   meanRange: z.tuple([finite, finite]),
 })
 
