@@ -1,0 +1,68 @@
+import { describe, expect, it } from 'vitest'
+import { applyChange, labelOfChange, studyChangeSchema } from './study-change.ts'
+import { emptyStudy, parseStudyDocument } from './study-document.ts'
+import type { RunInfo } from '../series/run.ts'
+
+const run = (id: string): RunInfo => ({
+  id,
+  label: `run ${id}`,
+  file: { name: `${id}.csv`, sha256: '0'.repeat(64), byteLength: 10 },
+  columnsKey: '1'.repeat(64),
+  rows: 3,
+  hasTime: true,
+  signals: [{ quantity: 'mass', unit: 'kg', label: 'Mass (mg)', fileUnit: 'mg' }],
+  nominalHeatingRate: null,
+  initialMass_kg: null,
+  exothermic: null,
+  metadata: [],
+  importNotes: [],
+  importDecisions: [],
+  use: true,
+  window: null,
+})
+const study = applyChange(emptyStudy('s1'), { kind: 'add-runs', runs: [run('a'), run('b')], importNotes: [] })
+
+describe('a change', () => {
+  it('touches the run it names and no other', () => {
+    const after = applyChange(study, { kind: 'use-run', runId: 'b', use: false })
+    expect(after.runs.map((r) => r.use)).toEqual([true, false])
+    expect(after.runs[0]).toBe(study.runs[0])
+  })
+
+  it('that names a run that is gone changes nothing', () => {
+    expect(applyChange(study, { kind: 'remove-run', runId: 'z' })).toEqual(study)
+  })
+
+  it('says in the undo line what it was', () => {
+    expect(labelOfChange(study, { kind: 'set-run-window', runId: 'b', window: null })).toBe('window of run b')
+  })
+
+  it('never touches the study it is applied to', () => {
+    const before = structuredClone(study)
+    applyChange(study, { kind: 'set-levels', levels: [0.5] })
+    expect(study).toEqual(before)
+  })
+
+  it.each([
+    { kind: 'set-levels', levels: [0.5, 0.4] },
+    { kind: 'set-levels', levels: [0, 0.5] },
+    { kind: 'set-levels', levels: [] },
+    { kind: 'set-window', window: { kind: 'temperature', start_K: 500, end_K: 400 } },
+    { kind: 'set-window', window: { kind: 'temperature', start_K: Number.NaN, end_K: 400 } },
+    { kind: 'set-run-heating-rate', runId: 'a', heatingRate_K_per_s: -1 },
+    { kind: 'set-methods', methods: ['no-such-method'] },
+    { kind: 'format-disk' },
+  ])('that makes no sense is refused on arrival: %j', (change) => {
+    expect(studyChangeSchema.safeParse(change).success).toBe(false)
+  })
+})
+
+describe('a study document', () => {
+  it('is read back as it was written', () => {
+    expect(parseStudyDocument(JSON.parse(JSON.stringify(study)))).toEqual(study)
+  })
+
+  it('of another format is refused', () => {
+    expect(() => parseStudyDocument({ ...study, format: 'rampfold.study/9' })).toThrow()
+  })
+})
