@@ -21,7 +21,10 @@ const started = Date.now()
 const bin = (name) => join(root, 'node_modules/.bin', process.platform === 'win32' ? `${name}.cmd` : name)
 const run = (title, command, args, env = {}) => {
   console.log(`\n== ${title} (${Math.round((Date.now() - started) / 1000)} s)`)
-  return spawnSync(command, args, { cwd: root, stdio: 'inherit', env: { ...process.env, ...env }, shell: process.platform === 'win32' }).status === 0
+  return (
+    spawnSync(command, args, { cwd: root, stdio: 'inherit', env: { ...process.env, ...env }, shell: process.platform === 'win32' })
+      .status === 0
+  )
 }
 const gate = (title, command, args) => (run(title, command, args) ? add(1, 0) : add(0, 1))
 
@@ -32,7 +35,14 @@ gate('Build', bin('electron-vite'), ['build', '--logLevel', 'warn'])
 
 for (const folder of ['shared-kinetics', 'main', 'renderer', 'e2e']) {
   const file = join(results, `${folder}.json`)
-  const fine = run(`Unit tests: ${folder}`, bin('vitest'), ['run', '--root', folder, '--reporter=default', '--reporter=json', `--outputFile.json=${file}`])
+  const fine = run(`Unit tests: ${folder}`, bin('vitest'), [
+    'run',
+    '--root',
+    folder,
+    '--reporter=default',
+    '--reporter=json',
+    `--outputFile.json=${file}`,
+  ])
   count(fine, file, (report) => [report.numPassedTests, report.numFailedTests, report.numPendingTests + report.numTodoTests])
 }
 

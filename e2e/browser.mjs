@@ -39,6 +39,7 @@ export async function findOrInstallBrowser() {
   if (apt) asRoot('apt-get', 'update') && asRoot('apt-get', 'install', '-y', '--no-install-recommends', 'chromium')
   if (!(await findBrowser())) run('npx', ['playwright', 'install', 'chromium'])
   const installed = await findBrowser()
-  if (!installed) throw new Error('No Chromium was found and none could be installed. Install one, or set CHROMIUM_PATH to its program file.')
+  if (!installed)
+    throw new Error('No Chromium was found and none could be installed. Install one, or set CHROMIUM_PATH to its program file.')
   return installed
 }
