@@ -67,6 +67,7 @@ export type Mark =
       readonly kind: 'rule'
       readonly name: string
       readonly tone: Tone
+      /** The direction it runs in: `x` is horizontal, at y = `at`; `y` is vertical, at x = `at`. */
       readonly along: 'x' | 'y'
       readonly at: number
       readonly dash?: 'dashed' | 'dotted'

@@ -1,0 +1,73 @@
+import type { MethodId } from '../isoconversional/result.ts'
+import type { Maybe, ProfileResult, StudyResult } from '../tasks/study-result.ts'
+import type { Figure, Mark } from './figure.ts'
+import { extentOf, niceAxis } from './nice-axis.ts'
+
+/**
+ * Ea against conversion: the chosen method first, with the band of its interval, the other methods of `methodIds` behind it by line style and
+ * marker. A level without a number breaks the line. Methods that gave no profile are passed over.
+ */
+export function activationFigure(result: StudyResult, methodIds: readonly MethodId[], chosen: MethodId): Figure {
+  const profiles = profilesInOrder(result, methodIds, chosen)
+  const [first] = profiles
+  const marks: Mark[] = []
+  if (first !== undefined && first.lower95_kJ_per_mol.some((end) => end !== null)) {
+    const [lower, upper] = [numbers(first.lower95_kJ_per_mol), numbers(first.upper95_kJ_per_mol)]
+    marks.push({ kind: 'band', name: `95 % interval, ${first.label}`, tone: { kind: 'method', index: 0 }, x: result.levels, lower, upper })
+  }
+  for (const [index, profile] of profiles.entries()) {
+    const y = numbers(profile.Ea_kJ_per_mol)
+    marks.push({ kind: 'points', name: profile.label, tone: { kind: 'method', index }, x: result.levels, y, joined: true })
+  }
+  const { min, max } = energyAxis(profiles)
+  return {
+    id: 'activation-energy',
+    title: 'Activation energy against conversion',
+    description: describe(result, profiles),
+    x: { label: 'Conversion α', unit: '', min: 0, max: 1, second: null },
+    y: { label: 'Ea', unit: 'kJ/mol', min, max, second: null },
+    marks,
+  }
+}
+
+/** The current level: a rule at its conversion, and the chosen method's point there with its interval. */
+export function activationAtLevel(result: StudyResult, methodIds: readonly MethodId[], chosen: MethodId, levelIndex: number): Mark[] {
+  const level = result.levels[levelIndex]
+  if (level === undefined) return []
+  const marks: Mark[] = [{ kind: 'rule', name: 'Level', tone: { kind: 'ink' }, along: 'y', at: level, dash: 'dotted' }]
+  const [first] = profilesInOrder(result, methodIds, chosen)
+  const Ea = first?.Ea_kJ_per_mol[levelIndex] ?? null
+  if (first === undefined || Ea === null) return marks
+  const [lower, upper] = [first.lower95_kJ_per_mol[levelIndex] ?? null, first.upper95_kJ_per_mol[levelIndex] ?? null]
+  const interval = lower === null || upper === null ? {} : { lower: [lower], upper: [upper] }
+  marks.push({ kind: 'points', name: first.label, tone: { kind: 'accent' }, x: [level], y: [Ea], joined: false, ...interval })
+  return marks
+}
+
+function profilesInOrder(result: StudyResult, methodIds: readonly MethodId[], chosen: MethodId): readonly ProfileResult[] {
+  const wanted = [chosen, ...methodIds.filter((id) => id !== chosen)]
+  return wanted.map((id) => result.profiles.find((profile) => profile.method === id)).filter((profile) => profile !== undefined)
+}
+
+/** Every Ea is on the axis; the chosen interval too, unless it is so wide that the curve in it could no longer be read. */
+function energyAxis(profiles: readonly ProfileResult[]): { readonly min: number; readonly max: number } {
+  const [low, high] = extentOf(...profiles.map((profile) => profile.Ea_kJ_per_mol))
+  const [lower, upper] = extentOf(profiles[0]?.lower95_kJ_per_mol ?? [], profiles[0]?.upper95_kJ_per_mol ?? [])
+  const room = Math.max(high - low, 0.15 * Math.abs(high))
+  return niceAxis(
+    Number.isFinite(lower) ? Math.max(Math.min(low, lower), low - room) : low,
+    Number.isFinite(upper) ? Math.min(Math.max(high, upper), high + room) : high,
+  )
+}
+
+function describe(result: StudyResult, profiles: readonly ProfileResult[]): string {
+  const [first] = profiles
+  if (first === undefined) return 'No method gave an activation energy for these runs.'
+  const [low, high] = extentOf(first.Ea_kJ_per_mol)
+  const others = profiles.slice(1).map((profile) => profile.label)
+  const range = Number.isFinite(low) ? `from ${low.toFixed(1)} to ${high.toFixed(1)} kJ/mol` : 'without a number at any level'
+  const beside = others.length === 0 ? '' : ` Beside it: ${others.join(', ')}.`
+  return `${first.label}: Ea ${range} over ${result.levels.length} levels of conversion, with its pointwise 95 % interval where there is one.${beside}`
+}
+
+const numbers = (values: readonly Maybe[]): Float64Array => Float64Array.from(values, (value) => value ?? Number.NaN)
