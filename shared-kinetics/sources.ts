@@ -13,6 +13,8 @@ export const sources = {
   'ictac-2011': 'S. Vyazovkin et al., Thermochim. Acta 520 (2011) 1 (recommendations on computations)',
   'ictac-2014': 'S. Vyazovkin et al., Thermochim. Acta 590 (2014) 1 (recommendations on collecting data)',
   'abramowitz-stegun-1964': 'M. Abramowitz, I. A. Stegun, Handbook of Mathematical Functions (1964), ch. 5 and 26',
+  'brent-1973': 'R. P. Brent, Algorithms for Minimization without Derivatives (1973), ch. 4',
+  'nist-strd': 'NIST Statistical Reference Datasets (certified values for regression)',
   'savitzky-golay-1964': 'A. Savitzky, M. J. E. Golay, Anal. Chem. 36 (1964) 1627',
   'cleveland-1979': 'W. S. Cleveland, J. Am. Stat. Assoc. 74 (1979) 829 (local regression)',
   'fritsch-carlson-1980': 'F. N. Fritsch, R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238',
