@@ -1,4 +1,4 @@
-import fc from 'fast-check'
+import { assert, double, property } from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { MethodId } from '../isoconversional/result.ts'
 import type { ProfileResult, RunResult, StudyResult } from '../tasks/study-result.ts'
@@ -126,9 +126,9 @@ const isOnAxes =
 
 describe('nice axis', () => {
   it('encloses any range with a handful of evenly spaced ticks at 1, 2 or 5 times a power of ten', () => {
-    const number = fc.double({ min: -1e9, max: 1e9, noNaN: true })
-    fc.assert(
-      fc.property(number, fc.double({ min: 1e-6, max: 1e9, noNaN: true }), (low, width) => {
+    const number = double({ min: -1e9, max: 1e9, noNaN: true })
+    assert(
+      property(number, double({ min: 1e-6, max: 1e9, noNaN: true }), (low, width) => {
         const high = low + Math.max(width, Math.abs(low) * 1e-6)
         const { min, max, step, ticks } = niceAxis(low, high)
         const leading = Number(step.toExponential().split('e')[0])
@@ -137,7 +137,7 @@ describe('nice axis', () => {
         expect(max).toBeGreaterThanOrEqual(high - step * 1e-6)
         expect(ticks.length).toBeGreaterThanOrEqual(3)
         expect(ticks.length).toBeLessThanOrEqual(9)
-        for (const [i, tick] of ticks.entries()) if (i > 0) expect((tick - (ticks[i - 1] ?? 0)) / step).toBeCloseTo(1, 4)
+        for (const [i, tick] of ticks.slice(1).entries()) expect((tick - (ticks[i] ?? 0)) / step).toBeCloseTo(1, 4)
       }),
     )
   })

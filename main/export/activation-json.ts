@@ -1,0 +1,101 @@
+import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
+import type { Finding } from '../../shared-kinetics/review/finding.ts'
+import type { Window } from '../../shared-kinetics/series/run.ts'
+import type { ProfileResult, RunResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { caution } from './caution.ts'
+
+/** What an export is made from: the study, what followed from it, and the program that worked it out. */
+export interface ExportSource {
+  readonly document: StudyDocument
+  readonly result: StudyResult
+  readonly program: { readonly name: 'rampfold'; readonly version: string }
+}
+
+/**
+ * The text of `activation.json`, format `rampfold.activation/1`: full precision, null for a number that is not to be had.
+ * Scripts rely on its fields: some may be added, none changed.
+ */
+export function activationJson({ document, result, program }: ExportSource): string {
+  const labelOf = new Map(document.runs.map((run) => [run.id, run.label]))
+  const content = {
+    format: 'rampfold.activation/1',
+    program: { name: program.name, version: program.version },
+    caution,
+    study: document.name,
+    settings: document.settings,
+    signal: result.signal,
+    runs: result.runs.map(runFields),
+    levels: result.levels,
+    profiles: result.profiles.map(profileFields),
+    kissinger: result.kissinger,
+    findings: result.findings.map((finding) => findingFields(finding, labelOf)),
+  }
+  return `${JSON.stringify(content, nullForMissing, 1)}\n`
+}
+
+/** JSON has no NaN; what is not to be had is null. */
+const nullForMissing = (_key: string, value: unknown): unknown => (typeof value === 'number' && !Number.isFinite(value) ? null : value)
+
+function runFields(run: RunResult): Record<string, unknown> {
+  return {
+    id: run.runId,
+    file: run.fileName,
+    column: run.column,
+    sha256: run.sha256,
+    label: run.label,
+    signal: run.signal,
+    programme: run.programme,
+    nominalHeatingRate_K_per_min: run.nominalHeatingRate_K_per_min,
+    heatingRate_K_per_min: run.heatingRate_K_per_min,
+    heatingRateStandardError_K_per_min: run.heatingRateStandardError_K_per_min,
+    heatingRateSource: run.heatingRateSource,
+    holdTemperature_K: run.holdTemperature_K,
+    rows: run.rows,
+    initialMass_mg: run.initialMass_kg === null ? null : run.initialMass_kg * 1e6,
+    window: windowFields(run.window),
+    peak_K: run.peak_K,
+    enthalpy_J_per_g: run.enthalpy_J_per_g,
+    temperatureAtLevel_K: run.temperatureAtLevel_K,
+    timeAtLevel_s: run.timeAtLevel_s,
+  }
+}
+
+/** Both kinds of window have the same fields, so that a reader need not ask which it is. */
+function windowFields(window: Window): Record<string, number | null> {
+  return window.kind === 'temperature'
+    ? { start_K: window.start_K, end_K: window.end_K, start_s: null, end_s: null }
+    : { start_K: null, end_K: null, start_s: window.start_s, end_s: window.end_s }
+}
+
+function profileFields(profile: ProfileResult): Record<string, unknown> {
+  return {
+    method: profile.method,
+    label: profile.label,
+    sources: profile.sources,
+    interval: profile.interval,
+    Ea_kJ_per_mol: profile.Ea_kJ_per_mol,
+    standardError_kJ_per_mol: profile.standardError_kJ_per_mol,
+    lower95_kJ_per_mol: profile.lower95_kJ_per_mol,
+    upper95_kJ_per_mol: profile.upper95_kJ_per_mol,
+    lnAf_per_s: profile.lnAf_per_s,
+    lnAfStandardError: profile.lnAfStandardError,
+    r2: profile.r2,
+    status: profile.status,
+    mean: profile.mean,
+  }
+}
+
+function findingFields(finding: Finding, labelOf: ReadonlyMap<string, string>): Record<string, unknown> {
+  return {
+    code: finding.code,
+    severity: finding.severity,
+    run: finding.run === null ? null : (labelOf.get(finding.run) ?? finding.run),
+    runId: finding.run,
+    level: finding.level,
+    title: finding.title,
+    message: finding.message,
+    evidence: finding.evidence,
+    basis: finding.basis,
+    sources: finding.sources,
+  }
+}

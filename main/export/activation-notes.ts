@@ -1,0 +1,89 @@
+import type { AnalysisSettings } from '../../shared-kinetics/tasks/study-input.ts'
+import type { Window } from '../../shared-kinetics/series/run.ts'
+import type { RunResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
+import type { ExportSource } from './activation-json.ts'
+import { caution } from './caution.ts'
+
+/** The text of `activation.csv.txt`, which stands beside the table: caution, intervals, settings, where the runs came from, findings. */
+export function activationNotes({ document, result, program }: ExportSource): string {
+  const used = new Set(result.runs.map((run) => run.runId))
+  const leftOut = document.runs.filter((run) => !used.has(run.id))
+  const sections: readonly (readonly [string, readonly string[]])[] = [
+    ['Caution', [caution]],
+    ['Intervals', intervalLines({ document, result, program })],
+    ['Settings', settingLines(document.settings, result.signal)],
+    ['Runs', result.runs.flatMap(runLines)],
+    ['Runs not used', leftOut.map((run) => `${run.label}: ${run.file.name}, SHA-256 ${run.file.sha256}`)],
+    [
+      'Findings',
+      result.findings.map((finding) => {
+        const label = document.runs.find((run) => run.id === finding.run)?.label
+        return `${finding.severity}, ${finding.code}${label === undefined ? '' : ` (${label})`}: ${finding.message} Rule: ${finding.basis}`
+      }),
+    ],
+  ]
+  const text = sections
+    .filter(([, lines]) => lines.length > 0)
+    .map(([heading, lines]) => `${heading}\n${lines.map((line) => `  ${oneLine(line)}\n`).join('')}`)
+    .join('\n')
+  return `Activation energy against conversion, ${oneLine(document.name)}\n${program.name} ${program.version}\n\n${text}`
+}
+
+function intervalLines({ result }: ExportSource): string[] {
+  const lines = result.profiles.map(({ label, interval, sources }) => {
+    const name =
+      interval.dof > 0
+        ? `${interval.level * 100} % Student-t interval, ${interval.dof} degrees of freedom, for each level by itself`
+        : 'no standard error and no interval (too few different programmes)'
+    return `${label}: ${name}. Method: ${sources.join('; ')}`
+  })
+  const k = result.kissinger
+  if (k !== null) {
+    const interval =
+      k.lower95_kJ_per_mol === null || k.upper95_kJ_per_mol === null
+        ? ''
+        : ` (95 %: ${k.lower95_kJ_per_mol.toFixed(1)} to ${k.upper95_kJ_per_mol.toFixed(1)})`
+    lines.push(`Kissinger, from the peaks: Ea ${k.Ea_kJ_per_mol.toFixed(2)} kJ/mol${interval}, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s)`)
+  }
+  return lines
+}
+
+function settingLines(settings: AnalysisSettings, signal: string | null): string[] {
+  return [
+    `signal: ${signal ?? 'none'}${settings.signal === null ? ' (chosen by the program)' : ''}`,
+    `levels of conversion: ${settings.levels.map((level) => String(Number(level.toPrecision(6)))).join(' ')}`,
+    `methods: ${settings.methods === null ? 'all that apply' : settings.methods.join(', ')}`,
+    `window of the series: ${settings.window === null ? 'found in the data' : windowText(settings.window)}`,
+    `baseline under heat flow: ${settings.baseline}`,
+    `range of the mean: ${settings.meanRange[0]} to ${settings.meanRange[1]}`,
+  ]
+}
+
+function runLines(run: RunResult): string[] {
+  return [
+    `${run.label}: ${run.fileName}, column ${run.column}, SHA-256 ${run.sha256}`,
+    `  ${programmeText(run)}; ${run.rows} rows; window ${windowText(run.window)}${run.peak_K === null ? '' : `; peak ${celsius(run.peak_K)}`}${
+      run.enthalpy_J_per_g === null ? '' : `; enthalpy ${run.enthalpy_J_per_g.toFixed(1)} J/g`
+    }`,
+  ]
+}
+
+function programmeText(run: RunResult): string {
+  const nominal = run.nominalHeatingRate_K_per_min === null ? '' : `, nominal ${run.nominalHeatingRate_K_per_min} K/min`
+  if (run.programme === 'constant-heating-rate' && run.heatingRate_K_per_min !== null) {
+    const error = run.heatingRateStandardError_K_per_min
+    const spread = error === null ? '' : `, standard error ${error.toPrecision(2)} K/min`
+    return `heating rate ${run.heatingRate_K_per_min.toFixed(3)} K/min (${run.heatingRateSource ?? 'stated'}${spread}${nominal})`
+  }
+  if (run.programme === 'isothermal' && run.holdTemperature_K !== null) return `isothermal at ${celsius(run.holdTemperature_K)}`
+  return `general temperature programme${nominal}`
+}
+
+const windowText = (window: Window): string =>
+  window.kind === 'temperature'
+    ? `${window.start_K.toFixed(2)} to ${window.end_K.toFixed(2)} K`
+    : `${(window.start_s / 60).toFixed(3)} to ${(window.end_s / 60).toFixed(3)} min`
+
+const celsius = (kelvin: number): string => `${kelvinToCelsius(kelvin).toFixed(2)} °C`
+const oneLine = (text: string): string => text.replaceAll(/\s*[\r\n]+\s*/g, ' ')

@@ -1,0 +1,48 @@
+import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
+import type { ProfileResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+
+/** The table a terminal shows: Ea of every method at every level, with the larger half of its 95 % interval; a dash where there is no number. */
+export function shortTable(result: StudyResult): string {
+  const columns = [
+    ['conversion', ...result.levels.map((level) => levelText(level))],
+    ...result.profiles.map((profile) => [profile.label, ...result.levels.map((_, i) => cell(profile, i))]),
+  ]
+  const widths = columns.map((column) => Math.max(...column.map((text) => text.length)))
+  const rows = ['', ...result.levels].map((_, row) => columns.map((column, c) => (column[row] ?? '').padStart(widths[c] ?? 0)).join('  '))
+  return [
+    'Ea in kJ/mol, with the larger half of its 95 % interval (Student-t, each level by itself)',
+    ...rows,
+    ...means(result),
+    ...kissinger(result),
+    '',
+  ].join('\n')
+}
+
+function cell(profile: ProfileResult, level: number): string {
+  const Ea = profile.Ea_kJ_per_mol[level] ?? null
+  if (Ea === null) return '-'
+  const half = halfWidth(Ea, profile.lower95_kJ_per_mol[level] ?? null, profile.upper95_kJ_per_mol[level] ?? null)
+  return half === null ? Ea.toFixed(1) : `${Ea.toFixed(1)} ±${half.toFixed(1)}`
+}
+
+function halfWidth(Ea: number, lower: number | null, upper: number | null): number | null {
+  return lower === null || upper === null ? null : Math.max(Ea - lower, upper - Ea)
+}
+
+function means(result: StudyResult): string[] {
+  const texts = result.profiles.flatMap(({ label, mean }) =>
+    mean.Ea_kJ_per_mol === null ? [] : [`${label} ${mean.Ea_kJ_per_mol.toFixed(1)}`],
+  )
+  const range = result.profiles[0]?.mean
+  return range === undefined || texts.length === 0
+    ? []
+    : [`Mean over conversion ${levelText(range.from)} to ${levelText(range.to)}: ${texts.join(', ')}`]
+}
+
+function kissinger({ kissinger: k }: StudyResult): string[] {
+  if (k === null) return []
+  const half = halfWidth(k.Ea_kJ_per_mol, k.lower95_kJ_per_mol, k.upper95_kJ_per_mol)
+  return [
+    `Kissinger, from the peaks: ${k.Ea_kJ_per_mol.toFixed(1)}${half === null ? '' : ` ±${half.toFixed(1)}`} kJ/mol, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s)`,
+  ]
+}
