@@ -108,6 +108,8 @@ export interface RequestAnswers {
 /** What the host tells every window without being asked. */
 export type HostEvent =
   | { readonly kind: 'study-changed'; readonly revision: number }
+  /** An autosave failed (disk full, folder gone); the next change tries again. */
+  | { readonly kind: 'not-saved'; readonly message: string }
   | {
       readonly kind: 'progress'
       readonly work: 'import' | 'evaluate'

@@ -1,0 +1,14 @@
+import type { HandlerContext, HandlerTable } from './handler-table.ts'
+import { importFiles } from './import-files.ts'
+
+/** Uploaded files into runs; and the stop for long work. */
+export function importHandlers(context: HandlerContext): Pick<HandlerTable, 'runs.import' | 'work.cancel'> {
+  return {
+    'runs.import': async ({ uploadIds }) => importFiles(context, context.uploads.take(uploadIds)),
+    'work.cancel': ({ work }) => {
+      if (work === 'evaluate') context.evaluation.cancel()
+      else for (const running of context.imports) running.abort()
+      return {}
+    },
+  }
+}

@@ -1,0 +1,144 @@
+import { Worker } from 'node:worker_threads'
+import type { FromWorker, ToWorker } from '../../shared-kinetics/contract/task-messages.ts'
+import { Cancelled } from '../../shared-kinetics/errors.ts'
+import type { TaskAnswer, TaskName, TaskOptions, TaskPool } from './host-tasks.ts'
+import { taskFailure } from './task-failure.ts'
+
+export interface WorkerPoolOptions {
+  /** The built worker-entry; only an entry file of the program knows where it lies. */
+  readonly workerUrl: URL
+  /** 2 by default. */
+  readonly workers?: number
+}
+
+interface Job {
+  readonly message: ToWorker
+  readonly options: TaskOptions
+  readonly resolve: (value: unknown) => void
+  readonly reject: (error: Error) => void
+}
+
+interface Slot {
+  readonly worker: Worker
+  /** Tasks this worker has run: its caches know them. */
+  readonly known: Set<string>
+  job: Job | null
+}
+
+/**
+ * A pool of worker threads, started when first needed and not keeping the process alive while idle. A task goes to the idle
+ * worker that ran its kind before, since that one's cache is warm. A worker that dies fails the task it was running; the next
+ * task gets a new one.
+ */
+export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions): TaskPool {
+  const slots = new Set<Slot>()
+  const waiting: Job[] = []
+  let lastId = 0
+  let closed = false
+
+  const startWorker = (): Slot => {
+    const slot: Slot = { worker: new Worker(workerUrl), known: new Set(), job: null }
+    slot.worker.unref()
+    slot.worker.on('message', (message: FromWorker) => {
+      take(slot, message)
+    })
+    slot.worker.on('error', (error) => {
+      lose(slot, error instanceof Error ? error.message : String(error))
+    })
+    slot.worker.on('exit', (code) => {
+      lose(slot, `it ended with code ${code}`)
+    })
+    slots.add(slot)
+    return slot
+  }
+
+  const take = (slot: Slot, message: FromWorker): void => {
+    const { job } = slot
+    if (message.kind === 'ready' || job === null || message.id !== job.message.id) return
+    if (message.kind === 'progress') {
+      job.options.progress?.(message.done, message.total)
+      return
+    }
+    slot.job = null
+    slot.worker.unref()
+    if (message.kind === 'answer') job.resolve(message.value)
+    else job.reject(taskFailure(message.failure))
+    pump()
+  }
+
+  const lose = (slot: Slot, why: string): void => {
+    if (!slots.delete(slot)) return
+    slot.job?.reject(closed ? new Cancelled() : new Error(`The calculation stopped unexpectedly (${why}). Try it again.`))
+    void slot.worker.terminate()
+    pump()
+  }
+
+  /** null: wait. A task whose own worker is busy with its kind waits for it: that one is about to be cancelled or done. */
+  const slotFor = (job: Job): Slot | null => {
+    const home = [...slots].find((slot) => slot.known.has(job.message.task))
+    if (home !== undefined && cached.has(job.message.task)) {
+      if (home.job === null) return home
+      if (home.job.message.task === job.message.task) return null
+    }
+    const idle = [...slots].filter((slot) => slot.job === null)
+    return idle.find((slot) => slot.known.has(job.message.task)) ?? idle[0] ?? (slots.size < workers ? startWorker() : null)
+  }
+
+  const pump = (): void => {
+    if (closed) return
+    for (const job of [...waiting]) {
+      const slot = slotFor(job)
+      if (slot === null) continue
+      waiting.splice(waiting.indexOf(job), 1)
+      slot.job = job
+      slot.known.add(job.message.task)
+      slot.worker.ref()
+      try {
+        slot.worker.postMessage(job.message)
+      } catch (error) {
+        // Input that cannot be cloned is a fault of the caller, not of the worker.
+        slot.job = null
+        slot.worker.unref()
+        job.reject(error instanceof Error ? error : new Error(String(error)))
+      }
+    }
+  }
+
+  return {
+    run: async <Name extends TaskName>(name: Name, input: unknown, options: TaskOptions = {}): Promise<TaskAnswer<Name>> => {
+      if (closed || options.signal?.aborted === true) throw new Cancelled()
+      const cancelFlag = new Int32Array(new SharedArrayBuffer(4))
+      lastId += 1
+      const message: ToWorker = { kind: 'run', id: lastId, task: name, input, cancelFlag }
+      let stop = (): void => undefined
+      try {
+        return (await new Promise<unknown>((resolve, reject) => {
+          const job: Job = { message, options, resolve, reject }
+          stop = () => {
+            Atomics.store(cancelFlag, 0, 1)
+            const place = waiting.indexOf(job)
+            if (place < 0) return
+            waiting.splice(place, 1)
+            reject(new Cancelled())
+          }
+          options.signal?.addEventListener('abort', stop)
+          waiting.push(job)
+          pump()
+        })) as TaskAnswer<Name>
+      } finally {
+        options.signal?.removeEventListener('abort', stop)
+      }
+    },
+    close: async () => {
+      closed = true
+      for (const job of waiting.splice(0)) job.reject(new Cancelled())
+      const ending = [...slots].map(async (slot) => slot.worker.terminate())
+      for (const slot of slots) slot.job?.reject(new Cancelled())
+      slots.clear()
+      await Promise.all(ending)
+    },
+  }
+}
+
+/** Tasks that keep a cache in their worker and are therefore worth waiting for. */
+const cached: ReadonlySet<string> = new Set<TaskName>(['evaluate-study'])
