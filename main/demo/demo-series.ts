@@ -8,7 +8,7 @@ export const demoMaterial: DemoMaterial = {
   residue: 0.24,
   steps: [
     { share: 0.42, Ea_J_per_mol: 120_000, lnA_per_s: 20.4, conversionAt: (integral) => 1 - Math.exp(-integral) },
-    { share: 0.58, Ea_J_per_mol: 168_000, lnA_per_s: 27.6, conversionAt: (integral) => 1 - Math.max(0, 1 - integral) ** 3 },
+    { share: 0.58, Ea_J_per_mol: 168_000, lnA_per_s: 27.2, conversionAt: (integral) => 1 - Math.max(0, 1 - integral) ** 3 },
   ],
 }
 

@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto'
-import { mkdir, open, rename, rm, stat } from 'node:fs/promises'
-import { join } from 'node:path'
+import { mkdir, open, rename, rm, rmdir, stat } from 'node:fs/promises'
+import { dirname, join, resolve } from 'node:path'
 import type { FileOut } from '../../shared-kinetics/contract/host-api.ts'
 
 /** A folder or file that could not be written, in words for the person who named it. */
@@ -24,9 +24,21 @@ export async function writeFiles(folder: string, files: readonly FileOut[]): Pro
     for (const [i, file] of files.entries()) await writeWhole(passing[i] ?? '', file.bytes)
     for (const [i, file] of files.entries()) await rename(passing[i] ?? '', join(folder, file.fileName))
   } catch (error) {
-    await Promise.all(passing.map((path) => rm(path, { force: true })))
-    if (made !== undefined) await rm(made, { recursive: true, force: true })
+    await Promise.all(passing.map(async (path) => rm(path, { force: true }).catch(() => undefined)))
+    if (made !== undefined) await removeEmpty(folder, made)
     throw error instanceof WriteRefusal ? error : refusal(folder, error)
+  }
+}
+
+/** Takes away the folders from `deepest` up to `topmost`, as far as nobody has put anything there meanwhile. */
+async function removeEmpty(deepest: string, topmost: string): Promise<void> {
+  const last = resolve(topmost)
+  for (let path = resolve(deepest); path.startsWith(last); path = dirname(path)) {
+    const gone = await rmdir(path).then(
+      () => true,
+      () => false,
+    )
+    if (!gone) return
   }
 }
 
