@@ -1,0 +1,62 @@
+import cephes from 'cephes'
+import * as fc from 'fast-check'
+import { beforeAll, describe, expect, it } from 'vitest'
+import exact from '../check-values/computed/p-of-x.json'
+import table from '../check-values/computed/p-of-x-table.json'
+import handbook from '../check-values/published/abramowitz-stegun-1964.json'
+import { lnPOfX, pOfX, scaledPOfX } from './p-of-x.ts'
+
+beforeAll(async () => {
+  await cephes.compiled
+})
+
+const relative = (value: number, expected: string | number): number => Math.abs(value / Number(expected) - 1)
+
+describe('the temperature integral', () => {
+  it('matches the table of p(x) from x = 5 to 100', () => {
+    for (const { x, p, scaled, minusLog10P, slope } of table.rows) {
+      expect(relative(pOfX(x), p), `p(${x})`).toBeLessThan(1e-13)
+      expect(relative(scaledPOfX(x), scaled), `scaled, ${x}`).toBeLessThan(1e-14)
+      expect(Math.abs(-lnPOfX(x) / Math.LN10 - Number(minusLog10P)), `log, ${x}`).toBeLessThan(
+        0.5 * 10 ** -(minusLog10P.split('.')[1] ?? '').length,
+      )
+      expect(Math.abs(1 / scaledPOfX(x) - Number(slope)), `slope, ${x}`).toBeLessThan(1e-6)
+    }
+  })
+
+  it('agrees with the tabulated exponential integral by π(x) = x(1 - x eˣ E₁(x))', () => {
+    for (const { x, x_exp_x_e1 } of handbook.rows) {
+      // The right side itself loses the digits that cancel, which is why the program does not use it above 1.
+      const cancelled = (4 * Number.EPSILON * x) / scaledPOfX(x)
+      expect(relative(scaledPOfX(x), x * (1 - Number(x_exp_x_e1))), `x ${x}`).toBeLessThan(cancelled + 1e-15)
+    }
+  })
+
+  it('agrees with 40-digit values from 0.001 to 5000, close to its switch at 1 and where p itself cannot be held', () => {
+    for (const { x, scaled, ln_p } of exact.rows) {
+      expect(relative(scaledPOfX(x), scaled), `scaled, ${x}`).toBeLessThan(2e-15)
+      expect(Math.abs(lnPOfX(x) - Number(ln_p)), `ln p, ${x}`).toBeLessThan(4e-16 * Math.max(8, Math.abs(Number(ln_p))))
+    }
+  })
+
+  it('agrees with E₂(x)/x of another library at random x', () => {
+    fc.assert(
+      fc.property(fc.double({ min: Math.log(0.01), max: Math.log(600), noNaN: true }), (lnX) => {
+        const x = Math.exp(lnX)
+        expect(relative(pOfX(x), cephes.expn(2, x) / x)).toBeLessThan(1e-14 + 3e-16 * x)
+      }),
+      { numRuns: 2000 },
+    )
+  })
+
+  it('neither overflows nor underflows in its scaled forms', () => {
+    expect(scaledPOfX(1e12)).toBeCloseTo(1, 11)
+    expect(lnPOfX(1e6)).toBeCloseTo(-1e6 - 2 * Math.log(1e6), 4)
+    expect(pOfX(800)).toBe(0)
+    expect(scaledPOfX(1e-8) / 1e-8).toBeCloseTo(1, 6)
+  })
+
+  it('rejects an x that is not a positive number', () => {
+    for (const x of [0, -1, Number.NaN, Number.POSITIVE_INFINITY]) expect(() => scaledPOfX(x)).toThrow(/Ea\/\(RT\)/)
+  })
+})
