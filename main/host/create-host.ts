@@ -12,6 +12,7 @@ import { studyHandlers } from './handlers/study.ts'
 import { uploadHandlers } from './handlers/upload.ts'
 import type { TaskPool } from './host-tasks.ts'
 import { checkRequestName, parseRequest } from './parse-request.ts'
+import { programParts } from './program-parts.ts'
 import { createUploads } from './uploads.ts'
 import { createWorkspace, type Workspace } from './workspace.ts'
 
@@ -20,7 +21,8 @@ export interface HostOptions {
   readonly dataFolder: string | null
   /** Closed together with the host. */
   readonly pool: TaskPool
-  readonly parts: ProgramParts
+  /** The program's own by default. */
+  readonly parts?: ProgramParts
   readonly version: string
   readonly shell: Shell
   /** Told in words what could not be kept or recovered; standard error by default. */
@@ -43,7 +45,7 @@ export interface Host extends HostTransport {
 
 /** A host at work at once; requests wait until the study that was open last is there again. */
 export function createHost(options: HostOptions): Host {
-  const { pool, parts, version, shell, now = Date.now, randomId = randomUUID } = options
+  const { pool, parts = programParts, version, shell, now = Date.now, randomId = randomUUID } = options
   const warn = options.warn ?? ((message: string) => void process.stderr.write(`${message}\n`))
   const events = createEventHub(now)
   const uploads = createUploads(randomId)

@@ -1,6 +1,7 @@
 import type { FileOut, RequestAnswers, RequestInput, RequestName } from '../../../shared-kinetics/contract/host-api.ts'
-import type { StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
-import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts'
+import type { DemoSeries } from '../../demo/demo-series.ts'
+import type { ExportSource } from '../../export/activation-json.ts'
+import type { ExportFormat } from '../../export/export-results.ts'
 import type { EventHub } from '../event-hub.ts'
 import type { Evaluation } from '../evaluation.ts'
 import type { TaskPool } from '../host-tasks.ts'
@@ -14,22 +15,10 @@ export type HandlerTable = {
 
 export type Shell = RequestAnswers['program.describe']['shell']
 
-export interface DemoSeries {
-  /** Name of the study the series opens as. */
-  readonly name: string
-  files(): readonly { readonly fileName: string; readonly bytes: Uint8Array }[]
-}
-
-export interface ExportSource {
-  readonly document: StudyDocument
-  readonly result: StudyResult
-  readonly program: { readonly name: 'rampfold'; readonly version: string }
-}
-
-/** The parts of the program that the host hands work to. */
+/** The parts of the program that the host hands work to; the real ones are in `program-parts.ts`. */
 export interface ProgramParts {
-  readonly demo: DemoSeries
-  readonly exportResults: (source: ExportSource, format: RequestInput<'results.export'>['format']) => readonly FileOut[]
+  demoSeries(): DemoSeries
+  exportResults(source: ExportSource, format: ExportFormat): readonly FileOut[]
 }
 
 /** Imports that run now, so that `work.cancel` and a newly opened study can stop them. */

@@ -40,8 +40,9 @@ export function studyHandlers(context: HandlerContext): Pick<HandlerTable, Study
     },
     'study.open-demo': async () => {
       stopWork()
-      await workspace.replace(newStudy(randomId, parts.demo.name))
-      const files = parts.demo.files().map(({ fileName, bytes }) => ({ fileName, bytes, declaredBytes: bytes.byteLength }))
+      const demo = parts.demoSeries()
+      await workspace.replace(newStudy(randomId, demo.name))
+      const files = demo.files.map(({ fileName, bytes }) => ({ fileName, bytes, declaredBytes: bytes.byteLength }))
       return (await importFiles(context, files)).snapshot
     },
     'study.recent': async () => ({ studies: (await workspace.store?.recent()) ?? [] }),

@@ -1,0 +1,6 @@
+import { demoSeries } from '../demo/demo-series.ts'
+import { exportResults } from '../export/export-results.ts'
+import type { ProgramParts } from './handlers/handler-table.ts'
+
+/** The program's own demo series and exports. */
+export const programParts: ProgramParts = { demoSeries, exportResults: (source, format) => exportResults(source, format) }
