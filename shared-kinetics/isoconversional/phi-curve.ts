@@ -1,0 +1,58 @@
+import { column } from '../units/quantity.ts'
+import { largestEa, smallestEa, type EnergyGrid } from './energy-grid.ts'
+import { phi } from './phi.ts'
+import type { LevelPhi } from './result.ts'
+
+/** Points on each side of the middle. */
+const side = 40
+
+/**
+ * Phi over four half-widths of the interval on each side of its minimum, at least 2 % of Ea, at most to the ends of the range searched; over ±20 % where there is no
+ * interval. 81 points, the middle one the minimum itself; the others from the grid, which is exact enough for drawing.
+ */
+export function phiAround(
+  grid: EnergyGrid,
+  level: number,
+  runs: number,
+  Ea: number,
+  halfWidth: number,
+  phiMinimum: number,
+  phiThreshold: number,
+): LevelPhi {
+  const reach = Number.isNaN(halfWidth) ? 0.2 * Ea : Math.max(4 * halfWidth, 0.02 * Ea)
+  const from = Math.max(smallestEa, Ea - reach)
+  const to = Math.min(largestEa, Ea + reach)
+  const at = Array.from({ length: 2 * side + 1 }, (_, i) =>
+    i === side ? Ea : i < side ? from + ((Ea - from) * i) / side : Ea + ((to - Ea) * (i - side)) / side,
+  )
+  return { ...curve(grid, level, runs, at, (i, value) => (i === side ? phiMinimum : value)), phiMinimum, phiThreshold }
+}
+
+/** Phi over the whole range searched, evenly in ln Ea, where it has no single minimum to look at closely. */
+export function phiOverRange(grid: EnergyGrid, level: number, runs: number): LevelPhi {
+  const at = Array.from({ length: 2 * side + 1 }, (_, i) => smallestEa * (largestEa / smallestEa) ** (i / (2 * side)))
+  return { ...curve(grid, level, runs, at, (_, value) => value), phiMinimum: Number.NaN, phiThreshold: Number.NaN }
+}
+
+function curve(
+  grid: EnergyGrid,
+  level: number,
+  runs: number,
+  at: readonly number[],
+  correct: (i: number, value: number) => number,
+): Pick<LevelPhi, 'Ea_J_per_mol' | 'phi'> {
+  const lnJ = new Float64Array(runs)
+  const points = at.map((Ea, i) => {
+    grid.between(Math.min(largestEa, Math.max(smallestEa, Ea)), level, lnJ)
+    return { Ea, value: correct(i, phi(lnJ)) }
+  })
+  // Far from its minimum Phi leaves double precision; such points cannot be drawn.
+  const drawn = points.filter((point) => Number.isFinite(point.value))
+  return {
+    Ea_J_per_mol: column(
+      Float64Array.from(drawn, (p) => p.Ea),
+      'J/mol',
+    ),
+    phi: Float64Array.from(drawn, (p) => p.value),
+  }
+}

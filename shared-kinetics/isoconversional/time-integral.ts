@@ -1,0 +1,30 @@
+import type { RunAtLevels } from '../series/series-at-levels.ts'
+import { constantRateIntegral } from './constant-rate-integral.ts'
+import { historyIntegral } from './history-integral.ts'
+
+/** ln J and its slope at one Ea; J in s. */
+export interface IntegralValue {
+  readonly lnJ: number
+  /** Mean of 1/T over the integral, weighted by exp(-Ea/(R T)), in 1/K: d ln J/dEa = -(this)/R. */
+  readonly inverseT: number
+}
+
+/**
+ * J(Ea) = ∫ exp(-Ea/(R T(t))) dt of one run, from the start of its history to each level. Only its logarithm is ever held: J itself runs from 1e3 s to below 1e-300 s
+ * within the range of Ea that is searched.
+ */
+export interface TimeIntegral {
+  /** Whether the run reaches the level within its history, so that J exists. */
+  readonly reaches: (level: number) => boolean
+  /** At one level; only where it is reached. */
+  readonly atLevel: (Ea: number, level: number) => IntegralValue
+  /** At all levels in one pass; entries of levels not reached are left as they are. */
+  readonly atAllLevels: (Ea: number, lnJ: Float64Array, inverseT: Float64Array) => void
+}
+
+/** The integral that belongs to a run's programme: closed form for a constant heating rate, else over the measured history. `largestEa` in J/mol. */
+export function timeIntegral(run: RunAtLevels, largestEa: number): TimeIntegral {
+  return run.programme.kind === 'constant-heating-rate'
+    ? constantRateIntegral(run.programme.heatingRate, run.temperature_K)
+    : historyIntegral(run.history, run.time_s, largestEa)
+}

@@ -1,0 +1,167 @@
+import { bracketedRoot } from '../numerics/root.ts'
+import { gasConstant_J_per_mol_K } from '../units/constants.ts'
+import { column } from '../units/quantity.ts'
+import { energies, energyGrid, largestEa, type EnergyGrid } from './energy-grid.ts'
+import { phi, phiSlope } from './phi.ts'
+import { phiAround, phiOverRange } from './phi-curve.ts'
+import { resultColumns } from './result-columns.ts'
+import type { IsoconversionalMethod, LevelPhi, LevelStatus, MethodInfo } from './result.ts'
+import { checkSeries, countProgrammes } from './series-check.ts'
+import { timeIntegral, type TimeIntegral } from './time-integral.ts'
+
+export const vyazovkinInfo: MethodInfo = {
+  id: 'vyazovkin',
+  label: 'Vyazovkin',
+  sources: ['vyazovkin-dollimore-1996', 'vyazovkin-1997', 'ictac-2011'],
+  appliesTo: ['constant-heating-rate', 'isothermal', 'general'],
+  evidence: 'minimum',
+}
+
+/**
+ * Vyazovkin's integral isoconversional method, integrated from zero: at each level the Ea that minimises
+ *
+ *   Phi(Ea) = Σᵢ Σ_{j≠i} Jᵢ(Ea)/Jⱼ(Ea),   J(Ea) = ∫ exp(-Ea/(R T(t))) dt from alpha = 0 to the level,
+ *
+ * over the runs i, j. At one conversion A·J = g(alpha) is the same for every run, so that all J are equal and Phi is n(n - 1) for error-free data.
+ *
+ * J is taken in closed form, (Ea/(R beta)) p(Ea/(R T)), for runs of constant heating rate, and over the measured T(t) from the first sample of the history for all
+ * others; a series may mix them. The minimum is found as the root of dPhi/dEa inside a bracket of 1 to 1000 kJ/mol, whose sign is scanned in steps of 5 %.
+ *
+ * Standard error, by linearising ln Jᵢ in Ea at the root: with yᵢ = ln Jᵢ, uᵢ = -R dyᵢ/dEa (an effective 1/T) and s² = Σ(yᵢ - ȳ)²/(n - 2),
+ * se(Ea) = R s/√Σ(uᵢ - ū)². r2 is that of the same linearised regression, yᵢ + Ea uᵢ/R against uᵢ. Since Phi ≈ n(n - 1) + n Σ(yᵢ - ȳ)² near its minimum, the interval
+ * Ea ± t·se ends where Phi reaches phiThreshold = phiMinimum + n t² s²; Phi itself passes a little beside these ends, the more so the wider the interval.
+ *
+ * Assumes Ea constant from alpha = 0 to the level, and for histories that no reaction took place before their first sample. No approximation of the temperature
+ * integral and no systematic error of its own; but where Ea varies with conversion it lags behind the differential value, as every integral taken from zero does.
+ *
+ * Statuses: `level-not-reached` (also where a level lies outside a run's history); `too-few-programmes`; `minimum-at-bound`: Phi has no minimum inside the bracket;
+ * `minimum-flat`: the runs' effective temperatures are the same, so that Phi does not depend on Ea; `several-minima`: more than one, bounds included where Phi is lower there.
+ *
+ * @source vyazovkin-dollimore-1996
+ * @source vyazovkin-1997
+ */
+export const vyazovkin: IsoconversionalMethod = (series, context) => {
+  checkSeries(vyazovkinInfo, series)
+  const levels = series.levels.length
+  const curves: LevelPhi[] = []
+  const columns = resultColumns(vyazovkinInfo, series, [], curves)
+  const integrals = series.runs.map((run) => timeIntegral(run, largestEa))
+  const enough = countProgrammes(series) >= 2
+  const grid = enough ? energyGrid(integrals, levels, context) : null
+  for (let level = 0; level < levels; level++) {
+    context.checkCancelled()
+    if (grid === null) curves.push(noCurve)
+    else if (!integrals.every((integral) => integral.reaches(level))) {
+      columns.setStatus(level, 'level-not-reached')
+      curves.push(noCurve)
+    } else {
+      const minimum = findMinimum(integrals, grid, level)
+      if (minimum.status === 'ok') {
+        const { Ea, phiMinimum, standardError, s, r2 } = minimum
+        columns.setEnergy(level, Ea, standardError, r2)
+        const phiThreshold = phiMinimum + integrals.length * (columns.t * s) ** 2
+        curves.push(phiAround(grid, level, integrals.length, Ea, columns.t * standardError, phiMinimum, phiThreshold))
+      } else {
+        columns.setStatus(level, minimum.status)
+        curves.push(phiOverRange(grid, level, integrals.length))
+      }
+    }
+    context.progress(level + 1, levels)
+  }
+  return columns.result
+}
+
+const noCurve: LevelPhi = {
+  Ea_J_per_mol: column(new Float64Array(0), 'J/mol'),
+  phi: new Float64Array(0),
+  phiMinimum: Number.NaN,
+  phiThreshold: Number.NaN,
+}
+
+type Minimum =
+  | { readonly status: Exclude<LevelStatus, 'ok'> }
+  | {
+      readonly status: 'ok'
+      readonly Ea: number
+      readonly phiMinimum: number
+      readonly standardError: number
+      /** Residual standard deviation of ln J. */
+      readonly s: number
+      readonly r2: number
+    }
+
+/** Effective temperatures that differ by less than this share are one temperature. */
+const sameTemperature = 1e-9
+
+function findMinimum(integrals: readonly TimeIntegral[], grid: EnergyGrid, level: number): Minimum {
+  const lnJ = new Float64Array(integrals.length)
+  const inverseT = new Float64Array(integrals.length)
+  const scan = Array.from(energies, (_, g) => {
+    grid.read(g, level, lnJ, inverseT)
+    return { slope: phiSlope(lnJ, inverseT), spread: relativeSpread(inverseT), phi: phi(lnJ) }
+  })
+  if (scan.every((point) => point.spread < sameTemperature)) return { status: 'minimum-flat' }
+
+  const brackets = scan.flatMap((point, g) => {
+    const next = scan[g + 1]
+    return next !== undefined && point.slope < 0 && next.slope >= 0 ? [{ g, fLower: point.slope, fUpper: next.slope }] : []
+  })
+  const [bracket, second] = brackets
+  if (bracket === undefined) return { status: 'minimum-at-bound' }
+  if (second !== undefined) return { status: 'several-minima' }
+
+  const exact = (Ea: number): void => {
+    integrals.forEach((integral, i) => {
+      const value = integral.atLevel(Ea, level)
+      lnJ[i] = value.lnJ
+      inverseT[i] = value.inverseT
+    })
+  }
+  const root = bracketedRoot(
+    (Ea) => {
+      exact(Ea)
+      return phiSlope(lnJ, inverseT)
+    },
+    energies[bracket.g] as number,
+    energies[bracket.g + 1] as number,
+    { fLower: bracket.fLower, fUpper: bracket.fUpper, relativeTolerance: 1e-12 },
+  )
+  if (root.status !== 'converged') return { status: 'minimum-flat' }
+  exact(root.x)
+  if (relativeSpread(inverseT) < sameTemperature) return { status: 'minimum-flat' }
+  const phiMinimum = phi(lnJ)
+  // At a bound Phi may fall again towards an Ea that is not meant; only where it falls below the minimum found is the answer open.
+  const [atLower, atUpper] = [scan[0], scan[scan.length - 1]]
+  if ((atLower?.phi ?? 0) < phiMinimum || (atUpper?.phi ?? 0) < phiMinimum) return { status: 'several-minima' }
+  return { status: 'ok', Ea: root.x, phiMinimum, ...linearised(root.x, lnJ, inverseT) }
+}
+
+/** Standard error in J/mol, residual standard deviation and r2 of ln J + Ea u/R against u; not finite with two runs. */
+function linearised(
+  Ea: number,
+  lnJ: Float64Array,
+  inverseT: Float64Array,
+): { readonly standardError: number; readonly s: number; readonly r2: number } {
+  const n = lnJ.length
+  const mean = (values: Float64Array): number => values.reduce((sum, value) => sum + value / n, 0)
+  const meanY = mean(lnJ)
+  const meanU = mean(inverseT)
+  let residual = 0
+  let spread = 0
+  let total = 0
+  for (let i = 0; i < n; i++) {
+    const dy = (lnJ[i] as number) - meanY
+    const du = (inverseT[i] as number) - meanU
+    residual += dy * dy
+    spread += du * du
+    total += (dy + (Ea * du) / gasConstant_J_per_mol_K) ** 2
+  }
+  const s = n > 2 ? Math.sqrt(residual / (n - 2)) : Number.NaN
+  return { s, standardError: (gasConstant_J_per_mol_K * s) / Math.sqrt(spread), r2: 1 - residual / total }
+}
+
+function relativeSpread(values: Float64Array): number {
+  const highest = values.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY)
+  const lowest = values.reduce((a, b) => Math.min(a, b), Number.POSITIVE_INFINITY)
+  return (highest - lowest) / highest
+}
