@@ -1,5 +1,6 @@
 import { KineticsError } from '../errors.ts'
 import { gaussLegendre, type QuadratureRule } from '../numerics/quadrature.ts'
+import { twoPointRule } from '../numerics/two-point-rule.ts'
 import type { TemperatureHistory } from '../series/programme.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import type { Column } from '../units/quantity.ts'
@@ -14,8 +15,9 @@ const collinearWithin_K = 1e-7
  * sample contributes nothing.
  *
  * The history is turned once into nodes: each straight piece, cut at the times of the levels and where Ea/(R T) would change by more than 6, gets a Gauss–Legendre
- * rule of as many points as keep its relative error below 1e-9 at `largestEa` (and far below that at smaller Ea). For any Ea, J is then a plain sum over
- * the nodes, and its terms are all positive, so that nothing cancels; a closed form would be a difference of two near numbers on a short or flat piece.
+ * rule of as many points as keep its relative error below 1e-9 at `largestEa`. Where samples lie so close in temperature that many nodes fall within a small
+ * change of Ea/(R T), two nodes of the same moments stand for them all (below 2e-7 at `largestEa`, and 2e-10 at a fifth of it). For any Ea, J is then a plain
+ * sum over the nodes, and its terms are all positive, so that nothing cancels; a closed form would be a difference of two near numbers on a short or flat piece.
  *
  * @param levelTime_s - from the first sample; NaN where the run does not reach the level
  * @throws KineticsError `column-length`, `not-finite`, `time-not-ascending` where the history is no history
@@ -114,6 +116,25 @@ function layNodes({ time_s, temperature_K }: TemperatureHistory, levelTime_s: Co
   const weight: number[] = []
   let lowest = Number.POSITIVE_INFINITY
 
+  // Nodes not yet laid down: successive ones within `closest` of each other.
+  let waiting = { x: [] as number[], weight: [] as number[], from: Number.NaN, to: Number.NaN }
+  const settle = (): void => {
+    const close = waiting.x.length > 2 ? twoPointRule(waiting.x, waiting.weight) : waiting
+    close.x.forEach((node, k) => {
+      lowest = Math.min(lowest, node)
+      inverseT.push(node)
+      weight.push(close.weight[k] as number)
+    })
+    waiting = { x: [], weight: [], from: Number.NaN, to: Number.NaN }
+  }
+  const add = (node: number, w: number): void => {
+    if (Math.max(waiting.to, node) - Math.min(waiting.from, node) > closest / largest) settle()
+    waiting.from = waiting.x.length === 0 ? node : Math.min(waiting.from, node)
+    waiting.to = waiting.x.length === 0 ? node : Math.max(waiting.to, node)
+    waiting.x.push(node)
+    waiting.weight.push(w)
+  }
+
   /** Nodes of one straight piece from (t, T) to (tEnd, TEnd). */
   const lay = (t: number, T: number, tEnd: number, TEnd: number): void => {
     if (!(tEnd > t)) return
@@ -124,10 +145,7 @@ function layNodes({ time_s, temperature_K }: TemperatureHistory, levelTime_s: Co
     for (let piece = 0; piece < pieces; piece++) {
       for (let k = 0; k < rule.nodes.length; k++) {
         const share = (2 * piece + 1 + (rule.nodes[k] as number)) / (2 * pieces)
-        const node = 1 / (T + (TEnd - T) * share)
-        lowest = Math.min(lowest, node)
-        inverseT.push(node)
-        weight.push(half * (rule.weights[k] as number))
+        add(1 / (T + (TEnd - T) * share), half * (rule.weights[k] as number))
       }
     }
   }
@@ -146,6 +164,7 @@ function layNodes({ time_s, temperature_K }: TemperatureHistory, levelTime_s: Co
       if (until > tb) break
       lay(t, at(t), until, at(until))
       t = until
+      settle()
       nodeEnd[level] = inverseT.length
       lowestInverseT[level] = lowest
     }
@@ -154,21 +173,22 @@ function layNodes({ time_s, temperature_K }: TemperatureHistory, levelTime_s: Co
   return { order, nodeEnd, lowestInverseT, inverseT: Float64Array.from(inverseT), weight: Float64Array.from(weight) }
 }
 
+/** Largest change of Ea/(R T) over nodes for which two may stand, at the largest Ea. */
+const closest = 0.15
+
 /** Largest change of Ea/(R T) over one application of a rule. */
 const widest = 6
 
 /**
- * Rules by the change d of the exponent that they serve: over a piece, the n-point rule errs by d^(2n) (n!)⁴/((2n + 1)((2n)!)³) relative to a constant integrand; the
+ * Rules by the change d of the exponent that they serve, up to the 8 points of `widest`: over a piece, the n-point rule errs by d^(2n) (n!)⁴/((2n + 1)((2n)!)³) relative to a constant integrand; the
  * limits keep this, times the e^d by which the integrand can exceed its mean, below 1e-9.
  */
-const rules: readonly { readonly upTo: number; readonly rule: QuadratureRule }[] = [
+const rules = [
   { upTo: 0.045, rule: gaussLegendre(2) },
   { upTo: 0.32, rule: gaussLegendre(3) },
   { upTo: 0.9, rule: gaussLegendre(4) },
   { upTo: 3, rule: gaussLegendre(6) },
-  { upTo: widest, rule: gaussLegendre(8) },
-]
+] as const
+const widestRule = gaussLegendre(8)
 
-function ruleFor(change: number): QuadratureRule {
-  return (rules.find((entry) => change <= entry.upTo) ?? (rules[rules.length - 1] as (typeof rules)[number])).rule
-}
+const ruleFor = (change: number): QuadratureRule => rules.find((entry) => change <= entry.upTo)?.rule ?? widestRule

@@ -4,7 +4,6 @@
  */
 export function linearSegments(x: ArrayLike<number>, y: ArrayLike<number>, tolerance: number): number[] {
   const n = x.length
-  const at = (values: ArrayLike<number>, i: number): number => values[i] ?? Number.NaN
   if (n < 3) return Array.from({ length: n }, (_, i) => i)
   const kept = [0]
   let start = 0
@@ -29,3 +28,5 @@ export function linearSegments(x: ArrayLike<number>, y: ArrayLike<number>, toler
   kept.push(n - 1)
   return kept
 }
+
+const at = (values: ArrayLike<number>, i: number): number => values[i] ?? Number.NaN

@@ -25,7 +25,7 @@ export const vyazovkinInfo: MethodInfo = {
  * over the runs i, j. At one conversion A·J = g(alpha) is the same for every run, so that all J are equal and Phi is n(n - 1) for error-free data.
  *
  * J is taken in closed form, (Ea/(R beta)) p(Ea/(R T)), for runs of constant heating rate, and over the measured T(t) from the first sample of the history for all
- * others; a series may mix them. The minimum is found as the root of dPhi/dEa inside a bracket of 1 to 1000 kJ/mol, whose sign is scanned in steps of 5 %.
+ * others; a series may mix them. The minimum is found as the root of dPhi/dEa inside a bracket of 1 to 1000 kJ/mol, whose sign is scanned in steps of 10 %.
  *
  * Standard error, by linearising ln Jᵢ in Ea at the root: with yᵢ = ln Jᵢ, uᵢ = -R dyᵢ/dEa (an effective 1/T) and s² = Σ(yᵢ - ȳ)²/(n - 2),
  * se(Ea) = R s/√Σ(uᵢ - ū)². r2 is that of the same linearised regression, yᵢ + Ea uᵢ/R against uᵢ. Since Phi ≈ n(n - 1) + n Σ(yᵢ - ȳ)² near its minimum, the interval
@@ -98,7 +98,7 @@ function findMinimum(integrals: readonly TimeIntegral[], grid: EnergyGrid, level
   const inverseT = new Float64Array(integrals.length)
   const scan = Array.from(energies, (_, g) => {
     grid.read(g, level, lnJ, inverseT)
-    return { slope: phiSlope(lnJ, inverseT), spread: relativeSpread(inverseT), phi: phi(lnJ) }
+    return { slope: phiSlope(lnJ, inverseT), spread: relativeSpread(inverseT) }
   })
   if (scan.every((point) => point.spread < sameTemperature)) return { status: 'minimum-flat' }
 
@@ -130,10 +130,13 @@ function findMinimum(integrals: readonly TimeIntegral[], grid: EnergyGrid, level
   exact(root.x)
   if (relativeSpread(inverseT) < sameTemperature) return { status: 'minimum-flat' }
   const phiMinimum = phi(lnJ)
+  const estimate = linearised(root.x, lnJ, inverseT)
   // At a bound Phi may fall again towards an Ea that is not meant; only where it falls below the minimum found is the answer open.
-  const [atLower, atUpper] = [scan[0], scan[scan.length - 1]]
-  if ((atLower?.phi ?? 0) < phiMinimum || (atUpper?.phi ?? 0) < phiMinimum) return { status: 'several-minima' }
-  return { status: 'ok', Ea: root.x, phiMinimum, ...linearised(root.x, lnJ, inverseT) }
+  for (const bound of [0, energies.length - 1]) {
+    grid.read(bound, level, lnJ, inverseT)
+    if (phi(lnJ) < phiMinimum) return { status: 'several-minima' }
+  }
+  return { status: 'ok', Ea: root.x, phiMinimum, ...estimate }
 }
 
 /** Standard error in J/mol, residual standard deviation and r2 of ln J + Ea u/R against u; not finite with two runs. */

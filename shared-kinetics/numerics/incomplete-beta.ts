@@ -18,8 +18,10 @@ export function lnIncompleteBeta(a: number, b: number, x: number, y: number, lnB
 const tiny = 1e-300
 const mostTerms = 100_000
 
+/** Keeps a divisor of the recurrence away from 0. */
+const kept = (value: number): number => (Math.abs(value) < tiny ? tiny : value)
+
 function continuedFraction(a: number, b: number, x: number): number {
-  const kept = (value: number): number => (Math.abs(value) < tiny ? tiny : value)
   let c = 1
   let d = 1 / kept(1 - ((a + b) * x) / (a + 1))
   let value = d
