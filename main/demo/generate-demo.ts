@@ -48,13 +48,13 @@ export function generateDemoRun(run: DemoRun, material: DemoMaterial): string {
   const rows = Math.floor((end_C - start_C) / heatingRate / run.rowInterval_s) + 1
   const integrals = material.steps.map(() => 0)
   const lines = [
-    'Series: demonstration series, invented, no real material',
+    'Series: demonstration (invented; no real material)',
     'Sample: Additive K-7',
     `Sample mass: ${run.sampleMass_mg.toFixed(3)} mg`,
     `Heating rate: ${run.statedHeatingRate_K_per_min} K/min`,
     'Gas: nitrogen',
     'Gas flow: 50 mL/min',
-    'Crucible: alumina, open',
+    'Crucible: open alumina pan',
     'Time (min),Temperature (°C),Mass (mg)',
   ]
   for (let row = 0; row < rows; row += 1) {

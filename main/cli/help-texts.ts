@@ -1,0 +1,70 @@
+import { baselineKinds } from '../../shared-kinetics/tasks/study-input.ts'
+import { methodIds } from '../../shared-kinetics/isoconversional/result.ts'
+import { signalQuantities } from '../../shared-kinetics/series/signal-quantity.ts'
+
+export const generalHelp = `rampfold <command> [paths] [options]
+
+Activation energy against conversion from thermal-analysis exports at several heating rates.
+
+Commands
+  inspect PATH…               how each file is read
+  activation PATH… --out DIR  activation energy against conversion
+  open [PATH…]                the sheet in a browser
+
+A path is a file, or a folder that stands for the exports in it.
+rampfold <command> --help tells the options of a command; --version tells the version.
+
+Exit codes: 0 done; 1 the input cannot be used; 2 the words of the call are off;
+3 with --strict, when a finding of severity stop stands.
+`
+
+const importHelp = `Reading the files (what is left out is decided and explained; see inspect)
+  --encoding WORD             utf-8, utf-16le, utf-16be, windows-1252
+  --delimiter WORD            comma, semicolon, tab, pipe, blanks
+  --decimal-sign WORD         point, comma
+  --heading-line N            line of the column names, counted from 1, or none
+  --first-data-line N         line of the first row of numbers
+  --exothermic WORD           up, down: which way an exothermic event points
+  --column WORDS              one column, by number or heading: 3=mass:mg, "HRR=heat-release", 2=:K,
+                              4=set-aside; may be given several times
+`
+
+export const inspectHelp = `rampfold inspect PATH… [options]
+
+Tells how each file was read: encoding, delimiter, decimal sign, columns with quantity and unit, metadata,
+rows, measured heating rate and what was noticed.
+
+  --json                      the same as JSON
+
+${importHelp}`
+
+export const activationHelp = `rampfold activation PATH… --out DIR [options]
+
+Works out activation energy against conversion and writes activation.json, activation.csv (with
+activation.csv.txt beside it) and activation.svg into DIR; a short table appears on the screen.
+
+  --out DIR                   where the files go; those of these names are replaced, others left alone
+  --levels SPEC               levels of conversion: first:last:step (default 0.05:0.95:0.05) or a list 0.1,0.5,0.9
+  --methods LIST              of: ${methodIds.join(', ')}
+                              (default: all that apply)
+  --heating-rates LIST        nominal heating rates in K/min, in the order of the runs
+  --signal WORD               ${signalQuantities.join(', ')}
+                              (default: the first of these that every run has)
+  --window SPEC               for all runs: 430K:870K, 156C:500C, or 10min:90min for holds
+  --baseline WORD             under heat flow: ${baselineKinds.join(', ')}
+  --seed N                    start of random numbers where a method resamples; the methods listed above do not
+  --decimal WORD              of activation.csv: point (default), comma
+  --separator WORD            of activation.csv: comma (default), semicolon (default with decimal comma), tab
+  --strict                    exit code 3 when a finding of severity stop stands (the files are written)
+  --skip-unusable             leave out files and runs that cannot be used, with a finding
+  --quiet                     no table and no progress
+
+${importHelp}`
+
+export const openHelp = `rampfold open [PATH…] [options]
+
+Opens the sheet in a browser, with the runs of the paths if there are any, and prints its address. The address
+works on this machine only; the program ends with Ctrl+C.
+
+  --no-browser                print the address and open nothing
+`

@@ -1,0 +1,106 @@
+import type { RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
+import type { RunInfo } from '../../shared-kinetics/series/run.ts'
+import { extentOf } from '../../shared-kinetics/figure/nice-axis.ts'
+import { kelvinToCelsius, perSecondToPerMinute } from '../../shared-kinetics/units/convert.ts'
+import type { InspectedFile, InspectedRun } from './commands/inspect.ts'
+
+/** What `inspect` prints of one file. */
+export function inspectText({ file, runs }: InspectedFile): string {
+  const [first] = runs
+  const decisions = first?.run.info.importDecisions ?? []
+  return [
+    file.path,
+    ...table(decisions.map(({ step, value, reason }) => [step, value, reason])),
+    ...runs.flatMap((run) => ['', ...runText(run, runs)]),
+    '',
+  ].join('\n')
+}
+
+function runText({ run: { info, columns }, result, findings }: InspectedRun, all: readonly InspectedRun[]): string[] {
+  const [coldest, hottest] = extentOf(columns.temperature_K).map(kelvinToCelsius)
+  const duration_min = columns.time_s === null ? null : ((columns.time_s.at(-1) ?? 0) - (columns.time_s[0] ?? 0)) / 60
+  const ownDecisions = all[0]?.run.info === info ? [] : info.importDecisions.filter((one) => !hasDecision(all[0]?.run.info, one))
+  const rows: string[][] = [
+    ['rows', String(info.rows), ''],
+    ['time', duration_min === null ? 'none' : `${duration_min.toFixed(2)} min`, ''],
+    ['temperature', `${coldest?.toFixed(1)} to ${hottest?.toFixed(1)} °C`, ''],
+    ...info.signals.map(({ quantity, label, fileUnit }) => [quantity, label, fileUnit === '' ? 'no unit' : `in ${fileUnit}`]),
+    ...ownDecisions.map(({ step, value, reason }) => [step, value, reason]),
+    ['heating rate', measuredText(result), nominalText(info)],
+    ...(info.initialMass_kg === null ? [] : [['sample mass', `${(info.initialMass_kg * 1e6).toPrecision(4)} mg`, '']]),
+    ...(info.exothermic === null ? [] : [['exothermic', info.exothermic, '']]),
+    ...info.metadata.map(({ key, value }) => [key, value, '']),
+  ]
+  const notes = findings.map((finding) => `  ${finding.severity}: ${finding.message}`)
+  return [`  run ${info.label}`, ...table(rows).map((line) => `  ${line}`), ...notes]
+}
+
+const hasDecision = (info: RunInfo | undefined, one: RunInfo['importDecisions'][number]): boolean =>
+  info?.importDecisions.some((other) => other.step === one.step && other.value === one.value) ?? false
+
+function measuredText(result: InspectedRun['result']): string {
+  if (result === null) return 'not measured'
+  if (result.programme === 'isothermal' && result.holdTemperature_K !== null)
+    return `hold at ${kelvinToCelsius(result.holdTemperature_K).toFixed(2)} °C`
+  if (result.programme !== 'constant-heating-rate' || result.heatingRate_K_per_min === null) return 'no constant heating rate'
+  const error = result.heatingRateStandardError_K_per_min
+  return `${result.heatingRate_K_per_min.toFixed(3)}${error === null ? '' : ` ±${error.toPrecision(1)}`} K/min, ${result.heatingRateSource ?? 'stated'}`
+}
+
+function nominalText({ nominalHeatingRate }: RunInfo): string {
+  if (nominalHeatingRate === null) return 'no nominal heating rate'
+  const { heatingRate_K_per_s, source, text } = nominalHeatingRate
+  return `nominal ${Number(perSecondToPerMinute(heatingRate_K_per_s).toPrecision(6))} K/min from the ${source}: ${text}`
+}
+
+/** Three columns, the first two as wide as they need to be. */
+function table(rows: readonly (readonly string[])[]): string[] {
+  const width = (column: number): number => Math.min(34, Math.max(0, ...rows.map((row) => row[column]?.length ?? 0)))
+  const [first, second] = [width(0), width(1)]
+  return rows.map(([a = '', b = '', c = '']) => `  ${a.padEnd(first)}  ${b.padEnd(second)}  ${c}`.trimEnd())
+}
+
+/** The same as JSON, format `rampfold.inspect/1`. */
+export function inspectJson(files: readonly InspectedFile[], refused: readonly RefusedFile[], version: string): string {
+  const content = {
+    format: 'rampfold.inspect/1',
+    program: { name: 'rampfold', version },
+    files: files.map(({ file, runs }) => ({
+      path: file.path,
+      file: file.fileName,
+      byteLength: file.bytes.byteLength,
+      runs: runs.map(runFields),
+    })),
+    refused,
+  }
+  return `${JSON.stringify(content, (_key, value: unknown) => (typeof value === 'number' && !Number.isFinite(value) ? null : value), 1)}\n`
+}
+
+function runFields({ run: { info, columns }, result, findings }: InspectedRun): Record<string, unknown> {
+  const [coldest_K, hottest_K] = extentOf(columns.temperature_K)
+  return {
+    label: info.label,
+    sha256: info.file.sha256,
+    rows: info.rows,
+    hasTime: info.hasTime,
+    start_s: columns.time_s?.[0] ?? null,
+    end_s: columns.time_s?.at(-1) ?? null,
+    coldest_K,
+    hottest_K,
+    columns: info.signals.map(({ quantity, label, fileUnit, unit }) => ({ quantity, heading: label, unit: fileUnit, heldIn: unit })),
+    decisions: info.importDecisions,
+    metadata: info.metadata,
+    initialMass_mg: info.initialMass_kg === null ? null : info.initialMass_kg * 1e6,
+    exothermic: info.exothermic,
+    nominalHeatingRate_K_per_min:
+      info.nominalHeatingRate === null ? null : perSecondToPerMinute(info.nominalHeatingRate.heatingRate_K_per_s),
+    nominalHeatingRateSource: info.nominalHeatingRate?.source ?? null,
+    programme: result?.programme ?? null,
+    heatingRate_K_per_min: result?.heatingRate_K_per_min ?? null,
+    heatingRateStandardError_K_per_min: result?.heatingRateStandardError_K_per_min ?? null,
+    heatingRateSource: result?.heatingRateSource ?? null,
+    holdTemperature_K: result?.holdTemperature_K ?? null,
+    notes: info.importNotes,
+    findings,
+  }
+}
