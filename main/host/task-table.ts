@@ -1,19 +1,25 @@
+import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
+import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import { readExport } from '../import/read-export.ts'
 import { refusedFile } from '../import/import-refusal.ts'
-import { evaluateStudy } from '../../shared-kinetics/tasks/evaluate-study.ts'
+import type { EvaluationCache } from '../../shared-kinetics/tasks/memo.ts'
+import { taskMap } from '../../shared-kinetics/tasks/task-map.ts'
 import { shareColumns } from '../study/share-columns.ts'
 import { openSavedCopy, packSavedCopy } from '../study/saved-copy.ts'
 import type { TaskTable } from './host-tasks.ts'
 
-/** What a worker can do. Each table keeps a cache of its own for the steps of an evaluation. */
-export function createTaskTable(): TaskTable {
-  const cache = new Map()
+/**
+ * What a worker can do. Each table keeps a cache of its own for the steps of an evaluation.
+ * @param importOptions - what a person says about every file that is read
+ */
+export function createTaskTable(importOptions: ImportOptions = {}): TaskTable {
+  const cache: EvaluationCache = new Map()
   return {
-    'evaluate-study': ({ study, columns }, context) => evaluateStudy(study, columns, context, cache),
+    'evaluate-study': ({ study, columns }, context) => taskMap['evaluate-study'](study, columns, context, cache),
     'import-file': ({ fileName, bytes }, context) => {
       try {
         // Out of shared memory: text decoders do not take it everywhere.
-        const { runs } = readExport(fileName, new Uint8Array(bytes), {}, context)
+        const { runs } = readExport(fileName, new Uint8Array(bytes), importOptions, context)
         return { kind: 'runs', runs: runs.map(({ info, columns }) => ({ info, columns: shareColumns(columns) })) }
       } catch (error) {
         const refused = refusedFile(error)

@@ -94,7 +94,9 @@ export async function openStudyStore(dataFolder: string, token: string, now: () 
       await mkdir(join(folder, 'columns'), { recursive: true, mode: 0o700 })
       await mkdir(join(folder, 'exports'), { recursive: true, mode: 0o700 })
       const lock = await takeStudyLock(folder, token, now)
-      return lock === null ? null : createStudyFolder(id, folder, lock)
+      if (lock === null) return null
+      await removePassingFiles(folder)
+      return createStudyFolder(id, folder, lock)
     },
     read: async (id) => {
       const document = await readDocument(id)
@@ -167,6 +169,13 @@ function createStudyFolder(id: string, folder: string, lock: StudyLock): StudyFo
       }
     },
     release: async () => lock.release(),
+  }
+}
+
+/** What a host that was killed in the middle of a write has left behind. */
+async function removePassingFiles(folder: string): Promise<void> {
+  for (const part of [folder, join(folder, 'columns'), join(folder, 'exports')]) {
+    for (const name of await readdir(part)) if (name.endsWith('.tmp')) await unlink(join(part, name)).catch(() => undefined)
   }
 }
 

@@ -48,7 +48,7 @@ function split(files: readonly UploadedFile[]): { whole: readonly UploadedFile[]
     partial: files
       .filter((file) => !isWhole(file))
       .map((file) =>
-        refused(file.fileName, `only ${file.bytes.byteLength} of its ${file.declaredBytes} bytes arrived`, 'Add the file again.'),
+        refused(file.fileName, `Only ${file.bytes.byteLength} of its ${file.declaredBytes} bytes arrived.`, 'Add the file again.'),
       ),
   }
 }
@@ -60,7 +60,7 @@ async function openCopies(
 ): Promise<{ refused: readonly RefusedFile[]; openedStudy: boolean }> {
   const [first, ...others] = copies
   if (first === undefined) return { refused: [], openedStudy: false }
-  const refusedFiles = others.map((file) => refused(file.fileName, 'another saved study was opened', 'Open one saved study at a time.'))
+  const refusedFiles = others.map((file) => refused(file.fileName, 'Another saved study was opened.', 'Open one saved study at a time.'))
   try {
     const copy = await context.pool.run('open-saved-copy', { bytes: first.bytes }, { signal })
     context.evaluation.cancel()
@@ -106,7 +106,11 @@ async function readExports(
 
 /** What the schema of a study does not take could be saved but never opened again. */
 const beyondLimits = (fileName: string): RefusedFile =>
-  refused(fileName, 'it holds more text or more columns than a study takes', 'Export the run again with fewer columns and shorter remarks.')
+  refused(
+    fileName,
+    'It holds more text or more columns than a study takes.',
+    'Export the run again with fewer columns and shorter remarks.',
+  )
 
 /** A file already in the study, or twice in one go, would count one measurement twice. */
 function withoutRepeats(
@@ -125,10 +129,10 @@ function withoutRepeats(
     if (label !== undefined) {
       repeated.set(
         name,
-        refused(name, `this file is in the study already, as ${label}`, 'Remove that run first if the file is to be read again.'),
+        refused(name, `This file is in the study already, as ${label}.`, 'Remove that run first if the file is to be read again.'),
       )
     } else if (first !== bytes) {
-      repeated.set(name, refused(name, 'the same file was added twice in one go', 'Nothing: it was added once.'))
+      repeated.set(name, refused(name, 'The same file was added twice in one go.', 'Nothing need be done: it was added once.'))
     } else {
       fresh.push(run)
     }

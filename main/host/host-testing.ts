@@ -1,0 +1,148 @@
+import { createHash } from 'node:crypto'
+import type { RunColumns, RunInfo } from '../../shared-kinetics/series/run.ts'
+import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { column } from '../../shared-kinetics/units/quantity.ts'
+import { openSavedCopy, packSavedCopy } from '../study/saved-copy.ts'
+import type { ImportedRun, TaskTable } from './host-tasks.ts'
+import type { ProgramParts } from './handlers/handler-table.ts'
+
+/* For tests of the host and its shells: runs, tasks and parts that do not depend on the importer and the kinetics. */
+
+export const sha256 = (bytes: Uint8Array | string): string => createHash('sha256').update(bytes).digest('hex')
+export const textBytes = (text: string): Uint8Array<ArrayBuffer> => new Uint8Array(Buffer.from(text))
+
+/** A run heated at one rate from 300 K, 50 rows of 10 s, mass as signal, with a NaN in it. */
+export function sampleRun(
+  fileName: string,
+  rate_K_per_min: number,
+  bytes: Uint8Array = textBytes(`${fileName} ${rate_K_per_min}`),
+): ImportedRun {
+  const rows = 50
+  const time_s = Float64Array.from({ length: rows }, (_, i) => i * 10)
+  const mass = Float64Array.from({ length: rows }, (_, i) => (i === 7 ? Number.NaN : 1e-5 * (1 - i / 100)))
+  const columns: RunColumns = {
+    time_s: column(time_s, 's'),
+    temperature_K: column(
+      time_s.map((t) => 300 + (rate_K_per_min / 60) * t),
+      'K',
+    ),
+    signals: [mass],
+  }
+  return { columns, info: sampleInfo(fileName, bytes, rows) }
+}
+
+export function sampleInfo(fileName: string, bytes: Uint8Array, rows: number): RunInfo {
+  return {
+    id: `run-${sha256(bytes).slice(0, 12)}`,
+    label: fileName.replace(/\.\w+$/, ''),
+    file: { name: fileName, sha256: sha256(bytes), byteLength: bytes.byteLength },
+    columnsKey: sha256(`columns of ${sha256(bytes)}`),
+    rows,
+    hasTime: true,
+    signals: [{ quantity: 'mass', unit: 'kg', label: 'Mass (mg)', fileUnit: 'mg' }],
+    nominalHeatingRate: null,
+    initialMass_kg: 1e-5,
+    exothermic: null,
+    metadata: [],
+    importNotes: [],
+    importDecisions: [],
+    use: true,
+    window: null,
+  }
+}
+
+const noNumbers: StudyResult = {
+  levels: [0.5],
+  signal: null,
+  signalsToChooseFrom: [],
+  runs: [],
+  profiles: [],
+  kissinger: null,
+  findings: [],
+}
+
+/**
+ * Tasks that read files of one line: `rate 10` is a run at 10 K/min, anything else is refused in line 1. Evaluating a study
+ * named `slow` goes on until it is cancelled; any other gives one result a run, with columns and a NaN.
+ */
+export function sampleTasks(counts: { evaluations: number; imports: number } = { evaluations: 0, imports: 0 }): TaskTable {
+  return {
+    'import-file': ({ fileName, bytes }, context) => {
+      counts.imports += 1
+      context.progress(1, 1)
+      const text = new TextDecoder().decode(new Uint8Array(bytes)).trimEnd()
+      const rate = /^rate ([\d.]+)/.exec(text)?.[1]
+      if (rate === undefined) {
+        const refused = { fileName, line: 1, reason: 'There is no rate.', remedy: 'Write one.' }
+        return { kind: 'refused', refused }
+      }
+      return { kind: 'runs', runs: [sampleRun(fileName, Number(rate), new Uint8Array(bytes))] }
+    },
+    'evaluate-study': async ({ study, columns }, context) => {
+      counts.evaluations += 1
+      for (let i = 0; study.runs.some((run) => run.label === 'slow'); i += 1) {
+        context.progress(i, 1_000_000)
+        context.checkCancelled()
+        await new Promise((resolve) => setTimeout(resolve, 1))
+      }
+      context.progress(1, 1)
+      return {
+        ...noNumbers,
+        levels: study.settings.levels,
+        runs: study.runs.map((run) => {
+          const held = columns.get(run.columnsKey)
+          if (held === undefined) throw new Error('columns are missing')
+          return {
+            runId: run.id,
+            label: run.label,
+            fileName: run.file.name,
+            column: 'Mass (mg)',
+            sha256: run.file.sha256,
+            signal: 'mass',
+            signalUnit: 'kg',
+            programme: 'constant-heating-rate',
+            programmeGroup: 0,
+            nominalHeatingRate_K_per_min: null,
+            heatingRate_K_per_min: 10,
+            heatingRateStandardError_K_per_min: Number.NaN,
+            heatingRateSource: 'measured',
+            holdTemperature_K: null,
+            rows: run.rows,
+            initialMass_kg: null,
+            window: { kind: 'temperature', start_K: 300, end_K: 400 },
+            peak_K: null,
+            enthalpy_J_per_g: null,
+            temperatureAtLevel_K: [Number.NaN],
+            timeAtLevel_s: [null],
+            reactionRateAtLevel_per_s: [1],
+            signalAtLevel: [1],
+            curve: {
+              time_s: new Float64Array(held.time_s ?? []),
+              temperature_K: new Float64Array(held.temperature_K),
+              signal: new Float64Array(held.signals[0] ?? []),
+              conversion: new Float64Array(),
+              reactionRate_per_s: new Float64Array(),
+              baseline: new Float64Array(),
+            },
+          }
+        }),
+      }
+    },
+    'pack-saved-copy': (copy) => packSavedCopy(copy),
+    'open-saved-copy': ({ bytes }) => openSavedCopy(new Uint8Array(bytes)),
+  }
+}
+
+/** A demo of two runs, fast one first, and exports that say what they were asked. */
+export const sampleParts: ProgramParts = {
+  demoSeries: () => ({
+    name: 'Sample demo',
+    files: [
+      { fileName: 'b fast.csv', bytes: textBytes('rate 20') },
+      { fileName: 'a slow one.csv', bytes: textBytes('rate 2') },
+    ],
+  }),
+  exportResults: ({ document, result }, format) => [
+    { fileName: `activation.${format}`, mediaType: 'text/plain', bytes: textBytes(`${document.name}, ${result.runs.length} runs`) },
+  ],
+}
