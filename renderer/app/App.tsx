@@ -1,0 +1,93 @@
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react'
+import { Button } from 'react-aria-components'
+import { ColoursContext, useServices, useStudy, useView } from '../state/services.ts'
+import { createSheetActions } from './sheet-actions.ts'
+import { Sheet } from './Sheet.tsx'
+import { storeTheme, usePaper } from './theme.ts'
+import { useFileDrop } from './use-file-drop.ts'
+import { useShortcuts } from './use-shortcuts.ts'
+
+/** The whole window. */
+export function App() {
+  const services = useServices()
+  const { session, view } = services
+  const fileInput = useRef<HTMLInputElement>(null)
+  const theme = useView((state) => state.theme)
+  const connection = useStudy((state) => state.connection)
+  const replica = useStudy((state) => state.replica)
+  const { paper, colours } = usePaper(theme)
+  const importFiles = useCallback((files: readonly File[]) => void session.importFiles(files), [session])
+  const actions = useMemo(() => createSheetActions(services, () => fileInput.current?.click()), [services])
+  const filesHangOver = useFileDrop(importFiles)
+  useShortcuts(actions)
+
+  useEffect(() => view.subscribe((now, before) => now.theme !== before.theme && storeTheme(now.theme)), [view])
+  useEffect(() => {
+    // Another window may have changed the study while this one was out of sight.
+    const onFocus = (): void => void session.refresh()
+    window.addEventListener('focus', onFocus)
+    return () => window.removeEventListener('focus', onFocus)
+  }, [session])
+
+  return (
+    <ColoursContext value={colours}>
+      <div className="window">
+        {connection.kind === 'lost' && <ConnectionLost message={connection.message} whole={replica === null} />}
+        {replica === null && connection.kind === 'connecting' && <Connecting />}
+        {replica !== null && <Sheet replica={replica} actions={actions} paper={paper} />}
+        {filesHangOver && (
+          <div className="drop-veil">
+            <p>Drop to add the runs to this study</p>
+          </div>
+        )}
+        <input
+          ref={fileInput}
+          type="file"
+          multiple
+          hidden
+          aria-label="Files to open"
+          onChange={(event) => {
+            const files = Array.from(event.target.files ?? [])
+            // The same file may be chosen again after it was mended.
+            event.target.value = ''
+            if (files.length > 0) importFiles(files)
+          }}
+        />
+      </div>
+    </ColoursContext>
+  )
+}
+
+/** Nothing to see for a moment; a word only when the moment grows long. */
+function Connecting() {
+  const [slow, setSlow] = useState(false)
+  useEffect(() => {
+    const timer = setTimeout(() => setSlow(true), 800)
+    return () => clearTimeout(timer)
+  }, [])
+  return (
+    <main className="connecting" aria-busy="true">
+      {slow && <p>Opening the study…</p>}
+    </main>
+  )
+}
+
+function ConnectionLost({ message, whole }: { readonly message: string; readonly whole: boolean }) {
+  const { session } = useServices()
+  const [trying, setTrying] = useState(false)
+  const tryAgain = (): void => {
+    setTrying(true)
+    void session.refresh().finally(() => setTrying(false))
+  }
+  return (
+    <div className={whole ? 'lost lost-whole' : 'lost'} role="alert">
+      <p>
+        <strong>Rampfold is not reachable.</strong> {message}{' '}
+        {whole ? '' : 'What you see is still here, but nothing you change is saved until it answers.'}
+      </p>
+      <Button className="button" isDisabled={trying} onPress={tryAgain}>
+        Try again
+      </Button>
+    </div>
+  )
+}

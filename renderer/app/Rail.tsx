@@ -1,0 +1,77 @@
+import { useMemo } from 'react'
+import type { StudyResult } from '../../shared-kinetics/contract/study-result.ts'
+import { decimals, formatCelsius, formatInterval, formatLevel, halfWidth, statusWords } from '../sheet/format.ts'
+import { LevelRail } from '../sheet/LevelRail.tsx'
+import { railBars } from '../sheet/rail-bars.ts'
+import type { SheetActions } from '../stages/stage-props.ts'
+import { useView } from '../state/services.ts'
+import { chosenAmong } from '../state/view-store.ts'
+
+/** The level rail with what the chosen method says at the level. */
+export function Rail({
+  result,
+  levelIndex,
+  level,
+  actions,
+}: {
+  readonly result: StudyResult
+  readonly levelIndex: number
+  readonly level: number
+  readonly actions: SheetActions
+}) {
+  const wanted = useView((state) => state.chosenMethod)
+  const chosen = chosenAmong(
+    result.profiles.map((profile) => profile.method),
+    wanted,
+  )
+  const profile = result.profiles.find((one) => one.method === chosen)
+  const bars = useMemo(
+    () => railBars(result.levels.map((_, i) => halfWidth(profile?.lower95_kJ_per_mol[i], profile?.upper95_kJ_per_mol[i]))),
+    [result, profile],
+  )
+  const Ea = decimals(profile?.Ea_kJ_per_mol[levelIndex], 1)
+  const interval = formatInterval(
+    profile?.Ea_kJ_per_mol[levelIndex],
+    profile?.lower95_kJ_per_mol[levelIndex],
+    profile?.upper95_kJ_per_mol[levelIndex],
+  )
+  const r2 = decimals(profile?.r2[levelIndex], 5)
+  const status = profile?.status[levelIndex]
+  const slowest = formatCelsius(result.runs[0]?.temperatureAtLevel_K[levelIndex])
+  const fastest = formatCelsius(result.runs.at(-1)?.temperatureAtLevel_K[levelIndex])
+  const word = status === undefined || status === 'ok' ? '' : statusWords[status]
+  const spoken = [
+    formatLevel(level),
+    Ea === '' ? word : `Ea ${Ea}${interval === '' ? '' : ` plus or minus ${interval}`} kJ/mol`,
+    slowest === '' || fastest === '' ? '' : `${slowest} to ${fastest} °C`,
+  ]
+    .filter((part) => part !== '')
+    .join(', ')
+
+  return (
+    <LevelRail levels={result.levels} index={levelIndex} bars={bars} spoken={spoken} onMove={actions.moveLevel}>
+      <p className="readout-energy">
+        {profile !== undefined && <span className="readout-method">{profile.label}</span>}
+        {Ea === '' ? (
+          <span className="is-word">{word}</span>
+        ) : (
+          <>
+            Ea <strong>{interval === '' ? Ea : `${Ea} ± ${interval}`}</strong> kJ/mol
+          </>
+        )}
+        {r2 !== '' && (
+          <>
+            {' '}
+            <span className="readout-r2">
+              r² <strong>{r2}</strong>
+            </span>
+          </>
+        )}
+      </p>
+      <p>
+        T <strong>{slowest === '' ? 'not reached' : slowest}</strong> … <strong>{fastest === '' ? 'not reached' : fastest}</strong> °C
+        <span className="soft"> slowest to fastest</span>
+      </p>
+    </LevelRail>
+  )
+}

@@ -1,0 +1,76 @@
+import { runCopyColumns, runRows } from '../stages/runs/run-rows.ts'
+import { levelColumns, levelRows } from '../stages/activation/level-rows.ts'
+import type { SheetActions } from '../stages/stage-props.ts'
+import { copyText } from '../sheet/data-table.ts'
+import { nearestLevel } from '../sheet/nearest-level.ts'
+import type { Services } from '../state/services.ts'
+import { chosenAmong, comparedAmong } from '../state/view-store.ts'
+import { copyToClipboard, download } from './files-out.ts'
+
+/** What buttons, menus and keys set going. Nothing here throws: what went wrong is said on the sheet. */
+export function createSheetActions({ session, view }: Services, openFileDialog: () => void): SheetActions {
+  const read = session.store.getState
+
+  async function saveCopy(): Promise<void> {
+    const file = await session.ask('study.save-copy', {})
+    if (file === null) return
+    download(file)
+    session.say('done', `A copy was saved as ${file.fileName}.`)
+  }
+
+  async function exportTable(): Promise<void> {
+    const answer = await session.ask('results.export', { format: 'csv' })
+    if (answer === null) return
+    for (const file of answer.files) download(file)
+    session.say('done', `Saved ${answer.files.map((file) => file.fileName).join(' and ')}.`)
+  }
+
+  async function copyTable(): Promise<void> {
+    const text = tableOfStage({ session, view })
+    if (text === null) {
+      session.say('failure', 'There is no table to copy yet.')
+      return
+    }
+    await copyToClipboard(text).then(
+      () => session.say('done', 'The table is on the clipboard, with units in its headings.'),
+      (error: unknown) => session.say('failure', error instanceof Error ? error.message : String(error)),
+    )
+  }
+
+  return {
+    change: (change) => void session.change(change),
+    openFiles: openFileDialog,
+    openDemo: () => void session.open({ name: 'study.open-demo' }),
+    newStudy: () => void session.open({ name: 'study.new' }),
+    openRecent: (studyId) => void session.open({ name: 'study.open-recent', studyId }),
+    saveCopy: () => void saveCopy(),
+    exportTable: () => void exportTable(),
+    copyTable: () => void copyTable(),
+    undo: () => void session.undo(),
+    redo: () => void session.redo(),
+    moveLevel: (index) => {
+      const level = read().evaluated?.result.levels[index]
+      if (level !== undefined) view.setState({ conversion: level })
+    },
+    pictureCopied: (failure) => {
+      if (failure === null) session.say('done', 'The picture is on the clipboard.')
+      else session.say('failure', `The picture could not be copied: ${failure}`)
+    },
+  }
+}
+
+/** The table of the stage that is shown, as tab-separated text. */
+export function tableOfStage({ session, view }: Services): string | null {
+  const { replica, evaluated } = session.store.getState()
+  const { stage, conversion, chosenMethod, comparedMethods } = view.getState()
+  if (replica === null) return null
+  const result = evaluated?.result ?? null
+  const levelIndex = nearestLevel(result?.levels ?? [], conversion)
+  const level = result?.levels[levelIndex] ?? null
+  if (stage === 'runs')
+    return replica.document.runs.length === 0 ? null : copyText(runCopyColumns(level, levelIndex), runRows(replica.document, result))
+  const available = result?.profiles.map((profile) => profile.method) ?? []
+  const chosen = chosenAmong(available, chosenMethod)
+  if (result === null || chosen === null) return null
+  return copyText(levelColumns(result, chosen, comparedAmong(available, comparedMethods, chosen)), levelRows(result))
+}

@@ -1,0 +1,29 @@
+import type { ReactNode } from 'react'
+import type { DataColumn } from './data-table.ts'
+
+/** The head of a table: quantity and, beneath it, unit. */
+export function TableHead<Row>({ columns }: { readonly columns: readonly DataColumn<Row>[] }) {
+  return (
+    <thead>
+      <tr>
+        {columns.map((column) => (
+          <th key={column.id} scope="col" className={column.numeric ? 'is-number' : undefined}>
+            <span>{column.heading}</span>
+            <span className="unit">{column.unit}</span>
+          </th>
+        ))}
+      </tr>
+    </thead>
+  )
+}
+
+/** A cell of numbers, or of the words that stand where a number is not to be had. */
+export function NumberCell({ text, children }: { readonly text: string; readonly children?: ReactNode }) {
+  const isWord = text !== '' && !/\d/.test(text)
+  return (
+    <td className={isWord ? 'is-number is-word' : 'is-number'}>
+      {text}
+      {children}
+    </td>
+  )
+}

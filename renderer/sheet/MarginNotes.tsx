@@ -1,0 +1,45 @@
+import { Button } from 'react-aria-components'
+import type { Finding } from '../../shared-kinetics/contract/study-result.ts'
+
+export const severityWords = { stop: 'Stop', caution: 'Caution', note: 'Note' } as const
+
+export const findingElementId = (finding: Finding, findings: readonly Finding[]): string => `finding-${findings.indexOf(finding)}`
+
+/** Findings of this stage as notes in the margin. */
+export function MarginNotes({
+  findings,
+  all,
+  onShow,
+}: {
+  readonly findings: readonly Finding[]
+  readonly all: readonly Finding[]
+  readonly onShow: (finding: Finding) => void
+}) {
+  return (
+    <aside className="margin" aria-labelledby="margin-title">
+      <h2 id="margin-title" className="margin-title">
+        Findings on this stage
+      </h2>
+      {findings.length === 0 && <p className="margin-empty">Nothing to remark.</p>}
+      <ul className="notes">
+        {findings.map((finding) => {
+          const id = findingElementId(finding, all)
+          return (
+            <li key={id} id={id} className={`note note-${finding.severity}`} tabIndex={-1}>
+              <h3>
+                <span className="severity">{severityWords[finding.severity]}</span> {finding.title}
+              </h3>
+              <p>{finding.message}</p>
+              <p className="basis">{finding.basis}</p>
+              {(finding.run !== null || finding.level !== null) && (
+                <Button className="link-button" onPress={() => onShow(finding)} aria-label={`Show: ${finding.title}`}>
+                  show
+                </Button>
+              )}
+            </li>
+          )
+        })}
+      </ul>
+    </aside>
+  )
+}

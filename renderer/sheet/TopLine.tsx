@@ -1,0 +1,99 @@
+import { Button, Input, Tab, TabList, TextField } from 'react-aria-components'
+import { useState, type ReactNode } from 'react'
+import type { StudySnapshot } from '../../shared-kinetics/contract/host-api.ts'
+import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
+import type { Finding, Severity } from '../../shared-kinetics/contract/study-result.ts'
+import type { SheetActions } from '../stages/stage-props.ts'
+import { count } from './format.ts'
+
+export interface TopLineProps {
+  readonly document: StudyDocument
+  readonly snapshot: StudySnapshot
+  readonly findings: readonly Finding[]
+  readonly hasRuns: boolean
+  readonly actions: SheetActions
+  readonly onFinding: (severity: Severity) => void
+  readonly mark: ReactNode
+  readonly menus: ReactNode
+}
+
+const severities = [
+  { severity: 'stop', one: 'stop', several: 'stops' },
+  { severity: 'caution', one: 'caution', several: 'cautions' },
+  { severity: 'note', one: 'note', several: 'notes' },
+] as const
+
+/** The top line: what this is, where one is, what was noticed, what can be undone. */
+export function TopLine({ document, snapshot, findings, hasRuns, actions, onFinding, mark, menus }: TopLineProps) {
+  return (
+    <header className="top-line">
+      <div className="top-study">
+        <h1 className="brand">
+          {mark}
+          Rampfold
+        </h1>
+        <StudyName name={document.name} onRename={(name) => actions.change({ kind: 'rename-study', name })} />
+        {hasRuns && <span className="run-count">{count(document.runs.length, 'run')}</span>}
+      </div>
+      {hasRuns && (
+        <TabList className="stages" aria-label="Stages">
+          <Tab id="runs" className="stage-tab">
+            Runs
+          </Tab>
+          <Tab id="activation" className="stage-tab">
+            Activation energy
+          </Tab>
+        </TabList>
+      )}
+      <div className="top-end">
+        {severities.map(({ severity, one, several }) => {
+          const n = findings.filter((finding) => finding.severity === severity).length
+          if (n === 0) return null
+          return (
+            <Button key={severity} className={`count count-${severity}`} onPress={() => onFinding(severity)}>
+              <strong>{n}</strong> {n === 1 ? one : several}
+            </Button>
+          )
+        })}
+        <Button className="text-button undo" isDisabled={snapshot.undo === null} onPress={actions.undo}>
+          {snapshot.undo === null ? 'Undo' : `Undo: ${snapshot.undo}`}
+        </Button>
+        <Button className="text-button undo" isDisabled={snapshot.redo === null} onPress={actions.redo}>
+          {snapshot.redo === null ? 'Redo' : `Redo: ${snapshot.redo}`}
+        </Button>
+        {menus}
+      </div>
+    </header>
+  )
+}
+
+/** The study's name, changed where it stands. */
+function StudyName({ name, onRename }: { readonly name: string; readonly onRename: (name: string) => void }) {
+  const [draft, setDraft] = useState<string | null>(null)
+  const commit = (): void => {
+    const next = draft?.trim() ?? ''
+    if (next !== '' && next !== name) onRename(next)
+    setDraft(null)
+  }
+  const text = draft ?? name
+  return (
+    <TextField
+      className="study-name"
+      aria-label="Name of the study"
+      value={text}
+      onChange={setDraft}
+      onBlur={commit}
+      onKeyDown={(event) => {
+        if (event.key === 'Enter') commit()
+        else if (event.key === 'Escape') setDraft(null)
+        else event.continuePropagation()
+      }}
+    >
+      {/* The hidden copy gives the field the width of its text. */}
+      <span className="study-name-size" aria-hidden="true">
+        {text}
+      </span>
+      <Input maxLength={200} />
+    </TextField>
+  )
+}

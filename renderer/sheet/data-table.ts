@@ -1,0 +1,28 @@
+/** A column of a table as data: what stands in a cell, and what is copied from it. */
+export interface DataColumn<Row> {
+  readonly id: string
+  /** Heading in one or two lines: quantity, and unit or addition. */
+  readonly heading: string
+  readonly unit: string
+  readonly numeric: boolean
+  readonly text: (row: Row) => string
+  /** For the clipboard: a number in full, a text, or null for an empty cell. */
+  readonly value: (row: Row) => number | string | null
+}
+
+/**
+ * The table as tab-separated text with units in its headings. Numbers stand in full with a decimal point; what is not to be had is an empty
+ * cell; a text that a spreadsheet would take for a formula is led by an apostrophe.
+ */
+export function copyText<Row>(columns: readonly DataColumn<Row>[], rows: readonly Row[]): string {
+  const headings = columns.map((column) => cellText(column.unit === '' ? column.heading : `${column.heading} (${column.unit})`))
+  const lines = rows.map((row) => columns.map((column) => cellText(column.value(row))))
+  return [headings, ...lines].map((cells) => cells.join('\t')).join('\n')
+}
+
+function cellText(value: number | string | null): string {
+  if (value === null) return ''
+  if (typeof value === 'number') return Number.isFinite(value) ? String(Number(value.toPrecision(8))) : ''
+  const text = value.replace(/[\t\r\n]+/g, ' ')
+  return /^[=+\-@]/.test(text) ? `'${text}` : text
+}

@@ -1,0 +1,92 @@
+import type { LevelStatus, Maybe, RunInfo, SignalQuantity, Window } from '../../shared-kinetics/contract/study-result.ts'
+import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
+
+/** A number with a fixed count of decimals and a true minus sign; the empty text where it is not to be had. */
+export function decimals(value: Maybe | undefined, count: number): string {
+  if (value === null || value === undefined || !Number.isFinite(value)) return ''
+  return value.toFixed(count).replace('-', '−')
+}
+
+export const formatLevel = (level: number): string => {
+  const text = String(Number(level.toPrecision(6)))
+  return text.length < 4 ? level.toFixed(2) : text
+}
+
+export const formatCelsius = (temperature_K: Maybe | undefined): string =>
+  temperature_K === null || temperature_K === undefined ? '' : decimals(kelvinToCelsius(temperature_K), 1)
+
+/** Half the width of an interval, where both ends are had. */
+export function halfWidth(lower: Maybe | undefined, upper: Maybe | undefined): Maybe {
+  if (lower === null || lower === undefined || upper === null || upper === undefined) return null
+  return (upper - lower) / 2
+}
+
+/** The interval about a value: `4.8`, or `−4.1 +5.6` where it is lopsided by more than a twentieth of its width. */
+export function formatInterval(value: Maybe | undefined, lower: Maybe | undefined, upper: Maybe | undefined, count = 1): string {
+  const half = halfWidth(lower, upper)
+  if (
+    half === null ||
+    value === null ||
+    value === undefined ||
+    lower === null ||
+    lower === undefined ||
+    upper === null ||
+    upper === undefined
+  )
+    return ''
+  const lopsided = Math.abs((upper + lower) / 2 - value) > half / 10
+  return lopsided ? `−${decimals(value - lower, count)} +${decimals(upper - value, count)}` : decimals(half, count)
+}
+
+/** A heating rate in K/min to as many decimals as its standard error supports, two at least and three at most. */
+export function formatHeatingRate(rate: Maybe, standardError: Maybe): string {
+  return decimals(rate, rateDecimals(standardError))
+}
+
+export function formatRateError(standardError: Maybe): string {
+  if (standardError === null) return ''
+  const count = rateDecimals(standardError)
+  return standardError < 0.5 * 10 ** -count ? `< ${(10 ** -count).toFixed(count)}` : decimals(standardError, count)
+}
+
+const rateDecimals = (standardError: Maybe): number => (standardError !== null && standardError < 0.005 ? 3 : 2)
+
+export function formatWindow(window: Window): string {
+  if (window.kind === 'temperature')
+    return `${decimals(kelvinToCelsius(window.start_K), 0)} … ${decimals(kelvinToCelsius(window.end_K), 0)} °C`
+  return `${decimals(window.start_s / 60, 1)} … ${decimals(window.end_s / 60, 1)} min`
+}
+
+export const count = (n: number, one: string, several = `${one}s`): string => `${n} ${n === 1 ? one : several}`
+
+export const signalWords: Readonly<Record<SignalQuantity, string>> = {
+  mass: 'Mass',
+  conversion: 'Conversion',
+  'heat-release': 'Heat release rate',
+  'heat-flow': 'Heat flow',
+}
+
+export const programmeWords = {
+  'constant-heating-rate': 'constant heating rate',
+  isothermal: 'isothermal',
+  general: 'general',
+} as const
+
+/** Why a level has no number, short enough for a cell. */
+export const statusWords: Readonly<Record<LevelStatus, string>> = {
+  ok: '',
+  'level-not-reached': 'not reached',
+  'too-few-programmes': 'too few programmes',
+  'rate-not-positive': 'dα/dt not positive',
+  'line-not-determined': 'line not determined',
+  'minimum-at-bound': 'minimum at bound',
+  'minimum-flat': 'minimum flat',
+  'several-minima': 'several minima',
+}
+
+export const nominalSourceWords: Readonly<Record<NonNullable<RunInfo['nominalHeatingRate']>['source'], string>> = {
+  option: 'typed',
+  heading: 'from the heading',
+  preamble: 'from the preamble',
+  name: 'from the file name',
+}

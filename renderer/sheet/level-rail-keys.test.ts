@@ -1,0 +1,59 @@
+import { describe, expect, it } from 'vitest'
+import { levelAfterKey } from './level-rail-keys.ts'
+import { nearestLevel } from './nearest-level.ts'
+import { railBars } from './rail-bars.ts'
+
+describe('keys of the level rail (WAI-ARIA slider pattern)', () => {
+  it.each([
+    ['ArrowRight', 10],
+    ['ArrowUp', 10],
+    ['ArrowLeft', 8],
+    ['ArrowDown', 8],
+    ['PageUp', 14],
+    ['PageDown', 4],
+    ['Home', 0],
+    ['End', 18],
+  ])('%s leads from level 9 of 19 to %i', (key, expected) => {
+    expect(levelAfterKey(key, 9, 19)).toBe(expected)
+  })
+
+  it('stays on the rail at both ends', () => {
+    expect([
+      levelAfterKey('ArrowLeft', 0, 19),
+      levelAfterKey('PageDown', 2, 19),
+      levelAfterKey('ArrowRight', 18, 19),
+      levelAfterKey('PageUp', 16, 19),
+    ]).toEqual([0, 0, 18, 18])
+  })
+
+  it('leaves every other key alone', () => {
+    expect(['Tab', 'a', 'Enter', ' '].map((key) => levelAfterKey(key, 3, 19))).toEqual([null, null, null, null])
+  })
+})
+
+describe('nearest level', () => {
+  it('is the closest one, the lower of two at the same distance', () => {
+    expect([
+      nearestLevel([0.25, 0.5, 0.75], 0.6),
+      nearestLevel([0.25, 0.75], 0.5),
+      nearestLevel([], 0.5),
+      nearestLevel([0.1, 0.2], 9),
+    ]).toEqual([1, 0, 0, 1])
+  })
+})
+
+describe('bars of the rail', () => {
+  it('are as tall as the interval is wide', () => {
+    expect(railBars([2, 4, 8]).map((bar) => bar.height)).toEqual([0.25, 0.5, 1])
+  })
+
+  it('are absent, not zero, where there is no interval', () => {
+    expect(railBars([null, 5])[0]).toEqual({ height: null, cut: false })
+  })
+
+  it('cut one hopeless level instead of flattening the others', () => {
+    const bars = railBars([1, 1, 1, 1, 1000])
+    expect(bars[4]).toEqual({ height: 1, cut: true })
+    expect(bars[0]?.height).toBe(0.25)
+  })
+})

@@ -1,0 +1,76 @@
+import { useMemo } from 'react'
+import { runNames, runTones } from '../../../shared-kinetics/figure/run-place.ts'
+import { phiFigure } from '../../../shared-kinetics/figure/phi-figure.ts'
+import { straightLinesAtLevel, straightLinesFigure } from '../../../shared-kinetics/figure/straight-lines-figure.ts'
+import { FigureChart } from '../../charts/FigureChart.tsx'
+import { RunMarker } from '../../charts/RunMarker.tsx'
+import { Choice } from '../../sheet/Choice.tsx'
+import { count, formatLevel } from '../../sheet/format.ts'
+import { Half } from '../../sheet/Half.tsx'
+import { useColours, useServices } from '../../state/services.ts'
+import type { ActivationProps } from './ActivationStage.tsx'
+import { readingOf } from './method-words.tsx'
+
+/** The left half: the straight lines of the chosen method, or Phi(Ea) at the level for a minimising one. */
+export function LevelEvidence(props: ActivationProps) {
+  const { result, chosen, level } = props
+  const { view } = useServices()
+  const profile = result.profiles.find((one) => one.method === chosen)
+  const minimising = profile?.evidence === 'minimum'
+  return (
+    <Half
+      side="evidence"
+      title={minimising ? `Φ(Ea) at α ${formatLevel(level)}` : 'Straight lines at each conversion'}
+      note={
+        <>
+          {profile?.label}: {readingOf(chosen)}. {count(result.runs.length, 'run')}, {count(result.levels.length, 'level')}.
+          {profile !== undefined && profile.sources.length > 0 && <span className="source"> {profile.sources.join('; ')}.</span>}
+        </>
+      }
+    >
+      <div className="controls">
+        <Choice
+          label="Method"
+          options={result.profiles.map((one) => ({ id: one.method, text: one.label }))}
+          value={chosen}
+          onChange={(chosenMethod) => view.setState({ chosenMethod })}
+        />
+      </div>
+      {minimising ? <Phi {...props} /> : <Lines {...props} />}
+      <RunLegend {...props} />
+    </Half>
+  )
+}
+
+function Lines({ result, chosen, levelIndex, actions }: ActivationProps) {
+  const colours = useColours()
+  const figure = useMemo(() => straightLinesFigure(result, chosen), [result, chosen])
+  const overlay = useMemo(() => straightLinesAtLevel(result, chosen, levelIndex), [result, chosen, levelIndex])
+  return <FigureChart figure={figure} overlay={overlay} colours={colours} onCopied={actions.pictureCopied} />
+}
+
+const noMarks = [] as const
+
+function Phi({ result, chosen, levelIndex, actions }: ActivationProps) {
+  const colours = useColours()
+  const figure = useMemo(() => phiFigure(result, chosen, levelIndex), [result, chosen, levelIndex])
+  return <FigureChart figure={figure} overlay={noMarks} colours={colours} onCopied={actions.pictureCopied} />
+}
+
+/** Each run with the temperature at which it reaches the level: the numbers behind the points. */
+function RunLegend({ result, levelIndex }: ActivationProps) {
+  const colours = useColours()
+  const names = runNames(result.runs)
+  const tones = runTones(result)
+  return (
+    <ul className="run-legend" aria-label="Runs">
+      {result.runs.map((run, i) => (
+        <li key={run.runId}>
+          <RunMarker index={i} colour={colours.run(tones[i]?.place ?? 0)} />
+          {names[i]}
+          {run.temperatureAtLevel_K[levelIndex] == null && <span className="is-word"> not reached</span>}
+        </li>
+      ))}
+    </ul>
+  )
+}

@@ -1,0 +1,61 @@
+import { memo, useMemo, type KeyboardEvent } from 'react'
+import { copyText, type DataColumn } from '../../sheet/data-table.ts'
+import { NumberCell, TableHead } from '../../sheet/DataTable.tsx'
+import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
+import { TableView } from '../../sheet/TableView.tsx'
+import type { ActivationProps } from './ActivationStage.tsx'
+import { levelColumns, levelRows, type LevelRow } from './level-rows.ts'
+
+/** Ea at every level. Up and down move the level here as on the rail; a click on a row goes there. */
+export function LevelTable({ result, chosen, compared, levelIndex, actions }: ActivationProps) {
+  const rows = useMemo(() => levelRows(result), [result])
+  const columns = useMemo(() => levelColumns(result, chosen, compared), [result, chosen, compared])
+  const onScreen = useMemo(() => columns.filter((column) => column.id !== 'status'), [columns])
+
+  const onKeyDown = (event: KeyboardEvent): void => {
+    // The table lists levels downwards, so its arrows run the other way round than the rail's.
+    const key = { ArrowDown: 'ArrowRight', ArrowUp: 'ArrowLeft', PageDown: 'PageUp', PageUp: 'PageDown', Home: 'Home', End: 'End' }[
+      event.key
+    ]
+    const target = key === undefined || event.ctrlKey || event.metaKey ? null : levelAfterKey(key, levelIndex, rows.length)
+    if (target === null) return
+    event.preventDefault()
+    actions.moveLevel(target)
+  }
+
+  return (
+    <TableView label="Table of activation energies" copied={() => copyText(columns, rows)} currentRow={levelIndex} onKeyDown={onKeyDown}>
+      <table className="data-table level-table">
+        <caption className="visually-hidden">Activation energy at every level of conversion</caption>
+        <TableHead columns={onScreen} />
+        <tbody>
+          {rows.map((row) => (
+            <Row key={row.index} row={row} columns={onScreen} current={row.index === levelIndex} onPick={actions.moveLevel} />
+          ))}
+        </tbody>
+      </table>
+    </TableView>
+  )
+}
+
+interface RowProps {
+  readonly row: LevelRow
+  readonly columns: readonly DataColumn<LevelRow>[]
+  readonly current: boolean
+  readonly onPick: (index: number) => void
+}
+
+const Row = memo(function Row({ row, columns, current, onPick }: RowProps) {
+  const [first, ...rest] = columns
+  return (
+    // oxlint-disable-next-line jsx-a11y/click-events-have-key-events, jsx-a11y/no-noninteractive-element-interactions -- the table's own keys do the same
+    <tr aria-current={current ? 'true' : undefined} onClick={() => onPick(row.index)}>
+      <th scope="row" className="is-number">
+        {first?.text(row)}
+      </th>
+      {rest.map((column) => (
+        <NumberCell key={column.id} text={column.text(row)} />
+      ))}
+    </tr>
+  )
+})

@@ -1,0 +1,22 @@
+import { Fragment, type ReactNode } from 'react'
+import type { MethodId } from '../../../shared-kinetics/contract/study-result.ts'
+
+/** How Ea is read from each method's evidence, in one line. */
+const readings: Readonly<Record<MethodId, string>> = {
+  friedman: 'ln(dα/dt) against 1000/T; the slope is −Ea/R',
+  ofw: 'ln β against 1000/T; the slope is −1.052 Ea/R',
+  kas: 'ln(β/T²) against 1000/T; the slope is −Ea/R',
+  starink: 'ln(β/T^1.92) against 1000/T; the slope is −1.0008 Ea/R',
+  vyazovkin: 'the minimum of Φ over Ea, with exp(−Ea/RT) integrated over the measured T(t)',
+  'isothermal-integral': 'ln t against 1000/T; the slope is Ea/R',
+}
+
+export const readingOf = (method: MethodId): ReactNode => raised(readings[method])
+
+/** Text whose `^1.92` is set as an exponent. */
+function raised(text: string): ReactNode {
+  return text.split(/\^([\d.]+)/).map((part, i) => {
+    const key = `${i} ${part}`
+    return i % 2 === 1 ? <sup key={key}>{part}</sup> : <Fragment key={key}>{part}</Fragment>
+  })
+}

@@ -1,0 +1,129 @@
+import { useMemo } from 'react'
+import { Button } from 'react-aria-components'
+import { signalsAtLevel, signalsFigure } from '../../../shared-kinetics/figure/signals-figure.ts'
+import { FigureChart } from '../../charts/FigureChart.tsx'
+import { Choice } from '../../sheet/Choice.tsx'
+import { count, formatLevel, signalWords } from '../../sheet/format.ts'
+import { Half } from '../../sheet/Half.tsx'
+import { useColours, useServices, useView } from '../../state/services.ts'
+import type { StageProps } from '../stage-props.ts'
+import { RunQuestions } from './RunQuestions.tsx'
+import { runColumns, runRows } from './run-rows.ts'
+import { RunsTable } from './RunsTable.tsx'
+import { WindowField } from './WindowField.tsx'
+
+/** Evidence: the signals as measured. Result: the table of runs. */
+export function RunsStage(props: StageProps) {
+  return (
+    <>
+      <Signals {...props} />
+      <Runs {...props} />
+    </>
+  )
+}
+
+function Signals({ result, levelIndex, level, actions, document }: StageProps) {
+  const { view } = useServices()
+  const colours = useColours()
+  const against = useView((state) => state.against)
+  const pointedRun = useView((state) => state.pointedRun)
+  const figure = useMemo(() => (result === null ? null : signalsFigure(result, { against })), [result, against])
+  const overlay = useMemo(() => (result === null ? [] : signalsAtLevel(result, { against }, levelIndex)), [result, against, levelIndex])
+  const pointedIndex = result?.runs.findIndex((run) => run.runId === pointedRun) ?? -1
+  const note =
+    level === null
+      ? 'As measured, window or not.'
+      : `As measured, window or not. Markers stand where each run reaches α ${formatLevel(level)}.`
+  return (
+    <Half side="evidence" title={result?.signal == null ? 'Signals' : `Signals: ${signalWords[result.signal].toLowerCase()}`} note={note}>
+      <div className="controls">
+        <Choice
+          label="Against"
+          options={[
+            { id: 'temperature', text: 'Temperature' },
+            { id: 'time', text: 'Time' },
+          ]}
+          value={against}
+          onChange={(id) => view.setState({ against: id })}
+        />
+        {result !== null && result.signalsToChooseFrom.length > 1 && (
+          <Choice
+            label="Signal"
+            options={result.signalsToChooseFrom.map((id) => ({ id, text: signalWords[id] }))}
+            value={result.signal}
+            onChange={(signal) => actions.change({ kind: 'set-signal', signal })}
+          />
+        )}
+        {result?.signal === 'heat-flow' && (
+          <Choice
+            label="Baseline"
+            options={[
+              { id: 'area-proportional', text: 'Area-proportional' },
+              { id: 'straight', text: 'Straight' },
+            ]}
+            value={document.settings.baseline}
+            onChange={(baseline) => actions.change({ kind: 'set-baseline', baseline })}
+          />
+        )}
+      </div>
+      {figure !== null && figure.marks.length > 0 ? (
+        <FigureChart
+          figure={figure}
+          overlay={overlay}
+          colours={colours}
+          emphasis={pointedIndex < 0 ? null : pointedIndex}
+          onCopied={actions.pictureCopied}
+        />
+      ) : (
+        <p className="missing">
+          {result === null
+            ? 'The signals appear here as soon as the runs have been read through.'
+            : 'No run in use could be evaluated. The findings at the right say why.'}
+        </p>
+      )}
+    </Half>
+  )
+}
+
+function Runs({ result, levelIndex, level, actions, document }: StageProps) {
+  const { view } = useServices()
+  const colours = useColours()
+  const pointedRun = useView((state) => state.pointedRun)
+  const rows = useMemo(() => runRows(document, result), [document, result])
+  const columns = useMemo(() => runColumns(level, levelIndex), [level, levelIndex])
+  return (
+    <Half
+      side="result"
+      title="Runs"
+      note={seriesNote(rows.length, result === null ? null : new Set(result.runs.map((run) => run.programmeGroup)).size)}
+    >
+      <div className="controls">
+        <WindowField window={document.settings.window} onSet={(window) => actions.change({ kind: 'set-window', window })} />
+        <div className="controls-end">
+          <Button className="text-button" onPress={actions.openFiles}>
+            Open files…
+          </Button>
+          <Button className="text-button" onPress={actions.copyTable}>
+            Copy table
+          </Button>
+        </div>
+      </div>
+      <RunQuestions document={document} result={result} onChange={actions.change} />
+      <RunsTable
+        rows={rows}
+        columns={columns}
+        level={level}
+        levelIndex={levelIndex}
+        pointedRun={pointedRun}
+        colours={colours}
+        onPoint={(run) => view.setState({ pointedRun: run })}
+        onChange={actions.change}
+      />
+    </Half>
+  )
+}
+
+function seriesNote(runs: number, programmes: number | null): string {
+  if (programmes === null) return count(runs, 'run')
+  return `${count(runs, 'run')}, ${count(programmes, 'distinct programme')} in use. Heating rates are measured: a line through T against t, from α 0.02 to 0.98.`
+}

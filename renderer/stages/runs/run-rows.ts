@@ -1,0 +1,136 @@
+import { runTones } from '../../../shared-kinetics/figure/run-place.ts'
+import type { StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
+import type { Finding, RunInfo, RunResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { kelvinToCelsius, perSecondToPerMinute } from '../../../shared-kinetics/units/convert.ts'
+import type { DataColumn } from '../../sheet/data-table.ts'
+import {
+  decimals,
+  formatCelsius,
+  formatHeatingRate,
+  formatLevel,
+  formatRateError,
+  formatWindow,
+  nominalSourceWords,
+  programmeWords,
+} from '../../sheet/format.ts'
+
+/** One run of the study: as imported, and as evaluated where it was used and could be. */
+export interface RunRow {
+  readonly run: RunInfo
+  readonly result: RunResult | null
+  /** Colour place and marker in every chart; null for a run that is not drawn. */
+  readonly tone: { readonly place: number; readonly index: number } | null
+  /** Why a used run was not evaluated. */
+  readonly unusable: Finding | null
+}
+
+/** Evaluated runs first, slowest programme first as in every chart, then the others as they were added. */
+export function runRows(document: StudyDocument, result: StudyResult | null): readonly RunRow[] {
+  const tones = result === null ? [] : runTones(result)
+  const evaluated = (result?.runs ?? []).flatMap((one, i): RunRow[] => {
+    const run = document.runs.find((candidate) => candidate.id === one.runId)
+    return run === undefined || !run.use ? [] : [{ run, result: one, tone: tones[i] ?? null, unusable: null }]
+  })
+  const shown = new Set(evaluated.map((row) => row.run.id))
+  const others = document.runs
+    .filter((run) => !shown.has(run.id))
+    .map((run): RunRow => ({ run, result: null, tone: null, unusable: run.use ? unusableFinding(result, run) : null }))
+  return [...evaluated, ...others]
+}
+
+const unusableFinding = (result: StudyResult | null, run: RunInfo): Finding | null =>
+  result?.findings.find((finding) => finding.run === run.id && finding.code === 'run-unusable') ?? null
+
+/** What stands in the table of runs and what is copied from it; the last column follows the level rail. */
+export function runColumns(level: number | null, levelIndex: number): readonly DataColumn<RunRow>[] {
+  return [
+    words('label', 'Run', (row) => row.run.label),
+    {
+      ...numbers(
+        'measured',
+        'Heating rate measured',
+        'K/min',
+        (row) => measuredText(row.result),
+        (row) => row.result?.heatingRate_K_per_min ?? null,
+      ),
+    },
+    numbers(
+      'measured-error',
+      '± standard error',
+      'K/min',
+      (row) => formatRateError(row.result?.heatingRateStandardError_K_per_min ?? null),
+      (row) => row.result?.heatingRateStandardError_K_per_min ?? null,
+    ),
+    numbers('nominal', 'nominal', 'K/min', nominalText, nominal_K_per_min),
+    words('programme', 'Programme', (row) => (row.result === null ? '' : programmeWords[row.result.programme])),
+    numbers('mass', 'Mass', 'mg', (row) => decimals(mass_mg(row), 2), mass_mg),
+    numbers(
+      'rows',
+      'Rows',
+      '',
+      (row) => String(row.run.rows),
+      (row) => row.run.rows,
+    ),
+    words('window', 'Window', (row) => (row.result === null ? '' : formatWindow(row.result.window))),
+    numbers(
+      'peak',
+      'Peak',
+      '°C',
+      (row) => formatCelsius(row.result?.peak_K),
+      (row) => celsius(row.result?.peak_K ?? null),
+    ),
+    numbers(
+      'level',
+      level === null ? 'T at α' : `T at α ${formatLevel(level)}`,
+      '°C',
+      (row) => formatCelsius(row.result?.temperatureAtLevel_K[levelIndex]),
+      (row) => celsius(row.result?.temperatureAtLevel_K[levelIndex] ?? null),
+    ),
+  ]
+}
+
+/** What the clipboard gets besides what stands on the screen. */
+export const runCopyColumns = (level: number | null, levelIndex: number): readonly DataColumn<RunRow>[] => [
+  ...runColumns(level, levelIndex),
+  words('use', 'Use', (row) => (row.run.use ? 'yes' : 'no')),
+  words('file', 'File', (row) => row.run.file.name),
+]
+
+function measuredText(result: RunResult | null): string {
+  if (result === null) return ''
+  if (result.programme === 'isothermal') return `held at ${formatCelsius(result.holdTemperature_K)} °C`
+  if (result.heatingRateSource !== null && result.heatingRateSource !== 'measured') return 'not measured'
+  return formatHeatingRate(result.heatingRate_K_per_min, result.heatingRateStandardError_K_per_min)
+}
+
+function nominalText(row: RunRow): string {
+  const value = nominal_K_per_min(row)
+  return value === null ? '' : String(Number(value.toPrecision(4)))
+}
+
+export function nominalSource(row: RunRow): string {
+  const nominal = row.run.nominalHeatingRate
+  return nominal === null ? '' : `${nominalSourceWords[nominal.source]}: ${nominal.text}`
+}
+
+const nominal_K_per_min = (row: RunRow): number | null =>
+  row.run.nominalHeatingRate === null ? null : perSecondToPerMinute(row.run.nominalHeatingRate.heatingRate_K_per_s)
+const mass_mg = (row: RunRow): number | null => (row.run.initialMass_kg === null ? null : row.run.initialMass_kg * 1e6)
+const celsius = (temperature_K: number | null): number | null => (temperature_K === null ? null : kelvinToCelsius(temperature_K))
+
+const words = (id: string, heading: string, text: (row: RunRow) => string): DataColumn<RunRow> => ({
+  id,
+  heading,
+  unit: '',
+  numeric: false,
+  text,
+  value: text,
+})
+
+const numbers = (
+  id: string,
+  heading: string,
+  unit: string,
+  text: DataColumn<RunRow>['text'],
+  value: DataColumn<RunRow>['value'],
+): DataColumn<RunRow> => ({ id, heading, unit, numeric: true, text, value })

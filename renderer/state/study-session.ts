@@ -1,0 +1,227 @@
+import { createStore, type StoreApi } from 'zustand/vanilla'
+import type {
+  HostEvent,
+  HostTransport,
+  RequestAnswers,
+  RequestInput,
+  RequestName,
+  StudySnapshot,
+} from '../../shared-kinetics/contract/host-api.ts'
+import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
+import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
+import { HostUnreachable } from '../transport/host-unreachable.ts'
+import { createEvaluator } from './evaluator.ts'
+import { importFiles } from './import-files.ts'
+import { rebased, replicaOf, withChange, withFirstAnswered } from './replica.ts'
+import { initialStudyState, type StudyState } from './study-state.ts'
+
+/** Everything a person can do to the study from this window. Every promise settles without throwing: what went wrong is in the store. */
+export interface StudySession {
+  readonly store: StoreApi<StudyState>
+  start(): Promise<void>
+  /** Shows the change at once and sends it; calls are sent one after the other. */
+  change(change: StudyChange): Promise<void>
+  undo(): Promise<void>
+  redo(): Promise<void>
+  open(request: OpenRequest): Promise<void>
+  importFiles(files: readonly File[]): Promise<void>
+  cancelImport(): Promise<void>
+  cancelEvaluation(): Promise<void>
+  evaluateAgain(): Promise<void>
+  /** The answer, or null when it could not be had (the store then says why). */
+  ask<Name extends 'study.save-copy' | 'results.export'>(name: Name, input: AskInput<Name>): Promise<RequestAnswers[Name] | null>
+  readRecent(): Promise<void>
+  refresh(): Promise<void>
+  dismissRefused(): void
+  dismissNotice(): void
+  say(kind: 'failure' | 'done', text: string): void
+  stop(): void
+}
+
+export type OpenRequest =
+  | { readonly name: 'study.new' }
+  | { readonly name: 'study.open-demo' }
+  | { readonly name: 'study.open-recent'; readonly studyId: string }
+
+/** The revision is the session's own business. */
+type AskInput<Name extends RequestName> = Omit<RequestInput<Name>, 'revision'>
+
+/** A change that meets newer studies again and again is given up after so many tries. */
+const triesOnConflict = 5
+
+export function createStudySession(transport: HostTransport): StudySession {
+  const store = createStore<StudyState>(() => initialStudyState)
+  const set = (part: Partial<StudyState>): void => store.setState(part)
+  const get = store.getState
+  const evaluator = createEvaluator(transport, store, refresh)
+  let steps: Promise<void> = Promise.resolve()
+  let waitingSteps = 0
+  let importControl: AbortController | null = null
+  let unsubscribe: (() => void) | null = null
+
+  /** Adds a step to the one line in which everything that needs the newest revision waits. */
+  function inOrder(step: () => Promise<void>): Promise<void> {
+    waitingSteps += 1
+    steps = steps.then(async () => {
+      try {
+        await step()
+      } catch (error) {
+        await explain(error)
+      }
+      waitingSteps -= 1
+      if (waitingSteps === 0) evaluator.wanted()
+    })
+    return steps
+  }
+
+  function adopt(snapshot: StudySnapshot): void {
+    const { replica, evaluated } = get()
+    if (replica !== null && snapshot.document.id === replica.confirmed.document.id && snapshot.revision < replica.confirmed.revision) return
+    const sameStudy = evaluated?.studyId === snapshot.document.id
+    const next = replica === null ? replicaOf(snapshot) : rebased(replica, snapshot)
+    set({ replica: next, connection: { kind: 'ready' }, ...(sameStudy ? {} : { evaluated: null }) })
+  }
+
+  async function explain(error: unknown): Promise<void> {
+    if (error instanceof Cancelled) return
+    if (error instanceof HostUnreachable) {
+      set({ connection: { kind: 'lost', message: error.message } })
+      return
+    }
+    set({ notice: { kind: 'failure', text: error instanceof Error ? error.message : String(error) } })
+  }
+
+  const isConflict = (error: unknown): boolean => error instanceof KineticsError && error.code === 'revision-conflict'
+  const revision = (): number => get().replica?.confirmed.revision ?? 0
+
+  async function sendChange(change: StudyChange): Promise<void> {
+    for (let tries = 1; ; tries += 1) {
+      try {
+        const snapshot = await transport.call('study.change', { revision: revision(), change })
+        settleFirst(snapshot)
+        return
+      } catch (error) {
+        if (error instanceof HostUnreachable) throw error
+        const current = await transport.call('study.read', {})
+        if (!isConflict(error) || tries >= triesOnConflict) {
+          settleFirst(current)
+          throw error
+        }
+        adopt(current)
+      }
+    }
+  }
+
+  function settleFirst(snapshot: StudySnapshot): void {
+    const { replica } = get()
+    if (replica !== null) set({ replica: withFirstAnswered(replica, snapshot), connection: { kind: 'ready' } })
+  }
+
+  async function step(name: 'study.undo' | 'study.redo'): Promise<void> {
+    try {
+      adopt(await transport.call(name, { revision: revision() }))
+    } catch (error) {
+      if (!isConflict(error)) throw error
+      adopt(await transport.call('study.read', {}))
+      set({
+        notice: { kind: 'failure', text: 'The study was changed in another window meanwhile. It has been read again; nothing was undone.' },
+      })
+    }
+  }
+
+  function refresh(): Promise<void> {
+    return inOrder(async () => {
+      const snapshot = await transport.call('study.read', {})
+      const { connection, replica } = get()
+      // After a lost connection the host may be a new process whose count of revisions starts again.
+      if (connection.kind === 'ready') adopt(snapshot)
+      else set({ replica: replicaOf(snapshot, replica?.pending ?? []), connection: { kind: 'ready' } })
+    })
+  }
+
+  function hear(event: HostEvent): void {
+    if (event.kind === 'study-changed') {
+      if (event.revision > revision() && waitingSteps === 0) void refresh()
+      return
+    }
+    if (event.kind === 'not-saved') {
+      set({ notice: { kind: 'failure', text: event.message } })
+      return
+    }
+    if (event.work === 'evaluate') evaluator.heard(event)
+    else if (get().importing?.phase === 'reading') {
+      set({ importing: { phase: 'reading', what: event.what, done: event.done, total: event.total } })
+    }
+  }
+
+  return {
+    store,
+    async start() {
+      unsubscribe ??= transport.subscribe(hear)
+      await refresh()
+      await this.readRecent()
+    },
+    change(change) {
+      const { replica } = get()
+      if (replica === null) return Promise.resolve()
+      set({ replica: withChange(replica, change) })
+      return inOrder(async () => sendChange(change))
+    },
+    undo: () => inOrder(async () => step('study.undo')),
+    redo: () => inOrder(async () => step('study.redo')),
+    open: (request) =>
+      inOrder(async () => {
+        const answer =
+          request.name === 'study.open-recent'
+            ? await transport.call('study.open-recent', { studyId: request.studyId })
+            : await transport.call(request.name, {})
+        set({ refused: [], notice: null })
+        adopt(answer)
+      }),
+    async importFiles(files) {
+      if (importControl !== null) {
+        set({ notice: { kind: 'failure', text: 'Files are being read already. Wait until they are in, or cancel.' } })
+        return
+      }
+      importControl = new AbortController()
+      try {
+        const answer = await importFiles(transport, files, importControl.signal, (importing) => set({ importing }))
+        set({ refused: answer.refused })
+        if (answer.snapshot !== null) adopt(answer.snapshot)
+        evaluator.wanted()
+      } catch (error) {
+        await explain(error)
+      } finally {
+        importControl = null
+        set({ importing: null })
+      }
+    },
+    async cancelImport() {
+      importControl?.abort()
+      if (get().importing?.phase === 'reading') await transport.call('work.cancel', { work: 'import' }).then(undefined, explain)
+    },
+    cancelEvaluation: () => evaluator.cancel(),
+    async evaluateAgain() {
+      evaluator.again()
+    },
+    async ask<Name extends 'study.save-copy' | 'results.export'>(name: Name, input: AskInput<Name>) {
+      let answer: RequestAnswers[Name] | null = null
+      await inOrder(async () => {
+        const full = name === 'results.export' ? { ...input, revision: revision() } : input
+        answer = await transport.call(name, full as RequestInput<Name>)
+      })
+      return answer
+    },
+    async readRecent() {
+      await transport.call('study.recent', {}).then(({ studies }) => set({ recent: studies }), explain)
+    },
+    refresh,
+    dismissRefused: () => set({ refused: [] }),
+    dismissNotice: () => set({ notice: null }),
+    say: (kind, text) => set({ notice: { kind, text } }),
+    stop() {
+      unsubscribe?.()
+      unsubscribe = null
+    },
+  }
+}

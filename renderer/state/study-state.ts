@@ -1,0 +1,55 @@
+import type { RecentStudy, RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
+import type { StudyResult } from '../../shared-kinetics/contract/study-result.ts'
+import type { Replica } from './replica.ts'
+
+export type Connection = { readonly kind: 'connecting' } | { readonly kind: 'ready' } | { readonly kind: 'lost'; readonly message: string }
+
+export type Evaluation =
+  | { readonly kind: 'settled' }
+  | { readonly kind: 'running'; readonly done: number; readonly total: number; readonly what: string }
+  | { readonly kind: 'stopped' }
+  | { readonly kind: 'failed'; readonly message: string }
+
+/** Files on their way in: first sent (bytes), then read by the host (its own count). */
+export interface ImportWork {
+  readonly phase: 'sending' | 'reading'
+  readonly what: string
+  readonly done: number
+  readonly total: number
+}
+
+export interface Evaluated {
+  readonly studyId: string
+  readonly revision: number
+  readonly result: StudyResult
+}
+
+/** Document and results as this window knows them; what is looked at and how is in `view-store`. */
+export interface StudyState {
+  readonly connection: Connection
+  readonly replica: Replica | null
+  readonly evaluated: Evaluated | null
+  readonly evaluation: Evaluation
+  readonly importing: ImportWork | null
+  readonly refused: readonly RefusedFile[]
+  /** One sentence about the last thing that went wrong or was done; null when dismissed. */
+  readonly notice: { readonly kind: 'failure' | 'done'; readonly text: string } | null
+  readonly recent: readonly RecentStudy[]
+}
+
+export const initialStudyState: StudyState = {
+  connection: { kind: 'connecting' },
+  replica: null,
+  evaluated: null,
+  evaluation: { kind: 'settled' },
+  importing: null,
+  refused: [],
+  notice: null,
+  recent: [],
+}
+
+/** Whether the results on the screen belong to an earlier state of the study. */
+export function isStale(state: StudyState): boolean {
+  if (state.evaluated === null || state.replica === null) return false
+  return state.replica.pending.length > 0 || state.evaluated.revision !== state.replica.confirmed.revision
+}

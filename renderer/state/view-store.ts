@@ -1,0 +1,50 @@
+import { createStore } from 'zustand/vanilla'
+import type { MethodId } from '../../shared-kinetics/contract/study-result.ts'
+
+export type Stage = 'runs' | 'activation'
+export type Theme = 'system' | 'light' | 'dark'
+
+/** What is looked at and how. Never part of the study, never undone. */
+export interface ViewState {
+  readonly stage: Stage
+  /** The conversion looked at; the level nearest to it is the current one, so that it survives a change of levels. */
+  readonly conversion: number
+  /** The method whose evidence, table and interval are shown; null takes the first of `preferredMethods` that applies. */
+  readonly chosenMethod: MethodId | null
+  /** Methods drawn beside the chosen one; null takes Friedman where it applies. */
+  readonly comparedMethods: readonly MethodId[] | null
+  readonly against: 'temperature' | 'time'
+  /** The run that a finding or a row points at. */
+  readonly pointedRun: string | null
+  readonly theme: Theme
+}
+
+export const initialViewState: ViewState = {
+  stage: 'runs',
+  conversion: 0.5,
+  chosenMethod: null,
+  comparedMethods: null,
+  against: 'temperature',
+  pointedRun: null,
+  theme: 'system',
+}
+
+export const createViewStore = () => createStore<ViewState>(() => initialViewState)
+export type ViewStore = ReturnType<typeof createViewStore>
+
+const preferredMethods: readonly MethodId[] = ['starink', 'vyazovkin', 'kas', 'isothermal-integral', 'friedman', 'ofw']
+
+/** The chosen method among those that gave a profile; null where none did. */
+export function chosenAmong(available: readonly MethodId[], wanted: MethodId | null): MethodId | null {
+  if (wanted !== null && available.includes(wanted)) return wanted
+  return preferredMethods.find((method) => available.includes(method)) ?? available[0] ?? null
+}
+
+/** The methods drawn beside the chosen one, in the order in which methods are listed. */
+export function comparedAmong(
+  available: readonly MethodId[],
+  wanted: readonly MethodId[] | null,
+  chosen: MethodId | null,
+): readonly MethodId[] {
+  return available.filter((method) => method !== chosen && (wanted ?? ['friedman', 'starink']).includes(method))
+}

@@ -1,0 +1,7 @@
+/** What a screen or a file needs to know of results; types only, so that nothing of the numerics comes with them. */
+export type { LevelStatus, MethodId } from '../isoconversional/result.ts'
+export type { Finding, FindingCode, Severity } from '../review/finding.ts'
+export type { NominalSource, RunInfo, SignalInfo, Window } from '../series/run.ts'
+export type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
+export type { AnalysisSettings, BaselineKind } from '../tasks/study-input.ts'
+export type { KissingerResult, LineResult, Maybe, PhiResult, ProfileResult, RunResult, StudyResult } from '../tasks/study-result.ts'
