@@ -117,8 +117,9 @@ function headingsAbove(
   const candidate = nearestIsUnits ? next : nearest
   if (options.headingLine === 'none' || candidate === undefined) return { headingLine: null, headings: [], unitLine, units }
   const headings = namesOf(candidate)
-  // A `key;value` line of the preamble above a unit row is no heading: it names fewer columns than the units do.
-  if (!isRowOfNames(headings, dialect) || (nearestIsUnits && headings.length < units.length)) {
+  // A `key: value` or `key;value` line of the preamble above a unit row is no heading: it has a colon, or fewer cells than the units.
+  const isEntry = /:(?:\s|$)/.test(headings[0] ?? '') || headings.length < units.length
+  if (!isRowOfNames(headings, dialect) || (nearestIsUnits && isEntry)) {
     return { headingLine: null, headings: [], unitLine, units }
   }
   return { headingLine: candidate, headings, unitLine, units }

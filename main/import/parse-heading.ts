@@ -90,6 +90,7 @@ function commaUnit(heading: string): Parts | null {
 /** A unit as the last words, or glued to the name: `heat_flow_W_per_g`, `Temp. in °C`, `Mass%`. */
 function trailingUnit(heading: string): Parts | null {
   const words = heading.split(/[\s_]+/)
+  let unknown: Parts | null = null
   for (const count of [3, 2, 1]) {
     if (words.length <= count) continue
     const unitText = words.slice(-count).join(' ')
@@ -98,16 +99,23 @@ function trailingUnit(heading: string): Parts | null {
       .slice(0, -count)
       .join(' ')
       .replace(/\s+in$/i, '')
-    if (unit !== null && unit.word !== '1' && fits(name, unit)) return { name, unit, unitText }
+    if (unit === null || unit.word === '1') continue
+    const fit = fits(name, unit)
+    // In `Sample mass %` the unit is `%` and not `mass %`: a name that is known counts for more.
+    if (fit === 'known') return { name, unit, unitText }
+    if (fit === 'unknown name') unknown ??= { name, unit, unitText }
   }
+  if (unknown !== null) return unknown
   const glued = /^(.*[A-Za-z.)])(%|\u00b0[CFK])$/.exec(heading)
   const unit = glued === null ? null : unitOf(glued[2] ?? '')
   return glued === null || unit === null ? null : { name: glued[1] ?? '', unit, unitText: glued[2] ?? '' }
 }
 
 /** A single letter at the end of a name is a unit only where the name asks for one of its kind: `Temperature C`, not `Sample C`. */
-function fits(name: string, unit: FileUnit): boolean {
+function fits(name: string, unit: FileUnit): 'known' | 'unknown name' | 'no' {
   const { quantity } = quantityOfName(name, unit)
-  if (quantity === 'other' || quantity === 'derivative') return !/^[a-z]$/i.test(unit.word) && unit.dimension !== 'temperature'
-  return dimensionsOf[quantity].includes(unit.dimension)
+  if (quantity === 'other' || quantity === 'derivative') {
+    return !/^[a-z]$/i.test(unit.word) && unit.dimension !== 'temperature' ? 'unknown name' : 'no'
+  }
+  return dimensionsOf[quantity].includes(unit.dimension) ? 'known' : 'no'
 }
