@@ -18,6 +18,10 @@ export const sources = {
   'savitzky-golay-1964': 'A. Savitzky, M. J. E. Golay, Anal. Chem. 36 (1964) 1627',
   'cleveland-1979': 'W. S. Cleveland, J. Am. Stat. Assoc. 74 (1979) 829 (local regression)',
   'fritsch-carlson-1980': 'F. N. Fritsch, R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238',
+  'barlow-1972': 'R. E. Barlow et al., Statistical Inference under Order Restrictions (1972), ch. 1 (isotonic regression)',
+  'gasser-1986': 'T. Gasser, L. Sroka, C. Jennen-Steinmetz, Biometrika 73 (1986) 625 (noise from differences between neighbours)',
+  'hemminger-sarge-1991': 'W. F. Hemminger, S. M. Sarge, J. Therm. Anal. 37 (1991) 1455 (baselines under a peak)',
+  'vyazovkin-2001': 'S. Vyazovkin, J. Comput. Chem. 22 (2001) 178 (integrals over small steps of conversion)',
 } as const
 
 export type SourceKey = keyof typeof sources

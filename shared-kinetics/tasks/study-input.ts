@@ -1,5 +1,5 @@
 import type { MethodId } from '../isoconversional/result.ts'
-import type { RunInfo, Window } from '../series/run.ts'
+import type { ImportNote, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
 
 export const baselineKinds = ['area-proportional', 'straight'] as const
@@ -25,4 +25,6 @@ export interface AnalysisSettings {
 export interface StudyInput {
   readonly runs: readonly RunInfo[]
   readonly settings: AnalysisSettings
+  /** Notes that belong to no run: files that were left out on request. */
+  readonly importNotes?: readonly ImportNote[]
 }

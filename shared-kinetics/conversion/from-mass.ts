@@ -1,0 +1,40 @@
+import { KineticsError } from '../errors.ts'
+import { noiseOf } from '../signal/noise.ts'
+import type { Column } from '../units/quantity.ts'
+import type { Converted } from './converted.ts'
+import { valueAtEnd } from './plateau.ts'
+import { curveFromExtent } from './smooth-curve.ts'
+
+/** A change of mass below so many standard deviations of the noise is none. */
+const smallestChange = 10
+
+/**
+ * Conversion from mass: α = (m start - m) / (m start - m end), with the masses of the plateaus at the ends of the window (or, where there is no plateau, of the
+ * line through the outermost rows). A gain of mass works alike.
+ *
+ * @param mass - in kg or as a fraction
+ * @throws KineticsError `empty-window` where the mass does not change inside the window
+ * @source ictac-2011 (definition of α)
+ */
+export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: Float64Array, label: string): Converted {
+  const noise = noiseOf(time_s, mass, 0, mass.length - 1)
+  const start = valueAtEnd(time_s, mass, 'start', noise)
+  const end = valueAtEnd(time_s, mass, 'end', noise)
+  const change = start - end
+  if (!(Math.abs(change) > smallestChange * noise) || Math.abs(change) < 1e-6 * Math.abs(start)) {
+    throw new KineticsError(
+      'empty-window',
+      `${label}: the mass does not change inside the window. Move the window to where the reaction is, or choose another signal.`,
+      { run: label, massAtStart: start, massAtEnd: end },
+    )
+  }
+  return {
+    curve: curveFromExtent(
+      time_s,
+      temperature_K,
+      mass.map((value) => (start - value) / change),
+    ),
+    baseline: null,
+    area: Number.NaN,
+  }
+}

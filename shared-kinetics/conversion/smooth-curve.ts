@@ -1,0 +1,124 @@
+import { isotonic } from '../signal/isotonic.ts'
+import { localPolynomial, localPolynomialAt, type LocalPolynomialOptions } from '../signal/local-polynomial.ts'
+import { lowerBound } from '../signal/lower-bound.ts'
+import { correlatedNoiseOf } from '../signal/noise.ts'
+import { smoothingHalfWidth } from '../signal/smoothing-width.ts'
+import type { RowRange } from '../series/main-heating.ts'
+import { column, type Column } from '../units/quantity.ts'
+
+/**
+ * Conversion of one run inside its window as a smooth curve: value and slope at each sample, from which it can be read anywhere. All columns are as long as the
+ * window has rows.
+ */
+export interface ConversionCurve {
+  readonly time_s: Column<'s'>
+  readonly temperature_K: Column<'K'>
+  readonly conversion: Column<'1'>
+  readonly reactionRate_per_s: Column<'1/s'>
+  /** What was smoothed: conversion itself, or its rate. */
+  readonly measured: { readonly kind: 'extent' | 'rate'; readonly values: Float64Array }
+  readonly smoothing: LocalPolynomialOptions
+  /** Standard deviation of the noise of `measured`. */
+  readonly noise: number
+  /** Time the reaction would take at its largest rate. */
+  readonly duration_s: number
+  /** Rows between conversion 0.02 and 0.98. */
+  readonly reaction: RowRange
+}
+
+/** Noise is looked for up to this share of the duration, in which a curve is as good as a cubic. */
+const widestNoiseStride = 0.01
+const fewestPoints = 9
+
+/**
+ * Curve from samples of the conversion itself (from mass, or a conversion column): local cubics, whose slope is the reaction rate.
+ *
+ * @param conversion - may be noisy, and may pass a little below 0 and above 1
+ */
+export function curveFromExtent(time_s: Column<'s'>, temperature_K: Column<'K'>, conversion: Float64Array): ConversionCurve {
+  const shape = shapeOf(time_s, conversion)
+  const noise = correlatedNoiseOf(time_s, conversion, shape.reaction.first, shape.reaction.last, shape.widestStride)
+  const smoothing = smoothingFor('extent', noise, shape)
+  const { value, slope } = localPolynomial(time_s, conversion, smoothing)
+  return {
+    time_s,
+    temperature_K,
+    conversion: column(value, '1'),
+    reactionRate_per_s: column(slope, '1/s'),
+    measured: { kind: 'extent', values: conversion },
+    smoothing,
+    noise,
+    duration_s: shape.duration,
+    reaction: shape.reaction,
+  }
+}
+
+/**
+ * Curve from samples of the reaction rate and their integral (from heat flow or heat release): the integral is smooth as it is, the rate is smoothed by local
+ * cubics.
+ *
+ * @param rate - dα/dt, its integral over the window is 1
+ * @param conversion - that integral
+ */
+export function curveFromRate(
+  time_s: Column<'s'>,
+  temperature_K: Column<'K'>,
+  rate: Float64Array,
+  conversion: Float64Array,
+): ConversionCurve {
+  const shape = shapeOf(time_s, conversion)
+  const noise = correlatedNoiseOf(time_s, rate, shape.reaction.first, shape.reaction.last, shape.widestStride)
+  const smoothing = smoothingFor('rate', noise * shape.duration, shape)
+  return {
+    time_s,
+    temperature_K,
+    conversion: column(conversion, '1'),
+    reactionRate_per_s: column(localPolynomial(time_s, rate, smoothing).value, '1/s'),
+    measured: { kind: 'rate', values: rate },
+    smoothing,
+    noise,
+    duration_s: shape.duration,
+    reaction: shape.reaction,
+  }
+}
+
+/** dα/dt at any time inside the window. */
+export function reactionRateAt(curve: ConversionCurve, time: number): number {
+  const fit = localPolynomialAt(curve.time_s, curve.measured.values, time, curve.smoothing)
+  return curve.measured.kind === 'extent' ? fit.slope : fit.value
+}
+
+interface Shape {
+  readonly duration: number
+  readonly reaction: RowRange
+  readonly samplesPerDuration: number
+  readonly widestStride: number
+}
+
+function shapeOf(time: Float64Array, conversion: Float64Array): Shape {
+  const rising = isotonic(conversion)
+  const n = rising.length
+  const first = Math.min(lowerBound(rising, 0.02), n - 2)
+  const last = Math.min(n - 1, Math.max(first + 1, lowerBound(rising, 0.98)))
+  const span = (time[last] ?? 0) - (time[first] ?? 0)
+  const duration = Math.min(span, durationAtLargestRate(time, rising))
+  const samplesPerDuration = Math.max(1, ((last - first) * duration) / span)
+  return { duration, reaction: { first, last }, samplesPerDuration, widestStride: Math.floor(widestNoiseStride * samplesPerDuration) }
+}
+
+/** Ten times the shortest time in which conversion rises by a tenth. */
+function durationAtLargestRate(time: Float64Array, rising: Float64Array): number {
+  let shortest = Infinity
+  let from = 0
+  for (let to = 0; to < rising.length; to++) {
+    while (from + 1 < to && (rising[to] ?? 0) - (rising[from + 1] ?? 0) >= 0.1) from++
+    const rise = (rising[to] ?? 0) - (rising[from] ?? 0)
+    if (rise >= 0.1) shortest = Math.min(shortest, ((time[to] ?? 0) - (time[from] ?? 0)) / rise)
+  }
+  return shortest
+}
+
+function smoothingFor(kind: 'extent' | 'rate', noise: number, shape: Shape): LocalPolynomialOptions {
+  const halfWidth = smoothingHalfWidth({ kind, noise, duration: shape.duration, samplesPerDuration: shape.samplesPerDuration })
+  return { halfWidth, degree: 3, minimumPoints: fewestPoints }
+}

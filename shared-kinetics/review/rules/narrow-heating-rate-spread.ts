@@ -1,0 +1,33 @@
+import type { Finding } from '../finding.ts'
+import type { ReviewInput } from '../review-input.ts'
+import { digits } from '../words.ts'
+
+const smallestRatio = 4
+
+/** Fires where the fastest heating rate is less than four times the slowest, for at least two distinct constant rates. */
+export function narrowHeatingRateSpread({ runs }: ReviewInput): Finding[] {
+  const constant = runs.flatMap(({ result }) =>
+    result.heatingRate_K_per_min === null ? [] : [{ rate: result.heatingRate_K_per_min, group: result.programmeGroup }],
+  )
+  if (new Set(constant.map((run) => run.group)).size < 2) return []
+  const slowest = Math.min(...constant.map((run) => run.rate))
+  const fastest = Math.max(...constant.map((run) => run.rate))
+  const ratio = fastest / slowest
+  if (ratio >= smallestRatio) return []
+  return [
+    {
+      code: 'narrow-heating-rate-spread',
+      severity: 'caution',
+      stage: 'runs',
+      title: `Fastest heating rate only ${digits(ratio)} times the slowest`,
+      message:
+        `Heating rates go from ${digits(slowest)} to ${digits(fastest)} K/min, a ratio of ${digits(ratio)}. The runs then lie close together in temperature, and small errors of ` +
+        `temperature become large errors of Ea. Add a run that is slower or faster, so that the fastest is at least ${smallestRatio} times the slowest.`,
+      run: null,
+      level: null,
+      evidence: { slowest_K_per_min: slowest, fastest_K_per_min: fastest, ratio },
+      basis: `A ratio of fastest to slowest of about ${smallestRatio} or more, best near 10`,
+      sources: ['ictac-2011', 'ictac-2014'],
+    },
+  ]
+}

@@ -1,0 +1,45 @@
+import type { Finding } from '../finding.ts'
+import type { ReviewedRun, ReviewInput } from '../review-input.ts'
+import { celsius, digits, levelsInWords, list, mean, programmesOf } from '../words.ts'
+
+/**
+ * Fires for two neighbouring constant heating rates where the faster one does not reach some level at a higher temperature than the slower one. Replicates are
+ * compared by their mean. One finding a pair, at the level where it is worst.
+ */
+export function orderBroken({ result, runs }: ReviewInput): Finding[] {
+  const programmes = programmesOf(runs.filter((run) => run.result.programme === 'constant-heating-rate'))
+  return programmes.slice(1).flatMap((faster, i): Finding[] => {
+    const slower = programmes[i] ?? []
+    const rises = result.levels.map((level, at) => ({ level, rise: temperatureAt(faster, at) - temperatureAt(slower, at) }))
+    const broken = rises.filter(({ rise }) => rise <= 0)
+    if (broken.length === 0) return []
+    const worst = broken.reduce((a, b) => (b.rise < a.rise ? b : a))
+    const at = result.levels.indexOf(worst.level)
+    return [
+      {
+        code: 'order-broken',
+        severity: 'caution',
+        stage: 'activation',
+        title: `${rate(faster)} K/min is not later than ${rate(slower)} K/min at conversion ${levelsInWords(broken.map(({ level }) => level))}`,
+        message:
+          `At conversion ${digits(worst.level)} ${names(faster)} (${rate(faster)} K/min) stands at ${celsius(temperatureAt(faster, at))} and ${names(slower)} (${rate(slower)} K/min) at ` +
+          `${celsius(temperatureAt(slower, at))}; with a higher heating rate a reaction reaches a conversion at a higher temperature. Ea there means nothing. ` +
+          'Look at window and baseline of these runs, and whether sample mass or temperature calibration differ; leave the wrong run out.',
+        run: faster[0]?.info.id ?? null,
+        level: worst.level,
+        evidence: { level: worst.level, slower_K: temperatureAt(slower, at), faster_K: temperatureAt(faster, at), levels: broken.length },
+        basis: 'Follows from any positive Ea',
+        sources: ['ictac-2011'],
+      },
+    ]
+  })
+}
+
+/** Mean over the runs that reach the level; NaN, which breaks no order, where none does. */
+function temperatureAt(group: readonly ReviewedRun[], level: number): number {
+  return mean(group.flatMap((run) => run.result.temperatureAtLevel_K[level] ?? []))
+}
+
+const names = (group: readonly ReviewedRun[]): string => list(group.map((run) => run.info.label))
+
+const rate = (group: readonly ReviewedRun[]): string => digits(mean(group.map((run) => run.result.heatingRate_K_per_min ?? Number.NaN)))

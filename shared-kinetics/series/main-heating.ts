@@ -1,0 +1,70 @@
+/** Rows of a run, both ends included. */
+export interface RowRange {
+  readonly first: number
+  readonly last: number
+}
+
+/** A fall of the temperature of less than this, or of 2 % of the run's whole span where that is more, is no reversal but noise or a self-cooling sample. */
+const smallestReversal_K = 3
+/** A run that never leaves a band of this width is a hold: there is no heating part to look for. */
+const holdBand_K = 5
+
+/**
+ * The main heating part of a run: the stretch without a reversal of the temperature that spans the most kelvin (of several within 5 % of it the first). Holds
+ * before, between and after ramps belong to it. A run that only holds is its own main part.
+ *
+ * @param temperature_K - in order of time
+ */
+export function mainHeating(temperature_K: Float64Array): RowRange {
+  const n = temperature_K.length
+  let lowest = Infinity
+  let highest = -Infinity
+  for (const value of temperature_K) {
+    lowest = Math.min(lowest, value)
+    highest = Math.max(highest, value)
+  }
+  if (highest - lowest <= holdBand_K) return { first: 0, last: n - 1 }
+  const reversal = Math.max(smallestReversal_K, 0.02 * (highest - lowest))
+  const stretches = heatingStretches(temperature_K, reversal)
+  const most = Math.max(...stretches.map((stretch) => stretch.span))
+  const main = stretches.find((stretch) => stretch.span >= 0.95 * most) ?? { first: 0, last: n - 1 }
+  return { first: main.first, last: main.last }
+}
+
+/** All stretches between reversals in which the temperature rises; each begins with the hold before it and ends with the hold after it. */
+function heatingStretches(temperature: Float64Array, reversal: number): (RowRange & { readonly span: number })[] {
+  const stretches: (RowRange & { readonly span: number })[] = []
+  const n = temperature.length
+  const at = (i: number): number => temperature[i] ?? Number.NaN
+  let rising = true
+  let lowest = 0
+  let highest = 0
+  const close = (): void => {
+    const bottom = at(lowest) + 0.25 * reversal
+    const top = at(highest) - 0.25 * reversal
+    let first = lowest
+    while (first > 0 && at(first - 1) <= bottom) first--
+    let last = highest
+    while (last < n - 1 && at(last + 1) >= top) last++
+    if (at(highest) - at(lowest) >= reversal) stretches.push({ first, last, span: at(highest) - at(lowest) })
+  }
+  for (let i = 1; i < n; i++) {
+    if (rising) {
+      if (at(i) > at(highest)) highest = i
+      if (highest === lowest && at(i) < at(lowest)) lowest = highest = i
+      if (at(i) < at(highest) - reversal) {
+        close()
+        rising = false
+        lowest = i
+      }
+    } else {
+      if (at(i) < at(lowest)) lowest = i
+      if (at(i) > at(lowest) + reversal) {
+        rising = true
+        highest = i
+      }
+    }
+  }
+  if (rising) close()
+  return stretches
+}

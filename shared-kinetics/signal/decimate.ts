@@ -1,0 +1,30 @@
+/**
+ * Rows to draw of curves that share one row numbering: the first and the last, and from each of equal buckets of rows the one where a curve is lowest and the one
+ * where it is highest. Every local extreme that a bucket holds is kept, so that a peak or a spike never vanishes from a picture.
+ *
+ * @param curves - columns of one length; NaN is passed over
+ * @param mostPoints - at most so many rows come back (default 1,000)
+ * @returns row numbers, ascending, without repeats; all of them where there are no more than `mostPoints`
+ */
+export function decimate(curves: readonly Float64Array[], mostPoints = 1000): Uint32Array {
+  const n = curves[0]?.length ?? 0
+  if (n <= mostPoints) return Uint32Array.from({ length: n }, (_, i) => i)
+  const buckets = Math.max(1, Math.floor((mostPoints - 2) / (2 * curves.length)))
+  const kept = new Set([0, n - 1])
+  for (let bucket = 0; bucket < buckets; bucket++) {
+    const from = Math.floor((bucket * n) / buckets)
+    const to = Math.floor(((bucket + 1) * n) / buckets)
+    for (const curve of curves) {
+      let lowest = -1
+      let highest = -1
+      for (let i = from; i < to; i++) {
+        const value = curve[i] ?? Number.NaN
+        if (Number.isNaN(value)) continue
+        if (lowest < 0 || value < (curve[lowest] ?? 0)) lowest = i
+        if (highest < 0 || value > (curve[highest] ?? 0)) highest = i
+      }
+      if (lowest >= 0) kept.add(lowest).add(highest)
+    }
+  }
+  return Uint32Array.from([...kept].sort((a, b) => a - b))
+}

@@ -1,0 +1,159 @@
+import { lineFit } from '../numerics/line-fit.ts'
+import { cellMeans, type CellMeans } from './cell-means.ts'
+import { noiseOf } from './noise.ts'
+
+/** A stretch of x beside a peak in which the signal runs straight. `inner` is the end near the peak, `outer` the one away from it. */
+export interface QuietStretch {
+  readonly inner: number
+  readonly outer: number
+  /** Largest distance of the signal from its straight line there, as a share of the peak's height. */
+  readonly roughness: number
+}
+
+export interface QuietEnds {
+  readonly apex: number
+  /** Height over the chord between the ends of the data, with its sign. */
+  readonly height: number
+  /** Width at half that height. */
+  readonly width: number
+  /** null where the signal does not level off before the data end on that side. */
+  readonly before: QuietStretch | null
+  readonly after: QuietStretch | null
+}
+
+const cells = 1000
+/** A flank has come to its foot where the signal is less steep than this share of the flank's steepest place. */
+const footSteepness = 0.05
+/** A stretch that strays from its line by more than this share of the peak's height is not straight. */
+const roughest = 0.05
+/** Roughness below this share of the height, or below four times the noise of a cell, is as good as none. */
+const finest = 1e-5
+/** A stretch begins at most so many widths of the peak beyond the foot, and is one to so many widths long. */
+const mostWidths = 3
+const lengthsPerWidth = 4
+
+/**
+ * Finds the main peak of a signal and the straight stretches on either side of it, on which tangents can be laid.
+ *
+ * The apex is where the signal is farthest from the chord between its ends. From there outwards on each side: the foot (5 % of the flank's steepest slope), then
+ * of all stretches beyond it, at least as long as the peak is wide at half height, the one whose line can be carried to the apex with the least error. A line that
+ * misses the signal by r over a length L is off by about r·(1 + (d/L)²) at a distance d from its middle, and one that cuts into the peak is no baseline. So a clean signal gets a long stretch far enough out that
+ * the reaction has not begun there, and a drifting one the least bent stretch near the peak.
+ *
+ * @param x - ascending, rows `first` to `last` are looked at
+ */
+export function findQuietEnds(x: Float64Array, y: Float64Array, first: number, last: number): QuietEnds {
+  const mean = cellMeans(x, y, first, last, Math.max(10, Math.min(cells, Math.floor((last - first + 1) / 2))))
+  const n = mean.x.length
+  const chord = aboveChord(mean)
+  let apex = 0
+  for (let i = 0; i < n; i++) if (Math.abs(chord[i] ?? 0) > Math.abs(chord[apex] ?? 0)) apex = i
+  const height = chord[apex] ?? 0
+  const up = chord.map((value) => value * Math.sign(height))
+  const half = 0.5 * Math.abs(height)
+  let left = apex
+  while (left > 0 && (up[left] ?? 0) > half) left--
+  let right = apex
+  while (right < n - 1 && (up[right] ?? 0) > half) right++
+  const width = Math.max(3, right - left)
+  const cellNoise = noiseOf(x, y, first, last) / Math.sqrt(Math.max(1, mean.samplesPerCell))
+  const search = { mean, up, width, height: Math.abs(height), noise: Number.isFinite(cellNoise) ? cellNoise : 0 }
+  return {
+    apex: mean.x[apex] ?? Number.NaN,
+    height,
+    width: width * mean.step,
+    before: quietSide(search, left, apex, -1),
+    after: quietSide(search, right, apex, 1),
+  }
+}
+
+interface Search {
+  readonly mean: CellMeans
+  /** Signal over the chord, turned so that the peak points up. */
+  readonly up: Float64Array
+  readonly width: number
+  readonly height: number
+  readonly noise: number
+}
+
+function aboveChord({ x, y }: CellMeans): Float64Array {
+  const n = x.length
+  const x0 = x[0] ?? 0
+  const y0 = y[0] ?? 0
+  const slope = ((y[n - 1] ?? 0) - y0) / ((x[n - 1] ?? 1) - x0)
+  return y.map((value, i) => value - y0 - slope * ((x[i] ?? 0) - x0))
+}
+
+function quietSide(search: Search, halfHeight: number, apex: number, outward: -1 | 1): QuietStretch | null {
+  const { mean, width } = search
+  const n = mean.x.length
+  const foot = footOf(search, halfHeight, apex, outward)
+  if (foot === null) return null
+  const end = outward < 0 ? 0 : n - 1
+  const room = Math.abs(end - foot) + 1
+  const shortest = Math.min(width, room)
+  if (shortest < 3) return null
+  const noRougher = Math.max(finest * search.height, 4 * search.noise)
+  let best: { inner: number; outer: number; roughness: number } | null = null
+  let bestError = Infinity
+  for (let away = 0; away <= Math.min(mostWidths * width, room - shortest); away++) {
+    const inner = foot + outward * away
+    for (let part = 0; part <= (mostWidths - 1) * lengthsPerWidth; part++) {
+      const length = Math.min(Math.round(shortest * (1 + part / lengthsPerWidth)), room - away)
+      const outer = inner + outward * (length - 1)
+      const rough = roughness(mean, inner, outer)
+      if (rough > roughest * search.height) break
+      const distance = (Math.abs(apex - 0.5 * (inner + outer)) + 1) / length
+      const error = Math.max(rough, noRougher) * (1 + distance * distance)
+      if (error < bestError && staysBeneath(search, inner, outer, apex, Math.max(rough, noRougher))) {
+        bestError = error
+        best = { inner, outer, roughness: rough }
+      }
+      if (length === room - away) break
+    }
+  }
+  if (best === null) return null
+  const x = (cell: number): number => mean.x[cell] ?? Number.NaN
+  return { inner: x(best.inner), outer: x(best.outer), roughness: best.roughness / search.height }
+}
+
+/** First cell beyond half height where the signal has all but stopped falling away from the peak; null where it never does. */
+function footOf({ up, width, mean }: Search, halfHeight: number, apex: number, outward: -1 | 1): number | null {
+  const n = mean.x.length
+  const reach = Math.max(1, Math.round(width / 10))
+  const fall = (i: number): number => {
+    const a = Math.max(0, i - reach)
+    const b = Math.min(n - 1, i + reach)
+    return (-outward * ((up[b] ?? 0) - (up[a] ?? 0))) / ((mean.x[b] ?? 0) - (mean.x[a] ?? 0))
+  }
+  let steepest = 0
+  for (let i = apex; i >= 0 && i < n && Math.abs(i - apex) <= 2 * width; i += outward) steepest = Math.max(steepest, fall(i))
+  for (let i = halfHeight; i >= 0 && i < n; i += outward) if (fall(i) < footSteepness * steepest) return i
+  return null
+}
+
+/** Whether the line of a stretch, carried on to the apex, never cuts into the peak: what lies beyond a baseline is no reaction. */
+function staysBeneath({ mean: { x }, up }: Search, inner: number, outer: number, apex: number, tolerance: number): boolean {
+  const line = lineFit(
+    x.subarray(Math.min(inner, outer), Math.max(inner, outer) + 1),
+    up.subarray(Math.min(inner, outer), Math.max(inner, outer) + 1),
+  )
+  const step = Math.sign(apex - inner)
+  for (let i = inner; i !== apex; i += step) {
+    if ((up[i] ?? 0) < line.valueAtMean + line.slope * ((x[i] ?? 0) - line.xMean) - tolerance) return false
+  }
+  return true
+}
+
+/** Largest distance of the cells from `a` to `b` from their straight line. */
+function roughness({ x, y }: CellMeans, a: number, b: number): number {
+  const from = Math.min(a, b)
+  const to = Math.max(a, b) + 1
+  const line = lineFit(x.subarray(from, to), y.subarray(from, to))
+  let worst = 0
+  for (let i = from; i < to; i++) {
+    const residual = (y[i] ?? 0) - line.valueAtMean - line.slope * ((x[i] ?? 0) - line.xMean)
+    worst = Math.max(worst, Math.abs(residual))
+  }
+  return worst
+}

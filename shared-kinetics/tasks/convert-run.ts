@@ -1,0 +1,131 @@
+import type { Converted } from '../conversion/converted.ts'
+import { rateAtEnds, type RateAtEnds } from '../conversion/cut-ends.ts'
+import { fromColumn } from '../conversion/from-column.ts'
+import { fromHeatFlow } from '../conversion/from-heat-flow.ts'
+import { fromHeatRelease } from '../conversion/from-heat-release.ts'
+import { fromMass } from '../conversion/from-mass.ts'
+import { peakTemperature } from '../conversion/peak-temperature.ts'
+import { findWindow, isHold, rowsInWindow } from '../conversion/window.ts'
+import type { RowRange } from '../series/main-heating.ts'
+import type { RunColumns, RunInfo, Window } from '../series/run.ts'
+import type { SignalQuantity } from '../series/signal-quantity.ts'
+import { tellProgramme, type ToldProgramme } from '../series/tell-programme.ts'
+import { usableRows, type UsableRows } from '../series/usable-rows.ts'
+import { decimate } from '../signal/decimate.ts'
+import { column } from '../units/quantity.ts'
+import type { BaselineKind } from './study-input.ts'
+import type { RunResult } from './study-result.ts'
+
+/** One run with its conversion: everything that does not depend on levels, methods or other runs. */
+export interface ConvertedRun {
+  readonly rows: UsableRows
+  /** Rows inside the window. */
+  readonly range: RowRange
+  readonly converted: Converted
+  readonly told: ToldProgramme
+  readonly window: Window
+  /** NaN where the reaction rate has no maximum. */
+  readonly peak_K: number
+  /** null where the ends of the window say nothing about the conversion there (a conversion column). */
+  readonly rateAtEnds: RateAtEnds | null
+  readonly curve: RunResult['curve']
+}
+
+export interface ConversionSettings {
+  readonly quantity: SignalQuantity
+  readonly signalIndex: number
+  readonly window: Window | null
+  readonly baseline: BaselineKind
+}
+
+/** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
+export const convertRunVersion = 1
+
+/**
+ * Raw columns of one run to its conversion, programme and rate peak.
+ *
+ * @throws KineticsError where the run cannot be used; the message names the run and what to do
+ */
+export function convertRun(info: RunInfo, columns: RunColumns, settings: ConversionSettings): ConvertedRun {
+  const { quantity } = settings
+  const rows = usableRows(columns, settings.signalIndex, info.nominalHeatingRate, info.label)
+  const range = rowsToUse(rows, settings, info.label)
+  const converted = convert(rows, range, settings, info.label)
+  const { reaction } = converted.curve
+  const told = tellProgramme(rows.time_s, rows.temperature_K, range.first + reaction.first, range.first + reaction.last, rows.rebuiltFrom)
+  return {
+    rows,
+    range,
+    converted,
+    told,
+    window: windowUsed(rows, range, settings.window, told.programme.kind === 'constant-heating-rate'),
+    peak_K: peakTemperature(converted.curve),
+    rateAtEnds: quantity === 'conversion' ? null : rateAtEnds(converted.curve),
+    curve: curveToDraw(rows, range, converted, quantity === 'heat-flow'),
+  }
+}
+
+function rowsToUse(rows: UsableRows, { quantity, window, baseline }: ConversionSettings, label: string): RowRange {
+  if (window !== null) return rowsInWindow(rows.time_s, rows.temperature_K, window, label)
+  const kind = quantity !== 'heat-flow' ? 'whole' : baseline === 'straight' ? 'peak-alone' : 'peak-with-tangents'
+  return findWindow(rows.time_s, rows.temperature_K, rows.signal, kind)
+}
+
+function convert(rows: UsableRows, range: RowRange, { quantity, baseline }: ConversionSettings, label: string): Converted {
+  const time_s = column(rows.time_s.subarray(range.first, range.last + 1), 's')
+  const temperature_K = column(rows.temperature_K.subarray(range.first, range.last + 1), 'K')
+  const signal = rows.signal.subarray(range.first, range.last + 1)
+  switch (quantity) {
+    case 'mass':
+      return fromMass(time_s, temperature_K, signal, label)
+    case 'conversion':
+      return fromColumn(time_s, temperature_K, signal)
+    case 'heat-release':
+      return fromHeatRelease(time_s, temperature_K, signal, label)
+    case 'heat-flow':
+      return fromHeatFlow(time_s, temperature_K, signal, isHold(rows.temperature_K, range) ? 'level-at-end' : baseline, label)
+  }
+}
+
+/** The window in the terms of the run's programme; the bounds that were set where they lie inside the run. */
+function windowUsed(
+  { time_s, temperature_K }: UsableRows,
+  { first, last }: RowRange,
+  asked: Window | null,
+  inTemperature: boolean,
+): Window {
+  if (inTemperature) {
+    const start_K = temperature_K[first] ?? Number.NaN
+    const end_K = temperature_K[last] ?? Number.NaN
+    if (asked?.kind !== 'temperature') return { kind: 'temperature', start_K, end_K }
+    return { kind: 'temperature', start_K: first > 0 ? asked.start_K : start_K, end_K: last < time_s.length - 1 ? asked.end_K : end_K }
+  }
+  const start_s = time_s[first] ?? Number.NaN
+  const end_s = time_s[last] ?? Number.NaN
+  if (asked?.kind !== 'time') return { kind: 'time', start_s, end_s }
+  return { kind: 'time', start_s: first > 0 ? asked.start_s : start_s, end_s: last < time_s.length - 1 ? asked.end_s : end_s }
+}
+
+function curveToDraw(
+  { time_s, temperature_K, signal }: UsableRows,
+  range: RowRange,
+  converted: Converted,
+  withBaseline: boolean,
+): RunResult['curve'] {
+  const spread = (values: Float64Array): Float64Array => {
+    const whole = new Float64Array(signal.length).fill(Number.NaN)
+    whole.set(values, range.first)
+    return whole
+  }
+  const reactionRate = spread(converted.curve.reactionRate_per_s)
+  const kept = decimate([signal, reactionRate])
+  const thin = (values: Float64Array): Float64Array => Float64Array.from(kept, (i) => values[i] ?? Number.NaN)
+  return {
+    time_s: thin(time_s),
+    temperature_K: thin(temperature_K),
+    signal: thin(signal),
+    conversion: thin(spread(converted.curve.conversion)),
+    reactionRate_per_s: thin(reactionRate),
+    baseline: withBaseline && converted.baseline !== null ? thin(spread(converted.baseline)) : new Float64Array(0),
+  }
+}
