@@ -1,9 +1,12 @@
 import { createHash } from 'node:crypto'
+import type { HostTransport, ImportAnswer } from '../../shared-kinetics/contract/host-api.ts'
 import type { RunColumns, RunInfo } from '../../shared-kinetics/series/run.ts'
 import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { column } from '../../shared-kinetics/units/quantity.ts'
 import { openSavedCopy, packSavedCopy } from '../study/saved-copy.ts'
+import { createHost, type Host, type HostOptions } from './create-host.ts'
 import type { ImportedRun, TaskTable } from './host-tasks.ts'
+import { createInProcessPool } from './in-process-pool.ts'
 import type { ProgramParts } from './handlers/handler-table.ts'
 
 /* For tests of the host and its shells: runs, tasks and parts that do not depend on the importer and the kinetics. */
@@ -145,4 +148,52 @@ export const sampleParts: ProgramParts = {
   exportResults: ({ document, result }, format) => [
     { fileName: `activation.${format}`, mediaType: 'text/plain', bytes: textBytes(`${document.name}, ${result.runs.length} runs`) },
   ],
+}
+
+/** A host of samples that keeps nothing, unless told otherwise. */
+export function sampleHost(options: Partial<HostOptions> = {}): Host {
+  return createHost({
+    dataFolder: null,
+    pool: createInProcessPool(sampleTasks()),
+    parts: sampleParts,
+    version: '1.2.3',
+    shell: 'browser',
+    warn: (message) => {
+      throw new Error(message)
+    },
+    ...options,
+  })
+}
+
+/** Uploads files in pieces, as a page does. */
+export async function upload(
+  transport: HostTransport,
+  files: readonly { readonly fileName: string; readonly bytes: Uint8Array }[],
+  pieceBytes = 1 << 20,
+): Promise<string[]> {
+  const uploadIds: string[] = []
+  for (const { fileName, bytes } of files) {
+    const { uploadId } = await transport.call('upload.begin', { fileName, byteLength: bytes.byteLength })
+    for (let at = 0; at < bytes.byteLength; at += pieceBytes) {
+      await transport.call('upload.append', { uploadId, bytes: new Uint8Array(bytes.subarray(at, at + pieceBytes)) })
+    }
+    uploadIds.push(uploadId)
+  }
+  return uploadIds
+}
+
+/** Uploads files of one line each and imports them. */
+export async function importTexts(transport: HostTransport, texts: Readonly<Record<string, string>>): Promise<ImportAnswer> {
+  const files = Object.entries(texts).map(([fileName, text]) => ({ fileName, bytes: textBytes(text) }))
+  return transport.call('runs.import', { uploadIds: await upload(transport, files) })
+}
+
+/** What a promise was rejected with; throws when it was not. */
+export async function rejectionOf(promise: Promise<unknown>): Promise<unknown> {
+  return promise.then(
+    () => {
+      throw new Error('It was not rejected.')
+    },
+    (error: unknown) => error,
+  )
 }

@@ -1,5 +1,4 @@
 import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
-import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import { readExport } from '../import/read-export.ts'
 import { refusedFile } from '../import/import-refusal.ts'
 import type { EvaluationCache } from '../../shared-kinetics/tasks/memo.ts'

@@ -1,5 +1,6 @@
 import { contextBridge, ipcRenderer, type IpcRendererEvent } from 'electron'
-import { channels, type DesktopBridge } from '../../shared-kinetics/contract/host-api.ts'
+import { channels } from '../../shared-kinetics/contract/channels.ts'
+import type { DesktopBridge } from '../../shared-kinetics/contract/host-api.ts'
 
 /** All a page of the desktop shell is given: ask, and listen. Neither `ipcRenderer` nor a channel name reaches it. */
 const bridge: DesktopBridge = {

@@ -161,6 +161,7 @@ function createStudyFolder(id: string, folder: string, lock: StudyLock): StudyFo
     },
     originalFile: async (sha256) => readOrNull(exportPath(sha256)),
     prune: async (names) => {
+      if (!(await lock.isOurs())) return
       for (const file of await readdir(join(folder, 'columns'))) {
         if (!names.columnsKeys.has(file.replace(/\.bin$/, ''))) await unlink(join(folder, 'columns', file)).catch(() => undefined)
       }

@@ -132,6 +132,4 @@ export interface DesktopBridge {
   subscribe(listener: (event: Uint8Array) => void): () => void
 }
 
-/** Names shared by preload, IPC gate and HTTP server, so that none is written twice. */
-export const channels = { request: 'rampfold:request', event: 'rampfold:event', bridge: 'rampfold' } as const
-export const httpPaths = { request: '/request/', events: '/events' } as const
+export { channels, httpPaths } from './channels.ts'

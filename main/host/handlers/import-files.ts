@@ -1,3 +1,4 @@
+import { setMaxListeners } from 'node:events'
 import type { ImportAnswer, RefusedFile } from '../../../shared-kinetics/contract/host-api.ts'
 import { runInfoSchema } from '../../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
@@ -16,6 +17,8 @@ import { inOrderOfHeatingRate } from './in-order-of-heating-rate.ts'
 export async function importFiles(context: HandlerContext, files: readonly UploadedFile[]): Promise<ImportAnswer> {
   const { workspace } = context
   const stop = new AbortController()
+  // One listener a file is meant, and is no leak.
+  setMaxListeners(0, stop.signal)
   context.imports.add(stop)
   try {
     const { whole, partial } = split(files)
