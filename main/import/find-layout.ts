@@ -73,7 +73,7 @@ function findFirstData(lines: TextLines, cellsOf: (index: number) => string[], d
     if (isRowOfNumbers(cells, dialect)) {
       if (run === 0) runStart = i
       run++
-      if (earliest === null && cells.length === width) earliest = i
+      if (earliest === null && cells.length >= width) earliest = i
       if (run >= 3) break
     } else {
       // A row of names behind a lone row of numbers: that row belonged to the preamble.
@@ -87,6 +87,11 @@ function findFirstData(lines: TextLines, cellsOf: (index: number) => string[], d
 
 const isRowOfNames = (cells: readonly string[], dialect: Dialect): boolean =>
   cells.filter((cell) => cell !== '').length >= 2 && !cells.some((cell) => isNumber(cell, dialect.decimal))
+
+/** As wide as the table, with numbers in some of its columns of numbers. */
+const isBrokenRow = (cells: readonly string[], dialect: Dialect): boolean =>
+  cells.length === dialect.numericColumns.length &&
+  cells.some((cell, i) => dialect.numericColumns[i] === true && isNumber(cell, dialect.decimal))
 
 type Headings = Pick<Layout, 'headingLine' | 'headings' | 'unitLine' | 'units'>
 
@@ -117,6 +122,11 @@ function headingsAbove(
   const candidate = nearestIsUnits ? next : nearest
   if (options.headingLine === 'none' || candidate === undefined) return { headingLine: null, headings: [], unitLine, units }
   const headings = namesOf(candidate)
+  if (!nearestIsUnits && options.columns === undefined && isBrokenRow(headings, dialect)) {
+    const line = quoted(lineText(lines, candidate))
+    const reason = `${line} stands above the first row of numbers and is neither headings nor a row of numbers.`
+    throw refuse(candidate + 1, reason, 'Mend or remove this line; or state the “heading line” and the “first data line”.')
+  }
   // A `key: value` or `key;value` line of the preamble above a unit row is no heading: it has a colon, or fewer cells than the units.
   const isEntry = /:(?:\s|$)/.test(headings[0] ?? '') || headings.length < units.length
   if (!isRowOfNames(headings, dialect) || (nearestIsUnits && isEntry)) {
