@@ -27,20 +27,23 @@ export interface EnergyGrid {
 
 /** One pass over each run for each grid point serves all levels. */
 export function energyGrid(integrals: readonly TimeIntegral[], levels: number, context: TaskContext): EnergyGrid {
-  const rows = integrals.map((integral) =>
-    Array.from(energies, (Ea) => {
+  const rows = integrals.map((integral) => {
+    // One row of levels after the other, one row a grid point.
+    const row = { lnJ: new Float64Array(energies.length * levels), inverseT: new Float64Array(energies.length * levels) }
+    energies.forEach((Ea, g) => {
       context.checkCancelled()
-      const row = { lnJ: new Float64Array(levels).fill(Number.NaN), inverseT: new Float64Array(levels).fill(Number.NaN) }
-      integral.atAllLevels(Ea, row.lnJ, row.inverseT)
-      return row
-    }),
-  )
+      const [from, to] = [g * levels, (g + 1) * levels]
+      integral.atAllLevels(Ea, row.lnJ.subarray(from, to), row.inverseT.subarray(from, to))
+    })
+    return row
+  })
   return {
     read(g, level, lnJ, inverseT) {
-      rows.forEach((ofRun, i) => {
-        lnJ[i] = ofRun[g]?.lnJ[level] ?? Number.NaN
-        inverseT[i] = ofRun[g]?.inverseT[level] ?? Number.NaN
-      })
+      for (let i = 0; i < rows.length; i++) {
+        const row = rows[i] as (typeof rows)[number]
+        lnJ[i] = row.lnJ[g * levels + level] as number
+        inverseT[i] = row.inverseT[g * levels + level] as number
+      }
     },
     between(Ea, level, lnJ) {
       const place = (steps * Math.log(Ea / smallestEa)) / Math.log(largestEa / smallestEa)
@@ -48,14 +51,16 @@ export function energyGrid(integrals: readonly TimeIntegral[], levels: number, c
       const lower = energies[g] as number
       const width = (energies[g + 1] as number) - lower
       const s = (Ea - lower) / width
-      rows.forEach((ofRun, i) => {
-        const a = ofRun[g] as (typeof ofRun)[number]
-        const b = ofRun[g + 1] as (typeof ofRun)[number]
-        const [y0, y1] = [a.lnJ[level] as number, b.lnJ[level] as number]
-        const m0 = (-width * (a.inverseT[level] as number)) / gasConstant_J_per_mol_K
-        const m1 = (-width * (b.inverseT[level] as number)) / gasConstant_J_per_mol_K
-        lnJ[i] = y0 + s * (m0 + s * (3 * (y1 - y0) - 2 * m0 - m1 + s * (2 * (y0 - y1) + m0 + m1)))
-      })
+      const a = g * levels + level
+      const b = a + levels
+      for (let i = 0; i < rows.length; i++) {
+        const row = rows[i] as (typeof rows)[number]
+        const y0 = row.lnJ[a] as number
+        const rise = (row.lnJ[b] as number) - y0
+        const m0 = (-width * (row.inverseT[a] as number)) / gasConstant_J_per_mol_K
+        const m1 = (-width * (row.inverseT[b] as number)) / gasConstant_J_per_mol_K
+        lnJ[i] = y0 + s * (m0 + s * (3 * rise - 2 * m0 - m1 + s * (m0 + m1 - 2 * rise)))
+      }
     },
   }
 }

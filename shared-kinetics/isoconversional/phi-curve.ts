@@ -42,17 +42,11 @@ function curve(
   correct: (i: number, value: number) => number,
 ): Pick<LevelPhi, 'Ea_J_per_mol' | 'phi'> {
   const lnJ = new Float64Array(runs)
-  const points = at.map((Ea, i) => {
+  const values = at.map((Ea, i) => {
     grid.between(Math.min(largestEa, Math.max(smallestEa, Ea)), level, lnJ)
-    return { Ea, value: correct(i, phi(lnJ)) }
+    return correct(i, phi(lnJ))
   })
   // Far from its minimum Phi leaves double precision; such points cannot be drawn.
-  const drawn = points.filter((point) => Number.isFinite(point.value))
-  return {
-    Ea_J_per_mol: column(
-      Float64Array.from(drawn, (p) => p.Ea),
-      'J/mol',
-    ),
-    phi: Float64Array.from(drawn, (p) => p.value),
-  }
+  const drawn = (_: number, i: number): boolean => Number.isFinite(values[i])
+  return { Ea_J_per_mol: column(Float64Array.from(at.filter(drawn)), 'J/mol'), phi: Float64Array.from(values.filter(drawn)) }
 }
