@@ -48,7 +48,7 @@ const byKey: ReadonlyMap<string, FileUnit> = new Map(spellings.flatMap(([unit, k
 
 /** Signs that stand where a degree sign was before somebody's decoding: all are one character in front of C, F or K. */
 const degreeSigns =
-  /^(?:\u00c2?[\u00b0\u00ba\u02da]|deg(?:rees?)?\.?|o|\?|\ufffd|\u221e|\u00a1|\u00f8)\s*(?=[ckf]|celsius|fahrenheit|kelvin)/
+  /^(?:\u00e2?[\u00b0\u00ba\u02da]|deg(?:rees?)?\.?|o|\?|\ufffd|\u221e|\u00a1|\u00f8)\s*(?=[ckf]|celsius|fahrenheit|kelvin)/
 
 /**
  * The unit a piece of text names, brackets around it allowed: `[mg]`, `(°C)`, `mW/mg`, `W g⁻¹`, `W per g`, `wt.-%`; null for anything else.
@@ -62,17 +62,14 @@ export function unitOf(text: string): FileUnit | null {
   // NFKC would turn the ordinal sign that some write for a degree into an o.
   key = key.replace(/\u2103/g, '\u00b0C').replace(/\u2109/g, '\u00b0F')
   key = key
-    .replace(/\u00ba/g, '\u00b0')
+    .replace(/[\u00ba\u02da]/g, "\u00b0")
     .normalize('NFKC')
     .replace(/[\u03bc\u00b5]/g, 'u')
     .replace(/\u2212/g, '-')
     .toLowerCase()
   key = key.replace(degreeSigns, '')
   key = key.replace(/\s*\bper\b\s*/g, '/').replace(/[\s\u00b7\u22c5*]*\b([a-z]+)\s*\^?\s*\(?-\s*1\)?$/, '/$1')
-  key = key
-    .replace(/\s+/g, '')
-    .replace(/^wt\.-%$/, 'wt%')
-    .replace(/^\/+/, '')
+  key = key.replace(/\s+/g, '').replace(/^wt\.-%$/, 'wt%')
   return byKey.get(key) ?? null
 }
 

@@ -27,7 +27,8 @@ export function parseHeading(text: string): Heading {
   const rates = heatingRatesIn(plain)
   const heatingRate = rates.length === 1 ? (rates[0] ?? null) : null
   const withoutRate = heatingRate === null ? plain : removeRate(plain, heatingRate.text)
-  const parts = bracketUnit(withoutRate) ?? wordUnit(withoutRate)
+  // In `d(Mass)/dT` the slash stands before no unit.
+  const parts = /[/)]\s*d[tT]\s*$/.test(withoutRate) ? null : (bracketUnit(withoutRate) ?? wordUnit(withoutRate))
   const name = (parts?.name ?? withoutRate)
     .replace(/[\s/,;:_]+$/, '')
     .replace(/\s+/g, ' ')
