@@ -80,8 +80,8 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
               <ActivationStage {...props} />
             </TabPanel>
             <MarginNotes findings={findings.filter((finding) => finding.stage === stage)} all={findings} onShow={jump.toPlace} />
+            {stage === 'activation' && <Safety />}
           </main>
-          {stage === 'activation' && <Safety />}
           {result !== null && level !== null && <Rail result={result} levelIndex={levelIndex} level={level} actions={actions} />}
         </>
       ) : (

@@ -1,5 +1,5 @@
 import type { ChartOptions, TooltipItem } from 'chart.js'
-import { niceStep, tickText } from '../../shared-kinetics/figure/nice-axis.ts'
+import { niceStep, niceTicks, tickText } from '../../shared-kinetics/figure/nice-axis.ts'
 import type { Axis, Figure } from '../../shared-kinetics/figure/figure.ts'
 import { axisTitle } from './axis-text-plugin.ts'
 import type { ChartColours } from './chart-colours.ts'
@@ -23,8 +23,13 @@ export function chartOptions(figure: Figure, colours: ChartColours): ChartOption
       display: true,
       text: axisTitle(axis).replace(/\^[\d.]+/g, ''),
       color: 'transparent',
-      font: { ...font, size: 12.5 },
-      padding: 3,
+      font: { ...font, size: 11 },
+      padding: 2,
+    },
+    // Round steps on screen and in exported figures alike; Chart.js would add the ends of the axis to its own.
+    afterBuildTicks: (built) => {
+      const steps = built.isHorizontal() ? built.width / 75 : built.height / 55
+      built.ticks = niceTicks(built.min, built.max, Math.min(10, Math.max(2, Math.round(steps)))).map((value) => ({ value }))
     },
   })
   return {

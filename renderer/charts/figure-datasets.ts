@@ -22,16 +22,20 @@ export interface Stroke {
 
 export function strokeOf(tone: Tone, colours: ChartColours): Stroke {
   switch (tone.kind) {
-    case 'run':
-      return { colour: colours.run(tone.place), width: 1.6, dash: [], marker: runMarker(tone.index), radius: 5.5 }
-    case 'method':
+    case 'run': {
+      const marker = runMarker(tone.index)
+      return { colour: colours.run(tone.place), width: 1.6, dash: [], marker, radius: 5.5 * marker.scale }
+    }
+    case 'method': {
+      const marker = methodMarker(tone.index)
       return {
         colour: tone.index === 0 ? colours.accent : colours.softInk,
         width: tone.index === 0 ? 2 : 1.5,
         dash: methodDash(tone.index),
-        marker: methodMarker(tone.index),
-        radius: tone.index === 0 ? 3.2 : 2.6,
+        marker,
+        radius: (tone.index === 0 ? 3.2 : 2.6) * marker.scale,
       }
+    }
     case 'ink':
       return { colour: colours.ink, width: 1.8, dash: [], marker: runMarker(0), radius: 4 }
     case 'faint':
@@ -54,8 +58,9 @@ export function datasetsOf(figure: Figure, colours: ChartColours, emphasis: numb
   const last = figure.marks.length
   return figure.marks.flatMap((mark, i): FigureDataset[] => {
     const stroke = strokeOf(mark.kind === 'rule' ? { kind: 'ink' } : mark.tone, colours)
-    // Chart.js draws the greatest order first.
-    const order = last - i
+    // Chart.js draws the greatest order first; the chosen method lies above those it is compared with.
+    const isChosen = mark.kind === 'points' && mark.tone.kind === 'method' && mark.tone.index === 0
+    const order = isChosen ? 0 : last - i
     switch (mark.kind) {
       case 'line':
         return [lineDataset(mark, emphasised(mark.tone, stroke, emphasis), order)]
@@ -106,6 +111,8 @@ function pointsDataset(mark: Extract<Mark, { kind: 'points' }>, stroke: Stroke, 
     pointBackgroundColor: stroke.marker.hollow ? colours.paper : stroke.colour,
     pointBorderColor: stroke.colour,
     pointBorderWidth: mark.tone.kind === 'faint' ? 0 : 1.4,
+    // A marker on the edge of the figure is shown whole.
+    clip: 8,
     order,
   }
   if (lower === undefined || upper === undefined) return { type: 'scatter', ...shared, data: pointsOf(mark.x, mark.y) }

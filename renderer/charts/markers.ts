@@ -3,20 +3,22 @@ export interface Marker {
   readonly style: 'circle' | 'rect' | 'triangle' | 'rectRot'
   readonly rotation: 0 | 180
   readonly hollow: boolean
+  /** Radius relative to a disc's that makes the shape look as large. */
+  readonly scale: number
   /** The shape in a word, for people who hear the screen. */
   readonly word: string
 }
 
 const shapes: readonly Omit<Marker, 'hollow'>[] = [
-  { style: 'circle', rotation: 0, word: 'disc' },
-  { style: 'rect', rotation: 0, word: 'square' },
-  { style: 'triangle', rotation: 0, word: 'triangle' },
-  { style: 'rectRot', rotation: 0, word: 'diamond' },
-  { style: 'triangle', rotation: 180, word: 'triangle pointing down' },
+  { style: 'circle', rotation: 0, scale: 1, word: 'disc' },
+  { style: 'rect', rotation: 0, scale: 1.2, word: 'square' },
+  { style: 'triangle', rotation: 0, scale: 1.3, word: 'triangle' },
+  { style: 'rectRot', rotation: 0, scale: 1.25, word: 'diamond' },
+  { style: 'triangle', rotation: 180, scale: 1.3, word: 'triangle pointing down' },
 ]
 
 function markerAt(index: number, firstHollow: boolean): Marker {
-  const shape = shapes[index % shapes.length] ?? { style: 'circle', rotation: 0, word: 'disc' }
+  const shape = shapes[index % shapes.length] ?? { style: 'circle', rotation: 0, scale: 1, word: 'disc' }
   const secondRound = Math.floor(index / shapes.length) % 2 === 1
   const hollow = firstHollow !== secondRound
   return { ...shape, hollow, word: hollow ? `hollow ${shape.word}` : shape.word }

@@ -4,6 +4,8 @@ import { ToggleButton, ToggleButtonGroup } from 'react-aria-components'
 export interface ChoiceOption<Id extends string> {
   readonly id: Id
   readonly text: ReactNode
+  /** The whole name where `text` is short for it. */
+  readonly name?: string
 }
 
 /** One of a few, all in sight. */
@@ -35,7 +37,7 @@ export function Choice<Id extends string>({
         }}
       >
         {options.map((option) => (
-          <ToggleButton key={option.id} id={option.id} className="choice-option">
+          <ToggleButton key={option.id} id={option.id} className="choice-option" {...nameOf(option)}>
             {option.text}
           </ToggleButton>
         ))}
@@ -69,7 +71,7 @@ export function Choices<Id extends string>({
         onSelectionChange={(keys) => onChange(options.map((option) => option.id).filter((id) => keys.has(id)))}
       >
         {options.map((option) => (
-          <ToggleButton key={option.id} id={option.id} className="choice-option">
+          <ToggleButton key={option.id} id={option.id} className="choice-option" {...nameOf(option)}>
             {option.text}
           </ToggleButton>
         ))}
@@ -77,3 +79,6 @@ export function Choices<Id extends string>({
     </div>
   )
 }
+
+const nameOf = (option: ChoiceOption<string>): { readonly 'aria-label'?: string } =>
+  option.name === undefined ? {} : { 'aria-label': option.name }

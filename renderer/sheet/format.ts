@@ -1,4 +1,12 @@
-import type { LevelStatus, Maybe, RunInfo, SignalQuantity, Window } from '../../shared-kinetics/contract/study-result.ts'
+import type {
+  LevelStatus,
+  Maybe,
+  MethodId,
+  ProfileResult,
+  RunInfo,
+  SignalQuantity,
+  Window,
+} from '../../shared-kinetics/contract/study-result.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 
 /** A number with a fixed count of decimals and a true minus sign; the empty text where it is not to be had. */
@@ -38,7 +46,7 @@ export function formatInterval(value: Maybe | undefined, lower: Maybe | undefine
   return lopsided ? `−${decimals(value - lower, count)} +${decimals(upper - value, count)}` : decimals(half, count)
 }
 
-/** A heating rate in K/min to as many decimals as its standard error supports, two at least and three at most. */
+/** A heating rate in K/min to as many decimals as its standard error supports, two at least and four at most. */
 export function formatHeatingRate(rate: Maybe, standardError: Maybe): string {
   return decimals(rate, rateDecimals(standardError))
 }
@@ -49,7 +57,8 @@ export function formatRateError(standardError: Maybe): string {
   return standardError < 0.5 * 10 ** -count ? `< ${(10 ** -count).toFixed(count)}` : decimals(standardError, count)
 }
 
-const rateDecimals = (standardError: Maybe): number => (standardError !== null && standardError < 0.005 ? 3 : 2)
+const rateDecimals = (standardError: Maybe): number =>
+  standardError === null || !(standardError > 0) ? 2 : Math.min(4, Math.max(2, Math.ceil(-Math.log10(standardError))))
 
 export function formatWindow(window: Window): string {
   if (window.kind === 'temperature')
@@ -64,6 +73,22 @@ export const signalWords: Readonly<Record<SignalQuantity, string>> = {
   conversion: 'Conversion',
   'heat-release': 'Heat release rate',
   'heat-flow': 'Heat flow',
+}
+
+/** Method names short enough for a heading or a button; the whole name is `ProfileResult.label`. */
+export const shortMethodNames: Readonly<Record<MethodId, string>> = {
+  friedman: 'Friedman',
+  ofw: 'OFW',
+  kas: 'KAS',
+  starink: 'Starink',
+  vyazovkin: 'Vyazovkin',
+  'isothermal-integral': 'Isothermal integral',
+}
+
+/** The short name and, where it is short for something, the whole one: what a button is called. */
+export function wholeMethodName({ method, label }: Pick<ProfileResult, 'method' | 'label'>): string {
+  const short = shortMethodNames[method]
+  return short === label ? label : `${short}, ${label}`
 }
 
 export const programmeWords = {

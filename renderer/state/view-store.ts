@@ -46,5 +46,5 @@ export function comparedAmong(
   wanted: readonly MethodId[] | null,
   chosen: MethodId | null,
 ): readonly MethodId[] {
-  return available.filter((method) => method !== chosen && (wanted ?? ['friedman', 'starink']).includes(method))
+  return available.filter((method) => method !== chosen && (wanted ?? [chosen === 'friedman' ? 'starink' : 'friedman']).includes(method))
 }

@@ -5,7 +5,7 @@ import { activationAtLevel, activationFigure } from '../../../shared-kinetics/fi
 import { FigureChart } from '../../charts/FigureChart.tsx'
 import { MethodSample } from '../../charts/MethodSample.tsx'
 import { Choice, Choices } from '../../sheet/Choice.tsx'
-import { decimals, formatInterval } from '../../sheet/format.ts'
+import { decimals, formatInterval, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { nearestLevel } from '../../sheet/nearest-level.ts'
 import { parseConversion } from '../../sheet/parse-conversion.ts'
@@ -31,18 +31,20 @@ export function EnergyProfile(props: ActivationProps) {
           <MethodSample index={0} /> {profile?.label}
         </span>
         <Choices
-          label="beside it"
+          label="Beside it"
           options={others.map((one) => ({
             id: one.method,
+            name: wholeMethodName(one),
             text: (
               <>
-                {compared.includes(one.method) && <MethodSample index={compared.indexOf(one.method) + 1} />} {one.label}
+                {compared.includes(one.method) && <MethodSample index={compared.indexOf(one.method) + 1} />} {shortMethodNames[one.method]}
               </>
             ),
           }))}
           values={compared}
           onChange={(comparedMethods) => view.setState({ comparedMethods })}
         />
+        <Levels document={props.document} actions={actions} />
       </div>
       <FigureChart
         figure={figure}
@@ -102,7 +104,6 @@ function MeanLine({ profile, document, actions }: ActivationProps & { readonly p
           )}
         </output>
       )}
-      <Levels document={document} actions={actions} />
     </div>
   )
 }
@@ -117,7 +118,7 @@ function Levels({ document, actions }: Pick<ActivationProps, 'document' | 'actio
   )
   return (
     <Choice
-      label="levels every"
+      label="Levels every"
       options={steps.map((step) => ({ id: String(step), text: decimals(step, 2) }))}
       value={current === undefined ? null : String(current)}
       onChange={(id) => actions.change({ kind: 'set-levels', levels: [...levelsEvery(Number(id))] })}
@@ -140,7 +141,7 @@ function Foot({ result, actions }: ActivationProps) {
           'Kissinger: no peaks at three or more constant heating rates.'
         ) : (
           <>
-            Kissinger, from the peaks: Ea <strong>{decimals(kissinger.Ea_kJ_per_mol, 1)}</strong>
+            Kissinger (peaks): Ea <strong>{decimals(kissinger.Ea_kJ_per_mol, 1)}</strong>
             {kissinger.lower95_kJ_per_mol !== null && (
               <> ± {formatInterval(kissinger.Ea_kJ_per_mol, kissinger.lower95_kJ_per_mol, kissinger.upper95_kJ_per_mol)}</>
             )}{' '}

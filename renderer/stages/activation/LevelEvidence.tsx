@@ -5,7 +5,7 @@ import { straightLinesAtLevel, straightLinesFigure } from '../../../shared-kinet
 import { FigureChart } from '../../charts/FigureChart.tsx'
 import { RunMarker } from '../../charts/RunMarker.tsx'
 import { Choice } from '../../sheet/Choice.tsx'
-import { count, formatLevel } from '../../sheet/format.ts'
+import { count, formatCelsius, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
@@ -24,20 +24,20 @@ export function LevelEvidence(props: ActivationProps) {
       note={
         <>
           {profile?.label}: {readingOf(chosen)}. {count(result.runs.length, 'run')}, {count(result.levels.length, 'level')}.
-          {profile !== undefined && profile.sources.length > 0 && <span className="source"> {profile.sources.join('; ')}.</span>}
         </>
       }
     >
       <div className="controls">
         <Choice
           label="Method"
-          options={result.profiles.map((one) => ({ id: one.method, text: one.label }))}
+          options={result.profiles.map((one) => ({ id: one.method, text: shortMethodNames[one.method], name: wholeMethodName(one) }))}
           value={chosen}
           onChange={(chosenMethod) => view.setState({ chosenMethod })}
         />
       </div>
       {minimising ? <Phi {...props} /> : <Lines {...props} />}
       <RunLegend {...props} />
+      {profile !== undefined && profile.sources.length > 0 && <p className="source">{profile.sources.join('; ')}</p>}
     </Half>
   )
 }
@@ -67,10 +67,14 @@ function RunLegend({ result, levelIndex }: ActivationProps) {
       {result.runs.map((run, i) => (
         <li key={run.runId}>
           <RunMarker index={i} colour={colours.run(tones[i]?.place ?? 0)} />
-          {names[i]}
-          {run.temperatureAtLevel_K[levelIndex] == null && <span className="is-word"> not reached</span>}
+          <span>
+            {names[i]} <span className="run-legend-temperature">{temperatureText(run.temperatureAtLevel_K[levelIndex] ?? null)}</span>
+          </span>
         </li>
       ))}
     </ul>
   )
 }
+
+const temperatureText = (temperature_K: number | null): string =>
+  temperature_K === null ? 'not reached' : `${formatCelsius(temperature_K)} °C`

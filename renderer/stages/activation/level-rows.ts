@@ -2,7 +2,7 @@ import type { MethodId, ProfileResult, StudyResult } from '../../../shared-kinet
 import { kelvinToCelsius } from '../../../shared-kinetics/units/convert.ts'
 import { runNames } from '../../../shared-kinetics/figure/run-place.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
-import { decimals, formatCelsius, formatInterval, formatLevel, halfWidth, statusWords } from '../../sheet/format.ts'
+import { decimals, formatCelsius, formatInterval, formatLevel, halfWidth, shortMethodNames, statusWords } from '../../sheet/format.ts'
 
 /** One level of the table, by its index in `StudyResult.levels`. */
 export interface LevelRow {
@@ -53,7 +53,7 @@ function chosenColumns(profile: ProfileResult): DataColumn<LevelRow>[] {
 const energyColumn = (profile: ProfileResult): DataColumn<LevelRow> =>
   column(
     `Ea-${profile.method}`,
-    `Ea ${profile.label}`,
+    `Ea ${shortMethodNames[profile.method]}`,
     'kJ/mol',
     ({ index }) => decimals(profile.Ea_kJ_per_mol[index], 1) || statusWords[profile.status[index] ?? 'level-not-reached'],
     ({ index }) => profile.Ea_kJ_per_mol[index] ?? null,
@@ -63,7 +63,7 @@ const energyColumn = (profile: ProfileResult): DataColumn<LevelRow> =>
 const statusColumn = (profile: ProfileResult): DataColumn<LevelRow> => ({
   ...column(
     'status',
-    `Status ${profile.label}`,
+    `Status ${shortMethodNames[profile.method]}`,
     '',
     () => '',
     ({ index }) => statusWords[profile.status[index] ?? 'level-not-reached'] || 'ok',

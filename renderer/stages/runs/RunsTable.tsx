@@ -7,7 +7,7 @@ import { copyText, type DataColumn } from '../../sheet/data-table.ts'
 import { NumberCell, TableHead } from '../../sheet/DataTable.tsx'
 import { TableView } from '../../sheet/TableView.tsx'
 import { TypedField } from '../../sheet/TypedField.tsx'
-import { nominalSource, runCopyColumns, type RunRow } from './run-rows.ts'
+import { nominalSource, runCopyColumns, runFacts, type RunRow } from './run-rows.ts'
 
 export interface RunsTableProps {
   readonly rows: readonly RunRow[]
@@ -22,7 +22,7 @@ export interface RunsTableProps {
 
 /** Every run of the study; also the legend of the charts. */
 export function RunsTable({ rows, columns, level, levelIndex, pointedRun, colours, onPoint, onChange }: RunsTableProps) {
-  const inTable = columns.filter((column) => column.id !== 'label' && column.id !== 'measured-error')
+  const inTable = columns.filter((column) => !['label', 'measured-error', 'programme', 'rows'].includes(column.id))
   return (
     <TableView
       label="Runs of the study"
@@ -100,7 +100,7 @@ function RunName({ row, colours, onChange }: Pick<RunsTableProps, 'colours' | 'o
           parse={(text) => (text.trim() === '' ? { ok: false, reason: 'A run needs a label.' } : { ok: true, value: text.trim() })}
           onCommit={(label) => onChange({ kind: 'relabel-run', runId: run.id, label })}
         />
-        {run.file.name !== run.label && <span className="run-file">{run.file.name}</span>}
+        <span className="run-facts">{runFacts(row)}</span>
         {unusable !== null && <span className="run-unusable">Not evaluated: {unusable.message}</span>}
       </div>
     </div>

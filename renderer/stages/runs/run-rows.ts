@@ -96,6 +96,13 @@ export const runCopyColumns = (level: number | null, levelIndex: number): readon
   words('file', 'File', (row) => row.run.file.name),
 ]
 
+/** What stands beneath a run's label: its programme, its rows, and its file where the label does not name it. */
+export function runFacts({ run, result }: RunRow): string {
+  const stem = run.file.name.replace(/\.[^.]*$/, '')
+  const file = run.label === run.file.name || run.label === stem ? [] : [run.file.name]
+  return [...(result === null ? [] : [programmeWords[result.programme]]), `${run.rows} rows`, ...file].join(', ')
+}
+
 function measuredText(result: RunResult | null): string {
   if (result === null) return ''
   if (result.programme === 'isothermal') return `held at ${formatCelsius(result.holdTemperature_K)} °C`
