@@ -169,7 +169,8 @@ function refuseUnusableRuns(document: StudyDocument, result: StudyResult): void 
   const lines = unusable.map((finding) => {
     const run = document.runs.find((candidate) => candidate.id === finding.run)
     const name = run === undefined ? '' : `${run.file.name}${run.label === run.file.name ? '' : ` (run ${run.label})`}: `
-    return `${name}${sentence(finding.message)}`
+    // Here nothing was left out: the whole call is refused.
+    return `${name}${sentence(finding.message.replace(/ The run was left out:.*$/s, ''))}`
   })
   throw new InputError(`${lines.join('\n')}\nOr leave unusable runs out with --skip-unusable.`)
 }

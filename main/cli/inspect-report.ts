@@ -3,6 +3,7 @@ import type { RunInfo } from '../../shared-kinetics/series/run.ts'
 import { extentOf } from '../../shared-kinetics/figure/nice-axis.ts'
 import { kelvinToCelsius, perSecondToPerMinute } from '../../shared-kinetics/units/convert.ts'
 import type { InspectedFile, InspectedRun } from './commands/inspect.ts'
+import { temperatureSegments, type TemperatureSegment } from './temperature-segments.ts'
 
 /** What `inspect` prints of one file. */
 export function inspectText({ file, runs }: InspectedFile): string {
@@ -20,10 +21,16 @@ function runText({ run: { info, columns }, result, findings }: InspectedRun, all
   const [coldest, hottest] = extentOf(columns.temperature_K).map(kelvinToCelsius)
   const duration_min = columns.time_s === null ? null : ((columns.time_s.at(-1) ?? 0) - (columns.time_s[0] ?? 0)) / 60
   const ownDecisions = all[0]?.run.info === info ? [] : info.importDecisions.filter((one) => !hasDecision(all[0]?.run.info, one))
+  const segments = temperatureSegments(columns)
   const rows: string[][] = [
     ['rows', String(info.rows), ''],
     ['time', duration_min === null ? 'none' : `${duration_min.toFixed(2)} min`, ''],
     ['temperature', `${coldest?.toFixed(1)} to ${hottest?.toFixed(1)} °C`, ''],
+    ...segments.map((segment, i) => [
+      `segment ${i + 1}`,
+      segmentText(segment),
+      `${minutes(segment.start_s)} to ${minutes(segment.end_s)} min`,
+    ]),
     ...info.signals.map(({ quantity, label, fileUnit }) => [quantity, label, fileUnit === '' ? 'no unit' : `in ${fileUnit}`]),
     ...ownDecisions.map(({ step, value, reason }) => [step, value, reason]),
     ['heating rate', measuredText(result), nominalText(info)],
@@ -33,6 +40,15 @@ function runText({ run: { info, columns }, result, findings }: InspectedRun, all
   ]
   const notes = findings.map((finding) => `  ${finding.severity}: ${finding.message}`)
   return [`  run ${info.label}`, ...table(rows).map((line) => `  ${line}`), ...notes]
+}
+
+const minutes = (time_s: number): string => (time_s / 60).toFixed(1)
+
+function segmentText({ kind, start_K, end_K, start_s, end_s }: TemperatureSegment): string {
+  const rate_K_per_min = (Math.abs(end_K - start_K) / (end_s - start_s)) * 60
+  return kind === 'hold'
+    ? `hold at ${kelvinToCelsius((start_K + end_K) / 2).toFixed(1)} °C`
+    : `${kind} at ${rate_K_per_min.toFixed(1)} K/min to ${kelvinToCelsius(end_K).toFixed(1)} °C`
 }
 
 const hasDecision = (info: RunInfo | undefined, one: RunInfo['importDecisions'][number]): boolean =>
@@ -87,6 +103,7 @@ function runFields({ run: { info, columns }, result, findings }: InspectedRun): 
     end_s: columns.time_s?.at(-1) ?? null,
     coldest_K,
     hottest_K,
+    segments: temperatureSegments(columns),
     columns: info.signals.map(({ quantity, label, fileUnit, unit }) => ({ quantity, heading: label, unit: fileUnit, heldIn: unit })),
     decisions: info.importDecisions,
     metadata: info.metadata,

@@ -31,11 +31,10 @@ export function activationNotes({ document, result, program }: ExportSource): st
 }
 
 function intervalLines({ result }: ExportSource): string[] {
-  const lines = result.profiles.map(({ label, interval, sources }) => {
-    const name =
-      interval.dof > 0
-        ? `${interval.level * 100} % Student-t interval, ${interval.dof} degrees of freedom, for each level by itself`
-        : 'no standard error and no interval (too few different programmes)'
+  const lines = result.profiles.map(({ label, interval, sources, standardError_kJ_per_mol: errors }) => {
+    const name = errors.some((error) => error !== null)
+      ? `${interval.level * 100} % Student-t interval, ${interval.dof} degrees of freedom, for each level by itself`
+      : 'no standard error and no interval at any level (see the findings and the status of each level in activation.json)'
     return `${label}: ${name}. Method: ${sources.join('; ')}`
   })
   const k = result.kissinger
