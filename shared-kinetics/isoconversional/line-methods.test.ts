@@ -148,6 +148,8 @@ describe('holds', () => {
   })
 })
 
+const rate = (_: number, value: number): number => Math.exp(-12000 / value)
+
 describe('what a level cannot answer', () => {
   const rates = [2, 5, 10, 20]
   const T = [
@@ -172,7 +174,6 @@ describe('what a level cannot answer', () => {
   })
 
   it('with two programmes is the standard error, with one the energy', () => {
-    const rate = (_: number, value: number): number => Math.exp(-12000 / value)
     const two = constantRateSeries([0.2], [2, 5], [[500, 510]], rate)
     for (const method of [...heated, friedman]) {
       const result = method(two, quiet)
@@ -211,6 +212,10 @@ describe('what a level cannot answer', () => {
   })
 })
 
+const cancel = (): never => {
+  throw new Cancelled()
+}
+
 describe('calls that cannot be answered', () => {
   it('are refused with what is wrong and where', () => {
     const series = constantRateSeries([0.5], [1, 0, 5], [[500, 510, 520]])
@@ -221,9 +226,6 @@ describe('calls that cannot be answered', () => {
 
   it('stop when the work is no longer wanted', () => {
     const series = constantRateSeries([0.5], [1, 2, 5], [[500, 510, 520]])
-    const cancel = (): never => {
-      throw new Cancelled()
-    }
     expect(() => starink(series, { checkCancelled: cancel, progress: () => {} })).toThrow(Cancelled)
   })
 })

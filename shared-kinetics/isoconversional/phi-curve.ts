@@ -14,10 +14,8 @@ export function phiAround(
   grid: EnergyGrid,
   level: number,
   runs: number,
-  Ea: number,
+  { Ea, phiMinimum, phiThreshold }: { readonly Ea: number; readonly phiMinimum: number; readonly phiThreshold: number },
   halfWidth: number,
-  phiMinimum: number,
-  phiThreshold: number,
 ): LevelPhi {
   const reach = Number.isNaN(halfWidth) ? 0.2 * Ea : Math.max(4 * halfWidth, 0.02 * Ea)
   const from = Math.max(smallestEa, Ea - reach)

@@ -1,4 +1,4 @@
-import { bracketedRoot } from '../numerics/root.ts'
+import { bracketedRoot, type RootOptions } from '../numerics/root.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
 import { energies, energyGrid, largestEa, type EnergyGrid } from './energy-grid.ts'
@@ -34,8 +34,9 @@ export const vyazovkinInfo: MethodInfo = {
  * Assumes Ea constant from alpha = 0 to the level, and for histories that no reaction took place before their first sample. No approximation of the temperature
  * integral and no systematic error of its own; but where Ea varies with conversion it lags behind the differential value, as every integral taken from zero does.
  *
- * Statuses: `level-not-reached` (also where a level lies outside a run's history); `too-few-programmes`; `minimum-at-bound`: Phi has no minimum inside the bracket;
- * `minimum-flat`: the runs' effective temperatures are the same, so that Phi does not depend on Ea; `several-minima`: more than one, bounds included where Phi is lower there.
+ * Statuses: `level-not-reached` (also where a level lies outside a run's history); `too-few-programmes`; `minimum-at-bound`: Phi is lowest at an end of the bracket;
+ * `minimum-flat`: the runs' effective temperatures are the same, so that Phi does not depend on Ea; `several-minima`: another minimum lies below phiThreshold (without
+ * an interval, one inside the bracket below 1.1 phiMinimum). Unlike programmes taken together can give Phi further minima high above the lowest; these are passed over.
  *
  * @source vyazovkin-dollimore-1996
  * @source vyazovkin-1997
@@ -55,15 +56,13 @@ export const vyazovkin: IsoconversionalMethod = (series, context) => {
       columns.setStatus(level, 'level-not-reached')
       curves.push(noCurve)
     } else {
-      const minimum = findMinimum(integrals, grid, level)
-      if (minimum.status === 'ok') {
-        const { Ea, phiMinimum, standardError, s, r2 } = minimum
-        columns.setEnergy(level, Ea, standardError, r2)
-        const phiThreshold = phiMinimum + integrals.length * (columns.t * s) ** 2
-        curves.push(phiAround(grid, level, integrals.length, Ea, columns.t * standardError, phiMinimum, phiThreshold))
-      } else {
-        columns.setStatus(level, minimum.status)
+      const minimum = findMinimum(integrals, grid, level, columns.t)
+      if (typeof minimum === 'string') {
+        columns.setStatus(level, minimum)
         curves.push(phiOverRange(grid, level, integrals.length))
+      } else {
+        columns.setEnergy(level, minimum.Ea, minimum.standardError, minimum.r2)
+        curves.push(phiAround(grid, level, integrals.length, minimum, columns.t * minimum.standardError))
       }
     }
     context.progress(level + 1, levels)
@@ -78,65 +77,92 @@ const noCurve: LevelPhi = {
   phiThreshold: Number.NaN,
 }
 
-type Minimum =
-  | { readonly status: Exclude<LevelStatus, 'ok'> }
-  | {
-      readonly status: 'ok'
-      readonly Ea: number
-      readonly phiMinimum: number
-      readonly standardError: number
-      /** Residual standard deviation of ln J. */
-      readonly s: number
-      readonly r2: number
-    }
+/** A minimum of Phi at one level, with what is read from the integrals there. */
+interface Minimum {
+  readonly Ea: number
+  readonly phiMinimum: number
+  /** Phi at the ends of the interval; NaN without one. */
+  readonly phiThreshold: number
+  readonly standardError: number
+  readonly r2: number
+  /** The effective temperatures are one, so that the minimum says nothing about Ea. */
+  readonly flat: boolean
+}
 
 /** Effective temperatures that differ by less than this share are one temperature. */
 const sameTemperature = 1e-9
 
-function findMinimum(integrals: readonly TimeIntegral[], grid: EnergyGrid, level: number): Minimum {
+/** Without an interval, a minimum whose Phi is within this factor of the lowest might be the one meant: the J then differ by as much as an error of some K explains. */
+const mightBeMeant = 1.1
+
+/** The minimum at a level, or why there is none. `t` is the quantile of the interval, NaN without one. */
+function findMinimum(integrals: readonly TimeIntegral[], grid: EnergyGrid, level: number, t: number): Minimum | Exclude<LevelStatus, 'ok'> {
   const lnJ = new Float64Array(integrals.length)
   const inverseT = new Float64Array(integrals.length)
-  const scan = Array.from(energies, (_, g) => {
+  let alike = true
+  const slopes = energies.map((_, g) => {
     grid.read(g, level, lnJ, inverseT)
-    return { slope: phiSlope(lnJ, inverseT), spread: relativeSpread(inverseT) }
+    alike &&= relativeSpread(inverseT) < sameTemperature
+    return phiSlope(lnJ, inverseT)
   })
-  if (scan.every((point) => point.spread < sameTemperature)) return { status: 'minimum-flat' }
+  if (alike) return 'minimum-flat'
 
-  const brackets = scan.flatMap((point, g) => {
-    const next = scan[g + 1]
-    return next !== undefined && point.slope < 0 && next.slope >= 0 ? [{ g, fLower: point.slope, fUpper: next.slope }] : []
-  })
-  const [bracket, second] = brackets
-  if (bracket === undefined) return { status: 'minimum-at-bound' }
-  if (second !== undefined) return { status: 'several-minima' }
+  const minima: Minimum[] = []
+  for (let g = 1; g < energies.length; g++) {
+    const [fLower, fUpper] = [slopes[g - 1] as number, slopes[g] as number]
+    if (fLower < 0 && fUpper >= 0)
+      minima.push(minimumBetween(integrals, level, energies[g - 1] as number, energies[g] as number, { fLower, fUpper }, t))
+  }
+  minima.sort((a, b) => a.phiMinimum - b.phiMinimum)
+  const [lowest, ...others] = minima
+  if (lowest === undefined) return 'minimum-at-bound'
 
-  const exact = (Ea: number): void => {
+  const phiAt = (g: number): number => {
+    grid.read(g, level, lnJ, inverseT)
+    return phi(lnJ)
+  }
+  const last = energies.length - 1
+  const atBounds = [...((slopes[0] as number) > 0 ? [phiAt(0)] : []), ...((slopes[last] as number) < 0 ? [phiAt(last)] : [])]
+  if (atBounds.some((value) => value < lowest.phiMinimum)) return 'minimum-at-bound'
+  const limit = Number.isNaN(lowest.phiThreshold) ? mightBeMeant * lowest.phiMinimum : lowest.phiThreshold
+  if (others.some((other) => other.phiMinimum <= limit) || atBounds.some((value) => value <= lowest.phiThreshold)) return 'several-minima'
+  return lowest.flat ? 'minimum-flat' : lowest
+}
+
+function minimumBetween(
+  integrals: readonly TimeIntegral[],
+  level: number,
+  lower: number,
+  upper: number,
+  ends: RootOptions,
+  t: number,
+): Minimum {
+  const n = integrals.length
+  const lnJ = new Float64Array(n)
+  const inverseT = new Float64Array(n)
+  const integrate = (Ea: number): void => {
     integrals.forEach((integral, i) => {
       const value = integral.atLevel(Ea, level)
       lnJ[i] = value.lnJ
       inverseT[i] = value.inverseT
     })
   }
-  const root = bracketedRoot(
-    (Ea) => {
-      exact(Ea)
-      return phiSlope(lnJ, inverseT)
-    },
-    energies[bracket.g] as number,
-    energies[bracket.g + 1] as number,
-    { fLower: bracket.fLower, fUpper: bracket.fUpper, relativeTolerance: 1e-12 },
-  )
-  if (root.status !== 'converged') return { status: 'minimum-flat' }
-  exact(root.x)
-  if (relativeSpread(inverseT) < sameTemperature) return { status: 'minimum-flat' }
-  const phiMinimum = phi(lnJ)
-  const estimate = linearised(root.x, lnJ, inverseT)
-  // At a bound Phi may fall again towards an Ea that is not meant; only where it falls below the minimum found is the answer open.
-  for (const bound of [0, energies.length - 1]) {
-    grid.read(bound, level, lnJ, inverseT)
-    if (phi(lnJ) < phiMinimum) return { status: 'several-minima' }
+  const slope = (Ea: number): number => {
+    integrate(Ea)
+    return phiSlope(lnJ, inverseT)
   }
-  return { status: 'ok', Ea: root.x, phiMinimum, ...estimate }
+  const { x: Ea } = bracketedRoot(slope, lower, upper, { ...ends, relativeTolerance: 1e-12 })
+  integrate(Ea)
+  const { standardError, s, r2 } = linearised(Ea, lnJ, inverseT)
+  const phiMinimum = phi(lnJ)
+  return {
+    Ea,
+    phiMinimum,
+    phiThreshold: phiMinimum + n * (t * s) ** 2,
+    standardError,
+    r2,
+    flat: !(relativeSpread(inverseT) >= sameTemperature),
+  }
 }
 
 /** Standard error in J/mol, residual standard deviation and r2 of ln J + Ea u/R against u; not finite with two runs. */
