@@ -52,7 +52,9 @@ export function quantityOfName(name: string, unit: FileUnit | null): ColumnName 
   }
   if (/^t ?s$/.test(words) || /^(?:t sample|sample t)$/.test(words)) return value('temperature', 0)
   if (/^t ?(?:r|ref|prog|program|set|f|furnace)$/.test(words)) return value('temperature', 2)
-  if (/\b(?:temp|temperature)\b/.test(words)) {
+  // `T a (°C)`, `m 2 (mg)`: the unit vouches for a symbol with something behind it.
+  if (/^t\b/.test(words) && unit?.dimension === 'time') return value('time')
+  if (/\b(?:temp|temperature)\b/.test(words) || (/^t\b/.test(words) && unit?.dimension === 'temperature')) {
     return value('temperature', otherTemperature.test(words) ? 2 : /\bsample\b/.test(words) ? 0 : 1)
   }
   if (/^(?:(?:elapsed|run|test|total|measurement|measuring|experiment|scan|segment) )?time\b/.test(words)) {
@@ -67,6 +69,7 @@ export function quantityOfName(name: string, unit: FileUnit | null): ColumnName 
   if (/\bconversion\b|\bconv\b|\balpha\b|^\u03b1$|\bextent\b|\bdegree of (?:cure|conversion|reaction)\b/.test(words))
     return value('conversion')
   if (/\b(?:flow|spec|spectrum|spectrometer|number|charge|initial)\b/.test(words)) return { quantity: 'other' }
+  if (/^[mw]\b/.test(words) && unit?.dimension === 'mass') return value('mass')
   if (/\b(?:mass|weight|wt|tg|tga)\b|^[mw]$|^(?:\u03b4|delta) ?[mw]$/.test(words)) {
     const as = /\bloss\b/.test(words) ? 'loss' : /\bchange\b|\u03b4|\bdelta\b/.test(words) ? 'change' : 'value'
     return { quantity: 'mass', rank: as === 'value' ? 1 : 2, as }

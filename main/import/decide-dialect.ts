@@ -27,7 +27,7 @@ interface Stretch {
   readonly signs: boolean
 }
 
-const sampleLines = 400
+const sampleLines = 200
 const longestLine = 100_000
 const fewestRows = 3
 // Where two delimiters read the same numbers (a tab is a blank as well), the first of these is meant.

@@ -62,7 +62,7 @@ export function unitOf(text: string): FileUnit | null {
   // NFKC would turn the ordinal sign that some write for a degree into an o.
   key = key.replace(/\u2103/g, '\u00b0C').replace(/\u2109/g, '\u00b0F')
   key = key
-    .replace(/[\u00ba\u02da]/g, "\u00b0")
+    .replace(/[\u00ba\u02da]/g, '\u00b0')
     .normalize('NFKC')
     .replace(/[\u03bc\u00b5]/g, 'u')
     .replace(/\u2212/g, '-')

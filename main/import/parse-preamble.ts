@@ -61,9 +61,11 @@ function entryOf(line: string, dialect: Dialect): Entry {
   const [first = ''] = cells
   const signIsFirst = sign !== null && ((sign[1] ?? '').length < first.length || cells.length < 2)
   if (signIsFirst) {
-    // `Sample mass:;5,11;mg`: the rest of the line may still be cells.
-    const value = cells.length < 2 ? (sign[2] ?? '') : cells.join(' ').slice((sign[1] ?? '').length)
-    return { key: (sign[1] ?? '').trim(), value: value.replace(/^\s*[:=]\s*/, '').trim() }
+    // `Sample mass:;5,11;mg`: the value stands in cells of its own.
+    const behind = (sign[2] ?? '').trim()
+    const inCells = cells.length >= 2 && first.endsWith(':')
+    const value = inCells ? cells.slice(1).join(' ') : behind
+    return { key: (sign[1] ?? '').trim(), value }
   }
   if (cells.length >= 2) return { key: first.replace(/:$/, '').trim(), value: cells.slice(1).join(' ') }
   return { key: 'remark', value: first.replace(/:$/, '') }
@@ -78,7 +80,8 @@ function rateOf(entry: Entry, decimal: DecimalSignWord): HeatingRateText | null 
   return unit === undefined || number === null ? null : heatingRateIn(`${number} ${unit}`)
 }
 
-const massKey = /^(?:(?:initial|sample|specimen|starting) )*(?:mass|weight|size)(?: of (?:the )?sample)?\b|^m_?0\b/i
+const massKey =
+  /^(?:(?:initial|sample|specimen|starting) )*(?:mass|weight|size)(?: of (?:the )?sample)?\s*(?:[([/,].*)?$|^m_?0\s*(?:[([/,].*)?$/i
 
 function massOf(entry: Entry, decimal: DecimalSignWord): number | null {
   const split = /^\s*([-+]?[\d.,\u2009\u202f\u00a0']+)\s*(.*)$/.exec(entry.value)
