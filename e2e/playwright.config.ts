@@ -11,7 +11,8 @@ export default defineConfig({
   timeout: 60_000,
   expect: { timeout: 10_000 },
   forbidOnly: true,
-  reporter: [['list'], ['json']],
+  // all-tests.mjs reads the JSON; a person at a terminal reads the list.
+  reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_FILE === undefined ? [['list']] : [['list'], ['json']],
   use: {
     viewport: { width: 1440, height: 900 },
     trace: 'retain-on-failure',

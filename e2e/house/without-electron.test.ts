@@ -9,7 +9,11 @@ const place = mkdtempSync(join(tmpdir(), 'without-electron-'))
 afterAll(() => rmSync(place, { recursive: true, force: true }))
 
 const cli = (...args: string[]) =>
-  spawnSync(process.execPath, [join(place, 'out/main/cli.js'), ...args], { cwd: place, encoding: 'utf8', env: { ...process.env, NODE_PATH: '' } })
+  spawnSync(process.execPath, [join(place, 'out/main/cli.js'), ...args], {
+    cwd: place,
+    encoding: 'utf8',
+    env: { ...process.env, NODE_PATH: '' },
+  })
 
 /** First-order mass loss, Ea 150 kJ/mol, ln A 25 (1/s), by small steps of T; good to a fraction of a percent. */
 function firstOrderRun(heatingRate_K_per_min: number): string {

@@ -1,5 +1,6 @@
 import * as z from 'zod/mini'
 import type { StudyResult } from '../tasks/study-result.ts'
+import type { DeepReadonly } from './deep-readonly.ts'
 import { studyChangeSchema } from './study-change.ts'
 import type { StudyDocument } from './study-document.ts'
 
@@ -43,7 +44,7 @@ export const requestSchemas = {
 } as const
 
 export type RequestName = keyof typeof requestSchemas
-export type RequestInput<Name extends RequestName> = z.infer<(typeof requestSchemas)[Name]>
+export type RequestInput<Name extends RequestName> = DeepReadonly<z.infer<(typeof requestSchemas)[Name]>>
 
 /** The study as a replica holds it. `revision` counts up by one with every change, undo, redo or opened study. */
 export interface StudySnapshot {

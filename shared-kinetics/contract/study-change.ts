@@ -1,5 +1,6 @@
 import * as z from 'zod/mini'
 import type { RunInfo } from '../series/run.ts'
+import type { DeepReadonly } from './deep-readonly.ts'
 import { runInfoSchema, settingsSchema, studyLimits, windowSchema, type StudyDocument } from './study-document.ts'
 
 /** Every change a person can make to a study, as plain data. The host and each replica apply it with `applyChange`. */
@@ -23,7 +24,7 @@ export const studyChangeSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('set-baseline'), baseline: settingsSchema.shape.baseline }),
   z.object({ kind: z.literal('set-mean-range'), meanRange: settingsSchema.shape.meanRange }),
 ])
-export type StudyChange = z.infer<typeof studyChangeSchema>
+export type StudyChange = DeepReadonly<z.infer<typeof studyChangeSchema>>
 
 /** What the undo line says: "Undo: window of run 3". */
 export function labelOfChange(document: StudyDocument, change: StudyChange): string {

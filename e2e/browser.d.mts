@@ -1,0 +1,2 @@
+export function findBrowser(): Promise<string | null>
+export function findOrInstallBrowser(): Promise<string>
