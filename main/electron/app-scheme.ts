@@ -16,8 +16,6 @@ export function serveAppScheme(files: RendererFiles): void {
 }
 
 export function answerAppRequest(files: RendererFiles, request: Request): Response {
-  const refuse = (status: number, text: string): Response =>
-    new Response(text, { status, headers: { ...securityHeaders(), 'content-type': 'text/plain; charset=utf-8' } })
   if (request.method !== 'GET') return refuse(405, 'This address does not take requests of this kind.')
   if (!isAppAddress(request.url)) return refuse(403, 'This is not an address of the program.')
   const file = serveRendererFile(files, new URL(request.url).pathname)
@@ -25,6 +23,9 @@ export function answerAppRequest(files: RendererFiles, request: Request): Respon
     ? refuse(404, 'There is nothing at this address.')
     : new Response(new Uint8Array(file.bytes), { headers: file.headers })
 }
+
+const refuse = (status: number, text: string): Response =>
+  new Response(text, { status, headers: { ...securityHeaders(), 'content-type': 'text/plain; charset=utf-8' } })
 
 /** Whether an address belongs to the program's own pages. Compared by parts: Node gives a custom scheme no origin. */
 export function isAppAddress(address: string): boolean {

@@ -160,17 +160,17 @@ describe('the gate', () => {
     const { webContents } = theWindow()
     const stranger = new FakeWebContents()
     stranger.mainFrame.url = 'app://rampfold/index.html'
-    const refused = expect.objectContaining({ code: 'bad-request', message: "Only the program's own pages may ask it." })
+    const refused = { code: 'bad-request', message: "Only the program's own pages may ask it." }
     for (const from of [
       { sender: webContents, senderFrame: { url: 'app://rampfold/index.html' } },
       { sender: webContents, senderFrame: null },
       { sender: stranger, senderFrame: stranger.mainFrame },
     ]) {
-      await expect(knock(from, 'study.read', body)).rejects.toEqual(refused)
+      await expect(knock(from, 'study.read', body)).rejects.toMatchObject(refused)
     }
     for (const url of ['https://rampfold/', 'app://other/', 'file:///x', 'about:blank', 'app://rampfold@evil/', '']) {
       webContents.mainFrame.url = url
-      await expect(knock(theFrame(), 'study.read', body)).rejects.toEqual(refused)
+      await expect(knock(theFrame(), 'study.read', body)).rejects.toMatchObject(refused)
     }
   })
 
@@ -194,13 +194,13 @@ describe('the gate', () => {
   })
 })
 
-describe('the app scheme', () => {
-  const ask = async (url: string, method = 'GET'): Promise<Response> => {
-    const handler = fakeElectron.protocol.handlers.get('app')
-    if (handler === undefined) throw new Error('The scheme is not served.')
-    return handler(new Request(url, { method }))
-  }
+async function ask(url: string, method = 'GET'): Promise<Response> {
+  const handler = fakeElectron.protocol.handlers.get('app')
+  if (handler === undefined) throw new Error('The scheme is not served.')
+  return handler(new Request(url, { method }))
+}
 
+describe('the app scheme', () => {
   it('is registered as a secure standard scheme with no way around the Content-Security-Policy', async () => {
     await start()
     expect(fakeElectron.protocol.privileged).toEqual([

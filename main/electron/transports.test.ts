@@ -63,7 +63,7 @@ async function listen(url: string, cookie: string, signal: AbortSignal, listener
     let text = ''
     const decoder = new TextDecoder()
     for await (const piece of stream.body ?? []) {
-      text += decoder.decode(piece as Uint8Array, { stream: true })
+      text += decoder.decode(piece, { stream: true })
       const whole = text.split('\n\n')
       text = whole.pop() ?? ''
       for (const line of whole) if (line.startsWith('data: ')) listener(JSON.parse(line.slice(6)) as HostEvent)
@@ -92,7 +92,7 @@ async function overIpc(host: Host): Promise<Wire> {
 const transportOver = (wire: Wire): HostTransport => ({
   call: async <Name extends RequestName>(name: Name, input: RequestInput<Name>) =>
     decodeAnswer(await wire.send(name, encodeMessage(input))) as RequestAnswers[Name],
-  subscribe: wire.subscribe,
+  subscribe: (listener) => wire.subscribe(listener),
 })
 
 beforeAll(async () => {

@@ -39,21 +39,16 @@ export function openWindow(preloadPath: string): BrowserWindow {
 /** Holds for every page ever shown: it stays on the program's own address, opens no window, embeds nothing. */
 export function confinePages(contents: WebContents): void {
   contents.setWindowOpenHandler(() => ({ action: 'deny' }))
-  const stay = (event: { preventDefault(): void }, address: string): void => {
-    if (!isAppAddress(address)) event.preventDefault()
-  }
-  contents.on('will-navigate', (event) => {
-    stay(event, event.url)
-  })
-  contents.on('will-redirect', (event) => {
-    stay(event, event.url)
-  })
-  contents.on('will-frame-navigate', (event) => {
-    stay(event, event.url)
-  })
+  contents.on('will-navigate', stay)
+  contents.on('will-redirect', stay)
+  contents.on('will-frame-navigate', stay)
   contents.on('will-attach-webview', (event) => {
     event.preventDefault()
   })
+}
+
+function stay(event: { readonly url: string; preventDefault(): void }): void {
+  if (!isAppAddress(event.url)) event.preventDefault()
 }
 
 /** The sheet needs no permission but to write to the clipboard when a table is copied. */

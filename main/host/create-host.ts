@@ -88,7 +88,7 @@ export function createHost(options: HostOptions): Host {
       }
     },
     call: async (name, input) => run(name, parseRequest(name, input)),
-    subscribe: events.subscribe,
+    subscribe: (listener) => events.subscribe(listener),
     close: async ({ save } = { save: true }) => {
       closing ??= (async () => {
         const opened = await ready.catch(() => null)

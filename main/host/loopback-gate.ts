@@ -20,7 +20,6 @@ export function createLoopbackGate(port: number, secret: string): LoopbackGate {
   const hosts = new Set([`127.0.0.1:${port}`, `localhost:${port}`])
   // Cookies do not know ports: two hosts on one machine must not overwrite each other's.
   const cookieName = `rampfold-${port}`
-  const refuse = (reason: string, status: 400 | 403 = 403): Verdict => ({ kind: 'refuse', status, reason })
 
   return {
     judge: (request) => {
@@ -41,6 +40,8 @@ export function createLoopbackGate(port: number, secret: string): LoopbackGate {
     },
   }
 }
+
+const refuse = (reason: string, status: 400 | 403 = 403): Verdict => ({ kind: 'refuse', status, reason })
 
 function parseTarget(target: string | undefined, host: string): URL | null {
   if (target === undefined || !target.startsWith('/') || target.startsWith('//')) return null

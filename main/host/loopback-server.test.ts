@@ -207,7 +207,7 @@ describe('the loopback server', () => {
     expect(stream.headers.get('content-type')).toMatch(/^text\/event-stream/)
     let text = ''
     for await (const piece of stream.body ?? []) {
-      text += new TextDecoder().decode(piece as Uint8Array)
+      text += new TextDecoder().decode(piece)
       if (text.includes('data: ')) break
     }
     expect(text).toContain('data: {"kind":"study-changed","revision":1}')

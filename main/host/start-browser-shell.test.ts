@@ -96,6 +96,17 @@ describe('the browser shell', () => {
 const startScript = fileURLToPath(new URL('../../out/main/start.js', import.meta.url))
 const isBuilt = existsSync(startScript) && existsSync(fileURLToPath(new URL('../../out/renderer/index.html', import.meta.url)))
 
+async function ask(address: string, name: string, input: unknown): Promise<unknown> {
+  const { origin } = new URL(address)
+  const cookie = (await fetch(address, { redirect: 'manual' })).headers.get('set-cookie')?.split(';')[0] ?? ''
+  const answer = await fetch(`${origin}/request/${name}`, {
+    method: 'POST',
+    headers: { cookie, origin },
+    body: new Uint8Array(encodeMessage(input)),
+  })
+  return decodeAnswer(new Uint8Array(await answer.arrayBuffer()))
+}
+
 describe.skipIf(!isBuilt)('the built npm start (skipped until npm run build has made out/)', () => {
   const children: ChildProcess[] = []
   afterEach(() => {
@@ -124,17 +135,6 @@ describe.skipIf(!isBuilt)('the built npm start (skipped until npm run build has 
       said: () => said,
     }
   }
-  async function ask(address: string, name: string, input: unknown): Promise<unknown> {
-    const { origin } = new URL(address)
-    const cookie = (await fetch(address, { redirect: 'manual' })).headers.get('set-cookie')?.split(';')[0] ?? ''
-    const answer = await fetch(`${origin}/request/${name}`, {
-      method: 'POST',
-      headers: { cookie, origin },
-      body: new Uint8Array(encodeMessage(input)),
-    })
-    return decodeAnswer(new Uint8Array(await answer.arrayBuffer()))
-  }
-
   it.skipIf(process.platform === 'win32')(
     'serves without a display, says so in one line, and on SIGTERM saves and ends with 0',
     async () => {

@@ -1,4 +1,5 @@
 import { randomBytes } from 'node:crypto'
+import { EventEmitter, once } from 'node:events'
 import { fileURLToPath } from 'node:url'
 import { uploadChunkBytes, type RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
 import { KineticsError } from '../../shared-kinetics/errors.ts'
@@ -72,17 +73,15 @@ export async function startBrowserShell(options: BrowserShellOptions): Promise<B
   }
   const server = await startLoopbackServer({ host, files, secret: randomBytes(32).toString('base64url') })
 
-  let ended = (): void => undefined
-  const closed = new Promise<void>((resolve) => {
-    ended = resolve
-  })
+  const ending = new EventEmitter()
+  const closed = once(ending, 'closed').then(() => undefined)
   let closing: Promise<void> | null = null
   const close = async (): Promise<void> => {
     closing ??= (async () => {
       for (const signal of signals) process.off(signal, stop)
       await server.close()
       await host.close()
-      ended()
+      ending.emit('closed')
     })()
     return closing
   }
@@ -90,7 +89,7 @@ export async function startBrowserShell(options: BrowserShellOptions): Promise<B
     close().catch((error: unknown) => {
       warn(error instanceof Error ? error.message : String(error))
       process.exitCode = 1
-      ended()
+      ending.emit('closed')
     })
   }
   for (const signal of signals) process.on(signal, stop)

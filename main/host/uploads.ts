@@ -106,7 +106,7 @@ export function createUploads(randomId: () => string): Uploads {
       return heldBytes
     },
     close: () => {
-      for (const uploadId of [...uploads.keys()]) discard(uploadId)
+      for (const uploadId of uploads.keys()) discard(uploadId)
     },
   }
 }

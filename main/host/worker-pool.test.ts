@@ -2,7 +2,7 @@ import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import { createHash } from 'node:crypto'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { buildForTests } from './build-for-tests.ts'
-import { textBytes } from './host-testing.ts'
+import { rejectionOf, textBytes } from './host-testing.ts'
 import type { TaskPool } from './host-tasks.ts'
 import { createWorkerPool } from './worker-pool.ts'
 
@@ -49,13 +49,13 @@ describe('the worker pool', () => {
 
   it('cancels what still waits, without running it', async () => {
     const stop = new AbortController()
-    const first = expect(start(1).run('import-file', file('hang'))).rejects.toBeInstanceOf(Cancelled)
+    const first = rejectionOf(start(1).run('import-file', file('hang')))
     const second = pool.run('import-file', file('a.csv'), { signal: stop.signal })
     stop.abort()
     await expect(second).rejects.toBeInstanceOf(Cancelled)
     await expect(pool.run('import-file', file('b.csv'), { signal: AbortSignal.abort() })).rejects.toBeInstanceOf(Cancelled)
     await pool.close()
-    await first
+    expect(await first).toBeInstanceOf(Cancelled)
   })
 
   it('keeps the type of a mistake, and tells a bug as a plain error', async () => {
@@ -83,11 +83,11 @@ describe('the worker pool', () => {
 
   it('reads two files at once with two workers, and goes on with one that hangs', async () => {
     start(2)
-    const hanging = expect(pool.run('import-file', file('hang'))).rejects.toBeInstanceOf(Cancelled)
+    const hanging = rejectionOf(pool.run('import-file', file('hang')))
     const others = await Promise.all(['a', 'b', 'c'].map(async (name) => pool.run('import-file', file(name))))
     expect(others.map((answer) => answer.kind)).toEqual(['runs', 'runs', 'runs'])
     await pool.close()
-    await hanging
+    expect(await hanging).toBeInstanceOf(Cancelled)
     await expect(pool.run('import-file', file('a.csv'))).rejects.toBeInstanceOf(Cancelled)
   })
 

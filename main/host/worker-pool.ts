@@ -86,7 +86,7 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
 
   const pump = (): void => {
     if (closed) return
-    for (const job of [...waiting]) {
+    for (const job of waiting.slice()) {
       const slot = slotFor(job)
       if (slot === null) continue
       waiting.splice(waiting.indexOf(job), 1)
@@ -94,7 +94,7 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
       slot.known.add(job.message.task)
       slot.worker.ref()
       try {
-        slot.worker.postMessage(job.message)
+        slot.worker.postMessage(job.message, [])
       } catch (error) {
         // Input that cannot be cloned is a fault of the caller, not of the worker.
         slot.job = null
@@ -110,23 +110,24 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
       const cancelFlag = new Int32Array(new SharedArrayBuffer(4))
       lastId += 1
       const message: ToWorker = { kind: 'run', id: lastId, task: name, input, cancelFlag }
-      let stop = (): void => undefined
+      const settled = new AbortController()
+      const answer = new Promise<unknown>((resolve, reject) => {
+        const job: Job = { message, options, resolve, reject }
+        const stop = (): void => {
+          Atomics.store(cancelFlag, 0, 1)
+          const place = waiting.indexOf(job)
+          if (place < 0) return
+          waiting.splice(place, 1)
+          reject(new Cancelled())
+        }
+        options.signal?.addEventListener('abort', stop, { signal: settled.signal })
+        waiting.push(job)
+        pump()
+      })
       try {
-        return (await new Promise<unknown>((resolve, reject) => {
-          const job: Job = { message, options, resolve, reject }
-          stop = () => {
-            Atomics.store(cancelFlag, 0, 1)
-            const place = waiting.indexOf(job)
-            if (place < 0) return
-            waiting.splice(place, 1)
-            reject(new Cancelled())
-          }
-          options.signal?.addEventListener('abort', stop)
-          waiting.push(job)
-          pump()
-        })) as TaskAnswer<Name>
+        return (await answer) as TaskAnswer<Name>
       } finally {
-        options.signal?.removeEventListener('abort', stop)
+        settled.abort()
       }
     },
     close: async () => {

@@ -3,7 +3,7 @@ import { hostname, tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { emptyStudy, type StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
-import { sampleRun, textBytes } from '../host/host-testing.ts'
+import { rejectionOf, sampleRun, textBytes } from '../host/host-testing.ts'
 import { openStudyStore, type StudyParts, type StudyStore } from './study-store.ts'
 import { lockStale_ms } from './study-lock.ts'
 import { createAutosave } from './autosave.ts'
@@ -30,6 +30,12 @@ async function saved(): Promise<void> {
   const held = await store.lock('calcite')
   await held?.save(document, parts)
   await held?.release()
+}
+
+async function refused(id: string): Promise<string> {
+  const error = await rejectionOf(store.read(id))
+  expect(error).toMatchObject({ name: 'KineticsError', code: 'bad-study' })
+  return error instanceof Error ? error.message : ''
 }
 
 describe('the study store', () => {
@@ -59,10 +65,7 @@ describe('the study store', () => {
     await saved()
     const held = await store.lock('calcite')
     const asked: string[] = []
-    await held?.save(
-      { ...document, name: 'Renamed' },
-      { columns: (key) => (asked.push(key), run.columns), originalFile: parts.originalFile },
-    )
+    await held?.save({ ...document, name: 'Renamed' }, { columns: (key) => (asked.push(key), run.columns), originalFile: () => bytes })
     expect(asked).toEqual([])
     expect((await store.read('calcite')).document.name).toBe('Renamed')
   })
@@ -97,11 +100,6 @@ describe('the study store', () => {
   it('refuses ids that are paths, and studies that are gone, damaged, swapped or of a newer version', async () => {
     await saved()
     const path = join(folder, 'studies/calcite/study.json')
-    const refused = async (id: string): Promise<string> => {
-      const error: unknown = await store.read(id).catch((reason: unknown) => reason)
-      expect(error).toMatchObject({ name: 'KineticsError', code: 'bad-study' })
-      return error instanceof Error ? error.message : ''
-    }
     for (const id of ['../calcite', 'a/b', '', 'CON.txt', '..']) expect(await refused(id)).toMatch(/no study of this name/)
     expect(await refused('gone')).toMatch(/not on the disk/)
     await writeFile(path, JSON.stringify({ ...document, format: 'rampfold.study/7' }))

@@ -44,8 +44,9 @@ export async function importFiles(context: HandlerContext, files: readonly Uploa
 
 const isSavedCopy = (file: UploadedFile): boolean => file.fileName.toLowerCase().endsWith(savedCopySuffix)
 
+const isWhole = (file: UploadedFile): boolean => file.bytes.byteLength === file.declaredBytes
+
 function split(files: readonly UploadedFile[]): { whole: readonly UploadedFile[]; partial: readonly RefusedFile[] } {
-  const isWhole = (file: UploadedFile): boolean => file.bytes.byteLength === file.declaredBytes
   return {
     whole: files.filter(isWhole),
     partial: files
