@@ -168,7 +168,8 @@ function refuseUnusableRuns(document: StudyDocument, result: StudyResult): void 
   if (unusable.length === 0) return
   const lines = unusable.map((finding) => {
     const run = document.runs.find((candidate) => candidate.id === finding.run)
-    const name = run === undefined ? '' : `${run.file.name}${run.label === run.file.name ? '' : ` (run ${run.label})`}: `
+    // Most messages name the run themselves; its file is what a person has to look for.
+    const name = run === undefined ? '' : `${run.file.name}: `
     // Here nothing was left out: the whole call is refused.
     return `${name}${sentence(finding.message.replace(/ The run was left out:.*$/s, ''))}`
   })

@@ -8,7 +8,8 @@ const { version } = JSON.parse(readFileSync(new URL('../../package.json', import
 // A reader such as `head` that has seen enough is no failure.
 process.stdout.on('error', (error: NodeJS.ErrnoException) => {
   if (error.code === 'EPIPE') process.exit(0)
-  throw error
+  process.stderr.write(`rampfold: standard output cannot be written: ${error.message}\n`)
+  process.exit(1)
 })
 
 process.exitCode = await run(process.argv.slice(2), {

@@ -38,7 +38,9 @@ export function figureSvg(figure: Figure, size: PrintSize = defaultPrintSize): s
     ...x.ticks.map((tick) => gridAndTick('x', tick, x.step, plot)),
     ...y.ticks.map((tick) => gridAndTick('y', tick, y.step, plot)),
     secondAxis(figure.x, plot),
-    `<g clip-path="url(#plot)">${figure.marks.map((mark) => svgMark(mark, plot)).join('\n')}</g>`,
+    `<g clip-path="url(#plot)">${inDrawingOrder(figure.marks)
+      .map((mark) => svgMark(mark, plot))
+      .join('\n')}</g>`,
     `<path d="M${plot.left} ${plot.top}V${plot.bottom}H${plot.right}" fill="none" stroke="${ink}" stroke-width="1"/>`,
     text(axisTitle(figure.x), (plot.left + plot.right) / 2, plot.bottom + 38, { anchor: 'middle' }),
     text(axisTitle(figure.y), 18, (plot.top + plot.bottom) / 2, { anchor: 'middle', turned: true }),
@@ -49,6 +51,14 @@ export function figureSvg(figure: Figure, size: PrintSize = defaultPrintSize): s
     `height="${height / unitsPerMillimetre}mm" viewBox="0 0 ${width} ${height}">\n${parts.filter((part) => part !== '').join('\n')}\n</svg>\n`
   )
 }
+
+const isChosenMethod = (mark: Mark): boolean => mark.kind === 'points' && mark.tone.kind === 'method' && mark.tone.index === 0
+
+/** The chosen method comes first in a figure and in its legend, but is drawn over the others. */
+const inDrawingOrder = (marks: readonly Mark[]): readonly Mark[] => [
+  ...marks.filter((mark) => !isChosenMethod(mark)),
+  ...marks.filter(isChosenMethod),
+]
 
 interface DrawnAxis {
   readonly min: number
