@@ -1,7 +1,7 @@
 import type { DecimalSignWord, DelimiterWord, ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import type { ImportContext } from './import-context.ts'
 import type { Refuse } from './import-refusal.ts'
-import { isNumber } from './parse-number.ts'
+import { isMissingMark, isNumber } from './parse-number.ts'
 import { delimiterCharacter, splitCells, withoutEmptyEnd } from './split-cells.ts'
 import { isBlankLine, lineEnd, lineStart, lineText, type TextLines } from './text-lines.ts'
 
@@ -136,7 +136,7 @@ function stretchReader(delimiter: DelimiterWord, decimal: DecimalSignWord) {
       let others = 0
       const isNumeric = cells.map((cell) => {
         const is = cell === '' || (isNumber(cell, decimal) && (delimiter !== 'comma' || decimal !== 'comma' || quotes))
-        if (cell !== '') is ? numbers++ : others++
+        if (cell !== '' && !isMissingMark(cell)) is ? numbers++ : others++
         return is
       })
       const likeData = numbers >= 2 && numbers >= others

@@ -1,4 +1,4 @@
-import type { HeatingRateText } from './heating-rate-text.ts'
+import { type HeatingRateText, heatingRateIn } from './heating-rate-text.ts'
 import { type Refuse, quoted } from './import-refusal.ts'
 import type { PlannedColumn } from './plan-columns.ts'
 import type { RawTable } from './read-columns.ts'
@@ -33,7 +33,13 @@ const isSignal = (column: PlannedColumn): boolean => column.quantity !== 'time' 
  * each time or temperature behind a signal. Signals of one quantity under several heating rates beside one temperature are a run each.
  * @throws ImportRefusal where there is no temperature or no signal
  */
-export function divideIntoRuns(plan: readonly PlannedColumn[], table: RawTable, line: number, refuse: Refuse): Division {
+export function divideIntoRuns(
+  plan: readonly PlannedColumn[],
+  table: RawTable,
+  titles: readonly string[],
+  line: number,
+  refuse: Refuse,
+): Division {
   const used = plan.filter((column) => column.quantity !== null && (table.filled[column.index] ?? 0) > 0)
   refuseWhatIsMissing(plan, used, line, refuse)
   const leftOver: { column: PlannedColumn; why: string }[] = []
@@ -55,8 +61,10 @@ export function divideIntoRuns(plan: readonly PlannedColumn[], table: RawTable, 
       runs.push({ time, temperature, signals: listed(signals), heatingRate: agreed(rates) })
     }
   }
-  const parts = partsOf(runs)
-  return { runs: runs.map((run, i) => ({ ...run, part: parts[i] ?? null })), leftOver }
+  const titleOf = titlesOf(runs, titles)
+  const titled = runs.map((run, i) => ({ ...run, heatingRate: run.heatingRate ?? heatingRateIn(titleOf?.[i] ?? '') }))
+  const parts = partsOf(titled, titleOf)
+  return { runs: titled.map((run, i) => ({ ...run, part: parts[i] ?? null })), leftOver }
 }
 
 function refuseWhatIsMissing(plan: readonly PlannedColumn[], used: readonly PlannedColumn[], line: number, refuse: Refuse): void {
@@ -141,9 +149,21 @@ function agreed(rates: readonly (HeatingRateText | null)[]): HeatingRateText | n
   return first !== undefined && found.every((rate) => rate.heatingRate_K_per_s === first.heatingRate_K_per_s) ? first : null
 }
 
-/** Heating rate where it tells the runs apart, else the words of the headings that do, else a number. */
-function partsOf(runs: readonly Omit<RunOfColumns, 'part'>[]): readonly (string | null)[] {
+type Untold = Omit<RunOfColumns, 'part'>
+
+/** Titles above the headings, where each run has exactly one above its columns. */
+function titlesOf(runs: readonly Untold[], titles: readonly string[]): readonly string[] | null {
+  const columnsOf = (run: Untold): readonly number[] =>
+    [run.time, run.temperature, ...run.signals].flatMap((column) => (column === null ? [] : [column.index]))
+  const starts = runs.map((run) => Math.min(...columnsOf(run)))
+  const own = starts.map((start, i) => titles.slice(i === 0 ? 0 : start, starts[i + 1] ?? titles.length).filter((title) => title !== ''))
+  return runs.length > 1 && own.every((mine) => mine.length === 1) ? own.map(([title = '']) => title) : null
+}
+
+/** Title above the run, or heating rate where it tells the runs apart, else the words of the headings that do, else a number. */
+function partsOf(runs: readonly Untold[], titles: readonly string[] | null): readonly (string | null)[] {
   if (runs.length < 2) return [null]
+  if (titles !== null) return numbered(titles)
   const rates = runs.map((run) => run.heatingRate?.text ?? '')
   if (!rates.includes('')) return numbered(rates)
   const words = runs.map((run) => [run.temperature, ...run.signals].flatMap((column) => column.heading.name.split(/[\s_]+/)))

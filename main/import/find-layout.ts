@@ -2,7 +2,7 @@ import type { ImportOptions } from '../../shared-kinetics/contract/import-option
 import type { Dialect } from './decide-dialect.ts'
 import { unitOf } from './file-unit.ts'
 import { quoted, type Refuse } from './import-refusal.ts'
-import { isNumber } from './parse-number.ts'
+import { isMissingMark, isNumber } from './parse-number.ts'
 import { splitCells, withoutEmptyEnd } from './split-cells.ts'
 import { isBlankLine, lineEnd, lineStart, lineText, type TextLines } from './text-lines.ts'
 
@@ -13,6 +13,8 @@ export interface Layout {
   readonly headingLine: number | null
   /** Names of the columns; empty where the file has none. */
   readonly headings: readonly string[]
+  /** Cells of a line above the headings that names groups of columns: at least two of them, with empty cells between. */
+  readonly titles: readonly string[]
   readonly unitLine: number | null
   readonly units: readonly string[]
   readonly firstData: number
@@ -45,8 +47,10 @@ export function findLayout(lines: TextLines, dialect: Dialect, options: ImportOp
     throw refuse(line + 1, reason, 'Keep one table in the file, or mend these lines.')
   }
   const above = headingsAbove(lines, firstData, cellsOf, dialect, options, refuse)
+  refuseSurplusNames(lines, above, firstData, dialect, refuse)
+  const titles = titlesAbove(lines, above.headingLine, dialect)
   const preamble = range(0, firstData).filter((i) => i !== above.headingLine && i !== above.unitLine && !isBlankLine(lines, i))
-  return { preamble, ...above, firstData, lastData, trailing }
+  return { preamble, ...above, titles, firstData, lastData, trailing }
 }
 
 const range = (from: number, to: number): number[] => Array.from({ length: Math.max(0, to - from) }, (_, i) => from + i)
@@ -55,7 +59,7 @@ function isRowOfNumbers(cells: readonly string[], dialect: Dialect): boolean {
   let numbers = 0
   for (let i = 0; i < cells.length; i++) {
     const cell = cells[i] ?? ''
-    if (cell === '' || dialect.numericColumns[i] === false) continue
+    if (cell === '' || dialect.numericColumns[i] === false || isMissingMark(cell)) continue
     if (!isNumber(cell, dialect.decimal)) return false
     numbers++
   }
@@ -135,6 +139,41 @@ function headingsAbove(
   return { headingLine: candidate, headings, unitLine, units }
 }
 
+/**
+ * A delimiter inside a name moves every name behind it onto its neighbour's numbers. Rows that end in empty cells prove that the
+ * last names belong to empty columns; rows that are shorter than the names do not.
+ */
+function refuseSurplusNames(
+  lines: TextLines,
+  { headings, headingLine }: Headings,
+  firstData: number,
+  dialect: Dialect,
+  refuse: Refuse,
+): void {
+  if (headingLine === null) return
+  const firstRows = range(firstData, Math.min(firstData + 5, lines.count)).map(
+    (i) => splitCells(lineText(lines, i), dialect.delimiter).length,
+  )
+  const cells = Math.max(...firstRows)
+  if (headings.length <= cells && (dialect.delimiter !== 'blanks' || headings.length === dialect.numericColumns.length)) return
+  throw refuse(
+    headingLine + 1,
+    `This line names ${headings.length} columns but the rows have ${cells} cells, so that names and numbers cannot be matched.`,
+    'Put names that hold the delimiter in quotation marks, or rename them without it.',
+  )
+}
+
+/** `5 K/min;;;10 K/min;;` above the headings of runs side by side. */
+function titlesAbove(lines: TextLines, headingLine: number | null, dialect: Dialect): readonly string[] {
+  if (headingLine === null || dialect.delimiter === 'blanks') return []
+  const line = range(0, headingLine).findLast((i) => !isBlankLine(lines, i))
+  if (line === undefined || lineEnd(lines, line) - lineStart(lines, line) > longestHeadingLine) return []
+  const cells = withoutEmptyEnd(splitCells(lineText(lines, line), dialect.delimiter))
+  const filled = cells.flatMap((cell, i) => (cell === '' ? [] : [i]))
+  const apart = filled.every((at, i) => i === 0 || at - (filled[i - 1] ?? 0) >= 2)
+  return filled.length >= 2 && apart ? cells : []
+}
+
 function isUnitRow(cells: readonly string[]): boolean {
   const filled = cells.filter((cell) => cell !== '')
   return filled.length >= 2 && filled.every((cell) => unitOf(cell) !== null)
@@ -142,7 +181,7 @@ function isUnitRow(cells: readonly string[]): boolean {
 
 /** Cells of a heading line: a `#` in front is dropped; where blanks delimit, a name may hold single blanks and a bracketed unit. */
 function headingCells(line: string, cells: string[], dialect: Dialect): string[] {
-  const comment = /^\s*[#%]+\s*(?=[^\s\d])/.exec(line)?.[0] ?? ''
+  const comment = /^\s*#+\s*(?=[^\s\d])/.exec(line)?.[0] ?? ''
   const rest = line.slice(comment.length)
   const plain = comment === '' ? cells : withoutEmptyEnd(splitCells(rest, dialect.delimiter))
   const width = dialect.numericColumns.length

@@ -13,6 +13,8 @@ describe('a heating rate in words', () => {
     ['5 degC per minute', '5 K/minute'],
     ['0.5 K/s', '0.5 K/s'],
     ['60 K/h', '60 K/hour'],
+    ['DSC-5K/min', '5 K/minute'],
+    ['T_5Kmin', '5 K/minute'],
     ['18 °F/min', '10 K/minute'],
     ['ramp 20 C/min to 600 C under 50 mL/min', '20 K/minute'],
     ['10 K/min, then again 10 K/min', '10 K/minute'],

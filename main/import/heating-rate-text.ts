@@ -7,7 +7,7 @@ export interface HeatingRateText {
 const secondsPer = { s: 1, min: 60, h: 3600 } as const
 
 const inWords =
-  /(?<![\d.,\-\u2212])(\d+(?:[.,]\d+)?)\s*(K|k|\u00b0\s?[CFcf]|deg\.?\s?[CKFckf]|[CF]|oC)\s*(?:(\/|per(?=[\s_]))[\s_]*(min(?:utes?)?|s(?:ec(?:onds?)?)?|h(?:ours?|r)?)(?![A-Za-z])|[\s\u00b7*-]?(min)(?![A-Za-z])(?:\s*\^?\s*-\s*1)?)/g
+  /(?<![\d.,])(?<!(?:^|[\s(:;])[-\u2212])(\d+(?:[.,]\d+)?)\s*(K|k|\u00b0\s?[CFcf]|deg\.?\s?[CKFckf]|[CF]|oC)\s*(?:(\/|per(?=[\s_]))[\s_]*(min(?:utes?)?|s(?:ec(?:onds?)?)?|h(?:ours?|r)?)(?![A-Za-z])|[\s\u00b7*-]?(min)(?![A-Za-z])(?:\s*\^?\s*-\s*1)?)/g
 
 /**
  * Every heating rate in a piece of text: `10 K/min`, `9,0 °C/min`, `5 K per min`, `4 K min⁻¹`. A falling one (`-10 K/min`) is none.

@@ -28,7 +28,7 @@ export function parsePreamble(lines: TextLines, layout: Layout, dialect: Dialect
   const entries = layout.preamble.slice(0, most.entries).map((i) => entryOf(lineText(lines, i).slice(0, most.line), dialect))
   const rateEntry = (wanted: RegExp): { rate: HeatingRateText; entry: Entry } | null => {
     const found = entries
-      .filter((entry) => wanted.test(entry.key))
+      .filter((entry) => wanted.test(entry.key) && !/\bcool/i.test(entry.key))
       .map((entry) => ({ rate: rateOf(entry, dialect.decimal), entry }))
       .filter((pair): pair is { rate: HeatingRateText; entry: Entry } => pair.rate !== null)
     const [first] = found
@@ -109,7 +109,7 @@ export function exothermicIn(texts: readonly string[]): 'up' | 'down' | null {
   const said = new Set<'up' | 'down'>()
   for (const text of texts) {
     for (const [, kind = '', way = ''] of text.matchAll(
-      /\b(exo|endo)(?:thermic|thermal|therm)?\b[\s:;,=()[\]]*(?:is |= ?)?(up(?:wards?)?|down(?:wards?)?|positive|negative|\u2191|\u2193)/gi,
+      /\b(exo|endo)(?:thermic|thermal|therm)?\b(?:\s+(?:direction|effects?|events?|peaks?|signal|is))*[\s:;,=()[\]]*(up(?:wards?)?|down(?:wards?)?|positive|negative|\u2191|\u2193)/gi,
     )) {
       const up = /^(?:up|positive|\u2191)/i.test(way)
       said.add(up === /^exo/i.test(kind) ? 'up' : 'down')

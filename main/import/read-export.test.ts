@@ -116,6 +116,8 @@ describe('the lines above the table', () => {
     ['Exothermic: up', 'up'],
     ['Exo down', 'down'],
     ['Endothermic: up', 'down'],
+    ['Exothermic direction: down', 'down'],
+    ['Exothermic effects are up', null],
     ['Exothermic;positive', 'up'],
     ['Exo: up\nEndo: up', null],
     ['Sample: exotic', null],
@@ -194,6 +196,24 @@ describe('runs side by side', () => {
     ])
   })
 
+  it('take heating rate and label from titles above their headings', () => {
+    const runs = read(table('5 K/min,,cooled first 10 K/min,', 'T (°C),Mass (mg),T (°C),Mass (mg)', '20,9,20,8', '21,9,21,8', '22,8,22,7'))
+    expect(
+      runs.map(({ info }) => [info.label, (info.nominalHeatingRate?.heatingRate_K_per_s ?? 0) * 60, info.nominalHeatingRate?.source]),
+    ).toEqual([
+      ['sample · 5 K/min', 5, 'heading'],
+      ['sample · cooled first 10 K/min', 10, 'heading'],
+    ])
+  })
+
+  it('share one time column that stands in front of all of them', () => {
+    const runs = read(table('Time (min),T 1 (K),m 1 (mg),T 2 (K),m 2 (mg)', '0,300,9,300,8', '1,301,8,305,7', '2,302,7,310,6'))
+    expect(runs.map(({ info, columns }) => [info.label, columns.time_s?.at(-1), columns.temperature_K.at(-1)])).toEqual([
+      ['sample · 1', 120, 302],
+      ['sample · 2', 120, 310],
+    ])
+  })
+
   it('are not made of a second temperature or of a second unit of one', () => {
     const { info } = only(
       table(
@@ -241,6 +261,19 @@ describe('columns that are kept or set aside', () => {
     )
     expect(info.signals.map((signal) => signal.label)).toEqual(['Total Heat Flow (W/g)', 'Reversing Heat Flow (W/g)', 'Mass (mg)'])
     expect(codes(info)).toEqual(['columns-set-aside', 'several-columns-of-one-quantity'])
+  })
+
+  it('passes over marks for missing numbers in columns that are not used', () => {
+    const rows = Array.from({ length: 60 }, (_, i) => `${i},${300 + i},${9 - i / 10},${i < 3 ? 'NaN' : 0.1}`)
+    expect(only(table('Time (s),T (K),Mass (mg),DTG (mg/min)', ...rows)).info.rows).toBe(60)
+  })
+
+  it('reads headings behind a comment sign and a unit row that starts with %', () => {
+    expect(
+      only(table('# sample 7', '# Time (s)  Sample Temp (K)  Mass (mg)', '0 300 9', '1 301 8', '2 302 7')).info.signals[0]?.label,
+    ).toBe('Mass (mg)')
+    const { columns } = only(table('Mass;Temp.;Time', '%;°C;s', '100;20,5;0', '99,5;21,5;1', '99;22,5;2'))
+    expect([...(columns.signals[0] ?? [])]).toEqual([1, 0.995, 0.99])
   })
 
   it('passes over words, times of day and blanks in columns that are not used', () => {

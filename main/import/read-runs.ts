@@ -31,7 +31,7 @@ export function readRuns(inHand: FileInHand): readonly { readonly info: Omit<Run
   const plan = planColumns(layout, dialect.numericColumns.length, options, refuse)
   const table = readColumns(lines, layout, dialect, plan, context, refuse)
   const headingLine = (layout.headingLine ?? layout.unitLine ?? layout.firstData) + 1
-  const division = divideIntoRuns(plan, table, headingLine, refuse)
+  const division = divideIntoRuns(plan, table, layout.titles, headingLine, refuse)
   const preamble = parsePreamble(lines, layout, dialect)
   const alone = division.runs.length === 1
   const exothermic = options.exothermic ?? preamble.exothermic ?? exothermicIn(layout.headings)

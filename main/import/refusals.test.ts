@@ -113,6 +113,27 @@ const cases: readonly Case[] = [
     remedy: /Mend/,
   },
   {
+    what: 'a delimiter inside a name, which would move names onto other numbers',
+    content: lines('Time (s),Temp, sample (K),Mass (mg),DSC (mW)', ['0,300,9,1', '1,310,8,1', '2,320,7,2']),
+    line: 1,
+    reason: /names 5 columns but the rows have 4 cells/,
+    remedy: /quotation marks/,
+  },
+  {
+    what: 'names of several words between blanks',
+    content: lines('Gas Flow Temp Mass DSC', ['50 300 9 1', '50 310 8 1', '50 320 7 2']),
+    line: 1,
+    reason: /names 5 columns but the rows have 4 cells/,
+    remedy: /rename/,
+  },
+  {
+    what: 'a mark for a missing number in a column that is needed',
+    content: lines(head, rows(4), '40,34.5,NaN', rows(3, 5)),
+    line: 6,
+    reason: /“NaN” in column “Mass \(mg\)” is not a number/,
+    remedy: /remove/,
+  },
+  {
     what: 'a broken first row',
     content: lines(head, '0,x,9', rows(20, 1)),
     line: 2,
