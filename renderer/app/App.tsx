@@ -1,4 +1,4 @@
-import { useCallback, useEffect, useMemo, useRef, useState } from 'react'
+import { useCallback, useEffect, useMemo, useState } from 'react'
 import { Button } from 'react-aria-components'
 import { ColoursContext, useServices, useStudy, useView } from '../state/services.ts'
 import { createSheetActions } from './sheet-actions.ts'
@@ -11,13 +11,13 @@ import { useShortcuts } from './use-shortcuts.ts'
 export function App() {
   const services = useServices()
   const { session, view } = services
-  const fileInput = useRef<HTMLInputElement>(null)
+  const [fileInput, setFileInput] = useState<HTMLInputElement | null>(null)
   const theme = useView((state) => state.theme)
   const connection = useStudy((state) => state.connection)
   const replica = useStudy((state) => state.replica)
   const { paper, colours } = usePaper(theme)
   const importFiles = useCallback((files: readonly File[]) => void session.importFiles(files), [session])
-  const actions = useMemo(() => createSheetActions(services, () => fileInput.current?.click()), [services])
+  const actions = useMemo(() => createSheetActions(services, () => fileInput?.click()), [services, fileInput])
   const filesHangOver = useFileDrop(importFiles)
   useShortcuts(actions)
 
@@ -41,7 +41,7 @@ export function App() {
           </div>
         )}
         <input
-          ref={fileInput}
+          ref={setFileInput}
           type="file"
           multiple
           hidden

@@ -1,7 +1,7 @@
 import { Button } from 'react-aria-components'
 import type { RecentStudy } from '../../shared-kinetics/contract/host-api.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
-import { count } from '../sheet/format.ts'
+import { count, formatMoment } from '../sheet/format.ts'
 import { Half } from '../sheet/Half.tsx'
 import { Preview } from './Preview.tsx'
 
@@ -51,7 +51,7 @@ export function EmptySheet({ actions, recent }: { readonly actions: SheetActions
                       {study.name}
                     </Button>{' '}
                     <span className="soft">
-                      {count(study.runs, 'run')}, {study.changedAt.slice(0, 10)}
+                      {count(study.runs, 'run')}, {formatMoment(study.changedAt)}
                     </span>
                   </li>
                 ))}

@@ -53,7 +53,7 @@ function EvaluationMessage({ evaluation, stale }: { readonly evaluation: Evaluat
             {evaluation.kind === 'stopped' ? 'The evaluation was stopped.' : evaluation.message}
             {stale && ' The numbers below belong to the study as it was before.'}
           </p>
-          <Button className="text-button" onPress={() => void session.evaluateAgain()}>
+          <Button className="text-button" onPress={session.evaluateAgain}>
             Evaluate again
           </Button>
         </div>

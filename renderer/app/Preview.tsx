@@ -8,6 +8,7 @@ export function Preview() {
   return (
     <div
       className="preview"
+      // oxlint-disable-next-line jsx-a11y/prefer-tag-over-role -- drawn in place, so that it follows the theme
       role="img"
       aria-label="Drawing: conversion curves of five runs, slow to fast, and the activation energy against conversion that follows from them, with its interval."
     >

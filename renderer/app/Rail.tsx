@@ -1,6 +1,7 @@
 import { useMemo } from 'react'
 import type { StudyResult } from '../../shared-kinetics/contract/study-result.ts'
-import { decimals, formatCelsius, formatInterval, formatLevel, halfWidth, statusWords } from '../sheet/format.ts'
+import { formatAtLevel, levelQuantity } from '../sheet/at-level.ts'
+import { decimals, formatInterval, formatLevel, halfWidth, statusWords } from '../sheet/format.ts'
 import { LevelRail } from '../sheet/LevelRail.tsx'
 import { railBars } from '../sheet/rail-bars.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
@@ -37,13 +38,14 @@ export function Rail({
   )
   const r2 = decimals(profile?.r2[levelIndex], 5)
   const status = profile?.status[levelIndex]
-  const slowest = formatCelsius(result.runs[0]?.temperatureAtLevel_K[levelIndex])
-  const fastest = formatCelsius(result.runs.at(-1)?.temperatureAtLevel_K[levelIndex])
+  const quantity = levelQuantity(result)
+  const slowest = formatAtLevel(result.runs[0], levelIndex, quantity)
+  const fastest = formatAtLevel(result.runs.at(-1), levelIndex, quantity)
   const word = status === undefined || status === 'ok' ? '' : statusWords[status]
   const spoken = [
     formatLevel(level),
     Ea === '' ? word : `Ea ${Ea}${interval === '' ? '' : ` plus or minus ${interval}`} kJ/mol`,
-    slowest === '' || fastest === '' ? '' : `${slowest} to ${fastest} °C`,
+    slowest === '' || fastest === '' ? '' : `${slowest} to ${fastest} ${quantity.unit}`,
   ]
     .filter((part) => part !== '')
     .join(', ')
@@ -69,8 +71,9 @@ export function Rail({
         )}
       </p>
       <p>
-        T <strong>{slowest === '' ? 'not reached' : slowest}</strong> … <strong>{fastest === '' ? 'not reached' : fastest}</strong> °C
-        <span className="soft"> slowest to fastest</span>
+        {quantity.symbol} <strong>{slowest === '' ? 'not reached' : slowest}</strong> …{' '}
+        <strong>{fastest === '' ? 'not reached' : fastest}</strong> {quantity.unit}
+        <span className="soft"> {quantity.kind === 'time' ? ' first to last run' : ' slowest to fastest'}</span>
       </p>
     </LevelRail>
   )

@@ -79,7 +79,12 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
             <TabPanel id="activation" className="halves">
               <ActivationStage {...props} />
             </TabPanel>
-            <MarginNotes findings={findings.filter((finding) => finding.stage === stage)} all={findings} onShow={jump.toPlace} />
+            <MarginNotes
+              findings={findings.filter((finding) => finding.stage === stage)}
+              all={findings}
+              settled={result !== null}
+              onShow={jump.toPlace}
+            />
             {stage === 'activation' && <Safety />}
           </main>
           {result !== null && level !== null && <Rail result={result} levelIndex={levelIndex} level={level} actions={actions} />}

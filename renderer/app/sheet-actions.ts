@@ -1,6 +1,7 @@
 import { runCopyColumns, runRows } from '../stages/runs/run-rows.ts'
 import { levelColumns, levelRows } from '../stages/activation/level-rows.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
+import { levelQuantity } from '../sheet/at-level.ts'
 import { copyText } from '../sheet/data-table.ts'
 import { nearestLevel } from '../sheet/nearest-level.ts'
 import type { Services } from '../state/services.ts'
@@ -68,7 +69,9 @@ export function tableOfStage({ session, view }: Services): string | null {
   const levelIndex = nearestLevel(result?.levels ?? [], conversion)
   const level = result?.levels[levelIndex] ?? null
   if (stage === 'runs')
-    return replica.document.runs.length === 0 ? null : copyText(runCopyColumns(level, levelIndex), runRows(replica.document, result))
+    return replica.document.runs.length === 0
+      ? null
+      : copyText(runCopyColumns(level, levelIndex, levelQuantity(result)), runRows(replica.document, result))
   const available = result?.profiles.map((profile) => profile.method) ?? []
   const chosen = chosenAmong(available, chosenMethod)
   if (result === null || chosen === null) return null

@@ -1,4 +1,4 @@
-import { useLayoutEffect, useState, useSyncExternalStore } from 'react'
+import { useMemo, useSyncExternalStore } from 'react'
 import { chartColoursOf, type ChartColours } from '../charts/chart-colours.ts'
 import type { Paper } from '../charts/run-scale.ts'
 import type { Theme } from '../state/view-store.ts'
@@ -27,8 +27,8 @@ export function storeTheme(theme: Theme): void {
 export function usePaper(theme: Theme): { readonly paper: Paper; readonly colours: ChartColours } {
   const systemIsDark = useSyncExternalStore(subscribeToSystem, () => darkQuery().matches)
   const paper: Paper = theme === 'system' ? (systemIsDark ? 'dark' : 'light') : theme
-  const [colours, setColours] = useState(() => layPaper(paper))
-  useLayoutEffect(() => setColours(layPaper(paper)), [paper])
+  // Laid during rendering, because charts below read their colours from it in the same pass; laying the same paper twice changes nothing.
+  const colours = useMemo(() => layPaper(paper), [paper])
   return { paper, colours }
 }
 

@@ -46,7 +46,10 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
   const pickRef = useRef(onPick)
   const [zoomed, setZoomed] = useState(false)
   const helpId = useId()
-  pickRef.current = onPick
+
+  useEffect(() => {
+    pickRef.current = onPick
+  }, [onPick])
 
   useEffect(() => {
     const canvas = canvasRef.current
@@ -80,7 +83,7 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
     if (chart === null) return
     setOverlay(chart, { marks: overlay, colours })
     chart.draw()
-  }, [overlay, colours, figure, emphasis])
+  }, [overlay, colours])
 
   const show = (range: ChartRange): void => {
     const { current: chart } = chartRef
@@ -130,10 +133,11 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
           Copy picture
         </Button>
       </div>
-      {/* oxlint-disable-next-line jsx-a11y/no-noninteractive-tabindex -- a chart is zoomed and moved by keys, so it takes the focus */}
-      <div className="chart-area" role="group" aria-label={figure.title} aria-describedby={helpId} tabIndex={0} onKeyDown={onKeyDown}>
+      {/* oxlint-disable-next-line jsx-a11y/no-noninteractive-tabindex, jsx-a11y/no-noninteractive-element-interactions -- zoomed and moved by keys */}
+      <figure className="chart-area" aria-label={figure.title} aria-describedby={helpId} tabIndex={0} onKeyDown={onKeyDown}>
+        {/* oxlint-disable-next-line jsx-a11y/prefer-tag-over-role -- a canvas is an image to those who hear the screen */}
         <canvas ref={canvasRef} role="img" aria-label={figure.description} />
-      </div>
+      </figure>
       <p id={helpId} className="visually-hidden">
         Plus and minus zoom, arrow keys move, 0 shows the whole figure, Control C copies the picture.
       </p>

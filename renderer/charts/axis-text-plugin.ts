@@ -55,18 +55,19 @@ export const axisTextPlugin: Plugin = {
   },
 }
 
+const partFont = (i: number): string => `${i % 2 === 1 ? titleSize * 0.72 : titleSize}px ${chartFont}`
+
 /** Text centred at a place; what follows `^` up to the next mark that is no number is raised and smaller. */
 function drawRaised(ctx: CanvasRenderingContext2D, text: string, centre: number, baseline: number): void {
   const parts = text.split(/\^([\d.]+)/)
-  const fontOf = (i: number): string => `${i % 2 === 1 ? titleSize * 0.72 : titleSize}px ${chartFont}`
   const widths = parts.map((part, i) => {
-    ctx.font = fontOf(i)
+    ctx.font = partFont(i)
     return ctx.measureText(part).width
   })
   let left = centre - widths.reduce((sum, width) => sum + width, 0) / 2
   ctx.textAlign = 'left'
   for (const [i, part] of parts.entries()) {
-    ctx.font = fontOf(i)
+    ctx.font = partFont(i)
     ctx.fillText(part, left, i % 2 === 1 ? baseline - titleSize * 0.36 : baseline)
     left += widths[i] ?? 0
   }

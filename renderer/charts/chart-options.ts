@@ -28,7 +28,7 @@ export function chartOptions(figure: Figure, colours: ChartColours): ChartOption
     },
     // Round steps on screen and in exported figures alike; Chart.js would add the ends of the axis to its own.
     afterBuildTicks: (built) => {
-      const steps = built.isHorizontal() ? built.width / 75 : built.height / 55
+      const steps = built.isHorizontal() ? built.width / 50 : built.height / 42
       built.ticks = niceTicks(built.min, built.max, Math.min(10, Math.max(2, Math.round(steps)))).map((value) => ({ value }))
     },
   })

@@ -18,6 +18,10 @@ const colours: ChartColours = {
 const axis = { label: 'Ea', unit: 'kJ/mol', min: null, max: null, second: null }
 const figureWith = (...marks: Mark[]): Figure => ({ id: 'test', title: 'Test', description: 'A test.', x: axis, y: axis, marks })
 
+const runLine = (index: number): Mark => ({ kind: 'line', name: `${index}`, tone: { kind: 'run', place: 0, index }, x: [1], y: [1] })
+/** Chart.js draws the greatest order first. */
+const orderOf = (dataset: object | undefined): number => Number(Reflect.get(dataset ?? {}, 'order'))
+
 describe('datasets of a figure', () => {
   it('joins a line through its points and breaks it where a number is not to be had', () => {
     const [line] = datasetsOf(
@@ -68,14 +72,13 @@ describe('datasets of a figure', () => {
   it('draws later marks above earlier ones', () => {
     const faint: Mark = { kind: 'line', name: 'a', tone: { kind: 'faint' }, x: [1], y: [1] }
     const [first, second] = datasetsOf(figureWith(faint, { ...faint, name: 'b' }), colours, null)
-    expect(first?.order ?? 0).toBeGreaterThan(second?.order ?? 0)
+    expect(orderOf(first)).toBeGreaterThan(orderOf(second))
   })
 
   it('draws the run pointed at stronger and the other runs fainter', () => {
-    const run = (index: number): Mark => ({ kind: 'line', name: `${index}`, tone: { kind: 'run', place: 0, index }, x: [1], y: [1] })
-    const [pointed, other] = datasetsOf(figureWith(run(0), run(1)), colours, 0)
-    expect([pointed?.borderWidth, pointed?.borderColor]).toEqual([3, '#000080'])
-    expect(other?.borderColor).toBe('#00008059')
+    const [pointed, other] = datasetsOf(figureWith(runLine(0), runLine(1)), colours, 0)
+    expect(pointed).toMatchObject({ borderWidth: 3, borderColor: '#000080' })
+    expect(other).toMatchObject({ borderColor: '#00008059' })
   })
 
   it('leaves rules to the annotation of the axis they stand on', () => {

@@ -5,11 +5,14 @@ export function Half({
   side,
   title,
   note,
+  aside,
   children,
 }: {
   readonly side: 'evidence' | 'result'
   readonly title: string
   readonly note: ReactNode
+  /** A control that belongs to the whole half, at the right of its title. */
+  readonly aside?: ReactNode
   readonly children: ReactNode
 }) {
   const id = useId()
@@ -18,6 +21,7 @@ export function Half({
       <header className="half-head">
         <h2 id={id}>{title}</h2>
         <p className="half-note">{note}</p>
+        {aside}
       </header>
       {children}
     </section>

@@ -47,6 +47,7 @@ export function LevelRail({ levels, index, bars, spoken, onMove, children }: Lev
       </div>
       <div
         className="rail-grip"
+        // oxlint-disable-next-line jsx-a11y/prefer-tag-over-role -- a range input has no uneven levels and no bars
         role="slider"
         tabIndex={0}
         aria-label="Conversion level"

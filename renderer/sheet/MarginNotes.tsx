@@ -9,10 +9,13 @@ export const findingElementId = (finding: Finding, findings: readonly Finding[])
 export function MarginNotes({
   findings,
   all,
+  settled,
   onShow,
 }: {
   readonly findings: readonly Finding[]
   readonly all: readonly Finding[]
+  /** Whether the runs have been looked at yet. */
+  readonly settled: boolean
   readonly onShow: (finding: Finding) => void
 }) {
   return (
@@ -20,7 +23,7 @@ export function MarginNotes({
       <h2 id="margin-title" className="margin-title">
         Findings on this stage
       </h2>
-      {findings.length === 0 && <p className="margin-empty">Nothing to remark.</p>}
+      {findings.length === 0 && <p className="margin-empty">{settled ? 'Nothing to remark.' : 'They follow with the results.'}</p>}
       <ul className="notes">
         {findings.map((finding) => {
           const id = findingElementId(finding, all)

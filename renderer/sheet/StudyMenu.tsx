@@ -2,7 +2,7 @@ import { Button, Header, Keyboard, Menu, MenuItem, MenuSection, MenuTrigger, Pop
 import type { RecentStudy } from '../../shared-kinetics/contract/host-api.ts'
 import type { Theme } from '../state/view-store.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
-import { count } from './format.ts'
+import { count, formatMoment } from './format.ts'
 
 const shownRecent = 8
 
@@ -63,7 +63,7 @@ export function StudyMenu({
                 >
                   <Text slot="label">{study.name}</Text>
                   <Text slot="description">
-                    {count(study.runs, 'run')}, {study.changedAt.slice(0, 10)}
+                    {count(study.runs, 'run')}, {formatMoment(study.changedAt)}
                   </Text>
                 </MenuItem>
               ))}

@@ -43,6 +43,7 @@ export function formatInterval(value: Maybe | undefined, lower: Maybe | undefine
   )
     return ''
   const lopsided = Math.abs((upper + lower) / 2 - value) > half / 10
+  if (!lopsided && half < 0.5 * 10 ** -count) return `< ${(10 ** -count).toFixed(count)}`
   return lopsided ? `−${decimals(value - lower, count)} +${decimals(upper - value, count)}` : decimals(half, count)
 }
 
@@ -115,3 +116,12 @@ export const nominalSourceWords: Readonly<Record<NonNullable<RunInfo['nominalHea
   preamble: 'from the preamble',
   name: 'from the file name',
 }
+
+/** A moment as `2026-12-01 14:05` in the reader's own time. */
+export function formatMoment(iso: string): string {
+  const moment = new Date(iso)
+  if (Number.isNaN(moment.getTime())) return iso
+  return `${moment.getFullYear()}-${twoDigits(moment.getMonth() + 1)}-${twoDigits(moment.getDate())} ${twoDigits(moment.getHours())}:${twoDigits(moment.getMinutes())}`
+}
+
+const twoDigits = (part: number): string => String(part).padStart(2, '0')

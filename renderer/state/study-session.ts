@@ -18,24 +18,27 @@ import { initialStudyState, type StudyState } from './study-state.ts'
 /** Everything a person can do to the study from this window. Every promise settles without throwing: what went wrong is in the store. */
 export interface StudySession {
   readonly store: StoreApi<StudyState>
-  start(): Promise<void>
+  readonly start: () => Promise<void>
   /** Shows the change at once and sends it; calls are sent one after the other. */
-  change(change: StudyChange): Promise<void>
-  undo(): Promise<void>
-  redo(): Promise<void>
-  open(request: OpenRequest): Promise<void>
-  importFiles(files: readonly File[]): Promise<void>
-  cancelImport(): Promise<void>
-  cancelEvaluation(): Promise<void>
-  evaluateAgain(): Promise<void>
+  readonly change: (change: StudyChange) => Promise<void>
+  readonly undo: () => Promise<void>
+  readonly redo: () => Promise<void>
+  readonly open: (request: OpenRequest) => Promise<void>
+  readonly importFiles: (files: readonly File[]) => Promise<void>
+  readonly cancelImport: () => Promise<void>
+  readonly cancelEvaluation: () => Promise<void>
+  readonly evaluateAgain: () => void
   /** The answer, or null when it could not be had (the store then says why). */
-  ask<Name extends 'study.save-copy' | 'results.export'>(name: Name, input: AskInput<Name>): Promise<RequestAnswers[Name] | null>
-  readRecent(): Promise<void>
-  refresh(): Promise<void>
-  dismissRefused(): void
-  dismissNotice(): void
-  say(kind: 'failure' | 'done', text: string): void
-  stop(): void
+  readonly ask: <Name extends 'study.save-copy' | 'results.export'>(
+    name: Name,
+    input: AskInput<Name>,
+  ) => Promise<RequestAnswers[Name] | null>
+  readonly readRecent: () => Promise<void>
+  readonly refresh: () => Promise<void>
+  readonly dismissRefused: () => void
+  readonly dismissNotice: () => void
+  readonly say: (kind: 'failure' | 'done', text: string) => void
+  readonly stop: () => void
 }
 
 export type OpenRequest =
@@ -48,6 +51,8 @@ type AskInput<Name extends RequestName> = Omit<RequestInput<Name>, 'revision'>
 
 /** A change that meets newer studies again and again is given up after so many tries. */
 const triesOnConflict = 5
+
+const isConflict = (error: unknown): boolean => error instanceof KineticsError && error.code === 'revision-conflict'
 
 export function createStudySession(transport: HostTransport): StudySession {
   const store = createStore<StudyState>(() => initialStudyState)
@@ -62,16 +67,19 @@ export function createStudySession(transport: HostTransport): StudySession {
   /** Adds a step to the one line in which everything that needs the newest revision waits. */
   function inOrder(step: () => Promise<void>): Promise<void> {
     waitingSteps += 1
-    steps = steps.then(async () => {
-      try {
-        await step()
-      } catch (error) {
-        await explain(error)
-      }
-      waitingSteps -= 1
-      if (waitingSteps === 0) evaluator.wanted()
-    })
+    steps = takeTurn(steps, step)
     return steps
+  }
+
+  async function takeTurn(before: Promise<void>, step: () => Promise<void>): Promise<void> {
+    await before
+    try {
+      await step()
+    } catch (error) {
+      explain(error)
+    }
+    waitingSteps -= 1
+    if (waitingSteps === 0) evaluator.wanted()
   }
 
   function adopt(snapshot: StudySnapshot): void {
@@ -82,7 +90,7 @@ export function createStudySession(transport: HostTransport): StudySession {
     set({ replica: next, connection: { kind: 'ready' }, ...(sameStudy ? {} : { evaluated: null }) })
   }
 
-  async function explain(error: unknown): Promise<void> {
+  function explain(error: unknown): void {
     if (error instanceof Cancelled) return
     if (error instanceof HostUnreachable) {
       set({ connection: { kind: 'lost', message: error.message } })
@@ -91,7 +99,6 @@ export function createStudySession(transport: HostTransport): StudySession {
     set({ notice: { kind: 'failure', text: error instanceof Error ? error.message : String(error) } })
   }
 
-  const isConflict = (error: unknown): boolean => error instanceof KineticsError && error.code === 'revision-conflict'
   const revision = (): number => get().replica?.confirmed.revision ?? 0
 
   async function sendChange(change: StudyChange): Promise<void> {
@@ -139,6 +146,14 @@ export function createStudySession(transport: HostTransport): StudySession {
     })
   }
 
+  async function readRecent(): Promise<void> {
+    try {
+      set({ recent: (await transport.call('study.recent', {})).studies })
+    } catch (error) {
+      explain(error)
+    }
+  }
+
   function hear(event: HostEvent): void {
     if (event.kind === 'study-changed') {
       if (event.revision > revision() && waitingSteps === 0) void refresh()
@@ -159,7 +174,7 @@ export function createStudySession(transport: HostTransport): StudySession {
     async start() {
       unsubscribe ??= transport.subscribe(hear)
       await refresh()
-      await this.readRecent()
+      await readRecent()
     },
     change(change) {
       const { replica } = get()
@@ -190,7 +205,7 @@ export function createStudySession(transport: HostTransport): StudySession {
         if (answer.snapshot !== null) adopt(answer.snapshot)
         evaluator.wanted()
       } catch (error) {
-        await explain(error)
+        explain(error)
       } finally {
         importControl = null
         set({ importing: null })
@@ -198,12 +213,15 @@ export function createStudySession(transport: HostTransport): StudySession {
     },
     async cancelImport() {
       importControl?.abort()
-      if (get().importing?.phase === 'reading') await transport.call('work.cancel', { work: 'import' }).then(undefined, explain)
+      if (get().importing?.phase !== 'reading') return
+      try {
+        await transport.call('work.cancel', { work: 'import' })
+      } catch (error) {
+        explain(error)
+      }
     },
     cancelEvaluation: () => evaluator.cancel(),
-    async evaluateAgain() {
-      evaluator.again()
-    },
+    evaluateAgain: () => evaluator.again(),
     async ask<Name extends 'study.save-copy' | 'results.export'>(name: Name, input: AskInput<Name>) {
       let answer: RequestAnswers[Name] | null = null
       await inOrder(async () => {
@@ -212,9 +230,7 @@ export function createStudySession(transport: HostTransport): StudySession {
       })
       return answer
     },
-    async readRecent() {
-      await transport.call('study.recent', {}).then(({ studies }) => set({ recent: studies }), explain)
-    },
+    readRecent,
     refresh,
     dismissRefused: () => set({ refused: [] }),
     dismissNotice: () => set({ notice: null }),

@@ -13,7 +13,8 @@ export interface ViewState {
   readonly chosenMethod: MethodId | null
   /** Methods drawn beside the chosen one; null takes Friedman where it applies. */
   readonly comparedMethods: readonly MethodId[] | null
-  readonly against: 'temperature' | 'time'
+  /** null takes temperature for constant heating rates and time for everything else. */
+  readonly against: 'temperature' | 'time' | null
   /** The run that a finding or a row points at. */
   readonly pointedRun: string | null
   readonly theme: Theme
@@ -24,7 +25,7 @@ export const initialViewState: ViewState = {
   conversion: 0.5,
   chosenMethod: null,
   comparedMethods: null,
-  against: 'temperature',
+  against: null,
   pointedRun: null,
   theme: 'system',
 }

@@ -25,7 +25,12 @@ export function EnergyProfile(props: ActivationProps) {
   const profile = result.profiles.find((one) => one.method === chosen)
   const others = result.profiles.filter((one) => one.method !== chosen)
   return (
-    <Half side="result" title="Activation energy against conversion" note={profile === undefined ? '' : <IntervalNote profile={profile} />}>
+    <Half
+      side="result"
+      title="Activation energy against conversion"
+      note={profile === undefined ? '' : <IntervalNote profile={profile} />}
+      aside={<Levels document={props.document} actions={actions} />}
+    >
       <div className="controls">
         <span className="chosen-method">
           <MethodSample index={0} /> {profile?.label}
@@ -44,7 +49,6 @@ export function EnergyProfile(props: ActivationProps) {
           values={compared}
           onChange={(comparedMethods) => view.setState({ comparedMethods })}
         />
-        <Levels document={props.document} actions={actions} />
       </div>
       <FigureChart
         figure={figure}

@@ -4,8 +4,9 @@ import { phiFigure } from '../../../shared-kinetics/figure/phi-figure.ts'
 import { straightLinesAtLevel, straightLinesFigure } from '../../../shared-kinetics/figure/straight-lines-figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
 import { RunMarker } from '../../charts/RunMarker.tsx'
+import { formatAtLevel, levelQuantity, type LevelQuantity } from '../../sheet/at-level.ts'
 import { Choice } from '../../sheet/Choice.tsx'
-import { count, formatCelsius, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
+import { count, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
@@ -62,13 +63,14 @@ function RunLegend({ result, levelIndex }: ActivationProps) {
   const colours = useColours()
   const names = runNames(result.runs)
   const tones = runTones(result)
+  const quantity = levelQuantity(result)
   return (
     <ul className="run-legend" aria-label="Runs">
       {result.runs.map((run, i) => (
         <li key={run.runId}>
           <RunMarker index={i} colour={colours.run(tones[i]?.place ?? 0)} />
           <span>
-            {names[i]} <span className="run-legend-temperature">{temperatureText(run.temperatureAtLevel_K[levelIndex] ?? null)}</span>
+            {names[i]} <span className="run-legend-stand">{standText(formatAtLevel(run, levelIndex, quantity), quantity)}</span>
           </span>
         </li>
       ))}
@@ -76,5 +78,4 @@ function RunLegend({ result, levelIndex }: ActivationProps) {
   )
 }
 
-const temperatureText = (temperature_K: number | null): string =>
-  temperature_K === null ? 'not reached' : `${formatCelsius(temperature_K)} °C`
+const standText = (text: string, { unit }: LevelQuantity): string => (text === '' ? 'not reached' : `${text} ${unit}`)

@@ -1,8 +1,8 @@
 import type { MethodId, ProfileResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
-import { kelvinToCelsius } from '../../../shared-kinetics/units/convert.ts'
 import { runNames } from '../../../shared-kinetics/figure/run-place.ts'
+import { atLevel, formatAtLevel, levelQuantity } from '../../sheet/at-level.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
-import { decimals, formatCelsius, formatInterval, formatLevel, halfWidth, shortMethodNames, statusWords } from '../../sheet/format.ts'
+import { decimals, formatInterval, formatLevel, halfWidth, shortMethodNames, statusWords } from '../../sheet/format.ts'
 
 /** One level of the table, by its index in `StudyResult.levels`. */
 export interface LevelRow {
@@ -27,7 +27,7 @@ export function levelColumns(result: StudyResult, chosen: MethodId, compared: re
     ),
     ...(first === undefined ? [] : chosenColumns(first)),
     ...others.map((profile) => energyColumn(profile)),
-    ...temperatureColumns(result),
+    ...endColumns(result),
     ...(first === undefined ? [] : [statusColumn(first)]),
   ]
 }
@@ -71,19 +71,18 @@ const statusColumn = (profile: ProfileResult): DataColumn<LevelRow> => ({
   numeric: false,
 })
 
-function temperatureColumns(result: StudyResult): DataColumn<LevelRow>[] {
+/** Where the slowest and the fastest run reach the level. */
+function endColumns(result: StudyResult): DataColumn<LevelRow>[] {
   const names = runNames(result.runs)
-  const ends = result.runs.length > 1 ? [0, result.runs.length - 1] : result.runs.length === 1 ? [0] : []
-  return ends.map((end) =>
+  const quantity = levelQuantity(result)
+  const last = result.runs.length - 1
+  return [...new Set(last < 0 ? [] : [0, last])].map((end) =>
     column(
-      `T-${end}`,
-      `T at ${names[end] ?? ''}`,
-      '°C',
-      ({ index }) => formatCelsius(result.runs[end]?.temperatureAtLevel_K[index]),
-      ({ index }) => {
-        const temperature_K = result.runs[end]?.temperatureAtLevel_K[index] ?? null
-        return temperature_K === null ? null : kelvinToCelsius(temperature_K)
-      },
+      `end-${end}`,
+      `${quantity.symbol} at ${names[end] ?? ''}`,
+      quantity.unit,
+      ({ index }) => formatAtLevel(result.runs[end], index, quantity) || 'not reached',
+      ({ index }) => atLevel(result.runs[end], index, quantity),
     ),
   )
 }

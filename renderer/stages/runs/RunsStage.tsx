@@ -2,6 +2,7 @@ import { useMemo } from 'react'
 import { Button } from 'react-aria-components'
 import { signalsAtLevel, signalsFigure } from '../../../shared-kinetics/figure/signals-figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
+import { levelQuantity } from '../../sheet/at-level.ts'
 import { Choice } from '../../sheet/Choice.tsx'
 import { count, formatLevel, signalWords } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
@@ -25,7 +26,8 @@ export function RunsStage(props: StageProps) {
 function Signals({ result, levelIndex, level, actions, document }: StageProps) {
   const { view } = useServices()
   const colours = useColours()
-  const against = useView((state) => state.against)
+  const wantedAgainst = useView((state) => state.against)
+  const against = wantedAgainst ?? levelQuantity(result).kind
   const pointedRun = useView((state) => state.pointedRun)
   const figure = useMemo(() => (result === null ? null : signalsFigure(result, { against })), [result, against])
   const overlay = useMemo(() => (result === null ? [] : signalsAtLevel(result, { against }, levelIndex)), [result, against, levelIndex])
@@ -35,7 +37,11 @@ function Signals({ result, levelIndex, level, actions, document }: StageProps) {
       ? 'As measured, window or not.'
       : `As measured, window or not. Markers stand where each run reaches α ${formatLevel(level)}.`
   return (
-    <Half side="evidence" title={result?.signal == null ? 'Signals' : `Signals: ${signalWords[result.signal].toLowerCase()}`} note={note}>
+    <Half
+      side="evidence"
+      title={result === null || result.signal === null ? 'Signals' : `Signals: ${signalWords[result.signal].toLowerCase()}`}
+      note={note}
+    >
       <div className="controls">
         <Choice
           label="Against"
@@ -90,7 +96,8 @@ function Runs({ result, levelIndex, level, actions, document }: StageProps) {
   const colours = useColours()
   const pointedRun = useView((state) => state.pointedRun)
   const rows = useMemo(() => runRows(document, result), [document, result])
-  const columns = useMemo(() => runColumns(level, levelIndex), [level, levelIndex])
+  const quantity = levelQuantity(result)
+  const columns = useMemo(() => runColumns(level, levelIndex, quantity), [level, levelIndex, quantity])
   return (
     <Half
       side="result"
@@ -114,6 +121,7 @@ function Runs({ result, levelIndex, level, actions, document }: StageProps) {
         columns={columns}
         level={level}
         levelIndex={levelIndex}
+        quantity={quantity}
         pointedRun={pointedRun}
         colours={colours}
         onPoint={(run) => view.setState({ pointedRun: run })}

@@ -1,8 +1,9 @@
-import { Button, Checkbox } from 'react-aria-components'
+import { Button } from 'react-aria-components'
 import type { StudyChange } from '../../../shared-kinetics/contract/study-change.ts'
 import type { ChartColours } from '../../charts/chart-colours.ts'
 import { RunMarker } from '../../charts/RunMarker.tsx'
 import { runMarker } from '../../charts/markers.ts'
+import type { LevelQuantity } from '../../sheet/at-level.ts'
 import { copyText, type DataColumn } from '../../sheet/data-table.ts'
 import { NumberCell, TableHead } from '../../sheet/DataTable.tsx'
 import { TableView } from '../../sheet/TableView.tsx'
@@ -14,6 +15,7 @@ export interface RunsTableProps {
   readonly columns: readonly DataColumn<RunRow>[]
   readonly level: number | null
   readonly levelIndex: number
+  readonly quantity: LevelQuantity
   readonly pointedRun: string | null
   readonly colours: ChartColours
   readonly onPoint: (runId: string | null) => void
@@ -21,12 +23,12 @@ export interface RunsTableProps {
 }
 
 /** Every run of the study; also the legend of the charts. */
-export function RunsTable({ rows, columns, level, levelIndex, pointedRun, colours, onPoint, onChange }: RunsTableProps) {
+export function RunsTable({ rows, columns, level, levelIndex, quantity, pointedRun, colours, onPoint, onChange }: RunsTableProps) {
   const inTable = columns.filter((column) => !['label', 'measured-error', 'programme', 'rows'].includes(column.id))
   return (
     <TableView
       label="Runs of the study"
-      copied={() => copyText(runCopyColumns(level, levelIndex), rows)}
+      copied={() => copyText(runCopyColumns(level, levelIndex, quantity), rows)}
       currentRow={rows.findIndex((row) => row.run.id === pointedRun)}
     >
       <table className="data-table runs-table">
@@ -42,14 +44,13 @@ export function RunsTable({ rows, columns, level, levelIndex, pointedRun, colour
               onMouseLeave={() => onPoint(null)}
             >
               <td>
-                <Checkbox
+                <input
+                  type="checkbox"
                   className="use-box"
                   aria-label={`Use ${row.run.label}`}
-                  isSelected={row.run.use}
-                  onChange={(use) => onChange({ kind: 'use-run', runId: row.run.id, use })}
-                >
-                  <span className="use-box-mark" aria-hidden="true" />
-                </Checkbox>
+                  checked={row.run.use}
+                  onChange={(event) => onChange({ kind: 'use-run', runId: row.run.id, use: event.target.checked })}
+                />
               </td>
               <th scope="row">
                 <RunName row={row} colours={colours} onChange={onChange} />

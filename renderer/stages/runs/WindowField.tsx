@@ -1,4 +1,4 @@
-import { useState } from 'react'
+import { useEffect, useRef, useState } from 'react'
 import { Button, Input, Label, TextField } from 'react-aria-components'
 import type { Window } from '../../../shared-kinetics/contract/study-result.ts'
 import { formatWindow } from '../../sheet/format.ts'
@@ -8,7 +8,12 @@ import { parseWindow } from '../../sheet/parse-window.ts'
 export function WindowField({ window, onSet }: { readonly window: Window | null; readonly onSet: (window: Window | null) => void }) {
   const [editing, setEditing] = useState(false)
   const [ends, setEnds] = useState<readonly [string, string]>(['', ''])
+  const firstRef = useRef<HTMLInputElement>(null)
   const [reason, setReason] = useState<string | null>(null)
+
+  useEffect(() => {
+    if (editing) firstRef.current?.focus()
+  }, [editing])
 
   const save = (): void => {
     const parsed = parseWindow(ends[0], ends[1])
@@ -45,9 +50,9 @@ export function WindowField({ window, onSet }: { readonly window: Window | null;
         save()
       }}
     >
-      <TextField value={ends[0]} onChange={(start) => setEnds([start, ends[1]])} autoFocus>
+      <TextField value={ends[0]} onChange={(start) => setEnds([start, ends[1]])}>
         <Label>Window from</Label>
-        <Input placeholder="150 C" />
+        <Input placeholder="150 C" ref={firstRef} />
       </TextField>
       <TextField value={ends[1]} onChange={(end) => setEnds([ends[0], end])}>
         <Label>to</Label>

@@ -2,6 +2,7 @@ import { runTones } from '../../../shared-kinetics/figure/run-place.ts'
 import type { StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
 import type { Finding, RunInfo, RunResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { kelvinToCelsius, perSecondToPerMinute } from '../../../shared-kinetics/units/convert.ts'
+import { atLevel, formatAtLevel, type LevelQuantity } from '../../sheet/at-level.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
 import {
   decimals,
@@ -42,7 +43,7 @@ const unusableFinding = (result: StudyResult | null, run: RunInfo): Finding | nu
   result?.findings.find((finding) => finding.run === run.id && finding.code === 'run-unusable') ?? null
 
 /** What stands in the table of runs and what is copied from it; the last column follows the level rail. */
-export function runColumns(level: number | null, levelIndex: number): readonly DataColumn<RunRow>[] {
+export function runColumns(level: number | null, levelIndex: number, quantity: LevelQuantity): readonly DataColumn<RunRow>[] {
   return [
     words('label', 'Run', (row) => row.run.label),
     {
@@ -71,7 +72,7 @@ export function runColumns(level: number | null, levelIndex: number): readonly D
       (row) => String(row.run.rows),
       (row) => row.run.rows,
     ),
-    words('window', 'Window', (row) => (row.result === null ? '' : formatWindow(row.result.window))),
+    { ...words('window', 'Window', (row) => (row.result === null ? '' : formatWindow(row.result.window))), numeric: true },
     numbers(
       'peak',
       'Peak',
@@ -81,17 +82,17 @@ export function runColumns(level: number | null, levelIndex: number): readonly D
     ),
     numbers(
       'level',
-      level === null ? 'T at α' : `T at α ${formatLevel(level)}`,
-      '°C',
-      (row) => formatCelsius(row.result?.temperatureAtLevel_K[levelIndex]),
-      (row) => celsius(row.result?.temperatureAtLevel_K[levelIndex] ?? null),
+      `${quantity.symbol} at α${level === null ? '' : ` ${formatLevel(level)}`}`,
+      quantity.unit,
+      (row) => formatAtLevel(row.result, levelIndex, quantity),
+      (row) => atLevel(row.result, levelIndex, quantity),
     ),
   ]
 }
 
 /** What the clipboard gets besides what stands on the screen. */
-export const runCopyColumns = (level: number | null, levelIndex: number): readonly DataColumn<RunRow>[] => [
-  ...runColumns(level, levelIndex),
+export const runCopyColumns = (level: number | null, levelIndex: number, quantity: LevelQuantity): readonly DataColumn<RunRow>[] => [
+  ...runColumns(level, levelIndex, quantity),
   words('use', 'Use', (row) => (row.run.use ? 'yes' : 'no')),
   words('file', 'File', (row) => row.run.file.name),
 ]
