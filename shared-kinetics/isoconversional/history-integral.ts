@@ -180,8 +180,8 @@ const closest = 0.15
 const widest = 6
 
 /**
- * Rules by the change d of the exponent that they serve, up to the 8 points of `widest`: over a piece, the n-point rule errs by d^(2n) (n!)⁴/((2n + 1)((2n)!)³) relative to a constant integrand; the
- * limits keep this, times the e^d by which the integrand can exceed its mean, below 1e-9.
+ * Rules by the change d of the exponent that they serve, up to the 8 points of `widest`. Over a piece the n-point rule errs by d^(2n) (n!)⁴/((2n + 1)((2n)!)³)
+ * relative to a constant integrand; the limits keep this, times the e^d by which the integrand can exceed its mean, below 1e-9.
  */
 const rules = [
   { upTo: 0.045, rule: gaussLegendre(2) },
