@@ -31,6 +31,8 @@ const otherTemperature =
   /\b(?:program(?:med|me)?|set|setpoint|furnace|oven|reference|ref|block|heater|target|ambient|room|jacket|wall|junction|difference)\b/
 const notTheHeatFlow = /\b(?:phase|amplitude|baseline|calibration|modulated|cumulative|integral|integrated|capacity)\b/
 
+const value = (quantity: NamedQuantity, rank = 1): ColumnName => ({ quantity, rank, as: 'value' })
+
 /**
  * The quantity a column's name stands for, in English names and the trade's abbreviations. Where a name alone leaves it open
  * (`t` and `T`), the unit tells.
@@ -43,7 +45,6 @@ export function quantityOfName(name: string, unit: FileUnit | null): ColumnName 
     .replace(/(\p{L})\d+(?=\s|$)/gu, '$1')
     .replace(/(?:\s\d+)+$/, '')
   const words = exact.normalize('NFKC').toLowerCase()
-  const value = (quantity: NamedQuantity, rank = 1): ColumnName => ({ quantity, rank, as: 'value' })
 
   if (/^t$/.test(words)) {
     if (unit?.dimension === 'time') return value('time')

@@ -136,7 +136,10 @@ function stretchReader(delimiter: DelimiterWord, decimal: DecimalSignWord) {
       let others = 0
       const isNumeric = cells.map((cell) => {
         const is = cell === '' || (isNumber(cell, decimal) && (delimiter !== 'comma' || decimal !== 'comma' || quotes))
-        if (cell !== '' && !isMissingMark(cell)) is ? numbers++ : others++
+        if (cell !== '' && !isMissingMark(cell)) {
+          if (is) numbers++
+          else others++
+        }
         return is
       })
       const likeData = numbers >= 2 && numbers >= others

@@ -8,7 +8,7 @@ export interface FileUnit {
   readonly word: string
   readonly dimension: Dimension
   /** Divides where the factor would not be exact, so that the result is rounded once. */
-  toSI(value: number): number
+  readonly toSI: (value: number) => number
 }
 
 const times = (word: string, dimension: Dimension, factor: number): FileUnit => ({ word, dimension, toSI: (value) => value * factor })

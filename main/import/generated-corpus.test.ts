@@ -231,9 +231,11 @@ const files = Array.from({ length: 1500 }, (_, i) => write(i + 1))
 
 describe('generated exports', () => {
   it('crosses every encoding, delimiter, decimal sign and heading style', () => {
+    const counts: [string, number][] = []
     for (const word of [...Object.keys(encodings), ...styles, 'comma', 'semicolon', 'tab', 'pipe', 'blanks', 'point']) {
-      expect(files.filter((file) => file.title.includes(word)).length, word).toBeGreaterThan(20)
+      counts.push([word, files.filter((file) => file.title.includes(word)).length])
     }
+    expect(counts.filter(([, count]) => count <= 20)).toEqual([])
     expect(files.filter((file) => file.refusal === null).length).toBeGreaterThan(1000)
   })
 

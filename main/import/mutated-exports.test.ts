@@ -79,8 +79,7 @@ describe('exports that were damaged on the way', () => {
         read++
       } catch (error) {
         if (!(error instanceof ImportRefusal)) throw error
-        expect(error.reason.length).toBeGreaterThan(10)
-        expect(error.remedy.length).toBeGreaterThan(10)
+        if (error.reason.length <= 10 || error.remedy.length <= 10) throw error
         refused++
       }
     }

@@ -8,6 +8,8 @@ const told = (text: string): string => {
   return `${name.quantity} ${heading.unit?.word ?? (heading.unitText === null ? 'no unit' : 'unknown unit')}`
 }
 
+const rank = (name: string) => quantityOfName(name, null)
+
 describe('a heading', () => {
   it.each([
     ['Time (s)', 'time s'],
@@ -76,7 +78,6 @@ describe('a heading', () => {
   })
 
   it('tells the temperature of the sample from others, and what is left from what is gone', () => {
-    const rank = (name: string) => quantityOfName(name, null)
     expect(rank('Sample temperature')).toMatchObject({ rank: 0 })
     expect(rank('Temperature')).toMatchObject({ rank: 1 })
     expect(rank('Furnace temperature')).toMatchObject({ rank: 2 })

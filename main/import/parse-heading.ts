@@ -61,7 +61,7 @@ function bracketUnit(heading: string): Parts | null {
   const isWord = /^[a-z][a-z .-]{2,}$/i.test(inside) || inside === '' || /^\d+$/.test(inside)
   // A unit may still stand elsewhere: `Heat flow W/g (corr 2)`.
   const elsewhere = wordUnit(heading.slice(0, last.index))
-  if (elsewhere?.unit != null) return { ...elsewhere, name: `${elsewhere.name} ${last[0]}` }
+  if (elsewhere !== null && elsewhere.unit !== null) return { ...elsewhere, name: `${elsewhere.name} ${last[0]}` }
   return isWord ? null : { name: heading.slice(0, last.index), unit: null, unitText: inside }
 }
 

@@ -101,8 +101,9 @@ function notesOfFile(plan: readonly PlannedColumn[], table: RawTable, layout: La
   return notes
 }
 
+const lineOr = (line: number | null): string => (line === null ? 'none' : String(line + 1))
+
 function layoutDecisions(layout: Layout): readonly ImportDecision[] {
-  const lineOr = (line: number | null): string => (line === null ? 'none' : String(line + 1))
   return [
     {
       step: 'heading line',

@@ -54,7 +54,10 @@ function valueUnit(column: PlannedColumn, values: Float64Array): Told | null {
       return Math.abs(first - 1) <= 0.005 && least > -0.05 && greatest < 1.1
         ? { word: '1', because: `they start at ${first}`, severity: 'caution' }
         : null
-    default:
+    case 'time':
+    case 'heat-flow':
+    case 'heat-release':
+    case null:
       return null
   }
 }
