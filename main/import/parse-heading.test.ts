@@ -44,6 +44,8 @@ describe('a heading', () => {
     ['DSC (µV)', 'heat-flow unknown unit'],
     ['DSC/µV', 'heat-flow unknown unit'],
     ['Heat Flow (exo up) (mW)', 'heat-flow mW'],
+    ['HF (mW) exo up', 'heat-flow mW'],
+    ['DSC/(mW/mg), exo ↓', 'heat-flow W/g'],
     ['heat_flow_W_per_g', 'heat-flow W/g'],
     ['Reversing Heat Flow (Normalized) W/g', 'heat-flow W/g'],
     ['Heat Flow (Normalized) (W/g)', 'heat-flow W/g'],

@@ -22,6 +22,7 @@ export function parseHeading(text: string): Heading {
   const plain = text
     .replace(/[\u2212]/g, '-')
     .replace(/\u2103/g, '\u00b0C')
+    .replace(signWords, ' ')
     .replace(/\s+/g, ' ')
     .trim()
   const rates = heatingRatesIn(plain)
@@ -35,6 +36,9 @@ export function parseHeading(text: string): Heading {
     .trim()
   return { text: text.trim(), name, unit: parts?.unit ?? null, unitText: parts?.unitText ?? null, heatingRate }
 }
+
+/** Which way exothermic events point: read elsewhere, and no part of name or unit. */
+const signWords = /[([]?[\s,;]*\b(?:exo|endo)(?:thermic)?\s*(?:up|down|\u2191|\u2193)(?![a-z])\s*[)\]]?/gi
 
 type Parts = Pick<Heading, 'name' | 'unit' | 'unitText'>
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { largestUploadBytes } from '../../shared-kinetics/contract/host-api.ts'
 import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import { decodeAnswer, encodeFailure } from '../../shared-kinetics/contract/wire-answer.ts'
 import { ImportRefusal, readExport, refusedFile } from './read-export.ts'
@@ -30,6 +31,13 @@ interface Case {
 }
 
 const cases: readonly Case[] = [
+  {
+    what: 'a file beyond what is read',
+    content: new Uint8Array(largestUploadBytes + 1),
+    line: null,
+    reason: /larger than 512 MiB/,
+    remedy: /coarser/,
+  },
   { what: 'an empty file', content: '', line: null, reason: /is empty/, remedy: /Export the run again/ },
   { what: 'nothing but blanks', content: ' \n\t\n', line: null, reason: /nothing but blanks/, remedy: /Export/ },
   {
