@@ -221,6 +221,14 @@ describe.skipIf(!here)('windows found in the data (no window set)', () => {
     ).toBeLessThan(5)
   })
 
+  it('heat flow with tangents lies between the README’s values for a wide and a narrow straight baseline (198 and 225 at 0.3), 8 % allowed', () => {
+    const result = evaluate('measured/pmma-dsc-tga-n2-four-rates', /^FSRI_DSC.*\.csv$/, { levels: [0.3, 0.5, 0.7], signal: 'heat-flow' })
+    for (const Ea of result.profiles.find((profile) => profile.method === 'kas')?.Ea_kJ_per_mol ?? [null]) {
+      expect(Ea ?? Number.NaN).toBeGreaterThan(0.92 * 198)
+      expect(Ea ?? Number.NaN).toBeLessThan(1.08 * 225)
+    }
+  })
+
   it('measured heating rates are those of the README (3.06, 10.35, 21.2, 32.5 K/min), replicates count once', () => {
     const result = evaluate('measured/pmma-dsc-tga-n2-four-rates', /^FSRI_TGA.*\.csv$/, {})
     expect(result.runs.map((run) => run.programmeGroup)).toEqual([0, 1, 1, 1, 2, 2, 2, 3, 3, 3])

@@ -54,8 +54,8 @@ function neighbourhood(x: Float64Array, options: LocalPolynomialOptions) {
   let from = 0
   let to = 0
   function moveTo(at: number): void {
-    while (from < n && (x[from] ?? 0) < at - options.halfWidth) from++
-    while (to < n && (x[to] ?? 0) <= at + options.halfWidth) to++
+    while (from < n && (x[from] ?? 0) <= at - options.halfWidth) from++
+    while (to < n && (x[to] ?? 0) < at + options.halfWidth) to++
     let first = from
     let last = Math.max(to - 1, from - 1)
     let width = options.halfWidth

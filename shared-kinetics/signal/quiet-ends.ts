@@ -6,7 +6,7 @@ import { noiseOf } from './noise.ts'
 export interface QuietStretch {
   readonly inner: number
   readonly outer: number
-  /** Largest distance of the signal from its straight line there, as a share of the peak's height. */
+  /** How far the signal strays from its straight line there, as a share of the peak's height. */
   readonly roughness: number
 }
 
@@ -16,7 +16,7 @@ export interface QuietEnds {
   readonly height: number
   /** Width at half that height. */
   readonly width: number
-  /** null where the signal does not level off before the data end on that side. */
+  /** null where the signal does not level off before the data end on that side, or leaves too little room for a stretch. */
   readonly before: QuietStretch | null
   readonly after: QuietStretch | null
 }
@@ -24,13 +24,14 @@ export interface QuietEnds {
 const cells = 1000
 /** A flank has come to its foot where the signal is less steep than this share of the flank's steepest place. */
 const footSteepness = 0.05
-/** A stretch that strays from its line by more than this share of the peak's height is not straight. */
-const roughest = 0.05
-/** Roughness below this share of the height, or below four times the noise of a cell, is as good as none. */
+/** Roughness below this share of the height, or below three times the noise of the means it is read from, is as good as none. */
 const finest = 1e-5
+/** Where the data end before a stretch can be as long as the peak is wide, it may be shorter, but not than this share of it: its slope would be chance. */
+const shortestInWidths = 0.5
 /** A stretch begins at most so many widths of the peak beyond the foot, and is one to so many widths long. */
 const mostWidths = 3
 const lengthsPerWidth = 4
+const placesPerWidth = 20
 
 /**
  * Finds the main peak of a signal and the straight stretches on either side of it, on which tangents can be laid.
@@ -92,20 +93,20 @@ function quietSide(search: Search, halfHeight: number, apex: number, outward: -1
   const end = outward < 0 ? 0 : n - 1
   const room = Math.abs(end - foot) + 1
   const shortest = Math.min(width, room)
-  if (shortest < 3) return null
-  const noRougher = Math.max(finest * search.height, 4 * search.noise)
+  if (shortest < shortestInWidths * width) return null
   let best: { inner: number; outer: number; roughness: number } | null = null
   let bestError = Infinity
-  for (let away = 0; away <= Math.min(mostWidths * width, room - shortest); away++) {
+  const step = Math.max(1, Math.round(width / placesPerWidth))
+  for (let away = 0; away <= Math.min(mostWidths * width, room - shortest); away += step) {
     const inner = foot + outward * away
     for (let part = 0; part <= (mostWidths - 1) * lengthsPerWidth; part++) {
       const length = Math.min(Math.round(shortest * (1 + part / lengthsPerWidth)), room - away)
       const outer = inner + outward * (length - 1)
-      const rough = roughness(mean, inner, outer)
-      if (rough > roughest * search.height) break
+      const rough = roughness(search, inner, outer)
+      const noRougher = Math.max(finest * search.height, (3 * search.noise) / Math.sqrt(length / blocks))
       const distance = (Math.abs(apex - 0.5 * (inner + outer)) + 1) / length
       const error = Math.max(rough, noRougher) * (1 + distance * distance)
-      if (error < bestError && staysBeneath(search, inner, outer, apex, Math.max(rough, noRougher))) {
+      if (error < bestError && staysBeneath(search, inner, outer, apex, Math.max(rough, noRougher, 4 * search.noise))) {
         bestError = error
         best = { inner, outer, roughness: rough }
       }
@@ -132,6 +133,32 @@ function footOf({ up, width, mean }: Search, halfHeight: number, apex: number, o
   return null
 }
 
+/** Parts of a stretch whose mean distances from the line are looked at: a slight bend shows in them long before it shows in single noisy cells. */
+const blocks = 6
+
+/**
+ * How far the cells from `a` to `b` stray from their straight line beyond their noise: by the largest distance of one cell less four times its noise, or by the
+ * largest mean distance over a sixth of the stretch, whichever is more.
+ */
+function roughness({ mean: { x, y }, noise }: Search, a: number, b: number): number {
+  const from = Math.min(a, b)
+  const length = Math.abs(b - a) + 1
+  const line = lineFit(x.subarray(from, from + length), y.subarray(from, from + length))
+  let worst = 0
+  for (let block = 0; block < blocks; block++) {
+    const start = from + Math.floor((block * length) / blocks)
+    const end = from + Math.floor(((block + 1) * length) / blocks)
+    let sum = 0
+    for (let i = start; i < end; i++) {
+      const residual = (y[i] ?? 0) - line.valueAtMean - line.slope * ((x[i] ?? 0) - line.xMean)
+      sum += residual
+      worst = Math.max(worst, Math.abs(residual) - 4 * noise)
+    }
+    if (end > start) worst = Math.max(worst, Math.abs(sum) / (end - start))
+  }
+  return worst
+}
+
 /** Whether the line of a stretch, carried on to the apex, never cuts into the peak: what lies beyond a baseline is no reaction. */
 function staysBeneath({ mean: { x }, up }: Search, inner: number, outer: number, apex: number, tolerance: number): boolean {
   const line = lineFit(
@@ -143,17 +170,4 @@ function staysBeneath({ mean: { x }, up }: Search, inner: number, outer: number,
     if ((up[i] ?? 0) < line.valueAtMean + line.slope * ((x[i] ?? 0) - line.xMean) - tolerance) return false
   }
   return true
-}
-
-/** Largest distance of the cells from `a` to `b` from their straight line. */
-function roughness({ x, y }: CellMeans, a: number, b: number): number {
-  const from = Math.min(a, b)
-  const to = Math.max(a, b) + 1
-  const line = lineFit(x.subarray(from, to), y.subarray(from, to))
-  let worst = 0
-  for (let i = from; i < to; i++) {
-    const residual = (y[i] ?? 0) - line.valueAtMean - line.slope * ((x[i] ?? 0) - line.xMean)
-    worst = Math.max(worst, Math.abs(residual))
-  }
-  return worst
 }

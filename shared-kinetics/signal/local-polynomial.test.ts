@@ -1,0 +1,86 @@
+import fc from 'fast-check'
+import { lusolve, multiply, transpose } from 'mathjs'
+import { describe, expect, it } from 'vitest'
+import { localPolynomial, localPolynomialAt } from './local-polynomial.ts'
+
+/** Ascending x whose steps differ by up to a factor of ten. */
+const unevenX = (steps: readonly number[]): Float64Array => {
+  let at = -3
+  return Float64Array.from(steps, (step) => (at += step))
+}
+const steps = fc.array(fc.double({ min: 0.02, max: 0.2, noNaN: true }), { minLength: 12, maxLength: 60 })
+const coefficient = fc.double({ min: -2, max: 2, noNaN: true })
+
+describe('local polynomial', () => {
+  it('is exact for polynomials of its degree on uneven x, ends included', () => {
+    fc.assert(
+      fc.property(
+        steps,
+        coefficient,
+        coefficient,
+        coefficient,
+        coefficient,
+        fc.double({ min: 0.05, max: 1, noNaN: true }),
+        (gaps, a, b, c, d, halfWidth) => {
+          const x = unevenX(gaps)
+          const { value, slope } = localPolynomial(
+            x,
+            x.map((t) => a + b * t + c * t ** 2 + d * t ** 3),
+            { halfWidth, degree: 3 },
+          )
+          x.forEach((t, i) => {
+            expect(value[i]).toBeCloseTo(a + b * t + c * t ** 2 + d * t ** 3, 7)
+            expect(slope[i]).toBeCloseTo(b + 2 * c * t + 3 * d * t ** 2, 5)
+          })
+        },
+      ),
+      { numRuns: 60 },
+    )
+  })
+
+  it('is the weighted regression that a linear-algebra library solves', () => {
+    const x = unevenX([0.1, 0.05, 0.2, 0.1, 0.03, 0.12, 0.2, 0.15, 0.07, 0.11, 0.2, 0.1])
+    const y = x.map((t) => Math.sin(5 * t))
+    const at = (x[5] as number) + 0.01
+    const halfWidth = 0.5
+    for (const degree of [1, 2, 3] as const) {
+      const inside = [...x].flatMap((t, i) => (Math.abs(t - at) < halfWidth ? [{ u: t - at, y: y[i] as number }] : []))
+      const design = inside.map(({ u }) => Array.from({ length: degree + 1 }, (_, power) => u ** power))
+      const weighted = inside.map(({ u }, i) => (design[i] as number[]).map((value) => value * (1 - Math.abs(u / halfWidth) ** 3) ** 3))
+      const normal = multiply(transpose(design), weighted)
+      const right = multiply(
+        transpose(weighted),
+        inside.map((point) => [point.y]),
+      )
+      const solution = lusolve(normal, right) as number[][]
+      const fit = localPolynomialAt(x, y, at, { halfWidth, degree, minimumPoints: 2 })
+      expect(fit.value).toBeCloseTo(solution[0]?.[0] ?? Number.NaN, 10)
+      expect(fit.slope).toBeCloseTo(solution[1]?.[0] ?? Number.NaN, 9)
+    }
+  })
+
+  it('widens until there are enough points, and takes a lower degree where there are not', () => {
+    const x = Float64Array.from([0, 1, 2, 3, 4, 5, 6, 7, 8, 9])
+    const cubic = localPolynomialAt(
+      x,
+      x.map((t) => t ** 3),
+      4.5,
+      { halfWidth: 0.001, degree: 3 },
+    )
+    expect(cubic.value).toBeCloseTo(91.125, 9)
+    expect(cubic.slope).toBeCloseTo(60.75, 8)
+    const two = localPolynomialAt(Float64Array.from([0, 2]), Float64Array.from([1, 5]), 1, { halfWidth: 1, degree: 3 })
+    expect(two.value).toBeCloseTo(3, 12)
+    expect(two.slope).toBeCloseTo(2, 12)
+  })
+
+  it('does not lose the digits of a small change on a large offset', () => {
+    const x = Float64Array.from({ length: 50 }, (_, i) => i * 0.1)
+    const { slope } = localPolynomial(
+      x,
+      x.map((t) => 1e6 + 1e-3 * t),
+      { halfWidth: 0.5, degree: 3 },
+    )
+    slope.forEach((value) => expect(value).toBeCloseTo(1e-3, 8))
+  })
+})
