@@ -90,7 +90,9 @@ export async function fetchElectronBinary({ packageFolder, progress, patience_ms
 
 /** The line of a stack trace that a person can use. */
 const reasonIn = (text: string): string => {
-  if (/ENOTFOUND|EAI_AGAIN|ENETUNREACH|ECONNREFUSED|EHOSTUNREACH/.test(text)) return 'there is no network'
+  // The script prints the stack of a failed fetch without its cause.
+  if (/ENOTFOUND|EAI_AGAIN|ENETUNREACH|ECONNREFUSED|EHOSTUNREACH|fetch failed/.test(text))
+    return 'there is no network, or it does not let it through'
   return /^\s*(?:\w*Error: )?(.{1,200})/.exec(text)?.[1]?.trim() ?? 'it could not be fetched'
 }
 

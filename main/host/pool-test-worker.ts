@@ -14,6 +14,7 @@ port?.on('message', (message: ToWorker) => {
       'import-file': (input, context) => {
         if (input.fileName === 'exit') process.exit(3)
         if (input.fileName === 'throw later') setTimeout(() => void Promise.reject(new Error('lost its way')))
+        context.progress(0, 1)
         if (input.fileName === 'throw later' || input.fileName === 'hang') return new Promise(() => undefined)
         if (input.fileName === 'fault') throw new TypeError('a bug')
         if (input.fileName === 'mistake') throw new KineticsError('bad-option', 'A mistake.', { where: 'here' })

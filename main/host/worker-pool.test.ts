@@ -29,7 +29,10 @@ describe('the worker pool', () => {
   it('answers from a thread, with progress and columns on shared memory', async () => {
     const reports: [number, number][] = []
     const answer = await start().run('import-file', file('a.csv'), { progress: (done, total) => reports.push([done, total]) })
-    expect(reports).toEqual([[1, 1]])
+    expect(reports).toEqual([
+      [0, 1],
+      [1, 1],
+    ])
     if (answer.kind !== 'runs') throw new Error('refused')
     expect(answer.runs[0]?.columns.temperature_K).toHaveLength(50)
   })
@@ -45,6 +48,14 @@ describe('the worker pool', () => {
     const running = start(1).run('import-file', file('spin'), { signal: stop.signal, progress: () => stop.abort() })
     await expect(running).rejects.toBeInstanceOf(Cancelled)
     await expect(pool.run('import-file', file('a.csv'))).resolves.toHaveProperty('kind', 'runs')
+  })
+
+  it('ends the worker of a cancelled task that does not look, and the next task gets a new one', async () => {
+    const stop = new AbortController()
+    const deaf = rejectionOf(start(1).run('import-file', file('hang'), { signal: stop.signal, progress: () => stop.abort() }))
+    const next = pool.run('import-file', file('a.csv'))
+    expect(await deaf).toBeInstanceOf(Cancelled)
+    await expect(next).resolves.toHaveProperty('kind', 'runs')
   })
 
   it('cancels what still waits, without running it', async () => {

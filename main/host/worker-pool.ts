@@ -11,6 +11,9 @@ export interface WorkerPoolOptions {
   readonly workers?: number
 }
 
+/** A cancelled task that is still running after so long is ended with its worker. */
+export const cancelPatience_ms = 2000
+
 interface Job {
   readonly message: ToWorker
   readonly options: TaskOptions
@@ -68,9 +71,17 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
 
   const lose = (slot: Slot, why: string): void => {
     if (!slots.delete(slot)) return
-    slot.job?.reject(closed ? new Cancelled() : new Error(`The calculation stopped unexpectedly (${why}). Try it again.`))
+    const unwanted = closed || (slot.job !== null && Atomics.load(slot.job.message.cancelFlag, 0) !== 0)
+    slot.job?.reject(unwanted ? new Cancelled() : new Error(`The calculation stopped unexpectedly (${why}). Try it again.`))
     void slot.worker.terminate()
     pump()
+  }
+
+  /** A task that does not look at its flag must not hold up the next one: its worker is ended, cache and all. */
+  const endIfDeaf = (job: Job): void => {
+    setTimeout(() => {
+      for (const slot of slots) if (slot.job === job) lose(slot, 'it did not stop when asked')
+    }, cancelPatience_ms).unref()
   }
 
   /** null: wait. A task whose own worker is busy with its kind waits for it: that one is about to be cancelled or done. */
@@ -116,7 +127,10 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
         const stop = (): void => {
           Atomics.store(cancelFlag, 0, 1)
           const place = waiting.indexOf(job)
-          if (place < 0) return
+          if (place < 0) {
+            endIfDeaf(job)
+            return
+          }
           waiting.splice(place, 1)
           reject(new Cancelled())
         }
