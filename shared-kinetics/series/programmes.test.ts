@@ -36,9 +36,14 @@ describe('programme told from T(t)', () => {
   })
 
   it('one that wanders by 7 % is still constant, and the wandering is told', () => {
-    const T = (t: number): number => 400 + t / 6 + ((0.07 / 6) * 300 * Math.sin((2 * Math.PI * t) / 1200)) / Math.PI
     const time = evenTimes(1200, 1000)
-    const told = tellProgramme(time, time.map(T), 0, 999, null)
+    const told = tellProgramme(
+      time,
+      time.map((t) => 400 + t / 6 + ((0.07 / 6) * 300 * Math.sin((2 * Math.PI * t) / 1200)) / Math.PI),
+      0,
+      999,
+      null,
+    )
     expect(told.programme.kind).toBe('constant-heating-rate')
     expect(told.heatingRateSpread).toBeGreaterThan(0.03)
     expect(told.heatingRateSpread).toBeLessThan(0.07)
@@ -115,44 +120,44 @@ describe('programme told from T(t)', () => {
   })
 })
 
-describe('groups of one programme', () => {
-  const constant = (rate: number): RunToGroup => {
-    const { time, T } = sampled(ramp(400, rate, 500))
-    return {
-      programme: { kind: 'constant-heating-rate', heatingRate: rate / 60, standardError: 0, source: 'measured' } as RunToGroup['programme'],
-      reaction: { time_s: column(time, 's'), temperature_K: column(T, 'K') },
-      meanHeatingRate_K_per_s: rate / 60,
-      meanTemperature_K: 450,
-    }
+const constant = (rate: number): RunToGroup => {
+  const { time, T } = sampled(ramp(400, rate, 500))
+  return {
+    programme: { kind: 'constant-heating-rate', heatingRate: rate / 60, standardError: 0, source: 'measured' } as RunToGroup['programme'],
+    reaction: { time_s: column(time, 's'), temperature_K: column(T, 'K') },
+    meanHeatingRate_K_per_s: rate / 60,
+    meanTemperature_K: 450,
   }
-  const hold = (T: number): RunToGroup => ({
-    ...constant(1),
-    programme: { kind: 'isothermal', temperature: T } as RunToGroup['programme'],
-    meanTemperature_K: T,
-    meanHeatingRate_K_per_s: 0,
+}
+const hold = (T: number): RunToGroup => ({
+  ...constant(1),
+  programme: { kind: 'isothermal', temperature: T } as RunToGroup['programme'],
+  meanTemperature_K: T,
+  meanHeatingRate_K_per_s: 0,
+})
+const general = (holdTemperature: number, shift = 0): RunToGroup => {
+  const { time, T } = sampled({
+    start_K: 400,
+    pieces: [
+      { rate_K_per_s: 0.1, duration_s: (holdTemperature - 400) / 0.1 },
+      { rate_K_per_s: 0, duration_s: 1000 },
+    ],
   })
-  const general = (holdTemperature: number, shift = 0): RunToGroup => {
-    const { time, T } = sampled({
-      start_K: 400,
-      pieces: [
-        { rate_K_per_s: 0.1, duration_s: (holdTemperature - 400) / 0.1 },
-        { rate_K_per_s: 0, duration_s: 1000 },
-      ],
-    })
-    return {
-      programme: { kind: 'general' },
-      reaction: {
-        time_s: column(time, 's'),
-        temperature_K: column(
-          T.map((value) => value + shift),
-          'K',
-        ),
-      },
-      meanHeatingRate_K_per_s: (holdTemperature - 400) / (time.at(-1) ?? 1),
-      meanTemperature_K: holdTemperature,
-    }
+  return {
+    programme: { kind: 'general' },
+    reaction: {
+      time_s: column(time, 's'),
+      temperature_K: column(
+        T.map((value) => value + shift),
+        'K',
+      ),
+    },
+    meanHeatingRate_K_per_s: (holdTemperature - 400) / (time.at(-1) ?? 1),
+    meanTemperature_K: holdTemperature,
   }
+}
 
+describe('groups of one programme', () => {
   it('number heating rates from slow to fast; replicates share a number', () => {
     expect(programmeGroups([constant(20), constant(5), constant(10.1), constant(9.9), constant(5.02)])).toEqual([2, 0, 1, 1, 0])
   })
@@ -172,15 +177,15 @@ describe('groups of one programme', () => {
   })
 })
 
-describe('main heating part', () => {
-  const part = (programme: Pieces, noise = 0): { from: number; to: number } => {
-    const { time, T } = sampled(programme, 2000)
-    const normal = normalNumbers(2)
-    const { first, last } = mainHeating(T.map((value) => value + noise * normal()))
-    return { from: Math.round(time[first] ?? 0), to: Math.round(time[last] ?? 0) }
-  }
-  const piece = (rate_K_per_s: number, duration_s: number): Pieces['pieces'][number] => ({ rate_K_per_s, duration_s })
+const part = (programme: Pieces, noise = 0): { from: number; to: number } => {
+  const { time, T } = sampled(programme, 2000)
+  const normal = normalNumbers(2)
+  const { first, last } = mainHeating(T.map((value) => value + noise * normal()))
+  return { from: Math.round(time[first] ?? 0), to: Math.round(time[last] ?? 0) }
+}
+const piece = (rate_K_per_s: number, duration_s: number): Pieces['pieces'][number] => ({ rate_K_per_s, duration_s })
 
+describe('main heating part', () => {
   it('is all of a ramp, of a hold, and of ramp-hold-ramp', () => {
     expect(part(ramp(300, 10, 900), 0.2)).toEqual({ from: 0, to: 3600 })
     expect(part(holdAt(400, 1000), 0.3)).toEqual({ from: 0, to: 1000 })

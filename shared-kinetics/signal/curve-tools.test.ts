@@ -1,4 +1,4 @@
-import fc from 'fast-check'
+import * as fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { cellMeans } from './cell-means.ts'
 import { cumulativeIntegral } from './cumulative-integral.ts'
@@ -10,12 +10,13 @@ import { median } from './median.ts'
 
 const numbers = fc.array(fc.double({ min: -100, max: 100, noNaN: true }), { minLength: 1, maxLength: 60 })
 
+const sum = (values: ArrayLike<number>): number => Array.from(values).reduce((a, b) => a + b, 0)
+
 describe('isotonic', () => {
   it('never falls, keeps the mean, leaves a rising sequence alone, and no step of it can be improved', () => {
     fc.assert(
       fc.property(numbers, (y) => {
         const fit = isotonic(y)
-        const sum = (values: ArrayLike<number>): number => Array.from(values).reduce((a, b) => a + b, 0)
         for (let i = 1; i < fit.length; i++) expect(fit[i] as number).toBeGreaterThanOrEqual(fit[i - 1] as number)
         expect(sum(fit)).toBeCloseTo(sum(y), 6)
         expect([...isotonic(y.toSorted((a, b) => a - b))]).toEqual(y.toSorted((a, b) => a - b))
@@ -32,12 +33,13 @@ describe('isotonic', () => {
   })
 })
 
+const cubic = (x: number): number => 2 - x + 0.5 * x ** 2 - 0.3 * x ** 3
+const slopeOfCubic = (x: number): number => -1 + x - 0.9 * x ** 2
+
 describe('hermite', () => {
   it('is exact for a cubic', () => {
-    const f = (x: number): number => 2 - x + 0.5 * x ** 2 - 0.3 * x ** 3
-    const slope = (x: number): number => -1 + x - 0.9 * x ** 2
-    const ends = { x0: -1, x1: 2, y0: f(-1), y1: f(2), slope0: slope(-1), slope1: slope(2) }
-    for (const x of [-1, -0.2, 0.7, 1.9, 2]) expect(hermiteValue(ends, x)).toBeCloseTo(f(x), 12)
+    const ends = { x0: -1, x1: 2, y0: cubic(-1), y1: cubic(2), slope0: slopeOfCubic(-1), slope1: slopeOfCubic(2) }
+    for (const x of [-1, -0.2, 0.7, 1.9, 2]) expect(hermiteValue(ends, x)).toBeCloseTo(cubic(x), 12)
   })
 
   it('rises only from one end to the other once the slopes are limited', () => {

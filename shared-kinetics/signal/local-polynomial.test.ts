@@ -1,4 +1,4 @@
-import fc from 'fast-check'
+import * as fc from 'fast-check'
 import { lusolve, multiply, transpose } from 'mathjs'
 import { describe, expect, it } from 'vitest'
 import { localPolynomial, localPolynomialAt } from './local-polynomial.ts'

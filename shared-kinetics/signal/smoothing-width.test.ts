@@ -3,9 +3,11 @@ import { normalNumbers } from '../check-values/simulated-run.ts'
 import { localPolynomial } from './local-polynomial.ts'
 import { smoothingHalfWidth } from './smoothing-width.ts'
 
-describe('smoothing width', () => {
-  const samplesPerDuration = 1000
+const samplesPerDuration = 1000
+const widthFor = (noise: number, samples = samplesPerDuration): number =>
+  smoothingHalfWidth({ kind: 'extent', noise, duration: 60, samplesPerDuration: samples })
 
+describe('smoothing width', () => {
   it.each([
     ['extent', 2e-5],
     ['rate', 2e-3],
@@ -25,13 +27,11 @@ describe('smoothing width', () => {
   })
 
   it('grows with the noise, shrinks with the number of samples, and never passes a quarter of the duration', () => {
-    const width = (noise: number, samples = samplesPerDuration): number =>
-      smoothingHalfWidth({ kind: 'extent', noise, duration: 60, samplesPerDuration: samples })
-    const widths = [0, 1e-7, 1e-5, 1e-4, 1e-3, 1e-2, 0.3].map((noise) => width(noise))
+    const widths = [0, 1e-7, 1e-5, 1e-4, 1e-3, 1e-2, 0.3].map((noise) => widthFor(noise))
     expect(widths).toEqual(widths.toSorted((a, b) => a - b))
     expect(widths[0]).toBe(0)
     expect(widths.at(-1)).toBe(15)
-    expect(width(1e-4, 4000)).toBeLessThan(width(1e-4, 1000))
+    expect(widthFor(1e-4, 4000)).toBeLessThan(widthFor(1e-4, 1000))
   })
 
   it('keeps the bias at the top of a bell of half the duration below the noise left there', () => {
