@@ -28,18 +28,20 @@ export async function findBrowser() {
 export async function findOrInstallBrowser() {
   const found = await findBrowser()
   if (found) return found
-  const run = (command, args) => {
-    console.log(`> ${command} ${args.join(' ')}`)
-    return spawnSync(command, args, { stdio: 'inherit', env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' } }).status === 0
-  }
-  const root = process.getuid?.() === 0
   const apt = existsSync('/usr/bin/apt-get')
-  const sudo = root ? [] : ['sudo', '-n']
-  const asRoot = (...words) => run([...sudo, ...words][0], [...sudo, ...words].slice(1))
-  if (apt) asRoot('apt-get', 'update') && asRoot('apt-get', 'install', '-y', '--no-install-recommends', 'chromium')
-  if (!(await findBrowser())) run('npx', ['playwright', 'install', 'chromium'])
+  if (apt && asRoot('apt-get', 'update')) asRoot('apt-get', 'install', '-y', '--no-install-recommends', 'chromium')
+  if (!(await findBrowser())) run('npx', 'playwright', 'install', 'chromium')
   const installed = await findBrowser()
   if (!installed)
     throw new Error('No Chromium was found and none could be installed. Install one, or set CHROMIUM_PATH to its program file.')
   return installed
+}
+
+function run(command, ...args) {
+  console.log(`> ${command} ${args.join(' ')}`)
+  return spawnSync(command, args, { stdio: 'inherit', env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' } }).status === 0
+}
+
+function asRoot(...words) {
+  return process.getuid?.() === 0 ? run(...words) : run('sudo', '-n', ...words)
 }

@@ -10,7 +10,7 @@ async function tabTo(page: Page, wanted: Locator, key = 'Tab'): Promise<void> {
       return
     await page.keyboard.press(key)
   }
-  throw new Error(`The focus never came to ${wanted}`)
+  throw new Error(`The focus never came to ${wanted.toString()}`)
 }
 
 test.use({ permissions: ['clipboard-read', 'clipboard-write'] })
@@ -70,8 +70,8 @@ test('a stop or caution is reached from the top line', async ({ sheet, page }) =
 test('the focus can always be seen', async ({ sheet, page }) => {
   await sheet.openDemo()
   await sheet.goTo('Activation energy')
-  const seen = new Set<string>()
-  for (let presses = 0; presses < 60; presses++) {
+  let stops = 0
+  for (let presses = 0; presses < 40; presses++) {
     await page.keyboard.press('Tab')
     const focus = await page.evaluate(() => {
       const element = document.activeElement
@@ -85,9 +85,8 @@ test('the focus can always be seen', async ({ sheet, page }) => {
       return { name: element.outerHTML.slice(0, 120), marked }
     })
     if (focus === null) continue
-    if (seen.has(focus.name)) break
-    seen.add(focus.name)
+    stops += 1
     expect(focus.marked, `no ring on ${focus.name}`).toBe(true)
   }
-  expect(seen.size).toBeGreaterThan(10)
+  expect(stops).toBeGreaterThan(20)
 })

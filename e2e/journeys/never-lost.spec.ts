@@ -3,16 +3,16 @@ import { expect, test } from '../pages/program.ts'
 test('a reloaded page shows the study as it was, undo included', async ({ sheet, page }) => {
   await sheet.openDemo()
   await sheet.goTo('Runs')
-  await page.getByRole('checkbox').first().focus()
+  await page.getByRole('checkbox', { name: /^Use/ }).first().focus()
   await page.keyboard.press('Space')
-  await expect(page.getByRole('checkbox').first()).not.toBeChecked()
+  await expect(page.getByRole('checkbox', { name: /^Use/ }).first()).not.toBeChecked()
   await sheet.settled()
   await page.reload()
   await sheet.settled()
   await sheet.goTo('Runs')
-  await expect(page.getByRole('checkbox').first()).not.toBeChecked()
+  await expect(page.getByRole('checkbox', { name: /^Use/ }).first()).not.toBeChecked()
   await page.getByRole('button', { name: /^Undo: leaving out/ }).click()
-  await expect(page.getByRole('checkbox').first()).toBeChecked()
+  await expect(page.getByRole('checkbox', { name: /^Use/ }).first()).toBeChecked()
 })
 
 test('a second tab follows the first', async ({ sheet, page, context, program }) => {

@@ -43,6 +43,8 @@ const end = async (host: ChildProcess): Promise<void> => {
 }
 
 export const test = base.extend<{ program: Program; sheet: Sheet }>({
+  // Playwright reads the fixtures wanted from this pattern, so it stands even where none is.
+  // oxlint-disable-next-line no-empty-pattern
   program: async ({}, use) => {
     const dataFolder = mkdtempSync(join(tmpdir(), 'rampfold-journey-'))
     let running = await start(dataFolder, [])

@@ -63,6 +63,6 @@ describe('a study document', () => {
   })
 
   it('of another format is refused', () => {
-    expect(() => parseStudyDocument({ ...study, format: 'rampfold.study/9' })).toThrow()
+    expect(() => parseStudyDocument({ ...study, format: 'rampfold.study/9' })).toThrow(/format/)
   })
 })
