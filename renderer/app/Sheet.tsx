@@ -87,7 +87,9 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
             />
             {stage === 'activation' && <Safety />}
           </main>
-          {result !== null && level !== null && <Rail result={result} levelIndex={levelIndex} level={level} actions={actions} />}
+          {result !== null && result.runs.length > 0 && level !== null && (
+            <Rail result={result} levelIndex={levelIndex} level={level} actions={actions} />
+          )}
         </>
       ) : (
         <main className="stage">

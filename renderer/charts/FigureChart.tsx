@@ -70,8 +70,12 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
     const chart = chartRef.current
     if (chart === null) return
     chart.data.datasets = datasetsOf(figure, colours, emphasis) as FigureChartInstance['data']['datasets']
-    chart.options = { ...chartOptions(figure, colours), onClick: (event) => pick(chart, event.x, pickRef.current) }
-    Object.assign(chart.options.plugins ?? {}, { zoom: zoomOptions(chart, colours) })
+    const { plugins, ...options } = chartOptions(figure, colours)
+    chart.options = {
+      ...options,
+      plugins: { ...plugins, zoom: zoomOptions(chart, colours) },
+      onClick: (event) => pick(chart, event.x, pickRef.current),
+    }
     setAxisText(chart, { figure, colours })
     chart.update('none')
     wholeRef.current = rangeOf(chart)
@@ -152,11 +156,22 @@ function zoomOptions(chart: FigureChartInstance, colours: ChartColours) {
   return {
     zoom: {
       mode: 'xy',
-      wheel: { enabled: true, speed: 0.08, modifierKey: 'ctrl' },
+      wheel: { enabled: true, speed: 0.08 },
       drag: { enabled: true, threshold: 8, borderColor: colours.accent, borderWidth: 1, backgroundColor: `${colours.accent}22` },
+      onZoomStart: ({ event }: { readonly event: Event }) => !wheelScrolls(event, chart.canvas),
       onZoomComplete,
     },
   } as const
+}
+
+/** In a small window the sheet scrolls; a bare wheel is then for that, and with Ctrl for the chart. */
+function wheelScrolls(event: Event, canvas: HTMLCanvasElement): boolean {
+  if (!(event instanceof WheelEvent) || event.ctrlKey) return false
+  for (let element = canvas.parentElement; element !== null; element = element.parentElement) {
+    const scrolls = /auto|scroll/.test(getComputedStyle(element).overflowY)
+    if (scrolls && element.scrollHeight > element.clientHeight + 1) return true
+  }
+  return false
 }
 
 function pick(chart: FigureChartInstance, left: number | null, onPick: FigureChartProps['onPick']): void {

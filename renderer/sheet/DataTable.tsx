@@ -1,8 +1,8 @@
 import type { ReactNode } from 'react'
 import type { DataColumn } from './data-table.ts'
 
-/** The head of a table: quantity and, beneath it, unit. */
-export function TableHead<Row>({ columns }: { readonly columns: readonly DataColumn<Row>[] }) {
+/** The head of a table: quantity and, beneath it, unit. `end` names a last column of buttons to those who hear the screen. */
+export function TableHead<Row>({ columns, end }: { readonly columns: readonly DataColumn<Row>[]; readonly end?: string }) {
   return (
     <thead>
       <tr>
@@ -12,6 +12,11 @@ export function TableHead<Row>({ columns }: { readonly columns: readonly DataCol
             <span className="unit">{column.unit}</span>
           </th>
         ))}
+        {end !== undefined && (
+          <th scope="col">
+            <span className="visually-hidden">{end}</span>
+          </th>
+        )}
       </tr>
     </thead>
   )

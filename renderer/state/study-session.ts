@@ -101,6 +101,11 @@ export function createStudySession(transport: HostTransport): StudySession {
 
   const revision = (): number => get().replica?.confirmed.revision ?? 0
 
+  /** Sends what is pending, oldest first; what could not be sent stays pending and goes first next time. */
+  async function sendPending(): Promise<void> {
+    for (let change = get().replica?.pending[0]; change !== undefined; change = get().replica?.pending[0]) await sendChange(change)
+  }
+
   async function sendChange(change: StudyChange): Promise<void> {
     for (let tries = 1; ; tries += 1) {
       try {
@@ -143,6 +148,7 @@ export function createStudySession(transport: HostTransport): StudySession {
       // After a lost connection the host may be a new process whose count of revisions starts again.
       if (connection.kind === 'ready') adopt(snapshot)
       else set({ replica: replicaOf(snapshot, replica?.pending ?? []), connection: { kind: 'ready' } })
+      await sendPending()
     })
   }
 
@@ -180,7 +186,7 @@ export function createStudySession(transport: HostTransport): StudySession {
       const { replica } = get()
       if (replica === null) return Promise.resolve()
       set({ replica: withChange(replica, change) })
-      return inOrder(async () => sendChange(change))
+      return inOrder(sendPending)
     },
     undo: () => inOrder(async () => step('study.undo')),
     redo: () => inOrder(async () => step('study.redo')),

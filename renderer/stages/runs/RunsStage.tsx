@@ -1,5 +1,6 @@
 import { useMemo } from 'react'
 import { Button } from 'react-aria-components'
+import type { StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { signalsAtLevel, signalsFigure } from '../../../shared-kinetics/figure/signals-figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
 import { levelQuantity } from '../../sheet/at-level.ts'
@@ -99,11 +100,7 @@ function Runs({ result, levelIndex, level, actions, document }: StageProps) {
   const quantity = levelQuantity(result)
   const columns = useMemo(() => runColumns(level, levelIndex, quantity), [level, levelIndex, quantity])
   return (
-    <Half
-      side="result"
-      title="Runs"
-      note={seriesNote(rows.length, result === null ? null : new Set(result.runs.map((run) => run.programmeGroup)).size)}
-    >
+    <Half side="result" title="Runs" note={seriesNote(rows.length, result)}>
       <div className="controls">
         <WindowField window={document.settings.window} onSet={(window) => actions.change({ kind: 'set-window', window })} />
         <div className="controls-end">
@@ -131,7 +128,10 @@ function Runs({ result, levelIndex, level, actions, document }: StageProps) {
   )
 }
 
-function seriesNote(runs: number, programmes: number | null): string {
-  if (programmes === null) return count(runs, 'run')
-  return `${count(runs, 'run')}, ${count(programmes, 'distinct programme')} in use. Heating rates are measured: a line through T against t, from α 0.02 to 0.98.`
+function seriesNote(runs: number, result: StudyResult | null): string {
+  if (result === null) return count(runs, 'run')
+  const programmes = new Set(result.runs.map((run) => run.programmeGroup)).size
+  const measured = result.runs.some((run) => run.heatingRateSource === 'measured')
+  const how = measured ? ' Heating rates are measured: a line through T against t, from α 0.02 to 0.98.' : ''
+  return `${count(runs, 'run')}, ${count(programmes, 'distinct programme')} in use.${how}`
 }

@@ -78,8 +78,7 @@ export function RunsTable({ rows, columns, level, levelIndex, quantity, pointedR
 function RunsHead({ columns }: { readonly columns: readonly DataColumn<RunRow>[] }) {
   const use = { id: 'use', heading: 'Use', unit: '', numeric: false, text: () => '', value: () => null }
   const run = { ...use, id: 'run', heading: 'Run' }
-  const remove = { ...use, id: 'remove', heading: '' }
-  return <TableHead columns={[use, run, ...columns, remove]} />
+  return <TableHead columns={[use, run, ...columns]} end="Remove" />
 }
 
 function RunName({ row, colours, onChange }: Pick<RunsTableProps, 'colours' | 'onChange'> & { readonly row: RunRow }) {
@@ -102,7 +101,7 @@ function RunName({ row, colours, onChange }: Pick<RunsTableProps, 'colours' | 'o
           onCommit={(label) => onChange({ kind: 'relabel-run', runId: run.id, label })}
         />
         <span className="run-facts">{runFacts(row)}</span>
-        {unusable !== null && <span className="run-unusable">Not evaluated: {unusable.message}</span>}
+        {unusable !== null && <span className="run-unusable">Not evaluated. {unusable}</span>}
       </div>
     </div>
   )

@@ -1,6 +1,6 @@
 import { runTones } from '../../../shared-kinetics/figure/run-place.ts'
 import type { StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
-import type { Finding, RunInfo, RunResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
+import type { RunInfo, RunResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { kelvinToCelsius, perSecondToPerMinute } from '../../../shared-kinetics/units/convert.ts'
 import { atLevel, formatAtLevel, type LevelQuantity } from '../../sheet/at-level.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
@@ -14,6 +14,7 @@ import {
   nominalSourceWords,
   programmeWords,
 } from '../../sheet/format.ts'
+import { runsWithoutHeatingRate } from './questions.ts'
 
 /** One run of the study: as imported, and as evaluated where it was used and could be. */
 export interface RunRow {
@@ -21,8 +22,8 @@ export interface RunRow {
   readonly result: RunResult | null
   /** Colour place and marker in every chart; null for a run that is not drawn. */
   readonly tone: { readonly place: number; readonly index: number } | null
-  /** Why a used run was not evaluated. */
-  readonly unusable: Finding | null
+  /** Why a used run was not evaluated, in a sentence; null where it was. */
+  readonly unusable: string | null
 }
 
 /** Evaluated runs first, slowest programme first as in every chart, then the others as they were added. */
@@ -33,14 +34,18 @@ export function runRows(document: StudyDocument, result: StudyResult | null): re
     return run === undefined || !run.use ? [] : [{ run, result: one, tone: tones[i] ?? null, unusable: null }]
   })
   const shown = new Set(evaluated.map((row) => row.run.id))
+  const asked = new Set(runsWithoutHeatingRate(document).map((run) => run.id))
   const others = document.runs
     .filter((run) => !shown.has(run.id))
-    .map((run): RunRow => ({ run, result: null, tone: null, unusable: run.use ? unusableFinding(result, run) : null }))
+    .map((run): RunRow => ({ run, result: null, tone: null, unusable: run.use ? unusableText(result, run, asked) : null }))
   return [...evaluated, ...others]
 }
 
-const unusableFinding = (result: StudyResult | null, run: RunInfo): Finding | null =>
-  result?.findings.find((finding) => finding.run === run.id && finding.code === 'run-unusable') ?? null
+function unusableText(result: StudyResult | null, run: RunInfo, asked: ReadonlySet<string>): string | null {
+  if (result === null) return null
+  if (asked.has(run.id)) return 'Its heating rate is asked for above.'
+  return result.findings.find((finding) => finding.run === run.id && finding.code === 'run-unusable')?.message ?? null
+}
 
 /** What stands in the table of runs and what is copied from it; the last column follows the level rail. */
 export function runColumns(level: number | null, levelIndex: number, quantity: LevelQuantity): readonly DataColumn<RunRow>[] {
@@ -82,7 +87,7 @@ export function runColumns(level: number | null, levelIndex: number, quantity: L
     ),
     numbers(
       'level',
-      `${quantity.symbol} at α${level === null ? '' : ` ${formatLevel(level)}`}`,
+      `${quantity.symbol} at α${level === null ? '' : `\u00a0${formatLevel(level)}`}`,
       quantity.unit,
       (row) => formatAtLevel(row.result, levelIndex, quantity),
       (row) => atLevel(row.result, levelIndex, quantity),
