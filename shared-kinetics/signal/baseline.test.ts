@@ -98,7 +98,7 @@ describe('quiet ends', () => {
 
   it('a line that would cut into the peak is none', () => {
     // A hump before the peak whose rising side, carried on, passes over the apex.
-    const y = x.map((t) => 200 * rate(t) + (t < 150 ? 0.02 * t : Math.max(0, 3 - 0.06 * (t - 150))))
+    const y = x.map((t) => 200 * rate(t) + (t < 150 ? t / 150 : Math.max(0, 1 - 0.02 * (t - 150))))
     const { before: left } = findQuietEnds(x, y, 0, n - 1)
     expect(left).not.toBeNull()
     const tangent = fitTangent(x, y, left?.outer ?? 0, left?.inner ?? 0)

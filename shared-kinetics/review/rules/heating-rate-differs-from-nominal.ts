@@ -10,8 +10,8 @@ export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] 
     const measured = result.heatingRate_K_per_min
     const nominal = result.nominalHeatingRate_K_per_min
     if (result.heatingRateSource !== 'measured' || measured === null || nominal === null) return []
+    if (Math.abs(measured - nominal) <= allowed * nominal) return []
     const off = measured / nominal - 1
-    if (Math.abs(off) <= allowed) return []
     return [
       {
         code: 'heating-rate-differs-from-nominal',
