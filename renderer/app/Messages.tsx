@@ -24,7 +24,7 @@ export function Messages({ stale }: { readonly stale: boolean }) {
       )}
       {importing === null && <EvaluationMessage evaluation={evaluation} stale={stale} />}
       {refused.length > 0 && <RefusedFiles files={refused} onDismiss={session.dismissRefused} />}
-      {notice !== null && <Notice kind={notice.kind} text={notice.text} onDismiss={session.dismissNotice} />}
+      {notice !== null && <Notice key={notice.text} kind={notice.kind} text={notice.text} onDismiss={session.dismissNotice} />}
     </div>
   )
 }

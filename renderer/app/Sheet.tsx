@@ -1,4 +1,4 @@
-import { useCallback, useMemo, useRef } from 'react'
+import { useCallback, useEffect, useMemo, useRef } from 'react'
 import { TabPanel, Tabs } from 'react-aria-components'
 import type { Finding, Severity } from '../../shared-kinetics/contract/study-result.ts'
 import type { Paper } from '../charts/run-scale.ts'
@@ -40,6 +40,10 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
     () => ({ document, result, levelIndex, level, actions }),
     [document, result, levelIndex, level, actions],
   )
+
+  useEffect(() => {
+    window.document.title = `${document.name} – Rampfold`
+  }, [document.name])
 
   return (
     <Tabs
@@ -127,7 +131,7 @@ function useJump() {
       toPlace(next)
       // The note may stand on a stage that is only now being laid out.
       requestAnimationFrame(() => {
-        const note = document.getElementById(findingElementId(next, findings))
+        const note = window.document.getElementById(findingElementId(next, findings))
         note?.scrollIntoView({ block: 'nearest' })
         note?.focus()
       })

@@ -5,12 +5,19 @@ import { levelQuantity } from '../sheet/at-level.ts'
 import { copyText } from '../sheet/data-table.ts'
 import { nearestLevel } from '../sheet/nearest-level.ts'
 import type { Services } from '../state/services.ts'
+import type { OpenRequest } from '../state/study-session.ts'
 import { chosenAmong, comparedAmong } from '../state/view-store.ts'
 import { copyToClipboard, download } from './files-out.ts'
 
 /** What buttons, menus and keys set going. Nothing here throws: what went wrong is said on the sheet. */
 export function createSheetActions({ session, view }: Services, openFileDialog: () => void): SheetActions {
   const read = session.store.getState
+
+  /** Another study begins at its runs. */
+  function open(request: OpenRequest): void {
+    view.setState({ stage: 'runs', pointedRun: null })
+    void session.open(request)
+  }
 
   async function saveCopy(): Promise<void> {
     const file = await session.ask('study.save-copy', {})
@@ -41,9 +48,9 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
   return {
     change: (change) => void session.change(change),
     openFiles: openFileDialog,
-    openDemo: () => void session.open({ name: 'study.open-demo' }),
-    newStudy: () => void session.open({ name: 'study.new' }),
-    openRecent: (studyId) => void session.open({ name: 'study.open-recent', studyId }),
+    openDemo: () => open({ name: 'study.open-demo' }),
+    newStudy: () => open({ name: 'study.new' }),
+    openRecent: (studyId) => open({ name: 'study.open-recent', studyId }),
     saveCopy: () => void saveCopy(),
     exportTable: () => void exportTable(),
     copyTable: () => void copyTable(),

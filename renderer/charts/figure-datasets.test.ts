@@ -81,6 +81,15 @@ describe('datasets of a figure', () => {
     expect(other).toMatchObject({ borderColor: '#00008059' })
   })
 
+  it('takes the markers off joined points that stand too close to be told apart, and keeps every number', () => {
+    const x = Array.from({ length: 99 }, (_, i) => i)
+    const many = (index: number): Mark => ({ kind: 'points', name: 'Ea', tone: { kind: 'method', index }, x, y: x, joined: true })
+    const [chosen, other] = datasetsOf(figureWith(many(0), many(1)), colours, null)
+    expect(Reflect.get(chosen ?? {}, 'pointRadius')).toBeLessThan(3)
+    expect(other).toMatchObject({ pointRadius: 0, showLine: true })
+    expect(other?.data).toHaveLength(99)
+  })
+
   it('leaves rules to the annotation of the axis they stand on', () => {
     const figure = figureWith(
       { kind: 'rule', name: 'Threshold', tone: { kind: 'faint' }, along: 'x', at: 12, dash: 'dashed' },

@@ -56,6 +56,7 @@ export const dashOf = (mark: Mark, stroke: Stroke): readonly number[] => {
  */
 export function datasetsOf(figure: Figure, colours: ChartColours, emphasis: number | null): FigureDataset[] {
   const last = figure.marks.length
+  const faintLines = figure.marks.filter((mark) => mark.kind === 'line' && mark.tone.kind === 'faint').length
   return figure.marks.flatMap((mark, i): FigureDataset[] => {
     const stroke = strokeOf(mark.kind === 'rule' ? { kind: 'ink' } : mark.tone, colours)
     // Chart.js draws the greatest order first; the chosen method lies above those it is compared with.
@@ -63,9 +64,9 @@ export function datasetsOf(figure: Figure, colours: ChartColours, emphasis: numb
     const order = isChosen ? 0 : last - i
     switch (mark.kind) {
       case 'line':
-        return [lineDataset(mark, emphasised(mark.tone, stroke, emphasis), order)]
+        return [lineDataset(mark, thinned(mark.tone, emphasised(mark.tone, stroke, emphasis), faintLines), order)]
       case 'points':
-        return [pointsDataset(mark, stroke, colours, order)]
+        return [pointsDataset(mark, uncrowded(mark, stroke), colours, order)]
       case 'band':
         return bandDatasets(mark, stroke, order)
       case 'rule':
@@ -77,6 +78,21 @@ export function datasetsOf(figure: Figure, colours: ChartColours, emphasis: numb
 function emphasised(tone: Tone, stroke: Stroke, emphasis: number | null): Stroke {
   if (emphasis === null || tone.kind !== 'run') return stroke
   return tone.index === emphasis ? { ...stroke, width: 3 } : { ...stroke, colour: withOpacity(stroke.colour, 0.35) }
+}
+
+/** More lines or joined points than this stand so close that they would run into one blot. */
+const crowd = 40
+
+/** Many faint lines are drawn thinner, so that single ones can still be told. */
+function thinned(tone: Tone, stroke: Stroke, faintLines: number): Stroke {
+  return tone.kind === 'faint' && faintLines > crowd ? { ...stroke, width: 0.5 } : stroke
+}
+
+/** Where joined points stand close, the line carries them: small markers on the chosen method, none on the others. */
+function uncrowded(mark: Extract<Mark, { kind: 'points' }>, stroke: Stroke): Stroke {
+  if (mark.tone.kind === 'faint') return mark.x.length > crowd * 5 ? { ...stroke, radius: 1 } : stroke
+  if (!mark.joined || mark.x.length <= crowd) return stroke
+  return { ...stroke, radius: mark.tone.kind === 'method' && mark.tone.index === 0 ? 1.7 : 0 }
 }
 
 function lineDataset(mark: Extract<Mark, { kind: 'line' }>, stroke: Stroke, order: number): FigureDataset {

@@ -1,15 +1,23 @@
+import { useEffect } from 'react'
 import { Button } from 'react-aria-components'
 
-/** One sentence about what was done or what went wrong, until it is dismissed. */
-export function Notice({
-  kind,
-  text,
-  onDismiss,
-}: {
+/** How long the word that something was done stays; what went wrong stays until it is dismissed. */
+const doneStays_ms = 6000
+
+export interface NoticeProps {
   readonly kind: 'failure' | 'done'
   readonly text: string
   readonly onDismiss: () => void
-}) {
+}
+
+/** One sentence about what was done or what went wrong. What was done lies over the sheet, so that nothing moves for it. */
+export function Notice({ kind, text, onDismiss }: NoticeProps) {
+  useEffect(() => {
+    if (kind === 'failure') return
+    const timer = setTimeout(onDismiss, doneStays_ms)
+    return () => clearTimeout(timer)
+  }, [kind, onDismiss])
+
   return (
     <div className={`notice notice-${kind}`} role={kind === 'failure' ? 'alert' : 'status'}>
       <p>{text}</p>

@@ -50,11 +50,11 @@ export function WindowField({ window, onSet }: { readonly window: Window | null;
         save()
       }}
     >
-      <TextField value={ends[0]} onChange={(start) => setEnds([start, ends[1]])}>
+      <TextField className="typed-field" value={ends[0]} onChange={(start) => setEnds([start, ends[1]])}>
         <Label>Window from</Label>
         <Input placeholder="150 C" ref={firstRef} />
       </TextField>
-      <TextField value={ends[1]} onChange={(end) => setEnds([ends[0], end])}>
+      <TextField className="typed-field" value={ends[1]} onChange={(end) => setEnds([ends[0], end])}>
         <Label>to</Label>
         <Input placeholder="700 K" />
       </TextField>
