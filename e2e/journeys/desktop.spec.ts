@@ -6,10 +6,6 @@ import { findElectronBinary } from '../../main/host/electron-binary.ts'
 import { root } from '../pages/program.ts'
 import { Sheet } from '../pages/sheet.ts'
 
-const binary = join(folder, 'dist', readFileSync(note, 'utf8'))
-  return existsSync(binary) ? binary : null
-}
-
 const binary = findElectronBinary(join(root, 'node_modules/electron'))
 const required = process.env.REQUIRE_ELECTRON === '1'
 

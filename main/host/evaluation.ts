@@ -20,7 +20,7 @@ export function createEvaluation(workspace: Workspace, pool: TaskPool, events: E
     const { document } = workspace.session
     const columns = new Map(document.runs.map((run) => [run.columnsKey, workspace.study.columns.get(run.columnsKey)]))
     const report = events.progressOf('evaluate')
-    const input = { study: { runs: document.runs, settings: document.settings }, columns }
+    const input = { study: { runs: document.runs, settings: document.settings, importNotes: document.importNotes }, columns }
     const result = pool.run('evaluate-study', input, {
       signal: stop.signal,
       progress: (done, total) => {
