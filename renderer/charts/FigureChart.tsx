@@ -6,6 +6,7 @@ import { setAxisText } from './axis-text-plugin.ts'
 import type { ChartColours } from './chart-colours.ts'
 import { chartOptions, type FigureChartType } from './chart-options.ts'
 import { isZoomed, moveRange, type ChartRange, type RangeMove } from './chart-range.ts'
+import { chartWords } from './chart-words.ts'
 import { copyPicture } from './copy-picture.ts'
 import { datasetsOf, type FigurePoint } from './figure-datasets.ts'
 import { setOverlay } from './overlay-plugin.ts'
@@ -126,7 +127,7 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
   }
 
   return (
-    <div className="chart" data-figure={figure.id}>
+    <figure className="chart" data-figure={figure.id}>
       <div className="chart-actions">
         {zoomed && (
           <Button className="text-button" onPress={showWhole}>
@@ -142,10 +143,13 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
         {/* oxlint-disable-next-line jsx-a11y/prefer-tag-over-role -- a canvas is an image to those who hear the screen */}
         <canvas ref={canvasRef} role="img" aria-label={figure.description} />
       </figure>
+      <p role="note" className="visually-hidden">
+        {chartWords(figure, overlay)}
+      </p>
       <p id={helpId} className="visually-hidden">
         Plus and minus zoom, arrow keys move, 0 shows the whole figure, Control C copies the picture.
       </p>
-    </div>
+    </figure>
   )
 }
 

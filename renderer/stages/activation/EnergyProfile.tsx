@@ -142,7 +142,7 @@ function Foot({ result, actions }: ActivationProps) {
     <div className="half-foot">
       <p>
         {kissinger === null ? (
-          'Kissinger: no peaks at three or more constant heating rates.'
+          'Kissinger does not apply to these runs; the findings say why.'
         ) : (
           <>
             Kissinger (peaks): Ea <strong>{decimals(kissinger.Ea_kJ_per_mol, 1)}</strong>
