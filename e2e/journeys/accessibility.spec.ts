@@ -23,7 +23,7 @@ for (const colorScheme of ['light', 'dark'] as const) {
       expect(await faults(page)).toEqual([])
       await sheet.goTo('Activation energy')
       expect(await faults(page)).toEqual([])
-      await page.getByRole('radio', { name: 'Vyazovkin', exact: true }).click({ force: true })
+      await sheet.chooseMethod('Vyazovkin')
       expect(await faults(page)).toEqual([])
       await page.getByRole('button', { name: 'Study' }).click()
       expect(await faults(page)).toEqual([])

@@ -4,7 +4,7 @@ import { type Download, expect, type Locator, type Page } from '@playwright/test
 
 export type StageName = 'Runs' | 'Activation energy'
 
-/** The sheet as a person meets it: by role and by name, never by class. */
+/** The sheet as a person meets it: by role and by name. */
 export class Sheet {
   readonly page: Page
 
@@ -49,6 +49,10 @@ export class Sheet {
     return this.page.getByRole('table', { name: 'Activation energy at every level of conversion' })
   }
 
+  async chooseMethod(label: string): Promise<void> {
+    await this.page.getByRole('radiogroup', { name: 'Method' }).getByText(label, { exact: true }).click()
+  }
+
   get currentRow(): Locator {
     return this.levelTable.locator('tr[aria-current="true"]')
   }
@@ -58,13 +62,14 @@ export class Sheet {
     return this.page.getByRole('contentinfo', { name: 'Level rail' })
   }
 
+  /** A chart, by its title. */
   chart(title: string | RegExp): Locator {
-    return this.page.getByRole('group', { name: title })
+    return this.page.getByRole('figure', { name: title })
   }
 
-  /** What a chart shows at the current level, as it tells people who hear the screen. */
+  /** What stands out in a chart at the current level, as it tells people who hear the screen. */
   async told(title: string | RegExp): Promise<string> {
-    return (await this.chart(title).getByRole('note').textContent()) ?? ''
+    return (await this.chart(title).locator('..').getByRole('note').textContent()) ?? ''
   }
 
   /** Drags the rail's handle to a conversion, as a hand does: down, a few moves, up. */

@@ -127,7 +127,7 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
   }
 
   return (
-    <figure className="chart" data-figure={figure.id}>
+    <div className="chart" data-figure={figure.id}>
       <div className="chart-actions">
         {zoomed && (
           <Button className="text-button" onPress={showWhole}>
@@ -149,7 +149,7 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
       <p id={helpId} className="visually-hidden">
         Plus and minus zoom, arrow keys move, 0 shows the whole figure, Control C copies the picture.
       </p>
-    </figure>
+    </div>
   )
 }
 

@@ -26,7 +26,7 @@ export interface RunRow {
   readonly unusable: string | null
 }
 
-/** Evaluated runs first, slowest programme first as in every chart, then the others as they were added. */
+/** Evaluated runs slowest programme first, as in every chart; a run that is not evaluated keeps its place behind the run it was added after. */
 export function runRows(document: StudyDocument, result: StudyResult | null): readonly RunRow[] {
   const tones = result === null ? [] : runTones(result)
   const evaluated = (result?.runs ?? []).flatMap((one, i): RunRow[] => {
@@ -35,10 +35,14 @@ export function runRows(document: StudyDocument, result: StudyResult | null): re
   })
   const shown = new Set(evaluated.map((row) => row.run.id))
   const asked = new Set(runsWithoutHeatingRate(document).map((run) => run.id))
-  const others = document.runs
-    .filter((run) => !shown.has(run.id))
-    .map((run): RunRow => ({ run, result: null, tone: null, unusable: run.use ? unusableText(result, run, asked) : null }))
-  return [...evaluated, ...others]
+  const rows = [...evaluated]
+  for (const [i, run] of document.runs.entries()) {
+    if (shown.has(run.id)) continue
+    const before = document.runs[i - 1]?.id
+    const place = rows.findIndex((row) => row.run.id === before) + 1
+    rows.splice(place, 0, { run, result: null, tone: null, unusable: run.use ? unusableText(result, run, asked) : null })
+  }
+  return rows
 }
 
 function unusableText(result: StudyResult | null, run: RunInfo, asked: ReadonlySet<string>): string | null {

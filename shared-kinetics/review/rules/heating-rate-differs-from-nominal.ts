@@ -17,11 +17,11 @@ export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] 
         code: 'heating-rate-differs-from-nominal',
         severity: 'caution',
         stage: 'runs',
-        title: `${info.label}: ${digits(measured, 4)} K/min measured, ${digits(nominal, 4)} K/min stated`,
+        title: `${info.label} heated at ${digits(measured, 4)} K/min, nominal ${digits(nominal, 4)}`,
         message:
-          `T(t) of ${info.label} rises by ${digits(measured, 4)} K/min over the reaction, ${percent(Math.abs(off))} ${off > 0 ? 'faster' : 'slower'} than the ` +
-          `${digits(nominal, 4)} K/min stated${quoted(info.nominalHeatingRate?.text)}. Ea is calculated with the measured rate; the stated one would shift it. ` +
-          'Check the time column where the difference is large: a wrong unit of time shows like this.',
+          `Over the reaction T(t) rises by ${digits(measured, 4)} K/min, ${percent(Math.abs(off))} ${off > 0 ? 'faster' : 'slower'} than the nominal heating rate of ` +
+          `${digits(nominal, 4)} K/min${quoted(info.nominalHeatingRate?.text)}. Ea is calculated with the measured one; the nominal one would shift it. ` +
+          'Where they are far apart check the time column: a wrong unit of time shows like this.',
         run: info.id,
         level: null,
         evidence: { measured_K_per_min: measured, nominal_K_per_min: nominal, difference_percent: 100 * off },
