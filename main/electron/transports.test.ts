@@ -146,7 +146,7 @@ describe.each([
     expect(run?.curve.baseline).toEqual(new Float64Array())
     const { files } = await transport.call('results.export', { revision: snapshot.revision, format: 'csv' })
     expect(files[0]?.fileName).toBe('activation.csv')
-    expect(new TextDecoder().decode(files[0]?.bytes)).toBe('Untitled study, 1 runs')
+    expect(new TextDecoder().decode(files[0]?.bytes)).toBe('a, 1 runs')
   })
 
   it('opens the demo and saves a copy of it', async () => {

@@ -25,15 +25,21 @@ export function MarginNotes({
       </h2>
       {findings.length === 0 && <p className="margin-empty">{settled ? 'Nothing to remark.' : 'They follow with the results.'}</p>}
       <ul className="notes">
-        {findings.map((finding) => {
+        {findings.map((finding, i) => {
           const id = findingElementId(finding, all)
           return (
             <li key={id} id={id} className={`note note-${finding.severity}`} tabIndex={-1}>
               <h3>
                 <span className="severity">{severityWords[finding.severity]}</span> {finding.title}
               </h3>
-              <p>{finding.message}</p>
-              <p className="basis">{finding.basis}</p>
+              {isRepeat(findings, i) ? (
+                <details>
+                  <summary>the same in detail</summary>
+                  <NoteText finding={finding} />
+                </details>
+              ) : (
+                <NoteText finding={finding} />
+              )}
               {(finding.run !== null || finding.level !== null) && (
                 <Button className="link-button" onPress={() => onShow(finding)} aria-label={`Show: ${finding.title}`}>
                   show
@@ -44,5 +50,17 @@ export function MarginNotes({
         })}
       </ul>
     </aside>
+  )
+}
+
+/** What one run after another gets is read once; each further one shows its number and folds the rest. */
+const isRepeat = (findings: readonly Finding[], i: number): boolean => findings[i]?.code === findings[i - 1]?.code
+
+function NoteText({ finding }: { readonly finding: Finding }) {
+  return (
+    <>
+      <p>{finding.message}</p>
+      <p className="basis">{finding.basis}</p>
+    </>
   )
 }

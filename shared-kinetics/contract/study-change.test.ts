@@ -33,6 +33,21 @@ describe('a change', () => {
     expect(applyChange(study, { kind: 'remove-run', runId: 'z' })).toEqual(study)
   })
 
+  it.each([
+    [['lab 7, 2 K per min', 'lab 7, 10 K per min'], 'lab 7'],
+    [['pine_N2_3K_R1', 'pine_N2_10K_R1', 'pine_N2_10K_R2'], 'pine_N2'],
+    [['a', 'b'], 'a'],
+    [['alone'], 'alone'],
+  ])('that adds the first runs %j names the study %s, once', (labels, name) => {
+    const first = applyChange(emptyStudy('s1'), {
+      kind: 'add-runs',
+      runs: labels.map((label) => ({ ...run(label), label })),
+      importNotes: [],
+    })
+    expect(first.name).toBe(name)
+    expect(applyChange(first, { kind: 'add-runs', runs: [run('other')], importNotes: [] }).name).toBe(name)
+  })
+
   it('says in the undo line what it was', () => {
     expect(labelOfChange(study, { kind: 'set-run-window', runId: 'b', window: null })).toBe('window of run b')
   })

@@ -1,7 +1,8 @@
 import * as z from 'zod/mini'
 import type { RunInfo } from '../series/run.ts'
 import type { DeepReadonly } from './deep-readonly.ts'
-import { runInfoSchema, settingsSchema, studyLimits, windowSchema, type StudyDocument } from './study-document.ts'
+import { nameAfter } from './name-after-runs.ts'
+import { runInfoSchema, settingsSchema, studyLimits, windowSchema, type StudyDocument, untitled } from './study-document.ts'
 
 /** Every change a person can make to a study, as plain data. The host and each replica apply it with `applyChange`. */
 export const studyChangeSchema = z.discriminatedUnion('kind', [
@@ -78,7 +79,12 @@ export function applyChange(document: StudyDocument, change: StudyChange): Study
     case 'rename-study':
       return { ...document, name: change.name }
     case 'add-runs':
-      return { ...document, runs: [...document.runs, ...change.runs], importNotes: [...document.importNotes, ...change.importNotes] }
+      return {
+        ...document,
+        name: document.runs.length === 0 && document.name === untitled ? nameAfter(change.runs) : document.name,
+        runs: [...document.runs, ...change.runs],
+        importNotes: [...document.importNotes, ...change.importNotes],
+      }
     case 'remove-run':
       return { ...document, runs: document.runs.filter((run) => run.id !== change.runId) }
     case 'relabel-run':

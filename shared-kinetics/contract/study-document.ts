@@ -124,7 +124,10 @@ export const defaultSettings: AnalysisSettings = {
   meanRange: [0.1, 0.9],
 }
 
-export const emptyStudy = (id: string, name = 'Untitled study'): StudyDocument => ({
+/** A study that nobody has named is named after the first runs it gets. */
+export const untitled = 'Untitled study'
+
+export const emptyStudy = (id: string, name = untitled): StudyDocument => ({
   format: 'rampfold.study/1',
   id,
   name,

@@ -160,8 +160,8 @@ describe('place of a run', () => {
     expect(runPlaces([{ programmeGroup: 4 }])).toEqual([0])
   })
 
-  it('names a run by its heating rate, and by its label too where the rate repeats', () => {
-    expect(runNames(runs)).toEqual(['2 K/min', '5 K/min', '10 K/min, sample 2', '10 K/min, sample 3', '20 K/min'])
+  it('names a run by its heating rate, and numbers replicates', () => {
+    expect(runNames(runs)).toEqual(['2 K/min', '5 K/min', '10 K/min (1)', '10 K/min (2)', '20 K/min'])
     expect(runNames([runOf(0, { programme: 'isothermal', heatingRate_K_per_min: null, holdTemperature_K: 393.15 })])).toEqual(['120.0 °C'])
     expect(runNames([runOf(0, { programme: 'general', heatingRate_K_per_min: null })])).toEqual(['sample 0'])
   })

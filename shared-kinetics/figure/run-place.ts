@@ -14,13 +14,14 @@ export function runTones(result: Pick<StudyResult, 'runs'>): readonly Extract<To
   return runPlaces(result.runs).map((place, index) => ({ kind: 'run', place, index }))
 }
 
-/** What a legend calls each run: its programme, and its label too where programmes repeat or have no single number. */
+/** What a legend calls each run: its programme, numbered where replicates follow it; its label where the programme has no single number. */
 export function runNames(runs: readonly RunResult[]): readonly string[] {
-  const programmes = runs.map(programmeText)
   return runs.map((run, i) => {
-    const programme = programmes[i] ?? ''
+    const programme = programmeText(run)
     if (programme === '') return run.label
-    return programmes.filter((other) => other === programme).length > 1 ? `${programme}, ${run.label}` : programme
+    const isReplicate = (other: RunResult): boolean => other.programmeGroup === run.programmeGroup
+    if (runs.filter(isReplicate).length === 1) return programme
+    return `${programme} (${runs.slice(0, i).filter(isReplicate).length + 1})`
   })
 }
 
