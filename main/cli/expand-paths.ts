@@ -1,5 +1,6 @@
 import { readdir, readFile, stat } from 'node:fs/promises'
 import { basename, join, resolve } from 'node:path'
+import { exportsAmong, exportSuffixWords } from '../../shared-kinetics/contract/export-names.ts'
 import { largestUploadBytes } from '../../shared-kinetics/contract/host-api.ts'
 import { InputError } from './cli-io.ts'
 
@@ -10,11 +11,6 @@ export interface InputFile {
   readonly fileName: string
   readonly bytes: Uint8Array<ArrayBuffer>
 }
-
-const exportSuffixes = /\.(csv|tsv|txt|dat|asc)$/i
-/** Texts that lie beside exports, and what this program itself has written there. */
-const notExports = /^(readme|licen[cs]e|notice|copying|changelog)\b|^activation\.(csv|csv\.txt|json|svg)$/i
-const natural = new Intl.Collator('en', { numeric: true })
 
 /**
  * The files that paths stand for: a file is itself, a folder the exports in it in natural order (2 before 10), sub-folders left out. A file that is
@@ -43,15 +39,10 @@ async function filesOf(path: string, alsoSuffixes: RegExp): Promise<readonly str
   const entries = await readdir(path, { withFileTypes: true }).catch((error: unknown) => {
     throw cannotRead(path, error)
   })
-  const names = entries
-    .filter((inside) => !inside.isDirectory() && !inside.name.startsWith('.') && !notExports.test(inside.name))
-    .map((inside) => inside.name)
-    .filter((name) => exportSuffixes.test(name) || alsoSuffixes.test(name))
-    .toSorted((a, b) => natural.compare(a, b))
+  const files = entries.filter((inside) => !inside.isDirectory()).map((inside) => inside.name)
+  const names = exportsAmong(files, alsoSuffixes)
   if (names.length === 0) {
-    throw new InputError(
-      `${path}: there are no exports in this folder. Name a folder that holds .csv, .tsv, .txt, .dat or .asc files, or name the files.`,
-    )
+    throw new InputError(`${path}: there are no exports in this folder. Name a folder that holds ${exportSuffixWords}, or name the files.`)
   }
   return names.map((name) => join(path, name))
 }

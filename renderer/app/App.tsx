@@ -1,6 +1,8 @@
 import { useCallback, useEffect, useMemo, useState } from 'react'
 import { Button } from 'react-aria-components'
+import { exportSuffixWords } from '../../shared-kinetics/contract/export-names.ts'
 import { ColoursContext, useServices, useStudy, useView } from '../state/services.ts'
+import type { Dropped } from './dropped-files.ts'
 import { createSheetActions } from './sheet-actions.ts'
 import { Sheet } from './Sheet.tsx'
 import { storeTheme, usePaper } from './theme.ts'
@@ -18,7 +20,15 @@ export function App() {
   const { paper, colours } = usePaper(theme)
   const importFiles = useCallback((files: readonly File[]) => void session.importFiles(files), [session])
   const actions = useMemo(() => createSheetActions(services, () => fileInput?.click()), [services, fileInput])
-  const filesHangOver = useFileDrop(importFiles)
+  const takeDrop = useCallback(
+    ({ files, emptyFolders }: Dropped) => {
+      if (files.length > 0) importFiles(files)
+      else if (emptyFolders.length > 0)
+        session.say('failure', `There are no exports in ${emptyFolders.join(', ')}: a folder is asked to hold ${exportSuffixWords}.`)
+    },
+    [importFiles, session],
+  )
+  const filesHangOver = useFileDrop(takeDrop)
   useShortcuts(actions)
 
   useEffect(() => view.subscribe((now, before) => now.theme !== before.theme && storeTheme(now.theme)), [view])

@@ -1,7 +1,8 @@
 import { useEffect, useState } from 'react'
+import { droppedFiles, type Dropped } from './dropped-files.ts'
 
-/** Whether files hang over the window, and what to do with those that are dropped: anywhere counts. */
-export function useFileDrop(onFiles: (files: readonly File[]) => void): boolean {
+/** Whether files hang over the window, and what to do with those that are dropped: anywhere counts, and a folder stands for its files. */
+export function useFileDrop(onDropped: (dropped: Dropped) => void): boolean {
   const [over, setOver] = useState(false)
   useEffect(() => {
     // Entering a child leaves its parent, so the depth tells when the window itself is left.
@@ -26,8 +27,7 @@ export function useFileDrop(onFiles: (files: readonly File[]) => void): boolean 
       event.preventDefault()
       depth = 0
       setOver(false)
-      const files = Array.from(event.dataTransfer?.files ?? [])
-      if (files.length > 0) onFiles(files)
+      if (event.dataTransfer !== null) void droppedFiles(event.dataTransfer).then(onDropped)
     }
     window.addEventListener('dragenter', onEnter)
     window.addEventListener('dragover', onOver)
@@ -39,6 +39,6 @@ export function useFileDrop(onFiles: (files: readonly File[]) => void): boolean 
       window.removeEventListener('dragleave', onLeave)
       window.removeEventListener('drop', onDrop)
     }
-  }, [onFiles])
+  }, [onDropped])
   return over
 }
