@@ -74,6 +74,23 @@ describe('local polynomial', () => {
     expect(two.slope).toBeCloseTo(2, 12)
   })
 
+  it('of many rows is that of few, without taking longer for each', () => {
+    // Steps that differ by a factor of ten, and a gap.
+    let at = -4
+    const x = Float64Array.from({ length: 400_000 }, (_, i) => (at += i === 250_000 ? 0.2 : i % 10 === 0 ? 1e-4 : 1e-5))
+    const y = x.map((t) => 3 + Math.exp(-(t * t)))
+    const options = { halfWidth: 0.4, degree: 3 } as const
+    const before = performance.now()
+    const { value, slope } = localPolynomial(x, y, options)
+    // Some 15,000 rows lie within each half-width: row by row that takes a minute.
+    expect(performance.now() - before).toBeLessThan(5000)
+    for (let i = 0; i < x.length; i += 4999) {
+      const fit = localPolynomialAt(x, y, x[i] as number, options)
+      expect(Math.abs((value[i] as number) - fit.value)).toBeLessThan(2e-5)
+      expect(Math.abs((slope[i] as number) - fit.slope)).toBeLessThan(5e-5)
+    }
+  })
+
   it('does not lose the digits of a small change on a large offset', () => {
     const x = Float64Array.from({ length: 50 }, (_, i) => i * 0.1)
     const { slope } = localPolynomial(

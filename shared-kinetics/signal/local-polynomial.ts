@@ -1,3 +1,5 @@
+import { lowerBound } from './lower-bound.ts'
+
 export interface LocalPolynomialOptions {
   /** Points farther away than this, in units of x, carry no weight. */
   readonly halfWidth: number
@@ -13,9 +15,16 @@ export interface LocalFit {
   readonly slope: number
 }
 
+/** With more rows than this within the half-width, means over cells stand for the rows: five or more then fall into a cell. */
+const manyRows = 200
+/** Cells and nodes of a half-width: on a bell-shaped curve the value is off by some 1e-5 of the top, the slope by some 1e-5 of the steepest one, at most. */
+const cellsPerHalfWidth = 40
+const nodesPerHalfWidth = 12
+
 /**
  * Value and slope of a curve at every x, by weighted regression of a polynomial on the neighbours (tricube weights). x ascends strictly and need not be evenly
- * spaced: nothing is resampled. 20,000 points with 150 neighbours each take about 0.2 s, so that the special case of even spacing has no path of its own.
+ * spaced: nothing is resampled. Time grows with the number of rows alone: where more than 200 rows lie within the half-width, the regression runs over means of
+ * cells (weighted by the rows in them) at nodes a twelfth of the half-width apart, and a cubic through four nodes gives value and slope between them.
  *
  * @source cleveland-1979; for even spacing and equal weights savitzky-golay-1964
  */
@@ -24,15 +33,13 @@ export function localPolynomial(
   y: Float64Array,
   options: LocalPolynomialOptions,
 ): { readonly value: Float64Array; readonly slope: Float64Array } {
-  const n = x.length
-  const value = new Float64Array(n)
-  const slope = new Float64Array(n)
-  const neighbours = neighbourhood(x, options)
-  const sums = new Float64Array(11)
-  for (let i = 0; i < n; i++) {
-    const at = x[i] ?? Number.NaN
-    neighbours.moveTo(at)
-    const fit = fitAround(x, y, at, neighbours.first, neighbours.last, neighbours.width, options.degree, sums)
+  const rowsInHalfWidth = (options.halfWidth * (x.length - 1)) / ((x.at(-1) ?? 0) - (x[0] ?? 0))
+  if (rowsInHalfWidth > manyRows) return throughNodes(x, y, options)
+  const value = new Float64Array(x.length)
+  const slope = new Float64Array(x.length)
+  const fitAt = localFit({ x, y, weight: null }, options)
+  for (let i = 0; i < x.length; i++) {
+    const fit = fitAt(x[i] ?? Number.NaN)
     value[i] = fit.value
     slope[i] = fit.slope
   }
@@ -40,20 +47,87 @@ export function localPolynomial(
 }
 
 /** The same at one place, which need not be one of the x. */
-export function localPolynomialAt(x: Float64Array, y: Float64Array, at: number, options: LocalPolynomialOptions): LocalFit {
-  const neighbours = neighbourhood(x, options)
-  neighbours.moveTo(at)
-  return fitAround(x, y, at, neighbours.first, neighbours.last, neighbours.width, options.degree, new Float64Array(11))
+export const localPolynomialAt = (x: Float64Array, y: Float64Array, at: number, options: LocalPolynomialOptions): LocalFit =>
+  localFit({ x, y, weight: null }, options)(at)
+
+function throughNodes(x: Float64Array, y: Float64Array, options: LocalPolynomialOptions): { value: Float64Array; slope: Float64Array } {
+  const n = x.length
+  const start = x[0] ?? Number.NaN
+  const span = (x[n - 1] ?? Number.NaN) - start
+  const lastNode = Math.max(3, Math.ceil((span * nodesPerHalfWidth) / options.halfWidth))
+  const step = span / lastNode
+  const fitAt = localFit(meansOfCells(x, y, options.halfWidth / cellsPerHalfWidth), options)
+  const value = new Float64Array(n)
+  const slope = new Float64Array(n)
+  // The four nodes around the row, moved along with it; nodes that no row needs, as in a gap, are never fitted.
+  let firstNode = 0
+  let nodes: LocalFit[] = []
+  for (let i = 0; i < n; i++) {
+    const place = ((x[i] ?? Number.NaN) - start) / step
+    const first = Math.min(lastNode - 3, Math.max(0, Math.floor(place) - 1))
+    if (first !== firstNode || nodes.length === 0) {
+      nodes = [0, 1, 2, 3].map((k) => nodes[k + first - firstNode] ?? fitAt(start + (first + k) * step))
+      firstNode = first
+    }
+    const u = place - first
+    const [a, b, c, d] = nodes as [LocalFit, LocalFit, LocalFit, LocalFit]
+    const wa = (-(u - 1) * (u - 2) * (u - 3)) / 6
+    const wb = (u * (u - 2) * (u - 3)) / 2
+    const wc = (-u * (u - 1) * (u - 3)) / 2
+    const wd = (u * (u - 1) * (u - 2)) / 6
+    value[i] = wa * a.value + wb * b.value + wc * c.value + wd * d.value
+    slope[i] = wa * a.slope + wb * b.slope + wc * c.slope + wd * d.slope
+  }
+  return { value, slope }
 }
 
-/** The rows that carry weight, moved along x; their bounds only ever grow when places are visited in ascending order. */
-function neighbourhood(x: Float64Array, options: LocalPolynomialOptions) {
+/** Samples, each standing for as many rows as its weight says; null: for one. */
+interface Samples {
+  readonly x: Float64Array
+  readonly y: Float64Array
+  readonly weight: Float64Array | null
+}
+
+/** Mean x and y of the rows in cells no wider than `width`, each cell beginning at a row. */
+function meansOfCells(x: Float64Array, y: Float64Array, width: number): Samples {
+  const n = x.length
+  const meanX = new Float64Array(n)
+  const meanY = new Float64Array(n)
+  const weight = new Float64Array(n)
+  let cells = 0
+  for (let i = 0; i < n; cells++) {
+    const from = i
+    const x0 = x[i] ?? Number.NaN
+    const y0 = y[i] ?? Number.NaN
+    let sumX = 0
+    let sumY = 0
+    do {
+      sumX += (x[i] ?? Number.NaN) - x0
+      sumY += (y[i] ?? Number.NaN) - y0
+      i++
+    } while (i < n && (x[i] ?? Number.NaN) < x0 + width)
+    meanX[cells] = x0 + sumX / (i - from)
+    meanY[cells] = y0 + sumY / (i - from)
+    weight[cells] = i - from
+  }
+  return { x: meanX.subarray(0, cells), y: meanY.subarray(0, cells), weight: weight.subarray(0, cells) }
+}
+
+/** The fit at any place. Its neighbours are found from those of the place before where places ascend, else by bisection. */
+function localFit(samples: Samples, options: LocalPolynomialOptions): (at: number) => LocalFit {
+  const { x } = samples
   const n = x.length
   const fewest = Math.min(n, options.minimumPoints ?? 2 * options.degree + 3)
-  const state = { first: 0, last: -1, width: options.halfWidth, moveTo }
-  let from = 0
-  let to = 0
-  function moveTo(at: number): void {
+  const room = scratch()
+  let from = -1
+  let to = -1
+  let latest = Infinity
+  return (at) => {
+    if (at < latest) {
+      from = lowerBound(x, at - options.halfWidth)
+      to = lowerBound(x, at + options.halfWidth)
+    }
+    latest = at
     while (from < n && (x[from] ?? 0) <= at - options.halfWidth) from++
     while (to < n && (x[to] ?? 0) < at + options.halfWidth) to++
     let first = from
@@ -69,23 +143,19 @@ function neighbourhood(x: Float64Array, options: LocalPolynomialOptions) {
       // A little beyond the farthest point, whose weight would otherwise be nothing.
       width = 1.1 * Math.max(at - (x[first] ?? at), (x[last] ?? at) - at)
     }
-    state.first = first
-    state.last = last
-    state.width = width > 0 ? width : 1
+    return fitAround(samples, at, { first, last }, width > 0 ? width : 1, options.degree, room)
   }
-  return state
 }
 
 function fitAround(
-  x: Float64Array,
-  y: Float64Array,
+  { x, y, weight }: Samples,
   at: number,
-  first: number,
-  last: number,
+  { first, last }: { readonly first: number; readonly last: number },
   width: number,
   degree: 1 | 2 | 3,
-  sums: Float64Array,
+  room: Scratch,
 ): LocalFit {
+  const { sums } = room
   let s0 = 0
   let s1 = 0
   let s2 = 0
@@ -104,7 +174,7 @@ function fitAround(
     const distance = Math.abs(u)
     if (distance >= 1) continue
     const falling = 1 - distance * distance * distance
-    const w = falling * falling * falling
+    const w = falling * falling * falling * (weight === null ? 1 : (weight[j] ?? Number.NaN))
     const v = w * ((y[j] ?? Number.NaN) - offset)
     const wu = w * u
     const wu2 = wu * u
@@ -121,16 +191,38 @@ function fitAround(
     t2 += v * u * u
     t3 += v * u * u * u
   }
-  sums.set([s0, s1, s2, s3, s4, s5, s6, t0, t1, t2, t3])
-  const [value, slope] = solveMoments(sums, degree)
-  return { value: offset + value, slope: slope / width }
+  sums[0] = s0
+  sums[1] = s1
+  sums[2] = s2
+  sums[3] = s3
+  sums[4] = s4
+  sums[5] = s5
+  sums[6] = s6
+  sums[7] = t0
+  sums[8] = t1
+  sums[9] = t2
+  sums[10] = t3
+  const found = solveMoments(room, degree)
+  return {
+    value: found > 0 ? offset + (room.coefficients[0] ?? Number.NaN) : Number.NaN,
+    slope: found > 1 ? (room.coefficients[1] ?? Number.NaN) / width : Number.NaN,
+  }
 }
 
-/** First two coefficients of the weighted polynomial, by Cholesky on the moments; the degree is lowered where the points do not carry it. */
-function solveMoments(sums: Float64Array, degree: number): readonly [number, number] {
+/** Room for one regression, kept from place to place: a run asks for thousands. */
+interface Scratch {
+  /** Moments 0 to 6 of the weights, then the four of y. */
+  readonly sums: Float64Array
+  readonly factor: Float64Array
+  /** After `solveMoments`: the coefficients of the polynomial. */
+  readonly coefficients: Float64Array
+}
+
+const scratch = (): Scratch => ({ sums: new Float64Array(11), factor: new Float64Array(16), coefficients: new Float64Array(4) })
+
+/** The coefficients of the weighted polynomial, by Cholesky on the moments; the degree is lowered where the points do not carry it. Returns how many there are. */
+function solveMoments({ sums, factor: l, coefficients: c }: Scratch, degree: number): number {
   for (let size = degree + 1; size >= 1; size--) {
-    const l = new Float64Array(size * size)
-    const c = new Float64Array(size)
     let carried = true
     for (let i = 0; i < size && carried; i++) {
       for (let j = 0; j <= i; j++) {
@@ -154,7 +246,7 @@ function solveMoments(sums: Float64Array, degree: number): readonly [number, num
       for (let k = i + 1; k < size; k++) rest -= (l[k * size + i] ?? 0) * (c[k] ?? 0)
       c[i] = rest / (l[i * size + i] ?? Number.NaN)
     }
-    return [c[0] ?? Number.NaN, size > 1 ? (c[1] ?? Number.NaN) : Number.NaN]
+    return size
   }
-  return [Number.NaN, Number.NaN]
+  return 0
 }
