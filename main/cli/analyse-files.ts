@@ -1,16 +1,12 @@
-import { uploadChunkBytes, type FileOut, type RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
+import { createHash } from 'node:crypto'
+import { uploadChunkBytes, type FileOut, type RefusedFile, type TableStyle } from '../../shared-kinetics/contract/host-api.ts'
 import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../shared-kinetics/errors.ts'
-import type { Finding } from '../../shared-kinetics/review/finding.ts'
 import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
-import type { TableStyle } from '../export/csv-table.ts'
-import { exportResults } from '../export/export-results.ts'
 import { createHost, type Host } from '../host/create-host.ts'
-import type { TaskTable } from '../host/host-tasks.ts'
 import { createInProcessPool } from '../host/in-process-pool.ts'
-import { programParts } from '../host/program-parts.ts'
 import { createTaskTable } from '../host/task-table.ts'
 import { InputError, UsageError, type CliIo } from './cli-io.ts'
 import type { InputFile } from './expand-paths.ts'
@@ -39,16 +35,10 @@ export interface Analysis {
  * @throws InputError for a file or run that cannot be used (unless those are to be skipped), UsageError where heating rates do not fit the runs
  */
 export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: ProgressLine): Promise<Analysis> {
-  const readOrder = new Map<string, readonly string[]>()
-  const leftOut: Finding[] = []
+  const files = bySha256(order.files)
   const host = createHost({
     dataFolder: null,
-    pool: createInProcessPool(rememberingOrder(createTaskTable(order.importOptions), readOrder)),
-    parts: {
-      ...programParts,
-      exportResults: (source, format) =>
-        exportResults({ ...source, result: withFindings(source.result, leftOut) }, format, order.tableStyle),
-    },
+    pool: createInProcessPool(createTaskTable(order.importOptions)),
     version: io.version,
     shell: 'command-line',
     warn: (message) => io.stderr(`${message}\n`),
@@ -58,19 +48,20 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
       progress.show(`${event.work === 'import' ? 'Reading' : 'Working out'} ${event.done} of ${event.total}: ${event.what}`)
   })
   try {
-    const refused = await importAll(host, order.files)
+    const refused = await importAll(host, order.files, order.skipUnusable)
     if (refused.length > 0 && !order.skipUnusable) throw new InputError(refusedText(refused, order.files))
-    leftOut.push(...refused.map((file) => leftOutFinding(file, order.files)))
     const { document: read } = await host.call('study.read', {})
     if (read.runs.length === 0) throw new InputError(`None of the files can be used. ${refusedText(refused, order.files)}`)
-    const rates = ratesByRun(order.heatingRates_K_per_s, order.files, read, readOrder)
+    const rates = ratesByRun(order.heatingRates_K_per_s, files, read)
     for (const change of [{ kind: 'rename-study', name: order.studyName } as const, ...rates, ...order.changes]) await applied(host, change)
     const { revision, document } = await host.call('study.read', {})
     const { result } = await host.call('study.evaluate', { revision })
-    if (!order.skipUnusable) refuseUnusableRuns(document, result)
-    const files: FileOut[] = []
-    for (const format of ['json', 'csv', 'svg'] as const) files.push(...(await host.call('results.export', { revision, format })).files)
-    return { document, result: withFindings(result, leftOut), files }
+    if (!order.skipUnusable) refuseUnusableRuns(files, document, result)
+    const out: FileOut[] = []
+    for (const format of ['json', 'csv', 'svg'] as const) {
+      out.push(...(await host.call('results.export', { revision, format, tableStyle: order.tableStyle })).files)
+    }
+    return { document, result, files: out }
   } catch (error) {
     throw error instanceof KineticsError ? new InputError(error.message) : error
   } finally {
@@ -80,24 +71,7 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
   }
 }
 
-/** Runs may be sorted once they are in the study; heating rates are named in the order in which they were read. */
-function rememberingOrder(tasks: TaskTable, readOrder: Map<string, readonly string[]>): TaskTable {
-  return {
-    ...tasks,
-    'import-file': async (input, context) => {
-      const answer = await tasks['import-file'](input, context)
-      const sha256 = answer.kind === 'runs' ? answer.runs[0]?.info.file.sha256 : undefined
-      if (answer.kind === 'runs' && sha256 !== undefined)
-        readOrder.set(
-          `${input.fileName}\n${sha256}`,
-          answer.runs.map((run) => run.info.id),
-        )
-      return answer
-    },
-  }
-}
-
-async function importAll(host: Host, files: readonly InputFile[]): Promise<readonly RefusedFile[]> {
+async function importAll(host: Host, files: readonly InputFile[], noteLeftOut: boolean): Promise<readonly RefusedFile[]> {
   const uploadIds: string[] = []
   for (const { fileName, bytes } of files) {
     const { uploadId } = await host.call('upload.begin', { fileName, byteLength: bytes.byteLength })
@@ -106,7 +80,7 @@ async function importAll(host: Host, files: readonly InputFile[]): Promise<reado
       await host.call('upload.append', { uploadId, bytes: bytes.subarray(at, at + uploadChunkBytes) })
     }
   }
-  return (await host.call('runs.import', { uploadIds })).refused
+  return (await host.call('runs.import', { uploadIds, noteLeftOut })).refused
 }
 
 async function applied(host: Host, change: StudyChange): Promise<void> {
@@ -114,64 +88,48 @@ async function applied(host: Host, change: StudyChange): Promise<void> {
   await host.call('study.change', { revision, change })
 }
 
-function ratesByRun(
-  rates: readonly number[] | null,
-  files: readonly InputFile[],
-  document: StudyDocument,
-  readOrder: ReadonlyMap<string, readonly string[]>,
-): readonly StudyChange[] {
+/** Heating rates are named in the order of the files and of the runs in each; the study has its runs in order of heating rate. */
+function ratesByRun(rates: readonly number[] | null, files: FilesBySha256, document: StudyDocument): readonly StudyChange[] {
   if (rates === null) return []
-  const place = (fileName: string): number => files.findIndex((file) => file.fileName === fileName)
-  const ordered = [...readOrder]
-    .toSorted(([a], [b]) => place(a.split('\n')[0] ?? '') - place(b.split('\n')[0] ?? ''))
-    .flatMap(([, ids]) => ids)
-  const runIds = ordered.filter((id) => document.runs.some((run) => run.id === id))
-  if (runIds.length !== rates.length) {
-    const labels = runIds.map((id) => document.runs.find((run) => run.id === id)?.label ?? id)
-    throw new UsageError(`--heating-rates names ${rates.length}, but there are ${runIds.length} runs: ${labels.join(', ')}.`)
+  const runs = [...files.keys()].flatMap((sha256) =>
+    document.runs.filter((run) => run.file.sha256 === sha256).toSorted((one, other) => byNumber.compare(one.id, other.id)),
+  )
+  if (runs.length !== rates.length) {
+    throw new UsageError(
+      `--heating-rates names ${rates.length}, but there are ${runs.length} runs: ${runs.map((run) => run.label).join(', ')}.`,
+    )
   }
-  return runIds.map((runId, i) => ({ kind: 'set-run-heating-rate', runId, heatingRate_K_per_s: rates[i] ?? null }))
+  return runs.map((run, i) => ({ kind: 'set-run-heating-rate', runId: run.id, heatingRate_K_per_s: rates[i] ?? null }))
 }
 
-const withFindings = (result: StudyResult, more: readonly Finding[]): StudyResult => ({
-  ...result,
-  findings: [...result.findings, ...more],
-})
+/** Names repeat from folder to folder; contents tell files apart, since the same one is never taken twice. */
+type FilesBySha256 = ReadonlyMap<string, InputFile>
 
-function leftOutFinding(file: RefusedFile, files: readonly InputFile[]): Finding {
-  return {
-    code: 'file-left-out',
-    severity: 'caution',
-    stage: 'runs',
-    title: `${file.fileName} was left out`,
-    message: refusedText([file], files),
-    run: null,
-    level: null,
-    evidence: { file: file.fileName, line: file.line },
-    basis: 'Asked for: unusable files are skipped.',
-    sources: [],
-  }
-}
+const bySha256 = (files: readonly InputFile[]): FilesBySha256 =>
+  new Map(files.map((file) => [createHash('sha256').update(file.bytes).digest('hex'), file]))
 
-/** Every file that cannot be used, with line, reason and remedy. */
+/** A run's id ends in its number in the file. */
+const byNumber = new Intl.Collator('en', { numeric: true })
+
+/** Every file that cannot be used, with path, line, reason and remedy. */
 export function refusedText(refused: readonly RefusedFile[], files: readonly InputFile[]): string {
   const lines = refused.map(({ fileName, line, reason, remedy }) => {
-    const named = files.filter((file) => file.fileName === fileName)
-    const path = named.length === 1 ? (named[0]?.path ?? fileName) : fileName
+    const paths = files.filter((file) => file.fileName === fileName).map((file) => file.path)
+    const path = paths.length === 0 ? fileName : paths.join(' or ')
     return `${path}${line === null ? '' : `, line ${line}`}: ${sentence(reason)} ${sentence(remedy)}`
   })
   return lines.join('\n')
 }
 
-function refuseUnusableRuns(document: StudyDocument, result: StudyResult): void {
+function refuseUnusableRuns(files: FilesBySha256, document: StudyDocument, result: StudyResult): void {
   const unusable = result.findings.filter((finding) => finding.code === 'run-unusable')
   if (unusable.length === 0) return
   const lines = unusable.map((finding) => {
     const run = document.runs.find((candidate) => candidate.id === finding.run)
-    // Most messages name the run themselves; its file is what a person has to look for.
-    const name = run === undefined ? '' : `${run.file.name}: `
-    // Here nothing was left out: the whole call is refused.
-    return `${name}${sentence(finding.message.replace(/ The run was left out:.*$/s, ''))}`
+    const path = run === undefined ? '' : `${files.get(run.file.sha256)?.path ?? run.file.name}: `
+    // The path stands for the label; and here nothing was left out: the whole call is refused.
+    const reason = finding.message.replace(`${run?.label ?? ''}: `, '').replace(/ The run was left out:.*$/s, '')
+    return `${path}${sentence(reason)}`
   })
   throw new InputError(`${lines.join('\n')}\nOr leave unusable runs out with --skip-unusable.`)
 }

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto'
 import { execFile, spawn, spawnSync } from 'node:child_process'
 import { chmod, cp, mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises'
 import { existsSync } from 'node:fs'
@@ -165,6 +166,8 @@ describe('every call', () => {
   })
 })
 
+const sha256 = (text: string): string => createHash('sha256').update(text).digest('hex')
+
 describe('activation', () => {
   it('writes every file and shows the table, from a folder in natural order', async () => {
     const out = await newFolder('out')
@@ -321,6 +324,37 @@ describe('activation', () => {
     )
     expect(reversed.code).toBe(0)
     expect((await activationFile(out)).profiles).toEqual(json.profiles)
+  })
+
+  it('gives each heating rate to the run it stands for, also where files of two folders have one name', async () => {
+    const [first, second] = [await newFolder('first'), await newFolder('second')]
+    const timeless = demoSeries()
+      .files.slice(0, 3)
+      .map(({ bytes }) =>
+        new TextDecoder()
+          .decode(bytes)
+          .split('\n')
+          .slice(7)
+          .map((row) => row.split(',').slice(1).join(','))
+          .join('\n'),
+      )
+    const paths = [join(second, 'run.csv'), join(first, 'z.csv'), join(first, 'run.csv')]
+    for (const [i, path] of paths.entries()) await writeFile(path, timeless[i] ?? '')
+    const out = await newFolder('out')
+    expect(rampfold('activation', ...paths, '--out', out, '--quiet', '--heating-rates', '2,4,6').code).toBe(0)
+    const rateOf = new Map((await activationFile(out)).runs.map((run) => [run['sha256'], run['heatingRate_K_per_min'] as number]))
+    for (const [i, rate] of [2, 4, 6].entries()) expect(rateOf.get(sha256(timeless[i] ?? ''))).toBeCloseTo(rate, 9)
+  })
+
+  it('names the command for a saved study instead of reading it as an export', async () => {
+    const folder = await newFolder('saved')
+    await writeFile(join(folder, 'copy.rampfold'), 'PK')
+    for (const command of [['inspect'], ['activation', '--out', join(folder, 'out')]]) {
+      const { code, stderr } = rampfold(...command, join(folder, 'copy.rampfold'))
+      expect(code).toBe(1)
+      plain(stderr)
+      expect(stderr).toContain(`rampfold open ${join(folder, 'copy.rampfold')}`)
+    }
   })
 
   it('passes import overrides on', async () => {

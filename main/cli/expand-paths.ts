@@ -2,6 +2,7 @@ import { readdir, readFile, stat } from 'node:fs/promises'
 import { basename, join, resolve } from 'node:path'
 import { exportsAmong, exportSuffixWords } from '../../shared-kinetics/contract/export-names.ts'
 import { largestUploadBytes } from '../../shared-kinetics/contract/host-api.ts'
+import { savedCopySuffix } from '../study/saved-copy.ts'
 import { InputError } from './cli-io.ts'
 
 /** One file that was named, or found in a folder that was named. */
@@ -35,7 +36,11 @@ async function filesOf(path: string, alsoSuffixes: RegExp): Promise<readonly str
   const entry = await stat(path).catch((error: unknown) => {
     throw cannotRead(path, error)
   })
-  if (!entry.isDirectory()) return [path]
+  if (!entry.isDirectory()) {
+    if (isSavedCopy(path) && !alsoSuffixes.test(path))
+      throw new InputError(`${path}: this is a saved study. Open it with: rampfold open ${path}`)
+    return [path]
+  }
   const entries = await readdir(path, { withFileTypes: true }).catch((error: unknown) => {
     throw cannotRead(path, error)
   })
@@ -46,6 +51,8 @@ async function filesOf(path: string, alsoSuffixes: RegExp): Promise<readonly str
   }
   return names.map((name) => join(path, name))
 }
+
+const isSavedCopy = (path: string): boolean => path.toLowerCase().endsWith(savedCopySuffix)
 
 async function bytesOf(path: string): Promise<Uint8Array<ArrayBuffer>> {
   try {

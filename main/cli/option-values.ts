@@ -4,7 +4,8 @@ import type { Window } from '../../shared-kinetics/series/run.ts'
 import { signalQuantities, type SignalQuantity } from '../../shared-kinetics/series/signal-quantity.ts'
 import { baselineKinds, type BaselineKind } from '../../shared-kinetics/tasks/study-input.ts'
 import { parseHeatingRate, parseTemperature, parseTime, type Parsed } from '../../shared-kinetics/units/parse-quantity.ts'
-import { tableStyle, type TableStyle } from '../export/csv-table.ts'
+import type { TableStyle } from '../../shared-kinetics/contract/host-api.ts'
+import { tableStyle } from '../export/csv-table.ts'
 import { UsageError } from './cli-io.ts'
 
 /** Levels as `0.05:0.95:0.05` (first, last, step) or as a list `0.1,0.5,0.9`; ascending. @throws UsageError */

@@ -1,6 +1,7 @@
 import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
 import type { ProfileResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
-import { csvTable, type TableStyle } from './csv-table.ts'
+import type { TableStyle } from '../../shared-kinetics/contract/host-api.ts'
+import { csvTable } from './csv-table.ts'
 
 /** A column of the table of results, with its heading; the copy of the table on a screen has the same. */
 interface ResultColumn {

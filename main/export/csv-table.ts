@@ -1,10 +1,5 @@
+import type { TableStyle } from '../../shared-kinetics/contract/host-api.ts'
 import { KineticsError } from '../../shared-kinetics/errors.ts'
-
-/** How numbers and cells of a table are written. */
-export interface TableStyle {
-  readonly decimal: '.' | ','
-  readonly separator: ',' | ';' | '\t'
-}
 
 export const defaultTableStyle: TableStyle = { decimal: '.', separator: ',' }
 

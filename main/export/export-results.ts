@@ -1,10 +1,10 @@
-import type { FileOut } from '../../shared-kinetics/contract/host-api.ts'
+import type { FileOut, TableStyle } from '../../shared-kinetics/contract/host-api.ts'
 import { activationFigure } from '../../shared-kinetics/figure/activation-figure.ts'
 import type { MethodId } from '../../shared-kinetics/isoconversional/result.ts'
 import { activationCsv } from './activation-csv.ts'
 import { activationJson, type ExportSource } from './activation-json.ts'
 import { activationNotes } from './activation-notes.ts'
-import { defaultTableStyle, type TableStyle } from './csv-table.ts'
+import { defaultTableStyle } from './csv-table.ts'
 import { figureSvg } from './figure-svg.ts'
 
 export type ExportFormat = 'csv' | 'json' | 'svg'

@@ -1,4 +1,4 @@
-import { chmod, mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises'
+import { chmod, mkdir, mkdtemp, readdir, readFile, rm, utimes, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
@@ -20,6 +20,9 @@ describe('writing results', () => {
     const out = join(folder, 'a', 'b')
     await writeFiles(out, [fileOf('one.txt', 'first')])
     await writeFile(join(out, 'mine.txt'), 'keep')
+    const leftover = join(out, '.one.txt.0123456789ab.part')
+    await writeFile(leftover, 'half')
+    await utimes(leftover, 0, 0)
     await writeFiles(out, [fileOf('one.txt', 'second'), fileOf('two.txt', 'new')])
     expect((await readdir(out)).sort()).toEqual(['mine.txt', 'one.txt', 'two.txt'])
     expect(await readFile(join(out, 'one.txt'), 'utf8')).toBe('second')

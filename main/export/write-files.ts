@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto'
-import { mkdir, open, rename, rm, rmdir, stat } from 'node:fs/promises'
+import { mkdir, open, readdir, rename, rm, rmdir, stat } from 'node:fs/promises'
 import { dirname, join, resolve } from 'node:path'
 import type { FileOut } from '../../shared-kinetics/contract/host-api.ts'
 
@@ -10,13 +10,15 @@ export class WriteRefusal extends Error {
 
 /**
  * Writes files into a folder, which is made where it is missing. All are first written whole under passing names and then renamed, so that a reader
- * never finds half a file; when one cannot be written, none is replaced and nothing of ours stays behind. Other files are left alone.
+ * never finds half a file: when one cannot be written, none is replaced. Nothing of ours stays behind, also nothing that an earlier call left when it was
+ * killed. Other files are left alone.
  * @throws WriteRefusal with the path and the reason
  */
 export async function writeFiles(folder: string, files: readonly FileOut[]): Promise<void> {
   const made = await mkdir(folder, { recursive: true }).catch((error: unknown) => {
     throw refusal(folder, error)
   })
+  await removeLeftovers(folder, files)
   const suffix = `.${randomBytes(6).toString('hex')}.part`
   const passing = files.map((file) => join(folder, `.${file.fileName}${suffix}`))
   try {
@@ -27,6 +29,19 @@ export async function writeFiles(folder: string, files: readonly FileOut[]): Pro
     await Promise.all(passing.map(async (path) => rm(path, { force: true }).catch(() => undefined)))
     if (made !== undefined) await removeEmpty(folder, made)
     throw error instanceof WriteRefusal ? error : refusal(folder, error)
+  }
+}
+
+/** What a killed call leaves is older than any call takes; a younger one may belong to a call at work. */
+const leftoverAge_ms = 3_600_000
+
+async function removeLeftovers(folder: string, files: readonly FileOut[]): Promise<void> {
+  const names = await readdir(folder).catch(() => [])
+  const ours = names.filter((name) => /\.[0-9a-f]{12}\.part$/.test(name) && files.some((file) => name.startsWith(`.${file.fileName}.`)))
+  for (const name of ours) {
+    const path = join(folder, name)
+    const found = await stat(path).catch(() => null)
+    if (found !== null && Date.now() - found.mtimeMs > leftoverAge_ms) await rm(path, { force: true }).catch(() => undefined)
   }
 }
 

@@ -6,7 +6,7 @@ import type { HostEvent } from '../../shared-kinetics/contract/host-api.ts'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { openSavedCopy } from '../study/saved-copy.ts'
 import type { Host } from './create-host.ts'
-import { importTexts, rejectionOf, sampleHost, sampleTasks, textBytes, upload } from './host-testing.ts'
+import { importTexts, rejectionOf, sampleHost, sampleTasks, textBytes, upload } from './testing/host-testing.ts'
 import { createInProcessPool } from './in-process-pool.ts'
 
 let folder = ''
@@ -53,7 +53,7 @@ describe('importing files', () => {
     expect(await labels(host)).toEqual(['a', 'b'])
     expect(answer.refused.map((file) => [file.fileName, file.reason])).toEqual([
       ['again.csv', 'This file is in the study already, as a.'],
-      ['c.csv', 'The same file was added twice in one go.'],
+      ['c.csv', 'The same content is among these files twice, and counts once.'],
     ])
   })
 

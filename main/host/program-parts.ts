@@ -3,4 +3,4 @@ import { exportResults } from '../export/export-results.ts'
 import type { ProgramParts } from './handlers/handler-table.ts'
 
 /** The program's own demo series and exports. */
-export const programParts: ProgramParts = { demoSeries, exportResults: (source, format) => exportResults(source, format) }
+export const programParts: ProgramParts = { demoSeries, exportResults }

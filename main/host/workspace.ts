@@ -1,3 +1,4 @@
+import type { ImportNote } from '../../shared-kinetics/series/run.ts'
 import type { StudySnapshot } from '../../shared-kinetics/contract/host-api.ts'
 import { studyChangeSchema, type StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import { emptyStudy, studyLimits, type StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
@@ -20,7 +21,12 @@ export interface Workspace {
    * Adds runs that were read from files as ONE change.
    * @param to - the study that was open when reading began; throws `Cancelled` when another has been opened since
    */
-  addRuns(to: OpenStudy, runs: readonly ImportedRun[], files: ReadonlyMap<string, Uint8Array>): StudySnapshot
+  addRuns(
+    to: OpenStudy,
+    runs: readonly ImportedRun[],
+    files: ReadonlyMap<string, Uint8Array>,
+    importNotes: readonly ImportNote[],
+  ): StudySnapshot
   /** Puts another study in the place of the open one, which is saved and given back. */
   replace(opened: OpenedStudy): Promise<StudySnapshot>
   /** Opens a study of the data folder: itself, or as a copy when another host has it open. */
@@ -88,7 +94,7 @@ export async function createWorkspace({ store, events, randomId, warn }: Workspa
     change: (revision, change) => settled(session.revision, session.change(revision, change)),
     undo: (revision) => settled(session.revision, session.undo(revision)),
     redo: (revision) => settled(session.revision, session.redo(revision)),
-    addRuns: (to, runs, files) => {
+    addRuns: (to, runs, files, importNotes) => {
       if (to !== study) throw new Cancelled()
       if (session.document.runs.length + runs.length > studyLimits.runs) {
         throw new KineticsError('too-large', `A study holds at most ${studyLimits.runs} runs. Start a new study for the rest.`)
@@ -98,7 +104,7 @@ export async function createWorkspace({ store, events, randomId, warn }: Workspa
         const bytes = files.get(info.file.sha256)
         if (bytes !== undefined) study.holdFile(info.file.sha256, bytes)
       }
-      const change = studyChangeSchema.parse({ kind: 'add-runs', runs: runs.map((run) => run.info), importNotes: [] })
+      const change = studyChangeSchema.parse({ kind: 'add-runs', runs: runs.map((run) => run.info), importNotes })
       return settled(session.revision, session.change(session.revision, change))
     },
     replace: async (opened) => inTurn(async () => replace(opened)),

@@ -12,6 +12,9 @@ export const largestUploadBytes = 512 * 2 ** 20
 const id = z.string().check(z.regex(/^[0-9a-zA-Z-]{1,64}$/))
 const bytes = z.instanceof(Uint8Array)
 const nothing = z.strictObject({})
+const tableStyleSchema = z
+  .strictObject({ decimal: z.enum(['.', ',']), separator: z.enum([',', ';', '\t']) })
+  .check(z.refine((style) => style.decimal !== style.separator, 'decimal sign and separator differ'))
 
 /**
  * Every request a page, a desktop window or the command line can make, with the schema its input is parsed by.
@@ -38,13 +41,17 @@ export const requestSchemas = {
     bytes: bytes.check(z.refine((b) => b.byteLength <= uploadChunkBytes, 'a piece of an upload is at most 1 MiB')),
   }),
   'upload.discard': z.strictObject({ uploadId: id }),
-  'runs.import': z.strictObject({ uploadIds: z.array(id).check(z.minLength(1), z.maxLength(500)) }),
+  /** `noteLeftOut`: files that cannot be used are noted in the study, so that its review and every export name them. */
+  'runs.import': z.strictObject({ uploadIds: z.array(id).check(z.minLength(1), z.maxLength(500)), noteLeftOut: z.optional(z.boolean()) }),
   'work.cancel': z.strictObject({ work: z.enum(['import', 'evaluate']) }),
-  'results.export': z.strictObject({ revision: z.int(), format: z.enum(['csv', 'json', 'svg']) }),
+  'results.export': z.strictObject({ revision: z.int(), format: z.enum(['csv', 'json', 'svg']), tableStyle: z.optional(tableStyleSchema) }),
 } as const
 
 export type RequestName = keyof typeof requestSchemas
 export type RequestInput<Name extends RequestName> = DeepReadonly<z.infer<(typeof requestSchemas)[Name]>>
+
+/** How numbers and cells of an exported table are written; point and comma where none is named. */
+export type TableStyle = DeepReadonly<z.infer<typeof tableStyleSchema>>
 
 /** The study as a replica holds it. `revision` counts up by one with every change, undo, redo or opened study. */
 export interface StudySnapshot {

@@ -14,11 +14,11 @@ export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 's
       checkRevision(revision)
       return { revision, result: await evaluation.of(revision) }
     },
-    'results.export': async ({ revision, format }) => {
+    'results.export': async ({ revision, format, tableStyle }) => {
       checkRevision(revision)
       const { document } = workspace.session
       const result = await evaluation.of(revision)
-      return { files: parts.exportResults({ document, result, program: { name: 'rampfold', version } }, format) }
+      return { files: parts.exportResults({ document, result, program: { name: 'rampfold', version } }, format, tableStyle) }
     },
   }
 }

@@ -1,4 +1,4 @@
-import type { FileOut, RequestAnswers, RequestInput, RequestName } from '../../../shared-kinetics/contract/host-api.ts'
+import type { FileOut, TableStyle, RequestAnswers, RequestInput, RequestName } from '../../../shared-kinetics/contract/host-api.ts'
 import type { DemoSeries } from '../../demo/demo-series.ts'
 import type { ExportSource } from '../../export/activation-json.ts'
 import type { ExportFormat } from '../../export/export-results.ts'
@@ -18,7 +18,7 @@ export type Shell = RequestAnswers['program.describe']['shell']
 /** The parts of the program that the host hands work to; the real ones are in `program-parts.ts`. */
 export interface ProgramParts {
   demoSeries(): DemoSeries
-  exportResults(source: ExportSource, format: ExportFormat): readonly FileOut[]
+  exportResults(source: ExportSource, format: ExportFormat, style?: TableStyle): readonly FileOut[]
 }
 
 /** Imports that run now, so that `work.cancel` and a newly opened study can stop them. */

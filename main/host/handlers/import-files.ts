@@ -2,7 +2,7 @@ import { setMaxListeners } from 'node:events'
 import type { ImportAnswer, RefusedFile } from '../../../shared-kinetics/contract/host-api.ts'
 import { runInfoSchema } from '../../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
-import type { RunInfo } from '../../../shared-kinetics/series/run.ts'
+import type { ImportNote, RunInfo } from '../../../shared-kinetics/series/run.ts'
 import { savedCopySuffix } from '../../study/saved-copy.ts'
 import type { ImportedRun } from '../host-tasks.ts'
 import type { UploadedFile } from '../uploads.ts'
@@ -12,9 +12,10 @@ import { inOrderOfHeatingRate } from './in-order-of-heating-rate.ts'
 /**
  * Reads files and adds what is in them: runs as one change, in order of heating rate; a saved study is opened first, in place
  * of the one that was open. Files that cannot be used are listed with the reason, and the rest is still added.
+ * @param noteLeftOut - whether files that cannot be used are noted in the study as well
  * @throws Cancelled when stopped, or when another study was opened meanwhile; then nothing is added
  */
-export async function importFiles(context: HandlerContext, files: readonly UploadedFile[]): Promise<ImportAnswer> {
+export async function importFiles(context: HandlerContext, files: readonly UploadedFile[], noteLeftOut = false): Promise<ImportAnswer> {
   const { workspace } = context
   const stop = new AbortController()
   // One listener a file is meant, and is no leak.
@@ -30,10 +31,12 @@ export async function importFiles(context: HandlerContext, files: readonly Uploa
     const { fresh, repeated } = withoutRepeats(workspace.session.document.runs, read.runs)
     const runs = withFreshIds(workspace.session.document.runs, inOrderOfHeatingRate(fresh), context.randomId)
     const originals = new Map(read.runs.map(({ run, bytes }) => [run.info.file.sha256, bytes]))
-    const snapshot = runs.length === 0 ? workspace.session.snapshot() : workspace.addRuns(study, runs, originals)
+    const refusedFiles = [...partial, ...opened.refused, ...read.refused, ...repeated]
+    const notes = noteLeftOut ? refusedFiles.map(leftOutNote) : []
+    const snapshot = runs.length === 0 ? workspace.session.snapshot() : workspace.addRuns(study, runs, originals, notes)
     return {
       addedRunIds: runs.map((run) => run.info.id),
-      refused: [...partial, ...opened.refused, ...read.refused, ...repeated],
+      refused: refusedFiles,
       openedStudy: opened.openedStudy,
       snapshot,
     }
@@ -136,7 +139,7 @@ function withoutRepeats(
         refused(name, `This file is in the study already, as ${label}.`, 'Remove that run first if the file is to be read again.'),
       )
     } else if (first !== bytes) {
-      repeated.set(name, refused(name, 'The same file was added twice in one go.', 'Nothing need be done: it was added once.'))
+      repeated.set(name, refused(name, 'The same content is among these files twice, and counts once.', 'Leave one of the two out.'))
     } else {
       fresh.push(run)
     }
@@ -152,6 +155,16 @@ function withFreshIds(held: readonly RunInfo[], runs: readonly ImportedRun[], ra
     taken.add(id)
     return { ...run, info: { ...run.info, id } }
   })
+}
+
+function leftOutNote({ fileName, line, reason, remedy }: RefusedFile): ImportNote {
+  const where = line === null ? fileName : `${fileName}, line ${line}`
+  return {
+    code: 'file-left-out',
+    severity: 'caution',
+    message: `${where}: ${reason.replace(/\.?$/, '.')} ${remedy}`,
+    evidence: { file: fileName, line },
+  }
 }
 
 const refused = (fileName: string, reason: string, remedy: string): RefusedFile => ({ fileName, line: null, reason, remedy })

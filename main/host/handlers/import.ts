@@ -4,7 +4,7 @@ import { importFiles } from './import-files.ts'
 /** Uploaded files into runs; and the stop for long work. */
 export function importHandlers(context: HandlerContext): Pick<HandlerTable, 'runs.import' | 'work.cancel'> {
   return {
-    'runs.import': async ({ uploadIds }) => importFiles(context, context.uploads.take(uploadIds)),
+    'runs.import': async ({ uploadIds, noteLeftOut }) => importFiles(context, context.uploads.take(uploadIds), noteLeftOut),
     'work.cancel': ({ work }) => {
       if (work === 'evaluate') context.evaluation.cancel()
       else for (const running of context.imports) running.abort()
