@@ -124,6 +124,22 @@ describe('temperature of the rate peak', () => {
     expect(Math.abs(peakTemperature(curveFromExtent(heated.time, heated.T, noisy)) - exact)).toBeLessThan(0.6)
   })
 
+  it('is found in dense and noisy data, whatever the noise', () => {
+    const dense = sampled(ramp(380, 10, 850), 10_000)
+    for (let seed = 1; seed <= 12; seed++) {
+      const normal = normalNumbers(seed)
+      const peak = peakTemperature(
+        curveFromExtent(
+          dense.time,
+          dense.T,
+          dense.alpha.map((a) => a + 0.01 * normal()),
+        ),
+      )
+      // Noise of 1 % leaves about 1 K in a maximum that is flat over several kelvin.
+      expect(Math.abs(peak - 558.97)).toBeLessThan(5)
+    }
+  })
+
   it('is not to be had where the rate only falls', () => {
     const held = sampled(holdAt(580, 2000))
     expect(peakTemperature(curveFromExtent(held.time, held.T, held.alpha))).toBeNaN()

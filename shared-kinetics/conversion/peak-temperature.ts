@@ -7,8 +7,9 @@ import type { ConversionCurve } from './smooth-curve.ts'
 const aroundMaximum = 0.1
 
 /**
- * Temperature at which dα/dt is largest, between samples: the root of the slope of local cubics through the reaction rate, next to where they are highest. NaN where
- * the rate has no maximum inside the window (it only falls, as in many holds, or only rises).
+ * Temperature at which dα/dt is largest, between samples: the root of the slope of local cubics through the reaction rate, nearest to where they are highest and
+ * within the half-width of the fit. (Of noisy data value and slope are two estimates, whose maximum and root are rows apart.) NaN where the rate has no maximum
+ * inside the window (it only falls, as in many holds, or only rises).
  */
 export function peakTemperature(curve: ConversionCurve): number {
   const { first, last } = curve.reaction
@@ -17,10 +18,25 @@ export function peakTemperature(curve: ConversionCurve): number {
   const options = { halfWidth: Math.max(aroundMaximum * curve.duration_s, curve.smoothing.halfWidth), degree: 3 } as const
   const { value, slope } = localPolynomial(time, rate, options)
   const top = value.reduce((highest, height, i) => (height > (value[highest] ?? 0) ? i : highest), 0)
-  const turnsAfter = (i: number): boolean => (slope[i] ?? 0) > 0 && (slope[i + 1] ?? 0) <= 0
-  const before = [top, top - 1, top + 1, top - 2, top + 2].find(turnsAfter)
-  if (before === undefined) return Number.NaN
+  const before = turnNearest(time, slope, top, options.halfWidth)
+  if (before === null) return Number.NaN
   const slopeAt = (at: number): number => localPolynomialAt(time, rate, at, options).slope
-  const maximum = bracketedRoot(slopeAt, time[before] ?? Number.NaN, time[before + 1] ?? Number.NaN, { relativeTolerance: 1e-12 })
+  // The slopes that told the turn close the bracket: over means of cells they differ from those at one place in the sixth digit.
+  const maximum = bracketedRoot(slopeAt, time[before] ?? Number.NaN, time[before + 1] ?? Number.NaN, {
+    relativeTolerance: 1e-12,
+    fLower: slope[before] ?? Number.NaN,
+    fUpper: slope[before + 1] ?? Number.NaN,
+  })
   return temperatureReader(curve)(maximum.x)
+}
+
+/** The row nearest to `top`, within `reach` of it, after which the slope turns from rising to falling. */
+function turnNearest(time: Float64Array, slope: Float64Array, top: number, reach: number): number | null {
+  const turnsAfter = (i: number): boolean => (slope[i] ?? Number.NaN) > 0 && (slope[i + 1] ?? Number.NaN) <= 0
+  const near = (i: number): boolean => Math.abs((time[i] ?? Number.NaN) - (time[top] ?? Number.NaN)) <= reach
+  for (let away = 0; near(top - away) || near(top + away); away++) {
+    if (near(top - away) && turnsAfter(top - away)) return top - away
+    if (near(top + away) && turnsAfter(top + away)) return top + away
+  }
+  return null
 }
