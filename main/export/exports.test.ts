@@ -9,7 +9,6 @@ import type { ExportSource } from './activation-json.ts'
 import { csvTable, tableStyle } from './csv-table.ts'
 import { exportResults, type ExportFormat } from './export-results.ts'
 import { figureSvg } from './figure-svg.ts'
-import { oklchToHex, runColour } from './print-colours.ts'
 import { shortTable } from './short-table.ts'
 
 const hostile = "=cmd|'/c calc'!A1 <script>&\"é\u0001"
@@ -362,22 +361,6 @@ describe('figures as SVG', () => {
   it('draws a figure without marks as bare axes', () => {
     const bare = figureSvg({ ...figure, marks: [], x: { ...figure.x, min: null, max: null, second: null } })
     expect(bare).not.toMatch(/NaN|undefined|Infinity/)
-  })
-})
-
-describe('print colours', () => {
-  // Known pairs: sRGB red, lime and blue in OKLCH, from CSS Color Module Level 4 (W3C), sample colours of section 9.2 and 10.
-  it('turns OKLCH into sRGB', () => {
-    expect(oklchToHex(0.627955, 0.257683, 29.2339)).toBe('#ff0000')
-    expect(oklchToHex(0.86644, 0.294827, 142.4953)).toBe('#00ff00')
-    expect(oklchToHex(0.452014, 0.313214, 264.052)).toBe('#0000ff')
-    expect(oklchToHex(1, 0, 0)).toBe('#ffffff')
-  })
-
-  it('gives every place on the scale a colour of its own', () => {
-    const colours = [0, 0.25, 0.5, 0.75, 1].map(runColour)
-    expect(new Set(colours).size).toBe(5)
-    expect([runColour(-1), runColour(2)]).toEqual([colours[0], colours[4]])
   })
 })
 

@@ -1,7 +1,7 @@
 import { useCallback, useEffect, useMemo, useRef } from 'react'
 import { TabPanel, Tabs } from 'react-aria-components'
 import type { Finding, Severity } from '../../shared-kinetics/contract/study-result.ts'
-import type { Paper } from '../charts/run-scale.ts'
+import type { Paper } from '../../shared-kinetics/figure/run-scale.ts'
 import { ActivationStage } from '../stages/activation/ActivationStage.tsx'
 import { RunsStage } from '../stages/runs/RunsStage.tsx'
 import type { SheetActions, StageProps } from '../stages/stage-props.ts'

@@ -1,6 +1,6 @@
 import { useMemo, useSyncExternalStore } from 'react'
 import { chartColoursOf, type ChartColours } from '../charts/chart-colours.ts'
-import type { Paper } from '../charts/run-scale.ts'
+import type { Paper } from '../../shared-kinetics/figure/run-scale.ts'
 import type { Theme } from '../state/view-store.ts'
 
 const themeKey = 'rampfold.theme'

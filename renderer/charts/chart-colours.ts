@@ -1,4 +1,4 @@
-import { runColour, type Paper } from './run-scale.ts'
+import { runColour, type Paper } from '../../shared-kinetics/figure/run-scale.ts'
 
 /** What a chart paints with: the sheet's own tokens, and the scale of runs for its paper. */
 export interface ChartColours {

@@ -1,4 +1,4 @@
-import { runColour, type Paper } from '../charts/run-scale.ts'
+import { runColour, type Paper } from '../../shared-kinetics/figure/run-scale.ts'
 
 /** The program's own mark: ramps of five heating rates that fold into one point. */
 export function ProgramMark({ paper }: { readonly paper: Paper }) {

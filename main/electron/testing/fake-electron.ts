@@ -1,4 +1,4 @@
-import type { DesktopBridge } from '../../shared-kinetics/contract/host-api.ts'
+import type { DesktopBridge } from '../../../shared-kinetics/contract/host-api.ts'
 
 /*
  * Stands in for Electron's binary in tests: the parts of its API that this program uses, with the behaviour that the program

@@ -9,7 +9,7 @@ import { build } from 'vite'
  */
 export async function buildForTests(entry: URL): Promise<{ readonly url: URL; readonly path: string; remove(): Promise<void> }> {
   // Inside the checkout, so that packages are found from it.
-  const folder = await mkdtemp(join(import.meta.dirname, '../../node_modules/.rampfold-test-'))
+  const folder = await mkdtemp(join(import.meta.dirname, '../../../node_modules/.rampfold-test-'))
   await build({
     configFile: false,
     logLevel: 'error',

@@ -1,13 +1,13 @@
 import { createHash } from 'node:crypto'
-import type { HostTransport, ImportAnswer } from '../../shared-kinetics/contract/host-api.ts'
-import type { RunColumns, RunInfo } from '../../shared-kinetics/series/run.ts'
-import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
-import { column } from '../../shared-kinetics/units/quantity.ts'
-import { openSavedCopy, packSavedCopy } from '../study/saved-copy.ts'
-import { createHost, type Host, type HostOptions } from './create-host.ts'
-import type { ImportedRun, TaskTable } from './host-tasks.ts'
-import { createInProcessPool } from './in-process-pool.ts'
-import type { ProgramParts } from './handlers/handler-table.ts'
+import type { HostTransport, ImportAnswer } from '../../../shared-kinetics/contract/host-api.ts'
+import type { RunColumns, RunInfo } from '../../../shared-kinetics/series/run.ts'
+import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts'
+import { column } from '../../../shared-kinetics/units/quantity.ts'
+import { openSavedCopy, packSavedCopy } from '../../study/saved-copy.ts'
+import { createHost, type Host, type HostOptions } from '../create-host.ts'
+import type { ImportedRun, TaskTable } from '../host-tasks.ts'
+import { createInProcessPool } from '../in-process-pool.ts'
+import type { ProgramParts } from '../handlers/handler-table.ts'
 
 /* For tests of the host and its shells: runs, tasks and parts that do not depend on the importer and the kinetics. */
 

@@ -1,7 +1,7 @@
 import { parentPort } from 'node:worker_threads'
-import type { ToWorker } from '../../shared-kinetics/contract/task-messages.ts'
-import { KineticsError } from '../../shared-kinetics/errors.ts'
-import { answerTask } from './answer-task.ts'
+import type { ToWorker } from '../../../shared-kinetics/contract/task-messages.ts'
+import { KineticsError } from '../../../shared-kinetics/errors.ts'
+import { answerTask } from '../answer-task.ts'
 import { sampleTasks } from './host-testing.ts'
 
 // For the pool's tests: the real protocol in a real thread, with tasks that do what goes wrong. A file's name says what happens.

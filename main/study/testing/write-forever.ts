@@ -1,4 +1,4 @@
-import { writeAtomically } from './write-atomically.ts'
+import { writeAtomically } from '../write-atomically.ts'
 
 // For a test: a process that rewrites one file until it is killed. Each content is one letter, many times over.
 const path = process.argv[2] ?? ''

@@ -66,6 +66,8 @@ describe('OKLCH to sRGB', () => {
   it.each([
     ['red', 0.62796, 0.25768, 29.234, '#ff0000'],
     ['green', 0.51975, 0.17686, 142.495, '#008000'],
+    ['lime', 0.86644, 0.294827, 142.4953, '#00ff00'],
+    ['blue', 0.452014, 0.313214, 264.052, '#0000ff'],
     ['white', 1, 0, 0, '#ffffff'],
     ['black', 0, 0, 0, '#000000'],
   ])('gives %s of CSS Color 4', (_name, lightness, chroma, hue, hex) => {
