@@ -41,6 +41,9 @@ describe('who may import what is held by lint, type imports included', () => {
     ['main/host/a.ts', type('electron')],
     ['main/cli/a.ts', type('../electron/app.ts')],
     ['main/cli/commands/a.ts', type('../../../renderer/app/app.tsx')],
+    ['main/host/a.ts', type('./testing/host-testing.ts')],
+    ['main/cli/commands/a.ts', type('../../host/testing/host-testing.ts')],
+    ['main/electron/a.ts', type('./testing/fake-electron.ts')],
     ['main/preload/a.ts', type('../host/create-host.ts')],
     ['main/preload/a.ts', type('../../shared-kinetics/tasks/study-result.ts')],
     ['renderer/app/a.tsx', type('../../main/host/create-host.ts')],
@@ -61,6 +64,8 @@ describe('who may import what is held by lint, type imports included', () => {
     ['main/preload/a.ts', type('electron')],
     ['main/preload/a.ts', type('../../shared-kinetics/contract/host-api.ts')],
     ['main/host/a.ts', type('../../shared-kinetics/tasks/evaluate-study.ts')],
+    ['main/host/a.test.ts', type('./testing/host-testing.ts')],
+    ['main/study/testing/a.ts', type('../../host/testing/host-testing.ts')],
     ['renderer/app/a.tsx', type('../../shared-kinetics/figure/figure.ts')],
     ['renderer/charts/a.tsx', type('../../shared-kinetics/figure/figure.ts')],
   ])('%s allows %s', (file, statement) => {

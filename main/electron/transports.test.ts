@@ -14,10 +14,10 @@ import { decodeAnswer } from '../../shared-kinetics/contract/wire-answer.ts'
 import { decodeMessage, encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import type { Host } from '../host/create-host.ts'
-import { importTexts, rejectionOf, sampleHost, sha256, upload } from '../host/host-testing.ts'
+import { importTexts, rejectionOf, sampleHost, sha256, upload } from '../host/testing/host-testing.ts'
 import { startLoopbackServer, type LoopbackServer } from '../host/loopback-server.ts'
 import { openSavedCopy } from '../study/saved-copy.ts'
-import { BrowserWindow as FakeBrowserWindow, fakeElectron } from './fake-electron.ts'
+import { BrowserWindow as FakeBrowserWindow, fakeElectron } from './testing/fake-electron.ts'
 import { openIpcGate } from './ipc.ts'
 
 /** A wire as a page has it: encoded bytes in, encoded bytes out, and events. */

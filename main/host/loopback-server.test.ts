@@ -6,7 +6,7 @@ import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import type { Host } from './create-host.ts'
-import { sampleHost } from './host-testing.ts'
+import { sampleHost } from './testing/host-testing.ts'
 import { startLoopbackServer, type LoopbackServer } from './loopback-server.ts'
 import { readRendererFiles } from './renderer-files.ts'
 

@@ -7,7 +7,7 @@ import { fileURLToPath, pathToFileURL } from 'node:url'
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import { encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import { decodeAnswer } from '../../shared-kinetics/contract/wire-answer.ts'
-import { rejectionOf, sampleTasks, textBytes } from './host-testing.ts'
+import { rejectionOf, sampleTasks, textBytes } from './testing/host-testing.ts'
 import { createInProcessPool } from './in-process-pool.ts'
 import { startBrowserShell, type BrowserShell, type BrowserShellOptions } from './start-browser-shell.ts'
 

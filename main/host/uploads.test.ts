@@ -1,6 +1,6 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { largestUploadBytes } from '../../shared-kinetics/contract/host-api.ts'
-import { textBytes } from './host-testing.ts'
+import { textBytes } from './testing/host-testing.ts'
 import { createUploads, largestUploadsTogetherBytes, mostUploads, uploadPatience_ms, type Uploads } from './uploads.ts'
 
 let uploads: Uploads

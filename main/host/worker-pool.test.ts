@@ -1,8 +1,8 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import { createHash } from 'node:crypto'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
-import { buildForTests } from './build-for-tests.ts'
-import { rejectionOf, textBytes } from './host-testing.ts'
+import { buildForTests } from './testing/build-for-tests.ts'
+import { rejectionOf, textBytes } from './testing/host-testing.ts'
 import type { TaskPool } from './host-tasks.ts'
 import { createWorkerPool } from './worker-pool.ts'
 
@@ -10,7 +10,7 @@ let built: Awaited<ReturnType<typeof buildForTests>>
 let pool: TaskPool
 
 beforeAll(async () => {
-  built = await buildForTests(new URL('./pool-test-worker.ts', import.meta.url))
+  built = await buildForTests(new URL('./testing/pool-test-worker.ts', import.meta.url))
 })
 afterAll(async () => {
   await built.remove()

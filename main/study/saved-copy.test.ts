@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { emptyStudy, type StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../shared-kinetics/errors.ts'
 import { column } from '../../shared-kinetics/units/quantity.ts'
-import { sampleRun, textBytes } from '../host/host-testing.ts'
+import { sampleRun, textBytes } from '../host/testing/host-testing.ts'
 import { encodeColumns } from './columns-file.ts'
 import { openSavedCopy, packSavedCopy, type SavedCopy } from './saved-copy.ts'
 

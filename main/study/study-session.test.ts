@@ -4,7 +4,7 @@ import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts
 import { studyChangeSchema } from '../../shared-kinetics/contract/study-change.ts'
 import { emptyStudy } from '../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../shared-kinetics/errors.ts'
-import { sampleRun } from '../host/host-testing.ts'
+import { sampleRun } from '../host/testing/host-testing.ts'
 import { createStudySession, longestPatchLog } from './study-session.ts'
 
 const runIds = Array.from({ length: 5 }, (_, i) => `run-${i}`)

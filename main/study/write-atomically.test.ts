@@ -4,7 +4,7 @@ import { mkdtemp, readdir, readFile, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { buildForTests } from '../host/build-for-tests.ts'
+import { buildForTests } from '../host/testing/build-for-tests.ts'
 import { writeAtomically } from './write-atomically.ts'
 
 let folder = ''
@@ -12,7 +12,7 @@ let built: Awaited<ReturnType<typeof buildForTests>>
 
 beforeAll(async () => {
   folder = await mkdtemp(join(tmpdir(), 'rampfold-write-'))
-  built = await buildForTests(new URL('./write-forever.ts', import.meta.url))
+  built = await buildForTests(new URL('./testing/write-forever.ts', import.meta.url))
 })
 afterAll(async () => {
   await rm(folder, { recursive: true, force: true })
