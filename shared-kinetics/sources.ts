@@ -9,7 +9,6 @@ export const sources = {
   'starink-2003': 'M. J. Starink, Thermochim. Acta 404 (2003) 163',
   'vyazovkin-dollimore-1996': 'S. Vyazovkin, D. Dollimore, J. Chem. Inf. Comput. Sci. 36 (1996) 42',
   'vyazovkin-1997': 'S. Vyazovkin, J. Comput. Chem. 18 (1997) 393',
-  'vyazovkin-wight-2000': 'S. Vyazovkin, C. A. Wight, Anal. Chem. 72 (2000) 3171',
   'ictac-2011': 'S. Vyazovkin et al., Thermochim. Acta 520 (2011) 1 (recommendations on computations)',
   'ictac-2014': 'S. Vyazovkin et al., Thermochim. Acta 590 (2014) 1 (recommendations on collecting data)',
   'abramowitz-stegun-1964': 'M. Abramowitz, I. A. Stegun, Handbook of Mathematical Functions (1964), ch. 5 and 26',
@@ -22,6 +21,9 @@ export const sources = {
   'gasser-1986': 'T. Gasser, L. Sroka, C. Jennen-Steinmetz, Biometrika 73 (1986) 625 (noise from differences between neighbours)',
   'hemminger-sarge-1991': 'W. F. Hemminger, S. M. Sarge, J. Therm. Anal. 37 (1991) 1455 (baselines under a peak)',
   'vyazovkin-2001': 'S. Vyazovkin, J. Comput. Chem. 22 (2001) 178 (integrals over small steps of conversion)',
+  // Cited from memory, not re-read.
+  'cook-weisberg-1982':
+    'R. D. Cook, S. Weisberg, Residuals and Influence in Regression (1982), ch. 2 (externally studentised residuals, Bonferroni bound)',
 } as const
 
 export type SourceKey = keyof typeof sources

@@ -1,5 +1,11 @@
 import { describe, expect, it } from 'vitest'
-import { gaussLegendre, integrate } from './quadrature.ts'
+import { gaussLegendre, type QuadratureRule } from './quadrature.ts'
+
+/** ∫ f(x) dx over [lower, upper] by one application of the rule. */
+function integrate(f: (x: number) => number, lower: number, upper: number, { nodes, weights }: QuadratureRule): number {
+  const half = 0.5 * (upper - lower)
+  return half * nodes.reduce((sum, node, k) => sum + (weights[k] ?? Number.NaN) * f(0.5 * (upper + lower) + half * node), 0)
+}
 
 describe('a Gauss–Legendre rule', () => {
   // Abramowitz & Stegun (1964), Table 25.4.

@@ -44,14 +44,3 @@ function legendre(n: number, x: number): { readonly value: number; readonly deri
   for (let k = 2; k <= n; k++) [before, value] = [value, ((2 * k - 1) * x * value - (k - 1) * before) / k]
   return { value, derivative: (n * (before - x * value)) / (1 - x * x) }
 }
-
-/** ∫ f(x) dx over [lower, upper] by one application of `rule`. */
-export function integrate(f: (x: number) => number, lower: number, upper: number, rule: QuadratureRule): number {
-  const half = 0.5 * (upper - lower)
-  const middle = 0.5 * (upper + lower)
-  let sum = 0
-  rule.nodes.forEach((node, k) => {
-    sum += (rule.weights[k] ?? Number.NaN) * f(middle + half * node)
-  })
-  return half * sum
-}
