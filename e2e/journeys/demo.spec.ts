@@ -1,10 +1,11 @@
 import { expect, test } from '../pages/program.ts'
 
+const mean = (values: readonly number[]): number => values.reduce((sum, value) => sum + value, 0) / values.length
+
 /** Slope of the least-squares line through the points that a chart of straight lines tells, per 1000/T. */
 function slopeOf(told: string): number {
   const points = [...told.matchAll(/: 1000\/T (\S+) 1\/K, \S+ (-[\d.]+)/g)].map((match) => [Number(match[1]), Number(match[2])] as const)
   expect(points).toHaveLength(5)
-  const mean = (values: readonly number[]): number => values.reduce((sum, value) => sum + value, 0) / values.length
   const [xMean, yMean] = [mean(points.map(([x]) => x)), mean(points.map(([, y]) => y))]
   const sum = (of: (x: number, y: number) => number): number => points.reduce((total, [x, y]) => total + of(x - xMean, y - yMean), 0)
   return sum((x, y) => x * y) / sum((x) => x * x)

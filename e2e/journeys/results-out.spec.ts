@@ -1,5 +1,4 @@
-import { mkdtempSync, writeFileSync } from 'node:fs'
-import { tmpdir } from 'node:os'
+import { writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { demoSeries } from '../../main/demo/demo-series.ts'
 import { csvOfCommandLine } from '../pages/command-line.ts'
@@ -7,8 +6,7 @@ import { expect, test } from '../pages/program.ts'
 
 test.use({ permissions: ['clipboard-read', 'clipboard-write'] })
 
-test('the exported table is what the command line writes for the same runs', async ({ sheet }) => {
-  const folder = mkdtempSync(join(tmpdir(), 'rampfold-demo-'))
+test('the exported table is what the command line writes for the same runs', async ({ sheet, folder }) => {
   const paths = demoSeries().files.map(({ fileName, bytes }) => {
     writeFileSync(join(folder, fileName), bytes)
     return join(folder, fileName)
@@ -37,7 +35,7 @@ test('the copied table pastes into a spreadsheet with units in its headings', as
   expect(Number(row?.[1]).toFixed(1)).toBe(shown)
 })
 
-test('a copy of the study opens again elsewhere with the same numbers', async ({ sheet, page }) => {
+test('a copy of the study opens again elsewhere with the same numbers', async ({ sheet, page, folder }) => {
   await sheet.openDemo()
   await sheet.goTo('Activation energy')
   const before = await sheet.levelTable.allTextContents()
@@ -45,7 +43,7 @@ test('a copy of the study opens again elsewhere with the same numbers', async ({
   await page.keyboard.press('Control+s')
   const copy = await arrived
   expect(copy.suggestedFilename()).toMatch(/\.rampfold$/)
-  const path = join(mkdtempSync(join(tmpdir(), 'rampfold-copy-')), copy.suggestedFilename())
+  const path = join(folder, copy.suggestedFilename())
   await copy.saveAs(path)
 
   await page.getByRole('button', { name: 'Study' }).click()

@@ -42,8 +42,14 @@ const end = async (host: ChildProcess): Promise<void> => {
   await gone
 }
 
-export const test = base.extend<{ program: Program; sheet: Sheet }>({
+export const test = base.extend<{ folder: string; program: Program; sheet: Sheet }>({
   // Playwright reads the fixtures wanted from this pattern, so it stands even where none is.
+  // oxlint-disable-next-line no-empty-pattern
+  folder: async ({}, use) => {
+    const folder = mkdtempSync(join(tmpdir(), 'rampfold-files-'))
+    await use(folder)
+    rmSync(folder, { recursive: true, force: true })
+  },
   // oxlint-disable-next-line no-empty-pattern
   program: async ({}, use) => {
     const dataFolder = mkdtempSync(join(tmpdir(), 'rampfold-journey-'))
