@@ -11,6 +11,7 @@ export interface RunToReview {
   readonly result?: Partial<RunResult>
   readonly heatingRateSpread?: number
   readonly rateAtEnds?: ReviewedRun['rateAtEnds']
+  readonly sampling?: Partial<ReviewedRun['sampling']>
 }
 
 /** A run at a constant heating rate with nothing to remark on. */
@@ -54,6 +55,7 @@ export function reviewedRun(id: string, rate_K_per_min: number, group: number, c
     window: { kind: 'temperature', start_K: 400, end_K: 900 },
     peak_K: 620,
     enthalpy_J_per_g: null,
+    enthalpyMagnitude_J_per_g: null,
     temperatureAtLevel_K: temperature,
     timeAtLevel_s: levels.map((level) => 1000 * level),
     reactionRateAtLevel_per_s: levels.map(() => 0.001),
@@ -68,7 +70,14 @@ export function reviewedRun(id: string, rate_K_per_min: number, group: number, c
     },
     ...change.result,
   }
-  return { info, result, heatingRateSpread: change.heatingRateSpread ?? 0.01, rateAtEnds: change.rateAtEnds ?? { start: 0, end: 0 } }
+  const sampling = { rowsInReaction: 300, gaps: [], withoutNumber: 0, sameTime: 0, behind: 0, behindInReaction: 0, ...change.sampling }
+  return {
+    info,
+    result,
+    heatingRateSpread: change.heatingRateSpread ?? 0.01,
+    rateAtEnds: change.rateAtEnds ?? { start: 0, end: 0 },
+    sampling,
+  }
 }
 
 /** A profile with the given Ea in kJ/mol and half intervals, over the range 0.1 to 0.9. */
@@ -96,6 +105,10 @@ export function profileOf(method: ProfileResult['method'], Ea: readonly Maybe[],
       to: 0.9,
       Ea_kJ_per_mol: numbers.reduce((sum, value) => sum + value, 0) / numbers.length,
       spread_kJ_per_mol: Math.max(...numbers) - Math.min(...numbers),
+      levelsUsed: numbers.length,
+      levelsInRange: Ea.length,
+      firstLevel: 0.1,
+      lastLevel: 0.9,
     },
   }
 }

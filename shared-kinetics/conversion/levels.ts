@@ -8,7 +8,7 @@ import { noiseOf } from '../signal/noise.ts'
 import { column, type Column } from '../units/quantity.ts'
 import { reactionRateAt, type ConversionCurve } from './smooth-curve.ts'
 
-/** Where a run stands at each level; NaN where it does not reach the level inside its window. */
+/** Where a run stands at each level; NaN where it does not reach the level inside its window, or passes it in a gap of its rows. */
 export interface LevelsRead {
   /** On the clock of the run. */
   readonly time_s: Column<'s'>
@@ -50,6 +50,7 @@ function crossing(curve: ConversionCurve, rising: Float64Array, level: number): 
   for (let away = 0; away < n; away++) {
     const i = crosses(about + away) ? about + away : crosses(about - away) ? about - away : -1
     if (i < 0) continue
+    if (curve.gaps.some((gap) => gap.first === i - 1)) return Number.NaN
     const x0 = time_s[i - 1] ?? Number.NaN
     const x1 = time_s[i] ?? Number.NaN
     const y0 = conversion[i - 1] ?? Number.NaN

@@ -9,7 +9,7 @@ const aroundMaximum = 0.1
 /**
  * Temperature at which dα/dt is largest, between samples: the root of the slope of local cubics through the reaction rate, nearest to where they are highest and
  * within the half-width of the fit. (Of noisy data value and slope are two estimates, whose maximum and root are rows apart.) NaN where the rate has no maximum
- * inside the window (it only falls, as in many holds, or only rises).
+ * inside the window (it only falls, as in many holds, or only rises), and where the fit around it would reach across a gap of the rows.
  */
 export function peakTemperature(curve: ConversionCurve): number {
   const { first, last } = curve.reaction
@@ -20,6 +20,10 @@ export function peakTemperature(curve: ConversionCurve): number {
   const top = value.reduce((highest, height, i) => (height > (value[highest] ?? 0) ? i : highest), 0)
   const before = turnNearest(time, slope, top, options.halfWidth)
   if (before === null) return Number.NaN
+  const reaches = (from: number, to: number): boolean =>
+    (curve.time_s[from] ?? 0) < (time[before + 1] ?? 0) + options.halfWidth &&
+    (curve.time_s[to] ?? 0) > (time[before] ?? 0) - options.halfWidth
+  if (curve.gaps.some((gap) => reaches(gap.first, gap.last))) return Number.NaN
   const slopeAt = (at: number): number => localPolynomialAt(time, rate, at, options).slope
   // The slopes that told the turn close the bracket: over means of cells they differ from those at one place in the sixth digit.
   const maximum = bracketedRoot(slopeAt, time[before] ?? Number.NaN, time[before + 1] ?? Number.NaN, {

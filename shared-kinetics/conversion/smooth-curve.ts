@@ -3,6 +3,7 @@ import { localPolynomial, localPolynomialAt, type LocalPolynomialOptions } from 
 import { lowerBound } from '../signal/lower-bound.ts'
 import { correlatedNoiseOf } from '../signal/noise.ts'
 import { smoothingHalfWidth } from '../signal/smoothing-width.ts'
+import { gapsOfTime } from '../series/gap-free-stretch.ts'
 import type { RowRange } from '../series/main-heating.ts'
 import { column, type Column } from '../units/quantity.ts'
 
@@ -24,11 +25,20 @@ export interface ConversionCurve {
   readonly duration_s: number
   /** Rows between conversion 0.02 and 0.98. */
   readonly reaction: RowRange
+  /** Gaps in which a notable part of the reaction passed unseen: the row before each and the row after it. */
+  readonly gaps: readonly RowRange[]
 }
+
+/**
+ * The fewest samples between conversion 0.02 and 0.98 from which levels and rates can be read: with them local cubics shift Ea of exact first-order data by up to
+ * 1 %, with fewer by more.
+ */
+export const fewestRowsInReaction = 15
 
 /** Noise is looked for up to this share of the duration, in which a curve is as good as a cubic. */
 const widestNoiseStride = 0.01
-const fewestPoints = 9
+/** A cubic and two samples more: wider fits are for noise, and `smoothingHalfWidth` sees to that. */
+const fewestPoints = 6
 
 /**
  * Curve from samples of the conversion itself (from mass, or a conversion column): local cubics, whose slope is the reaction rate.
@@ -50,6 +60,7 @@ export function curveFromExtent(time_s: Column<'s'>, temperature_K: Column<'K'>,
     noise,
     duration_s: shape.duration,
     reaction: shape.reaction,
+    gaps: shape.gaps,
   }
 }
 
@@ -79,6 +90,7 @@ export function curveFromRate(
     noise,
     duration_s: shape.duration,
     reaction: shape.reaction,
+    gaps: shape.gaps,
   }
 }
 
@@ -91,6 +103,7 @@ export function reactionRateAt(curve: ConversionCurve, time: number): number {
 interface Shape {
   readonly duration: number
   readonly reaction: RowRange
+  readonly gaps: readonly RowRange[]
   readonly samplesPerDuration: number
   readonly widestStride: number
 }
@@ -103,7 +116,15 @@ function shapeOf(time: Float64Array, conversion: Float64Array): Shape {
   const span = (time[last] ?? 0) - (time[first] ?? 0)
   const duration = Math.min(span, durationAtLargestRate(time, rising))
   const samplesPerDuration = Math.max(1, ((last - first) * duration) / span)
-  return { duration, reaction: { first, last }, samplesPerDuration, widestStride: Math.floor(widestNoiseStride * samplesPerDuration) }
+  // A step that is as large as those of a run with the fewest samples is no worse than there.
+  const rise = (gap: RowRange): number => (rising[gap.last] ?? 0) - (rising[gap.first] ?? 0)
+  return {
+    duration,
+    reaction: { first, last },
+    gaps: gapsOfTime(time, Math.max(0, first - 1), last).filter((gap) => rise(gap) > 0.96 / fewestRowsInReaction),
+    samplesPerDuration,
+    widestStride: Math.floor(widestNoiseStride * samplesPerDuration),
+  }
 }
 
 /** Ten times the shortest time in which conversion rises by a tenth. */

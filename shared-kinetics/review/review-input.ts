@@ -1,4 +1,5 @@
 import type { RateAtEnds } from '../conversion/cut-ends.ts'
+import type { Sampling } from '../conversion/sampling.ts'
 import type { KineticsError } from '../errors.ts'
 import type { MethodId } from '../isoconversional/result.ts'
 import type { RunInfo } from '../series/run.ts'
@@ -12,6 +13,7 @@ export interface ReviewedRun {
   /** Largest distance of the local heating rate from the fitted one, as a share; NaN where there is none. */
   readonly heatingRateSpread: number
   readonly rateAtEnds: RateAtEnds | null
+  readonly sampling: Sampling
 }
 
 /** A method that was left out, and what for. */

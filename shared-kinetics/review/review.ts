@@ -1,16 +1,25 @@
 import { severities, type Finding } from './finding.ts'
 import type { ReviewInput } from './review-input.ts'
+import { energyNotPositive } from './rules/energy-not-positive.ts'
 import { energyVaries } from './rules/energy-varies.ts'
+import { exothermicDirectionUnknown } from './rules/exothermic-direction-unknown.ts'
+import { gapInReaction } from './rules/gap-in-reaction.ts'
 import { heatingRateDiffersFromNominal } from './rules/heating-rate-differs-from-nominal.ts'
 import { heatingRateNotConstant } from './rules/heating-rate-not-constant.ts'
 import { importNotes } from './rules/import-notes.ts'
 import { integralLagsDifferential } from './rules/integral-lags-differential.ts'
 import { intervalWideBecauseFewRuns } from './rules/interval-wide-because-few-runs.ts'
 import { levelNotReached } from './rules/level-not-reached.ts'
+import { levelWithoutEnergy } from './rules/level-without-energy.ts'
 import { methodDoesNotApply } from './rules/method-does-not-apply.ts'
 import { narrowHeatingRateSpread } from './rules/narrow-heating-rate-spread.ts'
 import { orderBroken } from './rules/order-broken.ts'
+import { outlierRun } from './rules/outlier-run.ts'
+import { peaksAtDifferentConversion } from './rules/peaks-at-different-conversion.ts'
+import { rowsSetAside } from './rules/rows-set-aside.ts'
 import { runUnusable } from './rules/run-unusable.ts'
+import { runsDoNotAgree } from './rules/runs-do-not-agree.ts'
+import { samplingCoarse } from './rules/sampling-coarse.ts'
 import { signalChosen } from './rules/signal-chosen.ts'
 import { timeRebuilt } from './rules/time-rebuilt.ts'
 import { tooFewProgrammes } from './rules/too-few-programmes.ts'
@@ -22,15 +31,24 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   narrowHeatingRateSpread,
   heatingRateDiffersFromNominal,
   windowCutsReaction,
+  gapInReaction,
+  samplingCoarse,
   orderBroken,
+  outlierRun,
+  runsDoNotAgree,
   levelNotReached,
+  levelWithoutEnergy,
+  energyNotPositive,
   energyVaries,
+  peaksAtDifferentConversion,
   integralLagsDifferential,
   intervalWideBecauseFewRuns,
   methodDoesNotApply,
   heatingRateNotConstant,
   signalChosen,
   timeRebuilt,
+  exothermicDirectionUnknown,
+  rowsSetAside,
   importNotes,
 ]
 

@@ -1,3 +1,4 @@
+import { median } from '../signal/median.ts'
 import type { RowRange } from './main-heating.ts'
 
 /** A step of time longer than so many usual ones is a gap. */
@@ -6,29 +7,32 @@ const gapInSteps = 10
 const spliceInSteps = 10
 const smallestSplice_K = 3
 
+/** The steps of time from `first` to `last` that are more than ten times as long as the usual (median) one: each as the row before it and the row after it. */
+export function gapsOfTime(time_s: Float64Array, first: number, last: number): RowRange[] {
+  const steps = stepsOf(time_s, first, last)
+  const gap = gapInSteps * median(steps)
+  return Array.from(steps.keys())
+    .filter((i) => (steps[i] ?? 0) > gap)
+    .map((i) => ({ first: first + i, last: first + i + 1 }))
+}
+
 /**
  * The longest stretch of rows, in time, without a gap of time and without a jump of temperature: what a slope of T(t) may be fitted to. Recordings that were put
  * together from pieces have both.
  */
 export function longestGapFreeStretch(time_s: Float64Array, temperature_K: Float64Array, first: number, last: number): RowRange {
-  const timeSteps: number[] = []
-  const temperatureSteps: number[] = []
-  for (let i = first + 1; i <= last; i++) {
-    timeSteps.push((time_s[i] ?? 0) - (time_s[i - 1] ?? 0))
-    temperatureSteps.push(Math.abs((temperature_K[i] ?? 0) - (temperature_K[i - 1] ?? 0)))
-  }
-  const gap = gapInSteps * middle(timeSteps)
-  const splice = Math.max(smallestSplice_K, spliceInSteps * middle(temperatureSteps))
+  const temperatureSteps = stepsOf(temperature_K, first, last).map(Math.abs)
+  const splice = Math.max(smallestSplice_K, spliceInSteps * median(temperatureSteps))
+  const gaps = new Set(gapsOfTime(time_s, first, last).map((gap) => gap.first))
   let best: RowRange = { first, last: first }
   let from = first
   for (let i = first; i <= last; i++) {
-    const next = i - first
-    const broken = i === last || (timeSteps[next] ?? 0) > gap || (temperatureSteps[next] ?? 0) > splice
-    if (!broken) continue
+    if (i < last && !gaps.has(i) && !((temperatureSteps[i - first] ?? 0) > splice)) continue
     if ((time_s[i] ?? 0) - (time_s[from] ?? 0) > (time_s[best.last] ?? 0) - (time_s[best.first] ?? 0)) best = { first: from, last: i }
     from = i + 1
   }
   return best
 }
 
-const middle = (values: readonly number[]): number => values.toSorted((a, b) => a - b)[values.length >> 1] ?? 0
+const stepsOf = (values: Float64Array, first: number, last: number): Float64Array =>
+  Float64Array.from({ length: Math.max(0, last - first) }, (_, i) => (values[first + i + 1] ?? 0) - (values[first + i] ?? 0))

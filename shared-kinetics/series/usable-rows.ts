@@ -11,14 +11,26 @@ export interface UsableRows {
   readonly signal: Float64Array
   /** The heating rate that time was rebuilt from, or null where time was measured. */
   readonly rebuiltFrom: NominalHeatingRate | null
+  readonly setAside: RowsSetAside
+}
+
+/** Rows of the export that are no usable rows of their own. */
+export interface RowsSetAside {
+  /** Without time, temperature or signal. */
+  readonly withoutNumber: number
+  /** With the time of the row before, into whose mean they went; where time was rebuilt, rows in which the temperature does not rise. */
+  readonly sameTime: number
+  /** Blocks of rows whose time lies behind that of an earlier row: how many, and the usable row after which they stood. */
+  readonly behind: readonly { readonly after: number; readonly rows: number }[]
 }
 
 const fewestRows = 20
 /** More rows than this share that go back in time are not a repeated row here and there but two recordings in one. */
-const mostBackward = 0.05
+export const mostBackward = 0.05
 
 /**
- * Rows with finite time, temperature and signal, in order of time. A row whose time does not go on is left out. Without a time column, time is (T - T first) / β
+ * Rows with finite time, temperature and signal, in order of time. Rows of one time count as
+ * one, their mean, which is unbiased where time was rounded; rows that lie behind in time are set aside. Without a time column, time is (T - T first) / β
  * over the rows of the main heating part in which the temperature still rises, with the heating rate β that somebody stated.
  *
  * @param label - of the run, for messages
@@ -36,23 +48,45 @@ export function usableRows(columns: RunColumns, signalIndex: number, nominal: No
 }
 
 function rowsWithMeasuredTime(time: Float64Array, temperature: Float64Array, signal: Float64Array, label: string): UsableRows {
-  const kept: number[] = []
-  let latest = -Infinity
-  let finite = 0
+  const keptTime = new Float64Array(time.length)
+  const keptTemperature = new Float64Array(time.length)
+  const keptSignal = new Float64Array(time.length)
+  const behind: { after: number; rows: number }[] = []
+  let kept = 0
+  let inMean = 0
+  let withoutNumber = 0
+  let sameTime = 0
   let backward = 0
   let firstBackward = -1
   for (let i = 0; i < time.length; i++) {
     const t = time[i] ?? Number.NaN
-    if (!Number.isFinite(t) || !Number.isFinite(temperature[i]) || !Number.isFinite(signal[i])) continue
-    finite++
+    const T = temperature[i] ?? Number.NaN
+    const y = signal[i] ?? Number.NaN
+    if (!Number.isFinite(t) || !Number.isFinite(T) || !Number.isFinite(y)) {
+      withoutNumber++
+      continue
+    }
+    const latest = kept === 0 ? -Infinity : (keptTime[kept - 1] ?? Number.NaN)
     if (t > latest) {
-      latest = t
-      kept.push(i)
-    } else if (t < latest) {
+      keptTime[kept] = t
+      keptTemperature[kept] = T
+      keptSignal[kept] = y
+      kept++
+      inMean = 1
+    } else if (t === latest) {
+      sameTime++
+      inMean++
+      keptTemperature[kept - 1] = (keptTemperature[kept - 1] ?? Number.NaN) + (T - (keptTemperature[kept - 1] ?? Number.NaN)) / inMean
+      keptSignal[kept - 1] = (keptSignal[kept - 1] ?? Number.NaN) + (y - (keptSignal[kept - 1] ?? Number.NaN)) / inMean
+    } else {
+      const block = behind.at(-1)
+      if (block?.after === kept - 1) block.rows++
+      else behind.push({ after: kept - 1, rows: 1 })
       backward++
       if (firstBackward < 0) firstBackward = i
     }
   }
+  const finite = time.length - withoutNumber
   if (backward > mostBackward * finite) {
     throw new KineticsError(
       'time-not-ascending',
@@ -61,16 +95,17 @@ function rowsWithMeasuredTime(time: Float64Array, temperature: Float64Array, sig
       { run: label, row: firstBackward + 1, backward },
     )
   }
-  enough(kept.length, label)
-  const start = time[kept[0] ?? 0] ?? 0
+  enough(kept, label)
+  const start = keptTime[0] ?? 0
   return {
     time_s: column(
-      Float64Array.from(kept, (i) => (time[i] ?? Number.NaN) - start),
+      keptTime.slice(0, kept).map((t) => t - start),
       's',
     ),
-    temperature_K: pick(temperature, kept),
-    signal: Float64Array.from(kept, (i) => signal[i] ?? Number.NaN),
+    temperature_K: column(keptTemperature.slice(0, kept), 'K'),
+    signal: keptSignal.slice(0, kept),
     rebuiltFrom: null,
+    setAside: { withoutNumber, sameTime, behind },
   }
 }
 
@@ -87,36 +122,30 @@ function rowsWithRebuiltTime(
       { run: label },
     )
   }
-  const finite: number[] = []
-  for (let i = 0; i < temperature.length; i++) if (Number.isFinite(temperature[i]) && Number.isFinite(signal[i])) finite.push(i)
+  const finite = Int32Array.from(temperature.keys()).filter((i) => Number.isFinite(temperature[i]) && Number.isFinite(signal[i]))
   enough(finite.length, label)
   const main = mainHeating(Float64Array.from(finite, (i) => temperature[i] ?? Number.NaN))
-  const kept: number[] = []
   let highest = -Infinity
-  for (const i of finite.slice(main.first, main.last + 1)) {
+  const kept = finite.subarray(main.first, main.last + 1).filter((i) => {
     const value = temperature[i] ?? Number.NaN
-    if (value <= highest) continue
+    if (value <= highest) return false
     highest = value
-    kept.push(i)
-  }
+    return true
+  })
   enough(kept.length, label)
   const start = temperature[kept[0] ?? 0] ?? Number.NaN
+  const pick = (values: Float64Array): Float64Array => Float64Array.from(kept, (i) => values[i] ?? Number.NaN)
   return {
     time_s: column(
-      Float64Array.from(kept, (i) => ((temperature[i] ?? Number.NaN) - start) / nominal.heatingRate_K_per_s),
+      pick(temperature).map((T) => (T - start) / nominal.heatingRate_K_per_s),
       's',
     ),
-    temperature_K: pick(temperature, kept),
-    signal: Float64Array.from(kept, (i) => signal[i] ?? Number.NaN),
+    temperature_K: column(pick(temperature), 'K'),
+    signal: pick(signal),
     rebuiltFrom: nominal,
+    setAside: { withoutNumber: temperature.length - finite.length, sameTime: main.last - main.first + 1 - kept.length, behind: [] },
   }
 }
-
-const pick = (temperature: Float64Array, rows: readonly number[]): Column<'K'> =>
-  column(
-    Float64Array.from(rows, (i) => temperature[i] ?? Number.NaN),
-    'K',
-  )
 
 function enough(rows: number, label: string): void {
   if (rows < fewestRows) {

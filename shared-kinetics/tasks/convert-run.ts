@@ -5,6 +5,7 @@ import { fromHeatFlow } from '../conversion/from-heat-flow.ts'
 import { fromHeatRelease } from '../conversion/from-heat-release.ts'
 import { fromMass } from '../conversion/from-mass.ts'
 import { peakTemperature } from '../conversion/peak-temperature.ts'
+import { samplingOf, type Sampling } from '../conversion/sampling.ts'
 import { findWindow, isHold, rowsInWindow } from '../conversion/window.ts'
 import type { RowRange } from '../series/main-heating.ts'
 import type { RunColumns, RunInfo, Window } from '../series/run.ts'
@@ -28,6 +29,7 @@ export interface ConvertedRun {
   readonly peak_K: number
   /** null where the ends of the window say nothing about the conversion there (a conversion column). */
   readonly rateAtEnds: RateAtEnds | null
+  readonly sampling: Sampling
   readonly curve: RunResult['curve']
 }
 
@@ -39,7 +41,7 @@ export interface ConversionSettings {
 }
 
 /** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
-export const convertRunVersion = 1
+export const convertRunVersion = 2
 
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
@@ -61,6 +63,7 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
     window: windowUsed(rows, range, settings.window, told.programme.kind === 'constant-heating-rate'),
     peak_K: peakTemperature(converted.curve),
     rateAtEnds: quantity === 'conversion' ? null : rateAtEnds(converted.curve),
+    sampling: samplingOf(rows, range.first, converted.curve, info.label),
     curve: curveToDraw(rows, range, converted, quantity === 'heat-flow'),
   }
 }

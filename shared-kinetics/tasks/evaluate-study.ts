@@ -10,6 +10,7 @@ import type { SignalQuantity } from '../series/signal-quantity.ts'
 import { column } from '../units/quantity.ts'
 import { applyKissinger, applyMethod, chooseMethods } from './apply-methods.ts'
 import { chooseSignal } from './choose-signal.ts'
+import { conversionAtTemperature } from './conversion-at-temperature.ts'
 import { convertRun, convertRunVersion, type ConvertedRun } from './convert-run.ts'
 import { memoryOf, remember, type EvaluationCache } from './memo.ts'
 import { profileResult } from './profile-result.ts'
@@ -85,6 +86,7 @@ export function evaluateStudy(
       result: itemAt(result.runs, i),
       heatingRateSpread: converted.told.heatingRateSpread,
       rateAtEnds: converted.rateAtEnds,
+      sampling: converted.sampling,
     })),
     unusable,
     leftOut: runs.length === 0 ? [] : [...leftOut, ...kissingerLeftOut],
@@ -94,7 +96,7 @@ export function evaluateStudy(
 }
 
 /** Bump when a method or `readAtLevels` gives other numbers: remembered steps of another version are not used. */
-const methodVersion = 1
+const methodVersion = 2
 const readVersion = 1
 
 interface ReadRun {
@@ -178,6 +180,7 @@ function seriesAtLevels(runs: readonly GroupedRun[], levels: readonly number[]):
       return {
         programme: converted.told.programme,
         programmeGroup: group,
+        heatingRateSpread: converted.told.heatingRateSpread,
         history: {
           time_s: column(
             time_s.map((time) => time - start),
@@ -203,6 +206,7 @@ function kissingerOf(runs: readonly GroupedRun[]): { readonly kissinger: StudyRe
       programme: converted.told.programme,
       programmeGroup: group,
       peak_K: converted.peak_K,
+      conversionAtPeak: conversionAtTemperature(converted.converted.curve, converted.peak_K),
     })),
   )
 }
