@@ -1,87 +1,91 @@
-import { readFile, rename, stat, unlink, utimes, writeFile } from 'node:fs/promises'
-import { hostname } from 'node:os'
+import { unlink, utimes } from 'node:fs/promises'
 import { join } from 'node:path'
-import * as z from 'zod/mini'
-import { isMissing } from './is-missing.ts'
+import { lookAtLock, placeLock, removeLeftBehind, tokenOfLock } from './lock-file.ts'
 
-/** A lock is beaten this often, and is taken for left behind after a minute without a beat. */
+/** A lock is beaten this often; `lockStale_ms` without a beat, and it is taken over. */
 export const lockBeat_ms = 10_000
-export const lockStale_ms = 60_000
 
-const lockSchema = z.object({ pid: z.int(), host: z.string(), token: z.string() })
+/** Another host that is just taking over a lock is waited for this often, and so long each time. */
+const tries = 50
+const wait_ms = 10
 
 /** The right of one host to write one study's folder. */
 export interface StudyLock {
-  /** False once another host has taken the study over (this one was stopped for longer than a minute). */
+  /**
+   * False once another host has taken the study over (this one was stopped for longer than a minute).
+   * Rejects, with a word, where the lock cannot be read.
+   */
   isOurs(): Promise<boolean>
+  /** Never rejects: a lock that cannot be given back is left behind, and taken over from there. */
   release(): Promise<void>
 }
 
 /**
  * Takes the lock file of a study's folder, or gives null while a living host holds it. A lock whose process has ended, or that
  * has not been beaten for a minute (its process number now belongs to something else), is taken over.
+ * @param token - of this host alone
  */
 export async function takeStudyLock(folder: string, token: string, now: () => number): Promise<StudyLock | null> {
   const path = join(folder, 'lock.json')
-  const mine = JSON.stringify({ pid: process.pid, host: hostname(), token })
-  for (let attempt = 0; attempt < 3; attempt += 1) {
-    try {
-      await writeFile(path, mine, { flag: 'wx', mode: 0o600 })
-      return keepLock(path, token, now)
-    } catch (error) {
-      if (!(error instanceof Error && 'code' in error && error.code === 'EEXIST')) throw error
-    }
-    if (await isHeld(path, now)) return null
-    // The rename lets only one of two hosts that found the same left-behind lock go on.
-    const aside = `${path}.${token}`
-    await rename(path, aside).catch(() => undefined)
-    await unlink(aside).catch(() => undefined)
+  for (let attempt = 0; attempt < tries; attempt += 1) {
+    if (await placeLock(path, token)) return keepLock(path, token, now)
+    const found = await lookAtLock(path, now)
+    if (found.kind === 'held') return null
+    if (found.kind === 'left-behind' && !(await clear(path, token, now))) await new Promise((resolve) => setTimeout(resolve, wait_ms))
   }
   return null
 }
 
+/**
+ * Removes a lock that was left behind. One host at a time, held off by a lock of its own, and judged anew under it: else a host
+ * that judged early and acts late would take away the lock that a quicker one has made meanwhile.
+ * @returns false when another host is at it
+ */
+async function clear(path: string, token: string, now: () => number): Promise<boolean> {
+  const clearing = `${path}.clearing`
+  if (!(await placeLock(clearing, token))) {
+    const other = await lookAtLock(clearing, now)
+    if (other.kind === 'left-behind') await removeLeftBehind(clearing, other)
+    return false
+  }
+  try {
+    const found = await lookAtLock(path, now)
+    if (found.kind === 'left-behind') await removeLeftBehind(path, found)
+    return true
+  } finally {
+    await giveBack(clearing, token)
+  }
+}
+
 function keepLock(path: string, token: string, now: () => number): StudyLock {
-  const isOurs = async (): Promise<boolean> => (await readLock(path))?.token === token
-  const beat = setInterval(() => {
+  const beat = async (): Promise<void> => {
     const seconds = now() / 1000
-    void isOurs().then((ours) => (ours ? utimes(path, seconds, seconds).catch(() => undefined) : undefined))
+    if ((await tokenOfLock(path)) === token) await utimes(path, seconds, seconds)
+  }
+  const beating = setInterval(() => {
+    // A beat that fails is told by the next save, which looks at the same file.
+    beat().catch(() => undefined)
   }, lockBeat_ms)
-  beat.unref()
+  beating.unref()
   return {
-    isOurs,
+    isOurs: async () => {
+      try {
+        return (await tokenOfLock(path)) === token
+      } catch (error) {
+        throw new Error(`the lock of the study's folder cannot be read (${error instanceof Error ? error.message : String(error)})`)
+      }
+    },
     release: async () => {
-      clearInterval(beat)
-      if (await isOurs()) await unlink(path).catch(() => undefined)
+      clearInterval(beating)
+      await giveBack(path, token)
     },
   }
 }
 
-async function isHeld(path: string, now: () => number): Promise<boolean> {
-  const lock = await readLock(path)
-  if (lock === null) return false
-  const mtimeMs = await stat(path).then(
-    (found) => found.mtimeMs,
-    () => 0,
-  )
-  if (now() - mtimeMs > lockStale_ms) return false
-  return lock.host !== hostname() || isAlive(lock.pid)
-}
-
-/** null for a lock that is gone or that says nothing (a crash while it was written). */
-async function readLock(path: string): Promise<z.infer<typeof lockSchema> | null> {
+async function giveBack(path: string, token: string): Promise<void> {
   try {
-    return lockSchema.parse(JSON.parse(await readFile(path, 'utf8')))
-  } catch (error) {
-    if (isMissing(error) || error instanceof SyntaxError || error instanceof z.core.$ZodError) return null
-    throw error
-  }
-}
-
-function isAlive(pid: number): boolean {
-  try {
-    process.kill(pid, 0)
-    return true
-  } catch (error) {
-    return error instanceof Error && 'code' in error && error.code === 'EPERM'
+    if ((await tokenOfLock(path)) === token) await unlink(path)
+  } catch {
+    // Left behind, then.
   }
 }

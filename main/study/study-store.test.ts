@@ -5,7 +5,7 @@ import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { emptyStudy, type StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import { rejectionOf, sampleRun, textBytes } from '../host/testing/host-testing.ts'
 import { openStudyStore, type StudyParts, type StudyStore } from './study-store.ts'
-import { lockStale_ms } from './study-lock.ts'
+import { lockStale_ms } from './lock-file.ts'
 import { createAutosave } from './autosave.ts'
 import { defaultDataFolder } from './data-folder.ts'
 

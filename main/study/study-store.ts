@@ -7,6 +7,7 @@ import { KineticsError } from '../../shared-kinetics/errors.ts'
 import type { RunColumns } from '../../shared-kinetics/series/run.ts'
 import { columnsFit, decodeColumns, encodeColumns } from './columns-file.ts'
 import { isMissing } from './is-missing.ts'
+import { lockStale_ms } from './lock-file.ts'
 import { largestStudyJsonBytes, readStudyJson, writeStudyJson } from './read-study-json.ts'
 import { takeStudyLock, type StudyLock } from './study-lock.ts'
 import type { NamesInUse } from './study-session.ts'
@@ -95,7 +96,7 @@ export async function openStudyStore(dataFolder: string, token: string, now: () 
       await mkdir(join(folder, 'exports'), { recursive: true, mode: 0o700 })
       const lock = await takeStudyLock(folder, token, now)
       if (lock === null) return null
-      await removePassingFiles(folder)
+      await removePassingFiles(folder, now)
       return createStudyFolder(id, folder, lock)
     },
     read: async (id) => {
@@ -173,12 +174,24 @@ function createStudyFolder(id: string, folder: string, lock: StudyLock): StudyFo
   }
 }
 
-/** What a host that was killed in the middle of a write has left behind. */
-async function removePassingFiles(folder: string): Promise<void> {
+/** What a host that was killed in the middle of a write has left behind. Others may be at the lock just now: their files are left alone. */
+async function removePassingFiles(folder: string, now: () => number): Promise<void> {
   for (const part of [folder, join(folder, 'columns'), join(folder, 'exports')]) {
-    for (const name of await readdir(part)) if (name.endsWith('.tmp')) await unlink(join(part, name)).catch(() => undefined)
+    for (const name of await readdir(part)) {
+      if (!name.endsWith('.tmp')) continue
+      const path = join(part, name)
+      if (name.startsWith('lock.json.') && now() - (await changedAt_ms(path)) < lockStale_ms) continue
+      await unlink(path).catch(() => undefined)
+    }
   }
 }
+
+/** When a file got its present name or content, whatever its time of modification says. */
+const changedAt_ms = async (path: string): Promise<number> =>
+  stat(path).then(
+    (found) => found.ctimeMs,
+    () => 0,
+  )
 
 const exists = async (path: string): Promise<boolean> =>
   stat(path).then(
