@@ -1,4 +1,4 @@
-import { createHash, timingSafeEqual } from 'node:crypto'
+import { createHash, randomBytes, timingSafeEqual } from 'node:crypto'
 import type { IncomingMessage } from 'node:http'
 
 export type Verdict =
@@ -9,19 +9,39 @@ export type Verdict =
 
 export interface LoopbackGate {
   judge(request: IncomingMessage): Verdict
+  /** A key that lets in once, and not after `keyForOnce_ms`. */
+  keyForOnce(): string
 }
+
+/** A browser that has to be started first takes its time. */
+export const keyForOnce_ms = 30_000
 
 /**
  * Who may speak to the loopback server: a browser that was let in with this start's key (a cookie scripts cannot read and other
  * sites cannot send), naming this very address as Host (a name that was made to point here is refused) and, with anything but a
  * plain look, as Origin.
+ * @param now - milliseconds that only go up
  */
-export function createLoopbackGate(port: number, secret: string): LoopbackGate {
+export function createLoopbackGate(port: number, secret: string, now: () => number = () => performance.now()): LoopbackGate {
   const hosts = new Set([`127.0.0.1:${port}`, `localhost:${port}`])
   // Cookies do not know ports: two hosts on one machine must not overwrite each other's.
   const cookieName = `rampfold-${port}`
+  const once = new Map<string, number>()
+
+  const isKey = (key: string): boolean => {
+    if (isSame(key, secret)) return true
+    const name = hashOf(key)
+    const until = once.get(name)
+    once.delete(name)
+    return until !== undefined && now() <= until
+  }
 
   return {
+    keyForOnce: () => {
+      const key = randomBytes(32).toString('base64url')
+      once.set(hashOf(key), now() + keyForOnce_ms)
+      return key
+    },
     judge: (request) => {
       const { host, origin } = request.headers
       if (host === undefined || !hosts.has(host)) return refuse('This program answers at its own address only.')
@@ -30,7 +50,7 @@ export function createLoopbackGate(port: number, secret: string): LoopbackGate {
       const isLook = request.method === 'GET' || request.method === 'HEAD'
       if ((origin !== undefined || !isLook) && origin !== `http://${host}`) return refuse('Only its own pages may ask this program.')
       const key = url.searchParams.get('key')
-      if (request.method === 'GET' && url.pathname === '/' && key !== null && isSame(key, secret)) {
+      if (request.method === 'GET' && url.pathname === '/' && key !== null && isKey(key)) {
         return { kind: 'let-in', cookie: `${cookieName}=${secret}; HttpOnly; SameSite=Strict; Path=/` }
       }
       if (!isSame(cookieOf(request, cookieName), secret)) {
@@ -59,3 +79,5 @@ function cookieOf(request: IncomingMessage, name: string): string {
 /** Compared in a time that says nothing of where the two differ. */
 const isSame = (a: string, b: string): boolean => timingSafeEqual(digest(a), digest(b))
 const digest = (text: string): Buffer => createHash('sha256').update(text).digest()
+/** Keys are looked up by their hash, whose place says nothing of the key. */
+const hashOf = (key: string): string => digest(key).toString('hex')

@@ -1,4 +1,4 @@
-import { request } from 'node:http'
+import { request, type IncomingMessage } from 'node:http'
 import { connect } from 'node:net'
 import { mkdir, mkdtemp, rm, symlink, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
@@ -7,6 +7,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import type { Host } from './create-host.ts'
 import { sampleHost } from './testing/host-testing.ts'
+import { createLoopbackGate, keyForOnce_ms, type LoopbackGate } from './loopback-gate.ts'
 import { startLoopbackServer, type LoopbackServer } from './loopback-server.ts'
 import { readRendererFiles } from './renderer-files.ts'
 
@@ -211,6 +212,22 @@ describe('the loopback server', () => {
       if (text.includes('data: ')) break
     }
     expect(text).toContain('data: {"kind":"study-changed","revision":1}')
+  })
+})
+
+describe('a key for once', () => {
+  const visit = (gate: LoopbackGate, key: string): string =>
+    gate.judge({ url: `/?key=${key}`, method: 'GET', headers: { host: '127.0.0.1:1' } } as IncomingMessage).kind
+
+  it('lets in one visit within its time, while the printed one stays as it is', () => {
+    let now = 0
+    const gate = createLoopbackGate(1, secret, () => now)
+    const [first, second, late] = [gate.keyForOnce(), gate.keyForOnce(), gate.keyForOnce()]
+    expect(new Set([first, second, late, secret]).size).toBe(4)
+    now = keyForOnce_ms
+    expect([first, first, second, second].map((key) => visit(gate, key))).toEqual(['let-in', 'refuse', 'let-in', 'refuse'])
+    now += 1
+    expect([late, secret, secret].map((key) => visit(gate, key))).toEqual(['refuse', 'let-in', 'let-in'])
   })
 })
 

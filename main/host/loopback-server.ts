@@ -20,6 +20,8 @@ export interface LoopbackServer {
   readonly port: number
   /** What a person opens: `http://127.0.0.1:PORT/?key=SECRET`. */
   readonly address: string
+  /** An address whose key is good for one visit within half a minute: for places where others can read it. */
+  addressForOnce(): string
   close(): Promise<void>
 }
 
@@ -50,6 +52,7 @@ export async function startLoopbackServer({ host, files, secret, port = 0 }: Loo
   return {
     port: taken,
     address: `http://127.0.0.1:${taken}/?key=${secret}`,
+    addressForOnce: () => `http://127.0.0.1:${taken}/?key=${gate.keyForOnce()}`,
     close: async () => {
       stopEvents()
       clearInterval(heartbeat)
