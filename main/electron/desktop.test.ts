@@ -241,28 +241,26 @@ describe('the menu', () => {
 })
 
 const built = fileURLToPath(new URL('../../out/main/app.js', import.meta.url))
-const isBuilt = existsSync(built) && existsSync(fileURLToPath(new URL('../../out/renderer/index.html', import.meta.url)))
+const builtPage = fileURLToPath(new URL('../../out/renderer/index.html', import.meta.url))
 
 describe('the built main bundle', () => {
-  it.skipIf(!isBuilt)(
-    'starts, opens its window, and works a study out in its worker (skipped until npm run build has made out/)',
-    async () => {
-      await import(/* @vite-ignore */ built)
-      await expect.poll(() => fakeElectron.ipcMain.handlers.size, { timeout: 10_000 }).toBe(1)
-      const { webPreferences } = theWindow().options
-      expect(webPreferences).toMatchObject({ contextIsolation: true, sandbox: true, nodeIntegration: false, webSecurity: true })
-      expect(existsSync(String(webPreferences?.['preload']))).toBe(true)
-      const demo = (await knock(theFrame(), 'study.open-demo', encodeMessage({}))) as { revision: number; document: { runs: unknown[] } }
-      expect(demo.document.runs).toHaveLength(5)
-      const answer = (await knock(theFrame(), 'study.evaluate', encodeMessage({ revision: demo.revision }))) as {
-        result: { profiles: unknown[] }
-      }
-      expect(answer.result.profiles.length).toBeGreaterThan(0)
-      const page = await fakeElectron.protocol.handlers.get('app')?.(new Request('app://rampfold/index.html'))
-      expect(page?.status).toBe(200)
-      await expect(knock({ sender: new FakeWebContents(), senderFrame: null }, 'study.read', encodeMessage({}))).rejects.toMatchObject({
-        code: 'bad-request',
-      })
-    },
-  )
+  it('starts, opens its window, and works a study out in its worker', async () => {
+    expect(existsSync(built) && existsSync(builtPage), 'run npm run build').toBe(true)
+    await import(/* @vite-ignore */ built)
+    await expect.poll(() => fakeElectron.ipcMain.handlers.size, { timeout: 10_000 }).toBe(1)
+    const { webPreferences } = theWindow().options
+    expect(webPreferences).toMatchObject({ contextIsolation: true, sandbox: true, nodeIntegration: false, webSecurity: true })
+    expect(existsSync(String(webPreferences?.['preload']))).toBe(true)
+    const demo = (await knock(theFrame(), 'study.open-demo', encodeMessage({}))) as { revision: number; document: { runs: unknown[] } }
+    expect(demo.document.runs).toHaveLength(5)
+    const answer = (await knock(theFrame(), 'study.evaluate', encodeMessage({ revision: demo.revision }))) as {
+      result: { profiles: unknown[] }
+    }
+    expect(answer.result.profiles.length).toBeGreaterThan(0)
+    const page = await fakeElectron.protocol.handlers.get('app')?.(new Request('app://rampfold/index.html'))
+    expect(page?.status).toBe(200)
+    await expect(knock({ sender: new FakeWebContents(), senderFrame: null }, 'study.read', encodeMessage({}))).rejects.toMatchObject({
+      code: 'bad-request',
+    })
+  })
 })

@@ -14,8 +14,9 @@ import { decodeAnswer } from '../../shared-kinetics/contract/wire-answer.ts'
 import { decodeMessage, encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import type { Host } from '../host/create-host.ts'
-import { importTexts, rejectionOf, sampleHost, sha256, upload } from '../host/testing/host-testing.ts'
+import { importTexts, rejectionOf, sampleHost, sha256 } from '../host/testing/host-testing.ts'
 import { startLoopbackServer, type LoopbackServer } from '../host/loopback-server.ts'
+import { uploadToHost } from '../host/upload-to-host.ts'
 import { openSavedCopy } from '../study/saved-copy.ts'
 import { BrowserWindow as FakeBrowserWindow, fakeElectron } from './testing/fake-electron.ts'
 import { openIpcGate } from './ipc.ts'
@@ -160,7 +161,7 @@ describe.each([
     const bytes = new Uint8Array(5 * uploadChunkBytes + 12_345)
     for (let i = 0; i < bytes.length; i += 1) bytes[i] = 32 + ((i * 7919) % 90)
     bytes.set(new TextEncoder().encode('rate 7\n'))
-    const uploadIds = await upload(transport, [{ fileName: 'large.csv', bytes }], uploadChunkBytes)
+    const uploadIds = await uploadToHost(transport, [{ fileName: 'large.csv', bytes }])
     const { snapshot } = await transport.call('runs.import', { uploadIds })
     expect(snapshot.document.runs[0]?.file).toEqual({ name: 'large.csv', byteLength: bytes.byteLength, sha256: sha256(bytes) })
   })

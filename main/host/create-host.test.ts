@@ -6,8 +6,9 @@ import type { HostEvent } from '../../shared-kinetics/contract/host-api.ts'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { openSavedCopy } from '../study/saved-copy.ts'
 import type { Host } from './create-host.ts'
-import { importTexts, rejectionOf, sampleHost, sampleTasks, textBytes, upload } from './testing/host-testing.ts'
+import { importTexts, rejectionOf, sampleHost, sampleTasks, textBytes } from './testing/host-testing.ts'
 import { createInProcessPool } from './in-process-pool.ts'
+import { uploadToHost } from './upload-to-host.ts'
 
 let folder = ''
 const hosts: Host[] = []
@@ -67,7 +68,7 @@ describe('importing files', () => {
     const host = start()
     const { uploadId } = await host.call('upload.begin', { fileName: 'part.csv', byteLength: 10 })
     await host.call('upload.append', { uploadId, bytes: textBytes('rate') })
-    const [whole = ''] = await upload(host, [{ fileName: 'a.csv', bytes: textBytes('rate 5') }])
+    const [whole = ''] = await uploadToHost(host, [{ fileName: 'a.csv', bytes: textBytes('rate 5') }])
     const answer = await host.call('runs.import', { uploadIds: [uploadId, whole] })
     expect(answer.refused).toMatchObject([{ fileName: 'part.csv', reason: 'Only 4 of its 10 bytes arrived.' }])
     expect(await labels(host)).toEqual(['a'])
@@ -305,7 +306,7 @@ describe('a saved copy', () => {
     const copy = await host.call('study.save-copy', {})
     expect(copy).toMatchObject({ fileName: 'Calcite 1 2.rampfold', mediaType: 'application/zip' })
     await host.call('study.new', {})
-    const [uploadId = ''] = await upload(host, [{ fileName: copy.fileName, bytes: copy.bytes }])
+    const [uploadId = ''] = await uploadToHost(host, [{ fileName: copy.fileName, bytes: copy.bytes }])
     const answer = await host.call('runs.import', { uploadIds: [uploadId] })
     expect(answer.openedStudy).toBe(true)
     expect(answer.snapshot.document).toEqual({ ...before.document, id: answer.snapshot.document.id })
@@ -320,7 +321,7 @@ describe('a saved copy', () => {
     const host = start()
     await importTexts(host, { 'a.csv': 'rate 5' })
     const { bytes } = await host.call('study.save-copy', {})
-    const uploadIds = await upload(host, [
+    const uploadIds = await uploadToHost(host, [
       { fileName: 'b.csv', bytes: textBytes('rate 10') },
       { fileName: 'one.rampfold', bytes },
       { fileName: 'two.RAMPFOLD', bytes },

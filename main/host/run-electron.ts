@@ -1,4 +1,5 @@
 import { spawn } from 'node:child_process'
+import { endingSignals } from './ending-signals.ts'
 
 /** A desktop shell that ends within this time with an error has not been able to start. */
 const startUp_ms = 10_000
@@ -27,25 +28,23 @@ export async function runElectron(binary: string, appFolder: string): Promise<De
   const pass = (signal: NodeJS.Signals): void => {
     child.kill(signal)
   }
-  for (const signal of signals) process.on(signal, pass)
+  for (const signal of endingSignals) process.on(signal, pass)
   return new Promise((resolve) => {
     const end = (how: DesktopEnd): void => {
       clearTimeout(upTimer)
-      for (const signal of signals) process.off(signal, pass)
+      for (const signal of endingSignals) process.off(signal, pass)
       resolve(how)
     }
     child.on('error', (error) => {
       end({ kind: 'not-started', reason: error.message })
     })
     child.on('exit', (code, signal) => {
-      const failed = code !== 0 && !(signal === 'SIGINT' || signal === 'SIGTERM')
+      const failed = code !== 0 && !(signal !== null && endingSignals.includes(signal))
       if (failed && performance.now() - started < startUp_ms)
         end({ kind: 'not-started', reason: lastLine(said) ?? `it ended with ${code ?? signal ?? 'an error'}` })
       else end({ kind: 'ended', exitCode: code ?? 0 })
     })
   })
 }
-
-const signals = ['SIGINT', 'SIGTERM'] as const
 
 const lastLine = (text: string): string | null => text.trim().split('\n').at(-1)?.trim().slice(0, 200) || null

@@ -2,12 +2,14 @@ import { spawn, type ChildProcess } from 'node:child_process'
 import { existsSync } from 'node:fs'
 import { mkdtemp, readdir, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
+import { Server } from 'node:net'
 import { join } from 'node:path'
 import { fileURLToPath, pathToFileURL } from 'node:url'
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest'
 import { encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import { decodeAnswer } from '../../shared-kinetics/contract/wire-answer.ts'
 import { rejectionOf, sampleTasks, textBytes } from './testing/host-testing.ts'
+import { endingSignals } from './ending-signals.ts'
 import { createInProcessPool } from './in-process-pool.ts'
 import { startBrowserShell, type BrowserShell, type BrowserShellOptions } from './start-browser-shell.ts'
 
@@ -70,8 +72,47 @@ describe('the browser shell', () => {
     const error = await rejectionOf(start({ files, dataFolder }))
     expect(error).toMatchObject({ name: 'KineticsError', code: 'not-readable', message: 'bad.csv, line 1: There is no rate. Write one.' })
     expect(await readdir(join(dataFolder, 'studies'))).toEqual([])
-    const { shell } = await start({ files, dataFolder, skipUnusable: true })
-    expect(shell.refused).toMatchObject([{ fileName: 'bad.csv' }])
+  })
+
+  it('that cannot listen closes its host', async () => {
+    const pool = createInProcessPool(sampleTasks())
+    const closed = vi.spyOn(pool, 'close')
+    const listen = vi.spyOn(Server.prototype, 'listen').mockImplementation(function (this: Server) {
+      setImmediate(() => this.emit('error', new Error('no port is free')))
+      return this
+    })
+    await expect(start({ pool })).rejects.toThrow(/no port is free/)
+    listen.mockRestore()
+    expect(closed).toHaveBeenCalledOnce()
+  })
+
+  it('hands the browser another key than the printed one, good for one visit', async () => {
+    const opened: string[] = []
+    const { shell } = await start({ openBrowser: true, browse: (address) => opened.push(address) })
+    expect(opened).toEqual([expect.stringMatching(/^http:\/\/127\.0\.0\.1:\d+\/\?key=[\w-]{43}$/)])
+    const [address = ''] = opened
+    expect(address).not.toBe(shell.address)
+    const visit = async (to: string): Promise<number> => (await fetch(to, { redirect: 'manual' })).status
+    expect([await visit(address), await visit(address)]).toEqual([303, 403])
+    expect([await visit(shell.address), await visit(shell.address)]).toEqual([303, 303])
+  })
+
+  it.each(endingSignals)('ends with %s after the last save, and gives its study back', async (signal) => {
+    const dataFolder = await mkdtemp(join(folder, 'kept-'))
+    const { shell } = await start({ dataFolder, files: [{ fileName: 'a.csv', bytes: textBytes('rate 2') }] })
+    expect(process.emit(signal, signal)).toBe(true)
+    await shell.closed
+    const kept = await readdir(dataFolder, { recursive: true })
+    expect(kept.filter((path) => path.endsWith('/study.json'))).toHaveLength(1)
+    expect(kept.filter((path) => path.endsWith('lock.json'))).toEqual([])
+  })
+
+  it('is not ended by a second word of a closed terminal while it saves', async () => {
+    const { shell } = await start()
+    process.emit('SIGHUP', 'SIGHUP')
+    expect(process.emit('SIGHUP', 'SIGHUP')).toBe(true)
+    await shell.closed
+    expect(process.listenerCount('SIGHUP')).toBe(0)
   })
 
   it('ends once, when closed: the address answers no more', async () => {
@@ -94,7 +135,6 @@ describe('the browser shell', () => {
 })
 
 const startScript = fileURLToPath(new URL('../../out/main/start.js', import.meta.url))
-const isBuilt = existsSync(startScript) && existsSync(fileURLToPath(new URL('../../out/renderer/index.html', import.meta.url)))
 
 async function ask(address: string, name: string, input: unknown): Promise<unknown> {
   const { origin } = new URL(address)
@@ -107,7 +147,11 @@ async function ask(address: string, name: string, input: unknown): Promise<unkno
   return decodeAnswer(new Uint8Array(await answer.arrayBuffer()))
 }
 
-describe.skipIf(!isBuilt)('the built npm start (skipped until npm run build has made out/)', () => {
+describe('the built npm start', () => {
+  beforeAll(() => {
+    const page = fileURLToPath(new URL('../../out/renderer/index.html', import.meta.url))
+    expect(existsSync(startScript) && existsSync(page), 'run npm run build').toBe(true)
+  })
   const children: ChildProcess[] = []
   afterEach(() => {
     for (const child of children.splice(0)) child.kill('SIGKILL')
@@ -117,7 +161,7 @@ describe.skipIf(!isBuilt)('the built npm start (skipped until npm run build has 
   async function run(
     words: readonly string[],
     dataFolder: string,
-  ): Promise<{ address: string; end(): Promise<number | null>; said(): string }> {
+  ): Promise<{ address: string; end(signal: NodeJS.Signals): Promise<number | null>; said(): string }> {
     const { DISPLAY: _display, WAYLAND_DISPLAY: _wayland, ...env } = process.env
     const child = spawn(process.execPath, [startScript, ...words], { env: { ...env, RAMPFOLD_DATA: dataFolder } })
     children.push(child)
@@ -128,15 +172,15 @@ describe.skipIf(!isBuilt)('the built npm start (skipped until npm run build has 
     await expect.poll(() => said, { timeout: 20_000 }).toMatch(/is open at \S+\n/)
     return {
       address: /is open at (\S+)/.exec(said)?.[1] ?? '',
-      end: async () => {
-        child.kill('SIGTERM')
+      end: async (signal) => {
+        child.kill(signal)
         return exited
       },
       said: () => said,
     }
   }
   it.skipIf(process.platform === 'win32')(
-    'serves without a display, says so in one line, and on SIGTERM saves and ends with 0',
+    'serves without a display, says so in one line, and on a signal saves and ends with 0',
     async () => {
       const dataFolder = join(folder, 'kept')
       const first = await run([], dataFolder)
@@ -147,11 +191,11 @@ describe.skipIf(!isBuilt)('the built npm start (skipped until npm run build has 
         result: { levels: number[]; profiles: unknown[] }
       }
       expect(result.profiles.length).toBeGreaterThan(0)
-      expect(await first.end()).toBe(0)
+      expect(await first.end('SIGHUP')).toBe(0)
       const second = await run(['--browser'], dataFolder)
       expect(second.said()).toMatch(/^Rampfold is open at/)
       expect(await ask(second.address, 'study.read', {})).toMatchObject({ document: demo.document })
-      expect(await second.end()).toBe(0)
+      expect(await second.end('SIGTERM')).toBe(0)
     },
   )
 

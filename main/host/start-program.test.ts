@@ -180,4 +180,15 @@ describe('Electron’s binary', () => {
     expect(await runElectron(binary, folder)).toEqual({ kind: 'ended', exitCode: 0 })
     expect(await runElectron(join(folder, 'none'), folder)).toMatchObject({ kind: 'not-started' })
   })
+
+  it.skipIf(process.platform === 'win32')('is told of a terminal that is closed, and ends in its own way', async () => {
+    const binary = join(folder, 'electron')
+    await writeFile(binary, `#!/bin/sh\ntrap 'exit 5' HUP\ntouch "$1/up"\nwhile true; do sleep 0.05; done\n`)
+    await chmod(binary, 0o755)
+    const running = runElectron(binary, folder)
+    await expect.poll(async () => readdir(folder)).toContain('up')
+    expect(process.emit('SIGHUP', 'SIGHUP')).toBe(true)
+    expect(await running).toMatchObject({ kind: 'not-started', reason: 'it ended with 5' })
+    expect(process.listenerCount('SIGHUP')).toBe(0)
+  })
 })

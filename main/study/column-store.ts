@@ -4,7 +4,6 @@ import { shareColumns } from './share-columns.ts'
 
 /** The raw columns of the open study, on shared memory, by `columnsKey`: every worker reads them without a copy. */
 export interface ColumnStore {
-  has(columnsKey: string): boolean
   put(columnsKey: string, columns: RunColumns): void
   /** @throws KineticsError `unknown-run` for a key that is not held */
   get(columnsKey: string): RunColumns
@@ -16,7 +15,6 @@ export interface ColumnStore {
 export function createColumnStore(): ColumnStore {
   const held = new Map<string, RunColumns>()
   return {
-    has: (columnsKey) => held.has(columnsKey),
     put: (columnsKey, columns) => {
       if (!held.has(columnsKey)) held.set(columnsKey, shareColumns(columns))
     },

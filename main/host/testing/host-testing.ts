@@ -8,6 +8,7 @@ import { createHost, type Host, type HostOptions } from '../create-host.ts'
 import type { ImportedRun, TaskTable } from '../host-tasks.ts'
 import { createInProcessPool } from '../in-process-pool.ts'
 import type { ProgramParts } from '../handlers/handler-table.ts'
+import { uploadToHost } from '../upload-to-host.ts'
 
 /* For tests of the host and its shells: runs, tasks and parts that do not depend on the importer and the kinetics. */
 
@@ -115,6 +116,7 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
             window: { kind: 'temperature', start_K: 300, end_K: 400 },
             peak_K: null,
             enthalpy_J_per_g: null,
+            enthalpyMagnitude_J_per_g: null,
             temperatureAtLevel_K: [Number.NaN],
             timeAtLevel_s: [null],
             reactionRateAtLevel_per_s: [1],
@@ -165,27 +167,10 @@ export function sampleHost(options: Partial<HostOptions> = {}): Host {
   })
 }
 
-/** Uploads files in pieces, as a page does. */
-export async function upload(
-  transport: HostTransport,
-  files: readonly { readonly fileName: string; readonly bytes: Uint8Array }[],
-  pieceBytes = 1 << 20,
-): Promise<string[]> {
-  const uploadIds: string[] = []
-  for (const { fileName, bytes } of files) {
-    const { uploadId } = await transport.call('upload.begin', { fileName, byteLength: bytes.byteLength })
-    for (let at = 0; at < bytes.byteLength; at += pieceBytes) {
-      await transport.call('upload.append', { uploadId, bytes: new Uint8Array(bytes.subarray(at, at + pieceBytes)) })
-    }
-    uploadIds.push(uploadId)
-  }
-  return uploadIds
-}
-
 /** Uploads files of one line each and imports them. */
 export async function importTexts(transport: HostTransport, texts: Readonly<Record<string, string>>): Promise<ImportAnswer> {
   const files = Object.entries(texts).map(([fileName, text]) => ({ fileName, bytes: textBytes(text) }))
-  return transport.call('runs.import', { uploadIds: await upload(transport, files) })
+  return transport.call('runs.import', { uploadIds: await uploadToHost(transport, files) })
 }
 
 /** What a promise was rejected with; throws when it was not. */
