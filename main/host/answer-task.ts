@@ -1,4 +1,5 @@
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
+import { describeFailure } from '../../shared-kinetics/contract/failure.ts'
 import type { FromWorker, ToWorker } from '../../shared-kinetics/contract/task-messages.ts'
 import type { TaskContext } from '../../shared-kinetics/isoconversional/result.ts'
 import type { TaskTable } from './host-tasks.ts'
@@ -33,10 +34,4 @@ export async function answerTask(tasks: TaskTable, message: ToWorker, post: (mes
   } catch (error) {
     post({ kind: 'failure', id, failure: describeFailure(error) })
   }
-}
-
-function describeFailure(error: unknown): Extract<FromWorker, { kind: 'failure' }>['failure'] {
-  if (error instanceof KineticsError) return { kind: 'kinetics', code: error.code, message: error.message, details: error.details }
-  if (error instanceof Cancelled) return { kind: 'cancelled', code: 'cancelled', message: error.message, details: {} }
-  return { kind: 'fault', code: 'fault', message: error instanceof Error ? error.message : String(error), details: {} }
 }

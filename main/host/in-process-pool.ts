@@ -1,8 +1,8 @@
 import { Cancelled } from '../../shared-kinetics/errors.ts'
+import { errorOfFailure } from '../../shared-kinetics/contract/failure.ts'
 import type { FromWorker } from '../../shared-kinetics/contract/task-messages.ts'
 import { answerTask } from './answer-task.ts'
 import type { TaskAnswer, TaskPool, TaskTable } from './host-tasks.ts'
-import { taskFailure } from './task-failure.ts'
 
 /** The same protocol with no thread behind it: for tests, and where a single short run does not earn a worker. */
 export function createInProcessPool(tasks: TaskTable): TaskPool {
@@ -43,5 +43,5 @@ export function createInProcessPool(tasks: TaskTable): TaskPool {
 
 function valueOf(outcome: FromWorker | null): unknown {
   if (outcome?.kind === 'answer') return outcome.value
-  throw outcome?.kind === 'failure' ? taskFailure(outcome.failure) : new Error('The task ended without an answer.')
+  throw outcome?.kind === 'failure' ? errorOfFailure(outcome.failure) : new Error('The task ended without an answer.')
 }

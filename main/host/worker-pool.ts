@@ -1,8 +1,8 @@
 import { Worker } from 'node:worker_threads'
+import { errorOfFailure } from '../../shared-kinetics/contract/failure.ts'
 import type { FromWorker, ToWorker } from '../../shared-kinetics/contract/task-messages.ts'
 import { Cancelled } from '../../shared-kinetics/errors.ts'
 import type { TaskAnswer, TaskName, TaskOptions, TaskPool } from './host-tasks.ts'
-import { taskFailure } from './task-failure.ts'
 
 export interface WorkerPoolOptions {
   /** The built worker-entry; only an entry file of the program knows where it lies. */
@@ -65,7 +65,7 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
     slot.job = null
     slot.worker.unref()
     if (message.kind === 'answer') job.resolve(message.value)
-    else job.reject(taskFailure(message.failure))
+    else job.reject(errorOfFailure(message.failure))
     pump()
   }
 

@@ -1,4 +1,4 @@
-import type { ErrorDetails } from '../errors.ts'
+import type { Failure } from './failure.ts'
 
 /**
  * Host to worker and back, over worker_threads. Columns travel as views on SharedArrayBuffers, so nothing is copied.
@@ -16,13 +16,4 @@ export type FromWorker =
   | { readonly kind: 'ready' }
   | { readonly kind: 'progress'; readonly id: number; readonly done: number; readonly total: number }
   | { readonly kind: 'answer'; readonly id: number; readonly value: unknown }
-  | {
-      readonly kind: 'failure'
-      readonly id: number
-      readonly failure: {
-        readonly kind: 'kinetics' | 'cancelled' | 'fault'
-        readonly code: string
-        readonly message: string
-        readonly details: ErrorDetails
-      }
-    }
+  | { readonly kind: 'failure'; readonly id: number; readonly failure: Failure }

@@ -1,6 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { Cancelled, KineticsError } from '../errors.ts'
+import { describeFailure, errorOfFailure } from './failure.ts'
 import { decodeMessage, encodeMessage } from './wire.ts'
 import { decodeAnswer, encodeAnswer, encodeFailure } from './wire-answer.ts'
 
@@ -104,5 +105,23 @@ describe('an answer', () => {
     const bytes = encodeFailure(new TypeError('x is undefined'))
     expect(new TextDecoder().decode(bytes)).not.toContain('wire.test')
     expect(() => decodeAnswer(bytes)).toThrow(/x is undefined/)
+  })
+})
+
+describe('a failure', () => {
+  it.each([
+    ['a mistake', new KineticsError('not-readable', 'line 3', { line: 3 })],
+    ['a cancellation', new Cancelled()],
+    ['a fault', new Error('x is undefined')],
+  ])('of %s comes through any number of processes as it was', (_what, error) => {
+    const once = errorOfFailure(describeFailure(error))
+    const twice = errorOfFailure(describeFailure(once))
+    expect(twice).toEqual(error)
+    expect(twice.constructor).toBe(error.constructor)
+    expect(describeFailure(twice)).toEqual(describeFailure(error))
+  })
+
+  it('of something thrown that is no error is a fault with its text', () => {
+    expect(describeFailure('boom')).toEqual({ kind: 'fault', code: 'fault', message: 'boom', details: {} })
   })
 })
