@@ -21,10 +21,10 @@ import { openSavedCopy } from '../study/saved-copy.ts'
 import { BrowserWindow as FakeBrowserWindow, fakeElectron } from './testing/fake-electron.ts'
 import { openIpcGate } from './ipc.ts'
 
-/** A wire as a page has it: encoded bytes in, encoded bytes out, and events. */
+/** A wire as a page has it: encoded bytes in, encoded bytes out, and encoded events. */
 interface Wire {
   send(name: string, body: Uint8Array): Promise<Uint8Array>
-  subscribe(listener: (event: HostEvent) => void): () => void
+  subscribe(listener: (bytes: Uint8Array) => void): () => void
   close(): Promise<void>
 }
 
@@ -58,7 +58,7 @@ async function overHttp(host: Host): Promise<Wire> {
   }
 }
 
-async function listen(url: string, cookie: string, signal: AbortSignal, listener: (event: HostEvent) => void): Promise<void> {
+async function listen(url: string, cookie: string, signal: AbortSignal, listener: (bytes: Uint8Array) => void): Promise<void> {
   try {
     const stream = await fetch(url, { headers: { cookie }, signal })
     let text = ''
@@ -67,7 +67,7 @@ async function listen(url: string, cookie: string, signal: AbortSignal, listener
       text += decoder.decode(piece, { stream: true })
       const whole = text.split('\n\n')
       text = whole.pop() ?? ''
-      for (const line of whole) if (line.startsWith('data: ')) listener(JSON.parse(line.slice(6)) as HostEvent)
+      for (const line of whole) if (line.startsWith('data: ')) listener(new Uint8Array(Buffer.from(line.slice(6), 'base64')))
     }
   } catch (error) {
     if (!signal.aborted && !(error instanceof TypeError)) throw error
@@ -81,7 +81,7 @@ async function overIpc(host: Host): Promise<Wire> {
   const bridge = fakeElectron.exposed(channels.bridge)
   return {
     send: async (name, body) => bridge.request(name, body),
-    subscribe: (listener) => bridge.subscribe((bytes) => listener(decodeMessage(bytes) as HostEvent)),
+    subscribe: (listener) => bridge.subscribe(listener),
     close: async () => {
       closeGate()
       window.close()
@@ -93,7 +93,7 @@ async function overIpc(host: Host): Promise<Wire> {
 const transportOver = (wire: Wire): HostTransport => ({
   call: async <Name extends RequestName>(name: Name, input: RequestInput<Name>) =>
     decodeAnswer(await wire.send(name, encodeMessage(input))) as RequestAnswers[Name],
-  subscribe: (listener) => wire.subscribe(listener),
+  subscribe: (listener) => wire.subscribe((bytes) => listener(decodeMessage(bytes) as HostEvent)),
 })
 
 beforeAll(async () => {
@@ -227,9 +227,28 @@ describe.each([
     expect(await transport.call('study.read', {})).toMatchObject({ revision: 1 })
   })
 
+  it('tells an event by the bytes that the wire’s own encoding makes of it', async () => {
+    const heard: Uint8Array[] = []
+    const stop = wire.subscribe((bytes) => heard.push(bytes))
+    const change = async (): Promise<number> => {
+      const { revision } = await transport.call('study.read', {})
+      return (await transport.call('study.change', { revision, change: { kind: 'rename-study', name: `Köhler ${revision}` } })).revision
+    }
+    // Over HTTP the stream has to open first.
+    await expect
+      .poll(async () => {
+        await change()
+        return heard.length
+      })
+      .toBeGreaterThan(1)
+    const revision = await change()
+    await expect.poll(() => heard).toContainEqual(encodeMessage({ kind: 'study-changed', revision }))
+    stop()
+  })
+
   it('tells every change and all progress, and stops telling when asked', async () => {
     const told: HostEvent[] = []
-    const stop = wire.subscribe((event) => told.push(event))
+    const stop = transport.subscribe((event) => told.push(event))
     // Over HTTP the stream opens with the present revision; over IPC it is open at once.
     await expect
       .poll(async () => {

@@ -4,7 +4,7 @@ import { mkdir, mkdtemp, rm, symlink, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { encodeMessage } from '../../shared-kinetics/contract/wire.ts'
+import { decodeMessage, encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import type { Host } from './create-host.ts'
 import { sampleHost } from './testing/host-testing.ts'
 import { createLoopbackGate, keyForOnce_ms, type LoopbackGate } from './loopback-gate.ts'
@@ -211,7 +211,8 @@ describe('the loopback server', () => {
       text += new TextDecoder().decode(piece)
       if (text.includes('data: ')) break
     }
-    expect(text).toContain('data: {"kind":"study-changed","revision":1}')
+    const data = /^data: (\S+)$/m.exec(text)?.[1] ?? ''
+    expect(decodeMessage(Buffer.from(data, 'base64'))).toEqual({ kind: 'study-changed', revision: 1 })
   })
 })
 

@@ -1,7 +1,8 @@
 import { createServer, type IncomingMessage, type Server, type ServerResponse } from 'node:http'
 import type { AddressInfo } from 'node:net'
-import { httpPaths, uploadChunkBytes } from '../../shared-kinetics/contract/host-api.ts'
+import { httpPaths, uploadChunkBytes, type HostEvent } from '../../shared-kinetics/contract/host-api.ts'
 import { encodeFailure } from '../../shared-kinetics/contract/wire-answer.ts'
+import { encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import type { Host } from './create-host.ts'
 import { createLoopbackGate, type LoopbackGate } from './loopback-gate.ts'
 import { readBody } from './read-body.ts'
@@ -135,7 +136,8 @@ async function openStream({ host, streams }: Served, response: ServerResponse): 
   response.write(eventText({ kind: 'study-changed', revision }))
 }
 
-const eventText = (event: unknown): string => `data: ${JSON.stringify(event)}\n\n`
+/** The same bytes as over IPC; an event stream carries text, so they go as base64. */
+const eventText = (event: HostEvent): string => `data: ${Buffer.from(encodeMessage(event)).toString('base64')}\n\n`
 
 function sendText(response: ServerResponse, status: number, text: string): void {
   response.writeHead(status, { ...securityHeaders(), 'content-type': 'text/plain; charset=utf-8' })

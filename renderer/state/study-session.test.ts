@@ -1,5 +1,5 @@
 import * as fc from 'fast-check'
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { applyChange, type StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import { emptyStudy, type StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import type { RunInfo, StudyResult } from '../../shared-kinetics/contract/study-result.ts'
@@ -292,5 +292,15 @@ describe('a host that cannot be reached', () => {
     expect(session.store.getState().connection).toEqual({ kind: 'ready' })
     expect((await host.call('study.read', {})).document.name).toBe('later')
     expect(session.store.getState().replica?.pending).toEqual([])
+  })
+
+  it('is said before anything is asked of it, and found again by the first event after that', async () => {
+    const host = createMemoryHost({ document: twoRuns, evaluate: resultOf })
+    const session = await started(host)
+    host.loseConnection(new HostUnreachable('It has ended.'))
+    expect(session.store.getState().connection).toEqual({ kind: 'lost', message: 'It has ended.' })
+    const { revision } = await host.call('study.read', {})
+    host.tell({ kind: 'study-changed', revision })
+    await vi.waitFor(() => expect(session.store.getState().connection).toEqual({ kind: 'ready' }))
   })
 })

@@ -162,7 +162,8 @@ export function createStudySession(transport: HostTransport): StudySession {
 
   function hear(event: HostEvent): void {
     if (event.kind === 'study-changed') {
-      if (event.revision > revision() && waitingSteps === 0) void refresh()
+      const isNews = event.revision > revision() || get().connection.kind === 'lost'
+      if (isNews && waitingSteps === 0) void refresh()
       return
     }
     if (event.kind === 'not-saved') {
@@ -178,7 +179,7 @@ export function createStudySession(transport: HostTransport): StudySession {
   return {
     store,
     async start() {
-      unsubscribe ??= transport.subscribe(hear)
+      unsubscribe ??= transport.subscribe(hear, explain)
       await refresh()
       await readRecent()
     },

@@ -7,24 +7,34 @@ import {
   type RequestName,
 } from '../../shared-kinetics/contract/host-api.ts'
 import { decodeAnswer } from '../../shared-kinetics/contract/wire-answer.ts'
-import { encodeMessage } from '../../shared-kinetics/contract/wire.ts'
+import { decodeMessage, encodeMessage } from '../../shared-kinetics/contract/wire.ts'
 import { HostUnreachable } from './host-unreachable.ts'
 import { isHostEvent } from './host-event.ts'
 
-/** The browser shell's transport: one POST a request with the binary wire as body, and one event stream. */
+/** The browser shell's transport: one POST a request with the binary wire as body, and one event stream of the same bytes in base64. */
 export function createHttpTransport(): HostTransport {
   return {
     async call<Name extends RequestName>(name: Name, input: RequestInput<Name>): Promise<RequestAnswers[Name]> {
       const bytes = await post(name, encodeMessage(input))
       return decodeAnswer(bytes) as RequestAnswers[Name]
     },
-    subscribe(listener) {
+    subscribe(listener, lost = () => undefined) {
+      let stopped = false
       const source = new EventSource(httpPaths.events, { withCredentials: true })
       source.addEventListener('message', (message: MessageEvent<string>) => {
-        const event = parseEvent(message.data)
+        const event = decodeEvent(message.data)
         if (event !== null) listener(event)
       })
-      return () => source.close()
+      source.addEventListener('error', () => {
+        // A stream breaks for lesser reasons too (a machine that slept); only a host that does not answer is lost.
+        post('program.describe', encodeMessage({})).catch((error: unknown) => {
+          if (error instanceof HostUnreachable && !stopped) lost(error)
+        })
+      })
+      return () => {
+        stopped = true
+        source.close()
+      }
     },
   }
 }
@@ -53,9 +63,9 @@ async function post(name: RequestName, body: Uint8Array): Promise<Uint8Array> {
   throw new HostUnreachable(`The program behind this page answered with status ${response.status}.`)
 }
 
-function parseEvent(text: string): HostEvent | null {
+function decodeEvent(base64: string): HostEvent | null {
   try {
-    const value: unknown = JSON.parse(text)
+    const value = decodeMessage(Uint8Array.from(atob(base64), (letter) => letter.charCodeAt(0)))
     return isHostEvent(value) ? value : null
   } catch {
     return null

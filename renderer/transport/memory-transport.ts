@@ -31,6 +31,8 @@ export interface MemoryHost extends HostTransport {
   /** A change made in another window. */
   readonly changeElsewhere: (change: StudyChange) => void
   readonly tell: (event: HostEvent) => void
+  /** Its process has ended, and the way to it has noticed. */
+  readonly loseConnection: (error: Error) => void
   readonly received: ReadonlyMap<string, { readonly fileName: string; readonly bytes: number }>
 }
 
@@ -41,6 +43,7 @@ interface Past {
 
 export function createMemoryHost(options: MemoryHostOptions = {}): MemoryHost {
   const listeners = new Set<(event: HostEvent) => void>()
+  const losses = new Set<(error: Error) => void>()
   const calls: Call[] = []
   const received = new Map<string, { fileName: string; bytes: number }>()
   let document = options.document ?? emptyStudy('study-1')
@@ -145,6 +148,9 @@ export function createMemoryHost(options: MemoryHostOptions = {}): MemoryHost {
     calls,
     received,
     tell,
+    loseConnection: (error) => {
+      for (const lost of losses) lost(error)
+    },
     changeElsewhere: (one) => void change(one),
     async call<Name extends RequestName>(name: Name, input: RequestInput<Name>) {
       const call = { name, input } as unknown as Call
@@ -152,9 +158,13 @@ export function createMemoryHost(options: MemoryHostOptions = {}): MemoryHost {
       await options.before?.(call)
       return (await answer(call)) as RequestAnswers[Name]
     },
-    subscribe(listener) {
+    subscribe(listener, lost) {
       listeners.add(listener)
-      return () => listeners.delete(listener)
+      if (lost !== undefined) losses.add(lost)
+      return () => {
+        listeners.delete(listener)
+        if (lost !== undefined) losses.delete(lost)
+      }
     },
   }
 }

@@ -72,6 +72,66 @@ describe('choice of transport', () => {
   })
 })
 
+/** Stands in for the browser's event stream: tells what a test sends. */
+class FakeEventSource extends EventTarget {
+  static last: FakeEventSource | null = null
+  closed = false
+  readonly url: string
+  constructor(url: string) {
+    super()
+    this.url = url
+    FakeEventSource.last = this
+  }
+  send(data: string): void {
+    this.dispatchEvent(new MessageEvent('message', { data }))
+  }
+  close(): void {
+    this.closed = true
+  }
+}
+const base64 = (bytes: Uint8Array): string => Buffer.from(bytes).toString('base64')
+
+describe('the event stream', () => {
+  it('carries the same bytes as the bridge, as base64; what this version does not know or cannot read is passed over', () => {
+    vi.stubGlobal('EventSource', FakeEventSource)
+    const heard: HostEvent[] = []
+    const stop = createHttpTransport().subscribe((event) => heard.push(event))
+    const source = FakeEventSource.last
+    expect(source?.url).toBe('/events')
+    const event: HostEvent = { kind: 'not-saved', message: 'Köhler µ: disk full' }
+    source?.send(base64(encodeMessage(event)))
+    for (const strange of [base64(encodeMessage({ kind: 'tea-is-ready' })), JSON.stringify(event), '', '%']) source?.send(strange)
+    expect(heard).toEqual([event])
+    stop()
+    expect(source?.closed).toBe(true)
+  })
+
+  it('that breaks tells a host that does not answer as lost, and no other', async () => {
+    vi.stubGlobal('EventSource', FakeEventSource)
+    const lost: Error[] = []
+    const asked = vi.fn<() => Promise<Response>>()
+    vi.stubGlobal('fetch', asked)
+    const stop = createHttpTransport().subscribe(
+      () => undefined,
+      (error) => lost.push(error),
+    )
+    const breaks = async (): Promise<void> => {
+      FakeEventSource.last?.dispatchEvent(new Event('error'))
+      await new Promise((resolve) => setTimeout(resolve, 10))
+    }
+    const answer = encodeAnswer({}) as Uint8Array<ArrayBuffer>
+    asked.mockResolvedValueOnce(new Response(answer, { headers: { 'content-type': 'application/octet-stream' } }))
+    await breaks()
+    expect(lost).toEqual([])
+    asked.mockRejectedValue(new TypeError('Failed to fetch'))
+    await breaks()
+    expect(lost).toEqual([expect.any(HostUnreachable)])
+    stop()
+    await breaks()
+    expect(lost).toHaveLength(1)
+  })
+})
+
 describe('events', () => {
   it('reach the listener from the bridge; what this version does not know is passed over', () => {
     const heard: HostEvent[] = []

@@ -130,8 +130,11 @@ export type HostEvent =
 export interface HostTransport {
   /** Rejects with a `KineticsError` the host sent, `Cancelled`, or a plain `Error` when the host cannot be reached. */
   call<Name extends RequestName>(name: Name, input: RequestInput<Name>): Promise<RequestAnswers[Name]>
-  /** Returns the call that ends the subscription. */
-  subscribe(listener: (event: HostEvent) => void): () => void
+  /**
+   * Returns the call that ends the subscription.
+   * @param lost - told, where the way to the host can tell, that the host does not answer any more, before it is asked anything
+   */
+  subscribe(listener: (event: HostEvent) => void, lost?: (error: Error) => void): () => void
 }
 
 /** The one method a desktop window is given; encoded by `wire.ts`, like the body of an HTTP request. */
