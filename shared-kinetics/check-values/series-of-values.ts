@@ -11,6 +11,7 @@ export const quiet: TaskContext = { checkCancelled: () => {}, progress: () => {}
 export interface RunValues {
   readonly programme: Programme
   readonly programmeGroup: number
+  readonly heatingRateSpread?: number
   readonly temperature_K: readonly number[]
   readonly time_s?: readonly number[]
   readonly reactionRate_per_s?: readonly number[]
@@ -36,6 +37,7 @@ export function seriesOf(levels: readonly number[], runs: readonly RunValues[]):
       (run): RunAtLevels => ({
         programme: run.programme,
         programmeGroup: run.programmeGroup,
+        heatingRateSpread: run.heatingRateSpread ?? Number.NaN,
         history: {
           time_s: column(Float64Array.from(run.history?.time_s ?? []), 's'),
           temperature_K: column(Float64Array.from(run.history?.temperature_K ?? []), 'K'),

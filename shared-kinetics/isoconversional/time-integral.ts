@@ -22,9 +22,17 @@ export interface TimeIntegral {
   readonly atAllLevels: (Ea: number, lnJ: Float64Array, inverseT: Float64Array) => void
 }
 
-/** The integral that belongs to a run's programme: closed form for a constant heating rate, else over the measured history. `largestEa` in J/mol. */
+/** A local heating rate within this share of the fitted one is that of a straight ramp, noise of the temperature apart. */
+const straightWithin = 0.01
+
+/**
+ * The integral that belongs to a run's programme: closed form for a constant heating rate, else over the measured history, which also serves a ramp that was measured
+ * and wanders by more than 1 %: one fitted rate for all of it would carry a share of that into Ea, larger by 1/ln(fastest/slowest rate).
+ *
+ * @param largestEa - in J/mol
+ */
 export function timeIntegral(run: RunAtLevels, largestEa: number): TimeIntegral {
-  return run.programme.kind === 'constant-heating-rate'
+  return run.programme.kind === 'constant-heating-rate' && !(run.heatingRateSpread > straightWithin)
     ? constantRateIntegral(run.programme.heatingRate, run.temperature_K)
     : historyIntegral(run.history, run.time_s, largestEa)
 }

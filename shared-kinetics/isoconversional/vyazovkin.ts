@@ -24,8 +24,8 @@ export const vyazovkinInfo: MethodInfo = {
  *
  * over the runs i, j. At one conversion A·J = g(alpha) is the same for every run, so that all J are equal and Phi is n(n - 1) for error-free data.
  *
- * J is taken in closed form, (Ea/(R beta)) p(Ea/(R T)), for runs of constant heating rate, and over the measured T(t) from the first sample of the history for all
- * others; a series may mix them. The minimum is found as the root of dPhi/dEa inside a bracket of 1 to 1000 kJ/mol, whose sign is scanned in steps of 10 %.
+ * J is taken in closed form, (Ea/(R beta)) p(Ea/(R T)), for runs whose heating rate is constant within 1 % or was not measured, and over the measured T(t) from the
+ * first sample of the history for all others; a series may mix them. The minimum is found as the root of dPhi/dEa inside a bracket of 1 to 1000 kJ/mol, whose sign is scanned in steps of 10 %.
  *
  * Standard error, by linearising ln Jᵢ in Ea at the root: with yᵢ = ln Jᵢ, uᵢ = -R dyᵢ/dEa (an effective 1/T) and s² = Σ(yᵢ - ȳ)²/(n - 2),
  * se(Ea) = R s/√Σ(uᵢ - ū)². r2 is that of the same linearised regression, yᵢ + Ea uᵢ/R against uᵢ. Since Phi ≈ n(n - 1) + n Σ(yᵢ - ȳ)² near its minimum, the interval

@@ -6,6 +6,8 @@ export interface RunAtLevels {
   readonly programme: Programme
   /** Runs of one programme (replicates) share this number; methods count distinct values of it. */
   readonly programmeGroup: number
+  /** Largest distance of the local heating rate from the fitted one, as a share; NaN unless a constant heating rate was measured. */
+  readonly heatingRateSpread: number
   readonly history: TemperatureHistory
   /** Time from the start of the history to the level. */
   readonly time_s: Column<'s'>
