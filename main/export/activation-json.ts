@@ -55,6 +55,7 @@ function runFields(run: RunResult): Record<string, unknown> {
     window: windowFields(run.window),
     peak_K: run.peak_K,
     enthalpy_J_per_g: run.enthalpy_J_per_g,
+    enthalpyMagnitude_J_per_g: run.enthalpyMagnitude_J_per_g,
     temperatureAtLevel_K: run.temperatureAtLevel_K,
     timeAtLevel_s: run.timeAtLevel_s,
   }

@@ -1,6 +1,7 @@
 import type { AnalysisSettings } from '../../shared-kinetics/tasks/study-input.ts'
 import type { Window } from '../../shared-kinetics/series/run.ts'
-import type { RunResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { ProfileResult, RunResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import type { ExportSource } from './activation-json.ts'
 import { caution } from './caution.ts'
@@ -12,6 +13,7 @@ export function activationNotes({ document, result, program }: ExportSource): st
   const sections: readonly (readonly [string, readonly string[]])[] = [
     ['Caution', [caution]],
     ['Intervals', intervalLines({ document, result, program })],
+    ['Means', result.profiles.flatMap(meanLines)],
     ['Settings', settingLines(document.settings, result.signal)],
     ['Runs', result.runs.flatMap(runLines)],
     ['Runs not used', leftOut.map((run) => `${run.label}: ${run.file.name}, SHA-256 ${run.file.sha256}`)],
@@ -43,7 +45,14 @@ function intervalLines({ result }: ExportSource): string[] {
       k.lower95_kJ_per_mol === null || k.upper95_kJ_per_mol === null
         ? ''
         : ` (95 %: ${k.lower95_kJ_per_mol.toFixed(1)} to ${k.upper95_kJ_per_mol.toFixed(1)})`
-    lines.push(`Kissinger, from the peaks: Ea ${k.Ea_kJ_per_mol.toFixed(2)} kJ/mol${interval}, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s)`)
+    lines.push(
+      `Kissinger, from the peaks: Ea ${k.Ea_kJ_per_mol.toFixed(2)} kJ/mol${interval}, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s). Method: ${k.sources.join('; ')}`,
+    )
+  }
+  if (result.runs.some((run) => run.heatingRateStandardError_K_per_min !== null)) {
+    lines.push(
+      'Heating rates: the standard error is that of the line through T(t), its rows taken as independent; it does not tell how steady the rate is',
+    )
   }
   return lines
 }
@@ -62,10 +71,22 @@ function settingLines(settings: AnalysisSettings, signal: string | null): string
 function runLines(run: RunResult): string[] {
   return [
     `${run.label}: ${run.fileName}, column ${run.column}, SHA-256 ${run.sha256}`,
-    `  ${programmeText(run)}; ${run.rows} rows; window ${windowText(run.window)}${run.peak_K === null ? '' : `; peak ${celsius(run.peak_K)}`}${
-      run.enthalpy_J_per_g === null ? '' : `; enthalpy ${run.enthalpy_J_per_g.toFixed(1)} J/g`
-    }`,
+    `  ${programmeText(run)}; ${run.rows} rows; window ${windowText(run.window)}${run.peak_K === null ? '' : `; peak ${celsius(run.peak_K)}`}${enthalpyText(
+      run,
+    )}`,
   ]
+}
+
+function meanLines({ label, mean }: ProfileResult): string[] {
+  const { from, to, Ea_kJ_per_mol: Ea, spread_kJ_per_mol: spread } = mean
+  if (Ea === null || spread === null) return []
+  return [`${label}: ${Ea.toFixed(2)} kJ/mol over conversion ${from} to ${to} (${levelsOfMean(mean)}), spread ${spread.toFixed(2)} kJ/mol`]
+}
+
+/** Exothermic is negative; a magnitude says that it has no sign. */
+function enthalpyText({ enthalpy_J_per_g: signed, enthalpyMagnitude_J_per_g: magnitude }: RunResult): string {
+  if (signed !== null) return `; enthalpy ${signed.toFixed(1)} J/g (exothermic is negative)`
+  return magnitude === null ? '' : `; enthalpy ${magnitude.toFixed(1)} J/g, its sign not known`
 }
 
 function programmeText(run: RunResult): string {

@@ -29,7 +29,16 @@ const profile: ProfileResult = {
   status: ['ok', 'ok', 'level-not-reached'],
   lines: [],
   phi: [],
-  mean: { from: 0.1, to: 0.9, Ea_kJ_per_mol: 103.9, spread_kJ_per_mol: 214.7 },
+  mean: {
+    from: 0.1,
+    to: 0.9,
+    Ea_kJ_per_mol: 103.9,
+    spread_kJ_per_mol: 214.7,
+    levelsUsed: 2,
+    levelsInRange: 3,
+    firstLevel: 0.1,
+    lastLevel: 0.5,
+  },
 }
 
 const withoutInterval: ProfileResult = {
@@ -64,6 +73,7 @@ const run: RunResult = {
   window: { kind: 'temperature', start_K: 430, end_K: 870 },
   peak_K: 640.1,
   enthalpy_J_per_g: null,
+  enthalpyMagnitude_J_per_g: null,
   temperatureAtLevel_K: [600, 610, null],
   timeAtLevel_s: [1, 2, null],
   reactionRateAtLevel_per_s: [0.1, 0.2, null],
@@ -101,6 +111,8 @@ const result: StudyResult = {
     upper95_kJ_per_mol: 215.2,
     lnA_per_s: 34.1,
     peaks_K: [612],
+    conversionAtPeak: [0.61],
+    sources: ['H. E. Kissinger, Anal. Chem. 29 (1957) 1702'],
   },
   findings: [
     {
@@ -158,6 +170,7 @@ describe('activation.json, as scripts rely on it', () => {
         upper95_kJ_per_mol: 215.2,
         lnA_per_s: 34.1,
         peaks_K: [612],
+        conversionAtPeak: [0.61],
       },
     })
     expect((json.runs as unknown[])[0]).toMatchObject({
@@ -175,6 +188,7 @@ describe('activation.json, as scripts rely on it', () => {
       window: { start_K: 430, end_K: 870 },
       peak_K: 640.1,
       enthalpy_J_per_g: null,
+      enthalpyMagnitude_J_per_g: null,
     })
     expect((json.runs as unknown[])[1]).toMatchObject({ window: { start_K: null, end_K: null, start_s: 0, end_s: 600 } })
     expect((json.findings as unknown[])[0]).toMatchObject({
@@ -247,6 +261,18 @@ describe('activation.csv', () => {
     expect(notes).toContain('caution, heating-rate-differs-from-nominal')
     expect(notes).toContain('Line one line two')
     expect(notes).toContain('levels of conversion: 0.05 0.1')
+    expect(notes).toContain('Friedman: 103.90 kJ/mol over conversion 0.1 to 0.9 (2 of 3 levels, 0.1 to 0.5)')
+    expect(notes).toMatch(/Kissinger.*Method: H\. E\. Kissinger/)
+  })
+
+  it('gives an enthalpy its sign, or says that it has none', () => {
+    const notesOf = (change: Partial<RunResult>): string => {
+      const [text] = [exportResults({ ...source, result: { ...result, runs: [{ ...run, ...change }] } }, 'csv')[1]]
+      return new TextDecoder('utf-8').decode(text?.bytes)
+    }
+    expect(notesOf({ enthalpy_J_per_g: -250, enthalpyMagnitude_J_per_g: 250 })).toContain('enthalpy -250.0 J/g (exothermic is negative)')
+    expect(notesOf({ enthalpyMagnitude_J_per_g: 250 })).toContain('enthalpy 250.0 J/g, its sign not known')
+    expect(notesOf({})).not.toContain('enthalpy')
   })
 })
 
@@ -371,6 +397,7 @@ describe('the table on the screen', () => {
     expect(lines[2]?.trim()).toMatch(/^0\.05 +211\.2 ±6\.1 +211\.2$/)
     expect(lines[4]?.trim()).toMatch(/^0\.15 +- +-$/)
     expect(lines.at(-2)).toContain('Kissinger')
+    expect(lines.at(-3)).toContain('Friedman 103.9 (2 of 3 levels, 0.1 to 0.5)')
     expect(new Set(lines.slice(1, 5).map((line) => line.length)).size).toBe(1)
   })
 })

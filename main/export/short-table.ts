@@ -1,3 +1,4 @@
+import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
 import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
 import type { ProfileResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
 
@@ -31,7 +32,9 @@ function halfWidth(Ea: number, lower: number | null, upper: number | null): numb
 
 function means(result: StudyResult): string[] {
   const texts = result.profiles.flatMap(({ label, mean }) =>
-    mean.Ea_kJ_per_mol === null ? [] : [`${label} ${mean.Ea_kJ_per_mol.toFixed(1)}`],
+    mean.Ea_kJ_per_mol === null
+      ? []
+      : [`${label} ${mean.Ea_kJ_per_mol.toFixed(1)}${mean.levelsUsed < mean.levelsInRange ? ` (${levelsOfMean(mean)})` : ''}`],
   )
   const range = result.profiles[0]?.mean
   return range === undefined || texts.length === 0

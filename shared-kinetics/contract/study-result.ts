@@ -4,4 +4,13 @@ export type { Finding, FindingCode, Severity } from '../review/finding.ts'
 export type { NominalSource, RunInfo, SignalInfo, Window } from '../series/run.ts'
 export type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
 export type { AnalysisSettings, BaselineKind } from '../tasks/study-input.ts'
-export type { KissingerResult, LineResult, Maybe, PhiResult, ProfileResult, RunResult, StudyResult } from '../tasks/study-result.ts'
+export type {
+  KissingerResult,
+  LineResult,
+  Maybe,
+  MeanEnergy,
+  PhiResult,
+  ProfileResult,
+  RunResult,
+  StudyResult,
+} from '../tasks/study-result.ts'

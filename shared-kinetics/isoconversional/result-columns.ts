@@ -26,8 +26,8 @@ export function resultColumns(
 ): ResultColumns {
   const levels = series.levels.length
   const empty = (): Float64Array => new Float64Array(levels).fill(Number.NaN)
-  const dof = Math.max(0, series.runs.length - 2)
-  const t = countProgrammes(series) >= 3 ? studentTQuantile(0.975, dof) : Number.NaN
+  const dof = countProgrammes(series) >= 3 ? series.runs.length - 2 : 0
+  const t = dof > 0 ? studentTQuantile(0.975, dof) : Number.NaN
   const status = Array.from<LevelStatus>({ length: levels }).fill('too-few-programmes')
   const Ea = column(empty(), 'J/mol')
   const standardError = column(empty(), 'J/mol')

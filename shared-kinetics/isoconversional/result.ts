@@ -51,6 +51,7 @@ export interface LevelPhi {
 /** Ea against conversion by one method. All columns are as long as the levels; where status is not `ok` the numbers are NaN. */
 export interface IsoconversionalResult {
   readonly method: MethodId
+  /** `dof` is n - 2 for n runs, and 0 where fewer than three distinct programmes leave no interval. */
   readonly interval: { readonly kind: 'student-t'; readonly level: 0.95; readonly dof: number; readonly pointwise: true }
   readonly Ea: Column<'J/mol'>
   /** One standard error of the regression, n - 2 degrees of freedom; NaN with fewer than three distinct programmes. */

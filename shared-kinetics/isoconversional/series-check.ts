@@ -1,4 +1,5 @@
 import { KineticsError } from '../errors.ts'
+import type { Programme } from '../series/programme.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
 import type { MethodInfo } from './result.ts'
 
@@ -40,11 +41,12 @@ export function checkSeries(info: MethodInfo, series: SeriesAtLevels): void {
   })
 }
 
-const programmeNames = {
+/** Temperature programmes as sentences name them. */
+export const programmeNames: Readonly<Record<Programme['kind'], string>> = {
   'constant-heating-rate': 'a constant heating rate',
   isothermal: 'a hold at one temperature',
   general: 'a programme that is neither a constant heating rate nor a hold',
-} as const
+}
 
 /** Number of distinct programmes; replicates count once. */
 export const countProgrammes = (series: SeriesAtLevels): number => new Set(series.runs.map((run) => run.programmeGroup)).size

@@ -32,6 +32,7 @@ export interface KissingerEstimate {
   readonly lnA: number
   readonly lnAStandardError: number
   readonly r2: number
+  /** n - 2, and 0 with fewer than three distinct programmes. */
   readonly dof: number
   /** ln(beta/Tp²), beta in K/s, against 1/Tp, one point a peak. */
   readonly line: { readonly x_per_K: Column<'1/K'>; readonly y: Float64Array; readonly slope_K: number; readonly intercept: number }
@@ -67,7 +68,7 @@ export function kissinger(peaks: readonly RatePeak[]): KissingerEstimate {
   const x = Float64Array.from(peaks, (peak) => 1 / peak.temperature)
   const y = Float64Array.from(peaks, (peak) => Math.log(peak.heatingRate) - 2 * Math.log(peak.temperature))
   const fit = lineFit(x, y)
-  const dof = Math.max(0, fit.dof)
+  const dof = programmes >= 3 ? fit.dof : 0
   const line = { x_per_K: column(x, '1/K'), y, slope_K: fit.slope, intercept: fit.intercept }
   const none = (status: KissingerEstimate['status']): KissingerEstimate => {
     const Ea = quantity(Number.NaN, 'J/mol')

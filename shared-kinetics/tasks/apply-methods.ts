@@ -1,4 +1,5 @@
 import { methods } from '../isoconversional/registry.ts'
+import { programmeNames } from '../isoconversional/series-check.ts'
 import { methodIds, type IsoconversionalResult, type MethodId, type MethodInfo, type TaskContext } from '../isoconversional/result.ts'
 import { kissinger, type RatePeak } from '../peak-methods/kissinger.ts'
 import type { LeftOut } from '../review/review-input.ts'
@@ -7,12 +8,6 @@ import type { SeriesAtLevels } from '../series/series-at-levels.ts'
 import { quantity } from '../units/quantity.ts'
 import { kissingerResult } from './profile-result.ts'
 import type { KissingerResult } from './study-result.ts'
-
-const programmeNames: Readonly<Record<Programme['kind'], string>> = {
-  'constant-heating-rate': 'a constant heating rate',
-  isothermal: 'a hold at one temperature',
-  general: 'a programme that is neither a constant heating rate nor a hold',
-}
 
 /**
  * Methods to run, in the order of `methodIds`: those asked for that apply to the programme of every run. Left out with a reason are those that were asked for by
@@ -49,6 +44,7 @@ export interface RunPeak {
   readonly programmeGroup: number
   /** NaN where the reaction rate has no maximum. */
   readonly peak_K: number
+  readonly conversionAtPeak: number
 }
 
 /** Kissinger's Ea where every run was heated at a constant rate and has a rate peak; else null, with the reason. */
@@ -69,7 +65,14 @@ export function applyKissinger(runs: readonly RunPeak[]): {
   const estimate = kissinger(peaks)
   switch (estimate.status) {
     case 'ok':
-      return { kissinger: kissingerResult(estimate, peaks), leftOut: [] }
+      return {
+        kissinger: kissingerResult(
+          estimate,
+          peaks,
+          runs.map((run) => run.conversionAtPeak),
+        ),
+        leftOut: [],
+      }
     case 'too-few-programmes':
       // Said once, by the rule on the number of programmes.
       return { kissinger: null, leftOut: [] }

@@ -299,9 +299,15 @@ describe('signals', () => {
     }
   })
 
-  it('the sign of an enthalpy follows the stated direction; without one it is the magnitude, without a mass it is not to be had', () => {
+  it('the sign of an enthalpy follows the stated direction; without one there is the magnitude alone, and a note, without a mass neither', () => {
     expect((enthalpyOfFirst({ exothermic: 'up' }) ?? Number.NaN) / 250).toBeCloseTo(1, 2)
-    expect((enthalpyOfFirst({ exothermic: null }) ?? Number.NaN) / 250).toBeCloseTo(1, 2)
+    const unknown = evaluate(
+      withBoth.map((run) => ({ ...run, info: { ...run.info, exothermic: null } })),
+      { signal: 'heat-flow', methods: ['kas'] },
+    )
+    expect(unknown.runs[0]?.enthalpy_J_per_g).toBeNull()
+    expect((unknown.runs[0]?.enthalpyMagnitude_J_per_g ?? Number.NaN) / 250).toBeCloseTo(1, 2)
+    expect(codes(unknown)).toContain('exothermic-direction-unknown')
     expect(enthalpyOfFirst({ initialMass_kg: null })).toBeNull()
   })
 })

@@ -1,9 +1,9 @@
 import type { IsoconversionalResult, MethodInfo } from '../isoconversional/result.ts'
-import type { KissingerEstimate, RatePeak } from '../peak-methods/kissinger.ts'
+import { kissingerSources, type KissingerEstimate, type RatePeak } from '../peak-methods/kissinger.ts'
 import { sources } from '../sources.ts'
 import { joulesToKilojoules } from '../units/convert.ts'
 import { maybe, maybes } from './maybe.ts'
-import type { KissingerResult, ProfileResult } from './study-result.ts'
+import type { KissingerResult, MeanEnergy, ProfileResult } from './study-result.ts'
 
 const kilojoules = (values: Float64Array): Float64Array => values.map(joulesToKilojoules)
 
@@ -48,25 +48,35 @@ export function profileResult(
 /** Levels are compared with the ends of a range within rounding, so that 0.1 belongs to 0.1 … 0.9 however it was made. */
 const rounding = 1e-9
 
-function meanOf(Ea: readonly (number | null)[], levels: readonly number[], [from, to]: readonly [number, number]): ProfileResult['mean'] {
-  const inside = Ea.filter((value, i): value is number => {
-    const level = levels[i] ?? Number.NaN
-    return value !== null && level >= from - rounding && level <= to + rounding
-  })
-  if (inside.length === 0) return { from, to, Ea_kJ_per_mol: null, spread_kJ_per_mol: null }
+function meanOf(Ea: readonly (number | null)[], levels: readonly number[], [from, to]: readonly [number, number]): MeanEnergy {
+  const inRange = levels.flatMap((level, i) => (level >= from - rounding && level <= to + rounding ? [{ level, Ea: Ea[i] ?? null }] : []))
+  // An Ea at or below 0 means nothing, and neither would a mean that it entered.
+  const used = inRange.flatMap(({ level, Ea: value }) => (value !== null && value > 0 ? [{ level, value }] : []))
+  const values = used.map(({ value }) => value)
+  const some = used.length > 0
   return {
     from,
     to,
-    Ea_kJ_per_mol: inside.reduce((sum, value) => sum + value, 0) / inside.length,
-    spread_kJ_per_mol: Math.max(...inside) - Math.min(...inside),
+    Ea_kJ_per_mol: some ? values.reduce((sum, value) => sum + value, 0) / values.length : null,
+    spread_kJ_per_mol: some ? Math.max(...values) - Math.min(...values) : null,
+    levelsUsed: used.length,
+    levelsInRange: inRange.length,
+    firstLevel: used[0]?.level ?? null,
+    lastLevel: used.at(-1)?.level ?? null,
   }
 }
 
-export const kissingerResult = (estimate: KissingerEstimate, peaks: readonly RatePeak[]): KissingerResult => ({
+export const kissingerResult = (
+  estimate: KissingerEstimate,
+  peaks: readonly RatePeak[],
+  conversionAtPeak: readonly number[],
+): KissingerResult => ({
   Ea_kJ_per_mol: joulesToKilojoules(estimate.Ea),
   standardError_kJ_per_mol: maybe(joulesToKilojoules(estimate.standardError)),
   lower95_kJ_per_mol: maybe(joulesToKilojoules(estimate.lower95)),
   upper95_kJ_per_mol: maybe(joulesToKilojoules(estimate.upper95)),
   lnA_per_s: estimate.lnA,
   peaks_K: peaks.map((peak) => peak.temperature),
+  conversionAtPeak: maybes(conversionAtPeak),
+  sources: kissingerSources.map((key) => sources[key]),
 })

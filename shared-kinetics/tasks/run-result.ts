@@ -10,6 +10,7 @@ import type { Maybe, RunResult } from './study-result.ts'
 export function runResult(info: RunInfo, signal: SignalInfo, run: ConvertedRun, read: LevelsRead, programmeGroup: number): RunResult {
   const { programme } = run.told
   const constant = programme.kind === 'constant-heating-rate' ? programme : null
+  const perGram = areaPerGram(info, signal, run.converted.area)
   return {
     runId: info.id,
     label: info.label,
@@ -30,7 +31,8 @@ export function runResult(info: RunInfo, signal: SignalInfo, run: ConvertedRun, 
     initialMass_kg: info.initialMass_kg,
     window: run.window,
     peak_K: maybe(run.peak_K),
-    enthalpy_J_per_g: enthalpy(info, signal, run.converted.area),
+    enthalpy_J_per_g: signedEnthalpy(info, signal, perGram),
+    enthalpyMagnitude_J_per_g: perGram === null ? null : Math.abs(perGram),
     temperatureAtLevel_K: maybes(read.temperature_K),
     timeAtLevel_s: maybes(read.time_s),
     reactionRateAtLevel_per_s: maybes(read.reactionRate_per_s),
@@ -39,17 +41,20 @@ export function runResult(info: RunInfo, signal: SignalInfo, run: ConvertedRun, 
   }
 }
 
-/**
- * Area of the peak per gram of sample. By the convention of thermodynamics exothermic is negative and endothermic positive where the run says which way an
- * exothermic event points (a heat-release rate always is exothermic); where it does not, the magnitude stands alone. null where the signal is no heat, or a heat
- * flow in W without the sample's mass.
- */
-function enthalpy(info: RunInfo, signal: SignalInfo, area: number): Maybe {
+/** Area of the peak per gram of sample in J/g, upwards positive; null where the signal is no heat, or a heat flow in W without the sample's mass. */
+function areaPerGram(info: RunInfo, signal: SignalInfo, area: number): Maybe {
   if (signal.unit !== 'W' && signal.unit !== 'W/kg') return null
   const perKilogram = signal.unit === 'W/kg' ? area : area / (info.initialMass_kg ?? Number.NaN)
-  if (!Number.isFinite(perKilogram)) return null
-  const perGram = perKilogram / 1000
+  return maybe(perKilogram / 1000)
+}
+
+/**
+ * By the convention of thermodynamics exothermic is negative and endothermic positive, where the run says which way an exothermic event points (a heat-release rate
+ * always is exothermic). Where it does not there is no sign to give.
+ */
+function signedEnthalpy(info: RunInfo, signal: SignalInfo, perGram: Maybe): Maybe {
+  if (perGram === null) return null
   if (signal.quantity === 'heat-release') return -perGram
-  if (info.exothermic === null) return Math.abs(perGram)
+  if (info.exothermic === null) return null
   return info.exothermic === 'up' ? -perGram : perGram
 }

@@ -20,6 +20,7 @@ export interface RunResult {
   readonly programmeGroup: number
   readonly nominalHeatingRate_K_per_min: Maybe
   readonly heatingRate_K_per_min: Maybe
+  /** Of the line through T(t), rows taken as independent of each other: how well the line is drawn, not how steady the heating rate is. */
   readonly heatingRateStandardError_K_per_min: Maybe
   readonly heatingRateSource: 'measured' | 'option' | 'nominal' | null
   /** Mean temperature over the window of an isothermal run. */
@@ -29,7 +30,10 @@ export interface RunResult {
   /** In temperature for constant heating rates, in time for the rest; the window that was used. */
   readonly window: Window
   readonly peak_K: Maybe
+  /** Exothermic negative; null where the run is no heat, its sample's mass or the direction of its exothermic events is not known. */
   readonly enthalpy_J_per_g: Maybe
+  /** Without its sign, so also where the direction is not known. */
+  readonly enthalpyMagnitude_J_per_g: Maybe
   /** At each level: where the run stands. null where it does not reach the level. */
   readonly temperatureAtLevel_K: readonly Maybe[]
   readonly timeAtLevel_s: readonly Maybe[]
@@ -69,6 +73,7 @@ export interface ProfileResult {
   readonly label: string
   readonly sources: readonly string[]
   readonly evidence: 'line' | 'minimum'
+  /** `dof` is 0 where there is no interval. */
   readonly interval: { readonly kind: 'student-t'; readonly level: 0.95; readonly dof: number; readonly pointwise: true }
   readonly Ea_kJ_per_mol: readonly Maybe[]
   readonly standardError_kJ_per_mol: readonly Maybe[]
@@ -81,8 +86,21 @@ export interface ProfileResult {
   /** Indexed by level; empty where the method has the other kind of evidence. `x`/`y` are in the order of `StudyResult.runs`. */
   readonly lines: readonly LineResult[]
   readonly phi: readonly PhiResult[]
-  /** Mean of Ea over the levels of `settings.meanRange` that are `ok`, and the spread (max - min) there. */
-  readonly mean: { readonly from: number; readonly to: number; readonly Ea_kJ_per_mol: Maybe; readonly spread_kJ_per_mol: Maybe }
+  readonly mean: MeanEnergy
+}
+
+/** Mean of Ea over the levels of `settings.meanRange` that are `ok` and above 0, and the spread (max - min) there. */
+export interface MeanEnergy {
+  /** The range asked for. */
+  readonly from: number
+  readonly to: number
+  readonly Ea_kJ_per_mol: Maybe
+  readonly spread_kJ_per_mol: Maybe
+  /** Levels that went into it, of those in the range, and where they begin and end. */
+  readonly levelsUsed: number
+  readonly levelsInRange: number
+  readonly firstLevel: Maybe
+  readonly lastLevel: Maybe
 }
 
 export interface KissingerResult {
@@ -91,7 +109,10 @@ export interface KissingerResult {
   readonly lower95_kJ_per_mol: Maybe
   readonly upper95_kJ_per_mol: Maybe
   readonly lnA_per_s: number
+  /** In the order of `StudyResult.runs`, as are the conversions reached at them. */
   readonly peaks_K: readonly number[]
+  readonly conversionAtPeak: readonly Maybe[]
+  readonly sources: readonly string[]
 }
 
 /** Everything that follows from a study's runs and settings. Derived, never edited. */

@@ -2,6 +2,7 @@ import { useMemo } from 'react'
 import { Button } from 'react-aria-components'
 import type { ProfileResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { activationAtLevel, activationFigure } from '../../../shared-kinetics/figure/activation-figure.ts'
+import { levelsOfMean } from '../../../shared-kinetics/figure/levels-of-mean.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
 import { MethodSample } from '../../charts/MethodSample.tsx'
 import { Choice, Choices } from '../../sheet/Choice.tsx'
@@ -105,7 +106,8 @@ function MeanLine({ profile, document, actions }: ActivationProps & { readonly p
             <>
               , varying by <strong>{decimals(spread, 1)}</strong> kJ/mol
             </>
-          )}
+          )}{' '}
+          ({levelsOfMean(profile.mean)})
         </output>
       )}
     </div>

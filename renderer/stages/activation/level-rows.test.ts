@@ -23,6 +23,7 @@ const runAt = (rate: number, temperatures_K: readonly (number | null)[]): RunRes
   window: { kind: 'temperature', start_K: 400, end_K: 700 },
   peak_K: null,
   enthalpy_J_per_g: null,
+  enthalpyMagnitude_J_per_g: null,
   temperatureAtLevel_K: temperatures_K,
   timeAtLevel_s: temperatures_K.map((T) => (T === null ? null : (T - 400) * 10)),
   reactionRateAtLevel_per_s: temperatures_K.map(() => null),
@@ -53,7 +54,16 @@ const friedman: ProfileResult = {
   status: ['ok', 'level-not-reached'],
   lines: [],
   phi: [],
-  mean: { from: 0.1, to: 0.9, Ea_kJ_per_mol: 150.25, spread_kJ_per_mol: 0 },
+  mean: {
+    from: 0.1,
+    to: 0.9,
+    Ea_kJ_per_mol: 150.25,
+    spread_kJ_per_mol: 0,
+    levelsUsed: 2,
+    levelsInRange: 3,
+    firstLevel: 0.1,
+    lastLevel: 0.5,
+  },
 }
 const starink: ProfileResult = {
   ...friedman,

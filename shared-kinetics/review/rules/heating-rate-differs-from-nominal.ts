@@ -19,9 +19,8 @@ export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] 
         stage: 'runs',
         title: `${info.label} heated at ${digits(measured, 4)} K/min, nominal ${digits(nominal, 4)}`,
         message:
-          `Over the reaction T(t) rises by ${digits(measured, 4)} K/min, ${percent(Math.abs(off))} ${off > 0 ? 'faster' : 'slower'} than the nominal heating rate of ` +
-          `${digits(nominal, 4)} K/min${quoted(info.nominalHeatingRate?.text)}. Ea is calculated with the measured one; the nominal one would shift it. ` +
-          'Where they are far apart check the time column: a wrong unit of time shows like this.',
+          `T(t) rises by ${digits(measured, 4)} K/min over the reaction, ${percent(Math.abs(off))} ${off > 0 ? 'faster' : 'slower'} than nominal${quoted(info.nominalHeatingRate?.text)}. ` +
+          'Ea is calculated with the measured rate; the nominal one would shift it. Where they are far apart check the time column for a wrong unit.',
         run: info.id,
         level: null,
         evidence: { measured_K_per_min: measured, nominal_K_per_min: nominal, difference_percent: 100 * off },

@@ -27,9 +27,8 @@ export function integralLagsDifferential({ study, result }: ReviewInput): Findin
       stage: 'activation',
       title: `Integral and differential Ea differ by up to ${percent(worst.gap)}`,
       message:
-        `At conversion ${digits(worst.level)} Vyazovkin gives ${digits(worst.integral)} kJ/mol and Friedman ${digits(worst.differential)} kJ/mol. A method that integrates from zero ` +
-        'averages Ea over all conversions below, and lags where Ea changes; Friedman follows at once, but its rates are more sensitive to noise and baseline. ' +
-        'Where both are smooth, trust Friedman for how Ea changes, and do not carry the integral values into a prediction level by level.',
+        `At conversion ${digits(worst.level)} Vyazovkin gives ${digits(worst.integral)} and Friedman ${digits(worst.differential)} kJ/mol. An integral from zero averages Ea over all conversions ` +
+        'below and lags where it changes; Friedman follows at once, but is more sensitive to noise and baseline. Where both are smooth, trust Friedman.',
       run: null,
       level: worst.level,
       evidence: {

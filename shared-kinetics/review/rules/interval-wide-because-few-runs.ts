@@ -1,38 +1,34 @@
 import { studentTQuantile } from '../../numerics/student-t.ts'
 import type { Finding } from '../finding.ts'
+import { halfIntervalOf, wideInterval } from '../half-intervals.ts'
+import { leadingProfile } from '../leading-profile.ts'
 import type { ReviewInput } from '../review-input.ts'
+import { runsAtOdds } from '../runs-at-odds.ts'
 import { digits, percent } from '../words.ts'
-import { leadingProfile } from './energy-varies.ts'
 
-const fewDegrees = 2
-const wide = 0.1
-
-/** Fires where at most two degrees of freedom (three or four runs) go with a median half interval of more than 10 % of Ea. */
-export function intervalWideBecauseFewRuns({ result }: ReviewInput): Finding[] {
-  const profile = leadingProfile(result.profiles)
-  if (profile === undefined) return []
+/**
+ * Fires where the median half interval is more than 10 % of Ea, but would not be with the 1.96 of many runs in place of Student's t: the width is for want of runs.
+ * Where it would be too, or one run is at odds with the others, `runs-do-not-agree` speaks.
+ */
+export function intervalWideBecauseFewRuns(input: ReviewInput): Finding[] {
+  const profile = leadingProfile(input.result.profiles)
+  const half = profile === undefined ? null : halfIntervalOf(profile)
+  if (profile === undefined || half === null || half.share <= wideInterval || half.shareOfMany > wideInterval) return []
+  if (runsAtOdds(input, 0).length > 0) return []
   const { dof } = profile.interval
-  if (dof < 1 || dof > fewDegrees) return []
-  const shares = profile.Ea_kJ_per_mol.flatMap((Ea, i) => {
-    const upper = profile.upper95_kJ_per_mol[i] ?? null
-    return Ea === null || upper === null || Ea <= 0 ? [] : [(upper - Ea) / Ea]
-  }).sort((a, b) => a - b)
-  const middle = shares[shares.length >> 1]
-  if (middle === undefined || middle <= wide) return []
-  const now = studentTQuantile(0.975, dof)
   const next = studentTQuantile(0.975, dof + 1)
   return [
     {
       code: 'interval-wide-because-few-runs',
       severity: 'note',
       stage: 'activation',
-      title: `95 % interval of ±${percent(middle)} rests on ${dof + 2} runs`,
+      title: `95 % interval of ±${percent(half.share)} rests on ${dof + 2} runs`,
       message:
-        `Half the 95 % interval of Ea (${profile.label}) is ${percent(middle)} of Ea at the middle level. With ${dof + 2} runs a standard error is multiplied by ${digits(now)}; ` +
-        `with one run more it would be ${digits(next)}. Most of the width is for want of runs, not for bad ones: add a heating rate or a replicate.`,
+        `Half the interval of Ea (${profile.label}, median level) is ${percent(half.share)} of Ea: with ${dof + 2} runs a standard error is multiplied by ${digits(half.t)}, with one more ` +
+        `by ${digits(next)}, with many 1.96. The width is for want of runs: add a heating rate or a replicate.`,
       run: null,
       level: null,
-      evidence: { runs: dof + 2, halfInterval_percent: 100 * middle, t: now, tWithOneMore: next },
+      evidence: { runs: dof + 2, halfInterval_percent: 100 * half.share, t: half.t, tWithOneMore: next },
       basis: "Student's t; 10 % is common practice",
       sources: ['abramowitz-stegun-1964', 'ictac-2011'],
     },

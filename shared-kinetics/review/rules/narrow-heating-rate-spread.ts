@@ -23,12 +23,12 @@ export function narrowHeatingRateSpread({ runs }: ReviewInput): Finding[] {
       stage: 'runs',
       title: `Fastest heating rate only ${digits(ratio)} times the slowest`,
       message:
-        `Heating rates go from ${digits(slowest)} to ${digits(fastest)} K/min, a ratio of ${digits(ratio)}. The runs then lie close together in temperature, and small errors of ` +
-        `temperature become large errors of Ea. Add a run that is slower or faster, so that the fastest is at least ${smallestRatio} times the slowest.`,
+        `From ${digits(slowest)} to ${digits(fastest)} K/min the ratio is ${digits(ratio)}. The runs lie close together in temperature, so that its small errors become large errors of Ea. ` +
+        'Add a slower or faster run: 5 to 10 times the slowest is recommended.',
       run: null,
       level: null,
       evidence: { slowest_K_per_min: slowest, fastest_K_per_min: fastest, ratio },
-      basis: `A ratio of fastest to slowest of about ${smallestRatio} or more, best near 10`,
+      basis: `Recommended is a ratio of fastest to slowest of about 5 to 10 or more; to warn below about ${smallestRatio} is common practice`,
       sources: ['ictac-2011', 'ictac-2014'],
     },
   ]

@@ -22,9 +22,8 @@ export function orderBroken({ result, runs }: ReviewInput): Finding[] {
         stage: 'activation',
         title: `${rate(faster)} K/min is not later than ${rate(slower)} K/min at conversion ${levelsInWords(broken.map(({ level }) => level))}`,
         message:
-          `At conversion ${digits(worst.level)} ${names(faster)} (${rate(faster)} K/min) stands at ${celsius(temperatureAt(faster, at))} and ${names(slower)} (${rate(slower)} K/min) at ` +
-          `${celsius(temperatureAt(slower, at))}; with a higher heating rate a reaction reaches a conversion at a higher temperature. Ea there means nothing. ` +
-          'Look at window and baseline of these runs, and whether sample mass or temperature calibration differ; leave the wrong run out.',
+          `At conversion ${digits(worst.level)} ${names(faster)} stands at ${celsius(temperatureAt(faster, at))}, the slower ${names(slower)} at ${celsius(temperatureAt(slower, at))}; ` +
+          'a faster run should stand higher. Ea there means nothing. Compare their windows, baselines, masses and temperature calibration; leave the wrong run out.',
         run: faster[0]?.info.id ?? null,
         level: worst.level,
         evidence: { level: worst.level, slower_K: temperatureAt(slower, at), faster_K: temperatureAt(faster, at), levels: broken.length },
