@@ -37,6 +37,7 @@ function runOf(i: number, change: Partial<RunResult> = {}): RunResult {
     window: { kind: 'temperature', start_K: 500, end_K: 700 },
     peak_K: 600,
     enthalpy_J_per_g: null,
+    enthalpyMagnitude_J_per_g: null,
     temperatureAtLevel_K: [560 + i, 600 + i, null],
     timeAtLevel_s: [120, 240, null],
     reactionRateAtLevel_per_s: [0.001, 0.002, null],
@@ -87,7 +88,16 @@ function lineProfile(method: MethodId, label: string, Ea: readonly (number | nul
     status: Ea.map((value) => (value === null ? 'level-not-reached' : 'ok')),
     lines,
     phi: [],
-    mean: { from: 0.1, to: 0.9, Ea_kJ_per_mol: null, spread_kJ_per_mol: null },
+    mean: {
+      from: 0.1,
+      to: 0.9,
+      Ea_kJ_per_mol: null,
+      spread_kJ_per_mol: null,
+      levelsUsed: 0,
+      levelsInRange: 3,
+      firstLevel: null,
+      lastLevel: null,
+    },
   }
 }
 
@@ -273,6 +283,21 @@ describe('phi figure', () => {
       ['y', 120 + 3.18],
     ])
     expect(isOnAxes(figure)(100, 13)).toBe(true)
+  })
+
+  it('keeps the threshold well inside the picture, however steeply Phi rises beyond it', () => {
+    // Runs that differ by y = Ea u, two of a kind on each side: Phi = 4 + 8 cosh y, threshold where y = 2.
+    const Ea = Array.from({ length: 81 }, (_, i) => 20 + 2.5 * i)
+    const phi = Ea.map((value) => 4 + 8 * Math.cosh((value - 120) / 20))
+    const [minimum, threshold] = [12, 4 + 8 * Math.cosh(2)]
+    const steep = { ...phiProfile, phi: levels.map(() => ({ Ea_kJ_per_mol: Ea, phi, phiMinimum: minimum, phiThreshold: threshold })) }
+    const { x, y, marks } = phiFigure({ ...result, profiles: [steep] }, 'vyazovkin', 0)
+    const height = (threshold - (y.min ?? Number.NaN)) / ((y.max ?? Number.NaN) - (y.min ?? Number.NaN))
+    expect(height).toBeGreaterThan(0.1)
+    expect(height).toBeLessThan(0.6)
+    const [line] = marksOf(marks, 'line')
+    expect(Math.max(...Array.from(line?.y ?? []))).toBeGreaterThan(4 * (threshold - minimum))
+    expect([line?.x[0] ?? 0, line?.x[(line?.x.length ?? 0) - 1] ?? 0].every((end) => end >= (x.min ?? 0) && end <= (x.max ?? 0))).toBe(true)
   })
 
   it('leaves minimum and interval out where the level has none', () => {

@@ -1,7 +1,10 @@
 import type { MethodId } from '../isoconversional/result.ts'
-import type { StudyResult } from '../tasks/study-result.ts'
+import type { PhiResult, StudyResult } from '../tasks/study-result.ts'
 import type { Figure, Mark } from './figure.ts'
 import { extentOf, levelText, niceAxis } from './nice-axis.ts'
+
+/** The curve is drawn up to so many times the height of the threshold above the minimum: far from it Phi grows exponentially, and would press the threshold to the floor. */
+const heights = 7
 
 /**
  * Phi(Ea) of a minimising method at one level: the curve, its minimum, the threshold, and the interval that the threshold cuts out of it.
@@ -13,9 +16,10 @@ export function phiFigure(result: StudyResult, methodId: MethodId, levelIndex: n
   const at = (values: readonly (number | null)[] | undefined): number | null => values?.[levelIndex] ?? null
   const [Ea, lower, upper] = [at(profile?.Ea_kJ_per_mol), at(profile?.lower95_kJ_per_mol), at(profile?.upper95_kJ_per_mol)]
   const level = levelText(result.levels[levelIndex] ?? Number.NaN)
+  const curve = phi === undefined ? { x: [], y: [] } : curveInView(phi)
   const marks: Mark[] = []
   if (phi !== undefined && phi.phi.length > 0) {
-    marks.push({ kind: 'line', name: 'Φ(Ea)', tone: { kind: 'ink' }, x: phi.Ea_kJ_per_mol, y: phi.phi })
+    marks.push({ kind: 'line', name: 'Φ(Ea)', tone: { kind: 'ink' }, ...curve })
     if (phi.phiThreshold !== null) {
       marks.push({ kind: 'rule', name: 'Threshold', tone: { kind: 'faint' }, along: 'x', at: phi.phiThreshold, dash: 'dashed' })
     }
@@ -29,8 +33,8 @@ export function phiFigure(result: StudyResult, methodId: MethodId, levelIndex: n
       marks.push({ kind: 'points', name: 'Minimum', tone: { kind: 'accent' }, x: [Ea], y: [phi.phiMinimum], joined: false })
     }
   }
-  const xAxis = niceAxis(...extentOf(phi?.Ea_kJ_per_mol ?? [], [lower, upper]))
-  const yAxis = niceAxis(...extentOf(phi?.phi ?? [], [phi?.phiMinimum ?? null, phi?.phiThreshold ?? null]), 5)
+  const xAxis = niceAxis(...extentOf(curve.x, [lower, upper]))
+  const yAxis = niceAxis(...extentOf(curve.y, [phi?.phiMinimum ?? null, phi?.phiThreshold ?? null]), 5)
   return {
     id: 'phi',
     title: `Φ(Ea) at α ${level}`,
@@ -39,4 +43,14 @@ export function phiFigure(result: StudyResult, methodId: MethodId, levelIndex: n
     y: { label: 'Φ', unit: '', min: yAxis.min, max: yAxis.max, second: null },
     marks,
   }
+}
+
+/** The points of the curve that lie low enough for the threshold to be seen; all of them where there is none. */
+function curveInView({ Ea_kJ_per_mol: Ea, phi, phiMinimum, phiThreshold }: PhiResult): {
+  readonly x: readonly number[]
+  readonly y: readonly number[]
+} {
+  const top = phiMinimum === null || phiThreshold === null ? Number.POSITIVE_INFINITY : phiMinimum + heights * (phiThreshold - phiMinimum)
+  const seen = phi.flatMap((value, i) => (value <= top ? [i] : []))
+  return { x: seen.map((i) => Ea[i] ?? Number.NaN), y: seen.map((i) => phi[i] ?? Number.NaN) }
 }

@@ -7,8 +7,8 @@ import type { LevelPhi } from './result.ts'
 const side = 40
 
 /**
- * Phi over four half-widths of the interval on each side of its minimum, at least 2 % of Ea, at most to the ends of the range searched; over ±20 % where there is no
- * interval. 81 points, the middle one the minimum itself; the others from the grid, which is exact enough for drawing.
+ * Phi over two and a half half-widths of the interval on each side of its minimum, where it is some six times as high above the minimum as the threshold is; at least
+ * 0.02 % of Ea, below which the curve would be rounding, and at most to the ends of the range searched. Over ±20 % where there is no interval. 81 points, the middle one the minimum itself; the others from the grid, which is exact enough for drawing.
  */
 export function phiAround(
   grid: EnergyGrid,
@@ -17,7 +17,7 @@ export function phiAround(
   { Ea, phiMinimum, phiThreshold }: { readonly Ea: number; readonly phiMinimum: number; readonly phiThreshold: number },
   halfWidth: number,
 ): LevelPhi {
-  const reach = Number.isNaN(halfWidth) ? 0.2 * Ea : Math.max(4 * halfWidth, 0.02 * Ea)
+  const reach = Number.isNaN(halfWidth) ? 0.2 * Ea : Math.max(2.5 * halfWidth, 2e-4 * Ea)
   const from = Math.max(smallestEa, Ea - reach)
   const to = Math.min(largestEa, Ea + reach)
   const at = Array.from({ length: 2 * side + 1 }, (_, i) =>

@@ -163,11 +163,11 @@ describe('the curve of Phi', () => {
   const result = vyazovkin(series, quiet)
   const { Ea_J_per_mol, phi, phiMinimum, phiThreshold } = result.phi[0]!
 
-  it('spans four half-widths on each side of its minimum', () => {
+  it('spans two and a half half-widths on each side of its minimum', () => {
     expect(Ea_J_per_mol).toHaveLength(81)
     const halfWidth = result.upper95[0]! - result.Ea[0]!
-    expect(Ea_J_per_mol[0]).toBeCloseTo(result.Ea[0]! - 4 * halfWidth, 5)
-    expect(Ea_J_per_mol[80]).toBeCloseTo(result.Ea[0]! + 4 * halfWidth, 5)
+    expect(Ea_J_per_mol[0]).toBeCloseTo(result.Ea[0]! - 2.5 * halfWidth, 5)
+    expect(Ea_J_per_mol[80]).toBeCloseTo(result.Ea[0]! + 2.5 * halfWidth, 5)
     expect(Ea_J_per_mol[40]).toBe(result.Ea[0])
     expect(phi[40]).toBe(phiMinimum)
     expect(phi.every((value) => value >= phiMinimum)).toBe(true)
@@ -192,7 +192,8 @@ describe('the curve of Phi', () => {
       [0, 40],
       [80, 40],
     ] as const) {
-      const [near, far] = [from + ((to - from) * 3) / 4 - Math.sign(to - from), from + ((to - from) * 3) / 4 + Math.sign(to - from)]
+      const end = from + (to - from) * (1 - 1 / 2.5)
+      const [near, far] = [end - Math.sign(to - from), end + Math.sign(to - from)]
       expect(phi[near]).toBeGreaterThan(phiThreshold)
       expect(phi[far]).toBeLessThan(phiThreshold)
     }
