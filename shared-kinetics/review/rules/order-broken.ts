@@ -22,7 +22,7 @@ export function orderBroken({ result, runs }: ReviewInput): Finding[] {
         stage: 'activation',
         title: `${rate(faster)} K/min is not later than ${rate(slower)} K/min at conversion ${levelsInWords(broken.map(({ level }) => level))}`,
         message:
-          `At conversion ${digits(worst.level)} ${names(faster)} stands at ${celsius(temperatureAt(faster, at))}, the slower ${names(slower)} at ${celsius(temperatureAt(slower, at))}; ` +
+          `At conversion ${digits(worst.level)} ${names(faster)} ${faster.length === 1 ? 'stands' : 'stand'} at ${celsius(temperatureAt(faster, at))}, the slower ${names(slower)} at ${celsius(temperatureAt(slower, at))}; ` +
           'a faster run should stand higher. Ea there means nothing. Compare their windows, baselines, masses and temperature calibration; leave the wrong run out.',
         run: faster[0]?.info.id ?? null,
         level: worst.level,
