@@ -11,6 +11,7 @@ export interface RunToReview {
   readonly result?: Partial<RunResult>
   readonly heatingRateSpread?: number
   readonly rateAtEnds?: ReviewedRun['rateAtEnds']
+  readonly baselineKind?: ReviewedRun['baselineKind']
   readonly sampling?: Partial<ReviewedRun['sampling']>
 }
 
@@ -76,6 +77,7 @@ export function reviewedRun(id: string, rate_K_per_min: number, group: number, c
     result,
     heatingRateSpread: change.heatingRateSpread ?? 0.01,
     rateAtEnds: change.rateAtEnds ?? { start: 0, end: 0 },
+    baselineKind: change.baselineKind ?? null,
     sampling,
   }
 }

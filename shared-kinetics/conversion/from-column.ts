@@ -4,5 +4,11 @@ import { curveFromExtent } from './smooth-curve.ts'
 
 /** Conversion that was exported as such is taken as it stands: it is neither shifted nor stretched to run from 0 to 1 inside the window. */
 export function fromColumn(time_s: Column<'s'>, temperature_K: Column<'K'>, conversion: Float64Array): Converted {
-  return { curve: curveFromExtent(time_s, temperature_K, conversion), baseline: null, area: Number.NaN }
+  return {
+    curve: curveFromExtent(time_s, temperature_K, conversion),
+    baseline: null,
+    area: Number.NaN,
+    rateAtEnds: null,
+    baselineKind: null,
+  }
 }

@@ -1,16 +1,17 @@
 import { KineticsError } from '../errors.ts'
+import { lineFit } from '../numerics/line-fit.ts'
 import { areaProportionalBaseline, fitTangent, straightBaseline, tangentAt, type Tangent } from '../signal/baseline.ts'
+import { cellMeans } from '../signal/cell-means.ts'
+import { lowerBound } from '../signal/lower-bound.ts'
 import { noiseOf } from '../signal/noise.ts'
-import { findQuietEnds, type QuietEnds } from '../signal/quiet-ends.ts'
+import { findQuietEnds, lowestPeak, type QuietEnds } from '../signal/quiet-ends.ts'
 import type { Column } from '../units/quantity.ts'
-import type { Converted } from './converted.ts'
+import type { Converted, HeatFlowBaseline } from './converted.ts'
 import { fromPartialArea } from './partial-area.ts'
 import { valueAtEnd } from './plateau.ts'
 
-export type HeatFlowBaseline = 'area-proportional' | 'straight' | 'level-at-end'
-
-/** A peak lower than so many standard deviations of the noise is none. */
-const lowestPeak = 5
+/** A flank that has not come down to half the height of the peak where the data end leaves neither width nor baseline to be told. */
+const highestStanding = 0.5
 /** Without a quiet stretch at an end, the tangent there is level through the outermost share of the window. */
 const outermost = 0.02
 
@@ -22,8 +23,11 @@ const outermost = 0.02
  * - `straight`: between the ends of the window (the line through the outermost 2 % of it at either end).
  * - `level-at-end`: for holds, whose reaction may run from the first moment on: level through the plateau at the end of the window.
  *
+ * A baseline is drawn through the ends of the window, so that the rate there is 0 by construction. `rateAtEnds` therefore tells how high the signal itself stands at
+ * an end where its flank does not come to its foot, and for a hold how far it still drifts over the last fifth, as a share of its largest height.
+ *
  * @param heatFlow - W or W/kg, either direction
- * @throws KineticsError `empty-window` where there is no peak inside the window
+ * @throws KineticsError `empty-window` where there is no peak inside the window, it ends above half the height of the peak, or no baseline can be drawn
  * @source hemminger-sarge-1991; ictac-2014
  */
 export function fromHeatFlow(
@@ -35,25 +39,73 @@ export function fromHeatFlow(
 ): Converted {
   const last = time_s.length - 1
   const noise = noiseOf(time_s, heatFlow, 0, last)
-  if (kind === 'level-at-end') {
-    const level = valueAtEnd(time_s, heatFlow, 'end', noise)
-    return fromPartialArea(time_s, temperature_K, heatFlow, new Float64Array(heatFlow.length).fill(level), label)
-  }
+  if (kind === 'level-at-end') return levelledAtEnd(time_s, temperature_K, heatFlow, noise, label)
   const quiet = findQuietEnds(time_s, heatFlow, 0, last)
-  if (!(Math.abs(quiet.height) > lowestPeak * noise)) {
-    throw new KineticsError(
-      'empty-window',
-      `${label}: there is no peak in the heat flow inside the window. Move the window to where the reaction is.`,
-      {
-        run: label,
-      },
-    )
-  }
+  if (!(Math.abs(quiet.height) > lowestPeak * noise)) throw noPeak(label)
+  const { standing } = quiet
+  if (Math.max(standing.before, standing.after) > highestStanding) throw cutPeak(label, standing)
   const baseline =
     kind === 'straight'
       ? straightBetweenEnds(time_s, heatFlow)
-      : areaProportionalBaseline(time_s, heatFlow, ...tangents(time_s, heatFlow, quiet)).baseline
-  return fromPartialArea(time_s, temperature_K, heatFlow, baseline, label)
+      : areaProportional(time_s, heatFlow, tangents(time_s, heatFlow, quiet), label)
+  const converted = fromPartialArea(time_s, temperature_K, heatFlow, baseline, label)
+  return {
+    ...converted,
+    baselineKind: kind,
+    rateAtEnds: {
+      start: Math.max(standing.before, converted.rateAtEnds?.start ?? 0),
+      end: Math.max(standing.after, converted.rateAtEnds?.end ?? 0),
+    },
+  }
+}
+
+const noPeak = (label: string): KineticsError =>
+  new KineticsError(
+    'empty-window',
+    `${label}: there is no peak in the heat flow inside the window. Move the window to where the reaction is.`,
+    {
+      run: label,
+    },
+  )
+
+function cutPeak(label: string, { before, after }: QuietEnds['standing']): KineticsError {
+  const end = before > after ? 'start' : 'end'
+  return new KineticsError(
+    'empty-window',
+    `${label}: at the ${end} of the window the heat flow stands at ${Math.round(100 * Math.max(before, after))} % of the height of its peak, so that neither ` +
+      'baseline nor area can be told. Widen the window to the whole peak, or measure further.',
+    { run: label, standingAtStart: before, standingAtEnd: after },
+  )
+}
+
+const excursionCells = 200
+/** Part of a hold, at its end, over which its drift is read. */
+const lastPart = 0.2
+
+function levelledAtEnd(time_s: Column<'s'>, temperature_K: Column<'K'>, heatFlow: Float64Array, noise: number, label: string): Converted {
+  const n = time_s.length
+  const level = valueAtEnd(time_s, heatFlow, 'end')
+  const { y } = cellMeans(time_s, heatFlow, 0, n - 1, Math.min(excursionCells, Math.floor(n / 2)))
+  const excursion = y.reduce((most, value) => Math.max(most, Math.abs(value - level)), 0)
+  if (!(excursion > lowestPeak * noise)) throw noPeak(label)
+  const converted = fromPartialArea(time_s, temperature_K, heatFlow, new Float64Array(n).fill(level), label)
+  const part = lastPart * ((time_s[n - 1] ?? 0) - (time_s[0] ?? 0))
+  const from = Math.min(n - 3, lowerBound(time_s, (time_s[n - 1] ?? 0) - part))
+  const { slope, slopeStandardError } = lineFit(time_s.subarray(from), heatFlow.subarray(from))
+  // Two standard errors less, so that noise alone is no drift.
+  const drift = Math.max(0, Math.abs(slope) - 2 * slopeStandardError) * part
+  return { ...converted, baselineKind: 'level-at-end', rateAtEnds: { start: converted.rateAtEnds?.start ?? 0, end: drift / excursion } }
+}
+
+function areaProportional(time: Float64Array, heatFlow: Float64Array, ends: readonly [Tangent, Tangent], label: string): Float64Array {
+  const { baseline, status } = areaProportionalBaseline(time, heatFlow, ...ends)
+  if (status === 'ok') return baseline
+  throw new KineticsError(
+    'empty-window',
+    `${label}: the area between heat flow and baseline does not settle, so that no area-proportional baseline can be drawn. ` +
+      'Set a window from one straight part of the heat flow to the other, or choose the straight baseline.',
+    { run: label },
+  )
 }
 
 function tangents(time: Float64Array, heatFlow: Float64Array, { before, after }: QuietEnds): readonly [before: Tangent, after: Tangent] {

@@ -2,6 +2,7 @@ import { KineticsError } from '../errors.ts'
 import { noiseOf } from '../signal/noise.ts'
 import type { Column } from '../units/quantity.ts'
 import type { Converted } from './converted.ts'
+import { rateAtEnds } from './cut-ends.ts'
 import { valueAtEnd } from './plateau.ts'
 import { curveFromExtent } from './smooth-curve.ts'
 
@@ -18,8 +19,8 @@ const smallestChange = 10
  */
 export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: Float64Array, label: string): Converted {
   const noise = noiseOf(time_s, mass, 0, mass.length - 1)
-  const start = valueAtEnd(time_s, mass, 'start', noise)
-  const end = valueAtEnd(time_s, mass, 'end', noise)
+  const start = valueAtEnd(time_s, mass, 'start')
+  const end = valueAtEnd(time_s, mass, 'end')
   const change = start - end
   if (!(Math.abs(change) > smallestChange * noise) || Math.abs(change) < 1e-6 * Math.abs(start)) {
     throw new KineticsError(
@@ -28,13 +29,10 @@ export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: 
       { run: label, massAtStart: start, massAtEnd: end },
     )
   }
-  return {
-    curve: curveFromExtent(
-      time_s,
-      temperature_K,
-      mass.map((value) => (start - value) / change),
-    ),
-    baseline: null,
-    area: Number.NaN,
-  }
+  const curve = curveFromExtent(
+    time_s,
+    temperature_K,
+    mass.map((value) => (start - value) / change),
+  )
+  return { curve, baseline: null, area: Number.NaN, rateAtEnds: rateAtEnds(curve), baselineKind: null }
 }

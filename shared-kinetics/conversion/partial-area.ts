@@ -2,6 +2,7 @@ import { KineticsError } from '../errors.ts'
 import { cumulativeIntegral } from '../signal/cumulative-integral.ts'
 import type { Column } from '../units/quantity.ts'
 import type { Converted } from './converted.ts'
+import { rateAtEnds } from './cut-ends.ts'
 import { curveFromRate } from './smooth-curve.ts'
 
 /**
@@ -35,5 +36,5 @@ export function fromPartialArea(
     net.map((value) => value / area),
     partial.map((value) => value / area),
   )
-  return { curve, baseline, area }
+  return { curve, baseline, area, rateAtEnds: rateAtEnds(curve), baselineKind: null }
 }

@@ -1,10 +1,12 @@
 import { KineticsError } from '../errors.ts'
+import { isHold, longestHold } from '../series/hold.ts'
 import { mainHeating, type RowRange } from '../series/main-heating.ts'
 import type { Window } from '../series/run.ts'
 import { cellMeans } from '../signal/cell-means.ts'
 import { lowerBound } from '../signal/lower-bound.ts'
 import { median } from '../signal/median.ts'
-import { findQuietEnds } from '../signal/quiet-ends.ts'
+import { noiseOf } from '../signal/noise.ts'
+import { findQuietEnds, lowestPeak } from '../signal/quiet-ends.ts'
 import { kelvinToCelsius } from '../units/convert.ts'
 
 const fewestRows = 20
@@ -47,7 +49,7 @@ function rowsInTemperature(temperature: Float64Array, window: { readonly start_K
 /**
  * The window where none is set. For mass, conversion and heat release, whose own ends tell start and finish: all of the main heating part. For heat flow, whose
  * signal goes on before and after the reaction: from the straight stretch before the main peak to that after it (with their outer ends for tangents, with their
- * inner ends for a straight baseline), the start-up of the heating left out.
+ * inner ends for a straight baseline), the start-up of the heating left out; where the run reacts in a hold, all of the hold, the heating before it left out.
  */
 export function findWindow(
   time_s: Float64Array,
@@ -56,7 +58,9 @@ export function findWindow(
   kind: 'whole' | 'peak-with-tangents' | 'peak-alone',
 ): RowRange {
   const main = mainHeating(temperature_K)
-  if (kind === 'whole' || isHold(temperature_K, main)) return main
+  if (kind === 'whole') return main
+  const hold = holdWithReaction(time_s, temperature_K, signal, main)
+  if (hold !== null) return hold
   const steady = afterStartUp(time_s, temperature_K, main)
   const { before, after } = findQuietEnds(time_s, signal, steady.first, steady.last)
   const end = kind === 'peak-alone' ? 'inner' : 'outer'
@@ -67,17 +71,22 @@ export function findWindow(
   return range.last - range.first + 1 >= fewestRows ? range : steady
 }
 
-/** A run whose temperature keeps within this band is a hold. */
-const holdBand_K = 5
+/** A run holds where one temperature takes most of its time and no whole peak lies in the heating before. */
+const mostOfTime = 0.5
 
-export function isHold(temperature: Float64Array, { first, last }: RowRange): boolean {
-  let lowest = Infinity
-  let highest = -Infinity
-  for (let i = first; i <= last; i++) {
-    lowest = Math.min(lowest, temperature[i] ?? lowest)
-    highest = Math.max(highest, temperature[i] ?? highest)
-  }
-  return highest - lowest <= holdBand_K
+/** Rows of the hold in which a run with a heat flow reacts; null where it reacts while it is heated. */
+function holdWithReaction(time: Float64Array, temperature: Float64Array, signal: Float64Array, main: RowRange): RowRange | null {
+  if (isHold(temperature, main)) return main
+  const hold = longestHold(time, temperature, main)
+  const between = (a: number, b: number): number => (time[b] ?? 0) - (time[a] ?? 0)
+  if (hold.last - hold.first + 1 < fewestRows || between(hold.first, hold.last) < mostOfTime * between(main.first, main.last)) return null
+  const heating = { first: main.first, last: hold.first - 1 }
+  if (heating.last - heating.first + 1 < fewestRows) return hold
+  const steady = afterStartUp(time, temperature, heating)
+  const { height, reachesFoot } = findQuietEnds(time, signal, steady.first, steady.last)
+  const hasPeak =
+    Math.abs(height) > lowestPeak * noiseOf(time, signal, steady.first, steady.last) && reachesFoot.before && reachesFoot.after
+  return hasPeak ? null : hold
 }
 
 const startUpCells = 200

@@ -1,3 +1,4 @@
+import type { HeatFlowBaseline } from '../conversion/converted.ts'
 import type { RateAtEnds } from '../conversion/cut-ends.ts'
 import type { Sampling } from '../conversion/sampling.ts'
 import type { KineticsError } from '../errors.ts'
@@ -13,6 +14,8 @@ export interface ReviewedRun {
   /** Largest distance of the local heating rate from the fitted one, as a share; NaN where there is none. */
   readonly heatingRateSpread: number
   readonly rateAtEnds: RateAtEnds | null
+  /** The baseline that was drawn under a heat flow; null for other signals. */
+  readonly baselineKind: HeatFlowBaseline | null
   readonly sampling: Sampling
 }
 

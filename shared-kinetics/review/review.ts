@@ -1,6 +1,7 @@
 import { severities, type Finding } from './finding.ts'
 import type { ReviewInput } from './review-input.ts'
 import { energyNotPositive } from './rules/energy-not-positive.ts'
+import { baselineReplaced } from './rules/baseline-replaced.ts'
 import { energyVaries } from './rules/energy-varies.ts'
 import { exothermicDirectionUnknown } from './rules/exothermic-direction-unknown.ts'
 import { gapInReaction } from './rules/gap-in-reaction.ts'
@@ -31,6 +32,7 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   narrowHeatingRateSpread,
   heatingRateDiffersFromNominal,
   windowCutsReaction,
+  baselineReplaced,
   gapInReaction,
   samplingCoarse,
   orderBroken,

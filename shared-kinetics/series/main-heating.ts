@@ -1,3 +1,5 @@
+import { isHold } from './hold.ts'
+
 /** Rows of a run, both ends included. */
 export interface RowRange {
   readonly first: number
@@ -6,8 +8,6 @@ export interface RowRange {
 
 /** A fall of the temperature of less than this, or of 2 % of the run's whole span where that is more, is no reversal but noise or a self-cooling sample. */
 const smallestReversal_K = 3
-/** A run that never leaves a band of this width is a hold: there is no heating part to look for. */
-const holdBand_K = 5
 
 /**
  * The main heating part of a run: the stretch without a reversal of the temperature that spans the most kelvin (of several within 5 % of it the first). Holds
@@ -23,7 +23,7 @@ export function mainHeating(temperature_K: Float64Array): RowRange {
     lowest = Math.min(lowest, value)
     highest = Math.max(highest, value)
   }
-  if (highest - lowest <= holdBand_K) return { first: 0, last: n - 1 }
+  if (isHold(temperature_K, { first: 0, last: n - 1 })) return { first: 0, last: n - 1 }
   const reversal = Math.max(smallestReversal_K, 0.02 * (highest - lowest))
   const stretches = heatingStretches(temperature_K, reversal)
   const most = Math.max(...stretches.map((stretch) => stretch.span))

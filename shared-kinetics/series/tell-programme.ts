@@ -1,6 +1,7 @@
 import { lineFit } from '../numerics/line-fit.ts'
 import { quantity } from '../units/quantity.ts'
 import { longestGapFreeStretch } from './gap-free-stretch.ts'
+import { isHold } from './hold.ts'
 import type { Programme } from './programme.ts'
 import type { NominalHeatingRate } from './run.ts'
 
@@ -13,8 +14,6 @@ export interface ToldProgramme {
   readonly meanHeatingRate_K_per_s: number
 }
 
-/** A hold keeps the middle 98 % of the reaction's samples within a band of this width. */
-const holdBand_K = 3
 const parts = 8
 const fewestRowsPerPart = 4
 /** A heating rate is constant while that in every eighth of the reaction lies within this share of the fitted one. */
@@ -61,9 +60,7 @@ export function tellProgramme(
     meanTemperature_K,
     meanHeatingRate_K_per_s: ((temperature_K[last] ?? 0) - (temperature_K[first] ?? 0)) / span,
   }
-  const sorted = reaction.toSorted()
-  const outermost = Math.floor(0.01 * sorted.length)
-  if ((sorted[sorted.length - 1 - outermost] ?? 0) - (sorted[outermost] ?? 0) <= holdBand_K) {
+  if (isHold(temperature_K, { first, last })) {
     return { ...rest, programme: { kind: 'isothermal', temperature: quantity(meanTemperature_K, 'K') } }
   }
   const stretch = longestGapFreeStretch(time_s, temperature_K, first, last)

@@ -19,7 +19,17 @@ export interface QuietEnds {
   /** null where the signal does not level off before the data end on that side, or leaves too little room for a stretch. */
   readonly before: QuietStretch | null
   readonly after: QuietStretch | null
+  /** Whether the signal comes to the foot of its flank before the data end on that side. */
+  readonly reachesFoot: { readonly before: boolean; readonly after: boolean }
+  /**
+   * How high the signal stands where the data end on that side, over the line of the other side, as a share of its largest height over that line. 0 where it comes
+   * to its foot.
+   */
+  readonly standing: { readonly before: number; readonly after: number }
 }
+
+/** A peak lower than so many standard deviations of the noise is none. */
+export const lowestPeak = 5
 
 const cells = 1000
 /** A flank has come to its foot where the signal is less steep than this share of the flank's steepest place. */
@@ -59,12 +69,20 @@ export function findQuietEnds(x: Float64Array, y: Float64Array, first: number, l
   const width = Math.max(3, right - left)
   const cellNoise = noiseOf(x, y, first, last) / Math.sqrt(Math.max(1, mean.samplesPerCell))
   const search = { mean, up, width, height: Math.abs(height), noise: Number.isFinite(cellNoise) ? cellNoise : 0 }
+  const feet = { before: footOf(search, left, apex, -1), after: footOf(search, right, apex, 1) }
+  const before = feet.before === null ? null : quietSide(search, feet.before, apex, -1)
+  const after = feet.after === null ? null : quietSide(search, feet.after, apex, 1)
   return {
     apex: mean.x[apex] ?? Number.NaN,
     height,
     width: width * mean.step,
-    before: quietSide(search, left, apex, -1),
-    after: quietSide(search, right, apex, 1),
+    before,
+    after,
+    reachesFoot: { before: feet.before !== null, after: feet.after !== null },
+    standing: {
+      before: feet.before === null ? standingAt(mean, 'before', after) : 0,
+      after: feet.after === null ? standingAt(mean, 'after', before) : 0,
+    },
   }
 }
 
@@ -85,11 +103,35 @@ function aboveChord({ x, y }: CellMeans): Float64Array {
   return y.map((value, i) => value - y0 - slope * ((x[i] ?? 0) - x0))
 }
 
-function quietSide(search: Search, halfHeight: number, apex: number, outward: -1 | 1): QuietStretch | null {
+/** Without a quiet stretch, an end stands for itself with so much of the cells. */
+const outermost = 0.02
+
+/** The height at one end over the line of the other side's quiet stretch, or over the level of the other end; the share it is of the largest such height. */
+function standingAt({ x, y }: CellMeans, end: 'before' | 'after', otherSide: QuietStretch | null): number {
+  const n = x.length
+  const few = Math.max(1, Math.round(outermost * n))
+  const edge = (side: 'before' | 'after'): readonly [number, number] => (side === 'before' ? [0, few] : [n - few, n])
+  const level = (side: 'before' | 'after'): number => y.subarray(...edge(side)).reduce((sum, value) => sum + value, 0) / few
+  const inside = (value: number): boolean =>
+    otherSide !== null && value >= Math.min(otherSide.inner, otherSide.outer) && value <= Math.max(otherSide.inner, otherSide.outer)
+  const rows = Array.from(x.keys()).filter((i) => inside(x[i] ?? Number.NaN))
+  const other = end === 'before' ? 'after' : 'before'
+  const line =
+    rows.length >= 2
+      ? lineFit(
+          Float64Array.from(rows, (i) => x[i] ?? Number.NaN),
+          Float64Array.from(rows, (i) => y[i] ?? Number.NaN),
+        )
+      : { xMean: 0, valueAtMean: level(other), slope: 0 }
+  const over = y.map((value, i) => value - line.valueAtMean - line.slope * ((x[i] ?? 0) - line.xMean))
+  const most = over.reduce((highest, value) => Math.max(highest, Math.abs(value)), 0)
+  const [from, to] = edge(end)
+  return most > 0 ? Math.abs(over.subarray(from, to).reduce((sum, value) => sum + value, 0)) / few / most : 0
+}
+
+function quietSide(search: Search, foot: number, apex: number, outward: -1 | 1): QuietStretch | null {
   const { mean, width } = search
   const n = mean.x.length
-  const foot = footOf(search, halfHeight, apex, outward)
-  if (foot === null) return null
   const end = outward < 0 ? 0 : n - 1
   const room = Math.abs(end - foot) + 1
   const shortest = Math.min(width, room)

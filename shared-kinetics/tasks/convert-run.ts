@@ -1,12 +1,12 @@
 import type { Converted } from '../conversion/converted.ts'
-import { rateAtEnds, type RateAtEnds } from '../conversion/cut-ends.ts'
 import { fromColumn } from '../conversion/from-column.ts'
 import { fromHeatFlow } from '../conversion/from-heat-flow.ts'
 import { fromHeatRelease } from '../conversion/from-heat-release.ts'
 import { fromMass } from '../conversion/from-mass.ts'
 import { peakTemperature } from '../conversion/peak-temperature.ts'
 import { samplingOf, type Sampling } from '../conversion/sampling.ts'
-import { findWindow, isHold, rowsInWindow } from '../conversion/window.ts'
+import { findWindow, rowsInWindow } from '../conversion/window.ts'
+import { isHold } from '../series/hold.ts'
 import type { RowRange } from '../series/main-heating.ts'
 import type { RunColumns, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
@@ -27,8 +27,6 @@ export interface ConvertedRun {
   readonly window: Window
   /** NaN where the reaction rate has no maximum. */
   readonly peak_K: number
-  /** null where the ends of the window say nothing about the conversion there (a conversion column). */
-  readonly rateAtEnds: RateAtEnds | null
   readonly sampling: Sampling
   readonly curve: RunResult['curve']
 }
@@ -62,7 +60,6 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
     told,
     window: windowUsed(rows, range, settings.window, told.programme.kind === 'constant-heating-rate'),
     peak_K: peakTemperature(converted.curve),
-    rateAtEnds: quantity === 'conversion' ? null : rateAtEnds(converted.curve),
     sampling: samplingOf(rows, range.first, converted.curve, info.label),
     curve: curveToDraw(rows, range, converted, quantity === 'heat-flow'),
   }
