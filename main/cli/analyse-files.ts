@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import { uploadChunkBytes, type FileOut, type RefusedFile, type TableStyle } from '../../shared-kinetics/contract/host-api.ts'
+import type { FileOut, RefusedFile, TableStyle } from '../../shared-kinetics/contract/host-api.ts'
 import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
@@ -8,6 +8,7 @@ import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { createHost, type Host } from '../host/create-host.ts'
 import { createInProcessPool } from '../host/in-process-pool.ts'
 import { createTaskTable } from '../host/task-table.ts'
+import { uploadToHost } from '../host/upload-to-host.ts'
 import { InputError, UsageError, type CliIo } from './cli-io.ts'
 import type { InputFile } from './expand-paths.ts'
 import type { ProgressLine } from './progress-line.ts'
@@ -48,7 +49,8 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
       progress.show(`${event.work === 'import' ? 'Reading' : 'Working out'} ${event.done} of ${event.total}: ${event.what}`)
   })
   try {
-    const refused = await importAll(host, order.files, order.skipUnusable)
+    const uploadIds = await uploadToHost(host, order.files)
+    const { refused } = await host.call('runs.import', { uploadIds, noteLeftOut: order.skipUnusable })
     if (refused.length > 0 && !order.skipUnusable) throw new InputError(refusedText(refused, order.files))
     const { document: read } = await host.call('study.read', {})
     if (read.runs.length === 0) throw new InputError(`None of the files can be used. ${refusedText(refused, order.files)}`)
@@ -69,18 +71,6 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
     progress.clear()
     await host.close({ save: false })
   }
-}
-
-async function importAll(host: Host, files: readonly InputFile[], noteLeftOut: boolean): Promise<readonly RefusedFile[]> {
-  const uploadIds: string[] = []
-  for (const { fileName, bytes } of files) {
-    const { uploadId } = await host.call('upload.begin', { fileName, byteLength: bytes.byteLength })
-    uploadIds.push(uploadId)
-    for (let at = 0; at < bytes.byteLength; at += uploadChunkBytes) {
-      await host.call('upload.append', { uploadId, bytes: bytes.subarray(at, at + uploadChunkBytes) })
-    }
-  }
-  return (await host.call('runs.import', { uploadIds, noteLeftOut })).refused
 }
 
 async function applied(host: Host, change: StudyChange): Promise<void> {
