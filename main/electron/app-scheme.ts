@@ -2,7 +2,7 @@ import { protocol } from 'electron'
 import { serveRendererFile, securityHeaders, type RendererFiles } from '../host/renderer-files.ts'
 
 /** Where the desktop window's pages live: `app://rampfold/`. No file of the disk has an address. */
-export const appScheme = 'app'
+const appScheme = 'app'
 export const appOrigin = 'app://rampfold'
 
 /** Must be called before the app is ready. */
@@ -15,7 +15,7 @@ export function serveAppScheme(files: RendererFiles): void {
   protocol.handle(appScheme, (request) => answerAppRequest(files, request))
 }
 
-export function answerAppRequest(files: RendererFiles, request: Request): Response {
+function answerAppRequest(files: RendererFiles, request: Request): Response {
   if (request.method !== 'GET') return refuse(405, 'This address does not take requests of this kind.')
   if (!isAppAddress(request.url)) return refuse(403, 'This is not an address of the program.')
   const file = serveRendererFile(files, new URL(request.url).pathname)

@@ -96,6 +96,12 @@ const transportOver = (wire: Wire): HostTransport => ({
   subscribe: (listener) => wire.subscribe((bytes) => listener(decodeMessage(bytes) as HostEvent)),
 })
 
+/** Gives the study a name it did not have. @returns the revision that made */
+async function renameOnce(transport: HostTransport): Promise<number> {
+  const { revision } = await transport.call('study.read', {})
+  return (await transport.call('study.change', { revision, change: { kind: 'rename-study', name: `Köhler ${revision}` } })).revision
+}
+
 beforeAll(async () => {
   await import('../preload/preload.ts')
 })
@@ -230,18 +236,14 @@ describe.each([
   it('tells an event by the bytes that the wire’s own encoding makes of it', async () => {
     const heard: Uint8Array[] = []
     const stop = wire.subscribe((bytes) => heard.push(bytes))
-    const change = async (): Promise<number> => {
-      const { revision } = await transport.call('study.read', {})
-      return (await transport.call('study.change', { revision, change: { kind: 'rename-study', name: `Köhler ${revision}` } })).revision
-    }
     // Over HTTP the stream has to open first.
     await expect
       .poll(async () => {
-        await change()
+        await renameOnce(transport)
         return heard.length
       })
       .toBeGreaterThan(1)
-    const revision = await change()
+    const revision = await renameOnce(transport)
     await expect.poll(() => heard).toContainEqual(encodeMessage({ kind: 'study-changed', revision }))
     stop()
   })

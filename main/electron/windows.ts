@@ -2,7 +2,7 @@ import { BrowserWindow, type BrowserWindowConstructorOptions, type Session, type
 import { appOrigin, isAppAddress } from './app-scheme.ts'
 
 /** Every safety setting is stated, those that are Electron's defaults too, so that a test holds them. */
-export const windowOptions = (preloadPath: string): BrowserWindowConstructorOptions => ({
+const windowOptions = (preloadPath: string): BrowserWindowConstructorOptions => ({
   width: 1360,
   height: 860,
   minWidth: 860,

@@ -7,8 +7,11 @@ export type Verdict =
   | { readonly kind: 'pass'; readonly path: string }
   | { readonly kind: 'refuse'; readonly status: 400 | 403; readonly reason: string }
 
+/** What a request says of itself; all that the gate looks at. */
+type Visit = Pick<IncomingMessage, 'url' | 'method' | 'headers'>
+
 export interface LoopbackGate {
-  judge(request: IncomingMessage): Verdict
+  judge(request: Visit): Verdict
   /** A key that lets in once, and not after `keyForOnce_ms`. */
   keyForOnce(): string
 }
@@ -68,7 +71,7 @@ function parseTarget(target: string | undefined, host: string): URL | null {
   return URL.canParse(target, `http://${host}`) ? new URL(target, `http://${host}`) : null
 }
 
-function cookieOf(request: IncomingMessage, name: string): string {
+function cookieOf(request: Visit, name: string): string {
   for (const part of (request.headers.cookie ?? '').split(';')) {
     const [key, value] = part.trim().split('=', 2)
     if (key === name) return value ?? ''

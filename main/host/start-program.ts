@@ -15,7 +15,7 @@ export interface StartSteps {
   runBrowser(options: { readonly openBrowser: boolean }): Promise<void>
 }
 
-export const startHelp = `Starts Rampfold: the desktop window where it can be opened, else the sheet in a browser.
+const startHelp = `Starts Rampfold: the desktop window where it can be opened, else the sheet in a browser.
 
 npm start                  the desktop window
 npm start -- --browser     the sheet in a browser

@@ -12,7 +12,7 @@ export interface WorkerPoolOptions {
 }
 
 /** A cancelled task that is still running after so long is ended with its worker. */
-export const cancelPatience_ms = 2000
+const cancelPatience_ms = 2000
 
 interface Job {
   readonly message: ToWorker

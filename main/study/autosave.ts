@@ -1,7 +1,7 @@
 /** Time between a change and its save; a run of changes is saved once. */
-export const autosaveDelay_ms = 1000
+const autosaveDelay_ms = 1000
 /** Yet while changes keep coming a save is never put off for longer than this. */
-export const autosaveLongest_ms = 5000
+const autosaveLongest_ms = 5000
 
 /** Saves the study a moment after each change. Saves never overlap. */
 export interface Autosave {

@@ -9,7 +9,7 @@ import { largestStudyJsonBytes, readStudyJson, writeStudyJson } from './read-stu
 export const savedCopySuffix = '.rampfold'
 
 /** What a saved copy may unpack to: a damaged or hostile one must not exhaust the machine. */
-export const savedCopyLimits = { unpackedBytes: 2 ** 30, entries: 1000, freeBytes: 64 * 2 ** 20, ratio: 200 } as const
+const savedCopyLimits = { unpackedBytes: 2 ** 30, entries: 1000, freeBytes: 64 * 2 ** 20, ratio: 200 } as const
 
 /** A study with all it needs: document, measured columns, and the original files as they were added. */
 export interface SavedCopy {

@@ -20,17 +20,19 @@ afterAll(async () => {
   await built.remove()
 })
 
+interface HostProcess {
+  readonly child: ChildProcessWithoutNullStreams
+  answer(): Promise<string>
+}
+
+const start = (token: string): HostProcess => {
+  const child = spawn(process.execPath, [built.path, token])
+  const lines: AsyncIterator<string, undefined> = createInterface({ input: child.stdout })[Symbol.asyncIterator]()
+  return { child, answer: async () => (await lines.next()).value ?? 'ended' }
+}
+
 describe('hosts that start at once', () => {
-  interface HostProcess {
-    readonly child: ChildProcessWithoutNullStreams
-    answer(): Promise<string>
-  }
   const hosts: HostProcess[] = []
-  const start = (token: string): HostProcess => {
-    const child = spawn(process.execPath, [built.path, token])
-    const lines = createInterface({ input: child.stdout })[Symbol.asyncIterator]()
-    return { child, answer: async () => (await lines.next()).value ?? 'ended' }
-  }
   beforeAll(() => {
     for (let i = 0; i < 5; i += 1) hosts.push(start(`host-${i}`))
   })

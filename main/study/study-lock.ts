@@ -72,7 +72,9 @@ function keepLock(path: string, token: string, now: () => number): StudyLock {
       try {
         return (await tokenOfLock(path)) === token
       } catch (error) {
-        throw new Error(`the lock of the study's folder cannot be read (${error instanceof Error ? error.message : String(error)})`)
+        throw new Error(`the lock of the study's folder cannot be read (${error instanceof Error ? error.message : String(error)})`, {
+          cause: error,
+        })
       }
     },
     release: async () => {

@@ -14,7 +14,7 @@ import type { NamesInUse } from './study-session.ts'
 import { writeAtomically } from './write-atomically.ts'
 
 /** Newest studies that the recent list holds. */
-export const longestRecentList = 50
+const longestRecentList = 50
 
 const studyId = /^[0-9a-z-]{1,64}$/
 const lastStudySchema = z.object({ studyId: z.string().check(z.regex(studyId)) })

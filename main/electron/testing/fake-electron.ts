@@ -249,7 +249,6 @@ export const ipcMain = new FakeIpcMain()
 export const ipcRenderer = new FakeIpcRenderer()
 export const protocol = new FakeProtocol()
 export const session = { defaultSession: new FakeSession() }
-export const dialog = {}
 export const shell = {}
 
 export const Menu = {

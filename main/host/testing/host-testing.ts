@@ -35,7 +35,7 @@ export function sampleRun(
   return { columns, info: sampleInfo(fileName, bytes, rows) }
 }
 
-export function sampleInfo(fileName: string, bytes: Uint8Array, rows: number): RunInfo {
+function sampleInfo(fileName: string, bytes: Uint8Array, rows: number): RunInfo {
   return {
     id: `run-${sha256(bytes).slice(0, 12)}`,
     label: fileName.replace(/\.\w+$/, ''),
@@ -139,7 +139,7 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
 }
 
 /** A demo of two runs, fast one first, and exports that say what they were asked. */
-export const sampleParts: ProgramParts = {
+const sampleParts: ProgramParts = {
   demoSeries: () => ({
     name: 'Sample demo',
     files: [
