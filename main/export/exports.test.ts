@@ -155,6 +155,12 @@ const source: ExportSource = { document, result, program: { name: 'rampfold', ve
 const textOf = (format: ExportFormat, index = 0): string =>
   new TextDecoder('utf-8', { fatal: true }).decode(exportResults(source, format)[index]?.bytes)
 
+/** The text beside the table where the one run is changed. */
+function notesOf(change: Partial<RunResult>): string {
+  const files = exportResults({ ...source, result: { ...result, runs: [{ ...run, ...change }] } }, 'csv')
+  return new TextDecoder('utf-8').decode(files[1]?.bytes)
+}
+
 describe('activation.json, as scripts rely on it', () => {
   const json = JSON.parse(textOf('json')) as Record<string, unknown>
 
@@ -266,10 +272,6 @@ describe('activation.csv', () => {
   })
 
   it('gives an enthalpy its sign, or says that it has none', () => {
-    const notesOf = (change: Partial<RunResult>): string => {
-      const [text] = [exportResults({ ...source, result: { ...result, runs: [{ ...run, ...change }] } }, 'csv')[1]]
-      return new TextDecoder('utf-8').decode(text?.bytes)
-    }
     expect(notesOf({ enthalpy_J_per_g: -250, enthalpyMagnitude_J_per_g: 250 })).toContain('enthalpy -250.0 J/g (exothermic is negative)')
     expect(notesOf({ enthalpyMagnitude_J_per_g: 250 })).toContain('enthalpy 250.0 J/g, its sign not known')
     expect(notesOf({})).not.toContain('enthalpy')

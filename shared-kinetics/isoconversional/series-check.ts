@@ -22,7 +22,7 @@ export function checkSeries(info: MethodInfo, series: SeriesAtLevels): void {
     if (run.programme.kind === 'constant-heating-rate' && !(run.programme.heatingRate > 0)) {
       throw new KineticsError(
         'no-heating-rate',
-        `${info.label} needs a positive heating rate; run ${i + 1} has ${run.programme.heatingRate} K/s. State its heating rate or leave it out.`,
+        `${info.label} needs a positive heating rate; run ${i + 1} has ${run.programme.heatingRate} K/s. Give its heating rate or leave it out.`,
         { ...where, heatingRate_K_per_s: run.programme.heatingRate },
       )
     }

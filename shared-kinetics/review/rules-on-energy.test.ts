@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { levels, profileOf, reviewedRun, reviewInput } from '../check-values/review-input-of.ts'
 import type { LevelStatus } from '../isoconversional/result.ts'
+import { lineFit } from '../numerics/line-fit.ts'
 import type { KissingerResult, ProfileResult } from '../tasks/study-result.ts'
 import type { Finding } from './finding.ts'
 import type { ReviewedRun } from './review-input.ts'
@@ -53,9 +54,9 @@ const withError = (run: number, error_K: readonly number[]): ReviewedRun[] =>
     rates.map((_, i) => levels.map((_level, at) => (small[i] ?? 0) + (i === run ? (error_K[at] ?? 0) : 0))),
   )
 
-describe('outlier-run', () => {
-  const outliers = (runs: readonly ReviewedRun[]): Finding[] => outlierRun(reviewInput({ runs }))
+const outliers = (runs: readonly ReviewedRun[]): Finding[] => outlierRun(reviewInput({ runs }))
 
+describe('outlier-run', () => {
   it('names the run that was measured 5 K too hot, with Ea with and without it', () => {
     const [finding, ...more] = outliers(withError(4, [5, 5, 5]))
     expect(more).toEqual([])
@@ -73,6 +74,25 @@ describe('outlier-run', () => {
     expect(outliers(withError(2, [5, 5, 5]))).toEqual([])
     expect(outliers(withError(4, [5, -5, 5]))).toEqual([])
     expect(outliers(withError(4, [5, 0, 0]))).toEqual([])
+  })
+
+  it('fires from a change of Ea of 5 % on', () => {
+    const slope = (runs: readonly ReviewedRun[]): number =>
+      lineFit(
+        runs.map(({ result }) => 1 / (result.temperatureAtLevel_K[1] ?? 0)),
+        runs.map(({ result }) => Math.log(result.heatingRate_K_per_min ?? 0) - 2 * Math.log(result.temperatureAtLevel_K[1] ?? 0)),
+      ).slope
+    const errors = Array.from({ length: 21 }, (_, i) => 1.5 + 0.1 * i)
+    const changes = errors.map((error) => Math.abs(slope(withError(4, [error, error, error])) / slope(withError(4, []).slice(0, 4)) - 1))
+    // The levels differ a little in temperature, so that an error changes their Ea by a little less or more.
+    errors.forEach((error, i) => {
+      const change = changes[i] ?? Number.NaN
+      const expected = change > 0.0505 ? 1 : change < 0.0495 ? 0 : null
+      const fired = outliers(withError(4, [error, error, error])).length
+      expect(expected ?? fired).toBe(fired)
+    })
+    expect(Math.min(...changes)).toBeLessThan(0.0495)
+    expect(Math.max(...changes)).toBeGreaterThan(0.0505)
   })
 
   it('needs five runs', () => {
@@ -128,10 +148,10 @@ describe('a wide interval', () => {
   })
 })
 
-describe('energy-varies', () => {
-  const varied = (half: number): Finding | undefined =>
-    energyVaries(reviewInput({ result: { profiles: [profileOf('vyazovkin', [85, 100, 115], half)] } }))[0]
+const varied = (half: number): Finding | undefined =>
+  energyVaries(reviewInput({ result: { profiles: [profileOf('vyazovkin', [85, 100, 115], half)] } }))[0]
 
+describe('energy-varies', () => {
   it('is a caution where intervals have no value in common, a note that says so where all overlap', () => {
     expect(varied(14.9)).toMatchObject({ severity: 'caution', title: 'Ea varies by 30 % of its mean', evidence: { intervals: 'apart' } })
     expect(varied(15)).toMatchObject({ severity: 'note', evidence: { intervals: 'overlap' } })
@@ -168,14 +188,14 @@ const withStatus = (...status: LevelStatus[]): ProfileResult => ({
   status,
 })
 
-describe('level-without-energy', () => {
-  const findings = (...status: LevelStatus[]): Finding[] =>
-    levelWithoutEnergy(reviewInput({ result: { profiles: [withStatus(...status)] } }))
+const withoutEnergy = (...status: LevelStatus[]): Finding[] =>
+  levelWithoutEnergy(reviewInput({ result: { profiles: [withStatus(...status)] } }))
 
+describe('level-without-energy', () => {
   it.each(['minimum-at-bound', 'several-minima', 'minimum-flat', 'rate-not-positive', 'line-not-determined'] as const)(
     'says why: %s',
     (status) => {
-      const [finding, ...more] = findings('ok', status, status)
+      const [finding, ...more] = withoutEnergy('ok', status, status)
       expect(more).toEqual([])
       expect(finding).toMatchObject({ severity: 'caution', level: 0.5, evidence: { method: 'vyazovkin', status, missing: 2, levels: 3 } })
       expect(finding?.title).toContain('0.5 and 0.9')
@@ -183,18 +203,21 @@ describe('level-without-energy', () => {
   )
 
   it('gives one a method and status, and leaves to other rules what they speak of', () => {
-    expect(findings('minimum-flat', 'several-minima', 'minimum-flat')).toHaveLength(2)
-    expect(findings('ok', 'level-not-reached', 'too-few-programmes')).toEqual([])
+    expect(withoutEnergy('minimum-flat', 'several-minima', 'minimum-flat')).toHaveLength(2)
+    expect(withoutEnergy('ok', 'level-not-reached', 'too-few-programmes')).toEqual([])
   })
 })
 
-describe('energy-not-positive', () => {
-  const findings = (Ea: readonly number[]): Finding[] =>
-    energyNotPositive(reviewInput({ result: { profiles: [profileOf('friedman', Ea), profileOf('kas', [100, 100, 100])] } }))
+const notPositive = (Ea: readonly number[]): Finding[] =>
+  energyNotPositive(reviewInput({ result: { profiles: [profileOf('friedman', Ea), profileOf('kas', [100, 100, 100])] } }))
 
+describe('energy-not-positive', () => {
   it('fires at 0 and below, not above', () => {
-    expect(findings([0, -20, 100])[0]).toMatchObject({ level: 0.5, evidence: { methods: 'friedman', lowest_kJ_per_mol: -20, levels: 2 } })
-    expect(findings([0.01, 100, 100])).toEqual([])
+    expect(notPositive([0, -20, 100])[0]).toMatchObject({
+      level: 0.5,
+      evidence: { methods: 'friedman', lowest_kJ_per_mol: -20, levels: 2 },
+    })
+    expect(notPositive([0.01, 100, 100])).toEqual([])
   })
 })
 
@@ -221,12 +244,12 @@ describe('peaks-at-different-conversion', () => {
   })
 })
 
-describe('exothermic-direction-unknown', () => {
-  const withEnthalpy = (signed: number | null, magnitude: number | null): Finding[] =>
-    exothermicDirectionUnknown(
-      reviewInput({ runs: [reviewedRun('a', 5, 0, { result: { enthalpy_J_per_g: signed, enthalpyMagnitude_J_per_g: magnitude } })] }),
-    )
+const withEnthalpy = (signed: number | null, magnitude: number | null): Finding[] =>
+  exothermicDirectionUnknown(
+    reviewInput({ runs: [reviewedRun('a', 5, 0, { result: { enthalpy_J_per_g: signed, enthalpyMagnitude_J_per_g: magnitude } })] }),
+  )
 
+describe('exothermic-direction-unknown', () => {
   it('fires where there is a magnitude without a sign', () => {
     expect(withEnthalpy(null, 250)[0]).toMatchObject({ severity: 'note', evidence: { runs: 1, most_J_per_g: 250 } })
     expect(withEnthalpy(-250, 250)).toEqual([])

@@ -89,7 +89,9 @@ function linesWithout(runs: readonly ReviewedRun[], level: number, at: number): 
       : Math.log(result.reactionRateAtLevel_per_s[at] ?? Number.NaN),
   )
   if (![...x, ...y].every(Number.isFinite)) return []
-  const Ea = (slope: number): number => -joulesToKilojoules(gasConstant_J_per_mol_K * slope)
-  const points = leaveOneOut(x, y).map(({ studentised, slope }) => ({ studentised, Ea_kJ_per_mol: Ea(slope) }))
-  return [{ level, Ea_kJ_per_mol: Ea(lineFit(x, y).slope), points }]
+  const points = leaveOneOut(x, y).map(({ studentised, slope }) => ({ studentised, Ea_kJ_per_mol: energyOf(slope) }))
+  return [{ level, Ea_kJ_per_mol: energyOf(lineFit(x, y).slope), points }]
 }
+
+/** Ea in kJ/mol of a line of slope -Ea/R. */
+const energyOf = (slope_K: number): number => -joulesToKilojoules(gasConstant_J_per_mol_K * slope_K)

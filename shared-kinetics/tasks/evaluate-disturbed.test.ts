@@ -66,10 +66,10 @@ describe('heating rates that drift', () => {
   })
 })
 
-describe('five runs of which one stands 5 K too high', () => {
-  const withBad = (bad: number): StudyResult =>
-    evaluate([2, 5, 10, 20, 40].map((rate, i) => conversionRun(`${rate}`, ramp(360, rate, 850), (T) => (i === bad ? T + 5 : T))))
+const withBad = (bad: number): StudyResult =>
+  evaluate([2, 5, 10, 20, 40].map((rate, i) => conversionRun(`${rate}`, ramp(360, rate, 850), (T) => (i === bad ? T + 5 : T))))
 
+describe('five runs of which one stands 5 K too high', () => {
   it.each([0, 4])('at an end (run %i): named, with the Ea it would be without it', (bad) => {
     const result = withBad(bad)
     const finding = result.findings.find(({ code }) => code === 'outlier-run')

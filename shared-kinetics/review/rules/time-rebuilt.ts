@@ -4,7 +4,7 @@ import { digits } from '../words.ts'
 
 const wordsOfSource = { option: 'given by hand', nominal: 'read from name or heading' } as const
 
-/** Fires for each run whose export has no time, so that time was made from temperature and a stated heating rate. */
+/** Fires for each run whose export has no time, so that time was made from temperature and a nominal heating rate. */
 export function timeRebuilt({ runs }: ReviewInput): Finding[] {
   return runs.flatMap(({ info, result }): Finding[] => {
     const source = result.heatingRateSource
