@@ -19,7 +19,8 @@ const comparedTimes = 50
 
 /**
  * Numbers the distinct programmes of a series from slow to fast, starting with 0; replicates of one programme share a number. Heating rates within 5 % of a
- * group's slowest, holds within 1 K of a group's coolest, and general programmes that keep within 3 K of each other are one programme.
+ * group's slowest, holds within 1 K of a group's coolest, and general programmes that keep within 3 K of each other are one programme; so are a constant heating rate and
+ * a general programme that keep within 3 K when both clocks are set at the middle of the reaction (a ramp may start anywhere).
  *
  * @returns one number for each run, in the order given
  */
@@ -49,19 +50,28 @@ function sameProgramme(a: RunToGroup, b: RunToGroup): boolean {
     return other.heatingRate <= one.heatingRate * (1 + sameHeatingRate) && other.heatingRate >= one.heatingRate / (1 + sameHeatingRate)
   }
   if (one.kind === 'isothermal' && other.kind === 'isothermal') return Math.abs(one.temperature - other.temperature) <= sameHold_K
-  return one.kind === 'general' && other.kind === 'general' && sameHistory(a.reaction, b.reaction)
+  if (one.kind === 'general' && other.kind === 'general') return sameHistory(a.reaction, b.reaction, 0)
+  if (one.kind === 'isothermal' || other.kind === 'isothermal') return false
+  const middle_K = 0.5 * (a.meanTemperature_K + b.meanTemperature_K)
+  return sameHistory(a.reaction, b.reaction, timeAt(a.reaction, middle_K) - timeAt(b.reaction, middle_K))
 }
 
-function sameHistory(a: TemperatureHistory, b: TemperatureHistory): boolean {
-  const start = Math.max(a.time_s[0] ?? Infinity, b.time_s[0] ?? Infinity)
-  const end = Math.min(a.time_s.at(-1) ?? -Infinity, b.time_s.at(-1) ?? -Infinity)
+/** When a history first comes to a temperature; NaN where it never does. */
+function timeAt({ time_s, temperature_K }: TemperatureHistory, T: number): number {
+  return time_s[temperature_K.findIndex((value) => value >= T)] ?? Number.NaN
+}
+
+/** Whether b, its clock put on by `shift_s`, keeps to the temperatures of a. */
+function sameHistory(a: TemperatureHistory, b: TemperatureHistory, shift_s: number): boolean {
+  const start = Math.max(a.time_s[0] ?? Infinity, (b.time_s[0] ?? Infinity) + shift_s)
+  const end = Math.min(a.time_s.at(-1) ?? -Infinity, (b.time_s.at(-1) ?? -Infinity) + shift_s)
   const longer = Math.max((a.time_s.at(-1) ?? 0) - (a.time_s[0] ?? 0), (b.time_s.at(-1) ?? 0) - (b.time_s[0] ?? 0))
   // Programmes that share less than half of the longer reaction's time have not been compared at all.
-  if (end - start < 0.5 * longer) return false
+  if (!(end - start >= 0.5 * longer)) return false
   for (let i = 0; i <= comparedTimes; i++) {
     const time = start + ((end - start) * i) / comparedTimes
-    const apart = Math.abs(valueAt(a.time_s, a.temperature_K, time) - valueAt(b.time_s, b.temperature_K, time))
-    if (apart > sameHistory_K) return false
+    const apart = Math.abs(valueAt(a.time_s, a.temperature_K, time) - valueAt(b.time_s, b.temperature_K, time - shift_s))
+    if (!(apart <= sameHistory_K)) return false
   }
   return true
 }

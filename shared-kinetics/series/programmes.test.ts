@@ -76,6 +76,21 @@ describe('programme told from T(t)', () => {
     expect(tell({ start_K: 500, pieces: [{ rate_K_per_s: -0.1, duration_s: 600 }] }).programme.kind).toBe('general')
   })
 
+  it.each([4, 6, 10, 20, 40])('is not taken for constant for want of rows: ramp, hold, ramp in %d rows', (rows) => {
+    const steps = {
+      start_K: 400,
+      pieces: [
+        { rate_K_per_s: 0.1, duration_s: 600 },
+        { rate_K_per_s: 0, duration_s: 900 },
+        { rate_K_per_s: 0.2, duration_s: 300 },
+      ],
+    }
+    const few = sampled(steps, rows)
+    expect(tellProgramme(few.time, few.T, 0, rows - 1, null).programme.kind).toBe('general')
+    const even = sampled(ramp(400, 10, 500), rows)
+    expect(tellProgramme(even.time, even.T, 0, rows - 1, null).programme.kind).toBe('constant-heating-rate')
+  })
+
   it.each([
     [2.9, 'isothermal'],
     [3.3, 'constant-heating-rate'],
@@ -169,6 +184,28 @@ describe('groups of one programme', () => {
 
   it('holds within 1 K are replicates and come before ramps', () => {
     expect(programmeGroups([hold(400.9), constant(5), hold(400), hold(401.5)])).toEqual([0, 2, 0, 1])
+  })
+
+  it('a constant rate and a general programme are one where they keep within 3 K, whenever they start', () => {
+    // 5 K/min in turns of 20 % more and less, 5 K each, against an even 5 K/min that started 20 K higher.
+    const wavy = sampled({
+      start_K: 400,
+      pieces: Array.from({ length: 20 }, (_, i) => {
+        const rate_K_per_s = (5 / 60) * (i % 2 === 0 ? 0.8 : 1.2)
+        return { rate_K_per_s, duration_s: 5 / rate_K_per_s }
+      }),
+    })
+    const general: RunToGroup = {
+      programme: { kind: 'general' },
+      reaction: { time_s: column(wavy.time, 's'), temperature_K: column(wavy.T, 'K') },
+      meanHeatingRate_K_per_s: 100 / (wavy.time.at(-1) as number),
+      meanTemperature_K: 450,
+    }
+    const even = sampled(ramp(420, 5, 480))
+    const later: RunToGroup = { ...constant(5), reaction: { time_s: column(even.time, 's'), temperature_K: column(even.T, 'K') } }
+    expect(programmeGroups([later, general])).toEqual([0, 0])
+    expect(new Set(programmeGroups([constant(10), general])).size).toBe(2)
+    expect(new Set(programmeGroups([hold(450), general])).size).toBe(2)
   })
 
   it('general programmes are one where they keep within 3 K', () => {
