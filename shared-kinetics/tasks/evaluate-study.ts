@@ -17,6 +17,7 @@ import { profileResult } from './profile-result.ts'
 import { runResult } from './run-result.ts'
 import type { AnalysisSettings, StudyInput } from './study-input.ts'
 import type { StudyResult } from './study-result.ts'
+import { withoutLateHolds } from './without-late-holds.ts'
 
 /**
  * Everything that follows from a study: raw columns to conversion, to runs read at common levels, to Ea by every method asked for, to findings.
@@ -57,9 +58,12 @@ export function evaluateStudy(
   }
   const runs = inOrderOfProgramme(read)
   const series = seriesAtLevels(runs, settings.levels)
-  const { chosen, leftOut } = chooseMethods(
-    settings.methods,
-    runs.map((run) => run.converted.told.programme.kind),
+  const { chosen, leftOut } = withoutLateHolds(
+    chooseMethods(
+      settings.methods,
+      runs.map((run) => run.converted.told.programme.kind),
+    ),
+    runs.map(({ info, converted }) => ({ label: info.label, conversionBeforeHold: converted.conversionBeforeHold })),
   )
   steps.total = used.length + chosen.length + 1
   const seriesKey = JSON.stringify(runs.map((run) => [run.key, run.group]))
