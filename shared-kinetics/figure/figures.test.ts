@@ -300,6 +300,13 @@ describe('phi figure', () => {
     expect([line?.x[0] ?? 0, line?.x[(line?.x.length ?? 0) - 1] ?? 0].every((end) => end >= (x.min ?? 0) && end <= (x.max ?? 0))).toBe(true)
   })
 
+  it('is still a curve where the interval is narrower than its steps', () => {
+    const Ea = Array.from({ length: 81 }, (_, i) => 119.6 + 0.01 * i)
+    const sharp = { Ea_kJ_per_mol: Ea, phi: Ea.map((value) => 12 + (value - 120) ** 2), phiMinimum: 12, phiThreshold: 12 + 1e-9 }
+    const figure = phiFigure({ ...result, profiles: [{ ...phiProfile, phi: levels.map(() => sharp) }] }, 'vyazovkin', 0)
+    expect(marksOf(figure.marks, 'line')[0]?.x).toHaveLength(81)
+  })
+
   it('leaves minimum and interval out where the level has none', () => {
     expect(phiFigure(result, 'vyazovkin', 2).marks.map((mark) => mark.name)).toEqual(['Φ(Ea)', 'Threshold'])
     expect(phiFigure(result, 'friedman', 0).marks).toEqual([])

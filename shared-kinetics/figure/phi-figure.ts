@@ -5,6 +5,8 @@ import { extentOf, levelText, niceAxis } from './nice-axis.ts'
 
 /** The curve is drawn up to so many times the height of the threshold above the minimum: far from it Phi grows exponentially, and would press the threshold to the floor. */
 const heights = 7
+/** With fewer points left than these there would be no curve: the interval of nearly error-free runs is narrower than its steps. */
+const fewestPoints = 9
 
 /**
  * Phi(Ea) of a minimising method at one level: the curve, its minimum, the threshold, and the interval that the threshold cuts out of it.
@@ -51,6 +53,7 @@ function curveInView({ Ea_kJ_per_mol: Ea, phi, phiMinimum, phiThreshold }: PhiRe
   readonly y: readonly number[]
 } {
   const top = phiMinimum === null || phiThreshold === null ? Number.POSITIVE_INFINITY : phiMinimum + heights * (phiThreshold - phiMinimum)
-  const seen = phi.flatMap((value, i) => (value <= top ? [i] : []))
+  const low = phi.flatMap((value, i) => (value <= top ? [i] : []))
+  const seen = low.length < fewestPoints ? Array.from(phi.keys()) : low
   return { x: seen.map((i) => Ea[i] ?? Number.NaN), y: seen.map((i) => phi[i] ?? Number.NaN) }
 }
