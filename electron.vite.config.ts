@@ -1,11 +1,21 @@
 import react from '@vitejs/plugin-react'
+import { chmod } from 'node:fs/promises'
+import { join } from 'node:path'
 import { defineConfig } from 'electron-vite'
+import type { Plugin } from 'vite'
 
 // The host also runs under plain Node 20 (browser shell, command line), so the main bundle must not use later syntax.
 const node = 'node20.19'
 
+/** npm makes the command executable when it installs; a later build must leave it so. */
+const executableCommand: Plugin = {
+  name: 'executable-command',
+  writeBundle: async ({ dir }) => chmod(join(dir ?? '', 'cli.js'), 0o755),
+}
+
 export default defineConfig({
   main: {
+    plugins: [executableCommand],
     build: {
       target: node,
       sourcemap: true,

@@ -36,6 +36,11 @@ describe('the built command line, with nothing but Node beside it', () => {
     cpSync(join(root, 'package.json'), join(place, 'package.json'))
   })
 
+  it.skipIf(process.platform === 'win32')('can be run by its name after every build', () => {
+    const run = spawnSync(join(root, 'out/main/cli.js'), ['--version'], { encoding: 'utf8' })
+    expect([run.error, run.status]).toEqual([undefined, 0])
+  })
+
   it('starts and tells its version', () => {
     const { version } = JSON.parse(readFileSync(join(root, 'package.json'), 'utf8')) as { version: string }
     const run = cli('--version')
