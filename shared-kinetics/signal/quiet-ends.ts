@@ -79,10 +79,7 @@ export function findQuietEnds(x: Float64Array, y: Float64Array, first: number, l
     before,
     after,
     reachesFoot: { before: feet.before !== null, after: feet.after !== null },
-    standing: {
-      before: feet.before === null ? standingAt(mean, 'before', after) : 0,
-      after: feet.after === null ? standingAt(mean, 'after', before) : 0,
-    },
+    standing: standingOf(search, feet, before, after),
   }
 }
 
@@ -101,6 +98,31 @@ function aboveChord({ x, y }: CellMeans): Float64Array {
   const y0 = y[0] ?? 0
   const slope = ((y[n - 1] ?? 0) - y0) / ((x[n - 1] ?? 1) - x0)
   return y.map((value, i) => value - y0 - slope * ((x[i] ?? 0) - x0))
+}
+
+/** The first fifth of a signal is straight where it strays from its line by less than 1 % of its height: by no more than what a baseline may be off (or by four times the noise of its cells). */
+const straightPart = 0.2
+const straightWithin = 0.01
+
+function standingOf(
+  { mean, noise }: Search,
+  feet: { readonly before: number | null; readonly after: number | null },
+  before: QuietStretch | null,
+  after: QuietStretch | null,
+): QuietEnds['standing'] {
+  if (feet.before !== null && feet.after !== null) return { before: 0, after: 0 }
+  // A chord that ends near the top of a cut peak turns the peak upside down, and its feet mean nothing: a start that runs straight then tells more.
+  const n = mean.x.length
+  const part = Math.max(3, Math.round(straightPart * n))
+  const line = lineFit(mean.x.subarray(0, part), mean.y.subarray(0, part))
+  const over = mean.y.map((value, i) => Math.abs(value - line.valueAtMean - line.slope * ((mean.x[i] ?? 0) - line.xMean)))
+  const most = Math.max(...over)
+  if (Math.max(...over.subarray(0, part)) < Math.max(straightWithin * most, 4 * noise))
+    return { before: 0, after: (over[n - 1] ?? 0) / most }
+  return {
+    before: feet.before === null ? standingAt(mean, 'before', after) : 0,
+    after: feet.after === null ? standingAt(mean, 'after', before) : 0,
+  }
 }
 
 /** Without a quiet stretch, an end stands for itself with so much of the cells. */

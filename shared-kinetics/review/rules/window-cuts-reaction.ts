@@ -14,8 +14,13 @@ export function windowCutsReaction({ runs }: ReviewInput): Finding[] {
     const cut = (['start', 'end'] as const).filter((end) => rateAtEnds[end] > allowed)
     if (cut.length === 0) return []
     const isHold = result.programme === 'isothermal'
-    const atStart = `at the start of the window the reaction of ${info.label} runs at ${percent(rateAtEnds.start)} of its largest rate`
-    const atEnd = `at the end of the window the reaction of ${info.label} runs at ${percent(rateAtEnds.end)} of its largest rate`
+    // Under a heat flow the rate at an end is 0 by construction: what is told is how high the signal stands there over the line of the other side.
+    const runsAt = (share: number): string =>
+      result.signal === 'heat-flow'
+        ? `the heat flow of ${info.label} stands, or drifts, at ${percent(share)} of the height of its peak`
+        : `the reaction of ${info.label} runs at ${percent(share)} of its largest rate`
+    const atStart = `at the start of the window ${runsAt(rateAtEnds.start)}`
+    const atEnd = `at the end of the window ${runsAt(rateAtEnds.end)}`
     const startOfHold = `A hold begins with the reaction running: ${atStart}. Conversion counts from there; what reacted while the sample was heated up to the hold is not in it. `
     const endOfHold = `The reaction is not over when the hold ends: ${atEnd}. Conversion 1 is then where the measurement stops, which is earlier in cooler holds, and Ea is off at all levels. Measure longer. `
     const ofRamp =
