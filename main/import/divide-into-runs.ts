@@ -81,11 +81,12 @@ function refuseWhatIsMissing(plan: readonly PlannedColumn[], used: readonly Plan
     throw refuse(
       line,
       `No column holds the temperature of the sample.${seen}${blank}`,
-      'State which column is “temperature”, and its unit.',
+      'State which column is “temperature”, and its unit (on the command line: --column), or name it in the heading.',
     )
   }
   if (!used.some(isSignal)) {
-    const remedy = 'State which column is “mass”, “conversion”, “heat-flow” or “heat-release”, and its unit.'
+    const remedy =
+      'State which column is “mass”, “conversion”, “heat-flow” or “heat-release”, and its unit (on the command line: --column), or name it in the heading.'
     throw refuse(
       line,
       `No column holds a signal (mass, heat flow, heat-release rate or conversion).${weighty.join('')}${seen}${blank}`,

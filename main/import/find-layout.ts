@@ -129,7 +129,11 @@ function headingsAbove(
   if (!nearestIsUnits && options.columns === undefined && isBrokenRow(headings, dialect)) {
     const line = quoted(lineText(lines, candidate))
     const reason = `${line} stands above the first row of numbers and is neither headings nor a row of numbers.`
-    throw refuse(candidate + 1, reason, 'Mend or remove this line; or state the “heading line” and the “first data line”.')
+    throw refuse(
+      candidate + 1,
+      reason,
+      'Mend or remove this line; or state the “heading line” and the “first data line” (on the command line: --heading-line, --first-data-line).',
+    )
   }
   // A `key: value` or `key;value` line of the preamble above a unit row is no heading: it has a colon, or fewer cells than the units.
   const isEntry = /:(?:\s|$)/.test(headings[0] ?? '') || headings.length < units.length

@@ -49,7 +49,7 @@ export function planColumns(layout: Layout, width: number, options: ImportOption
     throw refuse(
       layout.headingLine + 1,
       `The rows have ${width} cells but this line names ${names} ${names === 1 ? 'column' : 'columns'}.`,
-      'Name every column; a decimal comma needs another delimiter than the comma; or state the “heading line”.',
+      'Name every column; a decimal comma needs another delimiter than the comma; or state the “heading line” (on the command line: --heading-line).',
     )
   }
   refuseUnknownOverrides(layout, widest, options, refuse)

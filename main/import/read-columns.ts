@@ -50,7 +50,8 @@ export function readColumns(
     if (from === to) return
     const line = lineOfRow[row] ?? 0
     if (column >= plan.length) {
-      const remedy = 'Remove what is too much in this line, or check the “delimiter” and the “decimal sign”.'
+      const remedy =
+        'Remove what is too much in this line, or state the “delimiter” and the “decimal sign” (on the command line: --delimiter, --decimal-sign).'
       throw refuse(
         line,
         `The row has more cells than there are columns: ${quoted(source.slice(from, to))} stands in cell ${column + 1}.`,
@@ -103,6 +104,6 @@ function notANumber(cell: string, line: number, label: string, plan: readonly Pl
     const remedy = 'Put each table in a file of its own.'
     return refuse(line, `The headings are repeated here (${quoted(cell)}): a second table follows the first.`, remedy)
   }
-  const remedy = 'Mend or remove this line; or set the column aside if it is not needed.'
+  const remedy = 'Mend or remove this line; or, if its column is not needed, set that aside (on the command line: --column).'
   return refuse(line, `${quoted(cell)} in column ${quoted(label)} is not a number, and more rows of numbers follow.`, remedy)
 }

@@ -79,6 +79,6 @@ function readTheOnlyPossible(
   throw refuse(
     null,
     'Its numbers can be read in two ways: the sign in “1,234” may be a decimal sign or divide thousands, and nothing in the file tells which.',
-    'State the “decimal sign”: point or comma.',
+    'State the “decimal sign”, point or comma (on the command line: --decimal-sign).',
   )
 }
