@@ -23,8 +23,11 @@ function cell(profile: ProfileResult, level: number): string {
   const Ea = profile.Ea_kJ_per_mol[level] ?? null
   if (Ea === null) return '-'
   const half = halfWidth(Ea, profile.lower95_kJ_per_mol[level] ?? null, profile.upper95_kJ_per_mol[level] ?? null)
-  return half === null ? Ea.toFixed(1) : `${Ea.toFixed(1)} ±${half.toFixed(1)}`
+  return half === null ? Ea.toFixed(1) : `${Ea.toFixed(1)} ±${intervalText(half)}`
 }
+
+/** An interval that rounds away is still there. */
+const intervalText = (half: number): string => (half < 0.05 ? '<0.1' : half.toFixed(1))
 
 function halfWidth(Ea: number, lower: number | null, upper: number | null): number | null {
   return lower === null || upper === null ? null : Math.max(Ea - lower, upper - Ea)
@@ -46,6 +49,6 @@ function kissinger({ kissinger: k }: StudyResult): string[] {
   if (k === null) return []
   const half = halfWidth(k.Ea_kJ_per_mol, k.lower95_kJ_per_mol, k.upper95_kJ_per_mol)
   return [
-    `Kissinger, from the peaks: ${k.Ea_kJ_per_mol.toFixed(1)}${half === null ? '' : ` ±${half.toFixed(1)}`} kJ/mol, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s)`,
+    `Kissinger, from the peaks: ${k.Ea_kJ_per_mol.toFixed(1)}${half === null ? '' : ` ±${intervalText(half)}`} kJ/mol, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s)`,
   ]
 }

@@ -104,7 +104,7 @@ const cases: readonly Case[] = [
     content: lines('Time (s);Temperature (K);Mass (ug)', ['1;300;1,234', '2;310;1,233', '3;320;1,232', '4;330;1,231']),
     line: null,
     reason: /read in two ways/,
-    remedy: /“decimal sign”: point or comma/,
+    remedy: /“decimal sign”, point or comma .*--decimal-sign/,
   },
   {
     what: 'a word amid the numbers',
