@@ -10,11 +10,12 @@ import {
   temperatureOf,
   type Pieces,
 } from '../check-values/simulated-run.ts'
-import { isHold, longestHold, startOfHold } from '../series/hold.ts'
+import { isHold, startOfHold } from '../series/hold.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column, type Column } from '../units/quantity.ts'
 import { rateAtEnds } from './cut-ends.ts'
 import { fromHeatFlow } from './from-heat-flow.ts'
+import { longestHold } from './longest-hold.ts'
 import { fromMass } from './from-mass.ts'
 import { valueAtEnd } from './plateau.ts'
 import { findWindow } from './window.ts'
@@ -41,10 +42,10 @@ const heat = 4e5
 const heatFlow = ({ T, alpha, rate }: Sampled): Float64Array =>
   rate.map((value, i) => heat * value - 100 - 0.1 * ((T[i] as number) - 450) - 20 * (alpha[i] as number))
 
-describe('a heat-flow run that does not hold its whole peak', () => {
-  const convert = (run: Sampled, kind: 'area-proportional' | 'straight' = 'area-proportional') =>
-    fromHeatFlow(run.time, run.T, heatFlow(run), kind, 'Run 4')
+const convert = (run: Sampled, kind: 'area-proportional' | 'straight' = 'area-proportional') =>
+  fromHeatFlow(run.time, run.T, heatFlow(run), kind, 'Run 4')
 
+describe('a heat-flow run that does not hold its whole peak', () => {
   it.each([560, 570, 575, 580])('is refused where it ends at %d K, above half height (apex 570.5 K)', (end) => {
     const run = sampled(ramp(380, 20, end))
     const normal = normalNumbers(31)

@@ -1,4 +1,3 @@
-import { median } from '../signal/median.ts'
 import type { RowRange } from './main-heating.ts'
 
 /** A step of time longer than so many usual ones is a gap. */
@@ -10,7 +9,7 @@ const smallestSplice_K = 3
 /** The steps of time from `first` to `last` that are more than ten times as long as the usual (median) one: each as the row before it and the row after it. */
 export function gapsOfTime(time_s: Float64Array, first: number, last: number): RowRange[] {
   const steps = stepsOf(time_s, first, last)
-  const gap = gapInSteps * median(steps)
+  const gap = gapInSteps * middle(steps)
   return Array.from(steps.keys())
     .filter((i) => (steps[i] ?? 0) > gap)
     .map((i) => ({ first: first + i, last: first + i + 1 }))
@@ -22,7 +21,7 @@ export function gapsOfTime(time_s: Float64Array, first: number, last: number): R
  */
 export function longestGapFreeStretch(time_s: Float64Array, temperature_K: Float64Array, first: number, last: number): RowRange {
   const temperatureSteps = stepsOf(temperature_K, first, last).map(Math.abs)
-  const splice = Math.max(smallestSplice_K, spliceInSteps * median(temperatureSteps))
+  const splice = Math.max(smallestSplice_K, spliceInSteps * middle(temperatureSteps))
   const gaps = new Set(gapsOfTime(time_s, first, last).map((gap) => gap.first))
   let best: RowRange = { first, last: first }
   let from = first
@@ -36,3 +35,5 @@ export function longestGapFreeStretch(time_s: Float64Array, temperature_K: Float
 
 const stepsOf = (values: Float64Array, first: number, last: number): Float64Array =>
   Float64Array.from({ length: Math.max(0, last - first) }, (_, i) => (values[first + i + 1] ?? 0) - (values[first + i] ?? 0))
+
+const middle = (values: Float64Array): number => values.toSorted()[values.length >> 1] ?? 0

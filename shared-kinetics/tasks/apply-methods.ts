@@ -59,7 +59,7 @@ export function applyKissinger(runs: readonly RunPeak[]): {
         `it is made for ${programmeNames['constant-heating-rate']}, and at least one run followed ${programmeNames[programme.kind]}`,
       )
     }
-    if (Number.isNaN(peak_K)) return without(`the reaction rate of ${label} has no maximum inside the window`)
+    if (Number.isNaN(peak_K)) return without(`the reaction rate of ${label} has no maximum that can be read inside the window`)
     peaks.push({ heatingRate: programme.heatingRate, temperature: quantity(peak_K, 'K'), programmeGroup })
   }
   const estimate = kissinger(peaks)

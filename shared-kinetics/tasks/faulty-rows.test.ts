@@ -60,10 +60,7 @@ describe('rows that are not there', () => {
     expect(found(result, 'gap-in-reaction').map(({ severity, run }) => `${severity} ${run}`)).toEqual(['caution 10'])
     const third = result.runs[2]
     expect(third?.peak_K).toBeNull()
-    levels.forEach((_, i) => {
-      const T = third?.temperatureAtLevel_K[i]
-      if (typeof T === 'number') expect(Math.abs(T - 555)).toBeGreaterThan(10)
-    })
+    expect(third?.temperatureAtLevel_K.filter((T) => T !== null && Math.abs(T - 555) < 10)).toEqual([])
     expect(third?.temperatureAtLevel_K.filter((T) => T === null).length).toBeGreaterThan(5)
     expect(farthest(result)).toBeLessThan(0.5)
   })

@@ -44,7 +44,7 @@ describe('holds after a heating', () => {
     Ea.forEach((value, i) => expect(Math.abs(value - 150)).toBeLessThan([3, 1.5, 0.6, 0.4][i] as number))
   })
 
-  it('it is left out, and why is said, where more than 2 % reacted during the heating', () => {
+  it('that method is left out, and why is said, where more than 2 % reacted during the heating', () => {
     const result = evaluate([470, 480, 490, 505], 10)
     expect(result.runs.every((run) => run.programme === 'isothermal')).toBe(true)
     expect(result.profiles.map(({ method }) => method)).toEqual(['friedman', 'vyazovkin'])

@@ -4,7 +4,7 @@ import { levelsInWords } from '../words.ts'
 
 /** Fires for each run that does not reach some of the levels inside its window. */
 export function levelNotReached({ result, runs }: ReviewInput): Finding[] {
-  return runs.flatMap(({ info, result: run }): Finding[] => {
+  return runs.flatMap(({ info, result: run, sampling }): Finding[] => {
     const missing = result.levels.filter((_, i) => run.temperatureAtLevel_K[i] === null)
     const [first] = missing
     if (first === undefined) return []
@@ -15,7 +15,7 @@ export function levelNotReached({ result, runs }: ReviewInput): Finding[] {
         stage: 'activation',
         title: `${info.label} does not reach conversion ${levelsInWords(missing)}`,
         message:
-          `Inside its window ${info.label} does not pass ${missing.length} of ${result.levels.length} levels (conversion ${levelsInWords(missing)}), so that no Ea is given there. ` +
+          `Inside its window ${info.label} does not pass${sampling.gaps.length > 0 ? ', or passes in a gap of its rows,' : ''} ${missing.length} of ${result.levels.length} levels (conversion ${levelsInWords(missing)}), so that no Ea is given there. ` +
           'Ask for other levels, widen its window, or leave the run out.',
         run: info.id,
         level: first,

@@ -9,6 +9,9 @@ import { windowCutsReaction } from './window-cuts-reaction.ts'
 const runs = [2, 5, 10].map((rate, i) => reviewedRun(String(i), rate, i))
 const withThird = (change: Parameters<typeof reviewedRun>[3]) => reviewInput({ runs: [...runs, reviewedRun('3', 20, 3, change)] })
 
+const severity = (sampling: NonNullable<NonNullable<Parameters<typeof reviewedRun>[3]>['sampling']>): string[] =>
+  rowsSetAside(withThird({ sampling })).map((finding) => finding.severity)
+
 describe('rules on rows and windows', () => {
   it('are silent where there is nothing to say', () => {
     for (const rule of [baselineReplaced, gapInReaction, rowsSetAside, samplingCoarse, windowCutsReaction])
@@ -46,8 +49,6 @@ describe('rules on rows and windows', () => {
   })
 
   it('rows set aside: a caution inside the reaction or where most share a time, else a note', () => {
-    const severity = (sampling: NonNullable<Parameters<typeof reviewedRun>[3]>['sampling']): string[] =>
-      rowsSetAside(withThird({ sampling: sampling ?? {} })).map((finding) => finding.severity)
     expect(severity({ withoutNumber: 3 })).toEqual(['note'])
     expect(severity({ behind: 3 })).toEqual(['note'])
     expect(severity({ behind: 3, behindInReaction: 1 })).toEqual(['caution'])
