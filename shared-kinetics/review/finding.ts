@@ -23,6 +23,7 @@ export const findingCodes = [
   'interval-wide-because-few-runs',
   'runs-do-not-agree',
   'outlier-run',
+  'replicates-disagree',
   'level-without-energy',
   'energy-not-positive',
   'peaks-at-different-conversion',

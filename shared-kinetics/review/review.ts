@@ -17,6 +17,7 @@ import { narrowHeatingRateSpread } from './rules/narrow-heating-rate-spread.ts'
 import { orderBroken } from './rules/order-broken.ts'
 import { outlierRun } from './rules/outlier-run.ts'
 import { peaksAtDifferentConversion } from './rules/peaks-at-different-conversion.ts'
+import { replicatesDisagree } from './rules/replicates-disagree.ts'
 import { rowsSetAside } from './rules/rows-set-aside.ts'
 import { runUnusable } from './rules/run-unusable.ts'
 import { runsDoNotAgree } from './rules/runs-do-not-agree.ts'
@@ -37,6 +38,7 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   samplingCoarse,
   orderBroken,
   outlierRun,
+  replicatesDisagree,
   runsDoNotAgree,
   levelNotReached,
   levelWithoutEnergy,

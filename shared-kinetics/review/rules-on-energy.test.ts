@@ -56,6 +56,12 @@ const withError = (run: number, error_K: readonly number[]): ReviewedRun[] =>
 
 const outliers = (runs: readonly ReviewedRun[]): Finding[] => outlierRun(reviewInput({ runs }))
 
+const slope = (runs: readonly ReviewedRun[]): number =>
+  lineFit(
+    runs.map(({ result }) => 1 / (result.temperatureAtLevel_K[1] ?? 0)),
+    runs.map(({ result }) => Math.log(result.heatingRate_K_per_min ?? 0) - 2 * Math.log(result.temperatureAtLevel_K[1] ?? 0)),
+  ).slope
+
 describe('outlier-run', () => {
   it('names the run that was measured 5 K too hot, with Ea with and without it', () => {
     const [finding, ...more] = outliers(withError(4, [5, 5, 5]))
@@ -77,11 +83,6 @@ describe('outlier-run', () => {
   })
 
   it('fires from a change of Ea of 5 % on', () => {
-    const slope = (runs: readonly ReviewedRun[]): number =>
-      lineFit(
-        runs.map(({ result }) => 1 / (result.temperatureAtLevel_K[1] ?? 0)),
-        runs.map(({ result }) => Math.log(result.heatingRate_K_per_min ?? 0) - 2 * Math.log(result.temperatureAtLevel_K[1] ?? 0)),
-      ).slope
     const errors = Array.from({ length: 21 }, (_, i) => 1.5 + 0.1 * i)
     const changes = errors.map((error) => Math.abs(slope(withError(4, [error, error, error])) / slope(withError(4, []).slice(0, 4)) - 1))
     // The levels differ a little in temperature, so that an error changes their Ea by a little less or more.

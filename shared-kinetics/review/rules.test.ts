@@ -15,6 +15,7 @@ import { levelNotReached } from './rules/level-not-reached.ts'
 import { methodDoesNotApply } from './rules/method-does-not-apply.ts'
 import { narrowHeatingRateSpread } from './rules/narrow-heating-rate-spread.ts'
 import { orderBroken } from './rules/order-broken.ts'
+import { replicatesDisagree } from './rules/replicates-disagree.ts'
 import { runUnusable } from './rules/run-unusable.ts'
 import { signalChosen } from './rules/signal-chosen.ts'
 import { timeRebuilt } from './rules/time-rebuilt.ts'
@@ -87,6 +88,15 @@ describe('heating-rate-differs-from-nominal', () => {
     expect(ratesDiffer(103.01, 100)).toHaveLength(1)
   })
 
+  it('is a stop that names the unit of time where the two are a factor of 60 apart, within a tenth', () => {
+    const [slow] = ratesDiffer(10.4 / 60, 10)
+    expect(slow).toMatchObject({ severity: 'stop', message: expect.stringMatching(/seconds where it says minutes/) as unknown })
+    const [fast] = ratesDiffer(9.6 * 60, 10)
+    expect(fast).toMatchObject({ severity: 'stop', message: expect.stringMatching(/minutes where its heading says seconds/) as unknown })
+    expect(ratesDiffer(60 * 11.01, 10)[0]?.severity).toBe('caution')
+    expect(ratesDiffer(60 * 10.99, 10)[0]?.severity).toBe('stop')
+  })
+
   it('is silent for holds, general programmes, rebuilt time, and where nothing was stated', () => {
     expect(ratesDiffer(10.5, 10, { heatingRate_K_per_min: null, heatingRateSource: null, programme: 'general' })).toEqual([])
     expect(ratesDiffer(10.5, 10, { heatingRateSource: 'option' })).toEqual([])
@@ -106,6 +116,37 @@ describe('heating-rate-not-constant', () => {
 
 const runAt = (id: string, rate: number, group: number, T: readonly (number | null)[]): ReviewedRun =>
   reviewedRun(id, rate, group, { result: { temperatureAtLevel_K: T } })
+
+const replicate = (id: string, T: readonly (number | null)[], enthalpy: number): ReviewedRun =>
+  reviewedRun(id, 10, 1, { result: { temperatureAtLevel_K: T, enthalpyMagnitude_J_per_g: enthalpy } })
+
+// The slow and the fast programme lie 20 K apart at every level, so a fifth of the shift is 4 K.
+const among = (a: readonly (number | null)[], b: readonly (number | null)[], heat: readonly [number, number] = [400, 400]): Finding[] => {
+  const ends = [runAt('slow', 5, 0, [600, 610, 620]), runAt('fast', 20, 2, [620, 630, 640])] as const
+  return replicatesDisagree(reviewInput({ runs: [ends[0], replicate('a', a, heat[0]), replicate('b', b, heat[1]), ends[1]] }))
+}
+
+describe('replicates-disagree', () => {
+  it('fires beyond a fifth of the shift, and names the level where it is worst', () => {
+    const [finding, ...more] = among([610, 620, 630], [614.2, 620, 636])
+    expect(more).toEqual([])
+    expect(finding).toMatchObject({ severity: 'caution', run: 'a', level: 0.9, evidence: { spread_K: 6, shareOfShift: 0.3 } })
+  })
+
+  it('is silent at a fifth of the shift', () => {
+    expect(among([610, 620, 630], [614, 620, 634])).toEqual([])
+  })
+
+  it('fires where enthalpies differ by more than a tenth of their mean, not at it', () => {
+    expect(shown(among([610, 620, 630], [610, 620, 630], [380, 421]))).toEqual(['caution replicates-disagree'])
+    expect(among([610, 620, 630], [610, 620, 630], [380, 420])).toEqual([])
+  })
+
+  it('passes over levels that a replicate does not reach, and over single runs', () => {
+    expect(among([610, 620, null], [610, 620, 650])).toEqual([])
+    expect(replicatesDisagree(reviewInput({ runs: atRates(2, 5, 20) }))).toEqual([])
+  })
+})
 
 describe('order-broken', () => {
   it('names the faster run and the worst level', () => {

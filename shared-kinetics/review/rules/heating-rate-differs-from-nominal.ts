@@ -3,6 +3,9 @@ import type { ReviewInput } from '../review-input.ts'
 import { digits, percent } from '../words.ts'
 
 const allowed = 0.03
+/** Minutes taken for seconds, or the other way round: a factor of 60, give or take what a heating rate may be off. */
+const unitSlip = 60
+const slipTolerance = 0.1
 
 /** Fires where a measured constant heating rate is more than 3 % off the nominal one; never for holds and general programmes, nor where time was rebuilt. */
 export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] {
@@ -12,15 +15,18 @@ export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] 
     if (result.heatingRateSource !== 'measured' || measured === null || nominal === null) return []
     if (Math.abs(measured - nominal) <= allowed * nominal) return []
     const off = measured / nominal - 1
+    const slip = slippedUnit(measured / nominal)
     return [
       {
         code: 'heating-rate-differs-from-nominal',
-        severity: 'caution',
+        severity: slip === null ? 'caution' : 'stop',
         stage: 'runs',
         title: `${info.label} heated at ${digits(measured, 4)} K/min, nominal ${digits(nominal, 4)}`,
         message:
-          `T(t) rises by ${digits(measured, 4)} K/min over the reaction, ${percent(Math.abs(off))} ${off > 0 ? 'faster' : 'slower'} than nominal${quoted(info.nominalHeatingRate?.text)}. ` +
-          'Ea is calculated with the measured rate; the nominal one would shift it. Where they are far apart check the time column for a wrong unit.',
+          slip === null
+            ? `Over the reaction T(t) rises by ${digits(measured, 4)} K/min, ${percent(Math.abs(off))} ${off > 0 ? 'faster' : 'slower'} than the nominal heating rate of ` +
+              `${digits(nominal, 4)} K/min${quoted(info.nominalHeatingRate?.text)}. Ea is calculated with the measured one; the nominal one would shift it.`
+            : `Measured and nominal heating rate${quoted(info.nominalHeatingRate?.text)} are a factor of 60 apart: the time column is ${slip}. Mend the unit in its heading and add the file again.`,
         run: info.id,
         level: null,
         evidence: { measured_K_per_min: measured, nominal_K_per_min: nominal, difference_percent: 100 * off },
@@ -32,3 +38,11 @@ export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] 
 }
 
 const quoted = (text = ''): string => (text.trim() === '' ? '' : ` (“${text.trim()}”)`)
+
+const isSlip = (ratio: number): boolean => Math.abs(ratio / unitSlip - 1) <= slipTolerance
+
+function slippedUnit(ratio: number): string | null {
+  if (isSlip(1 / ratio)) return 'most likely in minutes where its heading says hours, or in seconds where it says minutes'
+  if (isSlip(ratio)) return 'most likely in minutes where its heading says seconds, or in hours where it says minutes'
+  return null
+}

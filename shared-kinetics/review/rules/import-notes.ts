@@ -16,7 +16,7 @@ const titles: Readonly<Record<ImportNote['code'], string>> = {
 export function importNotes({ study }: ReviewInput): Finding[] {
   const ofRuns = study.runs
     .filter((run) => run.use)
-    .flatMap((run) => run.importNotes.map((note) => finding(note, run.id, `${run.label}: ${titles[note.code]}`)))
+    .flatMap((run) => run.importNotes.filter(saidHereOnly).map((note) => finding(note, run.id, `${run.label}: ${titles[note.code]}`)))
   const ofStudy = (study.importNotes ?? []).map((note) =>
     finding(
       note,
@@ -26,6 +26,9 @@ export function importNotes({ study }: ReviewInput): Finding[] {
   )
   return [...ofRuns, ...ofStudy]
 }
+
+/** A missing time column is spoken of by `time-rebuilt`, or by `run-unusable` where no heating rate is known. */
+const saidHereOnly = (note: ImportNote): boolean => note.code !== 'time-missing'
 
 const finding = (note: ImportNote, run: string | null, title: string): Finding => ({
   code: note.code,

@@ -23,7 +23,7 @@ export function orderBroken({ result, runs }: ReviewInput): Finding[] {
         title: `${rate(faster)} K/min is not later than ${rate(slower)} K/min at conversion ${levelsInWords(broken.map(({ level }) => level))}`,
         message:
           `At conversion ${digits(worst.level)} ${names(faster)} ${faster.length === 1 ? 'stands' : 'stand'} at ${celsius(temperatureAt(faster, at))}, the slower ${names(slower)} at ${celsius(temperatureAt(slower, at))}; ` +
-          'a faster run should stand higher. Ea there means nothing. Compare their windows, baselines, masses and temperature calibration; leave the wrong run out.',
+          'a faster run should stand higher. Ea there is not to be relied on. Compare their windows, baselines, masses and temperature calibration; leave the wrong run out.',
         run: faster[0]?.info.id ?? null,
         level: worst.level,
         evidence: { level: worst.level, slower_K: temperatureAt(slower, at), faster_K: temperatureAt(faster, at), levels: broken.length },
