@@ -10,9 +10,11 @@ const smallestSplice_K = 3
 export function gapsOfTime(time_s: Float64Array, first: number, last: number): RowRange[] {
   const steps = stepsOf(time_s, first, last)
   const gap = gapInSteps * middle(steps)
-  return Array.from(steps.keys())
-    .filter((i) => (steps[i] ?? 0) > gap)
-    .map((i) => ({ first: first + i, last: first + i + 1 }))
+  const gaps: RowRange[] = []
+  steps.forEach((step, i) => {
+    if (step > gap) gaps.push({ first: first + i, last: first + i + 1 })
+  })
+  return gaps
 }
 
 /**
@@ -33,7 +35,10 @@ export function longestGapFreeStretch(time_s: Float64Array, temperature_K: Float
   return best
 }
 
-const stepsOf = (values: Float64Array, first: number, last: number): Float64Array =>
-  Float64Array.from({ length: Math.max(0, last - first) }, (_, i) => (values[first + i + 1] ?? 0) - (values[first + i] ?? 0))
+function stepsOf(values: Float64Array, first: number, last: number): Float64Array {
+  const steps = new Float64Array(Math.max(0, last - first))
+  for (let i = 0; i < steps.length; i++) steps[i] = (values[first + i + 1] ?? 0) - (values[first + i] ?? 0)
+  return steps
+}
 
 const middle = (values: Float64Array): number => values.toSorted()[values.length >> 1] ?? 0

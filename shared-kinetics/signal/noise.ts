@@ -3,14 +3,14 @@ import { median } from './median.ts'
 /** Standard deviation of a normal variable over the median of its magnitude: 1/Φ⁻¹(3/4). */
 const madToStandardDeviation = 1.482602218505602
 
-/** Of so many samples the median's own standard error is below 1 %: more tell nothing more. */
-const mostSamples = 20_000
+/** Of so many samples the median's own standard error is below 2 %: more tell nothing that matters. */
+const mostSamples = 5_000
 
 /**
  * Standard deviation of the noise of y(x), robust against spikes, steps and the shape of the curve itself.
  *
  * At each sample the value is compared with the cubic through the four samples at one and two strides on either side; the difference, over its own standard
- * deviation for independent noise, has the noise's spread. The median of the magnitudes takes no notice of a few wild ones. Of more than 20,000 samples so many, evenly spread, are looked at.
+ * deviation for independent noise, has the noise's spread. The median of the magnitudes takes no notice of a few wild ones. Of more than 5,000 samples so many, evenly spread, are looked at.
  *
  * @param stride - in samples. Noise that a filter has spread over neighbouring samples shows only at a stride as wide as the filter.
  * @returns NaN with fewer than five usable samples
