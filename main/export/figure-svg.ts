@@ -26,7 +26,8 @@ export const defaultPrintSize: PrintSize = { width_mm: 160, height_mm: 105 }
 export function figureSvg(figure: Figure, size: PrintSize = defaultPrintSize): string {
   const width = size.width_mm * unitsPerMillimetre
   const legend = legendRows(figure.marks, width - 88)
-  const height = size.height_mm * unitsPerMillimetre + legend.length * lineHeight
+  const noteLines = figure.note === undefined ? [] : [figure.note]
+  const height = size.height_mm * unitsPerMillimetre + (legend.length + noteLines.length) * lineHeight
   const [x, y] = [axisOf(figure, 'x'), axisOf(figure, 'y')]
   const plot = plotOn(width, size.height_mm * unitsPerMillimetre, figure, x, y)
   const parts = [
@@ -45,6 +46,7 @@ export function figureSvg(figure: Figure, size: PrintSize = defaultPrintSize): s
     text(axisTitle(figure.x), (plot.left + plot.right) / 2, plot.bottom + 38, { anchor: 'middle' }),
     text(axisTitle(figure.y), 18, (plot.top + plot.bottom) / 2, { anchor: 'middle', turned: true }),
     ...legend.flatMap((row, line) => row.map((entry) => legendEntry(entry, plot.left, plot.bottom + 60 + line * lineHeight))),
+    ...noteLines.map((note, line) => text(note, plot.left, plot.bottom + 60 + (legend.length + line) * lineHeight, { colour: softInk })),
   ]
   return (
     `<?xml version="1.0" encoding="UTF-8"?>\n<svg xmlns="http://www.w3.org/2000/svg" version="1.1" width="${size.width_mm}mm" ` +

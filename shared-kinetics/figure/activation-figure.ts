@@ -1,7 +1,7 @@
 import type { MethodId } from '../isoconversional/result.ts'
 import type { Maybe, ProfileResult, StudyResult } from '../tasks/study-result.ts'
 import type { Figure, Mark } from './figure.ts'
-import { extentOf, niceAxis } from './nice-axis.ts'
+import { extentOf, levelText, niceAxis } from './nice-axis.ts'
 
 /**
  * Ea against conversion: the chosen method first, with the band of its interval, the other methods of `methodIds` behind it by line style and
@@ -19,7 +19,9 @@ export function activationFigure(result: StudyResult, methodIds: readonly Method
     const y = numbers(profile.Ea_kJ_per_mol)
     marks.push({ kind: 'points', name: profile.label, tone: { kind: 'method', index }, x: result.levels, y, joined: true })
   }
-  const { min, max } = energyAxis(profiles)
+  const fences = outerFences(profiles)
+  const { min, max } = energyAxis(profiles, fences)
+  const note = beyondText(result, first, min, max)
   return {
     id: 'activation-energy',
     title: 'Activation energy against conversion',
@@ -27,6 +29,7 @@ export function activationFigure(result: StudyResult, methodIds: readonly Method
     x: { label: 'Conversion α', unit: '', min: 0, max: 1, second: null },
     y: { label: 'Ea', unit: 'kJ/mol', min, max, second: null },
     marks,
+    ...(note === null ? {} : { note }),
   }
 }
 
@@ -49,15 +52,43 @@ function profilesInOrder(result: StudyResult, methodIds: readonly MethodId[], ch
   return wanted.map((id) => result.profiles.find((profile) => profile.method === id)).filter((profile) => profile !== undefined)
 }
 
-/** Every Ea is on the axis; the chosen interval too, unless it is so wide that the curve in it could no longer be read. */
-function energyAxis(profiles: readonly ProfileResult[]): { readonly min: number; readonly max: number } {
-  const [low, high] = extentOf(...profiles.map((profile) => profile.Ea_kJ_per_mol))
-  const [lower, upper] = extentOf(profiles[0]?.lower95_kJ_per_mol ?? [], profiles[0]?.upper95_kJ_per_mol ?? [])
+/**
+ * Where values count as far out: three times the distance of the quartiles beyond them (J. W. Tukey, Exploratory Data Analysis, 1977, "outer fences"; from
+ * memory). A tenth of the median stands in for a smaller distance, so that a constant Ea does not push out its own ends.
+ */
+function outerFences(profiles: readonly ProfileResult[]): readonly [number, number] {
+  const values = profiles
+    .flatMap((profile) => profile.Ea_kJ_per_mol)
+    .filter((value) => value !== null)
+    .toSorted((a, b) => a - b)
+  const quantile = (share: number): number => values[Math.round(share * (values.length - 1))] ?? Number.NaN
+  const reach = 3 * Math.max(quantile(0.75) - quantile(0.25), 0.1 * Math.abs(quantile(0.5)))
+  return [quantile(0.25) - reach, quantile(0.75) + reach]
+}
+
+/** Every Ea that is not far out is on the axis; its chosen interval too, unless it is so wide that the curve in it could no longer be read. */
+function energyAxis(
+  profiles: readonly ProfileResult[],
+  [below, above]: readonly [number, number],
+): { readonly min: number; readonly max: number } {
+  const isNear = (Ea: Maybe | undefined): boolean => Ea != null && Ea >= below && Ea <= above
+  const [low, high] = extentOf(profiles.flatMap((profile) => profile.Ea_kJ_per_mol.filter(isNear)))
+  const [first] = profiles
+  const near = (ends: readonly Maybe[] | undefined): readonly Maybe[] => (ends ?? []).filter((_, i) => isNear(first?.Ea_kJ_per_mol[i]))
+  const [lower, upper] = extentOf(near(first?.lower95_kJ_per_mol), near(first?.upper95_kJ_per_mol))
   const room = Math.max(high - low, 0.15 * Math.abs(high))
   return niceAxis(
     Number.isFinite(lower) ? Math.max(Math.min(low, lower), low - room) : low,
     Number.isFinite(upper) ? Math.min(Math.max(high, upper), high + room) : high,
   )
+}
+
+function beyondText(result: StudyResult, profile: ProfileResult | undefined, min: number, max: number): string | null {
+  const beyond = result.levels.flatMap((level, i) => {
+    const Ea = profile?.Ea_kJ_per_mol[i] ?? null
+    return Ea === null || (Ea >= min && Ea <= max) ? [] : [`α ${levelText(level)} (${Ea.toFixed(0)})`]
+  })
+  return beyond.length === 0 ? null : `Beyond the axis: ${beyond.join(', ')}.`
 }
 
 function describe(result: StudyResult, profiles: readonly ProfileResult[]): string {

@@ -8,6 +8,8 @@ export interface Figure {
   readonly x: Axis
   readonly y: Axis
   readonly marks: readonly Mark[]
+  /** What a reader must know beside the picture, e.g. points that lie beyond an axis; stands beneath it in every medium. */
+  readonly note?: string
 }
 
 export interface Axis {

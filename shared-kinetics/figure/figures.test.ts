@@ -330,6 +330,30 @@ describe('activation figure', () => {
     expect(isOnAxes(figure)(0.5, 120 - 3.18) && isOnAxes(figure)(0.5, 141)).toBe(true)
   })
 
+  it('leaves a level that is far out beyond the axis, and says so with its number', () => {
+    const [, starink] = result.profiles
+    if (starink === undefined) throw new Error('the fixture has a second profile')
+    // Quartiles 160 and 172: the outer fences lie at 160 - 3 x 16.6 and 172 + 3 x 16.6, a tenth of the median 166 being more than 12.
+    const Ea = [154, 158, 160, 162, 164, 166, 168, 170, 172, 221, 540]
+    const many = {
+      ...result,
+      levels: Ea.map((_, i) => (i + 1) / 12),
+      profiles: [
+        {
+          ...starink,
+          Ea_kJ_per_mol: Ea,
+          lower95_kJ_per_mol: Ea.map((value) => value - 1),
+          upper95_kJ_per_mol: Ea.map((value) => value + 1),
+        },
+      ],
+    }
+    const figure = activationFigure(many, ['starink'], 'starink')
+    expect(figure.y.max).toBeLessThan(260)
+    expect(isOnAxes(figure)(0.8, 221)).toBe(true)
+    expect(figure.note).toBe('Beyond the axis: α 0.916667 (540).')
+    expect(activationFigure(result, ['starink'], 'starink').note).toBeUndefined()
+  })
+
   it('keeps the curve readable under an interval far wider than it', () => {
     const [, starink] = result.profiles
     if (starink === undefined) throw new Error('the fixture has a second profile')
