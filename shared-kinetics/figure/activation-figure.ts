@@ -71,7 +71,7 @@ function energyAxis(
   profiles: readonly ProfileResult[],
   [below, above]: readonly [number, number],
 ): { readonly min: number; readonly max: number } {
-  const isNear = (Ea: Maybe | undefined): boolean => Ea != null && Ea >= below && Ea <= above
+  const isNear = (Ea: Maybe | undefined): boolean => Ea !== null && Ea !== undefined && Ea >= below && Ea <= above
   const [low, high] = extentOf(profiles.flatMap((profile) => profile.Ea_kJ_per_mol.filter(isNear)))
   const [first] = profiles
   const near = (ends: readonly Maybe[] | undefined): readonly Maybe[] => (ends ?? []).filter((_, i) => isNear(first?.Ea_kJ_per_mol[i]))
