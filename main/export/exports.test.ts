@@ -7,6 +7,7 @@ import type { Figure } from '../../shared-kinetics/figure/figure.ts'
 import type { ProfileResult, RunResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import type { ExportSource } from './activation-json.ts'
 import { csvTable, tableStyle } from './csv-table.ts'
+import { runInfoOf } from '../../shared-kinetics/check-values/run-info-of.ts'
 import { exportResults, type ExportFormat } from './export-results.ts'
 import { figureSvg } from './figure-svg.ts'
 import { shortTable } from './short-table.ts'
@@ -132,22 +133,7 @@ const result: StudyResult = {
 
 const document: StudyDocument = {
   ...emptyStudy('study', hostile),
-  runs: [{ id: 'r1', label: hostile }].map((part) => ({
-    ...part,
-    file: { name: run.fileName, sha256: run.sha256, byteLength: 1 },
-    columnsKey: run.sha256,
-    rows: 999,
-    hasTime: true,
-    signals: [],
-    nominalHeatingRate: null,
-    initialMass_kg: null,
-    exothermic: null,
-    metadata: [],
-    importNotes: [],
-    importDecisions: [],
-    use: true,
-    window: null,
-  })),
+  runs: [runInfoOf('r1', { label: hostile, file: { name: run.fileName, sha256: run.sha256, byteLength: 1 }, signals: [] })],
 }
 
 const source: ExportSource = { document, result, program: { name: 'rampfold', version: '1.2.3' } }

@@ -5,27 +5,12 @@ import { emptyStudy, type StudyDocument } from '../../shared-kinetics/contract/s
 import type { RunInfo, StudyResult } from '../../shared-kinetics/contract/study-result.ts'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { HostUnreachable } from '../transport/host-unreachable.ts'
+import { runInfoOf } from '../../shared-kinetics/check-values/run-info-of.ts'
 import { createMemoryHost, type MemoryHost } from '../transport/memory-transport.ts'
 import { createStudySession, type StudySession } from './study-session.ts'
 import { isStale } from './study-state.ts'
 
-const run = (id: string): RunInfo => ({
-  id,
-  label: id,
-  file: { name: `${id}.csv`, sha256: '0'.repeat(64), byteLength: 1 },
-  columnsKey: '0'.repeat(64),
-  rows: 10,
-  hasTime: true,
-  signals: [{ quantity: 'mass', unit: 'kg', label: 'Mass (mg)', fileUnit: 'mg' }],
-  nominalHeatingRate: null,
-  initialMass_kg: null,
-  exothermic: null,
-  metadata: [],
-  importNotes: [],
-  importDecisions: [],
-  use: true,
-  window: null,
-})
+const run = (id: string): RunInfo => runInfoOf(id, { label: id })
 
 const twoRuns: StudyDocument = { ...emptyStudy('study-1'), runs: [run('a'), run('b')] }
 

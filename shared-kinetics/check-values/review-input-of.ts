@@ -2,6 +2,7 @@ import type { ReviewedRun, ReviewInput } from '../review/review-input.ts'
 import type { RunInfo } from '../series/run.ts'
 import type { AnalysisSettings } from '../tasks/study-input.ts'
 import type { Maybe, ProfileResult, RunResult, StudyResult } from '../tasks/study-result.ts'
+import { runInfoOf } from './run-info-of.ts'
 
 /** Three levels: enough for every rule. */
 export const levels = [0.1, 0.5, 0.9]
@@ -17,24 +18,10 @@ export interface RunToReview {
 
 /** A run at a constant heating rate with nothing to remark on. */
 export function reviewedRun(id: string, rate_K_per_min: number, group: number, change: RunToReview = {}): ReviewedRun {
-  const info: RunInfo = {
-    id,
-    label: `Run ${id}`,
-    file: { name: `${id}.csv`, sha256: '0'.repeat(64), byteLength: 1 },
-    columnsKey: id,
-    rows: 1000,
-    hasTime: true,
-    signals: [{ quantity: 'mass', unit: 'kg', label: 'Mass (mg)', fileUnit: 'mg' }],
+  const info = runInfoOf(id, {
     nominalHeatingRate: { heatingRate_K_per_s: rate_K_per_min / 60, source: 'name', text: `${rate_K_per_min}K` },
-    initialMass_kg: null,
-    exothermic: null,
-    metadata: [],
-    importNotes: [],
-    importDecisions: [],
-    use: true,
-    window: null,
     ...change.info,
-  }
+  })
   const temperature = levels.map((level) => 600 + 20 * level + 10 * Math.log(rate_K_per_min))
   const result: RunResult = {
     runId: id,

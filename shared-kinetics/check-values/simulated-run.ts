@@ -1,6 +1,7 @@
 import type { RunColumns, RunInfo, SignalInfo } from '../series/run.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
+import { runInfoOf } from './run-info-of.ts'
 
 /** A temperature programme in straight pieces, from time 0 on. */
 export interface Pieces {
@@ -108,24 +109,13 @@ export function runOf(
   info: Partial<RunInfo> = {},
 ): { readonly info: RunInfo; readonly columns: RunColumns } {
   return {
-    info: {
-      id,
-      label: `Run ${id}`,
-      file: { name: `${id}.csv`, sha256: '0'.repeat(64), byteLength: 1 },
+    info: runInfoOf(id, {
       columnsKey: `columns ${id}`,
       rows: values.temperature_K.length,
       hasTime: values.time_s !== null,
       signals: values.signals.map(({ quantity, unit }) => ({ quantity, unit, label: quantity, fileUnit: unit })),
-      nominalHeatingRate: null,
-      initialMass_kg: null,
-      exothermic: null,
-      metadata: [],
-      importNotes: [],
-      importDecisions: [],
-      use: true,
-      window: null,
       ...info,
-    },
+    }),
     columns: {
       time_s: values.time_s === null ? null : column(values.time_s, 's'),
       temperature_K: column(values.temperature_K, 'K'),

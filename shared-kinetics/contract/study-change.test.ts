@@ -1,25 +1,10 @@
 import { describe, expect, it } from 'vitest'
 import { applyChange, labelOfChange, studyChangeSchema } from './study-change.ts'
 import { emptyStudy, parseStudyDocument } from './study-document.ts'
+import { runInfoOf } from '../check-values/run-info-of.ts'
 import type { RunInfo } from '../series/run.ts'
 
-const run = (id: string): RunInfo => ({
-  id,
-  label: `run ${id}`,
-  file: { name: `${id}.csv`, sha256: '0'.repeat(64), byteLength: 10 },
-  columnsKey: '1'.repeat(64),
-  rows: 3,
-  hasTime: true,
-  signals: [{ quantity: 'mass', unit: 'kg', label: 'Mass (mg)', fileUnit: 'mg' }],
-  nominalHeatingRate: null,
-  initialMass_kg: null,
-  exothermic: null,
-  metadata: [],
-  importNotes: [],
-  importDecisions: [],
-  use: true,
-  window: null,
-})
+const run = (id: string): RunInfo => runInfoOf(id, { label: `run ${id}` })
 const study = applyChange(emptyStudy('s1'), { kind: 'add-runs', runs: [run('a'), run('b')], importNotes: [] })
 
 describe('a change', () => {

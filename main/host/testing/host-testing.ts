@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto'
 import type { HostTransport, ImportAnswer } from '../../../shared-kinetics/contract/host-api.ts'
+import { runInfoOf } from '../../../shared-kinetics/check-values/run-info-of.ts'
 import type { RunColumns, RunInfo } from '../../../shared-kinetics/series/run.ts'
 import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts'
 import { column } from '../../../shared-kinetics/units/quantity.ts'
@@ -35,25 +36,14 @@ export function sampleRun(
   return { columns, info: sampleInfo(fileName, bytes, rows) }
 }
 
-function sampleInfo(fileName: string, bytes: Uint8Array, rows: number): RunInfo {
-  return {
-    id: `run-${sha256(bytes).slice(0, 12)}`,
+const sampleInfo = (fileName: string, bytes: Uint8Array, rows: number): RunInfo =>
+  runInfoOf(`run-${sha256(bytes).slice(0, 12)}`, {
     label: fileName.replace(/\.\w+$/, ''),
     file: { name: fileName, sha256: sha256(bytes), byteLength: bytes.byteLength },
     columnsKey: sha256(`columns of ${sha256(bytes)}`),
     rows,
-    hasTime: true,
-    signals: [{ quantity: 'mass', unit: 'kg', label: 'Mass (mg)', fileUnit: 'mg' }],
-    nominalHeatingRate: null,
     initialMass_kg: 1e-5,
-    exothermic: null,
-    metadata: [],
-    importNotes: [],
-    importDecisions: [],
-    use: true,
-    window: null,
-  }
-}
+  })
 
 const noNumbers: StudyResult = {
   levels: [0.5],
