@@ -49,7 +49,9 @@ export async function startProgram(words: readonly string[], steps: StartSteps):
   if (!words.includes('--browser')) {
     const outcome = await tryDesktop(steps)
     if (outcome.kind === 'ended') return outcome.exitCode
-    steps.warn(`The desktop window cannot be opened: ${withoutStop(outcome.reason)}. The sheet opens in a browser instead.`)
+    steps.warn(
+      `The desktop window cannot be opened: ${withoutStop(outcome.reason)}. ${openBrowser ? 'The sheet opens in a browser instead.' : 'Open the address below in a browser.'}`,
+    )
   }
   await steps.runBrowser({ openBrowser })
   return 0
