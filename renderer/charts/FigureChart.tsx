@@ -130,11 +130,11 @@ export function FigureChart({ figure, overlay, colours, emphasis = null, onPick,
     <div className="chart" data-figure={figure.id}>
       <div className="chart-actions">
         {zoomed && (
-          <Button className="text-button" onPress={showWhole}>
+          <Button className="chart-action is-steady" onPress={showWhole}>
             Show whole
           </Button>
         )}
-        <Button className="text-button" onPress={copy} aria-label={`Copy picture of ${figure.title}`}>
+        <Button className="chart-action" onPress={copy} aria-label={`Copy picture of ${figure.title}`}>
           Copy picture
         </Button>
       </div>

@@ -95,7 +95,14 @@ function uncrowded(mark: Extract<Mark, { kind: 'points' }>, stroke: Stroke): Str
   return { ...stroke, radius: mark.tone.kind === 'method' && mark.tone.index === 0 ? 1.7 : 0 }
 }
 
+/**
+ * Chart.js draws a line without dashes by one upright stroke for all points within a pixel of each other, which turns a steep curve into
+ * stairs. A dash longer than any chart is a solid line that it draws from point to point.
+ */
+const solid: readonly number[] = [100_000, 0]
+
 function lineDataset(mark: Extract<Mark, { kind: 'line' }>, stroke: Stroke, order: number): FigureDataset {
+  const dash = dashOf(mark, stroke)
   return {
     type: 'scatter',
     label: mark.name,
@@ -105,7 +112,7 @@ function lineDataset(mark: Extract<Mark, { kind: 'line' }>, stroke: Stroke, orde
     pointHitRadius: 6,
     borderColor: stroke.colour,
     borderWidth: stroke.width,
-    borderDash: [...dashOf(mark, stroke)],
+    borderDash: [...(dash.length === 0 ? solid : dash)],
     borderJoinStyle: 'round',
     order,
   }

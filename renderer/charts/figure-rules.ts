@@ -1,14 +1,21 @@
+import type { Chart } from 'chart.js'
 import type { AnnotationOptions } from 'chartjs-plugin-annotation'
-import type { Figure } from '../../shared-kinetics/figure/figure.ts'
+import type { Figure, Mark } from '../../shared-kinetics/figure/figure.ts'
 import type { ChartColours } from './chart-colours.ts'
-import { dashOf, strokeOf } from './figure-datasets.ts'
 import { chartFont } from './chart-font.ts'
+import { dashOf, strokeOf } from './figure-datasets.ts'
+import { levelName, uprightNames, type PixelPoint } from './rule-names.ts'
 
-/** The rules of a figure as annotations, each with its name at its end. */
+type Rule = Extract<Mark, { kind: 'rule' }>
+
+const nameSize = 11.5
+const nameFont = `${nameSize}px ${chartFont}`
+/** Of the label about its text. */
+const padding = { x: 4, y: 1 }
+
+/** The rules of a figure as annotations, each with its name beside it and inside the plot. */
 export function rulesOf(figure: Figure, colours: ChartColours): Record<string, AnnotationOptions<'line'>> {
   const rules: Record<string, AnnotationOptions<'line'>> = {}
-  const upright = figure.marks.flatMap((mark) => (mark.kind === 'rule' && mark.along === 'y' ? [mark.at] : []))
-  const leftmost = Math.min(...upright)
   for (const [i, mark] of figure.marks.entries()) {
     if (mark.kind !== 'rule') continue
     const stroke = strokeOf(mark.tone, colours)
@@ -23,20 +30,55 @@ export function rulesOf(figure: Figure, colours: ChartColours): Record<string, A
       label: {
         display: true,
         content: mark.name,
-        position: 'start',
+        position: mark.along === 'x' ? 'center' : 'start',
         backgroundColor: colours.paper,
         color: colour,
-        font: { family: chartFont, size: 11.5, weight: 'normal' },
-        padding: { x: 4, y: 1 },
-        ...(mark.along === 'x' ? { xAdjust: 6 } : beside(mark.name, upright.length > 1 && mark.at === leftmost)),
+        font: { family: chartFont, size: nameSize, weight: 'normal' },
+        padding,
+        // Where a name fits is known only once the chart is laid out.
+        xAdjust: ({ chart }) => adjustment(chart, figure, mark).x,
+        yAdjust: ({ chart }) => adjustment(chart, figure, mark).y,
       },
     }
   }
   return rules
 }
 
-/** Puts an upright rule's name to its side, so that the names of two near rules do not cover each other. */
-function beside(name: string, left: boolean): { readonly xAdjust: number; readonly yAdjust: number } {
-  const width = name.length * 5.4 + 12
-  return { xAdjust: left ? -width / 2 - 4 : width / 2 + 4, yAdjust: 4 }
+/** From where the annotation would put the name (on the rule) to where it stands. */
+function adjustment(chart: Chart, figure: Figure, rule: Rule): { readonly x: number; readonly y: number } {
+  const { x, y } = chart.scales
+  if (x === undefined || y === undefined) return { x: 0, y: 0 }
+  const plot = { from: x.left, to: x.right }
+  if (rule.along === 'x') {
+    const middle = levelName(y.getPixelForValue(rule.at), widthOf(chart, rule), plot, curvesInPixels(chart, figure))
+    return { x: middle - (x.left + x.right) / 2, y: 0 }
+  }
+  const upright = figure.marks.filter((mark) => mark.kind === 'rule').filter((mark) => mark.along === 'y')
+  const names = uprightNames(
+    upright.map((mark) => ({ at: x.getPixelForValue(mark.at), width: widthOf(chart, mark) })),
+    plot,
+  )
+  const name = names[upright.indexOf(rule)]
+  return name === undefined ? { x: 0, y: 0 } : { x: name.middle - x.getPixelForValue(rule.at), y: 4 + name.down }
+}
+
+function widthOf({ ctx }: Chart, { name }: Rule): number {
+  ctx.save()
+  ctx.font = nameFont
+  const { width } = ctx.measureText(name)
+  ctx.restore()
+  return width + 2 * padding.x
+}
+
+function curvesInPixels(chart: Chart, figure: Figure): readonly PixelPoint[] {
+  const { x, y } = chart.scales
+  if (x === undefined || y === undefined) return []
+  return figure.marks.flatMap((mark) =>
+    mark.kind === 'line' || mark.kind === 'points'
+      ? Array.from(mark.x, (abscissa, i) => ({
+          x: x.getPixelForValue(abscissa),
+          y: y.getPixelForValue(mark.y[i] ?? Number.NaN),
+        })).filter((point) => Number.isFinite(point.x) && Number.isFinite(point.y))
+      : [],
+  )
 }
