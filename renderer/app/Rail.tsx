@@ -1,9 +1,10 @@
 import { useMemo } from 'react'
 import type { StudyResult } from '../../shared-kinetics/contract/study-result.ts'
-import { formatAtLevel, levelQuantity } from '../sheet/at-level.ts'
+import { formatAt, levelQuantity } from '../sheet/at-level.ts'
+import { endProgrammes, meanAtLevel, programmeRange } from '../sheet/end-programmes.ts'
 import { decimals, formatInterval, formatLevel, halfWidth, statusWords } from '../sheet/format.ts'
 import { LevelRail } from '../sheet/LevelRail.tsx'
-import { railBars } from '../sheet/rail-bars.ts'
+import { railBars, railCaption } from '../sheet/rail-bars.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
 import { useView } from '../state/services.ts'
 import { chosenAmong } from '../state/view-store.ts'
@@ -26,10 +27,11 @@ export function Rail({
     wanted,
   )
   const profile = result.profiles.find((one) => one.method === chosen)
-  const bars = useMemo(
-    () => railBars(result.levels.map((_, i) => halfWidth(profile?.lower95_kJ_per_mol[i], profile?.upper95_kJ_per_mol[i]))),
-    [result, profile],
-  )
+  const { bars, caption } = useMemo(() => {
+    const widths = result.levels.map((_, i) => halfWidth(profile?.lower95_kJ_per_mol[i], profile?.upper95_kJ_per_mol[i]))
+    const mean = profile?.mean.Ea_kJ_per_mol ?? null
+    return { bars: railBars(widths, mean), caption: railCaption(widths, mean) }
+  }, [result, profile])
   const Ea = decimals(profile?.Ea_kJ_per_mol[levelIndex], 1)
   const interval = formatInterval(
     profile?.Ea_kJ_per_mol[levelIndex],
@@ -39,19 +41,20 @@ export function Rail({
   const r2 = decimals(profile?.r2[levelIndex], 5)
   const status = profile?.status[levelIndex]
   const quantity = levelQuantity(result)
-  const slowest = formatAtLevel(result.runs[0], levelIndex, quantity)
-  const fastest = formatAtLevel(result.runs.at(-1), levelIndex, quantity)
+  const ends = useMemo(() => endProgrammes(result), [result])
+  const [slowest = '', fastest = slowest] = ends.map(({ runs }) => formatAt(meanAtLevel(runs, levelIndex, quantity), quantity))
+  const range = programmeRange(ends.map(({ name }) => name))
   const word = status === undefined || status === 'ok' ? '' : statusWords[status]
   const spoken = [
     formatLevel(level),
     Ea === '' ? word : `Ea ${Ea}${interval === '' ? '' : ` plus or minus ${interval}`} kJ/mol`,
-    slowest === '' || fastest === '' ? '' : `${slowest} to ${fastest} ${quantity.unit}`,
+    slowest === '' || fastest === '' ? '' : `${slowest} to ${fastest} ${quantity.unit} at ${range.replace('…', 'to')}`,
   ]
     .filter((part) => part !== '')
     .join(', ')
 
   return (
-    <LevelRail levels={result.levels} index={levelIndex} bars={bars} spoken={spoken} onMove={actions.moveLevel}>
+    <LevelRail levels={result.levels} index={levelIndex} bars={bars} caption={caption} spoken={spoken} onMove={actions.moveLevel}>
       <p className="readout-energy">
         {profile !== undefined && <span className="readout-method">{profile.label}</span>}
         {Ea === '' ? (
@@ -70,10 +73,10 @@ export function Rail({
           </>
         )}
       </p>
-      <p>
+      <p title="Slowest to fastest programme, each as the mean over its replicates">
         {quantity.symbol} <strong>{slowest === '' ? 'not reached' : slowest}</strong> …{' '}
         <strong>{fastest === '' ? 'not reached' : fastest}</strong> {quantity.unit}
-        <span className="soft"> {quantity.kind === 'time' ? ' first to last run' : ' slowest to fastest'}</span>
+        <span className="readout-programmes"> at {range}</span>
       </p>
     </LevelRail>
   )

@@ -1,5 +1,5 @@
 import { runCopyColumns, runRows } from '../stages/runs/run-rows.ts'
-import { levelColumns, levelRows } from '../stages/activation/level-rows.ts'
+import { levelCopyColumns, levelRows } from '../stages/activation/level-rows.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
 import { levelQuantity } from '../sheet/at-level.ts'
 import { copyText } from '../sheet/data-table.ts'
@@ -82,5 +82,5 @@ export function tableOfStage({ session, view }: Services): string | null {
   const available = result?.profiles.map((profile) => profile.method) ?? []
   const chosen = chosenAmong(available, chosenMethod)
   if (result === null || chosen === null) return null
-  return copyText(levelColumns(result, chosen, comparedAmong(available, comparedMethods, chosen)), levelRows(result))
+  return copyText(levelCopyColumns(result, chosen, comparedAmong(available, comparedMethods, chosen)), levelRows(result))
 }

@@ -8,6 +8,8 @@ export interface LevelRailProps {
   readonly levels: readonly number[]
   readonly index: number
   readonly bars: readonly RailBar[]
+  /** What the bars mean, line by line. */
+  readonly caption?: readonly string[]
   /** What stands at this level, in words, for people who hear the screen. */
   readonly spoken: string
   readonly onMove: (index: number) => void
@@ -19,7 +21,7 @@ const marks = Array.from({ length: 11 }, (_, i) => i / 10)
 const percent = (value: number): string => `${(value * 100).toFixed(3)}%`
 
 /** The strip along the foot of the sheet: one handle, alpha from 0 to 1, shared by every chart and table. */
-export function LevelRail({ levels, index, bars, spoken, onMove, children }: LevelRailProps) {
+export function LevelRail({ levels, index, bars, caption = [], spoken, onMove, children }: LevelRailProps) {
   const trackRef = useRef<HTMLDivElement>(null)
   const level = levels[index] ?? 0
 
@@ -45,6 +47,11 @@ export function LevelRail({ levels, index, bars, spoken, onMove, children }: Lev
         <span className="rail-label">Conversion α</span>
         <output className="rail-number">{formatLevel(level)}</output>
       </div>
+      <p className="rail-caption">
+        {caption.map((line) => (
+          <span key={line}>{line} </span>
+        ))}
+      </p>
       <div
         className="rail-grip"
         // oxlint-disable-next-line jsx-a11y/prefer-tag-over-role -- a range input has no uneven levels and no bars

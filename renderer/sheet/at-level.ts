@@ -27,5 +27,10 @@ export function atLevel(run: RunResult | null | undefined, levelIndex: number, q
   return kelvins === null ? null : kelvinToCelsius(kelvins)
 }
 
+/** Decimals on the screen. */
+export const levelPlaces = ({ kind }: LevelQuantity): number => (kind === 'time' ? 2 : 1)
+
+export const formatAt = (value: Maybe, quantity: LevelQuantity): string => decimals(value, levelPlaces(quantity))
+
 export const formatAtLevel = (run: RunResult | null | undefined, levelIndex: number, quantity: LevelQuantity): string =>
-  decimals(atLevel(run, levelIndex, quantity), quantity.kind === 'time' ? 2 : 1)
+  formatAt(atLevel(run, levelIndex, quantity), quantity)

@@ -29,6 +29,12 @@ export function halfWidth(lower: Maybe | undefined, upper: Maybe | undefined): M
   return (upper - lower) / 2
 }
 
+/** Whether an interval lies so unevenly about its value that ± would mislead: by more than a twentieth of its width. */
+export function isLopsided(value: Maybe | undefined, lower: Maybe | undefined, upper: Maybe | undefined): boolean {
+  if (value === null || value === undefined || lower === null || lower === undefined || upper === null || upper === undefined) return false
+  return Math.abs((upper + lower) / 2 - value) > (upper - lower) / 20
+}
+
 /** The interval about a value: `4.8`, or `−4.1 +5.6` where it is lopsided by more than a twentieth of its width. */
 export function formatInterval(value: Maybe | undefined, lower: Maybe | undefined, upper: Maybe | undefined, count = 1): string {
   const half = halfWidth(lower, upper)
@@ -42,7 +48,7 @@ export function formatInterval(value: Maybe | undefined, lower: Maybe | undefine
     upper === undefined
   )
     return ''
-  const lopsided = Math.abs((upper + lower) / 2 - value) > half / 10
+  const lopsided = isLopsided(value, lower, upper)
   if (!lopsided && half < 0.5 * 10 ** -count) return `< ${(10 ** -count).toFixed(count)}`
   return lopsided ? `−${decimals(value - lower, count)} +${decimals(upper - value, count)}` : decimals(half, count)
 }
@@ -58,7 +64,7 @@ export function formatRateError(standardError: Maybe): string {
   return standardError < 0.5 * 10 ** -count ? `< ${(10 ** -count).toFixed(count)}` : decimals(standardError, count)
 }
 
-const rateDecimals = (standardError: Maybe): number =>
+export const rateDecimals = (standardError: Maybe): number =>
   standardError === null || !(standardError > 0) ? 2 : Math.min(4, Math.max(2, Math.ceil(-Math.log10(standardError))))
 
 export function formatWindow(window: Window): string {

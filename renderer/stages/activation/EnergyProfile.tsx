@@ -73,9 +73,12 @@ function IntervalNote({ profile }: { readonly profile: ProfileResult }) {
   return <>95 % Student-t, n − 2 degrees of freedom ({profile.interval.dof} here), pointwise.</>
 }
 
-function MeanLine({ profile, document, actions }: ActivationProps & { readonly profile: ProfileResult }) {
+function MeanLine({ profile, result, document, actions }: ActivationProps & { readonly profile: ProfileResult }) {
   const [from, to] = document.settings.meanRange
-  const { Ea_kJ_per_mol: mean, spread_kJ_per_mol: spread } = profile.mean
+  const { Ea_kJ_per_mol: mean } = profile.mean
+  const ends = endsOfMean(profile, result.levels)
+  // A mean that should not be quoted alone must not stand out.
+  const isDoubtful = result.findings.some(({ code, severity }) => code === 'energy-varies' && severity !== 'note')
   const set = (meanRange: [number, number]): void => {
     if (meanRange[0] < meanRange[1]) actions.change({ kind: 'set-mean-range', meanRange })
   }
@@ -101,17 +104,23 @@ function MeanLine({ profile, document, actions }: ActivationProps & { readonly p
         <span>not to be had: no level there has a number.</span>
       ) : (
         <output>
-          <strong>{decimals(mean, 1)}</strong> kJ/mol
-          {spread !== null && (
-            <>
-              , varying by <strong>{decimals(spread, 1)}</strong> kJ/mol
-            </>
-          )}{' '}
-          ({levelsOfMean(profile.mean)})
+          {isDoubtful ? decimals(mean, 1) : <strong>{decimals(mean, 1)}</strong>}
+          {ends !== null && `, lowest to highest: ${decimals(ends[0], 1)} to ${decimals(ends[1], 1)}`} kJ/mol ({levelsOfMean(profile.mean)})
         </output>
       )}
     </div>
   )
+}
+
+const rounding = 1e-9
+
+/** The least and the greatest Ea among the levels that the mean rests on; null where there are fewer than two. */
+function endsOfMean({ mean, Ea_kJ_per_mol: Ea }: ProfileResult, levels: readonly number[]): readonly [number, number] | null {
+  const used = levels.flatMap((level, i) => {
+    const value = Ea[i] ?? null
+    return value !== null && value > 0 && level >= mean.from - rounding && level <= mean.to + rounding ? [value] : []
+  })
+  return used.length < 2 ? null : [Math.min(...used), Math.max(...used)]
 }
 
 const steps = [0.1, 0.05, 0.02, 0.01] as const

@@ -4,13 +4,12 @@ import { NumberCell, TableHead } from '../../sheet/DataTable.tsx'
 import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import type { ActivationProps } from './ActivationStage.tsx'
-import { levelColumns, levelRows, type LevelRow } from './level-rows.ts'
+import { levelColumns, levelCopyColumns, levelRows, type LevelRow } from './level-rows.ts'
 
 /** Ea at every level. Up and down move the level here as on the rail; a click on a row goes there. */
 export function LevelTable({ result, chosen, compared, levelIndex, actions }: ActivationProps) {
   const rows = useMemo(() => levelRows(result), [result])
   const columns = useMemo(() => levelColumns(result, chosen, compared), [result, chosen, compared])
-  const onScreen = useMemo(() => columns.filter((column) => column.id !== 'status'), [columns])
 
   const onKeyDown = (event: KeyboardEvent): void => {
     // The table lists levels downwards, so its arrows run the other way round than the rail's.
@@ -24,13 +23,18 @@ export function LevelTable({ result, chosen, compared, levelIndex, actions }: Ac
   }
 
   return (
-    <TableView label="Table of activation energies" copied={() => copyText(columns, rows)} currentRow={levelIndex} onKeyDown={onKeyDown}>
+    <TableView
+      label="Table of activation energies"
+      copied={() => copyText(levelCopyColumns(result, chosen, compared), rows)}
+      currentRow={levelIndex}
+      onKeyDown={onKeyDown}
+    >
       <table className="data-table level-table">
         <caption className="visually-hidden">Activation energy at every level of conversion</caption>
-        <TableHead columns={onScreen} />
+        <TableHead columns={columns} />
         <tbody>
           {rows.map((row) => (
-            <Row key={row.index} row={row} columns={onScreen} current={row.index === levelIndex} onPick={actions.moveLevel} />
+            <Row key={row.index} row={row} columns={columns} current={row.index === levelIndex} onPick={actions.moveLevel} />
           ))}
         </tbody>
       </table>

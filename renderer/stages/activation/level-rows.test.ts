@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { ProfileResult, RunResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
-import { levelColumns, levelRows } from './level-rows.ts'
+import { levelColumns, levelCopyColumns, levelRows } from './level-rows.ts'
 
 const runAt = (rate: number, temperatures_K: readonly (number | null)[]): RunResult => ({
   runId: `run-${rate}`,
@@ -70,6 +70,8 @@ const starink: ProfileResult = {
   method: 'starink',
   label: 'Starink',
   Ea_kJ_per_mol: [149, 151],
+  lower95_kJ_per_mol: [144.5, 145],
+  upper95_kJ_per_mol: [153.5, 157],
   lnAf_per_s: [null, null],
   status: ['ok', 'ok'],
 }
@@ -95,12 +97,28 @@ describe('table of levels', () => {
     expect(cells).not.toContain('0.0')
   })
 
-  it('is copied as tab-separated text with units, empty where a number is not to be had', () => {
-    expect(copyText(columns, rows).split('\n')).toEqual([
-      'α\tEa Friedman (kJ/mol)\t± 95 % (kJ/mol)\tln[A f(α)] (A in 1/s)\tr²\tEa Starink (kJ/mol)\tT at 2 K/min (°C)\tT at 20 K/min (°C)\tStatus Friedman',
-      '0.05\t150.25\t5\t25.123\t0.99987\t149\t200\t240\tok',
-      '0.5\t\t\t\t\t151\t250\t\tnot reached',
+  it('is copied with one digit more than shown and every interval, empty where a number is not to be had', () => {
+    expect(copyText(levelCopyColumns(result, 'friedman', ['starink']), rows).split('\n')).toEqual([
+      'α\tEa Friedman (kJ/mol)\t± 95 % Friedman (kJ/mol)\tln[A f(α)] (A in 1/s)\tr²\tEa Starink (kJ/mol)\t± 95 % Starink (kJ/mol)\tT at 2 K/min (°C)\tT at 20 K/min (°C)\tStatus Friedman\tStatus Starink',
+      '0.05\t150.25\t5.00\t25.123\t0.999870\t149.00\t4.50\t200.00\t240.00\tok\tok',
+      '0.50\t\t\t\t\t151.00\t6.00\t250.00\t\tnot reached\tok',
     ])
+  })
+
+  it('copies both ends of an interval that is too lopsided for ±', () => {
+    const lopsided: StudyResult = { ...result, profiles: [{ ...friedman, lower95_kJ_per_mol: [147, null] }] }
+    const [head, first] = copyText(levelCopyColumns(lopsided, 'friedman', []), rows).split('\n')
+    expect(head?.split('\t').slice(2, 4)).toEqual(['Ea Friedman, lower end 95 % (kJ/mol)', 'Ea Friedman, upper end 95 % (kJ/mol)'])
+    expect(first?.split('\t').slice(2, 4)).toEqual(['147.00', '155.25'])
+  })
+
+  it('shows the slowest and the fastest programme as the mean over its replicates, without a number of a replicate', () => {
+    const again = { ...runAt(20.4, [515.15, null]), programmeGroup: 20 }
+    const replicated: StudyResult = { ...result, runs: [...result.runs, again] }
+    const [first] = levelRows(replicated)
+    const last = levelColumns(replicated, 'friedman', []).at(-1)
+    expect(last?.heading).toBe('T at 20.2 K/min')
+    expect(first === undefined ? '' : last?.text(first)).toBe('241.0')
   })
 
   it('has no column of ln[A f(α)] for a method that gives none', () => {

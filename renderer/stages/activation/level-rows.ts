@@ -1,8 +1,8 @@
 import type { MethodId, ProfileResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
-import { runNames } from '../../../shared-kinetics/figure/run-place.ts'
-import { atLevel, formatAtLevel, levelQuantity } from '../../sheet/at-level.ts'
+import { formatAt, levelPlaces, levelQuantity } from '../../sheet/at-level.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
-import { decimals, formatInterval, formatLevel, halfWidth, shortMethodNames, statusWords } from '../../sheet/format.ts'
+import { endProgrammes, meanAtLevel } from '../../sheet/end-programmes.ts'
+import { decimals, formatInterval, formatLevel, halfWidth, isLopsided, shortMethodNames, statusWords } from '../../sheet/format.ts'
 
 /** One level of the table, by its index in `StudyResult.levels`. */
 export interface LevelRow {
@@ -12,94 +12,119 @@ export interface LevelRow {
 
 export const levelRows = (result: StudyResult): readonly LevelRow[] => result.levels.map((level, index) => ({ index, level }))
 
-/** The columns of the table: chosen method with its interval, the compared methods' Ea, and where the slowest and fastest runs stand. */
+/** What stands in the table: the chosen method with its interval, the compared methods' Ea, and where the slowest and fastest programmes stand. */
 export function levelColumns(result: StudyResult, chosen: MethodId, compared: readonly MethodId[]): readonly DataColumn<LevelRow>[] {
-  const profileOf = (method: MethodId): ProfileResult | undefined => result.profiles.find((profile) => profile.method === method)
-  const first = profileOf(chosen)
-  const others = compared.map(profileOf).filter((profile) => profile !== undefined)
+  const { first, others } = profilesOf(result, chosen, compared)
   return [
-    column(
-      'level',
-      'α',
-      '',
-      (row) => formatLevel(row.level),
-      (row) => row.level,
-    ),
-    ...(first === undefined ? [] : chosenColumns(first)),
+    levelColumn,
+    ...(first === undefined ? [] : [energyColumn(first), intervalColumn(first, '±\u00a095\u00a0%'), ...furtherColumns(first)]),
     ...others.map((profile) => energyColumn(profile)),
     ...endColumns(result),
-    ...(first === undefined ? [] : [statusColumn(first)]),
   ]
 }
 
-function chosenColumns(profile: ProfileResult): DataColumn<LevelRow>[] {
-  const columns = [
-    energyColumn(profile),
-    column(
-      'interval',
-      '± 95 %',
-      'kJ/mol',
-      ({ index }) => formatInterval(profile.Ea_kJ_per_mol[index], profile.lower95_kJ_per_mol[index], profile.upper95_kJ_per_mol[index]),
-      ({ index }) => halfWidth(profile.lower95_kJ_per_mol[index], profile.upper95_kJ_per_mol[index]),
-    ),
+/** What the clipboard gets: every shown method with its own interval, and a column that says why a number is not to be had. */
+export function levelCopyColumns(result: StudyResult, chosen: MethodId, compared: readonly MethodId[]): readonly DataColumn<LevelRow>[] {
+  const { first, others } = profilesOf(result, chosen, compared)
+  return [
+    levelColumn,
+    ...(first === undefined ? [] : [energyColumn(first), ...copiedInterval(first), ...furtherColumns(first)]),
+    ...others.flatMap((profile) => [energyColumn(profile), ...copiedInterval(profile)]),
+    ...endColumns(result),
+    ...(first === undefined ? [] : [first, ...others].map(statusColumn)),
   ]
-  if (profile.lnAf_per_s.some((value) => value !== null))
-    columns.push(seriesColumn('lnAf', 'ln[A f(α)]', 'A in 1/s', profile.lnAf_per_s, 2))
-  if (profile.r2.some((value) => value !== null)) columns.push(seriesColumn('r2', 'r²', '', profile.r2, 5))
-  return columns
+}
+
+function profilesOf(result: StudyResult, chosen: MethodId, compared: readonly MethodId[]) {
+  const profileOf = (method: MethodId): ProfileResult | undefined => result.profiles.find((profile) => profile.method === method)
+  return { first: profileOf(chosen), others: compared.map(profileOf).filter((profile) => profile !== undefined) }
+}
+
+/** A text on the clipboard too, so that the column stays as wide as it is shown. */
+const levelColumn: DataColumn<LevelRow> = {
+  id: 'level',
+  heading: 'α',
+  unit: '',
+  numeric: true,
+  text: (row) => formatLevel(row.level),
+  value: (row) => formatLevel(row.level),
 }
 
 /** Ea of one method; where there is none, the reason stands in the cell. */
-const energyColumn = (profile: ProfileResult): DataColumn<LevelRow> =>
-  column(
-    `Ea-${profile.method}`,
-    `Ea ${shortMethodNames[profile.method]}`,
-    'kJ/mol',
-    ({ index }) => decimals(profile.Ea_kJ_per_mol[index], 1) || statusWords[profile.status[index] ?? 'level-not-reached'],
-    ({ index }) => profile.Ea_kJ_per_mol[index] ?? null,
-  )
-
-/** On screen the reason stands in the energy's own cell; in a spreadsheet a column of numbers must stay one. */
-const statusColumn = (profile: ProfileResult): DataColumn<LevelRow> => ({
-  ...column(
-    'status',
-    `Status ${shortMethodNames[profile.method]}`,
-    '',
-    () => '',
-    ({ index }) => statusWords[profile.status[index] ?? 'level-not-reached'] || 'ok',
-  ),
-  numeric: false,
+const energyColumn = (profile: ProfileResult): DataColumn<LevelRow> => ({
+  id: `Ea-${profile.method}`,
+  heading: `Ea ${shortMethodNames[profile.method]}`,
+  unit: 'kJ/mol',
+  numeric: true,
+  text: ({ index }) => decimals(profile.Ea_kJ_per_mol[index], 1) || statusWords[profile.status[index] ?? 'level-not-reached'],
+  value: ({ index }) => profile.Ea_kJ_per_mol[index] ?? null,
+  places: 2,
 })
 
-/** Where the slowest and the fastest run reach the level. */
-function endColumns(result: StudyResult): DataColumn<LevelRow>[] {
-  const names = runNames(result.runs)
-  const quantity = levelQuantity(result)
-  const last = result.runs.length - 1
-  return [...new Set(last < 0 ? [] : [0, last])].map((end) =>
-    column(
-      `end-${end}`,
-      `${quantity.symbol} at ${names[end] ?? ''}`,
-      quantity.unit,
-      ({ index }) => formatAtLevel(result.runs[end], index, quantity) || 'not reached',
-      ({ index }) => atLevel(result.runs[end], index, quantity),
-    ),
-  )
+const intervalColumn = (profile: ProfileResult, heading: string): DataColumn<LevelRow> => ({
+  id: `interval-${profile.method}`,
+  heading,
+  unit: 'kJ/mol',
+  numeric: true,
+  text: ({ index }) => formatInterval(profile.Ea_kJ_per_mol[index], profile.lower95_kJ_per_mol[index], profile.upper95_kJ_per_mol[index]),
+  value: ({ index }) => halfWidth(profile.lower95_kJ_per_mol[index], profile.upper95_kJ_per_mol[index]),
+  places: 2,
+})
+
+/** One column of half-widths or, where some interval is lopsided, both ends; none where a method has no interval at all. */
+function copiedInterval(profile: ProfileResult): readonly DataColumn<LevelRow>[] {
+  const { lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, Ea_kJ_per_mol: Ea } = profile
+  const name = shortMethodNames[profile.method]
+  if (lower.every((end) => end === null)) return []
+  if (!Ea.some((value, i) => isLopsided(value, lower[i], upper[i]))) return [intervalColumn(profile, `± 95 % ${name}`)]
+  return [
+    seriesColumn(`lower-${profile.method}`, `Ea ${name}, lower end 95 %`, 'kJ/mol', lower, 1),
+    seriesColumn(`upper-${profile.method}`, `Ea ${name}, upper end 95 %`, 'kJ/mol', upper, 1),
+  ]
 }
 
-const seriesColumn = (id: string, heading: string, unit: string, values: readonly (number | null)[], count: number): DataColumn<LevelRow> =>
-  column(
-    id,
-    heading,
-    unit,
-    ({ index }) => decimals(values[index], count),
-    ({ index }) => values[index] ?? null,
-  )
+const hasNumbers = (values: readonly (number | null)[]): boolean => values.some((value) => value !== null)
 
-const column = (
+function furtherColumns(profile: ProfileResult): readonly DataColumn<LevelRow>[] {
+  return [
+    ...(hasNumbers(profile.lnAf_per_s) ? [seriesColumn('lnAf', 'ln[A f(α)]', 'A in 1/s', profile.lnAf_per_s, 2)] : []),
+    ...(hasNumbers(profile.r2) ? [seriesColumn('r2', 'r²', '', profile.r2, 5)] : []),
+  ]
+}
+
+/** On screen the reason stands in the energy's own cell; in a spreadsheet a column of numbers must stay one. */
+const statusColumn = (profile: ProfileResult): DataColumn<LevelRow> => {
+  const status = ({ index }: LevelRow): string => statusWords[profile.status[index] ?? 'level-not-reached'] || 'ok'
+  const heading = `Status ${shortMethodNames[profile.method]}`
+  return { id: `status-${profile.method}`, heading, unit: '', numeric: false, text: status, value: status }
+}
+
+/** Where the slowest and the fastest programme reach the level, as a mean over their replicates. */
+function endColumns(result: StudyResult): readonly DataColumn<LevelRow>[] {
+  const quantity = levelQuantity(result)
+  return endProgrammes(result).map(({ name, runs }, i) => ({
+    id: `end-${i}`,
+    heading: `${quantity.symbol} at ${name}`,
+    unit: quantity.unit,
+    numeric: true,
+    text: ({ index }) => formatAt(meanAtLevel(runs, index, quantity), quantity) || 'not reached',
+    value: ({ index }) => meanAtLevel(runs, index, quantity),
+    places: levelPlaces(quantity) + 1,
+  }))
+}
+
+const seriesColumn = (
   id: string,
   heading: string,
   unit: string,
-  text: DataColumn<LevelRow>['text'],
-  value: DataColumn<LevelRow>['value'],
-): DataColumn<LevelRow> => ({ id, heading, unit, numeric: true, text, value })
+  values: readonly (number | null)[],
+  count: number,
+): DataColumn<LevelRow> => ({
+  id,
+  heading,
+  unit,
+  numeric: true,
+  text: ({ index }) => decimals(values[index], count),
+  value: ({ index }) => values[index] ?? null,
+  places: count + 1,
+})

@@ -2,7 +2,7 @@ import { runTones } from '../../../shared-kinetics/figure/run-place.ts'
 import type { StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
 import type { RunInfo, RunResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { kelvinToCelsius, perSecondToPerMinute } from '../../../shared-kinetics/units/convert.ts'
-import { atLevel, formatAtLevel, type LevelQuantity } from '../../sheet/at-level.ts'
+import { atLevel, formatAtLevel, levelPlaces, type LevelQuantity } from '../../sheet/at-level.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
 import {
   decimals,
@@ -13,6 +13,7 @@ import {
   formatWindow,
   nominalSourceWords,
   programmeWords,
+  rateDecimals,
 } from '../../sheet/format.ts'
 import { runsWithoutHeatingRate } from './questions.ts'
 
@@ -63,17 +64,21 @@ export function runColumns(level: number | null, levelIndex: number, quantity: L
         (row) => measuredText(row.result),
         (row) => row.result?.heatingRate_K_per_min ?? null,
       ),
+      places: ratePlaces,
     },
-    numbers(
-      'measured-error',
-      '± standard error',
-      'K/min',
-      (row) => formatRateError(row.result?.heatingRateStandardError_K_per_min ?? null),
-      (row) => row.result?.heatingRateStandardError_K_per_min ?? null,
-    ),
-    numbers('nominal', 'nominal', 'K/min', nominalText, nominal_K_per_min),
+    {
+      ...numbers(
+        'measured-error',
+        '± standard error',
+        'K/min',
+        (row) => formatRateError(row.result?.heatingRateStandardError_K_per_min ?? null),
+        (row) => row.result?.heatingRateStandardError_K_per_min ?? null,
+      ),
+      places: ratePlaces,
+    },
+    numbers('nominal', 'nominal', 'K/min', nominalText, (row) => toDigits(nominal_K_per_min(row), 5)),
     words('programme', 'Programme', (row) => (row.result === null ? '' : programmeWords[row.result.programme])),
-    numbers('mass', 'Mass', 'mg', (row) => decimals(mass_mg(row), 2), mass_mg),
+    numbers('mass', 'Mass', 'mg', (row) => decimals(mass_mg(row), 2), mass_mg, 3),
     numbers(
       'rows',
       'Rows',
@@ -88,6 +93,7 @@ export function runColumns(level: number | null, levelIndex: number, quantity: L
       '°C',
       (row) => formatCelsius(row.result?.peak_K),
       (row) => celsius(row.result?.peak_K ?? null),
+      2,
     ),
     numbers(
       'level',
@@ -95,6 +101,7 @@ export function runColumns(level: number | null, levelIndex: number, quantity: L
       quantity.unit,
       (row) => formatAtLevel(row.result, levelIndex, quantity),
       (row) => atLevel(row.result, levelIndex, quantity),
+      levelPlaces(quantity) + 1,
     ),
   ]
 }
@@ -106,11 +113,11 @@ export const runCopyColumns = (level: number | null, levelIndex: number, quantit
   words('file', 'File', (row) => row.run.file.name),
 ]
 
-/** What stands beneath a run's label: its programme, its rows, and its file where the label does not name it. */
+/** What stands beneath a run's label: its rows, its file where the label does not name it, and a programme that the next column does not tell. */
 export function runFacts({ run, result }: RunRow): string {
   const stem = run.file.name.replace(/\.[^.]*$/, '')
   const file = run.label === run.file.name || run.label === stem ? [] : [run.file.name]
-  return [...(result === null ? [] : [programmeWords[result.programme]]), `${run.rows} rows`, ...file].join(', ')
+  return [...(result?.programme === 'general' ? [`${programmeWords.general} programme`] : []), `${run.rows} rows`, ...file].join(', ')
 }
 
 function measuredText(result: RunResult | null): string {
@@ -122,8 +129,11 @@ function measuredText(result: RunResult | null): string {
 
 function nominalText(row: RunRow): string {
   const value = nominal_K_per_min(row)
-  return value === null ? '' : String(Number(value.toPrecision(4)))
+  return value === null ? '' : String(toDigits(value, 4))
 }
+
+const toDigits = (value: number | null, digits: number): number | null => (value === null ? null : Number(value.toPrecision(digits)))
+const ratePlaces = ({ result }: RunRow): number => rateDecimals(result?.heatingRateStandardError_K_per_min ?? null) + 1
 
 export function nominalSource(row: RunRow): string {
   const nominal = row.run.nominalHeatingRate
@@ -150,4 +160,5 @@ const numbers = (
   unit: string,
   text: DataColumn<RunRow>['text'],
   value: DataColumn<RunRow>['value'],
-): DataColumn<RunRow> => ({ id, heading, unit, numeric: true, text, value })
+  places?: number,
+): DataColumn<RunRow> => ({ id, heading, unit, numeric: true, text, value, ...(places === undefined ? {} : { places }) })
