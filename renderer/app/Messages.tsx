@@ -5,7 +5,7 @@ import { WorkStrip } from '../sheet/WorkStrip.tsx'
 import { useServices, useStudy } from '../state/services.ts'
 import type { Evaluation, ImportWork } from '../state/study-state.ts'
 
-/** Between top line and halves: work under way, what was refused, what was done. Nothing stands here when there is nothing to say. */
+/** Between top line and halves: work under way, what was refused, what went wrong. Nothing stands here when there is nothing to say. */
 export function Messages({ stale }: { readonly stale: boolean }) {
   const { session } = useServices()
   const importing = useStudy((state) => state.importing)
@@ -24,9 +24,17 @@ export function Messages({ stale }: { readonly stale: boolean }) {
       )}
       {importing === null && <EvaluationMessage evaluation={evaluation} stale={stale} />}
       {refused.length > 0 && <RefusedFiles files={refused} onDismiss={session.dismissRefused} />}
-      {notice !== null && <Notice key={notice.text} kind={notice.kind} text={notice.text} onDismiss={session.dismissNotice} />}
+      {notice?.kind === 'failure' && <Notice key={notice.text} kind={notice.kind} text={notice.text} onDismiss={session.dismissNotice} />}
     </div>
   )
+}
+
+/** What was just done, for the top line. */
+export function DoneNotice() {
+  const { session } = useServices()
+  const notice = useStudy((state) => state.notice)
+  if (notice?.kind !== 'done') return null
+  return <Notice key={notice.text} kind="done" text={notice.text} onDismiss={session.dismissNotice} />
 }
 
 function EvaluationMessage({ evaluation, stale }: { readonly evaluation: Evaluation; readonly stale: boolean }) {

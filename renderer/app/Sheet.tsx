@@ -14,7 +14,7 @@ import type { Replica } from '../state/replica.ts'
 import { useServices, useStudy, useView } from '../state/services.ts'
 import { isStale } from '../state/study-state.ts'
 import { EmptySheet } from './EmptySheet.tsx'
-import { Messages } from './Messages.tsx'
+import { DoneNotice, Messages } from './Messages.tsx'
 import { Rail } from './Rail.tsx'
 import { Safety } from './Safety.tsx'
 
@@ -58,6 +58,7 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
         hasRuns={hasRuns}
         actions={actions}
         onFinding={(severity) => jump.toNext(severity, findings)}
+        notice={<DoneNotice />}
         mark={<ProgramMark paper={paper} />}
         menus={
           <>
@@ -96,7 +97,7 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
           )}
         </>
       ) : (
-        <main className="stage">
+        <main className="stage stage-empty">
           <div className="halves">
             <EmptySheet actions={actions} recent={recent.filter((study) => study.studyId !== document.id && study.runs > 0)} />
           </div>

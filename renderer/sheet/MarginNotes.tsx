@@ -1,5 +1,6 @@
 import { Button } from 'react-aria-components'
 import type { Finding } from '../../shared-kinetics/contract/study-result.ts'
+import { formatLevel } from './format.ts'
 
 export const severityWords = { stop: 'Stop', caution: 'Caution', note: 'Note' } as const
 
@@ -41,8 +42,8 @@ export function MarginNotes({
                 <NoteText finding={finding} />
               )}
               {(finding.run !== null || finding.level !== null) && (
-                <Button className="link-button" onPress={() => onShow(finding)} aria-label={`Show: ${finding.title}`}>
-                  show
+                <Button className="link-button" onPress={() => onShow(finding)} aria-label={`${placeOf(finding)}: ${finding.title}`}>
+                  {placeOf(finding)}
                 </Button>
               )}
             </li>
@@ -51,6 +52,13 @@ export function MarginNotes({
       </ul>
     </aside>
   )
+}
+
+/** Where a finding leads. */
+function placeOf({ run, level }: Finding): string {
+  const at = level === null ? '' : `α ${formatLevel(level)}`
+  if (run === null) return `show ${at}`
+  return at === '' ? 'show run' : `show run at ${at}`
 }
 
 /** What one run after another gets is read once; each further one shows its number and folds the rest. */

@@ -1,4 +1,4 @@
-import { useEffect, useRef, type ClipboardEvent, type KeyboardEvent, type ReactNode } from 'react'
+import { useEffect, useLayoutEffect, useRef, type ClipboardEvent, type KeyboardEvent, type ReactNode } from 'react'
 
 /**
  * The frame of a table: it scrolls inside, takes the focus, copies itself as tab-separated text when nothing in it is selected, and keeps the
@@ -18,7 +18,19 @@ export function TableView({
   readonly onKeyDown?: (event: KeyboardEvent) => void
   readonly children: ReactNode
 }) {
+  const spaceRef = useRef<HTMLDivElement>(null)
   const frameRef = useRef<HTMLElement>(null)
+
+  useLayoutEffect(() => {
+    const [space, frame] = [spaceRef.current, frameRef.current]
+    const table = frame?.querySelector('table')
+    if (space === null || frame === null || table === null || table === undefined) return
+    const observer = new ResizeObserver(() => showWholeRows(space, frame))
+    observer.observe(space)
+    observer.observe(table)
+    showWholeRows(space, frame)
+    return () => observer.disconnect()
+  }, [])
 
   useEffect(() => {
     const { current: frame } = frameRef
@@ -31,16 +43,41 @@ export function TableView({
   }, [currentRow])
 
   const onCopy = (event: ClipboardEvent): void => {
-    const inField = event.target instanceof HTMLInputElement
+    const inField = event.target instanceof HTMLInputElement || event.target instanceof HTMLTextAreaElement
     if (inField || window.getSelection()?.isCollapsed === false) return
     event.clipboardData.setData('text/plain', copied())
     event.preventDefault()
   }
 
   return (
-    // oxlint-disable-next-line jsx-a11y/no-noninteractive-tabindex, jsx-a11y/no-noninteractive-element-interactions -- it scrolls, so it must be reached by keyboard (WCAG 2.1.1)
-    <section className="table-view" aria-label={label} tabIndex={0} ref={frameRef} onCopy={onCopy} onKeyDown={onKeyDown}>
-      {children}
-    </section>
+    <div className="table-space" ref={spaceRef}>
+      {/* oxlint-disable-next-line jsx-a11y/no-noninteractive-tabindex, jsx-a11y/no-noninteractive-element-interactions -- it scrolls, so it must be reached by keyboard (WCAG 2.1.1) */}
+      <section className="table-view" aria-label={label} tabIndex={0} ref={frameRef} onCopy={onCopy} onKeyDown={onKeyDown}>
+        {children}
+      </section>
+    </div>
   )
+}
+
+/** Makes the frame as tall as whole rows fill it, so that none is cut by its lower edge; the scroll snap keeps them whole at the head. */
+function showWholeRows(space: HTMLElement, frame: HTMLElement): void {
+  const scrolled = frame.scrollTop
+  frame.style.maxHeight = 'none'
+  delete frame.dataset.cut
+  const head = frame.querySelector('thead')?.getBoundingClientRect().height ?? 0
+  frame.style.setProperty('--table-head', `${head}px`)
+  // The lower border and, where the table is too wide, the scroll bar.
+  const edge = frame.offsetHeight - frame.clientHeight
+  const room = space.clientHeight - head - edge
+  const rows = Array.from(frame.querySelectorAll('tbody tr'), (row) => row.getBoundingClientRect().height)
+  let shown = 0
+  for (const [i, height] of rows.entries()) {
+    if (i > 0 && shown + height > room + 0.5) {
+      frame.style.maxHeight = `${head + shown + edge}px`
+      frame.scrollTop = scrolled
+      frame.dataset.cut = ''
+      break
+    }
+    shown += height
+  }
 }

@@ -15,6 +15,8 @@ export interface TopLineProps {
   readonly onFinding: (severity: Severity) => void
   readonly mark: ReactNode
   readonly menus: ReactNode
+  /** A word about what was just done; it lies over the study's name for its short time. */
+  readonly notice: ReactNode
 }
 
 const severities = [
@@ -24,7 +26,7 @@ const severities = [
 ] as const
 
 /** The top line: what this is, where one is, what was noticed, what can be undone. */
-export function TopLine({ document, snapshot, findings, hasRuns, actions, onFinding, mark, menus }: TopLineProps) {
+export function TopLine({ document, snapshot, findings, hasRuns, actions, onFinding, mark, menus, notice }: TopLineProps) {
   return (
     <header className="top-line">
       <div className="top-study">
@@ -34,6 +36,7 @@ export function TopLine({ document, snapshot, findings, hasRuns, actions, onFind
         </h1>
         <StudyName name={document.name} onRename={(name) => actions.change({ kind: 'rename-study', name })} />
         {hasRuns && <span className="run-count">{count(document.runs.length, 'run')}</span>}
+        {notice}
       </div>
       {hasRuns && (
         <TabList className="stages" aria-label="Stages">
@@ -55,15 +58,24 @@ export function TopLine({ document, snapshot, findings, hasRuns, actions, onFind
             </Button>
           )
         })}
-        <Button className="text-button undo" isDisabled={snapshot.undo === null} onPress={actions.undo}>
-          {snapshot.undo === null ? 'Undo' : `Undo: ${snapshot.undo}`}
-        </Button>
-        <Button className="text-button undo" isDisabled={snapshot.redo === null} onPress={actions.redo}>
-          {snapshot.redo === null ? 'Redo' : `Redo: ${snapshot.redo}`}
-        </Button>
+        <StepButton word="Undo" label={snapshot.undo} onPress={actions.undo} />
+        <StepButton word="Redo" label={snapshot.redo} onPress={actions.redo} />
         {menus}
       </div>
     </header>
+  )
+}
+
+/** Undo or redo, with what it concerns; where the line is short the label is left to the title and to the spoken name. */
+function StepButton({ word, label, onPress }: { readonly word: string; readonly label: string | null; readonly onPress: () => void }) {
+  const whole = label === null ? word : `${word}: ${label}`
+  return (
+    <span className="undo" title={whole}>
+      <Button className="text-button" aria-label={whole} isDisabled={label === null} onPress={onPress}>
+        {word}
+        {label !== null && <span className="undo-label">: {label}</span>}
+      </Button>
+    </span>
   )
 }
 

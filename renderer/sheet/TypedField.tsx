@@ -1,5 +1,5 @@
-import { useState } from 'react'
-import { FieldError, Input, Label, TextField } from 'react-aria-components'
+import { Fragment, useState, type ReactNode } from 'react'
+import { FieldError, Input, Label, TextArea, TextField } from 'react-aria-components'
 import type { Parsed } from '../../shared-kinetics/units/parse-quantity.ts'
 
 /**
@@ -11,6 +11,7 @@ export function TypedField<T>({
   hideLabel = false,
   text,
   placeholder = '',
+  wraps = false,
   parse,
   onCommit,
 }: {
@@ -19,6 +20,8 @@ export function TypedField<T>({
   /** What stands in the field as long as nobody types. */
   readonly text: string
   readonly placeholder?: string
+  /** Long text goes on in further lines instead of being cut. */
+  readonly wraps?: boolean
   readonly parse: (text: string) => Parsed<T>
   readonly onCommit: (value: T) => void
 }) {
@@ -46,7 +49,7 @@ export function TypedField<T>({
 
   return (
     <TextField
-      className="typed-field"
+      className={wraps ? 'typed-field is-wrapping' : 'typed-field'}
       {...(hideLabel ? { 'aria-label': label } : {})}
       value={draft ?? text}
       isInvalid={reason !== null}
@@ -54,14 +57,38 @@ export function TypedField<T>({
       onChange={setDraft}
       onBlur={commit}
       onKeyDown={(event) => {
-        if (event.key === 'Enter') commit()
-        else if (event.key === 'Escape') revert()
+        if (event.key === 'Enter') {
+          // In a field of several lines it would begin a new one.
+          if (wraps) event.preventDefault()
+          commit()
+        } else if (event.key === 'Escape') revert()
         else event.continuePropagation()
       }}
     >
       {!hideLabel && <Label>{label}</Label>}
-      <Input placeholder={placeholder} />
+      {wraps ? (
+        <>
+          {/* The copy gives the field the size of its text, and is what is seen while nobody types: it can break after an underscore. */}
+          <span className="typed-field-size" aria-hidden="true">
+            {breakable(draft ?? text)}
+          </span>
+          <TextArea placeholder={placeholder} rows={1} />
+        </>
+      ) : (
+        <Input placeholder={placeholder} />
+      )}
       <FieldError className="field-error">{reason}</FieldError>
     </TextField>
   )
+}
+
+/** A text that may break after the marks by which file names are put together. */
+function breakable(text: string): ReactNode {
+  return text.split(/(?<=[_.-])/).map((part, i) => (
+    // oxlint-disable-next-line react/no-array-index-key -- parts of a text have no other name
+    <Fragment key={i}>
+      {i > 0 && <wbr />}
+      {part}
+    </Fragment>
+  ))
 }

@@ -9,6 +9,7 @@ import { count, formatLevel, signalWords } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices, useView } from '../../state/services.ts'
 import type { StageProps } from '../stage-props.ts'
+import { MixedSignals } from './MixedSignals.tsx'
 import { RunQuestions } from './RunQuestions.tsx'
 import { runColumns, runRows } from './run-rows.ts'
 import { RunsTable } from './RunsTable.tsx'
@@ -112,6 +113,7 @@ function Runs({ result, levelIndex, level, actions, document }: StageProps) {
           </Button>
         </div>
       </div>
+      <MixedSignals document={document} onChange={actions.change} />
       <RunQuestions document={document} result={result} onChange={actions.change} />
       <RunsTable
         rows={rows}
@@ -132,6 +134,8 @@ function seriesNote(runs: number, result: StudyResult | null): string {
   if (result === null) return count(runs, 'run')
   const programmes = new Set(result.runs.map((run) => run.programmeGroup)).size
   const measured = result.runs.some((run) => run.heatingRateSource === 'measured')
-  const how = measured ? ' Heating rates are measured: a line through T against t, from α 0.02 to 0.98.' : ''
+  const how = measured
+    ? ' Heating rates are measured: a line through T against t, from α 0.02 to 0.98; ± SE is one standard error of its slope.'
+    : ''
   return `${count(runs, 'run')}, ${count(programmes, 'distinct programme')} in use.${how}`
 }

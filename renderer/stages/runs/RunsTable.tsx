@@ -1,5 +1,6 @@
 import { Button } from 'react-aria-components'
 import type { StudyChange } from '../../../shared-kinetics/contract/study-change.ts'
+import type { Parsed } from '../../../shared-kinetics/units/parse-quantity.ts'
 import type { ChartColours } from '../../charts/chart-colours.ts'
 import { RunMarker } from '../../charts/RunMarker.tsx'
 import { runMarker } from '../../charts/markers.ts'
@@ -24,7 +25,11 @@ export interface RunsTableProps {
 
 /** Every run of the study; also the legend of the charts. */
 export function RunsTable({ rows, columns, level, levelIndex, quantity, pointedRun, colours, onPoint, onChange }: RunsTableProps) {
-  const inTable = columns.filter((column) => !['label', 'measured-error', 'programme', 'rows'].includes(column.id))
+  // A mass or a peak that no run has needs no column here; the copied table keeps it.
+  const inTable = columns.filter(({ id, text }) => {
+    if (['mass', 'peak'].includes(id)) return rows.some((row) => text(row) !== '')
+    return !['label', 'measured-error', 'programme', 'rows'].includes(id)
+  })
   return (
     <TableView
       label="Runs of the study"
@@ -78,7 +83,9 @@ export function RunsTable({ rows, columns, level, levelIndex, quantity, pointedR
 function RunsHead({ columns }: { readonly columns: readonly DataColumn<RunRow>[] }) {
   const use = { id: 'use', heading: 'Use', unit: '', numeric: false, text: () => '', value: () => null }
   const run = { ...use, id: 'run', heading: 'Run' }
-  return <TableHead columns={[use, run, ...columns]} end="Remove" />
+  // Everywhere else ± is the 95 % interval; here it is one standard error, and the head says so.
+  const shown = columns.map((column) => (column.id === 'measured' ? { ...column, unit: 'K/min ± SE' } : column))
+  return <TableHead columns={[use, run, ...shown]} end="Remove" />
 }
 
 function RunName({ row, colours, onChange }: Pick<RunsTableProps, 'colours' | 'onChange'> & { readonly row: RunRow }) {
@@ -92,12 +99,13 @@ function RunName({ row, colours, onChange }: Pick<RunsTableProps, 'colours' | 'o
           <RunMarker index={tone.index} colour={colours.run(tone.place)} />
         </span>
       )}
-      <div className="run-name-text">
+      <div className="run-name-text" title={run.label}>
         <TypedField
+          wraps
           label={`Label of ${run.label}`}
           hideLabel
           text={run.label}
-          parse={(text) => (text.trim() === '' ? { ok: false, reason: 'A run needs a label.' } : { ok: true, value: text.trim() })}
+          parse={parseLabel}
           onCommit={(label) => onChange({ kind: 'relabel-run', runId: run.id, label })}
         />
         <span className="run-facts">{runFacts(row)}</span>
@@ -105,6 +113,12 @@ function RunName({ row, colours, onChange }: Pick<RunsTableProps, 'colours' | 'o
       </div>
     </div>
   )
+}
+
+/** A label is one line, however it was pasted. */
+function parseLabel(typed: string): Parsed<string> {
+  const label = typed.replace(/\s+/g, ' ').trim()
+  return label === '' ? { ok: false, reason: 'A run needs a label.' } : { ok: true, value: label }
 }
 
 function RunCell({
