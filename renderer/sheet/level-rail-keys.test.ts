@@ -53,7 +53,7 @@ describe('bars of the rail', () => {
 
   it('stay low in good data: full height is 5 % of the mean Ea at least', () => {
     expect(railBars([0.1, 0.2], 200).map((bar) => bar.height)).toEqual([0.01, 0.02])
-    expect(railCaption([0.1, 0.2], 200)).toEqual(['bars: ± 95 %', 'full height 10.0 kJ/mol, 5 % of Ea'])
+    expect(railCaption([0.1, 0.2], 200)).toEqual(['bars: ± 95 %', 'full height 10.0 kJ/mol (5 % of Ea)'])
   })
 
   it('say what the tallest stands for, and that some are cut', () => {

@@ -47,7 +47,7 @@ export function railCaption(widths: readonly Maybe[], meanEa: Maybe): readonly s
   const full = `${decimals(fullHeight, 1)} kJ/mol`
   return [
     'bars: ± 95 %',
-    fromMean ? `full height ${full}, 5 % of Ea` : `${cut === 0 ? 'tallest' : 'full height'} ${full}`,
+    fromMean ? `full height ${full} (5 % of Ea)` : `${cut === 0 ? 'tallest' : 'full height'} ${full}`,
     ...(cut === 0 ? [] : [`${cut} wider, cut at the dots`]),
   ]
 }
