@@ -58,6 +58,7 @@ export function EnergyProfile(props: ActivationProps) {
         onPick={(x) => actions.moveLevel(nearestLevel(result.levels, x))}
         onCopied={actions.pictureCopied}
       />
+      {figure.note !== undefined && <p className="chart-note">{figure.note}</p>}
       {profile !== undefined && <MeanLine profile={profile} {...props} />}
       <LevelTable {...props} />
       <Foot {...props} />
