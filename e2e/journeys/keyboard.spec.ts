@@ -1,3 +1,6 @@
+import { writeFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { demoSeries } from '../../main/demo/demo-series.ts'
 import { expect, test } from '../pages/program.ts'
 import type { Locator, Page } from '@playwright/test'
 
@@ -44,6 +47,31 @@ test('from the empty sheet to the copied table without a mouse', async ({ sheet,
   await tabTo(page, page.getByRole('button', { name: 'Export table (CSV)' }))
   const out = await sheet.downloads(2, () => page.keyboard.press('Enter'))
   expect(out.has('activation.csv')).toBe(true)
+})
+
+test('files are opened, a bad one is refused and dismissed, and all is undone without a mouse', async ({ sheet, page, folder }) => {
+  const good = demoSeries().files.map(({ fileName, bytes }) => {
+    writeFileSync(join(folder, fileName), bytes)
+    return join(folder, fileName)
+  })
+  const bad = join(folder, 'no numbers.csv')
+  writeFileSync(bad, 'Time (min),Temperature (K),Mass (mg)\n1,2,three\n')
+
+  const chooser = page.waitForEvent('filechooser')
+  await page.keyboard.press('Control+o')
+  await (await chooser).setFiles([...good, bad])
+  await sheet.settled()
+  await expect(page.getByRole('alert')).toContainText('no numbers.csv')
+  await tabTo(page, page.getByRole('button', { name: 'Dismiss' }))
+  await page.keyboard.press('Enter')
+  await expect(page.getByRole('alert')).toHaveCount(0)
+  await expect(sheet.runsTable.getByRole('row')).toHaveCount(good.length + 1)
+
+  await page.reload()
+  await sheet.settled()
+  await expect(sheet.runsTable.getByRole('row')).toHaveCount(good.length + 1)
+  await page.keyboard.press('Control+z')
+  await expect(sheet.openDemoButton).toBeVisible()
 })
 
 test('a run is left out and taken back without a mouse', async ({ sheet, page }) => {
