@@ -60,7 +60,7 @@ function measuredText(result: InspectedRun['result']): string {
     return `hold at ${kelvinToCelsius(result.holdTemperature_K).toFixed(2)} °C`
   if (result.programme !== 'constant-heating-rate' || result.heatingRate_K_per_min === null) return 'no constant heating rate'
   const error = result.heatingRateStandardError_K_per_min
-  return `${result.heatingRate_K_per_min.toFixed(3)}${error === null ? '' : ` ±${error.toPrecision(1)}`} K/min, ${result.heatingRateSource ?? 'stated'}`
+  return `${result.heatingRate_K_per_min.toFixed(3)}${error === null ? '' : ` ±${errorText(error)}`} K/min, ${result.heatingRateSource ?? 'stated'}`
 }
 
 function nominalText({ nominalHeatingRate }: RunInfo): string {
@@ -121,3 +121,6 @@ function runFields({ run: { info, columns }, result, findings }: InspectedRun): 
     findings,
   }
 }
+
+/** One significant digit; what is smaller than the last printed digit of the rate can only be called small. */
+const errorText = (error: number): string => (error < 0.0005 ? '<0.001' : String(Number(error.toPrecision(1))))
