@@ -389,7 +389,7 @@ describe('inspect', () => {
     ]) {
       expect(stdout).toMatch(line)
     }
-    expect(stdout).toMatch(/heating rate +10\.4\d\d ±[\d.]+ K\/min, measured +nominal 10 K\/min from the preamble/)
+    expect(stdout).toMatch(/heating rate +10\.4\d\d ±<?[\d.]+ K\/min, measured +nominal 10 K\/min from the preamble/)
   })
 
   it('says the same as JSON', () => {
