@@ -50,6 +50,7 @@ describe('who may import what is held by lint, type imports included', () => {
     ['renderer/app/a.tsx', type('electron')],
     ['renderer/app/a.tsx', type('../../shared-kinetics/tasks/study-result.ts')],
     ['renderer/charts/a.tsx', type('../state/view.ts')],
+    ['renderer/state/a.ts', type('../transport/testing/memory-transport.ts')],
   ])('%s refuses %s', (file, statement) => {
     expect(verdict(file, statement)).toBe('refused')
   })

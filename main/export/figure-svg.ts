@@ -17,7 +17,7 @@ export interface PrintSize {
 }
 
 /** Width of a column and a half of a journal page; the legend adds its own lines below. */
-export const defaultPrintSize: PrintSize = { width_mm: 160, height_mm: 105 }
+const defaultPrintSize: PrintSize = { width_mm: 160, height_mm: 105 }
 
 /**
  * A figure as one standalone SVG 1.1 file at print size on white: axes with titles, units and round ticks, the marks, and a legend of every mark

@@ -38,7 +38,7 @@ export function svgMark(mark: Mark, plot: Plot): string {
 }
 
 /** The marker of a tone: each run and each method has its own shape, so that none is told by colour alone. */
-export function svgMarker(tone: Tone, x: number, y: number): string {
+function svgMarker(tone: Tone, x: number, y: number): string {
   const colour = printColour(tone)
   if (tone.kind === 'faint') return `<path d="${shape(0, x, y, 1.3)}" fill="${colour}"/>`
   const index = tone.kind === 'run' || tone.kind === 'method' ? tone.index : 0

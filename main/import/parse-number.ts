@@ -1,6 +1,6 @@
 import type { DecimalSignWord } from '../../shared-kinetics/contract/import-options.ts'
 
-export const decimalCode: Readonly<Record<DecimalSignWord, number>> = { point: 46, comma: 44 }
+const decimalCode: Readonly<Record<DecimalSignWord, number>> = { point: 46, comma: 44 }
 
 // 10^0 to 10^22 are exact in double precision, and so is every whole number up to 2^53.
 const powersOfTen = Float64Array.from({ length: 23 }, (_, i) => Number(`1e${i}`))

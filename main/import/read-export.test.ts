@@ -328,6 +328,7 @@ describe('what is stated', () => {
     const bare = table('0,300,9', '1,310,8', '2,320,7')
     const columns = ['1=time:min', '2=temperature:K', '3=mass:mg'].map(columnOverrideFromWords)
     expect(only(bare, { columns }).columns.time_s?.at(-1)).toBe(120)
+    // 300 °F = (300 - 32)/1.8 + 273.15 K, by the definition of the degree Fahrenheit.
     expect(only(simple, { columns: [{ column: 'Temperature (K)', unit: '°F' }] }).columns.temperature_K[0]).toBeCloseTo(422.039, 3)
     expect(only(simple, { columns: [{ column: 3, quantity: 'conversion', unit: '%' }] }).info.signals[0]?.quantity).toBe('conversion')
     expect(() => only(simple, { columns: [{ column: 3, quantity: 'set-aside' }] })).toThrow(/signal/)

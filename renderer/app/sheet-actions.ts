@@ -68,7 +68,7 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
 }
 
 /** The table of the stage that is shown, as tab-separated text. */
-export function tableOfStage({ session, view }: Services): string | null {
+function tableOfStage({ session, view }: Services): string | null {
   const { replica, evaluated } = session.store.getState()
   const { stage, conversion, chosenMethod, comparedMethods } = view.getState()
   if (replica === null) return null

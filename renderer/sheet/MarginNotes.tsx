@@ -2,7 +2,7 @@ import { Button } from 'react-aria-components'
 import type { Finding } from '../../shared-kinetics/contract/study-result.ts'
 import { formatLevel } from './format.ts'
 
-export const severityWords = { stop: 'Stop', caution: 'Caution', note: 'Note' } as const
+const severityWords = { stop: 'Stop', caution: 'Caution', note: 'Note' } as const
 
 export const findingElementId = (finding: Finding, findings: readonly Finding[]): string => `finding-${findings.indexOf(finding)}`
 

@@ -20,7 +20,7 @@ export interface RailScale {
 }
 
 /** The rule of the bars' height: full height is the widest interval that is drawn true to scale, and 5 % of the mean Ea at least. */
-export function railScale(widths: readonly Maybe[], meanEa: Maybe): RailScale {
+function railScale(widths: readonly Maybe[], meanEa: Maybe): RailScale {
   const known = widths.filter((width) => width !== null).sort((a, b) => a - b)
   if (known.length === 0) return { fullHeight: 0, fromMean: false }
   const median = known[Math.floor(known.length / 2)] ?? 0

@@ -6,7 +6,7 @@ import type { RunInfo, StudyResult } from '../../shared-kinetics/contract/study-
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { HostUnreachable } from '../transport/host-unreachable.ts'
 import { runInfoOf } from '../../shared-kinetics/check-values/run-info-of.ts'
-import { createMemoryHost, type MemoryHost } from '../transport/memory-transport.ts'
+import { createMemoryHost, type MemoryHost } from '../transport/testing/memory-transport.ts'
 import { createStudySession, type StudySession } from './study-session.ts'
 import { isStale } from './study-state.ts'
 

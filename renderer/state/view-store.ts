@@ -20,7 +20,7 @@ export interface ViewState {
   readonly theme: Theme
 }
 
-export const initialViewState: ViewState = {
+const initialViewState: ViewState = {
   stage: 'runs',
   conversion: 0.5,
   chosenMethod: null,

@@ -10,7 +10,7 @@ export type DelimiterWord = (typeof delimiterWords)[number]
 export const decimalSignWords = ['point', 'comma'] as const
 export type DecimalSignWord = (typeof decimalSignWords)[number]
 export type ColumnQuantity = 'time' | 'temperature' | SignalQuantity | 'set-aside'
-export const columnQuantityWords: readonly ColumnQuantity[] = [
+const columnQuantityWords: readonly ColumnQuantity[] = [
   'time',
   'temperature',
   'mass',
@@ -23,7 +23,7 @@ export const columnQuantityWords: readonly ColumnQuantity[] = [
 const lineNumber = z.int().check(z.positive())
 const shortText = z.string().check(z.minLength(1), z.maxLength(200))
 
-export const columnOverrideSchema = z.strictObject({
+const columnOverrideSchema = z.strictObject({
   /** Number of the column, counted from 1, or its heading as the file has it. */
   column: z.union([z.int().check(z.positive()), shortText]),
   quantity: z.optional(z.enum(columnQuantityWords)),

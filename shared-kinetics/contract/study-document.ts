@@ -77,7 +77,7 @@ export const runInfoSchema = z.object({
   window: z.nullable(windowSchema),
 })
 
-export const levelsSchema = z.array(finite.check(z.gt(0), z.lt(1))).check(
+const levelsSchema = z.array(finite.check(z.gt(0), z.lt(1))).check(
   z.minLength(1),
   z.maxLength(studyLimits.levels),
   z.refine((levels) => levels.every((level, i) => i === 0 || level > (levels[i - 1] ?? 0)), 'levels ascend'),
@@ -93,7 +93,7 @@ export const settingsSchema = z.object({
 })
 
 /** The study as saved and as every replica holds it: small plain data; the columns live beside it, named by `columnsKey`. */
-export const studyDocumentSchema = z.object({
+const studyDocumentSchema = z.object({
   format: z.literal('rampfold.study/1'),
   id: z.string().check(z.regex(/^[0-9a-z-]{1,64}$/)),
   name: text,
@@ -113,7 +113,7 @@ export interface StudyDocument {
 }
 
 /** 0.05 to 0.95 in steps of 0.05, as the 2011 recommendations ask for (source `ictac-2011`). */
-export const defaultLevels: readonly number[] = Array.from({ length: 19 }, (_, i) => (i + 1) / 20)
+const defaultLevels: readonly number[] = Array.from({ length: 19 }, (_, i) => (i + 1) / 20)
 
 export const defaultSettings: AnalysisSettings = {
   signal: null,

@@ -17,6 +17,7 @@ import { rateAtEnds } from './cut-ends.ts'
 import { fromHeatFlow } from './from-heat-flow.ts'
 import { longestHold } from './longest-hold.ts'
 import { fromMass } from './from-mass.ts'
+import { noiseOf } from '../signal/noise.ts'
 import { valueAtEnd } from './plateau.ts'
 import { findWindow } from './window.ts'
 
@@ -190,7 +191,8 @@ describe('plateaus', () => {
         error = 0.9 * error + Math.sqrt(1 - 0.81) * 5e-3 * normal()
         return 1 - 0.6 * a + error
       })
-      squares += (valueAtEnd(run.time, y, 'start') - 1) ** 2 + (valueAtEnd(run.time, y, 'end') - 0.4) ** 2
+      const noise = noiseOf(run.time, y, 0, y.length - 1)
+      squares += (valueAtEnd(run.time, y, 'start', noise) - 1) ** 2 + (valueAtEnd(run.time, y, 'end', noise) - 0.4) ** 2
     }
     // Some 1,700 rows lie on each: 5e-3·√(19/1700) = 5.3e-4 is the best there is.
     expect(Math.sqrt(squares / 40)).toBeLessThan(1e-3)

@@ -84,7 +84,7 @@ const lastPart = 0.2
 
 function levelledAtEnd(time_s: Column<'s'>, temperature_K: Column<'K'>, heatFlow: Float64Array, noise: number, label: string): Converted {
   const n = time_s.length
-  const level = valueAtEnd(time_s, heatFlow, 'end')
+  const level = valueAtEnd(time_s, heatFlow, 'end', noise)
   const { y } = cellMeans(time_s, heatFlow, 0, n - 1, Math.min(excursionCells, Math.floor(n / 2)))
   const excursion = y.reduce((most, value) => Math.max(most, Math.abs(value - level)), 0)
   if (!(excursion > lowestPeak * noise)) throw noPeak(label)

@@ -19,8 +19,8 @@ const smallestChange = 10
  */
 export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: Float64Array, label: string): Converted {
   const noise = noiseOf(time_s, mass, 0, mass.length - 1)
-  const start = valueAtEnd(time_s, mass, 'start')
-  const end = valueAtEnd(time_s, mass, 'end')
+  const start = valueAtEnd(time_s, mass, 'start', noise)
+  const end = valueAtEnd(time_s, mass, 'end', noise)
   const change = start - end
   if (!(Math.abs(change) > smallestChange * noise) || Math.abs(change) < 1e-6 * Math.abs(start)) {
     throw new KineticsError(

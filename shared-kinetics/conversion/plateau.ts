@@ -1,7 +1,7 @@
 import { lineFit } from '../numerics/line-fit.ts'
 import { cellMeans, type CellMeans } from '../signal/cell-means.ts'
 import { localPolynomialAt } from '../signal/local-polynomial.ts'
-import { correlatedNoiseOf, noiseOf } from '../signal/noise.ts'
+import { correlatedNoiseOf } from '../signal/noise.ts'
 
 /** A plateau is followed in blocks of so large a part of the window, and of nine rows at the least. */
 const blocksInWindow = 100
@@ -16,16 +16,17 @@ const certainDrift = 3 * Math.sqrt(12)
  * fastest): where there is one there is no plateau, and the value is that of a parabola through these rows at the outermost one. Else the blocks of a hundredth of
  * the window are averaged from the end inwards, up to where the mean of a block and that of the block after it both lie beyond twice the noise of such means, on one
  * side.
+ *
+ * @param noiseOfRows - standard deviation of the noise of `y` from row to row
  */
-export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | 'end'): number {
+export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | 'end', noiseOfRows: number): number {
   const n = time.length
-  const ofRows = noiseOf(time, y, 0, n - 1)
   const rowsInBlock = Math.max(fewestRowsInBlock, Math.ceil(n / blocksInWindow))
   for (let rows = fewestRowsInBlock; ; rows = Math.min(2 * rows, rowsInBlock)) {
     const [from, to] = end === 'start' ? [0, rows] : [n - rows, n]
     const { slope } = lineFit(time.subarray(from, to), y.subarray(from, to))
     const length = (time[to - 1] ?? 0) - (time[from] ?? 0)
-    const noise = noiseOfMeans(blocksOf(time, y, rows), ofRows)
+    const noise = noiseOfMeans(blocksOf(time, y, rows), noiseOfRows)
     if (Math.abs(slope) * length > certainDrift * noise) {
       const outermost = time[end === 'start' ? 0 : n - 1] ?? Number.NaN
       return localPolynomialAt(time, y, outermost, { halfWidth: 0, degree: 2, minimumPoints: rows }).value
@@ -33,7 +34,7 @@ export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | '
     if (rows === rowsInBlock) break
   }
   const blocks = blocksOf(time, y, rowsInBlock)
-  const noise = noiseOfMeans(blocks, ofRows)
+  const noise = noiseOfMeans(blocks, noiseOfRows)
   const means = end === 'start' ? blocks.y : blocks.y.toReversed()
   let value = means[0] ?? Number.NaN
   for (let count = 1; count + 1 < means.length; count++) {

@@ -1,5 +1,4 @@
 import { KineticsError } from '../errors.ts'
-import { perSecondToPerMinute } from '../units/convert.ts'
 import { column, type Column } from '../units/quantity.ts'
 import { mainHeating } from './main-heating.ts'
 import type { NominalHeatingRate, RunColumns } from './run.ts'
@@ -156,7 +155,3 @@ function enough(rows: number, label: string): void {
     )
   }
 }
-
-/** A heating rate in words: `10 K/min`. */
-export const heatingRateInWords = (heatingRate_K_per_s: number): string =>
-  `${Number(perSecondToPerMinute(heatingRate_K_per_s).toPrecision(4))} K/min`

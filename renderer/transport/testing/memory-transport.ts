@@ -6,11 +6,11 @@ import type {
   RequestInput,
   RequestName,
   StudySnapshot,
-} from '../../shared-kinetics/contract/host-api.ts'
-import { applyChange, labelOfChange, type StudyChange } from '../../shared-kinetics/contract/study-change.ts'
-import { emptyStudy, type StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
-import type { RunInfo, StudyResult } from '../../shared-kinetics/contract/study-result.ts'
-import { KineticsError } from '../../shared-kinetics/errors.ts'
+} from '../../../shared-kinetics/contract/host-api.ts'
+import { applyChange, labelOfChange, type StudyChange } from '../../../shared-kinetics/contract/study-change.ts'
+import { emptyStudy, type StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
+import type { RunInfo, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { KineticsError } from '../../../shared-kinetics/errors.ts'
 
 type Call = { readonly [Name in RequestName]: { readonly name: Name; readonly input: RequestInput<Name> } }[RequestName]
 
