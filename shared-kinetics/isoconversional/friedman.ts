@@ -7,6 +7,7 @@ export const friedmanInfo: MethodInfo = {
   sources: ['friedman-1964', 'ictac-2011'],
   appliesTo: ['constant-heating-rate', 'isothermal', 'general'],
   evidence: 'line',
+  byDefault: true,
 }
 
 /**

@@ -9,6 +9,7 @@ export const isothermalIntegralInfo: MethodInfo = {
   sources: ['ictac-2011'],
   appliesTo: ['isothermal'],
   evidence: 'line',
+  byDefault: true,
 }
 
 /**

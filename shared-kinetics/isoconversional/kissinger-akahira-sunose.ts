@@ -7,6 +7,7 @@ export const kissingerAkahiraSunoseInfo: MethodInfo = {
   sources: ['akahira-sunose-1971', 'kissinger-1957', 'ictac-2011'],
   appliesTo: ['constant-heating-rate'],
   evidence: 'line',
+  byDefault: true,
 }
 
 /**

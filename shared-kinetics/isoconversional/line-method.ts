@@ -1,4 +1,4 @@
-import { lineFit } from '../numerics/line-fit.ts'
+import { lineFit, type LineFit } from '../numerics/line-fit.ts'
 import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
@@ -32,7 +32,7 @@ export function lineMethod(method: LineMethod): IsoconversionalMethod {
     checkSeries(method.info, series)
     const lines: LevelLine[] = []
     const columns = resultColumns(method.info, series, lines, [])
-    const { lnAf, lnAfStandardError } = columns.result
+    const { lnAf, lnAfStandardError, covarianceEaLnAf } = columns.result
     const programmes = countProgrammes(series)
     for (let level = 0; level < series.levels.length; level++) {
       context.checkCancelled()
@@ -45,9 +45,13 @@ export function lineMethod(method: LineMethod): IsoconversionalMethod {
       else {
         const perSlope = gasConstant_J_per_mol_K / method.slopeFactor
         columns.setEnergy(level, fit.slope * perSlope, fit.slopeStandardError * Math.abs(perSlope), fit.r2)
+        columns.setPoints(level, { x_per_K: column(x, '1/K'), residual: residualsOf(x, y, fit), energyPerSlope: perSlope })
         if (method.interceptIsLnAf) {
           lnAf[level] = fit.intercept
-          if (programmes >= 3) lnAfStandardError[level] = fit.interceptStandardError
+          if (programmes >= 3) {
+            lnAfStandardError[level] = fit.interceptStandardError
+            covarianceEaLnAf[level] = perSlope * fit.covariance
+          }
         }
       }
       context.progress(level + 1, series.levels.length)
@@ -79,6 +83,9 @@ function pointsAtLevel(
   })
   return { x, y, status }
 }
+
+const residualsOf = (x: Float64Array, y: Float64Array, { valueAtMean, slope, xMean }: LineFit): Float64Array =>
+  y.map((value, i) => value - (valueAtMean + slope * ((x[i] ?? Number.NaN) - xMean)))
 
 /** Temperature of a run at a level. */
 export const temperatureAtLevel = (run: RunAtLevels, level: number): number => run.temperature_K[level] ?? Number.NaN

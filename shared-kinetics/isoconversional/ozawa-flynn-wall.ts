@@ -7,6 +7,7 @@ export const ozawaFlynnWallInfo: MethodInfo = {
   sources: ['ozawa-1965', 'flynn-wall-1966', 'doyle-1962'],
   appliesTo: ['constant-heating-rate'],
   evidence: 'line',
+  byDefault: true,
 }
 
 /** Slope of Doyle's line ln p(x) = -5.331 - 1.052 x. */

@@ -1,7 +1,7 @@
 import { studentTQuantile } from '../numerics/student-t.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
 import { column } from '../units/quantity.ts'
-import type { IsoconversionalResult, LevelLine, LevelPhi, LevelStatus, MethodInfo } from './result.ts'
+import type { IsoconversionalResult, LevelLine, LevelPhi, LevelPoints, LevelStatus, MethodInfo } from './result.ts'
 import { countProgrammes } from './series-check.ts'
 
 /** A result being filled level by level. Numbers are NaN and statuses `statusAtStart` until set. */
@@ -12,6 +12,8 @@ export interface ResultColumns {
   setStatus(level: number, status: LevelStatus): void
   /** Sets Ea in J/mol with its standard error and interval, and status `ok`. */
   setEnergy(level: number, Ea: number, standardError: number, r2: number): void
+  /** Sets the regression that the level's Ea rests on. */
+  setPoints(level: number, points: LevelPoints): void
 }
 
 /**
@@ -34,6 +36,10 @@ export function resultColumns(
   const lower95 = column(empty(), 'J/mol')
   const upper95 = column(empty(), 'J/mol')
   const r2 = empty()
+  const points = Array.from({ length: levels }, (): LevelPoints => {
+    const none = (): Float64Array => new Float64Array(series.runs.length).fill(Number.NaN)
+    return { x_per_K: column(none(), '1/K'), residual: none(), energyPerSlope: Number.NaN }
+  })
   return {
     result: {
       method: info.id,
@@ -46,6 +52,11 @@ export function resultColumns(
       lnAfStandardError: empty(),
       r2,
       status,
+      points,
+      covarianceEaLnAf: column(empty(), 'J/mol'),
+      lnA: empty(),
+      otherIntervals: [],
+      systematicError: empty(),
       lines,
       phi,
     },
@@ -61,6 +72,9 @@ export function resultColumns(
       lower95[level] = energy - t * error
       upper95[level] = energy + t * error
       r2[level] = share
+    },
+    setPoints(level, value) {
+      points[level] = value
     },
   }
 }

@@ -28,6 +28,8 @@ export interface MethodInfo {
   readonly appliesTo: readonly ('constant-heating-rate' | 'isothermal' | 'general')[]
   /** `line`: a straight line through the runs at each level; `minimum`: the minimum of Phi(Ea) at each level. */
   readonly evidence: 'line' | 'minimum'
+  /** Runs where no methods were named; the rest are forms of the same method, or standards, that a person asks for. */
+  readonly byDefault: boolean
 }
 
 /** The straight line of one level: y against x = 1/T, one point a run. */
@@ -37,6 +39,29 @@ export interface LevelLine {
   /** dy/dx in K, and y at x = 0; NaN where the line is not determined. */
   readonly slope_K: number
   readonly intercept: number
+}
+
+/**
+ * The regression that Ea rests on at one level, one point a run; for minimising methods the one linearised at the minimum, x then being the effective 1/T
+ * (-R d ln J/dEa) and the residual that of ln J from its mean. What resampling, lack of fit and the interval of a mean work on. NaN where the level has no Ea.
+ */
+export interface LevelPoints {
+  readonly x_per_K: Column<'1/K'>
+  /** Residuals from the line, in units of ln. */
+  readonly residual: Float64Array
+  /** dEa/dslope in J/mol per K: Ea's standard error is |this| times that of the slope. */
+  readonly energyPerSlope: number
+}
+
+/** Kinds of interval besides the Student-t one that every method has. */
+export const intervalKinds = ['vyazovkin-wight-f', 'jackknife', 'bootstrap', 'measured-sources', 'combined'] as const
+export type IntervalKind = (typeof intervalKinds)[number]
+
+/** Another 95 % interval of the same Ea, pointwise, as long as the levels; NaN where it is not to be had. */
+export interface EnergyInterval {
+  readonly kind: IntervalKind
+  readonly lower95: Column<'J/mol'>
+  readonly upper95: Column<'J/mol'>
 }
 
 /** Phi(Ea) sampled around its minimum at one level, for drawing. */
@@ -63,6 +88,16 @@ export interface IsoconversionalResult {
   readonly lnAfStandardError: Float64Array
   readonly r2: Float64Array
   readonly status: readonly LevelStatus[]
+  /** Indexed by level. */
+  readonly points: readonly LevelPoints[]
+  /** Covariance of Ea and ln[A f(alpha)] in J/mol where the method gives both, else NaN. */
+  readonly covarianceEaLnAf: Column<'J/mol'>
+  /** ln A (A in 1/s) where the method itself assumes a model (ASTM E1641: first order), else NaN. */
+  readonly lnA: Float64Array
+  /** Intervals of other kinds that come with the method. */
+  readonly otherIntervals: readonly EnergyInterval[]
+  /** Error of Ea by the method's own temperature integral, as a share of Ea: exact formula for one reaction at close heating rates; 0 for methods without one. NaN without Ea. */
+  readonly systematicError: Float64Array
   /** Evidence at each level: one of the two is empty. */
   readonly lines: readonly LevelLine[]
   readonly phi: readonly LevelPhi[]

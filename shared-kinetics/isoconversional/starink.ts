@@ -7,6 +7,7 @@ export const starinkInfo: MethodInfo = {
   sources: ['starink-2003', 'ictac-2011'],
   appliesTo: ['constant-heating-rate'],
   evidence: 'line',
+  byDefault: true,
 }
 
 /** Constants of ln p(x) ≈ -0.312 - 1.92 ln x - 1.0008 x. */

@@ -5,7 +5,7 @@ import { energies, energyGrid, largestEa, type EnergyGrid } from './energy-grid.
 import { phi, phiSlope } from './phi.ts'
 import { phiAround, phiOverRange } from './phi-curve.ts'
 import { resultColumns } from './result-columns.ts'
-import type { IsoconversionalMethod, LevelPhi, LevelStatus, MethodInfo } from './result.ts'
+import type { IsoconversionalMethod, LevelPhi, LevelPoints, LevelStatus, MethodInfo } from './result.ts'
 import { checkSeries, countProgrammes } from './series-check.ts'
 import { timeIntegral, type TimeIntegral } from './time-integral.ts'
 
@@ -15,6 +15,7 @@ export const vyazovkinInfo: MethodInfo = {
   sources: ['vyazovkin-dollimore-1996', 'vyazovkin-1997', 'ictac-2011'],
   appliesTo: ['constant-heating-rate', 'isothermal', 'general'],
   evidence: 'minimum',
+  byDefault: true,
 }
 
 /**
@@ -62,6 +63,7 @@ export const vyazovkin: IsoconversionalMethod = (series, context) => {
         curves.push(phiOverRange(grid, level, integrals.length))
       } else {
         columns.setEnergy(level, minimum.Ea, minimum.standardError, minimum.r2)
+        columns.setPoints(level, minimum.points)
         curves.push(phiAround(grid, level, integrals.length, minimum, columns.t * minimum.standardError))
       }
     }
@@ -85,6 +87,7 @@ interface Minimum {
   readonly phiThreshold: number
   readonly standardError: number
   readonly r2: number
+  readonly points: LevelPoints
   /** The effective temperatures are one, so that the minimum says nothing about Ea. */
   readonly flat: boolean
 }
@@ -161,6 +164,11 @@ function minimumBetween(
     phiThreshold: phiMinimum + n * (t * s) ** 2,
     standardError,
     r2,
+    points: {
+      x_per_K: column(inverseT, '1/K'),
+      residual: lnJ.map((value) => value - meanOf(lnJ)),
+      energyPerSlope: -gasConstant_J_per_mol_K,
+    },
     flat: !(relativeSpread(inverseT) >= sameTemperature),
   }
 }
@@ -172,9 +180,8 @@ function linearised(
   inverseT: Float64Array,
 ): { readonly standardError: number; readonly s: number; readonly r2: number } {
   const n = lnJ.length
-  const mean = (values: Float64Array): number => values.reduce((sum, value) => sum + value / n, 0)
-  const meanY = mean(lnJ)
-  const meanU = mean(inverseT)
+  const meanY = meanOf(lnJ)
+  const meanU = meanOf(inverseT)
   let residual = 0
   let spread = 0
   let total = 0
@@ -188,6 +195,8 @@ function linearised(
   const s = n > 2 ? Math.sqrt(residual / (n - 2)) : Number.NaN
   return { s, standardError: (gasConstant_J_per_mol_K * s) / Math.sqrt(spread), r2: 1 - residual / total }
 }
+
+const meanOf = (values: Float64Array): number => values.reduce((sum, value) => sum + value / values.length, 0)
 
 function relativeSpread(values: Float64Array): number {
   const highest = values.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY)

@@ -22,6 +22,7 @@ export function chooseMethods(
   for (const id of methodIds) {
     if (asked !== null && !asked.includes(id)) continue
     const { info } = methods[id]
+    if (asked === null && !info.byDefault) continue
     const hindered = programmes.find((kind) => !info.appliesTo.includes(kind))
     if (hindered === undefined) chosen.push(info)
     else if (asked !== null || info.appliesTo.includes('constant-heating-rate'))

@@ -1,4 +1,4 @@
-import type { LevelStatus, MethodId } from '../isoconversional/result.ts'
+import type { IntervalKind, LevelStatus, MethodId } from '../isoconversional/result.ts'
 import type { Finding } from '../review/finding.ts'
 import type { Window } from '../series/run.ts'
 import type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
@@ -67,6 +67,58 @@ export interface PhiResult {
   readonly phiThreshold: Maybe
 }
 
+/** Another interval of the same Ea, named by its kind; arrays as long as the levels. Every one is pointwise. */
+export interface IntervalResult {
+  readonly kind: IntervalKind
+  readonly label: string
+  readonly level: 0.95
+  readonly pointwise: true
+  /** Resampling few runs gives an approximate interval, and is called so. */
+  readonly approximate: boolean
+  /** How it was made, in a sentence: degrees of freedom, resamples dropped, draws and seed. */
+  readonly note: string
+  readonly sources: readonly string[]
+  readonly standardUncertainty_kJ_per_mol: readonly Maybe[]
+  readonly lower95_kJ_per_mol: readonly Maybe[]
+  readonly upper95_kJ_per_mol: readonly Maybe[]
+}
+
+/** Lack of fit against pure error at each level, where replicates exist: F = (lack-of-fit mean square)/(pure-error mean square) and its p-value. */
+export interface LackOfFitResult {
+  readonly dofLackOfFit: number
+  readonly dofPureError: number
+  readonly F: readonly Maybe[]
+  readonly p: readonly Maybe[]
+}
+
+/** Sources of uncertainty that a measured temperature, heating rate and signal bring. */
+export type UncertaintySource = 'temperature-common' | 'temperature-run' | 'temperature-lag' | 'heating-rate' | 'signal-noise' | 'baseline'
+
+export interface BudgetEntry {
+  readonly source: UncertaintySource
+  readonly label: string
+  /** What was assumed or measured, with its unit, e.g. `0.5 K in each run`. */
+  readonly magnitude: string
+  /** Standard uncertainty of Ea that this source alone brings. */
+  readonly standardUncertainty_kJ_per_mol: readonly Maybe[]
+  /** The scatter of the points shows it already, so that it is not added to the regression's own standard error. */
+  readonly shownByScatter: boolean
+}
+
+/** What follows from resampling and from measured sources for one method; made apart from the evaluation, since it takes longer. */
+export interface UncertaintyProfile {
+  readonly method: MethodId
+  readonly intervals: readonly IntervalResult[]
+  readonly budget: readonly BudgetEntry[]
+}
+
+export interface UncertaintyResult {
+  readonly levels: readonly number[]
+  readonly seed: number
+  readonly draws: number
+  readonly profiles: readonly UncertaintyProfile[]
+}
+
 /** Ea against conversion by one method: every array as long as `StudyResult.levels`, null where status is not `ok`. */
 export interface ProfileResult {
   readonly method: MethodId
@@ -81,6 +133,15 @@ export interface ProfileResult {
   readonly upper95_kJ_per_mol: readonly Maybe[]
   readonly lnAf_per_s: readonly Maybe[]
   readonly lnAfStandardError: readonly Maybe[]
+  /** Covariance of Ea and ln[A f(alpha)], A in 1/s. */
+  readonly covarianceEaLnAf_kJ_per_mol: readonly Maybe[]
+  /** ln A by a model that the method itself assumes; null elsewhere. */
+  readonly lnA_per_s: readonly Maybe[]
+  readonly otherIntervals: readonly IntervalResult[]
+  /** In percent of Ea; 0 for a method without an error of its own. */
+  readonly systematicError_percent: readonly Maybe[]
+  /** null without replicates. */
+  readonly lackOfFit: LackOfFitResult | null
   readonly r2: readonly Maybe[]
   readonly status: readonly LevelStatus[]
   /** Indexed by level; empty where the method has the other kind of evidence. `x`/`y` are in the order of `StudyResult.runs`. */
@@ -96,6 +157,10 @@ export interface MeanEnergy {
   readonly to: number
   readonly Ea_kJ_per_mol: Maybe
   readonly spread_kJ_per_mol: Maybe
+  /** Of the mean, from the runs' residuals averaged over the levels: errors of one run go through all its levels. null without an interval. */
+  readonly standardError_kJ_per_mol: Maybe
+  readonly lower95_kJ_per_mol: Maybe
+  readonly upper95_kJ_per_mol: Maybe
   /** Levels that went into it, of those in the range, and where they begin and end. */
   readonly levelsUsed: number
   readonly levelsInRange: number
