@@ -1,13 +1,11 @@
-import { bracketedRoot, type RootOptions } from '../numerics/root.ts'
-import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
-import { energies, energyGrid, largestEa, type EnergyGrid } from './energy-grid.ts'
-import { phi, phiSlope } from './phi.ts'
+import { energyGrid, largestEa } from './energy-grid.ts'
 import { phiAround, phiOverRange } from './phi-curve.ts'
+import { findPhiMinimum } from './phi-minimum.ts'
 import { resultColumns } from './result-columns.ts'
-import type { IsoconversionalMethod, LevelPhi, LevelPoints, LevelStatus, MethodInfo } from './result.ts'
+import type { IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
 import { checkSeries, countProgrammes } from './series-check.ts'
-import { timeIntegral, type TimeIntegral } from './time-integral.ts'
+import { timeIntegral } from './time-integral.ts'
 
 export const vyazovkinInfo: MethodInfo = {
   id: 'vyazovkin',
@@ -57,7 +55,7 @@ export const vyazovkin: IsoconversionalMethod = (series, context) => {
       columns.setStatus(level, 'level-not-reached')
       curves.push(noCurve)
     } else {
-      const minimum = findMinimum(integrals, grid, level, columns.t)
+      const minimum = findPhiMinimum(integrals, grid, level, columns.t)
       if (typeof minimum === 'string') {
         columns.setStatus(level, minimum)
         curves.push(phiOverRange(grid, level, integrals.length))
@@ -77,129 +75,4 @@ const noCurve: LevelPhi = {
   phi: new Float64Array(0),
   phiMinimum: Number.NaN,
   phiThreshold: Number.NaN,
-}
-
-/** A minimum of Phi at one level, with what is read from the integrals there. */
-interface Minimum {
-  readonly Ea: number
-  readonly phiMinimum: number
-  /** Phi at the ends of the interval; NaN without one. */
-  readonly phiThreshold: number
-  readonly standardError: number
-  readonly r2: number
-  readonly points: LevelPoints
-  /** The effective temperatures are one, so that the minimum says nothing about Ea. */
-  readonly flat: boolean
-}
-
-/** Effective temperatures that differ by less than this share are one temperature. */
-const sameTemperature = 1e-9
-
-/** Without an interval, a minimum whose Phi is within this factor of the lowest might be the one meant: the J then differ by as much as an error of some K explains. */
-const mightBeMeant = 1.1
-
-/** The minimum at a level, or why there is none. `t` is the quantile of the interval, NaN without one. */
-function findMinimum(integrals: readonly TimeIntegral[], grid: EnergyGrid, level: number, t: number): Minimum | Exclude<LevelStatus, 'ok'> {
-  const lnJ = new Float64Array(integrals.length)
-  const inverseT = new Float64Array(integrals.length)
-  let alike = true
-  const slopes = energies.map((_, g) => {
-    grid.read(g, level, lnJ, inverseT)
-    alike &&= relativeSpread(inverseT) < sameTemperature
-    return phiSlope(lnJ, inverseT)
-  })
-  if (alike) return 'minimum-flat'
-
-  const minima: Minimum[] = []
-  for (let g = 1; g < energies.length; g++) {
-    const [fLower, fUpper] = [slopes[g - 1] as number, slopes[g] as number]
-    if (fLower < 0 && fUpper >= 0)
-      minima.push(minimumBetween(integrals, level, energies[g - 1] as number, energies[g] as number, { fLower, fUpper }, t))
-  }
-  minima.sort((a, b) => a.phiMinimum - b.phiMinimum)
-  const [lowest, ...others] = minima
-  if (lowest === undefined) return 'minimum-at-bound'
-
-  const phiAt = (g: number): number => {
-    grid.read(g, level, lnJ, inverseT)
-    return phi(lnJ)
-  }
-  const last = energies.length - 1
-  const atBounds = [...((slopes[0] as number) > 0 ? [phiAt(0)] : []), ...((slopes[last] as number) < 0 ? [phiAt(last)] : [])]
-  if (atBounds.some((value) => value < lowest.phiMinimum)) return 'minimum-at-bound'
-  const limit = Number.isNaN(lowest.phiThreshold) ? mightBeMeant * lowest.phiMinimum : lowest.phiThreshold
-  if (others.some((other) => other.phiMinimum <= limit) || atBounds.some((value) => value <= lowest.phiThreshold)) return 'several-minima'
-  return lowest.flat ? 'minimum-flat' : lowest
-}
-
-function minimumBetween(
-  integrals: readonly TimeIntegral[],
-  level: number,
-  lower: number,
-  upper: number,
-  ends: RootOptions,
-  t: number,
-): Minimum {
-  const n = integrals.length
-  const lnJ = new Float64Array(n)
-  const inverseT = new Float64Array(n)
-  const integrate = (Ea: number): void => {
-    integrals.forEach((integral, i) => {
-      const value = integral.atLevel(Ea, level)
-      lnJ[i] = value.lnJ
-      inverseT[i] = value.inverseT
-    })
-  }
-  const slope = (Ea: number): number => {
-    integrate(Ea)
-    return phiSlope(lnJ, inverseT)
-  }
-  const { x: Ea } = bracketedRoot(slope, lower, upper, { ...ends, relativeTolerance: 1e-12 })
-  integrate(Ea)
-  const { standardError, s, r2 } = linearised(Ea, lnJ, inverseT)
-  const phiMinimum = phi(lnJ)
-  return {
-    Ea,
-    phiMinimum,
-    phiThreshold: phiMinimum + n * (t * s) ** 2,
-    standardError,
-    r2,
-    points: {
-      x_per_K: column(inverseT, '1/K'),
-      residual: lnJ.map((value) => value - meanOf(lnJ)),
-      energyPerSlope: -gasConstant_J_per_mol_K,
-    },
-    flat: !(relativeSpread(inverseT) >= sameTemperature),
-  }
-}
-
-/** Standard error in J/mol, residual standard deviation and r2 of ln J + Ea u/R against u; not finite with two runs. */
-function linearised(
-  Ea: number,
-  lnJ: Float64Array,
-  inverseT: Float64Array,
-): { readonly standardError: number; readonly s: number; readonly r2: number } {
-  const n = lnJ.length
-  const meanY = meanOf(lnJ)
-  const meanU = meanOf(inverseT)
-  let residual = 0
-  let spread = 0
-  let total = 0
-  for (let i = 0; i < n; i++) {
-    const dy = (lnJ[i] as number) - meanY
-    const du = (inverseT[i] as number) - meanU
-    residual += dy * dy
-    spread += du * du
-    total += (dy + (Ea * du) / gasConstant_J_per_mol_K) ** 2
-  }
-  const s = n > 2 ? Math.sqrt(residual / (n - 2)) : Number.NaN
-  return { s, standardError: (gasConstant_J_per_mol_K * s) / Math.sqrt(spread), r2: 1 - residual / total }
-}
-
-const meanOf = (values: Float64Array): number => values.reduce((sum, value) => sum + value / values.length, 0)
-
-function relativeSpread(values: Float64Array): number {
-  const highest = values.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY)
-  const lowest = values.reduce((a, b) => Math.min(a, b), Number.POSITIVE_INFINITY)
-  return (highest - lowest) / highest
 }
