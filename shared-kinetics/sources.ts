@@ -24,6 +24,36 @@ export const sources = {
   // Cited from memory, not re-read.
   'cook-weisberg-1982':
     'R. D. Cook, S. Weisberg, Residuals and Influence in Regression (1982), ch. 2 (externally studentised residuals, Bonferroni bound)',
+  'salmon-2011':
+    'J. K. Salmon, M. A. Moraes, R. O. Dror, D. E. Shaw, Proc. SC11 (2011) art. 16 (counter-based random numbers; cited from memory)',
+  'marsaglia-bray-1964': 'G. Marsaglia, T. A. Bray, SIAM Rev. 6 (1964) 260 (normal numbers by the polar method; cited from memory)',
+  // Temperature integral, reaction models, predictions: cited from memory unless their numbers were recomputed, not re-read.
+  'starink-1996': 'M. J. Starink, Thermochim. Acta 288 (1996) 97',
+  'murray-white-1955': 'P. Murray, J. White, Trans. Brit. Ceram. Soc. 54 (1955) 204',
+  'coats-redfern-1964': 'A. W. Coats, J. P. Redfern, Nature 201 (1964) 68',
+  'gorbachev-1975': 'V. M. Gorbachev, J. Therm. Anal. 8 (1975) 349',
+  'senum-yang-1977': 'G. I. Senum, R. T. Yang, J. Therm. Anal. 11 (1977) 445',
+  'flynn-1997': 'J. H. Flynn, Thermochim. Acta 300 (1997) 83 (misprints in closed forms of the temperature integral)',
+  'perez-maqueda-criado-2000': 'L. A. Pérez-Maqueda, J. M. Criado, J. Therm. Anal. Calorim. 60 (2000) 909 (accuracy of the rational forms)',
+  'li-1985': 'C.-H. Li, AIChE J. 31 (1985) 1036',
+  'madhusudanan-1993': 'P. M. Madhusudanan, K. Krishnan, K. N. Ninan, Thermochim. Acta 97 (1986) 189; 221 (1993) 13',
+  'agrawal-1987': 'R. K. Agrawal, AIChE J. 33 (1987) 1212',
+  'tang-2003': 'W. Tang, Y. Liu, H. Zhang, Z. Wang, C. Wang, Thermochim. Acta 408 (2003) 39',
+  'astm-e1641': 'ASTM E1641, Decomposition kinetics by thermogravimetry using the Ozawa/Flynn/Wall method',
+  'astm-e1877': 'ASTM E1877, Calculating thermal endurance of materials from thermogravimetric decomposition data',
+  'khawam-flanagan-2006': 'A. Khawam, D. R. Flanagan, J. Phys. Chem. B 110 (2006) 17315 (solid-state reaction models)',
+  'avrami-1939': 'M. Avrami, J. Chem. Phys. 7 (1939) 1103',
+  'jander-1927': 'W. Jander, Z. Anorg. Allg. Chem. 163 (1927) 1',
+  'ginstling-brounshtein-1950': 'A. M. Ginstling, B. I. Brounshtein, J. Appl. Chem. USSR 23 (1950) 1327',
+  'prout-tompkins-1944': 'E. G. Prout, F. C. Tompkins, Trans. Faraday Soc. 40 (1944) 488',
+  'sestak-berggren-1971': 'J. Šesták, G. Berggren, Thermochim. Acta 3 (1971) 1',
+  'burnham-braun-1999': 'A. K. Burnham, R. L. Braun, Energy Fuels 13 (1999) 1',
+  'sanchez-jimenez-2010': 'P. E. Sánchez-Jiménez et al., Polym. Degrad. Stab. 95 (2010) 733 (random scission)',
+  'malek-1992': 'J. Málek, Thermochim. Acta 200 (1992) 257 (shape of the y and z functions)',
+  'zhou-grant-2004': 'D. Zhou, D. J. W. Grant, J. Phys. Chem. A 108 (2004) 4239 (a wrong model on one curve)',
+  'vyazovkin-wight-1999': 'S. Vyazovkin, C. A. Wight, Thermochim. Acta 340–341 (1999) 53',
+  'usp-1160': 'USP general chapter <1160>, Pharmaceutical calculations in prescription compounding (mean kinetic temperature)',
+  'haynes-1971': 'J. D. Haynes, J. Pharm. Sci. 60 (1971) 927 (virtual temperature)',
 } as const
 
 export type SourceKey = keyof typeof sources

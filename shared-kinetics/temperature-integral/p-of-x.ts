@@ -1,4 +1,4 @@
-import { KineticsError } from '../errors.ts'
+import { checkX } from './check-x.ts'
 
 /**
  * Scaled temperature integral π(x) = x² eˣ p(x), which lies between 0 and 1 and tends to 1 for large x.
@@ -12,9 +12,7 @@ import { KineticsError } from '../errors.ts'
  * @source abramowitz-stegun-1964 5.1.11, 5.1.22
  */
 export function scaledPOfX(x: number): number {
-  if (!(x > 0) || !Number.isFinite(x)) {
-    throw new KineticsError('bad-option', `The temperature integral needs x = Ea/(RT) > 0, not ${x}.`, { x })
-  }
+  checkX(x)
   return x < switchToFraction ? x * (1 - x * Math.exp(x) * exponentialIntegral1(x)) : fraction(x)
 }
 
