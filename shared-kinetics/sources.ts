@@ -22,6 +22,11 @@ export const sources = {
   'hemminger-sarge-1991': 'W. F. Hemminger, S. M. Sarge, J. Therm. Anal. 37 (1991) 1455 (baselines under a peak)',
   'vyazovkin-2001': 'S. Vyazovkin, J. Comput. Chem. 22 (2001) 178 (integrals over small steps of conversion)',
   // Cited from memory, not re-read.
+  'arrhenius-1889': 'S. Arrhenius, Z. Phys. Chem. 4 (1889) 226',
+  'iupac-arrhenius': 'IUPAC, Compendium of Chemical Terminology, "activation energy", "modified Arrhenius equation"',
+  'eyring-1935': 'H. Eyring, J. Chem. Phys. 3 (1935) 107',
+  'draper-smith-1998': 'N. R. Draper, H. Smith, Applied Regression Analysis, 3rd ed. (1998), ch. 1 and 3 (line, bands, extra term)',
+  'levenspiel-1999': 'O. Levenspiel, Chemical Reaction Engineering, 3rd ed. (1999), ch. 2 (temperature dependence from times)',
   'cook-weisberg-1982':
     'R. D. Cook, S. Weisberg, Residuals and Influence in Regression (1982), ch. 2 (externally studentised residuals, Bonferroni bound)',
   'salmon-2011':
