@@ -38,7 +38,7 @@ export const fewestRowsInReaction = 15
 /** Noise is looked for up to this share of the duration, in which a curve is as good as a cubic. */
 const widestNoiseStride = 0.01
 /** A cubic and two samples more: wider fits are for noise, and `smoothingHalfWidth` sees to that. */
-const fewestPoints = 6
+export const fewestPoints = 6
 
 /**
  * Curve from samples of the conversion itself (from mass, or a conversion column): local cubics, whose slope is the reaction rate.

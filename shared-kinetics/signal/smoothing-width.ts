@@ -13,8 +13,8 @@ export interface SmoothingWidthInput {
  * Variance of a local cubic with tricube weights w(u) on evenly spread points, in units of σ²/(ρ h^p) with ρ points per unit of x: ∫K(u)² du, where K is the
  * kernel that the regression amounts to. p = 3 for the slope and 1 for the value. (Integrals by quadrature.)
  */
-const slopeVariance = 17.15733
-const valueVariance = 1.425221
+export const slopeVariance = 17.15733
+export const valueVariance = 1.425221
 /** Bias of the same, in units of h⁴ and the fourth derivative of the rate: ∫K(u) u⁵ du/5! for the slope of the extent, ∫K(u) u⁴ du/4! for the value of the rate. */
 const slopeBias = 7.891188e-4
 const valueBias = 1.186724e-3
