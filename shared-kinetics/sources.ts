@@ -59,6 +59,15 @@ export const sources = {
   'vyazovkin-wight-1999': 'S. Vyazovkin, C. A. Wight, Thermochim. Acta 340–341 (1999) 53',
   'usp-1160': 'USP general chapter <1160>, Pharmaceutical calculations in prescription compounding (mean kinetic temperature)',
   'haynes-1971': 'J. D. Haynes, J. Pharm. Sci. 60 (1971) 927 (virtual temperature)',
+  'vyazovkin-wight-2000':
+    'S. Vyazovkin, C. A. Wight, Anal. Chem. 72 (2000) 3171 (confidence intervals of nonlinear isoconversional methods)',
+  // Cited from memory, not re-read.
+  'tukey-1958': 'J. W. Tukey, Ann. Math. Stat. 29 (1958) 614 (jackknife, abstract)',
+  // Cited from memory, not re-read.
+  'efron-tibshirani-1993': 'B. Efron, R. J. Tibshirani, An Introduction to the Bootstrap (1993), ch. 6, 11 and 13',
+  // Cited from memory, not re-read.
+  'draper-smith-1998':
+    'N. R. Draper, H. Smith, Applied Regression Analysis, 3rd ed. (1998), ch. 2 (lack of fit, pure error, approximate repeats)',
 } as const
 
 export type SourceKey = keyof typeof sources
