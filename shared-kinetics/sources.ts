@@ -68,6 +68,16 @@ export const sources = {
   // Cited from memory, not re-read.
   'draper-smith-1998':
     'N. R. Draper, H. Smith, Applied Regression Analysis, 3rd ed. (1998), ch. 2 (lack of fit, pure error, approximate repeats)',
+  'astm-e698':
+    'ASTM E698 (kinetic parameters for thermally unstable materials by differential scanning calorimetry; equations from memory)',
+  'astm-e2890': 'ASTM E2890 (kinetic parameters and reaction order by differential scanning calorimetry; equations from memory)',
+  'astm-e2041': 'ASTM E2041 (kinetic parameters by differential scanning calorimetry, Borchardt and Daniels; equations from memory)',
+  'farjas-roura-2014': 'J. Farjas, P. Roura, Thermochim. Acta 598 (2014) 51',
+  'borchardt-daniels-1957': 'H. J. Borchardt, F. Daniels, J. Am. Chem. Soc. 79 (1957) 41 (from memory)',
+  'augis-bennett-1978': 'J. A. Augis, J. E. Bennett, J. Therm. Anal. 13 (1978) 283 (from memory)',
+  'flynn-1983': 'J. H. Flynn, J. Therm. Anal. 27 (1983) 95 (correction of the Ozawa–Flynn–Wall energy; from memory)',
+  'iso-11358-2':
+    'ISO 11358-2, Plastics, Thermogravimetry (TG) of polymers, Part 2: Determination of activation energy (scope read; equation from memory)',
 } as const
 
 export type SourceKey = keyof typeof sources

@@ -11,7 +11,20 @@ export const studyLimits = { runs: 200, levels: 2000, text: 4000, signals: 64, n
 const namesOf = <Name extends string>(names: Readonly<Record<Name, true>>): readonly Name[] => Object.keys(names) as Name[]
 
 const methodSchema = z.enum(
-  namesOf<MethodId>({ friedman: true, ofw: true, kas: true, starink: true, vyazovkin: true, 'isothermal-integral': true }),
+  namesOf<MethodId>({
+    friedman: true,
+    ofw: true,
+    'ofw-corrected': true,
+    kas: true,
+    starink: true,
+    vyazovkin: true,
+    'vyazovkin-incremental': true,
+    'isothermal-integral': true,
+    'starink-1996': true,
+    tang: true,
+    'astm-e1641': true,
+    'iso-11358-2': true,
+  }),
 )
 const signalQuantitySchema = z.enum(namesOf<SignalQuantity>({ mass: true, conversion: true, 'heat-release': true, 'heat-flow': true }))
 const signalUnitSchema = z.enum(namesOf<SignalUnit>({ kg: true, '1': true, W: true, 'W/kg': true }))

@@ -13,13 +13,21 @@ interface Ordinate {
 }
 
 const perMinute = Math.log(60)
+const perMinuteLog10 = Math.log10(60)
+const none: Ordinate = { label: '', unit: '', shift: 0 }
 const ordinates: Readonly<Record<MethodId, Ordinate>> = {
   friedman: { label: 'ln(dα/dt)', unit: 'dα/dt in 1/s', shift: 0 },
   ofw: { label: 'ln β', unit: 'β in K/min', shift: perMinute },
+  'ofw-corrected': { label: 'ln β − δ', unit: 'β in K/min', shift: perMinute },
   kas: { label: 'ln(β/T²)', unit: 'β in K/min, T in K', shift: perMinute },
   starink: { label: 'ln(β/T^1.92)', unit: 'β in K/min, T in K', shift: perMinute },
-  vyazovkin: { label: '', unit: '', shift: 0 },
   'isothermal-integral': { label: 'ln t', unit: 't in min', shift: -perMinute },
+  'starink-1996': { label: 'ln(β/T^1.8)', unit: 'β in K/min, T in K', shift: perMinute },
+  tang: { label: 'ln(β/T^1.894661)', unit: 'β in K/min, T in K', shift: perMinute },
+  'astm-e1641': { label: 'log β', unit: 'β in K/min', shift: perMinuteLog10 },
+  'iso-11358-2': { label: 'log β', unit: 'β in K/min', shift: perMinuteLog10 },
+  vyazovkin: none,
+  'vyazovkin-incremental': none,
 }
 
 /**

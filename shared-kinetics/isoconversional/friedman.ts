@@ -34,4 +34,5 @@ export const friedman = lineMethod({
   withoutOrdinate: 'rate-not-positive',
   slopeFactor: -1,
   interceptIsLnAf: true,
+  integral: null,
 })

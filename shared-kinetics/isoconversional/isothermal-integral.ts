@@ -37,6 +37,7 @@ export const isothermalIntegral: IsoconversionalMethod = (series, context) => {
     withoutOrdinate: 'line-not-determined',
     slopeFactor: 1,
     interceptIsLnAf: false,
+    integral: null,
   })(series, context)
 }
 

@@ -32,4 +32,5 @@ export const kissingerAkahiraSunose = lineMethod({
   withoutOrdinate: 'line-not-determined',
   slopeFactor: -1,
   interceptIsLnAf: false,
+  integral: { temperatureExponent: 2, divisor: 1 },
 })

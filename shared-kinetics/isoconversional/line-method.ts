@@ -2,9 +2,10 @@ import { lineFit, type LineFit } from '../numerics/line-fit.ts'
 import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
-import { resultColumns } from './result-columns.ts'
+import { resultColumns, type ResultColumns } from './result-columns.ts'
 import type { IsoconversionalMethod, LevelLine, LevelStatus, MethodInfo } from './result.ts'
 import { checkSeries, countProgrammes } from './series-check.ts'
+import { systematicErrorOf, type ApproximateIntegral } from './systematic-error.ts'
 
 /** What tells one straight-line method from another. */
 export interface LineMethod {
@@ -19,45 +20,88 @@ export interface LineMethod {
   readonly slopeFactor: number
   /** The intercept is ln[A f(alpha)]. */
   readonly interceptIsLnAf: boolean
+  /** What the method takes for the temperature integral, by which its systematic error is known; null for a method without one, whose error is 0. */
+  readonly integral: ApproximateIntegral | null
+  /** Where Ea is not simply slope·R/slopeFactor: what the method makes of the first line. null where it comes to no Ea. */
+  readonly refine?: (level: LineAtLevel) => RefinedLine | null
+}
+
+/** The first line of one level, and what it was drawn from. Only made where every run has a point. */
+export interface LineAtLevel {
+  readonly series: SeriesAtLevels
+  readonly level: number
+  /** 1/T in 1/K and the ordinate, one point a run. */
+  readonly x: Float64Array
+  readonly y: Float64Array
+  readonly fit: LineFit
+}
+
+export interface RefinedLine {
+  /** In J/mol. */
+  readonly Ea: number
+  /** The line that is shown and judged; its ordinates. */
+  readonly y: Float64Array
+  readonly fit: LineFit
+  /** dEa/dslope in J/mol per K. */
+  readonly energyPerSlope: number
+  /** ln A with A in 1/s where the method assumes a model, else NaN. */
+  readonly lnA: number
+  readonly integral: ApproximateIntegral | null
 }
 
 /**
  * Makes a method that fits, at each level, one straight line y = intercept + slope·(1/T) through the runs, and takes Ea = slope·R/slopeFactor.
  *
  * Every used run must reach the level (`level-not-reached`), at least two programmes must be distinct (`too-few-programmes`), and the temperatures must differ
- * (`line-not-determined`). Standard errors are those of the unweighted regression with n - 2 degrees of freedom, n runs.
+ * (`line-not-determined`). Standard errors are those of the unweighted regression with n - 2 degrees of freedom, n runs. The systematic error is that of the
+ * method's temperature integral at the mean 1/T of the level.
  */
 export function lineMethod(method: LineMethod): IsoconversionalMethod {
   return (series, context) => {
     checkSeries(method.info, series)
     const lines: LevelLine[] = []
     const columns = resultColumns(method.info, series, lines, [])
-    const { lnAf, lnAfStandardError, covarianceEaLnAf } = columns.result
     const programmes = countProgrammes(series)
     for (let level = 0; level < series.levels.length; level++) {
       context.checkCancelled()
       const { x, y, status } = pointsAtLevel(method, series, level)
       const fit = status === 'ok' && programmes >= 2 ? lineFit(x, y) : null
-      lines.push({ x_per_K: column(x, '1/K'), y, slope_K: fit?.slope ?? Number.NaN, intercept: fit?.intercept ?? Number.NaN })
-      if (programmes < 2) continue
-      if (fit === null) columns.setStatus(level, status)
-      else if (fit.status !== 'ok') columns.setStatus(level, 'line-not-determined')
-      else {
-        const perSlope = gasConstant_J_per_mol_K / method.slopeFactor
-        columns.setEnergy(level, fit.slope * perSlope, fit.slopeStandardError * Math.abs(perSlope), fit.r2)
-        columns.setPoints(level, { x_per_K: column(x, '1/K'), residual: residualsOf(x, y, fit), energyPerSlope: perSlope })
-        if (method.interceptIsLnAf) {
-          lnAf[level] = fit.intercept
-          if (programmes >= 3) {
-            lnAfStandardError[level] = fit.interceptStandardError
-            covarianceEaLnAf[level] = perSlope * fit.covariance
-          }
-        }
+      const line = fit?.status === 'ok' ? refined(method, { series, level, x, y, fit }) : null
+      lines.push({
+        x_per_K: column(x, '1/K'),
+        y: line?.y ?? y,
+        slope_K: line?.fit.slope ?? Number.NaN,
+        intercept: line?.fit.intercept ?? Number.NaN,
+      })
+      if (programmes >= 2) {
+        if (line === null) columns.setStatus(level, status === 'ok' ? 'line-not-determined' : status)
+        else setLine(columns, method, level, x, line, programmes >= 3)
       }
       context.progress(level + 1, series.levels.length)
     }
     return columns.result
   }
+}
+
+function refined(method: LineMethod, first: LineAtLevel): RefinedLine | null {
+  if (method.refine !== undefined) return method.refine(first)
+  const energyPerSlope = gasConstant_J_per_mol_K / method.slopeFactor
+  const { y, fit } = first
+  return { Ea: fit.slope * energyPerSlope, y, fit, energyPerSlope, lnA: Number.NaN, integral: method.integral }
+}
+
+function setLine(columns: ResultColumns, method: LineMethod, level: number, x: Float64Array, line: RefinedLine, withErrors: boolean): void {
+  const { Ea, y, fit, energyPerSlope, lnA, integral } = line
+  const { result } = columns
+  columns.setEnergy(level, Ea, fit.slopeStandardError * Math.abs(energyPerSlope), fit.r2)
+  columns.setPoints(level, { x_per_K: column(x, '1/K'), residual: residualsOf(x, y, fit), energyPerSlope })
+  result.systematicError[level] = integral === null ? 0 : systematicErrorOf(Ea, 1 / fit.xMean, integral)
+  result.lnA[level] = lnA
+  if (!method.interceptIsLnAf) return
+  result.lnAf[level] = fit.intercept
+  if (!withErrors) return
+  result.lnAfStandardError[level] = fit.interceptStandardError
+  result.covarianceEaLnAf[level] = energyPerSlope * fit.covariance
 }
 
 /** One point a run, in the order of the runs; NaN for a run that has none. */

@@ -38,4 +38,5 @@ export const ozawaFlynnWall = lineMethod({
   withoutOrdinate: 'line-not-determined',
   slopeFactor: -doyleSlope,
   interceptIsLnAf: false,
+  integral: { temperatureExponent: 0, divisor: doyleSlope },
 })

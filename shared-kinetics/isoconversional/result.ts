@@ -3,7 +3,20 @@ import type { Column } from '../units/quantity.ts'
 import type { SourceKey } from '../sources.ts'
 
 /** Ids of the methods this version can run, in the order in which they are listed everywhere. */
-export const methodIds = ['friedman', 'ofw', 'kas', 'starink', 'vyazovkin', 'isothermal-integral'] as const
+export const methodIds = [
+  'friedman',
+  'ofw',
+  'ofw-corrected',
+  'kas',
+  'starink',
+  'vyazovkin',
+  'vyazovkin-incremental',
+  'isothermal-integral',
+  'starink-1996',
+  'tang',
+  'astm-e1641',
+  'iso-11358-2',
+] as const
 export type MethodId = (typeof methodIds)[number]
 
 /** Why a level has a number, or why it has none. */

@@ -36,4 +36,5 @@ export const starink = lineMethod({
   withoutOrdinate: 'line-not-determined',
   slopeFactor: -divisor,
   interceptIsLnAf: false,
+  integral: { temperatureExponent, divisor },
 })

@@ -26,13 +26,19 @@ export interface TimeIntegral {
 const straightWithin = 0.01
 
 /**
- * The integral that belongs to a run's programme: closed form for a constant heating rate, else over the measured history, which also serves a ramp that was measured
- * and wanders by more than 1 %: one fitted rate for all of it would carry a share of that into Ea, larger by 1/ln(fastest/slowest rate).
+ * Whether a run is taken as one straight ramp: heated at a constant rate, and either wandering by at most 1 % or not measured. A ramp that wanders more is taken as
+ * it was measured: one fitted rate for all of it would carry a share of that into Ea, larger by 1/ln(fastest/slowest rate).
+ */
+export const followsRamp = ({ programme, heatingRateSpread }: RunAtLevels): boolean =>
+  programme.kind === 'constant-heating-rate' && !(heatingRateSpread > straightWithin)
+
+/**
+ * The integral that belongs to a run's programme: closed form for a straight ramp (`followsRamp`), else over the measured history.
  *
  * @param largestEa - in J/mol
  */
 export function timeIntegral(run: RunAtLevels, largestEa: number): TimeIntegral {
-  return run.programme.kind === 'constant-heating-rate' && !(run.heatingRateSpread > straightWithin)
+  return run.programme.kind === 'constant-heating-rate' && followsRamp(run)
     ? constantRateIntegral(run.programme.heatingRate, run.temperature_K)
     : historyIntegral(run.history, run.time_s, largestEa)
 }

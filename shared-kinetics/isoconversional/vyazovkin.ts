@@ -1,10 +1,6 @@
-import { column } from '../units/quantity.ts'
-import { energyGrid, largestEa } from './energy-grid.ts'
-import { phiAround, phiOverRange } from './phi-curve.ts'
-import { findPhiMinimum } from './phi-minimum.ts'
-import { resultColumns } from './result-columns.ts'
-import type { IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
-import { checkSeries, countProgrammes } from './series-check.ts'
+import { largestEa } from './energy-grid.ts'
+import { minimisingMethod } from './minimising-method.ts'
+import type { MethodInfo } from './result.ts'
 import { timeIntegral } from './time-integral.ts'
 
 export const vyazovkinInfo: MethodInfo = {
@@ -40,39 +36,4 @@ export const vyazovkinInfo: MethodInfo = {
  * @source vyazovkin-dollimore-1996
  * @source vyazovkin-1997
  */
-export const vyazovkin: IsoconversionalMethod = (series, context) => {
-  checkSeries(vyazovkinInfo, series)
-  const levels = series.levels.length
-  const curves: LevelPhi[] = []
-  const columns = resultColumns(vyazovkinInfo, series, [], curves)
-  const integrals = series.runs.map((run) => timeIntegral(run, largestEa))
-  const enough = countProgrammes(series) >= 2
-  const grid = enough ? energyGrid(integrals, levels, context) : null
-  for (let level = 0; level < levels; level++) {
-    context.checkCancelled()
-    if (grid === null) curves.push(noCurve)
-    else if (!integrals.every((integral) => integral.reaches(level))) {
-      columns.setStatus(level, 'level-not-reached')
-      curves.push(noCurve)
-    } else {
-      const minimum = findPhiMinimum(integrals, grid, level, columns.t)
-      if (typeof minimum === 'string') {
-        columns.setStatus(level, minimum)
-        curves.push(phiOverRange(grid, level, integrals.length))
-      } else {
-        columns.setEnergy(level, minimum.Ea, minimum.standardError, minimum.r2)
-        columns.setPoints(level, minimum.points)
-        curves.push(phiAround(grid, level, integrals.length, minimum, columns.t * minimum.standardError))
-      }
-    }
-    context.progress(level + 1, levels)
-  }
-  return columns.result
-}
-
-const noCurve: LevelPhi = {
-  Ea_J_per_mol: column(new Float64Array(0), 'J/mol'),
-  phi: new Float64Array(0),
-  phiMinimum: Number.NaN,
-  phiThreshold: Number.NaN,
-}
+export const vyazovkin = minimisingMethod(vyazovkinInfo, (series) => series.runs.map((run) => timeIntegral(run, largestEa)))
