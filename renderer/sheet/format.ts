@@ -86,10 +86,16 @@ export const signalWords: Readonly<Record<SignalQuantity, string>> = {
 export const shortMethodNames: Readonly<Record<MethodId, string>> = {
   friedman: 'Friedman',
   ofw: 'OFW',
+  'ofw-corrected': 'OFW corrected',
   kas: 'KAS',
   starink: 'Starink',
   vyazovkin: 'Vyazovkin',
+  'vyazovkin-incremental': 'Incremental',
   'isothermal-integral': 'Isothermal integral',
+  'starink-1996': 'Starink 1996',
+  tang: 'Tang',
+  'astm-e1641': 'ASTM E1641',
+  'iso-11358-2': 'ISO 11358-2',
 }
 
 /** The short name and, where it is short for something, the whole one: what a button is called. */

@@ -1,16 +1,18 @@
 import { useMemo } from 'react'
+import { methodsOnRequest } from '../../../shared-kinetics/contract/methods-on-request.ts'
 import { runNames, runTones } from '../../../shared-kinetics/figure/run-place.ts'
 import { phiFigure } from '../../../shared-kinetics/figure/phi-figure.ts'
 import { straightLinesAtLevel, straightLinesFigure } from '../../../shared-kinetics/figure/straight-lines-figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
 import { RunMarker } from '../../charts/RunMarker.tsx'
 import { formatAtLevel, levelQuantity, type LevelQuantity } from '../../sheet/at-level.ts'
-import { Choice } from '../../sheet/Choice.tsx'
+import { Choice, Choices } from '../../sheet/Choice.tsx'
 import { count, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
 import { readingOf } from './method-words.tsx'
+import { methodsWith } from './methods-with.ts'
 
 /** The left half: the straight lines of the chosen method, or Phi(Ea) at the level for a minimising one. */
 export function LevelEvidence(props: ActivationProps) {
@@ -35,11 +37,26 @@ export function LevelEvidence(props: ActivationProps) {
           value={chosen}
           onChange={(chosenMethod) => view.setState({ chosenMethod })}
         />
+        <MethodsOnRequest {...props} />
       </div>
       {minimising ? <Phi {...props} /> : <Lines {...props} />}
       <RunLegend {...props} />
       {profile !== undefined && profile.sources.length > 0 && <p className="source">{profile.sources.join('; ')}</p>}
     </Half>
+  )
+}
+
+/** Other forms and standards that a report may have to follow: worked out once they are asked for. */
+function MethodsOnRequest({ result, actions }: ActivationProps) {
+  if (result.runs.some((run) => run.programme !== 'constant-heating-rate')) return null
+  const worked = result.profiles.map((one) => one.method)
+  return (
+    <Choices
+      label="On request"
+      options={methodsOnRequest.map((id) => ({ id, text: shortMethodNames[id] }))}
+      values={methodsOnRequest.filter((id) => worked.includes(id))}
+      onChange={(ids) => actions.change({ kind: 'set-methods', methods: methodsWith(worked, ids) })}
+    />
   )
 }
 

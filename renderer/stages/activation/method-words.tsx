@@ -5,10 +5,16 @@ import type { MethodId } from '../../../shared-kinetics/contract/study-result.ts
 const readings: Readonly<Record<MethodId, string>> = {
   friedman: 'ln(dα/dt) against 1000/T; the slope is −Ea/R',
   ofw: 'ln β against 1000/T; the slope is −1.052 Ea/R',
+  'ofw-corrected': 'ln β − δ against 1000/T; the slope is −1.052 Ea/R, δ what Doyle’s line leaves out of ln p(Ea/RT)',
   kas: 'ln(β/T²) against 1000/T; the slope is −Ea/R',
   starink: 'ln(β/T^1.92) against 1000/T; the slope is −1.0008 Ea/R',
   vyazovkin: 'the minimum of Φ over Ea, with exp(−Ea/RT) integrated over the measured T(t)',
+  'vyazovkin-incremental': 'the minimum of Φ over Ea, with exp(−Ea/RT) integrated over T(t) from the level before to this one',
   'isothermal-integral': 'ln t against 1000/T; the slope is Ea/R',
+  'starink-1996': 'ln(β/T^1.8) against 1000/T; the slope is −1.0037 Ea/R',
+  tang: 'ln(β/T^1.894661) against 1000/T; the slope is −1.00145 Ea/R',
+  'astm-e1641': 'log β against 1000/T; the slope is −b Ea/R, b refined by Doyle’s table',
+  'iso-11358-2': 'log β against 1000/T; the slope is −0.4567 Ea/R',
 }
 
 export const readingOf = (method: MethodId): ReactNode => raised(readings[method])
