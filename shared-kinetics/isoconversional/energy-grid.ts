@@ -20,9 +20,9 @@ export interface EnergyGrid {
   readonly read: (g: number, level: number, lnJ: Float64Array, inverseT: Float64Array) => void
   /**
    * ln J at any Ea of the range by the cubic through values and slopes of the two grid points around it: within about 3e-6 for a ramp, where most of that is the same
-   * for all runs and cancels in Phi. For drawing, never for a result.
+   * for all runs and cancels in Phi, and the effective 1/T that is the cubic's slope. For drawing and to start a search from, never for a result.
    */
-  readonly between: (Ea: number, level: number, lnJ: Float64Array) => void
+  readonly between: (Ea: number, level: number, lnJ: Float64Array, inverseT?: Float64Array) => void
 }
 
 /** One pass over each run for each grid point serves all levels. */
@@ -45,7 +45,7 @@ export function energyGrid(integrals: readonly TimeIntegral[], levels: number, c
         inverseT[i] = row.inverseT[g * levels + level] as number
       }
     },
-    between(Ea, level, lnJ) {
+    between(Ea, level, lnJ, inverseT) {
       const place = (steps * Math.log(Ea / smallestEa)) / Math.log(largestEa / smallestEa)
       const g = Math.min(steps - 1, Math.max(0, Math.floor(place)))
       const lower = energies[g] as number
@@ -59,7 +59,10 @@ export function energyGrid(integrals: readonly TimeIntegral[], levels: number, c
         const rise = (row.lnJ[b] as number) - y0
         const m0 = (-width * (row.inverseT[a] as number)) / gasConstant_J_per_mol_K
         const m1 = (-width * (row.inverseT[b] as number)) / gasConstant_J_per_mol_K
-        lnJ[i] = y0 + s * (m0 + s * (3 * rise - 2 * m0 - m1 + s * (m0 + m1 - 2 * rise)))
+        const c2 = 3 * rise - 2 * m0 - m1
+        const c3 = m0 + m1 - 2 * rise
+        lnJ[i] = y0 + s * (m0 + s * (c2 + s * c3))
+        if (inverseT !== undefined) inverseT[i] = (-gasConstant_J_per_mol_K * (m0 + s * (2 * c2 + 3 * s * c3))) / width
       }
     },
   }

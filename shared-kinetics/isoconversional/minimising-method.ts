@@ -1,17 +1,20 @@
+import { fQuantile } from '../numerics/f-distribution.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
+import { vyazovkinWight } from '../uncertainty/vyazovkin-wight.ts'
 import { column } from '../units/quantity.ts'
-import { energyGrid } from './energy-grid.ts'
+import { energyGrid, type EnergyGrid } from './energy-grid.ts'
 import { phiAround, phiOverRange } from './phi-curve.ts'
 import { findPhiMinimum } from './phi-minimum.ts'
 import { resultColumns } from './result-columns.ts'
-import type { IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
+import type { EnergyInterval, IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
 import { checkSeries, countProgrammes } from './series-check.ts'
 import type { TimeIntegral } from './time-integral.ts'
 
 /**
  * Makes a method that takes, at each level, the Ea at the minimum of Phi over the runs' integrals of exp(-Ea/(R T)) dt, which is what tells one such method from
  * another. Every used run must have its integral at the level (`level-not-reached`), and at least two programmes must be distinct (`too-few-programmes`). The
- * integrals are not approximated, so that the systematic error is 0.
+ * integrals are not approximated, so that the systematic error is 0. Besides the interval of the linearised regression it gives, with three or more distinct programmes,
+ * that of Vyazovkin and Wight.
  *
  * @param integralsOf - one integral a run, in the order of the runs
  */
@@ -25,7 +28,9 @@ export function minimisingMethod(
     const curves: LevelPhi[] = []
     const columns = resultColumns(info, series, [], curves)
     const integrals = integralsOf(series)
-    const enough = countProgrammes(series) >= 2
+    const programmes = countProgrammes(series)
+    const enough = programmes >= 2
+    const varianceRatio = programmes >= 3 ? varianceRatioIntervals(series.runs.length, levels) : null
     const grid = enough ? energyGrid(integrals, levels, context) : null
     for (let level = 0; level < levels; level++) {
       context.checkCancelled()
@@ -42,12 +47,43 @@ export function minimisingMethod(
           columns.setEnergy(level, minimum.Ea, minimum.standardError, minimum.r2)
           columns.setPoints(level, minimum.points)
           columns.result.systematicError[level] = 0
+          varianceRatio?.set(level, minimum.Ea, integrals, grid)
           curves.push(phiAround(grid, level, integrals.length, minimum, columns.t * minimum.standardError))
         }
       }
       context.progress(level + 1, levels)
     }
-    return columns.result
+    return varianceRatio === null ? columns.result : { ...columns.result, otherIntervals: [varianceRatio.interval] }
+  }
+}
+
+/** The interval of Vyazovkin and Wight, level by level. */
+function varianceRatioIntervals(
+  runs: number,
+  levels: number,
+): {
+  readonly interval: EnergyInterval
+  readonly set: (level: number, Ea: number, integrals: readonly TimeIntegral[], grid: EnergyGrid) => void
+} {
+  const lower95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
+  const upper95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
+  const quantile = fQuantile(0.95, runs - 1, runs - 1)
+  return {
+    interval: { kind: 'vyazovkin-wight-f', lower95, upper95 },
+    set(level, Ea, integrals, grid) {
+      const read = (energy: number, lnJ: Float64Array, inverseT: Float64Array): void => {
+        integrals.forEach((integral, i) => {
+          const value = integral.atLevel(energy, level)
+          lnJ[i] = value.lnJ
+          inverseT[i] = value.inverseT
+        })
+      }
+      const ends = vyazovkinWight(runs, Ea, quantile, read, (energy, lnJ, inverseT) => {
+        grid.between(energy, level, lnJ, inverseT)
+      })
+      lower95[level] = ends.lower95
+      upper95[level] = ends.upper95
+    },
   }
 }
 

@@ -40,6 +40,8 @@ export function guardedNewton(
     const bracketed = !Number.isNaN(negative) && !Number.isNaN(positive)
     const step = -value / slope
     let next = x + step
+    if (Math.abs(step) <= relativeTolerance * Math.abs(x))
+      return { status: 'converged', x: Math.min(upper, Math.max(lower, next)), evaluations }
     if (bracketed) {
       const inside = next > Math.min(negative, positive) && next < Math.max(negative, positive)
       if (!inside || Math.abs(step) > 0.5 * stepBefore) next = 0.5 * (negative + positive)

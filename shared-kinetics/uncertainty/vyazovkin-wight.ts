@@ -17,8 +17,12 @@ export interface VarianceRatioInterval {
   readonly upper95: number
 }
 
-/** Digits beyond these say nothing about an interval. */
-const relativeTolerance = 1e-10
+/** Writes ln J and the effective 1/T (u, in 1/K) of every run at an Ea in J/mol. */
+export type LogIntegralReader = (Ea: number, lnJ: Float64Array, inverseT: Float64Array) => void
+
+/** A step of Newton's method that is smaller than this leaves an error of its square. */
+const lastStepAtMinimum = 1e-9
+const lastStepAtEnd = 1e-5
 
 /**
  * The interval of Vyazovkin and Wight for the Ea of a minimising method at one level: with the time integrals J (under constant heating rates beta, J_i/J_j is
@@ -32,67 +36,79 @@ const relativeTolerance = 1e-10
  * Approximate: the terms of S² are not independent, and Psi at the true Ea does not follow F(n - 1, n - 1). For independent errors of ln J it holds the true value in
  * about 86 % of cases for n = 3, 94 % for 4, 97 % for 5 and 98 % for 6 (simulation). Of error-free data the interval is Ea itself within rounding.
  *
- * @param read - writes ln J and the effective 1/T (u, in 1/K) of every run at an Ea in J/mol
  * @param n - runs
  * @param Ea - minimum of Phi, in J/mol
  * @param fQuantile - F(0.95; n - 1, n - 1)
+ * @param read - exact values
+ * @param nearly - values good enough to start from, where exact ones are dear; the result rests on exact ones all the same
  * @source vyazovkin-wight-2000
  */
 export function vyazovkinWight(
-  read: (Ea: number, lnJ: Float64Array, inverseT: Float64Array) => void,
   n: number,
   Ea: number,
   fQuantile: number,
+  read: LogIntegralReader,
+  nearly: LogIntegralReader = read,
 ): VarianceRatioInterval {
   const lnJ = new Float64Array(n)
   const inverseT = new Float64Array(n)
-  let curvature = Number.NaN
-  const at = (energy: number): Variance => {
-    read(energy, lnJ, inverseT)
-    return varianceOf(lnJ, inverseT)
-  }
-  const range = { lower: smallestEa, upper: largestEa, relativeTolerance }
+  const range = { lower: smallestEa, upper: largestEa }
 
-  const minimum = guardedNewton(
-    (energy) => {
-      const variance = at(energy)
-      curvature = variance.curvature
-      return { value: variance.slope, slope: variance.curvature }
-    },
-    Ea,
-    range,
-  )
-  const minimumEa = minimum.x
-  const { value: minimumVariance } = minimum.status === 'converged' ? at(minimumEa) : { value: Number.NaN }
+  /** The minimum next to a start. */
+  const leastVariance = (
+    from: LogIntegralReader,
+    start: number,
+  ): { readonly Ea: number; readonly value: number; readonly curvature: number } => {
+    let last: Variance = { value: Number.NaN, slope: Number.NaN, curvature: Number.NaN }
+    const { x } = guardedNewton(
+      (energy) => {
+        from(energy, lnJ, inverseT)
+        last = varianceOf(lnJ, inverseT)
+        return { value: last.slope, slope: last.curvature }
+      },
+      start,
+      { ...range, relativeTolerance: lastStepAtMinimum },
+    )
+    // S² at the root, from where the last step set out.
+    const value = Math.max(0, last.value - (0.5 * last.slope ** 2) / last.curvature)
+    return { Ea: x, value: Number.isNaN(x) ? x : value, curvature: last.curvature }
+  }
+  /** The end next to a start. */
+  const end = (from: LogIntegralReader, minimum: { readonly Ea: number; readonly value: number }, side: -1 | 1, start: number): number =>
+    guardedNewton(
+      (energy) => {
+        from(energy, lnJ, inverseT)
+        const variance = varianceOf(lnJ, inverseT)
+        const distance = Math.sqrt(Math.max(0, variance.value / minimum.value - 1))
+        return { value: distance - Math.sqrt(fQuantile - 1), slope: variance.slope / (2 * minimum.value * distance) }
+      },
+      start,
+      { ...range, ...(side < 0 ? { upper: minimum.Ea } : { lower: minimum.Ea }), relativeTolerance: lastStepAtEnd },
+    ).x
+
+  const about = leastVariance(nearly, Ea)
+  const minimum = leastVariance(read, Number.isNaN(about.Ea) ? Ea : about.Ea)
   // S² ≈ S²min + curvature (Ea - Ea_min)²/2 near its minimum.
-  const reach = Math.sqrt((2 * (fQuantile - 1) * minimumVariance) / curvature)
+  const reach = Math.sqrt((2 * (fQuantile - 1) * minimum.value) / minimum.curvature)
   if (!Number.isFinite(reach)) {
     return { status: 'no-minimum', minimumEa: Number.NaN, minimumVariance: Number.NaN, lower95: Number.NaN, upper95: Number.NaN }
   }
+  const found = { minimumEa: minimum.Ea, minimumVariance: minimum.value }
   // Where S²min is but rounding, so is what is near it; the parabola then is all there is.
-  if (reach <= roundingShare * minimumEa) {
-    return { status: 'ok', minimumEa, minimumVariance, lower95: minimumEa - reach, upper95: minimumEa + reach }
-  }
+  if (reach <= roundingShare * minimum.Ea) return { status: 'ok', ...found, lower95: minimum.Ea - reach, upper95: minimum.Ea + reach }
 
-  const target = Math.sqrt(fQuantile - 1)
-  const end = (start: number, side: -1 | 1): number =>
-    guardedNewton(
-      (energy) => {
-        const variance = at(energy)
-        const distance = Math.sqrt(Math.max(0, variance.value / minimumVariance - 1))
-        return { value: distance - target, slope: variance.slope / (2 * minimumVariance * distance) }
-      },
-      start,
-      { ...range, ...(side < 0 ? { upper: minimumEa } : { lower: minimumEa }) },
-    ).x
-  const lower95 = end(minimumEa - reach, -1)
-  const upper95 = end(minimumEa + reach, 1)
-  const status = Number.isNaN(lower95) || Number.isNaN(upper95) ? 'end-outside' : 'ok'
-  return { status, minimumEa, minimumVariance, lower95, upper95 }
+  const exactEnd = (side: -1 | 1): number => {
+    const parabola = minimum.Ea + side * reach
+    const start = end(nearly, minimum, side, parabola)
+    return end(read, minimum, side, Number.isNaN(start) ? parabola : start)
+  }
+  const lower95 = exactEnd(-1)
+  const upper95 = exactEnd(1)
+  return { status: Number.isNaN(lower95) || Number.isNaN(upper95) ? 'end-outside' : 'ok', ...found, lower95, upper95 }
 }
 
 /** ln J carries some 14 digits, Ea therefore some 12. */
-const roundingShare = 1e-10
+const roundingShare = 1e-9
 
 interface Variance {
   readonly value: number

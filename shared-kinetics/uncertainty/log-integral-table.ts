@@ -1,0 +1,47 @@
+import { largestEa, smallestEa } from '../isoconversional/energy-grid.ts'
+import type { TimeIntegral } from '../isoconversional/time-integral.ts'
+import { gasConstant_J_per_mol_K } from '../units/constants.ts'
+
+/** Places are 2 % of Ea apart. */
+const lnStep = Math.log(1.02)
+
+/**
+ * ln J and the effective 1/T of every run at one level for any Ea between 1 and 1000 kJ/mol, by the cubic through exact values and slopes at places 2 % apart, which are worked
+ * out where they are first asked for: within 1e-8 of ln J on a ramp, and 1e-6 of the effective 1/T. A resample then costs no integral.
+ */
+export function logIntegralTable(
+  integrals: readonly TimeIntegral[],
+  level: number,
+): (Ea: number, lnJ: Float64Array, inverseT: Float64Array) => void {
+  const places = new Map<number, { readonly Ea: number; readonly lnJ: Float64Array; readonly inverseT: Float64Array }>()
+  const placeAt = (k: number) => {
+    const known = places.get(k)
+    if (known !== undefined) return known
+    const Ea = smallestEa * Math.exp(k * lnStep)
+    const values = integrals.map((integral) => integral.atLevel(Ea, level))
+    const made = {
+      Ea,
+      lnJ: Float64Array.from(values, (value) => value.lnJ),
+      inverseT: Float64Array.from(values, (value) => value.inverseT),
+    }
+    places.set(k, made)
+    return made
+  }
+  return (Ea, lnJ, inverseT) => {
+    const k = Math.floor(Math.log(Math.min(largestEa, Math.max(smallestEa, Ea)) / smallestEa) / lnStep)
+    const lower = placeAt(k)
+    const upper = placeAt(k + 1)
+    const width = upper.Ea - lower.Ea
+    const s = (Ea - lower.Ea) / width
+    for (let i = 0; i < integrals.length; i++) {
+      const y0 = lower.lnJ[i] as number
+      const rise = (upper.lnJ[i] as number) - y0
+      const m0 = (-width * (lower.inverseT[i] as number)) / gasConstant_J_per_mol_K
+      const m1 = (-width * (upper.inverseT[i] as number)) / gasConstant_J_per_mol_K
+      const c2 = 3 * rise - 2 * m0 - m1
+      const c3 = m0 + m1 - 2 * rise
+      lnJ[i] = y0 + s * (m0 + s * (c2 + s * c3))
+      inverseT[i] = (-gasConstant_J_per_mol_K * (m0 + s * (2 * c2 + 3 * s * c3))) / width
+    }
+  }
+}

@@ -1,0 +1,120 @@
+import { describe, expect, it } from 'vitest'
+import { constantRateSeries, quiet } from '../check-values/series-of-values.ts'
+import { underConstantRate, temperatureAt } from '../check-values/exact-simulation.ts'
+import { friedman } from '../isoconversional/friedman.ts'
+import { starink } from '../isoconversional/starink.ts'
+import { vyazovkin } from '../isoconversional/vyazovkin.ts'
+import type { IsoconversionalMethod } from '../isoconversional/result.ts'
+import { randomStream } from '../numerics/random.ts'
+import { studentTQuantile } from '../numerics/student-t.ts'
+import type { SeriesAtLevels } from '../series/series-at-levels.ts'
+import { meanEnergyStandardError } from './mean-energy.ts'
+
+const steps = [{ Ea_J_per_mol: 150_000, A_per_s: 1e12, share: 1 }]
+const rates = [1, 2, 5, 10, 20]
+const levels = [0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8, 0.9]
+const exact = levels.map((level) => rates.map((rate) => temperatureAt(steps, rate / 60, level)))
+
+/** A series whose temperatures are off by what `error` gives for a level and a run, in K. */
+const disturbed = (error: (level: number, run: number) => number): SeriesAtLevels =>
+  constantRateSeries(
+    levels,
+    rates,
+    exact.map((row, level) => row.map((T, run) => T + error(level, run))),
+  )
+
+const meanOf = (values: ArrayLike<number>): number => Array.from(values).reduce((sum, value) => sum + value / values.length, 0)
+
+/** Share of replicates in which the interval of the mean holds the method's own mean without errors. */
+function coverage(
+  method: IsoconversionalMethod,
+  replicates: number,
+  error: (random: () => number) => (level: number, run: number) => number,
+): number {
+  const truth = meanOf(
+    method(
+      disturbed(() => 0),
+      quiet,
+    ).Ea,
+  )
+  const t = studentTQuantile(0.975, 3)
+  let covered = 0
+  for (let k = 0; k < replicates; k++) {
+    const result = method(disturbed(error(randomStream(5, k).normal)), quiet)
+    if (Math.abs(meanOf(result.Ea) - truth) <= t * meanEnergyStandardError(result.points)) covered++
+  }
+  return covered / replicates
+}
+
+describe('the standard error of a mean of Ea over levels', () => {
+  it('is, of a single level, that of the level', () => {
+    const random = randomStream(1)
+    const series = disturbed(() => 0.4 * random.normal())
+    for (const method of [starink, vyazovkin, friedmanOf]) {
+      const { points, standardError } = method(series, quiet)
+      points.forEach((level, i) => {
+        expect(meanEnergyStandardError([level]) / (standardError[i] as number)).toBeCloseTo(1, 10)
+      })
+    }
+  })
+
+  it('is about that of each level for an error that goes through the whole run: averaging does not help', () => {
+    const offset = [0.5, -0.4, 0.1, -0.3, 0.2]
+    const { points, standardError } = starink(
+      disturbed((_, run) => offset[run] as number),
+      quiet,
+    )
+    expect(Math.abs(meanEnergyStandardError(points) / meanOf(standardError) - 1)).toBeLessThan(0.02)
+  })
+
+  // 2,000 replicates know a share of 0.95 to ±0.01 (two standard errors).
+  const between = (share: number): void => {
+    expect(share).toBeGreaterThan(0.935)
+    expect(share).toBeLessThan(0.965)
+  }
+
+  it('makes an interval of 95 % where each run has an error of its own', () => {
+    const common = (random: () => number) => {
+      const offset = rates.map(() => 0.5 * random())
+      return (_: number, run: number): number => offset[run] as number
+    }
+    between(coverage(starink, 2000, common))
+    const minimised = coverage(vyazovkin, 300, common)
+    expect(minimised).toBeGreaterThan(0.92)
+    expect(minimised).toBeLessThan(0.98)
+  })
+
+  it('makes an interval of 95 % where errors differ from level to level, and where both kinds are present', () => {
+    between(coverage(starink, 2000, (random) => () => 0.5 * random()))
+    between(
+      coverage(starink, 2000, (random) => {
+        const offset = rates.map(() => 0.3 * random())
+        return (_, run) => (offset[run] as number) + 0.5 * random()
+      }),
+    )
+  })
+
+  it('is not to be had from two runs, or from no level', () => {
+    const two = constantRateSeries(
+      levels,
+      rates.slice(0, 2),
+      exact.map((row) => row.slice(0, 2)),
+    )
+    expect(meanEnergyStandardError(starink(two, quiet).points)).toBeNaN()
+    expect(meanEnergyStandardError([])).toBeNaN()
+  })
+})
+
+const friedmanOf: IsoconversionalMethod = (series, context) =>
+  friedman(
+    {
+      ...series,
+      runs: series.runs.map((run, i) => ({
+        ...run,
+        reactionRate_per_s: run.temperature_K.map(
+          (T) => underConstantRate(steps, (rates[i] as number) / 60, T).rate_per_s,
+        ) as typeof run.reactionRate_per_s,
+      })),
+    },
+    context,
+  )
