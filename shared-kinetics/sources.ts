@@ -78,6 +78,8 @@ export const sources = {
   'flynn-1983': 'J. H. Flynn, J. Therm. Anal. 27 (1983) 95 (correction of the Ozawa–Flynn–Wall energy; from memory)',
   'iso-11358-2':
     'ISO 11358-2, Plastics, Thermogravimetry (TG) of polymers, Part 2: Determination of activation energy (scope read; equation from memory)',
+  'jcgm-100-2008': 'JCGM 100:2008, Evaluation of measurement data: guide to the expression of uncertainty in measurement',
+  'jcgm-101-2008': 'JCGM 101:2008, Supplement 1 to the guide: propagation of distributions using a Monte Carlo method',
 } as const
 
 export type SourceKey = keyof typeof sources

@@ -1,4 +1,5 @@
 import type { IntervalKind, LevelStatus, MethodId } from '../isoconversional/result.ts'
+import type { PeakMethodId } from '../peak-methods/peak-method-info.ts'
 import type { Finding } from '../review/finding.ts'
 import type { Window } from '../series/run.ts'
 import type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
@@ -92,7 +93,15 @@ export interface LackOfFitResult {
 }
 
 /** Sources of uncertainty that a measured temperature, heating rate and signal bring. */
-export type UncertaintySource = 'temperature-common' | 'temperature-run' | 'temperature-lag' | 'heating-rate' | 'signal-noise' | 'baseline'
+export const uncertaintySources = [
+  'temperature-common',
+  'temperature-run',
+  'temperature-lag',
+  'heating-rate',
+  'signal-noise',
+  'baseline',
+] as const
+export type UncertaintySource = (typeof uncertaintySources)[number]
 
 export interface BudgetEntry {
   readonly source: UncertaintySource
@@ -180,6 +189,57 @@ export interface KissingerResult {
   readonly sources: readonly string[]
 }
 
+/** A number that belongs to one method: a reaction order, a temperature. */
+export interface PeakMethodNumber {
+  readonly key: PeakMethodNumberKey
+  readonly label: string
+  readonly value: Maybe
+  readonly standardError: Maybe
+  /** Temperatures are in K here, and turned where they are shown. */
+  readonly unit: 'K' | 'kJ/mol' | '1'
+}
+
+export type PeakMethodNumberKey =
+  | 'conversion-at-peak-lowest'
+  | 'conversion-at-peak-highest'
+  | 'conversion-at-peak-first-order'
+  | 'first-estimate'
+  | 'D'
+  | 'confirmation-temperature'
+  | 'order'
+  | 'avrami-exponent-lowest'
+  | 'avrami-exponent'
+  | 'avrami-exponent-highest'
+
+/** Ea and A from rate peaks, or from one run alone. Where `applies` is false every number is null and `reason` says why. */
+export interface PeakMethodResult {
+  readonly method: PeakMethodId
+  readonly label: string
+  readonly sources: readonly string[]
+  /** The run that a single-run method was used on; null for a method that compares the peaks of all runs. */
+  readonly runId: string | null
+  readonly runLabel: string | null
+  readonly applies: boolean
+  /** Why not, in a sentence; null where it applies. */
+  readonly reason: string | null
+  readonly Ea_kJ_per_mol: Maybe
+  readonly standardError_kJ_per_mol: Maybe
+  /** Student-t, 95 %, with `dof` degrees of freedom; null, and `dof` 0, with fewer than three distinct programmes. */
+  readonly lower95_kJ_per_mol: Maybe
+  readonly upper95_kJ_per_mol: Maybe
+  readonly dof: number
+  /** Where the method gives an A; by the model it assumes, first order unless `remarks` say otherwise. */
+  readonly lnA_per_s: Maybe
+  readonly lnAStandardError: Maybe
+  readonly covarianceEaLnA_kJ_per_mol: Maybe
+  readonly r2: Maybe
+  readonly numbers: readonly PeakMethodNumber[]
+  /** What to know before relying on it, in sentences: scope, assumptions, how to confirm it. */
+  readonly remarks: readonly string[]
+  /** The line through the peaks, points in the order of `StudyResult.runs`, heating rates in K/s, with the name of its ordinate; null for single-run methods. */
+  readonly line: (LineResult & { readonly ordinate: string }) | null
+}
+
 /** Everything that follows from a study's runs and settings. Derived, never edited. */
 export interface StudyResult {
   readonly levels: readonly number[]
@@ -191,5 +251,7 @@ export interface StudyResult {
   readonly runs: readonly RunResult[]
   readonly profiles: readonly ProfileResult[]
   readonly kissinger: KissingerResult | null
+  /** In the order of `peakMethodIds`, Kissinger among them; a single-run method once for every run. Empty without runs. */
+  readonly peakMethods: readonly PeakMethodResult[]
   readonly findings: readonly Finding[]
 }

@@ -1,0 +1,41 @@
+import type { Column } from '../units/quantity.ts'
+
+/** What a person states about how well temperatures and heating rates were measured: standard uncertainties. */
+export interface StatedUncertainties {
+  /** Of every temperature of the series alike: what a calibration leaves. */
+  readonly temperatureCommon_K: number
+  /** Of all temperatures of one run, independent of the other runs: how well two runs of one sample repeat. */
+  readonly temperatureRun_K: number
+  /** Of the time by which the sample lags behind the thermometer: the error of the temperature is this times the heating rate. */
+  readonly lag_s: number
+  /** Of a heating rate that was stated and not measured, as a share. A measured one has its own. */
+  readonly statedHeatingRate_share: number
+}
+
+/**
+ * Where nobody stated anything: 0.5 K between runs; 0.5 K common to all and a lag of 1 s, which are common practice for a calibrated instrument and small samples and
+ * stand in no standard; 2 % for a nominal heating rate, likewise. To be replaced by what the analyst's own calibration shows.
+ */
+export const defaultUncertainties: StatedUncertainties = {
+  temperatureCommon_K: 0.5,
+  temperatureRun_K: 0.5,
+  lag_s: 1,
+  statedHeatingRate_share: 0.02,
+}
+
+/** Everything that a series' measured inputs are uncertain by: plain data that crosses to a worker. Tables hold one entry a run at each level: [level · runs + run]. */
+export interface MeasuredSources {
+  readonly stated: StatedUncertainties
+  /** Relative standard uncertainty of each run's heating rate. */
+  readonly heatingRate_share: Float64Array
+  /** Standard errors from the noise of the signal; the correlation is that with the level before. */
+  readonly noise: {
+    readonly time_s: Column<'s'>
+    /** Of ln(dα/dt) at a given time, and what an error of the time adds to it. */
+    readonly lnReactionRate: Float64Array
+    readonly lnReactionRateSlope_per_s: Float64Array
+    readonly correlationWithBefore: Float64Array
+  }
+  /** By how much another admissible baseline moves each point; null where there is no choice of one. */
+  readonly baseline: { readonly time_s: Column<'s'>; readonly lnReactionRate: Float64Array } | null
+}
