@@ -103,7 +103,8 @@ function drawnLine(line: LineResult, shift: number): { readonly x: readonly numb
   return { x: ends.map((x) => x * 1000), y: ends.map((x) => intercept + slope_K * x + shift) }
 }
 
-function inverseTemperatureAxis(x: readonly number[]): Axis {
+/** The axis of 1000/T around values of it, with round °C along the opposite edge. */
+export function inverseTemperatureAxis(x: readonly number[]): Axis {
   const [low, high] = extentOf(x)
   const { min, max } = niceAxis(low, high)
   return { label: '1000/T', unit: '1/K', min, max, second: { label: 'Temperature', unit: '°C', ticks: celsiusTicks(min, max) } }

@@ -36,6 +36,12 @@ export const findingCodes = [
   'heading-missing',
   'time-missing',
   'file-left-out',
+  'few-temperatures',
+  'prediction-extrapolated',
+  'lines-not-straight',
+  'energy-implausible',
+  'rate-unit-missing',
+  'heading-read-as',
 ] as const
 export type FindingCode = (typeof findingCodes)[number]
 

@@ -1,4 +1,5 @@
+import { evaluateRateConstants } from './evaluate-rate-constants.ts'
 import { evaluateStudy } from './evaluate-study.ts'
 
 /** Everything in shared-kinetics that is worth a worker, by the name it is asked for. */
-export const taskMap = { 'evaluate-study': evaluateStudy } as const
+export const taskMap = { 'evaluate-study': evaluateStudy, 'evaluate-rate-constants': evaluateRateConstants } as const

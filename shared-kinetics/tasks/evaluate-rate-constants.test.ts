@@ -1,0 +1,170 @@
+import { describe, expect, it } from 'vitest'
+import tables from '../check-values/published/arrhenius-tables.json' with { type: 'json' }
+import computed from '../check-values/computed/rate-constant-lines.json' with { type: 'json' }
+import { arrheniusAtRow, arrheniusFigure } from '../figure/arrhenius-figure.ts'
+import type { RateConstantTable } from '../rate-constants/rate-constant-table.ts'
+import { evaluateRateConstants } from './evaluate-rate-constants.ts'
+
+function tableOf(id: string, change: Partial<RateConstantTable> = {}): RateConstantTable {
+  const found = tables.lines.find((line) => line.id === id)
+  if (found === undefined) throw new Error(`no table ${id}`)
+  const { temperature_K = [] } = found as { readonly temperature_K?: readonly number[] }
+  return {
+    rows: temperature_K.map((T, i) => ({
+      temperature_K: T,
+      rateConstant: found.k[i] ?? Number.NaN,
+      standardUncertainty: null,
+      label: null,
+      use: true,
+    })),
+    rateUnit: found.unit,
+    temperatureUnitShown: 'K',
+    predictAt_K: [],
+    source: { kind: 'typed', name: null, sha256: null },
+    notes: [],
+    ...change,
+  }
+}
+const codes = (table: RateConstantTable): string[] =>
+  evaluateRateConstants(table).findings.map((finding) => `${finding.severity} ${finding.code}`)
+
+describe('a table of rate constants, evaluated', () => {
+  it('gives line, predictions and factors in the units of the wire', () => {
+    const result = evaluateRateConstants(tableOf('W8', { predictAt_K: [288.15, 400] }))
+    // Daniels & Johnston's N2O5 (recomputed 102.8979 kJ/mol, A 3.8163e13 1/s).
+    expect(result.line.Ea_kJ_per_mol).toBeCloseTo(102.8979, 4)
+    expect((result.line.A ?? 0) / 3.8163e13).toBeCloseTo(1, 4)
+    expect(result.line.lnA_per_s).toBe(result.line.lnA)
+    expect(result.line.interval).toEqual({ kind: 'student-t', level: 0.95, dof: 4 })
+    const [cold, hot] = computed.bands.rows
+    expect((result.predictions[0]?.rateConstant ?? 0) / Number(cold?.k)).toBeCloseTo(1, 10)
+    expect((result.predictions[1]?.newUpper95 ?? 0) / Number(hot?.newUpper95)).toBeCloseTo(1, 10)
+    expect(result.predictions.map((at) => at.extrapolation.side)).toEqual(['inside', 'above'])
+    expect(result.eyring?.enthalpy_kJ_per_mol.value).toBeCloseTo(Number(computed.eyring.enthalpy_J_per_mol) / 1000, 8)
+    expect(result.eyring?.entropy_J_per_mol_K.value).toBeCloseTo(Number(computed.eyring.entropy_J_per_mol_K), 8)
+    expect(result.factorsPer10K.map((factor) => factor.from_K > 273)).toEqual([true, true])
+    expect(result.curvature?.t).toBeCloseTo(Number(computed.quadratic.find((row) => row.table === 'W8')?.t), 8)
+    expect(result.findings.map((finding) => finding.code)).toEqual(['prediction-extrapolated'])
+  })
+
+  it('carries the unit of k: per minute, only ln A and k change', () => {
+    const perSecond = evaluateRateConstants(tableOf('W8'))
+    const W8 = tableOf('W8')
+    const perMinute = evaluateRateConstants({
+      ...W8,
+      rateUnit: 'min-1',
+      rows: W8.rows.map((row) => ({ ...row, rateConstant: row.rateConstant * 60 })),
+    })
+    expect(perMinute.rateUnit).toBe('1/min')
+    expect(perMinute.line.Ea_kJ_per_mol).toBeCloseTo(perSecond.line.Ea_kJ_per_mol ?? 0, 9)
+    expect((perMinute.line.lnA ?? 0) - (perSecond.line.lnA ?? 0)).toBeCloseTo(Math.log(60), 9)
+    expect(perMinute.line.lnA_per_s).toBeCloseTo(perSecond.line.lnA ?? 0, 9)
+    expect(perMinute.eyring?.entropy_J_per_mol_K.value).toBeCloseTo(perSecond.eyring?.entropy_J_per_mol_K.value ?? 0, 8)
+  })
+
+  it('says the standard state of an entropy that needs one', () => {
+    const result = evaluateRateConstants(tableOf('W1', { rateUnit: 'L/(mol min)' }))
+    expect(result.eyring?.standardStateOf).toBe('L/(mol s)')
+    expect(result.line.lnA_per_s).toBeNull()
+    expect(evaluateRateConstants(tableOf('W8')).eyring?.standardStateOf).toBeNull()
+  })
+
+  it('a row not used enters nothing and keeps its residual', () => {
+    const W8 = tableOf('W8')
+    const slip = { ...W8, rows: W8.rows.map((row, i) => (i === 2 ? { ...row, rateConstant: row.rateConstant * 10, use: false } : row)) }
+    const result = evaluateRateConstants(slip)
+    expect(result.line.points).toBe(5)
+    expect(result.rows[2]?.residual).toBeCloseTo(Math.log(10), 1)
+  })
+
+  it('weighs where every row used has an uncertainty, and says so', () => {
+    const W1 = tableOf('W1')
+    const rows = W1.rows.map((row, i) => ({
+      ...row,
+      standardUncertainty: row.rateConstant * Number(computed.weighted.relativeUncertainty[i]),
+    }))
+    const result = evaluateRateConstants({ ...W1, rows })
+    expect(result.weightedLine?.weighting).toBe('stated-uncertainties')
+    expect((result.weightedLine?.Ea_kJ_per_mol ?? 0) * 1000).toBeCloseTo(Number(computed.weighted.Ea_J_per_mol), 4)
+    expect(result.line.Ea_kJ_per_mol).toBeCloseTo(185.3079, 4)
+    expect(evaluateRateConstants(W1).weightedLine).toBeNull()
+  })
+})
+
+describe('what is noticed about a table', () => {
+  it('too few temperatures, by how many there are', () => {
+    const W8 = tableOf('W8')
+    expect(codes({ ...W8, rows: [] })).toEqual(['stop few-temperatures'])
+    expect(codes({ ...W8, rows: W8.rows.slice(0, 1) })).toEqual(['stop few-temperatures'])
+    expect(codes({ ...W8, rows: W8.rows.slice(0, 2) })).toEqual(['caution few-temperatures'])
+    const one = evaluateRateConstants({ ...W8, rows: W8.rows.slice(0, 1), predictAt_K: [300] })
+    expect([one.line.Ea_kJ_per_mol, one.line.lnA, one.eyring, one.predictions[0]?.rateConstant]).toEqual([null, null, null, null])
+    expect(arrheniusFigure(one).description).toMatch(/no line/)
+  })
+
+  it('an interval that is wide: for want of points (W4: ±19.3 of 181.9 kJ/mol with five, W15 with four), or by scatter', () => {
+    expect(codes(tableOf('W4'))).toContain('note few-temperatures')
+    const rows = tableOf('W8').rows.map((row, i) => ({ ...row, rateConstant: row.rateConstant * (i % 2 === 0 ? 3 : 1 / 3) }))
+    expect(codes(tableOf('W8', { rows }))).toContain('caution few-temperatures')
+  })
+
+  it('a table whose printed interval and slope cannot be had from its rate constants is noticed to be wide', () => {
+    const { wrongInterval } = tables
+    const rows = wrongInterval.temperature_K.map((temperature_K, i) => ({
+      temperature_K,
+      rateConstant: wrongInterval.k[i] ?? Number.NaN,
+      standardUncertainty: null,
+      label: null,
+      use: true,
+    }))
+    const result = evaluateRateConstants(tableOf('W8', { rows }))
+    expect(result.findings.map((finding) => finding.code)).toContain('few-temperatures')
+    expect(result.line.Ea_kJ_per_mol).toBeCloseTo(Number(wrongInterval.recomputed.Ea), 1)
+    expect(result.line.interval.dof).toBe(3)
+  })
+
+  it('a bend, an extrapolation near and far, an Ea that cannot be meant, a unit nobody stated', () => {
+    expect(codes(tableOf('W4'))).toContain('caution lines-not-straight')
+    expect(codes(tableOf('W8', { predictAt_K: [345] }))).toEqual(['note prediction-extrapolated'])
+    expect(codes(tableOf('W8', { predictAt_K: [500] }))).toEqual(['caution prediction-extrapolated'])
+    expect(codes(tableOf('W8', { predictAt_K: [273, 300, 338] }))).toEqual([])
+    expect(codes(tableOf('W8', { rateUnit: '' }))).toEqual(['note rate-unit-missing'])
+    const W8 = tableOf('W8')
+    const falling = W8.rows.map((row) => ({ ...row, rateConstant: 1 / row.rateConstant }))
+    expect(codes({ ...W8, rows: falling })).toContain('caution energy-not-positive')
+    const small = W8.rows.map((row) => ({ ...row, rateConstant: row.rateConstant ** 0.1 }))
+    expect(codes({ ...W8, rows: small })).toContain('caution energy-implausible')
+  })
+})
+
+describe('the Arrhenius figure', () => {
+  it('holds points, line, bands and predictions within its axes', () => {
+    const W8 = tableOf('W8', { predictAt_K: [400] })
+    const figure = arrheniusFigure(evaluateRateConstants({ ...W8, rows: W8.rows.map((row, i) => ({ ...row, use: i !== 1 })) }))
+    expect(figure.marks.map((mark) => mark.name)).toEqual([
+      '95 % band of a new measurement',
+      '95 % band of the line',
+      'Arrhenius line',
+      'Not used',
+      'Rate constants',
+      'Predicted',
+    ])
+    const [xMin = 0, xMax = 0, yMin = 0, yMax = 0] = [figure.x.min, figure.x.max, figure.y.min, figure.y.max].map(
+      (end) => end ?? Number.NaN,
+    )
+    for (const mark of figure.marks) {
+      if (mark.kind === 'rule') throw new Error('no rules here')
+      for (const x of Array.from(mark.x)) expect(x >= xMin && x <= xMax).toBe(true)
+      const ends = mark.kind === 'band' ? [mark.lower, mark.upper] : [mark.y]
+      for (const y of ends.flatMap((values) => Array.from(values))) expect(y >= yMin && y <= yMax).toBe(true)
+    }
+    expect(figure.y.unit).toBe('k in 1/s')
+    expect(figure.x.second?.unit).toBe('°C')
+  })
+
+  it('picks out one row', () => {
+    const result = evaluateRateConstants(tableOf('W8'))
+    expect(arrheniusAtRow(result, 1)).toMatchObject([{ x: [1000 / 298], y: [Math.log(3.46e-5)] }])
+    expect(arrheniusAtRow(result, 99)).toEqual([])
+  })
+})

@@ -1,0 +1,182 @@
+import { arrheniusLine, arrheniusLineSources, type ArrheniusLine, type Weighting } from '../rate-constants/arrhenius-line.ts'
+import { exponentialFactor } from '../rate-constants/exponential-factor.ts'
+import { eyringLine, eyringLineSources, type Estimate } from '../rate-constants/eyring-line.ts'
+import { factorPer10K } from '../rate-constants/factor-per-10-k.ts'
+import { lineCurvature } from '../rate-constants/line-curvature.ts'
+import { predictRateConstant } from '../rate-constants/predict-rate-constant.ts'
+import type { RateConstantPoint } from '../rate-constants/rate-constant-point.ts'
+import type { RateConstantRow, RateConstantTable } from '../rate-constants/rate-constant-table.ts'
+import { reviewRateConstants } from '../review/review-rate-constants.ts'
+import { sources } from '../sources.ts'
+import { celsiusToKelvin, joulesToKilojoules } from '../units/convert.ts'
+import { quantity, type Quantity } from '../units/quantity.ts'
+import { parseRateUnit, type RateUnit } from '../units/rate-unit.ts'
+import { maybe } from './maybe.ts'
+import type {
+  ArrheniusResult,
+  EstimateResult,
+  EyringResult,
+  FactorPer10KResult,
+  RateConstantBand,
+  RateConstantPrediction,
+  RateConstantsResult,
+} from './rate-constants-result.ts'
+
+const bandPoints = 81
+const gibbsAt = quantity(298.15, 'K')
+
+/**
+ * A table of rate constants to Ea, A, predictions and findings. Rows not used have a residual and enter nothing.
+ *
+ * @throws KineticsError `not-finite`, naming the row among those used, where k or T is not above 0
+ */
+export function evaluateRateConstants(table: RateConstantTable): RateConstantsResult {
+  const used = table.rows.filter((row) => row.use)
+  const points = used.map(pointOf)
+  const data_K = used.map((row) => row.temperature_K)
+  const unit = parseRateUnit(table.rateUnit)
+  const rateUnit = unit.ok ? unit.value : null
+  const line = arrheniusLine(points)
+  const isStated = used.length > 0 && used.every((row) => row.standardUncertainty !== null)
+  const curvature = lineCurvature(points)
+  const result = {
+    rateUnit: rateUnit?.text ?? '',
+    temperatureUnitShown: table.temperatureUnitShown,
+    source: table.source,
+    rows: table.rows.map((row) => rowResult(row, line)),
+    span: used.length === 0 ? null : { coldest_K: Math.min(...data_K), hottest_K: Math.max(...data_K) },
+    line: lineResult(line, 'none', rateUnit),
+    weightedLine: isStated ? lineResult(arrheniusLine(points, 'stated-uncertainties'), 'stated-uncertainties', rateUnit) : null,
+    eyring: eyringResult(points, rateUnit),
+    factorsPer10K: factorTemperatures(data_K).map((from) => factorResult(line, from)),
+    predictions: table.predictAt_K.map((at) => predictionResult(line, data_K, quantity(at, 'K'))),
+    band: bandOf(line, data_K, table.predictAt_K),
+    curvature:
+      curvature.status === 'tested'
+        ? { t: curvature.t, threshold: curvature.threshold, dof: curvature.dof, isCurved: curvature.isCurved }
+        : null,
+  }
+  return { ...result, findings: reviewRateConstants({ table, result }) }
+}
+
+const pointOf = ({ temperature_K, rateConstant, standardUncertainty }: RateConstantRow): RateConstantPoint => ({
+  temperature: quantity(temperature_K, 'K'),
+  rateConstant,
+  ...(standardUncertainty === null ? {} : { standardUncertainty }),
+})
+
+function rowResult(row: RateConstantRow, line: ArrheniusLine): RateConstantsResult['rows'][number] {
+  const temperature = quantity(row.temperature_K, 'K')
+  const { lnK, rateConstant } = predictRateConstant(line, [row.temperature_K], temperature)
+  return {
+    ...row,
+    lnK: Math.log(row.rateConstant),
+    fittedRateConstant: maybe(rateConstant),
+    residual: maybe(Math.log(row.rateConstant) - lnK),
+    exponentialFactor: maybe(exponentialFactor(line.Ea, temperature)),
+  }
+}
+
+function lineResult(line: ArrheniusLine, weighting: Weighting, unit: RateUnit | null): ArrheniusResult {
+  const A = Math.exp(line.lnA)
+  return {
+    weighting,
+    status: line.status,
+    points: line.points,
+    distinctTemperatures: line.distinctTemperatures,
+    interval: { kind: 'student-t', level: 0.95, dof: line.dof },
+    Ea_kJ_per_mol: maybe(joulesToKilojoules(line.Ea)),
+    standardError_kJ_per_mol: maybe(joulesToKilojoules(line.standardError)),
+    lower95_kJ_per_mol: maybe(joulesToKilojoules(line.lower95)),
+    upper95_kJ_per_mol: maybe(joulesToKilojoules(line.upper95)),
+    lnA: maybe(line.lnA),
+    lnAStandardError: maybe(line.lnAStandardError),
+    lnALower95: maybe(line.lnALower95),
+    lnAUpper95: maybe(line.lnAUpper95),
+    A: A > 0 ? maybe(A) : null,
+    lnA_per_s: unit?.isPerTimeOnly === true ? maybe(line.lnA + Math.log(unit.perSecond)) : null,
+    covarianceEaLnA_kJ_per_mol: maybe(joulesToKilojoules(line.covarianceEaLnA)),
+    slope_K: Number.isNaN(line.Ea) ? null : maybe(line.fit.slope),
+    r2: maybe(line.r2),
+    residualStandardDeviation: maybe(line.residualStandardDeviation),
+    reducedChiSquare: maybe(line.reducedChiSquare),
+    sources: arrheniusLineSources.map((key) => sources[key]),
+  }
+}
+
+function eyringResult(points: readonly RateConstantPoint[], unit: RateUnit | null): EyringResult | null {
+  const line = eyringLine(points, unit?.perSecond ?? null)
+  if (line.status !== 'ok' && line.status !== 'without-interval') return null
+  return {
+    status: line.status,
+    dof: line.dof,
+    enthalpy_kJ_per_mol: estimateResult(line.enthalpy_J_per_mol, joulesToKilojoules),
+    entropy_J_per_mol_K: estimateResult(line.entropy_J_per_mol_K, (value) => value),
+    gibbs_kJ_per_mol: estimateResult(line.gibbsAt(gibbsAt), joulesToKilojoules),
+    gibbsAt_K: gibbsAt,
+    standardStateOf: unit === null || unit.isPerTimeOnly ? null : perSecondText(unit.text),
+    r2: maybe(line.r2),
+    sources: eyringLineSources.map((key) => sources[key]),
+  }
+}
+
+/** `L/(mol min)` counted per second is `L/(mol s)`; the time stands last. */
+const perSecondText = (text: string): string => text.replace(/[a-z]+(?=\)?$)/, 's')
+
+const estimateResult = (estimate: Estimate, convert: (value: number) => number): EstimateResult => ({
+  value: maybe(convert(estimate.value)),
+  standardError: maybe(convert(estimate.standardError)),
+  lower95: maybe(convert(estimate.lower95)),
+  upper95: maybe(convert(estimate.upper95)),
+})
+
+/** 25 °C, and the 10 K around the middle of 1/T. */
+function factorTemperatures(data_K: readonly number[]): readonly Quantity<'K'>[] {
+  const meanInverse = data_K.reduce((sum, T) => sum + 1 / T, 0) / data_K.length
+  return data_K.length === 0 ? [celsiusToKelvin(25)] : [celsiusToKelvin(25), quantity(1 / meanInverse - 5, 'K')]
+}
+
+const factorResult = (line: ArrheniusLine, from: Quantity<'K'>): FactorPer10KResult => ({
+  from_K: from,
+  factor: maybe(factorPer10K(line.Ea, from)),
+  // The factor rises with Ea, so the ends of the one are those of the other.
+  lower95: maybe(factorPer10K(line.lower95, from)),
+  upper95: maybe(factorPer10K(line.upper95, from)),
+})
+
+function predictionResult(line: ArrheniusLine, data_K: readonly number[], at: Quantity<'K'>): RateConstantPrediction {
+  const predicted = predictRateConstant(line, data_K, at)
+  return {
+    temperature_K: at,
+    rateConstant: maybe(predicted.rateConstant),
+    lineLower95: maybe(predicted.lineLower95),
+    lineUpper95: maybe(predicted.lineUpper95),
+    newLower95: maybe(predicted.newLower95),
+    newUpper95: maybe(predicted.newUpper95),
+    exponentialFactor: maybe(exponentialFactor(line.Ea, at)),
+    factorPer10K: factorResult(line, at),
+    extrapolation: {
+      side: predicted.extrapolation.side,
+      beyond_K: maybe(predicted.extrapolation.beyond_K) ?? 0,
+      beyondInSpans: maybe(predicted.extrapolation.beyondInSpans),
+    },
+  }
+}
+
+function bandOf(line: ArrheniusLine, data_K: readonly number[], predictAt_K: readonly number[]): RateConstantBand {
+  const inverse = [...data_K, ...predictAt_K].map((T) => 1 / T)
+  const isDrawn = data_K.length > 0 && !Number.isNaN(line.Ea)
+  const [low, high] = isDrawn ? [Math.min(...inverse), Math.max(...inverse)] : [0, 0]
+  const overhang = (high - low) * 0.04
+  const [from, to] = [low - overhang, high + overhang]
+  const temperature_K = isDrawn ? Array.from({ length: bandPoints }, (_, i) => 1 / (from + ((to - from) * i) / (bandPoints - 1))) : []
+  const at = temperature_K.map((T) => predictRateConstant(line, data_K, quantity(T, 'K')))
+  return {
+    temperature_K,
+    lnK: at.map((point) => maybe(point.lnK)),
+    lnLineLower95: at.map((point) => maybe(Math.log(point.lineLower95))),
+    lnLineUpper95: at.map((point) => maybe(Math.log(point.lineUpper95))),
+    lnNewLower95: at.map((point) => maybe(Math.log(point.newLower95))),
+    lnNewUpper95: at.map((point) => maybe(Math.log(point.newUpper95))),
+  }
+}
