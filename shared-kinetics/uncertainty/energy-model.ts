@@ -104,7 +104,7 @@ export function energyModel(series: SeriesAtLevels, result: IsoconversionalResul
     case 'vyazovkin-incremental':
       return { ...common, form: integralForm(series, result, (run) => segmentIntegral(run, largestEa)) }
     default:
-      return { ...common, form: lineForm(series, result, ordinates[result.method]) }
+      return { ...common, form: lineForm(series, result, result.method) }
   }
 }
 
@@ -120,7 +120,8 @@ function localHeatingRate({ programme, history, time_s }: RunAtLevels, level: nu
   return (valueAt(history.time_s, history.temperature_K, to) - valueAt(history.time_s, history.temperature_K, from)) / (to - from)
 }
 
-function lineForm(series: SeriesAtLevels, result: IsoconversionalResult, { holds, scale }: Ordinate): LineForm {
+function lineForm(series: SeriesAtLevels, result: IsoconversionalResult, method: LineMethodId): LineForm {
+  const { holds, scale } = ordinates[method]
   const runs = series.runs.length
   const levels = series.levels.length
   const form = {
@@ -144,31 +145,25 @@ function lineForm(series: SeriesAtLevels, result: IsoconversionalResult, { holds
     })
     form.slope_K[level] = line.slope_K
     form.energyPerSlope[level] = result.points[level]?.energyPerSlope ?? Number.NaN
-    form.temperatureExponent[level] = temperatureExponentOf(series, result.method, line, result.Ea[level] ?? Number.NaN)
+    form.temperatureExponent[level] = temperatureExponentOf(series, method, line, result.Ea[level] ?? Number.NaN)
   })
   return form
 }
 
 /** The s of an ordinate that goes with -s ln T. */
-function temperatureExponentOf(series: SeriesAtLevels, method: MethodId, line: LevelLine, Ea: number): number {
+function temperatureExponentOf(series: SeriesAtLevels, method: LineMethodId, line: LevelLine, Ea: number): number {
   const [x] = line.x_per_K
   const [y] = line.y
   const [run] = series.runs
   if (x === undefined || y === undefined || run?.programme.kind !== 'constant-heating-rate') return 0
-  switch (method) {
-    case 'kas':
-    case 'starink':
-    case 'starink-1996':
-    case 'tang':
-      return (y - Math.log(run.programme.heatingRate)) / Math.log(x)
-    case 'ofw-corrected': {
-      // Its ordinate holds ln p(x) beyond Doyle's line, so that at a given Ea it goes with T as ln beta - ln p(x) does.
-      const atMean = (Ea / gasConstant_J_per_mol_K) * (line.x_per_K.reduce((sum, value) => sum + value, 0) / line.x_per_K.length)
-      return atMean / scaledPOfX(atMean) + (line.slope_K * gasConstant_J_per_mol_K * atMean) / Ea
-    }
-    default:
-      return 0
+  if (method === 'ofw-corrected') {
+    // Its ordinate holds ln p(x) beyond Doyle's line, so that at a given Ea it goes with T as ln beta - ln p(x) does.
+    const atMean = (Ea / gasConstant_J_per_mol_K) * (line.x_per_K.reduce((sum, value) => sum + value, 0) / line.x_per_K.length)
+    return atMean / scaledPOfX(atMean) + (line.slope_K * gasConstant_J_per_mol_K * atMean) / Ea
   }
+  if (ordinates[method] !== lnHeatingRate) return 0
+  const s = (y - Math.log(run.programme.heatingRate)) / Math.log(x)
+  return Math.abs(s) < 1e-9 ? 0 : s
 }
 
 /** Step of e over which the moments are taken, as a share of Ea: the third one is then good to some 1e-5 of itself. */

@@ -84,7 +84,7 @@ function disturb(
       disturbance.time_s[k] = (noise.time_s[k] as number) * before
       disturbance.lnReactionRate[k] =
         (noise.lnReactionRate[k] as number) * random.normal() +
-        (noise.lnReactionRateSlope_per_s[k] as number) * (disturbance.time_s[k] as number)
+        (noise.lnReactionRateSlope_per_s[k] as number) * (disturbance.time_s[k] ?? Number.NaN)
     }
   }
   if (baseline === null) return
