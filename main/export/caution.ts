@@ -1,4 +1,2 @@
 /** Stands on every export whose numbers may be used to store, ship, dry, cure or heat something. */
-export const caution =
-  'A calculated value is an estimate for planning; it does not replace tests on the real amount, package and plant; ' +
-  'follow local codes and the judgement of licensed or otherwise competent people.'
+export { safetyCaution as caution } from '../../shared-kinetics/tasks/safety-caution.ts'

@@ -22,6 +22,7 @@ const resultOf = (document: StudyDocument): StudyResult => ({
   runs: [],
   profiles: [],
   kissinger: null,
+  peakMethods: [],
   findings: [],
 })
 

@@ -144,6 +144,7 @@ export function reviewInput(
       runs: runs.map((run) => run.result),
       profiles: [profileOf('friedman', [100, 100, 100]), profileOf('vyazovkin', [100, 100, 100])],
       kissinger: null,
+      peakMethods: [],
       ...change.result,
     },
     runs,

@@ -128,6 +128,7 @@ const result: StudyResult = {
   runs,
   profiles: [lineProfile('friedman', 'Friedman', [119, 141, null]), lineProfile('starink', 'Starink', [120, 140, null]), phiProfile],
   kissinger: null,
+  peakMethods: [],
   findings: [],
 }
 

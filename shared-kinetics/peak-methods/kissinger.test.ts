@@ -3,7 +3,8 @@ import sets from '../check-values/computed/exact-single-step.json'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { perMinuteToPerSecond } from '../units/convert.ts'
 import { quantity } from '../units/quantity.ts'
-import { kissinger, type RatePeak } from './kissinger.ts'
+import { kissinger } from './kissinger.ts'
+import type { RatePeak } from './peak-line.ts'
 
 const peaks = (heatingRate_K_per_min: readonly number[], temperature_K: readonly (number | string)[]): RatePeak[] =>
   heatingRate_K_per_min.map((beta, i) => ({

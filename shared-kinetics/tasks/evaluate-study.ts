@@ -1,17 +1,20 @@
 import { readAtLevels, type LevelsRead } from '../conversion/levels.ts'
 import { KineticsError } from '../errors.ts'
 import type { TaskContext } from '../isoconversional/result.ts'
-import type { LeftOut } from '../review/review-input.ts'
 import { review } from '../review/review.ts'
+import { mainHeating } from '../series/main-heating.ts'
 import { programmeGroups, type RunToGroup } from '../series/programme-groups.ts'
 import type { RunColumns, RunInfo, SignalInfo } from '../series/run.ts'
 import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
-import { column } from '../units/quantity.ts'
-import { applyKissinger, applyMethod, chooseMethods } from './apply-methods.ts'
+import { column, quantity } from '../units/quantity.ts'
+import { pointsOfRun } from './apply-borchardt-daniels.ts'
+import { applyMethod, chooseMethods } from './apply-methods.ts'
+import { applyPeakMethods, type PeakResults } from './apply-peak-methods.ts'
 import { chooseSignal } from './choose-signal.ts'
 import { conversionAtTemperature } from './conversion-at-temperature.ts'
 import { convertRun, convertRunVersion, type ConvertedRun } from './convert-run.ts'
+import { halfHeights } from './half-heights.ts'
 import { memoryOf, remember, type EvaluationCache } from './memo.ts'
 import { profileResult } from './profile-result.ts'
 import { runResult } from './run-result.ts'
@@ -73,7 +76,7 @@ export function evaluateStudy(
     step()
     return profileResult(info, result, settings.levels, settings.meanRange)
   })
-  const { kissinger, leftOut: kissingerLeftOut } = kissingerOf(runs)
+  const { kissinger, peakMethods, leftOut: kissingerLeftOut } = peakResultsOf(runs, signal)
   const result = {
     levels: settings.levels,
     signal,
@@ -81,6 +84,7 @@ export function evaluateStudy(
     runs: runs.map((run) => runResult(run.info, run.signal, run.converted, run.levels, run.group)),
     profiles,
     kissinger,
+    peakMethods,
   }
   const findings = review({
     study,
@@ -204,16 +208,28 @@ function seriesAtLevels(runs: readonly GroupedRun[], levels: readonly number[]):
   }
 }
 
-function kissingerOf(runs: readonly GroupedRun[]): { readonly kissinger: StudyResult['kissinger']; readonly leftOut: readonly LeftOut[] } {
-  return applyKissinger(
-    runs.map(({ info, converted, group }) => ({
+function peakResultsOf(runs: readonly GroupedRun[], signal: SignalQuantity | null): PeakResults {
+  return applyPeakMethods(
+    runs.map(({ info, signal: measured, converted: { converted, told, rows, peak_K }, group }) => ({
+      runId: info.id,
       label: info.label,
-      programme: converted.told.programme,
+      programme: told.programme,
       programmeGroup: group,
-      peak_K: converted.peak_K,
-      conversionAtPeak: conversionAtTemperature(converted.converted.curve, converted.peak_K),
+      peak_K,
+      conversionAtPeak: conversionAtTemperature(converted.curve, peak_K),
+      halfHeights: halfHeights(converted.curve, peak_K),
+      start: quantity(rows.temperature_K[mainHeating(rows.temperature_K).first] ?? Number.NaN, 'K'),
+      heat: heatOf(info, measured, converted.area),
+      points: pointsOfRun(converted.curve),
     })),
+    signal,
   )
+}
+
+/** Whether a heat flow is exothermic, where its file says which way that points. */
+function heatOf(info: RunInfo, { quantity: measured }: SignalInfo, area: number): 'exothermic' | 'endothermic' | null {
+  if (measured !== 'heat-flow' || info.exothermic === null) return null
+  return area > 0 === (info.exothermic === 'up') ? 'exothermic' : 'endothermic'
 }
 
 function checkLevels(levels: readonly number[]): void {

@@ -1,9 +1,8 @@
 import type { IsoconversionalResult, MethodInfo } from '../isoconversional/result.ts'
-import { kissingerSources, type KissingerEstimate, type RatePeak } from '../peak-methods/kissinger.ts'
 import { sources } from '../sources.ts'
 import { joulesToKilojoules } from '../units/convert.ts'
 import { maybe, maybes } from './maybe.ts'
-import type { KissingerResult, MeanEnergy, ProfileResult } from './study-result.ts'
+import type { MeanEnergy, ProfileResult } from './study-result.ts'
 
 const kilojoules = (values: Float64Array): Float64Array => values.map(joulesToKilojoules)
 
@@ -73,18 +72,3 @@ function meanOf(Ea: readonly (number | null)[], levels: readonly number[], [from
     lastLevel: used.at(-1)?.level ?? null,
   }
 }
-
-export const kissingerResult = (
-  estimate: KissingerEstimate,
-  peaks: readonly RatePeak[],
-  conversionAtPeak: readonly number[],
-): KissingerResult => ({
-  Ea_kJ_per_mol: joulesToKilojoules(estimate.Ea),
-  standardError_kJ_per_mol: maybe(joulesToKilojoules(estimate.standardError)),
-  lower95_kJ_per_mol: maybe(joulesToKilojoules(estimate.lower95)),
-  upper95_kJ_per_mol: maybe(joulesToKilojoules(estimate.upper95)),
-  lnA_per_s: estimate.lnA,
-  peaks_K: peaks.map((peak) => peak.temperature),
-  conversionAtPeak: maybes(conversionAtPeak),
-  sources: kissingerSources.map((key) => sources[key]),
-})

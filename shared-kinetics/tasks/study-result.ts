@@ -1,3 +1,4 @@
+import type { UncertaintySource } from '../uncertainty/measured-sources.ts'
 import type { IntervalKind, LevelStatus, MethodId } from '../isoconversional/result.ts'
 import type { PeakMethodId } from '../peak-methods/peak-method-info.ts'
 import type { Finding } from '../review/finding.ts'
@@ -90,18 +91,9 @@ export interface LackOfFitResult {
   readonly dofPureError: number
   readonly F: readonly Maybe[]
   readonly p: readonly Maybe[]
+  /** Of the runs' residuals averaged over the range of the mean: levels of one run err alike, so that the many tests above are hardly more than one. */
+  readonly overMeanRange: { readonly F: Maybe; readonly p: Maybe }
 }
-
-/** Sources of uncertainty that a measured temperature, heating rate and signal bring. */
-export const uncertaintySources = [
-  'temperature-common',
-  'temperature-run',
-  'temperature-lag',
-  'heating-rate',
-  'signal-noise',
-  'baseline',
-] as const
-export type UncertaintySource = (typeof uncertaintySources)[number]
 
 export interface BudgetEntry {
   readonly source: UncertaintySource

@@ -52,6 +52,7 @@ const noNumbers: StudyResult = {
   runs: [],
   profiles: [],
   kissinger: null,
+  peakMethods: [],
   findings: [],
 }
 

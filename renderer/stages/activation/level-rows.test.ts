@@ -90,6 +90,7 @@ const result: StudyResult = {
   runs: [runAt(2, [473.15, 523.15]), runAt(20, [513.15, null])],
   profiles: [friedman, starink],
   kissinger: null,
+  peakMethods: [],
   findings: [],
 }
 
