@@ -35,7 +35,7 @@ const mostPasses = 60
  *
  * Scope of the standard: thermogravimetry between 400 and 1300 K; a smooth mass loss with a single maximum of the rate; first order; at least four heating rates are
  * customary (1, 2, 5, 10 K/min). Ea is worked out outside of it too, and a finding says where. Not for the final number where the report need not follow the
- * standard: the table's b leaves a systematic error of Ea (-0.76 % at Ea/(RT) = 10, -0.23 % at 20, -0.11 % at 30, -0.03 % at 60), and A holds for first order alone.
+ * standard: the table's b leaves a systematic error of Ea (-0.95 % at Ea/(RT) = 10, -0.24 % at 20, -0.11 % at 30, -0.03 % at 60), and A holds for first order alone.
  *
  * Standard error: (R/b)·(that of the slope), b taken as exact. Statuses: `level-not-reached`, `too-few-programmes`, `line-not-determined` (also where x falls below 2,
  * where the table's difference ends).

@@ -2,6 +2,7 @@ import * as fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { temperatureAt, underConstantRate } from '../check-values/exact-simulation.ts'
 import { constantHeatingRate, hold, quiet, seriesOf, type RunValues } from '../check-values/series-of-values.ts'
+import { methodsOnRequest } from '../contract/methods-on-request.ts'
 import { sources } from '../sources.ts'
 import { methods } from './registry.ts'
 import { methodIds } from './result.ts'
@@ -45,6 +46,21 @@ describe('the register of methods', () => {
       for (const source of methods[id].info.sources) expect(Object.keys(sources)).toContain(source)
     }
     expect(new Set(methodIds.map((id) => methods[id].info.label)).size).toBe(methodIds.length)
+  })
+
+  it('runs by itself what a person need not ask for, in the order of the contract, and offers the rest', () => {
+    expect(methodIds.filter((id) => methods[id].info.byDefault)).toEqual([
+      'friedman',
+      'ofw',
+      'ofw-corrected',
+      'kas',
+      'starink',
+      'vyazovkin',
+      'vyazovkin-incremental',
+      'isothermal-integral',
+    ])
+    expect(methodIds.filter((id) => !methods[id].info.byDefault)).toEqual([...methodsOnRequest])
+    for (const id of methodsOnRequest) expect(methods[id].info.appliesTo).toEqual(['constant-heating-rate'])
   })
 
   it.each(methodIds)('%s gives whole columns of one length and one kind of evidence', (id) => {

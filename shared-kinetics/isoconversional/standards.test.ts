@@ -1,0 +1,95 @@
+import { describe, expect, it } from 'vitest'
+import chain from '../check-values/computed/astm-e1641-chain.json'
+import { constantRateSeries, quiet } from '../check-values/series-of-values.ts'
+import { doyleA, doyleSlope } from '../temperature-integral/doyle-table.ts'
+import { lnPOfX } from '../temperature-integral/p-of-x.ts'
+import { gasConstant_J_per_mol_K } from '../units/constants.ts'
+import { astmE1641 } from './astm-e1641.ts'
+import { iso11358Part2 } from './iso-11358-2.ts'
+import { ozawaFlynnWall } from './ozawa-flynn-wall.ts'
+
+const R = gasConstant_J_per_mol_K
+const asPrinted = (value: number, printed: string): string => value.toFixed((printed.split('.')[1] ?? '').length)
+
+/** Runs at close rates around 10 K/min that hold a reaction of true Ea/(RT) = x at 600 K. */
+function closeRates(x: number) {
+  const T = [599.99, 600, 600.01]
+  const Ea = x * R * 600
+  const beta = T.map((value) => 10 * Math.exp(lnPOfX(Ea / (R * value)) - lnPOfX(x)))
+  return { Ea, series: constantRateSeries([0.5], beta, [T]) }
+}
+
+describe('ASTM E1641', () => {
+  const series = constantRateSeries([chain.level], chain.heatingRate_K_per_min, [chain.temperature_K])
+  const result = astmE1641(series, quiet)
+  const Ea = result.Ea[0]!
+  const atMiddle = R * Number(chain.temperature_K[2])
+
+  it('matches the worked chain: slope, first Ea, refined Ea, a and A', () => {
+    const slope = result.lines[0]!.slope_K!
+    expect(asPrinted(slope, chain.slope_K)).toBe(chain.slope_K)
+    expect(asPrinted((-slope * R) / 0.457 / 1000, chain.firstEa_kJ_per_mol)).toBe(chain.firstEa_kJ_per_mol)
+    // The chain takes a(x) - a(x - 1) at x itself, the table between whole x a straight line: 4e-6 of Ea at x = 45. That moves a by 7e-5, A by 0.02 %.
+    expect(Math.abs(Ea / 1000 / Number(chain.byTable.Ea_kJ_per_mol) - 1)).toBeLessThan(5e-6)
+    expect(Math.abs(doyleA(Ea / atMiddle) - Number(chain.byTable.a))).toBeLessThan(1e-4)
+    const A_per_min = 60 * Math.exp(result.lnA[0]!)
+    expect(Math.abs(A_per_min / Number(chain.byTable.A_per_min) - 1)).toBeLessThan(3e-4)
+    expect(result.status).toEqual(['ok'])
+  })
+
+  it('takes b of the table and not the derivative, which would give another Ea', () => {
+    const exact = (-result.lines[0]!.slope_K! * R) / doyleSlope(Number(chain.byDerivative.Ea_kJ_per_mol) * (1000 / atMiddle))
+    expect(asPrinted(exact / 1000, chain.byDerivative.Ea_kJ_per_mol)).toBe(chain.byDerivative.Ea_kJ_per_mol)
+    expect(exact / Ea - 1).toBeGreaterThan(4e-4)
+  })
+
+  it.each(chain.differencePercentOfTable)('falls short of the true Ea by $percent % at Ea/RT $x, and says so', ({ x, percent }) => {
+    const close = closeRates(x)
+    const one = astmE1641(close.series, quiet)
+    const error = one.Ea[0]! / close.Ea - 1
+    // The printed difference is of b at one x; b is read at the x of the Ea it lowers, which adds a quarter of it at x = 10 and less than 0.01 % from 20 on.
+    expect(-100 * error).toBeGreaterThan(Number(percent) - 0.005)
+    expect(-100 * error).toBeLessThan(Number(percent) * (x < 20 ? 1.25 : 1) + 0.01)
+    // 0.01 K apart, the level's T is its mean within 2e-5 of itself.
+    expect(Math.abs(one.systematicError[0]! / error - 1)).toBeLessThan(2e-3)
+  })
+
+  it('gives ln A in 1/s of a first-order reaction, whatever the conversion', () => {
+    // Sources of A: the table's Ea is 0.1 % low, and A follows it by x times as much.
+    expect(Math.abs(result.lnA[0]! - Math.log(1e18 / 60))).toBeLessThan(0.05)
+  })
+
+  it('reads x at the heating rate nearest the middle, however the runs are ordered', () => {
+    const order = [3, 1, 0, 2]
+    const shuffled = astmE1641({ ...series, runs: order.map((i) => series.runs[i]!) }, quiet)
+    expect(Math.abs(shuffled.Ea[0]! / Ea - 1)).toBeLessThan(1e-12)
+    expect(Math.abs(shuffled.lnA[0]! - result.lnA[0]!)).toBeLessThan(1e-10)
+  })
+
+  it('has no Ea where the line gives none, or where the table ends', () => {
+    expect(astmE1641(constantRateSeries([0.5], [1, 2, 5], [[520, 510, 500]]), quiet).status).toEqual(['line-not-determined'])
+    // Ea/(RT) about 1.
+    const faint = astmE1641(constantRateSeries([0.5], [1, 2, 4], [[500, 800, 1800]]), quiet)
+    expect(faint.status).toEqual(['line-not-determined'])
+    expect([faint.Ea[0], faint.lnA[0], faint.systematicError[0]]).toEqual([Number.NaN, Number.NaN, Number.NaN])
+  })
+})
+
+describe('ISO 11358-2', () => {
+  it('is OFW with 0.4567 in place of 1.052, 0.04 % apart', () => {
+    const series = constantRateSeries([0.05], chain.heatingRate_K_per_min, [chain.temperature_K])
+    const [iso, ofw] = [iso11358Part2(series, quiet), ozawaFlynnWall(series, quiet)]
+    expect((100 * (iso.Ea[0]! / ofw.Ea[0]! - 1)).toFixed(2)).toBe('0.04')
+    expect(iso.Ea[0]! / ofw.Ea[0]!).toBeCloseTo(1.052 / (0.4567 * Math.LN10), 12)
+    // The standard error scales with it, r2 is the same line's.
+    expect(iso.standardError[0]! / ofw.standardError[0]!).toBeCloseTo(1.052 / (0.4567 * Math.LN10), 9)
+    expect(iso.r2[0]).toBeCloseTo(ofw.r2[0]!, 12)
+    expect(iso.lnA[0]).toBeNaN()
+  })
+
+  it('differs from ASTM E1641, which refines its constant', () => {
+    const { series, Ea } = closeRates(15)
+    expect(iso11358Part2(series, quiet).Ea[0]! / Ea - 1).toBeGreaterThan(0.07)
+    expect(Math.abs(astmE1641(series, quiet).Ea[0]! / Ea - 1)).toBeLessThan(0.005)
+  })
+})
