@@ -15,16 +15,20 @@ export interface LocalFit {
   readonly slope: number
 }
 
-/** With more rows than this within the half-width, means over cells stand for the rows: five or more then fall into a cell. */
-const manyRows = 200
-/** Cells and nodes of a half-width: on a bell-shaped curve the value is off by some 1e-5 of the top, the slope by some 1e-5 of the steepest one, at most. */
-const cellsPerHalfWidth = 40
+/** With more rows than this within the half-width, means over cells stand for the rows, and the regression is done at nodes alone. */
+const manyRows = 24
+/**
+ * Cells and nodes of a half-width. Cells keep cubics exact and leave as much of the noise as rows do. Nodes put the value off by some 1e-6 of a bell-shaped curve's
+ * top and the slope by some 1e-5 of the steepest one; beside gaps by up to an eighth of what the regression itself is off there.
+ */
+const cellsPerHalfWidth = 16
 const nodesPerHalfWidth = 12
 
 /**
  * Value and slope of a curve at every x, by weighted regression of a polynomial on the neighbours (tricube weights). x ascends strictly and need not be evenly
- * spaced: nothing is resampled. Time grows with the number of rows alone: where more than 200 rows lie within the half-width, the regression runs over means of
- * cells (weighted by the rows in them) at nodes a twelfth of the half-width apart, and a cubic through four nodes gives value and slope between them.
+ * spaced: nothing is resampled. Time grows with the number of rows alone: where more than 24 rows lie within the half-width, the regression is that of means of cells a
+ * sixteenth of the half-width wide (weighted by the rows in them) on the means of the powers of x over them; it is done at nodes a twelfth of the half-width apart, and
+ * a cubic through four nodes gives value and slope between them. Rows farther apart than nodes have a regression of their own.
  *
  * @source cleveland-1979; for even spacing and equal weights savitzky-golay-1964
  */
@@ -34,12 +38,12 @@ export function localPolynomial(
   options: LocalPolynomialOptions,
 ): { readonly value: Float64Array; readonly slope: Float64Array } {
   const rowsInHalfWidth = (options.halfWidth * (x.length - 1)) / ((x.at(-1) ?? 0) - (x[0] ?? 0))
-  if (rowsInHalfWidth > manyRows) return throughNodes(x, y, options)
+  if (rowsInHalfWidth > manyRows) return throughNodes(x, meansOfCells(x, y, options.halfWidth / cellsPerHalfWidth), options)
   const value = new Float64Array(x.length)
   const slope = new Float64Array(x.length)
-  const fitAt = localFit({ x, y, weight: null }, options)
+  const fitAt = localFit({ x, y, within: null }, options)
   for (let i = 0; i < x.length; i++) {
-    const fit = fitAt(x[i] ?? Number.NaN)
+    const fit = fitAt(x[i] as number)
     value[i] = fit.value
     slope[i] = fit.slope
   }
@@ -48,25 +52,35 @@ export function localPolynomial(
 
 /** The same at one place, which need not be one of the x. */
 export const localPolynomialAt = (x: Float64Array, y: Float64Array, at: number, options: LocalPolynomialOptions): LocalFit =>
-  localFit({ x, y, weight: null }, options)(at)
+  localFit({ x, y, within: null }, options)(at)
 
-function throughNodes(x: Float64Array, y: Float64Array, options: LocalPolynomialOptions): { value: Float64Array; slope: Float64Array } {
+/** Value and slope at every x, from regressions of `samples` at nodes. */
+function throughNodes(x: Float64Array, samples: Samples, options: LocalPolynomialOptions): { value: Float64Array; slope: Float64Array } {
   const n = x.length
-  const start = x[0] ?? Number.NaN
-  const span = (x[n - 1] ?? Number.NaN) - start
+  const start = x[0] as number
+  const span = (x[n - 1] as number) - start
   const lastNode = Math.max(3, Math.ceil((span * nodesPerHalfWidth) / options.halfWidth))
   const step = span / lastNode
-  const fitAt = localFit(meansOfCells(x, y, options.halfWidth / cellsPerHalfWidth), options)
+  const atNode = localFit(samples, options)
+  const atRow = localFit(samples, options)
   const value = new Float64Array(n)
   const slope = new Float64Array(n)
   // The four nodes around the row, moved along with it; nodes that no row needs, as in a gap, are never fitted.
-  let firstNode = 0
+  let firstNode = -1
   let nodes: LocalFit[] = []
   for (let i = 0; i < n; i++) {
-    const place = ((x[i] ?? Number.NaN) - start) / step
+    const at = x[i] as number
+    if (i > 0 && at - (x[i - 1] as number) > step) {
+      const fit = atRow(at)
+      value[i] = fit.value
+      slope[i] = fit.slope
+      continue
+    }
+    const place = (at - start) / step
     const first = Math.min(lastNode - 3, Math.max(0, Math.floor(place) - 1))
-    if (first !== firstNode || nodes.length === 0) {
-      nodes = [0, 1, 2, 3].map((k) => nodes[k + first - firstNode] ?? fitAt(start + (first + k) * step))
+    if (first !== firstNode) {
+      const moved = first - firstNode
+      nodes = [0, 1, 2, 3].map((k) => nodes[k + moved] ?? atNode(start + (first + k) * step))
       firstNode = first
     }
     const u = place - first
@@ -81,36 +95,51 @@ function throughNodes(x: Float64Array, y: Float64Array, options: LocalPolynomial
   return { value, slope }
 }
 
-/** Samples, each standing for as many rows as its weight says; null: for one. */
+/** Rows, or means of x and y over the rows of cells, with what tells how these lie about their mean: how many they are, and the means of the squares and cubes of their distances. */
 interface Samples {
   readonly x: Float64Array
   readonly y: Float64Array
-  readonly weight: Float64Array | null
+  readonly within: { readonly rows: Float64Array; readonly squares: Float64Array; readonly cubes: Float64Array } | null
 }
 
-/** Mean x and y of the rows in cells no wider than `width`, each cell beginning at a row. */
+/** Means over the rows of cells no wider than `width`, each cell beginning at a row. */
 function meansOfCells(x: Float64Array, y: Float64Array, width: number): Samples {
   const n = x.length
   const meanX = new Float64Array(n)
   const meanY = new Float64Array(n)
-  const weight = new Float64Array(n)
+  const rows = new Float64Array(n)
+  const squares = new Float64Array(n)
+  const cubes = new Float64Array(n)
   let cells = 0
   for (let i = 0; i < n; cells++) {
-    const from = i
-    const x0 = x[i] ?? Number.NaN
-    const y0 = y[i] ?? Number.NaN
-    let sumX = 0
+    const x0 = x[i] as number
+    const y0 = y[i] as number
+    const end = x0 + width
+    let count = 0
+    let sum1 = 0
+    let sum2 = 0
+    let sum3 = 0
     let sumY = 0
     do {
-      sumX += (x[i] ?? Number.NaN) - x0
-      sumY += (y[i] ?? Number.NaN) - y0
+      const d = (x[i] as number) - x0
+      const dd = d * d
+      sum1 += d
+      sum2 += dd
+      sum3 += dd * d
+      sumY += (y[i] as number) - y0
+      count++
       i++
-    } while (i < n && (x[i] ?? Number.NaN) < x0 + width)
-    meanX[cells] = x0 + sumX / (i - from)
-    meanY[cells] = y0 + sumY / (i - from)
-    weight[cells] = i - from
+    } while (i < n && (x[i] as number) < end)
+    const mean = sum1 / count
+    const square = sum2 / count
+    rows[cells] = count
+    meanX[cells] = x0 + mean
+    meanY[cells] = y0 + sumY / count
+    squares[cells] = square - mean * mean
+    cubes[cells] = sum3 / count - mean * (3 * square - 2 * mean * mean)
   }
-  return { x: meanX.subarray(0, cells), y: meanY.subarray(0, cells), weight: weight.subarray(0, cells) }
+  const filled = (values: Float64Array): Float64Array => values.subarray(0, cells)
+  return { x: filled(meanX), y: filled(meanY), within: { rows: filled(rows), squares: filled(squares), cubes: filled(cubes) } }
 }
 
 /** The fit at any place. Its neighbours are found from those of the place before where places ascend, else by bisection. */
@@ -148,14 +177,51 @@ function localFit(samples: Samples, options: LocalPolynomialOptions): (at: numbe
 }
 
 function fitAround(
-  { x, y, weight }: Samples,
+  samples: Samples,
   at: number,
   { first, last }: { readonly first: number; readonly last: number },
   width: number,
   degree: 1 | 2 | 3,
   room: Scratch,
 ): LocalFit {
-  const { sums } = room
+  // Sums of the deviations from one of the values: a large offset of y then costs no digits.
+  const offset = samples.y[(first + last) >> 1] ?? Number.NaN
+  if (samples.within === null) sumRows(samples.x, samples.y, at, first, last, width, offset, room)
+  else sumCells(samples.x, samples.y, samples.within, at, first, last, width, offset, room)
+  const found = solve(room, degree)
+  return {
+    value: found > 0 ? offset + (room.coefficients[0] as number) : Number.NaN,
+    slope: found > 1 ? (room.coefficients[1] as number) / width : Number.NaN,
+  }
+}
+
+/** Room for one regression, kept from place to place: a run asks for thousands. */
+interface Scratch {
+  /** Normal equations of a cubic, 4 by 4, below the diagonal and on it; a lower degree takes their first rows. */
+  readonly normal: Float64Array
+  readonly right: Float64Array
+  readonly factor: Float64Array
+  /** After `solve`: the coefficients of the polynomial. */
+  readonly coefficients: Float64Array
+}
+
+const scratch = (): Scratch => ({
+  normal: new Float64Array(16),
+  right: new Float64Array(4),
+  factor: new Float64Array(16),
+  coefficients: new Float64Array(4),
+})
+
+function sumRows(
+  x: Float64Array,
+  y: Float64Array,
+  at: number,
+  first: number,
+  last: number,
+  width: number,
+  offset: number,
+  { normal, right }: Scratch,
+): void {
   let s0 = 0
   let s1 = 0
   let s2 = 0
@@ -167,86 +233,141 @@ function fitAround(
   let t1 = 0
   let t2 = 0
   let t3 = 0
-  // Sums of the deviations from one of the values: a large offset of y then costs no digits.
-  const offset = y[(first + last) >> 1] ?? Number.NaN
   for (let j = first; j <= last; j++) {
-    const u = ((x[j] ?? Number.NaN) - at) / width
+    const u = ((x[j] as number) - at) / width
     const distance = Math.abs(u)
     if (distance >= 1) continue
     const falling = 1 - distance * distance * distance
-    const w = falling * falling * falling * (weight === null ? 1 : (weight[j] ?? Number.NaN))
-    const v = w * ((y[j] ?? Number.NaN) - offset)
-    const wu = w * u
-    const wu2 = wu * u
-    const wu3 = wu2 * u
+    const w = falling * falling * falling
+    const v = w * ((y[j] as number) - offset)
+    const u2 = u * u
+    const wu2 = w * u2
+    const wu4 = wu2 * u2
     s0 += w
-    s1 += wu
+    s1 += w * u
     s2 += wu2
-    s3 += wu3
-    s4 += wu3 * u
-    s5 += wu3 * u * u
-    s6 += wu3 * u * u * u
+    s3 += wu2 * u
+    s4 += wu4
+    s5 += wu4 * u
+    s6 += wu4 * u2
     t0 += v
     t1 += v * u
-    t2 += v * u * u
-    t3 += v * u * u * u
+    t2 += v * u2
+    t3 += v * u2 * u
   }
-  sums[0] = s0
-  sums[1] = s1
-  sums[2] = s2
-  sums[3] = s3
-  sums[4] = s4
-  sums[5] = s5
-  sums[6] = s6
-  sums[7] = t0
-  sums[8] = t1
-  sums[9] = t2
-  sums[10] = t3
-  const found = solveMoments(room, degree)
-  return {
-    value: found > 0 ? offset + (room.coefficients[0] ?? Number.NaN) : Number.NaN,
-    slope: found > 1 ? (room.coefficients[1] ?? Number.NaN) / width : Number.NaN,
-  }
+  normal[0] = s0
+  normal[4] = s1
+  normal[5] = s2
+  normal[8] = s2
+  normal[9] = s3
+  normal[10] = s4
+  normal[12] = s3
+  normal[13] = s4
+  normal[14] = s5
+  normal[15] = s6
+  right[0] = t0
+  right[1] = t1
+  right[2] = t2
+  right[3] = t3
 }
 
-/** Room for one regression, kept from place to place: a run asks for thousands. */
-interface Scratch {
-  /** Moments 0 to 6 of the weights, then the four of y. */
-  readonly sums: Float64Array
-  readonly factor: Float64Array
-  /** After `solveMoments`: the coefficients of the polynomial. */
-  readonly coefficients: Float64Array
+/** The mean of a polynomial over a cell is not its value at the mean x: the regression is on the means of the powers. */
+function sumCells(
+  x: Float64Array,
+  y: Float64Array,
+  { rows, squares, cubes }: NonNullable<Samples['within']>,
+  at: number,
+  first: number,
+  last: number,
+  width: number,
+  offset: number,
+  { normal, right }: Scratch,
+): void {
+  let s00 = 0
+  let s10 = 0
+  let s11 = 0
+  let s20 = 0
+  let s21 = 0
+  let s22 = 0
+  let s30 = 0
+  let s31 = 0
+  let s32 = 0
+  let s33 = 0
+  let t0 = 0
+  let t1 = 0
+  let t2 = 0
+  let t3 = 0
+  const perWidth = 1 / width
+  for (let j = first; j <= last; j++) {
+    const u = ((x[j] as number) - at) * perWidth
+    const distance = Math.abs(u)
+    if (distance >= 1) continue
+    const falling = 1 - distance * distance * distance
+    const w = falling * falling * falling * (rows[j] as number)
+    const square = (squares[j] as number) * perWidth * perWidth
+    const p2 = u * u + square
+    const p3 = u * (u * u + 3 * square) + (cubes[j] as number) * perWidth * perWidth * perWidth
+    const v = w * ((y[j] as number) - offset)
+    const w1 = w * u
+    const w2 = w * p2
+    const w3 = w * p3
+    s00 += w
+    s10 += w1
+    s11 += w1 * u
+    s20 += w2
+    s21 += w2 * u
+    s22 += w2 * p2
+    s30 += w3
+    s31 += w3 * u
+    s32 += w3 * p2
+    s33 += w3 * p3
+    t0 += v
+    t1 += v * u
+    t2 += v * p2
+    t3 += v * p3
+  }
+  normal[0] = s00
+  normal[4] = s10
+  normal[5] = s11
+  normal[8] = s20
+  normal[9] = s21
+  normal[10] = s22
+  normal[12] = s30
+  normal[13] = s31
+  normal[14] = s32
+  normal[15] = s33
+  right[0] = t0
+  right[1] = t1
+  right[2] = t2
+  right[3] = t3
 }
 
-const scratch = (): Scratch => ({ sums: new Float64Array(11), factor: new Float64Array(16), coefficients: new Float64Array(4) })
-
-/** The coefficients of the weighted polynomial, by Cholesky on the moments; the degree is lowered where the points do not carry it. Returns how many there are. */
-function solveMoments({ sums, factor: l, coefficients: c }: Scratch, degree: number): number {
-  for (let size = degree + 1; size >= 1; size--) {
-    let carried = true
-    for (let i = 0; i < size && carried; i++) {
-      for (let j = 0; j <= i; j++) {
-        const moment = sums[i + j] ?? Number.NaN
-        let rest = moment
-        for (let k = 0; k < j; k++) rest -= (l[i * size + k] ?? 0) * (l[j * size + k] ?? 0)
-        if (i === j) {
-          if (!(rest > 1e-13 * moment)) carried = false
-          l[i * size + i] = Math.sqrt(rest)
-        } else l[i * size + j] = rest / (l[j * size + j] ?? Number.NaN)
-      }
+/** The coefficients of the weighted polynomial, by Cholesky's factors; the degree is lowered where the points do not carry it. Returns how many there are. */
+function solve({ normal, right, factor: l, coefficients: c }: Scratch, degree: number): number {
+  let size = 0
+  for (; size <= degree; size++) {
+    // Each row of the factor is that of every larger one: the first that is not carried ends it.
+    const row = 4 * size
+    for (let j = 0; j < size; j++) {
+      let rest = normal[row + j] as number
+      for (let k = 0; k < j; k++) rest -= (l[row + k] as number) * (l[4 * j + k] as number)
+      l[row + j] = rest / (l[4 * j + j] as number)
     }
-    if (!carried) continue
-    for (let i = 0; i < size; i++) {
-      let rest = sums[7 + i] ?? Number.NaN
-      for (let k = 0; k < i; k++) rest -= (l[i * size + k] ?? 0) * (c[k] ?? 0)
-      c[i] = rest / (l[i * size + i] ?? Number.NaN)
-    }
-    for (let i = size - 1; i >= 0; i--) {
-      let rest = c[i] ?? Number.NaN
-      for (let k = i + 1; k < size; k++) rest -= (l[k * size + i] ?? 0) * (c[k] ?? 0)
-      c[i] = rest / (l[i * size + i] ?? Number.NaN)
-    }
-    return size
+    const diagonal = normal[row + size] as number
+    let rest = diagonal
+    for (let k = 0; k < size; k++) rest -= (l[row + k] as number) * (l[row + k] as number)
+    if (!(rest > 1e-13 * diagonal)) break
+    l[row + size] = Math.sqrt(rest)
   }
-  return 0
+  for (let i = 0; i < size; i++) {
+    let rest = right[i] as number
+    for (let k = 0; k < i; k++) rest -= (l[4 * i + k] as number) * (c[k] as number)
+    c[i] = rest / (l[4 * i + i] as number)
+  }
+  for (let i = size - 1; i >= 0; i--) {
+    let rest = c[i] as number
+    for (let k = i + 1; k < size; k++) rest -= (l[4 * k + i] as number) * (c[k] as number)
+    c[i] = rest / (l[4 * i + i] as number)
+  }
+  return size
 }
