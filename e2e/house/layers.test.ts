@@ -34,6 +34,8 @@ describe('who may import what is held by lint, type imports included', () => {
     ['shared-kinetics/conversion/a.ts', type('../isoconversional/result.ts')],
     ['shared-kinetics/isoconversional/a.ts', type('../review/finding.ts')],
     ['shared-kinetics/isoconversional/a.ts', type('mathjs')],
+    ['shared-kinetics/uncertainty/a.ts', type('../tasks/study-result.ts')],
+    ['shared-kinetics/rate-constants/a.ts', type('../tasks/study-result.ts')],
     ['shared-kinetics/tasks/a.ts', type('../contract/wire.ts')],
     ['shared-kinetics/review/rules/a.ts', type('../../contract/wire.ts')],
     ['shared-kinetics/contract/a.ts', value('../tasks/study-input.ts')],

@@ -1,8 +1,7 @@
-import type { UncertaintySource } from '../tasks/study-result.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column, type Column } from '../units/quantity.ts'
 import type { EnergyModel } from './energy-model.ts'
-import type { MeasuredSources } from './measured-sources.ts'
+import type { MeasuredSources, UncertaintySource } from './measured-sources.ts'
 
 /** Standard uncertainty of Ea that each source alone brings, one entry a level; NaN without Ea, 0 where the method does not use what the source disturbs. */
 export type Budget = Readonly<Record<UncertaintySource, Column<'J/mol'>>>

@@ -1,7 +1,7 @@
 import { studentTQuantile } from '../numerics/student-t.ts'
 import type { IsoconversionalResult } from '../isoconversional/result.ts'
-import type { UncertaintySource } from '../tasks/study-result.ts'
 import { column, type Column } from '../units/quantity.ts'
+import type { UncertaintySource } from './measured-sources.ts'
 import { shownByScatter, type Budget } from './budget.ts'
 
 export interface CombinedInterval {

@@ -1,5 +1,16 @@
 import type { Column } from '../units/quantity.ts'
 
+/** Sources of uncertainty that measured temperatures, heating rates and signals bring. */
+export const uncertaintySources = [
+  'temperature-common',
+  'temperature-run',
+  'temperature-lag',
+  'heating-rate',
+  'signal-noise',
+  'baseline',
+] as const
+export type UncertaintySource = (typeof uncertaintySources)[number]
+
 /** What a person states about how well temperatures and heating rates were measured: standard uncertainties. */
 export interface StatedUncertainties {
   /** Of every temperature of the series alike: what a calibration leaves. */

@@ -7,14 +7,13 @@ import { methodIds, type IsoconversionalResult, type MethodId } from '../isoconv
 import { randomStream } from '../numerics/random.ts'
 import { studentTQuantile } from '../numerics/student-t.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
-import { uncertaintySources, type UncertaintySource } from '../tasks/study-result.ts'
 import { column } from '../units/quantity.ts'
 import { budgetOf } from './budget.ts'
 import { combinedInterval } from './combined-interval.ts'
 import { disturbedEnergy, roomFor, type Disturbance } from './disturbed-energy.ts'
 import { drawInterval } from './draw-interval.ts'
 import { energyModel, type EnergyModel } from './energy-model.ts'
-import type { MeasuredSources } from './measured-sources.ts'
+import { uncertaintySources, type MeasuredSources, type UncertaintySource } from './measured-sources.ts'
 import { drawEnergies } from './monte-carlo.ts'
 
 const rates_K_per_min = [1, 2, 5, 10, 20]
