@@ -12,6 +12,17 @@ beforeAll(async () => {
 
 const relative = (value: number, expected: string | number): number => Math.abs(value / Number(expected) - 1)
 
+/** Abramowitz & Stegun 5.1.51: x eˣ E₂(x) ~ Σ (-1)ᵏ (k + 1)!/xᵏ. Its smallest term at x = 60 is below 1e-22. */
+const asymptotic = (x: number): number => {
+  let sum = 1
+  let term = 1
+  for (let k = 1; k < 60 && Math.abs(term) > 1e-18; k++) {
+    term *= -(k + 1) / x
+    sum += term
+  }
+  return sum
+}
+
 describe('the temperature integral', () => {
   it('matches the table of p(x) from x = 5 to 100', () => {
     for (const { x, p, scaled, minusLog10P, slope } of table.rows) {
@@ -46,6 +57,25 @@ describe('the temperature integral', () => {
         expect(relative(pOfX(x), expn(2, x) / x)).toBeLessThan(1e-14 + 3e-16 * x)
       }),
       { numRuns: 2000 },
+    )
+  })
+
+  it('agrees with E₁ of another library by π(x) = x(1 - x eˣ E₁(x)) where little cancels', () => {
+    fc.assert(
+      fc.property(fc.double({ min: 0.01, max: 3, noNaN: true }), (x) => {
+        expect(relative(scaledPOfX(x), x * (1 - x * Math.exp(x) * expn(1, x)))).toBeLessThan(1e-14)
+      }),
+      { numRuns: 2000 },
+    )
+  })
+
+  it('agrees with its asymptotic series from x = 60 to 5000, where p itself can no longer be held', () => {
+    fc.assert(
+      fc.property(fc.double({ min: Math.log(60), max: Math.log(5000), noNaN: true }), (lnX) => {
+        const x = Math.exp(lnX)
+        expect(relative(scaledPOfX(x), asymptotic(x))).toBeLessThan(2e-15)
+        expect(Math.abs(lnPOfX(x) + x + 2 * Math.log(x) - Math.log(asymptotic(x)))).toBeLessThan(1e-15 * x + 1e-14)
+      }),
     )
   })
 
