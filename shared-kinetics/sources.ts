@@ -25,7 +25,6 @@ export const sources = {
   'arrhenius-1889': 'S. Arrhenius, Z. Phys. Chem. 4 (1889) 226',
   'iupac-arrhenius': 'IUPAC, Compendium of Chemical Terminology, "activation energy", "modified Arrhenius equation"',
   'eyring-1935': 'H. Eyring, J. Chem. Phys. 3 (1935) 107',
-  'draper-smith-1998': 'N. R. Draper, H. Smith, Applied Regression Analysis, 3rd ed. (1998), ch. 1 and 3 (line, bands, extra term)',
   'levenspiel-1999': 'O. Levenspiel, Chemical Reaction Engineering, 3rd ed. (1999), ch. 2 (temperature dependence from times)',
   'cook-weisberg-1982':
     'R. D. Cook, S. Weisberg, Residuals and Influence in Regression (1982), ch. 2 (externally studentised residuals, Bonferroni bound)',
@@ -67,7 +66,7 @@ export const sources = {
   'efron-tibshirani-1993': 'B. Efron, R. J. Tibshirani, An Introduction to the Bootstrap (1993), ch. 6, 11 and 13',
   // Cited from memory, not re-read.
   'draper-smith-1998':
-    'N. R. Draper, H. Smith, Applied Regression Analysis, 3rd ed. (1998), ch. 2 (lack of fit, pure error, approximate repeats)',
+    'N. R. Draper, H. Smith, Applied Regression Analysis, 3rd ed. (1998), ch. 1 to 3 (line, bands, extra term; lack of fit, pure error, approximate repeats)',
   'astm-e698':
     'ASTM E698 (kinetic parameters for thermally unstable materials by differential scanning calorimetry; equations from memory)',
   'astm-e2890': 'ASTM E2890 (kinetic parameters and reaction order by differential scanning calorimetry; equations from memory)',

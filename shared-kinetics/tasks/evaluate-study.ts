@@ -1,26 +1,20 @@
-import { readAtLevels, type LevelsRead } from '../conversion/levels.ts'
-import { KineticsError } from '../errors.ts'
+import { methods } from '../isoconversional/registry.ts'
 import type { TaskContext } from '../isoconversional/result.ts'
 import { review } from '../review/review.ts'
 import { mainHeating } from '../series/main-heating.ts'
-import { programmeGroups, type RunToGroup } from '../series/programme-groups.ts'
 import type { RunColumns, RunInfo, SignalInfo } from '../series/run.ts'
-import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
-import { column, quantity } from '../units/quantity.ts'
+import { quantity } from '../units/quantity.ts'
 import { pointsOfRun } from './apply-borchardt-daniels.ts'
-import { applyMethod, chooseMethods } from './apply-methods.ts'
 import { applyPeakMethods, type PeakResults } from './apply-peak-methods.ts'
-import { chooseSignal } from './choose-signal.ts'
 import { conversionAtTemperature } from './conversion-at-temperature.ts'
-import { convertRun, convertRunVersion, type ConvertedRun } from './convert-run.ts'
 import { halfHeights } from './half-heights.ts'
-import { memoryOf, remember, type EvaluationCache } from './memo.ts'
+import type { EvaluationCache } from './memo.ts'
 import { profileResult } from './profile-result.ts'
 import { runResult } from './run-result.ts'
-import type { AnalysisSettings, StudyInput } from './study-input.ts'
+import { seriesOfStudy, type GroupedRun } from './series-of-study.ts'
+import type { StudyInput } from './study-input.ts'
 import type { StudyResult } from './study-result.ts'
-import { withoutLateHolds } from './without-late-holds.ts'
 
 /**
  * Everything that follows from a study: raw columns to conversion, to runs read at common levels, to Ea by every method asked for, to findings.
@@ -38,43 +32,20 @@ export function evaluateStudy(
   cache: EvaluationCache = new Map(),
 ): StudyResult {
   const { settings } = study
-  checkLevels(settings.levels)
-  const used = study.runs.filter((run) => run.use)
-  const { signal, toChooseFrom } = chooseSignal(used, settings.signal)
-  const steps = { done: 0, total: 2 * used.length + 1 }
+  const used = study.runs.filter((run) => run.use).length
+  // Methods that turn out not to apply make the total smaller, so that the share done never falls.
+  const steps = { done: 0, total: used + (settings.methods?.length ?? methodsByDefault) + 1 }
   const step = (): void => {
     context.checkCancelled()
     context.progress(++steps.done, steps.total)
   }
-
-  const read: ReadRun[] = []
-  const unusable: { info: RunInfo; error: KineticsError }[] = []
-  for (const info of used) {
-    context.checkCancelled()
-    try {
-      if (signal !== null) read.push(readRun(info, columns.get(info.columnsKey), signal, settings, cache))
-    } catch (error) {
-      if (!(error instanceof KineticsError)) throw error
-      unusable.push({ info, error })
-    }
+  const { signal, toChooseFrom, runs, unusable, chosen, leftOut, resultOf } = seriesOfStudy(study, columns, context, cache, step)
+  steps.total = used + chosen.length + 1
+  const groups = runs.map((run) => run.group)
+  const profiles = chosen.map((info) => {
+    const result = resultOf(info)
     step()
-  }
-  const runs = inOrderOfProgramme(read)
-  const series = seriesAtLevels(runs, settings.levels)
-  const { chosen, leftOut } = withoutLateHolds(
-    chooseMethods(
-      settings.methods,
-      runs.map((run) => run.converted.told.programme.kind),
-    ),
-    runs.map(({ info, converted }) => ({ label: info.label, conversionBeforeHold: converted.conversionBeforeHold })),
-  )
-  steps.total = used.length + chosen.length + 1
-  const seriesKey = JSON.stringify(runs.map((run) => [run.key, run.group]))
-  const profiles = (runs.length === 0 ? [] : chosen).map((info) => {
-    context.checkCancelled()
-    const result = remember(cache, `method ${info.id} ${methodVersion} ${seriesKey}`, () => applyMethod(info, series, context), memoryOf)
-    step()
-    return profileResult(info, result, settings.levels, settings.meanRange)
+    return profileResult(info, result, settings.levels, settings.meanRange, groups)
   })
   const { kissinger, peakMethods, leftOut: kissingerLeftOut } = peakResultsOf(runs, signal)
   const result = {
@@ -104,109 +75,7 @@ export function evaluateStudy(
   return { ...result, findings }
 }
 
-/** Bump when a method or `readAtLevels` gives other numbers: remembered steps of another version are not used. */
-const methodVersion = 2
-const readVersion = 1
-
-interface ReadRun {
-  readonly info: RunInfo
-  readonly signal: SignalInfo
-  readonly converted: ConvertedRun
-  readonly levels: LevelsRead
-  /** Names everything that the two before depend on. */
-  readonly key: string
-}
-
-interface GroupedRun extends ReadRun {
-  readonly group: number
-}
-
-function readRun(
-  info: RunInfo,
-  columns: RunColumns | undefined,
-  quantity: SignalQuantity,
-  settings: AnalysisSettings,
-  cache: EvaluationCache,
-): ReadRun {
-  if (columns === undefined) {
-    throw new KineticsError('unknown-run', `The measured columns of ${info.label} are not here. Add its file again.`, { run: info.label })
-  }
-  const signalIndex = info.signals.findIndex((signal) => signal.quantity === quantity)
-  const signal = info.signals[signalIndex]
-  if (signal === undefined) {
-    throw new KineticsError(
-      'no-signal',
-      `${info.label} has no ${quantity.replace('-', ' ')} column. Choose a signal that all runs have, or leave this run out.`,
-      { run: info.label, signal: quantity },
-    )
-  }
-  const window = info.window ?? settings.window
-  const conversionKey = JSON.stringify([
-    'convert',
-    convertRunVersion,
-    info.columnsKey,
-    signalIndex,
-    quantity,
-    window,
-    quantity === 'heat-flow' ? settings.baseline : null,
-    info.hasTime ? null : info.nominalHeatingRate,
-  ])
-  const converted = remember(
-    cache,
-    conversionKey,
-    () => convertRun(info, columns, { quantity, signalIndex, window, baseline: settings.baseline }),
-    memoryOf,
-  )
-  const key = JSON.stringify([conversionKey, 'levels', readVersion, settings.levels])
-  const levels = remember(cache, key, () => readAtLevels(converted.converted.curve, settings.levels), memoryOf)
-  return { info, signal, converted, levels, key }
-}
-
-/** Slow programmes first; replicates in the order in which the study has them. */
-function inOrderOfProgramme(read: readonly ReadRun[]): GroupedRun[] {
-  const toGroup = read.map(({ converted: { told, converted, rows, range } }): RunToGroup => {
-    const { first, last } = converted.curve.reaction
-    return {
-      programme: told.programme,
-      reaction: {
-        time_s: column(rows.time_s.subarray(range.first + first, range.first + last + 1), 's'),
-        temperature_K: column(rows.temperature_K.subarray(range.first + first, range.first + last + 1), 'K'),
-      },
-      meanHeatingRate_K_per_s: told.meanHeatingRate_K_per_s,
-      meanTemperature_K: told.meanTemperature_K,
-    }
-  })
-  const groups = programmeGroups(toGroup)
-  return read.map((run, i) => ({ ...run, group: itemAt(groups, i) })).sort((a, b) => a.group - b.group)
-}
-
-function seriesAtLevels(runs: readonly GroupedRun[], levels: readonly number[]): SeriesAtLevels {
-  return {
-    levels: column(Float64Array.from(levels), '1'),
-    runs: runs.map(({ converted, levels: read, group }): RunAtLevels => {
-      const { time_s, temperature_K } = converted.converted.curve
-      const start = time_s[0] ?? 0
-      return {
-        programme: converted.told.programme,
-        programmeGroup: group,
-        heatingRateSpread: converted.told.heatingRateSpread,
-        history: {
-          time_s: column(
-            time_s.map((time) => time - start),
-            's',
-          ),
-          temperature_K,
-        },
-        time_s: column(
-          read.time_s.map((time) => time - start),
-          's',
-        ),
-        temperature_K: read.temperature_K,
-        reactionRate_per_s: read.reactionRate_per_s,
-      }
-    }),
-  }
-}
+const methodsByDefault = Object.values(methods).filter(({ info }) => info.byDefault).length
 
 function peakResultsOf(runs: readonly GroupedRun[], signal: SignalQuantity | null): PeakResults {
   return applyPeakMethods(
@@ -230,15 +99,6 @@ function peakResultsOf(runs: readonly GroupedRun[], signal: SignalQuantity | nul
 function heatOf(info: RunInfo, { quantity: measured }: SignalInfo, area: number): 'exothermic' | 'endothermic' | null {
   if (measured !== 'heat-flow' || info.exothermic === null) return null
   return area > 0 === (info.exothermic === 'up') ? 'exothermic' : 'endothermic'
-}
-
-function checkLevels(levels: readonly number[]): void {
-  const ascending = levels.every((level, i) => level > (levels[i - 1] ?? 0) && level < 1)
-  if (levels.length === 0 || !ascending) {
-    throw new KineticsError('bad-levels', 'Levels of conversion lie between 0 and 1 and ascend, each named once; e.g. 0.05, 0.1, 0.15.', {
-      levels: levels.length,
-    })
-  }
 }
 
 function itemAt<Item>(items: readonly Item[], i: number): Item {

@@ -1,5 +1,10 @@
+import { estimateUncertainty } from './estimate-uncertainty.ts'
 import { evaluateRateConstants } from './evaluate-rate-constants.ts'
 import { evaluateStudy } from './evaluate-study.ts'
 
 /** Everything in shared-kinetics that is worth a worker, by the name it is asked for. */
-export const taskMap = { 'evaluate-study': evaluateStudy, 'evaluate-rate-constants': evaluateRateConstants } as const
+export const taskMap = {
+  'evaluate-study': evaluateStudy,
+  'evaluate-rate-constants': evaluateRateConstants,
+  'estimate-uncertainty': estimateUncertainty,
+} as const

@@ -7,8 +7,9 @@ const mostWithoutEnergy = 0.01
  * Bootstrap over runs at one level: 2.5 and 97.5 % points of Ea over the resamples of the runs, weighted by their probabilities, and the standard deviation of Ea over them.
  * The lower point is the least Ea at or below which 2.5 % of the probability lies, the upper one the same from above.
  *
- * It asks for no equal variance and no normal errors. Of few runs it is approximate, and too narrow rather than too wide: a resample holds the same few errors again. Resamples of
- * fewer than three programmes, in which Ea scatters most, are dropped.
+ * It asks for no equal variance and no normal errors. Of few runs it is approximate, and too narrow: a resample holds the same few errors again, and those of fewer than three
+ * programmes, in which Ea scatters most, are dropped. With independent errors of equal variance it holds the true value in about 64 % of cases for 4 runs, 88 % for 5, 90 % for 6,
+ * 91 % for 7 (simulation).
  *
  * @param energies - Ea in J/mol, one a resample
  * @returns NaN where more than 1 % of the resamples have no Ea

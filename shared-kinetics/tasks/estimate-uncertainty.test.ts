@@ -1,0 +1,142 @@
+import { describe, expect, it } from 'vitest'
+import { evenTimes, firstOrder, durationOf, ramp, reducedTime, runOf, temperatureOf } from '../check-values/simulated-run.ts'
+import { Cancelled } from '../errors.ts'
+import { randomStream } from '../numerics/random.ts'
+import { estimateUncertainty } from './estimate-uncertainty.ts'
+import { evaluateStudy } from './evaluate-study.ts'
+import type { EvaluationCache } from './memo.ts'
+import type { StudyInput } from './study-input.ts'
+
+const context = { checkCancelled: () => undefined, progress: () => undefined }
+const step = { Ea_J_per_mol: 150e3, A_per_s: 1e12 }
+const levels = [0.1, 0.3, 0.5, 0.7, 0.9]
+
+/** Mass runs at constant heating rates, each with a thermometer off by about 0.4 K. */
+function studyOf(
+  rates: readonly number[],
+  seed = 1,
+): { readonly study: StudyInput; readonly columns: Parameters<typeof evaluateStudy>[1] } {
+  const random = randomStream(seed)
+  const runs = rates.map((rate, i) => {
+    const programme = ramp(400, rate, 700)
+    const time = evenTimes(durationOf(programme), 2000)
+    const offset = 0.4 * random.normal()
+    return runOf(`r${i}`, {
+      time_s: time,
+      temperature_K: time.map((t) => temperatureOf(programme, t) + offset),
+      signals: [
+        { quantity: 'mass', unit: 'kg', values: reducedTime(step, programme, time).map((theta) => 8e-6 * (1 - 0.5 * firstOrder(theta))) },
+      ],
+    })
+  })
+  return {
+    study: {
+      runs: runs.map((run) => run.info),
+      settings: { signal: null, levels, methods: null, window: null, baseline: 'area-proportional', meanRange: [0.1, 0.9] },
+    },
+    columns: new Map(runs.map((run) => [run.info.columnsKey, run.columns])),
+  }
+}
+
+describe('the uncertainty of a study', () => {
+  it('names jackknife and bootstrap for each method, pointwise and approximate, at every level that has an Ea', () => {
+    const { study, columns } = studyOf([1, 2, 5, 10, 20])
+    const evaluated = evaluateStudy(study, columns, context)
+    const { profiles, seed } = estimateUncertainty(study, columns, { seed: 4 }, context)
+    expect(seed).toBe(4)
+    expect(profiles.map((profile) => profile.method)).toEqual(evaluated.profiles.map((profile) => profile.method))
+    profiles.forEach(({ intervals, method }, m) => {
+      expect(intervals.map((interval) => interval.kind)).toEqual(['jackknife', 'bootstrap'])
+      for (const interval of intervals) {
+        expect(interval).toMatchObject({ level: 0.95, pointwise: true, approximate: true })
+        expect(interval.note).toContain('Pointwise')
+        levels.forEach((_, i) => {
+          const Ea = evaluated.profiles[m]?.Ea_kJ_per_mol[i] ?? Number.NaN
+          expect(interval.lower95_kJ_per_mol[i], method).toBeLessThan(Ea)
+          expect(interval.upper95_kJ_per_mol[i], method).toBeGreaterThan(Ea)
+        })
+      }
+      // The jackknife of a regression estimates the same standard error; of five runs within a factor.
+      const ratio = (intervals[0]?.standardUncertainty_kJ_per_mol[2] ?? 0) / (evaluated.profiles[m]?.standardError_kJ_per_mol[2] ?? 0)
+      expect(ratio, method).toBeGreaterThan(0.4)
+      expect(ratio, method).toBeLessThan(2.5)
+    })
+    expect(profiles[0]?.intervals[1]?.note).toMatch(/All 81 distinct resamples of 5 runs.*fewer than three distinct programmes/)
+  })
+
+  it('takes from the cache what an evaluation left there, and gives the same numbers without it', () => {
+    const { study, columns } = studyOf([1, 2, 5, 10])
+    const cache: EvaluationCache = new Map()
+    evaluateStudy(study, columns, context, cache)
+    const known = new Set(cache.keys())
+    const fromCache = estimateUncertainty(study, columns, { seed: 1 }, context, cache)
+    expect(new Set(cache.keys())).toEqual(known)
+    expect(fromCache).toEqual(estimateUncertainty(study, columns, { seed: 1 }, context))
+  })
+
+  it('has no such interval for three runs', () => {
+    const { study, columns } = studyOf([1, 5, 20])
+    for (const { intervals } of estimateUncertainty(study, columns, { seed: 1 }, context).profiles) expect(intervals).toEqual([])
+  })
+
+  it('draws resamples of seven runs by the seed', () => {
+    const { study, columns } = studyOf([1, 2, 3, 5, 10, 15, 20])
+    const one = { ...study, settings: { ...study.settings, methods: ['starink' as const], levels: [0.5] } }
+    const bootstrapWith = (seed: number) => estimateUncertainty(one, columns, { seed }, context).profiles[0]?.intervals[1]
+    expect(bootstrapWith(1)).toEqual(bootstrapWith(1))
+    expect(bootstrapWith(1)?.standardUncertainty_kJ_per_mol).not.toEqual(bootstrapWith(2)?.standardUncertainty_kJ_per_mol)
+    expect(bootstrapWith(1)?.note).toContain('drawn with seed 1')
+  })
+
+  it('stops when it is no longer wanted', () => {
+    const { study, columns } = studyOf([1, 2, 5, 10, 20])
+    const cache: EvaluationCache = new Map()
+    evaluateStudy(study, columns, context, cache)
+    let looks = 0
+    const stopping = {
+      checkCancelled: () => {
+        if (++looks > 40) throw new Cancelled()
+      },
+      progress: () => undefined,
+    }
+    expect(() => estimateUncertainty(study, columns, { seed: 1 }, stopping, cache)).toThrow(Cancelled)
+  })
+})
+
+describe('a profile', () => {
+  it('has the F-type interval beside each minimum, and the mean of Ea with an interval that is no narrower than errors of whole runs allow', () => {
+    const { study, columns } = studyOf([1, 2, 5, 10, 20])
+    const { profiles } = evaluateStudy(study, columns, context)
+    for (const { method, otherIntervals, mean, standardError_kJ_per_mol: errors, lackOfFit } of profiles) {
+      expect(otherIntervals.map((interval) => interval.kind)).toEqual(method.startsWith('vyazovkin') ? ['vyazovkin-wight-f'] : [])
+      expect(lackOfFit).toBeNull()
+      const error = mean.standardError_kJ_per_mol ?? Number.NaN
+      expect(mean.lower95_kJ_per_mol).toBeLessThan(mean.Ea_kJ_per_mol ?? Number.NaN)
+      // t(0.975; 3) = 3.1824.
+      expect(((mean.upper95_kJ_per_mol ?? 0) - (mean.Ea_kJ_per_mol ?? 0)) / error).toBeCloseTo(3.1824, 4)
+      if (method === 'starink' || method === 'vyazovkin') expect(error / (errors[2] ?? 0)).toBeCloseTo(1, 1)
+    }
+    expect(profiles.find((profile) => profile.method === 'vyazovkin')?.otherIntervals[0]).toMatchObject({
+      pointwise: true,
+      approximate: true,
+    })
+  })
+
+  it('has neither interval nor mean error with two programmes, and lack of fit where replicates are', () => {
+    const two = studyOf([2, 10])
+    for (const { otherIntervals, mean } of evaluateStudy(two.study, two.columns, context).profiles) {
+      expect(otherIntervals).toEqual([])
+      expect(mean.Ea_kJ_per_mol).toBeGreaterThan(0)
+      expect(mean).toMatchObject({ standardError_kJ_per_mol: null, lower95_kJ_per_mol: null, upper95_kJ_per_mol: null })
+    }
+    const replicated = studyOf([2, 2, 5, 5, 20, 20])
+    for (const { lackOfFit } of evaluateStudy(replicated.study, replicated.columns, context).profiles) {
+      expect(lackOfFit).toMatchObject({ dofLackOfFit: 1, dofPureError: 3 })
+      for (const p of [...(lackOfFit?.p ?? []), lackOfFit?.overMeanRange.p]) {
+        expect(p).toBeGreaterThan(0)
+        expect(p).toBeLessThan(1)
+      }
+      expect(lackOfFit?.F.length).toBe(levels.length)
+    }
+  })
+})
