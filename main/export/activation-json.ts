@@ -28,6 +28,7 @@ export function activationJson({ document, result, program }: ExportSource): str
     levels: result.levels,
     profiles: result.profiles.map(profileFields),
     kissinger: result.kissinger,
+    peakMethods: result.peakMethods,
     findings: result.findings.map((finding) => findingFields(finding, labelOf)),
   }
   return `${JSON.stringify(content, nullForMissing, 1)}\n`

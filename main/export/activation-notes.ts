@@ -5,6 +5,7 @@ import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import type { ExportSource } from './activation-json.ts'
 import { caution } from './caution.ts'
+import { peakMethodLines } from './peak-method-lines.ts'
 
 /** The text of `activation.csv.txt`, which stands beside the table: caution, intervals, settings, where the runs came from, findings. */
 export function activationNotes({ document, result, program }: ExportSource): string {
@@ -14,6 +15,7 @@ export function activationNotes({ document, result, program }: ExportSource): st
     ['Caution', [caution]],
     ['Intervals', intervalLines({ document, result, program })],
     ['Means', result.profiles.flatMap(meanLines)],
+    ['Peak and single-run methods', result.peakMethods.flatMap(peakMethodLines)],
     ['Settings', settingLines(document.settings, result.signal)],
     ['Runs', result.runs.flatMap(runLines)],
     ['Runs not used', leftOut.map((run) => `${run.label}: ${run.file.name}, SHA-256 ${run.file.sha256}`)],

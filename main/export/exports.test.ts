@@ -4,12 +4,13 @@ import Papa from 'papaparse'
 import { describe, expect, it } from 'vitest'
 import { emptyStudy, type StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import type { Figure } from '../../shared-kinetics/figure/figure.ts'
-import type { ProfileResult, RunResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { PeakMethodResult, ProfileResult, RunResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import type { ExportSource } from './activation-json.ts'
 import { csvTable, tableStyle } from './csv-table.ts'
 import { runInfoOf } from '../../shared-kinetics/check-values/run-info-of.ts'
 import { exportResults, type ExportFormat } from './export-results.ts'
 import { figureSvg } from './figure-svg.ts'
+import { peakMethodLines } from './peak-method-lines.ts'
 import { shortTable } from './short-table.ts'
 
 const hostile = "=cmd|'/c calc'!A1 <script>&\"é\u0001"
@@ -77,6 +78,8 @@ const run: RunResult = {
   heatingRateStandardError_K_per_min: 0.01,
   heatingRateSource: 'measured',
   holdTemperature_K: null,
+  holdStart_s: null,
+  conversionBeforeHold: null,
   rows: 999,
   initialMass_kg: 8e-6,
   window: { kind: 'temperature', start_K: 430, end_K: 870 },
@@ -107,6 +110,63 @@ const hold: RunResult = {
   window: { kind: 'time', start_s: 0, end_s: 600 },
 }
 
+const e698: PeakMethodResult = {
+  method: 'astm-e698',
+  label: 'ASTM E698',
+  sources: ['ASTM E698'],
+  runId: null,
+  runLabel: null,
+  applies: true,
+  reason: null,
+  Ea_kJ_per_mol: 209.25,
+  standardError_kJ_per_mol: 2.125,
+  lower95_kJ_per_mol: 202.5,
+  upper95_kJ_per_mol: 216,
+  dof: 3,
+  lnA_per_s: 34.25,
+  lnAStandardError: 0.375,
+  covarianceEaLnA_kJ_per_mol: 0.75,
+  r2: 0.999,
+  numbers: [
+    { key: 'confirmation-temperature', label: 'temperature of a half-life of 60 min', value: 407.65, standardError: 0.5, unit: 'K' },
+    { key: 'D', label: 'D', value: 1.0625, standardError: null, unit: '1' },
+    { key: 'first-estimate', label: 'Ea before it is refined', value: 210.5, standardError: null, unit: 'kJ/mol' },
+  ],
+  remarks: ['To confirm: age a sample for 60 min at 134.5 °C.'],
+  line: { ordinate: 'log β', x_per_K: [0.0016], y: [-0.8], slope_K: -11000, intercept: 17 },
+}
+
+const doesNotApply: PeakMethodResult = {
+  ...e698,
+  method: 'augis-bennett',
+  label: 'Augis–Bennett',
+  applies: false,
+  reason: 'It is made for crystallisation.',
+  Ea_kJ_per_mol: null,
+  standardError_kJ_per_mol: null,
+  lower95_kJ_per_mol: null,
+  upper95_kJ_per_mol: null,
+  dof: 0,
+  lnA_per_s: null,
+  lnAStandardError: null,
+  covarianceEaLnA_kJ_per_mol: null,
+  r2: null,
+  numbers: [],
+  remarks: [],
+  line: null,
+}
+
+const singleRun: PeakMethodResult = {
+  ...e698,
+  method: 'borchardt-daniels',
+  label: 'Borchardt–Daniels',
+  runId: 'r1',
+  runLabel: 'Run one',
+  numbers: [{ key: 'order', label: 'n, reaction order', value: 1.0625, standardError: 0.125, unit: '1' }],
+  remarks: [],
+  line: null,
+}
+
 const result: StudyResult = {
   levels: [0.05, 0.1, 0.15000000000000002],
   signal: 'mass',
@@ -123,6 +183,7 @@ const result: StudyResult = {
     conversionAtPeak: [0.61],
     sources: ['H. E. Kissinger, Anal. Chem. 29 (1957) 1702'],
   },
+  peakMethods: [e698, doesNotApply, singleRun],
   findings: [
     {
       code: 'heating-rate-differs-from-nominal',
@@ -154,6 +215,44 @@ function notesOf(change: Partial<RunResult>): string {
   const files = exportResults({ ...source, result: { ...result, runs: [{ ...run, ...change }] } }, 'csv')
   return new TextDecoder('utf-8').decode(files[1]?.bytes)
 }
+
+describe('peak and single-run methods in exports', () => {
+  it('stand in the JSON as they are, and beside the table as sentences', () => {
+    expect((JSON.parse(textOf('json')) as Record<string, unknown>).peakMethods).toEqual([e698, doesNotApply, singleRun])
+    const notes = textOf('csv', 1)
+    expect(notes).toContain(
+      '  ASTM E698: Ea 209.25 kJ/mol, standard error 2.13 (95 % Student-t, 3 degrees of freedom: 202.5 to 216.0), ln A 34.25, standard error 0.38 (A in 1/s), ' +
+        'temperature of a half-life of 60 min 134.50 °C, standard error 0.50 K, D 1.063, Ea before it is refined 210.50 kJ/mol. Method: ASTM E698\n' +
+        '    To confirm: age a sample for 60 min at 134.5 °C.\n',
+    )
+    expect(notes).toContain('  Augis–Bennett: does not apply. It is made for crystallisation.\n')
+    expect(notes).toContain('  Borchardt–Daniels, Run one: Ea 209.25 kJ/mol')
+    expect(notes).toContain('n, reaction order 1.063, standard error 0.125')
+    expect(notes).toContain('estimate for planning')
+  })
+
+  it('without an interval or an A say so', () => {
+    const bare = {
+      ...e698,
+      standardError_kJ_per_mol: null,
+      lower95_kJ_per_mol: null,
+      upper95_kJ_per_mol: null,
+      lnA_per_s: null,
+      numbers: [],
+    }
+    expect(peakMethodLines(bare)[0]).toBe('ASTM E698: Ea 209.25 kJ/mol, no interval, no A. Method: ASTM E698')
+  })
+
+  it('stand in the short table where they apply, single runs in one line with their caution', () => {
+    const table = shortTable({
+      ...result,
+      peakMethods: [e698, doesNotApply, singleRun, { ...singleRun, runLabel: 'Run two', lower95_kJ_per_mol: null }],
+    })
+    expect(table).toContain('\nASTM E698: 209.3 ±6.8 kJ/mol, ln A 34.25 (A in 1/s)\n')
+    expect(table).not.toContain('Augis')
+    expect(table).toContain('\nBorchardt–Daniels, each run alone, not to be relied on: Run one 209.3 ±6.8 kJ/mol; Run two 209.3 kJ/mol\n')
+  })
+})
 
 describe('activation.json, as scripts rely on it', () => {
   const json = JSON.parse(textOf('json')) as Record<string, unknown>
@@ -388,7 +487,7 @@ describe('figures as SVG', () => {
 
 describe('the table on the screen', () => {
   it('gives a row a level, an interval where there is one, a dash where there is no number', () => {
-    const lines = shortTable(result).split('\n')
+    const lines = shortTable({ ...result, peakMethods: [] }).split('\n')
     expect(lines[1]?.trim()).toMatch(/^conversion +Friedman +Ozawa–Flynn–Wall$/)
     expect(lines[2]?.trim()).toMatch(/^0\.05 +211\.2 ±6\.1 +211\.2$/)
     expect(lines[4]?.trim()).toMatch(/^0\.15 +- +-$/)

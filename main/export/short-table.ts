@@ -15,6 +15,7 @@ export function shortTable(result: StudyResult): string {
     ...rows,
     ...means(result),
     ...kissinger(result),
+    ...peakMethods(result),
     '',
   ].join('\n')
 }
@@ -51,4 +52,27 @@ function kissinger({ kissinger: k }: StudyResult): string[] {
   return [
     `Kissinger, from the peaks: ${k.Ea_kJ_per_mol.toFixed(1)}${half === null ? '' : ` ±${intervalText(half)}`} kJ/mol, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s)`,
   ]
+}
+
+/** Methods that apply; Kissinger has its own line, and every run of a single-run method is one item of one line. */
+function peakMethods(result: StudyResult): string[] {
+  const texts = new Map<string, string[]>()
+  for (const {
+    method,
+    label,
+    runLabel,
+    applies,
+    Ea_kJ_per_mol: Ea,
+    lower95_kJ_per_mol: lower,
+    upper95_kJ_per_mol: upper,
+    lnA_per_s: lnA,
+  } of result.peakMethods) {
+    if (!applies || Ea === null || method === 'kissinger') continue
+    const half = halfWidth(Ea, lower, upper)
+    const energy = `${Ea.toFixed(1)}${half === null ? '' : ` ±${intervalText(half)}`} kJ/mol`
+    const text = runLabel === null ? `${energy}${lnA === null ? '' : `, ln A ${lnA.toFixed(2)} (A in 1/s)`}` : `${runLabel} ${energy}`
+    const heading = runLabel === null ? label : `${label}, each run alone, not to be relied on`
+    texts.set(heading, [...(texts.get(heading) ?? []), text])
+  }
+  return [...texts].map(([heading, items]) => `${heading}: ${items.join('; ')}`)
 }
