@@ -38,6 +38,8 @@ export function reviewedRun(id: string, rate_K_per_min: number, group: number, c
     heatingRateStandardError_K_per_min: 0.001,
     heatingRateSource: 'measured',
     holdTemperature_K: null,
+    holdStart_s: null,
+    conversionBeforeHold: null,
     rows: 1000,
     initialMass_kg: null,
     window: { kind: 'temperature', start_K: 400, end_K: 900 },

@@ -32,6 +32,8 @@ function runOf(i: number, change: Partial<RunResult> = {}): RunResult {
     heatingRateStandardError_K_per_min: 0.01,
     heatingRateSource: 'measured',
     holdTemperature_K: null,
+    holdStart_s: null,
+    conversionBeforeHold: null,
     rows: 5,
     initialMass_kg: 8e-6,
     window: { kind: 'temperature', start_K: 500, end_K: 700 },

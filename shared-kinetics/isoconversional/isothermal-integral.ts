@@ -1,4 +1,4 @@
-import { holdBand_K, startOfHold } from '../series/hold.ts'
+import { timeOfHold } from '../series/hold.ts'
 import type { RunAtLevels } from '../series/series-at-levels.ts'
 import { lineMethod } from './line-method.ts'
 import type { IsoconversionalMethod, MethodInfo } from './result.ts'
@@ -44,12 +44,5 @@ export const isothermalIntegral: IsoconversionalMethod = (series, context) => {
 /** From the start of the history; 0 for a run without one. */
 function startOfHold_s({ programme, history: { time_s, temperature_K } }: RunAtLevels): number {
   if (programme.kind !== 'isothermal' || time_s.length === 0) return 0
-  const row = startOfHold(temperature_K, { first: 0, last: time_s.length - 1 }, programme.temperature)
-  const from = time_s[0] ?? 0
-  const at = (time_s[row] ?? Number.NaN) - from
-  if (row === 0) return 0
-  const before = temperature_K[row - 1] ?? Number.NaN
-  const edge = programme.temperature + 0.5 * holdBand_K * Math.sign(before - programme.temperature)
-  const share = (edge - before) / ((temperature_K[row] ?? Number.NaN) - before)
-  return at - (1 - Math.min(1, Math.max(0, share))) * (at - ((time_s[row - 1] ?? Number.NaN) - from))
+  return timeOfHold(time_s, temperature_K, programme.temperature) - (time_s[0] ?? 0)
 }

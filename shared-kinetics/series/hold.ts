@@ -21,3 +21,17 @@ export function startOfHold(temperature_K: Float64Array, { first, last }: RowRan
   }
   return start
 }
+
+/**
+ * Time at which the temperature enters the band around that of the hold to stay in it, between rows by the straight line; that of the first row where it is inside
+ * from the start, NaN where it never stays.
+ */
+export function timeOfHold(time_s: Float64Array, temperature_K: Float64Array, hold_K: number): number {
+  const row = startOfHold(temperature_K, { first: 0, last: time_s.length - 1 }, hold_K)
+  const at = time_s[row] ?? Number.NaN
+  if (row === 0) return at
+  const before = temperature_K[row - 1] ?? Number.NaN
+  const edge = hold_K + 0.5 * holdBand_K * Math.sign(before - hold_K)
+  const share = (edge - before) / ((temperature_K[row] ?? Number.NaN) - before)
+  return at - (1 - Math.min(1, Math.max(0, share))) * (at - (time_s[row - 1] ?? Number.NaN))
+}

@@ -6,7 +6,7 @@ import { fromMass } from '../conversion/from-mass.ts'
 import { peakTemperature } from '../conversion/peak-temperature.ts'
 import { samplingOf, type Sampling } from '../conversion/sampling.ts'
 import { findWindow, rowsInWindow } from '../conversion/window.ts'
-import { isHold, startOfHold } from '../series/hold.ts'
+import { isHold, startOfHold, timeOfHold } from '../series/hold.ts'
 import type { RowRange } from '../series/main-heating.ts'
 import type { RunColumns, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
@@ -28,7 +28,8 @@ export interface ConvertedRun {
   /** NaN where the reaction rate has no maximum. */
   readonly peak_K: number
   readonly sampling: Sampling
-  /** Conversion where a hold begins; NaN for other programmes. */
+  /** Where a hold begins, on the run's own clock, and the conversion lost by then to the heating up; NaN for other programmes. */
+  readonly holdStart_s: number
   readonly conversionBeforeHold: number
   readonly curve: RunResult['curve']
 }
@@ -63,14 +64,21 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
     window: windowUsed(rows, range, settings.window, told.programme.kind === 'constant-heating-rate'),
     peak_K: peakTemperature(converted.curve),
     sampling: samplingOf(rows, range.first, converted.curve, info.label),
-    conversionBeforeHold: conversionBeforeHold(told, converted),
+    ...startOfTheHold(told, converted),
     curve: curveToDraw(rows, range, converted, quantity === 'heat-flow'),
   }
 }
 
-function conversionBeforeHold({ programme }: ToldProgramme, { curve: { temperature_K, conversion } }: Converted): number {
-  if (programme.kind !== 'isothermal') return Number.NaN
-  return conversion[startOfHold(temperature_K, { first: 0, last: temperature_K.length - 1 }, programme.temperature)] ?? Number.NaN
+function startOfTheHold(
+  { programme }: ToldProgramme,
+  { curve: { time_s, temperature_K, conversion } }: Converted,
+): Pick<ConvertedRun, 'holdStart_s' | 'conversionBeforeHold'> {
+  if (programme.kind !== 'isothermal') return { holdStart_s: Number.NaN, conversionBeforeHold: Number.NaN }
+  const row = startOfHold(temperature_K, { first: 0, last: temperature_K.length - 1 }, programme.temperature)
+  return {
+    holdStart_s: timeOfHold(time_s, temperature_K, programme.temperature),
+    conversionBeforeHold: conversion[row] ?? Number.NaN,
+  }
 }
 
 function rowsToUse(rows: UsableRows, { quantity, window, baseline }: ConversionSettings, label: string): RowRange {

@@ -148,7 +148,7 @@ describe('exact simulations', () => {
     expect(result.runs.map((run) => [run.programme, run.programmeGroup, run.holdTemperature_K])).toEqual(
       [530, 540, 550, 560].map((T, i) => ['isothermal', i, expect.closeTo(T, 9) as number]),
     )
-    expect(methodsOf(result)).toEqual(['friedman', 'vyazovkin', 'isothermal-integral'])
+    expect(methodsOf(result)).toEqual(['friedman', 'vyazovkin', 'vyazovkin-incremental', 'isothermal-integral'])
     for (const method of methodsOf(result)) expect(worst(result, method, 150)).toBeLessThan(0.5)
     expect(result.kissinger).toBeNull()
     expect(result.runs[0]?.window.kind).toBe('time')
@@ -160,7 +160,7 @@ describe('exact simulations', () => {
     const result = evaluate([500, 510, 520].map((hold) => massRun(`${hold}`, rampHoldRamp(hold))))
     expect(result.runs.map((run) => run.programme)).toEqual(['general', 'general', 'general'])
     expect(new Set(result.runs.map((run) => run.programmeGroup)).size).toBe(3)
-    expect(methodsOf(result)).toEqual(['friedman', 'vyazovkin'])
+    expect(methodsOf(result)).toEqual(['friedman', 'vyazovkin', 'vyazovkin-incremental'])
     expect(worst(result, 'vyazovkin', 150)).toBeLessThan(0.3)
     expect(worst(result, 'friedman', 150)).toBeLessThan(0.75)
   })

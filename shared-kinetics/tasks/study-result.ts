@@ -27,6 +27,10 @@ export interface RunResult {
   readonly heatingRateSource: 'measured' | 'option' | 'nominal' | null
   /** Mean temperature over the window of an isothermal run. */
   readonly holdTemperature_K: Maybe
+  /** Where the hold begins on the run's own clock, which is where the isothermal integral method counts time from; null for other programmes. */
+  readonly holdStart_s: Maybe
+  /** What had reacted by then, while the sample was heated up to the hold. */
+  readonly conversionBeforeHold: Maybe
   readonly rows: number
   readonly initialMass_kg: Maybe
   /** In temperature for constant heating rates, in time for the rest; the window that was used. */

@@ -102,6 +102,8 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
             heatingRateStandardError_K_per_min: Number.NaN,
             heatingRateSource: 'measured',
             holdTemperature_K: null,
+            holdStart_s: null,
+            conversionBeforeHold: null,
             rows: run.rows,
             initialMass_kg: null,
             window: { kind: 'temperature', start_K: 300, end_K: 400 },

@@ -1,5 +1,6 @@
 import { useMemo } from 'react'
 import { methodsOnRequest } from '../../../shared-kinetics/contract/methods-on-request.ts'
+import type { RunResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { runNames, runTones } from '../../../shared-kinetics/figure/run-place.ts'
 import { phiFigure } from '../../../shared-kinetics/figure/phi-figure.ts'
 import { straightLinesAtLevel, straightLinesFigure } from '../../../shared-kinetics/figure/straight-lines-figure.ts'
@@ -7,7 +8,7 @@ import { FigureChart } from '../../charts/FigureChart.tsx'
 import { RunMarker } from '../../charts/RunMarker.tsx'
 import { formatAtLevel, levelQuantity, type LevelQuantity } from '../../sheet/at-level.ts'
 import { Choice, Choices } from '../../sheet/Choice.tsx'
-import { count, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
+import { count, decimals, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
@@ -76,7 +77,7 @@ function Phi({ result, chosen, levelIndex, actions }: ActivationProps) {
 }
 
 /** Each run with the temperature at which it reaches the level: the numbers behind the points. */
-function RunLegend({ result, levelIndex }: ActivationProps) {
+function RunLegend({ result, levelIndex, chosen }: ActivationProps) {
   const colours = useColours()
   const names = runNames(result.runs)
   const tones = runTones(result)
@@ -88,11 +89,19 @@ function RunLegend({ result, levelIndex }: ActivationProps) {
           <RunMarker index={i} colour={colours.run(tones[i]?.place ?? 0)} />
           <span>
             {names[i]} <span className="run-legend-stand">{standText(formatAtLevel(run, levelIndex, quantity), quantity)}</span>
+            {chosen === 'isothermal-integral' && <span className="run-legend-stand">{holdText(run)}</span>}
           </span>
         </li>
       ))}
     </ul>
   )
+}
+
+/** Where the time of a hold is counted from, and what was lost by then: what the isothermal integral rests on. */
+function holdText({ holdStart_s, conversionBeforeHold }: RunResult): string {
+  if (holdStart_s === null) return ''
+  const lost = conversionBeforeHold === null ? '' : `, ${decimals(100 * conversionBeforeHold, 2)} % lost to the heating before`
+  return ` (time from ${decimals(holdStart_s / 60, 2)} min${lost})`
 }
 
 const standText = (text: string, { unit }: LevelQuantity): string => (text === '' ? 'not reached' : `${text} ${unit}`)

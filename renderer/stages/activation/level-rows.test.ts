@@ -18,6 +18,8 @@ const runAt = (rate: number, temperatures_K: readonly (number | null)[]): RunRes
   heatingRateStandardError_K_per_min: 0.01,
   heatingRateSource: 'measured',
   holdTemperature_K: null,
+  holdStart_s: null,
+  conversionBeforeHold: null,
   rows: 10,
   initialMass_kg: null,
   window: { kind: 'temperature', start_K: 400, end_K: 700 },
