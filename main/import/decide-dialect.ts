@@ -1,9 +1,10 @@
 import type { DecimalSignWord, DelimiterWord, ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import type { ImportContext } from './import-context.ts'
 import type { Refuse } from './import-refusal.ts'
-import { isMissingMark, isNumber } from './parse-number.ts'
-import { delimiterCharacter, splitCells, withoutEmptyEnd } from './split-cells.ts'
-import { isBlankLine, lineEnd, lineStart, lineText, type TextLines } from './text-lines.ts'
+import { byteKinds, cellText, findCells, type LineCells, newLineCells } from './line-cells.ts'
+import { numberInBytes } from './number-in-bytes.ts'
+import { isMissingMark, longestMissingMark } from './parse-number.ts'
+import { lineEnd, lineStart, type TextLines } from './text-lines.ts'
 
 /** How the cells of a file are written, and what its rows of numbers look like. */
 export interface Dialect {
@@ -89,27 +90,30 @@ function noTable(lines: TextLines, options: ImportOptions): readonly [string, st
   ]
 }
 
+/**
+ * Reads the lines under each delimiter and decimal sign until `enough` look like rows of numbers under one of them: so all are judged by
+ * the same lines.
+ */
 function readEachWay(lines: TextLines, options: ImportOptions, enough: number): readonly Stretch[] {
-  const stretches: Stretch[] = []
-  for (const delimiter of options.delimiter === undefined ? preference : [options.delimiter]) {
-    const signs: readonly DecimalSignWord[] = options.decimalSign === undefined ? ['point', 'comma'] : [options.decimalSign]
-    const readers = signs.map((decimal) => stretchReader(delimiter, decimal))
-    let read = 0
-    for (let i = 0; i < lines.count && read < enough; i++) {
-      if (isBlankLine(lines, i) || lineEnd(lines, i) - lineStart(lines, i) > longestLine) continue
-      const line = lineText(lines, i)
-      if (delimiter !== 'blanks' && !line.includes(delimiterCharacter[delimiter])) {
-        for (const reader of readers) reader.close()
-        continue
-      }
-      const quotes = line.includes('"')
-      const cells = withoutEmptyEnd(splitCells(line, delimiter))
+  const signs: readonly DecimalSignWord[] = options.decimalSign === undefined ? ['point', 'comma'] : [options.decimalSign]
+  const ways = (options.delimiter === undefined ? preference : [options.delimiter]).map((delimiter) => ({
+    delimiter,
+    kinds: byteKinds(delimiter),
+    readers: signs.map((decimal) => stretchReader(delimiter, decimal)),
+    read: 0,
+  }))
+  const cells = newLineCells(lines)
+  for (let i = 0; i < lines.count && ways.every((way) => way.read < enough); i++) {
+    if (lineEnd(lines, i) - lineStart(lines, i) > longestLine) continue
+    for (const way of ways) {
+      findCells(lines, i, way.delimiter, way.kinds, cells)
+      if (cells.count === 0) continue
       let likeData = false
-      for (const reader of readers) likeData = reader.read(cells, quotes) || likeData
-      if (likeData) read++
+      for (const reader of way.readers) likeData = reader.read(cells) || likeData
+      if (likeData) way.read++
     }
-    for (const reader of readers) stretches.push(reader.longest())
   }
+  const stretches = ways.flatMap((way) => way.readers.map((reader) => reader.longest()))
   return stretches.filter((s) => s.score > 0).sort((a, b) => b.score - a.score)
 }
 
@@ -122,6 +126,7 @@ function stretchReader(delimiter: DelimiterWord, decimal: DecimalSignWord) {
   let columns = 0
   let numeric: number[] = []
   let signs = false
+  const isNumeric: boolean[] = []
   const close = (): void => {
     if (score > best.score) best = { delimiter, decimal, rows, score, columns, numeric, signs }
     rows = 0
@@ -130,26 +135,37 @@ function stretchReader(delimiter: DelimiterWord, decimal: DecimalSignWord) {
     signs = false
   }
   return {
-    close,
-    read(cells: readonly string[], quotes: boolean): boolean {
+    /** Takes the next line that is not blank. @returns whether it looks like a row of numbers */
+    read(cells: LineCells): boolean {
+      // Spreadsheets leave empty cells behind at the end.
+      let width = cells.count
+      while (width > 0 && cells.from[width - 1] === cells.to[width - 1]) width--
       let numbers = 0
       let others = 0
-      const isNumeric = cells.map((cell) => {
-        const is = cell === '' || (isNumber(cell, decimal) && (delimiter !== 'comma' || decimal !== 'comma' || quotes))
-        if (cell !== '' && !isMissingMark(cell)) {
-          if (is) numbers++
-          else others++
-        }
-        return is
-      })
+      if (width < 2) {
+        close()
+        return false
+      }
+      for (let i = 0; i < width; i++) {
+        const from = cells.from[i] ?? 0
+        const to = cells.to[i] ?? 0
+        const isEmpty = from === to
+        const is = isEmpty || (!commaTwice(cells) && !Number.isNaN(numberInBytes(cells.bytes, from, to, decimal)))
+        isNumeric[i] = is
+        if (isEmpty) continue
+        if (is) numbers++
+        else if (to - from > longestMissingMark || !isMissingMark(cellText(cells, i))) others++
+      }
       const likeData = numbers >= 2 && numbers >= others
-      if (!likeData || cells.length !== columns) close()
+      if (!likeData || width !== columns) close()
       if (!likeData) return false
-      columns = cells.length
+      columns = width
       rows++
       score += numbers - 0.9 * others
-      for (let i = 0; i < isNumeric.length; i++) numeric[i] = (numeric[i] ?? 0) + (isNumeric[i] === true ? 1 : 0)
-      signs ||= cells.some((cell, i) => isNumeric[i] === true && /[.,]/.test(cell))
+      for (let i = 0; i < width; i++) {
+        numeric[i] = (numeric[i] ?? 0) + (isNumeric[i] === true ? 1 : 0)
+        signs ||= isNumeric[i] === true && holdsSign(cells, i)
+      }
       return true
     },
     longest(): Stretch {
@@ -157,4 +173,16 @@ function stretchReader(delimiter: DelimiterWord, decimal: DecimalSignWord) {
       return best
     },
   }
+
+  /** Unquoted, a comma cannot be both. */
+  function commaTwice(cells: LineCells): boolean {
+    return delimiter === 'comma' && decimal === 'comma' && !cells.quoted
+  }
+}
+
+/** A point or a comma stands in the cell. */
+function holdsSign(cells: LineCells, index: number): boolean {
+  const to = cells.to[index] ?? 0
+  for (let at = cells.from[index] ?? 0; at < to; at++) if (cells.bytes[at] === 46 || cells.bytes[at] === 44) return true
+  return false
 }

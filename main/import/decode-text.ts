@@ -4,6 +4,7 @@ import type { EncodingWord } from '../../shared-kinetics/contract/import-options
 import type { ImportDecision } from '../../shared-kinetics/series/run.ts'
 import type { Refuse } from './import-refusal.ts'
 import { binaryRemedy } from './refuse-binary.ts'
+import type { TextBytes } from './text-lines.ts'
 
 interface Encoding {
   readonly word: EncodingWord
@@ -13,23 +14,23 @@ interface Encoding {
 }
 
 /**
- * Bytes to text. In this order: what was stated, a byte-order mark, the NUL bytes of UTF-16, strict UTF-8, else Windows-1252
- * (of which Latin-1 as instruments write it is a part).
+ * Tells the encoding. In this order: what was stated, a byte-order mark, the NUL bytes of UTF-16, strict UTF-8, else Windows-1252
+ * (of which Latin-1 as instruments write it is a part). The text stays bytes, since numbers are read from those: UTF-16 becomes UTF-8.
  * @throws ImportRefusal for what is no text in any of these
  */
 export function decodeText(
   bytes: Uint8Array,
   stated: EncodingWord | undefined,
   refuse: Refuse,
-): { readonly text: string; readonly decision: ImportDecision } {
+): { readonly text: TextBytes; readonly decision: ImportDecision } {
   const encoding = decideEncoding(bytes, stated, refuse)
   const body = Buffer.from(bytes.buffer, bytes.byteOffset + encoding.skip, bytes.byteLength - encoding.skip)
   if (encoding.word === 'utf-8' && !isUtf8(body)) {
     throw refuse(null, 'The file is not valid UTF-8.', 'State another “encoding”: windows-1252, utf-16le or utf-16be.')
   }
-  const text = decode(body, encoding.word, refuse)
-  refuseControlCharacters(text, refuse)
-  if (text.trim() === '') throw refuse(null, 'The file holds nothing but blanks.', 'Export the run again.')
+  const text = asBytes(body, encoding.word, refuse)
+  refuseControlCharacters(text.bytes, refuse)
+  if (isBlank(text.bytes)) throw refuse(null, 'The file holds nothing but blanks.', 'Export the run again.')
   return { text, decision: { step: 'encoding', value: encoding.word, reason: encoding.reason } }
 }
 
@@ -71,11 +72,12 @@ function wideByNulBytes(bytes: Uint8Array): Encoding | null {
   return null
 }
 
-function decode(body: Buffer, word: EncodingWord, refuse: Refuse): string {
+function asBytes(body: Buffer, word: EncodingWord, refuse: Refuse): TextBytes {
+  // Plain ASCII is the same in both, and UTF-8 is the quicker to decode.
+  if (word === 'utf-8' || (word === 'windows-1252' && isAscii(body))) return { bytes: body, encoding: 'utf-8' }
+  if (word === 'windows-1252') return { bytes: body, encoding: word }
   try {
-    if (word === 'utf-8') return body.toString(isAscii(body) ? 'latin1' : 'utf8')
-    // Node 20's own decoder reads 0x80-0x9F of Windows-1252 as control characters; iconv-lite reads them right.
-    return iconv.decode(body, word, { stripBOM: false })
+    return { bytes: Buffer.from(iconv.decode(body, word, { stripBOM: false }), 'utf8'), encoding: 'utf-8' }
   } catch (error) {
     if (error instanceof Error && 'code' in error && error.code === 'ERR_STRING_TOO_LONG') {
       throw refuse(null, 'The file is longer than one text can be.', 'Export it in parts, or with a coarser time step.')
@@ -85,12 +87,20 @@ function decode(body: Buffer, word: EncodingWord, refuse: Refuse): string {
 }
 
 /** Control characters other than tab, line ends, form feed and the old end-of-file mark are not written by exports. */
-function refuseControlCharacters(text: string, refuse: Refuse): void {
-  const length = Math.min(text.length, 65_536)
+function refuseControlCharacters(bytes: Buffer, refuse: Refuse): void {
+  const length = Math.min(bytes.length, 65_536)
+  let characters = 0
   let controls = 0
   for (let i = 0; i < length; i++) {
-    const code = text.charCodeAt(i)
-    if (code < 9 || (code > 13 && code < 32 && code !== 26)) controls++
+    const byte = bytes[i] ?? 0
+    // Bytes that continue a character of UTF-8 count for none.
+    if ((byte & 0xc0) !== 0x80) characters++
+    if (byte < 9 || (byte > 13 && byte < 32 && byte !== 26)) controls++
   }
-  if (controls > length / 200) throw refuse(null, 'The file is not text: it is full of control characters.', binaryRemedy)
+  if (controls > characters / 200) throw refuse(null, 'The file is not text: it is full of control characters.', binaryRemedy)
+}
+
+function isBlank(bytes: Buffer): boolean {
+  const first = bytes.findIndex((byte) => byte > 32)
+  return first < 0 || ((bytes[first] ?? 0) >= 0x80 && bytes.toString('utf8').trim() === '')
 }

@@ -3,8 +3,8 @@ import type { DecimalSignWord } from '../../shared-kinetics/contract/import-opti
 const decimalCode: Readonly<Record<DecimalSignWord, number>> = { point: 46, comma: 44 }
 
 // 10^0 to 10^22 are exact in double precision, and so is every whole number up to 2^53.
-const powersOfTen = Float64Array.from({ length: 23 }, (_, i) => Number(`1e${i}`))
-const largestExact = 2 ** 53
+export const powersOfTen = Float64Array.from({ length: 23 }, (_, i) => Number(`1e${i}`))
+export const largestExact = 2 ** 53
 
 /**
  * The number written in `text` from `from` up to `to` (blanks around it trimmed by the caller), rounded as `Number()` rounds;
@@ -94,3 +94,4 @@ export function isNumber(cell: string, decimal: DecimalSignWord): boolean {
 
 /** A mark that stands for a number that was not to be had. It is no number, but a row that holds it is still a row of numbers. */
 export const isMissingMark = (cell: string): boolean => /^(?:nan|n\/?a|#n\/a|null|[+-]?inf(?:inity)?|-{1,3})$/i.test(cell)
+export const longestMissingMark = '+infinity'.length

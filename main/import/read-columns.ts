@@ -1,11 +1,13 @@
+import type { DecimalSignWord } from '../../shared-kinetics/contract/import-options.ts'
 import type { Dialect } from './decide-dialect.ts'
 import type { Layout } from './find-layout.ts'
 import type { ImportContext } from './import-context.ts'
 import { quoted, type Refuse } from './import-refusal.ts'
-import { parseNumber } from './parse-number.ts'
+import { byteKinds, cellText, findCells, type LineCells, newLineCells } from './line-cells.ts'
+import { numberInBytes } from './number-in-bytes.ts'
 import type { PlannedColumn } from './plan-columns.ts'
-import { delimiterCharacter, splitCells } from './split-cells.ts'
-import { isBlankCode, isBlankLine, lineEnd, lineStart, lineText, type TextLines } from './text-lines.ts'
+import { type ColumnsInProgress, readPlainRows } from './read-plain-rows.ts'
+import { lineEnd, type TextLines } from './text-lines.ts'
 
 /** The numbers of the planned columns as the file writes them; NaN where a cell is empty. */
 export interface RawTable {
@@ -15,15 +17,14 @@ export interface RawTable {
   readonly lineOfRow: Uint32Array
   /** By index of the column; undefined for a column that is set aside. */
   readonly columns: readonly (Float64Array | undefined)[]
-  /** Number of cells that are not empty, by index of the column. */
+  /** Number of cells that are not empty, by index of the column; of one that is set aside only whether there are any (0 or 1). */
   readonly filled: Uint32Array
 }
 
-const rowsBetweenChecks = 8192
-const quote = 34
+const linesBetweenChecks = 8192
 
 /**
- * Reads the rows of numbers straight from the text into columns.
+ * Reads the rows of numbers straight from the bytes into columns: plain lines all in one go, any other line cell by cell with more care.
  * @throws ImportRefusal naming line and cell for anything in a planned column that is no number, and for cells beyond the last heading
  */
 export function readColumns(
@@ -34,69 +35,91 @@ export function readColumns(
   context: ImportContext,
   refuse: Refuse,
 ): RawTable {
-  let rows = 0
-  for (let i = layout.firstData; i <= layout.lastData; i++) if (!isBlankLine(lines, i)) rows++
-  const lineOfRow = new Uint32Array(rows)
-  const filled = new Uint32Array(plan.length)
-  const columns = plan.map((column) => (column.quantity === null ? undefined : new Float64Array(rows).fill(Number.NaN)))
-  const { text } = lines
-
-  let row = 0
-  const take = (column: number, source: string, cellStart: number, cellEnd: number): void => {
-    let from = cellStart
-    let to = cellEnd
-    while (from < to && isBlankCode(source.charCodeAt(from))) from++
-    while (to > from && isBlankCode(source.charCodeAt(to - 1))) to--
-    if (from === to) return
-    const line = lineOfRow[row] ?? 0
-    if (column >= plan.length) {
-      const remedy =
-        'Remove what is too much in this line, or state the “delimiter” and the “decimal sign” (on the command line: --delimiter, --decimal-sign).'
-      throw refuse(
-        line,
-        `The row has more cells than there are columns: ${quoted(source.slice(from, to))} stands in cell ${column + 1}.`,
-        remedy,
-      )
+  const { delimiter, decimal } = dialect
+  const columns = emptyColumns(plan, layout.lastData - layout.firstData + 1)
+  const kinds = byteKinds(delimiter)
+  const cells = newLineCells(lines)
+  let index = layout.firstData
+  for (let check = index; index <= layout.lastData; ) {
+    check = Math.max(check, index + linesBetweenChecks)
+    const last = Math.min(check - 1, layout.lastData)
+    while (index <= last) {
+      index = readPlainRows(lines, index, last, delimiter, decimal, columns)
+      if (index > last) break
+      findCells(lines, index, delimiter, kinds, cells)
+      if (cells.count > 0) readRow(cells, index + 1, decimal, plan, columns, refuse)
+      index++
     }
-    filled[column] = (filled[column] ?? 0) + 1
-    const target = columns[column]
-    if (target === undefined) return
-    const value = parseNumber(source, from, to, dialect.decimal)
-    if (Number.isNaN(value)) throw notANumber(source.slice(from, to), line, plan[column]?.label ?? '', plan, refuse)
-    target[row] = value
+    context.checkCancelled()
+    context.progress(lineEnd(lines, last), lines.bytes.length)
   }
-
-  for (let index = layout.firstData; index <= layout.lastData; index++) {
-    if (isBlankLine(lines, index)) continue
-    lineOfRow[row] = index + 1
-    const start = lineStart(lines, index)
-    const end = lineEnd(lines, index)
-    if (dialect.delimiter === 'blanks' || holds(text, start, end, quote)) {
-      splitCells(lineText(lines, index), dialect.delimiter).forEach((cell, column) => take(column, cell, 0, cell.length))
-    } else {
-      const delimiter = delimiterCharacter[dialect.delimiter].charCodeAt(0)
-      let column = 0
-      let cellStart = start
-      for (let at = start; at <= end; at++) {
-        if (at < end && text.charCodeAt(at) !== delimiter) continue
-        take(column, text, cellStart, at)
-        column++
-        cellStart = at + 1
-      }
-    }
-    row++
-    if (row % rowsBetweenChecks === 0) {
-      context.checkCancelled()
-      context.progress(end, text.length)
-    }
-  }
-  context.progress(text.length, text.length)
-  return { rows, lineOfRow, columns, filled }
+  context.progress(lines.bytes.length, lines.bytes.length)
+  return tableOf(plan, columns)
 }
 
-function holds(text: string, start: number, end: number, code: number): boolean {
-  for (let at = start; at < end; at++) if (text.charCodeAt(at) === code) return true
-  return false
+function emptyColumns(plan: readonly PlannedColumn[], capacity: number): ColumnsInProgress {
+  let used = 0
+  const offsets = Int32Array.from(plan, (column) => (column.quantity === null ? -1 : capacity * used++))
+  return {
+    values: new Float64Array(capacity * used).fill(Number.NaN),
+    capacity,
+    offsets,
+    asideFilled: new Uint8Array(plan.length),
+    lineOfRow: new Uint32Array(capacity),
+    rows: 0,
+  }
+}
+
+function readRow(
+  cells: LineCells,
+  line: number,
+  decimal: DecimalSignWord,
+  plan: readonly PlannedColumn[],
+  columns: ColumnsInProgress,
+  refuse: Refuse,
+): void {
+  const { values, offsets, asideFilled, lineOfRow, rows } = columns
+  for (const offset of offsets) if (offset >= 0) values[offset + rows] = Number.NaN
+  for (let column = 0; column < cells.count; column++) {
+    const from = cells.from[column] ?? 0
+    const to = cells.to[column] ?? 0
+    if (from === to) continue
+    if (column >= plan.length) throw tooManyCells(cellText(cells, column), column, line, refuse)
+    const offset = offsets[column] ?? -1
+    if (offset < 0) {
+      asideFilled[column] = 1
+      continue
+    }
+    const value = numberInBytes(cells.bytes, from, to, decimal)
+    if (Number.isNaN(value)) throw notANumber(cellText(cells, column), line, plan[column]?.label ?? '', plan, refuse)
+    values[offset + rows] = value
+  }
+  lineOfRow[rows] = line
+  columns.rows++
+}
+
+function tableOf(plan: readonly PlannedColumn[], { values, offsets, asideFilled, lineOfRow, rows }: ColumnsInProgress): RawTable {
+  const columns = plan.map((_, i) => {
+    const offset = offsets[i] ?? -1
+    return offset < 0 ? undefined : values.subarray(offset, offset + rows)
+  })
+  const filled = Uint32Array.from(plan, (_, i) => {
+    const column = columns[i]
+    return column === undefined ? (asideFilled[i] ?? 0) : numbersIn(column)
+  })
+  return { rows, lineOfRow: lineOfRow.subarray(0, rows), columns, filled }
+}
+
+function numbersIn(column: Float64Array): number {
+  let count = 0
+  for (let row = 0; row < column.length; row++) if (!Number.isNaN(column[row])) count++
+  return count
+}
+
+function tooManyCells(cell: string, column: number, line: number, refuse: Refuse) {
+  const remedy =
+    'Remove what is too much in this line, or state the “delimiter” and the “decimal sign” (on the command line: --delimiter, --decimal-sign).'
+  return refuse(line, `The row has more cells than there are columns: ${quoted(cell)} stands in cell ${column + 1}.`, remedy)
 }
 
 function notANumber(cell: string, line: number, label: string, plan: readonly PlannedColumn[], refuse: Refuse) {

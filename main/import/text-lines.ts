@@ -1,12 +1,18 @@
+import iconv from 'iconv-lite'
 import type { ImportContext } from './import-context.ts'
 import type { Refuse } from './import-refusal.ts'
 
+/** A text as bytes. In both encodings a byte below 0x80 is the ASCII character and nothing else, so that numbers are read from the bytes. */
+export interface TextBytes {
+  readonly bytes: Buffer
+  readonly encoding: 'utf-8' | 'windows-1252'
+}
+
 /** A text and where its lines begin and end; CRLF, LF and CR may be mixed. Line i (from 0) is line i + 1 to a person. */
-export interface TextLines {
-  readonly text: string
+export interface TextLines extends TextBytes {
   readonly count: number
   readonly starts: Uint32Array
-  /** Past the last character of the line, its line end not included. */
+  /** Past the last byte of the line, its line end not included. */
   readonly ends: Uint32Array
 }
 
@@ -14,31 +20,35 @@ const largestLineCount = 20_000_000
 const lineFeed = 10
 const carriageReturn = 13
 
-export function textLines(text: string, context: ImportContext, refuse: Refuse): TextLines {
-  let starts = new Uint32Array(1024)
-  let ends = new Uint32Array(1024)
+export function textLines({ bytes, encoding }: TextBytes, context: ImportContext, refuse: Refuse): TextLines {
+  const { length } = bytes
+  // Lines of numbers are seldom shorter.
+  let starts = new Uint32Array(16 + (length >>> 4))
+  let ends = new Uint32Array(starts.length)
   let count = 0
   let start = 0
-  const close = (end: number): void => {
-    if (count === starts.length) {
-      if (count >= largestLineCount) throw refuse(null, 'The file has more than 20 million lines.', 'Export it with a coarser time step.')
+  for (let at = 0; at < length; at++) {
+    const byte = bytes[at] ?? 0
+    if (byte > carriageReturn || (byte !== lineFeed && byte !== carriageReturn)) continue
+    if (count >= largestLineCount) throw refuse(null, 'The file has more than 20 million lines.', 'Export it with a coarser time step.')
+    // One place is left for a last line without a line end.
+    if (count + 1 >= starts.length) {
       starts = grown(starts)
       ends = grown(ends)
       context.checkCancelled()
     }
     starts[count] = start
-    ends[count] = end
+    ends[count] = at
     count++
-  }
-  for (let at = 0; at < text.length; at++) {
-    const code = text.charCodeAt(at)
-    if (code !== lineFeed && code !== carriageReturn) continue
-    close(at)
-    if (code === carriageReturn && text.charCodeAt(at + 1) === lineFeed) at++
+    if (byte === carriageReturn && bytes[at + 1] === lineFeed) at++
     start = at + 1
   }
-  if (start < text.length) close(text.length)
-  return { text, count, starts, ends }
+  if (start < length) {
+    starts[count] = start
+    ends[count] = length
+    count++
+  }
+  return { bytes, encoding, count, starts, ends }
 }
 
 function grown(array: Uint32Array<ArrayBuffer>): Uint32Array<ArrayBuffer> {
@@ -47,18 +57,35 @@ function grown(array: Uint32Array<ArrayBuffer>): Uint32Array<ArrayBuffer> {
   return longer
 }
 
-export const lineStart = (lines: TextLines, index: number): number => lines.starts[index] ?? lines.text.length
-export const lineEnd = (lines: TextLines, index: number): number => lines.ends[index] ?? lines.text.length
+export const lineStart = (lines: TextLines, index: number): number => lines.starts[index] ?? lines.bytes.length
+export const lineEnd = (lines: TextLines, index: number): number => lines.ends[index] ?? lines.bytes.length
 
-export const lineText = (lines: TextLines, index: number): string => lines.text.slice(lineStart(lines, index), lineEnd(lines, index))
+export function lineText(lines: TextLines, index: number): string {
+  const line = lines.bytes.subarray(lineStart(lines, index), lineEnd(lines, index))
+  // Node 20's own decoder reads 0x80-0x9F of Windows-1252 as control characters; iconv-lite reads them right.
+  return lines.encoding === 'utf-8' ? line.toString('utf8') : iconv.decode(line, lines.encoding, { stripBOM: false })
+}
 
 /** Nothing but blanks in the line. */
 export function isBlankLine(lines: TextLines, index: number): boolean {
   const end = lineEnd(lines, index)
-  for (let at = lineStart(lines, index); at < end; at++) if (!isBlankCode(lines.text.charCodeAt(at))) return false
+  for (let at = lineStart(lines, index); at < end; at++) {
+    const byte = lines.bytes[at] ?? 0
+    if (byte >= 0x80) return trimmed(lineText(lines, index)) === ''
+    if (!isBlankCode(byte)) return false
+  }
   return true
 }
 
 /** Blank, tab, no-break blank, vertical tab, form feed, the old end-of-file mark. */
 export const isBlankCode = (code: number): boolean =>
   code === 32 || code === 9 || code === 0xa0 || code === 11 || code === 12 || code === 26 || code === 0xfeff
+
+/** Without the blanks around it. */
+export function trimmed(text: string): string {
+  let from = 0
+  let to = text.length
+  while (from < to && isBlankCode(text.charCodeAt(from))) from++
+  while (to > from && isBlankCode(text.charCodeAt(to - 1))) to--
+  return text.slice(from, to)
+}
