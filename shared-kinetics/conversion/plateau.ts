@@ -26,8 +26,12 @@ export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | '
     const [from, to] = end === 'start' ? [0, rows] : [n - rows, n]
     const { slope } = lineFit(time.subarray(from, to), y.subarray(from, to))
     const length = (time[to - 1] ?? 0) - (time[from] ?? 0)
-    const noise = noiseOfMeans(blocksOf(time, y, rows), noiseOfRows)
-    if (Math.abs(slope) * length > certainDrift * noise) {
+    const drift = Math.abs(slope) * length
+    // The means of all blocks are asked only where noise that is independent from row to row does not explain the drift.
+    if (
+      drift > certainDrift * (noiseOfRows / Math.sqrt(rowsInBlocks(n, rows))) &&
+      drift > certainDrift * noiseOfMeans(blocksOf(time, y, rows), noiseOfRows)
+    ) {
       const outermost = time[end === 'start' ? 0 : n - 1] ?? Number.NaN
       return localPolynomialAt(time, y, outermost, { halfWidth: 0, degree: 2, minimumPoints: rows }).value
     }
@@ -48,8 +52,11 @@ export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | '
   return value
 }
 
+const numberOfBlocks = (n: number, rows: number): number => Math.max(1, Math.floor(n / rows))
+const rowsInBlocks = (n: number, rows: number): number => n / numberOfBlocks(n, rows)
+
 const blocksOf = (time: Float64Array, y: Float64Array, rows: number): CellMeans =>
-  cellMeans(time, y, 0, time.length - 1, Math.max(1, Math.floor(time.length / rows)))
+  cellMeans(time, y, 0, time.length - 1, numberOfBlocks(time.length, rows))
 
 /**
  * Standard deviation of the means of blocks. From the means themselves where there are about a hundred, most of which lie outside the reaction or follow it smoothly:

@@ -132,9 +132,10 @@ function durationAtLargestRate(time: Float64Array, rising: Float64Array): number
   let shortest = Infinity
   let from = 0
   for (let to = 0; to < rising.length; to++) {
-    while (from + 1 < to && (rising[to] ?? 0) - (rising[from + 1] ?? 0) >= 0.1) from++
-    const rise = (rising[to] ?? 0) - (rising[from] ?? 0)
-    if (rise >= 0.1) shortest = Math.min(shortest, ((time[to] ?? 0) - (time[from] ?? 0)) / rise)
+    const here = rising[to] as number
+    while (from + 1 < to && here - (rising[from + 1] as number) >= 0.1) from++
+    const rise = here - (rising[from] as number)
+    if (rise >= 0.1) shortest = Math.min(shortest, ((time[to] as number) - (time[from] as number)) / rise)
   }
   return shortest
 }

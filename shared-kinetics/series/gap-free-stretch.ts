@@ -1,3 +1,4 @@
+import { orderStatistic } from '../numerics/order-statistic.ts'
 import type { RowRange } from './main-heating.ts'
 
 /** A step of time longer than so many usual ones is a gap. */
@@ -11,9 +12,7 @@ export function gapsOfTime(time_s: Float64Array, first: number, last: number): R
   const steps = stepsOf(time_s, first, last)
   const gap = gapInSteps * middle(steps)
   const gaps: RowRange[] = []
-  steps.forEach((step, i) => {
-    if (step > gap) gaps.push({ first: first + i, last: first + i + 1 })
-  })
+  for (let i = 0; i < steps.length; i++) if ((steps[i] as number) > gap) gaps.push({ first: first + i, last: first + i + 1 })
   return gaps
 }
 
@@ -22,7 +21,8 @@ export function gapsOfTime(time_s: Float64Array, first: number, last: number): R
  * together from pieces have both.
  */
 export function longestGapFreeStretch(time_s: Float64Array, temperature_K: Float64Array, first: number, last: number): RowRange {
-  const temperatureSteps = stepsOf(temperature_K, first, last).map(Math.abs)
+  const temperatureSteps = stepsOf(temperature_K, first, last)
+  for (let i = 0; i < temperatureSteps.length; i++) temperatureSteps[i] = Math.abs(temperatureSteps[i] as number)
   const splice = Math.max(smallestSplice_K, spliceInSteps * middle(temperatureSteps))
   const gaps = new Set(gapsOfTime(time_s, first, last).map((gap) => gap.first))
   let best: RowRange = { first, last: first }
@@ -37,8 +37,8 @@ export function longestGapFreeStretch(time_s: Float64Array, temperature_K: Float
 
 function stepsOf(values: Float64Array, first: number, last: number): Float64Array {
   const steps = new Float64Array(Math.max(0, last - first))
-  for (let i = 0; i < steps.length; i++) steps[i] = (values[first + i + 1] ?? 0) - (values[first + i] ?? 0)
+  for (let i = 0; i < steps.length; i++) steps[i] = (values[first + i + 1] as number) - (values[first + i] as number)
   return steps
 }
 
-const middle = (values: Float64Array): number => values.toSorted()[values.length >> 1] ?? 0
+const middle = (values: Float64Array): number => (values.length === 0 ? 0 : orderStatistic(values.slice(), values.length >> 1))

@@ -19,9 +19,10 @@ export function mainHeating(temperature_K: Float64Array): RowRange {
   const n = temperature_K.length
   let lowest = Infinity
   let highest = -Infinity
-  for (const value of temperature_K) {
-    lowest = Math.min(lowest, value)
-    highest = Math.max(highest, value)
+  for (let i = 0; i < n; i++) {
+    const value = temperature_K[i] as number
+    if (value < lowest) lowest = value
+    if (value > highest) highest = value
   }
   if (isHold(temperature_K, { first: 0, last: n - 1 })) return { first: 0, last: n - 1 }
   const reversal = Math.max(smallestReversal_K, 0.02 * (highest - lowest))

@@ -47,6 +47,16 @@ export function usableRows(columns: RunColumns, signalIndex: number, nominal: No
 }
 
 function rowsWithMeasuredTime(time: Float64Array, temperature: Float64Array, signal: Float64Array, label: string): UsableRows {
+  if (allUsable(time, temperature, signal)) {
+    enough(time.length, label)
+    return {
+      time_s: column(fromZero(time), 's'),
+      temperature_K: column(temperature, 'K'),
+      signal,
+      rebuiltFrom: null,
+      setAside: { withoutNumber: 0, sameTime: 0, behind: [] },
+    }
+  }
   const keptTime = new Float64Array(time.length)
   const keptTemperature = new Float64Array(time.length)
   const keptSignal = new Float64Array(time.length)
@@ -58,9 +68,9 @@ function rowsWithMeasuredTime(time: Float64Array, temperature: Float64Array, sig
   let backward = 0
   let firstBackward = -1
   for (let i = 0; i < time.length; i++) {
-    const t = time[i] ?? Number.NaN
-    const T = temperature[i] ?? Number.NaN
-    const y = signal[i] ?? Number.NaN
+    const t = time[i] as number
+    const T = temperature[i] as number
+    const y = signal[i] as number
     if (!Number.isFinite(t) || !Number.isFinite(T) || !Number.isFinite(y)) {
       withoutNumber++
       continue
@@ -95,17 +105,35 @@ function rowsWithMeasuredTime(time: Float64Array, temperature: Float64Array, sig
     )
   }
   enough(kept, label)
-  const start = keptTime[0] ?? 0
   return {
-    time_s: column(
-      keptTime.slice(0, kept).map((t) => t - start),
-      's',
-    ),
-    temperature_K: column(keptTemperature.slice(0, kept), 'K'),
-    signal: keptSignal.slice(0, kept),
+    time_s: column(fromZero(keptTime.subarray(0, kept)), 's'),
+    temperature_K: column(keptTemperature.subarray(0, kept), 'K'),
+    signal: keptSignal.subarray(0, kept),
     rebuiltFrom: null,
     setAside: { withoutNumber, sameTime, behind },
   }
+}
+
+/** Every number is finite and time ascends: nothing is set aside, and the columns serve as they are. */
+function allUsable(time: Float64Array, temperature: Float64Array, signal: Float64Array): boolean {
+  let latest = -Infinity
+  for (let i = 0; i < time.length; i++) {
+    const t = time[i] as number
+    const T = temperature[i] as number
+    const y = signal[i] as number
+    if (!(t > latest && t < Infinity && T > -Infinity && T < Infinity && y > -Infinity && y < Infinity)) return false
+    latest = t
+  }
+  return true
+}
+
+/** The same times counted from the first; they themselves where that is 0. */
+function fromZero(time: Float64Array): Float64Array {
+  const start = time[0] ?? 0
+  if (start === 0) return time
+  const counted = new Float64Array(time.length)
+  for (let i = 0; i < time.length; i++) counted[i] = (time[i] as number) - start
+  return counted
 }
 
 function rowsWithRebuiltTime(

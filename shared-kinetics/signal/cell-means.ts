@@ -26,9 +26,9 @@ export function cellMeans(x: Float64Array, y: Float64Array, first: number, last:
     let count = 0
     let sumX = 0
     let sumY = 0
-    while (row <= last && (x[row] ?? Number.NaN) < to) {
-      sumX += (x[row] ?? Number.NaN) - middle
-      sumY += y[row] ?? Number.NaN
+    while (row <= last && (x[row] as number) < to) {
+      sumX += (x[row] as number) - middle
+      sumY += y[row] as number
       count++
       row++
     }

@@ -17,11 +17,18 @@ export function decimate(curves: readonly Float64Array[], mostPoints = 1000): Ui
     for (const curve of curves) {
       let lowest = -1
       let highest = -1
+      let low = Infinity
+      let high = -Infinity
       for (let i = from; i < to; i++) {
-        const value = curve[i] ?? Number.NaN
-        if (Number.isNaN(value)) continue
-        if (lowest < 0 || value < (curve[lowest] ?? 0)) lowest = i
-        if (highest < 0 || value > (curve[highest] ?? 0)) highest = i
+        const value = curve[i] as number
+        if (value < low || (lowest < 0 && value === low)) {
+          low = value
+          lowest = i
+        }
+        if (value > high || (highest < 0 && value === high)) {
+          high = value
+          highest = i
+        }
       }
       if (lowest >= 0) kept.add(lowest).add(highest)
     }

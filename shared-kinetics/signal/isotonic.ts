@@ -9,22 +9,23 @@ export function isotonic(y: ArrayLike<number>): Float64Array {
   const count = new Int32Array(n)
   let blocks = 0
   for (let i = 0; i < n; i++) {
-    mean[blocks] = y[i] ?? Number.NaN
-    count[blocks] = 1
-    blocks++
-    while (blocks > 1 && (mean[blocks - 2] ?? 0) > (mean[blocks - 1] ?? 0)) {
-      const a = count[blocks - 2] ?? 0
-      const b = count[blocks - 1] ?? 0
-      mean[blocks - 2] = (a * (mean[blocks - 2] ?? 0) + b * (mean[blocks - 1] ?? 0)) / (a + b)
-      count[blocks - 2] = a + b
+    let top = y[i] as number
+    let rows = 1
+    while (blocks > 0 && (mean[blocks - 1] as number) > top) {
+      const before = count[blocks - 1] as number
+      top = (before * (mean[blocks - 1] as number) + rows * top) / (before + rows)
+      rows += before
       blocks--
     }
+    mean[blocks] = top
+    count[blocks] = rows
+    blocks++
   }
   const out = new Float64Array(n)
   let at = 0
   for (let block = 0; block < blocks; block++) {
-    out.fill(mean[block] ?? Number.NaN, at, at + (count[block] ?? 0))
-    at += count[block] ?? 0
+    const value = mean[block] as number
+    for (const end = at + (count[block] as number); at < end; at++) out[at] = value
   }
   return out
 }

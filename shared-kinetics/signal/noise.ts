@@ -21,21 +21,22 @@ export function noiseOf(x: Float64Array, y: Float64Array, first: number, last: n
   const scaled = new Float64Array(Math.max(0, Math.ceil((last - first + 1 - 4 * stride) / every)))
   let count = 0
   for (let i = first + 2 * stride; i <= last - 2 * stride; i += every) {
-    const at = x[i] ?? Number.NaN
-    let estimate = 0
-    let squares = 1
-    for (let k = -2; k <= 2; k++) {
-      if (k === 0) continue
-      let weight = 1
-      for (let m = -2; m <= 2; m++) {
-        if (m === 0 || m === k) continue
-        const other = x[i + m * stride] ?? Number.NaN
-        weight *= (at - other) / ((x[i + k * stride] ?? Number.NaN) - other)
-      }
-      estimate += weight * (y[i + k * stride] ?? Number.NaN)
-      squares += weight * weight
-    }
-    scaled[count++] = Math.abs((y[i] ?? Number.NaN) - estimate) / Math.sqrt(squares)
+    const at = x[i] as number
+    const a = (x[i - 2 * stride] as number) - at
+    const b = (x[i - stride] as number) - at
+    const c = (x[i + stride] as number) - at
+    const d = (x[i + 2 * stride] as number) - at
+    // Lagrange's weights of the four samples at the place of the fifth.
+    const wa = (b * c * d) / ((b - a) * (c - a) * (d - a))
+    const wb = (a * c * d) / ((a - b) * (c - b) * (d - b))
+    const wc = (a * b * d) / ((a - c) * (b - c) * (d - c))
+    const wd = (a * b * c) / ((a - d) * (b - d) * (c - d))
+    const estimate =
+      wa * (y[i - 2 * stride] as number) +
+      wb * (y[i - stride] as number) +
+      wc * (y[i + stride] as number) +
+      wd * (y[i + 2 * stride] as number)
+    scaled[count++] = Math.abs((y[i] as number) - estimate) / Math.sqrt(1 + wa * wa + wb * wb + wc * wc + wd * wd)
   }
   return madToStandardDeviation * median(scaled)
 }
