@@ -11,6 +11,7 @@ export const findingCodes = [
   'heating-rate-not-constant',
   'order-broken',
   'method-does-not-apply',
+  'outside-scope-of-standard',
   'signal-chosen',
   'time-rebuilt',
   'window-cuts-reaction',

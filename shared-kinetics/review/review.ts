@@ -15,6 +15,7 @@ import { levelWithoutEnergy } from './rules/level-without-energy.ts'
 import { methodDoesNotApply } from './rules/method-does-not-apply.ts'
 import { narrowHeatingRateSpread } from './rules/narrow-heating-rate-spread.ts'
 import { orderBroken } from './rules/order-broken.ts'
+import { outsideScopeOfStandard } from './rules/outside-scope-of-standard.ts'
 import { outlierRun } from './rules/outlier-run.ts'
 import { peaksAtDifferentConversion } from './rules/peaks-at-different-conversion.ts'
 import { replicatesDisagree } from './rules/replicates-disagree.ts'
@@ -48,6 +49,7 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   integralLagsDifferential,
   intervalWideBecauseFewRuns,
   methodDoesNotApply,
+  outsideScopeOfStandard,
   heatingRateNotConstant,
   signalChosen,
   timeRebuilt,
