@@ -14,6 +14,7 @@ export interface RunToReview {
   readonly rateAtEnds?: ReviewedRun['rateAtEnds']
   readonly baselineKind?: ReviewedRun['baselineKind']
   readonly sampling?: Partial<ReviewedRun['sampling']>
+  readonly timeNoiseAtLevel_s?: readonly number[]
 }
 
 /** A run at a constant heating rate with nothing to remark on. */
@@ -68,6 +69,7 @@ export function reviewedRun(id: string, rate_K_per_min: number, group: number, c
     rateAtEnds: change.rateAtEnds ?? { start: 0, end: 0 },
     baselineKind: change.baselineKind ?? null,
     sampling,
+    timeNoiseAtLevel_s: change.timeNoiseAtLevel_s ?? levels.map(() => 0),
   }
 }
 

@@ -25,6 +25,8 @@ export const findingCodes = [
   'runs-do-not-agree',
   'outlier-run',
   'replicates-disagree',
+  'lack-of-fit',
+  'unequal-variance',
   'level-without-energy',
   'energy-not-positive',
   'peaks-at-different-conversion',

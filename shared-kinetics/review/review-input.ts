@@ -17,6 +17,8 @@ export interface ReviewedRun {
   /** The baseline that was drawn under a heat flow; null for other signals. */
   readonly baselineKind: HeatFlowBaseline | null
   readonly sampling: Sampling
+  /** Standard error of the time at which each level is passed, as the noise of the signal leaves it; NaN where the level is not reached. */
+  readonly timeNoiseAtLevel_s: ArrayLike<number>
 }
 
 /** A method that was left out, and what for. */

@@ -10,6 +10,7 @@ import { heatingRateNotConstant } from './rules/heating-rate-not-constant.ts'
 import { importNotes } from './rules/import-notes.ts'
 import { integralLagsDifferential } from './rules/integral-lags-differential.ts'
 import { intervalWideBecauseFewRuns } from './rules/interval-wide-because-few-runs.ts'
+import { lackOfFit } from './rules/lack-of-fit.ts'
 import { levelNotReached } from './rules/level-not-reached.ts'
 import { levelWithoutEnergy } from './rules/level-without-energy.ts'
 import { methodDoesNotApply } from './rules/method-does-not-apply.ts'
@@ -26,6 +27,7 @@ import { samplingCoarse } from './rules/sampling-coarse.ts'
 import { signalChosen } from './rules/signal-chosen.ts'
 import { timeRebuilt } from './rules/time-rebuilt.ts'
 import { tooFewProgrammes } from './rules/too-few-programmes.ts'
+import { unequalVariance } from './rules/unequal-variance.ts'
 import { windowCutsReaction } from './rules/window-cuts-reaction.ts'
 
 const rules: readonly ((input: ReviewInput) => Finding[])[] = [
@@ -40,6 +42,7 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   orderBroken,
   outlierRun,
   replicatesDisagree,
+  lackOfFit,
   runsDoNotAgree,
   levelNotReached,
   levelWithoutEnergy,
@@ -48,6 +51,7 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   peaksAtDifferentConversion,
   integralLagsDifferential,
   intervalWideBecauseFewRuns,
+  unequalVariance,
   methodDoesNotApply,
   outsideScopeOfStandard,
   heatingRateNotConstant,

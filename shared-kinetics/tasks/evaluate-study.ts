@@ -1,3 +1,4 @@
+import { noiseAtLevels } from '../conversion/noise-at-levels.ts'
 import { methods } from '../isoconversional/registry.ts'
 import type { TaskContext } from '../isoconversional/result.ts'
 import { review } from '../review/review.ts'
@@ -60,13 +61,14 @@ export function evaluateStudy(
   const findings = review({
     study,
     result,
-    runs: runs.map(({ info, converted }, i) => ({
+    runs: runs.map(({ info, converted, levels }, i) => ({
       info,
       result: itemAt(result.runs, i),
       heatingRateSpread: converted.told.heatingRateSpread,
       rateAtEnds: converted.converted.rateAtEnds,
       baselineKind: converted.converted.baselineKind,
       sampling: converted.sampling,
+      timeNoiseAtLevel_s: noiseAtLevels(converted.converted.curve, settings.levels, levels).time_s,
     })),
     unusable,
     leftOut: runs.length === 0 ? [] : [...leftOut, ...kissingerLeftOut],
