@@ -8,6 +8,7 @@ import { createEventHub } from './event-hub.ts'
 import { evaluateHandlers } from './handlers/evaluate.ts'
 import type { HandlerTable, ProgramParts, RunningImports, Shell } from './handlers/handler-table.ts'
 import { importHandlers } from './handlers/import.ts'
+import { rateConstantHandlers } from './handlers/rate-constants.ts'
 import { studyHandlers } from './handlers/study.ts'
 import { uploadHandlers } from './handlers/upload.ts'
 import type { TaskPool } from './host-tasks.ts'
@@ -61,6 +62,7 @@ export function createHost(options: HostOptions): Host {
       ...uploadHandlers(context),
       ...importHandlers(context),
       ...evaluateHandlers(context),
+      ...rateConstantHandlers(context),
     }
     const cancelAll = (): void => {
       evaluation.cancel()

@@ -1,5 +1,7 @@
 import type { TaskContext } from '../../shared-kinetics/isoconversional/result.ts'
 import type { RunColumns, RunInfo } from '../../shared-kinetics/series/run.ts'
+import type { RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
+import type { RateConstantsResult } from '../../shared-kinetics/tasks/rate-constants-result.ts'
 import type { StudyInput } from '../../shared-kinetics/tasks/study-input.ts'
 import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import type { RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
@@ -16,6 +18,7 @@ export interface HostTasks {
     input: { readonly study: StudyInput; readonly columns: ReadonlyMap<string, RunColumns> }
     answer: StudyResult
   }
+  'evaluate-rate-constants': { input: { readonly table: RateConstantTable }; answer: RateConstantsResult }
   /** Reads one export. A file that cannot be used is an answer, not a failure. */
   'import-file': {
     input: { readonly fileName: string; readonly bytes: Uint8Array }

@@ -15,6 +15,7 @@ export function createTaskTable(importOptions: ImportOptions = {}): TaskTable {
   const cache: EvaluationCache = new Map()
   return {
     'evaluate-study': ({ study, columns }, context) => taskMap['evaluate-study'](study, columns, context, cache),
+    'evaluate-rate-constants': ({ table }) => taskMap['evaluate-rate-constants'](table),
     'import-file': ({ fileName, bytes }, context) => {
       try {
         // Out of shared memory: text decoders do not take it everywhere.

@@ -26,7 +26,7 @@ export type RateConstantColumn =
 const temperatureNames = /^(?:t|temp|temperature|temperatur|ϑ|θ)(?:[\s_.,:;/()[\]°]|$)/i
 const inverseNames = /^(?:(?:1000|1e3|10\^?3)\s*k?|1)\s*\/\s*\(?\s*t\b|^t\s*\^?\s*-1\b|^(?:inverse|reciprocal)\s+(?:absolute\s+)?temp/i
 const rateNames =
-  /^(?:k|rate\s*const(?:ant|\.)?(?:\s*\(?k\)?)?|rate\s*coefficient(?:\s*\(?k\)?)?|k\s*_?\s*(?:obs|app|eff|exp|calc|\d))(?![a-z])/i
+  /^(?:k[\s_]*(?:obs|app|eff|exp|calc|\d)|k|rate[\s_]*const(?:ant|\.)?(?:[\s_]*\(?k\)?(?![a-z]))?|rate[\s_]*coefficient(?:[\s_]*\(?k\)?(?![a-z]))?)(?![a-z])/i
 const uncertaintyNames =
   /^(?:u\s*\(|±|\+\/-|σ|sigma|s\.?\s?e\.?(?![a-z])|s\.?\s?d\.?(?![a-z])|std|stdev|standard\s+(?:error|deviation|uncertainty)|(?:relative\s+)?(?:uncertainty|error)|rel\.?\s+|d(?:elta\s*)?k(?![a-z])|Δk|err(?![a-z]))/i
 const labelNames = /^(?:sample|label|run|name|no\.?|nr\.?|number|#|id|point|note|remark|comment|source|ref)(?![a-z])/i
@@ -88,7 +88,9 @@ function rateConstant(heading: string): RateConstantColumn | null {
   if (match === null || (log === null && /^K(?![a-z_])/.test(name) && name.length === 1)) return null
   const form = log === null ? 'k' : /^ln/i.test(log[1] ?? '') ? 'ln' : 'log10'
   let rest = name.slice(match[0].length)
-  if (log !== null && /[([{]\s*$/.test(log[0])) rest = rest.replace(/[)\]}]\s*$/, '').replace(/^\s*[)\]}]/, '')
+  // `ln(k) …` closes its bracket behind k, `ln(k/s-1)` at the end.
+  if (log !== null && /[([{]\s*$/.test(log[0]))
+    rest = /^\s*[)\]}]/.test(rest) ? rest.replace(/^\s*[)\]}]/, '') : rest.replace(/[)\]}]\s*$/, '')
   const after = /^\s*(?:·|x)\s*/i.exec(rest)
   const afterPower = after === null ? null : power.exec(rest.slice(after[0].length))
   if (after !== null && afterPower !== null) rest = rest.slice(after[0].length + afterPower[0].length)

@@ -7,7 +7,7 @@ import { quoted, type Refuse } from './import-refusal.ts'
 import { isMissingMark } from './parse-number.ts'
 import { numberCell, type CellReading, type NumberCell } from './rate-constant-cells.ts'
 import type { Placed, RateConstantColumns } from './rate-constant-columns.ts'
-import { type Ask, unitRemedy } from './rate-constant-table.ts'
+import { type Ask, unitRemedy } from './rate-constant-question.ts'
 
 export interface RateConstantRows {
   readonly rows: readonly RateConstantRow[]

@@ -8,17 +8,8 @@ import { ImportRefusal, type Refuse } from './import-refusal.ts'
 import { refuseBinary } from './refuse-binary.ts'
 import { cellReadings, linesOf, type CellReading } from './rate-constant-cells.ts'
 import { planRateConstantColumns } from './rate-constant-columns.ts'
+import { RateConstantQuestion, unitRemedy, type Ask } from './rate-constant-question.ts'
 import { readRateConstantRows } from './rate-constant-rows.ts'
-
-/** A table that can be read once a person states what it does not say. */
-export class RateConstantQuestion extends ImportRefusal {
-  readonly ask: 'temperature-unit' | 'decimal-sign'
-
-  constructor(fileName: string, line: number | null, reason: string, remedy: string, ask: RateConstantQuestion['ask']) {
-    super(fileName, line, reason, remedy)
-    this.ask = ask
-  }
-}
 
 export interface RateConstantText {
   readonly text: string
@@ -51,8 +42,7 @@ export function readRateConstantFile(name: string, bytes: Uint8Array, options: R
  */
 export function readRateConstantText(input: RateConstantText, options: RateConstantReadOptions): RateConstantTable {
   const refuse: Refuse = (line, reason, remedy) => new ImportRefusal(input.name, line, reason, remedy)
-  const ask = (line: number | null, reason: string, remedy: string, what: RateConstantQuestion['ask']): RateConstantQuestion =>
-    new RateConstantQuestion(input.name, line, reason, remedy, what)
+  const ask: Ask = (line, reason, remedy, what) => new RateConstantQuestion(input.name, line, reason, remedy, what)
   if (options.rateUnit !== undefined) {
     const stated = parseRateUnit(options.rateUnit)
     if (!stated.ok) throw refuse(null, `The unit stated for the rate constants is not known: ${stated.reason}.`, unitRemedy)
@@ -94,10 +84,6 @@ function attempt(read: () => RateConstantTable): RateConstantTable | ImportRefus
     throw error
   }
 }
-
-export const unitRemedy = 'Units of rate constants are such as 1/s, 1/min, 1/h or L/(mol s).'
-
-export type Ask = (line: number | null, reason: string, remedy: string, what: RateConstantQuestion['ask']) => RateConstantQuestion
 
 function tableFrom(
   reading: CellReading,

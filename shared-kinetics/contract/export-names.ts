@@ -1,6 +1,6 @@
 const suffixes = /\.(csv|tsv|txt|dat|asc)$/i
 /** Texts that lie beside exports, and what this program itself has written there. */
-const notExports = /^\.|^(readme|licen[cs]e|notice|copying|changelog)\b|^activation\.(csv|csv\.txt|json|svg)$/i
+const notExports = /^\.|^(readme|licen[cs]e|notice|copying|changelog)\b|^(?:activation|rate-constants)\.(csv|csv\.txt|json|svg)$/i
 const natural = new Intl.Collator('en', { numeric: true })
 
 /** What a folder is asked to hold, in words. */

@@ -1,6 +1,9 @@
 import * as z from 'zod/mini'
+import type { RateConstantTable } from '../rate-constants/rate-constant-table.ts'
+import type { RateConstantsResult } from '../tasks/rate-constants-result.ts'
 import type { StudyResult } from '../tasks/study-result.ts'
 import type { DeepReadonly } from './deep-readonly.ts'
+import { rateConstantLimits, rateConstantReadOptionsSchema } from './rate-constant-schema.ts'
 import { studyChangeSchema } from './study-change.ts'
 import type { StudyDocument } from './study-document.ts'
 
@@ -44,7 +47,21 @@ export const requestSchemas = {
   /** `noteLeftOut`: files that cannot be used are noted in the study, so that its review and every export name them. */
   'runs.import': z.strictObject({ uploadIds: z.array(id).check(z.minLength(1), z.maxLength(500)), noteLeftOut: z.optional(z.boolean()) }),
   'work.cancel': z.strictObject({ work: z.enum(['import', 'evaluate']) }),
-  'results.export': z.strictObject({ revision: z.int(), format: z.enum(['csv', 'json', 'svg']), tableStyle: z.optional(tableStyleSchema) }),
+  /** A pasted or typed table into rows, units told or asked for; nothing is changed: `set-rate-constants` puts the table into the study. */
+  'rate-constants.read-text': z.strictObject({
+    text: z.string().check(z.maxLength(rateConstantLimits.characters)),
+    source: z.optional(z.enum(['typed', 'pasted'])),
+    options: z.optional(rateConstantReadOptionsSchema),
+  }),
+  'rate-constants.read-file': z.strictObject({ uploadId: id, options: z.optional(rateConstantReadOptionsSchema) }),
+  'rate-constants.evaluate': z.strictObject({ revision: z.int() }),
+  /** `of`: where left out, the table of rate constants in a study without runs, else the runs. */
+  'results.export': z.strictObject({
+    revision: z.int(),
+    format: z.enum(['csv', 'json', 'svg']),
+    tableStyle: z.optional(tableStyleSchema),
+    of: z.optional(z.enum(['activation', 'rate-constants'])),
+  }),
 } as const
 
 export type RequestName = keyof typeof requestSchemas
@@ -70,6 +87,11 @@ export interface RefusedFile {
   /** What to do about it. */
   readonly remedy: string
 }
+
+/** A table of rate constants as read, or why it cannot be; `ask` names what a person can state so that it can. */
+export type RateConstantsRead =
+  | { readonly kind: 'table'; readonly table: RateConstantTable }
+  | { readonly kind: 'refused'; readonly refused: RefusedFile; readonly ask: 'temperature-unit' | 'decimal-sign' | null }
 
 export interface ImportAnswer {
   readonly addedRunIds: readonly string[]
@@ -110,6 +132,9 @@ export interface RequestAnswers {
   'upload.discard': Record<string, never>
   'runs.import': ImportAnswer
   'work.cancel': Record<string, never>
+  'rate-constants.read-text': RateConstantsRead
+  'rate-constants.read-file': RateConstantsRead
+  'rate-constants.evaluate': { readonly revision: number; readonly result: RateConstantsResult }
   'results.export': { readonly files: readonly FileOut[] }
 }
 

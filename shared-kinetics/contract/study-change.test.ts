@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { applyChange, labelOfChange, studyChangeSchema } from './study-change.ts'
 import { emptyStudy, parseStudyDocument } from './study-document.ts'
 import { runInfoOf } from '../check-values/run-info-of.ts'
+import type { RateConstantTable } from '../rate-constants/rate-constant-table.ts'
 import type { RunInfo } from '../series/run.ts'
 
 const run = (id: string): RunInfo => runInfoOf(id, { label: `run ${id}` })
@@ -64,5 +65,48 @@ describe('a study document', () => {
 
   it('of another format is refused', () => {
     expect(() => parseStudyDocument({ ...study, format: 'rampfold.study/9' })).toThrow(/format/)
+  })
+})
+
+describe('a table of rate constants in a study', () => {
+  const table: RateConstantTable = {
+    rows: [
+      { temperature_K: 298, rateConstant: 3.46e-5, standardUncertainty: null, label: null, use: true },
+      { temperature_K: 308, rateConstant: 1.35e-4, standardUncertainty: 2e-6, label: 'b', use: false },
+    ],
+    rateUnit: '1/s',
+    temperatureUnitShown: 'C',
+    predictAt_K: [350],
+    source: { kind: 'file', name: 'N2O5 in air.csv', sha256: null },
+    notes: [],
+  }
+
+  it('is set as a whole, named in the undo line, and read back as it was written', () => {
+    const change = { kind: 'set-rate-constants', table } as const
+    const after = applyChange(emptyStudy('s1'), change)
+    expect(after.rateConstants).toEqual(table)
+    expect(labelOfChange(after, change)).toBe('table of rate constants')
+    expect(after.name).toBe('N2O5 in air')
+    expect(parseStudyDocument(JSON.parse(JSON.stringify(after)))).toEqual(after)
+    expect(applyChange(after, { kind: 'set-rate-constants', table: null })).toMatchObject({ rateConstants: null, name: 'N2O5 in air' })
+  })
+
+  it('is not in studies that were saved before there were such tables', () => {
+    const { rateConstants: _, ...older } = study
+    expect(parseStudyDocument(JSON.parse(JSON.stringify(older)))).toEqual(study)
+  })
+
+  it.each([
+    { rows: [{ ...table.rows[0], rateConstant: 0 }] },
+    { rows: [{ ...table.rows[0], rateConstant: -1 }] },
+    { rows: [{ ...table.rows[0], temperature_K: 0 }] },
+    { rows: [{ ...table.rows[0], temperature_K: 1e6 }] },
+    { rows: Array.from({ length: 1001 }, () => table.rows[0]) },
+    { predictAt_K: [Number.NaN] },
+    { temperatureUnitShown: 'R' },
+    { source: { ...table.source, sha256: 'x' } },
+  ])('that makes no sense is refused on arrival (%#)', (wrong) => {
+    expect(studyChangeSchema.safeParse({ kind: 'set-rate-constants', table }).success).toBe(true)
+    expect(studyChangeSchema.safeParse({ kind: 'set-rate-constants', table: { ...table, ...wrong } }).success).toBe(false)
   })
 })

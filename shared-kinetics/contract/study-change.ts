@@ -2,6 +2,7 @@ import * as z from 'zod/mini'
 import type { RunInfo } from '../series/run.ts'
 import type { DeepReadonly } from './deep-readonly.ts'
 import { nameAfter } from './name-after-runs.ts'
+import { rateConstantTableSchema } from './rate-constant-schema.ts'
 import { runInfoSchema, settingsSchema, studyLimits, windowSchema, type StudyDocument, untitled } from './study-document.ts'
 
 /** Every change a person can make to a study, as plain data. The host and each replica apply it with `applyChange`. */
@@ -24,6 +25,7 @@ export const studyChangeSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('set-window'), window: z.nullable(windowSchema) }),
   z.object({ kind: z.literal('set-baseline'), baseline: settingsSchema.shape.baseline }),
   z.object({ kind: z.literal('set-mean-range'), meanRange: settingsSchema.shape.meanRange }),
+  z.object({ kind: z.literal('set-rate-constants'), table: z.nullable(rateConstantTableSchema) }),
 ])
 export type StudyChange = DeepReadonly<z.infer<typeof studyChangeSchema>>
 
@@ -58,6 +60,8 @@ export function labelOfChange(document: StudyDocument, change: StudyChange): str
       return 'baseline'
     case 'set-mean-range':
       return 'range of the mean'
+    case 'set-rate-constants':
+      return 'table of rate constants'
   }
 }
 
@@ -113,5 +117,13 @@ export function applyChange(document: StudyDocument, change: StudyChange): Study
       return set({ baseline: change.baseline })
     case 'set-mean-range':
       return set({ meanRange: change.meanRange })
+    case 'set-rate-constants':
+      return { ...document, name: nameWithTable(document, change.table), rateConstants: change.table }
   }
+}
+
+/** A study that nobody has named is named after the file of its table. */
+function nameWithTable(document: StudyDocument, table: StudyDocument['rateConstants']): string {
+  const fileName = table?.source.kind === 'file' ? (table.source.name ?? '').replace(/\.[a-z0-9]{1,5}$/i, '').trim() : ''
+  return document.name === untitled && document.runs.length === 0 && fileName !== '' ? fileName.slice(0, 200) : document.name
 }

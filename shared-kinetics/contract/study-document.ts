@@ -1,8 +1,10 @@
 import * as z from 'zod/mini'
+import type { RateConstantTable } from '../rate-constants/rate-constant-table.ts'
 import type { MethodId } from '../isoconversional/result.ts'
 import type { ImportNote, NominalSource, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
 import type { AnalysisSettings, BaselineKind } from '../tasks/study-input.ts'
+import { rateConstantTableSchema } from './rate-constant-schema.ts'
 
 /** Limits that keep a hostile or damaged file from exhausting the machine. */
 export const studyLimits = { runs: 200, levels: 2000, text: 4000, signals: 64, notes: 1000 } as const
@@ -114,6 +116,8 @@ const studyDocumentSchema = z.object({
   /** Notes about files that were left out on request; shown as findings until the study ends. */
   importNotes: runInfoSchema.shape.importNotes,
   settings: settingsSchema,
+  /** Held instead of runs (or made from them); null in studies of runs, and in those saved before there were such tables. */
+  rateConstants: z._default(z.nullable(rateConstantTableSchema), null),
 })
 
 export interface StudyDocument {
@@ -123,6 +127,7 @@ export interface StudyDocument {
   readonly runs: readonly RunInfo[]
   readonly importNotes: RunInfo['importNotes']
   readonly settings: AnalysisSettings
+  readonly rateConstants: RateConstantTable | null
 }
 
 /** 0.05 to 0.95 in steps of 0.05, as the 2011 recommendations ask for (source `ictac-2011`). */
@@ -147,6 +152,7 @@ export const emptyStudy = (id: string, name = untitled): StudyDocument => ({
   runs: [],
   importNotes: [],
   settings: defaultSettings,
+  rateConstants: null,
 })
 
 /** Parses a study read from a disk or a wire; throws the schema's error, which names the field. */

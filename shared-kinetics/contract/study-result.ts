@@ -14,3 +14,13 @@ export type {
   RunResult,
   StudyResult,
 } from '../tasks/study-result.ts'
+export type { RateConstantNote, RateConstantRow, RateConstantTable, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
+export type {
+  ArrheniusResult,
+  EstimateResult,
+  EyringResult,
+  FactorPer10KResult,
+  RateConstantPrediction,
+  RateConstantRowResult,
+  RateConstantsResult,
+} from '../tasks/rate-constants-result.ts'

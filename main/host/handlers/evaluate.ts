@@ -1,5 +1,6 @@
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
 import type { HandlerContext, HandlerTable } from './handler-table.ts'
+import { tableOf } from './rate-constants.ts'
 
 /** Results of the study, and files made from them. */
 export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 'study.evaluate' | 'results.export'> {
@@ -14,9 +15,14 @@ export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 's
       checkRevision(revision)
       return { revision, result: await evaluation.of(revision) }
     },
-    'results.export': async ({ revision, format, tableStyle }) => {
+    'results.export': async ({ revision, format, tableStyle, of }) => {
       checkRevision(revision)
       const { document } = workspace.session
+      const isTable = of === undefined ? document.runs.length === 0 && document.rateConstants !== null : of === 'rate-constants'
+      if (isTable) {
+        const result = await context.pool.run('evaluate-rate-constants', { table: tableOf(document.rateConstants) })
+        return { files: parts.exportRateConstants({ document, result, program: { name: 'rampfold', version } }, format, tableStyle) }
+      }
       const result = await evaluation.of(revision)
       return { files: parts.exportResults({ document, result, program: { name: 'rampfold', version } }, format, tableStyle) }
     },

@@ -1,6 +1,7 @@
 import type { FileOut, TableStyle, RequestAnswers, RequestInput, RequestName } from '../../../shared-kinetics/contract/host-api.ts'
 import type { DemoSeries } from '../../demo/demo-series.ts'
 import type { ExportSource } from '../../export/activation-json.ts'
+import type { RateConstantsSource } from '../../export/rate-constants-json.ts'
 import type { ExportFormat } from '../../export/export-results.ts'
 import type { EventHub } from '../event-hub.ts'
 import type { Evaluation } from '../evaluation.ts'
@@ -19,6 +20,7 @@ export type Shell = RequestAnswers['program.describe']['shell']
 export interface ProgramParts {
   demoSeries(): DemoSeries
   exportResults(source: ExportSource, format: ExportFormat, style?: TableStyle): readonly FileOut[]
+  exportRateConstants(source: RateConstantsSource, format: ExportFormat, style?: TableStyle): readonly FileOut[]
 }
 
 /** Imports that run now, so that `work.cancel` and a newly opened study can stop them. */

@@ -1,6 +1,6 @@
 import { setMaxListeners } from 'node:events'
 import type { ImportAnswer, RefusedFile } from '../../../shared-kinetics/contract/host-api.ts'
-import { runInfoSchema } from '../../../shared-kinetics/contract/study-document.ts'
+import { runInfoSchema, type StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
 import type { ImportNote, RunInfo } from '../../../shared-kinetics/series/run.ts'
 import { savedCopySuffix } from '../../study/saved-copy.ts'
@@ -33,6 +33,7 @@ export async function importFiles(context: HandlerContext, files: readonly Uploa
     const originals = new Map(read.runs.map(({ run, bytes }) => [run.info.file.sha256, bytes]))
     const refusedFiles = [...partial, ...opened.refused, ...read.refused, ...repeated]
     const notes = noteLeftOut ? refusedFiles.map(leftOutNote) : []
+    if (runs.length > 0) refuseBesideTable(workspace.session.document)
     const snapshot = runs.length === 0 ? workspace.session.snapshot() : workspace.addRuns(study, runs, originals, notes)
     return {
       addedRunIds: runs.map((run) => run.info.id),
@@ -168,3 +169,9 @@ function leftOutNote({ fileName, line, reason, remedy }: RefusedFile): ImportNot
 }
 
 const refused = (fileName: string, reason: string, remedy: string): RefusedFile => ({ fileName, line: null, reason, remedy })
+
+/** A study holds runs or a table of rate constants; both only where the table was made from the runs. */
+function refuseBesideTable({ rateConstants }: StudyDocument): void {
+  if (rateConstants === null || rateConstants.source.kind === 'isothermal-runs') return
+  throw new KineticsError('bad-request', 'This study holds a table of rate constants. Start a new study for runs.')
+}

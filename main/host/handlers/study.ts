@@ -1,4 +1,6 @@
+import type { StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
+import type { RateConstantTable } from '../../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { savedCopySuffix } from '../../study/saved-copy.ts'
 import { newStudy } from '../workspace.ts'
 import type { HandlerContext, HandlerTable } from './handler-table.ts'
@@ -30,6 +32,7 @@ export function studyHandlers(context: HandlerContext): Pick<HandlerTable, Study
     'study.change': ({ revision, change }) => {
       // Runs come from files that the host has read itself; a page could only invent them.
       if (change.kind === 'add-runs') throw new KineticsError('bad-request', 'Runs are added by importing their files.')
+      if (change.kind === 'set-rate-constants' && change.table !== null) refuseBesideRuns(change.table, workspace.session.document)
       return workspace.change(revision, change)
     },
     'study.undo': ({ revision }) => workspace.undo(revision),
@@ -63,4 +66,10 @@ export function studyHandlers(context: HandlerContext): Pick<HandlerTable, Study
       return { fileName: fileNameFor(document.name, savedCopySuffix), mediaType: 'application/zip', bytes }
     },
   }
+}
+
+/** A study holds runs or a table of rate constants; both only where the table was made from the runs. */
+function refuseBesideRuns(table: RateConstantTable, { runs }: StudyDocument): void {
+  if (runs.length === 0 || table.source.kind === 'isothermal-runs') return
+  throw new KineticsError('bad-request', 'This study holds runs. Start a new study for a table of rate constants.', { runs: runs.length })
 }

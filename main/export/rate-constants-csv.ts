@@ -1,0 +1,172 @@
+import type { TableStyle } from '../../shared-kinetics/contract/host-api.ts'
+import type {
+  ArrheniusResult,
+  EstimateResult,
+  FactorPer10KResult,
+  RateConstantPrediction,
+  RateConstantsResult,
+} from '../../shared-kinetics/tasks/rate-constants-result.ts'
+import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
+import { csvTable } from './csv-table.ts'
+
+type Cell = number | string | null
+
+/** A quantity in one row of the table. */
+interface QuantityRow {
+  readonly quantity: string
+  readonly label?: string | null
+  readonly temperature_K?: number
+  readonly unit: string
+  readonly value: number | null
+  readonly standardError?: number | null
+  readonly lower?: number | null
+  readonly upper?: number | null
+  readonly intervalOf?: string
+  readonly residual?: number | null
+}
+
+const headings = [
+  'quantity',
+  'label',
+  'temperature (K)',
+  'temperature (degC)',
+  'unit',
+  'value',
+  'standard error',
+  'lower 95 %',
+  'upper 95 %',
+  'interval of',
+  'residual of ln k',
+]
+
+/**
+ * The text of `rate-constants.csv`: one heading row and one row a quantity: Ea, ln A and A, transition-state parameters, factors per 10 K, then each measured and
+ * each predicted k with its temperature. What is not to be had is an empty cell.
+ */
+export function rateConstantsCsv(result: RateConstantsResult, style: TableStyle): string {
+  const unit = result.rateUnit
+  const rows = [
+    ...lineRows(result.line, unit, ''),
+    ...(result.weightedLine === null ? [] : lineRows(result.weightedLine, unit, ', weighted by stated uncertainties')),
+    ...eyringRows(result),
+    ...result.factorsPer10K.map(factorRow),
+    ...measuredRows(result),
+    ...result.predictions.flatMap((row) => predictionRows(row, unit)),
+  ]
+  return csvTable([headings, ...rows.map((row) => cells(row, style))], style)
+}
+
+function cells(row: QuantityRow, style: TableStyle): readonly Cell[] {
+  const number = (value: number | null | undefined): Cell => numberCell(value ?? null, style)
+  const T = row.temperature_K
+  return [
+    row.quantity,
+    row.label ?? null,
+    T === undefined ? null : number(T),
+    T === undefined ? null : number(Number(kelvinToCelsius(T).toFixed(6))),
+    row.unit === '' ? null : row.unit,
+    number(row.value),
+    number(row.standardError),
+    number(row.lower),
+    number(row.upper),
+    row.intervalOf ?? null,
+    number(row.residual),
+  ]
+}
+
+/** Very small and very large numbers keep their digits by a power of ten, which spreadsheets read as a number. */
+function numberCell(value: number | null, { decimal }: TableStyle): Cell {
+  if (value === null || !Number.isFinite(value)) return null
+  const size = Math.abs(value)
+  return size !== 0 && (size < 1e-4 || size >= 1e9) ? value.toExponential(6).replace('.', decimal).replace('e+', 'e') : value
+}
+
+const parameter = 'the parameter, Student-t'
+
+function lineRows(line: ArrheniusResult, unit: string, which: string): readonly QuantityRow[] {
+  const inUnit = unit === '' ? 'unit of k, not stated' : unit
+  return [
+    {
+      quantity: `Ea${which}`,
+      unit: 'kJ/mol',
+      value: line.Ea_kJ_per_mol,
+      standardError: line.standardError_kJ_per_mol,
+      lower: line.lower95_kJ_per_mol,
+      upper: line.upper95_kJ_per_mol,
+      intervalOf: parameter,
+    },
+    {
+      quantity: `ln A${which}`,
+      unit: `A in ${inUnit}`,
+      value: line.lnA,
+      standardError: line.lnAStandardError,
+      lower: line.lnALower95,
+      upper: line.lnAUpper95,
+      intervalOf: parameter,
+    },
+    {
+      quantity: `A${which}`,
+      unit: inUnit,
+      value: line.A,
+      lower: expOf(line.lnALower95),
+      upper: expOf(line.lnAUpper95),
+      intervalOf: parameter,
+    },
+  ]
+}
+
+const expOf = (value: number | null): number | null => (value === null ? null : Math.exp(value))
+
+function eyringRows({ eyring }: RateConstantsResult): readonly QuantityRow[] {
+  if (eyring === null) return []
+  const row = (quantity: string, unit: string, estimate: EstimateResult, temperature_K?: number): QuantityRow => ({
+    quantity,
+    unit,
+    value: estimate.value,
+    standardError: estimate.standardError,
+    lower: estimate.lower95,
+    upper: estimate.upper95,
+    intervalOf: parameter,
+    ...(temperature_K === undefined ? {} : { temperature_K }),
+  })
+  const state = eyring.standardStateOf === null ? '' : ` (standard state of ${eyring.standardStateOf})`
+  return [
+    row('enthalpy of activation', 'kJ/mol', eyring.enthalpy_kJ_per_mol),
+    row(`entropy of activation${state}`, 'J/(mol K)', eyring.entropy_J_per_mol_K),
+    row(`Gibbs energy of activation${state}`, 'kJ/mol', eyring.gibbs_kJ_per_mol, eyring.gibbsAt_K),
+  ]
+}
+
+const factorRow = ({ from_K, factor, lower95, upper95 }: FactorPer10KResult): QuantityRow => ({
+  quantity: 'factor per 10 K, from this temperature',
+  temperature_K: from_K,
+  unit: '',
+  value: factor,
+  lower: lower95,
+  upper: upper95,
+  intervalOf: 'the factor, from that of Ea',
+})
+
+function measuredRows({ rows, rateUnit }: RateConstantsResult): readonly QuantityRow[] {
+  return rows.map((row) => ({
+    quantity: row.use ? 'k, measured' : 'k, not used',
+    label: row.label,
+    temperature_K: row.temperature_K,
+    unit: rateUnit,
+    value: row.rateConstant,
+    standardError: row.standardUncertainty,
+    residual: row.residual,
+  }))
+}
+
+function predictionRows(row: RateConstantPrediction, unit: string): readonly QuantityRow[] {
+  const { side, beyond_K } = row.extrapolation
+  const label = side === 'inside' ? 'inside the data' : `${Number(beyond_K.toFixed(2))} K ${side} the data`
+  const base = { label, temperature_K: row.temperature_K, unit, value: row.rateConstant }
+  return [
+    { ...base, quantity: 'k, predicted', lower: row.lineLower95, upper: row.lineUpper95, intervalOf: 'the line at this temperature' },
+    { ...base, quantity: 'k, predicted', lower: row.newLower95, upper: row.newUpper95, intervalOf: 'a new measurement' },
+    { quantity: 'exp(-Ea/RT)', label, temperature_K: row.temperature_K, unit: '', value: row.exponentialFactor },
+    { ...factorRow(row.factorPer10K), label },
+  ]
+}

@@ -1,0 +1,253 @@
+import fc from 'fast-check'
+import iconv from 'iconv-lite'
+import { describe, expect, it } from 'vitest'
+import type { RateConstantReadOptions } from '../../shared-kinetics/contract/rate-constant-schema.ts'
+import type { RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
+import { ImportRefusal } from './import-refusal.ts'
+import { rateConstantHeading } from './rate-constant-heading.ts'
+import { RateConstantQuestion } from './rate-constant-question.ts'
+import { readRateConstantFile, readRateConstantText } from './rate-constant-table.ts'
+
+const read = (text: string, options: RateConstantReadOptions = {}): RateConstantTable =>
+  readRateConstantText({ text, name: 'table.csv', source: 'pasted', sha256: null }, options)
+const refusal = (text: string, options: RateConstantReadOptions = {}): ImportRefusal => {
+  try {
+    read(text, options)
+  } catch (error) {
+    if (error instanceof ImportRefusal) return error
+    throw error
+  }
+  throw new Error('the table was read')
+}
+const pairs = (table: RateConstantTable): number[][] => table.rows.map((row) => [row.temperature_K, row.rateConstant])
+const codes = (table: RateConstantTable): string[] => table.notes.map((note) => note.code)
+
+// Daniels & Johnston's N2O5, three rows: 298, 308, 318 K; 3.46e-5, 1.35e-4, 4.98e-4 1/s.
+const expected = [
+  [298, 3.46e-5],
+  [308, 1.35e-4],
+  [318, 4.98e-4],
+]
+const near = (table: RateConstantTable, rateUnit = '1/s', want = expected, digits = 12): void => {
+  expect(table.rateUnit).toBe(rateUnit)
+  expect(table.rows).toHaveLength(want.length)
+  pairs(table).forEach(([T = 0, k = 0], i) => {
+    expect(T / (want[i]?.[0] ?? 0)).toBeCloseTo(1, digits)
+    expect(k / (want[i]?.[1] ?? 0)).toBeCloseTo(1, digits)
+  })
+}
+
+describe('the same rate constants in many spellings', () => {
+  it.each([
+    ['comma', 'T (K),k (1/s)\n298,3.46e-5\n308,1.35e-4\n318,4.98e-4\n'],
+    ['tab', 'T/K\tk/s-1\n298\t3.46e-5\n308\t1.35e-4\n318\t4.98e-4'],
+    ['semicolon and decimal comma', 'T [K];k [s^-1]\r\n298;3,46e-5\r\n308;1,35E-4\r\n318;0,000498\r\n'],
+    ['blanks', 'T(K)  k(1/s)\n298 3.46e-5\n308 1.35e-4\n318 4.98e-4'],
+    ['pipe', 'temperature_K|k_per_s\n298|3.46e-5\n308|1.35e-4\n318|4.98e-4'],
+    ['°C', 'T (°C),k (s⁻¹)\n24.85,3.46e-5\n34.85,1.35e-4\n44.85,4.98e-4'],
+    ['°F', 'Temperature (degF),rate constant (1/s)\n76.73,3.46e-5\n94.73,1.35e-4\n112.73,4.98e-4'],
+    ['a row of units', 'T;k\n°C;1/s\n24,85;3,46e-5\n34,85;1,35e-4\n44,85;4,98e-4'],
+    ['k first', 'rate constant k / s-1,T / °C\n3.46e-5,24.85\n1.35e-4,34.85\n4.98e-4,44.85'],
+    ['powers as papers print them', 'T (K)\tk (s⁻¹)\n298\t3.46×10⁻⁵\n308\t1.35 x 10^-4\n318\t4.98·10−4'.replace('10−4', '10^−4')],
+    ['10^5 k', 'T (K),10^5 k (1/s)\n298,3.46\n308,13.5\n318,49.8'],
+    ['k × 10^5', 'T (K),k × 10^5 / s^-1\n298,3.46\n308,13.5\n318,49.8'],
+    ['a power inside the unit', 'T (K),k (10^-5 1/s)\n298,3.46\n308,13.5\n318,49.8'],
+    ['units behind the numbers', '298 K; 3.46e-5 1/s\n308 K; 1.35e-4 1/s\n44.85 °C; 4.98e-4 1/s'],
+    ['units behind the numbers, blanks', '298 K 3.46e-5 1/s\n34.85 °C 1.35e-4 1/s\n318K 4.98e-4 1/s'],
+    ['a comment sign before the headings', '# T (K), k (1/s)\n298, 3.46e-5\n308, 1.35e-4\n318, 4.98e-4'],
+    ['a line above', 'Decomposition of N2O5\nT (K),k (1/s)\n298,3.46e-5\n308,1.35e-4\n318,4.98e-4'],
+    ['both K and °C', 'T (°C),T (K),k (1/s)\n24.85,298,3.46e-5\n34.85,308,1.35e-4\n44.85,318,4.98e-4'],
+    ['quoted', '"T (K)","k (1/s)"\n"298","3.46e-5"\n"308","1.35e-4"\n"318","4.98e-4"'],
+  ])('%s', (_, text) => {
+    near(read(text))
+  })
+
+  const at = (T: number, digits: number): string => T.toPrecision(digits)
+  it.each([
+    ['1000/T (1/K)', (T: number) => at(1000 / T, 15)],
+    ['10^3/T (K^-1)', (T: number) => at(1000 / T, 15)],
+    ['1000 K/T', (T: number) => at(1000 / T, 15)],
+    ['1/T (1/K)', (T: number) => at(1 / T, 15)],
+    ['1/T', (T: number) => at(1 / T, 15)],
+    ['inverse temperature (1/K)', (T: number) => at(1 / T, 15)],
+  ])('%s', (heading, of) => {
+    const table = read(`${heading};k (1/s)\n${expected.map(([T = 0, k = 0]) => `${of(T)};${k}`).join('\n')}`)
+    near(table, '1/s', expected, 10)
+    expect(table.temperatureUnitShown).toBe('K')
+    expect(codes(table)).toContain('heading-read-as')
+  })
+
+  it.each([
+    ['ln k', Math.log, ''],
+    ['ln(k / s-1)', Math.log, '1/s'],
+    ['ln(k) (1/s)', Math.log, '1/s'],
+    ['ln k (1/s)', Math.log, '1/s'],
+    ['log10 k (1/s)', Math.log10, '1/s'],
+    ['log10(k/s^-1)', Math.log10, '1/s'],
+    ['lg k', Math.log10, ''],
+    ['log k (1/s)', Math.log10, '1/s'],
+  ])('%s', (heading, of, unit) => {
+    near(read(`T (K)\t${heading}\n${expected.map(([T = 0, k = 0]) => `${T}\t${of(k)}`).join('\n')}`), unit, expected, 10)
+  })
+
+  it('keeps the unit of k, whatever it is', () => {
+    near(read('T (K),k (L mol-1 s-1)\n298,3.46e-5\n308,1.35e-4\n318,4.98e-4'), 'L/(mol s)')
+    near(read('T (K),k (min-1)\n298,3.46e-5\n308,1.35e-4\n318,4.98e-4'), '1/min')
+    near(read('T (K),k/min\n298,3.46e-5\n308,1.35e-4\n318,4.98e-4'), '1/min')
+    near(read('T (K),k\n298,3.46e-5\n308,1.35e-4\n318,4.98e-4'), '')
+    near(read('T (K),k\n298,3.46e-5\n308,1.35e-4\n318,4.98e-4', { rateUnit: 'h-1' }), '1/h')
+  })
+
+  it('reads uncertainties and labels', () => {
+    const table = read('sample,T (K),k (1/s),u(k) (1/s)\na,298,3.46e-5,1e-6\nb,308,1.35e-4,\nc,318,4.98e-4,2e-5')
+    expect(table.rows.map((row) => [row.label, row.standardUncertainty])).toEqual([
+      ['a', 1e-6],
+      ['b', null],
+      ['c', 2e-5],
+    ])
+    expect(read('T (K),k (1/s),relative uncertainty (%)\n298,2e-5,5\n308,1e-4,5').rows[0]?.standardUncertainty).toBeCloseTo(1e-6, 18)
+  })
+
+  it('two rows are a table', () => {
+    near(read('T (K),k (1/s)\n298,3.46e-5\n308,1.35e-4'), '1/s', expected.slice(0, 2))
+  })
+
+  it('takes encodings as exports have them', () => {
+    const text = 'T (°C);k (1/s)\n24,85;3,46e-5\n34,85;1,35e-4\n44,85;4,98e-4\n'
+    for (const encoding of ['utf8', 'win1252', 'utf-16le']) {
+      const table = readRateConstantFile('N2O5.csv', new Uint8Array(iconv.encode(text, encoding, { addBOM: encoding === 'utf-16le' })), {})
+      near(table)
+      expect(table.source).toMatchObject({ kind: 'file', name: 'N2O5.csv', sha256: expect.stringMatching(/^[0-9a-f]{64}$/) as unknown })
+    }
+  })
+})
+
+describe('what is not guessed', () => {
+  it('a unit of temperature that nobody stated is asked for, and taken when stated', () => {
+    for (const text of ['T,k (1/s)\n298,3.46e-5\n308,1.35e-4', '298 3.46e-5\n308 1.35e-4']) {
+      const asked = refusal(text)
+      expect(asked).toBeInstanceOf(RateConstantQuestion)
+      expect(asked).toMatchObject({ ask: 'temperature-unit' })
+      expect(asked.message).toMatch(/--temperature-unit/)
+      expect(read(text, { temperatureUnit: 'K' }).rows[0]?.temperature_K).toBe(298)
+      expect(read(text, { temperatureUnit: 'C' }).rows[0]?.temperature_K).toBeCloseTo(571.15, 10)
+    }
+  })
+
+  it('a statement against the heading is followed and said', () => {
+    const table = read('T (K),k (1/s)\n25,3.46e-5\n35,1.35e-4', { temperatureUnit: 'C', rateUnit: '1/min' })
+    expect(table.rows[0]?.temperature_K).toBeCloseTo(298.15, 10)
+    expect(table.rateUnit).toBe('1/min')
+    expect(codes(table)).toEqual(['heading-read-as', 'heading-read-as'])
+  })
+
+  it('a sign that may be a decimal one is asked for where both readings are possible', () => {
+    const asked = refusal('T (K)\tk (1/s)\n300\t1,234\n310\t2,345')
+    expect(asked).toMatchObject({ ask: 'decimal-sign' })
+    expect(pairs(read('T (K)\tk (1/s)\n300\t1,234\n310\t2,345', { decimalSign: 'comma' }))).toEqual([
+      [300, 1.234],
+      [310, 2.345],
+    ])
+    // 298150 K is not possible, so that the point is a decimal sign here.
+    expect(pairs(read('T (K)\tk (1/s)\n298.150\t1.5\n308.150\t2.5'))).toEqual([
+      [298.15, 1.5],
+      [308.15, 2.5],
+    ])
+  })
+
+  it.each([
+    ['T (K),k × 10^-5 (1/s)\n298,3.46\n308,13.5', /10\^-5/],
+    ['T (K),k (×10^5 1/s)\n298,3.46\n308,13.5', /10\^5/],
+    ['T (K),k (furlong)\n298,3.46\n308,13.5', /furlong/],
+    ['x,y\n298,3.46\n308,13.5', /No heading names a temperature/],
+    ['T (K),mass (mg)\n298,3.46\n308,13.5', /No heading names rate constants/],
+    ['T (K),k (1/s)\n298,3.46e-5\n308,0\n318,1e-3', /line 3: The rate constant “0” is not above 0/],
+    ['T (K),k (1/s)\n298,3.46e-5\n308,-2e-5\n318,1e-3', /line 3/],
+    ['T (K),k (1/s)\n298,3.46e-5\nabc,def\n318,1e-3', /line 3/],
+    ['T (°C),T (K),k (1/s)\n25,298.15,1\n35,318.15,2', /line 3: The columns .* do not agree/],
+    ['T (K),k (1/s),ln k\n298,1e-3,-6.9078\n308,2e-3,-5', /line 3: The columns/],
+    ['1/T (1/K),k (1/s)\n3.35,1\n3.25,2', /1000\/T/],
+    ['T (°C),k (1/s)\n298 K,1\n308 K,2', /unit behind the temperature/],
+    ['298 K; 1 1/s\n308 K; 2 1/min', /several units/],
+    ['T (°C),k (1/s)\n-300,1\n35,2', /not possible/],
+    ['298;1;2\n308;2;3', /Nothing says what the 3 columns hold/],
+    ['', /no line holds two numbers/],
+    ['just words\nand more', /no line holds two numbers/],
+    ['T (K),k (1/s)\n298,15,3,46e-5\n308,15,1,35e-4', /names 2/],
+  ])('%j is refused with what is wrong', (text, message) => {
+    expect(refusal(text).message).toMatch(message)
+  })
+
+  it('rows without a rate constant, lines behind the table and other columns are set aside and said', () => {
+    const table = read('T (K),k (1/s),colour\n298,3.46e-5,red\n308,,red\n318,4.98e-4,red\nmeasured in May,,')
+    expect(table.rows).toHaveLength(2)
+    expect(codes(table)).toEqual(['columns-set-aside', 'rows-set-aside'])
+    expect(table.notes[1]?.message).toMatch(/line 3, 5/)
+  })
+
+  it('more rows than a table holds are refused, a file that is no text too', () => {
+    expect(refusal(`T (K),k (1/s)\n${'300,1\n'.repeat(1001)}`).message).toMatch(/at most 1000/)
+    expect(() => readRateConstantFile('t.xlsx', new Uint8Array([0x50, 0x4b, 3, 4, 5]), {})).toThrow(/spreadsheet/)
+    expect(() => readRateConstantFile('t.csv', new Uint8Array(), {})).toThrow(/empty/)
+  })
+})
+
+describe('headings', () => {
+  it.each([
+    ['K', { role: 'temperature', unit: 'K' }],
+    ['k', { role: 'rate-constant', form: 'k', unit: null }],
+    ['°C', { role: 'temperature', unit: 'C' }],
+    ['T', { role: 'temperature', unit: null }],
+    ['Temp. [°C]', { role: 'temperature', unit: 'C' }],
+    ['temperature_C', { role: 'temperature', unit: 'C' }],
+    ['Temperatur / K', { role: 'temperature', unit: 'K' }],
+    ['1/s', { role: 'rate-constant', unit: '1/s' }],
+    ['rate_constant_per_min', { role: 'rate-constant', unit: '1/min' }],
+    ['rate constant k (L/(mol·s))', { role: 'rate-constant', unit: 'L/(mol s)' }],
+    ['k_obs / h^-1', { role: 'rate-constant', unit: '1/h' }],
+    ['k1 [1/min]', { role: 'rate-constant', unit: '1/min' }],
+    ['k, 1/s', { role: 'rate-constant', unit: '1/s' }],
+    ['k in 1/s', { role: 'rate-constant', unit: '1/s' }],
+    ['standard error (1/s)', { role: 'uncertainty', relative: 'no', unit: '1/s' }],
+    ['time (s)', { role: 'other' }],
+    ['Tg of it', { role: 'other' }],
+    ['half-life (h)', { role: 'other' }],
+  ])('%s', (text, meaning) => {
+    expect(rateConstantHeading(text)).toMatchObject(meaning)
+  })
+})
+
+describe('properties', () => {
+  const table = fc.array(fc.record({ T: fc.integer({ min: 2500, max: 9000 }), lnK: fc.double({ min: -25, max: 10, noNaN: true }) }), {
+    minLength: 2,
+    maxLength: 12,
+  })
+
+  it('degrees and kelvins, points and commas, tabs and semicolons give the same table', () => {
+    fc.assert(
+      fc.property(table, (rows) => {
+        const k = rows.map(({ lnK }) => Number(Math.exp(lnK).toPrecision(6)))
+        const kelvin = read(`T (K)\tk (1/s)\n${rows.map(({ T }, i) => `${T / 10}\t${k[i]?.toExponential()}`).join('\n')}`)
+        const celsius = read(
+          `T (°C);k (1/s)\n${rows.map(({ T }, i) => `${(T / 10 - 273.15).toFixed(2)};${k[i]?.toExponential()}`.replaceAll('.', ',')).join('\n')}`,
+        )
+        expect(celsius.rows.map((row) => row.rateConstant)).toEqual(kelvin.rows.map((row) => row.rateConstant))
+        celsius.rows.forEach((row, i) => {
+          expect(row.temperature_K).toBeCloseTo(kelvin.rows[i]?.temperature_K ?? Number.NaN, 9)
+        })
+      }),
+    )
+  })
+
+  it('whatever is pasted is a table or a refusal', () => {
+    fc.assert(
+      fc.property(fc.string({ unit: 'binary', maxLength: 200 }), fc.constantFrom('', 'T (K);k (1/s)\n300;1\n'), (text, before) => {
+        try {
+          expect(read(before + text).rows.every((row) => row.rateConstant > 0 && row.temperature_K > 0)).toBe(true)
+        } catch (error) {
+          expect(error).toBeInstanceOf(ImportRefusal)
+        }
+      }),
+    )
+  })
+})

@@ -1,0 +1,64 @@
+import * as z from 'zod/mini'
+import type { RateConstantNote, RateConstantSource, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
+import { decimalSignWords, delimiterWords, encodingWords } from './import-options.ts'
+
+/** Limits that keep a hostile or damaged table from exhausting the machine. */
+export const rateConstantLimits = { rows: 1000, predictions: 200, notes: 100, text: 1000, characters: 1_000_000, bytes: 4_000_000 } as const
+
+const namesOf = <Name extends string>(names: Readonly<Record<Name, true>>): readonly Name[] => Object.keys(names) as Name[]
+const sourceSchema = z.enum(namesOf<RateConstantSource>({ typed: true, pasted: true, file: true, 'isothermal-runs': true }))
+export const temperatureUnitSchema = z.enum(namesOf<TemperatureUnit>({ K: true, C: true, F: true }))
+const noteCodeSchema = z.enum(
+  namesOf<RateConstantNote['code']>({
+    'rows-set-aside': true,
+    'columns-set-aside': true,
+    'unit-from-values': true,
+    'heading-missing': true,
+    'heading-read-as': true,
+  }),
+)
+
+const text = z.string().check(z.maxLength(rateConstantLimits.text))
+const finite = z.number().check(z.refine(Number.isFinite, 'must be a finite number'))
+const positive = finite.check(z.positive())
+// Colder or hotter than any reaction is measured; and a temperature that was meant in another unit.
+const temperature_K = positive.check(z.lte(10_000))
+
+export const rateConstantTableSchema = z.object({
+  rows: z
+    .array(
+      z.object({
+        temperature_K,
+        rateConstant: positive,
+        standardUncertainty: z.nullable(positive),
+        label: z.nullable(text),
+        use: z.boolean(),
+      }),
+    )
+    .check(z.maxLength(rateConstantLimits.rows)),
+  rateUnit: z.string().check(z.maxLength(60)),
+  temperatureUnitShown: temperatureUnitSchema,
+  predictAt_K: z.array(temperature_K).check(z.maxLength(rateConstantLimits.predictions)),
+  source: z.object({ kind: sourceSchema, name: z.nullable(text), sha256: z.nullable(z.string().check(z.regex(/^[0-9a-f]{64}$/))) }),
+  notes: z
+    .array(
+      z.object({
+        code: noteCodeSchema,
+        severity: z.enum(['caution', 'note']),
+        message: text,
+        evidence: z.record(text, z.union([text, finite, z.null()])),
+      }),
+    )
+    .check(z.maxLength(rateConstantLimits.notes)),
+})
+
+/** What a person says about a table of rate constants; whatever is left out must stand in the table, and is asked for where it does not. */
+export const rateConstantReadOptionsSchema = z.strictObject({
+  temperatureUnit: z.optional(temperatureUnitSchema),
+  /** As written: `1/s`, `min-1`, `L/(mol s)`. */
+  rateUnit: z.optional(z.string().check(z.minLength(1), z.maxLength(60))),
+  delimiter: z.optional(z.enum(delimiterWords)),
+  decimalSign: z.optional(z.enum(decimalSignWords)),
+  encoding: z.optional(z.enum(encodingWords)),
+})
+export type RateConstantReadOptions = z.infer<typeof rateConstantReadOptionsSchema>
