@@ -1,13 +1,21 @@
 import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import type { Finding } from '../../shared-kinetics/review/finding.ts'
 import type { Window } from '../../shared-kinetics/series/run.ts'
-import type { ProfileResult, RunResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type {
+  ProfileResult,
+  RunResult,
+  StudyResult,
+  UncertaintyProfile,
+  UncertaintyResult,
+} from '../../shared-kinetics/tasks/study-result.ts'
 import { caution } from './caution.ts'
 
 /** What an export is made from: the study, what followed from it, and the program that worked it out. */
 export interface ExportSource {
   readonly document: StudyDocument
   readonly result: StudyResult
+  /** Intervals by resampling and from measured sources, where they were asked for. */
+  readonly uncertainty?: UncertaintyResult
   readonly program: { readonly name: 'rampfold'; readonly version: string }
 }
 
@@ -15,7 +23,7 @@ export interface ExportSource {
  * The text of `activation.json`, format `rampfold.activation/1`: full precision, null for a number that is not to be had.
  * Scripts rely on its fields: some may be added, none changed.
  */
-export function activationJson({ document, result, program }: ExportSource): string {
+export function activationJson({ document, result, program, uncertainty }: ExportSource): string {
   const labelOf = new Map(document.runs.map((run) => [run.id, run.label]))
   const content = {
     format: 'rampfold.activation/1',
@@ -26,7 +34,8 @@ export function activationJson({ document, result, program }: ExportSource): str
     signal: result.signal,
     runs: result.runs.map(runFields),
     levels: result.levels,
-    profiles: result.profiles.map(profileFields),
+    profiles: result.profiles.map((profile) => profileFields(profile, uncertaintyOf(profile, uncertainty))),
+    uncertainty: uncertainty === undefined ? null : { seed: uncertainty.seed, draws: uncertainty.draws },
     kissinger: result.kissinger,
     peakMethods: result.peakMethods,
     findings: result.findings.map((finding) => findingFields(finding, labelOf)),
@@ -69,7 +78,11 @@ function windowFields(window: Window): Record<string, number | null> {
     : { start_K: null, end_K: null, start_s: window.start_s, end_s: window.end_s }
 }
 
-function profileFields(profile: ProfileResult): Record<string, unknown> {
+/** What was worked out apart from the evaluation for a method. */
+export const uncertaintyOf = (profile: ProfileResult, uncertainty: UncertaintyResult | undefined): UncertaintyProfile | undefined =>
+  uncertainty?.profiles.find(({ method }) => method === profile.method)
+
+function profileFields(profile: ProfileResult, apart: UncertaintyProfile | undefined): Record<string, unknown> {
   return {
     method: profile.method,
     label: profile.label,
@@ -81,9 +94,15 @@ function profileFields(profile: ProfileResult): Record<string, unknown> {
     upper95_kJ_per_mol: profile.upper95_kJ_per_mol,
     lnAf_per_s: profile.lnAf_per_s,
     lnAfStandardError: profile.lnAfStandardError,
+    covarianceEaLnAf_kJ_per_mol: profile.covarianceEaLnAf_kJ_per_mol,
+    lnA_per_s: profile.lnA_per_s,
+    systematicError_percent: profile.systematicError_percent,
     r2: profile.r2,
     status: profile.status,
     mean: profile.mean,
+    otherIntervals: [...profile.otherIntervals, ...(apart?.intervals ?? [])],
+    budget: apart?.budget ?? [],
+    lackOfFit: profile.lackOfFit,
   }
 }
 

@@ -1,19 +1,20 @@
 import type { AnalysisSettings } from '../../shared-kinetics/tasks/study-input.ts'
 import type { Window } from '../../shared-kinetics/series/run.ts'
-import type { ProfileResult, RunResult } from '../../shared-kinetics/tasks/study-result.ts'
-import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
+import type { RunResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import type { ExportSource } from './activation-json.ts'
 import { caution } from './caution.ts'
+import { intervalLines, meanLines } from './interval-lines.ts'
 import { peakMethodLines } from './peak-method-lines.ts'
 
 /** The text of `activation.csv.txt`, which stands beside the table: caution, intervals, settings, where the runs came from, findings. */
-export function activationNotes({ document, result, program }: ExportSource): string {
+export function activationNotes(source: ExportSource): string {
+  const { document, result, program } = source
   const used = new Set(result.runs.map((run) => run.runId))
   const leftOut = document.runs.filter((run) => !used.has(run.id))
   const sections: readonly (readonly [string, readonly string[]])[] = [
     ['Caution', [caution]],
-    ['Intervals', intervalLines({ document, result, program })],
+    ['Intervals', intervalLines(source)],
     ['Means', result.profiles.flatMap(meanLines)],
     ['Peak and single-run methods', result.peakMethods.flatMap(peakMethodLines)],
     ['Settings', settingLines(document.settings, result.signal)],
@@ -34,31 +35,6 @@ export function activationNotes({ document, result, program }: ExportSource): st
   return `Activation energy against conversion, ${oneLine(document.name)}\n${program.name} ${program.version}\n\n${text}`
 }
 
-function intervalLines({ result }: ExportSource): string[] {
-  const lines = result.profiles.map(({ label, interval, sources, standardError_kJ_per_mol: errors }) => {
-    const name = errors.some((error) => error !== null)
-      ? `${interval.level * 100} % Student-t interval, ${interval.dof} degrees of freedom, for each level by itself`
-      : 'no standard error and no interval at any level (see the findings and the status of each level in activation.json)'
-    return `${label}: ${name}. Method: ${sources.join('; ')}`
-  })
-  const k = result.kissinger
-  if (k !== null) {
-    const interval =
-      k.lower95_kJ_per_mol === null || k.upper95_kJ_per_mol === null
-        ? ''
-        : ` (95 %: ${k.lower95_kJ_per_mol.toFixed(1)} to ${k.upper95_kJ_per_mol.toFixed(1)})`
-    lines.push(
-      `Kissinger, from the peaks: Ea ${k.Ea_kJ_per_mol.toFixed(2)} kJ/mol${interval}, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s). Method: ${k.sources.join('; ')}`,
-    )
-  }
-  if (result.runs.some((run) => run.heatingRateStandardError_K_per_min !== null)) {
-    lines.push(
-      'Heating rates: the standard error is that of the line through T(t), its rows taken as independent; it does not tell how steady the rate is',
-    )
-  }
-  return lines
-}
-
 function settingLines(settings: AnalysisSettings, signal: string | null): string[] {
   return [
     `signal: ${signal ?? 'none'}${settings.signal === null ? ' (chosen by the program)' : ''}`,
@@ -77,12 +53,6 @@ function runLines(run: RunResult): string[] {
       run,
     )}`,
   ]
-}
-
-function meanLines({ label, mean }: ProfileResult): string[] {
-  const { from, to, Ea_kJ_per_mol: Ea, spread_kJ_per_mol: spread } = mean
-  if (Ea === null || spread === null) return []
-  return [`${label}: ${Ea.toFixed(2)} kJ/mol over conversion ${from} to ${to} (${levelsOfMean(mean)}), spread ${spread.toFixed(2)} kJ/mol`]
 }
 
 /** Exothermic is negative; a magnitude says that it has no sign. */

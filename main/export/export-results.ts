@@ -16,7 +16,7 @@ export function exportResults(source: ExportSource, format: ExportFormat, style:
       return [file('activation.json', 'application/json', activationJson(source))]
     case 'csv':
       return [
-        file('activation.csv', 'text/csv; charset=utf-8', activationCsv(source.result, style)),
+        file('activation.csv', 'text/csv; charset=utf-8', activationCsv(source, style)),
         file('activation.csv.txt', 'text/plain; charset=utf-8', activationNotes(source)),
       ]
     case 'svg': {

@@ -1,0 +1,81 @@
+import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
+import type { BudgetEntry, IntervalResult, ProfileResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { uncertaintyOf, type ExportSource } from './activation-json.ts'
+
+/** Every kind of interval in the table, how it was made, and that it is pointwise; systematic errors and lack of fit beside them. */
+export function intervalLines({ result, uncertainty }: ExportSource): string[] {
+  const lines = [
+    'All intervals are pointwise: each holds for its level by itself, not for the whole curve at once',
+    ...result.profiles.flatMap((profile) => {
+      const apart = uncertaintyOf(profile, uncertainty)
+      return [
+        studentLine(profile),
+        ...[...profile.otherIntervals, ...(apart?.intervals ?? [])].map((interval) => otherLine(profile.label, interval)),
+        ...(apart?.budget ?? []).map((entry) => budgetLine(profile.label, entry)),
+        ...systematicLines(profile),
+        ...lackOfFitLines(profile),
+      ]
+    }),
+  ]
+  const k = result.kissinger
+  if (k !== null) {
+    const interval =
+      k.lower95_kJ_per_mol === null || k.upper95_kJ_per_mol === null
+        ? ''
+        : ` (95 %: ${k.lower95_kJ_per_mol.toFixed(1)} to ${k.upper95_kJ_per_mol.toFixed(1)})`
+    lines.push(
+      `Kissinger, from the peaks: Ea ${k.Ea_kJ_per_mol.toFixed(2)} kJ/mol${interval}, ln A ${k.lnA_per_s.toFixed(2)} (A in 1/s). Method: ${k.sources.join('; ')}`,
+    )
+  }
+  if (result.runs.some((run) => run.heatingRateStandardError_K_per_min !== null)) {
+    lines.push(
+      'Heating rates: the standard error is that of the line through T(t), its rows taken as independent; it does not tell how steady the rate is',
+    )
+  }
+  return lines
+}
+
+function studentLine({ label, interval, sources, standardError_kJ_per_mol: errors }: ProfileResult): string {
+  const name = errors.some((error) => error !== null)
+    ? `${interval.level * 100} % Student-t interval, ${interval.dof} degrees of freedom, for each level by itself`
+    : 'no standard error and no interval at any level (see the findings and the status of each level in activation.json)'
+  return `${label}: ${name}. Method: ${sources.join('; ')}`
+}
+
+function otherLine(label: string, { label: kind, level, approximate, note, sources }: IntervalResult): string {
+  const basis = sources.length === 0 ? '' : ` Source: ${sources.join('; ')}`
+  return `${label}: ${level * 100} % interval, ${kind}, pointwise${approximate ? ', approximate' : ''}. ${note}${basis}`
+}
+
+const budgetLine = (label: string, entry: BudgetEntry): string =>
+  `${label}: ${entry.label}, ${entry.magnitude}${entry.shownByScatter ? '; shown by the scatter of the points already' : ''}`
+
+/** Of a method that has a systematic error, its range over the levels. */
+function systematicLines({ label, systematicError_percent: values }: ProfileResult): string[] {
+  const known = values.filter((value) => value !== null)
+  if (known.every((value) => value === 0)) return []
+  const signed = (value: number): string => `${value > 0 ? '+' : ''}${value.toPrecision(2)} %`
+  const range = `${signed(Math.min(...known))} to ${signed(Math.max(...known))}`
+  return [`${label}: systematic error of Ea from its temperature integral ${range} over the levels, no part of any interval`]
+}
+
+function lackOfFitLines({ label, lackOfFit }: ProfileResult): string[] {
+  if (lackOfFit === null || lackOfFit.overMeanRange.p === null || lackOfFit.overMeanRange.F === null) return []
+  const { F, p } = lackOfFit.overMeanRange
+  return [
+    `${label}: lack of fit against pure error of replicates over the range of the mean: F(${lackOfFit.dofLackOfFit}, ${lackOfFit.dofPureError}) = ${F.toPrecision(3)}, p = ${p.toPrecision(2)}`,
+  ]
+}
+
+/** The mean of Ea over the range, with its interval where there is one. */
+export function meanLines({ label, mean, interval }: ProfileResult): string[] {
+  const { from, to, Ea_kJ_per_mol: Ea, spread_kJ_per_mol: spread, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper } = mean
+  if (Ea === null || spread === null) return []
+  const ends =
+    lower === null || upper === null
+      ? ''
+      : `, 95 % Student-t interval of the mean ${lower.toFixed(2)} to ${upper.toFixed(2)} kJ/mol (${interval.dof} degrees of freedom, from the runs' residuals averaged over the levels)`
+  return [
+    `${label}: ${Ea.toFixed(2)} kJ/mol over conversion ${from} to ${to} (${levelsOfMean(mean)})${ends}, spread ${spread.toFixed(2)} kJ/mol`,
+  ]
+}

@@ -1,0 +1,122 @@
+import Papa from 'papaparse'
+import { describe, expect, it } from 'vitest'
+import { profileOf, reviewInput } from '../../shared-kinetics/check-values/review-input-of.ts'
+import { emptyStudy } from '../../shared-kinetics/contract/study-document.ts'
+import type { IntervalResult, ProfileResult, StudyResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { ExportSource } from './activation-json.ts'
+import { exportResults, type ExportFormat } from './export-results.ts'
+
+const intervalOf = (kind: IntervalResult['kind'], label: string): IntervalResult => ({
+  kind,
+  label,
+  level: 0.95,
+  pointwise: true,
+  approximate: true,
+  note: `How ${kind} was made.`,
+  sources: ['S. Author, J. Something 1 (2000) 1'],
+  standardUncertainty_kJ_per_mol: [1, 2, null],
+  lower95_kJ_per_mol: [90, 91, null],
+  upper95_kJ_per_mol: [110.5, 111, null],
+})
+
+const friedman: ProfileResult = {
+  ...profileOf('friedman', [100, 101, null]),
+  label: 'Friedman',
+  lnAf_per_s: [20, 21, null],
+  lnAfStandardError: [0.5, 0.6, null],
+  covarianceEaLnAf_kJ_per_mol: [0.9, 1.1, null],
+}
+const kas: ProfileResult = {
+  ...profileOf('kas', [100, 101, null]),
+  label: 'Kissinger–Akahira–Sunose',
+  systematicError_percent: [-0.42, -0.4, null],
+  lackOfFit: { dofLackOfFit: 1, dofPureError: 3, F: [2, 3, null], p: [0.25, 0.18, null], overMeanRange: { F: 2.5, p: 0.212 } },
+  mean: { ...profileOf('kas', [100, 101, null]).mean, standardError_kJ_per_mol: 1, lower95_kJ_per_mol: 97.25, upper95_kJ_per_mol: 103.75 },
+}
+const vyazovkin: ProfileResult = {
+  ...profileOf('vyazovkin', [100, 101, null]),
+  label: 'Vyazovkin',
+  otherIntervals: [intervalOf('vyazovkin-wight-f', 'F-type interval of Vyazovkin and Wight')],
+}
+const result: StudyResult = { ...reviewInput({ result: { profiles: [friedman, kas, vyazovkin] } }).result, findings: [] }
+const uncertainty: UncertaintyResult = {
+  levels: result.levels,
+  seed: 7,
+  draws: 0,
+  profiles: [
+    {
+      method: 'vyazovkin',
+      intervals: [intervalOf('jackknife', 'Jackknife over runs')],
+      budget: [
+        {
+          source: 'temperature-run',
+          label: 'Temperature, each run',
+          magnitude: '0.5 K',
+          standardUncertainty_kJ_per_mol: [1, 1, null],
+          shownByScatter: true,
+        },
+      ],
+    },
+  ],
+}
+const source: ExportSource = { document: emptyStudy('study', 'A study'), result, program: { name: 'rampfold', version: '1.2.3' } }
+const textOf = (from: ExportSource, format: ExportFormat, index = 0): string =>
+  new TextDecoder().decode(exportResults(from, format)[index]?.bytes)
+
+describe('intervals in what is exported', () => {
+  it('stand in the JSON of each profile, named by kind, with those made apart from the evaluation', () => {
+    const json = JSON.parse(textOf({ ...source, uncertainty }, 'json')) as { profiles: ProfileResult[]; uncertainty: unknown }
+    expect(json.uncertainty).toEqual({ seed: 7, draws: 0 })
+    expect(json.profiles[2]?.otherIntervals.map(({ kind, pointwise }) => [kind, pointwise])).toEqual([
+      ['vyazovkin-wight-f', true],
+      ['jackknife', true],
+    ])
+    expect(json.profiles[2]).toMatchObject({ budget: [{ source: 'temperature-run' }], lackOfFit: null })
+    expect(json.profiles[0]).toMatchObject({ covarianceEaLnAf_kJ_per_mol: [0.9, 1.1, null], otherIntervals: [] })
+    expect(json.profiles[1]).toMatchObject({
+      systematicError_percent: [-0.42, -0.4, null],
+      lackOfFit: { overMeanRange: { p: 0.212 } },
+      mean: { lower95_kJ_per_mol: 97.25, upper95_kJ_per_mol: 103.75 },
+    })
+    expect(JSON.parse(textOf(source, 'json'))).toMatchObject({ uncertainty: null })
+  })
+
+  it('stand in the table after the columns that every method has, where a method has them', () => {
+    const { data } = Papa.parse<string[]>(textOf({ ...source, uncertainty }, 'csv').trim())
+    const [headings = [], first = [], , last = []] = data
+    expect(headings.slice(1 + 3 * 5)).toEqual([
+      'ln[A f] Friedman standard error',
+      'covariance of Ea and ln[A f] Friedman (kJ/mol)',
+      'Ea Kissinger-Akahira-Sunose systematic error (%)',
+      'Ea Vyazovkin F-type interval of Vyazovkin and Wight lower 95 % (kJ/mol)',
+      'Ea Vyazovkin F-type interval of Vyazovkin and Wight upper 95 % (kJ/mol)',
+      'Ea Vyazovkin Jackknife over runs lower 95 % (kJ/mol)',
+      'Ea Vyazovkin Jackknife over runs upper 95 % (kJ/mol)',
+    ])
+    expect(first.slice(1 + 3 * 5)).toEqual(['0.5', '0.9', '-0.42', '90', '110.5', '90', '110.5'])
+    expect(last.slice(1 + 3 * 5)).toEqual(['', '', '', '', '', '', ''])
+    // Contract: these come first, whatever is added.
+    expect(headings.slice(0, 6)).toEqual([
+      'conversion',
+      'Ea Friedman (kJ/mol)',
+      'Ea Friedman standard error (kJ/mol)',
+      'Ea Friedman lower 95 % (kJ/mol)',
+      'Ea Friedman upper 95 % (kJ/mol)',
+      'ln[A f] Friedman (A in 1/s)',
+    ])
+  })
+
+  it('are named in the text beside the table, all as pointwise', () => {
+    const notes = textOf({ ...source, uncertainty }, 'csv', 1)
+    expect(notes).toContain('All intervals are pointwise')
+    expect(notes).toContain(
+      'Vyazovkin: 95 % interval, F-type interval of Vyazovkin and Wight, pointwise, approximate. How vyazovkin-wight-f was made.',
+    )
+    expect(notes).toContain('Vyazovkin: 95 % interval, Jackknife over runs, pointwise, approximate.')
+    expect(notes).toContain('Vyazovkin: Temperature, each run, 0.5 K; shown by the scatter of the points already')
+    expect(notes).toContain('Kissinger–Akahira–Sunose: systematic error of Ea from its temperature integral -0.42 % to -0.40 %')
+    expect(notes).toContain('F(1, 3) = 2.50, p = 0.21')
+    expect(notes).toContain('95 % Student-t interval of the mean 97.25 to 103.75 kJ/mol (3 degrees of freedom')
+    expect(textOf(source, 'csv', 1)).not.toContain('Jackknife')
+  })
+})
