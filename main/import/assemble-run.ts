@@ -1,11 +1,11 @@
 import { studyLimits } from '../../shared-kinetics/contract/study-document.ts'
 import type { ImportNote, RunColumns, SignalInfo } from '../../shared-kinetics/series/run.ts'
-import { allocateColumn } from '../../shared-kinetics/series/shared-column.ts'
 import type { SignalUnit } from '../../shared-kinetics/series/signal-quantity.ts'
-import { column as tagged, type Unit } from '../../shared-kinetics/units/quantity.ts'
+import { type ConvertedColumn, convertColumn } from './convert-column.ts'
 import type { RunOfColumns } from './divide-into-runs.ts'
 import { type FileUnit, signalUnitOf } from './file-unit.ts'
 import { quoted, type Refuse } from './import-refusal.ts'
+import type { LinearScale } from './linear-scale.ts'
 import { type PlannedColumn, words } from './plan-columns.ts'
 import type { RawTable } from './read-columns.ts'
 import { settleUnit, unitUnknown } from './settle-unit.ts'
@@ -50,22 +50,23 @@ export function assembleRun(
 
   const temperatureUnit = settle(run.temperature, null)
   if (temperatureUnit === null) throw unitUnknown(run.temperature, lineOf(0), refuse)
-  const temperature_K = converted(raw(run.temperature), 'K', temperatureUnit.toSI)
-  checkTemperature(temperature_K, run.temperature, lineOf, refuse)
+  const temperature = convertColumn(raw(run.temperature), 'K', temperatureUnit.scale)
+  checkTemperature(temperature, run.temperature, lineOf, refuse)
+  const temperature_K = temperature.values
 
   const span = (temperature_K.at(-1) ?? Number.NaN) - (temperature_K[0] ?? Number.NaN)
   const timeUnit = run.time === null ? null : settle(run.time, { temperatureSpan_K: span, nominal_K_per_s: stated.nominal_K_per_s })
   if (run.time !== null && timeUnit === null) throw unitUnknown(run.time, lineOf(0), refuse)
-  const time_s = run.time === null || timeUnit === null ? null : converted(raw(run.time), 's', timeUnit.toSI)
-  if (time_s === null) notes.push(timeMissing)
-  else if (run.time !== null) checkTime(time_s, run.time, raw(run.time), lineOf, refuse)
+  const time = run.time === null || timeUnit === null ? null : convertColumn(raw(run.time), 's', timeUnit.scale)
+  if (time === null) notes.push(timeMissing)
+  else if (run.time !== null) checkTime(time, run.time, raw(run.time), lineOf, refuse)
 
-  const signals: { info: SignalInfo; values: Float64Array; planned: PlannedColumn }[] = []
+  const signals: { info: SignalInfo; column: ConvertedColumn<SignalUnit>; planned: PlannedColumn }[] = []
   const aside: { column: PlannedColumn; why: string }[] = []
   for (const planned of run.signals) {
     const unit = settle(planned, null)
-    const conversion = unit === null ? null : conversionOf(planned, unit, raw(planned), stated.initialMass_kg)
-    if (unit === null || conversion === null) {
+    const scale = unit === null ? null : scaleOf(planned, unit, raw(planned), stated.initialMass_kg)
+    if (unit === null || scale === null) {
       aside.push({ column: planned, why: unit === null ? 'nothing tells its unit' : 'the mass at the start is not known' })
       continue
     }
@@ -75,7 +76,7 @@ export function assembleRun(
     signals.push({
       planned,
       info: { quantity, unit: siUnit, label: planned.label, fileUnit },
-      values: converted(raw(planned), siUnit, conversion),
+      column: convertColumn(raw(planned), siUnit, scale),
     })
   }
   const [firstAside] = aside
@@ -89,13 +90,13 @@ export function assembleRun(
   }
   if (aside.length > 0) notes.push(asideNote(aside))
   notes.push(...severalNotes(signals.map(({ planned }) => planned)))
-  const columns: RunColumns = { time_s, temperature_K, signals: signals.map(({ values }) => values) }
+  const columns: RunColumns = { time_s: time?.values ?? null, temperature_K, signals: signals.map(({ column }) => column.values) }
   const mass = signals.find(({ info, planned }) => info.unit === 'kg' && planned.as === 'value')
   return {
     columns,
     rows,
     signals: signals.map(({ info }) => info),
-    firstMass_kg: mass === undefined ? null : firstPlausible(mass.values),
+    firstMass_kg: mass === undefined ? null : firstPlausible(mass.column),
     notes,
     units,
   }
@@ -103,6 +104,13 @@ export function assembleRun(
 
 /** The rows up to the last whole one. Behind it a few that are cut short are set aside; before it an empty cell is refused. */
 function wholeRows(used: readonly PlannedColumn[], table: RawTable, refuse: Refuse): { rows: number; incomplete: readonly number[] } {
+  const complete = used.every((column) => table.filled[column.index] === table.rows)
+  const { rows, incomplete } = complete ? { rows: table.rows, incomplete: [] } : rowsAmongEmptyCells(used, table, refuse)
+  if (rows < 3) throw refuse(table.lineOfRow[0] ?? 0, `A run has only ${rows} whole rows.`, 'Export the whole run.')
+  return { rows, incomplete }
+}
+
+function rowsAmongEmptyCells(used: readonly PlannedColumn[], table: RawTable, refuse: Refuse): ReturnType<typeof wholeRows> {
   const isEmpty = (column: PlannedColumn, row: number): boolean => Number.isNaN(table.columns[column.index]?.[row] ?? Number.NaN)
   let last = table.rows - 1
   const incomplete: number[] = []
@@ -122,54 +130,51 @@ function wholeRows(used: readonly PlannedColumn[], table: RawTable, refuse: Refu
     if (!isEmpty(used[0] as PlannedColumn, row)) continue
     throw refuse(table.lineOfRow[row] ?? 0, 'The run’s cells are empty here, and more of its rows follow.', 'Remove this line.')
   }
-  if (rows < 3) throw refuse(table.lineOfRow[0] ?? 0, `A run has only ${rows} whole rows.`, 'Export the whole run.')
   return { rows, incomplete: incomplete.toReversed() }
 }
 
-function converted<U extends Unit>(values: Float64Array, unit: U, toSI: (value: number) => number) {
-  const column = allocateColumn(values.length, unit)
-  for (let i = 0; i < values.length; i++) column[i] = toSI(values[i] ?? Number.NaN)
-  return tagged(column, unit)
-}
-
 /** Change and loss become what is left: of 1, or of the mass at the start. */
-function conversionOf(
-  column: PlannedColumn,
-  unit: FileUnit,
-  values: Float64Array,
-  initialMass_kg: number | null,
-): ((value: number) => number) | null {
-  if (column.quantity !== 'mass' || column.as === 'value') return unit.toSI
+function scaleOf(column: PlannedColumn, unit: FileUnit, values: Float64Array, initialMass_kg: number | null): LinearScale | null {
+  if (column.quantity !== 'mass' || column.as === 'value') return unit.scale
   const start = unit.dimension === 'fraction' ? 1 : initialMass_kg
   if (start === null) return null
-  if (column.as === 'change') return (value) => start + unit.toSI(value)
+  const change = { ...unit.scale, offset: start }
+  if (column.as === 'change') return change
   // Some write a loss as a negative number: then it is the change.
   let sum = 0
   for (const value of values) sum += value
-  return sum >= 0 ? (value) => start - unit.toSI(value) : (value) => start + unit.toSI(value)
+  return sum >= 0 ? { ...change, factor: -change.factor } : change
 }
 
-function checkTemperature(temperature_K: Float64Array, column: PlannedColumn, lineOf: (row: number) => number, refuse: Refuse): void {
-  const impossible = temperature_K.findIndex((value) => !(value > 0 && value <= highestTemperature_K))
-  if (impossible < 0) return
-  const value = temperature_K[impossible] ?? Number.NaN
+function checkTemperature(
+  { values, least, greatest }: ConvertedColumn<'K'>,
+  column: PlannedColumn,
+  lineOf: (row: number) => number,
+  refuse: Refuse,
+): void {
+  if (least > 0 && greatest <= highestTemperature_K) return
+  const impossible = values.findIndex((value) => !(value > 0 && value <= highestTemperature_K))
+  const value = values[impossible] ?? Number.NaN
   const where = value <= 0 ? 'at or below absolute zero' : 'above any that a sample reaches'
   const reason = `The temperature in column ${quoted(column.label)} would be ${Number(value.toPrecision(6))} K, ${where}.`
   throw refuse(lineOf(impossible), reason, `Check this row and the unit of “column ${column.index + 1}”.`)
 }
 
-function checkTime(time_s: Float64Array, column: PlannedColumn, raw: Float64Array, lineOf: (row: number) => number, refuse: Refuse): void {
-  for (let i = 1; i < time_s.length; i++) {
-    if ((time_s[i] ?? 0) >= (time_s[i - 1] ?? 0)) continue
-    const reason = `Time goes backwards: ${raw[i]} follows ${raw[i - 1]} in column ${quoted(column.label)}.`
-    throw refuse(lineOf(i), reason, 'Export one segment a file, or put the rows in order of time.')
-  }
+function checkTime(
+  { firstFall }: ConvertedColumn<'s'>,
+  column: PlannedColumn,
+  raw: Float64Array,
+  lineOf: (row: number) => number,
+  refuse: Refuse,
+): void {
+  if (firstFall === null) return
+  const reason = `Time goes backwards: ${raw[firstFall]} follows ${raw[firstFall - 1]} in column ${quoted(column.label)}.`
+  throw refuse(lineOf(firstFall), reason, 'Export one segment a file, or put the rows in order of time.')
 }
 
 /** A first row may hold a placeholder: the first reading of at least half the greatest one counts. */
-function firstPlausible(mass_kg: Float64Array): number | null {
-  const greatest = mass_kg.reduce((most, value) => Math.max(most, value), 0)
-  return mass_kg.find((value) => value > 0 && value >= greatest / 2) ?? null
+function firstPlausible({ values, greatest }: ConvertedColumn<SignalUnit>): number | null {
+  return values.find((value) => value > 0 && value >= greatest / 2) ?? null
 }
 
 const timeMissing: ImportNote = {

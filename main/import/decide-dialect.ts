@@ -2,8 +2,9 @@ import type { DecimalSignWord, DelimiterWord, ImportOptions } from '../../shared
 import type { ImportContext } from './import-context.ts'
 import type { Refuse } from './import-refusal.ts'
 import { byteKinds, cellText, findCells, type LineCells, newLineCells } from './line-cells.ts'
-import { numberInBytes } from './number-in-bytes.ts'
-import { isMissingMark, longestMissingMark } from './parse-number.ts'
+import { isDigit, numberInBytes } from './number-in-bytes.ts'
+import { isMissingMark } from './parse-number.ts'
+import { delimiterCharacter } from './split-cells.ts'
 import { lineEnd, lineStart, type TextLines } from './text-lines.ts'
 
 /** How the cells of a file are written, and what its rows of numbers look like. */
@@ -96,7 +97,8 @@ function noTable(lines: TextLines, options: ImportOptions): readonly [string, st
  */
 function readEachWay(lines: TextLines, options: ImportOptions, enough: number): readonly Stretch[] {
   const signs: readonly DecimalSignWord[] = options.decimalSign === undefined ? ['point', 'comma'] : [options.decimalSign]
-  const ways = (options.delimiter === undefined ? preference : [options.delimiter]).map((delimiter) => ({
+  const delimiters = options.delimiter === undefined ? preference.filter((delimiter) => occurs(delimiter, lines)) : [options.delimiter]
+  const ways = delimiters.map((delimiter) => ({
     delimiter,
     kinds: byteKinds(delimiter),
     readers: signs.map((decimal) => stretchReader(delimiter, decimal)),
@@ -116,6 +118,9 @@ function readEachWay(lines: TextLines, options: ImportOptions, enough: number): 
   const stretches = ways.flatMap((way) => way.readers.map((reader) => reader.longest()))
   return stretches.filter((s) => s.score > 0).sort((a, b) => b.score - a.score)
 }
+
+const occurs = (delimiter: DelimiterWord, { bytes }: TextLines): boolean =>
+  delimiter === 'blanks' || bytes.includes(delimiterCharacter[delimiter].charCodeAt(0))
 
 /** Follows the rows under one reading and keeps the stretch with the most numbers in it. */
 function stretchReader(delimiter: DelimiterWord, decimal: DecimalSignWord) {
@@ -154,7 +159,7 @@ function stretchReader(delimiter: DelimiterWord, decimal: DecimalSignWord) {
         isNumeric[i] = is
         if (isEmpty) continue
         if (is) numbers++
-        else if (to - from > longestMissingMark || !isMissingMark(cellText(cells, i))) others++
+        else if (isDigit(cells.bytes[from] ?? 0) || !isMissingMark(cellText(cells, i))) others++
       }
       const likeData = numbers >= 2 && numbers >= others
       if (!likeData || width !== columns) close()

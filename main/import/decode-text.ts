@@ -29,7 +29,6 @@ export function decodeText(
     throw refuse(null, 'The file is not valid UTF-8.', 'State another “encoding”: windows-1252, utf-16le or utf-16be.')
   }
   const text = asBytes(body, encoding.word, refuse)
-  refuseControlCharacters(text.bytes, refuse)
   if (isBlank(text.bytes)) throw refuse(null, 'The file holds nothing but blanks.', 'Export the run again.')
   return { text, decision: { step: 'encoding', value: encoding.word, reason: encoding.reason } }
 }
@@ -59,6 +58,7 @@ function byteOrderMark(bytes: Uint8Array): Encoding | null {
 /** Text of mostly ASCII characters in UTF-16 has a NUL in nearly every second place. */
 function wideByNulBytes(bytes: Uint8Array): Encoding | null {
   const length = Math.min(bytes.byteLength & ~1, 8192)
+  if (!bytes.subarray(0, length).includes(0)) return null
   let even = 0
   let odd = 0
   for (let i = 0; i < length; i += 2) {
@@ -86,21 +86,8 @@ function asBytes(body: Buffer, word: EncodingWord, refuse: Refuse): TextBytes {
   }
 }
 
-/** Control characters other than tab, line ends, form feed and the old end-of-file mark are not written by exports. */
-function refuseControlCharacters(bytes: Buffer, refuse: Refuse): void {
-  const length = Math.min(bytes.length, 65_536)
-  let characters = 0
-  let controls = 0
-  for (let i = 0; i < length; i++) {
-    const byte = bytes[i] ?? 0
-    // Bytes that continue a character of UTF-8 count for none.
-    if ((byte & 0xc0) !== 0x80) characters++
-    if (byte < 9 || (byte > 13 && byte < 32 && byte !== 26)) controls++
-  }
-  if (controls > characters / 200) throw refuse(null, 'The file is not text: it is full of control characters.', binaryRemedy)
-}
-
+/** Nothing but blanks and line ends. */
 function isBlank(bytes: Buffer): boolean {
-  const first = bytes.findIndex((byte) => byte > 32)
+  const first = bytes.findIndex((byte) => byte !== 32 && (byte < 9 || byte > 13))
   return first < 0 || ((bytes[first] ?? 0) >= 0x80 && bytes.toString('utf8').trim() === '')
 }

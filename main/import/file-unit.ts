@@ -1,4 +1,5 @@
-import { celsiusToKelvin, fahrenheitToKelvin } from '../../shared-kinetics/units/convert.ts'
+import { zeroCelsius_K } from '../../shared-kinetics/units/constants.ts'
+import { applyScale, type LinearScale, unscaled } from './linear-scale.ts'
 
 export type Dimension = 'time' | 'temperature' | 'mass' | 'fraction' | 'power' | 'specific-power'
 
@@ -7,15 +8,19 @@ export interface FileUnit {
   /** One spelling of it, the same for all ways of writing it. */
   readonly word: string
   readonly dimension: Dimension
-  /** Divides where the factor would not be exact, so that the result is rounded once. */
+  readonly scale: LinearScale
   readonly toSI: (value: number) => number
 }
 
-const times = (word: string, dimension: Dimension, factor: number): FileUnit => ({ word, dimension, toSI: (value) => value * factor })
-const over = (word: string, dimension: Dimension, divisor: number): FileUnit => ({ word, dimension, toSI: (value) => value / divisor })
+function fileUnit(word: string, dimension: Dimension, parts: Partial<LinearScale>): FileUnit {
+  const scale = { ...unscaled, ...parts }
+  return { word, dimension, scale, toSI: (value) => applyScale(scale, value) }
+}
+const times = (word: string, dimension: Dimension, factor: number): FileUnit => fileUnit(word, dimension, { factor })
+const over = (word: string, dimension: Dimension, divisor: number): FileUnit => fileUnit(word, dimension, { divisor })
 
-const celsius: FileUnit = { word: '°C', dimension: 'temperature', toSI: celsiusToKelvin }
-const fahrenheit: FileUnit = { word: '°F', dimension: 'temperature', toSI: fahrenheitToKelvin }
+const celsius = fileUnit('°C', 'temperature', { offset: zeroCelsius_K })
+const fahrenheit = fileUnit('°F', 'temperature', { zero: 32, divisor: 1.8, offset: zeroCelsius_K })
 const kelvin = times('K', 'temperature', 1)
 const percent = over('%', 'fraction', 100)
 const one = times('1', 'fraction', 1)

@@ -3,7 +3,7 @@ import { largestExact, parseNumber, powersOfTen } from './parse-number.ts'
 
 const minus = 45
 const plus = 43
-const isDigit = (byte: number): boolean => byte >= 48 && byte <= 57
+export const isDigit = (byte: number): boolean => byte >= 48 && byte <= 57
 
 /**
  * The number written in UTF-8 bytes from `from` up to `to`: the same as `parseNumber` gives for their text, NaN where they are no number.

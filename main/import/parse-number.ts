@@ -94,4 +94,3 @@ export function isNumber(cell: string, decimal: DecimalSignWord): boolean {
 
 /** A mark that stands for a number that was not to be had. It is no number, but a row that holds it is still a row of numbers. */
 export const isMissingMark = (cell: string): boolean => /^(?:nan|n\/?a|#n\/a|null|[+-]?inf(?:inity)?|-{1,3})$/i.test(cell)
-export const longestMissingMark = '+infinity'.length

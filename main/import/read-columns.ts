@@ -64,7 +64,7 @@ function emptyColumns(plan: readonly PlannedColumn[], capacity: number): Columns
     values: new Float64Array(capacity * used).fill(Number.NaN),
     capacity,
     offsets,
-    asideFilled: new Uint8Array(plan.length),
+    filled: new Uint32Array(plan.length),
     lineOfRow: new Uint32Array(capacity),
     rows: 0,
   }
@@ -78,8 +78,7 @@ function readRow(
   columns: ColumnsInProgress,
   refuse: Refuse,
 ): void {
-  const { values, offsets, asideFilled, lineOfRow, rows } = columns
-  for (const offset of offsets) if (offset >= 0) values[offset + rows] = Number.NaN
+  const { values, offsets, filled, lineOfRow, rows } = columns
   for (let column = 0; column < cells.count; column++) {
     const from = cells.from[column] ?? 0
     const to = cells.to[column] ?? 0
@@ -87,33 +86,24 @@ function readRow(
     if (column >= plan.length) throw tooManyCells(cellText(cells, column), column, line, refuse)
     const offset = offsets[column] ?? -1
     if (offset < 0) {
-      asideFilled[column] = 1
+      filled[column] = 1
       continue
     }
     const value = numberInBytes(cells.bytes, from, to, decimal)
     if (Number.isNaN(value)) throw notANumber(cellText(cells, column), line, plan[column]?.label ?? '', plan, refuse)
     values[offset + rows] = value
+    filled[column] = (filled[column] ?? 0) + 1
   }
   lineOfRow[rows] = line
   columns.rows++
 }
 
-function tableOf(plan: readonly PlannedColumn[], { values, offsets, asideFilled, lineOfRow, rows }: ColumnsInProgress): RawTable {
+function tableOf(plan: readonly PlannedColumn[], { values, offsets, filled, lineOfRow, rows }: ColumnsInProgress): RawTable {
   const columns = plan.map((_, i) => {
     const offset = offsets[i] ?? -1
     return offset < 0 ? undefined : values.subarray(offset, offset + rows)
   })
-  const filled = Uint32Array.from(plan, (_, i) => {
-    const column = columns[i]
-    return column === undefined ? (asideFilled[i] ?? 0) : numbersIn(column)
-  })
   return { rows, lineOfRow: lineOfRow.subarray(0, rows), columns, filled }
-}
-
-function numbersIn(column: Float64Array): number {
-  let count = 0
-  for (let row = 0; row < column.length; row++) if (!Number.isNaN(column[row])) count++
-  return count
 }
 
 function tooManyCells(cell: string, column: number, line: number, refuse: Refuse) {

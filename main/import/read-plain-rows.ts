@@ -11,8 +11,8 @@ export interface ColumnsInProgress {
   readonly capacity: number
   /** Where each column of the file begins in `values`; -1 for one that is set aside. */
   readonly offsets: Int32Array
-  /** 1 for a set-aside column that is not empty. */
-  readonly asideFilled: Uint8Array
+  /** Cells that are not empty; of a set-aside column 1 once there is any. */
+  readonly filled: Uint32Array
   readonly lineOfRow: Uint32Array
   /** Rows read so far. */
   rows: number
@@ -32,7 +32,7 @@ const mostDigits = 15
  * Proc. PLDI (1990) 92); every other way to write a number is left to `numberInBytes`.
  *
  * @param first, last - the lines to read, from 0
- * @returns the first line that is not plain, or `last + 1`; what that line left in `values` is void
+ * @returns the first line that is not plain, or `last + 1`
  */
 export function readPlainRows(
   { bytes, starts, ends }: TextLines,
@@ -42,7 +42,7 @@ export function readPlainRows(
   decimal: DecimalSignWord,
   columns: ColumnsInProgress,
 ): number {
-  const { values, offsets, asideFilled, lineOfRow } = columns
+  const { values, offsets, filled, lineOfRow } = columns
   const width = offsets.length
   const runsOfBlanks = delimiter === 'blanks'
   const separator = runsOfBlanks ? space : delimiterCharacter[delimiter].charCodeAt(0)
@@ -52,7 +52,7 @@ export function readPlainRows(
   lines: for (; line <= last; line++) {
     const end = ends[line] ?? 0
     let at = starts[line] ?? 0
-    let filled = false
+    let nothing = true
     for (let column = 0; ; column++) {
       while (at < end && bytes[at] === space) at++
       if (at === end && (runsOfBlanks || column === 0 || column >= width)) break
@@ -65,8 +65,8 @@ export function readPlainRows(
           if (byte < space || byte === quote || byte >= 0x80) break lines
         }
         if (at > from) {
-          asideFilled[column] = 1
-          filled = true
+          filled[column] = 1
+          nothing = false
         }
       } else {
         const from = at
@@ -97,24 +97,36 @@ export function readPlainRows(
         if (plain) {
           const value = mantissa / (powersOfTen[scale] ?? 1)
           values[offset + row] = negative ? -value : value
-          filled = true
+          filled[column] = (filled[column] ?? 0) + 1
+          nothing = false
         } else if (from < end && bytes[from] !== separator) {
           at = endOfCell(bytes, from, end, separator)
           const value = numberInBytes(bytes, from, withoutBlanks(bytes, from, at), decimal)
           if (Number.isNaN(value)) break lines
           values[offset + row] = value
-          filled = true
+          filled[column] = (filled[column] ?? 0) + 1
+          nothing = false
         }
       }
       if (at === end) break
       at++
     }
-    if (!filled) break
+    if (nothing) break
     lineOfRow[row] = line + 1
     row++
   }
   columns.rows = row
+  if (line <= last) forgetRow(columns, row)
   return line
+}
+
+/** A line that is not plain may have left numbers behind. */
+function forgetRow({ values, offsets, filled }: ColumnsInProgress, row: number): void {
+  offsets.forEach((offset, column) => {
+    if (offset < 0 || Number.isNaN(values[offset + row])) return
+    values[offset + row] = Number.NaN
+    filled[column] = (filled[column] ?? 0) - 1
+  })
 }
 
 function endOfCell(bytes: Buffer, from: number, end: number, separator: number): number {

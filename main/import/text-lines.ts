@@ -1,6 +1,7 @@
 import iconv from 'iconv-lite'
 import type { ImportContext } from './import-context.ts'
 import type { Refuse } from './import-refusal.ts'
+import { binaryRemedy } from './refuse-binary.ts'
 
 /** A text as bytes. In both encodings a byte below 0x80 is the ASCII character and nothing else, so that numbers are read from the bytes. */
 export interface TextBytes {
@@ -20,6 +21,10 @@ const largestLineCount = 20_000_000
 const lineFeed = 10
 const carriageReturn = 13
 
+/**
+ * Finds the lines.
+ * @throws ImportRefusal for a text that is full of control characters, and for too many lines; Cancelled
+ */
 export function textLines({ bytes, encoding }: TextBytes, context: ImportContext, refuse: Refuse): TextLines {
   const { length } = bytes
   // Lines of numbers are seldom shorter.
@@ -27,9 +32,14 @@ export function textLines({ bytes, encoding }: TextBytes, context: ImportContext
   let ends = new Uint32Array(starts.length)
   let count = 0
   let start = 0
+  let controls = 0
   for (let at = 0; at < length; at++) {
     const byte = bytes[at] ?? 0
-    if (byte > carriageReturn || (byte !== lineFeed && byte !== carriageReturn)) continue
+    if (byte >= 32) continue
+    if (byte !== lineFeed && byte !== carriageReturn) {
+      if (isControl(byte) && at < controlsSample) controls++
+      continue
+    }
     if (count >= largestLineCount) throw refuse(null, 'The file has more than 20 million lines.', 'Export it with a coarser time step.')
     // One place is left for a last line without a line end.
     if (count + 1 >= starts.length) {
@@ -48,7 +58,22 @@ export function textLines({ bytes, encoding }: TextBytes, context: ImportContext
     ends[count] = length
     count++
   }
+  if (controls > 0 && controls > charactersIn(bytes.subarray(0, controlsSample)) / 200) {
+    throw refuse(null, 'The file is not text: it is full of control characters.', binaryRemedy)
+  }
   return { bytes, encoding, count, starts, ends }
+}
+
+const controlsSample = 65_536
+
+/** Control characters that exports do not write: all but tab, line ends, form feed and the old end-of-file mark. */
+const isControl = (byte: number): boolean => byte < 9 || (byte > 13 && byte !== 26)
+
+/** Bytes that continue a character of UTF-8 count for none. */
+function charactersIn(bytes: Uint8Array): number {
+  let count = 0
+  for (const byte of bytes) if ((byte & 0xc0) !== 0x80) count++
+  return count
 }
 
 function grown(array: Uint32Array<ArrayBuffer>): Uint32Array<ArrayBuffer> {
