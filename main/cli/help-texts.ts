@@ -1,6 +1,13 @@
 import { baselineKinds } from '../../shared-kinetics/tasks/study-input.ts'
-import { methodIds } from '../../shared-kinetics/isoconversional/result.ts'
+import { methodsOnRequest } from '../../shared-kinetics/contract/methods-on-request.ts'
+import { methodIds, type MethodId } from '../../shared-kinetics/isoconversional/result.ts'
 import { signalQuantities } from '../../shared-kinetics/series/signal-quantity.ts'
+
+const onRequest: readonly MethodId[] = methodsOnRequest
+
+/** A list that goes on under its first word, five words a line. */
+const listed = (words: readonly string[]): string =>
+  words.map((word, i) => (i === 0 ? word : i % 5 === 0 ? `,\n${' '.repeat(30)}${word}` : `, ${word}`)).join('')
 
 export const generalHelp = `rampfold <command> [paths] [options]
 
@@ -45,8 +52,9 @@ activation.csv.txt beside it) and activation.svg into DIR; a short table appears
 
   --out DIR                   where the files go; those of these names are replaced, others left alone
   --levels SPEC               levels of conversion: first:last:step (default 0.05:0.95:0.05) or a list 0.1,0.5,0.9
-  --methods LIST              of: ${methodIds.join(', ')}
-                              (default: all that apply)
+  --methods LIST              of: ${listed(methodIds.filter((id) => !onRequest.includes(id)))}
+                              (default: all of these that apply), and on request:
+                              ${listed(onRequest)}
   --heating-rates LIST        nominal heating rates in K/min, in the order of the runs
   --signal WORD               ${signalQuantities.join(', ')}
                               (default: the first of these that every run has)
