@@ -75,9 +75,10 @@ function lengthOf(values: ArrayLike<number>): number {
   return Math.sqrt(sum)
 }
 
+const finite = (values: ArrayLike<number>): boolean => Array.from(values).every(Number.isFinite)
+
 function checkInput(columns: readonly ArrayLike<number>[], y: ArrayLike<number>): void {
   const n = y.length
-  const finite = (values: ArrayLike<number>): boolean => Array.from(values).every(Number.isFinite)
   columns.forEach((values, j) => {
     if (values.length !== n) {
       throw new KineticsError('column-length', `Column ${j + 1} of a linear fit has ${values.length} values for ${n} of y.`, {

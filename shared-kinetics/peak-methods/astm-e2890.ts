@@ -23,6 +23,9 @@ export const e2890Scope = {
   order: { 'nth-order': [0.5, 4], accelerating: [1, 4] },
 } as const
 
+/** An order is not known better than to this share, so that one as little outside the scope as that is not called outside. */
+const sharpness = 0.02
+
 export interface AstmE2890Estimate extends PeakEstimate {
   /** Median order of the peaks, of the family that most of them have; null where no peak has its half heights. */
   readonly order: PeakOrder | null
@@ -50,7 +53,7 @@ export function astmE2890(peaks: readonly ShapedRatePeak[]): AstmE2890Estimate {
   const [coldest, hottest] = e2890Scope.temperature_K
   const temperatures = peaks.every(({ temperature }) => temperature >= coldest && temperature <= hottest)
   const [lowest, highest] = order === null ? [0, Infinity] : e2890Scope.order[order.family]
-  const orders = order === null || (order.order > lowest && order.order < highest)
+  const orders = order === null || (order.order > lowest * (1 - sharpness) && order.order < highest * (1 + sharpness))
   return { ...estimate, order, peaksOfFamily, outOfScope: temperatures ? (orders ? null : 'order') : 'temperature' }
 }
 

@@ -35,6 +35,12 @@ const withNoise = (points: RunPoints, noise: () => number): RunPoints => ({
   ),
 })
 
+const points = (T: number[], alpha: number[], rate: number[]): RunPoints => ({
+  temperature_K: column(Float64Array.from(T), 'K'),
+  conversion: column(Float64Array.from(alpha), '1'),
+  reactionRate_per_s: column(Float64Array.from(rate), '1/s'),
+})
+
 describe('Borchardt–Daniels', () => {
   it.each([
     { Ea: 100e3, lnA: Math.log(1e10 / 60), n: 1, beta: 10 / 60 },
@@ -102,11 +108,6 @@ describe('Borchardt–Daniels', () => {
   })
 
   it('says where a run does not tell', () => {
-    const points = (T: number[], alpha: number[], rate: number[]): RunPoints => ({
-      temperature_K: column(Float64Array.from(T), 'K'),
-      conversion: column(Float64Array.from(alpha), '1'),
-      reactionRate_per_s: column(Float64Array.from(rate), '1/s'),
-    })
     expect(borchardtDaniels(points([500, 510, 520], [0.2, 0.4, 0.6], [1, 2, 3])).status).toBe('too-few-points')
     expect(borchardtDaniels(points([500, 510, 520, 530], [0.2, 0.4, 0.6, 0.8], [1, 2, 0, 1])).status).toBe('rate-not-positive')
     expect(borchardtDaniels(points([500, 500, 500, 500], [0.2, 0.4, 0.6, 0.8], [4, 3, 2, 1])).status).toBe('terms-not-independent')

@@ -90,22 +90,22 @@ describe('the Avrami exponent from the width of a peak', () => {
   })
 })
 
-describe('ASTM E2890', () => {
-  const series = (model: Model, x: number, change: (i: number) => object = () => ({})) => {
-    // Peaks of one reaction at three heating rates; how far they are apart does not matter to their shapes.
-    const shapes = [x + 1, x, x - 1].map((at) => shapeOf(model, at, Ea))
-    return peaksOf(
-      [5, 10, 20].map(
-        (_, i) =>
-          5 *
-          Math.exp(Ea / (R * (shapes[0]?.peak ?? 1)) - Ea / (R * (shapes[i]?.peak ?? 1))) *
-          ((shapes[i]?.peak ?? 1) / (shapes[0]?.peak ?? 1)) ** 2,
-      ),
-      shapes.map((shape) => shape.peak),
-      (i) => ({ lowerHalf: quantity(shapes[i]?.lower ?? 0, 'K'), upperHalf: quantity(shapes[i]?.upper ?? 0, 'K'), ...change(i) }),
-    )
-  }
+const series = (model: Model, x: number, change: (i: number) => object = () => ({})) => {
+  // Peaks of one reaction at three heating rates; how far they are apart does not matter to their shapes.
+  const shapes = [x + 1, x, x - 1].map((at) => shapeOf(model, at, Ea))
+  return peaksOf(
+    [5, 10, 20].map(
+      (_, i) =>
+        5 *
+        Math.exp(Ea / (R * (shapes[0]?.peak ?? 1)) - Ea / (R * (shapes[i]?.peak ?? 1))) *
+        ((shapes[i]?.peak ?? 1) / (shapes[0]?.peak ?? 1)) ** 2,
+    ),
+    shapes.map((shape) => shape.peak),
+    (i) => ({ lowerHalf: quantity(shapes[i]?.lower ?? 0, 'K'), upperHalf: quantity(shapes[i]?.upper ?? 0, 'K'), ...change(i) }),
+  )
+}
 
+describe('ASTM E2890', () => {
   it('gives the order of the family that most peaks have, inside its scope', () => {
     const second = astmE2890(series(nthOrder(2), 40))
     expect(second).toMatchObject({ status: 'ok', outOfScope: null, peaksOfFamily: 3, order: { family: 'nth-order' } })

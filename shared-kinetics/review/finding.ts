@@ -30,6 +30,8 @@ export const findingCodes = [
   'level-without-energy',
   'energy-not-positive',
   'peaks-at-different-conversion',
+  'peak-line-curved',
+  'single-run-energy-differs',
   'exothermic-direction-unknown',
   'run-unusable',
   'rows-set-aside',

@@ -18,6 +18,7 @@ import { narrowHeatingRateSpread } from './rules/narrow-heating-rate-spread.ts'
 import { orderBroken } from './rules/order-broken.ts'
 import { outsideScopeOfStandard } from './rules/outside-scope-of-standard.ts'
 import { outlierRun } from './rules/outlier-run.ts'
+import { peakLineCurved } from './rules/peak-line-curved.ts'
 import { peaksAtDifferentConversion } from './rules/peaks-at-different-conversion.ts'
 import { replicatesDisagree } from './rules/replicates-disagree.ts'
 import { rowsSetAside } from './rules/rows-set-aside.ts'
@@ -26,6 +27,7 @@ import { runsDoNotAgree } from './rules/runs-do-not-agree.ts'
 import { samplingCoarse } from './rules/sampling-coarse.ts'
 import { signalChosen } from './rules/signal-chosen.ts'
 import { timeRebuilt } from './rules/time-rebuilt.ts'
+import { singleRunEnergyDiffers } from './rules/single-run-energy-differs.ts'
 import { tooFewProgrammes } from './rules/too-few-programmes.ts'
 import { unequalVariance } from './rules/unequal-variance.ts'
 import { windowCutsReaction } from './rules/window-cuts-reaction.ts'
@@ -49,6 +51,8 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   energyNotPositive,
   energyVaries,
   peaksAtDifferentConversion,
+  peakLineCurved,
+  singleRunEnergyDiffers,
   integralLagsDifferential,
   intervalWideBecauseFewRuns,
   unequalVariance,

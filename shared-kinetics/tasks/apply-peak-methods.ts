@@ -81,13 +81,17 @@ const lineInfos = [
   augisBennettWithoutStartInfo,
 ]
 
-/** The peaks, one a run, or why they cannot be compared. */
-function peaksOf(runs: readonly PeakRun[]): { readonly peaks: readonly FullRatePeak[]; readonly hindrance: string | null } {
+interface PeaksOfRuns {
+  readonly peaks: readonly FullRatePeak[]
+  /** Why they cannot be compared. */
+  readonly hindrance: string | null
+}
+
+const hindered = (hindrance: string): PeaksOfRuns => ({ peaks: [], hindrance })
+
+/** The peaks, one a run. */
+function peaksOf(runs: readonly PeakRun[]): PeaksOfRuns {
   const peaks: FullRatePeak[] = []
-  const hindered = (hindrance: string): { readonly peaks: readonly FullRatePeak[]; readonly hindrance: string } => ({
-    peaks: [],
-    hindrance,
-  })
   for (const { label, programme, programmeGroup, peak_K, conversionAtPeak, halfHeights, start } of runs) {
     if (programme.kind !== 'constant-heating-rate') {
       return hindered(
@@ -197,7 +201,8 @@ function outsideScope({ order, outOfScope }: AstmE2890Estimate): string | null {
   if (outOfScope === 'temperature') return `the standard covers peaks between ${coldest} and ${hottest} K, and at least one lies outside`
   if (outOfScope === null || order === null) return null
   const [lowest, highest] = e2890Scope.order[order.family]
-  return `the standard covers a ${orderNames[order.family].slice(3)}, between ${lowest} and ${highest}, and the shape of the peaks gives ${digits(order.order, 2)}`
+  const orders = order.family === 'nth-order' ? 'reaction orders' : 'accelerating reactions of an order'
+  return `the standard covers ${orders} between ${lowest} and ${highest}, and the shape of the peaks gives ${digits(order.order)}`
 }
 
 function ozawaResult(info: PeakMethodInfo, estimate: PeakEstimate): PeakMethodResult {
