@@ -101,7 +101,7 @@ describe('every call', () => {
   it.each([
     [[], /a command is missing/],
     [['fold'], /there is no command fold/],
-    [['rate-constants', 'x'], /there is no command rate-constants/],
+    [['rate-constants', 'x'], /needs --out DIR/],
     [['batch', 'x'], /there is no command batch/],
     [['__proto__'], /there is no command __proto__/],
     [['inspect'], /needs a file or a folder/],

@@ -1,3 +1,4 @@
+import { decimalSignWords, delimiterWords, encodingWords } from '../../shared-kinetics/contract/import-options.ts'
 import { baselineKinds } from '../../shared-kinetics/tasks/study-input.ts'
 import { methodsOnRequest } from '../../shared-kinetics/contract/methods-on-request.ts'
 import { methodIds, type MethodId } from '../../shared-kinetics/isoconversional/result.ts'
@@ -16,6 +17,8 @@ Activation energy against conversion from thermal-analysis exports at several he
 Commands
   inspect PATH…               how each file is read
   activation PATH… --out DIR  activation energy against conversion
+  rate-constants TABLE --out DIR
+                              activation energy from rate constants at several temperatures
   open [PATH…]                the sheet in a browser
 
 A path is a file, or a folder that stands for the exports in it.
@@ -68,6 +71,28 @@ activation.csv.txt beside it) and activation.svg into DIR; a short table appears
   --quiet                     no table and no progress
 
 ${importHelp}`
+
+export const rateConstantsHelp = `rampfold rate-constants TABLE --out DIR [options]
+
+Works out Ea and A from rate constants against temperature, with intervals, predicted rate constants, factor per 10 K
+and transition-state parameters, and writes rate-constants.json, rate-constants.csv (with rate-constants.csv.txt beside
+it) and rate-constants.svg into DIR; a short table appears on the screen.
+
+TABLE is a text file with a heading for each column: T (°C), T (K) or 1000/T (1/K); k (1/s), k (min-1), k (L/(mol s)),
+ln k or log10 k; and, where there are any, u(k) for a standard uncertainty and a label.
+
+  --out DIR                   where the files go; those of these names are replaced, others left alone
+  --at LIST                   temperatures at which k is predicted, with their unit: "25C,310K"
+  --temperature-unit WORD     K, C, F: for a table that does not say
+  --rate-unit UNIT            of k, for a table that does not say: 1/s, 1/min, 1/h, "L/(mol s)", …
+  --encoding WORD             ${encodingWords.join(', ')}
+  --delimiter WORD            ${delimiterWords.join(', ')}
+  --decimal-sign WORD         ${decimalSignWords.join(', ')}
+  --decimal WORD              of rate-constants.csv: point (default), comma
+  --separator WORD            of rate-constants.csv: comma (default), semicolon (default with decimal comma), tab
+  --strict                    exit code 3 when a finding of severity stop stands (the files are written)
+  --quiet                     no table
+`
 
 export const openHelp = `rampfold open [PATH…] [options]
 

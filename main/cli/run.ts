@@ -11,6 +11,7 @@ async function commands(): Promise<Readonly<Record<string, Command>>> {
   return {
     inspect: { help: help.inspectHelp, load: async () => (await import('./commands/inspect.ts')).inspect },
     activation: { help: help.activationHelp, load: async () => (await import('./commands/activation.ts')).activation },
+    'rate-constants': { help: help.rateConstantsHelp, load: async () => (await import('./commands/rate-constants.ts')).rateConstants },
     open: { help: help.openHelp, load: async () => (await import('./commands/open.ts')).open },
   }
 }

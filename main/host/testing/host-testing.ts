@@ -3,6 +3,7 @@ import type { HostTransport, ImportAnswer } from '../../../shared-kinetics/contr
 import { runInfoOf } from '../../../shared-kinetics/check-values/run-info-of.ts'
 import type { RunColumns, RunInfo } from '../../../shared-kinetics/series/run.ts'
 import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts'
+import { evaluateRateConstants } from '../../../shared-kinetics/tasks/evaluate-rate-constants.ts'
 import { column } from '../../../shared-kinetics/units/quantity.ts'
 import { openSavedCopy, packSavedCopy } from '../../study/saved-copy.ts'
 import { createHost, type Host, type HostOptions } from '../create-host.ts'
@@ -126,6 +127,7 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
         }),
       }
     },
+    'evaluate-rate-constants': ({ table }) => evaluateRateConstants(table),
     'pack-saved-copy': (copy) => packSavedCopy(copy),
     'open-saved-copy': ({ bytes }) => openSavedCopy(new Uint8Array(bytes)),
   }
@@ -142,6 +144,9 @@ const sampleParts: ProgramParts = {
   }),
   exportResults: ({ document, result }, format) => [
     { fileName: `activation.${format}`, mediaType: 'text/plain', bytes: textBytes(`${document.name}, ${result.runs.length} runs`) },
+  ],
+  exportRateConstants: ({ document, result }, format) => [
+    { fileName: `rate-constants.${format}`, mediaType: 'text/plain', bytes: textBytes(`${document.name}, ${result.rows.length} rows`) },
   ],
 }
 

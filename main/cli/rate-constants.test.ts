@@ -1,0 +1,151 @@
+import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
+import Papa from 'papaparse'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import tables from '../../shared-kinetics/check-values/published/arrhenius-tables.json' with { type: 'json' }
+import { run } from './run.ts'
+
+let place = ''
+beforeAll(async () => {
+  place = await mkdtemp(join(tmpdir(), 'rate-constants-'))
+})
+afterAll(async () => rm(place, { recursive: true, force: true }))
+
+async function rampfold(...words: readonly string[]): Promise<{ code: number; stdout: string; stderr: string }> {
+  let [stdout, stderr] = ['', '']
+  const code = await run(words, {
+    stdout: (text) => (stdout += text),
+    stderr: (text) => (stderr += text),
+    stderrIsTerminal: false,
+    version: '0.0.0',
+    workerUrl: new URL('file:///nowhere/worker-entry.js'),
+    rendererUrl: new URL('file:///nowhere/renderer/'),
+  })
+  return { code, stdout, stderr }
+}
+
+async function tableFile(name: string, text: string): Promise<string> {
+  const path = join(place, name)
+  await writeFile(path, text)
+  return path
+}
+// Daniels & Johnston, J. Am. Chem. Soc. 43 (1921) 53: N2O5; recomputed Ea 102.8979 ± 0.4713 kJ/mol, A 3.8163e13 1/s.
+const N2O5 = tables.lines.find((line) => line.id === 'W8')
+const textOf = (heading: string, scale = 1): string =>
+  `${heading}\n${(N2O5?.temperature_K ?? []).map((T, i) => `${T},${(N2O5?.k[i] ?? 0) * scale}`).join('\n')}\n`
+const jsonOf = async (folder: string): Promise<Record<string, unknown> & { line: Record<string, number> }> =>
+  JSON.parse(await readFile(join(folder, 'rate-constants.json'), 'utf8')) as Record<string, unknown> & { line: Record<string, number> }
+
+describe('rampfold rate-constants', () => {
+  it('writes Ea, A, intervals and predictions of a published table', async () => {
+    const out = join(place, 'out')
+    const { code, stdout, stderr } = await rampfold(
+      'rate-constants',
+      await tableFile('N2O5.csv', textOf('T (K),k (1/s)')),
+      '--out',
+      out,
+      '--at',
+      '25 C,400K',
+    )
+    expect([code, stderr]).toEqual([0, ''])
+    expect((await readdir(out)).toSorted()).toEqual([
+      'rate-constants.csv',
+      'rate-constants.csv.txt',
+      'rate-constants.json',
+      'rate-constants.svg',
+    ])
+    const json = await jsonOf(out)
+    expect(json).toMatchObject({
+      format: 'rampfold.rate-constants/1',
+      rateUnit: '1/s',
+      study: 'N2O5',
+      source: { kind: 'file', name: 'N2O5.csv', sha256: expect.stringMatching(/^[0-9a-f]{64}$/) as unknown },
+      caution: expect.stringMatching(/does not replace tests/) as unknown,
+      predictions: [
+        { temperature_K: 298.15, extrapolation: { side: 'inside' } },
+        { temperature_K: 400, extrapolation: { side: 'above', beyond_K: 62 } },
+      ],
+    })
+    expect(json.line['Ea_kJ_per_mol']).toBeCloseTo(102.8979, 4)
+    expect(json.line['standardError_kJ_per_mol']).toBeCloseTo(0.4713, 4)
+    expect(stdout).toMatch(/Ea: 102\.90 kJ\/mol, standard error 0\.47 \(101\.59 to 104\.21\)/)
+    expect(stdout).toMatch(/k at 126\.85 °C: 1\.396 1\/s \(line 1\.236 to 1\.576, new measurement 1\.201 to 1\.622\); 62 K above the data/)
+    expect(stdout).toMatch(/1 note|caution: A prediction/)
+    const csv = Papa.parse<string[]>(await readFile(join(out, 'rate-constants.csv'), 'utf8'), { skipEmptyLines: true }).data
+    expect(new Set(csv.map((row) => row.length))).toEqual(new Set([11]))
+    expect(csv.find((row) => row[0] === 'Ea')?.slice(4, 9)).toEqual(['kJ/mol', '102.8979', '0.4713285', '101.5892', '104.2065'])
+    expect(csv.filter((row) => row[0] === 'k, measured').map((row) => [Number(row[2]), Number(row[5])])).toEqual(
+      (N2O5?.temperature_K ?? []).map((T, i) => [T, N2O5?.k[i]]),
+    )
+    const svg = await readFile(join(out, 'rate-constants.svg'), 'utf8')
+    expect(svg).toMatch(/1000\/T \(1\/K\)/)
+    expect(svg).toMatch(/does not replace tests/)
+    expect(await readFile(join(out, 'rate-constants.csv.txt'), 'utf8')).toMatch(/does not replace tests/)
+  })
+
+  it('asks for a unit of temperature that nobody stated, and takes it', async () => {
+    const path = await tableFile('bare.csv', textOf('T,k'))
+    const out = join(place, 'asked')
+    const asked = await rampfold('rate-constants', path, '--out', out)
+    expect(asked.code).toBe(1)
+    expect(asked.stderr).toMatch(/^rampfold: .*bare\.csv, line 2: .*--temperature-unit/)
+    await expect(readdir(out)).rejects.toThrow(/ENOENT/)
+    const stated = await rampfold('rate-constants', path, '--out', out, '--temperature-unit', 'K', '--rate-unit', 'min-1')
+    expect(stated.code).toBe(0)
+    expect(await jsonOf(out)).toMatchObject({ rateUnit: '1/min' })
+  })
+
+  it('per hour or per second, in K or in °C: Ea is the same', async () => {
+    const energies: number[] = []
+    const celsius = `T (°C);k (1/h)\n${(N2O5?.temperature_K ?? [])
+      .map((T, i) => `${(T - 273.15).toFixed(2)};${((N2O5?.k[i] ?? 0) * 3600).toExponential(12)}`.replaceAll('.', ','))
+      .join('\n')}`
+    for (const [i, text] of [textOf('T (K),k (1/s)'), textOf('T (K),k (1/h)', 3600), celsius].entries()) {
+      const out = join(place, `unit-${i}`)
+      expect((await rampfold('rate-constants', await tableFile(`unit-${i}.csv`, text), '--out', out, '--quiet')).code).toBe(0)
+      energies.push((await jsonOf(out)).line['Ea_kJ_per_mol'] ?? Number.NaN)
+    }
+    for (const energy of energies) expect(energy).toBeCloseTo(energies[0] ?? 0, 8)
+  })
+
+  it('--strict is 3 where a stop stands, and the files are written', async () => {
+    const out = join(place, 'strict')
+    const path = await tableFile('one.csv', 'T (K),k (1/s)\n300,1e-3\n300,1.1e-3\n')
+    expect((await rampfold('rate-constants', path, '--out', out, '--strict', '--quiet')).code).toBe(3)
+    expect(await jsonOf(out)).toMatchObject({ line: { status: 'temperatures-not-distinct', Ea_kJ_per_mol: null } })
+    expect((await rampfold('rate-constants', path, '--out', out, '--quiet')).code).toBe(0)
+  })
+
+  it('a decimal comma goes through all of the table', async () => {
+    const out = join(place, 'comma')
+    const path = await tableFile('comma.csv', textOf('T (K),k (1/s)'))
+    expect((await rampfold('rate-constants', path, '--out', out, '--decimal', 'comma', '--quiet')).code).toBe(0)
+    const csv = await readFile(join(out, 'rate-constants.csv'), 'utf8')
+    expect(csv).toMatch(/^Ea;;;;kJ\/mol;102,8979;/m)
+    expect(csv).toMatch(/k, measured;;273;-0,15;1\/s;7,870000e-7/)
+  })
+
+  it.each([
+    [['rate-constants'], 2, /needs the file/],
+    [['rate-constants', 'a', 'b', '--out', 'o'], 2, /takes one table/],
+    [['rate-constants', 'a', '--out', 'o', '--at', '25'], 2, /"25" has no unit/],
+    [['rate-constants', 'a', '--out', 'o', '--at', '-300C'], 2, /--at=VALUE/],
+    [['rate-constants', 'a', '--out', 'o', '--at=-300C'], 2, /below absolute zero/],
+    [['rate-constants', 'a', '--out', 'o', '--at', '25 bar'], 2, /no unit of temperature/],
+    [['rate-constants', 'a', '--out', 'o', '--temperature-unit', 'R'], 2, /--temperature-unit/],
+    [['rate-constants', 'a', '--out', 'o', '--rate-unit', 'mg'], 2, /--rate-unit/],
+    [['rate-constants', 'not-there.csv', '--out', 'o'], 1, /not-there\.csv: there is no such file/],
+  ])('%j is exit %d', async (words, code, message) => {
+    const outcome = await rampfold(...words)
+    expect(outcome.stderr).toMatch(message)
+    expect(outcome.code).toBe(code)
+  })
+
+  it('a row that cannot be used is named with file and line', async () => {
+    const path = await tableFile('zero.csv', 'T (K),k (1/s)\n300,1e-3\n310,0\n320,3e-3\n')
+    const { code, stderr } = await rampfold('rate-constants', path, '--out', join(place, 'zero'))
+    expect(code).toBe(1)
+    expect(stderr).toMatch(/zero\.csv, line 3: The rate constant “0” is not above 0/)
+  })
+})
