@@ -50,11 +50,12 @@ function otherLine(label: string, { label: kind, level, approximate, note, sourc
 const budgetLine = (label: string, entry: BudgetEntry): string =>
   `${label}: ${entry.label}, ${entry.magnitude}${entry.shownByScatter ? '; shown by the scatter of the points already' : ''}`
 
+const signed = (percent: number): string => `${percent > 0 ? '+' : ''}${percent.toPrecision(2)} %`
+
 /** Of a method that has a systematic error, its range over the levels. */
 function systematicLines({ label, systematicError_percent: values }: ProfileResult): string[] {
   const known = values.filter((value) => value !== null)
   if (known.every((value) => value === 0)) return []
-  const signed = (value: number): string => `${value > 0 ? '+' : ''}${value.toPrecision(2)} %`
   const range = `${signed(Math.min(...known))} to ${signed(Math.max(...known))}`
   return [`${label}: systematic error of Ea from its temperature integral ${range} over the levels, no part of any interval`]
 }

@@ -96,7 +96,10 @@ export interface IsoconversionalResult {
   readonly standardError: Column<'J/mol'>
   readonly lower95: Column<'J/mol'>
   readonly upper95: Column<'J/mol'>
-  /** ln[A f(alpha)] with A in 1/s where the method gives it (Friedman's intercept), else NaN. */
+  /**
+   * ln[A f(alpha)] with A in 1/s where the method gives it (Friedman's intercept), else NaN: integral methods give A/g(alpha), or for steps A/Δg, from which neither A nor
+   * f(alpha) follows without a model.
+   */
   readonly lnAf: Float64Array
   readonly lnAfStandardError: Float64Array
   readonly r2: Float64Array

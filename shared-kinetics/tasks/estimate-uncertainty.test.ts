@@ -52,14 +52,14 @@ describe('the uncertainty of a study', () => {
         expect(interval.note).toContain('Pointwise')
         levels.forEach((_, i) => {
           const Ea = evaluated.profiles[m]?.Ea_kJ_per_mol[i] ?? Number.NaN
-          expect(interval.lower95_kJ_per_mol[i], method).toBeLessThan(Ea)
-          expect(interval.upper95_kJ_per_mol[i], method).toBeGreaterThan(Ea)
+          expect(interval.lower95_kJ_per_mol[i], `by ${method}`).toBeLessThan(Ea)
+          expect(interval.upper95_kJ_per_mol[i], `by ${method}`).toBeGreaterThan(Ea)
         })
       }
       // The jackknife of a regression estimates the same standard error; of five runs within a factor.
       const ratio = (intervals[0]?.standardUncertainty_kJ_per_mol[2] ?? 0) / (evaluated.profiles[m]?.standardError_kJ_per_mol[2] ?? 0)
-      expect(ratio, method).toBeGreaterThan(0.4)
-      expect(ratio, method).toBeLessThan(2.5)
+      expect(ratio, `by ${method}`).toBeGreaterThan(0.4)
+      expect(ratio, `by ${method}`).toBeLessThan(2.5)
     })
     expect(profiles[0]?.intervals[1]?.note).toMatch(/All 81 distinct resamples of 5 runs.*fewer than three distinct programmes/)
   })
@@ -107,6 +107,7 @@ describe('a profile', () => {
   it('has the F-type interval beside each minimum, and the mean of Ea with an interval that is no narrower than errors of whole runs allow', () => {
     const { study, columns } = studyOf([1, 2, 5, 10, 20])
     const { profiles } = evaluateStudy(study, columns, context)
+    const ratios: number[] = []
     for (const { method, otherIntervals, mean, standardError_kJ_per_mol: errors, lackOfFit } of profiles) {
       expect(otherIntervals.map((interval) => interval.kind)).toEqual(method.startsWith('vyazovkin') ? ['vyazovkin-wight-f'] : [])
       expect(lackOfFit).toBeNull()
@@ -114,8 +115,10 @@ describe('a profile', () => {
       expect(mean.lower95_kJ_per_mol).toBeLessThan(mean.Ea_kJ_per_mol ?? Number.NaN)
       // t(0.975; 3) = 3.1824.
       expect(((mean.upper95_kJ_per_mol ?? 0) - (mean.Ea_kJ_per_mol ?? 0)) / error).toBeCloseTo(3.1824, 4)
-      if (method === 'starink' || method === 'vyazovkin') expect(error / (errors[2] ?? 0)).toBeCloseTo(1, 1)
+      // Errors of whole runs: the mean over levels is hardly better known than one level. (Rates of Friedman and steps between levels have others besides.)
+      if (method === 'starink' || method === 'vyazovkin') ratios.push(error / (errors[2] ?? 0))
     }
+    expect(ratios.map((ratio) => ratio.toFixed(1))).toEqual(['1.0', '1.0'])
     expect(profiles.find((profile) => profile.method === 'vyazovkin')?.otherIntervals[0]).toMatchObject({
       pointwise: true,
       approximate: true,

@@ -25,8 +25,6 @@ export interface IntervalColumns {
 /** An interval in the terms of `StudyResult`: named by its kind, in kJ/mol, null for what is not to be had. */
 export function intervalResult(kind: IntervalKind, columns: IntervalColumns, note: string): IntervalResult {
   const { label, approximate, sources: keys } = kinds[kind]
-  const kilojoules = (values: ArrayLike<number>): IntervalResult['lower95_kJ_per_mol'] =>
-    maybes(Float64Array.from(values, joulesToKilojoules))
   return {
     kind,
     label,
@@ -40,3 +38,6 @@ export function intervalResult(kind: IntervalKind, columns: IntervalColumns, not
     upper95_kJ_per_mol: kilojoules(columns.upper95),
   }
 }
+
+const kilojoules = (values: ArrayLike<number>): IntervalResult['lower95_kJ_per_mol'] =>
+  maybes(Float64Array.from(values, joulesToKilojoules))

@@ -46,6 +46,12 @@ function coverage(
   return covered / replicates
 }
 
+/** A thermometer off by some 0.5 K in each run. */
+function ofEachRun(random: () => number): (level: number, run: number) => number {
+  const offset = rates.map(() => 0.5 * random())
+  return (_, run) => offset[run] as number
+}
+
 describe('the standard error of a mean of Ea over levels', () => {
   it('is, of a single level, that of the level', () => {
     const random = randomStream(1)
@@ -67,31 +73,19 @@ describe('the standard error of a mean of Ea over levels', () => {
     expect(Math.abs(meanEnergyStandardError(points) / meanOf(standardError) - 1)).toBeLessThan(0.02)
   })
 
-  // 2,000 replicates know a share of 0.95 to ±0.01 (two standard errors).
-  const between = (share: number): void => {
-    expect(share).toBeGreaterThan(0.935)
-    expect(share).toBeLessThan(0.965)
-  }
-
+  // 2,000 replicates know a share of 0.95 to ±0.01 (two standard errors), 300 to ±0.025.
   it('makes an interval of 95 % where each run has an error of its own', () => {
-    const common = (random: () => number) => {
-      const offset = rates.map(() => 0.5 * random())
-      return (_: number, run: number): number => offset[run] as number
-    }
-    between(coverage(starink, 2000, common))
-    const minimised = coverage(vyazovkin, 300, common)
-    expect(minimised).toBeGreaterThan(0.92)
-    expect(minimised).toBeLessThan(0.98)
+    expect(Math.abs(coverage(starink, 2000, ofEachRun) - 0.95)).toBeLessThan(0.015)
+    expect(Math.abs(coverage(vyazovkin, 300, ofEachRun) - 0.95)).toBeLessThan(0.03)
   })
 
   it('makes an interval of 95 % where errors differ from level to level, and where both kinds are present', () => {
-    between(coverage(starink, 2000, (random) => () => 0.5 * random()))
-    between(
-      coverage(starink, 2000, (random) => {
-        const offset = rates.map(() => 0.3 * random())
-        return (_, run) => (offset[run] as number) + 0.5 * random()
-      }),
-    )
+    expect(Math.abs(coverage(starink, 2000, (random) => () => 0.5 * random()) - 0.95)).toBeLessThan(0.015)
+    const both = coverage(starink, 2000, (random) => {
+      const offset = rates.map(() => 0.3 * random())
+      return (_, run) => (offset[run] as number) + 0.5 * random()
+    })
+    expect(Math.abs(both - 0.95)).toBeLessThan(0.015)
   })
 
   it('is not to be had from two runs, or from no level', () => {

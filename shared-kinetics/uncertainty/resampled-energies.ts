@@ -45,20 +45,16 @@ const none: EnergyAtLevel = () => Number.NaN
 function energiesAtLevels(series: SeriesAtLevels, { method, Ea, points, status }: IsoconversionalResult): EnergyAtLevel[] {
   const where = (make: (Ea: number, points: LevelPoints, level: number) => EnergyAtLevel): EnergyAtLevel[] =>
     points.map((atLevel, level) => (status[level] === 'ok' ? make(Ea[level] ?? Number.NaN, atLevel, level) : none))
-  switch (method) {
-    case 'vyazovkin':
-    case 'vyazovkin-incremental': {
-      const integralOf = method === 'vyazovkin' ? timeIntegral : segmentIntegral
-      const integrals = series.runs.map((run) => integralOf(run, largestEa))
-      return where((value, _, level) => weightedMinimum(value, integrals, level))
-    }
-    case 'ofw-corrected': {
-      const integrals = series.runs.map((run) => constantRateIntegral(quantity(heatingRateOf(run), 'K/s'), run.temperature_K))
-      return where((value, { x_per_K }, level) => levelledIntegral(value, x_per_K, integrals, level))
-    }
-    default:
-      return where(weightedLine)
+  if (method === 'vyazovkin' || method === 'vyazovkin-incremental') {
+    const integralOf = method === 'vyazovkin' ? timeIntegral : segmentIntegral
+    const integrals = series.runs.map((run) => integralOf(run, largestEa))
+    return where((value, _, level) => weightedMinimum(value, integrals, level))
   }
+  if (method === 'ofw-corrected') {
+    const integrals = series.runs.map((run) => constantRateIntegral(quantity(heatingRateOf(run), 'K/s'), run.temperature_K))
+    return where((value, { x_per_K }, level) => levelledIntegral(value, x_per_K, integrals, level))
+  }
+  return where(weightedLine)
 }
 
 /**
