@@ -36,7 +36,6 @@ export interface Analysis {
  * @throws InputError for a file or run that cannot be used (unless those are to be skipped), UsageError where heating rates do not fit the runs
  */
 export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: ProgressLine): Promise<Analysis> {
-  const files = bySha256(order.files)
   const host = createHost({
     dataFolder: null,
     pool: createInProcessPool(createTaskTable(order.importOptions)),
@@ -54,11 +53,11 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
     if (refused.length > 0 && !order.skipUnusable) throw new InputError(refusedText(refused, order.files))
     const { document: read } = await host.call('study.read', {})
     if (read.runs.length === 0) throw new InputError(`None of the files can be used. ${refusedText(refused, order.files)}`)
-    const rates = ratesByRun(order.heatingRates_K_per_s, files, read)
+    const rates = ratesByRun(order.heatingRates_K_per_s, order.files, read)
     for (const change of [{ kind: 'rename-study', name: order.studyName } as const, ...rates, ...order.changes]) await applied(host, change)
     const { revision, document } = await host.call('study.read', {})
     const { result } = await host.call('study.evaluate', { revision })
-    if (!order.skipUnusable) refuseUnusableRuns(files, document, result)
+    if (!order.skipUnusable) refuseUnusableRuns(order.files, document, result)
     const out: FileOut[] = []
     for (const format of ['json', 'csv', 'svg'] as const) {
       out.push(...(await host.call('results.export', { revision, format, tableStyle: order.tableStyle })).files)
@@ -79,9 +78,9 @@ async function applied(host: Host, change: StudyChange): Promise<void> {
 }
 
 /** Heating rates are named in the order of the files and of the runs in each; the study has its runs in order of heating rate. */
-function ratesByRun(rates: readonly number[] | null, files: FilesBySha256, document: StudyDocument): readonly StudyChange[] {
+function ratesByRun(rates: readonly number[] | null, files: readonly InputFile[], document: StudyDocument): readonly StudyChange[] {
   if (rates === null) return []
-  const runs = [...files.keys()].flatMap((sha256) =>
+  const runs = [...bySha256(files).keys()].flatMap((sha256) =>
     document.runs.filter((run) => run.file.sha256 === sha256).toSorted((one, other) => byNumber.compare(one.id, other.id)),
   )
   if (runs.length !== rates.length) {
@@ -93,9 +92,7 @@ function ratesByRun(rates: readonly number[] | null, files: FilesBySha256, docum
 }
 
 /** Names repeat from folder to folder; contents tell files apart, since the same one is never taken twice. */
-type FilesBySha256 = ReadonlyMap<string, InputFile>
-
-const bySha256 = (files: readonly InputFile[]): FilesBySha256 =>
+const bySha256 = (files: readonly InputFile[]): ReadonlyMap<string, InputFile> =>
   new Map(files.map((file) => [createHash('sha256').update(file.bytes).digest('hex'), file]))
 
 /** A run's id ends in its number in the file. */
@@ -111,12 +108,13 @@ export function refusedText(refused: readonly RefusedFile[], files: readonly Inp
   return lines.join('\n')
 }
 
-function refuseUnusableRuns(files: FilesBySha256, document: StudyDocument, result: StudyResult): void {
+function refuseUnusableRuns(files: readonly InputFile[], document: StudyDocument, result: StudyResult): void {
   const unusable = result.findings.filter((finding) => finding.code === 'run-unusable')
   if (unusable.length === 0) return
+  const fileOf = bySha256(files)
   const lines = unusable.map((finding) => {
     const run = document.runs.find((candidate) => candidate.id === finding.run)
-    const path = run === undefined ? '' : `${files.get(run.file.sha256)?.path ?? run.file.name}: `
+    const path = run === undefined ? '' : `${fileOf.get(run.file.sha256)?.path ?? run.file.name}: `
     // The path stands for the label; and here nothing was left out: the whole call is refused.
     const reason = finding.message.replace(`${run?.label ?? ''}: `, '').replace(/ The run was left out:.*$/s, '')
     return `${path}${sentence(reason)}`
