@@ -21,11 +21,15 @@ export function constantRateIntegral(heatingRate: Quantity<'K/s'>, temperature_K
     reaches,
     atLevel,
     atAllLevels(Ea, lnJ, inverseT) {
+      // What `atLevel` gives, without an object for each level.
+      const perEa = gasConstant_J_per_mol_K / Ea
       for (let level = 0; level < temperature_K.length; level++) {
-        if (!reaches(level)) continue
-        const value = atLevel(Ea, level)
-        lnJ[level] = value.lnJ
-        inverseT[level] = value.inverseT
+        const T = temperature_K[level] as number
+        if (!(T > 0)) continue
+        const thermal = gasConstant_J_per_mol_K * T
+        const scaled = scaledPOfX(Ea / thermal)
+        lnJ[level] = Math.log((T * thermal * scaled) / Ea) - lnRate - Ea / thermal
+        inverseT[level] = 1 / (scaled * T) - perEa
       }
     },
   }

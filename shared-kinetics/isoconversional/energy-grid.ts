@@ -9,6 +9,8 @@ export const largestEa = 1_000_000
 /** Steps of 10 %. */
 const steps = 72
 
+const stepsPerLog = steps / Math.log(largestEa / smallestEa)
+
 /** Grid of Ea in J/mol, evenly spaced in its logarithm, ends exact. */
 export const energies: Float64Array = Float64Array.from({ length: steps + 1 }, (_, g) =>
   g === steps ? largestEa : smallestEa * (largestEa / smallestEa) ** (g / steps),
@@ -46,7 +48,7 @@ export function energyGrid(integrals: readonly TimeIntegral[], levels: number, c
       }
     },
     between(Ea, level, lnJ, inverseT) {
-      const place = (steps * Math.log(Ea / smallestEa)) / Math.log(largestEa / smallestEa)
+      const place = stepsPerLog * Math.log(Ea / smallestEa)
       const g = Math.min(steps - 1, Math.max(0, Math.floor(place)))
       const lower = energies[g] as number
       const width = (energies[g + 1] as number) - lower

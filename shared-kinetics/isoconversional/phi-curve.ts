@@ -20,31 +20,37 @@ export function phiAround(
   const reach = Number.isNaN(halfWidth) ? 0.2 * Ea : Math.max(2.5 * halfWidth, 2e-4 * Ea)
   const from = Math.max(smallestEa, Ea - reach)
   const to = Math.min(largestEa, Ea + reach)
-  const at = Array.from({ length: 2 * side + 1 }, (_, i) =>
-    i === side ? Ea : i < side ? from + ((Ea - from) * i) / side : Ea + ((to - Ea) * (i - side)) / side,
-  )
-  return { ...curve(grid, level, runs, at, (i, value) => (i === side ? phiMinimum : value)), phiMinimum, phiThreshold }
+  const at = new Float64Array(2 * side + 1)
+  for (let i = 0; i < at.length; i++) at[i] = i < side ? from + ((Ea - from) * i) / side : Ea + ((to - Ea) * (i - side)) / side
+  return { ...curve(grid, level, runs, at, phiMinimum), phiMinimum, phiThreshold }
 }
 
 /** Phi over the whole range searched, evenly in ln Ea, where it has no single minimum to look at closely. */
 export function phiOverRange(grid: EnergyGrid, level: number, runs: number): LevelPhi {
-  const at = Array.from({ length: 2 * side + 1 }, (_, i) => smallestEa * (largestEa / smallestEa) ** (i / (2 * side)))
-  return { ...curve(grid, level, runs, at, (_, value) => value), phiMinimum: Number.NaN, phiThreshold: Number.NaN }
+  const at = Float64Array.from({ length: 2 * side + 1 }, (_, i) => smallestEa * (largestEa / smallestEa) ** (i / (2 * side)))
+  return { ...curve(grid, level, runs, at, null), phiMinimum: Number.NaN, phiThreshold: Number.NaN }
 }
 
+/** Phi at the given Ea; at the middle one it is `exact`, where there is such a value. */
 function curve(
   grid: EnergyGrid,
   level: number,
   runs: number,
-  at: readonly number[],
-  correct: (i: number, value: number) => number,
+  at: Float64Array,
+  exact: number | null,
 ): Pick<LevelPhi, 'Ea_J_per_mol' | 'phi'> {
   const lnJ = new Float64Array(runs)
-  const values = at.map((Ea, i) => {
+  const values = new Float64Array(at.length)
+  let drawn = 0
+  for (let i = 0; i < at.length; i++) {
+    const Ea = at[i] as number
     grid.between(Math.min(largestEa, Math.max(smallestEa, Ea)), level, lnJ)
-    return correct(i, phi(lnJ))
-  })
-  // Far from its minimum Phi leaves double precision; such points cannot be drawn.
-  const drawn = (_: number, i: number): boolean => Number.isFinite(values[i])
-  return { Ea_J_per_mol: column(Float64Array.from(at.filter(drawn)), 'J/mol'), phi: Float64Array.from(values.filter(drawn)) }
+    const value = exact !== null && i === side ? exact : phi(lnJ)
+    // Far from its minimum Phi leaves double precision; such points cannot be drawn.
+    if (!(value < Infinity)) continue
+    at[drawn] = Ea
+    values[drawn] = value
+    drawn++
+  }
+  return { Ea_J_per_mol: column(at.slice(0, drawn), 'J/mol'), phi: values.slice(0, drawn) }
 }

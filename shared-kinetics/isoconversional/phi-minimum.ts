@@ -40,19 +40,19 @@ export function findPhiMinimum(
 ): PhiMinimum | Exclude<LevelStatus, 'ok'> {
   const lnJ = new Float64Array(integrals.length)
   const inverseT = new Float64Array(integrals.length)
-  let alike = true
-  const slopes = energies.map((_, g) => {
-    grid.read(g, level, lnJ, inverseT)
-    alike &&= relativeSpread(inverseT) < sameTemperature
-    return phiSlope(lnJ, inverseT)
-  })
-  if (alike) return 'minimum-flat'
+  const slopes = signsOfSlope(grid, level, lnJ, inverseT)
+  if (slopes === null) return 'minimum-flat'
 
+  const slopeAt = (g: number): number => {
+    grid.read(g, level, lnJ, inverseT)
+    return phiSlope(lnJ, inverseT)
+  }
   const minima: PhiMinimum[] = []
   for (let g = 1; g < energies.length; g++) {
-    const [fLower, fUpper] = [slopes[g - 1] as number, slopes[g] as number]
-    if (fLower < 0 && fUpper >= 0)
-      minima.push(minimumBetween(integrals, level, energies[g - 1] as number, energies[g] as number, { fLower, fUpper }, t))
+    if ((slopes[g - 1] as number) < 0 && (slopes[g] as number) >= 0) {
+      const ends = { fLower: slopeAt(g - 1), fUpper: slopeAt(g) }
+      minima.push(minimumBetween(integrals, level, energies[g - 1] as number, energies[g] as number, ends, t))
+    }
   }
   minima.sort((a, b) => a.phiMinimum - b.phiMinimum)
   const [lowest, ...others] = minima
@@ -70,6 +70,49 @@ export function findPhiMinimum(
   return lowest.flat ? 'minimum-flat' : lowest
 }
 
+/** ln J that differ by less are told apart by the slope itself. */
+const clearlyApart = 1e-6
+
+/**
+ * A number of the sign of dPhi/dEa at each grid point; null where the effective temperatures are one temperature throughout. Where the runs stand in one order by ln J
+ * and by the effective 1/T, or in opposite orders, every term of dPhi/dEa has the same sign, and no exponential is needed to tell it: so it is away from the minima.
+ */
+function signsOfSlope(grid: EnergyGrid, level: number, lnJ: Float64Array, inverseT: Float64Array): Float64Array | null {
+  const n = lnJ.length
+  const signs = new Float64Array(energies.length)
+  let alike = true
+  for (let g = 0; g < energies.length; g++) {
+    grid.read(g, level, lnJ, inverseT)
+    sortTogether(inverseT, lnJ)
+    const [coolest, hottest] = [inverseT[n - 1] as number, inverseT[0] as number]
+    alike &&= (coolest - hottest) / coolest < sameTemperature
+    const first = lnJ[0] as number
+    const last = lnJ[n - 1] as number
+    let inOrder = Math.abs(last - first) > clearlyApart
+    for (let i = 1; i < n && inOrder; i++) {
+      const step = (lnJ[i] as number) - (lnJ[i - 1] as number)
+      inOrder = last > first ? step >= 0 : step <= 0
+    }
+    signs[g] = inOrder && coolest > hottest ? (last > first ? -1 : 1) : phiSlope(lnJ, inverseT)
+  }
+  return alike ? null : signs
+}
+
+/** Sorts the first column in ascending order, and the other with it. Few runs, nearly always in order already. */
+function sortTogether(keys: Float64Array, values: Float64Array): void {
+  for (let i = 1; i < keys.length; i++) {
+    const key = keys[i] as number
+    const value = values[i] as number
+    let to = i
+    for (; to > 0 && (keys[to - 1] as number) > key; to--) {
+      keys[to] = keys[to - 1] as number
+      values[to] = values[to - 1] as number
+    }
+    keys[to] = key
+    values[to] = value
+  }
+}
+
 function minimumBetween(
   integrals: readonly TimeIntegral[],
   level: number,
@@ -82,11 +125,11 @@ function minimumBetween(
   const lnJ = new Float64Array(n)
   const inverseT = new Float64Array(n)
   const integrate = (Ea: number): void => {
-    integrals.forEach((integral, i) => {
-      const value = integral.atLevel(Ea, level)
+    for (let i = 0; i < n; i++) {
+      const value = (integrals[i] as TimeIntegral).atLevel(Ea, level)
       lnJ[i] = value.lnJ
       inverseT[i] = value.inverseT
-    })
+    }
   }
   const slope = (Ea: number): number => {
     integrate(Ea)

@@ -5,13 +5,15 @@
  */
 export function phi(lnJ: Float64Array): number {
   const { highest, lowest } = extremes(lnJ)
+  if (highest - lowest > 700) return Number.POSITIVE_INFINITY
   let up = 0
   let down = 0
-  for (const value of lnJ) {
-    up += Math.exp(value - highest)
-    down += Math.exp(lowest - value)
+  for (let i = 0; i < lnJ.length; i++) {
+    const share = Math.exp((lnJ[i] as number) - highest)
+    up += share
+    down += 1 / share
   }
-  return Math.exp(highest - lowest) * up * down - lnJ.length
+  return up * down - lnJ.length
 }
 
 /**
@@ -25,7 +27,7 @@ export function phiSlope(lnJ: Float64Array, inverseT: Float64Array): number {
   const { highest, lowest } = extremes(lnJ)
   const n = lnJ.length
   let mean = 0
-  for (const u of inverseT) mean += u / n
+  for (let i = 0; i < n; i++) mean += (inverseT[i] as number) / n
   let up = 0
   let upMoment = 0
   let down = 0
@@ -46,9 +48,10 @@ export function phiSlope(lnJ: Float64Array, inverseT: Float64Array): number {
 function extremes(values: Float64Array): { readonly highest: number; readonly lowest: number } {
   let highest = Number.NEGATIVE_INFINITY
   let lowest = Number.POSITIVE_INFINITY
-  for (const value of values) {
-    highest = Math.max(highest, value)
-    lowest = Math.min(lowest, value)
+  for (let i = 0; i < values.length; i++) {
+    const value = values[i] as number
+    if (!(value <= highest)) highest = value
+    if (!(value >= lowest)) lowest = value
   }
   return { highest, lowest }
 }
