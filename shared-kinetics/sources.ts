@@ -79,6 +79,14 @@ export const sources = {
     'ISO 11358-2, Plastics, Thermogravimetry (TG) of polymers, Part 2: Determination of activation energy (scope read; equation from memory)',
   'jcgm-100-2008': 'JCGM 100:2008, Evaluation of measurement data: guide to the expression of uncertainty in measurement',
   'jcgm-101-2008': 'JCGM 101:2008, Supplement 1 to the guide: propagation of distributions using a Monte Carlo method',
+  'levenberg-1944': 'K. Levenberg, Q. Appl. Math. 2 (1944) 164 (cited from memory)',
+  'marquardt-1963': 'D. W. Marquardt, J. Soc. Ind. Appl. Math. 11 (1963) 431 (cited from memory)',
+  'more-1978': 'J. J. Moré, Lect. Notes Math. 630 (1978) 105 (Levenberg–Marquardt in a trust region; cited from memory)',
+  'bates-watts-1981':
+    'D. M. Bates, D. G. Watts, Technometrics 23 (1981) 179 (relative offset as a criterion of convergence; cited from memory)',
+  'golub-van-loan-1996': 'G. H. Golub, C. F. Van Loan, Matrix Computations (3rd ed., 1996), ch. 5 (QR; cited from memory)',
+  'dennis-schnabel-1983':
+    'J. E. Dennis, R. B. Schnabel, Numerical Methods for Unconstrained Optimization (1983), ch. 5 (derivatives by differences; cited from memory)',
 } as const
 
 export type SourceKey = keyof typeof sources

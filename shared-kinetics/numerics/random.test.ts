@@ -118,7 +118,7 @@ describe('a stream of random numbers', () => {
 
   it('draws whole numbers below a bound with equal shares', () => {
     const stream = randomStream(5, 5)
-    const counts = new Array<number>(7).fill(0)
+    const counts = [0, 0, 0, 0, 0, 0, 0]
     for (let i = 0; i < 70_000; i++) {
       const drawn = stream.integerBelow(7)
       counts[drawn] = (counts[drawn] ?? 0) + 1
