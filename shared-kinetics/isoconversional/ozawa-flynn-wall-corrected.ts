@@ -6,7 +6,7 @@ import type { MethodInfo } from './result.ts'
 
 export const ozawaFlynnWallCorrectedInfo: MethodInfo = {
   id: 'ofw-corrected',
-  label: 'Ozawa–Flynn–Wall, corrected',
+  label: 'Ozawa–Flynn–Wall corrected',
   sources: ['flynn-1983', 'ozawa-1965', 'flynn-wall-1966', 'ictac-2011'],
   appliesTo: ['constant-heating-rate'],
   evidence: 'line',

@@ -3,7 +3,7 @@ import type { MethodInfo } from './result.ts'
 
 export const starink1996Info: MethodInfo = {
   id: 'starink-1996',
-  label: 'Starink (1996, T^1.8)',
+  label: 'Starink 1996',
   sources: ['starink-1996'],
   appliesTo: ['constant-heating-rate'],
   evidence: 'line',

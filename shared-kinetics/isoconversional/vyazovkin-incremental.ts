@@ -5,7 +5,7 @@ import { segmentIntegral } from './segment-integral.ts'
 
 export const vyazovkinIncrementalInfo: MethodInfo = {
   id: 'vyazovkin-incremental',
-  label: 'Vyazovkin, incremental',
+  label: 'Vyazovkin incremental',
   sources: ['vyazovkin-2001', 'ictac-2011'],
   appliesTo: ['constant-heating-rate', 'isothermal', 'general'],
   evidence: 'minimum',

@@ -40,10 +40,14 @@ describe('outside-scope-of-standard', () => {
   })
 
   it('tells a second maximum of the rate', () => {
-    const run = { result: { curve: { ...curve, reactionRate_per_s: twoPeaks(0.6, 0.3) } } }
+    const conversion = Float64Array.of(0, 0.1, 0.2, 0.3, 0.4, 0.5, 0.7, 0.94, 1)
+    const run = { result: { curve: { ...curve, conversion, reactionRate_per_s: twoPeaks(0.6, 0.3) } } }
     for (const message of messages({ runs: atRates([1, 2, 5, 10], run), result: standards() }))
       expect(message).toMatch(/more than one maximum in Run 0/)
     expect(messages({ runs: atRates([1, 2, 5, 10], run), result: standards() })).toHaveLength(2)
+    // The same where the reaction is over: a step of the balance.
+    const late = { result: { curve: { ...run.result.curve, conversion: Float64Array.of(0, 0.1, 0.5, 0.9, 0.96, 0.97, 0.98, 0.99, 1) } } }
+    expect(messages({ runs: atRates([1, 2, 5, 10], late), result: standards() })).toEqual([])
   })
 })
 

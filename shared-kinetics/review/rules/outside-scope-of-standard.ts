@@ -1,5 +1,5 @@
 import type { MethodId } from '../../isoconversional/result.ts'
-import type { ProfileResult } from '../../tasks/study-result.ts'
+import type { ProfileResult, RunResult } from '../../tasks/study-result.ts'
 import { gasConstant_J_per_mol_K } from '../../units/constants.ts'
 import type { Finding } from '../finding.ts'
 import { countRateMaxima } from '../rate-maxima.ts'
@@ -86,9 +86,13 @@ const notMass = (signal: ReviewInput['result']['signal']): string[] =>
     : []
 
 function severalMaxima(runs: ReviewInput['runs']): string[] {
-  const several = runs.filter((run) => countRateMaxima(run.result.curve.reactionRate_per_s, standsOut) > 1)
+  const several = runs.filter((run) => countRateMaxima(rateWithin(run.result), standsOut) > 1)
   return several.length === 0 ? [] : [`the rate has more than one maximum in ${list(several.map((run) => run.info.label))}`]
 }
+
+/** The rate without the first and last twentieth of the reaction, where a step of the balance would look like a maximum. */
+const rateWithin = ({ curve }: RunResult): Float64Array =>
+  curve.reactionRate_per_s.filter((_, i) => (curve.conversion[i] ?? 0) >= 0.05 && (curve.conversion[i] ?? 0) <= 0.95)
 
 const tooFew = (programmes: number, fewest: number): string[] =>
   programmes < fewest ? [`there are ${programmes} distinct heating rates, fewer than ${fewest}`] : []
