@@ -70,7 +70,9 @@ describe('rampfold rate-constants', () => {
     expect(json.line['Ea_kJ_per_mol']).toBeCloseTo(102.8979, 4)
     expect(json.line['standardError_kJ_per_mol']).toBeCloseTo(0.4713, 4)
     expect(stdout).toMatch(/Ea: 102\.90 kJ\/mol, standard error 0\.47 \(101\.59 to 104\.21\)/)
-    expect(stdout).toMatch(/k at 126\.85 °C: 1\.396 1\/s \(line 1\.236 to 1\.576, new measurement 1\.201 to 1\.622\); 62 K above the data/)
+    expect(stdout).toMatch(
+      /k at 400 K \(126\.85 °C\): 1\.396 1\/s \(line 1\.236 to 1\.576, new measurement 1\.201 to 1\.622\); 62 K above the data/,
+    )
     expect(stdout).toMatch(/1 note|caution: A prediction/)
     const csv = Papa.parse<string[]>(await readFile(join(out, 'rate-constants.csv'), 'utf8'), { skipEmptyLines: true }).data
     expect(new Set(csv.map((row) => row.length))).toEqual(new Set([11]))

@@ -49,7 +49,7 @@ export function rateConstantsCsv(result: RateConstantsResult, style: TableStyle)
     ...lineRows(result.line, unit, ''),
     ...(result.weightedLine === null ? [] : lineRows(result.weightedLine, unit, ', weighted by stated uncertainties')),
     ...eyringRows(result),
-    ...result.factorsPer10K.map(factorRow),
+    ...result.factorsPer10K.map((factor) => ({ ...factorRow(factor), label: placeOf(factor.from_K, result) })),
     ...measuredRows(result),
     ...result.predictions.flatMap((row) => predictionRows(row, unit)),
   ]
@@ -117,23 +117,24 @@ function lineRows(line: ArrheniusResult, unit: string, which: string): readonly 
 
 const expOf = (value: number | null): number | null => (value === null ? null : Math.exp(value))
 
+const estimateRow = (quantity: string, unit: string, estimate: EstimateResult, temperature_K?: number): QuantityRow => ({
+  quantity,
+  unit,
+  value: estimate.value,
+  standardError: estimate.standardError,
+  lower: estimate.lower95,
+  upper: estimate.upper95,
+  intervalOf: parameter,
+  ...(temperature_K === undefined ? {} : { temperature_K }),
+})
+
 function eyringRows({ eyring }: RateConstantsResult): readonly QuantityRow[] {
   if (eyring === null) return []
-  const row = (quantity: string, unit: string, estimate: EstimateResult, temperature_K?: number): QuantityRow => ({
-    quantity,
-    unit,
-    value: estimate.value,
-    standardError: estimate.standardError,
-    lower: estimate.lower95,
-    upper: estimate.upper95,
-    intervalOf: parameter,
-    ...(temperature_K === undefined ? {} : { temperature_K }),
-  })
   const state = eyring.standardStateOf === null ? '' : ` (standard state of ${eyring.standardStateOf})`
   return [
-    row('enthalpy of activation', 'kJ/mol', eyring.enthalpy_kJ_per_mol),
-    row(`entropy of activation${state}`, 'J/(mol K)', eyring.entropy_J_per_mol_K),
-    row(`Gibbs energy of activation${state}`, 'kJ/mol', eyring.gibbs_kJ_per_mol, eyring.gibbsAt_K),
+    estimateRow('enthalpy of activation', 'kJ/mol', eyring.enthalpy_kJ_per_mol),
+    estimateRow(`entropy of activation${state}`, 'J/(mol K)', eyring.entropy_J_per_mol_K),
+    estimateRow(`Gibbs energy of activation${state}`, 'kJ/mol', eyring.gibbs_kJ_per_mol, eyring.gibbsAt_K),
   ]
 }
 
@@ -146,6 +147,10 @@ const factorRow = ({ from_K, factor, lower95, upper95 }: FactorPer10KResult): Qu
   upper: upper95,
   intervalOf: 'the factor, from that of Ea',
 })
+
+/** The 10 K from a temperature may lie beyond the data. */
+const placeOf = (from_K: number, { span }: RateConstantsResult): string =>
+  span === null || (from_K >= span.coldest_K && from_K + 10 <= span.hottest_K) ? 'inside the data' : 'not within the data'
 
 function measuredRows({ rows, rateUnit }: RateConstantsResult): readonly QuantityRow[] {
   return rows.map((row) => ({

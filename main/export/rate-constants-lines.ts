@@ -4,6 +4,7 @@ import type {
   RateConstantPrediction,
   RateConstantsResult,
 } from '../../shared-kinetics/tasks/rate-constants-result.ts'
+import type { TemperatureUnit } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 
 /** What follows from a table of rate constants, in a few lines for a terminal and for the text beside a table. */
@@ -14,10 +15,14 @@ export function rateConstantLines(result: RateConstantsResult): readonly string[
     ...arrheniusLines(line, rateUnit, ''),
     ...(weightedLine === null ? [] : arrheniusLines(weightedLine, rateUnit, ', weighted by stated uncertainties')),
     ...result.factorsPer10K.flatMap(({ from_K, factor, lower95, upper95 }) =>
-      factor === null ? [] : [`factor per 10 K from ${celsius(from_K)}: ${digits(factor)}${range(lower95, upper95, digits)}`],
+      factor === null
+        ? []
+        : [
+            `factor per 10 K from ${temperature(from_K, result.temperatureUnitShown)}${besideData(from_K, result)}: ${digits(factor)}${range(lower95, upper95, digits)}`,
+          ],
     ),
-    ...(eyring === null ? [] : eyringLines(eyring)),
-    ...result.predictions.flatMap((row) => predictionLine(row, rateUnit)),
+    ...(eyring === null ? [] : eyringLines(eyring, result.temperatureUnitShown)),
+    ...result.predictions.flatMap((row) => predictionLine(row, rateUnit, result.temperatureUnitShown)),
   ]
 }
 
@@ -32,7 +37,6 @@ export const rateConstantsShortTable = (result: RateConstantsResult): string =>
 function arrheniusLines(line: ArrheniusResult, unit: string, which: string): readonly string[] {
   const { Ea_kJ_per_mol: Ea, lnA } = line
   if (Ea === null || lnA === null) return []
-  const fixed = (value: number): string => value.toFixed(2)
   const A = line.A === null ? '' : `, A ${digits(line.A)}${unit === '' ? '' : ` ${unit}`}`
   return [
     `Ea${which}: ${fixed(Ea)} kJ/mol${error(line.standardError_kJ_per_mol, fixed)}${range(line.lower95_kJ_per_mol, line.upper95_kJ_per_mol, fixed)}`,
@@ -40,23 +44,23 @@ function arrheniusLines(line: ArrheniusResult, unit: string, which: string): rea
   ]
 }
 
-function eyringLines(eyring: NonNullable<RateConstantsResult['eyring']>): readonly string[] {
-  const fixed = (value: number): string => value.toFixed(2)
-  const one = (name: string, estimate: EstimateResult, unit: string): string[] =>
-    estimate.value === null
-      ? []
-      : [
-          `${name}: ${fixed(estimate.value)} ${unit}${error(estimate.standardError, fixed)}${range(estimate.lower95, estimate.upper95, fixed)}`,
-        ]
+const estimateLine = (name: string, estimate: EstimateResult, unit: string): string[] =>
+  estimate.value === null
+    ? []
+    : [
+        `${name}: ${fixed(estimate.value)} ${unit}${error(estimate.standardError, fixed)}${range(estimate.lower95, estimate.upper95, fixed)}`,
+      ]
+
+function eyringLines(eyring: NonNullable<RateConstantsResult['eyring']>, unit: TemperatureUnit): readonly string[] {
   const state = eyring.standardStateOf === null ? '' : `, standard state of ${eyring.standardStateOf}`
   return [
-    ...one('enthalpy of activation', eyring.enthalpy_kJ_per_mol, 'kJ/mol'),
-    ...one(`entropy of activation${state}`, eyring.entropy_J_per_mol_K, 'J/(mol K)'),
-    ...one(`Gibbs energy of activation at ${celsius(eyring.gibbsAt_K)}${state}`, eyring.gibbs_kJ_per_mol, 'kJ/mol'),
+    ...estimateLine('enthalpy of activation', eyring.enthalpy_kJ_per_mol, 'kJ/mol'),
+    ...estimateLine(`entropy of activation${state}`, eyring.entropy_J_per_mol_K, 'J/(mol K)'),
+    ...estimateLine(`Gibbs energy of activation at ${temperature(eyring.gibbsAt_K, unit)}${state}`, eyring.gibbs_kJ_per_mol, 'kJ/mol'),
   ]
 }
 
-function predictionLine(row: RateConstantPrediction, unit: string): readonly string[] {
+function predictionLine(row: RateConstantPrediction, unit: string, shown: TemperatureUnit): readonly string[] {
   if (row.rateConstant === null) return []
   const { side, beyond_K } = row.extrapolation
   const beyond = side === 'inside' ? '' : `; ${digits(beyond_K)} K ${side} the data`
@@ -64,12 +68,28 @@ function predictionLine(row: RateConstantPrediction, unit: string): readonly str
     row.lineLower95 === null || row.newLower95 === null
       ? ''
       : ` (line ${range(row.lineLower95, row.lineUpper95, digits).slice(2, -1)}, new measurement ${range(row.newLower95, row.newUpper95, digits).slice(2, -1)})`
-  return [`k at ${celsius(row.temperature_K)}: ${digits(row.rateConstant)}${unit === '' ? '' : ` ${unit}`}${ends}${beyond}`]
+  return [`k at ${temperature(row.temperature_K, shown)}: ${digits(row.rateConstant)}${unit === '' ? '' : ` ${unit}`}${ends}${beyond}`]
 }
+
+/** The 10 K from a temperature may lie beyond the data. */
+const besideData = (from_K: number, { span }: RateConstantsResult): string =>
+  span === null || (from_K >= span.coldest_K && from_K + 10 <= span.hottest_K) ? '' : ', not within the data'
 
 const range = (lower: number | null, upper: number | null, text: (value: number) => string): string =>
   lower === null || upper === null ? '' : ` (${text(lower)} to ${text(upper)})`
 const error = (value: number | null, text: (value: number) => string): string =>
   value === null ? '' : `, standard error ${value < 0.005 ? '<0.01' : text(value)}`
-const digits = (value: number): string => String(Number(value.toPrecision(4)))
-const celsius = (kelvin: number): string => `${Number(kelvinToCelsius(kelvin).toFixed(2))} °C`
+const fixed = (value: number): string => value.toFixed(2)
+
+/** Four digits; by a power of ten where zeros would have to be counted. */
+function digits(value: number): string {
+  const size = Math.abs(value)
+  return size !== 0 && (size < 1e-3 || size >= 1e6) ? value.toExponential(3).replace('e+', 'e') : String(Number(value.toPrecision(4)))
+}
+
+/** As the table gives temperatures; kelvins with °C behind them. */
+function temperature(kelvin: number, unit: TemperatureUnit): string {
+  const celsius = kelvinToCelsius(kelvin)
+  if (unit === 'F') return `${Number((celsius * 1.8 + 32).toFixed(2))} °F`
+  return unit === 'C' ? `${Number(celsius.toFixed(2))} °C` : `${Number(kelvin.toFixed(2))} K (${Number(celsius.toFixed(2))} °C)`
+}

@@ -1,4 +1,5 @@
 import type { DecimalSignWord, DelimiterWord } from '../../shared-kinetics/contract/import-options.ts'
+import { plainSuperscripts } from '../../shared-kinetics/units/plain-superscripts.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { unitOf } from './file-unit.ts'
 import { isMissingMark, isNumber, parseNumber } from './parse-number.ts'
@@ -41,7 +42,7 @@ const withPlainPowers = (line: string): string =>
   line.replaceAll(
     /(\d)\s*[×x·⋅*]\s*10\s*(?:\^\s*\(?\s*([-+−]?\d{1,3})\s*\)?|([⁻⁺]?[⁰¹²³⁴⁵⁶⁷⁸⁹]{1,3}))/gi,
     (_, digit: string, plain?: string, raised?: string) => {
-      const exponent = plain ?? [...(raised ?? '')].map((c) => (c === '⁻' ? '-' : c === '⁺' ? '' : '⁰¹²³⁴⁵⁶⁷⁸⁹'.indexOf(c))).join('')
+      const exponent = plain ?? plainSuperscripts(raised ?? '').slice(1)
       return `${digit}e${exponent.replace('−', '-')}`
     },
   )

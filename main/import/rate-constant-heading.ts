@@ -1,4 +1,5 @@
 import type { TemperatureUnit } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
+import { plainSuperscripts } from '../../shared-kinetics/units/plain-superscripts.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { unitOf } from './file-unit.ts'
 import { parseHeading } from './parse-heading.ts'
@@ -62,12 +63,7 @@ export function rateConstantHeading(text: string): RateConstantColumn {
 const shortUnit = (word: string): TemperatureUnit => (word === '°C' ? 'C' : word === '°F' ? 'F' : 'K')
 
 function plain(text: string): string {
-  return text
-    .replace(/^\s*#+\s*/, '')
-    .replaceAll(
-      /[⁻⁺]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+/g,
-      (power) => `^${[...power].map((c) => (c === '⁻' ? '-' : c === '⁺' ? '' : '⁰¹²³⁴⁵⁶⁷⁸⁹'.indexOf(c))).join('')}`,
-    )
+  return plainSuperscripts(text.replace(/^\s*#+\s*/, ''))
     .replaceAll(/[−–]/g, '-')
     .replaceAll(/[×⋅·*]/g, '·')
     .replaceAll('℃', '°C')
@@ -128,7 +124,7 @@ function unitPart(rest: string, form: 'k' | 'ln' | 'log10'): UnitPart | null {
   const none: UnitPart = { text: null, written: '', exponent: 0, isTimes: false, remark: '' }
   const spaced = rest.replaceAll('_', ' ').replaceAll(/\s+/g, ' ').trim()
   let body = spaced.replace(/^in /i, '').replace(/^[,;:]\s*/, '')
-  const isBelow = /^\//.test(body)
+  const isBelow = body.startsWith('/')
   body = unwrapped(isBelow ? body.slice(1).trim() : body)
   if (body === '' || /^(?:-|\?)$/.test(body)) return none
   const times = /^·\s*/.exec(body)

@@ -6,4 +6,4 @@ import type { Quantity } from '../units/quantity.ts'
  * @source arrhenius-1889
  */
 export const exponentialFactor = (Ea: Quantity<'J/mol'>, temperature: Quantity<'K'>): number =>
-  Math.exp(-Ea / (gasConstant_J_per_mol_K * temperature))
+  1 / Math.exp(Ea / (gasConstant_J_per_mol_K * temperature))

@@ -25,7 +25,6 @@ export function weightedLine(x: ArrayLike<number>, y: ArrayLike<number>, weights
   const largest = Math.max(...raw)
   const scale = n / raw.reduce((sum, w) => sum + w / largest, 0)
   const w = raw.map((weight) => (weight / largest) * scale)
-  const at = (values: ArrayLike<number>, i: number): number => values[i] ?? Number.NaN
   const weightedSum = (term: (i: number) => number): number => w.reduce((sum, weight, i) => sum + weight * term(i), 0)
   // The mean is taken about the plain one: 1/T differs little from point to point.
   const xMean = plain.xMean + weightedSum((i) => at(x, i) - plain.xMean) / n
@@ -52,3 +51,5 @@ export function weightedLine(x: ArrayLike<number>, y: ArrayLike<number>, weights
     r2: yy > 0 ? 1 - residualSumOfSquares / yy : Number.NaN,
   }
 }
+
+const at = (values: ArrayLike<number>, i: number): number => values[i] ?? Number.NaN

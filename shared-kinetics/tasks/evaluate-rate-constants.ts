@@ -23,7 +23,6 @@ import type {
 } from './rate-constants-result.ts'
 
 const bandPoints = 81
-const gibbsAt = quantity(298.15, 'K')
 
 /**
  * A table of rate constants to Ea, A, predictions and findings. Rows not used have a residual and enter nothing.
@@ -106,6 +105,7 @@ function lineResult(line: ArrheniusLine, weighting: Weighting, unit: RateUnit | 
 
 function eyringResult(points: readonly RateConstantPoint[], unit: RateUnit | null): EyringResult | null {
   const line = eyringLine(points, unit?.perSecond ?? null)
+  const gibbsAt = gibbsTemperature(points.map((point) => point.temperature))
   if (line.status !== 'ok' && line.status !== 'without-interval') return null
   return {
     status: line.status,
@@ -120,6 +120,14 @@ function eyringResult(points: readonly RateConstantPoint[], unit: RateUnit | nul
   }
 }
 
+/** 25 °C where the data reach it, else the middle of 1/T: far from the data the Gibbs energy would say nothing of them. */
+function gibbsTemperature(data_K: readonly number[]): Quantity<'K'> {
+  const room = celsiusToKelvin(25)
+  return room >= Math.min(...data_K) && room <= Math.max(...data_K) ? room : middleOf(data_K)
+}
+
+const middleOf = (data_K: readonly number[]): Quantity<'K'> => quantity(data_K.length / data_K.reduce((sum, T) => sum + 1 / T, 0), 'K')
+
 /** `L/(mol min)` counted per second is `L/(mol s)`; the time stands last. */
 const perSecondText = (text: string): string => text.replace(/[a-z]+(?=\)?$)/, 's')
 
@@ -132,8 +140,7 @@ const estimateResult = (estimate: Estimate, convert: (value: number) => number):
 
 /** 25 °C, and the 10 K around the middle of 1/T. */
 function factorTemperatures(data_K: readonly number[]): readonly Quantity<'K'>[] {
-  const meanInverse = data_K.reduce((sum, T) => sum + 1 / T, 0) / data_K.length
-  return data_K.length === 0 ? [celsiusToKelvin(25)] : [celsiusToKelvin(25), quantity(1 / meanInverse - 5, 'K')]
+  return data_K.length === 0 ? [celsiusToKelvin(25)] : [celsiusToKelvin(25), quantity(middleOf(data_K) - 5, 'K')]
 }
 
 const factorResult = (line: ArrheniusLine, from: Quantity<'K'>): FactorPer10KResult => ({

@@ -1,4 +1,5 @@
 import type { Parsed } from './parse-quantity.ts'
+import { plainSuperscripts } from './plain-superscripts.ts'
 
 /** The unit of a rate constant: one over a time, with or without a concentration: 1/s, 1/min, L/(mol s), … */
 export interface RateUnit {
@@ -41,7 +42,6 @@ const otherNames: Readonly<Record<string, string>> = { l: 'L', litre: 'L', liter
 const others =
   /^(?:L|mL|uL|dL|mol|mmol|umol|nmol|kmol|M|mM|uM|nM|m|dm|cm|mm|g|mg|ug|kg|%|molecule|molecules|Pa|kPa|MPa|bar|atm|Torr|N|J|K)$/
 
-const superscripts = '⁰¹²³⁴⁵⁶⁷⁸⁹'
 type Powers = ReadonlyMap<string, number>
 
 /**
@@ -66,12 +66,7 @@ export function parseRateUnit(text: string): Parsed<RateUnit> {
 }
 
 function plain(text: string): string {
-  return text
-    .trim()
-    .replaceAll(
-      /[⁻⁺]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+/g,
-      (power) => `^${[...power].map((c) => (c === '⁻' ? '-' : c === '⁺' ? '' : superscripts.indexOf(c))).join('')}`,
-    )
+  return plainSuperscripts(text.trim())
     .replaceAll('−', '-')
     .replaceAll('–', '-')
     .replaceAll('µ', 'u')
@@ -134,8 +129,9 @@ function nameOf(symbol: string): string | null {
 function spelled(powers: Powers): string {
   const side = (sign: 1 | -1): string[] =>
     [...powers].flatMap(([name, power]) => (power * sign > 0 ? [power * sign === 1 ? name : `${name}^${power * sign}`] : []))
-  const isTime = (name: string): boolean => secondsPer[name.replace(/\^.*/, '')] !== undefined
   const [above, under] = [side(1), side(-1).toSorted((a, b) => Number(isTime(a)) - Number(isTime(b)))]
   const top = above.length === 0 ? '1' : above.join(' ')
   return `${top}/${under.length === 1 ? (under[0] ?? '') : `(${under.join(' ')})`}`
 }
+
+const isTime = (name: string): boolean => secondsPer[name.replace(/\^.*/, '')] !== undefined
