@@ -2,7 +2,7 @@ import { type Descent, type DescentPoint, descentPoint, type InnerProblem, type 
 import { normOf, solveUpper } from './qr.ts'
 
 /** What the end of a descent is: see `LeastSquaresStatus`, of which these are the ones a single start can have. */
-export type EndStatus = 'converged' | 'at-bound' | 'plateau' | 'singular' | 'iteration-limit' | 'not-finite'
+export type EndStatus = 'converged' | 'at-bound' | 'plateau' | 'singular' | 'saddle' | 'iteration-limit' | 'not-finite'
 
 export interface JudgedEnd {
   readonly status: EndStatus
@@ -25,9 +25,9 @@ const dependence = { differences: 1e-9, analytic: 1e-12 } as const
 /**
  * Takes undamped Gauss–Newton steps from the end of a descent for as long as they shrink, then says what the end is.
  *
- * The sum of squares settles a minimum only to half the digits of double precision, the undamped step to nearly all of them. That the steps shrink also proves a
- * true minimum: they contract only where the second derivatives of the sum of squares are positive. `converged` asks for all of: no parameter without effect, columns of the Jacobian
- * independent, residuals at right angles to the model's surface, and an undamped step that moves no parameter.
+ * The sum of squares settles a minimum only to half the digits of double precision, the undamped step to nearly all of them. `converged` asks for all of: no
+ * parameter without effect, columns of the Jacobian independent, residuals at right angles to the model's surface, an undamped step that moves no parameter, and a
+ * sum of squares that rises to both sides along every principal direction (at right angles alone it may be a maximum).
  *
  * @source bates-watts-1981
  */
@@ -81,8 +81,36 @@ function statusOf(
   const moves = free.some((j, k) => Math.abs(at(step, k)) > stepTolerance * at(sizes, j))
   const settled = (tangent <= offsetTolerance * end.norm && !moves) || tangent <= rounding
   if (!settled) return reason === 'iteration-limit' ? 'iteration-limit' : 'plateau'
+  if (end.norm > rounding && fallsToASide(problem, end, linear)) return 'saddle'
   return bounded(problem, end, linear) ? 'at-bound' : 'converged'
 }
+
+/**
+ * Whether the mean of the sums of squares at both ends of a short step is below that at its middle, along a column of R⁻¹. By the linear model alone it would lie
+ * above it by the square of the step's length.
+ */
+function fallsToASide(problem: InnerProblem, end: DescentPoint, linear: Linearisation): boolean {
+  const n = linear.free.length
+  return linear.free.some((_, direction) => {
+    const unit = new Float64Array(n)
+    unit[direction] = probeLength * end.norm
+    const step = inCoordinates(linear, solveUpper(linear.r, linear.r.length / n, n, unit))
+    const rises = [1, -1].map((sign) => {
+      const point = Float64Array.from(end.point)
+      linear.free.forEach((j, k) => {
+        point[j] = at(point, j) + sign * at(step, k)
+      })
+      if (point.some((x, j) => x < at(problem.lower, j) || x > at(problem.upper, j))) return Number.NaN
+      const there = descentPoint(problem, point)
+      return there === null ? Number.NaN : (there.norm / end.norm - 1) * (there.norm / end.norm + 1)
+    })
+    // What is not to be had beyond a bound or the model's reach says nothing.
+    return at(rises, 0) + at(rises, 1) < -1e-3 * probeLength ** 2
+  })
+}
+
+/** Length of the step, in parts of the residuals: its square is far above the rounding of a sum of squares, its fourth power below it. */
+const probeLength = 1e-3
 
 /** Whether a parameter that is not held rests at a bound. */
 function bounded(problem: InnerProblem, end: DescentPoint, { free }: Linearisation): boolean {
@@ -90,15 +118,18 @@ function bounded(problem: InnerProblem, end: DescentPoint, { free }: Linearisati
 }
 
 /** -R⁻¹z in the problem's coordinates, by position among the free ones. */
-export function undampedStep(linear: Linearisation): Float64Array {
-  const { free, order, columnNorms, r } = linear
-  const n = free.length
-  const scaled = solveUpper(r, n === 0 ? 0 : r.length / n, n, linear.z)
-  const step = new Float64Array(n)
+function undampedStep(linear: Linearisation): Float64Array {
+  const n = linear.free.length
+  return inCoordinates(linear, solveUpper(linear.r, n === 0 ? 0 : linear.r.length / n, n, linear.z)).map((value) => -value)
+}
+
+/** A vector in the order of R, in units of the columns, as one by position among the free coordinates. */
+function inCoordinates({ order, columnNorms }: Linearisation, scaled: Float64Array): Float64Array {
+  const vector = new Float64Array(scaled.length)
   order.forEach((k, position) => {
-    step[k] = -at(scaled, position) / at(columnNorms, k)
+    vector[k] = at(scaled, position) / at(columnNorms, k)
   })
-  return step
+  return vector
 }
 
 const toleratedDependence = (problem: InnerProblem): number => (problem.jacobian === null ? dependence.differences : dependence.analytic)

@@ -235,6 +235,29 @@ describe('what is no minimum is not given as an answer', () => {
     expect(fit.parameters[0]).toBeNaN()
   })
 
+  it('a start at the point of the model that lies farthest from the data: a saddle', () => {
+    // A circle and a point inside it: at p = π the residuals are at right angles to the circle, as at the minimum p = 0.
+    const circle: LeastSquaresProblem = {
+      parameters: [{ name: 'p', start: Math.PI }],
+      residualCount: 2,
+      residuals: ([p = 0], out) => {
+        out[0] = Math.cos(p) - 0.5
+        out[1] = Math.sin(p)
+      },
+      jacobian: ([p = 0], out) => {
+        out[0] = -Math.sin(p)
+        out[1] = Math.cos(p)
+      },
+    }
+    const stuck = leastSquares(circle)
+    expect(stuck.status).toBe('saddle')
+    expect(stuck.parameters[0]).toBeNaN()
+    const found = leastSquares(circle, { starts: [[1]] })
+    expect(found.status).toBe('converged')
+    expect(found.parameters[0]).toBeCloseTo(0, 14)
+    expect(found.residualSumOfSquares).toBeCloseTo(0.25, 15)
+  })
+
   it('too few iterations, too few points, residuals that are not to be had', () => {
     const parameters = [
       { name: 'b1', start: 500 },

@@ -33,6 +33,7 @@ export interface LeastSquaresOptions {
  * - `at-bound`: a minimum within the bounds with at least one parameter at its bound; the others are given with that one held.
  * - `plateau`: the sum of squares has stopped falling where there is no minimum: a parameter has no effect any more, or runs away.
  * - `singular`: the sum of squares is least along a whole line of parameters; they cannot be told apart.
+ * - `saddle`: the sum of squares is stationary but falls to a side: give another start.
  * - `false-minimum`: a minimum, but another start went lower without arriving anywhere.
  * - `iteration-limit`, `not-finite` (no start gives finite residuals and derivatives), `too-few-points`.
  */
