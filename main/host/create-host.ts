@@ -14,6 +14,7 @@ import { uploadHandlers } from './handlers/upload.ts'
 import type { TaskPool } from './host-tasks.ts'
 import { checkRequestName, parseRequest } from './parse-request.ts'
 import { programParts } from './program-parts.ts'
+import { createUncertainty } from './uncertainty.ts'
 import { createUploads } from './uploads.ts'
 import { createWorkspace, type Workspace } from './workspace.ts'
 
@@ -56,7 +57,8 @@ export function createHost(options: HostOptions): Host {
     const store = await openStore(options.dataFolder, randomId(), now, warn)
     const workspace = await createWorkspace({ store, events, randomId, warn })
     const evaluation = createEvaluation(workspace, pool, events)
-    const context = { workspace, pool, uploads, events, evaluation, imports, parts, version, shell, randomId }
+    const uncertainty = createUncertainty(workspace, pool, events)
+    const context = { workspace, pool, uploads, events, evaluation, uncertainty, imports, parts, version, shell, randomId }
     const handlers = {
       ...studyHandlers(context),
       ...uploadHandlers(context),
@@ -66,6 +68,7 @@ export function createHost(options: HostOptions): Host {
     }
     const cancelAll = (): void => {
       evaluation.cancel()
+      uncertainty.cancel()
       for (const running of imports) running.abort()
     }
     return { workspace, handlers, cancelAll }

@@ -8,7 +8,7 @@ export interface EventHub {
   subscribe(listener: (event: HostEvent) => void): () => void
   send(event: HostEvent): void
   /** A report of progress for one piece of work, thinned out in time. */
-  progressOf(work: 'import' | 'evaluate'): (done: number, total: number, what: string) => void
+  progressOf(work: 'import' | 'evaluate' | 'uncertainty'): (done: number, total: number, what: string) => void
 }
 
 export function createEventHub(now: () => number): EventHub {

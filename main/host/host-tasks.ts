@@ -1,9 +1,13 @@
-import type { TaskContext } from '../../shared-kinetics/isoconversional/result.ts'
+import type { MethodId, TaskContext } from '../../shared-kinetics/isoconversional/result.ts'
 import type { RunColumns, RunInfo } from '../../shared-kinetics/series/run.ts'
 import type { RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import type { RateConstantsResult } from '../../shared-kinetics/tasks/rate-constants-result.ts'
+import type { DrawOrder } from '../../shared-kinetics/tasks/draw-uncertainty.ts'
+import type { UncertaintyEstimate } from '../../shared-kinetics/tasks/estimate-uncertainty.ts'
 import type { StudyInput } from '../../shared-kinetics/tasks/study-input.ts'
-import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { IntervalResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { UncertaintySettings } from '../../shared-kinetics/uncertainty/measured-sources.ts'
+import type { DrawRange } from '../../shared-kinetics/uncertainty/monte-carlo.ts'
 import type { RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
 import type { SavedCopy } from '../study/saved-copy.ts'
 
@@ -17,6 +21,18 @@ export interface HostTasks {
   'evaluate-study': {
     input: { readonly study: StudyInput; readonly columns: ReadonlyMap<string, RunColumns> }
     answer: StudyResult
+  }
+  /** What resampling and the budget say, and what draws are to be made from; as slow as it is, it looks at its flag often. */
+  'estimate-uncertainty': {
+    input: { readonly study: StudyInput; readonly columns: ReadonlyMap<string, RunColumns>; readonly uncertainty: UncertaintySettings }
+    answer: UncertaintyEstimate
+  }
+  /** A share of the draws. */
+  'draw-energies': { input: DrawOrder & { readonly range: DrawRange }; answer: readonly Float64Array[] }
+  /** All shares to intervals. */
+  'intervals-of-draws': {
+    input: { readonly order: DrawOrder; readonly shares: readonly (readonly Float64Array[])[]; readonly seed: number }
+    answer: ReadonlyMap<MethodId, IntervalResult>
   }
   'evaluate-rate-constants': { input: { readonly table: RateConstantTable }; answer: RateConstantsResult }
   /** Reads one export. A file that cannot be used is an answer, not a failure. */

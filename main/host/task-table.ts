@@ -15,6 +15,10 @@ export function createTaskTable(importOptions: ImportOptions = {}): TaskTable {
   const cache: EvaluationCache = new Map()
   return {
     'evaluate-study': ({ study, columns }, context) => taskMap['evaluate-study'](study, columns, context, cache),
+    'estimate-uncertainty': ({ study, columns, uncertainty }, context) =>
+      taskMap['estimate-uncertainty'](study, columns, uncertainty, context, cache),
+    'draw-energies': taskMap['draw-energies'],
+    'intervals-of-draws': ({ order, shares, seed }) => taskMap['intervals-of-draws'](order, shares, seed),
     'evaluate-rate-constants': ({ table }) => taskMap['evaluate-rate-constants'](table),
     'import-file': ({ fileName, bytes }, context) => {
       try {

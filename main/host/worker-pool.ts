@@ -23,7 +23,7 @@ interface Job {
 
 interface Slot {
   readonly worker: Worker
-  /** Tasks this worker has run: its caches know them. */
+  /** Caches this worker has filled. */
   readonly known: Set<string>
   job: Job | null
 }
@@ -86,13 +86,14 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
 
   /** null: wait. A task whose own worker is busy with its kind waits for it: that one is about to be cancelled or done. */
   const slotFor = (job: Job): Slot | null => {
-    const home = [...slots].find((slot) => slot.known.has(job.message.task))
+    const cache = cacheOf(job.message.task)
+    const home = [...slots].find((slot) => slot.known.has(cache))
     if (home !== undefined && cached.has(job.message.task)) {
       if (home.job === null) return home
-      if (home.job.message.task === job.message.task) return null
+      if (cacheOf(home.job.message.task) === cache) return null
     }
     const idle = [...slots].filter((slot) => slot.job === null)
-    return idle.find((slot) => slot.known.has(job.message.task)) ?? idle[0] ?? (slots.size < workers ? startWorker() : null)
+    return idle.find((slot) => slot.known.has(cache)) ?? idle[0] ?? (slots.size < workers ? startWorker() : null)
   }
 
   const pump = (): void => {
@@ -102,7 +103,7 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
       if (slot === null) continue
       waiting.splice(waiting.indexOf(job), 1)
       slot.job = job
-      slot.known.add(job.message.task)
+      slot.known.add(cacheOf(job.message.task))
       slot.worker.ref()
       try {
         slot.worker.postMessage(job.message, [])
@@ -155,5 +156,8 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
   }
 }
 
-/** Tasks that keep a cache in their worker and are therefore worth waiting for. */
-const cached: ReadonlySet<string> = new Set<TaskName>(['evaluate-study'])
+/** Tasks that keep a cache in their worker and are therefore worth waiting for; both of these keep the same one. */
+const cached: ReadonlySet<string> = new Set<TaskName>(['evaluate-study', 'estimate-uncertainty'])
+
+/** What a task leaves behind in its worker. */
+const cacheOf = (task: string): string => (cached.has(task) ? 'evaluation' : task)

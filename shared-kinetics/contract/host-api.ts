@@ -1,7 +1,7 @@
 import * as z from 'zod/mini'
 import type { RateConstantTable } from '../rate-constants/rate-constant-table.ts'
 import type { RateConstantsResult } from '../tasks/rate-constants-result.ts'
-import type { StudyResult } from '../tasks/study-result.ts'
+import type { StudyResult, UncertaintyResult } from '../tasks/study-result.ts'
 import type { DeepReadonly } from './deep-readonly.ts'
 import { rateConstantLimits, rateConstantReadOptionsSchema } from './rate-constant-schema.ts'
 import { studyChangeSchema } from './study-change.ts'
@@ -35,6 +35,8 @@ export const requestSchemas = {
   'study.open-recent': z.strictObject({ studyId: id }),
   'study.save-copy': nothing,
   'study.evaluate': z.strictObject({ revision: z.int() }),
+  /** Intervals by resampling and from measured sources, with their budget: takes longer than an evaluation, and is asked for apart. */
+  'study.uncertainty': z.strictObject({ revision: z.int() }),
   'upload.begin': z.strictObject({
     fileName: z.string().check(z.minLength(1), z.maxLength(400)),
     byteLength: z.int().check(z.nonnegative()),
@@ -46,7 +48,7 @@ export const requestSchemas = {
   'upload.discard': z.strictObject({ uploadId: id }),
   /** `noteLeftOut`: files that cannot be used are noted in the study, so that its review and every export name them. */
   'runs.import': z.strictObject({ uploadIds: z.array(id).check(z.minLength(1), z.maxLength(500)), noteLeftOut: z.optional(z.boolean()) }),
-  'work.cancel': z.strictObject({ work: z.enum(['import', 'evaluate']) }),
+  'work.cancel': z.strictObject({ work: z.enum(['import', 'evaluate', 'uncertainty']) }),
   /** A pasted or typed table into rows, units told or asked for; nothing is changed: `set-rate-constants` puts the table into the study. */
   'rate-constants.read-text': z.strictObject({
     text: z.string().check(z.maxLength(rateConstantLimits.characters)),
@@ -61,6 +63,8 @@ export const requestSchemas = {
     format: z.enum(['csv', 'json', 'svg']),
     tableStyle: z.optional(tableStyleSchema),
     of: z.optional(z.enum(['activation', 'rate-constants'])),
+    /** With the intervals that `study.uncertainty` gives. */
+    withUncertainty: z.optional(z.boolean()),
   }),
 } as const
 
@@ -127,6 +131,7 @@ export interface RequestAnswers {
   'study.open-recent': StudySnapshot
   'study.save-copy': FileOut
   'study.evaluate': { readonly revision: number; readonly result: StudyResult }
+  'study.uncertainty': { readonly revision: number; readonly result: UncertaintyResult }
   'upload.begin': { readonly uploadId: string }
   'upload.append': { readonly receivedBytes: number }
   'upload.discard': Record<string, never>
@@ -145,7 +150,7 @@ export type HostEvent =
   | { readonly kind: 'not-saved'; readonly message: string }
   | {
       readonly kind: 'progress'
-      readonly work: 'import' | 'evaluate'
+      readonly work: 'import' | 'evaluate' | 'uncertainty'
       readonly done: number
       readonly total: number
       readonly what: string

@@ -3,7 +3,15 @@ import type { RunInfo } from '../series/run.ts'
 import type { DeepReadonly } from './deep-readonly.ts'
 import { nameAfter } from './name-after-runs.ts'
 import { rateConstantTableSchema } from './rate-constant-schema.ts'
-import { runInfoSchema, settingsSchema, studyLimits, windowSchema, type StudyDocument, untitled } from './study-document.ts'
+import {
+  runInfoSchema,
+  settingsSchema,
+  studyLimits,
+  windowSchema,
+  type StudyDocument,
+  uncertaintySchema,
+  untitled,
+} from './study-document.ts'
 
 /** Every change a person can make to a study, as plain data. The host and each replica apply it with `applyChange`. */
 export const studyChangeSchema = z.discriminatedUnion('kind', [
@@ -25,6 +33,7 @@ export const studyChangeSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('set-window'), window: z.nullable(windowSchema) }),
   z.object({ kind: z.literal('set-baseline'), baseline: settingsSchema.shape.baseline }),
   z.object({ kind: z.literal('set-mean-range'), meanRange: settingsSchema.shape.meanRange }),
+  z.object({ kind: z.literal('set-uncertainty'), uncertainty: uncertaintySchema }),
   z.object({ kind: z.literal('set-rate-constants'), table: z.nullable(rateConstantTableSchema) }),
 ])
 export type StudyChange = DeepReadonly<z.infer<typeof studyChangeSchema>>
@@ -60,6 +69,8 @@ export function labelOfChange(document: StudyDocument, change: StudyChange): str
       return 'baseline'
     case 'set-mean-range':
       return 'range of the mean'
+    case 'set-uncertainty':
+      return 'stated uncertainties'
     case 'set-rate-constants':
       return 'table of rate constants'
   }
@@ -117,6 +128,8 @@ export function applyChange(document: StudyDocument, change: StudyChange): Study
       return set({ baseline: change.baseline })
     case 'set-mean-range':
       return set({ meanRange: change.meanRange })
+    case 'set-uncertainty':
+      return { ...document, uncertainty: change.uncertainty }
     case 'set-rate-constants':
       return { ...document, name: nameWithTable(document, change.table), rateConstants: change.table }
   }

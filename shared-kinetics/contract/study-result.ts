@@ -5,7 +5,10 @@ export type { NominalSource, RunInfo, SignalInfo, Window } from '../series/run.t
 export type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
 export type { AnalysisSettings, BaselineKind } from '../tasks/study-input.ts'
 export type {
+  BudgetEntry,
+  IntervalResult,
   KissingerResult,
+  LackOfFitResult,
   LineResult,
   Maybe,
   MeanEnergy,
@@ -13,7 +16,11 @@ export type {
   ProfileResult,
   RunResult,
   StudyResult,
+  UncertaintyProfile,
+  UncertaintyResult,
 } from '../tasks/study-result.ts'
+export type { IntervalKind } from '../isoconversional/result.ts'
+export type { UncertaintySettings, UncertaintySource } from '../uncertainty/measured-sources.ts'
 export type { RateConstantNote, RateConstantRow, RateConstantTable, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 export type {
   ArrheniusResult,

@@ -2,11 +2,21 @@ import { describe, expect, it } from 'vitest'
 import { evenTimes, firstOrder, durationOf, ramp, reducedTime, runOf, temperatureOf } from '../check-values/simulated-run.ts'
 import { Cancelled } from '../errors.ts'
 import { randomStream } from '../numerics/random.ts'
+import type { UncertaintySettings } from '../uncertainty/measured-sources.ts'
+import { drawShare, intervalsOfDraws } from './draw-uncertainty.ts'
 import { estimateUncertainty } from './estimate-uncertainty.ts'
 import { evaluateStudy } from './evaluate-study.ts'
 import type { EvaluationCache } from './memo.ts'
 import type { StudyInput } from './study-input.ts'
 
+const withSeed = (seed: number): UncertaintySettings => ({
+  temperatureCommon_K: 0.5,
+  temperatureRun_K: 0.5,
+  lag_s: 1,
+  statedHeatingRate_share: 0.02,
+  draws: 400,
+  seed,
+})
 const context = { checkCancelled: () => undefined, progress: () => undefined }
 const step = { Ea_J_per_mol: 150e3, A_per_s: 1e12 }
 const levels = [0.1, 0.3, 0.5, 0.7, 0.9]
@@ -42,12 +52,12 @@ describe('the uncertainty of a study', () => {
   it('names jackknife and bootstrap for each method, pointwise and approximate, at every level that has an Ea', () => {
     const { study, columns } = studyOf([1, 2, 5, 10, 20])
     const evaluated = evaluateStudy(study, columns, context)
-    const { profiles, seed } = estimateUncertainty(study, columns, { seed: 4 }, context)
+    const { profiles, seed } = estimateUncertainty(study, columns, withSeed(4), context).result
     expect(seed).toBe(4)
     expect(profiles.map((profile) => profile.method)).toEqual(evaluated.profiles.map((profile) => profile.method))
     profiles.forEach(({ intervals, method }, m) => {
-      expect(intervals.map((interval) => interval.kind)).toEqual(['jackknife', 'bootstrap'])
-      for (const interval of intervals) {
+      expect(intervals.map((interval) => interval.kind)).toEqual(['jackknife', 'bootstrap', 'combined'])
+      for (const interval of intervals.slice(0, 2)) {
         expect(interval).toMatchObject({ level: 0.95, pointwise: true, approximate: true })
         expect(interval.note).toContain('Pointwise')
         levels.forEach((_, i) => {
@@ -69,20 +79,21 @@ describe('the uncertainty of a study', () => {
     const cache: EvaluationCache = new Map()
     evaluateStudy(study, columns, context, cache)
     const known = new Set(cache.keys())
-    const fromCache = estimateUncertainty(study, columns, { seed: 1 }, context, cache)
+    const fromCache = estimateUncertainty(study, columns, withSeed(1), context, cache)
     expect(new Set(cache.keys())).toEqual(known)
-    expect(fromCache).toEqual(estimateUncertainty(study, columns, { seed: 1 }, context))
+    expect(fromCache).toEqual(estimateUncertainty(study, columns, withSeed(1), context))
   })
 
-  it('has no such interval for three runs', () => {
+  it('resamples no three runs', () => {
     const { study, columns } = studyOf([1, 5, 20])
-    for (const { intervals } of estimateUncertainty(study, columns, { seed: 1 }, context).profiles) expect(intervals).toEqual([])
+    for (const { intervals } of estimateUncertainty(study, columns, withSeed(1), context).result.profiles)
+      expect(intervals.map((interval) => interval.kind)).toEqual(['combined'])
   })
 
   it('draws resamples of seven runs by the seed', () => {
     const { study, columns } = studyOf([1, 2, 3, 5, 10, 15, 20])
     const one = { ...study, settings: { ...study.settings, methods: ['starink' as const], levels: [0.5] } }
-    const bootstrapWith = (seed: number) => estimateUncertainty(one, columns, { seed }, context).profiles[0]?.intervals[1]
+    const bootstrapWith = (seed: number) => estimateUncertainty(one, columns, withSeed(seed), context).result.profiles[0]?.intervals[1]
     expect(bootstrapWith(1)).toEqual(bootstrapWith(1))
     expect(bootstrapWith(1)?.standardUncertainty_kJ_per_mol).not.toEqual(bootstrapWith(2)?.standardUncertainty_kJ_per_mol)
     expect(bootstrapWith(1)?.note).toContain('drawn with seed 1')
@@ -99,7 +110,86 @@ describe('the uncertainty of a study', () => {
       },
       progress: () => undefined,
     }
-    expect(() => estimateUncertainty(study, columns, { seed: 1 }, stopping, cache)).toThrow(Cancelled)
+    expect(() => estimateUncertainty(study, columns, withSeed(1), stopping, cache)).toThrow(Cancelled)
+  })
+})
+
+describe('measured sources', () => {
+  it('stand in a budget, and the draws spread as wide as it says together', () => {
+    const { study, columns } = studyOf([1, 2, 5, 10, 20])
+    const { result, order } = estimateUncertainty(study, columns, withSeed(1), context)
+    const shares = [
+      drawShare({ ...order, range: { seed: 1, from: 0, to: 1000 } }, context),
+      drawShare({ ...order, range: { seed: 1, from: 1000, to: 2000 } }, context),
+    ]
+    const intervals = intervalsOfDraws(order, shares, 1)
+    for (const { method, budget } of result.profiles) {
+      // Mass has no baseline to choose.
+      expect(budget.map((entry) => entry.source)).toEqual([
+        'temperature-common',
+        'temperature-run',
+        'temperature-lag',
+        'heating-rate',
+        'signal-noise',
+      ])
+      const interval = intervals.get(method)
+      expect(interval?.note).toContain('2000 draws with seed 1')
+      levels.forEach((_, i) => {
+        const together = Math.hypot(...budget.map((entry) => entry.standardUncertainty_kJ_per_mol[i] ?? Number.NaN))
+        expect((interval?.standardUncertainty_kJ_per_mol[i] ?? 0) / together, `${method} at ${levels[i]}`).toBeCloseTo(1, 1)
+      })
+    }
+  })
+
+  it('take in what another baseline under a heat flow would do', () => {
+    const runs = [2, 5, 10, 20].map((rate, i) => {
+      const programme = ramp(400, rate, 700)
+      const time = evenTimes(durationOf(programme), 3000)
+      const alpha = reducedTime(step, programme, time).map(firstOrder)
+      const drift = time.map((t) => 1e-5 * (1 + (0.4 * t) / durationOf(programme)))
+      const heatFlow = alpha.map(
+        (value, k) => ((value - (alpha[k - 1] ?? value)) * 2) / ((time[1] ?? 1) - (time[0] ?? 0)) + (drift[k] ?? 0) * (1 + 3 * value),
+      )
+      return runOf(`h${i}`, {
+        time_s: time,
+        temperature_K: time.map((t) => temperatureOf(programme, t)),
+        signals: [{ quantity: 'heat-flow', unit: 'W', values: heatFlow }],
+      })
+    })
+    const study: StudyInput = {
+      runs: runs.map((run) => run.info),
+      settings: {
+        signal: null,
+        levels,
+        methods: ['friedman', 'starink'],
+        window: null,
+        baseline: 'area-proportional',
+        meanRange: [0.1, 0.9],
+      },
+    }
+    const columns = new Map(runs.map((run) => [run.info.columnsKey, run.columns]))
+    const { result } = estimateUncertainty(study, columns, withSeed(1), context)
+    for (const { budget } of result.profiles) {
+      const entry = budget.find(({ source }) => source === 'baseline')
+      expect(entry?.shownByScatter).toBe(false)
+      for (const u of entry?.standardUncertainty_kJ_per_mol ?? [null]) {
+        expect(u).toBeGreaterThan(0)
+        expect(u).toBeLessThan(30)
+      }
+    }
+  })
+
+  it('are combined with the scatter, which they can only widen', () => {
+    const { study, columns } = studyOf([1, 2, 5, 10, 20])
+    const evaluated = evaluateStudy(study, columns, context)
+    estimateUncertainty(study, columns, withSeed(1), context).result.profiles.forEach(({ intervals }, m) => {
+      const combined = intervals.find((interval) => interval.kind === 'combined')
+      levels.forEach((_, i) => {
+        expect(combined?.standardUncertainty_kJ_per_mol[i]).toBeGreaterThan(
+          evaluated.profiles[m]?.standardError_kJ_per_mol[i] ?? Number.NaN,
+        )
+      })
+    })
   })
 })
 

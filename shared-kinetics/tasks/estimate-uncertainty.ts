@@ -1,23 +1,32 @@
 import type { IsoconversionalResult, TaskContext } from '../isoconversional/result.ts'
 import type { RunColumns } from '../series/run.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
+import { budgetOf, type Budget } from '../uncertainty/budget.ts'
 import { bootstrap } from '../uncertainty/bootstrap.ts'
+import { combinedInterval } from '../uncertainty/combined-interval.ts'
+import { energyModel, type EnergyModel } from '../uncertainty/energy-model.ts'
 import { deleteOne, jackknife } from '../uncertainty/jackknife.ts'
+import type { UncertaintySettings } from '../uncertainty/measured-sources.ts'
 import { resampledEnergies } from '../uncertainty/resampled-energies.ts'
 import { resamplesOf, type ResampledInterval, type Resamples } from '../uncertainty/resamples.ts'
+import { budgetEntries } from './budget-entries.ts'
+import type { DrawOrder } from './draw-uncertainty.ts'
 import { intervalResult, type IntervalColumns } from './interval-result.ts'
 import type { EvaluationCache } from './memo.ts'
+import { measuredSourcesOf } from './measured-sources-of.ts'
 import { seriesOfStudy } from './series-of-study.ts'
 import type { StudyInput } from './study-input.ts'
 import type { IntervalResult, UncertaintyProfile, UncertaintyResult } from './study-result.ts'
 
-export interface UncertaintyOptions {
-  /** Of everything drawn at random; whole, not negative. */
-  readonly seed: number
+/** What resampling and propagation say, and what the draws of measured sources are to be made from (`drawShare`, `intervalsOfDraws`). */
+export interface UncertaintyEstimate {
+  readonly result: UncertaintyResult
+  readonly order: DrawOrder
 }
 
 /**
- * What takes longer than an evaluation: intervals by resampling the runs, for each method of the study.
+ * What takes longer than an evaluation: for each method of the study intervals by resampling the runs, the budget of measured sources, and the regression combined with
+ * those that its scatter cannot show. A method without an interval of its own (two programmes) has none of them.
  *
  * Pure, and the same for the same seed. What `evaluateStudy` left in `cache` is not worked out again.
  *
@@ -27,18 +36,35 @@ export interface UncertaintyOptions {
 export function estimateUncertainty(
   study: StudyInput,
   columns: ReadonlyMap<string, RunColumns | undefined>,
-  { seed }: UncertaintyOptions,
+  settings: UncertaintySettings,
   context: TaskContext,
   cache: EvaluationCache = new Map(),
-): UncertaintyResult {
-  const { series, chosen, resultOf } = seriesOfStudy(study, columns, context, cache)
+): UncertaintyEstimate {
+  const { runs, series, chosen, resultOf } = seriesOfStudy(study, columns, context, cache)
+  const { draws, seed, ...stated } = settings
+  const sources = measuredSourcesOf(runs, study.settings, stated, columns, context)
+  const models: EnergyModel[] = []
   const profiles = chosen.map((info, done): UncertaintyProfile => {
     context.progress(done, chosen.length)
-    return { method: info.id, intervals: intervalsByResampling(series, resultOf(info), seed, context), budget: [] }
+    const result = resultOf(info)
+    const resampled = intervalsByResampling(series, result, seed, context)
+    if (result.Ea.every(Number.isNaN)) return { method: info.id, intervals: resampled, budget: [] }
+    const model = energyModel(series, result)
+    models.push(model)
+    const budget = budgetOf(model, sources)
+    const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget)] : [])]
+    return { method: info.id, intervals, budget: budgetEntries(budget, sources) }
   })
   context.progress(chosen.length, chosen.length)
-  return { levels: study.settings.levels, seed, draws: 0, profiles }
+  return { result: { levels: study.settings.levels, seed, draws, profiles }, order: { models, sources } }
 }
+
+const combined = (result: IsoconversionalResult, budget: Budget): IntervalResult =>
+  intervalResult(
+    'combined',
+    combinedInterval(result, budget),
+    "The regression's standard error with what no scatter shows: common error of temperature, lag and choice of baseline, as stated; Student's t with effective degrees of freedom. Pointwise.",
+  )
 
 /** Jackknife and bootstrap over the runs, each where there are runs enough for it. */
 export function intervalsByResampling(

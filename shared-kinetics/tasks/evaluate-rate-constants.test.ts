@@ -142,8 +142,8 @@ describe('the Arrhenius figure', () => {
     const W8 = tableOf('W8', { predictAt_K: [400] })
     const figure = arrheniusFigure(evaluateRateConstants({ ...W8, rows: W8.rows.map((row, i) => ({ ...row, use: i !== 1 })) }))
     expect(figure.marks.map((mark) => mark.name)).toEqual([
-      '95 % band of a new measurement',
-      '95 % band of the line',
+      '95 % band, new measurement',
+      '95 % band, line',
       'Arrhenius line',
       'Not used',
       'Rate constants',

@@ -1,3 +1,4 @@
+import { drawShare, intervalsOfDraws } from './draw-uncertainty.ts'
 import { estimateUncertainty } from './estimate-uncertainty.ts'
 import { evaluateRateConstants } from './evaluate-rate-constants.ts'
 import { evaluateStudy } from './evaluate-study.ts'
@@ -7,4 +8,6 @@ export const taskMap = {
   'evaluate-study': evaluateStudy,
   'evaluate-rate-constants': evaluateRateConstants,
   'estimate-uncertainty': estimateUncertainty,
+  'draw-energies': drawShare,
+  'intervals-of-draws': intervalsOfDraws,
 } as const

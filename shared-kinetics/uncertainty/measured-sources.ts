@@ -23,15 +23,11 @@ export interface StatedUncertainties {
   readonly statedHeatingRate_share: number
 }
 
-/**
- * Where nobody stated anything: 0.5 K between runs; 0.5 K common to all and a lag of 1 s, which are common practice for a calibrated instrument and small samples and
- * stand in no standard; 2 % for a nominal heating rate, likewise. To be replaced by what the analyst's own calibration shows.
- */
-export const defaultUncertainties: StatedUncertainties = {
-  temperatureCommon_K: 0.5,
-  temperatureRun_K: 0.5,
-  lag_s: 1,
-  statedHeatingRate_share: 0.02,
+/** What is stated, and how many draws of which seed are made of it. */
+export interface UncertaintySettings extends StatedUncertainties {
+  readonly draws: number
+  /** Of everything drawn at random, resampled runs included; whole, not negative. */
+  readonly seed: number
 }
 
 /** Everything that a series' measured inputs are uncertain by: plain data that crosses to a worker. Tables hold one entry a run at each level: [level · runs + run]. */

@@ -3,8 +3,8 @@ import type { HandlerContext, HandlerTable } from './handler-table.ts'
 import { tableOf } from './rate-constants.ts'
 
 /** Results of the study, and files made from them. */
-export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 'study.evaluate' | 'results.export'> {
-  const { workspace, evaluation, parts, version } = context
+export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 'study.evaluate' | 'study.uncertainty' | 'results.export'> {
+  const { workspace, evaluation, uncertainty, parts, version } = context
   const checkRevision = (seen: number): void => {
     const current = workspace.session.revision
     if (seen === current) return
@@ -13,9 +13,16 @@ export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 's
   return {
     'study.evaluate': async ({ revision }) => {
       checkRevision(revision)
+      uncertainty.cancelUnless(revision)
       return { revision, result: await evaluation.of(revision) }
     },
-    'results.export': async ({ revision, format, tableStyle, of }) => {
+    'study.uncertainty': async ({ revision }) => {
+      checkRevision(revision)
+      // First what it rests on: the worker then has every step of it at hand.
+      await evaluation.of(revision)
+      return { revision, result: await uncertainty.of(revision) }
+    },
+    'results.export': async ({ revision, format, tableStyle, of, withUncertainty = false }) => {
       checkRevision(revision)
       const { document } = workspace.session
       const isTable = of === undefined ? document.runs.length === 0 && document.rateConstants !== null : of === 'rate-constants'
@@ -24,7 +31,8 @@ export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 's
         return { files: parts.exportRateConstants({ document, result, program: { name: 'rampfold', version } }, format, tableStyle) }
       }
       const result = await evaluation.of(revision)
-      return { files: parts.exportResults({ document, result, program: { name: 'rampfold', version } }, format, tableStyle) }
+      const apart = withUncertainty ? { uncertainty: await uncertainty.of(revision) } : {}
+      return { files: parts.exportResults({ document, result, ...apart, program: { name: 'rampfold', version } }, format, tableStyle) }
     },
   }
 }

@@ -6,6 +6,7 @@ import type { ExportFormat } from '../../export/export-results.ts'
 import type { EventHub } from '../event-hub.ts'
 import type { Evaluation } from '../evaluation.ts'
 import type { TaskPool } from '../host-tasks.ts'
+import type { Uncertainty } from '../uncertainty.ts'
 import type { Uploads } from '../uploads.ts'
 import type { Workspace } from '../workspace.ts'
 
@@ -32,6 +33,7 @@ export interface HandlerContext {
   readonly uploads: Uploads
   readonly events: EventHub
   readonly evaluation: Evaluation
+  readonly uncertainty: Uncertainty
   readonly imports: RunningImports
   readonly parts: ProgramParts
   readonly version: string

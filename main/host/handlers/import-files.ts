@@ -72,6 +72,7 @@ async function openCopies(
   try {
     const copy = await context.pool.run('open-saved-copy', { bytes: first.bytes }, { signal })
     context.evaluation.cancel()
+    context.uncertainty.cancel()
     // An id of its own: the study it was copied from may have moved on, and must not be overwritten.
     await context.workspace.replace({ ...copy, document: { ...copy.document, id: context.randomId() }, folder: null })
     return { refused: refusedFiles, openedStudy: true }

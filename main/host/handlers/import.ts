@@ -7,6 +7,7 @@ export function importHandlers(context: HandlerContext): Pick<HandlerTable, 'run
     'runs.import': async ({ uploadIds, noteLeftOut }) => importFiles(context, context.uploads.take(uploadIds), noteLeftOut),
     'work.cancel': ({ work }) => {
       if (work === 'evaluate') context.evaluation.cancel()
+      if (work === 'uncertainty') context.uncertainty.cancel()
       else for (const running of context.imports) running.abort()
       return {}
     },

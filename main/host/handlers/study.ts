@@ -24,6 +24,7 @@ export function studyHandlers(context: HandlerContext): Pick<HandlerTable, Study
   const { workspace, pool, parts, randomId, version, shell } = context
   const stopWork = (): void => {
     context.evaluation.cancel()
+    context.uncertainty.cancel()
     for (const running of context.imports) running.abort()
   }
   return {

@@ -4,6 +4,7 @@ import { runInfoOf } from '../../../shared-kinetics/check-values/run-info-of.ts'
 import type { RunColumns, RunInfo } from '../../../shared-kinetics/series/run.ts'
 import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts'
 import { evaluateRateConstants } from '../../../shared-kinetics/tasks/evaluate-rate-constants.ts'
+import type { MeasuredSources } from '../../../shared-kinetics/uncertainty/measured-sources.ts'
 import { column } from '../../../shared-kinetics/units/quantity.ts'
 import { openSavedCopy, packSavedCopy } from '../../study/saved-copy.ts'
 import { createHost, type Host, type HostOptions } from '../create-host.ts'
@@ -46,6 +47,18 @@ const sampleInfo = (fileName: string, bytes: Uint8Array, rows: number): RunInfo 
     initialMass_kg: 1e-5,
   })
 
+const noSources: MeasuredSources = {
+  stated: { temperatureCommon_K: 0, temperatureRun_K: 0, lag_s: 0, statedHeatingRate_share: 0 },
+  heatingRate_share: new Float64Array(0),
+  noise: {
+    time_s: column(new Float64Array(0), 's'),
+    lnReactionRate: new Float64Array(0),
+    lnReactionRateSlope_per_s: new Float64Array(0),
+    correlationWithBefore: new Float64Array(0),
+  },
+  baseline: null,
+}
+
 const noNumbers: StudyResult = {
   levels: [0.5],
   signal: null,
@@ -74,6 +87,12 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
       }
       return { kind: 'runs', runs: [sampleRun(fileName, Number(rate), new Uint8Array(bytes))] }
     },
+    'estimate-uncertainty': ({ study, uncertainty: { seed, draws } }) => ({
+      result: { levels: study.settings.levels, seed, draws, profiles: [] },
+      order: { models: [], sources: noSources },
+    }),
+    'draw-energies': () => [],
+    'intervals-of-draws': () => new Map(),
     'evaluate-study': async ({ study, columns }, context) => {
       counts.evaluations += 1
       for (let i = 0; study.runs.some((run) => run.label === 'slow'); i += 1) {

@@ -1,0 +1,42 @@
+import type { MethodId, TaskContext } from '../isoconversional/result.ts'
+import { drawInterval } from '../uncertainty/draw-interval.ts'
+import type { EnergyModel } from '../uncertainty/energy-model.ts'
+import type { MeasuredSources } from '../uncertainty/measured-sources.ts'
+import { drawEnergies, type DrawRange } from '../uncertainty/monte-carlo.ts'
+import { intervalResult } from './interval-result.ts'
+import type { IntervalResult } from './study-result.ts'
+
+/** What draws are made from: small plain data, which any worker can be given. */
+export interface DrawOrder {
+  readonly models: readonly EnergyModel[]
+  readonly sources: MeasuredSources
+}
+
+/** A share of the draws; shares put together are the same numbers as one whole. */
+export const drawShare = ({ models, sources, range }: DrawOrder & { readonly range: DrawRange }, context: TaskContext): Float64Array[] =>
+  drawEnergies(models, sources, range, context)
+
+/** The interval of each method from all shares, in the order of the shares. */
+export function intervalsOfDraws(
+  { models, sources }: DrawOrder,
+  shares: readonly (readonly Float64Array[])[],
+  seed: number,
+): ReadonlyMap<MethodId, IntervalResult> {
+  return new Map(
+    models.map((model, m) => {
+      const parts = shares.map((share) => share[m] ?? new Float64Array(0))
+      const all = new Float64Array(parts.reduce((sum, part) => sum + part.length, 0))
+      let place = 0
+      for (const part of parts) {
+        all.set(part, place)
+        place += part.length
+      }
+      const { levels } = model
+      return [model.method, intervalResult('measured-sources', drawInterval(all, levels), noteOnDraws(sources, all.length / levels, seed))]
+    }),
+  )
+}
+
+const noteOnDraws = ({ baseline }: MeasuredSources, draws: number, seed: number): string =>
+  `${draws} draws with seed ${seed} of the errors of temperature, heating rate and signal${baseline === null ? '' : ', and of the choice of baseline'}; ` +
+  '2.5 and 97.5 % points. Pointwise. Holds what is stated about the measurement, and nothing of the scatter that the runs show.'
