@@ -15,6 +15,7 @@ const noteCodeSchema = z.enum(
     'unit-from-values': true,
     'heading-missing': true,
     'heading-read-as': true,
+    'model-assumed': true,
   }),
 )
 

@@ -17,13 +17,13 @@ export function arrheniusFigure(result: RateConstantsResult): Figure {
     const [lower, upper] = [numbers(band.lnLineLower95), numbers(band.lnLineUpper95)]
     marks.push({
       kind: 'band',
-      name: '95 % band of a new measurement',
+      name: '95 % band, new measurement',
       tone: { kind: 'method', index: 1 },
       x,
       lower: newLower,
       upper: newUpper,
     })
-    marks.push({ kind: 'band', name: '95 % band of the line', tone: { kind: 'method', index: 0 }, x, lower, upper })
+    marks.push({ kind: 'band', name: '95 % band, line', tone: { kind: 'method', index: 0 }, x, lower, upper })
   }
   if (x.length > 0) marks.push({ kind: 'line', name: 'Arrhenius line', tone: { kind: 'ink' }, x, y: numbers(band.lnK) })
   const [used, leftOut] = [rows.filter((row) => row.use), rows.filter((row) => !row.use)]

@@ -47,6 +47,7 @@ export const findingCodes = [
   'energy-implausible',
   'rate-unit-missing',
   'heading-read-as',
+  'model-assumed',
 ] as const
 export type FindingCode = (typeof findingCodes)[number]
 

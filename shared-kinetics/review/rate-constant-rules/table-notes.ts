@@ -3,17 +3,26 @@ import type { Finding } from '../finding.ts'
 import { aboutTable, type RateConstantReview } from './rate-constant-review.ts'
 
 const titles: Readonly<Record<RateConstantNote['code'], string>> = {
-  'rows-set-aside': 'Rows set aside while reading',
+  'rows-set-aside': 'Rows set aside',
   'columns-set-aside': 'Columns set aside while reading',
   'unit-from-values': 'A unit told from the heading alone',
   'heading-missing': 'No row of headings',
   'heading-read-as': 'How a heading was read',
+  'model-assumed': 'Rate constants rest on a chosen model',
 }
 
 /** What was noticed while the table was read, and a unit of k that nobody stated. */
 export function tableNotes({ table, result }: RateConstantReview): Finding[] {
   const notes = table.notes.map((note) =>
-    aboutTable({ ...note, title: titles[note.code], basis: 'Nothing is guessed silently while a table is read', sources: [] }),
+    aboutTable({
+      ...note,
+      title: titles[note.code],
+      basis:
+        note.code === 'model-assumed'
+          ? 'A model is assumed where k is read from a run'
+          : 'Nothing is guessed silently while a table is read',
+      sources: note.code === 'model-assumed' ? ['ictac-2011'] : [],
+    }),
   )
   if (result.rateUnit !== '') return notes
   return [
