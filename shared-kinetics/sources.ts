@@ -82,6 +82,7 @@ export const sources = {
   'levenberg-1944': 'K. Levenberg, Q. Appl. Math. 2 (1944) 164 (cited from memory)',
   'marquardt-1963': 'D. W. Marquardt, J. Soc. Ind. Appl. Math. 11 (1963) 431 (cited from memory)',
   'more-1978': 'J. J. Moré, Lect. Notes Math. 630 (1978) 105 (Levenberg–Marquardt in a trust region; cited from memory)',
+  'anderson-1965': 'D. G. Anderson, J. Assoc. Comput. Mach. 12 (1965) 547 (mixing of successive iterates; cited from memory)',
   'bates-watts-1981':
     'D. M. Bates, D. G. Watts, Technometrics 23 (1981) 179 (relative offset as a criterion of convergence; cited from memory)',
   'golub-van-loan-1996': 'G. H. Golub, C. F. Van Loan, Matrix Computations (3rd ed., 1996), ch. 5 (QR; cited from memory)',

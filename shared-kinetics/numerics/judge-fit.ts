@@ -13,6 +13,8 @@ export interface JudgedEnd {
   readonly rounding: number
 }
 
+/** Length of an undamped step, in parts of the parameters' sizes, that leaves nothing to gain once it stops shrinking. */
+const settledLength = 1e-11
 /** Parts of the residuals that may be left along the model's surface at a minimum (Bates and Watts' relative offset). */
 const offsetTolerance = 1e-6
 /** Parts of a parameter's size that an undamped step may still be at a minimum. */
@@ -23,7 +25,7 @@ const effectTolerance = 1e-10
 const dependence = { differences: 1e-9, analytic: 1e-12 } as const
 
 /**
- * Takes undamped Gauss–Newton steps from the end of a descent for as long as they shrink, then says what the end is.
+ * Takes undamped Gauss–Newton steps from the end of a descent for as long as they shrink, keeps the point where they are shortest, and says what the end is.
  *
  * The sum of squares settles a minimum only to half the digits of double precision, the undamped step to nearly all of them. `converged` asks for all of: no
  * parameter without effect, columns of the Jacobian independent, residuals at right angles to the model's surface, an undamped step that moves no parameter, and a
@@ -40,26 +42,54 @@ export function settleAndJudge(problem: InnerProblem, start: DescentPoint, desce
 function settle(problem: InnerProblem, from: DescentPoint): { readonly end: DescentPoint; readonly linear: Linearisation } {
   let here = from
   let linear = linearise(problem, here, 'fine')
-  let lastLength = Number.POSITIVE_INFINITY
-  for (let k = 0; k < 30; k++) {
+  let best = { end: here, linear }
+  let bestLength = Number.POSITIVE_INFINITY
+  let sinceBest = 0
+  let last: { readonly point: Float64Array; readonly step: Float64Array } | null = null
+  for (let k = 0; k < 40; k++) {
     if (!linear.finite || linear.free.length === 0 || linear.independence < toleratedDependence(problem)) break
-    const step = undampedStep(linear)
     const sizes = problem.sizes(here.point)
-    const length = normOf(step.map((delta, k) => delta / at(sizes, linear.free[k] ?? 0)))
-    if (!(length < 0.9 * lastLength)) break
-    const point = Float64Array.from(here.point)
-    linear.free.forEach((j, k) => {
-      point[j] = Math.min(Math.max(at(point, j) + at(step, k), at(problem.lower, j)), at(problem.upper, j))
+    const step = new Float64Array(problem.n)
+    undampedStep(linear).forEach((delta, position) => {
+      step[linear.free[position] ?? 0] = delta
     })
+    const length = normOf(step.map((delta, j) => delta / at(sizes, j)))
+    if (length < 0.9 * bestLength) sinceBest = 0
+    else if (++sinceBest > (bestLength < settledLength ? 0 : 3)) break
+    if (length < bestLength) {
+      bestLength = length
+      best = { end: here, linear }
+    }
+    if (length < 2 * Number.EPSILON) break
+    const mixed = last === null ? step : mixedStep(here.point, step, last, sizes)
+    const point = here.point.map((x, j) => Math.min(Math.max(x + at(mixed, j), at(problem.lower, j)), at(problem.upper, j)))
     const next = descentPoint(problem, point)
     // Rounding of the sum of squares itself must not stop a step that the sum cannot see any more.
-    if (next === null || next.norm > here.norm * (1 + 1e-9) + roundingOf(problem, here, linear)) break
+    if (next === null || next.norm > best.end.norm * (1 + 1e-9) + roundingOf(problem, here, linear)) break
+    last = { point: here.point, step }
     here = next
     linear = linearise(problem, here, 'fine')
-    lastLength = length
-    if (length < 2 * Number.EPSILON) break
   }
-  return { end: here, linear }
+  return best
+}
+
+/**
+ * An undamped step mixed with the one before by Anderson's rule of depth one: s - γ(Δx + Δs), γ = s·Δs/Δs·Δs. Where the residuals are large and the model curved,
+ * undamped steps swing about the minimum and hardly shrink; the mixture takes the swing out.
+ *
+ * @source anderson-1965
+ */
+function mixedStep(
+  point: Float64Array,
+  step: Float64Array,
+  last: { readonly point: Float64Array; readonly step: Float64Array },
+  sizes: Float64Array,
+): Float64Array {
+  const change = step.map((delta, j) => delta - at(last.step, j))
+  const squared = change.reduce((sum, value, j) => sum + (value / at(sizes, j)) ** 2, 0)
+  if (!(squared > 0)) return step
+  const gamma = change.reduce((sum, value, j) => sum + (value * at(step, j)) / at(sizes, j) ** 2, 0) / squared
+  return step.map((delta, j) => delta - gamma * (at(point, j) - at(last.point, j) + at(change, j)))
 }
 
 function statusOf(
