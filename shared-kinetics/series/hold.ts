@@ -1,3 +1,4 @@
+import { orderStatistic } from '../numerics/order-statistic.ts'
 import type { RowRange } from './main-heating.ts'
 
 /** A hold keeps the temperature within a band of this width. */
@@ -5,9 +6,9 @@ export const holdBand_K = 3
 
 /** Whether the temperature keeps within 3 K from `first` to `last`, apart from the outermost 1 % of the samples on either side. */
 export function isHold(temperature_K: Float64Array, { first, last }: RowRange): boolean {
-  const sorted = temperature_K.slice(first, last + 1).sort()
-  const outermost = Math.floor(0.01 * sorted.length)
-  return (sorted[sorted.length - 1 - outermost] ?? 0) - (sorted[outermost] ?? 0) <= holdBand_K
+  const values = temperature_K.slice(first, last + 1)
+  const outermost = Math.floor(0.01 * values.length)
+  return !(orderStatistic(values, values.length - 1 - outermost) - orderStatistic(values, outermost) > holdBand_K)
 }
 
 /** First row from which on the temperature stays within the band around that of the hold (apart from 1 % of the samples); `last` + 1 where it never does. */
