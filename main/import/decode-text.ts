@@ -1,10 +1,9 @@
 import { isAscii, isUtf8 } from 'node:buffer'
-import iconv from 'iconv-lite'
 import type { EncodingWord } from '../../shared-kinetics/contract/import-options.ts'
 import type { ImportDecision } from '../../shared-kinetics/series/run.ts'
 import type { Refuse } from './import-refusal.ts'
 import { binaryRemedy } from './refuse-binary.ts'
-import type { TextBytes } from './text-lines.ts'
+import { fromUtf16, type TextBytes, textOf } from './text-bytes.ts'
 
 interface Encoding {
   readonly word: EncodingWord
@@ -29,7 +28,7 @@ export function decodeText(
     throw refuse(null, 'The file is not valid UTF-8.', 'State another “encoding”: windows-1252, utf-16le or utf-16be.')
   }
   const text = asBytes(body, encoding.word, refuse)
-  if (isBlank(text.bytes)) throw refuse(null, 'The file holds nothing but blanks.', 'Export the run again.')
+  if (isBlank(text)) throw refuse(null, 'The file holds nothing but blanks.', 'Export the run again.')
   return { text, decision: { step: 'encoding', value: encoding.word, reason: encoding.reason } }
 }
 
@@ -77,7 +76,7 @@ function asBytes(body: Buffer, word: EncodingWord, refuse: Refuse): TextBytes {
   if (word === 'utf-8' || (word === 'windows-1252' && isAscii(body))) return { bytes: body, encoding: 'utf-8' }
   if (word === 'windows-1252') return { bytes: body, encoding: word }
   try {
-    return { bytes: Buffer.from(iconv.decode(body, word, { stripBOM: false }), 'utf8'), encoding: 'utf-8' }
+    return fromUtf16(body, word === 'utf-16le' ? 'little' : 'big')
   } catch (error) {
     if (error instanceof Error && 'code' in error && error.code === 'ERR_STRING_TOO_LONG') {
       throw refuse(null, 'The file is longer than one text can be.', 'Export it in parts, or with a coarser time step.')
@@ -87,7 +86,7 @@ function asBytes(body: Buffer, word: EncodingWord, refuse: Refuse): TextBytes {
 }
 
 /** Nothing but blanks and line ends. */
-function isBlank(bytes: Buffer): boolean {
-  const first = bytes.findIndex((byte) => byte !== 32 && (byte < 9 || byte > 13))
-  return first < 0 || ((bytes[first] ?? 0) >= 0x80 && bytes.toString('utf8').trim() === '')
+function isBlank(text: TextBytes): boolean {
+  const first = text.bytes.find((byte) => byte !== 32 && (byte < 9 || byte > 13))
+  return first === undefined || (first >= 0x80 && textOf(text).trim() === '')
 }

@@ -1,5 +1,4 @@
 import { createHash } from 'node:crypto'
-import iconv from 'iconv-lite'
 import { rateConstantLimits, type RateConstantReadOptions } from '../../shared-kinetics/contract/rate-constant-schema.ts'
 import type { RateConstantNote, RateConstantSource, RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
@@ -10,6 +9,7 @@ import { cellReadings, linesOf, type CellReading } from './rate-constant-cells.t
 import { planRateConstantColumns } from './rate-constant-columns.ts'
 import { RateConstantQuestion, unitRemedy, type Ask } from './rate-constant-question.ts'
 import { readRateConstantRows } from './rate-constant-rows.ts'
+import { textOf } from './text-bytes.ts'
 
 export interface RateConstantText {
   readonly text: string
@@ -31,7 +31,7 @@ export function readRateConstantFile(name: string, bytes: Uint8Array, options: R
   }
   const { text } = decodeText(bytes, options.encoding, refuse)
   const sha256 = createHash('sha256').update(bytes).digest('hex')
-  return readRateConstantText({ text: iconv.decode(text.bytes, text.encoding), name, source: 'file', sha256 }, options)
+  return readRateConstantText({ text: textOf(text), name, source: 'file', sha256 }, options)
 }
 
 /**

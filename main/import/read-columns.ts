@@ -21,7 +21,7 @@ export interface RawTable {
   readonly filled: Uint32Array
 }
 
-const linesBetweenChecks = 8192
+const linesBetweenChecks = 1024
 
 /**
  * Reads the rows of numbers straight from the bytes into columns: plain lines all in one go, any other line cell by cell with more care.

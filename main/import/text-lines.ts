@@ -1,13 +1,7 @@
-import iconv from 'iconv-lite'
 import type { ImportContext } from './import-context.ts'
 import type { Refuse } from './import-refusal.ts'
 import { binaryRemedy } from './refuse-binary.ts'
-
-/** A text as bytes. In both encodings a byte below 0x80 is the ASCII character and nothing else, so that numbers are read from the bytes. */
-export interface TextBytes {
-  readonly bytes: Buffer
-  readonly encoding: 'utf-8' | 'windows-1252'
-}
+import { type TextBytes, textOf } from './text-bytes.ts'
 
 /** A text and where its lines begin and end; CRLF, LF and CR may be mixed. Line i (from 0) is line i + 1 to a person. */
 export interface TextLines extends TextBytes {
@@ -85,11 +79,7 @@ function grown(array: Uint32Array<ArrayBuffer>): Uint32Array<ArrayBuffer> {
 export const lineStart = (lines: TextLines, index: number): number => lines.starts[index] ?? lines.bytes.length
 export const lineEnd = (lines: TextLines, index: number): number => lines.ends[index] ?? lines.bytes.length
 
-export function lineText(lines: TextLines, index: number): string {
-  const line = lines.bytes.subarray(lineStart(lines, index), lineEnd(lines, index))
-  // Node 20's own decoder reads 0x80-0x9F of Windows-1252 as control characters; iconv-lite reads them right.
-  return lines.encoding === 'utf-8' ? line.toString('utf8') : iconv.decode(line, lines.encoding, { stripBOM: false })
-}
+export const lineText = (lines: TextLines, index: number): string => textOf(lines, lineStart(lines, index), lineEnd(lines, index))
 
 /** Nothing but blanks in the line. */
 export function isBlankLine(lines: TextLines, index: number): boolean {
