@@ -63,7 +63,14 @@ activation.csv.txt beside it) and activation.svg into DIR; a short table appears
                               (default: the first of these that every run has)
   --window SPEC               for all runs: 430K:870K, 156C:500C, or 10min:90min for holds
   --baseline WORD             under heat flow: ${baselineKinds.join(', ')}
-  --seed N                    start of random numbers where a method resamples; the methods listed above do not
+  --uncertainty               also intervals by resampling the runs (jackknife, bootstrap) and from measured
+                              sources (draws, with a budget); for these, standard uncertainties:
+  --temperature-common T      of all temperatures alike, 0.5K where nothing is stated
+  --temperature-run T         of each run's temperatures, 0.5K
+  --lag TIME                  of the time the sample lags behind the thermometer, 1s
+  --stated-heating-rate P     of a heating rate that was stated and not measured, 2%
+  --draws N                   2000
+  --seed N                    start of random numbers, 1
   --decimal WORD              of activation.csv: point (default), comma
   --separator WORD            of activation.csv: comma (default), semicolon (default with decimal comma), tab
   --strict                    exit code 3 when a finding of severity stop stands (the files are written)
@@ -73,16 +80,21 @@ activation.csv.txt beside it) and activation.svg into DIR; a short table appears
 ${importHelp}`
 
 export const rateConstantsHelp = `rampfold rate-constants TABLE --out DIR [options]
+rampfold rate-constants PATH… --model CODE --out DIR [options]
 
 Works out Ea and A from rate constants against temperature, with intervals, predicted rate constants, factor per 10 K
 and transition-state parameters, and writes rate-constants.json, rate-constants.csv (with rate-constants.csv.txt beside
 it) and rate-constants.svg into DIR; a short table appears on the screen.
 
 TABLE is a text file with a heading for each column: T (°C), T (K) or 1000/T (1/K); k (1/s), k (min-1), k (L/(mol s)),
-ln k or log10 k; and, where there are any, u(k) for a standard uncertainty and a label.
+ln k or log10 k; and, where there are any, u(k) for a standard uncertainty and a label. With --model the paths are
+isothermal runs, and k of each is read from g(alpha) = k t under that model.
 
   --out DIR                   where the files go; those of these names are replaced, others left alone
   --at LIST                   temperatures at which k is predicted, with their unit: "25C,310K"
+  --model CODE                of isothermal runs: F1, A2, R3, D3, …
+  --zero-in-time WORD         with --model: free (default, fitted), fixed (the start of each hold)
+  --range SPEC                with --model: conversions used, 0.1:0.9 (default)
   --temperature-unit WORD     K, C, F: for a table that does not say
   --rate-unit UNIT            of k, for a table that does not say: 1/s, 1/min, 1/h, "L/(mol s)", …
   --encoding WORD             ${encodingWords.join(', ')}

@@ -1,4 +1,4 @@
-import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises'
+import { mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import Papa from 'papaparse'
@@ -131,6 +131,10 @@ describe('rampfold rate-constants', () => {
   it.each([
     [['rate-constants'], 2, /needs the file/],
     [['rate-constants', 'a', 'b', '--out', 'o'], 2, /takes one table/],
+    [['rate-constants', 'a', '--out', 'o', '--model', 'Z9'], 2, /--model: Z9 is not known/],
+    [['rate-constants', 'a', '--out', 'o', '--model', 'F1', '--rate-unit', '1/s'], 2, /--rate-unit is for a table/],
+    [['rate-constants', 'a', '--out', 'o', '--range', '0.1:0.9'], 2, /--range is for isothermal runs/],
+    [['rate-constants', 'a', '--out', 'o', '--model', 'F1', '--range', '0.9:0.1'], 2, /--range: write two conversions/],
     [['rate-constants', 'a', '--out', 'o', '--at', '25'], 2, /"25" has no unit/],
     [['rate-constants', 'a', '--out', 'o', '--at', '-300C'], 2, /--at=VALUE/],
     [['rate-constants', 'a', '--out', 'o', '--at=-300C'], 2, /below absolute zero/],
@@ -142,6 +146,36 @@ describe('rampfold rate-constants', () => {
     const outcome = await rampfold(...words)
     expect(outcome.stderr).toMatch(message)
     expect(outcome.code).toBe(code)
+  })
+
+  it('isothermal runs under a chosen model become rate constants', async () => {
+    // Exact first-order holds: alpha = 1 - exp(-k t), Ea 100 kJ/mol, A 1e11 1/s.
+    const folder = join(place, 'holds')
+    await mkdir(folder)
+    for (const T of [370, 380, 390, 400]) {
+      const k = 1e11 * Math.exp(-100e3 / (8.31446261815324 * T))
+      const rows = Array.from({ length: 400 }, (_, i) => {
+        const t = (i * 6) / k / 400
+        return `${t.toPrecision(12)},${T.toFixed(2)},${(10 * (1 - 0.5 * (1 - Math.exp(-k * t)))).toFixed(9)}`
+      })
+      await writeFile(join(folder, `hold ${T} K.csv`), `time (s),temperature (K),mass (mg)\n${rows.join('\n')}\n`)
+    }
+    const out = join(place, 'from-holds')
+    const { code, stderr } = await rampfold('rate-constants', folder, '--model', 'f1', '--out', out, '--quiet')
+    expect([code, stderr]).toEqual([0, ''])
+    const json = await jsonOf(out)
+    expect(json).toMatchObject({ rateUnit: '1/s', source: { kind: 'isothermal-runs', name: 'First order (F1)' } })
+    expect((json.line['Ea_kJ_per_mol'] ?? 0) / 100).toBeCloseTo(1, 3)
+    expect(json.line['lnA_per_s'] ?? 0).toBeCloseTo(Math.log(1e11), 1)
+    expect(JSON.stringify(json['findings'])).toMatch(/model-assumed/)
+    const noHolds = join(place, 'no-holds.csv')
+    await writeFile(
+      noHolds,
+      `time (s),temperature (K),mass (mg)\n${Array.from({ length: 200 }, (_, i) => `${i},${300 + i},${10 - 5 / (1 + Math.exp((100 - i) / 8))}`).join('\n')}`,
+    )
+    const refused = await rampfold('rate-constants', noHolds, '--model', 'F1', '--out', out)
+    expect(refused.code).toBe(1)
+    expect(refused.stderr).toMatch(/None of its runs is isothermal/)
   })
 
   it('a row that cannot be used is named with file and line', async () => {

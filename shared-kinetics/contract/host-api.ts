@@ -3,7 +3,7 @@ import type { RateConstantTable } from '../rate-constants/rate-constant-table.ts
 import type { RateConstantsResult } from '../tasks/rate-constants-result.ts'
 import type { StudyResult, UncertaintyResult } from '../tasks/study-result.ts'
 import type { DeepReadonly } from './deep-readonly.ts'
-import { rateConstantLimits, rateConstantReadOptionsSchema } from './rate-constant-schema.ts'
+import { fromHoldsSchema, rateConstantLimits, rateConstantReadOptionsSchema } from './rate-constant-schema.ts'
 import { studyChangeSchema } from './study-change.ts'
 import type { StudyDocument } from './study-document.ts'
 
@@ -56,6 +56,8 @@ export const requestSchemas = {
     options: z.optional(rateConstantReadOptionsSchema),
   }),
   'rate-constants.read-file': z.strictObject({ uploadId: id, options: z.optional(rateConstantReadOptionsSchema) }),
+  /** Rate constants of the isothermal runs under a chosen model, as a table; nothing is changed. */
+  'rate-constants.from-holds': fromHoldsSchema,
   'rate-constants.evaluate': z.strictObject({ revision: z.int() }),
   /** `of`: where left out, the table of rate constants in a study without runs, else the runs. */
   'results.export': z.strictObject({
@@ -139,6 +141,7 @@ export interface RequestAnswers {
   'work.cancel': Record<string, never>
   'rate-constants.read-text': RateConstantsRead
   'rate-constants.read-file': RateConstantsRead
+  'rate-constants.from-holds': { readonly table: RateConstantTable }
   'rate-constants.evaluate': { readonly revision: number; readonly result: RateConstantsResult }
   'results.export': { readonly files: readonly FileOut[] }
 }

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini'
+import type { ReactionModelCode } from '../reaction-models/registry.ts'
 import type { RateConstantNote, RateConstantSource, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 import { decimalSignWords, delimiterWords, encodingWords } from './import-options.ts'
 
@@ -63,3 +64,39 @@ export const rateConstantReadOptionsSchema = z.strictObject({
   encoding: z.optional(z.enum(encodingWords)),
 })
 export type RateConstantReadOptions = z.infer<typeof rateConstantReadOptionsSchema>
+
+const modelSchema = z.enum(
+  namesOf<ReactionModelCode>({
+    'P2/3': true,
+    F0: true,
+    P2: true,
+    P3: true,
+    P4: true,
+    D1: true,
+    D2: true,
+    D3: true,
+    D4: true,
+    F1: true,
+    'F3/2': true,
+    F2: true,
+    F3: true,
+    'A3/2': true,
+    A2: true,
+    A3: true,
+    A4: true,
+    R2: true,
+    R3: true,
+    B1: true,
+    L2: true,
+  }),
+)
+
+const share = finite.check(z.gte(0), z.lte(1))
+
+/** How rate constants are made from the isothermal runs of a study: the model, whether the zero in time is fitted (so where left out), the range of conversion (0.1 to 0.9). */
+export const fromHoldsSchema = z.strictObject({
+  revision: z.int(),
+  model: modelSchema,
+  zeroInTime: z.optional(z.enum(['free', 'fixed'])),
+  range: z.optional(z.tuple([share, share]).check(z.refine(([from, to]) => from < to, 'a range ends above its start'))),
+})
