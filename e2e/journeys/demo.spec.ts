@@ -55,3 +55,19 @@ test('the minimising method shows Phi with its minimum where the read-out says',
   const minimum = /Minimum: Ea ([\d.]+) kJ/.exec(await sheet.told(/^Φ/))?.[1]
   expect(Number(minimum)).toBeCloseTo(Number(Ea), 0)
 })
+
+test('a standard is worked out on request, beside the methods that run anyway, and left again', async ({ sheet }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  const onRequest = sheet.page.getByRole('toolbar', { name: 'On request' }).or(sheet.page.getByRole('group', { name: 'On request' }))
+  const methods = sheet.page.getByRole('radiogroup', { name: 'Method', exact: true })
+  await expect(methods.getByRole('radio', { name: 'ASTM E1641' })).toHaveCount(0)
+  await onRequest.getByRole('button', { name: 'ASTM E1641' }).click()
+  await expect(onRequest.getByRole('button', { name: 'ASTM E1641' })).toHaveAttribute('aria-pressed', 'true')
+  await methods.getByRole('radio', { name: 'ASTM E1641' }).click()
+  await expect(sheet.levelTable.getByRole('columnheader', { name: /ASTM E1641/ })).toBeVisible()
+  await expect(methods.getByRole('radio')).toHaveCount(8)
+  await onRequest.getByRole('button', { name: 'ASTM E1641' }).click()
+  await expect(methods.getByRole('radio')).toHaveCount(7)
+  await expect(sheet.levelTable.getByRole('columnheader', { name: /ASTM E1641/ })).toHaveCount(0)
+})

@@ -132,6 +132,24 @@ describe('table of levels', () => {
     expect(first === undefined ? '' : last?.text(first)).toBe('241.0')
   })
 
+  it('has the error of the method’s own temperature integral and ln A of its own model only where it has one', () => {
+    const headings = (profile: ProfileResult): readonly string[] =>
+      levelColumns({ ...result, profiles: [profile] }, profile.method, []).map((column) => column.heading)
+    expect(headings(friedman)).not.toContain('Syst. error')
+    expect(headings(friedman)).not.toContain('ln A')
+    const e1641: ProfileResult = {
+      ...starink,
+      method: 'astm-e1641',
+      label: 'ASTM E1641',
+      lnA_per_s: [36.5, null],
+      systematicError_percent: [-0.234, null],
+    }
+    const columns = levelColumns({ ...result, profiles: [e1641] }, 'astm-e1641', [])
+    const cells = (heading: string) => rows.map((row) => columns.find((column) => column.heading === heading)?.text(row))
+    expect(cells('Syst. error')).toEqual(['−0.23', ''])
+    expect(cells('ln A')).toEqual(['36.50', ''])
+  })
+
   it('has no column of ln[A f(α)] for a method that gives none', () => {
     expect(levelColumns(result, 'starink', []).map((column) => column.id)).not.toContain('lnAf')
   })

@@ -88,6 +88,10 @@ const hasNumbers = (values: readonly (number | null)[]): boolean => values.some(
 function furtherColumns(profile: ProfileResult): readonly DataColumn<LevelRow>[] {
   return [
     ...(hasNumbers(profile.lnAf_per_s) ? [seriesColumn('lnAf', 'ln[A f(α)]', 'A in 1/s', profile.lnAf_per_s, 2)] : []),
+    ...(hasNumbers(profile.lnA_per_s) ? [seriesColumn('lnA', 'ln A', 'A in 1/s', profile.lnA_per_s, 2)] : []),
+    ...(profile.systematicError_percent.some((error) => error !== null && error !== 0)
+      ? [seriesColumn('systematic', 'Syst. error', '%', profile.systematicError_percent, 2)]
+      : []),
     ...(hasNumbers(profile.r2) ? [seriesColumn('r2', 'r²', '', profile.r2, 5)] : []),
   ]
 }
