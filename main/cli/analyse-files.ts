@@ -21,6 +21,8 @@ export interface AnalysisOrder {
   /** K/s, one for each run in the order in which the runs stand in the files; null: as the files say. */
   readonly heatingRates_K_per_s: readonly number[] | null
   readonly skipUnusable: boolean
+  /** Intervals by resampling and from measured sources besides. */
+  readonly withUncertainty: boolean
   readonly tableStyle: TableStyle
 }
 
@@ -60,7 +62,10 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
     if (!order.skipUnusable) refuseUnusableRuns(order.files, document, result)
     const out: FileOut[] = []
     for (const format of ['json', 'csv', 'svg'] as const) {
-      out.push(...(await host.call('results.export', { revision, format, tableStyle: order.tableStyle })).files)
+      out.push(
+        ...(await host.call('results.export', { revision, format, tableStyle: order.tableStyle, withUncertainty: order.withUncertainty }))
+          .files,
+      )
     }
     return { document, result, files: out }
   } catch (error) {

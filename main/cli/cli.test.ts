@@ -130,6 +130,10 @@ describe('every call', () => {
     [['activation', 'demo', '--out', 'o', '--heating-rates', '2,fast'], /"fast" does not start with a number/],
     [['activation', 'demo', '--out', 'o', '--heating-rates', '2,4,6'], /names 3, but there are 5 runs/],
     [['activation', 'demo', '--out', 'o', '--seed', '1.5'], /whole number/],
+    [['activation', 'demo', '--out', 'o', '--draws', '5'], /whole number from 100 to 20000/],
+    [['activation', 'demo', '--out', 'o', '--lag', '3 K'], /--lag: "k" is no unit of time/],
+    [['activation', 'demo', '--out', 'o', '--temperature-run=-1K'], /not negative/],
+    [['activation', 'demo', '--out', 'o', '--stated-heating-rate', '150'], /below 100 %/],
     [['activation', 'demo', '--out', 'o', '--decimal', 'dot'], /point, comma/],
     [['activation', 'demo', '--out', 'o', '--separator', 'space'], /comma, semicolon, tab/],
     [['activation', 'demo', '--out', 'o', '--decimal', 'comma', '--separator', 'comma'], /cannot be the same sign/],
@@ -211,6 +215,28 @@ describe('activation', () => {
     expect(json.profiles.map((profile) => profile.method).sort()).toEqual(['friedman', 'kas'])
     for (const run of json.runs)
       expect(run['window']).toMatchObject({ start_K: expect.closeTo(373.15, 0) as number, end_K: expect.closeTo(723.15, 0) as number })
+  })
+
+  it('adds intervals by resampling and from measured sources where they are asked for, the same for the same seed', async () => {
+    const texts: string[] = []
+    for (const seed of ['3', '3', '4']) {
+      const out = await newFolder('out')
+      const words = ['--levels', '0.3,0.6', '--methods', 'starink,vyazovkin', '--temperature-common', '2K', '--lag', '0', '--seed', seed]
+      expect(rampfold('activation', demo, '--out', out, '--quiet', ...words).code).toBe(0)
+      texts.push(await readFile(join(out, 'activation.json'), 'utf8'))
+      expect(await readFile(join(out, 'activation.csv.txt'), 'utf8')).toContain('Temperature, common to all runs, 2 K, as stated')
+    }
+    expect(texts[1]).toBe(texts[0])
+    expect(texts[2]).not.toBe(texts[0])
+    const json = JSON.parse(texts[0] ?? '') as { uncertainty: unknown; profiles: { otherIntervals: { kind: string }[] }[] }
+    expect(json.uncertainty).toEqual({ seed: 3, draws: 2000 })
+    expect(json.profiles[1]?.otherIntervals.map((interval) => interval.kind).sort()).toEqual([
+      'bootstrap',
+      'combined',
+      'jackknife',
+      'measured-sources',
+      'vyazovkin-wight-f',
+    ])
   })
 
   it('writes the table with the decimal sign and separator asked for, with the same numbers', async () => {

@@ -65,12 +65,6 @@ function inOrder(window: Window, start: number, end: number): Window {
 export const signalOption = (text: string): SignalQuantity => oneOf('--signal', text, signalQuantities)
 export const baselineOption = (text: string): BaselineKind => oneOf('--baseline', text, baselineKinds)
 
-/** A whole number that starts the generator of random numbers. @throws UsageError */
-export function seedOption(text: string): number {
-  if (!/^\d{1,15}$/.test(text)) throw new UsageError('--seed: write a whole number, for example 1.')
-  return Number(text)
-}
-
 const decimalSigns: Readonly<Record<string, TableStyle['decimal']>> = { point: '.', '.': '.', comma: ',', ',': ',' }
 const separators: Readonly<Record<string, TableStyle['separator']>> = {
   comma: ',',

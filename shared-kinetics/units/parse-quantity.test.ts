@@ -1,7 +1,7 @@
 import { unit } from 'mathjs'
 import { describe, expect, it } from 'vitest'
 import { fahrenheitToKelvin, kelvinToCelsius } from './convert.ts'
-import { parseHeatingRate, parseTemperature, parseTime } from './parse-quantity.ts'
+import { parseHeatingRate, parsePercent, parseTemperatureDifference, parseTemperature, parseTime } from './parse-quantity.ts'
 
 const value = (parsed: { ok: boolean; value?: number; reason?: string }): number => {
   expect(parsed.reason).toBeUndefined()
@@ -61,4 +61,27 @@ describe('a typed quantity', () => {
     expect(fahrenheitToKelvin(32)).toBe(273.15)
     expect(kelvinToCelsius(fahrenheitToKelvin(212))).toBeCloseTo(100, 10)
   })
+})
+
+describe('a temperature difference', () => {
+  it.each([
+    ['0.5 K', 0.5],
+    ['0,5', 0.5],
+    ['2 °C', 2],
+    ['1.8 F', 1],
+    ['0', 0],
+  ])('%s', (text, kelvins) => expect(parseTemperatureDifference(text)).toEqual({ ok: true, value: kelvins }))
+
+  it('refuses another unit', () =>
+    expect(parseTemperatureDifference('3 s')).toMatchObject({ ok: false, reason: expect.stringContaining('"s"') as string }))
+})
+
+describe('a share', () => {
+  it.each([
+    ['2 %', 0.02],
+    ['2', 0.02],
+    ['0,5%', 0.005],
+  ])('%s', (text, share) => expect(parsePercent(text)).toEqual({ ok: true, value: share }))
+
+  it('refuses another unit', () => expect(parsePercent('2 K')).toMatchObject({ ok: false }))
 })

@@ -69,3 +69,22 @@ export function parseHeatingRate(text: string): Parsed<Quantity<'K/s'>> {
     ? { ok: true, value: (kelvins / per) as Quantity<'K/s'> }
     : { ok: false, reason: 'a heating rate is greater than zero' }
 }
+
+/** A difference of temperatures as typed: "0.5 K", "0,5", "1 °F"; a bare number is in K, and °C are as large. */
+export function parseTemperatureDifference(text: string): Parsed<Quantity<'K'>> {
+  const split = splitNumber(text)
+  if (!split.ok) return split
+  const { number, unit } = split.value
+  const match = /^(?:deg)?([kcf]?)$/.exec(unit)
+  if (match === null) return { ok: false, reason: `"${unit}" is no unit of a temperature difference; K, °C and °F are` }
+  return { ok: true, value: (match[1] === 'f' ? number / 1.8 : number) as Quantity<'K'> }
+}
+
+/** A share as typed: "2 %", "2", "0,5 %"; a bare number is in percent. */
+export function parsePercent(text: string): Parsed<Quantity<'1'>> {
+  const split = splitNumber(text)
+  if (!split.ok) return split
+  const { number, unit } = split.value
+  if (unit !== '' && unit !== '%') return { ok: false, reason: `"${unit}" is no unit of a share; % is` }
+  return { ok: true, value: (number / 100) as Quantity<'1'> }
+}

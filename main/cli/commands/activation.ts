@@ -13,12 +13,12 @@ import {
   heatingRatesOption,
   levelsOption,
   methodsOption,
-  seedOption,
   signalOption,
   tableStyleOption,
   windowOption,
 } from '../option-values.ts'
 import { parseWords, type ParsedWords } from '../parse-words.ts'
+import { uncertaintyFrom, uncertaintyOptionKinds } from '../uncertainty-options.ts'
 import { createProgressLine } from '../progress-line.ts'
 
 const kinds = {
@@ -29,12 +29,12 @@ const kinds = {
   signal: 'value',
   window: 'value',
   baseline: 'value',
-  seed: 'value',
   decimal: 'value',
   separator: 'value',
   strict: 'flag',
   'skip-unusable': 'flag',
   quiet: 'flag',
+  ...uncertaintyOptionKinds,
   ...importOptionKinds,
 } as const
 
@@ -45,11 +45,13 @@ export async function activation(words: readonly string[], io: CliIo): Promise<n
   if (parsed.paths.length === 0)
     throw new UsageError('activation needs the files or the folder of the runs: rampfold activation PATH… --out DIR.')
   if (out === undefined || out === '') throw new UsageError('activation needs --out DIR, the folder the results go into.')
-  const changes = changesFrom(parsed)
+  const uncertainty = uncertaintyFrom(parsed)
+  const changes = [...changesFrom(parsed), ...uncertainty.changes]
   const rates = parsed.value('heating-rates')
   const order = {
     importOptions: importOptionsFrom(parsed),
     changes,
+    withUncertainty: uncertainty.wanted,
     heatingRates_K_per_s: rates === undefined ? null : heatingRatesOption(rates),
     skipUnusable: parsed.flag('skip-unusable'),
     tableStyle: tableStyleOption(parsed.value('decimal'), parsed.value('separator')),
@@ -75,8 +77,6 @@ function changesFrom(words: ParsedWords): readonly StudyChange[] {
   take('signal', (text) => ({ kind: 'set-signal', signal: signalOption(text) }))
   take('window', (text) => ({ kind: 'set-window', window: windowOption(text) }))
   take('baseline', (text) => ({ kind: 'set-baseline', baseline: baselineOption(text) }))
-  const seed = words.value('seed')
-  if (seed !== undefined) seedOption(seed)
   return changes
 }
 
