@@ -98,14 +98,10 @@ export function energyModel(series: SeriesAtLevels, result: IsoconversionalResul
     })
   }
   const common = { method: result.method, runs, levels, Ea: result.Ea, heatingRate_K_per_s }
-  switch (result.method) {
-    case 'vyazovkin':
-      return { ...common, form: integralForm(series, result, (run) => timeIntegral(run, largestEa)) }
-    case 'vyazovkin-incremental':
-      return { ...common, form: integralForm(series, result, (run) => segmentIntegral(run, largestEa)) }
-    default:
-      return { ...common, form: lineForm(series, result, result.method) }
-  }
+  const { method } = result
+  if (method === 'vyazovkin') return { ...common, form: integralForm(series, result, (run) => timeIntegral(run, largestEa)) }
+  if (method === 'vyazovkin-incremental') return { ...common, form: integralForm(series, result, (run) => segmentIntegral(run, largestEa)) }
+  return { ...common, form: lineForm(series, result, method) }
 }
 
 /** dT/dt where a run passes a level: its heating rate, 0 for a hold, and for any other programme the slope of the history over 1 % of the time on either side. */
