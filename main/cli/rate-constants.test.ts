@@ -164,7 +164,12 @@ describe('rampfold rate-constants', () => {
     const { code, stderr } = await rampfold('rate-constants', folder, '--model', 'f1', '--out', out, '--quiet')
     expect([code, stderr]).toEqual([0, ''])
     const json = await jsonOf(out)
-    expect(json).toMatchObject({ rateUnit: '1/s', source: { kind: 'isothermal-runs', name: 'First order (F1)' } })
+    expect(json).toMatchObject({
+      rateUnit: '1/s',
+      source: { kind: 'isothermal-runs', name: 'First order (F1)' },
+      runs: [370, 380, 390, 400].map((T) => ({ file: `hold ${T} K.csv` })),
+    })
+    expect(await readFile(join(out, 'rate-constants.csv.txt'), 'utf8')).toMatch(/hold 370 K\.csv, SHA-256 [0-9a-f]{64}/)
     expect((json.line['Ea_kJ_per_mol'] ?? 0) / 100).toBeCloseTo(1, 3)
     expect(json.line['lnA_per_s'] ?? 0).toBeCloseTo(Math.log(1e11), 1)
     expect(JSON.stringify(json['findings'])).toMatch(/model-assumed/)

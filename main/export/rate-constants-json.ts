@@ -20,6 +20,7 @@ export function rateConstantsJson({ document, result, program }: RateConstantsSo
     caution,
     study: document.name,
     source: result.source,
+    runs: runsBehind(document, result).map(({ label, file }) => ({ label, file: file.name, sha256: file.sha256 })),
     rateUnit: result.rateUnit,
     rows: result.rows,
     span: result.span,
@@ -41,6 +42,10 @@ export function rateConstantsJson({ document, result, program }: RateConstantsSo
   }
   return `${JSON.stringify(content, nullForMissing, 1)}\n`
 }
+
+/** The runs that a table was made from; none where it was typed, pasted or read. */
+export const runsBehind = (document: StudyDocument, { source }: RateConstantsResult): StudyDocument['runs'] =>
+  source.kind === 'isothermal-runs' ? document.runs.filter((run) => run.use) : []
 
 /** JSON has no NaN; what is not to be had is null. */
 const nullForMissing = (_key: string, value: unknown): unknown => (typeof value === 'number' && !Number.isFinite(value) ? null : value)

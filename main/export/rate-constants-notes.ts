@@ -1,6 +1,6 @@
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import { caution } from './caution.ts'
-import type { RateConstantsSource } from './rate-constants-json.ts'
+import { runsBehind, type RateConstantsSource } from './rate-constants-json.ts'
 import { rateConstantLines } from './rate-constants-lines.ts'
 
 /** The text of `rate-constants.csv.txt`, which stands beside the table: caution, what was found, intervals, where the table came from, findings. */
@@ -16,6 +16,7 @@ export function rateConstantsNotes({ document, result, program }: RateConstantsS
       [
         `${originOf(source)}${source.sha256 === null ? '' : `, SHA-256 ${source.sha256}`}`,
         `${result.rows.length} rate constants, ${used} used; unit ${result.rateUnit === '' ? 'not stated' : result.rateUnit}`,
+        ...runsBehind(document, result).map(({ label, file }) => `run ${label}: ${file.name}, SHA-256 ${file.sha256}`),
         span === null ? 'no temperature' : `${celsius(span.coldest_K)} to ${celsius(span.hottest_K)}`,
       ],
     ],

@@ -66,7 +66,8 @@ export interface ArrheniusLine {
  *
  * @param points - in any order; temperatures in K, all k in one unit
  * @throws KineticsError `not-finite`, naming the row, where k or T is not above 0
- * @source arrhenius-1889, iupac-arrhenius
+ * @source arrhenius-1889
+ * @source iupac-arrhenius
  */
 export function arrheniusLine(points: readonly RateConstantPoint[], weighting: Weighting = 'none'): ArrheniusLine {
   checkRateConstants(points)

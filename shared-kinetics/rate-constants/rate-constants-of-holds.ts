@@ -62,7 +62,7 @@ interface ReadHold {
 function modelNote(usable: readonly ReadHold[], model: ReactionModel, { zeroInTime, range }: HoldOptions): readonly RateConstantNote[] {
   if (usable.length === 0) return []
   const worst = Math.min(...usable.map(({ k }) => k.r2))
-  const before = Math.max(...usable.map(({ hold }) => (Number.isNaN(hold.conversionBeforeHold) ? 0 : hold.conversionBeforeHold)))
+  const before = Math.max(0, ...usable.map(({ hold }) => (Number.isNaN(hold.conversionBeforeHold) ? 0 : hold.conversionBeforeHold)))
   const zero = zeroInTime === 'fixed' ? 'zero in time at the start of the hold' : 'zero in time fitted'
   return [
     {
