@@ -29,10 +29,8 @@ export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: 
       { run: label, massAtStart: start, massAtEnd: end },
     )
   }
-  const curve = curveFromExtent(
-    time_s,
-    temperature_K,
-    mass.map((value) => (start - value) / change),
-  )
+  const conversion = new Float64Array(mass.length)
+  for (let i = 0; i < mass.length; i++) conversion[i] = (start - (mass[i] as number)) / change
+  const curve = curveFromExtent(time_s, temperature_K, conversion)
   return { curve, baseline: null, area: Number.NaN, rateAtEnds: rateAtEnds(curve), baselineKind: null }
 }

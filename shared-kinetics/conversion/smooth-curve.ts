@@ -130,8 +130,12 @@ function shapeOf(time: Float64Array, conversion: Float64Array): Shape {
 /** Ten times the shortest time in which conversion rises by a tenth. */
 function durationAtLargestRate(time: Float64Array, rising: Float64Array): number {
   let shortest = Infinity
-  let from = 0
-  for (let to = 0; to < rising.length; to++) {
+  // No tenth ends before the first row that is so much higher than the start, and none that ends beyond the first row of the highest value is the shortest.
+  const first = lowerBound(rising, (rising[0] as number) + 0.1)
+  const last = Math.min(rising.length - 1, lowerBound(rising, rising[rising.length - 1] as number))
+  if (first > last) return shortest
+  let from = Math.max(0, lowerBound(rising, (rising[first] as number) - 0.1) - 1)
+  for (let to = first; to <= last; to++) {
     const here = rising[to] as number
     while (from + 1 < to && here - (rising[from + 1] as number) >= 0.1) from++
     const rise = here - (rising[from] as number)

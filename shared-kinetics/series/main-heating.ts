@@ -49,20 +49,31 @@ function heatingStretches(temperature: Float64Array, reversal: number): (RowRang
     while (last < n - 1 && at(last + 1) >= top) last++
     if (at(highest) - at(lowest) >= reversal) stretches.push({ first, last, span: at(highest) - at(lowest) })
   }
+  let low = at(0)
+  let high = low
   for (let i = 1; i < n; i++) {
+    const here = temperature[i] as number
     if (rising) {
-      if (at(i) > at(highest)) highest = i
-      if (highest === lowest && at(i) < at(lowest)) lowest = highest = i
-      if (at(i) < at(highest) - reversal) {
+      if (here > high) {
+        highest = i
+        high = here
+      } else if (highest === lowest && here < low) {
+        lowest = highest = i
+        low = high = here
+      } else if (here < high - reversal) {
         close()
         rising = false
         lowest = i
+        low = here
       }
     } else {
-      if (at(i) < at(lowest)) lowest = i
-      if (at(i) > at(lowest) + reversal) {
+      if (here < low) {
+        lowest = i
+        low = here
+      } else if (here > low + reversal) {
         rising = true
         highest = i
+        high = here
       }
     }
   }

@@ -65,35 +65,52 @@ function throughNodes(x: Float64Array, samples: Samples, options: LocalPolynomia
   const atRow = localFit(samples, options)
   const value = new Float64Array(n)
   const slope = new Float64Array(n)
-  // The four nodes around the row, moved along with it; nodes that no row needs, as in a gap, are never fitted.
+  // The four nodes around the rows of one interval; nodes that no row needs, as in a gap, are never fitted.
   let firstNode = -1
   let nodes: LocalFit[] = []
-  for (let i = 0; i < n; i++) {
+  for (let i = 0; i < n; ) {
     const at = x[i] as number
     if (i > 0 && at - (x[i - 1] as number) > step) {
       const fit = atRow(at)
       value[i] = fit.value
       slope[i] = fit.slope
+      i++
       continue
     }
-    const place = (at - start) / step
-    const first = Math.min(lastNode - 3, Math.max(0, Math.floor(place) - 1))
+    const place = Math.floor((at - start) / step)
+    const first = Math.min(lastNode - 3, Math.max(0, place - 1))
     if (first !== firstNode) {
       const moved = first - firstNode
       nodes = [0, 1, 2, 3].map((k) => nodes[k + moved] ?? atNode(start + (first + k) * step))
       firstNode = first
     }
-    const u = place - first
     const [a, b, c, d] = nodes as [LocalFit, LocalFit, LocalFit, LocalFit]
-    const wa = (-(u - 1) * (u - 2) * (u - 3)) / 6
-    const wb = (u * (u - 2) * (u - 3)) / 2
-    const wc = (-u * (u - 1) * (u - 3)) / 2
-    const wd = (u * (u - 1) * (u - 2)) / 6
-    value[i] = wa * a.value + wb * b.value + wc * c.value + wd * d.value
-    slope[i] = wa * a.slope + wb * b.slope + wc * c.slope + wd * d.slope
+    const v = cubicThrough(a.value, b.value, c.value, d.value)
+    const s = cubicThrough(a.slope, b.slope, c.slope, d.slope)
+    const from = start + first * step
+    // All rows of the interval share these; the last interval takes the last row too.
+    const end = place >= lastNode - 2 ? Infinity : start + (place + 1) * step
+    let before = at
+    do {
+      const here = x[i] as number
+      if (here - before > step) break
+      before = here
+      const u = (here - from) / step
+      value[i] = v.c0 + u * (v.c1 + u * (v.c2 + u * v.c3))
+      slope[i] = s.c0 + u * (s.c1 + u * (s.c2 + u * s.c3))
+      i++
+    } while (i < n && (x[i] as number) < end)
   }
   return { value, slope }
 }
+
+/** Coefficients of the cubic through four values at 0, 1, 2 and 3. */
+const cubicThrough = (a: number, b: number, c: number, d: number): { c0: number; c1: number; c2: number; c3: number } => ({
+  c0: a,
+  c1: (18 * b - 11 * a - 9 * c + 2 * d) / 6,
+  c2: (2 * a - 5 * b + 4 * c - d) / 2,
+  c3: (3 * (b - c) + d - a) / 6,
+})
 
 /** Rows, or means of x and y over the rows of cells, with what tells how these lie about their mean: how many they are, and the means of the squares and cubes of their distances. */
 interface Samples {
