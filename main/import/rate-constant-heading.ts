@@ -27,7 +27,7 @@ export type RateConstantColumn =
 const temperatureNames = /^(?:t|temp|temperature|temperatur|ϑ|θ)(?:[\s_.,:;/()[\]°]|$)/i
 const inverseNames = /^(?:(?:1000|1e3|10\^?3)\s*k?|1)\s*\/\s*\(?\s*t\b|^t\s*\^?\s*-1\b|^(?:inverse|reciprocal)\s+(?:absolute\s+)?temp/i
 const rateNames =
-  /^(?:k[\s_]*(?:obs|app|eff|exp|calc|\d)|k|rate[\s_]*const(?:ant|\.)?(?:[\s_]*\(?k\)?(?![a-z]))?|rate[\s_]*coefficient(?:[\s_]*\(?k\)?(?![a-z]))?)(?![a-z])/i
+  /^(?:k[\s_]*\{?(?:obs|app|eff|exp|calc|\d)\}?|k(?:\s*\(T\))?|rate[\s_]*const(?:ant|\.)?(?:[\s_]*\(?k\)?(?![a-z]))?|rate[\s_]*coefficient(?:[\s_]*\(?k\)?(?![a-z]))?)(?![a-z])/i
 const uncertaintyNames =
   /^(?:u\s*\(|±|\+\/-|σ|sigma|s\.?\s?e\.?(?![a-z])|s\.?\s?d\.?(?![a-z])|std|stdev|standard\s+(?:error|deviation|uncertainty)|(?:relative\s+)?(?:uncertainty|error)|rel\.?\s+|d(?:elta\s*)?k(?![a-z])|Δk|err(?![a-z]))/i
 const labelNames = /^(?:sample|label|run|name|no\.?|nr\.?|number|#|id|point|note|remark|comment|source|ref)(?![a-z])/i
@@ -43,6 +43,7 @@ export function rateConstantHeading(text: string): RateConstantColumn {
   const heading = plain(text)
   if (heading === '') return { role: 'other' }
   if (inverseNames.test(heading)) return { role: 'inverse-temperature', factor: /1000|1e3|10\^?-?3/i.test(heading) ? 1000 : 1 }
+  if (/^k[\s_]+(?:standard |std |rel\w*\.? )?(?:err|uncert|s\.?[ed]\b|dev)/i.test(heading)) return uncertainty(heading)
   const rate = rateConstant(heading)
   if (rate !== null) return rate
   if (uncertaintyNames.test(heading)) return uncertainty(heading)

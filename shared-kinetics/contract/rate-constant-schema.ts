@@ -13,7 +13,6 @@ const noteCodeSchema = z.enum(
   namesOf<RateConstantNote['code']>({
     'rows-set-aside': true,
     'columns-set-aside': true,
-    'unit-from-values': true,
     'heading-missing': true,
     'heading-read-as': true,
     'model-assumed': true,

@@ -5,7 +5,6 @@ import { aboutTable, type RateConstantReview } from './rate-constant-review.ts'
 const titles: Readonly<Record<RateConstantNote['code'], string>> = {
   'rows-set-aside': 'Rows set aside',
   'columns-set-aside': 'Columns set aside while reading',
-  'unit-from-values': 'A unit told from the heading alone',
   'heading-missing': 'No row of headings',
   'heading-read-as': 'How a heading was read',
   'model-assumed': 'Rate constants rest on a chosen model',
