@@ -40,9 +40,8 @@ export function readColumns(
   const kinds = byteKinds(delimiter)
   const cells = newLineCells(lines)
   let index = layout.firstData
-  for (let check = index; index <= layout.lastData; ) {
-    check = Math.max(check, index + linesBetweenChecks)
-    const last = Math.min(check - 1, layout.lastData)
+  while (index <= layout.lastData) {
+    const last = Math.min(index + linesBetweenChecks - 1, layout.lastData)
     while (index <= last) {
       index = readPlainRows(lines, index, last, delimiter, decimal, columns)
       if (index > last) break
