@@ -119,7 +119,7 @@ describe('every call', () => {
     [['activation', 'demo', '--out', 'o', '--levels', '0.1:0.9:1e-9'], /at most 2000/],
     [
       ['activation', 'demo', '--out', 'o', '--methods', 'friedman,coats'],
-      /coats is not known; known are: friedman, ofw, kas, starink, vyazovkin, isothermal-integral/,
+      /coats is not known; known are: friedman, ofw, ofw-corrected, kas, starink, vyazovkin, vyazovkin-incremental, isothermal-integral, starink-1996/,
     ],
     [['activation', 'demo', '--out', 'o', '--signal', 'colour'], /known are: mass, conversion, heat-release, heat-flow/],
     [['activation', 'demo', '--out', 'o', '--baseline', 'none'], /known are: area-proportional, straight/],
@@ -184,7 +184,15 @@ describe('activation', () => {
     const json = await activationFile(out)
     expect(json.runs.map((run) => run['file'])).toEqual(demoSeries().files.map((file) => file.fileName))
     expect(json.levels).toEqual([0.05, 0.1, 0.15, 0.2, 0.25, 0.3, 0.35, 0.4, 0.45, 0.5, 0.55, 0.6, 0.65, 0.7, 0.75, 0.8, 0.85, 0.9, 0.95])
-    expect(json.profiles.map((profile) => profile.method)).toEqual(['friedman', 'ofw', 'kas', 'starink', 'vyazovkin'])
+    expect(json.profiles.map((profile) => profile.method)).toEqual([
+      'friedman',
+      'ofw',
+      'ofw-corrected',
+      'kas',
+      'starink',
+      'vyazovkin',
+      'vyazovkin-incremental',
+    ])
     expect(json.findings.map((finding) => finding.code)).toContain('heating-rate-differs-from-nominal')
   })
 

@@ -60,6 +60,8 @@ function runFields(run: RunResult): Record<string, unknown> {
     heatingRateStandardError_K_per_min: run.heatingRateStandardError_K_per_min,
     heatingRateSource: run.heatingRateSource,
     holdTemperature_K: run.holdTemperature_K,
+    holdStart_s: run.holdStart_s,
+    conversionBeforeHold: run.conversionBeforeHold,
     rows: run.rows,
     initialMass_mg: run.initialMass_kg === null ? null : run.initialMass_kg * 1e6,
     window: windowFields(run.window),
