@@ -26,7 +26,7 @@ export interface LevelsRead {
  * @source fritsch-carlson-1980; barlow-1972
  */
 export function readAtLevels(curve: ConversionCurve, levels: ArrayLike<number>): LevelsRead {
-  const rising = isotonic(curve.conversion)
+  const rising = risingFit(curve)
   const temperature = temperatureReader(curve)
   const time_s = new Float64Array(levels.length).fill(Number.NaN)
   const temperature_K = new Float64Array(levels.length).fill(Number.NaN)
@@ -39,6 +39,18 @@ export function readAtLevels(curve: ConversionCurve, levels: ArrayLike<number>):
     reactionRate_per_s[i] = reactionRateAt(curve, time)
   }
   return { time_s: column(time_s, 's'), temperature_K: column(temperature_K, 'K'), reactionRate_per_s: column(reactionRate_per_s, '1/s') }
+}
+
+const risingFits = new WeakMap<ConversionCurve, Float64Array>()
+const temperatureReaders = new WeakMap<ConversionCurve, (time: number) => number>()
+
+/** The never-falling fit of a curve, made once for a curve, which is read at other levels again and again. */
+function risingFit(curve: ConversionCurve): Float64Array {
+  const known = risingFits.get(curve)
+  if (known !== undefined) return known
+  const fit = isotonic(curve.conversion)
+  risingFits.set(curve, fit)
+  return fit
 }
 
 function crossing(curve: ConversionCurve, rising: Float64Array, level: number): number {
@@ -69,7 +81,15 @@ const harmlessNoise_K = 0.02
 const widestShare = 0.05
 
 /** T(t) by straight lines between samples, or where its noise would show, by a line through as many neighbours as it takes to hide it. */
-export function temperatureReader({ time_s, temperature_K, reaction, duration_s }: ConversionCurve): (time: number) => number {
+export function temperatureReader(curve: ConversionCurve): (time: number) => number {
+  const known = temperatureReaders.get(curve)
+  if (known !== undefined) return known
+  const reader = readerOf(curve)
+  temperatureReaders.set(curve, reader)
+  return reader
+}
+
+function readerOf({ time_s, temperature_K, reaction, duration_s }: ConversionCurve): (time: number) => number {
   const noise = noiseOf(time_s, temperature_K, reaction.first, reaction.last)
   if (!(noise > harmlessNoise_K)) return (time) => valueAt(time_s, temperature_K, time)
   const spacing = ((time_s[reaction.last] ?? 0) - (time_s[reaction.first] ?? 0)) / Math.max(1, reaction.last - reaction.first)

@@ -7,7 +7,7 @@ import { peakTemperature } from '../conversion/peak-temperature.ts'
 import { samplingOf, type Sampling } from '../conversion/sampling.ts'
 import { findWindow, rowsInWindow } from '../conversion/window.ts'
 import { isHold, startOfHold, timeOfHold } from '../series/hold.ts'
-import type { RowRange } from '../series/main-heating.ts'
+import { mainHeating, type RowRange } from '../series/main-heating.ts'
 import type { RunColumns, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
 import { tellProgramme, type ToldProgramme } from '../series/tell-programme.ts'
@@ -25,6 +25,8 @@ export interface ConvertedRun {
   readonly converted: Converted
   readonly told: ToldProgramme
   readonly window: Window
+  /** Temperature at which the main heating of the run begins. */
+  readonly heatingStart_K: number
   /** NaN where the reaction rate has no maximum. */
   readonly peak_K: number
   readonly sampling: Sampling
@@ -42,7 +44,7 @@ export interface ConversionSettings {
 }
 
 /** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
-export const convertRunVersion = 2
+export const convertRunVersion = 3
 
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
@@ -62,6 +64,7 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
     converted,
     told,
     window: windowUsed(rows, range, settings.window, told.programme.kind === 'constant-heating-rate'),
+    heatingStart_K: rows.temperature_K[foundWhole(settings) ? range.first : mainHeating(rows.temperature_K).first] ?? Number.NaN,
     peak_K: peakTemperature(converted.curve),
     sampling: samplingOf(rows, range.first, converted.curve, info.label),
     ...startOfTheHold(told, converted),
@@ -80,6 +83,9 @@ function startOfTheHold(
     conversionBeforeHold: conversion[row] ?? Number.NaN,
   }
 }
+
+/** Whether the window that is found is all of the main heating. */
+const foundWhole = ({ quantity, window }: ConversionSettings): boolean => window === null && quantity !== 'heat-flow'
 
 function rowsToUse(rows: UsableRows, { quantity, window, baseline }: ConversionSettings, label: string): RowRange {
   if (window !== null) return rowsInWindow(rows.time_s, rows.temperature_K, window, label)
@@ -129,13 +135,18 @@ function curveToDraw(
   withBaseline: boolean,
 ): RunResult['curve'] {
   const spread = (values: Float64Array): Float64Array => {
+    if (values.length === signal.length) return values
     const whole = new Float64Array(signal.length).fill(Number.NaN)
     whole.set(values, range.first)
     return whole
   }
   const reactionRate = spread(converted.curve.reactionRate_per_s)
   const kept = decimate([signal, reactionRate])
-  const thin = (values: Float64Array): Float64Array => Float64Array.from(kept, (i) => values[i] ?? Number.NaN)
+  const thin = (values: Float64Array): Float64Array => {
+    const thinned = new Float64Array(kept.length)
+    for (let k = 0; k < kept.length; k++) thinned[k] = values[kept[k] as number] as number
+    return thinned
+  }
   return {
     time_s: thin(time_s),
     temperature_K: thin(temperature_K),

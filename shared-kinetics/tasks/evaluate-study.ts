@@ -2,7 +2,6 @@ import { noiseAtLevels } from '../conversion/noise-at-levels.ts'
 import { methods } from '../isoconversional/registry.ts'
 import type { TaskContext } from '../isoconversional/result.ts'
 import { review } from '../review/review.ts'
-import { mainHeating } from '../series/main-heating.ts'
 import type { RunColumns, RunInfo, SignalInfo } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
 import { quantity } from '../units/quantity.ts'
@@ -81,7 +80,7 @@ const methodsByDefault = Object.values(methods).filter(({ info }) => info.byDefa
 
 function peakResultsOf(runs: readonly GroupedRun[], signal: SignalQuantity | null): PeakResults {
   return applyPeakMethods(
-    runs.map(({ info, signal: measured, converted: { converted, told, rows, peak_K }, group }) => ({
+    runs.map(({ info, signal: measured, converted: { converted, told, heatingStart_K, peak_K }, group }) => ({
       runId: info.id,
       label: info.label,
       programme: told.programme,
@@ -89,7 +88,7 @@ function peakResultsOf(runs: readonly GroupedRun[], signal: SignalQuantity | nul
       peak_K,
       conversionAtPeak: conversionAtTemperature(converted.curve, peak_K),
       halfHeights: halfHeights(converted.curve, peak_K),
-      start: quantity(rows.temperature_K[mainHeating(rows.temperature_K).first] ?? Number.NaN, 'K'),
+      start: quantity(heatingStart_K, 'K'),
       heat: heatOf(info, measured, converted.area),
       points: pointsOfRun(converted.curve),
     })),

@@ -8,7 +8,11 @@ import { maybe, maybes } from './maybe.ts'
 import { meanResult } from './mean-result.ts'
 import type { ProfileResult } from './study-result.ts'
 
-const kilojoules = (values: Float64Array): Float64Array => values.map(joulesToKilojoules)
+function kilojoules(values: Float64Array): number[] {
+  const found: number[] = []
+  for (let i = 0; i < values.length; i++) found.push(joulesToKilojoules(values[i] as number))
+  return found
+}
 
 /**
  * A method's result in the terms of `StudyResult`: kJ/mol, null for what is not to be had, and the mean over a range of conversion.
@@ -51,8 +55,8 @@ export function profileResult(
       intercept: maybe(line.intercept),
     })),
     phi: result.phi.map((phi) => ({
-      Ea_kJ_per_mol: [...kilojoules(phi.Ea_J_per_mol)],
-      phi: [...phi.phi],
+      Ea_kJ_per_mol: kilojoules(phi.Ea_J_per_mol),
+      phi: Array.from(phi.phi),
       phiMinimum: maybe(phi.phiMinimum),
       phiThreshold: maybe(phi.phiThreshold),
     })),

@@ -6,7 +6,7 @@ import { programmeGroups, type RunToGroup } from '../series/programme-groups.ts'
 import type { RunColumns, RunInfo, SignalInfo } from '../series/run.ts'
 import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
-import { column } from '../units/quantity.ts'
+import { column, type Column } from '../units/quantity.ts'
 import { applyMethod, chooseMethods } from './apply-methods.ts'
 import { chooseSignal } from './choose-signal.ts'
 import { convertRun, convertRunVersion, type ConvertedRun } from './convert-run.ts'
@@ -161,6 +161,14 @@ function inOrderOfProgramme(read: readonly ReadRun[]): GroupedRun[] {
   return read.map((run, i) => ({ ...run, group: itemAt(groups, i) })).sort((a, b) => a.group - b.group)
 }
 
+/** The same times counted from `start`. */
+function from(start: number, time_s: Column<'s'>): Column<'s'> {
+  if (start === 0) return time_s
+  const counted = new Float64Array(time_s.length)
+  for (let i = 0; i < counted.length; i++) counted[i] = (time_s[i] as number) - start
+  return column(counted, 's')
+}
+
 function seriesAtLevels(runs: readonly GroupedRun[], levels: readonly number[]): SeriesAtLevels {
   return {
     levels: column(Float64Array.from(levels), '1'),
@@ -171,17 +179,8 @@ function seriesAtLevels(runs: readonly GroupedRun[], levels: readonly number[]):
         programme: converted.told.programme,
         programmeGroup: group,
         heatingRateSpread: converted.told.heatingRateSpread,
-        history: {
-          time_s: column(
-            time_s.map((time) => time - start),
-            's',
-          ),
-          temperature_K,
-        },
-        time_s: column(
-          read.time_s.map((time) => time - start),
-          's',
-        ),
+        history: { time_s: from(start, time_s), temperature_K },
+        time_s: from(start, read.time_s),
         temperature_K: read.temperature_K,
         reactionRate_per_s: read.reactionRate_per_s,
       }
