@@ -77,22 +77,22 @@ describe.each(exactMethods)('%s on exact temperatures and reaction rates', (_, m
   })
 })
 
+/** The same ramp as a measured history with the samples at these shares of it. */
+const sampled = (run: RunValues, shares: readonly number[]): RunValues => {
+  const end = run.history!.time_s[1]!
+  const [T0, T1] = [run.history!.temperature_K[0]!, run.history!.temperature_K[1]!]
+  const at = [0, ...shares, 1]
+  return {
+    ...run,
+    programme: { kind: 'general' },
+    history: { time_s: at.map((share) => share * end), temperature_K: at.map((share) => T0 + share * (T1 - T0)) },
+  }
+}
+
 describe.each([
   ['Vyazovkin', vyazovkin],
   ['Vyazovkin, incremental', vyazovkinIncremental],
 ] as const)('%s over measured histories', (_, method) => {
-  /** The same ramp as a measured history with the samples at these shares of it. */
-  const sampled = (run: RunValues, shares: readonly number[]): RunValues => {
-    const end = run.history!.time_s[1]!
-    const [T0, T1] = [run.history!.temperature_K[0]!, run.history!.temperature_K[1]!]
-    const at = [0, ...shares, 1]
-    return {
-      ...run,
-      programme: { kind: 'general' },
-      history: { time_s: at.map((share) => share * end), temperature_K: at.map((share) => T0 + share * (T1 - T0)) },
-    }
-  }
-
   it('does not change when a run is resampled: exact ramps keep their Ea whatever samples describe them', () => {
     const shares = fc
       .array(fc.double({ min: 1e-6, max: 1 - 1e-6, noNaN: true }), { maxLength: 60 })

@@ -36,10 +36,8 @@ export function resultColumns(
   const lower95 = column(empty(), 'J/mol')
   const upper95 = column(empty(), 'J/mol')
   const r2 = empty()
-  const points = Array.from({ length: levels }, (): LevelPoints => {
-    const none = (): Float64Array => new Float64Array(series.runs.length).fill(Number.NaN)
-    return { x_per_K: column(none(), '1/K'), residual: none(), energyPerSlope: Number.NaN }
-  })
+  const runs = series.runs.length
+  const points = Array.from({ length: levels }, () => noPoints(runs))
   return {
     result: {
       method: info.id,
@@ -77,4 +75,9 @@ export function resultColumns(
       points[level] = value
     },
   }
+}
+
+function noPoints(runs: number): LevelPoints {
+  const none = new Float64Array(runs).fill(Number.NaN)
+  return { x_per_K: column(none, '1/K'), residual: none.slice(), energyPerSlope: Number.NaN }
 }

@@ -8,7 +8,11 @@ import { timeIntegral } from './time-integral.ts'
 
 const R = gasConstant_J_per_mol_K
 const largestEa = 1e6
-const runAt = (run: RunValues) => seriesOf(new Array<number>(run.temperature_K.length).fill(0), [run]).runs[0]!
+const runAt = (run: RunValues) =>
+  seriesOf(
+    run.temperature_K.map(() => 0.5),
+    [run],
+  ).runs[0]!
 
 /** T of the programme of the check values at a time, rows added between the corners every `every` s. */
 function measured(every: number): RunValues {
@@ -51,14 +55,16 @@ describe.each([1e4, 7, 0.5])('a programme of ramps, holds, cooling and a jump, r
   })
 })
 
+/** A ramp of 6 K/min read at these temperatures. */
+const rampOf = (temperature_K: number[], withTime = true): RunValues => ({
+  programme: constantHeatingRate(6),
+  programmeGroup: 0,
+  temperature_K,
+  ...(withTime ? { time_s: temperature_K.map((T) => (T - 300) * 10) } : {}),
+})
+
 describe('a segment of a ramp', () => {
   const fine = gaussLegendre(64)
-  const rampOf = (temperature_K: number[], withTime = true): RunValues => ({
-    programme: constantHeatingRate(6),
-    programmeGroup: 0,
-    temperature_K,
-    ...(withTime ? { time_s: temperature_K.map((T) => (T - 300) * 10) } : {}),
-  })
 
   it.each([1e-6, 0.3, 0.999_999, 1, 1.000_001, 5, 40])('of %d K keeps its digits by either way of summing', (width) => {
     for (const T of [350, 600, 1200]) {

@@ -26,7 +26,7 @@ describe('ASTM E1641', () => {
   const atMiddle = R * Number(chain.temperature_K[2])
 
   it('matches the worked chain: slope, first Ea, refined Ea, a and A', () => {
-    const slope = result.lines[0]!.slope_K!
+    const slope = result.lines[0]!.slope_K
     expect(asPrinted(slope, chain.slope_K)).toBe(chain.slope_K)
     expect(asPrinted((-slope * R) / 0.457 / 1000, chain.firstEa_kJ_per_mol)).toBe(chain.firstEa_kJ_per_mol)
     // The chain takes a(x) - a(x - 1) at x itself, the table between whole x a straight line: 4e-6 of Ea at x = 45. That moves a by 7e-5, A by 0.02 %.
@@ -38,7 +38,7 @@ describe('ASTM E1641', () => {
   })
 
   it('takes b of the table and not the derivative, which would give another Ea', () => {
-    const exact = (-result.lines[0]!.slope_K! * R) / doyleSlope(Number(chain.byDerivative.Ea_kJ_per_mol) * (1000 / atMiddle))
+    const exact = (-result.lines[0]!.slope_K * R) / doyleSlope(Number(chain.byDerivative.Ea_kJ_per_mol) * (1000 / atMiddle))
     expect(asPrinted(exact / 1000, chain.byDerivative.Ea_kJ_per_mol)).toBe(chain.byDerivative.Ea_kJ_per_mol)
     expect(exact / Ea - 1).toBeGreaterThan(4e-4)
   })

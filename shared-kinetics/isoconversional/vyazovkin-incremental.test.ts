@@ -32,6 +32,9 @@ const twoStepSeries = (levels: readonly number[]) =>
     }),
   )
 
+/** Ea by Friedman in J/mol as printed. */
+const printed = (level: number): number => Number(twoSteps.levels.find((row) => row.level === level)?.friedman) * 1000
+
 describe('two independent steps, levels 0.01 apart', () => {
   const levels = Array.from({ length: 99 }, (_, k) => (k + 1) / 100)
   const incremental = vyazovkinIncremental(twoStepSeries(levels), quiet).Ea
@@ -65,7 +68,6 @@ describe('two independent steps, levels 0.01 apart', () => {
   it('and few coarse levels smooth within their steps alone', () => {
     const coarse = vyazovkinIncremental(twoStepSeries([0.1, 0.3, 0.5, 0.7, 0.9]), quiet).Ea
     // Between the Ea at the two ends of each step.
-    const printed = (level: number): number => Number(twoSteps.levels.find((row) => row.level === level)?.friedman) * 1000
     ;[
       [0.1, 0.3],
       [0.3, 0.5],

@@ -193,12 +193,13 @@ describe('exact simulations', () => {
   })
 })
 
+const labelled = (label: number) => ({
+  nominalHeatingRate: { heatingRate_K_per_s: label / 60, source: 'name' as const, text: `${label}K` },
+})
+
 describe('runs', () => {
   it('labelled 10 K/min that ran at 20.15 count by what T(t) says, as a replicate of the run at 20', () => {
     // Seen in open data: 2.512, 5.025, "10" that ran at 20.151, and 15.118 K/min.
-    const labelled = (label: number) => ({
-      nominalHeatingRate: { heatingRate_K_per_s: label / 60, source: 'name' as const, text: `${label}K` },
-    })
     const result = evaluate([
       massRun('2', ramp(360, 2.512, 850), firstOrder, labelled(2.5)),
       massRun('5', ramp(360, 5.025, 850), firstOrder, labelled(5)),
