@@ -427,7 +427,7 @@ describe('figures as SVG', () => {
   it('titles its axes with their units and names every method in the legend', () => {
     const texts = [...page.querySelectorAll('text')].map((text) => text.textContent)
     expect(texts).toEqual(
-      expect.arrayContaining(['Conversion α', 'Ea (kJ/mol)', 'Friedman', 'Ozawa–Flynn–Wall', '95 % interval, Friedman']),
+      expect.arrayContaining(['Conversion α', 'Ea (kJ/mol)', 'Friedman', 'Ozawa–Flynn–Wall', '95 % interval (Student-t), Friedman']),
     )
   })
 

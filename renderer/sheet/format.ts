@@ -35,22 +35,38 @@ export function isLopsided(value: Maybe | undefined, lower: Maybe | undefined, u
   return Math.abs((upper + lower) / 2 - value) > (upper - lower) / 20
 }
 
-/** The interval about a value: `4.8`, or `−4.1 +5.6` where it is lopsided by more than a twentieth of its width. */
+/**
+ * The interval about a value: `4.8`, `−4.1 +5.6` where it is lopsided by more than a twentieth of its width, `−4.1, open above` where it has one end only, and its ends,
+ * `120.4 … 124.0`, where it does not hold the value.
+ */
 export function formatInterval(value: Maybe | undefined, lower: Maybe | undefined, upper: Maybe | undefined, count = 1): string {
-  const half = halfWidth(lower, upper)
-  if (
-    half === null ||
-    value === null ||
-    value === undefined ||
-    lower === null ||
-    lower === undefined ||
-    upper === null ||
-    upper === undefined
-  )
-    return ''
-  const lopsided = isLopsided(value, lower, upper)
-  if (!lopsided && half < 0.5 * 10 ** -count) return `< ${(10 ** -count).toFixed(count)}`
-  return lopsided ? `−${decimals(value - lower, count)} +${decimals(upper - value, count)}` : decimals(half, count)
+  if (value === null || value === undefined) return ''
+  const [low, high] = [lower ?? null, upper ?? null]
+  if (low === null || high === null) {
+    if (low !== null) return `−${decimals(value - low, count)}, open above`
+    return high === null ? '' : `open below, +${decimals(high - value, count)}`
+  }
+  if (value < low || value > high) return `${decimals(low, count)} … ${decimals(high, count)}`
+  if (isLopsided(value, low, high)) return `−${decimals(value - low, count)} +${decimals(high - value, count)}`
+  const half = (high - low) / 2
+  return half < 0.5 * 10 ** -count ? `< ${(10 ** -count).toFixed(count)}` : decimals(half, count)
+}
+
+/** A value with its interval: `146.1 ± 1.0`, `146.1 −4.1 +5.6`; the value alone where there is no interval. */
+export function formatWithInterval(value: Maybe | undefined, lower: Maybe | undefined, upper: Maybe | undefined, count = 1): string {
+  const interval = formatInterval(value, lower, upper, count)
+  const number = decimals(value, count)
+  if (interval === '') return number
+  if (interval.includes('…')) return `${number} (${interval})`
+  return /^[\d<]/.test(interval) ? `${number} ± ${interval}` : `${number} ${interval}`
+}
+
+/** A number with its sign, `+1.20`; 0 without one. */
+export function formatSigned(value: Maybe | undefined, count: number): string {
+  const text = decimals(value, count)
+  if (text === '' || value === null || value === undefined) return text
+  if (Number(value.toFixed(count)) === 0) return text.replace('−', '')
+  return value > 0 ? `+${text}` : text
 }
 
 /** A heating rate in K/min to as many decimals as its standard error supports, two at least and four at most. */

@@ -13,6 +13,7 @@ import { HostUnreachable } from '../transport/host-unreachable.ts'
 import { createEvaluator } from './evaluator.ts'
 import { importFiles } from './import-files.ts'
 import { rebased, replicaOf, withChange, withFirstAnswered } from './replica.ts'
+import { createUncertaintyAsker, type UncertaintyAsker } from './uncertainty-asker.ts'
 import { initialStudyState, type StudyState } from './study-state.ts'
 
 /** Everything a person can do to the study from this window. Every promise settles without throwing: what went wrong is in the store. */
@@ -28,6 +29,8 @@ export interface StudySession {
   readonly cancelImport: () => Promise<void>
   readonly cancelEvaluation: () => Promise<void>
   readonly evaluateAgain: () => void
+  /** Intervals by resampling and from measured sources: asked for in the background while somebody looks at them. */
+  readonly uncertainty: Pick<UncertaintyAsker, 'want' | 'again' | 'cancel' | 'settled'>
   /** The answer, or null when it could not be had (the store then says why). */
   readonly ask: <Name extends 'study.save-copy' | 'results.export'>(
     name: Name,
@@ -59,6 +62,7 @@ export function createStudySession(transport: HostTransport): StudySession {
   const set = (part: Partial<StudyState>): void => store.setState(part)
   const get = store.getState
   const evaluator = createEvaluator(transport, store, refresh)
+  const uncertainty = createUncertaintyAsker(transport, store)
   let steps: Promise<void> = Promise.resolve()
   let waitingSteps = 0
   let importControl: AbortController | null = null
@@ -87,7 +91,7 @@ export function createStudySession(transport: HostTransport): StudySession {
     if (replica !== null && snapshot.document.id === replica.confirmed.document.id && snapshot.revision < replica.confirmed.revision) return
     const sameStudy = evaluated?.studyId === snapshot.document.id
     const next = replica === null ? replicaOf(snapshot) : rebased(replica, snapshot)
-    set({ replica: next, connection: { kind: 'ready' }, ...(sameStudy ? {} : { evaluated: null }) })
+    set({ replica: next, connection: { kind: 'ready' }, ...(sameStudy ? {} : { evaluated: null, uncertain: null }) })
   }
 
   function explain(error: unknown): void {
@@ -171,6 +175,7 @@ export function createStudySession(transport: HostTransport): StudySession {
       return
     }
     if (event.work === 'evaluate') evaluator.heard(event)
+    else if (event.work === 'uncertainty') uncertainty.heard(event)
     else if (get().importing?.phase === 'reading') {
       set({ importing: { phase: 'reading', what: event.what, done: event.done, total: event.total } })
     }
@@ -229,6 +234,7 @@ export function createStudySession(transport: HostTransport): StudySession {
     },
     cancelEvaluation: () => evaluator.cancel(),
     evaluateAgain: () => evaluator.again(),
+    uncertainty,
     async ask<Name extends 'study.save-copy' | 'results.export'>(name: Name, input: AskInput<Name>) {
       let answer: RequestAnswers[Name] | null = null
       await inOrder(async () => {

@@ -1,5 +1,5 @@
 import type { RecentStudy, RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
-import type { StudyResult } from '../../shared-kinetics/contract/study-result.ts'
+import type { StudyResult, UncertaintyResult } from '../../shared-kinetics/contract/study-result.ts'
 import type { Replica } from './replica.ts'
 
 export type Connection = { readonly kind: 'connecting' } | { readonly kind: 'ready' } | { readonly kind: 'lost'; readonly message: string }
@@ -24,12 +24,21 @@ export interface Evaluated {
   readonly result: StudyResult
 }
 
+/** Intervals by resampling and from measured sources, and the results that they are about. */
+export interface Uncertain {
+  readonly about: Evaluated
+  readonly result: UncertaintyResult
+}
+
 /** Document and results as this window knows them; what is looked at and how is in `view-store`. */
 export interface StudyState {
   readonly connection: Connection
   readonly replica: Replica | null
   readonly evaluated: Evaluated | null
   readonly evaluation: Evaluation
+  /** May be about earlier results than those at hand. */
+  readonly uncertain: Uncertain | null
+  readonly uncertaintyWork: Evaluation
   readonly importing: ImportWork | null
   readonly refused: readonly RefusedFile[]
   /** One sentence about the last thing that went wrong or was done; null when dismissed. */
@@ -42,6 +51,8 @@ export const initialStudyState: StudyState = {
   replica: null,
   evaluated: null,
   evaluation: { kind: 'settled' },
+  uncertain: null,
+  uncertaintyWork: { kind: 'settled' },
   importing: null,
   refused: [],
   notice: null,

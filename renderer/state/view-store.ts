@@ -1,8 +1,13 @@
 import { createStore } from 'zustand/vanilla'
-import type { MethodId } from '../../shared-kinetics/contract/study-result.ts'
+import type { IntervalKind, MethodId } from '../../shared-kinetics/contract/study-result.ts'
 
 export type Stage = 'runs' | 'activation'
 export type Theme = 'system' | 'light' | 'dark'
+
+/** The interval that chart, table, rail and read-out show: the regression's own, or another kind. */
+export type ShownKind = 'student-t' | IntervalKind
+/** What stands beneath Ea against conversion. */
+export type Beneath = 'levels' | 'budget' | 'peaks'
 
 /** What is looked at and how. Never part of the study, never undone. */
 export interface ViewState {
@@ -13,6 +18,9 @@ export interface ViewState {
   readonly chosenMethod: MethodId | null
   /** Methods drawn beside the chosen one; null takes Friedman where it applies. */
   readonly comparedMethods: readonly MethodId[] | null
+  /** Where the chosen method has no interval of this kind, its own stands for it. */
+  readonly interval: ShownKind
+  readonly beneath: Beneath
   /** null takes temperature for constant heating rates and time for everything else. */
   readonly against: 'temperature' | 'time' | null
   /** The run that a finding or a row points at. */
@@ -25,6 +33,8 @@ const initialViewState: ViewState = {
   conversion: 0.5,
   chosenMethod: null,
   comparedMethods: null,
+  interval: 'student-t',
+  beneath: 'levels',
   against: null,
   pointedRun: null,
   theme: 'system',

@@ -3,24 +3,47 @@ import type { Maybe, ProfileResult, StudyResult } from '../tasks/study-result.ts
 import type { Figure, Mark } from './figure.ts'
 import { extentOf, levelText, niceAxis } from './nice-axis.ts'
 
+/** The interval of the chosen method that is drawn, as long as the levels. */
+export interface DrawnInterval {
+  /** Its kind, e.g. `Student-t`. */
+  readonly name: string
+  readonly lower95_kJ_per_mol: readonly Maybe[]
+  readonly upper95_kJ_per_mol: readonly Maybe[]
+}
+
 /**
  * Ea against conversion: the chosen method first, with the band of its interval, the other methods of `methodIds` behind it by line style and
  * marker. A level without a number breaks the line. Methods that gave no profile are passed over.
+ *
+ * @param drawn - the interval of the chosen method; its regression's own where left out, none where null
  */
-export function activationFigure(result: StudyResult, methodIds: readonly MethodId[], chosen: MethodId): Figure {
+export function activationFigure(
+  result: StudyResult,
+  methodIds: readonly MethodId[],
+  chosen: MethodId,
+  drawn?: DrawnInterval | null,
+): Figure {
   const profiles = profilesInOrder(result, methodIds, chosen)
   const [first] = profiles
+  const interval = drawnOf(first, drawn)
   const marks: Mark[] = []
-  if (first !== undefined && first.lower95_kJ_per_mol.some((end) => end !== null)) {
-    const [lower, upper] = [numbers(first.lower95_kJ_per_mol), numbers(first.upper95_kJ_per_mol)]
-    marks.push({ kind: 'band', name: `95 % interval, ${first.label}`, tone: { kind: 'method', index: 0 }, x: result.levels, lower, upper })
+  if (first !== undefined && interval !== null && interval.lower95_kJ_per_mol.some((end) => end !== null)) {
+    const [lower, upper] = [numbers(interval.lower95_kJ_per_mol), numbers(interval.upper95_kJ_per_mol)]
+    marks.push({
+      kind: 'band',
+      name: `95 % interval (${interval.name}), ${first.label}`,
+      tone: { kind: 'method', index: 0 },
+      x: result.levels,
+      lower,
+      upper,
+    })
   }
   for (const [index, profile] of profiles.entries()) {
     const y = numbers(profile.Ea_kJ_per_mol)
     marks.push({ kind: 'points', name: profile.label, tone: { kind: 'method', index }, x: result.levels, y, joined: true })
   }
   const fences = outerFences(profiles)
-  const { min, max } = energyAxis(profiles, fences)
+  const { min, max } = energyAxis(profiles, interval, fences)
   const note = beyondText(result, first, min, max)
   return {
     id: 'activation-energy',
@@ -34,17 +57,30 @@ export function activationFigure(result: StudyResult, methodIds: readonly Method
 }
 
 /** The current level: a rule at its conversion, and the chosen method's point there with its interval. */
-export function activationAtLevel(result: StudyResult, methodIds: readonly MethodId[], chosen: MethodId, levelIndex: number): Mark[] {
+export function activationAtLevel(
+  result: StudyResult,
+  methodIds: readonly MethodId[],
+  chosen: MethodId,
+  levelIndex: number,
+  drawn?: DrawnInterval | null,
+): Mark[] {
   const level = result.levels[levelIndex]
   if (level === undefined) return []
   const marks: Mark[] = [{ kind: 'rule', name: 'Level', tone: { kind: 'ink' }, along: 'y', at: level, dash: 'dotted' }]
   const [first] = profilesInOrder(result, methodIds, chosen)
   const Ea = first?.Ea_kJ_per_mol[levelIndex] ?? null
   if (first === undefined || Ea === null) return marks
-  const [lower, upper] = [first.lower95_kJ_per_mol[levelIndex] ?? null, first.upper95_kJ_per_mol[levelIndex] ?? null]
+  const shown = drawnOf(first, drawn)
+  const [lower, upper] = [shown?.lower95_kJ_per_mol[levelIndex] ?? null, shown?.upper95_kJ_per_mol[levelIndex] ?? null]
   const interval = lower === null || upper === null ? {} : { lower: [lower], upper: [upper] }
   marks.push({ kind: 'points', name: first.label, tone: { kind: 'accent' }, x: [level], y: [Ea], joined: false, ...interval })
   return marks
+}
+
+/** The regression's own interval, unless another or none is to be drawn. */
+function drawnOf(profile: ProfileResult | undefined, drawn: DrawnInterval | null | undefined): DrawnInterval | null {
+  if (drawn !== undefined || profile === undefined) return drawn ?? null
+  return { name: 'Student-t', lower95_kJ_per_mol: profile.lower95_kJ_per_mol, upper95_kJ_per_mol: profile.upper95_kJ_per_mol }
 }
 
 function profilesInOrder(result: StudyResult, methodIds: readonly MethodId[], chosen: MethodId): readonly ProfileResult[] {
@@ -69,13 +105,14 @@ function outerFences(profiles: readonly ProfileResult[]): readonly [number, numb
 /** Every Ea that is not far out is on the axis; its chosen interval too, unless it is so wide that the curve in it could no longer be read. */
 function energyAxis(
   profiles: readonly ProfileResult[],
+  interval: DrawnInterval | null,
   [below, above]: readonly [number, number],
 ): { readonly min: number; readonly max: number } {
   const isNear = (Ea: Maybe | undefined): boolean => Ea !== null && Ea !== undefined && Ea >= below && Ea <= above
   const [low, high] = extentOf(profiles.flatMap((profile) => profile.Ea_kJ_per_mol.filter(isNear)))
   const [first] = profiles
   const near = (ends: readonly Maybe[] | undefined): readonly Maybe[] => (ends ?? []).filter((_, i) => isNear(first?.Ea_kJ_per_mol[i]))
-  const [lower, upper] = extentOf(near(first?.lower95_kJ_per_mol), near(first?.upper95_kJ_per_mol))
+  const [lower, upper] = extentOf(near(interval?.lower95_kJ_per_mol), near(interval?.upper95_kJ_per_mol))
   const room = Math.max(high - low, 0.15 * Math.abs(high))
   return niceAxis(
     Number.isFinite(lower) ? Math.max(Math.min(low, lower), low - room) : low,

@@ -318,6 +318,18 @@ describe('phi figure', () => {
     expect(marksOf(figure.marks, 'line')[0]?.x).toHaveLength(81)
   })
 
+  it('shows the ends of another interval by its kind, without the threshold that belongs to Student’s t, and none where there is none', () => {
+    const drawn = { name: 'F-type', lower95_kJ_per_mol: [104, 130, null], upper95_kJ_per_mol: [126, 150, null] }
+    const figure = phiFigure(result, 'vyazovkin', 0, drawn)
+    expect(marksOf(figure.marks, 'rule').map((rule) => [rule.name, rule.at])).toEqual([
+      ['Lower end, 95 % (F-type)', 104],
+      ['Upper end, 95 % (F-type)', 126],
+    ])
+    expect(isOnAxes(figure)(104, 12.1) && isOnAxes(figure)(126, 12.1)).toBe(true)
+    expect(figure.description).toContain('F-type')
+    expect(marksOf(phiFigure(result, 'vyazovkin', 0, null).marks, 'rule')).toEqual([])
+  })
+
   it('leaves minimum and interval out where the level has none', () => {
     expect(phiFigure(result, 'vyazovkin', 2).marks.map((mark) => mark.name)).toEqual(['Φ(Ea)', 'Threshold'])
     expect(phiFigure(result, 'friedman', 0).marks).toEqual([])
@@ -328,7 +340,7 @@ describe('activation figure', () => {
   it('puts the chosen method first, with its band; levels without a number are NaN and so break the line', () => {
     const figure = activationFigure(result, ['friedman', 'starink', 'kas'], 'starink')
     expect(figure.marks.map((mark) => [mark.kind, mark.name])).toEqual([
-      ['band', '95 % interval, Starink'],
+      ['band', '95 % interval (Student-t), Starink'],
       ['points', 'Starink'],
       ['points', 'Friedman'],
     ])
@@ -339,6 +351,19 @@ describe('activation figure', () => {
     expect(Array.from(marksOf(figure.marks, 'points')[0]?.y ?? [])).toEqual([120, 140, Number.NaN])
     expect(figure.x).toMatchObject({ min: 0, max: 1 })
     expect(isOnAxes(figure)(0.5, 120 - 3.18) && isOnAxes(figure)(0.5, 141)).toBe(true)
+  })
+
+  it('draws another interval of the chosen method in place of its own, and none where there is none', () => {
+    const drawn = { name: 'jackknife', lower95_kJ_per_mol: [90, 131, null], upper95_kJ_per_mol: [150, 149, null] }
+    const figure = activationFigure(result, ['friedman', 'starink'], 'starink', drawn)
+    const [band] = marksOf(figure.marks, 'band')
+    expect(band?.name).toBe('95 % interval (jackknife), Starink')
+    expect(Array.from(band?.lower ?? [])).toEqual([90, 131, Number.NaN])
+    expect(isOnAxes(figure)(0.5, 131)).toBe(true)
+    const at = marksOf(activationAtLevel(result, ['starink'], 'starink', 1, drawn), 'points')[0]
+    expect(at).toMatchObject({ y: [140], lower: [131], upper: [149] })
+    expect(marksOf(activationFigure(result, ['starink'], 'starink', null).marks, 'band')).toEqual([])
+    expect(marksOf(activationAtLevel(result, ['starink'], 'starink', 1, null), 'points')[0]).not.toHaveProperty('lower')
   })
 
   it('leaves a level that is far out beyond the axis, and says so with its number', () => {

@@ -1,0 +1,92 @@
+import { describe, expect, it } from 'vitest'
+import type { IntervalResult, ProfileResult, UncertaintyProfile } from '../../../shared-kinetics/contract/study-result.ts'
+import type { Uncertain } from '../../state/study-state.ts'
+import { intervalKinds, intervalOffers, intervalOfKind, shownOf, uncertaintyOf } from './shown-interval.ts'
+import { friedman, result, starink } from './testing/small-result.ts'
+
+const interval = (kind: IntervalResult['kind'], lower: readonly (number | null)[], approximate = true): IntervalResult => ({
+  kind,
+  label: `the ${kind}`,
+  level: 0.95,
+  pointwise: true,
+  approximate,
+  note: `How ${kind} was made.`,
+  sources: [],
+  standardUncertainty_kJ_per_mol: lower.map(() => 1),
+  lower95_kJ_per_mol: lower,
+  upper95_kJ_per_mol: lower.map((end) => (end === null ? null : end + 10)),
+})
+const apart: UncertaintyProfile = {
+  method: 'starink',
+  intervals: [interval('jackknife', [144, 146]), interval('bootstrap', [145, 147]), interval('combined', [140, 142], false)],
+  budget: [],
+}
+const uncertain: Uncertain = {
+  about: { studyId: 'study', revision: 3, result },
+  result: { levels: result.levels, seed: 1, draws: 2000, profiles: [apart] },
+}
+const fiveRuns = [1, 2, 3, 4, 5]
+const minimising: ProfileResult = {
+  ...starink,
+  method: 'vyazovkin',
+  evidence: 'minimum',
+  otherIntervals: [interval('vyazovkin-wight-f', [143, 144])],
+}
+const reasonOf = (
+  profile: ProfileResult,
+  of: UncertaintyProfile | null,
+  programmes: readonly number[],
+  kind: string,
+): string | null | undefined => intervalOffers(profile, of, programmes).find((offer) => offer.kind === kind)?.reason
+
+describe('kinds of interval that are offered', () => {
+  it('are all there as long as nothing speaks against them, also before they are worked out', () => {
+    expect(intervalOffers(minimising, null, fiveRuns)).toEqual(intervalKinds.map((kind) => ({ kind, reason: null })))
+  })
+
+  it('say why a kind is not to be had', () => {
+    expect(reasonOf(starink, null, fiveRuns, 'vyazovkin-wight-f')).toContain('minimise Φ')
+    expect(reasonOf(starink, null, [1, 2, 3], 'jackknife')).toBe('needs four runs, here 3')
+    expect(reasonOf(starink, null, [1, 2, 3], 'bootstrap')).toBe('needs four runs, here 3')
+    expect(reasonOf(starink, null, [1, 1, 2, 3], 'jackknife')).toContain('fewer than three distinct programmes')
+    expect(reasonOf(starink, null, [1, 1, 2, 3], 'bootstrap')).toBeNull()
+    expect(reasonOf(starink, apart, fiveRuns, 'measured-sources')).toBe('not to be had for these runs')
+    const two: ProfileResult = { ...starink, lower95_kJ_per_mol: [null, null], upper95_kJ_per_mol: [null, null] }
+    expect(reasonOf(two, null, [1, 2], 'student-t')).toBe('needs three distinct programmes, here 2')
+    expect(reasonOf(two, null, [1, 2], 'measured-sources')).toBeNull()
+  })
+})
+
+describe('interval of a kind', () => {
+  it('carries its name, its qualities and how it was made', () => {
+    expect(intervalOfKind(starink, apart, 'combined')).toMatchObject({
+      label: 'the combined',
+      approximate: false,
+      note: 'How combined was made.',
+      lower95_kJ_per_mol: [140, 142],
+    })
+    expect(intervalOfKind(starink, null, 'student-t')?.note).toContain('n − 2 degrees of freedom (1 here)')
+    expect(intervalOfKind(minimising, null, 'vyazovkin-wight-f')?.upper95_kJ_per_mol).toEqual([153, 154])
+    expect(intervalOfKind(starink, null, 'jackknife')).toBeNull()
+    expect(intervalOfKind(starink, { ...apart, intervals: [interval('jackknife', [null, null])] }, 'jackknife')).toBeNull()
+  })
+
+  it('is the wanted one where the method can have it, else its own', () => {
+    const shown = (wanted: 'jackknife' | 'vyazovkin-wight-f', programmes: readonly number[]) =>
+      shownOf([starink], 'starink', programmes, uncertain, wanted)
+    expect(shown('jackknife', fiveRuns)?.interval?.lower95_kJ_per_mol).toEqual([144, 146])
+    expect(shown('vyazovkin-wight-f', fiveRuns)).toMatchObject({ kind: 'student-t', interval: { lower95_kJ_per_mol: [144.5, 145] } })
+    expect(shownOf([starink], 'starink', fiveRuns, null, 'jackknife')).toMatchObject({ kind: 'jackknife', interval: null })
+    expect(shownOf([starink], 'kas', fiveRuns, uncertain, 'student-t')).toBeNull()
+  })
+})
+
+describe('what was worked out before', () => {
+  it('stays as long as it is about the same Ea, and no longer', () => {
+    expect(uncertaintyOf(uncertain, { ...starink, r2: [1, 1] })).toBe(apart)
+    expect(uncertaintyOf(uncertain, { ...starink, Ea_kJ_per_mol: [149, 151.5] })).toBeNull()
+    expect(uncertaintyOf(uncertain, { ...starink, Ea_kJ_per_mol: [149] })).toBeNull()
+    expect(uncertaintyOf(uncertain, friedman)).toBeNull()
+    expect(uncertaintyOf(null, starink)).toBeNull()
+  })
+})

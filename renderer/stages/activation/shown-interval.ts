@@ -1,0 +1,164 @@
+import type {
+  IntervalResult,
+  LevelStatus,
+  Maybe,
+  MethodId,
+  ProfileResult,
+  UncertaintyProfile,
+} from '../../../shared-kinetics/contract/study-result.ts'
+import type { Uncertain } from '../../state/study-state.ts'
+import type { ShownKind } from '../../state/view-store.ts'
+
+/** One interval of a method as chart, table, rail and read-out show it: arrays as long as the levels. */
+export interface ShownInterval {
+  readonly kind: ShownKind
+  /** Whole name, as it stands before "95 %, pointwise". */
+  readonly label: string
+  readonly approximate: boolean
+  /** How it was made. */
+  readonly note: string
+  readonly sources: readonly string[]
+  readonly lower95_kJ_per_mol: readonly Maybe[]
+  readonly upper95_kJ_per_mol: readonly Maybe[]
+}
+
+/** A kind of interval as it is offered. */
+export interface IntervalOffer {
+  readonly kind: ShownKind
+  /** Why the method has none of this kind; null where it has one, or may have one once it is worked out. */
+  readonly reason: string | null
+}
+
+export const intervalKinds: readonly ShownKind[] = [
+  'student-t',
+  'vyazovkin-wight-f',
+  'jackknife',
+  'bootstrap',
+  'measured-sources',
+  'combined',
+]
+
+/** Short names, for buttons and the rail. */
+export const shortKinds: Readonly<Record<ShownKind, string>> = {
+  'student-t': 'Student-t',
+  'vyazovkin-wight-f': 'F-type',
+  jackknife: 'jackknife',
+  bootstrap: 'bootstrap',
+  'measured-sources': 'measured sources',
+  combined: 'combined',
+}
+
+/** Kinds that come with an evaluation; the others take longer, and are asked for apart. */
+const isOfEvaluation = (kind: ShownKind): boolean => kind === 'student-t' || kind === 'vyazovkin-wight-f'
+
+/**
+ * What resampling and measured sources say of a method, where it is about these very Ea: after a change that leaves Ea alone (a name, a stated uncertainty) what was
+ * worked out before stays in sight until the new is there.
+ */
+export function uncertaintyOf(uncertain: Uncertain | null, profile: ProfileResult): UncertaintyProfile | null {
+  const about = uncertain?.about.result.profiles.find((one) => one.method === profile.method)
+  if (uncertain === null || about === undefined) return null
+  const same =
+    about === profile ||
+    (about.Ea_kJ_per_mol.length === profile.Ea_kJ_per_mol.length && about.Ea_kJ_per_mol.every((Ea, i) => Ea === profile.Ea_kJ_per_mol[i]))
+  return same ? (uncertain.result.profiles.find((one) => one.method === profile.method) ?? null) : null
+}
+
+/**
+ * The interval of one kind by a method; null where there is none, or none yet.
+ *
+ * @param apart - what takes longer than an evaluation, where it is at hand
+ */
+export function intervalOfKind(profile: ProfileResult, apart: UncertaintyProfile | null, kind: ShownKind): ShownInterval | null {
+  if (kind === 'student-t') return hasInterval(profile) ? studentT(profile) : null
+  const found = [...profile.otherIntervals, ...(apart?.intervals ?? [])].find((one) => one.kind === kind)
+  return found === undefined || !hasInterval(found) ? null : withLabel(found)
+}
+
+/** The kind that is shown: the wanted one, or the method's own where it can have none of the wanted kind. */
+export function kindShown(wanted: ShownKind, offers: readonly IntervalOffer[]): ShownKind {
+  return offers.some((offer) => offer.kind === wanted && offer.reason === null) ? wanted : 'student-t'
+}
+
+/** Every kind, with the reason why the method has none of it. */
+export function intervalOffers(
+  profile: ProfileResult,
+  apart: UncertaintyProfile | null,
+  programmes: readonly number[],
+): readonly IntervalOffer[] {
+  return intervalKinds.map((kind) => {
+    const isHad = intervalOfKind(profile, apart, kind) !== null
+    const isToCome = apart === null && !isOfEvaluation(kind)
+    const reason = isHad ? null : (tooFewRuns(kind, programmes) ?? (isToCome ? null : noneOfKind(kind, profile)))
+    return { kind, reason }
+  })
+}
+
+/** Counts that a kind asks for, known before anything is worked out. */
+function tooFewRuns(kind: ShownKind, programmes: readonly number[]): string | null {
+  const distinct = new Set(programmes).size
+  if (distinct < 3 && kind !== 'measured-sources') return `needs three distinct programmes, here ${distinct}`
+  if (kind !== 'jackknife' && kind !== 'bootstrap') return null
+  if (programmes.length < 4) return `needs four runs, here ${programmes.length}`
+  const leavesThree = programmes.every((left) => distinct - (programmes.filter((one) => one === left).length === 1 ? 1 : 0) >= 3)
+  return kind === 'bootstrap' || leavesThree ? null : 'leaving out a run would leave fewer than three distinct programmes'
+}
+
+function noneOfKind(kind: ShownKind, profile: ProfileResult): string {
+  if (kind === 'vyazovkin-wight-f' && profile.evidence === 'line') return 'belongs to methods that minimise Φ: Vyazovkin, incremental'
+  return profile.status.some((status: LevelStatus) => status === 'ok') ? 'not to be had for these runs' : 'no level has an Ea'
+}
+
+function hasInterval({
+  lower95_kJ_per_mol: lower,
+  upper95_kJ_per_mol: upper,
+}: Pick<IntervalResult, 'lower95_kJ_per_mol' | 'upper95_kJ_per_mol'>): boolean {
+  return lower.some((end) => end !== null) || upper.some((end) => end !== null)
+}
+
+const studentT = (profile: ProfileResult): ShownInterval => ({
+  kind: 'student-t',
+  label: 'Student-t of the regression',
+  approximate: false,
+  note: `Standard error of Ea from the scatter of the runs, times Student's t with n − 2 degrees of freedom (${profile.interval.dof} here).`,
+  sources: [],
+  lower95_kJ_per_mol: profile.lower95_kJ_per_mol,
+  upper95_kJ_per_mol: profile.upper95_kJ_per_mol,
+})
+
+const withLabel = ({ kind, label, approximate, note, sources, lower95_kJ_per_mol, upper95_kJ_per_mol }: IntervalResult): ShownInterval => ({
+  kind,
+  label,
+  approximate,
+  note,
+  sources,
+  lower95_kJ_per_mol,
+  upper95_kJ_per_mol,
+})
+
+/** `95 %, pointwise, approximate`: what holds of an interval besides its kind. */
+export const intervalQualities = ({ approximate }: ShownInterval): string => `95 %, pointwise${approximate ? ', approximate' : ''}`
+
+export interface ShownOfMethod {
+  readonly profile: ProfileResult
+  readonly apart: UncertaintyProfile | null
+  readonly offers: readonly IntervalOffer[]
+  readonly kind: ShownKind
+  readonly interval: ShownInterval | null
+}
+
+/** Everything the sheet shows of a method's intervals. */
+export function shownOf(
+  profiles: readonly ProfileResult[],
+  method: MethodId | null,
+  programmes: readonly number[],
+  uncertain: Uncertain | null,
+  wanted: ShownKind,
+): ShownOfMethod | null {
+  const profile = profiles.find((one) => one.method === method)
+  if (profile === undefined) return null
+  const apart = uncertaintyOf(uncertain, profile)
+  const offers = intervalOffers(profile, apart, programmes)
+  const kind = kindShown(wanted, offers)
+  return { profile, apart, offers, kind, interval: intervalOfKind(profile, apart, kind) }
+}
