@@ -2,17 +2,21 @@ import { createStore, type StoreApi } from 'zustand/vanilla'
 import type {
   HostEvent,
   HostTransport,
+  RefusedFile,
   RequestAnswers,
   RequestInput,
   RequestName,
   StudySnapshot,
 } from '../../shared-kinetics/contract/host-api.ts'
+import { rateConstantLimits, type RateConstantReadOptions } from '../../shared-kinetics/contract/rate-constant-schema.ts'
 import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { HostUnreachable } from '../transport/host-unreachable.ts'
 import { createEvaluator } from './evaluator.ts'
 import { importFiles } from './import-files.ts'
 import { rebased, replicaOf, withChange, withFirstAnswered } from './replica.ts'
+import { watchRateConstants } from './rate-constant-evaluator.ts'
+import { isTable, readTable, type TableOrigin } from './table-offer.ts'
 import { createUncertaintyAsker, type UncertaintyAsker } from './uncertainty-asker.ts'
 import { initialStudyState, type StudyState } from './study-state.ts'
 
@@ -32,10 +36,10 @@ export interface StudySession {
   /** Intervals by resampling and from measured sources: asked for in the background while somebody looks at them. */
   readonly uncertainty: Pick<UncertaintyAsker, 'want' | 'again' | 'cancel' | 'settled'>
   /** The answer, or null when it could not be had (the store then says why). */
-  readonly ask: <Name extends 'study.save-copy' | 'results.export'>(
-    name: Name,
-    input: AskInput<Name>,
-  ) => Promise<RequestAnswers[Name] | null>
+  readonly ask: <Name extends AskName>(name: Name, input: AskInput<Name>) => Promise<RequestAnswers[Name] | null>
+  /** Reads a table of rate constants and offers it; what is offered already gives way. */
+  readonly offerTable: (origin: TableOrigin, options?: RateConstantReadOptions) => Promise<void>
+  readonly withdrawOffer: () => void
   readonly readRecent: () => Promise<void>
   readonly refresh: () => Promise<void>
   readonly dismissRefused: () => void
@@ -49,11 +53,18 @@ export type OpenRequest =
   | { readonly name: 'study.open-demo' }
   | { readonly name: 'study.open-recent'; readonly studyId: string }
 
+type AskName = 'study.save-copy' | 'results.export' | 'rate-constants.from-holds'
+
 /** The revision is the session's own business. */
 type AskInput<Name extends RequestName> = Omit<RequestInput<Name>, 'revision'>
 
 /** A change that meets newer studies again and again is given up after so many tries. */
 const triesOnConflict = 5
+
+/** Refused files that are tried as tables of rate constants; a folder of damaged exports is not read twice. */
+const tablesTried = 5
+
+const isSavedStudy = (file: File): boolean => /\.rampfold$/i.test(file.name)
 
 const isConflict = (error: unknown): boolean => error instanceof KineticsError && error.code === 'revision-conflict'
 
@@ -63,6 +74,7 @@ export function createStudySession(transport: HostTransport): StudySession {
   const get = store.getState
   const evaluator = createEvaluator(transport, store, refresh)
   const uncertainty = createUncertaintyAsker(transport, store)
+  watchRateConstants(transport, store, refresh)
   let steps: Promise<void> = Promise.resolve()
   let waitingSteps = 0
   let importControl: AbortController | null = null
@@ -181,6 +193,33 @@ export function createStudySession(transport: HostTransport): StudySession {
     }
   }
 
+  async function offerTable(origin: TableOrigin, options: RateConstantReadOptions = {}): Promise<void> {
+    const offer = { origin, options, read: null }
+    set({ offer })
+    try {
+      const read = await readTable(transport, origin, options)
+      if (get().offer === offer) set({ offer: { ...offer, read } })
+    } catch (error) {
+      if (get().offer === offer && origin.kind === 'file') set({ offer: null })
+      explain(error)
+    }
+  }
+
+  /** The files still refused after the first that reads as a table of rate constants has been offered; only a study without runs takes one. */
+  async function withoutTable(refused: readonly RefusedFile[], files: readonly File[]): Promise<readonly RefusedFile[]> {
+    if (get().replica?.document.runs.length !== 0) return refused
+    for (const one of refused.slice(0, tablesTried)) {
+      const file = files.find(({ name }) => name === one.fileName)
+      if (file === undefined || file.size > rateConstantLimits.bytes) continue
+      const origin = { kind: 'file', file } as const
+      const read = await readTable(transport, origin, {})
+      if (!isTable(read)) continue
+      set({ offer: { origin, options: {}, read } })
+      return refused.filter((other) => other !== one)
+    }
+    return refused
+  }
+
   return {
     store,
     async start() {
@@ -202,10 +241,18 @@ export function createStudySession(transport: HostTransport): StudySession {
           request.name === 'study.open-recent'
             ? await transport.call('study.open-recent', { studyId: request.studyId })
             : await transport.call(request.name, {})
-        set({ refused: [], notice: null })
+        set({ refused: [], notice: null, offer: null })
         adopt(answer)
       }),
+    offerTable,
+    withdrawOffer: () => set({ offer: null }),
     async importFiles(files) {
+      const [only] = files
+      if (get().replica?.document.rateConstants != null && files.length === 1 && only !== undefined && !isSavedStudy(only)) {
+        // Runs have no place beside such a table, so the file can only be another one.
+        await offerTable({ kind: 'file', file: only })
+        return
+      }
       if (importControl !== null) {
         set({ notice: { kind: 'failure', text: 'Files are being read already. Wait until they are in, or cancel.' } })
         return
@@ -213,8 +260,8 @@ export function createStudySession(transport: HostTransport): StudySession {
       importControl = new AbortController()
       try {
         const answer = await importFiles(transport, files, importControl.signal, (importing) => set({ importing }))
-        set({ refused: answer.refused })
         if (answer.snapshot !== null) adopt(answer.snapshot)
+        set({ refused: await withoutTable(answer.refused, files) })
         evaluator.wanted()
       } catch (error) {
         explain(error)
@@ -235,10 +282,10 @@ export function createStudySession(transport: HostTransport): StudySession {
     cancelEvaluation: () => evaluator.cancel(),
     evaluateAgain: () => evaluator.again(),
     uncertainty,
-    async ask<Name extends 'study.save-copy' | 'results.export'>(name: Name, input: AskInput<Name>) {
+    async ask<Name extends AskName>(name: Name, input: AskInput<Name>) {
       let answer: RequestAnswers[Name] | null = null
       await inOrder(async () => {
-        const full = name === 'results.export' ? { ...input, revision: revision() } : input
+        const full = name === 'study.save-copy' ? input : { ...input, revision: revision() }
         answer = await transport.call(name, full as RequestInput<Name>)
       })
       return answer

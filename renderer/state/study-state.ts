@@ -1,6 +1,7 @@
 import type { RecentStudy, RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
-import type { StudyResult, UncertaintyResult } from '../../shared-kinetics/contract/study-result.ts'
+import type { RateConstantsResult, StudyResult, UncertaintyResult } from '../../shared-kinetics/contract/study-result.ts'
 import type { Replica } from './replica.ts'
+import type { TableOffer } from './table-offer.ts'
 
 export type Connection = { readonly kind: 'connecting' } | { readonly kind: 'ready' } | { readonly kind: 'lost'; readonly message: string }
 
@@ -24,6 +25,13 @@ export interface Evaluated {
   readonly result: StudyResult
 }
 
+/** What follows from the table of rate constants. */
+export interface Rated {
+  readonly studyId: string
+  readonly revision: number
+  readonly result: RateConstantsResult
+}
+
 /** Intervals by resampling and from measured sources, and the results that they are about. */
 export interface Uncertain {
   readonly about: Evaluated
@@ -39,6 +47,10 @@ export interface StudyState {
   /** May be about earlier results than those at hand. */
   readonly uncertain: Uncertain | null
   readonly uncertaintyWork: Evaluation
+  /** null in a study without a table of rate constants. */
+  readonly rated: Rated | null
+  /** A table that waits to be taken into the study. */
+  readonly offer: TableOffer | null
   readonly importing: ImportWork | null
   readonly refused: readonly RefusedFile[]
   /** One sentence about the last thing that went wrong or was done; null when dismissed. */
@@ -53,6 +65,8 @@ export const initialStudyState: StudyState = {
   evaluation: { kind: 'settled' },
   uncertain: null,
   uncertaintyWork: { kind: 'settled' },
+  rated: null,
+  offer: null,
   importing: null,
   refused: [],
   notice: null,
@@ -61,6 +75,9 @@ export const initialStudyState: StudyState = {
 
 /** Whether the results on the screen belong to an earlier state of the study. */
 export function isStale(state: StudyState): boolean {
-  if (state.evaluated === null || state.replica === null) return false
-  return state.replica.pending.length > 0 || state.evaluated.revision !== state.replica.confirmed.revision
+  const { evaluated, rated, replica } = state
+  if (replica === null || (evaluated === null && rated === null)) return false
+  const isBehind = (results: { readonly revision: number } | null): boolean =>
+    results !== null && results.revision !== replica.confirmed.revision
+  return replica.pending.length > 0 || isBehind(evaluated) || isBehind(rated)
 }

@@ -9,6 +9,12 @@ export type ShownKind = 'student-t' | IntervalKind
 /** What stands beneath Ea against conversion. */
 export type Beneath = 'levels' | 'budget' | 'peaks'
 
+/** A row or a prediction of the table of rate constants, by its place in the study. */
+export interface RateConstantPlace {
+  readonly kind: 'row' | 'prediction'
+  readonly index: number
+}
+
 /** What is looked at and how. Never part of the study, never undone. */
 export interface ViewState {
   readonly stage: Stage
@@ -23,6 +29,9 @@ export interface ViewState {
   readonly beneath: Beneath
   /** null takes temperature for constant heating rates and time for everything else. */
   readonly against: 'temperature' | 'time' | null
+  /** What the Activation energy stage shows of a study that holds rate constants made from its runs. */
+  readonly basis: 'runs' | 'rate-constants'
+  readonly rateConstant: RateConstantPlace
   /** The run that a finding or a row points at. */
   readonly pointedRun: string | null
   readonly theme: Theme
@@ -36,6 +45,8 @@ const initialViewState: ViewState = {
   interval: 'student-t',
   beneath: 'levels',
   against: null,
+  basis: 'runs',
+  rateConstant: { kind: 'row', index: 0 },
   pointedRun: null,
   theme: 'system',
 }
