@@ -32,7 +32,7 @@ export function rateConstantsNotes({ document, result, program }: RateConstantsS
 function originOf({ kind, name }: RateConstantsSource['result']['source']): string {
   switch (kind) {
     case 'typed':
-      return 'typed'
+      return name === null ? 'typed' : `typed: ${name}`
     case 'pasted':
       return 'pasted'
     case 'file':

@@ -122,7 +122,8 @@ export async function openStudyStore(dataFolder: string, token: string, now: () 
         // One damaged study must not hide the others.
         const document = await readDocument(id).catch(() => null)
         if (document === null) continue
-        found.push({ studyId: id, name: document.name, runs: document.runs.length, changedAt: changed.mtime.toISOString() })
+        const rateConstants = document.rateConstants?.rows.length ?? 0
+        found.push({ studyId: id, name: document.name, runs: document.runs.length, rateConstants, changedAt: changed.mtime.toISOString() })
       }
       return found.toSorted((a, b) => b.changedAt.localeCompare(a.changedAt)).slice(0, longestRecentList)
     },

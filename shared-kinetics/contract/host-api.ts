@@ -117,6 +117,8 @@ export interface RecentStudy {
   readonly studyId: string
   readonly name: string
   readonly runs: number
+  /** Rows of its table of rate constants; 0 where it holds none. */
+  readonly rateConstants: number
   /** ISO 8601, UTC. */
   readonly changedAt: string
 }

@@ -2,6 +2,7 @@ import type {
   HostEvent,
   HostTransport,
   ImportAnswer,
+  RateConstantsRead,
   RequestAnswers,
   RequestInput,
   RequestName,
@@ -9,7 +10,7 @@ import type {
 } from '../../../shared-kinetics/contract/host-api.ts'
 import { applyChange, labelOfChange, type StudyChange } from '../../../shared-kinetics/contract/study-change.ts'
 import { emptyStudy, type StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
-import type { RunInfo, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
+import type { RateConstantsResult, RateConstantTable, RunInfo, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
 
 type Call = { readonly [Name in RequestName]: { readonly name: Name; readonly input: RequestInput<Name> } }[RequestName]
@@ -21,6 +22,9 @@ export interface MemoryHostOptions {
   readonly evaluate?: (document: StudyDocument) => StudyResult | Promise<StudyResult>
   /** Runs made of uploaded files, by name. */
   readonly read?: (fileNames: readonly string[]) => { readonly runs: readonly RunInfo[]; readonly refused: ImportAnswer['refused'] }
+  /** What a text or a file (by its name) reads as; no table where left out. */
+  readonly readTable?: (textOrName: string) => RateConstantsRead
+  readonly evaluateTable?: (table: RateConstantTable) => RateConstantsResult
   /** Called before every request is answered; what it throws is the answer. */
   readonly before?: (call: Call) => void | Promise<void>
 }
@@ -40,6 +44,12 @@ interface Past {
   readonly document: StudyDocument
   readonly label: string
 }
+
+const noTable = (fileName: string): RateConstantsRead => ({
+  kind: 'refused',
+  refused: { fileName, line: null, reason: 'There is no table of rate constants.', remedy: 'Give one row for each temperature.' },
+  ask: null,
+})
 
 export function createMemoryHost(options: MemoryHostOptions = {}): MemoryHost {
   const listeners = new Set<(event: HostEvent) => void>()
@@ -135,6 +145,17 @@ export function createMemoryHost(options: MemoryHostOptions = {}): MemoryHost {
         const { runs, refused } = options.read?.(names) ?? { runs: [], refused: [] }
         const after = runs.length === 0 ? snapshot() : change({ kind: 'add-runs', runs: [...runs] as never, importNotes: [] })
         return { addedRunIds: runs.map((run) => run.id), refused, openedStudy: false, snapshot: after }
+      }
+      case 'rate-constants.read-text':
+        return options.readTable?.(call.input.text) ?? noTable('The pasted table')
+      case 'rate-constants.read-file': {
+        const { fileName = '' } = received.get(call.input.uploadId) ?? {}
+        return options.readTable?.(fileName) ?? noTable(fileName)
+      }
+      case 'rate-constants.evaluate': {
+        checkRevision(call.input.revision)
+        if (options.evaluateTable === undefined || document.rateConstants === null) throw new Error('this host evaluates no such table')
+        return { revision, result: options.evaluateTable(document.rateConstants) }
       }
       case 'work.cancel':
         return {}
