@@ -78,6 +78,7 @@ export const sources = {
   'iso-11358-2':
     'ISO 11358-2, Plastics, Thermogravimetry (TG) of polymers, Part 2: Determination of activation energy (scope read; equation from memory)',
   'jcgm-100-2008': 'JCGM 100:2008, Evaluation of measurement data: guide to the expression of uncertainty in measurement',
+  'abernethy-1985': 'R. B. Abernethy, R. P. Benedict, R. B. Dowdell, J. Fluids Eng. 107 (1985) 161 (cited from memory)',
   'jcgm-101-2008': 'JCGM 101:2008, Supplement 1 to the guide: propagation of distributions using a Monte Carlo method',
   'levenberg-1944': 'K. Levenberg, Q. Appl. Math. 2 (1944) 164 (cited from memory)',
   'marquardt-1963': 'D. W. Marquardt, J. Soc. Ind. Appl. Math. 11 (1963) 431 (cited from memory)',

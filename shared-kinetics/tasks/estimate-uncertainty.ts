@@ -63,7 +63,7 @@ const combined = (result: IsoconversionalResult, budget: Budget): IntervalResult
   intervalResult(
     'combined',
     combinedInterval(result, budget),
-    "The regression's standard error with what no scatter shows: common error of temperature, lag and choice of baseline, as stated; Student's t with effective degrees of freedom. Pointwise.",
+    "The regression's standard error with what no scatter shows: common error of temperature, lag and choice of baseline, as stated; Student's t times the one and the normal quantile times the other, added in squares. Pointwise.",
   )
 
 /** Jackknife and bootstrap over the runs, each where there are runs enough for it. */

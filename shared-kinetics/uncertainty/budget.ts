@@ -100,7 +100,7 @@ function sensitivity(model: EnergyModel, level: number, run: number): Sensitivit
       perKelvin,
       perSecond: gain * (form.perSecond[k] as number) + perKelvin * (model.heatingRate_K_per_s[k] as number),
       perSecondBefore: 0,
-      perLnHeatingRate: gain * form.perLnHeatingRate,
+      perLnHeatingRate: gain * (form.perLnHeatingRate + (model.timeIsRebuilt[run] === 1 ? form.perLnReactionRate : 0)),
       perLnReactionRate: gain * form.perLnReactionRate,
     }
   }

@@ -59,7 +59,7 @@ function ofLine(model: EnergyModel, form: LineForm, level: number, disturbance: 
       (form.y[k] as number) -
       (exponent === 0 ? 0 : exponent * Math.log(disturbed / T)) +
       (form.perSecond[k] as number) * time +
-      form.perLnHeatingRate * (disturbance.lnHeatingRate[i] as number) +
+      (form.perLnHeatingRate + (model.timeIsRebuilt[i] === 1 ? form.perLnReactionRate : 0)) * (disturbance.lnHeatingRate[i] as number) +
       form.perLnReactionRate * (disturbance.lnReactionRate[k] as number)
     meanX += (x[i] as number) / runs
     meanY += (y[i] as number) / runs

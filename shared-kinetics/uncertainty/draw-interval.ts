@@ -12,7 +12,8 @@ export interface DrawInterval {
 const leastShare = 0.99
 
 /**
- * Standard deviation, and the quantiles 0.025 and 0.975, of the draws at each level; NaN where there is none.
+ * Standard deviation, and the quantiles 0.025 and 0.975, of the draws at each level; NaN where there is none. The quantile p of M draws stands at place p(M + 1) of them,
+ * in ascending order and between two by the straight line, so that one more draw would lie between the two with probability 0.95, however many there are (from 39 on).
  *
  * @param energies - [draw · levels + level], in J/mol
  * @source jcgm-101-2008 7.7 (probabilistically symmetric interval)
@@ -42,7 +43,7 @@ export function drawInterval(energies: Float64Array, levels: number): DrawInterv
 }
 
 function quantileOf(sorted: Float64Array, p: number): number {
-  const place = p * (sorted.length - 1)
+  const place = Math.min(sorted.length - 1, Math.max(0, p * (sorted.length + 1) - 1))
   const below = Math.floor(place)
   const from = sorted[below] ?? Number.NaN
   return from + (place - below) * ((sorted[below + 1] ?? from) - from)

@@ -20,6 +20,8 @@ export interface EnergyModel {
   readonly Ea: Column<'J/mol'>
   /** dT/dt where the run passes the level. */
   readonly heatingRate_K_per_s: Float64Array
+  /** One entry a run: 1 where time was rebuilt from a stated heating rate, so that its durations and reaction rates bear the error of that rate; else 0. */
+  readonly timeIsRebuilt: Uint8Array
   readonly form: LineForm | IntegralForm
 }
 
@@ -59,7 +61,7 @@ export interface IntegralForm {
   /** -d ln/de of these two: 1/T at the level and at the one before, less u. In 1/K. */
   readonly perSecondFall: Float64Array
   readonly perSecondBeforeFall: Float64Array
-  /** 1 where J is taken in closed form, so that it goes with 1/beta; else 0. */
+  /** 1 where J goes with 1/beta: it is taken in closed form, or its duration was rebuilt from beta; else 0. */
   readonly holdsHeatingRate: Uint8Array
 }
 
@@ -97,12 +99,17 @@ export function energyModel(series: SeriesAtLevels, result: IsoconversionalResul
       heatingRate_K_per_s[level * runs + i] = localHeatingRate(run, level)
     })
   }
-  const common = { method: result.method, runs, levels, Ea: result.Ea, heatingRate_K_per_s }
+  const timeIsRebuilt = Uint8Array.from(series.runs, (run) => (hasRebuiltTime(run) ? 1 : 0))
+  const common = { method: result.method, runs, levels, Ea: result.Ea, heatingRate_K_per_s, timeIsRebuilt }
   const { method } = result
   if (method === 'vyazovkin') return { ...common, form: integralForm(series, result, (run) => timeIntegral(run, largestEa)) }
   if (method === 'vyazovkin-incremental') return { ...common, form: integralForm(series, result, (run) => segmentIntegral(run, largestEa)) }
   return { ...common, form: lineForm(series, result, method) }
 }
+
+/** A heating rate that was not measured is one that time was rebuilt from. */
+const hasRebuiltTime = ({ programme }: RunAtLevels): boolean =>
+  programme.kind === 'constant-heating-rate' && programme.source !== 'measured'
 
 /** dT/dt where a run passes a level: its heating rate, 0 for a hold, and for any other programme the slope of the history over 1 % of the time on either side. */
 function localHeatingRate({ programme, history, time_s }: RunAtLevels, level: number): number {
@@ -203,8 +210,8 @@ function integralForm(series: SeriesAtLevels, result: IsoconversionalResult, int
         form.perSecondBefore[k] = Math.exp((-Ea / R) * before - lnJ)
         form.perSecondBeforeFall[k] = before - inverseT
       }
-      // From level to level the duration is a measured one.
-      if (followsRamp(run) && !(isIncremental && level > 0)) form.holdsHeatingRate[k] = 1
+      // From level to level the duration is a measured one, unless time was rebuilt from the heating rate.
+      if (followsRamp(run) && (!(isIncremental && level > 0) || hasRebuiltTime(run))) form.holdsHeatingRate[k] = 1
     })
   })
   return form

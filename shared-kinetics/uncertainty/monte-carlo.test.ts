@@ -5,9 +5,8 @@ import { Cancelled } from '../errors.ts'
 import { methods } from '../isoconversional/registry.ts'
 import { methodIds, type IsoconversionalResult, type MethodId } from '../isoconversional/result.ts'
 import { randomStream } from '../numerics/random.ts'
-import { studentTQuantile } from '../numerics/student-t.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
-import { column } from '../units/quantity.ts'
+import { column, type Column } from '../units/quantity.ts'
 import { budgetOf } from './budget.ts'
 import { combinedInterval } from './combined-interval.ts'
 import { disturbedEnergy, roomFor, type Disturbance } from './disturbed-energy.ts'
@@ -50,6 +49,14 @@ const modelOf = (method: MethodId): EnergyModel => energyModel(series, resultOf(
 
 const entries = rates_K_per_min.length * levels.length
 const zeros = (length: number): Float64Array => new Float64Array(length)
+
+const undisturbed: Disturbance = {
+  temperature_K: zeros(5),
+  lnHeatingRate: zeros(5),
+  lag_s: 0,
+  time_s: zeros(entries),
+  lnReactionRate: zeros(entries),
+}
 
 /** Errors of the size that real measurements have, from a seed. */
 function someDisturbance(draw: number): Disturbance {
@@ -132,6 +139,52 @@ describe.each(onRamps)('errors of the measurement carried into Ea by %s', (metho
   })
 })
 
+describe('a stated heating rate that time was rebuilt from', () => {
+  const ofRates = (lnHeatingRate: Float64Array): SeriesAtLevels => {
+    const exact = disturbedSeries(null)
+    return {
+      ...exact,
+      runs: exact.runs.map((run, i) => {
+        const factor = Math.exp(lnHeatingRate[i] ?? Number.NaN)
+        const programme = constantHeatingRate((rates_K_per_min[i] ?? Number.NaN) * factor)
+        return {
+          ...run,
+          programme: { ...programme, source: 'nominal' },
+          time_s: column(
+            run.time_s.map((time) => time / factor),
+            's',
+          ),
+          reactionRate_per_s: column(
+            run.reactionRate_per_s.map((rate) => rate * factor),
+            '1/s',
+          ),
+        }
+      }),
+    }
+  }
+  const exact = ofRates(zeros(5))
+
+  it.each(onRamps)('carries its error into Ea by %s, through durations and reaction rates as well', (method) => {
+    const model = energyModel(exact, resultOf(method, exact))
+    const room = roomFor(5)
+    for (let draw = 0; draw < 10; draw++) {
+      const { lnHeatingRate } = someDisturbance(draw)
+      const disturbance = { ...undisturbed, lnHeatingRate }
+      const { Ea } = resultOf(method, ofRates(lnHeatingRate))
+      levels.forEach((_, level) => {
+        const change = (Ea[level] ?? Number.NaN) - (model.Ea[level] ?? Number.NaN)
+        expect(Math.abs(change)).toBeGreaterThan(1)
+        const found = disturbedEnergy(model, level, disturbance, room) - (model.Ea[level] ?? Number.NaN)
+        expect(Math.abs(found - change)).toBeLessThan((method === 'astm-e1641' ? 0.06 : 0.01) * Math.abs(change) + 10)
+      })
+    }
+    const [energies] = drawEnergies([model], alone['heating-rate'], { seed: 3, from: 0, to: 3000 }, quiet)
+    const { standardUncertainty } = drawInterval(energies ?? new Float64Array(0), levels.length)
+    const told = budgetOf(model, alone['heating-rate'])['heating-rate']
+    levels.forEach((_, level) => expect((standardUncertainty[level] ?? Number.NaN) / (told[level] ?? Number.NaN)).toBeCloseTo(1, 1))
+  })
+})
+
 describe('draws', () => {
   const models = onRamps.map(modelOf)
   const all = { ...sources({ temperatureCommon_K: 0.5, temperatureRun_K: 0.5, lag_s: 1, heatingRate: 0.01, noise_s: 0.2, lnRate: 0.01 }) }
@@ -189,6 +242,24 @@ describe('draws', () => {
     expect(drawInterval(energies ?? new Float64Array(0), 4).lower95[0]).toBeNaN()
   })
 
+  it('have quantiles between which one more draw lies with probability 0.95, however few they are', () => {
+    const random = randomStream(13)
+    const sets = 4000
+    const inside = Array.from({ length: sets }, () => {
+      const { lower95, upper95 } = drawInterval(Float64Array.from({ length: 59 }, random.normal), 1)
+      const another = random.normal()
+      return (lower95[0] ?? 0) <= another && another <= (upper95[0] ?? 0)
+    }).filter(Boolean).length
+    // Four standard errors of a share of 4000.
+    expect(Math.abs(inside / sets - 0.95)).toBeLessThan(0.014)
+    // At places 1 and 39 of 39: the first and the last.
+    const { lower95, upper95 } = drawInterval(
+      Float64Array.from({ length: 39 }, (_, i) => 39 - i),
+      1,
+    )
+    expect([lower95[0], upper95[0]]).toEqual([1, 39])
+  })
+
   it('have the quantiles of the normal distribution where they are normal', () => {
     const random = randomStream(9)
     const normals = Float64Array.from({ length: 40_000 }, () => 100 + 3 * random.normal())
@@ -207,19 +278,45 @@ describe('the regression with what its scatter cannot show', () => {
     budgetOf(energyModel(disturbed, result), sources(change))
 
   it('is the regression alone where nothing else is stated, or where the scatter shows it', () => {
-    const { lower95, dof } = combinedInterval(result, budget({ temperatureRun_K: 3, heatingRate: 0.05, noise_s: 5 }))
+    const { lower95, upper95 } = combinedInterval(result, budget({ temperatureRun_K: 3, heatingRate: 0.05, noise_s: 5 }))
     lower95.forEach((value, level) => expect(value).toBeCloseTo(result.lower95[level] ?? Number.NaN, 6))
-    dof.forEach((value) => expect(value).toBeCloseTo(3, 9))
+    upper95.forEach((value, level) => expect(value).toBeCloseTo(result.upper95[level] ?? Number.NaN, 6))
   })
 
-  it('adds the rest in squares, and its quantile goes to that of the normal distribution', () => {
-    const { standardUncertainty, lower95, dof } = combinedInterval(result, budget({ temperatureCommon_K: 400 }))
+  it('adds the rest in squares, each part with the quantile of its own distribution', () => {
+    const { standardUncertainty, lower95 } = combinedInterval(result, budget({ temperatureCommon_K: 400 }))
     const u = standardUncertainty[0] ?? Number.NaN
     expect(u ** 2).toBeCloseTo(
       (result.standardError[0] ?? 0) ** 2 + (budget({ temperatureCommon_K: 400 })['temperature-common'][0] ?? 0) ** 2,
       3,
     )
-    expect(lower95[0]).toBeCloseTo((result.Ea[0] ?? 0) - studentTQuantile(0.975, dof[0] ?? 1) * u, 6)
-    expect(dof[0]).toBeGreaterThan(3000)
+    const common = budget({ temperatureCommon_K: 400 })['temperature-common'][0] ?? 0
+    // t(0.975; 3) and the quantile of the normal distribution (Abramowitz & Stegun 1964, tables 26.10 and 26.1).
+    expect((result.Ea[0] ?? 0) - (lower95[0] ?? 0)).toBeCloseTo(Math.hypot(3.182446 * (result.standardError[0] ?? 0), 1.959964 * common), 0)
+  })
+
+  it.each([1, 2, 3, 4])('holds the true value in 95 cases of 100 or a few more, with %i degrees of freedom', (dof) => {
+    // Scatter of variance 1 known from so many degrees of freedom, and a common error known as stated.
+    const random = randomStream(21, dof)
+    for (const stated of [0.3, 1, 3]) {
+      let held = 0
+      for (let k = 0; k < 4000; k++) {
+        const squares = Array.from({ length: dof }, () => random.normal() ** 2).reduce((sum, value) => sum + value, 0)
+        const one = (value: number): Column<'J/mol'> => column(Float64Array.of(value), 'J/mol')
+        const { lower95, upper95 } = combinedInterval(
+          {
+            ...result,
+            interval: { ...result.interval, dof },
+            Ea: one(random.normal() + stated * random.normal()),
+            standardError: one(Math.sqrt(squares / dof)),
+          },
+          { ...budget({}), 'temperature-common': one(stated), 'temperature-lag': one(0), baseline: one(0) },
+        )
+        if ((lower95[0] ?? 1) <= 0 && 0 <= (upper95[0] ?? -1)) held++
+      }
+      // Four standard errors of a share of 4000.
+      expect(held / 4000).toBeGreaterThan(0.95 - 0.014)
+      expect(held / 4000).toBeLessThan(0.987 + 0.008)
+    }
   })
 })
