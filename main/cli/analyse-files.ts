@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto'
 import type { FileOut, RefusedFile, TableStyle } from '../../shared-kinetics/contract/host-api.ts'
 import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
+import { naturalOrder } from '../../shared-kinetics/contract/natural-order.ts'
 import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../shared-kinetics/errors.ts'
@@ -86,7 +87,7 @@ async function applied(host: Host, change: StudyChange): Promise<void> {
 function ratesByRun(rates: readonly number[] | null, files: readonly InputFile[], document: StudyDocument): readonly StudyChange[] {
   if (rates === null) return []
   const runs = [...bySha256(files).keys()].flatMap((sha256) =>
-    document.runs.filter((run) => run.file.sha256 === sha256).toSorted((one, other) => byNumber.compare(one.id, other.id)),
+    document.runs.filter((run) => run.file.sha256 === sha256).toSorted((one, other) => naturalOrder(one.id, other.id)),
   )
   if (runs.length !== rates.length) {
     throw new UsageError(
@@ -99,9 +100,6 @@ function ratesByRun(rates: readonly number[] | null, files: readonly InputFile[]
 /** Names repeat from folder to folder; contents tell files apart, since the same one is never taken twice. */
 const bySha256 = (files: readonly InputFile[]): ReadonlyMap<string, InputFile> =>
   new Map(files.map((file) => [createHash('sha256').update(file.bytes).digest('hex'), file]))
-
-/** A run's id ends in its number in the file. */
-const byNumber = new Intl.Collator('en', { numeric: true })
 
 /** Every file that cannot be used, with path, line, reason and remedy. */
 export function refusedText(refused: readonly RefusedFile[], files: readonly InputFile[]): string {

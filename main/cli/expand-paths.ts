@@ -2,7 +2,7 @@ import { readdir, readFile, stat } from 'node:fs/promises'
 import { basename, join, resolve } from 'node:path'
 import { exportsAmong, exportSuffixWords } from '../../shared-kinetics/contract/export-names.ts'
 import { largestUploadBytes } from '../../shared-kinetics/contract/host-api.ts'
-import { savedCopySuffix } from '../study/saved-copy.ts'
+import { savedCopySuffix } from '../study/saved-copy-suffix.ts'
 import { InputError } from './cli-io.ts'
 
 /** One file that was named, or found in a folder that was named. */

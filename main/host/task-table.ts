@@ -4,7 +4,6 @@ import { refusedFile } from '../import/import-refusal.ts'
 import type { EvaluationCache } from '../../shared-kinetics/tasks/memo.ts'
 import { taskMap } from '../../shared-kinetics/tasks/task-map.ts'
 import { shareColumns } from '../study/share-columns.ts'
-import { openSavedCopy, packSavedCopy } from '../study/saved-copy.ts'
 import type { TaskTable } from './host-tasks.ts'
 
 /**
@@ -31,7 +30,8 @@ export function createTaskTable(importOptions: ImportOptions = {}): TaskTable {
         return { kind: 'refused', refused }
       }
     },
-    'pack-saved-copy': packSavedCopy,
-    'open-saved-copy': ({ bytes }) => openSavedCopy(new Uint8Array(bytes)),
+    // Loaded when one is made or opened: packing brings tables of its own.
+    'pack-saved-copy': async (copy) => (await import('../study/saved-copy.ts')).packSavedCopy(copy),
+    'open-saved-copy': async ({ bytes }) => (await import('../study/saved-copy.ts')).openSavedCopy(new Uint8Array(bytes)),
   }
 }

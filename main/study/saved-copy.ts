@@ -6,8 +6,6 @@ import type { RunColumns } from '../../shared-kinetics/series/run.ts'
 import { columnsFit, decodeColumns, encodeColumns } from './columns-file.ts'
 import { largestStudyJsonBytes, readStudyJson, writeStudyJson } from './read-study-json.ts'
 
-export const savedCopySuffix = '.rampfold'
-
 /** What a saved copy may unpack to: a damaged or hostile one must not exhaust the machine. */
 const savedCopyLimits = { unpackedBytes: 2 ** 30, entries: 1000, freeBytes: 64 * 2 ** 20, ratio: 200 } as const
 

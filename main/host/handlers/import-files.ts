@@ -3,7 +3,7 @@ import type { ImportAnswer, RefusedFile } from '../../../shared-kinetics/contrac
 import { runInfoSchema, type StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
 import type { ImportNote, RunInfo } from '../../../shared-kinetics/series/run.ts'
-import { savedCopySuffix } from '../../study/saved-copy.ts'
+import { savedCopySuffix } from '../../study/saved-copy-suffix.ts'
 import type { ImportedRun } from '../host-tasks.ts'
 import type { UploadedFile } from '../uploads.ts'
 import type { HandlerContext } from './handler-table.ts'

@@ -1,7 +1,6 @@
+import { naturalOrder } from '../../../shared-kinetics/contract/natural-order.ts'
 import type { RunColumns } from '../../../shared-kinetics/series/run.ts'
 import type { ImportedRun } from '../host-tasks.ts'
-
-const byName = new Intl.Collator('en', { numeric: true })
 
 /**
  * Runs from slow to fast (as measured, else as stated), holds first, then by file name as a person counts. The heating rate taken
@@ -10,7 +9,7 @@ const byName = new Intl.Collator('en', { numeric: true })
 export function inOrderOfHeatingRate(runs: readonly ImportedRun[]): readonly ImportedRun[] {
   return runs
     .map((run) => ({ run, step: stepOf(heatingRate_K_per_s(run)) }))
-    .toSorted((a, b) => a.step - b.step || byName.compare(a.run.info.file.name, b.run.info.file.name))
+    .toSorted((a, b) => a.step - b.step || naturalOrder(a.run.info.file.name, b.run.info.file.name))
     .map(({ run }) => run)
 }
 

@@ -1,7 +1,7 @@
 import type { StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
 import type { RateConstantTable } from '../../../shared-kinetics/rate-constants/rate-constant-table.ts'
-import { savedCopySuffix } from '../../study/saved-copy.ts'
+import { savedCopySuffix } from '../../study/saved-copy-suffix.ts'
 import { newStudy } from '../workspace.ts'
 import type { HandlerContext, HandlerTable } from './handler-table.ts'
 import { fileNameFor } from './file-name-for.ts'

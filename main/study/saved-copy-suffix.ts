@@ -1,0 +1,2 @@
+/** Ending of the file that holds a whole study. */
+export const savedCopySuffix = '.rampfold'
