@@ -49,7 +49,7 @@ export function curveFromExtent(time_s: Column<'s'>, temperature_K: Column<'K'>,
   const shape = shapeOf(time_s, conversion)
   const noise = correlatedNoiseOf(time_s, conversion, shape.reaction.first, shape.reaction.last, shape.widestStride)
   const smoothing = smoothingFor('extent', noise, shape)
-  const { value, slope } = localPolynomial(time_s, conversion, smoothing)
+  const { value, slope } = localPolynomial(time_s, conversion, { ...smoothing, closely: shape.closely })
   return {
     time_s,
     temperature_K,
@@ -84,7 +84,7 @@ export function curveFromRate(
     time_s,
     temperature_K,
     conversion: column(conversion, '1'),
-    reactionRate_per_s: column(localPolynomial(time_s, rate, smoothing).value, '1/s'),
+    reactionRate_per_s: column(localPolynomial(time_s, rate, { ...smoothing, closely: shape.closely }).value, '1/s'),
     measured: { kind: 'rate', values: rate },
     smoothing,
     noise,
@@ -103,6 +103,8 @@ export function reactionRateAt(curve: ConversionCurve, time: number): number {
 interface Shape {
   readonly duration: number
   readonly reaction: RowRange
+  /** Rows between conversion 0.005 and 0.995 and a quarter of the duration more on either side: outside, next to nothing happens. */
+  readonly closely: RowRange
   readonly gaps: readonly RowRange[]
   readonly samplesPerDuration: number
   readonly widestStride: number
@@ -121,6 +123,10 @@ function shapeOf(time: Float64Array, conversion: Float64Array): Shape {
   return {
     duration,
     reaction: { first, last },
+    closely: {
+      first: lowerBound(time, (time[Math.min(n - 1, lowerBound(rising, 0.005))] ?? 0) - 0.25 * duration),
+      last: Math.min(n - 1, lowerBound(time, (time[Math.min(n - 1, lowerBound(rising, 0.995))] ?? 0) + 0.25 * duration)),
+    },
     gaps: gapsOfTime(time, Math.max(0, first - 1), last).filter((gap) => rise(gap) > 0.96 / fewestRowsInReaction),
     samplesPerDuration,
     widestStride: Math.floor(widestNoiseStride * samplesPerDuration),

@@ -131,6 +131,21 @@ describe('local polynomial', () => {
     }
   })
 
+  it('where the curve is said to matter little is still exact for cubics, and elsewhere what it is without', () => {
+    const x = changingSteps(4000, 0.3)
+    const closely = { first: 700, last: 2900 }
+    const cubic = x.map((t) => 2 - t + 0.5 * t ** 2 + 0.1 * t ** 3)
+    const exact = localPolynomial(x, cubic, { halfWidth: 0.5, degree: 3, closely })
+    exact.value.forEach((value, i) => expect(value).toBeCloseTo(cubic[i] as number, 10))
+    const y = x.map((t) => 3 + Math.exp(-(t * t)))
+    const options = { halfWidth: 0.5, degree: 3 } as const
+    const [whole, part] = [localPolynomial(x, y, options), localPolynomial(x, y, { ...options, closely })]
+    for (let i = 0; i < x.length; i++) {
+      const inside = i >= closely.first && i <= closely.last
+      expect(Math.abs((whole.value[i] as number) - (part.value[i] as number))).toBeLessThan(inside ? 2e-5 : 1e-3)
+    }
+  })
+
   it('over cells leaves as much noise as over the rows', () => {
     // Multiplicative congruence of Park and Miller; twelve uniform numbers make a nearly normal one.
     let state = 1

@@ -7,6 +7,8 @@ export interface LocalPolynomialOptions {
   readonly degree: 1 | 2 | 3
   /** Where fewer points lie within the half-width it is widened until there are so many; default 2·degree + 3. */
   readonly minimumPoints?: number
+  /** Rows, both ends included, outside which the curve matters little: of many rows, nodes then lie four times as far apart there. */
+  readonly closely?: { readonly first: number; readonly last: number }
 }
 
 export interface LocalFit {
@@ -23,6 +25,7 @@ const manyRows = 24
  */
 const cellsPerHalfWidth = 16
 const nodesPerHalfWidth = 12
+const nodesWhereItMattersLittle = 3
 
 /**
  * Value and slope of a curve at every x, by weighted regression of a polynomial on the neighbours (tricube weights). x ascends strictly and need not be evenly
@@ -56,21 +59,40 @@ export const localPolynomialAt = (x: Float64Array, y: Float64Array, at: number, 
 
 /** Value and slope at every x, from regressions of `samples` at nodes. */
 function throughNodes(x: Float64Array, samples: Samples, options: LocalPolynomialOptions): { value: Float64Array; slope: Float64Array } {
-  const n = x.length
-  const start = x[0] as number
-  const span = (x[n - 1] as number) - start
-  const lastNode = Math.max(3, Math.ceil((span * nodesPerHalfWidth) / options.halfWidth))
-  const step = span / lastNode
+  const value = new Float64Array(x.length)
+  const slope = new Float64Array(x.length)
+  const last = x.length - 1
+  const closely = options.closely ?? { first: 0, last }
+  const parts = [
+    { first: 0, last: closely.first - 1, nodes: nodesWhereItMattersLittle },
+    { ...closely, nodes: nodesPerHalfWidth },
+    { first: closely.last + 1, last, nodes: nodesWhereItMattersLittle },
+  ]
   const atNode = localFit(samples, options)
   const atRow = localFit(samples, options)
-  const value = new Float64Array(n)
-  const slope = new Float64Array(n)
+  for (const part of parts) if (part.last >= part.first) partThroughNodes(x, part, options.halfWidth, atNode, atRow, value, slope)
+  return { value, slope }
+}
+
+function partThroughNodes(
+  x: Float64Array,
+  part: { readonly first: number; readonly last: number; readonly nodes: number },
+  halfWidth: number,
+  atNode: (at: number) => LocalFit,
+  atRow: (at: number) => LocalFit,
+  value: Float64Array,
+  slope: Float64Array,
+): void {
+  const start = x[part.first] as number
+  const span = (x[part.last] as number) - start
+  const lastNode = Math.max(3, Math.ceil((span * part.nodes) / halfWidth))
+  const step = span / lastNode
   // The four nodes around the rows of one interval; nodes that no row needs, as in a gap, are never fitted.
-  let firstNode = -1
-  let nodes: LocalFit[] = []
-  for (let i = 0; i < n; ) {
+  const nodes: LocalFit[] = []
+  let firstNode = -4
+  for (let i = part.first; i <= part.last; ) {
     const at = x[i] as number
-    if (i > 0 && at - (x[i - 1] as number) > step) {
+    if (!(step > 0) || (i > part.first && at - (x[i - 1] as number) > step)) {
       const fit = atRow(at)
       value[i] = fit.value
       slope[i] = fit.slope
@@ -79,12 +101,12 @@ function throughNodes(x: Float64Array, samples: Samples, options: LocalPolynomia
     }
     const place = Math.floor((at - start) / step)
     const first = Math.min(lastNode - 3, Math.max(0, place - 1))
-    if (first !== firstNode) {
-      const moved = first - firstNode
-      nodes = [0, 1, 2, 3].map((k) => nodes[k + moved] ?? atNode(start + (first + k) * step))
-      firstNode = first
-    }
-    const [a, b, c, d] = nodes as [LocalFit, LocalFit, LocalFit, LocalFit]
+    for (let k = Math.max(first, firstNode + 4); k < first + 4; k++) nodes[k & 3] = atNode(start + k * step)
+    firstNode = first
+    const a = nodes[first & 3] as LocalFit
+    const b = nodes[(first + 1) & 3] as LocalFit
+    const c = nodes[(first + 2) & 3] as LocalFit
+    const d = nodes[(first + 3) & 3] as LocalFit
     const v = cubicThrough(a.value, b.value, c.value, d.value)
     const s = cubicThrough(a.slope, b.slope, c.slope, d.slope)
     const from = start + first * step
@@ -99,9 +121,8 @@ function throughNodes(x: Float64Array, samples: Samples, options: LocalPolynomia
       value[i] = v.c0 + u * (v.c1 + u * (v.c2 + u * v.c3))
       slope[i] = s.c0 + u * (s.c1 + u * (s.c2 + u * s.c3))
       i++
-    } while (i < n && (x[i] as number) < end)
+    } while (i <= part.last && (x[i] as number) < end)
   }
-  return { value, slope }
 }
 
 /** Coefficients of the cubic through four values at 0, 1, 2 and 3. */
