@@ -2,10 +2,12 @@ import { useMemo } from 'react'
 import type { StudyResult } from '../../shared-kinetics/contract/study-result.ts'
 import { formatAt, levelQuantity } from '../sheet/at-level.ts'
 import { endProgrammes, meanAtLevel, programmeRange } from '../sheet/end-programmes.ts'
-import { decimals, formatInterval, formatLevel, halfWidth, statusWords } from '../sheet/format.ts'
+import { decimals, formatInterval, formatLevel, formatWithInterval, halfWidth, statusWords } from '../sheet/format.ts'
 import { LevelRail } from '../sheet/LevelRail.tsx'
 import { railBars, railCaption } from '../sheet/rail-bars.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
+import { shortKinds } from '../stages/activation/shown-interval.ts'
+import { useShown } from '../stages/activation/use-shown.ts'
 import { useView } from '../state/services.ts'
 import { chosenAmong } from '../state/view-store.ts'
 
@@ -26,28 +28,32 @@ export function Rail({
     result.profiles.map((profile) => profile.method),
     wanted,
   )
-  const profile = result.profiles.find((one) => one.method === chosen)
+  const shown = useShown(result, chosen)
+  const profile = shown?.profile
+  const ends = shown?.interval
   const { bars, caption } = useMemo(() => {
-    const widths = result.levels.map((_, i) => halfWidth(profile?.lower95_kJ_per_mol[i], profile?.upper95_kJ_per_mol[i]))
+    const widths = result.levels.map((_, i) => halfWidth(ends?.lower95_kJ_per_mol[i], ends?.upper95_kJ_per_mol[i]))
     const mean = profile?.mean.Ea_kJ_per_mol ?? null
-    return { bars: railBars(widths, mean), caption: railCaption(widths, mean) }
-  }, [result, profile])
+    return {
+      bars: railBars(widths, mean),
+      caption: railCaption(widths, mean, ends === null || ends === undefined ? '' : shortKinds[ends.kind]),
+    }
+  }, [result, profile, ends])
   const Ea = decimals(profile?.Ea_kJ_per_mol[levelIndex], 1)
-  const interval = formatInterval(
-    profile?.Ea_kJ_per_mol[levelIndex],
-    profile?.lower95_kJ_per_mol[levelIndex],
-    profile?.upper95_kJ_per_mol[levelIndex],
-  )
+  const [lower, upper] = [ends?.lower95_kJ_per_mol[levelIndex], ends?.upper95_kJ_per_mol[levelIndex]]
+  const interval = formatInterval(profile?.Ea_kJ_per_mol[levelIndex], lower, upper)
   const r2 = decimals(profile?.r2[levelIndex], 5)
   const status = profile?.status[levelIndex]
   const quantity = levelQuantity(result)
-  const ends = useMemo(() => endProgrammes(result), [result])
-  const [slowest = '', fastest = slowest] = ends.map(({ runs }) => formatAt(meanAtLevel(runs, levelIndex, quantity), quantity))
-  const range = programmeRange(ends.map(({ name }) => name))
+  const programmes = useMemo(() => endProgrammes(result), [result])
+  const [slowest = '', fastest = slowest] = programmes.map(({ runs }) => formatAt(meanAtLevel(runs, levelIndex, quantity), quantity))
+  const range = programmeRange(programmes.map(({ name }) => name))
   const word = status === undefined || status === 'ok' ? '' : statusWords[status]
   const spoken = [
     formatLevel(level),
-    Ea === '' ? word : `Ea ${Ea}${interval === '' ? '' : ` plus or minus ${interval}`} kJ/mol`,
+    Ea === ''
+      ? word
+      : `Ea ${Ea}${interval === '' ? '' : `, ${ends === null || ends === undefined ? '' : shortKinds[ends.kind]} interval ${interval}`} kJ/mol`,
     slowest === '' || fastest === '' ? '' : `${slowest} to ${fastest} ${quantity.unit} at ${range.replace('…', 'to')}`,
   ]
     .filter((part) => part !== '')
@@ -61,7 +67,7 @@ export function Rail({
           <span className="is-word">{word}</span>
         ) : (
           <>
-            Ea <strong>{interval === '' ? Ea : `${Ea} ± ${interval}`}</strong> kJ/mol
+            Ea <strong>{formatWithInterval(profile?.Ea_kJ_per_mol[levelIndex], lower, upper)}</strong> kJ/mol
           </>
         )}
         {r2 !== '' && (

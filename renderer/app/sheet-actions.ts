@@ -1,5 +1,7 @@
 import { runCopyColumns, runRows } from '../stages/runs/run-rows.ts'
 import { levelCopyColumns, levelRows } from '../stages/activation/level-rows.ts'
+import { peakCopyColumns } from '../stages/activation/peak-rows.ts'
+import { intervalsOf } from '../stages/activation/shown-interval.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
 import { levelQuantity } from '../sheet/at-level.ts'
 import { copyText } from '../sheet/data-table.ts'
@@ -26,19 +28,26 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
     session.say('done', `A copy was saved as ${file.fileName}.`)
   }
 
+  /** With every kind of interval where they are there, or on their way. They are waited for outside of the line of changes, which goes on meanwhile. */
   async function exportTable(): Promise<void> {
-    const answer = await session.ask('results.export', { format: 'csv' })
+    const withUncertainty = await session.uncertainty.settled()
+    const answer = await session.ask('results.export', { format: 'csv', withUncertainty })
     if (answer === null) return
     for (const file of answer.files) download(file)
-    session.say('done', `Saved ${answer.files.map((file) => file.fileName).join(' and ')}.`)
+    const names = answer.files.map((file) => file.fileName).join(' and ')
+    session.say(
+      'done',
+      `Saved ${names}, ${withUncertainty ? 'with every kind of interval' : 'without the intervals that were not worked out'}.`,
+    )
   }
 
   async function copyTable(): Promise<void> {
     const text = tableOfStage({ session, view })
-    if (text === null) {
-      session.say('failure', 'There is no table to copy yet.')
-      return
-    }
+    if (text === null) session.say('failure', 'There is no table to copy yet.')
+    else await copyOut(text)
+  }
+
+  async function copyOut(text: string): Promise<void> {
     await copyToClipboard(text).then(
       () => session.say('done', 'The table is on the clipboard, with units in its headings.'),
       (error: unknown) => session.say('failure', error instanceof Error ? error.message : String(error)),
@@ -54,6 +63,7 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
     saveCopy: () => void saveCopy(),
     exportTable: () => void exportTable(),
     copyTable: () => void copyTable(),
+    copyOut: (text) => void copyOut(text),
     undo: () => void session.undo(),
     redo: () => void session.redo(),
     moveLevel: (index) => {
@@ -69,8 +79,8 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
 
 /** The table of the stage that is shown, as tab-separated text. */
 function tableOfStage({ session, view }: Services): string | null {
-  const { replica, evaluated } = session.store.getState()
-  const { stage, conversion, chosenMethod, comparedMethods } = view.getState()
+  const { replica, evaluated, uncertain } = session.store.getState()
+  const { stage, conversion, chosenMethod, comparedMethods, interval, beneath } = view.getState()
   if (replica === null) return null
   const result = evaluated?.result ?? null
   const levelIndex = nearestLevel(result?.levels ?? [], conversion)
@@ -81,6 +91,9 @@ function tableOfStage({ session, view }: Services): string | null {
       : copyText(runCopyColumns(level, levelIndex, levelQuantity(result)), runRows(replica.document, result))
   const available = result?.profiles.map((profile) => profile.method) ?? []
   const chosen = chosenAmong(available, chosenMethod)
-  if (result === null || chosen === null) return null
-  return copyText(levelCopyColumns(result, chosen, comparedAmong(available, comparedMethods, chosen)), levelRows(result))
+  if (result === null) return null
+  if (beneath === 'peaks' || chosen === null)
+    return result.peakMethods.length === 0 ? null : copyText(peakCopyColumns(), result.peakMethods)
+  const compared = comparedAmong(available, comparedMethods, chosen)
+  return copyText(levelCopyColumns(result, chosen, compared, intervalsOf(result, uncertain, interval)), levelRows(result))
 }

@@ -6,6 +6,8 @@ export interface ChoiceOption<Id extends string> {
   readonly text: ReactNode
   /** The whole name where `text` is short for it. */
   readonly name?: string
+  /** Why it cannot be chosen. */
+  readonly refused?: string | null
 }
 
 /** One of a few, all in sight. */
@@ -37,7 +39,13 @@ export function Choice<Id extends string>({
         }}
       >
         {options.map((option) => (
-          <ToggleButton key={option.id} id={option.id} className="choice-option" {...nameOf(option)}>
+          <ToggleButton
+            key={option.id}
+            id={option.id}
+            className="choice-option"
+            isDisabled={(option.refused ?? null) !== null}
+            {...nameOf(option)}
+          >
             {option.text}
           </ToggleButton>
         ))}

@@ -53,13 +53,13 @@ describe('bars of the rail', () => {
 
   it('stay low in good data: full height is 5 % of the mean Ea at least', () => {
     expect(railBars([0.1, 0.2], 200).map((bar) => bar.height)).toEqual([0.01, 0.02])
-    expect(railCaption([0.1, 0.2], 200)).toEqual(['bars: ± 95 %', 'full height 10.0 kJ/mol (5 % of Ea)'])
+    expect(railCaption([0.1, 0.2], 200, 'jackknife')).toEqual(['bars: ± 95 %, jackknife', 'full height 10.0 kJ/mol (5 % of Ea)'])
   })
 
   it('say what the tallest stands for, and that some are cut', () => {
-    expect(railCaption([2, 31.04, 20], 200)[1]).toBe('tallest 31.0 kJ/mol')
-    expect(railCaption([10, 10, 10, 10, 1000], 200).slice(1)).toEqual(['full height 40.0 kJ/mol', '1 wider, cut at the dots'])
-    expect(railCaption([null, null], 200)).toEqual([])
+    expect(railCaption([2, 31.04, 20], 200, 'Student-t')[1]).toBe('tallest 31.0 kJ/mol')
+    expect(railCaption([10, 10, 10, 10, 1000], 200, 'Student-t').slice(1)).toEqual(['full height 40.0 kJ/mol', '1 wider, cut at the dots'])
+    expect(railCaption([null, null], 200, 'Student-t')).toEqual([])
   })
 
   it('cut one hopeless level instead of flattening the others', () => {

@@ -39,14 +39,18 @@ export function railBars(widths: readonly Maybe[], meanEa: Maybe = null): readon
   })
 }
 
-/** What the bars mean, in two or three short lines; none where there are no intervals. */
-export function railCaption(widths: readonly Maybe[], meanEa: Maybe): readonly string[] {
+/**
+ * What the bars mean, in two or three short lines; none where there are no intervals.
+ *
+ * @param kind - of the interval, in a word or two
+ */
+export function railCaption(widths: readonly Maybe[], meanEa: Maybe, kind: string): readonly string[] {
   const { fullHeight, fromMean } = railScale(widths, meanEa)
   if (!(fullHeight > 0)) return []
   const cut = railBars(widths, meanEa).filter((bar) => bar.cut).length
   const full = `${decimals(fullHeight, 1)} kJ/mol`
   return [
-    'bars: ± 95 %',
+    `bars: ± 95 %, ${kind}`,
     fromMean ? `full height ${full} (5 % of Ea)` : `${cut === 0 ? 'tallest' : 'full height'} ${full}`,
     ...(cut === 0 ? [] : [`${cut} wider, cut at the dots`]),
   ]

@@ -11,7 +11,10 @@ export interface SheetActions {
   readonly openRecent: (studyId: string) => void
   readonly saveCopy: () => void
   readonly exportTable: () => void
+  /** The main table of the stage. */
   readonly copyTable: () => void
+  /** A table as text. */
+  readonly copyOut: (text: string) => void
   readonly undo: () => void
   readonly redo: () => void
   readonly moveLevel: (index: number) => void

@@ -6,8 +6,10 @@ export type Theme = 'system' | 'light' | 'dark'
 
 /** The interval that chart, table, rail and read-out show: the regression's own, or another kind. */
 export type ShownKind = 'student-t' | IntervalKind
-/** What stands beneath Ea against conversion. */
-export type Beneath = 'levels' | 'budget' | 'peaks'
+/** What the left half of the activation stage shows: what Ea is read from, or where its uncertainty comes from. */
+export type Evidence = 'fit' | 'budget'
+/** The table beneath Ea against conversion. */
+export type Beneath = 'levels' | 'peaks'
 
 /** A row or a prediction of the table of rate constants, by its place in the study. */
 export interface RateConstantPlace {
@@ -26,6 +28,7 @@ export interface ViewState {
   readonly comparedMethods: readonly MethodId[] | null
   /** Where the chosen method has no interval of this kind, its own stands for it. */
   readonly interval: ShownKind
+  readonly evidence: Evidence
   readonly beneath: Beneath
   /** null takes temperature for constant heating rates and time for everything else. */
   readonly against: 'temperature' | 'time' | null
@@ -43,6 +46,7 @@ const initialViewState: ViewState = {
   chosenMethod: null,
   comparedMethods: null,
   interval: 'student-t',
+  evidence: 'fit',
   beneath: 'levels',
   against: null,
   basis: 'runs',

@@ -12,6 +12,8 @@ export type {
   LineResult,
   Maybe,
   MeanEnergy,
+  PeakMethodNumber,
+  PeakMethodResult,
   PhiResult,
   ProfileResult,
   RunResult,

@@ -10,25 +10,34 @@ import { formatAtLevel, levelQuantity, type LevelQuantity } from '../../sheet/at
 import { Choice, Choices } from '../../sheet/Choice.tsx'
 import { count, decimals, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
-import { useColours, useServices } from '../../state/services.ts'
+import { useColours, useServices, useView } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
-import { readingOf } from './method-words.tsx'
+import { Budget } from './Budget.tsx'
+import { isReportBasis, readingOf, scopeWords } from './method-words.tsx'
 import { methodsWith } from './methods-with.ts'
+import { drawnInterval } from './shown-interval.ts'
 
-/** The left half: the straight lines of the chosen method, or Phi(Ea) at the level for a minimising one. */
+/** The left half: what the chosen method's Ea is read from (its straight lines, or Phi(Ea) at the level), or where the uncertainty of it comes from. */
 export function LevelEvidence(props: ActivationProps) {
-  const { result, chosen, level } = props
+  const { result, chosen, level, shown } = props
   const { view } = useServices()
-  const profile = result.profiles.find((one) => one.method === chosen)
-  const minimising = profile?.evidence === 'minimum'
+  const evidence = useView((state) => state.evidence)
+  const { profile, interval } = shown
+  const minimising = profile.evidence === 'minimum'
+  const fit = minimising ? `Φ(Ea) at α ${formatLevel(level)}` : 'Straight lines at each conversion'
+  const sources = [...profile.sources, ...(interval?.sources ?? [])]
   return (
     <Half
       side="evidence"
-      title={minimising ? `Φ(Ea) at α ${formatLevel(level)}` : 'Straight lines at each conversion'}
+      title={evidence === 'budget' ? `Where the uncertainty comes from at α\u00a0${formatLevel(level)}` : fit}
       note={
-        <>
-          {profile?.label}: {readingOf(chosen)}. {count(result.runs.length, 'run')}, {count(result.levels.length, 'level')}.
-        </>
+        evidence === 'budget' ? (
+          <>{profile.label}: the standard uncertainty of Ea that each source brings alone; bars as long as its square.</>
+        ) : (
+          <>
+            {profile.label}: {readingOf(chosen)}. {count(result.runs.length, 'run')}, {count(result.levels.length, 'level')}.
+          </>
+        )
       }
     >
       <div className="controls">
@@ -39,25 +48,72 @@ export function LevelEvidence(props: ActivationProps) {
           onChange={(chosenMethod) => view.setState({ chosenMethod })}
         />
         <MethodsOnRequest {...props} />
+        <Choice
+          label="Evidence"
+          options={[
+            { id: 'fit', text: minimising ? 'Φ(Ea)' : 'Straight lines' },
+            { id: 'budget', text: 'Where the uncertainty comes from' },
+          ]}
+          value={evidence}
+          onChange={(next) => view.setState({ evidence: next })}
+        />
       </div>
-      {minimising ? <Phi {...props} /> : <Lines {...props} />}
-      <RunLegend {...props} />
-      {profile !== undefined && profile.sources.length > 0 && <p className="source">{profile.sources.join('; ')}</p>}
+      <Scope {...props} />
+      {evidence === 'budget' ? (
+        <Budget {...props} />
+      ) : (
+        <>
+          {minimising ? <Phi {...props} /> : <Lines {...props} />}
+          <RunLegend {...props} />
+        </>
+      )}
+      {sources.length > 0 && <p className="source">{sources.join('; ')}</p>}
     </Half>
   )
 }
 
-/** Other forms and standards that a report may have to follow: worked out once they are asked for. */
+/** Other forms of a method, and the standards that a report may have to follow: worked out, and shown, once they are asked for. */
 function MethodsOnRequest({ result, actions }: ActivationProps) {
+  const { view } = useServices()
   if (result.runs.some((run) => run.programme !== 'constant-heating-rate')) return null
   const worked = result.profiles.map((one) => one.method)
-  return (
+  const wanted = methodsOnRequest.filter((id) => worked.includes(id))
+  const offer = (label: string, offered: readonly (typeof methodsOnRequest)[number][]) => (
     <Choices
-      label="On request"
-      options={methodsOnRequest.map((id) => ({ id, text: shortMethodNames[id] }))}
-      values={methodsOnRequest.filter((id) => worked.includes(id))}
-      onChange={(ids) => actions.change({ kind: 'set-methods', methods: methodsWith(worked, ids) })}
+      label={label}
+      options={offered.map((id) => ({ id, text: shortMethodNames[id] }))}
+      values={offered.filter((id) => wanted.includes(id))}
+      onChange={(ids) => {
+        const added = ids.find((id) => !wanted.includes(id))
+        if (added !== undefined) view.setState({ chosenMethod: added })
+        actions.change({
+          kind: 'set-methods',
+          methods: methodsWith(worked, [...wanted.filter((id) => !offered.includes(id)), ...ids]),
+        })
+      }}
     />
+  )
+  return (
+    <>
+      {offer('Report basis', methodsOnRequest.filter(isReportBasis))}
+      {offer(
+        'Further forms',
+        methodsOnRequest.filter((id) => !isReportBasis(id)),
+      )}
+    </>
+  )
+}
+
+/** What a standard is made for, and whether the runs are of that kind as far as the program can see. */
+function Scope({ result, chosen }: ActivationProps) {
+  if (!isReportBasis(chosen)) return null
+  const outside = result.findings.find((finding) => finding.code === 'outside-scope-of-standard' && finding.evidence['method'] === chosen)
+  return (
+    <p className={outside === undefined ? 'scope' : 'scope is-outside'}>
+      {outside === undefined
+        ? `${shortMethodNames[chosen]} is made for ${scopeWords[chosen]}. The runs are of that kind as far as signal, temperatures, heating rates and the maxima of the rate tell.`
+        : outside.message}
+    </p>
   )
 }
 
@@ -70,9 +126,14 @@ function Lines({ result, chosen, levelIndex, actions }: ActivationProps) {
 
 const noMarks = [] as const
 
-function Phi({ result, chosen, levelIndex, actions }: ActivationProps) {
+/** Student's t with the threshold that cuts it out of Phi; any other interval by its ends. */
+function Phi({ result, chosen, shown, levelIndex, actions }: ActivationProps) {
   const colours = useColours()
-  const figure = useMemo(() => phiFigure(result, chosen, levelIndex), [result, chosen, levelIndex])
+  const { kind, interval } = shown
+  const figure = useMemo(
+    () => phiFigure(result, chosen, levelIndex, ...(kind === 'student-t' ? [] : [drawnInterval(interval)])),
+    [result, chosen, levelIndex, kind, interval],
+  )
   return <FigureChart figure={figure} overlay={noMarks} colours={colours} onCopied={actions.pictureCopied} />
 }
 

@@ -4,12 +4,15 @@ import { NumberCell, TableHead } from '../../sheet/DataTable.tsx'
 import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import type { ActivationProps } from './ActivationStage.tsx'
+import { useIntervalOf } from './use-shown.ts'
 import { levelColumns, levelCopyColumns, levelRows, type LevelRow } from './level-rows.ts'
 
 /** Ea at every level. Up and down move the level here as on the rail; a click on a row goes there. */
-export function LevelTable({ result, chosen, compared, levelIndex, actions }: ActivationProps) {
+export function LevelTable({ result, chosen, compared, shown, levelIndex, actions }: ActivationProps) {
   const rows = useMemo(() => levelRows(result), [result])
-  const columns = useMemo(() => levelColumns(result, chosen, compared), [result, chosen, compared])
+  const columns = useMemo(() => levelColumns(result, chosen, compared, () => shown.interval), [result, chosen, compared, shown])
+
+  const intervalOf = useIntervalOf(result)
 
   const onKeyDown = (event: KeyboardEvent): void => {
     // The table lists levels downwards, so its arrows run the other way round than the rail's.
@@ -25,7 +28,7 @@ export function LevelTable({ result, chosen, compared, levelIndex, actions }: Ac
   return (
     <TableView
       label="Table of activation energies"
-      copied={() => copyText(levelCopyColumns(result, chosen, compared), rows)}
+      copied={() => copyText(levelCopyColumns(result, chosen, compared, intervalOf), rows)}
       currentRow={levelIndex}
       onKeyDown={onKeyDown}
     >

@@ -17,6 +17,18 @@ const readings: Readonly<Record<MethodId, string>> = {
   'iso-11358-2': 'log β against 1000/T; the slope is −0.4567 Ea/R',
 }
 
+export type ReportBasis = Extract<MethodId, 'astm-e1641' | 'iso-11358-2'>
+
+/** Standards that a report can be made by. */
+export const isReportBasis = (method: MethodId): method is ReportBasis => method === 'astm-e1641' || method === 'iso-11358-2'
+
+/** What each is made for, as far as it bears on a choice; the finding on its scope holds the runs against the whole of it. */
+export const scopeWords: Readonly<Record<ReportBasis, string>> = {
+  'astm-e1641':
+    'thermogravimetry between 400 and 1300 K of a smooth mass loss with a single maximum of its rate, first order, at four heating rates or more',
+  'iso-11358-2': 'thermogravimetry of polymers that decompose by a single mechanism or in single steps that are clearly apart',
+}
+
 export const readingOf = (method: MethodId): ReactNode => raised(readings[method])
 
 /** Text whose `^1.92` is set as an exponent. */

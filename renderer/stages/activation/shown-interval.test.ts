@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import type { IntervalResult, ProfileResult, UncertaintyProfile } from '../../../shared-kinetics/contract/study-result.ts'
 import type { Uncertain } from '../../state/study-state.ts'
 import { intervalKinds, intervalOffers, intervalOfKind, shownOf, uncertaintyOf } from './shown-interval.ts'
-import { friedman, result, starink } from './testing/small-result.ts'
+import { friedman, result, runAt, starink } from './testing/small-result.ts'
 
 const interval = (kind: IntervalResult['kind'], lower: readonly (number | null)[], approximate = true): IntervalResult => ({
   kind,
@@ -72,12 +72,12 @@ describe('interval of a kind', () => {
   })
 
   it('is the wanted one where the method can have it, else its own', () => {
-    const shown = (wanted: 'jackknife' | 'vyazovkin-wight-f', programmes: readonly number[]) =>
-      shownOf([starink], 'starink', programmes, uncertain, wanted)
-    expect(shown('jackknife', fiveRuns)?.interval?.lower95_kJ_per_mol).toEqual([144, 146])
-    expect(shown('vyazovkin-wight-f', fiveRuns)).toMatchObject({ kind: 'student-t', interval: { lower95_kJ_per_mol: [144.5, 145] } })
-    expect(shownOf([starink], 'starink', fiveRuns, null, 'jackknife')).toMatchObject({ kind: 'jackknife', interval: null })
-    expect(shownOf([starink], 'kas', fiveRuns, uncertain, 'student-t')).toBeNull()
+    const five = { profiles: [starink], runs: fiveRuns.map((rate) => runAt(rate, [473, 523])) }
+    const shown = (wanted: 'jackknife' | 'vyazovkin-wight-f') => shownOf(five, 'starink', uncertain, wanted)
+    expect(shown('jackknife')?.interval?.lower95_kJ_per_mol).toEqual([144, 146])
+    expect(shown('vyazovkin-wight-f')).toMatchObject({ kind: 'student-t', interval: { lower95_kJ_per_mol: [144.5, 145] } })
+    expect(shownOf(five, 'starink', null, 'jackknife')).toMatchObject({ kind: 'jackknife', interval: null })
+    expect(shownOf(five, 'kas', uncertain, 'student-t')).toBeNull()
   })
 })
 

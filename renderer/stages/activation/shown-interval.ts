@@ -4,8 +4,10 @@ import type {
   Maybe,
   MethodId,
   ProfileResult,
+  StudyResult,
   UncertaintyProfile,
 } from '../../../shared-kinetics/contract/study-result.ts'
+import type { DrawnInterval } from '../../../shared-kinetics/figure/activation-figure.ts'
 import type { Uncertain } from '../../state/study-state.ts'
 import type { ShownKind } from '../../state/view-store.ts'
 
@@ -136,6 +138,10 @@ const withLabel = ({ kind, label, approximate, note, sources, lower95_kJ_per_mol
   upper95_kJ_per_mol,
 })
 
+/** The interval as figures draw it. */
+export const drawnInterval = (interval: ShownInterval | null): DrawnInterval | null =>
+  interval === null ? null : { name: shortKinds[interval.kind], ...interval }
+
 /** `95 %, pointwise, approximate`: what holds of an interval besides its kind. */
 export const intervalQualities = ({ approximate }: ShownInterval): string => `95 %, pointwise${approximate ? ', approximate' : ''}`
 
@@ -147,18 +153,24 @@ export interface ShownOfMethod {
   readonly interval: ShownInterval | null
 }
 
-/** Everything the sheet shows of a method's intervals. */
+/** Everything the sheet shows of a method's intervals; null where it gave no profile. */
 export function shownOf(
-  profiles: readonly ProfileResult[],
+  { profiles, runs }: Pick<StudyResult, 'profiles' | 'runs'>,
   method: MethodId | null,
-  programmes: readonly number[],
   uncertain: Uncertain | null,
   wanted: ShownKind,
 ): ShownOfMethod | null {
   const profile = profiles.find((one) => one.method === method)
   if (profile === undefined) return null
   const apart = uncertaintyOf(uncertain, profile)
+  const programmes = runs.map((run) => run.programmeGroup)
   const offers = intervalOffers(profile, apart, programmes)
   const kind = kindShown(wanted, offers)
   return { profile, apart, offers, kind, interval: intervalOfKind(profile, apart, kind) }
 }
+
+/** The interval of every method, of the kind that is wanted or, where it has none of it, its own. */
+export const intervalsOf =
+  (result: StudyResult, uncertain: Uncertain | null, wanted: ShownKind) =>
+  ({ method }: ProfileResult): ShownInterval | null =>
+    shownOf(result, method, uncertain, wanted)?.interval ?? null

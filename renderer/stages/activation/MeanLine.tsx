@@ -1,0 +1,59 @@
+import type { ProfileResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { levelsOfMean } from '../../../shared-kinetics/figure/levels-of-mean.ts'
+import { decimals, formatWithInterval, halfWidth } from '../../sheet/format.ts'
+import { parseConversion } from '../../sheet/parse-conversion.ts'
+import { TypedField } from '../../sheet/TypedField.tsx'
+import type { ActivationProps } from './ActivationStage.tsx'
+
+/** The mean of Ea over a range of conversion with its own interval, and how far apart the levels in it lie. */
+export function MeanLine({ profile, result, document, actions }: ActivationProps & { readonly profile: ProfileResult }) {
+  const [from, to] = document.settings.meanRange
+  const { Ea_kJ_per_mol: mean, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper } = profile.mean
+  const ends = endsOfMean(profile, result.levels)
+  // A mean that should not be quoted alone must not stand out.
+  const isDoubtful = result.findings.some(({ code, severity }) => code === 'energy-varies' && severity !== 'note')
+  const set = (meanRange: [number, number]): void => {
+    if (meanRange[0] < meanRange[1]) actions.change({ kind: 'set-mean-range', meanRange })
+  }
+  const half = halfWidth(lower, upper)
+  const text = formatWithInterval(mean, lower, upper, half !== null && half < 0.095 ? 2 : 1)
+  return (
+    <div className="mean-line">
+      <span>Mean over α</span>
+      <TypedField
+        label="Mean from conversion"
+        hideLabel
+        text={decimals(from, 2)}
+        parse={parseConversion}
+        onCommit={(value) => set([value, to])}
+      />
+      <span>to</span>
+      <TypedField
+        label="Mean to conversion"
+        hideLabel
+        text={decimals(to, 2)}
+        parse={parseConversion}
+        onCommit={(value) => set([from, value])}
+      />
+      {mean === null ? (
+        <span>not to be had: no level there has a number.</span>
+      ) : (
+        <output>
+          {isDoubtful ? text : <strong>{text}</strong>} kJ/mol{lower !== null && ' (95 %, Student-t)'}; {levelsOfMean(profile.mean)}
+          {ends !== null && `, ${decimals(ends[0], 1)} to ${decimals(ends[1], 1)}`}
+        </output>
+      )}
+    </div>
+  )
+}
+
+const rounding = 1e-9
+
+/** The least and the greatest Ea among the levels that the mean rests on; null where there are fewer than two. */
+function endsOfMean({ mean, Ea_kJ_per_mol: Ea }: ProfileResult, levels: readonly number[]): readonly [number, number] | null {
+  const used = levels.flatMap((level, i) => {
+    const value = Ea[i] ?? null
+    return value !== null && value > 0 && level >= mean.from - rounding && level <= mean.to + rounding ? [value] : []
+  })
+  return used.length < 2 ? null : [Math.min(...used), Math.max(...used)]
+}

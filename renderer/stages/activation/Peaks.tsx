@@ -1,0 +1,74 @@
+import { useState, type KeyboardEvent } from 'react'
+import type { PeakMethodResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { copyText } from '../../sheet/data-table.ts'
+import { NumberCell } from '../../sheet/DataTable.tsx'
+import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
+import { TableView } from '../../sheet/TableView.tsx'
+import { ownNumbers, peakColumns, peakCopyColumns, peakKey, peakName } from './peak-rows.ts'
+
+/** What the rate peaks, and single runs, say: one row a method, and of the row picked out what to know before relying on it. Up and down, or a click, pick a row. */
+export function Peaks({ methods }: { readonly methods: readonly PeakMethodResult[] }) {
+  const [wanted, setWanted] = useState<string | null>(null)
+  const found = methods.findIndex((one) => peakKey(one) === wanted)
+  const index = found < 0 ? 0 : found
+  const current = methods[index]
+  const onKeyDown = (event: KeyboardEvent): void => {
+    const key = { ArrowDown: 'ArrowRight', ArrowUp: 'ArrowLeft', Home: 'Home', End: 'End' }[event.key]
+    const target = key === undefined || event.ctrlKey || event.metaKey ? null : levelAfterKey(key, index, methods.length)
+    const row = target === null ? undefined : methods[target]
+    if (row === undefined) return
+    event.preventDefault()
+    setWanted(peakKey(row))
+  }
+  if (current === undefined) return <p className="missing">There is no peak of the reaction rate to read anything from.</p>
+  return (
+    <>
+      <TableView
+        label="Table of peak and single-run methods"
+        copied={() => copyText(peakCopyColumns(), methods)}
+        currentRow={index}
+        onKeyDown={onKeyDown}
+      >
+        <table className="data-table level-table peak-table">
+          <caption className="visually-hidden">
+            Activation energy from rate peaks and from single runs, 95 % intervals by Student&rsquo;s t
+          </caption>
+          <thead>
+            <tr>
+              <th scope="col">
+                <span>Method</span>
+              </th>
+              {peakColumns.map((column) => (
+                <th key={column.id} scope="col" className="is-number">
+                  <span>{column.heading}</span>
+                  <span className="unit">{column.unit}</span>
+                </th>
+              ))}
+              <th scope="col">
+                <span>Own numbers</span>
+              </th>
+            </tr>
+          </thead>
+          <tbody>
+            {methods.map((row, i) => (
+              // oxlint-disable-next-line jsx-a11y/click-events-have-key-events, jsx-a11y/no-noninteractive-element-interactions -- the table's own keys do the same
+              <tr key={peakKey(row)} aria-current={i === index ? 'true' : undefined} onClick={() => setWanted(peakKey(row))}>
+                <th scope="row">{peakName(row)}</th>
+                {row.applies && peakColumns.map((column) => <NumberCell key={column.id} text={column.text(row)} />)}
+                <td className="peak-own" colSpan={row.applies ? 1 : peakColumns.length + 1}>
+                  {row.applies ? ownNumbers(row) : `Does not apply. ${ownNumbers(row)}`}
+                </td>
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </TableView>
+      <div className="peak-remarks" aria-live="polite">
+        <p>
+          <strong>{peakName(current)}.</strong> {current.applies ? current.remarks.join(' ') : ownNumbers(current)}
+        </p>
+        <p className="source">{current.sources.join('; ')}</p>
+      </div>
+    </>
+  )
+}
