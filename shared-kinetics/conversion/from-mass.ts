@@ -29,8 +29,12 @@ export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: 
       { run: label, massAtStart: start, massAtEnd: end },
     )
   }
-  const conversion = new Float64Array(mass.length)
-  for (let i = 0; i < mass.length; i++) conversion[i] = (start - (mass[i] as number)) / change
-  const curve = curveFromExtent(time_s, temperature_K, conversion)
+  const curve = curveFromExtent(time_s, temperature_K, shareOf(mass, start, change))
   return { curve, baseline: null, area: Number.NaN, rateAtEnds: rateAtEnds(curve), baselineKind: null }
+}
+
+function shareOf(mass: Float64Array, start: number, change: number): Float64Array {
+  const share = new Float64Array(mass.length)
+  for (let i = 0; i < share.length; i++) share[i] = (start - (mass[i] as number)) / change
+  return share
 }

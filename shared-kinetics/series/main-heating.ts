@@ -17,19 +17,23 @@ const smallestReversal_K = 3
  */
 export function mainHeating(temperature_K: Float64Array): RowRange {
   const n = temperature_K.length
-  let lowest = Infinity
-  let highest = -Infinity
-  for (let i = 0; i < n; i++) {
-    const value = temperature_K[i] as number
-    if (value < lowest) lowest = value
-    if (value > highest) highest = value
-  }
   if (isHold(temperature_K, { first: 0, last: n - 1 })) return { first: 0, last: n - 1 }
-  const reversal = Math.max(smallestReversal_K, 0.02 * (highest - lowest))
+  const reversal = Math.max(smallestReversal_K, 0.02 * spanOf(temperature_K))
   const stretches = heatingStretches(temperature_K, reversal)
   const most = Math.max(...stretches.map((stretch) => stretch.span))
   const main = stretches.find((stretch) => stretch.span >= 0.95 * most) ?? { first: 0, last: n - 1 }
   return { first: main.first, last: main.last }
+}
+
+function spanOf(values: Float64Array): number {
+  let lowest = Infinity
+  let highest = -Infinity
+  for (let i = 0; i < values.length; i++) {
+    const value = values[i] as number
+    if (value < lowest) lowest = value
+    if (value > highest) highest = value
+  }
+  return highest - lowest
 }
 
 /** All stretches between reversals in which the temperature rises; each begins with the hold before it and ends with the hold after it. */

@@ -7,6 +7,14 @@ export function isotonic(y: ArrayLike<number>): Float64Array {
   const n = y.length
   const mean = new Float64Array(n)
   const count = new Int32Array(n)
+  const out = new Float64Array(n)
+  spread(mean, count, pool(y, mean, count), out)
+  return out
+}
+
+/** Pools into blocks, each with its mean and number of values; how many blocks there are. */
+function pool(y: ArrayLike<number>, mean: Float64Array, count: Int32Array): number {
+  const n = y.length
   let blocks = 0
   for (let i = 0; i < n; i++) {
     let top = y[i] as number
@@ -21,11 +29,13 @@ export function isotonic(y: ArrayLike<number>): Float64Array {
     count[blocks] = rows
     blocks++
   }
-  const out = new Float64Array(n)
+  return blocks
+}
+
+function spread(mean: Float64Array, count: Int32Array, blocks: number, out: Float64Array): void {
   let at = 0
   for (let block = 0; block < blocks; block++) {
     const value = mean[block] as number
     for (const end = at + (count[block] as number); at < end; at++) out[at] = value
   }
-  return out
 }

@@ -1,4 +1,5 @@
 import { lowerBound } from './lower-bound.ts'
+import { scratch, solve, sumCells, sumRows, type Scratch, type WithinCells } from './normal-equations.ts'
 
 export interface LocalPolynomialOptions {
   /** Points farther away than this, in units of x, carry no weight. */
@@ -62,37 +63,39 @@ function throughNodes(x: Float64Array, samples: Samples, options: LocalPolynomia
   const value = new Float64Array(x.length)
   const slope = new Float64Array(x.length)
   const last = x.length - 1
-  const closely = options.closely ?? { first: 0, last }
-  const parts = [
-    { first: 0, last: closely.first - 1, nodes: nodesWhereItMattersLittle },
-    { ...closely, nodes: nodesPerHalfWidth },
-    { first: closely.last + 1, last, nodes: nodesWhereItMattersLittle },
-  ]
+  const first = options.closely?.first ?? 0
+  const end = options.closely?.last ?? last
   const atNode = localFit(samples, options)
   const atRow = localFit(samples, options)
-  for (const part of parts) if (part.last >= part.first) partThroughNodes(x, part, options.halfWidth, atNode, atRow, value, slope)
+  partThroughNodes(x, 0, first - 1, options.halfWidth / nodesWhereItMattersLittle, atNode, atRow, value, slope)
+  partThroughNodes(x, first, end, options.halfWidth / nodesPerHalfWidth, atNode, atRow, value, slope)
+  partThroughNodes(x, end + 1, last, options.halfWidth / nodesWhereItMattersLittle, atNode, atRow, value, slope)
   return { value, slope }
 }
 
+/** Rows `firstRow` to `lastRow`, with nodes at most `width` apart. */
 function partThroughNodes(
   x: Float64Array,
-  part: { readonly first: number; readonly last: number; readonly nodes: number },
-  halfWidth: number,
+  firstRow: number,
+  lastRow: number,
+  width: number,
   atNode: (at: number) => LocalFit,
   atRow: (at: number) => LocalFit,
   value: Float64Array,
   slope: Float64Array,
 ): void {
-  const start = x[part.first] as number
-  const span = (x[part.last] as number) - start
-  const lastNode = Math.max(3, Math.ceil((span * part.nodes) / halfWidth))
+  if (lastRow < firstRow) return
+  const start = x[firstRow] as number
+  const span = (x[lastRow] as number) - start
+  const lastNode = Math.max(3, Math.ceil(span / width))
   const step = span / lastNode
   // The four nodes around the rows of one interval; nodes that no row needs, as in a gap, are never fitted.
   const nodes: LocalFit[] = []
+  const cubics = new Float64Array(8)
   let firstNode = -4
-  for (let i = part.first; i <= part.last; ) {
+  for (let i = firstRow; i <= lastRow; ) {
     const at = x[i] as number
-    if (!(step > 0) || (i > part.first && at - (x[i - 1] as number) > step)) {
+    if (!(step > 0) || (i > firstRow && at - (x[i - 1] as number) > step)) {
       const fit = atRow(at)
       value[i] = fit.value
       slope[i] = fit.slope
@@ -107,37 +110,54 @@ function partThroughNodes(
     const b = nodes[(first + 1) & 3] as LocalFit
     const c = nodes[(first + 2) & 3] as LocalFit
     const d = nodes[(first + 3) & 3] as LocalFit
-    const v = cubicThrough(a.value, b.value, c.value, d.value)
-    const s = cubicThrough(a.slope, b.slope, c.slope, d.slope)
-    const from = start + first * step
+    cubicThrough(a.value, b.value, c.value, d.value, cubics, 0)
+    cubicThrough(a.slope, b.slope, c.slope, d.slope, cubics, 4)
     // All rows of the interval share these; the last interval takes the last row too.
     const end = place >= lastNode - 2 ? Infinity : start + (place + 1) * step
-    let before = at
-    do {
-      const here = x[i] as number
-      if (here - before > step) break
-      before = here
-      const u = (here - from) / step
-      value[i] = v.c0 + u * (v.c1 + u * (v.c2 + u * v.c3))
-      slope[i] = s.c0 + u * (s.c1 + u * (s.c2 + u * s.c3))
-      i++
-    } while (i <= part.last && (x[i] as number) < end)
+    i = alongCubics(x, i, lastRow, end, start + first * step, step, cubics, value, slope)
   }
 }
 
 /** Coefficients of the cubic through four values at 0, 1, 2 and 3. */
-const cubicThrough = (a: number, b: number, c: number, d: number): { c0: number; c1: number; c2: number; c3: number } => ({
-  c0: a,
-  c1: (18 * b - 11 * a - 9 * c + 2 * d) / 6,
-  c2: (2 * a - 5 * b + 4 * c - d) / 2,
-  c3: (3 * (b - c) + d - a) / 6,
-})
+function cubicThrough(a: number, b: number, c: number, d: number, into: Float64Array, at: number): void {
+  into[at] = a
+  into[at + 1] = (18 * b - 11 * a - 9 * c + 2 * d) / 6
+  into[at + 2] = (2 * a - 5 * b + 4 * c - d) / 2
+  into[at + 3] = (3 * (b - c) + d - a) / 6
+}
 
-/** Rows, or means of x and y over the rows of cells, with what tells how these lie about their mean: how many they are, and the means of the squares and cubes of their distances. */
+/** Fills the rows from `i` on that lie before `end` with no gap between them; the row after the last of them. A function of its own, since the compiler then has little to wait for. */
+function alongCubics(
+  x: Float64Array,
+  i: number,
+  lastRow: number,
+  end: number,
+  from: number,
+  step: number,
+  cubics: Float64Array,
+  value: Float64Array,
+  slope: Float64Array,
+): number {
+  const [v0, v1, v2, v3] = [cubics[0] as number, cubics[1] as number, cubics[2] as number, cubics[3] as number]
+  const [s0, s1, s2, s3] = [cubics[4] as number, cubics[5] as number, cubics[6] as number, cubics[7] as number]
+  let before = x[i] as number
+  let row = i
+  for (; row <= lastRow; row++) {
+    const here = x[row] as number
+    if (row > i && (here >= end || here - before > step)) break
+    before = here
+    const u = (here - from) / step
+    value[row] = v0 + u * (v1 + u * (v2 + u * v3))
+    slope[row] = s0 + u * (s1 + u * (s2 + u * s3))
+  }
+  return row
+}
+
+/** Rows, or means of x and y over the rows of cells with what tells how these lie about their mean. */
 interface Samples {
   readonly x: Float64Array
   readonly y: Float64Array
-  readonly within: { readonly rows: Float64Array; readonly squares: Float64Array; readonly cubes: Float64Array } | null
+  readonly within: WithinCells | null
 }
 
 /** Means over the rows of cells no wider than `width`, each cell beginning at a row. */
@@ -183,23 +203,24 @@ function meansOfCells(x: Float64Array, y: Float64Array, width: number): Samples 
 /** The fit at any place. Its neighbours are found from those of the place before where places ascend, else by bisection. */
 function localFit(samples: Samples, options: LocalPolynomialOptions): (at: number) => LocalFit {
   const { x } = samples
+  const { halfWidth, degree } = options
   const n = x.length
-  const fewest = Math.min(n, options.minimumPoints ?? 2 * options.degree + 3)
+  const fewest = Math.min(n, options.minimumPoints ?? 2 * degree + 3)
   const room = scratch()
   let from = -1
   let to = -1
   let latest = Infinity
   return (at) => {
     if (at < latest) {
-      from = lowerBound(x, at - options.halfWidth)
-      to = lowerBound(x, at + options.halfWidth)
+      from = lowerBound(x, at - halfWidth)
+      to = lowerBound(x, at + halfWidth)
     }
     latest = at
-    while (from < n && (x[from] ?? 0) <= at - options.halfWidth) from++
-    while (to < n && (x[to] ?? 0) < at + options.halfWidth) to++
+    while (from < n && (x[from] ?? 0) <= at - halfWidth) from++
+    while (to < n && (x[to] ?? 0) < at + halfWidth) to++
     let first = from
     let last = Math.max(to - 1, from - 1)
-    let width = options.halfWidth
+    let width = halfWidth
     if (last - first + 1 < fewest) {
       while (last - first + 1 < fewest) {
         const before = first > 0 ? at - (x[first - 1] ?? 0) : Infinity
@@ -210,18 +231,11 @@ function localFit(samples: Samples, options: LocalPolynomialOptions): (at: numbe
       // A little beyond the farthest point, whose weight would otherwise be nothing.
       width = 1.1 * Math.max(at - (x[first] ?? at), (x[last] ?? at) - at)
     }
-    return fitAround(samples, at, { first, last }, width > 0 ? width : 1, options.degree, room)
+    return fitAround(samples, at, first, last, width > 0 ? width : 1, degree, room)
   }
 }
 
-function fitAround(
-  samples: Samples,
-  at: number,
-  { first, last }: { readonly first: number; readonly last: number },
-  width: number,
-  degree: 1 | 2 | 3,
-  room: Scratch,
-): LocalFit {
+function fitAround(samples: Samples, at: number, first: number, last: number, width: number, degree: 1 | 2 | 3, room: Scratch): LocalFit {
   // Sums of the deviations from one of the values: a large offset of y then costs no digits.
   const offset = samples.y[(first + last) >> 1] ?? Number.NaN
   if (samples.within === null) sumRows(samples.x, samples.y, at, first, last, width, offset, room)
@@ -231,181 +245,4 @@ function fitAround(
     value: found > 0 ? offset + (room.coefficients[0] as number) : Number.NaN,
     slope: found > 1 ? (room.coefficients[1] as number) / width : Number.NaN,
   }
-}
-
-/** Room for one regression, kept from place to place: a run asks for thousands. */
-interface Scratch {
-  /** Normal equations of a cubic, 4 by 4, below the diagonal and on it; a lower degree takes their first rows. */
-  readonly normal: Float64Array
-  readonly right: Float64Array
-  readonly factor: Float64Array
-  /** After `solve`: the coefficients of the polynomial. */
-  readonly coefficients: Float64Array
-}
-
-const scratch = (): Scratch => ({
-  normal: new Float64Array(16),
-  right: new Float64Array(4),
-  factor: new Float64Array(16),
-  coefficients: new Float64Array(4),
-})
-
-function sumRows(
-  x: Float64Array,
-  y: Float64Array,
-  at: number,
-  first: number,
-  last: number,
-  width: number,
-  offset: number,
-  { normal, right }: Scratch,
-): void {
-  let s0 = 0
-  let s1 = 0
-  let s2 = 0
-  let s3 = 0
-  let s4 = 0
-  let s5 = 0
-  let s6 = 0
-  let t0 = 0
-  let t1 = 0
-  let t2 = 0
-  let t3 = 0
-  for (let j = first; j <= last; j++) {
-    const u = ((x[j] as number) - at) / width
-    const distance = Math.abs(u)
-    if (distance >= 1) continue
-    const falling = 1 - distance * distance * distance
-    const w = falling * falling * falling
-    const v = w * ((y[j] as number) - offset)
-    const u2 = u * u
-    const wu2 = w * u2
-    const wu4 = wu2 * u2
-    s0 += w
-    s1 += w * u
-    s2 += wu2
-    s3 += wu2 * u
-    s4 += wu4
-    s5 += wu4 * u
-    s6 += wu4 * u2
-    t0 += v
-    t1 += v * u
-    t2 += v * u2
-    t3 += v * u2 * u
-  }
-  normal[0] = s0
-  normal[4] = s1
-  normal[5] = s2
-  normal[8] = s2
-  normal[9] = s3
-  normal[10] = s4
-  normal[12] = s3
-  normal[13] = s4
-  normal[14] = s5
-  normal[15] = s6
-  right[0] = t0
-  right[1] = t1
-  right[2] = t2
-  right[3] = t3
-}
-
-/** The mean of a polynomial over a cell is not its value at the mean x: the regression is on the means of the powers. */
-function sumCells(
-  x: Float64Array,
-  y: Float64Array,
-  { rows, squares, cubes }: NonNullable<Samples['within']>,
-  at: number,
-  first: number,
-  last: number,
-  width: number,
-  offset: number,
-  { normal, right }: Scratch,
-): void {
-  let s00 = 0
-  let s10 = 0
-  let s11 = 0
-  let s20 = 0
-  let s21 = 0
-  let s22 = 0
-  let s30 = 0
-  let s31 = 0
-  let s32 = 0
-  let s33 = 0
-  let t0 = 0
-  let t1 = 0
-  let t2 = 0
-  let t3 = 0
-  const perWidth = 1 / width
-  for (let j = first; j <= last; j++) {
-    const u = ((x[j] as number) - at) * perWidth
-    const distance = Math.abs(u)
-    if (distance >= 1) continue
-    const falling = 1 - distance * distance * distance
-    const w = falling * falling * falling * (rows[j] as number)
-    const square = (squares[j] as number) * perWidth * perWidth
-    const p2 = u * u + square
-    const p3 = u * (u * u + 3 * square) + (cubes[j] as number) * perWidth * perWidth * perWidth
-    const v = w * ((y[j] as number) - offset)
-    const w1 = w * u
-    const w2 = w * p2
-    const w3 = w * p3
-    s00 += w
-    s10 += w1
-    s11 += w1 * u
-    s20 += w2
-    s21 += w2 * u
-    s22 += w2 * p2
-    s30 += w3
-    s31 += w3 * u
-    s32 += w3 * p2
-    s33 += w3 * p3
-    t0 += v
-    t1 += v * u
-    t2 += v * p2
-    t3 += v * p3
-  }
-  normal[0] = s00
-  normal[4] = s10
-  normal[5] = s11
-  normal[8] = s20
-  normal[9] = s21
-  normal[10] = s22
-  normal[12] = s30
-  normal[13] = s31
-  normal[14] = s32
-  normal[15] = s33
-  right[0] = t0
-  right[1] = t1
-  right[2] = t2
-  right[3] = t3
-}
-
-/** The coefficients of the weighted polynomial, by Cholesky's factors; the degree is lowered where the points do not carry it. Returns how many there are. */
-function solve({ normal, right, factor: l, coefficients: c }: Scratch, degree: number): number {
-  let size = 0
-  for (; size <= degree; size++) {
-    // Each row of the factor is that of every larger one: the first that is not carried ends it.
-    const row = 4 * size
-    for (let j = 0; j < size; j++) {
-      let rest = normal[row + j] as number
-      for (let k = 0; k < j; k++) rest -= (l[row + k] as number) * (l[4 * j + k] as number)
-      l[row + j] = rest / (l[4 * j + j] as number)
-    }
-    const diagonal = normal[row + size] as number
-    let rest = diagonal
-    for (let k = 0; k < size; k++) rest -= (l[row + k] as number) * (l[row + k] as number)
-    if (!(rest > 1e-13 * diagonal)) break
-    l[row + size] = Math.sqrt(rest)
-  }
-  for (let i = 0; i < size; i++) {
-    let rest = right[i] as number
-    for (let k = 0; k < i; k++) rest -= (l[4 * i + k] as number) * (c[k] as number)
-    c[i] = rest / (l[4 * i + i] as number)
-  }
-  for (let i = size - 1; i >= 0; i--) {
-    let rest = c[i] as number
-    for (let k = i + 1; k < size; k++) rest -= (l[4 * k + i] as number) * (c[k] as number)
-    c[i] = rest / (l[4 * i + i] as number)
-  }
-  return size
 }

@@ -19,8 +19,22 @@ const mostSamples = 5_000
 export function noiseOf(x: Float64Array, y: Float64Array, first: number, last: number, stride = 1): number {
   const every = Math.max(1, Math.ceil((last - first + 1) / mostSamples))
   const scaled = new Float64Array(Math.max(0, Math.ceil((last - first + 1 - 4 * stride) / every)))
+  const count = differences(x, y, first + 2 * stride, last - 2 * stride, every, stride, scaled)
+  return madToStandardDeviation * median(scaled.subarray(0, count))
+}
+
+/** Distance of each sample looked at from the cubic through its four neighbours, over its standard deviation for noise of 1; how many there are. */
+function differences(
+  x: Float64Array,
+  y: Float64Array,
+  from: number,
+  to: number,
+  every: number,
+  stride: number,
+  scaled: Float64Array,
+): number {
   let count = 0
-  for (let i = first + 2 * stride; i <= last - 2 * stride; i += every) {
+  for (let i = from; i <= to; i += every) {
     const at = x[i] as number
     const a = (x[i - 2 * stride] as number) - at
     const b = (x[i - stride] as number) - at
@@ -38,7 +52,7 @@ export function noiseOf(x: Float64Array, y: Float64Array, first: number, last: n
       wd * (y[i + 2 * stride] as number)
     scaled[count++] = Math.abs((y[i] as number) - estimate) / Math.sqrt(1 + wa * wa + wb * wb + wc * wc + wd * wd)
   }
-  return madToStandardDeviation * median(scaled)
+  return count
 }
 
 /** The same over strides 1, 2, 4, … up to `widestStride`, the largest of them: noise that is correlated from sample to sample is not missed. */
