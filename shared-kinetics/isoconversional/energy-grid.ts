@@ -16,56 +16,63 @@ export const energies: Float64Array = Float64Array.from({ length: steps + 1 }, (
   g === steps ? largestEa : smallestEa * (largestEa / smallestEa) ** (g / steps),
 )
 
-/** ln J and effective 1/T of every run at every level over the grid. */
+/** ln J and effective 1/T of every run at every level over the grid: one column a run, one row of levels after the other, one row a grid point. Read by the functions below. */
 export interface EnergyGrid {
-  /** Exact values at grid point g, written into one entry a run. */
-  readonly read: (g: number, level: number, lnJ: Float64Array, inverseT: Float64Array) => void
-  /**
-   * ln J at any Ea of the range by the cubic through values and slopes of the two grid points around it: within about 3e-6 for a ramp, where most of that is the same
-   * for all runs and cancels in Phi, and the effective 1/T that is the cubic's slope. For drawing and to start a search from, never for a result.
-   */
-  readonly between: (Ea: number, level: number, lnJ: Float64Array, inverseT?: Float64Array) => void
+  readonly levels: number
+  readonly lnJ: readonly Float64Array[]
+  readonly inverseT: readonly Float64Array[]
 }
 
 /** One pass over each run for each grid point serves all levels. */
 export function energyGrid(integrals: readonly TimeIntegral[], levels: number, context: TaskContext): EnergyGrid {
-  const rows = integrals.map((integral) => {
-    // One row of levels after the other, one row a grid point.
-    const row = { lnJ: new Float64Array(energies.length * levels), inverseT: new Float64Array(energies.length * levels) }
-    energies.forEach((Ea, g) => {
+  const column = (): Float64Array => new Float64Array(energies.length * levels)
+  const grid = { levels, lnJ: integrals.map(column), inverseT: integrals.map(column) }
+  integrals.forEach((integral, i) => {
+    for (let g = 0; g < energies.length; g++) {
       context.checkCancelled()
       const [from, to] = [g * levels, (g + 1) * levels]
-      integral.atAllLevels(Ea, row.lnJ.subarray(from, to), row.inverseT.subarray(from, to))
-    })
-    return row
+      integral.atAllLevels(
+        energies[g] as number,
+        (grid.lnJ[i] as Float64Array).subarray(from, to),
+        (grid.inverseT[i] as Float64Array).subarray(from, to),
+      )
+    }
   })
-  return {
-    read(g, level, lnJ, inverseT) {
-      for (let i = 0; i < rows.length; i++) {
-        const row = rows[i] as (typeof rows)[number]
-        lnJ[i] = row.lnJ[g * levels + level] as number
-        inverseT[i] = row.inverseT[g * levels + level] as number
-      }
-    },
-    between(Ea, level, lnJ, inverseT) {
-      const place = stepsPerLog * Math.log(Ea / smallestEa)
-      const g = Math.min(steps - 1, Math.max(0, Math.floor(place)))
-      const lower = energies[g] as number
-      const width = (energies[g + 1] as number) - lower
-      const s = (Ea - lower) / width
-      const a = g * levels + level
-      const b = a + levels
-      for (let i = 0; i < rows.length; i++) {
-        const row = rows[i] as (typeof rows)[number]
-        const y0 = row.lnJ[a] as number
-        const rise = (row.lnJ[b] as number) - y0
-        const m0 = (-width * (row.inverseT[a] as number)) / gasConstant_J_per_mol_K
-        const m1 = (-width * (row.inverseT[b] as number)) / gasConstant_J_per_mol_K
-        const c2 = 3 * rise - 2 * m0 - m1
-        const c3 = m0 + m1 - 2 * rise
-        lnJ[i] = y0 + s * (m0 + s * (c2 + s * c3))
-        if (inverseT !== undefined) inverseT[i] = (-gasConstant_J_per_mol_K * (m0 + s * (2 * c2 + 3 * s * c3))) / width
-      }
-    },
+  return grid
+}
+
+/** Exact values at grid point g, written into one entry a run. */
+export function readGrid(grid: EnergyGrid, g: number, level: number, lnJ: Float64Array, inverseT: Float64Array): void {
+  const place = g * grid.levels + level
+  for (let i = 0; i < lnJ.length; i++) {
+    lnJ[i] = (grid.lnJ[i] as Float64Array)[place] as number
+    inverseT[i] = (grid.inverseT[i] as Float64Array)[place] as number
+  }
+}
+
+/**
+ * ln J at any Ea of the range by the cubic through values and slopes of the two grid points around it: within about 3e-6 for a ramp, where most of that is the same
+ * for all runs and cancels in Phi, and the effective 1/T that is the cubic's slope. For drawing and to start a search from, never for a result.
+ */
+export function readBetween(grid: EnergyGrid, Ea: number, level: number, lnJ: Float64Array, inverseT: Float64Array): void {
+  const place = stepsPerLog * Math.log(Ea / smallestEa)
+  const g = Math.min(steps - 1, Math.max(0, Math.floor(place)))
+  const lower = energies[g] as number
+  const width = (energies[g + 1] as number) - lower
+  const s = (Ea - lower) / width
+  const a = g * grid.levels + level
+  const b = a + grid.levels
+  const perKelvin = width / gasConstant_J_per_mol_K
+  for (let i = 0; i < lnJ.length; i++) {
+    const values = grid.lnJ[i] as Float64Array
+    const slopes = grid.inverseT[i] as Float64Array
+    const y0 = values[a] as number
+    const rise = (values[b] as number) - y0
+    const m0 = -perKelvin * (slopes[a] as number)
+    const m1 = -perKelvin * (slopes[b] as number)
+    const c2 = 3 * rise - 2 * m0 - m1
+    const c3 = m0 + m1 - 2 * rise
+    lnJ[i] = y0 + s * (m0 + s * (c2 + s * c3))
+    inverseT[i] = -(m0 + s * (2 * c2 + 3 * s * c3)) / perKelvin
   }
 }

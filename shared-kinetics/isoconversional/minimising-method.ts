@@ -2,7 +2,7 @@ import { fQuantile } from '../numerics/f-distribution.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
 import { vyazovkinWight } from '../uncertainty/vyazovkin-wight.ts'
 import { column } from '../units/quantity.ts'
-import { energyGrid, type EnergyGrid } from './energy-grid.ts'
+import { energyGrid, readBetween, type EnergyGrid } from './energy-grid.ts'
 import { phiAround, phiOverRange } from './phi-curve.ts'
 import { findPhiMinimum } from './phi-minimum.ts'
 import { resultColumns } from './result-columns.ts'
@@ -79,7 +79,7 @@ function varianceRatioIntervals(
         })
       }
       const ends = vyazovkinWight(runs, Ea, quantile, read, (energy, lnJ, inverseT) => {
-        grid.between(energy, level, lnJ, inverseT)
+        readBetween(grid, energy, level, lnJ, inverseT)
       })
       lower95[level] = ends.lower95
       upper95[level] = ends.upper95

@@ -1,5 +1,5 @@
 import { column } from '../units/quantity.ts'
-import { largestEa, smallestEa, type EnergyGrid } from './energy-grid.ts'
+import { largestEa, readBetween, smallestEa, type EnergyGrid } from './energy-grid.ts'
 import { phi } from './phi.ts'
 import type { LevelPhi } from './result.ts'
 
@@ -40,11 +40,12 @@ function curve(
   exact: number | null,
 ): Pick<LevelPhi, 'Ea_J_per_mol' | 'phi'> {
   const lnJ = new Float64Array(runs)
+  const inverseT = new Float64Array(runs)
   const values = new Float64Array(at.length)
   let drawn = 0
   for (let i = 0; i < at.length; i++) {
     const Ea = at[i] as number
-    grid.between(Math.min(largestEa, Math.max(smallestEa, Ea)), level, lnJ)
+    readBetween(grid, Math.min(largestEa, Math.max(smallestEa, Ea)), level, lnJ, inverseT)
     const value = exact !== null && i === side ? exact : phi(lnJ)
     // Far from its minimum Phi leaves double precision; such points cannot be drawn.
     if (!(value < Infinity)) continue

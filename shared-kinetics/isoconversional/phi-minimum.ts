@@ -1,7 +1,7 @@
 import { bracketedRoot, type RootOptions } from '../numerics/root.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
-import { energies, type EnergyGrid } from './energy-grid.ts'
+import { energies, readGrid, type EnergyGrid } from './energy-grid.ts'
 import { phi, phiSlope } from './phi.ts'
 import type { LevelPoints, LevelStatus } from './result.ts'
 import type { TimeIntegral } from './time-integral.ts'
@@ -44,7 +44,7 @@ export function findPhiMinimum(
   if (slopes === null) return 'minimum-flat'
 
   const slopeAt = (g: number): number => {
-    grid.read(g, level, lnJ, inverseT)
+    readGrid(grid, g, level, lnJ, inverseT)
     return phiSlope(lnJ, inverseT)
   }
   const minima: PhiMinimum[] = []
@@ -59,7 +59,7 @@ export function findPhiMinimum(
   if (lowest === undefined) return 'minimum-at-bound'
 
   const phiAt = (g: number): number => {
-    grid.read(g, level, lnJ, inverseT)
+    readGrid(grid, g, level, lnJ, inverseT)
     return phi(lnJ)
   }
   const last = energies.length - 1
@@ -82,20 +82,25 @@ function signsOfSlope(grid: EnergyGrid, level: number, lnJ: Float64Array, invers
   const signs = new Float64Array(energies.length)
   let alike = true
   for (let g = 0; g < energies.length; g++) {
-    grid.read(g, level, lnJ, inverseT)
+    readGrid(grid, g, level, lnJ, inverseT)
     sortTogether(inverseT, lnJ)
-    const [coolest, hottest] = [inverseT[n - 1] as number, inverseT[0] as number]
+    const coolest = inverseT[n - 1] as number
+    const hottest = inverseT[0] as number
     alike &&= (coolest - hottest) / coolest < sameTemperature
-    const first = lnJ[0] as number
-    const last = lnJ[n - 1] as number
-    let inOrder = Math.abs(last - first) > clearlyApart
-    for (let i = 1; i < n && inOrder; i++) {
-      const step = (lnJ[i] as number) - (lnJ[i - 1] as number)
-      inOrder = last > first ? step >= 0 : step <= 0
-    }
-    signs[g] = inOrder && coolest > hottest ? (last > first ? -1 : 1) : phiSlope(lnJ, inverseT)
+    const order = coolest > hottest ? orderOf(lnJ) : 0
+    signs[g] = order === 0 ? phiSlope(lnJ, inverseT) : -order
   }
   return alike ? null : signs
+}
+
+/** 1 where the values ascend, -1 where they descend, 0 where they do neither or lie too close to tell. */
+function orderOf(values: Float64Array): number {
+  const first = values[0] as number
+  const last = values[values.length - 1] as number
+  if (Math.abs(last - first) <= clearlyApart) return 0
+  const order = last > first ? 1 : -1
+  for (let i = 1; i < values.length; i++) if (((values[i] as number) - (values[i - 1] as number)) * order < 0) return 0
+  return order
 }
 
 /** Sorts the first column in ascending order, and the other with it. Few runs, nearly always in order already. */
