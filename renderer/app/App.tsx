@@ -7,6 +7,7 @@ import { createSheetActions } from './sheet-actions.ts'
 import { Sheet } from './Sheet.tsx'
 import { storeTheme, usePaper } from './theme.ts'
 import { useFileDrop } from './use-file-drop.ts'
+import { useTablePaste } from './use-table-paste.ts'
 import { useShortcuts } from './use-shortcuts.ts'
 
 /** The whole window. */
@@ -30,6 +31,15 @@ export function App() {
   )
   const filesHangOver = useFileDrop(takeDrop)
   useShortcuts(actions)
+  const takesTable = replica !== null && replica.document.runs.length === 0
+  const pasteTable = useCallback(
+    (text: string) => {
+      view.setState({ stage: 'runs' })
+      void session.offerTable({ kind: 'text', text })
+    },
+    [session, view],
+  )
+  useTablePaste(takesTable, pasteTable)
 
   useEffect(() => view.subscribe((now, before) => now.theme !== before.theme && storeTheme(now.theme)), [view])
   useEffect(() => {
@@ -47,7 +57,7 @@ export function App() {
         {replica !== null && <Sheet replica={replica} actions={actions} paper={paper} />}
         {filesHangOver && (
           <div className="drop-veil">
-            <p>Drop to add the runs to this study</p>
+            <p>{replica?.document.rateConstants == null ? 'Drop to add the runs to this study' : 'Drop a table of rate constants'}</p>
           </div>
         )}
         <input

@@ -3,6 +3,7 @@ import type { RecentStudy } from '../../shared-kinetics/contract/host-api.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
 import { count, formatMoment } from '../sheet/format.ts'
 import { Half } from '../sheet/Half.tsx'
+import { useServices } from '../state/services.ts'
 import { Preview } from './Preview.tsx'
 
 /** A study without runs: what to drop, and what comes of it. */
@@ -40,6 +41,7 @@ export function EmptySheet({ actions, recent }: { readonly actions: SheetActions
               asked.
             </dd>
           </dl>
+          <RateConstantsEntry actions={actions} />
           <Sample />
           {recent.length > 0 && (
             <nav aria-labelledby="recent-title" className="empty-recent">
@@ -51,7 +53,8 @@ export function EmptySheet({ actions, recent }: { readonly actions: SheetActions
                       {study.name}
                     </Button>{' '}
                     <span className="soft">
-                      {count(study.runs, 'run')}, {formatMoment(study.changedAt)}
+                      {study.rateConstants > 0 && study.runs === 0 ? count(study.rateConstants, 'rate constant') : count(study.runs, 'run')}
+                      , {formatMoment(study.changedAt)}
                     </span>
                   </li>
                 ))}
@@ -72,6 +75,24 @@ export function EmptySheet({ actions, recent }: { readonly actions: SheetActions
         </p>
       </Half>
     </>
+  )
+}
+
+/** The other thing a study may hold. */
+function RateConstantsEntry({ actions }: { readonly actions: SheetActions }) {
+  const { session } = useServices()
+  return (
+    <section className="empty-rates" aria-labelledby="rates-title">
+      <h3 id="rates-title">Rate constants against temperature instead?</h3>
+      <p>Paste a table here with Ctrl+V, drop its file, or</p>
+      <Button className="link-button" onPress={actions.typeRateConstants}>
+        type it
+      </Button>
+      <span aria-hidden="true">·</span>
+      <Button className="link-button" onPress={() => void session.offerTable({ kind: 'text', text: '' })}>
+        paste it as text
+      </Button>
+    </section>
   )
 }
 

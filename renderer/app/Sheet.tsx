@@ -1,8 +1,12 @@
 import { useCallback, useEffect, useMemo, useRef } from 'react'
 import { TabPanel, Tabs } from 'react-aria-components'
+import type { RecentStudy } from '../../shared-kinetics/contract/host-api.ts'
 import type { Finding, Severity } from '../../shared-kinetics/contract/study-result.ts'
 import type { Paper } from '../../shared-kinetics/figure/run-scale.ts'
 import { ActivationStage } from '../stages/activation/ActivationStage.tsx'
+import { RateConstantsActivation } from '../stages/activation/RateConstantsActivation.tsx'
+import { RateConstantOffer } from '../stages/runs/RateConstantOffer.tsx'
+import { RateConstantsStage } from '../stages/runs/RateConstantsStage.tsx'
 import { RunsStage } from '../stages/runs/RunsStage.tsx'
 import type { SheetActions, StageProps } from '../stages/stage-props.ts'
 import { MarginNotes, findingElementId } from '../sheet/MarginNotes.tsx'
@@ -16,6 +20,8 @@ import { isStale } from '../state/study-state.ts'
 import { EmptySheet } from './EmptySheet.tsx'
 import { DoneNotice, Messages } from './Messages.tsx'
 import { Rail } from './Rail.tsx'
+import { RateConstantRail } from './RateConstantRail.tsx'
+import { showsRateConstants } from './rate-constant-study.ts'
 import { Safety } from './Safety.tsx'
 
 const noFindings: readonly Finding[] = []
@@ -27,15 +33,23 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
   const conversion = useView((state) => state.conversion)
   const theme = useView((state) => state.theme)
   const evaluated = useStudy((state) => state.evaluated)
+  const rated = useStudy((state) => state.rated)?.result ?? null
+  const offer = useStudy((state) => state.offer)
+  const basis = useView((state) => state.basis)
+  const place = useView((state) => state.rateConstant)
   const recent = useStudy((state) => state.recent)
   const stale = useStudy(isStale)
   const jump = useJump()
   const { document } = replica
+  const table = document.rateConstants
+  const isOfTable = showsRateConstants(replica, { stage, basis })
   const result = evaluated?.result ?? null
   const hasRuns = document.runs.length > 0
   const levelIndex = nearestLevel(result?.levels ?? [], conversion)
   const level = result?.levels[levelIndex] ?? null
-  const findings = (hasRuns ? result?.findings : undefined) ?? noFindings
+  const runFindings = (hasRuns ? result?.findings : undefined) ?? noFindings
+  const tableFindings = (table === null ? undefined : rated?.findings) ?? noFindings
+  const findings = useMemo(() => [...runFindings, ...tableFindings], [runFindings, tableFindings])
   const props = useMemo<StageProps>(
     () => ({ document, result, levelIndex, level, actions }),
     [document, result, levelIndex, level, actions],
@@ -56,8 +70,9 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
         snapshot={replica.confirmed}
         findings={findings}
         hasRuns={hasRuns}
+        rateConstants={table?.rows.length ?? null}
         actions={actions}
-        onFinding={(severity) => jump.toNext(severity, findings)}
+        onFinding={(severity) => jump.toNext(severity, findings, tableFindings)}
         notice={<DoneNotice />}
         mark={<ProgramMark paper={paper} />}
         menus={
@@ -65,8 +80,8 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
             <StudyMenu
               recent={recent}
               currentStudyId={document.id}
-              hasResults={result !== null && result.profiles.length > 0}
-              hasRuns={hasRuns}
+              hasResults={(result !== null && result.profiles.length > 0) || (table?.rows.length ?? 0) > 0}
+              hasRuns={hasRuns || table !== null}
               actions={actions}
               onOpen={() => void session.readRecent()}
             />
@@ -75,37 +90,52 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
         }
       />
       <Messages stale={stale} />
-      {hasRuns ? (
+      {hasRuns || table !== null ? (
         <>
           <main className={stale ? 'stage is-stale' : 'stage'} aria-busy={stale}>
-            <TabPanel id="runs" className="halves halves-runs">
-              <RunsStage {...props} />
+            <TabPanel id="runs" className={hasRuns ? 'halves halves-runs' : 'halves'}>
+              {hasRuns || table === null ? (
+                <RunsStage {...props} />
+              ) : (
+                <RateConstantsStage table={table} rated={rated} place={place} actions={actions} />
+              )}
             </TabPanel>
             <TabPanel id="activation" className="halves">
-              <ActivationStage {...props} />
+              {isOfTable && table !== null ? (
+                <RateConstantsActivation table={table} rated={rated} place={place} actions={actions} hasRuns={hasRuns} />
+              ) : (
+                <ActivationStage {...props} />
+              )}
             </TabPanel>
             <MarginNotes
-              findings={findings.filter((finding) => finding.stage === stage)}
+              findings={(isOfTable ? tableFindings : runFindings).filter((finding) => finding.stage === stage)}
               all={findings}
-              settled={result !== null}
+              settled={isOfTable ? rated !== null : result !== null}
               onShow={jump.toPlace}
             />
             {stage === 'activation' && <Safety />}
           </main>
-          {result !== null && result.runs.length > 0 && level !== null && (
+          {isOfTable && table !== null && rated !== null && offer === null && <RateConstantRail table={table} rated={rated} />}
+          {!isOfTable && result !== null && result.runs.length > 0 && level !== null && (
             <Rail result={result} levelIndex={levelIndex} level={level} actions={actions} />
           )}
         </>
       ) : (
         <main className="stage stage-empty">
           <div className="halves">
-            <EmptySheet actions={actions} recent={recent.filter((study) => study.studyId !== document.id && study.runs > 0)} />
+            {offer === null ? (
+              <EmptySheet actions={actions} recent={recent.filter((study) => study.studyId !== document.id && holdsSomething(study))} />
+            ) : (
+              <RateConstantOffer offer={offer} table={null} actions={actions} />
+            )}
           </div>
         </main>
       )}
     </Tabs>
   )
 }
+
+const holdsSomething = (study: RecentStudy): boolean => study.runs > 0 || study.rateConstants > 0
 
 /** Ways from a count or a note to the stage, run and level that a finding speaks of. */
 function useJump() {
@@ -124,12 +154,13 @@ function useJump() {
   )
 
   const toNext = useCallback(
-    (severity: Severity, findings: readonly Finding[]): void => {
+    (severity: Severity, findings: readonly Finding[], ofTable: readonly Finding[]): void => {
       const same = findings.filter((finding) => finding.severity === severity)
       const next = same[(same.findIndex((finding) => finding === lastRef.current) + 1) % same.length]
       if (next === undefined) return
       lastRef.current = next
       toPlace(next)
+      view.setState({ basis: ofTable.includes(next) ? 'rate-constants' : 'runs' })
       // The note may stand on a stage that is only now being laid out.
       requestAnimationFrame(() => {
         const note = window.document.getElementById(findingElementId(next, findings))
@@ -137,7 +168,7 @@ function useJump() {
         note?.focus()
       })
     },
-    [toPlace],
+    [toPlace, view],
   )
 
   return { toPlace, toNext }

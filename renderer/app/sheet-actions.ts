@@ -1,3 +1,4 @@
+import { emptyTable } from '../stages/runs/rate-constant-edits.ts'
 import { runCopyColumns, runRows } from '../stages/runs/run-rows.ts'
 import { levelCopyColumns, levelRows } from '../stages/activation/level-rows.ts'
 import { peakCopyColumns } from '../stages/activation/peak-rows.ts'
@@ -10,6 +11,7 @@ import type { Services } from '../state/services.ts'
 import type { OpenRequest } from '../state/study-session.ts'
 import { chosenAmong, comparedAmong } from '../state/view-store.ts'
 import { copyToClipboard, download } from './files-out.ts'
+import { rateConstantTables, showsRateConstants } from './rate-constant-study.ts'
 
 /** What buttons, menus and keys set going. Nothing here throws: what went wrong is said on the sheet. */
 export function createSheetActions({ session, view }: Services, openFileDialog: () => void): SheetActions {
@@ -41,6 +43,13 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
     )
   }
 
+  async function exportRateConstants(format: 'csv' | 'json' | 'svg'): Promise<void> {
+    const answer = await session.ask('results.export', { format, of: 'rate-constants' })
+    if (answer === null) return
+    for (const file of answer.files) download(file)
+    session.say('done', `Saved ${answer.files.map((file) => file.fileName).join(' and ')}.`)
+  }
+
   async function copyTable(): Promise<void> {
     const text = tableOfStage({ session, view })
     if (text === null) session.say('failure', 'There is no table to copy yet.')
@@ -61,9 +70,14 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
     newStudy: () => open({ name: 'study.new' }),
     openRecent: (studyId) => open({ name: 'study.open-recent', studyId }),
     saveCopy: () => void saveCopy(),
-    exportTable: () => void exportTable(),
+    exportTable: () => void (showsRateConstants(read().replica, view.getState()) ? exportRateConstants('csv') : exportTable()),
     copyTable: () => void copyTable(),
     copyOut: (text) => void copyOut(text),
+    exportRateConstants: (format) => void exportRateConstants(format),
+    typeRateConstants: () => {
+      view.setState({ stage: 'runs', rateConstant: { kind: 'row', index: 0 } })
+      void session.change({ kind: 'set-rate-constants', table: emptyTable })
+    },
     undo: () => void session.undo(),
     redo: () => void session.redo(),
     moveLevel: (index) => {
@@ -79,9 +93,10 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
 
 /** The table of the stage that is shown, as tab-separated text. */
 function tableOfStage({ session, view }: Services): string | null {
-  const { replica, evaluated, uncertain } = session.store.getState()
+  const { replica, evaluated, uncertain, rated } = session.store.getState()
   const { stage, conversion, chosenMethod, comparedMethods, interval, beneath } = view.getState()
   if (replica === null) return null
+  if (showsRateConstants(replica, view.getState())) return rateConstantTables(replica, rated?.result ?? null, stage)
   const result = evaluated?.result ?? null
   const levelIndex = nearestLevel(result?.levels ?? [], conversion)
   const level = result?.levels[levelIndex] ?? null

@@ -63,7 +63,8 @@ export function StudyMenu({
                 >
                   <Text slot="label">{study.name}</Text>
                   <Text slot="description">
-                    {count(study.runs, 'run')}, {formatMoment(study.changedAt)}
+                    {study.rateConstants > 0 && study.runs === 0 ? count(study.rateConstants, 'rate constant') : count(study.runs, 'run')},{' '}
+                    {formatMoment(study.changedAt)}
                   </Text>
                 </MenuItem>
               ))}

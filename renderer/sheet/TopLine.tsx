@@ -11,6 +11,8 @@ export interface TopLineProps {
   readonly snapshot: StudySnapshot
   readonly findings: readonly Finding[]
   readonly hasRuns: boolean
+  /** Rows of the table of rate constants; null where the study holds none. */
+  readonly rateConstants: number | null
   readonly actions: SheetActions
   readonly onFinding: (severity: Severity) => void
   readonly mark: ReactNode
@@ -26,7 +28,7 @@ const severities = [
 ] as const
 
 /** The top line: what this is, where one is, what was noticed, what can be undone. */
-export function TopLine({ document, snapshot, findings, hasRuns, actions, onFinding, mark, menus, notice }: TopLineProps) {
+export function TopLine({ document, snapshot, findings, hasRuns, rateConstants, actions, onFinding, mark, menus, notice }: TopLineProps) {
   return (
     <header className="top-line">
       <div className="top-study">
@@ -36,12 +38,13 @@ export function TopLine({ document, snapshot, findings, hasRuns, actions, onFind
         </h1>
         <StudyName name={document.name} onRename={(name) => actions.change({ kind: 'rename-study', name })} />
         {hasRuns && <span className="run-count">{count(document.runs.length, 'run')}</span>}
+        {!hasRuns && rateConstants !== null && <span className="run-count">{count(rateConstants, 'rate constant')}</span>}
         {notice}
       </div>
-      {hasRuns && (
+      {(hasRuns || rateConstants !== null) && (
         <TabList className="stages" aria-label="Stages">
           <Tab id="runs" className="stage-tab">
-            Runs
+            {hasRuns ? 'Runs' : 'Rate constants'}
           </Tab>
           <Tab id="activation" className="stage-tab">
             Activation energy

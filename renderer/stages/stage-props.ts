@@ -15,6 +15,9 @@ export interface SheetActions {
   readonly copyTable: () => void
   /** A table as text. */
   readonly copyOut: (text: string) => void
+  readonly exportRateConstants: (format: 'csv' | 'json' | 'svg') => void
+  /** Begins a table of rate constants by hand. */
+  readonly typeRateConstants: () => void
   readonly undo: () => void
   readonly redo: () => void
   readonly moveLevel: (index: number) => void

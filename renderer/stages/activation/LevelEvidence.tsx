@@ -12,6 +12,7 @@ import { count, decimals, formatLevel, shortMethodNames, wholeMethodName } from 
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices, useView } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
+import { BasisChoice } from './BasisChoice.tsx'
 import { Budget } from './Budget.tsx'
 import { isReportBasis, readingOf, scopeWords } from './method-words.tsx'
 import { methodsWith } from './methods-with.ts'
@@ -41,6 +42,7 @@ export function LevelEvidence(props: ActivationProps) {
       }
     >
       <div className="controls">
+        {props.document.rateConstants !== null && <BasisChoice />}
         <Choice
           label="Method"
           options={result.profiles.map((one) => ({ id: one.method, text: shortMethodNames[one.method], name: wholeMethodName(one) }))}

@@ -76,7 +76,7 @@ export const temperatureText = (temperature_K: number, unit: TemperatureUnit): s
 export function rateConstantText(value: number | null): string {
   if (value === null) return ''
   const digits = Number(value.toPrecision(10))
-  return digits < 1e-3 || digits >= 1e5 ? digits.toExponential().replace('e+', 'e') : String(digits)
+  return digits < 1e-2 || digits >= 1e5 ? digits.toExponential().replace('e+', 'e') : String(digits)
 }
 
 const shape = /^([+-]?(?:\d+(?:[.,]\d*)?|[.,]\d+))\s*(?:e([+-]?\d+)|[x×·*]\s*10\s*\^?\s*\(?([+-]?\d+)\)?)?\s*(.*)$/i

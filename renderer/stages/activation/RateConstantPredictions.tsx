@@ -1,0 +1,121 @@
+import type { Maybe, RateConstantPrediction } from '../../../shared-kinetics/contract/study-result.ts'
+import { rateConstantLimits } from '../../../shared-kinetics/contract/rate-constant-schema.ts'
+import type { Parsed } from '../../../shared-kinetics/units/parse-quantity.ts'
+import { copyText } from '../../sheet/data-table.ts'
+import { decimals } from '../../sheet/format.ts'
+import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
+import { mantissaAndPower, scientific } from '../../sheet/scientific.ts'
+import { TableView } from '../../sheet/TableView.tsx'
+import { TypedField } from '../../sheet/TypedField.tsx'
+import { useServices } from '../../state/services.ts'
+import { parseTemperatures, temperaturesText } from '../runs/rate-constant-cells.ts'
+import type { RatedProps } from './RateConstantsActivation.tsx'
+import { placeWords, predictionCopyColumns, temperatureIn } from './rate-constant-rows.ts'
+
+/** k at temperatures that were not measured, or that were: with the band of the line and that of one more measurement. */
+export function RateConstantPredictions({ table, rated, place, actions }: RatedProps) {
+  const { view } = useServices()
+  const { temperatureUnitShown: shown, rateUnit } = table
+  const { predictions } = rated
+  const hasBands = predictions.some((row) => row.lineLower95 !== null)
+  const current = place.kind === 'prediction' ? place.index : null
+  return (
+    <>
+      <div className="predict-at">
+        <TypedField
+          label="Predict k at"
+          text={temperaturesText(table.predictAt_K, shown)}
+          placeholder="25 C, 310 K"
+          parse={(text) => atMost(parseTemperatures(text, shown))}
+          onCommit={(predictAt_K) => actions.change({ kind: 'set-rate-constants', table: { ...table, predictAt_K: [...predictAt_K] } })}
+        />
+      </div>
+      {predictions.length > 0 && (
+        <div className="prediction-space">
+          <TableView label="Table of predictions" copied={() => copyText(predictionCopyColumns(rated), predictions)} currentRow={current}>
+            <table className="data-table level-table prediction-table">
+              <caption className="visually-hidden">Predicted rate constants</caption>
+              <thead>
+                <tr>
+                  <Heading text="T" unit="" />
+                  <Heading text="k" unit={rateUnit} />
+                  {hasBands && <Heading text="95 %, line" unit={rateUnit} />}
+                  {hasBands && <Heading text="95 %, new k" unit={rateUnit} />}
+                  <Heading text="exp(−Ea/RT)" unit="" />
+                  <Heading text="Factor" unit="per 10 K" />
+                  <th scope="col">
+                    <span>To the</span>
+                    <span className="unit">data</span>
+                  </th>
+                </tr>
+              </thead>
+              <tbody>
+                {predictions.map((row, i) => (
+                  // oxlint-disable-next-line react/no-array-index-key, jsx-a11y/click-events-have-key-events, jsx-a11y/no-noninteractive-element-interactions -- predictions have no other name; the rail's keys do the same
+                  <tr
+                    key={i}
+                    aria-current={i === current ? 'true' : undefined}
+                    onClick={() => view.setState({ rateConstant: { kind: 'prediction', index: i } })}
+                  >
+                    <th scope="row" className="is-number">
+                      {temperatureIn(row.temperature_K, shown)}
+                    </th>
+                    <td className="is-number">
+                      <PowerOfTen text={scientific(row.rateConstant, 3)} />
+                    </td>
+                    {hasBands && <Ends of={row} lower={row.lineLower95} upper={row.lineUpper95} />}
+                    {hasBands && <Ends of={row} lower={row.newLower95} upper={row.newUpper95} />}
+                    <td className="is-number">
+                      <PowerOfTen text={scientific(row.exponentialFactor, 3)} />
+                    </td>
+                    <td className="is-number">{scientific(row.factorPer10K.factor, 3)}</td>
+                    <td className={row.extrapolation.side === 'inside' ? 'soft' : 'is-beyond'}>{placeWords(row)}</td>
+                  </tr>
+                ))}
+              </tbody>
+            </table>
+          </TableView>
+        </div>
+      )}
+      {predictions.some((row) => row.extrapolation.side !== 'inside') && (
+        <p className="chart-note">Beyond the measured temperatures the bands hold only as far as the same reaction goes on there.</p>
+      )}
+    </>
+  )
+}
+
+function Heading({ text, unit }: { readonly text: string; readonly unit: string }) {
+  return (
+    <th scope="col" className="is-number">
+      <span>{text}</span>
+      <span className="unit">{unit}</span>
+    </th>
+  )
+}
+
+/** Both ends in the power of ten of k itself, so that they can be held against it at a glance. */
+function Ends({ of, lower, upper }: { readonly of: RateConstantPrediction; readonly lower: Maybe; readonly upper: Maybe }) {
+  if (lower === null || upper === null || of.rateConstant === null) return <td />
+  const [, power] = mantissaAndPower(scientific(of.rateConstant, 3))
+  const scale = power === '' ? 1 : 10 ** Number(power.replace('−', '-'))
+  const end = (value: number): string => decimals(value / scale, placesAt(value / scale))
+  return (
+    <td className="is-number">
+      {end(lower)} … {end(upper)}
+      {power !== '' && (
+        <>
+          {' '}
+          × 10<sup>{power}</sup>
+        </>
+      )}
+    </td>
+  )
+}
+
+/** Three digits. */
+const placesAt = (value: number): number => Math.max(0, 2 - Math.floor(Math.log10(Math.abs(value) || 1)))
+
+const atMost = (parsed: Parsed<readonly number[]>): Parsed<readonly number[]> =>
+  parsed.ok && parsed.value.length > rateConstantLimits.predictions
+    ? { ok: false, reason: `At most ${rateConstantLimits.predictions} temperatures are possible.` }
+    : parsed

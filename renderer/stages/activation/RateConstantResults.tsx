@@ -1,0 +1,157 @@
+import { Button } from 'react-aria-components'
+import type { RateConstantsResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { decimals, formatInterval } from '../../sheet/format.ts'
+import { Half } from '../../sheet/Half.tsx'
+import { copyText } from '../../sheet/data-table.ts'
+import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
+import { TableView } from '../../sheet/TableView.tsx'
+import type { RatedProps } from './RateConstantsActivation.tsx'
+import { RateConstantPredictions } from './RateConstantPredictions.tsx'
+import { parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
+
+/** The right half: Ea, A and what follows from them, and k at the temperatures asked for. */
+export function RateConstantResults(props: RatedProps) {
+  const { rated, actions } = props
+  const { line } = rated
+  return (
+    <Half side="result" title="Activation energy from rate constants" note={intervalNote(rated)}>
+      {line.Ea_kJ_per_mol === null ? (
+        <p className="missing">{missingText(rated)}</p>
+      ) : (
+        <>
+          <Headline rated={rated} />
+          <Parameters rated={rated} />
+          <p className="rate-fit">{fitText(rated)}</p>
+        </>
+      )}
+      <RateConstantPredictions {...props} />
+      <div className="half-foot">
+        <p className="source">{sourcesOf(rated)}</p>
+        <div className="controls-end">
+          <Button className="text-button" onPress={actions.copyTable}>
+            Copy tables
+          </Button>
+          {(['csv', 'json', 'svg'] as const).map((format) => (
+            <Button
+              key={format}
+              className="text-button"
+              aria-label={`Export ${exportWords[format]} (${format.toUpperCase()})`}
+              onPress={() => actions.exportRateConstants(format)}
+            >
+              {format === 'csv' ? 'Export table (CSV)' : format.toUpperCase()}
+            </Button>
+          ))}
+        </div>
+      </div>
+    </Half>
+  )
+}
+
+const exportWords = { csv: 'table', json: 'results', svg: 'figure' } as const
+
+function Headline({ rated: { line } }: { readonly rated: RateConstantsResult }) {
+  const { Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, standardError_kJ_per_mol: error } = line
+  const places = placesOf(error)
+  const interval = formatInterval(Ea, lower, upper, places)
+  return (
+    <p className="rate-headline">
+      Ea{' '}
+      <strong>
+        {decimals(Ea, places)}
+        {interval !== '' && ` ± ${interval}`}
+      </strong>{' '}
+      kJ/mol
+      {error !== null && interval !== '' && <span className="soft"> (95 %; standard error {decimals(error, places)})</span>}
+    </p>
+  )
+}
+
+function Parameters({ rated }: { readonly rated: RateConstantsResult }) {
+  const rows = parameterRows(rated)
+  const hasIntervals = rows.some((row) => row.lower !== null)
+  return (
+    <div className="parameter-space">
+      <TableView label="Table of parameters" copied={() => copyText(parameterCopyColumns, rows)} currentRow={null}>
+        <table className="data-table parameter-table">
+          <caption className="visually-hidden">Parameters of the Arrhenius line</caption>
+          <thead>
+            <tr>
+              <th scope="col">Quantity</th>
+              <th scope="col" className="is-number">
+                Value
+              </th>
+              {hasIntervals && (
+                <>
+                  <th scope="col" className="is-number">
+                    s.e.
+                  </th>
+                  <th scope="col" className="is-number">
+                    lower 95 %
+                  </th>
+                  <th scope="col" className="is-number">
+                    upper 95 %
+                  </th>
+                </>
+              )}
+            </tr>
+          </thead>
+          <tbody>
+            {rows.map((row) => (
+              <tr key={row.id}>
+                <th scope="row">
+                  {row.quantity} {row.unit !== '' && <span className="soft">{row.unit}</span>}
+                </th>
+                <td className="is-number">
+                  <PowerOfTen text={row.format(row.value)} />
+                </td>
+                {hasIntervals && (
+                  <>
+                    <td className="is-number">{row.formatError(row.standardError)}</td>
+                    <td className="is-number">
+                      <PowerOfTen text={row.format(row.lower)} />
+                    </td>
+                    <td className="is-number">
+                      <PowerOfTen text={row.format(row.upper)} />
+                    </td>
+                  </>
+                )}
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </TableView>
+    </div>
+  )
+}
+
+/** Names the interval for what it is. */
+function intervalNote({ line }: RateConstantsResult): string {
+  const { dof } = line.interval
+  if (line.Ea_kJ_per_mol === null) return ''
+  if (dof < 1) return 'No interval: it needs rate constants at three temperatures or more.'
+  return `95 % Student-t, n − 2 degrees of freedom (${dof} here), each parameter by itself; bands pointwise in temperature.`
+}
+
+/** How well the line fits, and whether it is one. */
+function fitText({ line, weightedLine, curvature, eyring }: RateConstantsResult): string {
+  const parts = [
+    line.residualStandardDeviation === null ? '' : `scatter of ln k ${decimals(line.residualStandardDeviation, 4)}`,
+    line.r2 === null || line.interval.dof < 1 ? '' : `r² ${decimals(line.r2, 5)}`,
+    curvature === null
+      ? ''
+      : `${curvature.isCurved ? 'curved' : 'straight within the scatter'}: t ${decimals(Math.abs(curvature.t), 2)} of a quadratic term, ${curvature.isCurved ? 'above' : 'below'} ${decimals(curvature.threshold, 2)} (${curvature.dof} degrees of freedom)`,
+    weightedLine === null ? '' : `weighted by 1/u², reduced χ² ${decimals(weightedLine.reducedChiSquare, 2)}`,
+    eyring?.standardStateOf == null ? '' : `ΔS‡ and ΔG‡ for a standard state of ${eyring.standardStateOf}`,
+  ].filter((part) => part !== '')
+  const text = parts.join('; ')
+  return text === '' ? '' : `${text.charAt(0).toUpperCase()}${text.slice(1)}.`
+}
+
+const sourcesOf = ({ line, eyring }: RateConstantsResult): string => [...new Set([...line.sources, ...(eyring?.sources ?? [])])].join('; ')
+
+const missingText = ({ rows, line }: RateConstantsResult): string =>
+  rows.every((row) => !row.use)
+    ? 'No row is in use. Tick “Use” in the table at the left.'
+    : line.distinctTemperatures < 2
+      ? 'Ea and A stand here as soon as rate constants at two temperatures are in use; their intervals need three.'
+      : 'No line can be drawn through these rate constants. The findings at the right say why.'

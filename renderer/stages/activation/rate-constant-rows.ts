@@ -1,0 +1,184 @@
+import type {
+  ArrheniusResult,
+  EstimateResult,
+  FactorPer10KResult,
+  Maybe,
+  RateConstantPrediction,
+  RateConstantRowResult,
+  RateConstantsResult,
+  TemperatureUnit,
+} from '../../../shared-kinetics/contract/study-result.ts'
+import { decimals } from '../../sheet/format.ts'
+import { scientific } from '../../sheet/scientific.ts'
+import { copyText, type DataColumn } from '../../sheet/data-table.ts'
+import { inUnit, temperatureUnitWords } from '../runs/rate-constant-edits.ts'
+
+/** A quantity that follows from the line, as it stands in the table of results; its texts may hold powers of ten as `1e-5`. */
+export interface ParameterRow {
+  readonly id: string
+  readonly quantity: string
+  readonly unit: string
+  readonly value: Maybe
+  readonly standardError: Maybe
+  readonly lower: Maybe
+  readonly upper: Maybe
+  readonly format: (value: Maybe) => string
+  readonly formatError: (value: Maybe) => string
+}
+
+/** Ea, ln A, A, the transition-state parameters and the factors per 10 K; then, where there is one, the weighted line. */
+export function parameterRows(result: RateConstantsResult): readonly ParameterRow[] {
+  const { line, weightedLine, eyring, factorsPer10K, temperatureUnitShown: shown } = result
+  return [
+    ...lineRows(line, result.rateUnit, ''),
+    ...(weightedLine === null ? [] : lineRows(weightedLine, result.rateUnit, ', weighted')),
+    ...(eyring === null
+      ? []
+      : [
+          estimateRow('enthalpy', 'ΔH‡', 'kJ/mol', eyring.enthalpy_kJ_per_mol),
+          estimateRow('entropy', 'ΔS‡', 'J/(mol K)', eyring.entropy_J_per_mol_K),
+          estimateRow('gibbs', `ΔG‡ at ${temperatureIn(eyring.gibbsAt_K, shown)}`, 'kJ/mol', eyring.gibbs_kJ_per_mol),
+        ].filter((row) => row.value !== null)),
+    ...factorsPer10K.map((factor, i) => factorRow(factor, i, shown)).filter((row) => row.value !== null),
+  ]
+}
+
+function lineRows(line: ArrheniusResult, rateUnit: string, which: string): readonly ParameterRow[] {
+  const unit = rateUnit === '' ? 'unit of k' : rateUnit
+  const A = (value: Maybe): string => scientific(value, 3)
+  return [
+    measured(`Ea${which}`, `Ea${which}`, 'kJ/mol', {
+      value: line.Ea_kJ_per_mol,
+      standardError: line.standardError_kJ_per_mol,
+      lower95: line.lower95_kJ_per_mol,
+      upper95: line.upper95_kJ_per_mol,
+    }),
+    measured(`lnA${which}`, `ln A${which}`, `A in ${unit}`, {
+      value: line.lnA,
+      standardError: line.lnAStandardError,
+      lower95: line.lnALower95,
+      upper95: line.lnAUpper95,
+    }),
+    {
+      id: `A${which}`,
+      quantity: `A${which}`,
+      unit,
+      value: line.A,
+      standardError: null,
+      lower: expOf(line.lnALower95),
+      upper: expOf(line.lnAUpper95),
+      format: A,
+      formatError: A,
+    },
+  ]
+}
+
+const estimateRow = (id: string, quantity: string, unit: string, estimate: EstimateResult): ParameterRow =>
+  measured(id, quantity, unit, estimate)
+
+/** With as many decimals as leave two digits of the standard error, one at least and four at most. */
+function measured(id: string, quantity: string, unit: string, { value, standardError, lower95, upper95 }: EstimateResult): ParameterRow {
+  const places = placesOf(standardError)
+  const format = (number: Maybe): string => decimals(number, places)
+  return { id, quantity, unit, value, standardError, lower: lower95, upper: upper95, format, formatError: format }
+}
+
+export const placesOf = (standardError: Maybe): number =>
+  standardError === null || !(standardError > 0) ? 1 : Math.min(4, Math.max(1, 1 - Math.floor(Math.log10(standardError))))
+
+function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: number, shown: TemperatureUnit): ParameterRow {
+  const format = (value: Maybe): string => scientific(value, 3)
+  return {
+    id: `factor-${i}`,
+    quantity: `Factor per 10 K from ${temperatureIn(from_K, shown)}`,
+    unit: '',
+    value: factor,
+    standardError: null,
+    lower: lower95,
+    upper: upper95,
+    format,
+    formatError: format,
+  }
+}
+
+const expOf = (value: Maybe): Maybe => {
+  const power = value === null ? Number.NaN : Math.exp(value)
+  return Number.isFinite(power) && power > 0 ? power : null
+}
+
+/** A temperature with its unit, to so many decimals of it at most. */
+export const temperatureIn = (temperature_K: number, unit: TemperatureUnit, places = 2): string =>
+  `${String(Number(inUnit(temperature_K, unit).toFixed(places))).replace('-', '−')} ${temperatureUnitWords[unit]}`
+
+/** Where a prediction stands to the data: `inside`, `14 K below`. */
+export const placeWords = ({ extrapolation: { side, beyond_K } }: RateConstantPrediction): string =>
+  side === 'inside' ? 'inside' : `${decimals(beyond_K, beyond_K < 10 ? 1 : 0)} K ${side}`
+
+/** ln k beyond the line, with its sign. */
+export function residualText(residual: Maybe): string {
+  const text = decimals(residual, 3)
+  return text === '' || text.startsWith('−') || Number(text) === 0 ? text : `+${text}`
+}
+
+/** All tables of the stage, one below the other, as tab-separated text. */
+export function copiedTables(result: RateConstantsResult): string {
+  return [
+    copyText(parameterCopyColumns, parameterRows(result)),
+    ...(result.predictions.length === 0 ? [] : [copyText(predictionCopyColumns(result), result.predictions)]),
+    copyText(rowCopyColumns(result), result.rows),
+  ].join('\n\n')
+}
+
+const number = <Row>(id: string, heading: string, unit: string, value: (row: Row) => Maybe): DataColumn<Row> => ({
+  id,
+  heading,
+  unit,
+  numeric: true,
+  text: (row) => String(value(row) ?? ''),
+  value,
+})
+const word = <Row>(id: string, heading: string, text: (row: Row) => string): DataColumn<Row> => ({
+  id,
+  heading,
+  unit: '',
+  numeric: false,
+  text,
+  value: text,
+})
+
+export const parameterCopyColumns: readonly DataColumn<ParameterRow>[] = [
+  word('quantity', 'quantity', (row) => row.quantity),
+  word('unit', 'unit', (row) => row.unit),
+  number('value', 'value', '', (row) => row.value),
+  number('error', 'standard error', '', (row) => row.standardError),
+  number('lower', 'lower 95 %', '', (row) => row.lower),
+  number('upper', 'upper 95 %', '', (row) => row.upper),
+]
+
+const temperatureColumn = <Row extends { readonly temperature_K: number }>({
+  temperatureUnitShown: shown,
+}: RateConstantsResult): DataColumn<Row> =>
+  number('temperature', 'T', temperatureUnitWords[shown], (row) => Number(inUnit(row.temperature_K, shown).toFixed(6)))
+
+export const predictionCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantPrediction>[] => [
+  temperatureColumn(result),
+  number('k', 'k predicted', result.rateUnit, (row) => row.rateConstant),
+  number('line-lower', 'lower 95 %, line', result.rateUnit, (row) => row.lineLower95),
+  number('line-upper', 'upper 95 %, line', result.rateUnit, (row) => row.lineUpper95),
+  number('new-lower', 'lower 95 %, new measurement', result.rateUnit, (row) => row.newLower95),
+  number('new-upper', 'upper 95 %, new measurement', result.rateUnit, (row) => row.newUpper95),
+  number('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
+  number('factor', 'factor per 10 K from T', '', (row) => row.factorPer10K.factor),
+  word('where', 'to the data', placeWords),
+]
+
+export const rowCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantRowResult>[] => [
+  temperatureColumn(result),
+  number('k', 'k measured', result.rateUnit, (row) => row.rateConstant),
+  number('uncertainty', 'u(k)', result.rateUnit, (row) => row.standardUncertainty),
+  number('fitted', 'k of the line', result.rateUnit, (row) => row.fittedRateConstant),
+  number('residual', 'ln k - line', '', (row) => row.residual),
+  number('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
+  word('use', 'use', (row) => (row.use ? 'yes' : 'no')),
+  word('label', 'label', (row) => row.label ?? ''),
+]
