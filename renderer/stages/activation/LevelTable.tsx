@@ -7,6 +7,9 @@ import type { ActivationProps } from './ActivationStage.tsx'
 import { useIntervalOf } from './use-shown.ts'
 import { levelColumns, levelCopyColumns, levelRows, type LevelRow } from './level-rows.ts'
 
+/** With more columns than these the headings take a line more, so that all are in sight. */
+const mostInOneLine = 8
+
 /** Ea at every level. Up and down move the level here as on the rail; a click on a row goes there. */
 export function LevelTable({ result, chosen, compared, shown, levelIndex, actions }: ActivationProps) {
   const rows = useMemo(() => levelRows(result), [result])
@@ -32,7 +35,7 @@ export function LevelTable({ result, chosen, compared, shown, levelIndex, action
       currentRow={levelIndex}
       onKeyDown={onKeyDown}
     >
-      <table className="data-table level-table">
+      <table className={columns.length > mostInOneLine ? 'data-table level-table has-many' : 'data-table level-table'}>
         <caption className="visually-hidden">Activation energy at every level of conversion</caption>
         <TableHead columns={columns} />
         <tbody>

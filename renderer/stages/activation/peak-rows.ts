@@ -21,7 +21,7 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
   },
   {
     id: 'interval',
-    heading: '± 95 %',
+    heading: '±\u00a095\u00a0%',
     unit: 'kJ/mol',
     numeric: true,
     text: (row) => formatInterval(row.Ea_kJ_per_mol, row.lower95_kJ_per_mol, row.upper95_kJ_per_mol),
@@ -102,7 +102,7 @@ export function peakCopyColumns(): readonly DataColumn<PeakMethodResult>[] {
     text('run', 'Run', ({ runLabel }) => runLabel ?? 'all'),
     ...[Ea, interval]
       .filter((column) => column !== undefined)
-      .map((column) => ({ ...column, heading: `${column.heading}${column.id === 'Ea' ? '' : ', Student-t'}` })),
+      .map((column) => ({ ...column, heading: column.id === 'Ea' ? column.heading : '± 95 %, Student-t' })),
     ...(lnA === undefined ? [] : [{ ...lnA, unit: 'A in 1/s' }]),
     number('lnA-error', 's.e. of ln A', '', ({ lnAStandardError }) => lnAStandardError),
     ...(r2 === undefined ? [] : [r2]),

@@ -10,7 +10,13 @@ import type {
 } from '../../../shared-kinetics/contract/host-api.ts'
 import { applyChange, labelOfChange, type StudyChange } from '../../../shared-kinetics/contract/study-change.ts'
 import { emptyStudy, type StudyDocument } from '../../../shared-kinetics/contract/study-document.ts'
-import type { RateConstantsResult, RateConstantTable, RunInfo, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
+import type {
+  RateConstantsResult,
+  RateConstantTable,
+  RunInfo,
+  StudyResult,
+  UncertaintyResult,
+} from '../../../shared-kinetics/contract/study-result.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
 
 type Call = { readonly [Name in RequestName]: { readonly name: Name; readonly input: RequestInput<Name> } }[RequestName]
@@ -20,6 +26,8 @@ export interface MemoryHostOptions {
   readonly demo?: StudyDocument
   /** Results of a study; may take its time. */
   readonly evaluate?: (document: StudyDocument) => StudyResult | Promise<StudyResult>
+  /** What `study.uncertainty` answers; may take its time. */
+  readonly estimate?: (document: StudyDocument) => UncertaintyResult | Promise<UncertaintyResult>
   /** Runs made of uploaded files, by name. */
   readonly read?: (fileNames: readonly string[]) => { readonly runs: readonly RunInfo[]; readonly refused: ImportAnswer['refused'] }
   /** What a text or a file (by its name) reads as; no table where left out. */
@@ -125,6 +133,11 @@ export function createMemoryHost(options: MemoryHostOptions = {}): MemoryHost {
         checkRevision(call.input.revision)
         if (options.evaluate === undefined) throw new Error('this host evaluates nothing')
         return { revision: call.input.revision, result: await options.evaluate(document) }
+      }
+      case 'study.uncertainty': {
+        checkRevision(call.input.revision)
+        if (options.estimate === undefined) throw new Error('this host estimates nothing')
+        return { revision: call.input.revision, result: await options.estimate(document) }
       }
       case 'upload.begin': {
         const uploadId = `upload-${received.size + 1}`
