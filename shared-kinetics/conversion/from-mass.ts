@@ -3,7 +3,7 @@ import { noiseOf } from '../signal/noise.ts'
 import type { Column } from '../units/quantity.ts'
 import type { Converted } from './converted.ts'
 import { rateAtEnds } from './cut-ends.ts'
-import { valueAtEnd } from './plateau.ts'
+import { plateauAtEnd } from './plateau.ts'
 import { curveFromExtent } from './smooth-curve.ts'
 
 /** A change of mass below so many standard deviations of the noise is none. */
@@ -19,8 +19,8 @@ const smallestChange = 10
  */
 export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: Float64Array, label: string): Converted {
   const noise = noiseOf(time_s, mass, 0, mass.length - 1)
-  const start = valueAtEnd(time_s, mass, 'start', noise)
-  const end = valueAtEnd(time_s, mass, 'end', noise)
+  const { value: start, standardError: startError } = plateauAtEnd(time_s, mass, 'start', noise)
+  const { value: end, standardError: endError } = plateauAtEnd(time_s, mass, 'end', noise)
   const change = start - end
   if (!(Math.abs(change) > smallestChange * noise) || Math.abs(change) < 1e-6 * Math.abs(start)) {
     throw new KineticsError(
@@ -29,7 +29,8 @@ export function fromMass(time_s: Column<'s'>, temperature_K: Column<'K'>, mass: 
       { run: label, massAtStart: start, massAtEnd: end },
     )
   }
-  const curve = curveFromExtent(time_s, temperature_K, shareOf(mass, start, change))
+  const size = Math.abs(change)
+  const curve = curveFromExtent(time_s, temperature_K, shareOf(mass, start, change), { start: startError / size, end: endError / size })
   return { curve, baseline: null, area: Number.NaN, rateAtEnds: rateAtEnds(curve), baselineKind: null }
 }
 

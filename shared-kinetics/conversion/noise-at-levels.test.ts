@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { randomStream } from '../numerics/random.ts'
 import { column } from '../units/quantity.ts'
+import { median } from '../signal/median.ts'
+import { fromMass } from './from-mass.ts'
 import { readAtLevels } from './levels.ts'
 import { noiseAtLevels } from './noise-at-levels.ts'
 import { curveFromExtent, curveFromRate } from './smooth-curve.ts'
@@ -94,10 +96,46 @@ describe('what noise leaves in the values read at the levels', () => {
     })
   })
 
+  it('holds what noise leaves in the masses before and after the reaction, from which conversion is counted', () => {
+    // Every sixth row, from 75 s before the middle on: 15 rows at the start, and less at the end. Mass falls by 4 mg.
+    const kept = Array.from({ length: 80 }, (_, i) => 250 + 6 * i).filter((i) => i < 1000)
+    const times = column(
+      Float64Array.from(kept, (i) => time[i] ?? Number.NaN),
+      's',
+    )
+    const T = column(
+      Float64Array.from(kept, (i) => temperature[i] ?? Number.NaN),
+      'K',
+    )
+    const near = [0.1, 0.12, 0.5, 0.9]
+    const reads: number[][] = []
+    const told = near.map((): number[] => [])
+    const correlations: number[] = []
+    for (let k = 0; k < 2 * replicates; k++) {
+      const random = randomStream(12, k)
+      const mass = Float64Array.from(kept, (i) => 8e-6 - 4e-6 * (extent[i] ?? Number.NaN) + 4e-8 * random.normal())
+      const { curve } = fromMass(times, T, mass, 'Run')
+      const read = readAtLevels(curve, near)
+      const at = noiseAtLevels(curve, near, read)
+      reads.push([...read.time_s])
+      near.forEach((_, i) => told[i]?.push(at.time_s[i] ?? Number.NaN))
+      expect(curve.ends.start).toBeGreaterThan(0)
+      correlations.push(at.correlationWithBefore[1] ?? Number.NaN)
+    }
+    const [first, second] = [0, 1].map((i) => reads.map((row) => row[i] ?? Number.NaN))
+    expect(Math.abs(mean(correlations) - correlation(first ?? [], second ?? []))).toBeLessThan(0.2)
+    near.forEach((_, i) => {
+      const sd = deviation(reads.map((row) => row[i] ?? Number.NaN))
+      expect(median(Float64Array.from(told[i] ?? [])) / sd).toBeGreaterThan(0.75)
+      expect(median(Float64Array.from(told[i] ?? [])) / sd).toBeLessThan(1.3)
+    })
+  })
+
   it('is nothing for a curve without noise', () => {
     const curve = curveFromExtent(column(time, 's'), temperature, extent)
     const at = noiseAtLevels(curve, levels, readAtLevels(curve, levels))
     for (const value of at.time_s) expect(value).toBeLessThan(1e-3)
+    for (const value of at.correlationWithBefore) expect(value).not.toBeNaN()
   })
 
   it('is not to be had at a level that the run does not reach', () => {

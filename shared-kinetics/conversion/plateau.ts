@@ -9,17 +9,27 @@ const fewestRowsInBlock = 9
 /** The drift of a line across a block has √12 times the standard error of the block's mean; beyond three of those it is no noise. */
 const certainDrift = 3 * Math.sqrt(12)
 
+/** The value of a signal at one end of its window, and what noise leaves in it. */
+export interface EndValue {
+  readonly value: number
+  readonly standardError: number
+}
+
+/** The value of `plateauAtEnd` alone. */
+export const valueAtEnd = (time: Float64Array, y: Float64Array, end: 'start' | 'end', noiseOfRows: number): number =>
+  plateauAtEnd(time, y, end, noiseOfRows).value
+
 /**
  * Value of a signal at one end of its window, from as much of the plateau there as there is.
  *
  * Looks for a drift first, in the outermost nine rows and in twice as many up to a hundredth of the window (a hold may begin with the reaction running at its
  * fastest): where there is one there is no plateau, and the value is that of a parabola through these rows at the outermost one. Else the blocks of a hundredth of
  * the window are averaged from the end inwards, up to where the mean of a block and that of the block after it both lie beyond twice the noise of such means, on one
- * side.
+ * side. The standard error is that of the mean of so many blocks; of a parabola's outermost value it is 3σ/√rows.
  *
  * @param noiseOfRows - standard deviation of the noise of `y` from row to row
  */
-export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | 'end', noiseOfRows: number): number {
+export function plateauAtEnd(time: Float64Array, y: Float64Array, end: 'start' | 'end', noiseOfRows: number): EndValue {
   const n = time.length
   const rowsInBlock = Math.max(fewestRowsInBlock, Math.ceil(n / blocksInWindow))
   for (let rows = fewestRowsInBlock; ; rows = Math.min(2 * rows, rowsInBlock)) {
@@ -33,7 +43,8 @@ export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | '
       drift > certainDrift * noiseOfMeans(blocksOf(time, y, rows), noiseOfRows)
     ) {
       const outermost = time[end === 'start' ? 0 : n - 1] ?? Number.NaN
-      return localPolynomialAt(time, y, outermost, { halfWidth: 0, degree: 2, minimumPoints: rows }).value
+      const { value } = localPolynomialAt(time, y, outermost, { halfWidth: 0, degree: 2, minimumPoints: rows })
+      return { value, standardError: (3 * noiseOfRows) / Math.sqrt(rows) }
     }
     if (rows === rowsInBlock) break
   }
@@ -41,7 +52,8 @@ export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | '
   const noise = noiseOfMeans(blocks, noiseOfRows)
   const means = end === 'start' ? blocks.y : blocks.y.toReversed()
   let value = means[0] ?? Number.NaN
-  for (let count = 1; count + 1 < means.length; count++) {
+  let count = 1
+  for (; count + 1 < means.length; count++) {
     const limit = 2 * noise * Math.sqrt(1 + 1 / count)
     const next = (means[count] ?? Number.NaN) - value
     const overnext = (means[count + 1] ?? Number.NaN) - value
@@ -49,7 +61,7 @@ export function valueAtEnd(time: Float64Array, y: Float64Array, end: 'start' | '
     if (Math.min(Math.abs(next), Math.abs(overnext)) > limit && next * overnext > 0) break
     value += next / (count + 1)
   }
-  return value
+  return { value, standardError: noise / Math.sqrt(count) }
 }
 
 const numberOfBlocks = (n: number, rows: number): number => Math.max(1, Math.floor(n / rows))

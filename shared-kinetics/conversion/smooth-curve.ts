@@ -21,6 +21,8 @@ export interface ConversionCurve {
   readonly smoothing: LocalPolynomialOptions
   /** Standard deviation of the noise of `measured`. */
   readonly noise: number
+  /** Standard errors of the two values of the signal that were taken for conversion 0 and 1, as conversions; 0 where there are none. */
+  readonly ends: EndErrors
   /** Time the reaction would take at its largest rate. */
   readonly duration_s: number
   /** Rows between conversion 0.02 and 0.98. */
@@ -28,6 +30,13 @@ export interface ConversionCurve {
   /** Gaps in which a notable part of the reaction passed unseen: the row before each and the row after it. */
   readonly gaps: readonly RowRange[]
 }
+
+export interface EndErrors {
+  readonly start: number
+  readonly end: number
+}
+
+const noEnds: EndErrors = { start: 0, end: 0 }
 
 /**
  * The fewest samples between conversion 0.02 and 0.98 from which levels and rates can be read: with them local cubics shift Ea of exact first-order data by up to
@@ -45,7 +54,12 @@ export const fewestPoints = 6
  *
  * @param conversion - may be noisy, and may pass a little below 0 and above 1
  */
-export function curveFromExtent(time_s: Column<'s'>, temperature_K: Column<'K'>, conversion: Float64Array): ConversionCurve {
+export function curveFromExtent(
+  time_s: Column<'s'>,
+  temperature_K: Column<'K'>,
+  conversion: Float64Array,
+  ends: EndErrors = noEnds,
+): ConversionCurve {
   const shape = shapeOf(time_s, conversion)
   const noise = correlatedNoiseOf(time_s, conversion, shape.reaction.first, shape.reaction.last, shape.widestStride)
   const smoothing = smoothingFor('extent', noise, shape)
@@ -58,6 +72,7 @@ export function curveFromExtent(time_s: Column<'s'>, temperature_K: Column<'K'>,
     measured: { kind: 'extent', values: conversion },
     smoothing,
     noise,
+    ends,
     duration_s: shape.duration,
     reaction: shape.reaction,
     gaps: shape.gaps,
@@ -88,6 +103,7 @@ export function curveFromRate(
     measured: { kind: 'rate', values: rate },
     smoothing,
     noise,
+    ends: noEnds,
     duration_s: shape.duration,
     reaction: shape.reaction,
     gaps: shape.gaps,
