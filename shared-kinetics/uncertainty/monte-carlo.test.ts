@@ -139,30 +139,32 @@ describe.each(onRamps)('errors of the measurement carried into Ea by %s', (metho
   })
 })
 
-describe('a stated heating rate that time was rebuilt from', () => {
-  const ofRates = (lnHeatingRate: Float64Array): SeriesAtLevels => {
-    const exact = disturbedSeries(null)
-    return {
-      ...exact,
-      runs: exact.runs.map((run, i) => {
-        const factor = Math.exp(lnHeatingRate[i] ?? Number.NaN)
-        const programme = constantHeatingRate((rates_K_per_min[i] ?? Number.NaN) * factor)
-        return {
-          ...run,
-          programme: { ...programme, source: 'nominal' },
-          time_s: column(
-            run.time_s.map((time) => time / factor),
-            's',
-          ),
-          reactionRate_per_s: column(
-            run.reactionRate_per_s.map((rate) => rate * factor),
-            '1/s',
-          ),
-        }
-      }),
-    }
+/** The exact runs with time rebuilt from stated heating rates that are off by so much. */
+function rebuiltSeries(lnHeatingRate: Float64Array): SeriesAtLevels {
+  const exact = disturbedSeries(null)
+  return {
+    ...exact,
+    runs: exact.runs.map((run, i) => {
+      const factor = Math.exp(lnHeatingRate[i] ?? Number.NaN)
+      const programme = constantHeatingRate((rates_K_per_min[i] ?? Number.NaN) * factor)
+      return {
+        ...run,
+        programme: { ...programme, source: 'nominal' },
+        time_s: column(
+          run.time_s.map((time) => time / factor),
+          's',
+        ),
+        reactionRate_per_s: column(
+          run.reactionRate_per_s.map((rate) => rate * factor),
+          '1/s',
+        ),
+      }
+    }),
   }
-  const exact = ofRates(zeros(5))
+}
+
+describe('a stated heating rate that time was rebuilt from', () => {
+  const exact = rebuiltSeries(zeros(5))
 
   it.each(onRamps)('carries its error into Ea by %s, through durations and reaction rates as well', (method) => {
     const model = energyModel(exact, resultOf(method, exact))
@@ -170,7 +172,7 @@ describe('a stated heating rate that time was rebuilt from', () => {
     for (let draw = 0; draw < 10; draw++) {
       const { lnHeatingRate } = someDisturbance(draw)
       const disturbance = { ...undisturbed, lnHeatingRate }
-      const { Ea } = resultOf(method, ofRates(lnHeatingRate))
+      const { Ea } = resultOf(method, rebuiltSeries(lnHeatingRate))
       levels.forEach((_, level) => {
         const change = (Ea[level] ?? Number.NaN) - (model.Ea[level] ?? Number.NaN)
         expect(Math.abs(change)).toBeGreaterThan(1)
@@ -271,6 +273,8 @@ describe('draws', () => {
   })
 })
 
+const one = (value: number): Column<'J/mol'> => column(Float64Array.of(value), 'J/mol')
+
 describe('the regression with what its scatter cannot show', () => {
   const disturbed = disturbedSeries(someDisturbance(1))
   const result = resultOf('kas', disturbed)
@@ -302,7 +306,6 @@ describe('the regression with what its scatter cannot show', () => {
       let held = 0
       for (let k = 0; k < 4000; k++) {
         const squares = Array.from({ length: dof }, () => random.normal() ** 2).reduce((sum, value) => sum + value, 0)
-        const one = (value: number): Column<'J/mol'> => column(Float64Array.of(value), 'J/mol')
         const { lower95, upper95 } = combinedInterval(
           {
             ...result,
