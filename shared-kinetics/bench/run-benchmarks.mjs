@@ -36,7 +36,12 @@ await build({
     outDir: bundles,
     target: 'node20.19',
     rolldownOptions: {
-      input: { phases: join(here, 'phases.ts'), 'read-export': join(root, 'main/import/read-export.ts') },
+      input: {
+        phases: join(here, 'phases.ts'),
+        'draw-order': join(here, 'draw-order.ts'),
+        'read-export': join(root, 'main/import/read-export.ts'),
+        'worker-pool': join(root, 'main/host/worker-pool.ts'),
+      },
       output: { entryFileNames: '[name].js' },
     },
   },
@@ -51,6 +56,12 @@ function wall(command, args) {
 }
 const within = () =>
   JSON.parse(execFileSync(process.execPath, [join(here, 'measured-process.mjs'), bundles, peer.data], { encoding: 'utf8' }))
+const draws = () =>
+  JSON.parse(
+    execFileSync(process.execPath, [join(here, 'measured-draws.mjs'), bundles, join(root, 'out/main/worker-entry.js'), peer.data], {
+      encoding: 'utf8',
+    }),
+  )
 const activation = ['activation', peer.data, '--out', join(peer.scratch, 'out'), '--levels', '0.01:0.99:0.01', '--quiet']
 
 /** One round: everything once, this program and the peer in turn, so that what else the machine does hits both. */
@@ -66,7 +77,16 @@ function round() {
     readWarm: [own.read.warm_ms, others.read],
     conversion: [own.conversion_ms, others.conversion],
     names: own.methods.names,
+    draws: draws(),
   }
+}
+
+/** What the peer does not do: the figure, and the milliseconds that are asked for. */
+const alone = {
+  first_ms: ['2,000 draws of measured sources, nonlinear method, 99 levels, two workers: their start included', 1000],
+  warm_ms: ['The same after the first call', 1000],
+  cancel_ms: ['From a cancel to its answer, the slowest of five', 100],
+  blocked_ms: ["Longest time the host's own thread was busy meanwhile", null],
 }
 
 /** What is compared, and the ratio that is asked for. */
@@ -98,6 +118,14 @@ function table(measured) {
   )
 }
 
+function tableAlone(measured) {
+  const lines = Object.entries(alone).map(([key, [title, goal]]) => {
+    const values = measured.map((one) => one.draws[key])
+    return `| ${title} | ${ms(median(values))} (${ms(Math.min(...values))} to ${ms(Math.max(...values))}) | ${goal ?? ''} |`
+  })
+  return ['| What | this program, ms: median (spread) | asked for, at most |', '|---|---:|---:|', ...lines].join('\n')
+}
+
 try {
   round() // Files into the page cache; not counted.
   const measured = Array.from({ length: rounds }, (_, i) => {
@@ -111,6 +139,10 @@ Written by \`npm run bench -- --write\`. The peer is a script that reads the sam
 ${rounds} rounds; each ratio is of one round, own time over the peer's, and the table gives their median and spread. The data: 5 runs of ${peer.rows.toLocaleString('en')} rows, 99 levels.
 
 ${table(measured)}
+
+What the peer does not do:
+
+${tableAlone(measured)}
 
 Methods: ${measured[0].names.join(', ')}. The peer: ${peer.words}. This program: Node ${process.versions.node}. Machine: ${cpus().length} × ${cpus()[0]?.model.trim() ?? 'unknown'}.
 `
