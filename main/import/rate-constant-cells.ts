@@ -47,18 +47,25 @@ const withPlainPowers = (line: string): string =>
     },
   )
 
-/** Every way of reading the lines that gives rows of two numbers, the best first; two of the same score are both possible. */
+/**
+ * Every way of reading the lines that gives rows of two numbers, the best first; two of the same score are both possible. Blanks part cells only where no
+ * other sign parts as many rows: in a label such as “batch 1” they do not.
+ */
 export function cellReadings(
   lines: readonly NumberedLine[],
   stated: { readonly delimiter?: DelimiterWord | undefined; readonly decimalSign?: DecimalSignWord | undefined },
 ): readonly CellReading[] {
   const delimiters = stated.delimiter === undefined ? preference : [stated.delimiter]
   const signs: readonly DecimalSignWord[] = stated.decimalSign === undefined ? ['point', 'comma'] : [stated.decimalSign]
-  return delimiters
+  const readings = delimiters
     .flatMap((delimiter) => signs.map((decimal) => readingOf(lines, delimiter, decimal)))
     .filter((reading) => reading.score > 0)
     .toSorted((a, b) => b.score - a.score)
+  const rowsParted = Math.max(...readings.filter(({ delimiter }) => delimiter !== 'blanks').map(dataRows))
+  return readings.filter((reading) => reading.delimiter !== 'blanks' || dataRows(reading) > rowsParted)
 }
+
+const dataRows = ({ rows }: CellReading): number => rows.filter((row) => row.isData).length
 
 function readingOf(lines: readonly NumberedLine[], delimiter: DelimiterWord, decimal: DecimalSignWord): CellReading {
   let score = 0

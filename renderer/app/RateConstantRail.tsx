@@ -1,13 +1,12 @@
 import { useMemo, useRef, type CSSProperties, type KeyboardEvent, type PointerEvent } from 'react'
 import { niceTicks } from '../../shared-kinetics/figure/nice-axis.ts'
 import type { Maybe, RateConstantsResult, RateConstantTable, TemperatureUnit } from '../../shared-kinetics/contract/study-result.ts'
-import { decimals } from '../sheet/format.ts'
 import { levelAfterKey } from '../sheet/level-rail-keys.ts'
 import { PowerOfTen } from '../sheet/PowerOfTen.tsx'
 import { railBars } from '../sheet/rail-bars.ts'
 import { mantissaAndPower, scientific } from '../sheet/scientific.ts'
 import { bandHalfWidth, rateConstantStops, stopAt, type RateConstantStop } from '../stages/activation/rate-constant-stops.ts'
-import { placeWords, residualText, temperatureIn } from '../stages/activation/rate-constant-rows.ts'
+import { errorText, placeWords, residualText, temperatureIn } from '../stages/activation/rate-constant-rows.ts'
 import { inUnit, toKelvin } from '../stages/runs/rate-constant-edits.ts'
 import { useServices, useView } from '../state/services.ts'
 
@@ -148,7 +147,7 @@ function captionOf(widths: readonly Maybe[]): readonly string[] {
   const known = widths.filter((width) => width !== null)
   if (known.length === 0) return []
   const widest = Math.max(...known)
-  const words = widest < 0.7 ? `${decimals(100 * Math.expm1(widest), 1)} % of k` : `factor ${scientific(Math.exp(widest), 3)}`
+  const words = widest < 0.7 ? `${errorText(100 * Math.expm1(widest), 1)} % of k` : `factor ${scientific(Math.exp(widest), 3)}`
   return ['bars: ± 95 % of the line', `widest ${words}`]
 }
 

@@ -1,13 +1,13 @@
 import { Button } from 'react-aria-components'
 import type { RateConstantsResult } from '../../../shared-kinetics/contract/study-result.ts'
-import { decimals, formatInterval } from '../../sheet/format.ts'
+import { count, decimals, formatInterval } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { copyText } from '../../sheet/data-table.ts'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
 import { TableView } from '../../sheet/TableView.tsx'
 import type { RatedProps } from './RateConstantsActivation.tsx'
 import { RateConstantPredictions } from './RateConstantPredictions.tsx'
-import { parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
+import { errorText, parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
 
 /** The right half: Ea, A and what follows from them, and k at the temperatures asked for. */
 export function RateConstantResults(props: RatedProps) {
@@ -61,7 +61,7 @@ function Headline({ rated: { line } }: { readonly rated: RateConstantsResult }) 
         {interval !== '' && ` ± ${interval}`}
       </strong>{' '}
       kJ/mol
-      {error !== null && interval !== '' && <span className="soft"> (95 %; standard error {decimals(error, places)})</span>}
+      {error !== null && interval !== '' && <span className="soft"> (95 %; standard error {errorText(error, places)})</span>}
     </p>
   )
 }
@@ -72,7 +72,7 @@ function Parameters({ rated }: { readonly rated: RateConstantsResult }) {
   return (
     <div className="parameter-space">
       <TableView label="Table of parameters" copied={() => copyText(parameterCopyColumns, rows)} currentRow={null}>
-        <table className="data-table parameter-table">
+        <table className={hasIntervals ? 'data-table parameter-table' : 'data-table parameter-table is-narrow'}>
           <caption className="visually-hidden">Parameters of the Arrhenius line</caption>
           <thead>
             <tr>
@@ -135,11 +135,11 @@ function intervalNote({ line }: RateConstantsResult): string {
 /** How well the line fits, and whether it is one. */
 function fitText({ line, weightedLine, curvature, eyring }: RateConstantsResult): string {
   const parts = [
-    line.residualStandardDeviation === null ? '' : `scatter of ln k ${decimals(line.residualStandardDeviation, 4)}`,
+    line.residualStandardDeviation === null ? '' : `scatter of ln k ${errorText(line.residualStandardDeviation, 4)}`,
     line.r2 === null || line.interval.dof < 1 ? '' : `r² ${decimals(line.r2, 5)}`,
     curvature === null
       ? ''
-      : `${curvature.isCurved ? 'curved' : 'straight within the scatter'}: t ${decimals(Math.abs(curvature.t), 2)} of a quadratic term, ${curvature.isCurved ? 'above' : 'below'} ${decimals(curvature.threshold, 2)} (${curvature.dof} degrees of freedom)`,
+      : `${curvature.isCurved ? 'curved' : 'straight within the scatter'}: t ${decimals(Math.abs(curvature.t), 2)} of a quadratic term, ${curvature.isCurved ? 'above' : 'below'} ${decimals(curvature.threshold, 2)} (${count(curvature.dof, 'degree')} of freedom)`,
     weightedLine === null ? '' : `weighted by 1/u², reduced χ² ${decimals(weightedLine.reducedChiSquare, 2)}`,
     eyring?.standardStateOf == null ? '' : `ΔS‡ and ΔG‡ for a standard state of ${eyring.standardStateOf}`,
   ].filter((part) => part !== '')

@@ -39,7 +39,9 @@ export function parameterRows(result: RateConstantsResult): readonly ParameterRo
           estimateRow('entropy', 'ΔS‡', 'J/(mol K)', eyring.entropy_J_per_mol_K),
           estimateRow('gibbs', `ΔG‡ at ${temperatureIn(eyring.gibbsAt_K, shown)}`, 'kJ/mol', eyring.gibbs_kJ_per_mol),
         ].filter((row) => row.value !== null)),
-    ...factorsPer10K.map((factor, i) => factorRow(factor, i, shown)).filter((row) => row.value !== null),
+    ...distinct(factorsPer10K)
+      .map((factor, i) => factorRow(factor, i, shown))
+      .filter((row) => row.value !== null),
   ]
 }
 
@@ -53,7 +55,7 @@ function lineRows(line: ArrheniusResult, rateUnit: string, which: string): reado
       lower95: line.lower95_kJ_per_mol,
       upper95: line.upper95_kJ_per_mol,
     }),
-    measured(`lnA${which}`, `ln A${which}`, `A in ${unit}`, {
+    measured(`lnA${which}`, `ln A${which}`, `(A in ${unit})`, {
       value: line.lnA,
       standardError: line.lnAStandardError,
       lower95: line.lnALower95,
@@ -76,21 +78,30 @@ function lineRows(line: ArrheniusResult, rateUnit: string, which: string): reado
 const estimateRow = (id: string, quantity: string, unit: string, estimate: EstimateResult): ParameterRow =>
   measured(id, quantity, unit, estimate)
 
-/** With as many decimals as leave two digits of the standard error, one at least and four at most. */
+/** With as many decimals as leave two digits of the standard error, one at least and three at most. */
 function measured(id: string, quantity: string, unit: string, { value, standardError, lower95, upper95 }: EstimateResult): ParameterRow {
   const places = placesOf(standardError)
   const format = (number: Maybe): string => decimals(number, places)
-  return { id, quantity, unit, value, standardError, lower: lower95, upper: upper95, format, formatError: format }
+  const formatError = (error: Maybe): string => errorText(error, places)
+  return { id, quantity, unit, value, standardError, lower: lower95, upper: upper95, format, formatError }
 }
 
 export const placesOf = (standardError: Maybe): number =>
-  standardError === null || !(standardError > 0) ? 1 : Math.min(4, Math.max(1, 1 - Math.floor(Math.log10(standardError))))
+  standardError === null || !(standardError > 0) ? 1 : Math.min(3, Math.max(1, 1 - Math.floor(Math.log10(standardError))))
+
+/** A standard error that is there but too small to be shown is said to be so, never 0. */
+export const errorText = (error: Maybe, places: number): string =>
+  error !== null && error > 0 && error < 0.5 * 10 ** -places ? `< ${(10 ** -places).toFixed(places)}` : decimals(error, places)
+
+/** The factor over the middle of the data says nothing new where that begins at the same temperature. */
+const distinct = (factors: readonly FactorPer10KResult[]): readonly FactorPer10KResult[] =>
+  factors.filter(({ from_K }, i) => factors.findIndex((other) => Math.abs(other.from_K - from_K) < 0.5) === i)
 
 function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: number, shown: TemperatureUnit): ParameterRow {
   const format = (value: Maybe): string => scientific(value, 3)
   return {
     id: `factor-${i}`,
-    quantity: `Factor per 10 K from ${temperatureIn(from_K, shown)}`,
+    quantity: `Factor per 10 K from ${temperatureIn(from_K, shown, 1)}`,
     unit: '',
     value: factor,
     standardError: null,
@@ -117,7 +128,8 @@ export const placeWords = ({ extrapolation: { side, beyond_K } }: RateConstantPr
 /** ln k beyond the line, with its sign. */
 export function residualText(residual: Maybe): string {
   const text = decimals(residual, 3)
-  return text === '' || text.startsWith('−') || Number(text) === 0 ? text : `+${text}`
+  if (/^−?0\.000$/.test(text)) return '0.000'
+  return text === '' || text.startsWith('−') ? text : `+${text}`
 }
 
 /** All tables of the stage, one below the other, as tab-separated text. */

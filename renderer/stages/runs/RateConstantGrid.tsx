@@ -290,7 +290,7 @@ function focusCell(from: HTMLElement, row: number, column: GridColumn): void {
 }
 
 function Reasons({ id, reasons }: { readonly id: string; readonly reasons: Drafts }) {
-  const said = gridColumns.flatMap((column) => reasons[column] ?? [])
+  const said = gridColumns.flatMap((column) => (reasons[column] === undefined ? [] : `${columnWords[column]}: ${reasons[column]}`))
   if (said.length === 0) return null
   return (
     <tr className="grid-reasons">

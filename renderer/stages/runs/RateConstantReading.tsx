@@ -41,15 +41,15 @@ function Facts({ table, onTable }: { readonly table: RateConstantTable; readonly
     <>
       <Fact name="Source">{sourceWords(table)}</Fact>
       <Fact name="Rows">
-        {rows.length === 0 ? 'none yet' : `${rows.length}, ${used.length} in use at ${count(distinct, 'distinct temperature')}`}
+        {rows.length === 0 ? 'none yet' : `${used.length} of ${rows.length} in use, at ${count(distinct, 'distinct temperature')}`}
       </Fact>
       <Fact name="Temperature">
         {coldest === undefined || hottest === undefined ? (
           `in ${unit}`
         ) : (
           <>
-            {temperatureText(coldest, shown)} to {temperatureText(hottest, shown)} {unit}
-            {shown !== 'K' && ` (${decimals(coldest, 2)} to ${decimals(hottest, 2)} K)`}
+            {range([coldest, hottest].map((T) => temperatureText(T, shown)))} {unit}
+            {shown !== 'K' && ` (${range([coldest, hottest].map((T) => decimals(T, 2)))} K)`}
             {hasOwnNumbers(table) && <MeantOtherwise table={table} onTable={onTable} />}
           </>
         )}
@@ -62,6 +62,8 @@ function Facts({ table, onTable }: { readonly table: RateConstantTable; readonly
     </>
   )
 }
+
+const range = ([from = '', to = '']: readonly string[]): string => (from === to ? from : `${from} to ${to}`)
 
 const Fact = ({ name, children }: { readonly name: string; readonly children: ReactNode }) => (
   <div>

@@ -9,6 +9,7 @@ import { count, formatLevel, signalWords } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices, useView } from '../../state/services.ts'
 import type { StageProps } from '../stage-props.ts'
+import { HoldsToRateConstants } from './HoldsToRateConstants.tsx'
 import { MixedSignals } from './MixedSignals.tsx'
 import { RunQuestions } from './RunQuestions.tsx'
 import { runColumns, runRows } from './run-rows.ts'
@@ -113,6 +114,7 @@ function Runs({ result, levelIndex, level, actions, document }: StageProps) {
           </Button>
         </div>
       </div>
+      <HoldsToRateConstants result={result} table={document.rateConstants} actions={actions} />
       <MixedSignals document={document} onChange={actions.change} />
       <RunQuestions document={document} result={result} onChange={actions.change} />
       <RunsTable
