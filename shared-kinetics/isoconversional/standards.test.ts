@@ -54,6 +54,39 @@ describe('ASTM E1641', () => {
     expect(Math.abs(one.systematicError[0]! / error - 1)).toBeLessThan(2e-3)
   })
 
+  // The method itself says how Ea follows the slope: run anew with the T of one run moved, which is not the one that x is read at.
+  it.each([9.6, 15.5, 20.5, 30.5, 60.5])('takes into the standard error that b follows Ea, at Ea/RT %f', (x) => {
+    const Ea_true = x * R * 600
+    const T = [585, 600, 612, 630]
+    const beta = T.map((value) => 10 * Math.exp(lnPOfX(Ea_true / (R * value)) - lnPOfX(x)))
+    const scattered = T.map((value, i) => value + [0.3, 0, -0.4, 0.2][i]!)
+    const at = (shift: number) =>
+      astmE1641(constantRateSeries([0.5], beta, [scattered.map((value, i) => (i === 3 ? value + shift : value))]), quiet)
+    const [below, here, above] = [at(-0.02), at(0), at(0.02)]
+    const perSlope = (above.Ea[0]! - below.Ea[0]!) / (above.lines[0]!.slope_K - below.lines[0]!.slope_K)
+    expect(Math.abs(here.points[0]!.energyPerSlope / perSlope - 1)).toBeLessThan(2e-3)
+    // Residuals and 1/T give the standard error of the slope by the textbook's formula.
+    const inverse = scattered.map((value) => 1 / value)
+    const mean = inverse.reduce((sum, value) => sum + value / 4, 0)
+    const spread = inverse.reduce((sum, value) => sum + (value - mean) ** 2, 0)
+    const squares = here.points[0]!.residual.reduce((sum, value) => sum + value * value, 0)
+    expect(here.standardError[0]! / (-perSlope * Math.sqrt(squares / 2 / spread))).toBeCloseTo(1, 2)
+  })
+
+  it('leaves the error that the docstring states', () => {
+    // y b(y) = x b_exact(x) solved for y with 30 digits (mpmath), as (y/x - 1) in percent.
+    const stated: readonly (readonly [number, number])[] = [
+      [10, -0.947],
+      [20, -0.2391],
+      [30, -0.1074],
+      [60, -0.02724],
+    ]
+    for (const [x, percent] of stated) {
+      const close = closeRates(x)
+      expect(100 * (astmE1641(close.series, quiet).Ea[0]! / close.Ea - 1)).toBeCloseTo(percent, 3)
+    }
+  })
+
   it('gives ln A in 1/s of a first-order reaction, whatever the conversion', () => {
     // Sources of A: the table's Ea is 0.1 % low, and A follows it by x times as much.
     expect(Math.abs(result.lnA[0]! - Math.log(1e18 / 60))).toBeLessThan(0.05)
