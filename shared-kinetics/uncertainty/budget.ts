@@ -31,6 +31,14 @@ export const shownByScatter: Readonly<Record<UncertaintySource, boolean>> = {
  * @source jcgm-100-2008 5.1, 5.2
  */
 export function budgetOf(model: EnergyModel, sources: MeasuredSources): Budget {
+  const budget = signedBudgetOf(model, sources)
+  for (const column of Object.values(budget))
+    for (let level = 0; level < column.length; level++) column[level] = Math.abs(column[level] as number)
+  return budget
+}
+
+/** The same, but what moves all runs together with the sign of its effect on Ea: that is what is added up over levels, where the effect on a mean is asked for. */
+export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Budget {
   const { levels, runs } = model
   const empty = (): Column<'J/mol'> => column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
   const budget = {
@@ -67,12 +75,12 @@ export function budgetOf(model: EnergyModel, sources: MeasuredSources): Budget {
         if (s.perSecondBefore !== 0) ofBaseline += s.perSecondBefore * (baseline.time_s[k - runs] as number)
       }
     }
-    budget['temperature-common'][level] = Math.abs(common) * stated.temperatureCommon_K
+    budget['temperature-common'][level] = common * stated.temperatureCommon_K
     budget['temperature-run'][level] = Math.sqrt(ofRuns) * stated.temperatureRun_K
-    budget['temperature-lag'][level] = Math.abs(lag) * stated.lag_s
+    budget['temperature-lag'][level] = lag * stated.lag_s
     budget['heating-rate'][level] = Math.sqrt(heatingRate)
     budget['signal-noise'][level] = Math.sqrt(Math.max(0, ofNoise))
-    budget.baseline[level] = Math.abs(ofBaseline) / Math.sqrt(3)
+    budget.baseline[level] = ofBaseline / Math.sqrt(3)
   }
   return budget
 }
