@@ -19,7 +19,12 @@ export function App() {
   const connection = useStudy((state) => state.connection)
   const replica = useStudy((state) => state.replica)
   const { paper, colours } = usePaper(theme)
-  const importFiles = useCallback((files: readonly File[]) => void session.importFiles(files), [session])
+  const importFiles = useCallback(
+    (files: readonly File[]) => {
+      void session.importFiles(files).then(() => session.store.getState().offer !== null && view.setState({ stage: 'runs' }))
+    },
+    [session, view],
+  )
   const actions = useMemo(() => createSheetActions(services, () => fileInput?.click()), [services, fileInput])
   const takeDrop = useCallback(
     ({ files, emptyFolders }: Dropped) => {
@@ -31,6 +36,7 @@ export function App() {
   )
   const filesHangOver = useFileDrop(takeDrop)
   useShortcuts(actions)
+  const holdsTable = (replica?.document.rateConstants ?? null) !== null && replica?.document.runs.length === 0
   const takesTable = replica !== null && replica.document.runs.length === 0
   const pasteTable = useCallback(
     (text: string) => {
@@ -57,7 +63,7 @@ export function App() {
         {replica !== null && <Sheet replica={replica} actions={actions} paper={paper} />}
         {filesHangOver && (
           <div className="drop-veil">
-            <p>{replica?.document.rateConstants == null ? 'Drop to add the runs to this study' : 'Drop a table of rate constants'}</p>
+            <p>{holdsTable ? 'Drop a table of rate constants' : 'Drop to add the runs to this study'}</p>
           </div>
         )}
         <input

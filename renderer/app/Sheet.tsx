@@ -48,7 +48,7 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
   const levelIndex = nearestLevel(result?.levels ?? [], conversion)
   const level = result?.levels[levelIndex] ?? null
   const runFindings = (hasRuns ? result?.findings : undefined) ?? noFindings
-  const tableFindings = (table === null ? undefined : rated?.findings) ?? noFindings
+  const tableFindings = (table === null || table.rows.length === 0 ? undefined : rated?.findings) ?? noFindings
   const findings = useMemo(() => [...runFindings, ...tableFindings], [runFindings, tableFindings])
   const props = useMemo<StageProps>(
     () => ({ document, result, levelIndex, level, actions }),

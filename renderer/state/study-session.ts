@@ -248,7 +248,8 @@ export function createStudySession(transport: HostTransport): StudySession {
     withdrawOffer: () => set({ offer: null }),
     async importFiles(files) {
       const [only] = files
-      if (get().replica?.document.rateConstants != null && files.length === 1 && only !== undefined && !isSavedStudy(only)) {
+      const holdsTable = (get().replica?.document.rateConstants ?? null) !== null && get().replica?.document.runs.length === 0
+      if (holdsTable && files.length === 1 && only !== undefined && !isSavedStudy(only)) {
         // Runs have no place beside such a table, so the file can only be another one.
         await offerTable({ kind: 'file', file: only })
         return

@@ -43,10 +43,6 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                   {hasBands && <Heading text="95 %, new k" unit={rateUnit} />}
                   <Heading text="exp(−Ea/RT)" unit="" />
                   <Heading text="Factor" unit="per 10 K" />
-                  <th scope="col">
-                    <span>To the</span>
-                    <span className="unit">data</span>
-                  </th>
                 </tr>
               </thead>
               <tbody>
@@ -59,6 +55,7 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                   >
                     <th scope="row" className="is-number">
                       {temperatureIn(row.temperature_K, shown)}
+                      {row.extrapolation.side !== 'inside' && <span className="is-beyond">{placeWords(row)} the data</span>}
                     </th>
                     <td className="is-number">
                       <PowerOfTen text={scientific(row.rateConstant, 3)} />
@@ -69,7 +66,6 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                       <PowerOfTen text={scientific(row.exponentialFactor, 3)} />
                     </td>
                     <td className="is-number">{scientific(row.factorPer10K.factor, 3)}</td>
-                    <td className={row.extrapolation.side === 'inside' ? 'soft' : 'is-beyond'}>{placeWords(row)}</td>
                   </tr>
                 ))}
               </tbody>
@@ -95,7 +91,7 @@ function Heading({ text, unit }: { readonly text: string; readonly unit: string 
 
 /** Both ends in the power of ten of k itself, so that they can be held against it at a glance. */
 function Ends({ of, lower, upper }: { readonly of: RateConstantPrediction; readonly lower: Maybe; readonly upper: Maybe }) {
-  if (lower === null || upper === null || of.rateConstant === null) return <td />
+  if (lower === null || upper === null || of.rateConstant === null) return <td>{''}</td>
   const [, power] = mantissaAndPower(scientific(of.rateConstant, 3))
   const scale = power === '' ? 1 : 10 ** Number(power.replace('−', '-'))
   const end = (value: number): string => decimals(value / scale, placesAt(value / scale))

@@ -134,6 +134,7 @@ function intervalNote({ line }: RateConstantsResult): string {
 
 /** How well the line fits, and whether it is one. */
 function fitText({ line, weightedLine, curvature, eyring }: RateConstantsResult): string {
+  const standardState = eyring?.standardStateOf ?? null
   const parts = [
     line.residualStandardDeviation === null ? '' : `scatter of ln k ${errorText(line.residualStandardDeviation, 4)}`,
     line.r2 === null || line.interval.dof < 1 ? '' : `r² ${decimals(line.r2, 5)}`,
@@ -141,7 +142,7 @@ function fitText({ line, weightedLine, curvature, eyring }: RateConstantsResult)
       ? ''
       : `${curvature.isCurved ? 'curved' : 'straight within the scatter'}: t ${decimals(Math.abs(curvature.t), 2)} of a quadratic term, ${curvature.isCurved ? 'above' : 'below'} ${decimals(curvature.threshold, 2)} (${count(curvature.dof, 'degree')} of freedom)`,
     weightedLine === null ? '' : `weighted by 1/u², reduced χ² ${decimals(weightedLine.reducedChiSquare, 2)}`,
-    eyring?.standardStateOf == null ? '' : `ΔS‡ and ΔG‡ for a standard state of ${eyring.standardStateOf}`,
+    standardState === null ? '' : `ΔS‡ and ΔG‡ for a standard state of ${standardState}`,
   ].filter((part) => part !== '')
   const text = parts.join('; ')
   return text === '' ? '' : `${text.charAt(0).toUpperCase()}${text.slice(1)}.`

@@ -45,9 +45,10 @@ export function parameterRows(result: RateConstantsResult): readonly ParameterRo
   ]
 }
 
+const threeDigits = (value: Maybe): string => scientific(value, 3)
+
 function lineRows(line: ArrheniusResult, rateUnit: string, which: string): readonly ParameterRow[] {
   const unit = rateUnit === '' ? 'unit of k' : rateUnit
-  const A = (value: Maybe): string => scientific(value, 3)
   return [
     measured(`Ea${which}`, `Ea${which}`, 'kJ/mol', {
       value: line.Ea_kJ_per_mol,
@@ -69,8 +70,8 @@ function lineRows(line: ArrheniusResult, rateUnit: string, which: string): reado
       standardError: null,
       lower: expOf(line.lnALower95),
       upper: expOf(line.lnAUpper95),
-      format: A,
-      formatError: A,
+      format: threeDigits,
+      formatError: threeDigits,
     },
   ]
 }
@@ -98,7 +99,6 @@ const distinct = (factors: readonly FactorPer10KResult[]): readonly FactorPer10K
   factors.filter(({ from_K }, i) => factors.findIndex((other) => Math.abs(other.from_K - from_K) < 0.5) === i)
 
 function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: number, shown: TemperatureUnit): ParameterRow {
-  const format = (value: Maybe): string => scientific(value, 3)
   return {
     id: `factor-${i}`,
     quantity: `Factor per 10 K from ${temperatureIn(from_K, shown, 1)}`,
@@ -107,8 +107,8 @@ function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: 
     standardError: null,
     lower: lower95,
     upper: upper95,
-    format,
-    formatError: format,
+    format: threeDigits,
+    formatError: threeDigits,
   }
 }
 

@@ -1,4 +1,4 @@
-import { memo, useId, useRef, useState, type ClipboardEvent, type FocusEvent, type KeyboardEvent } from 'react'
+import { memo, useEffect, useId, useRef, useState, type ClipboardEvent, type FocusEvent, type KeyboardEvent } from 'react'
 import { Button } from 'react-aria-components'
 import type { RateConstantRow, RateConstantTable } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
@@ -41,7 +41,7 @@ export function RateConstantGrid(props: RateConstantGridProps) {
             </th>
             <Heading text="Temperature" unit={temperatureUnitWords[table.temperatureUnitShown]} />
             <Heading text="k" unit={kUnit} />
-            <Heading text="u(k)" unit={`${kUnit}, or %`} />
+            <Heading text="u(k)" unit="or %" />
             <th scope="col">
               <span>Label</span>
             </th>
@@ -167,6 +167,10 @@ function NewRow({ table, onTable, onPasteTable }: RateConstantGridProps) {
   const [reasons, setReasons] = useState<Drafts>(none)
   const errorId = useId()
   const rowRef = useRef<HTMLTableRowElement>(null)
+  const isFirst = table.rows.length === 0
+  useEffect(() => {
+    if (isFirst) rowRef.current?.querySelector<HTMLElement>('input')?.focus()
+  }, [isFirst])
   const isBlank = gridColumns.every((column) => (drafts[column] ?? '').trim() === '')
 
   const clear = (): void => {
@@ -194,7 +198,7 @@ function NewRow({ table, onTable, onPasteTable }: RateConstantGridProps) {
   return (
     <>
       <tr ref={rowRef} className="grid-new" onBlur={onBlur}>
-        <td />
+        <td>{''}</td>
         {gridColumns.map((column) => (
           <Cell
             key={column}
@@ -216,7 +220,7 @@ function NewRow({ table, onTable, onPasteTable }: RateConstantGridProps) {
             onPasteTable={onPasteTable}
           />
         ))}
-        <td />
+        <td>{''}</td>
       </tr>
       <Reasons id={errorId} reasons={reasons} />
     </>
@@ -224,8 +228,8 @@ function NewRow({ table, onTable, onPasteTable }: RateConstantGridProps) {
 }
 
 const placeholders: Readonly<Record<GridColumn, string>> = {
-  temperature: '25',
-  rateConstant: '3.46e-5',
+  temperature: 'e.g. 25',
+  rateConstant: 'e.g. 3.46e-5',
   standardUncertainty: 'optional',
   label: 'optional',
 }
@@ -294,8 +298,7 @@ function Reasons({ id, reasons }: { readonly id: string; readonly reasons: Draft
   if (said.length === 0) return null
   return (
     <tr className="grid-reasons">
-      <td />
-      <td colSpan={5}>
+      <td colSpan={6}>
         <p id={id} role="alert" className="field-error">
           {said.join(' ')}
         </p>

@@ -4,50 +4,23 @@ import { rateConstantText, temperatureText } from './rate-constant-cells.ts'
 import { inUnit, temperatureUnitWords } from './rate-constant-edits.ts'
 
 /** The table as typed, for the clipboard. */
-export function gridCopyColumns(table: RateConstantTable): readonly DataColumn<RateConstantRow>[] {
-  const { temperatureUnitShown: shown, rateUnit } = table
-  const column = (
-    id: string,
-    heading: string,
-    unit: string,
-    text: (row: RateConstantRow) => string,
-    value: (row: RateConstantRow) => number | string | null,
-  ): DataColumn<RateConstantRow> => ({ id, heading, unit, numeric: true, text, value })
+export function gridCopyColumns({ temperatureUnitShown: shown, rateUnit }: RateConstantTable): readonly DataColumn<RateConstantRow>[] {
   return [
-    column(
-      'temperature',
-      'T',
-      temperatureUnitWords[shown],
-      (row) => temperatureText(row.temperature_K, shown),
-      (row) => Number(inUnit(row.temperature_K, shown).toFixed(6)),
-    ),
-    column(
-      'k',
-      'k',
-      rateUnit,
-      (row) => rateConstantText(row.rateConstant),
-      (row) => row.rateConstant,
-    ),
-    column(
-      'uncertainty',
-      'u(k)',
-      rateUnit,
-      (row) => rateConstantText(row.standardUncertainty),
-      (row) => row.standardUncertainty,
-    ),
-    column(
-      'label',
-      'label',
-      '',
-      (row) => row.label ?? '',
-      (row) => row.label,
-    ),
-    column(
-      'use',
-      'use',
-      '',
-      (row) => (row.use ? 'yes' : 'no'),
-      (row) => (row.use ? 'yes' : 'no'),
-    ),
+    {
+      ...numeric('temperature', 'T', temperatureUnitWords[shown]),
+      text: (row) => temperatureText(row.temperature_K, shown),
+      value: (row) => Number(inUnit(row.temperature_K, shown).toFixed(6)),
+    },
+    { ...numeric('k', 'k', rateUnit), text: (row) => rateConstantText(row.rateConstant), value: (row) => row.rateConstant },
+    {
+      ...numeric('uncertainty', 'u(k)', rateUnit),
+      text: (row) => rateConstantText(row.standardUncertainty),
+      value: (row) => row.standardUncertainty,
+    },
+    { id: 'label', heading: 'label', unit: '', numeric: false, text: (row) => row.label ?? '', value: (row) => row.label },
+    { id: 'use', heading: 'use', unit: '', numeric: false, text: useWord, value: useWord },
   ]
 }
+
+const numeric = (id: string, heading: string, unit: string) => ({ id, heading, unit, numeric: true }) as const
+const useWord = (row: RateConstantRow): string => (row.use ? 'yes' : 'no')
