@@ -17,6 +17,17 @@ for (const colorScheme of ['light', 'dark'] as const) {
       expect(await faults(page)).toEqual([])
     })
 
+    test('axe finds nothing where the uncertainty comes from, nor beside peaks and single runs', async ({ sheet, page }) => {
+      await sheet.openDemo()
+      await sheet.goTo('Activation energy')
+      await sheet.option('Interval', 'Bootstrap').click()
+      await sheet.option('Evidence', 'Where the uncertainty comes from').click()
+      await expect(sheet.budgetTable).toBeVisible()
+      await sheet.option('Table', 'Peaks and single runs').click()
+      await expect(sheet.peakTable).toBeVisible()
+      expect(await faults(page)).toEqual([])
+    })
+
     test('axe finds nothing on the two stages, in a menu and beside a refused file', async ({ sheet, page }) => {
       await sheet.openDemo()
       await sheet.goTo('Runs')

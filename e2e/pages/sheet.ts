@@ -53,6 +53,24 @@ export class Sheet {
     await this.page.getByRole('radiogroup', { name: 'Method' }).getByText(label, { exact: true }).click()
   }
 
+  /** One of a few options in sight, by the label of the choice and the option's text. */
+  option(choice: string, text: string): Locator {
+    return this.page.getByRole('radiogroup', { name: choice, exact: true }).getByRole('radio', { name: text, exact: true })
+  }
+
+  get budgetTable(): Locator {
+    return this.page.getByRole('table', { name: /^Where the uncertainty comes from/ })
+  }
+
+  /** A line of the budget, by its source. */
+  budgetRow(source: string): Locator {
+    return this.budgetTable.getByRole('row').filter({ has: this.page.getByRole('rowheader', { name: source, exact: true }) })
+  }
+
+  get peakTable(): Locator {
+    return this.page.getByRole('table', { name: /^Activation energy from rate peaks/ })
+  }
+
   get currentRow(): Locator {
     return this.levelTable.locator('tr[aria-current="true"]')
   }

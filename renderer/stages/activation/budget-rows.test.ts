@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { defaultUncertainty } from '../../../shared-kinetics/contract/study-document.ts'
 import type { BudgetEntry, ProfileResult, UncertaintyProfile } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
-import { budgetCopyColumns, budgetCopyRows, budgetGroups, statedText, uText } from './budget-rows.ts'
+import { budgetCopyColumns, budgetCopyRows, budgetGroups, statedText, uText, type BudgetRow } from './budget-rows.ts'
 import { methodFacts } from './method-facts.ts'
 import type { ShownOfMethod } from './shown-interval.ts'
 import { friedman, result, runAt, starink } from './testing/small-result.ts'
@@ -13,6 +13,8 @@ const entry = (source: BudgetEntry['source'], u: number, shownByScatter: boolean
   magnitude,
   standardUncertainty_kJ_per_mol: [u, null],
   shownByScatter,
+  assumed: false,
+  reason: null,
 })
 const combined = {
   kind: 'combined',
@@ -47,6 +49,12 @@ const shown = (profile: ProfileResult = withScatter, of: UncertaintyProfile | nu
 })
 const groups = budgetGroups(shown(), defaultUncertainty, result.runs, 0)
 
+const rowOf = (settings: typeof defaultUncertainty, runs: typeof result.runs, id: string): BudgetRow | undefined =>
+  budgetGroups(shown(), settings, runs, 0)
+    .flatMap(({ rows }) => rows)
+    .find((row) => row.id === id)
+const wordsOf = (settings: typeof defaultUncertainty, id: string): string | undefined => rowOf(settings, result.runs, id)?.words
+
 describe('budget at a level', () => {
   it('has the parts of the combined uncertainty first, then what the scatter shows already', () => {
     expect(groups.map(({ id, rows }) => [id, rows.map((row) => row.id)])).toEqual([
@@ -69,22 +77,16 @@ describe('budget at a level', () => {
   })
 
   it('says in words what nobody has stated, until it is changed', () => {
-    const words = (settings: typeof defaultUncertainty, id: string): string | undefined =>
-      budgetGroups(shown(), settings, result.runs, 0)
-        .flatMap(({ rows }) => rows)
-        .find((row) => row.id === id)?.words
-    expect(words(defaultUncertainty, 'temperature-run')).toBe('assumed: nobody has stated it')
-    expect(words({ ...defaultUncertainty, temperatureRun_K: 0.2 }, 'temperature-run')).toBe('as stated')
-    expect(words(defaultUncertainty, 'temperature-lag')).toBe('× heating rate, assumed: nobody has stated it')
+    expect(wordsOf(defaultUncertainty, 'temperature-run')).toBe('assumed: nobody has stated it')
+    expect(wordsOf({ ...defaultUncertainty, temperatureRun_K: 0.2 }, 'temperature-run')).toBe('as stated')
+    expect(wordsOf(defaultUncertainty, 'temperature-lag')).toBe('× heating rate, assumed: nobody has stated it')
   })
 
   it('asks for the uncertainty of a heating rate only where one was stated and not measured', () => {
-    const row = (runs: typeof result.runs) =>
-      budgetGroups(shown(), defaultUncertainty, runs, 0)
-        .flatMap(({ rows }) => rows)
-        .find((one) => one.id === 'heating-rate')
-    expect(row(result.runs)).toMatchObject({ stated: null, words: 'measured: up to 0.03 % of each' })
-    expect(row([...result.runs, { ...runAt(5, []), heatingRateSource: 'nominal' }])).toMatchObject({ stated: 'statedHeatingRate_share' })
+    expect(rowOf(defaultUncertainty, result.runs, 'heating-rate')).toMatchObject({ stated: null, words: 'measured: up to 0.03 % of each' })
+    expect(rowOf(defaultUncertainty, [...result.runs, { ...runAt(5, []), heatingRateSource: 'nominal' }], 'heating-rate')).toMatchObject({
+      stated: 'statedHeatingRate_share',
+    })
   })
 
   it('is empty until it is worked out, and has no combined line without a scatter', () => {

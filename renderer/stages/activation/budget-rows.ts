@@ -46,9 +46,10 @@ const statedKeys: Partial<Readonly<Record<UncertaintySource, StatedKey>>> = {
 /** Whether a value is the assumption made where nobody has stated anything. */
 export const isAssumed = (settings: UncertaintySettings, key: StatedKey): boolean => settings[key] === defaultUncertainty[key]
 
+const number = (value: number): string => String(Number(value.toPrecision(6)))
+
 /** What stands in the field. */
 export function statedText(settings: UncertaintySettings, key: StatedKey): string {
-  const number = (value: number): string => String(Number(value.toPrecision(6)))
   if (key === 'lag_s') return `${number(settings[key])} s`
   return key === 'statedHeatingRate_share' ? `${number(100 * settings[key])} %` : `${number(settings[key])} K`
 }

@@ -5,6 +5,21 @@ import { levelColumns, levelCopyColumns, levelRows } from './level-rows.ts'
 import type { ShownInterval } from './shown-interval.ts'
 import { friedman, result, runAt, starink } from './testing/small-result.ts'
 
+const jackknife = (lower: readonly (number | null)[], upper: readonly (number | null)[]): ShownInterval => ({
+  kind: 'jackknife',
+  label: 'Jackknife over runs',
+  approximate: true,
+  note: '',
+  sources: [],
+  lower95_kJ_per_mol: lower,
+  upper95_kJ_per_mol: upper,
+})
+const headings = (profile: ProfileResult): readonly string[] =>
+  levelColumns({ ...result, profiles: [profile] }, profile.method, []).map((column) => column.heading)
+
+const jackknifeOf = (profile: ProfileResult): ShownInterval | null =>
+  profile.method === 'friedman' ? jackknife([148.25, null], [152.25, null]) : jackknife([140, null], [158, 160])
+
 describe('table of levels', () => {
   const columns = levelColumns(result, 'friedman', ['starink'])
   const rows = levelRows(result)
@@ -36,19 +51,8 @@ describe('table of levels', () => {
   })
 
   it('shows and copies the kind of interval that was chosen, each method its own, both ends where one is open', () => {
-    const jackknife = (lower: readonly (number | null)[], upper: readonly (number | null)[]): ShownInterval => ({
-      kind: 'jackknife',
-      label: 'Jackknife over runs',
-      approximate: true,
-      note: '',
-      sources: [],
-      lower95_kJ_per_mol: lower,
-      upper95_kJ_per_mol: upper,
-    })
-    const intervalOf = (profile: ProfileResult): ShownInterval | null =>
-      profile.method === 'friedman' ? jackknife([148.25, null], [152.25, null]) : jackknife([140, null], [158, 160])
     const [first] = rows
-    const shown = levelColumns(result, 'friedman', ['starink'], intervalOf)
+    const shown = levelColumns(result, 'friedman', ['starink'], jackknifeOf)
     expect(shown.map((column) => (first === undefined ? '' : column.text(first))).slice(0, 4)).toEqual([
       '0.05',
       '150.3',
@@ -56,7 +60,7 @@ describe('table of levels', () => {
       '25.12 ± 0.20',
     ])
     const head =
-      copyText(levelCopyColumns(result, 'friedman', ['starink'], intervalOf), rows)
+      copyText(levelCopyColumns(result, 'friedman', ['starink'], jackknifeOf), rows)
         .split('\n')[0]
         ?.split('\t') ?? []
     expect(head).toContain('± 95 % Friedman, jackknife (kJ/mol)')
@@ -74,8 +78,6 @@ describe('table of levels', () => {
   })
 
   it('has the error of the method’s own temperature integral and ln A of its own model only where it has one', () => {
-    const headings = (profile: ProfileResult): readonly string[] =>
-      levelColumns({ ...result, profiles: [profile] }, profile.method, []).map((column) => column.heading)
     expect(headings(friedman)).not.toContain('Syst. error')
     expect(headings(friedman)).not.toContain('ln A')
     const e1641: ProfileResult = {

@@ -45,6 +45,9 @@ const nothing: PeakMethodResult = {
   remarks: [],
 }
 
+const at = (key: PeakMethodResult['numbers'][number]['key'], value: number) =>
+  ({ key, label: 'conversion', value, standardError: null, unit: '1' }) as const
+
 describe('rows of peak and single-run methods', () => {
   it('show Ea, interval and ln A with its error', () => {
     expect(peakColumns.map((column) => column.text(e698))).toEqual(['177.8', '8.4', '30.32 ± 0.54', '0.9994'])
@@ -54,8 +57,6 @@ describe('rows of peak and single-run methods', () => {
   it('give own numbers in words, temperatures in °C, or the reason why a method does not apply', () => {
     expect(ownNumbers(e698)).toBe('D = −d ln p/dx: 1.05; temperature of a half-life of 60 min 277.0 ± 0.6 °C')
     expect(ownNumbers(nothing)).toBe('It is made for crystallisation, which does not change the mass.')
-    const at = (key: PeakMethodResult['numbers'][number]['key'], value: number) =>
-      ({ key, label: 'conversion', value, standardError: null, unit: '1' }) as const
     const numbers = [
       at('conversion-at-peak-lowest', 0.781),
       at('conversion-at-peak-highest', 0.816),

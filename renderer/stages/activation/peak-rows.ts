@@ -77,41 +77,43 @@ function numberText({ label, value, standardError, unit }: PeakMethodNumber): st
 
 const sentence = (text: string): string => `${text.charAt(0).toUpperCase()}${text.slice(1)}${/[.!?]$/.test(text) ? '' : '.'}`
 
+const textColumn = (id: string, heading: string, of: (row: PeakMethodResult) => string): DataColumn<PeakMethodResult> => ({
+  id,
+  heading,
+  unit: '',
+  numeric: false,
+  text: of,
+  value: of,
+})
+
+const numberColumn = (id: string, heading: string, unit: string, of: (row: PeakMethodResult) => Maybe): DataColumn<PeakMethodResult> => ({
+  id,
+  heading,
+  unit,
+  numeric: true,
+  text: (row) => decimals(of(row), 2),
+  value: of,
+  places: 3,
+})
+
 /** For the clipboard: every number with its error, the method's own ones in words, the reason where it does not apply, and what to know before relying on it. */
 export function peakCopyColumns(): readonly DataColumn<PeakMethodResult>[] {
-  const text = (id: string, heading: string, of: (row: PeakMethodResult) => string): DataColumn<PeakMethodResult> => ({
-    id,
-    heading,
-    unit: '',
-    numeric: false,
-    text: of,
-    value: of,
-  })
   const [Ea, interval, lnA, r2] = peakColumns
-  const number = (id: string, heading: string, unit: string, of: (row: PeakMethodResult) => Maybe): DataColumn<PeakMethodResult> => ({
-    id,
-    heading,
-    unit,
-    numeric: true,
-    text: (row) => decimals(of(row), 2),
-    value: of,
-    places: 3,
-  })
   return [
-    text('method', 'Method', ({ label }) => label),
-    text('run', 'Run', ({ runLabel }) => runLabel ?? 'all'),
+    textColumn('method', 'Method', ({ label }) => label),
+    textColumn('run', 'Run', ({ runLabel }) => runLabel ?? 'all'),
     ...[Ea, interval]
       .filter((column) => column !== undefined)
       .map((column) => ({ ...column, heading: column.id === 'Ea' ? column.heading : '± 95 %, Student-t' })),
     ...(lnA === undefined ? [] : [{ ...lnA, unit: 'A in 1/s' }]),
-    number('lnA-error', 's.e. of ln A', '', ({ lnAStandardError }) => lnAStandardError),
+    numberColumn('lnA-error', 's.e. of ln A', '', ({ lnAStandardError }) => lnAStandardError),
     ...(r2 === undefined ? [] : [r2]),
-    number('confirmation', 'temperature of a half-life of 60 min', '°C', ({ numbers }) => {
+    numberColumn('confirmation', 'temperature of a half-life of 60 min', '°C', ({ numbers }) => {
       const kelvins = numbers.find(({ key }) => key === 'confirmation-temperature')?.value ?? null
       return kelvins === null ? null : kelvinToCelsius(kelvins)
     }),
-    text('own', 'Own numbers, or why it does not apply', ownNumbers),
-    text('remarks', 'To know before relying on it', ({ remarks }) => remarks.join(' ')),
-    text('sources', 'Sources', ({ sources }) => sources.join('; ')),
+    textColumn('own', 'Own numbers, or why it does not apply', ownNumbers),
+    textColumn('remarks', 'To know before relying on it', ({ remarks }) => remarks.join(' ')),
+    textColumn('sources', 'Sources', ({ sources }) => sources.join('; ')),
   ]
 }

@@ -1,0 +1,112 @@
+import { demoSeries } from '../../main/demo/demo-series.ts'
+import { writeFileSync } from 'node:fs'
+import { join } from 'node:path'
+import type { Sheet } from '../pages/sheet.ts'
+import { expect, test } from '../pages/program.ts'
+
+test.use({ permissions: ['clipboard-read', 'clipboard-write'] })
+
+/** The first number of a text, with a true minus sign or none. */
+const numberIn = (text: string | null): number => Number(/[\d.]+/.exec(text ?? '')?.[0])
+/** Half the width of the interval at the level, as the table shows it. */
+const halfWidth = async (sheet: Sheet): Promise<number> => numberIn(await sheet.currentRow.getByRole('cell').nth(1).textContent())
+/** u(Ea) of a source, as the budget shows it. */
+const u = async (sheet: Sheet, source: string): Promise<number> =>
+  numberIn(await sheet.budgetRow(source).getByRole('cell').nth(1).textContent())
+
+test('the kind of interval that is chosen is named, and chart, table, rail and read-out follow it', async ({ sheet }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  const right = sheet.page.getByRole('region', { name: 'Activation energy against conversion' })
+  await expect(right).toContainText('Student-t of the regression, n − 2 degrees of freedom (3 here), 95 %, pointwise.')
+  await expect(sheet.readOut).toContainText('bars: ± 95 %, Student-t')
+  const own = await halfWidth(sheet)
+  // A line method has no F-type interval: it is no choice.
+  await expect(sheet.option('Interval', 'F-type')).toHaveCount(0)
+
+  await sheet.option('Interval', 'Combined').click()
+  await expect(right).toContainText('Scatter and measured sources combined, 95 %, pointwise.')
+  await expect(sheet.readOut).toContainText('bars: ± 95 %, combined')
+  const combined = await halfWidth(sheet)
+  expect(combined).toBeGreaterThan(own)
+  await expect(sheet.readOut).toContainText(`± ${combined.toFixed(1)} kJ/mol`)
+
+  await sheet.option('Interval', 'Jackknife').click()
+  await expect(right).toContainText('Jackknife over runs, 95 %, pointwise, approximate.')
+  await expect(right).toContainText('Each of 5 runs left out once')
+
+  await sheet.chooseMethod('Vyazovkin')
+  await sheet.option('Interval', 'F-type').click()
+  await expect(right).toContainText('F-type interval of Vyazovkin and Wight, 95 %, pointwise, approximate.')
+  // Phi shows the ends of that interval in place of Student's.
+  await expect.poll(async () => sheet.told(/^Φ/)).toMatch(/Lower end, 95 % \(F-type\)/)
+})
+
+test('where the uncertainty comes from is shown at the level, changed, undone, copied and exported', async ({ sheet, page }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  await sheet.option('Evidence', 'Where the uncertainty comes from').click()
+  await sheet.option('Interval', 'Combined').click()
+  const common = sheet.budgetRow('Temperature, common to all runs')
+  await expect(common).toContainText('assumed: nobody has stated it')
+  const parts = [await u(sheet, 'Scatter of the runs'), await u(sheet, 'Temperature, common to all runs'), await u(sheet, 'Thermal lag')]
+  const whole = await u(sheet, 'Combined')
+  expect(Math.hypot(...parts)).toBeCloseTo(whole, 1)
+
+  // The rail moves it.
+  await sheet.dragRailTo(0.9)
+  await expect.poll(() => u(sheet, 'Combined')).not.toBe(whole)
+  await sheet.dragRailTo(0.5)
+  await expect.poll(() => u(sheet, 'Combined')).toBe(whole)
+
+  // Ten times the common error: ten times its share of Ea, and a wider interval.
+  const before = await halfWidth(sheet)
+  const field = page.getByRole('textbox', { name: 'Stated: temperature, common to all runs' })
+  await field.fill('-1 K')
+  await field.press('Enter')
+  await expect(field).toHaveAttribute('aria-invalid', 'true')
+  await field.fill('5 K')
+  await field.press('Enter')
+  await expect(common).toContainText('as stated')
+  await expect.poll(() => u(sheet, 'Temperature, common to all runs')).toBeCloseTo(10 * (parts[1] ?? Number.NaN), 0)
+  await expect.poll(() => halfWidth(sheet)).toBeGreaterThan(before)
+  await page.getByRole('button', { name: 'Undo: stated uncertainties' }).click()
+  await expect(common).toContainText('assumed: nobody has stated it')
+  await expect.poll(() => halfWidth(sheet)).toBe(before)
+
+  await page.getByRole('button', { name: 'Copy budget' }).click()
+  await expect.poll(() => page.evaluate(() => navigator.clipboard.readText())).toContain('0.5 K assumed: nobody has stated it\t')
+  await page.getByRole('button', { name: 'Copy table' }).click()
+  await expect.poll(() => page.evaluate(() => navigator.clipboard.readText())).toContain('± 95 % Starink, combined (kJ/mol)')
+
+  const out = await sheet.downloads(2, () => page.getByRole('button', { name: 'Export table (CSV)' }).click())
+  expect(out.get('activation.csv')?.split('\n')[0]).toMatch(/jackknife|Jackknife/)
+  expect(out.get('activation.csv.txt')).toContain('Scatter and measured sources combined')
+  await expect(page.getByText(/^Saved .*, with every kind of interval\.$/)).toBeVisible()
+})
+
+test('three runs are too few for resampling, and the sheet says so', async ({ sheet, page, folder }) => {
+  const files = demoSeries().files.slice(0, 3)
+  for (const { fileName, bytes } of files) writeFileSync(join(folder, fileName), bytes)
+  await sheet.chooseFiles(files.map(({ fileName }) => join(folder, fileName)))
+  await sheet.settled()
+  await sheet.goTo('Activation energy')
+  await expect(page.getByText('Jackknife, bootstrap: needs four runs, here 3.')).toBeVisible()
+  await expect(sheet.option('Interval', 'Jackknife')).toBeDisabled()
+})
+
+test('peaks and single runs stand in a table of their own, with what to know before relying on them', async ({ sheet, page }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  await sheet.option('Table', 'Peaks and single runs').click()
+  await expect(sheet.peakTable.getByRole('row', { name: /^Kissinger/ })).toContainText('peaks at α')
+  const e698 = sheet.peakTable.getByRole('row', { name: /^ASTM E698/ })
+  await expect(e698).toContainText(/half-life of 60 min [\d.]+ ± [\d.]+ °C/)
+  await expect(sheet.peakTable.getByRole('row', { name: /^Augis–Bennett Does/ })).toContainText('does not change the mass')
+  await page.getByRole('region', { name: 'Table of peak and single-run methods' }).focus()
+  await page.keyboard.press('ArrowDown')
+  await expect(e698).toHaveAttribute('aria-current', 'true')
+  await expect(page.getByText(/To confirm: age a sample for 60 min.*does not replace tests/)).toBeVisible()
+  await page.getByRole('button', { name: 'Copy table' }).click()
+  await expect.poll(() => page.evaluate(() => navigator.clipboard.readText())).toMatch(/^Method\tRun\tEa \(kJ\/mol\)/)
+})
