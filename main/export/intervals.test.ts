@@ -54,6 +54,8 @@ const uncertainty: UncertaintyResult = {
           magnitude: '0.5 K',
           standardUncertainty_kJ_per_mol: [1, 1, null],
           shownByScatter: true,
+          assumed: false,
+          reason: null,
         },
       ],
     },

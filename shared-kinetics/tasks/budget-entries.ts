@@ -1,6 +1,12 @@
-import { joulesToKilojoules } from '../units/convert.ts'
+import { isAssumed } from '../uncertainty/assumed-uncertainties.ts'
 import { shownByScatter, type Budget } from '../uncertainty/budget.ts'
-import { uncertaintySources, type MeasuredSources, type UncertaintySource } from '../uncertainty/measured-sources.ts'
+import {
+  uncertaintySources,
+  type MeasuredSources,
+  type StatedUncertainties,
+  type UncertaintySource,
+} from '../uncertainty/measured-sources.ts'
+import { joulesToKilojoules } from '../units/convert.ts'
 import { maybes } from './maybe.ts'
 import type { BudgetEntry } from './study-result.ts'
 
@@ -21,22 +27,59 @@ export function budgetEntries(budget: Budget, sources: MeasuredSources): BudgetE
       source,
       label: labels[source],
       magnitude: magnitudeOf(source, sources),
+      assumed: assumes(source, sources),
       standardUncertainty_kJ_per_mol: maybes(budget[source].map(joulesToKilojoules)),
       shownByScatter: shownByScatter[source],
+      reason: source === 'baseline' ? (sources.baseline?.reason ?? null) : null,
     }))
 }
 
-function magnitudeOf(source: UncertaintySource, { stated, heatingRate_share, noise }: MeasuredSources): string {
+/**
+ * How the combined interval was made, with the size of everything that was put in besides the scatter, and whether anybody stated it.
+ *
+ * @param entries - of the method's budget
+ */
+export function noteOnCombined(entries: readonly BudgetEntry[]): string {
+  const added = entries.filter((entry) => !entry.shownByScatter).map((entry) => `${lowerFirst(entry.label)} (${entry.magnitude})`)
+  const missing = entries.flatMap((entry) =>
+    !entry.shownByScatter && entry.reason !== null ? [` Not to be had here: ${entry.reason}`] : [],
+  )
+  return (
+    `The regression's standard error with what no scatter shows: ${added.join('; ')}. Student's t times the one and the normal quantile times the other, ` +
+    `added in squares. Pointwise, and approximate: the sizes that are stated or assumed count as known exactly.${missing.join('')}`
+  )
+}
+
+const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1)
+
+const statedBy: Partial<Readonly<Record<UncertaintySource, keyof StatedUncertainties>>> = {
+  'temperature-common': 'temperatureCommon_K',
+  'temperature-run': 'temperatureRun_K',
+  'temperature-lag': 'lag_s',
+  'heating-rate': 'statedHeatingRate_share',
+}
+
+function assumes(source: UncertaintySource, { stated, heatingRate_share }: MeasuredSources): boolean {
+  const key = statedBy[source]
+  if (key === undefined || !isAssumed(stated, key)) return false
+  // A measured heating rate has an error of its own: nothing is assumed of it.
+  return source !== 'heating-rate' || heatingRate_share.includes(stated.statedHeatingRate_share)
+}
+
+function magnitudeOf(source: UncertaintySource, sources: MeasuredSources): string {
+  const { stated, heatingRate_share, noise } = sources
+  const from = assumes(source, sources) ? 'assumed, nothing stated' : 'as stated'
   switch (source) {
     case 'temperature-common':
-      return `${stated.temperatureCommon_K} K, as stated`
+      return `${stated.temperatureCommon_K} K, ${from}`
     case 'temperature-run':
-      return `${stated.temperatureRun_K} K in each run, as stated`
+      return `${stated.temperatureRun_K} K in each run, ${from}`
     case 'temperature-lag':
-      return `${stated.lag_s} s times the heating rate, as stated`
+      return `${stated.lag_s} s times the heating rate, ${from}`
     case 'heating-rate': {
       const most = heatingRate_share.reduce((a, b) => Math.max(a, b), 0)
-      return most === 0 ? 'none' : `up to ${percent(most)} % of each`
+      if (most < negligible) return 'none'
+      return `up to ${percent(most)} % of each${assumes(source, sources) ? ', assumed where it was not measured' : ''}`
     }
     case 'signal-noise': {
       const most = noise.time_s.reduce((a, b) => (b > a ? b : a), 0)
@@ -46,5 +89,8 @@ function magnitudeOf(source: UncertaintySource, { stated, heatingRate_share, noi
       return 'area-proportional or straight'
   }
 }
+
+/** Share of a heating rate that is rounding. */
+const negligible = 1e-9
 
 const percent = (share: number): string => (100 * share).toPrecision(2)

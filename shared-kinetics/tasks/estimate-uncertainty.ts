@@ -9,14 +9,14 @@ import { deleteOne, jackknife } from '../uncertainty/jackknife.ts'
 import type { UncertaintySettings } from '../uncertainty/measured-sources.ts'
 import { resampledEnergies } from '../uncertainty/resampled-energies.ts'
 import { resamplesOf, type ResampledInterval, type Resamples } from '../uncertainty/resamples.ts'
-import { budgetEntries } from './budget-entries.ts'
+import { budgetEntries, noteOnCombined } from './budget-entries.ts'
 import type { DrawOrder } from './draw-uncertainty.ts'
 import { intervalResult, type IntervalColumns } from './interval-result.ts'
 import type { EvaluationCache } from './memo.ts'
 import { measuredSourcesOf } from './measured-sources-of.ts'
 import { seriesOfStudy } from './series-of-study.ts'
 import type { StudyInput } from './study-input.ts'
-import type { IntervalResult, UncertaintyProfile, UncertaintyResult } from './study-result.ts'
+import type { BudgetEntry, IntervalResult, UncertaintyProfile, UncertaintyResult } from './study-result.ts'
 
 /** What resampling and propagation say, and what the draws of measured sources are to be made from (`drawShare`, `intervalsOfDraws`). */
 export interface UncertaintyEstimate {
@@ -52,19 +52,16 @@ export function estimateUncertainty(
     const model = energyModel(series, result)
     models.push(model)
     const budget = budgetOf(model, sources)
-    const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget)] : [])]
-    return { method: info.id, intervals, budget: budgetEntries(budget, sources) }
+    const entries = budgetEntries(budget, sources)
+    const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget, entries)] : [])]
+    return { method: info.id, intervals, budget: entries }
   })
   context.progress(chosen.length, chosen.length)
   return { result: { levels: study.settings.levels, seed, draws, profiles }, order: { models, sources } }
 }
 
-const combined = (result: IsoconversionalResult, budget: Budget): IntervalResult =>
-  intervalResult(
-    'combined',
-    combinedInterval(result, budget),
-    "The regression's standard error with what no scatter shows: common error of temperature, lag and choice of baseline, as stated; Student's t times the one and the normal quantile times the other, added in squares. Pointwise.",
-  )
+const combined = (result: IsoconversionalResult, budget: Budget, entries: readonly BudgetEntry[]): IntervalResult =>
+  intervalResult('combined', combinedInterval(result, budget), noteOnCombined(entries))
 
 /** Jackknife and bootstrap over the runs, each where there are runs enough for it. */
 export function intervalsByResampling(

@@ -11,8 +11,8 @@ const kinds: Readonly<
   'vyazovkin-wight-f': { label: 'F-type interval of Vyazovkin and Wight', approximate: true, sources: ['vyazovkin-wight-2000'] },
   jackknife: { label: 'Jackknife over runs', approximate: true, sources: ['tukey-1958', 'efron-tibshirani-1993'] },
   bootstrap: { label: 'Bootstrap over runs', approximate: true, sources: ['efron-tibshirani-1993'] },
-  'measured-sources': { label: 'Measured sources of uncertainty', approximate: false, sources: [] },
-  combined: { label: 'Scatter and measured sources combined', approximate: false, sources: [] },
+  'measured-sources': { label: 'Measured sources of uncertainty', approximate: true, sources: ['jcgm-101-2008'] },
+  combined: { label: 'Scatter and measured sources combined', approximate: true, sources: ['jcgm-100-2008', 'abernethy-1985'] },
 }
 
 /** Columns of an interval in J/mol, as long as the levels; NaN where it is not to be had. */

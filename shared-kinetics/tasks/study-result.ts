@@ -104,10 +104,14 @@ export interface BudgetEntry {
   readonly label: string
   /** What was assumed or measured, with its unit, e.g. `0.5 K in each run`. */
   readonly magnitude: string
+  /** The magnitude is the one taken where nobody has stated anything. */
+  readonly assumed: boolean
   /** Standard uncertainty of Ea that this source alone brings. */
   readonly standardUncertainty_kJ_per_mol: readonly Maybe[]
   /** The scatter of the points shows it already, so that it is not added to the regression's own standard error. */
   readonly shownByScatter: boolean
+  /** Why it cannot be told at any level, as a sentence; null where it can. */
+  readonly reason: string | null
 }
 
 /** What follows from resampling and from measured sources for one method; made apart from the evaluation, since it takes longer. */

@@ -61,18 +61,17 @@ export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Bu
     for (let i = 0; i < runs; i++) {
       const k = level * runs + i
       const s = sensitivity(model, level, i)
-      const slope = noise.lnReactionRateSlope_per_s[k] as number
       common += s.perKelvin
       ofRuns += s.perKelvin ** 2
       lag += s.perKelvin * (model.heatingRate_K_per_s[k] as number)
       heatingRate += (s.perLnHeatingRate * (heatingRate_share[i] as number)) ** 2
-      const now = (s.perSecond + s.perLnReactionRate * slope) * (noise.time_s[k] as number)
-      const before = s.perSecondBefore === 0 ? 0 : s.perSecondBefore * (noise.time_s[k - runs] as number)
-      ofNoise += now ** 2 + before ** 2 + 2 * (noise.correlationWithBefore[k] as number) * now * before
-      ofNoise += (s.perLnReactionRate * (noise.lnReactionRate[k] as number)) ** 2
+      const now = times(s.perSecond + times(s.perLnReactionRate, noise.lnReactionRateSlope_per_s[k]), noise.time_s[k])
+      const before = times(s.perSecondBefore, noise.time_s[k - runs])
+      ofNoise += now ** 2 + before ** 2 + 2 * times(now * before, noise.correlationWithBefore[k])
+      ofNoise += times(s.perLnReactionRate, noise.lnReactionRate[k]) ** 2
       if (baseline !== null) {
-        ofBaseline += s.perSecond * (baseline.time_s[k] as number) + s.perLnReactionRate * (baseline.lnReactionRate[k] as number)
-        if (s.perSecondBefore !== 0) ofBaseline += s.perSecondBefore * (baseline.time_s[k - runs] as number)
+        ofBaseline += times(s.perSecond, baseline.time_s[k]) + times(s.perLnReactionRate, baseline.lnReactionRate[k])
+        ofBaseline += times(s.perSecondBefore, baseline.time_s[k - runs])
       }
     }
     budget['temperature-common'][level] = common * stated.temperatureCommon_K
@@ -84,6 +83,9 @@ export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Bu
   }
   return budget
 }
+
+/** What a method does not use does not matter, known or not: 0 of a factor 0, and NaN only where an unknown value counts. */
+const times = (factor: number, value: number | undefined): number => (factor === 0 ? 0 : factor * (value ?? Number.NaN))
 
 /** dEa of an error of one run at one level: by its temperature, the time of the level and of the level before, its ln beta and ln(dα/dt). */
 interface Sensitivity {

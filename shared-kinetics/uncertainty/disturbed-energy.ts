@@ -60,7 +60,7 @@ function ofLine(model: EnergyModel, form: LineForm, level: number, disturbance: 
       (exponent === 0 ? 0 : exponent * Math.log(disturbed / T)) +
       (form.perSecond[k] as number) * time +
       (form.perLnHeatingRate + (model.timeIsRebuilt[i] === 1 ? form.perLnReactionRate : 0)) * (disturbance.lnHeatingRate[i] as number) +
-      form.perLnReactionRate * (disturbance.lnReactionRate[k] as number)
+      (form.perLnReactionRate === 0 ? 0 : form.perLnReactionRate * (disturbance.lnReactionRate[k] as number))
     meanX += (x[i] as number) / runs
     meanY += (y[i] as number) / runs
   }

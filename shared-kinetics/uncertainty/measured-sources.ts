@@ -44,5 +44,14 @@ export interface MeasuredSources {
     readonly correlationWithBefore: Float64Array
   }
   /** By how much another admissible baseline moves each point; null where there is no choice of one. */
-  readonly baseline: { readonly time_s: Column<'s'>; readonly lnReactionRate: Float64Array } | null
+  readonly baseline: BaselineShift | null
+}
+
+export interface BaselineShift {
+  /** NaN at a level that a run does not reach with the other baseline. */
+  readonly time_s: Column<'s'>
+  /** Also NaN where the other baseline leaves no positive rate. */
+  readonly lnReactionRate: Float64Array
+  /** A sentence that names the run under which no other baseline can be drawn; both tables are then NaN throughout. null: all runs have one. */
+  readonly reason: string | null
 }

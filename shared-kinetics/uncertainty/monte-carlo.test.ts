@@ -96,6 +96,7 @@ const sources = (
             's',
           ),
           lnReactionRate: zeros(entries).map((_, k) => 0.01 * (k % 5)),
+          reason: null,
         },
 })
 

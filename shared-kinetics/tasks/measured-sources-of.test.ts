@@ -1,0 +1,120 @@
+import { describe, expect, it } from 'vitest'
+import {
+  durationOf,
+  evenTimes,
+  firstOrder,
+  holdAt,
+  ramp,
+  reducedTime,
+  runOf,
+  temperatureOf,
+  type Pieces,
+} from '../check-values/simulated-run.ts'
+import type { RunInfo } from '../series/run.ts'
+import type { UncertaintySettings } from '../uncertainty/measured-sources.ts'
+import { drawShare, intervalsOfDraws } from './draw-uncertainty.ts'
+import { estimateUncertainty } from './estimate-uncertainty.ts'
+import { evaluateStudy } from './evaluate-study.ts'
+import type { AnalysisSettings, StudyInput } from './study-input.ts'
+
+const context = { checkCancelled: () => undefined, progress: () => undefined }
+const stated: UncertaintySettings = {
+  temperatureCommon_K: 0.5,
+  temperatureRun_K: 0.5,
+  lag_s: 1,
+  statedHeatingRate_share: 0.02,
+  draws: 400,
+  seed: 1,
+}
+const levels = [0.05, 0.1, 0.3, 0.5, 0.7, 0.9, 0.95]
+const step = { Ea_J_per_mol: 150e3, A_per_s: 1e12 }
+
+type Run = ReturnType<typeof runOf>
+
+/** A heat flow whose baseline drifts and steps with the conversion, as heat capacities that grow and differ leave it. */
+function heatFlowRun(id: string, programme: Pieces, { info = {}, drift = 1e-5 }: { info?: Partial<RunInfo>; drift?: number } = {}): Run {
+  const time = evenTimes(durationOf(programme), 3000)
+  const alpha = reducedTime(step, programme, time).map(firstOrder)
+  const width = (time[1] ?? 1) - (time[0] ?? 0)
+  const heatFlow = alpha.map(
+    (value, k) => ((value - (alpha[k - 1] ?? value)) * 2) / width + drift * (1 + (0.4 * k) / time.length) * (1 + 0.5 * value),
+  )
+  return runOf(
+    id,
+    {
+      time_s: time,
+      temperature_K: time.map((t) => temperatureOf(programme, t)),
+      signals: [{ quantity: 'heat-flow', unit: 'W', values: heatFlow }],
+    },
+    info,
+  )
+}
+
+const studyOf = (runs: readonly Run[], change: Partial<AnalysisSettings>): StudyInput => ({
+  runs: runs.map((run) => run.info),
+  settings: { signal: null, levels, methods: null, window: null, baseline: 'area-proportional', meanRange: [0.1, 0.9], ...change },
+})
+const columnsOf = (runs: readonly Run[]): Parameters<typeof evaluateStudy>[1] =>
+  new Map(runs.map((run) => [run.info.columnsKey, run.columns]))
+
+const heatingRates = [2, 5, 10, 20]
+const methods = ['friedman', 'kas', 'vyazovkin', 'vyazovkin-incremental'] as const
+
+describe('the choice of baseline in the budget', () => {
+  const runs = heatingRates.map((rate) => heatFlowRun(`${rate}`, ramp(400, rate, 700), { drift: 1e-5 * rate }))
+  const columns = columnsOf(runs)
+  const energiesWith = (change: Partial<AnalysisSettings>) =>
+    new Map(evaluateStudy(studyOf(runs, { methods, ...change }), columns, context).profiles.map((one) => [one.method, one.Ea_kJ_per_mol]))
+
+  it.each([
+    ['area-proportional', null],
+    ['straight', null],
+    ['area-proportional', { kind: 'temperature', start_K: 440, end_K: 640 }],
+  ] as const)('is what evaluations with either baseline differ by, over √3: from %s, window %o', (baseline, window) => {
+    const other = energiesWith({ window, baseline: baseline === 'straight' ? 'area-proportional' : 'straight' })
+    const own = energiesWith({ window, baseline })
+    const { profiles } = estimateUncertainty(studyOf(runs, { methods, window, baseline }), columns, stated, context).result
+    let most = 0
+    for (const { method, budget } of profiles) {
+      const entry = budget.find(({ source }) => source === 'baseline')
+      expect(entry?.reason).toBeNull()
+      levels.forEach((level, i) => {
+        const difference = Math.abs((own.get(method)?.[i] ?? Number.NaN) - (other.get(method)?.[i] ?? Number.NaN))
+        most = Math.max(most, difference)
+        // First order: of a large difference a part is not told.
+        const u = entry?.standardUncertainty_kJ_per_mol[i] ?? Number.NaN
+        expect(Math.abs(Math.sqrt(3) * u - difference), `${method} at ${level}: ${Math.sqrt(3) * u} for ${difference}`).toBeLessThan(
+          0.2 * difference + 0.05,
+        )
+      })
+    }
+    expect(most).toBeGreaterThan(2)
+  })
+
+  it('is not to be had, with the run named, where one run has no other baseline', () => {
+    const withHold = [...runs, heatFlowRun('hold', holdAt(520, 4000), { info: { label: 'Hold at 520 K' } })]
+    const study = studyOf(withHold, { methods: ['friedman', 'vyazovkin'] })
+    const { result, order } = estimateUncertainty(study, columnsOf(withHold), stated, context)
+    expect(result.profiles.map(({ method }) => method)).toEqual(['friedman', 'vyazovkin'])
+    const draws = intervalsOfDraws(order, [drawShare({ ...order, range: { seed: 1, from: 0, to: 100 } }, context)], 1)
+    for (const { budget, intervals, method } of result.profiles) {
+      const entry = budget.find(({ source }) => source === 'baseline')
+      expect(entry?.reason).toContain('Hold at 520 K')
+      expect(entry?.standardUncertainty_kJ_per_mol).toEqual(levels.map(() => null))
+      const combined = intervals.find(({ kind }) => kind === 'combined')
+      expect(combined?.upper95_kJ_per_mol).toEqual(levels.map(() => null))
+      expect(combined?.note).toContain('Hold at 520 K')
+      expect(draws.get(method)?.upper95_kJ_per_mol).toEqual(levels.map(() => null))
+      // What does not rest on a baseline stays.
+      for (const { source, standardUncertainty_kJ_per_mol: u } of budget.filter((one) => one.source !== 'baseline'))
+        for (const value of u) expect(value, source).toBeGreaterThanOrEqual(0)
+    }
+  })
+
+  it('has no entry where no run has a choice', () => {
+    const holds = [500, 510, 520, 530].map((T) => heatFlowRun(`${T}`, holdAt(T, 20_000)))
+    const { profiles } = estimateUncertainty(studyOf(holds, { methods: ['friedman'] }), columnsOf(holds), stated, context).result
+    expect(profiles[0]?.budget.map(({ source }) => source)).not.toContain('baseline')
+    expect(profiles[0]?.budget.length).toBe(5)
+  })
+})

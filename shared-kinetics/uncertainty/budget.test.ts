@@ -1,0 +1,56 @@
+import { describe, expect, it } from 'vitest'
+import { temperatureAt, underConstantRate, type FirstOrderStep } from '../check-values/exact-simulation.ts'
+import { constantHeatingRate, quiet, seriesOf } from '../check-values/series-of-values.ts'
+import { methods } from '../isoconversional/registry.ts'
+import { column } from '../units/quantity.ts'
+import { budgetOf } from './budget.ts'
+import { energyModel } from './energy-model.ts'
+import type { MeasuredSources } from './measured-sources.ts'
+import { drawEnergies } from './monte-carlo.ts'
+
+const levels = [0.1, 0.5]
+const step: FirstOrderStep = { Ea_J_per_mol: 150e3, A_per_s: 1e13, share: 1 }
+const rates_K_per_min = [2, 5, 10]
+const series = seriesOf(
+  levels,
+  rates_K_per_min.map((rate, i) => {
+    const T = levels.map((level) => temperatureAt([step], rate / 60, level))
+    return {
+      programme: constantHeatingRate(rate),
+      programmeGroup: i,
+      temperature_K: T,
+      time_s: T.map((value) => (value - 300) / (rate / 60)),
+      reactionRate_per_s: T.map((value) => underConstantRate([step], rate / 60, value).rate_per_s),
+    }
+  }),
+)
+const zeros = (length: number): Float64Array => new Float64Array(length)
+
+/** The other baseline leaves no positive reaction rate at the first level of the first run. */
+const withoutRate: MeasuredSources = {
+  stated: { temperatureCommon_K: 0.5, temperatureRun_K: 0.5, lag_s: 1, statedHeatingRate_share: 0 },
+  heatingRate_share: zeros(3),
+  noise: { time_s: column(zeros(6), 's'), lnReactionRate: zeros(6), lnReactionRateSlope_per_s: zeros(6), correlationWithBefore: zeros(6) },
+  baseline: {
+    time_s: column(Float64Array.of(1, 2, 3, 1, 2, 3), 's'),
+    lnReactionRate: Float64Array.of(Number.NaN, 0.01, 0.02, 0.03, 0.04, 0.06),
+    reason: null,
+  },
+}
+
+describe('a reaction rate that another baseline does not leave', () => {
+  it.each(['kas', 'ofw', 'starink', 'vyazovkin', 'vyazovkin-incremental', 'astm-e1641'] as const)('is nothing to %s', (method) => {
+    const model = energyModel(series, methods[method].run(series, quiet))
+    for (const u of budgetOf(model, withoutRate).baseline) expect(u).toBeGreaterThan(0)
+    const [energies] = drawEnergies([model], withoutRate, { seed: 1, from: 0, to: 20 }, quiet)
+    for (const Ea of energies ?? [Number.NaN]) expect(Ea).toBeGreaterThan(0)
+  })
+
+  it('leaves Friedman without that entry of the budget at the level, and at no other', () => {
+    const model = energyModel(series, methods.friedman.run(series, quiet))
+    const budget = budgetOf(model, withoutRate)
+    expect(budget.baseline[0]).toBeNaN()
+    expect(budget.baseline[1]).toBeGreaterThan(0)
+    for (const u of budget['temperature-common']) expect(u).toBeGreaterThan(0)
+  })
+})
