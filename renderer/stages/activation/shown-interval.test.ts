@@ -49,7 +49,8 @@ describe('kinds of interval that are offered', () => {
     expect(reasonOf(starink, null, [1, 2, 3], 'jackknife')).toBe('needs four runs, here 3')
     expect(reasonOf(starink, null, [1, 2, 3], 'bootstrap')).toBe('needs four runs, here 3')
     expect(reasonOf(starink, null, [1, 1, 2, 3], 'jackknife')).toContain('fewer than three distinct programmes')
-    expect(reasonOf(starink, null, [1, 1, 2, 3], 'bootstrap')).toBeNull()
+    expect(reasonOf(starink, null, [1, 1, 2, 3], 'bootstrap')).toBe('needs four distinct programmes, here 3')
+    expect(reasonOf(starink, null, [1, 1, 2, 3, 4], 'bootstrap')).toBeNull()
     expect(reasonOf(starink, apart, fiveRuns, 'measured-sources')).toBe('not to be had for these runs')
     const two: ProfileResult = { ...starink, lower95_kJ_per_mol: [null, null], upper95_kJ_per_mol: [null, null] }
     expect(reasonOf(two, null, [1, 2], 'student-t')).toBe('needs three distinct programmes, here 2')

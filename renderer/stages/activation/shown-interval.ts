@@ -102,8 +102,10 @@ function tooFewRuns(kind: ShownKind, programmes: readonly number[]): string | nu
   if (distinct < 3 && kind !== 'measured-sources') return `needs three distinct programmes, here ${distinct}`
   if (kind !== 'jackknife' && kind !== 'bootstrap') return null
   if (programmes.length < 4) return `needs four runs, here ${programmes.length}`
+  // All three would have to be in every resample, which then hardly differ.
+  if (kind === 'bootstrap') return distinct < 4 ? `needs four distinct programmes, here ${distinct}` : null
   const leavesThree = programmes.every((left) => distinct - (programmes.filter((one) => one === left).length === 1 ? 1 : 0) >= 3)
-  return kind === 'bootstrap' || leavesThree ? null : 'leaving out a run would leave fewer than three distinct programmes'
+  return leavesThree ? null : 'leaving out a run would leave fewer than three distinct programmes'
 }
 
 function noneOfKind(kind: ShownKind, profile: ProfileResult): string {

@@ -1,7 +1,7 @@
 import { quiet } from '../../check-values/series-of-values.ts'
 import type { IsoconversionalResult } from '../../isoconversional/result.ts'
 import type { SeriesAtLevels } from '../../series/series-at-levels.ts'
-import { intervalsByResampling } from '../../tasks/estimate-uncertainty.ts'
+import { intervalsByResampling, resamplingOf } from '../../tasks/intervals-by-resampling.ts'
 import { budgetOf } from '../../uncertainty/budget.ts'
 import { combinedInterval } from '../../uncertainty/combined-interval.ts'
 import { drawInterval } from '../../uncertainty/draw-interval.ts'
@@ -37,15 +37,17 @@ export const regressionIntervals: IntervalMaker = ({ results }) =>
   })
 
 /** (c), where there are runs enough. */
-export const resamplingIntervals: IntervalMaker = ({ series, results, seedOfDraws }) =>
-  results.map((result) =>
+export const resamplingIntervals: IntervalMaker = ({ series, results, seedOfDraws }) => {
+  const resampling = resamplingOf(series, seedOfDraws)
+  return results.map((result) =>
     Object.fromEntries(
-      intervalsByResampling(series, result, seedOfDraws, quiet).map(({ kind, lower95_kJ_per_mol, upper95_kJ_per_mol }) => [
+      intervalsByResampling(series, result, resampling, quiet).map(({ kind, lower95_kJ_per_mol, upper95_kJ_per_mol }) => [
         kind,
         { lower: joules(lower95_kJ_per_mol), upper: joules(upper95_kJ_per_mol) },
       ]),
     ),
   )
+}
 
 /** (d), and the regression combined with the part of it that its scatter cannot show. */
 export const sourceIntervals: IntervalMaker = ({ series, results, sources, seedOfDraws }) => {
