@@ -30,11 +30,12 @@ export function naturalOrder(a: string, b: string): number {
 
 const isNumber = (part: string): boolean => part >= '0' && part <= ':' && part !== ':'
 
+const rank = (part: string): number => rankOf.get(part.charAt(0).toLowerCase()) ?? order.length
+
 function compareParts(one: string, other: string): number {
   if (isNumber(one) && isNumber(other)) {
     const [digits, otherDigits] = [one.replace(/^0+/, ''), other.replace(/^0+/, '')]
     return Math.sign(digits.length - otherDigits.length) || (digits < otherDigits ? -1 : digits > otherDigits ? 1 : 0)
   }
-  const rank = (part: string): number => rankOf.get(part.charAt(0).toLowerCase()) ?? order.length
   return Math.sign(rank(one) - rank(other))
 }

@@ -11,6 +11,17 @@ const unevenX = (steps: readonly number[]): Float64Array => {
 const steps = fc.array(fc.double({ min: 0.02, max: 0.2, noNaN: true }), { minLength: 12, maxLength: 60 })
 const coefficient = fc.double({ min: -2, max: 2, noNaN: true })
 
+/** Steps that change tenfold in the middle, with or without a gap there. */
+const changingSteps = (rows: number, gap: number): Float64Array => {
+  let at = -4
+  return Float64Array.from({ length: rows }, (_, i) => (at += i === rows >> 1 && gap > 0 ? gap : (i < rows >> 1 ? 14 : 1.4) / rows))
+}
+
+const truth = (t: number): number => 3 + Math.exp(-(t * t)) + 0.5 * Math.exp(-(((t - 2.5) / 0.8) ** 2))
+
+/** Away from the ends, where a few noisy fits would outweigh all others. */
+const rms = (values: readonly number[]): number => Math.sqrt(values.slice(65, -65).reduce((sum, v) => sum + v * v, 0) / values.length)
+
 describe('local polynomial', () => {
   it('is exact for polynomials of its degree on uneven x, ends included', () => {
     fc.assert(
@@ -89,12 +100,6 @@ describe('local polynomial', () => {
     }
   })
 
-  /** Steps that change tenfold in the middle, with or without a gap there. */
-  const changingSteps = (rows: number, gap: number): Float64Array => {
-    let at = -4
-    return Float64Array.from({ length: rows }, (_, i) => (at += i === rows >> 1 && gap > 0 ? gap : (i < rows >> 1 ? 14 : 1.4) / rows))
-  }
-
   it('over cells is exact for cubics, however unevenly the rows lie', () => {
     for (const gap of [0, 0.3]) {
       const x = changingSteps(2000, gap).map((t, i) => t + 0.0005 * Math.sin(7 * i))
@@ -114,7 +119,6 @@ describe('local polynomial', () => {
     for (const rows of [400, 900, 2000]) {
       for (const gap of [0, 0.3]) {
         const x = changingSteps(rows, gap)
-        const truth = (t: number): number => 3 + Math.exp(-(t * t)) + 0.5 * Math.exp(-(((t - 2.5) / 0.8) ** 2))
         const options = { halfWidth: 0.5, degree: 3, minimumPoints: 6 } as const
         const y = x.map(truth)
         const { value, slope } = localPolynomial(x, y, options)
@@ -155,8 +159,6 @@ describe('local polynomial', () => {
     const options = { halfWidth: 0.65, degree: 3 } as const
     const { value, slope } = localPolynomial(x, y, options)
     const fits = [...x].map((t) => localPolynomialAt(x, y, t, options))
-    // Away from the ends, where a few noisy fits would outweigh all others.
-    const rms = (values: readonly number[]): number => Math.sqrt(values.slice(65, -65).reduce((sum, v) => sum + v * v, 0) / values.length)
     expect(Math.abs(rms([...value]) / rms(fits.map((fit) => fit.value)) - 1)).toBeLessThan(0.01)
     expect(Math.abs(rms([...slope]) / rms(fits.map((fit) => fit.slope)) - 1)).toBeLessThan(0.01)
   })

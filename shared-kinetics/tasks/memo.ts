@@ -35,7 +35,10 @@ export function remember<Value>(cache: EvaluationCache, key: string, compute: ()
 
 /** Memory of every typed array reachable in a plain value, and a little for the rest. */
 export function memoryOf(value: unknown): number {
-  if (ArrayBuffer.isView(value)) return value.byteLength
   if (typeof value !== 'object' || value === null) return 8
-  return Object.values(value).reduce((sum: number, part: unknown) => sum + memoryOf(part), 16)
+  if (ArrayBuffer.isView(value)) return value.byteLength
+  let sum = 16
+  if (Array.isArray(value)) for (const part of value) sum += memoryOf(part)
+  else for (const key in value) sum += memoryOf((value as Readonly<Record<string, unknown>>)[key])
+  return sum
 }

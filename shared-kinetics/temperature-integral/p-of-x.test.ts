@@ -23,6 +23,13 @@ const asymptotic = (x: number): number => {
   return sum
 }
 
+/** Abramowitz & Stegun 5.1.22 for E₂: π(x) = x/(x + 2 - 1·2/(x + 4 - 2·3/(x + 6 - …))), begun so far out that the rest is below rounding. */
+const fraction = (x: number): number => {
+  let denominator = 1
+  for (let k = 40 + Math.ceil(900 / x); k > 0; k--) denominator = x + 2 * k - (k * (k + 1)) / denominator
+  return x / denominator
+}
+
 describe('the temperature integral', () => {
   it('matches the table of p(x) from x = 5 to 100', () => {
     for (const { x, p, scaled, minusLog10P, slope } of table.rows) {
@@ -61,12 +68,6 @@ describe('the temperature integral', () => {
   })
 
   it('agrees with its continued fraction from 0.1 to 5000, on both sides of every switch between forms', () => {
-    // Abramowitz & Stegun 5.1.22 for E₂: π(x) = x/(x + 2 - 1·2/(x + 4 - 2·3/(x + 6 - …))), begun so far out that the rest is below rounding.
-    const fraction = (x: number): number => {
-      let denominator = 1
-      for (let k = 40 + Math.ceil(900 / x); k > 0; k--) denominator = x + 2 * k - (k * (k + 1)) / denominator
-      return x / denominator
-    }
     const switches = [0.1, 1, 4, 30].flatMap((x) => [x * (1 - 1e-15), x, x * (1 + 1e-15)])
     for (const x of switches) expect(relative(scaledPOfX(x), fraction(x)), `x ${x}`).toBeLessThan(2e-15)
     fc.assert(
