@@ -88,6 +88,60 @@ describe('the standard error of a mean of Ea over levels', () => {
     expect(Math.abs(both - 0.95)).toBeLessThan(0.015)
   })
 
+  // Ea rises with conversion, and the error of each run grows through it: levels that err most weigh most. 4,000 replicates know a standard deviation to 1.1 %.
+  it.each([
+    [140_000, 300_000, 5],
+    [100_000, 420_000, 7],
+  ])('is the scatter of the mean where Ea rises from %i to %i J/mol and the errors grow %i-fold', (from, to, growth) => {
+    const rising = levels.map((level, l) => {
+      const Ea_J_per_mol = from + ((to - from) * l) / (levels.length - 1)
+      // Each level about 12 K above the one before at 5 K/min.
+      const A_per_s = Math.exp(Ea_J_per_mol / (8.314462618 * (480 + 12 * l))) * 1e-3
+      return rates.map((rate) => temperatureAt([{ Ea_J_per_mol, A_per_s, share: 1 }], rate / 60, level))
+    })
+    const seriesWith = (offset: readonly number[]) =>
+      constantRateSeries(
+        levels,
+        rates,
+        rising.map((row, l) => row.map((T, run) => T + (offset[run] ?? 0) * (1 + ((growth - 1) * l) / (levels.length - 1)))),
+      )
+    const truth = meanOf(starink(seriesWith([]), quiet).Ea)
+    const t = studentTQuantile(0.975, 3)
+    const replicates = 4000
+    let [squares, variances, covered] = [0, 0, 0]
+    for (let k = 0; k < replicates; k++) {
+      const { normal } = randomStream(11, k)
+      const { Ea, points } = starink(seriesWith(rates.map(() => 0.1 * normal())), quiet)
+      const error = meanOf(Ea) - truth
+      const standardError = meanEnergyStandardError(points)
+      squares += error ** 2
+      variances += standardError ** 2
+      if (Math.abs(error) <= t * standardError) covered++
+    }
+    expect(Math.abs(Math.sqrt(variances / squares) - 1)).toBeLessThan(0.04)
+    expect(Math.abs(covered / replicates - 0.95)).toBeLessThan(0.015)
+  })
+
+  it('is that of the formula with the covariance written out', () => {
+    const random = randomStream(3)
+    const { points } = starink(
+      disturbed((level) => (0.2 + 0.1 * level) * random.normal()),
+      quiet,
+    )
+    const n = rates.length
+    const covariance = (l: number, m: number): number =>
+      points[l]!.residual.reduce((sum, r, j) => sum + r * (points[m]!.residual[j] as number), 0) / (n - 2)
+    const c = points.map(({ x_per_K: x, energyPerSlope }) => {
+      const mean = meanOf(x)
+      const spread = Array.from(x).reduce((sum, value) => sum + (value - mean) ** 2, 0)
+      return Array.from(x, (value) => (energyPerSlope * (value - mean)) / spread / levels.length)
+    })
+    let variance = 0
+    for (let i = 0; i < n; i++)
+      for (const l of levels.keys()) for (const m of levels.keys()) variance += c[l]![i]! * c[m]![i]! * covariance(l, m)
+    expect(meanEnergyStandardError(points) / Math.sqrt(variance)).toBeCloseTo(1, 10)
+  })
+
   it('is not to be had from two runs, or from no level', () => {
     const two = constantRateSeries(
       levels,
