@@ -165,6 +165,8 @@ export function createMemoryHost(options: MemoryHostOptions = {}): MemoryHost {
         const { fileName = '' } = received.get(call.input.uploadId) ?? {}
         return options.readTable?.(fileName) ?? noTable(fileName)
       }
+      case 'rate-constants.from-holds':
+        throw new KineticsError('bad-request', 'No rate constant can be made from the runs of this study.')
       case 'rate-constants.evaluate': {
         checkRevision(call.input.revision)
         if (options.evaluateTable === undefined || document.rateConstants === null) throw new Error('this host evaluates no such table')
