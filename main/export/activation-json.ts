@@ -102,6 +102,7 @@ function profileFields(profile: ProfileResult, apart: UncertaintyProfile | undef
     r2: profile.r2,
     status: profile.status,
     mean: profile.mean,
+    meanCombined: apart?.mean ?? null,
     otherIntervals: [...profile.otherIntervals, ...(apart?.intervals ?? [])],
     budget: apart?.budget ?? [],
     lackOfFit: profile.lackOfFit,

@@ -2,7 +2,7 @@ import type { AnalysisSettings } from '../../shared-kinetics/tasks/study-input.t
 import type { Window } from '../../shared-kinetics/series/run.ts'
 import type { RunResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
-import type { ExportSource } from './activation-json.ts'
+import { uncertaintyOf, type ExportSource } from './activation-json.ts'
 import { caution } from './caution.ts'
 import { intervalLines, meanLines } from './interval-lines.ts'
 import { peakMethodLines } from './peak-method-lines.ts'
@@ -15,7 +15,7 @@ export function activationNotes(source: ExportSource): string {
   const sections: readonly (readonly [string, readonly string[]])[] = [
     ['Caution', [caution]],
     ['Intervals', intervalLines(source)],
-    ['Means', result.profiles.flatMap(meanLines)],
+    ['Means', result.profiles.flatMap((profile) => meanLines(profile, uncertaintyOf(profile, source.uncertainty)))],
     ['Peak and single-run methods', result.peakMethods.flatMap(peakMethodLines)],
     ['Settings', settingLines(document.settings, result.signal)],
     ['Runs', result.runs.flatMap(runLines)],

@@ -48,6 +48,7 @@ const profile: ProfileResult = {
     levelsInRange: 3,
     firstLevel: 0.1,
     lastLevel: 0.5,
+    note: 'From the scatter of the runs alone.',
   },
 }
 

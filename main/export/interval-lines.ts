@@ -1,5 +1,11 @@
 import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
-import type { BudgetEntry, IntervalResult, ProfileResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type {
+  BudgetEntry,
+  CombinedMean,
+  IntervalResult,
+  ProfileResult,
+  UncertaintyProfile,
+} from '../../shared-kinetics/tasks/study-result.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
 
 /** Every kind of interval in the table, how it was made, and that it is pointwise; systematic errors and lack of fit beside them. */
@@ -68,15 +74,23 @@ function lackOfFitLines({ label, lackOfFit }: ProfileResult): string[] {
   ]
 }
 
-/** The mean of Ea over the range, with its interval where there is one. */
-export function meanLines({ label, mean, interval }: ProfileResult): string[] {
-  const { from, to, Ea_kJ_per_mol: Ea, spread_kJ_per_mol: spread, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper } = mean
+/** The mean of Ea over the range, with its interval where there is one and what that does not hold; then the one that holds the measured sources too. */
+export function meanLines({ label, mean, interval }: ProfileResult, apart: UncertaintyProfile | undefined): string[] {
+  const { from, to, Ea_kJ_per_mol: Ea, spread_kJ_per_mol: spread, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, note } = mean
   if (Ea === null || spread === null) return []
   const ends =
     lower === null || upper === null
       ? ''
-      : `, 95 % Student-t interval of the mean ${lower.toFixed(2)} to ${upper.toFixed(2)} kJ/mol (${interval.dof} degrees of freedom, from the runs' residuals averaged over the levels)`
+      : `, 95 % Student-t interval of the mean ${lower.toFixed(2)} to ${upper.toFixed(2)} kJ/mol (${interval.dof} degrees of freedom)`
+  const left = ends === '' ? '' : `. ${note}`
   return [
-    `${label}: ${Ea.toFixed(2)} kJ/mol over conversion ${from} to ${to} (${levelsOfMean(mean)})${ends}, spread ${spread.toFixed(2)} kJ/mol`,
+    `${label}: ${Ea.toFixed(2)} kJ/mol over conversion ${from} to ${to} (${levelsOfMean(mean)})${ends}, spread ${spread.toFixed(2)} kJ/mol${left}`,
+    ...(apart === undefined || apart.mean === null ? [] : [combinedMeanLine(label, apart.mean)]),
   ]
+}
+
+function combinedMeanLine(label: string, mean: CombinedMean): string {
+  const { Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, note } = mean
+  const ends = lower === null || upper === null ? 'not to be had' : `${lower.toFixed(2)} to ${upper.toFixed(2)} kJ/mol`
+  return `${label}: ${Ea.toFixed(2)} kJ/mol, 95 % interval of the mean, scatter and measured sources combined, ${ends}. ${note}`
 }

@@ -47,6 +47,13 @@ const uncertainty: UncertaintyResult = {
     {
       method: 'vyazovkin',
       intervals: [intervalOf('jackknife', 'Jackknife over runs')],
+      mean: {
+        Ea_kJ_per_mol: 100.5,
+        standardUncertainty_kJ_per_mol: 1.5,
+        lower95_kJ_per_mol: 96.25,
+        upper95_kJ_per_mol: 104.75,
+        note: 'The scatter with a common error of temperature.',
+      },
       budget: [
         {
           source: 'temperature-run',
@@ -74,6 +81,8 @@ describe('intervals in what is exported', () => {
       ['jackknife', true],
     ])
     expect(json.profiles[2]).toMatchObject({ budget: [{ source: 'temperature-run' }], lackOfFit: null })
+    expect(json.profiles[2]).toMatchObject({ meanCombined: { lower95_kJ_per_mol: 96.25 } })
+    expect(json.profiles[0]).toMatchObject({ meanCombined: null })
     expect(json.profiles[0]).toMatchObject({ covarianceEaLnAf_kJ_per_mol: [0.9, 1.1, null], otherIntervals: [] })
     expect(json.profiles[1]).toMatchObject({
       systematicError_percent: [-0.42, -0.4, null],
@@ -119,6 +128,11 @@ describe('intervals in what is exported', () => {
     expect(notes).toContain('Kissinger–Akahira–Sunose: systematic error of Ea from its temperature integral -0.42 % to -0.40 %')
     expect(notes).toContain('F(1, 3) = 2.50, p = 0.21')
     expect(notes).toContain('95 % Student-t interval of the mean 97.25 to 103.75 kJ/mol (3 degrees of freedom')
+    expect(notes).toContain('From the scatter of the runs alone')
+    expect(notes).toContain(
+      'Vyazovkin: 100.50 kJ/mol, 95 % interval of the mean, scatter and measured sources combined, 96.25 to 104.75 kJ/mol. The scatter with a common error of temperature.',
+    )
     expect(textOf(source, 'csv', 1)).not.toContain('Jackknife')
+    expect(textOf(source, 'csv', 1)).not.toContain('interval of the mean, scatter and measured')
   })
 })

@@ -110,6 +110,7 @@ export function profileOf(method: ProfileResult['method'], Ea: readonly Maybe[],
       levelsInRange: Ea.length,
       firstLevel: 0.1,
       lastLevel: 0.9,
+      note: 'From the scatter of the runs alone.',
     },
   }
 }

@@ -6,6 +6,7 @@ export type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
 export type { AnalysisSettings, BaselineKind } from '../tasks/study-input.ts'
 export type {
   BudgetEntry,
+  CombinedMean,
   IntervalResult,
   KissingerResult,
   LackOfFitResult,

@@ -107,6 +107,7 @@ function lineProfile(method: MethodId, label: string, Ea: readonly (number | nul
       levelsInRange: 3,
       firstLevel: null,
       lastLevel: null,
+      note: 'From the scatter of the runs alone.',
     },
   }
 }

@@ -21,16 +21,17 @@ const context = { checkCancelled: () => undefined, progress: () => undefined }
 const step = { Ea_J_per_mol: 150e3, A_per_s: 1e12 }
 const levels = [0.1, 0.3, 0.5, 0.7, 0.9]
 
-/** Mass runs at constant heating rates, each with a thermometer off by about 0.4 K. */
+/** Mass runs at constant heating rates, each with a thermometer off by about 0.4 K, and all of them by `shift_K` and a lag of `lag_s`. */
 function studyOf(
   rates: readonly number[],
   seed = 1,
+  { shift_K, lag_s }: { readonly shift_K: number; readonly lag_s: number } = { shift_K: 0, lag_s: 0 },
 ): { readonly study: StudyInput; readonly columns: Parameters<typeof evaluateStudy>[1] } {
   const random = randomStream(seed)
   const runs = rates.map((rate, i) => {
     const programme = ramp(400, rate, 700)
     const time = evenTimes(durationOf(programme), 2000)
-    const offset = 0.4 * random.normal()
+    const offset = 0.4 * random.normal() + shift_K + (lag_s * rate) / 60
     return runOf(`r${i}`, {
       time_s: time,
       temperature_K: time.map((t) => temperatureOf(programme, t) + offset),
@@ -211,6 +212,52 @@ describe('measured sources', () => {
         )
       })
     })
+  })
+})
+
+describe('the mean of Ea with all that is known of it', () => {
+  const rates = [1, 2, 5, 10, 20]
+  const { study, columns } = studyOf(rates)
+  const evaluated = evaluateStudy(study, columns, context)
+  const meansOf = (change: { readonly shift_K: number; readonly lag_s: number }): readonly number[] => {
+    const changed = studyOf(rates, 1, change)
+    return evaluateStudy(changed.study, changed.columns, context).profiles.map(({ mean }) => mean.Ea_kJ_per_mol ?? Number.NaN)
+  }
+
+  it('holds what a shift and a lag common to all runs really do to it, found by evaluating such runs', () => {
+    const of = (change: { readonly shift_K: number; readonly lag_s: number }, step: number): readonly number[] => {
+      const [up, down] = [meansOf(change), meansOf({ shift_K: -change.shift_K, lag_s: -change.lag_s })]
+      return up.map((value, m) => (value - (down[m] ?? Number.NaN)) / (2 * step))
+    }
+    const perKelvin = of({ shift_K: 1, lag_s: 0 }, 1)
+    const perSecond = of({ shift_K: 0, lag_s: 2 }, 2)
+    const { profiles } = estimateUncertainty(study, columns, { ...withSeed(1), temperatureCommon_K: 2, lag_s: 3 }, context).result
+    profiles.forEach(({ method, mean }, m) => {
+      const scatter = evaluated.profiles[m]?.mean.standardError_kJ_per_mol ?? Number.NaN
+      const real = Math.hypot(2 * (perKelvin[m] ?? Number.NaN), 3 * (perSecond[m] ?? Number.NaN))
+      const stated = Math.sqrt((mean?.standardUncertainty_kJ_per_mol ?? 0) ** 2 - scatter ** 2)
+      expect(mean?.Ea_kJ_per_mol).toBeCloseTo(evaluated.profiles[m]?.mean.Ea_kJ_per_mol ?? Number.NaN, 9)
+      // The corrected OFW answers to a shift within 3 %, for all others first order is good to 1 %.
+      expect(Math.abs(stated / real - 1), method).toBeLessThan(0.03)
+      // t(0.975; 3) = 3.1824, z = 1.9600.
+      const half = Math.hypot(3.1824 * scatter, 1.96 * stated)
+      expect(((mean?.upper95_kJ_per_mol ?? 0) - (mean?.lower95_kJ_per_mol ?? 0)) / (2 * half), method).toBeCloseTo(1, 3)
+      expect(mean?.note).toMatch(/common to all runs \(2 K, as stated\).*3 s times the heating rate, as stated/)
+    })
+  })
+
+  it('is its scatter alone where nothing else is uncertain, and says of that what it leaves out', () => {
+    const { profiles } = estimateUncertainty(study, columns, { ...withSeed(1), temperatureCommon_K: 0, lag_s: 0 }, context).result
+    profiles.forEach(({ mean }, m) => {
+      const alone = evaluated.profiles[m]?.mean
+      expect(mean?.lower95_kJ_per_mol).toBeCloseTo(alone?.lower95_kJ_per_mol ?? Number.NaN, 9)
+      expect(alone?.note).toMatch(/scatter of the runs alone.*all temperatures, thermal lag, the choice of baseline/)
+    })
+  })
+
+  it('is not there with two programmes', () => {
+    const two = studyOf([2, 10])
+    for (const { mean } of estimateUncertainty(two.study, two.columns, withSeed(1), context).result.profiles) expect(mean).toBeNull()
   })
 })
 

@@ -1,6 +1,6 @@
 import type { IsoconversionalResult, TaskContext } from '../isoconversional/result.ts'
 import type { RunColumns } from '../series/run.ts'
-import { budgetOf, type Budget } from '../uncertainty/budget.ts'
+import { budgetOf, signedBudgetOf, type Budget } from '../uncertainty/budget.ts'
 import { combinedInterval } from '../uncertainty/combined-interval.ts'
 import { energyModel, type EnergyModel } from '../uncertainty/energy-model.ts'
 import type { UncertaintySettings } from '../uncertainty/measured-sources.ts'
@@ -9,6 +9,7 @@ import type { DrawOrder } from './draw-uncertainty.ts'
 import { intervalResult } from './interval-result.ts'
 import { intervalsByResampling, resamplingOf, withCoverage } from './intervals-by-resampling.ts'
 import type { EvaluationCache } from './memo.ts'
+import { combinedMeanResult } from './mean-result.ts'
 import { measuredSourcesOf } from './measured-sources-of.ts'
 import { seriesOfStudy } from './series-of-study.ts'
 import type { StudyInput } from './study-input.ts'
@@ -22,7 +23,7 @@ export interface UncertaintyEstimate {
 
 /**
  * What takes longer than an evaluation: for each method of the study intervals by resampling the runs, the budget of measured sources, and the regression combined with
- * those that its scatter cannot show. A method without an interval of its own (two programmes) has none of them.
+ * those that its scatter cannot show, at each level and for the mean over levels. A method without an interval of its own (two programmes) has none of them.
  *
  * Pure, and the same for the same seed. What `evaluateStudy` left in `cache` is not worked out again.
  *
@@ -45,13 +46,14 @@ export function estimateUncertainty(
     context.progress(done, chosen.length)
     const result = resultOf(info)
     const resampled = intervalsByResampling(series, result, resampling, context)
-    if (result.Ea.every(Number.isNaN)) return { method: info.id, intervals: resampled, budget: [] }
+    if (result.Ea.every(Number.isNaN)) return { method: info.id, intervals: resampled, budget: [], mean: null }
     const model = energyModel(series, result)
     models.push(model)
     const budget = budgetOf(model, sources)
     const entries = budgetEntries(budget, sources)
     const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget, entries)] : [])]
-    return { method: info.id, intervals, budget: entries }
+    const mean = combinedMeanResult(result, study.settings.levels, study.settings.meanRange, signedBudgetOf(model, sources), entries)
+    return { method: info.id, intervals, budget: entries, mean }
   })
   context.progress(chosen.length, chosen.length)
   return { result: { levels: study.settings.levels, seed, draws, profiles }, order: { models, sources } }

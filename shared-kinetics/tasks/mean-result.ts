@@ -1,9 +1,11 @@
 import type { IsoconversionalResult } from '../isoconversional/result.ts'
 import { studentTQuantile } from '../numerics/student-t.ts'
+import type { Budget } from '../uncertainty/budget.ts'
+import { meanCombined } from '../uncertainty/mean-combined.ts'
 import { meanEnergyStandardError } from '../uncertainty/mean-energy.ts'
 import { joulesToKilojoules } from '../units/convert.ts'
 import { maybe } from './maybe.ts'
-import type { MeanEnergy } from './study-result.ts'
+import type { BudgetEntry, CombinedMean, MeanEnergy } from './study-result.ts'
 
 /** Levels are compared with the ends of a range within rounding, so that 0.1 belongs to 0.1 … 0.9 however it was made. */
 const rounding = 1e-9
@@ -15,7 +17,12 @@ export const levelsInMean = (Ea: ArrayLike<number>, levels: readonly number[], r
 const levelsWithin = (levels: readonly number[], [from, to]: readonly [number, number]): number[] =>
   levels.flatMap((level, i) => (level >= from - rounding && level <= to + rounding ? [i] : []))
 
-/** Mean of Ea over a range of conversion with its interval, t(0.975; n - 2) standard errors on each side, and the spread of Ea there. */
+/** What the interval of a mean from the scatter of the runs cannot hold. */
+const noteOnScatter =
+  'From the scatter of the runs alone. What moves all runs alike does not show in it and does not average out over levels: an error common to all temperatures, thermal lag, the ' +
+  'choice of baseline. The combined interval of the mean holds these.'
+
+/** Mean of Ea over a range of conversion with its interval from the scatter of the runs, t(0.975; n - 2) standard errors on each side, and the spread of Ea there. */
 export function meanResult(
   { Ea, points, interval: { dof } }: IsoconversionalResult,
   levels: readonly number[],
@@ -38,5 +45,43 @@ export function meanResult(
     levelsInRange: levelsWithin(levels, range).length,
     firstLevel: levels[used[0] ?? -1] ?? null,
     lastLevel: levels[used.at(-1) ?? -1] ?? null,
+    note: noteOnScatter,
   }
+}
+
+/**
+ * The same mean with an interval that holds besides the scatter of the runs what moves them all alike.
+ *
+ * @param signed - of `signedBudgetOf`
+ * @param entries - of the method's budget, for the words
+ * @returns null where there is no mean, or no interval by the scatter of the runs (fewer than three distinct programmes)
+ */
+export function combinedMeanResult(
+  result: IsoconversionalResult,
+  levels: readonly number[],
+  range: readonly [number, number],
+  signed: Budget,
+  entries: readonly BudgetEntry[],
+): CombinedMean | null {
+  const used = levelsInMean(result.Ea, levels, range)
+  if (used.length === 0 || result.interval.dof < 1) return null
+  const mean = used.reduce((sum, i) => sum + joulesToKilojoules(result.Ea[i] ?? Number.NaN), 0) / used.length
+  const { standardUncertainty, half } = meanCombined(result, signed, used)
+  return {
+    Ea_kJ_per_mol: mean,
+    standardUncertainty_kJ_per_mol: maybe(joulesToKilojoules(standardUncertainty)),
+    lower95_kJ_per_mol: maybe(mean - joulesToKilojoules(half)),
+    upper95_kJ_per_mol: maybe(mean + joulesToKilojoules(half)),
+    note: noteOnCombinedMean(entries, Number.isNaN(half)),
+  }
+}
+
+function noteOnCombinedMean(entries: readonly BudgetEntry[], isMissing: boolean): string {
+  const added = entries.filter((entry) => !entry.shownByScatter)
+  const how =
+    `The scatter of the runs with what no scatter shows: ${added.map(({ label, magnitude }) => `${label} (${magnitude})`).join('; ')}. Each of these moves all levels together: ` +
+    "its effects are averaged over the levels with their signs. Student's t times the one and the normal quantile times the other, added in squares; the sizes stated or assumed count as known exactly."
+  if (!isMissing) return how
+  const reason = added.find((entry) => entry.reason !== null)?.reason ?? 'one of these sources cannot be told at some level of the mean.'
+  return `${how} Not to be had here: ${reason}`
 }

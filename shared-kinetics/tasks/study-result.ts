@@ -119,6 +119,19 @@ export interface UncertaintyProfile {
   readonly method: MethodId
   readonly intervals: readonly IntervalResult[]
   readonly budget: readonly BudgetEntry[]
+  /** The mean over `settings.meanRange` with all that is known of its uncertainty; null without a mean, or with fewer than three distinct programmes. */
+  readonly mean: CombinedMean | null
+}
+
+/** Mean of Ea over levels with an interval that holds the scatter of the runs and what moves all runs alike. */
+export interface CombinedMean {
+  readonly Ea_kJ_per_mol: number
+  /** null, as the ends are, where a source cannot be told at one of the levels; `note` then says which. */
+  readonly standardUncertainty_kJ_per_mol: Maybe
+  readonly lower95_kJ_per_mol: Maybe
+  readonly upper95_kJ_per_mol: Maybe
+  /** What it holds and how it was made. */
+  readonly note: string
 }
 
 export interface UncertaintyResult {
@@ -166,7 +179,7 @@ export interface MeanEnergy {
   readonly to: number
   readonly Ea_kJ_per_mol: Maybe
   readonly spread_kJ_per_mol: Maybe
-  /** Of the mean, from the runs' residuals averaged over the levels: errors of one run go through all its levels. null without an interval. */
+  /** Of the mean, from the runs' residuals and how they go together over the levels: errors of one run go through all its levels. null without an interval. */
   readonly standardError_kJ_per_mol: Maybe
   readonly lower95_kJ_per_mol: Maybe
   readonly upper95_kJ_per_mol: Maybe
@@ -175,6 +188,8 @@ export interface MeanEnergy {
   readonly levelsInRange: number
   readonly firstLevel: Maybe
   readonly lastLevel: Maybe
+  /** What its interval does not hold. */
+  readonly note: string
 }
 
 export interface KissingerResult {

@@ -31,6 +31,7 @@ const combined = {
 const apart: UncertaintyProfile = {
   method: 'starink',
   intervals: [combined],
+  mean: null,
   budget: [
     entry('temperature-common', 3, false),
     entry('temperature-run', 2, true),

@@ -20,6 +20,7 @@ const apart: UncertaintyProfile = {
   method: 'starink',
   intervals: [interval('jackknife', [144, 146]), interval('bootstrap', [145, 147]), interval('combined', [140, 142], false)],
   budget: [],
+  mean: null,
 }
 const uncertain: Uncertain = {
   about: { studyId: 'study', revision: 3, result },

@@ -71,6 +71,7 @@ export const friedman: ProfileResult = {
     levelsInRange: 3,
     firstLevel: 0.1,
     lastLevel: 0.5,
+    note: 'From the scatter of the runs alone.',
   },
 }
 export const starink: ProfileResult = {
