@@ -1,15 +1,24 @@
 import { useMemo } from 'react'
-import type { StudyResult } from '../../shared-kinetics/contract/study-result.ts'
+import type { Maybe, StudyResult } from '../../shared-kinetics/contract/study-result.ts'
 import { formatAt, levelQuantity } from '../sheet/at-level.ts'
 import { endProgrammes, meanAtLevel, programmeRange } from '../sheet/end-programmes.ts'
 import { decimals, formatInterval, formatLevel, formatWithInterval, halfWidth, statusWords } from '../sheet/format.ts'
 import { LevelRail } from '../sheet/LevelRail.tsx'
 import { railBars, railCaption } from '../sheet/rail-bars.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
-import { shortKinds } from '../stages/activation/shown-interval.ts'
+import { shortKinds, type ShownOfMethod } from '../stages/activation/shown-interval.ts'
 import { useShown } from '../stages/activation/use-shown.ts'
 import { useView } from '../state/services.ts'
 import { chosenAmong } from '../state/view-store.ts'
+
+/** What the bars mean; of a kind that is still being worked out, that there are none yet. */
+function captionOf(widths: readonly Maybe[], mean: Maybe, shown: ShownOfMethod | null): readonly string[] {
+  if (shown === null) return []
+  const kind = shortKinds[shown.kind]
+  return shown.interval === null && shown.kind !== 'student-t'
+    ? [`bars: ± 95 %, ${kind}`, 'not worked out yet']
+    : railCaption(widths, mean, kind)
+}
 
 /** The level rail with what the chosen method says at the level. */
 export function Rail({
@@ -36,9 +45,9 @@ export function Rail({
     const mean = profile?.mean.Ea_kJ_per_mol ?? null
     return {
       bars: railBars(widths, mean),
-      caption: railCaption(widths, mean, ends === null || ends === undefined ? '' : shortKinds[ends.kind]),
+      caption: captionOf(widths, mean, shown),
     }
-  }, [result, profile, ends])
+  }, [result, profile, ends, shown])
   const Ea = decimals(profile?.Ea_kJ_per_mol[levelIndex], 1)
   const [lower, upper] = [ends?.lower95_kJ_per_mol[levelIndex], ends?.upper95_kJ_per_mol[levelIndex]]
   const interval = formatInterval(profile?.Ea_kJ_per_mol[levelIndex], lower, upper)

@@ -4,7 +4,7 @@ import type { Figure, Mark } from '../../shared-kinetics/figure/figure.ts'
 import type { ChartColours } from './chart-colours.ts'
 import { chartFont } from './chart-font.ts'
 import { dashOf, strokeOf } from './figure-datasets.ts'
-import { levelName, uprightNames, type PixelPoint } from './rule-names.ts'
+import { levelName, pushedInside, uprightNames, type PixelPoint } from './rule-names.ts'
 
 type Rule = Extract<Mark, { kind: 'rule' }>
 
@@ -59,7 +59,8 @@ function adjustment(chart: Chart, figure: Figure, rule: Rule): { readonly x: num
     plot,
   )
   const name = names[upright.indexOf(rule)]
-  return name === undefined ? { x: 0, y: 0 } : { x: name.middle - x.getPixelForValue(rule.at), y: 4 + name.down }
+  if (name === undefined) return { x: 0, y: 0 }
+  return { x: name.middle - pushedInside(x.getPixelForValue(rule.at), widthOf(chart, rule), plot, padding.x), y: 4 + name.down }
 }
 
 function widthOf({ ctx }: Chart, { name }: Rule): number {

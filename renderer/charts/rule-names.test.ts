@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { levelName, uprightNames } from './rule-names.ts'
+import { levelName, pushedInside, uprightNames } from './rule-names.ts'
 
 const plot = { from: 50, to: 450 }
 
@@ -46,5 +46,14 @@ describe('name of a level rule', () => {
 
   it('stands at the start where nothing is near', () => {
     expect(levelName(100, 60, plot, [{ x: 400, y: 300 }])).toBe(50 + 4 + 30)
+  })
+})
+
+describe('place of a label that its drawing pushes inside', () => {
+  it('is its own in the middle, and as near as it can be at the ends', () => {
+    expect(pushedInside(250, 100, plot, 4)).toBe(250)
+    expect(pushedInside(60, 100, plot, 4)).toBe(104)
+    expect(pushedInside(440, 100, plot, 4)).toBe(396)
+    expect(pushedInside(60, 500, plot, 4)).toBe(250)
   })
 })

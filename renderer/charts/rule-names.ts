@@ -49,6 +49,18 @@ function fits(rule: UprightRule, side: Side, plot: Stretch): boolean {
   return from >= plot.from && to <= plot.to
 }
 
+/**
+ * Where a label about a place along an axis has its middle once it is pushed inside the plot, which the annotations do by themselves.
+ *
+ * @param padding - kept free at either end
+ */
+export function pushedInside(at: number, width: number, { from, to }: Stretch, padding: number): number {
+  const reach = padding + width / 2
+  if (width > to - from) return (from + to) / 2
+  const fromLeft = from >= at - reach ? from + reach : at
+  return to <= fromLeft + reach ? to - reach : fromLeft
+}
+
 /** A point of a curve in pixels. */
 export interface PixelPoint {
   readonly x: number

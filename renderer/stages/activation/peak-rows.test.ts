@@ -50,12 +50,12 @@ const at = (key: PeakMethodResult['numbers'][number]['key'], value: number) =>
 
 describe('rows of peak and single-run methods', () => {
   it('show Ea, interval and ln A with its error', () => {
-    expect(peakColumns.map((column) => column.text(e698))).toEqual(['177.8', '8.4', '30.32 ± 0.54', '0.9994'])
+    expect(peakColumns.map((column) => column.text(e698))).toEqual(['177.8', '8.4', '30.32 ±\u00a00.54', '0.9994'])
     expect(peakColumns.map((column) => column.text(nothing))).toEqual(['', '', '', ''])
   })
 
   it('give own numbers in words, temperatures in °C, or the reason why a method does not apply', () => {
-    expect(ownNumbers(e698)).toBe('D = −d ln p/dx: 1.05; temperature of a half-life of 60 min 277.0 ± 0.6 °C')
+    expect(ownNumbers(e698)).toBe('D = −d ln p/dx: 1.05; temperature of a half-life of 60 min 277.0 ±\u00a00.6 °C')
     expect(ownNumbers(nothing)).toBe('It is made for crystallisation, which does not change the mass.')
     const numbers = [
       at('conversion-at-peak-lowest', 0.781),

@@ -30,8 +30,8 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
   },
   {
     id: 'lnA',
-    heading: 'ln A',
-    unit: 'A in 1/s, ± s.e.',
+    heading: 'ln A ± s.e.',
+    unit: 'A in 1/s',
     numeric: true,
     text: ({ lnA_per_s: lnA, lnAStandardError: error }) => withError(decimals(lnA, 2), decimals(error, 2)),
     value: ({ lnA_per_s: lnA }) => lnA,
@@ -48,7 +48,7 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
   },
 ]
 
-const withError = (text: string, error: string): string => (text === '' || error === '' ? text : `${text} ± ${error}`)
+const withError = (text: string, error: string): string => (text === '' || error === '' ? text : `${text} ±\u00a0${error}`)
 
 /** A method's own numbers in words, or the reason why it does not apply. */
 export function ownNumbers({ applies, reason, numbers }: PeakMethodResult): string {
@@ -105,7 +105,7 @@ export function peakCopyColumns(): readonly DataColumn<PeakMethodResult>[] {
     ...[Ea, interval]
       .filter((column) => column !== undefined)
       .map((column) => ({ ...column, heading: column.id === 'Ea' ? column.heading : '± 95 %, Student-t' })),
-    ...(lnA === undefined ? [] : [{ ...lnA, unit: 'A in 1/s' }]),
+    ...(lnA === undefined ? [] : [{ ...lnA, heading: 'ln A' }]),
     numberColumn('lnA-error', 's.e. of ln A', '', ({ lnAStandardError }) => lnAStandardError),
     ...(r2 === undefined ? [] : [r2]),
     numberColumn('confirmation', 'temperature of a half-life of 60 min', '°C', ({ numbers }) => {
