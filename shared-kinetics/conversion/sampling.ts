@@ -21,11 +21,12 @@ export interface Sampling {
 
 /**
  * @param first - row of the run at which the window, and with it the curve, begins
+ * @param rowsInEach - measured rows for each of the curve's, more than 1 where they were pooled
  * @throws KineticsError `time-not-ascending` where more than 5 % of the rows between which the reaction runs lie behind in time
  */
-export function samplingOf({ setAside }: UsableRows, first: number, curve: ConversionCurve, label: string): Sampling {
+export function samplingOf({ setAside }: UsableRows, first: number, curve: ConversionCurve, rowsInEach: number, label: string): Sampling {
   const { reaction, conversion, temperature_K } = curve
-  const rowsInReaction = reaction.last - reaction.first + 1
+  const rowsInReaction = Math.round((reaction.last - reaction.first + 1) * rowsInEach)
   const rowsOf = (blocks: typeof setAside.behind): number => blocks.reduce((sum, block) => sum + block.rows, 0)
   const behindInReaction = rowsOf(setAside.behind.filter(({ after }) => after >= first + reaction.first && after < first + reaction.last))
   if (behindInReaction > mostBackward * (rowsInReaction + behindInReaction)) {

@@ -11,14 +11,18 @@ import { mainHeating, type RowRange } from '../series/main-heating.ts'
 import type { RunColumns, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
 import { tellProgramme, type ToldProgramme } from '../series/tell-programme.ts'
+import { pooledRows } from '../series/pooled-rows.ts'
 import { usableRows, type UsableRows } from '../series/usable-rows.ts'
+import { valueAt } from '../series/value-at.ts'
 import { decimate } from '../signal/decimate.ts'
+import { lowerBound } from '../signal/lower-bound.ts'
 import { column } from '../units/quantity.ts'
 import type { BaselineKind } from './study-input.ts'
 import type { RunResult } from './study-result.ts'
 
 /** One run with its conversion: everything that does not depend on levels, methods or other runs. */
 export interface ConvertedRun {
+  /** Those of a long run pooled (`pooledRows`). */
   readonly rows: UsableRows
   /** Rows inside the window. */
   readonly range: RowRange
@@ -44,7 +48,7 @@ export interface ConversionSettings {
 }
 
 /** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
-export const convertRunVersion = 3
+export const convertRunVersion = 4
 
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
@@ -53,7 +57,8 @@ export const convertRunVersion = 3
  */
 export function convertRun(info: RunInfo, columns: RunColumns, settings: ConversionSettings): ConvertedRun {
   const { quantity } = settings
-  const rows = usableRows(columns, settings.signalIndex, info.nominalHeatingRate, info.label)
+  const usable = usableRows(columns, settings.signalIndex, info.nominalHeatingRate, info.label)
+  const rows = pooledRows(usable)
   const range = rowsToUse(rows, settings, info.label)
   const converted = convert(rows, range, settings, info.label)
   const { reaction } = converted.curve
@@ -66,9 +71,9 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
     window: windowUsed(rows, range, settings.window, told.programme.kind === 'constant-heating-rate'),
     heatingStart_K: rows.temperature_K[foundWhole(settings) ? range.first : mainHeating(rows.temperature_K).first] ?? Number.NaN,
     peak_K: peakTemperature(converted.curve),
-    sampling: samplingOf(rows, range.first, converted.curve, info.label),
+    sampling: samplingOf(rows, range.first, converted.curve, usable.time_s.length / rows.time_s.length, info.label),
     ...startOfTheHold(told, converted),
-    curve: curveToDraw(rows, range, converted, quantity === 'heat-flow'),
+    curve: curveToDraw(usable, rows, range, converted, quantity === 'heat-flow'),
   }
 }
 
@@ -128,31 +133,51 @@ function windowUsed(
   return { kind: 'time', start_s: first > 0 ? asked.start_s : start_s, end_s: last < time_s.length - 1 ? asked.end_s : end_s }
 }
 
+/** The run as it was measured, thinned, with its conversion where it has one. */
 function curveToDraw(
-  { time_s, temperature_K, signal }: UsableRows,
-  range: RowRange,
-  converted: Converted,
+  usable: UsableRows,
+  rows: UsableRows,
+  { first, last }: RowRange,
+  { curve, baseline }: Converted,
   withBaseline: boolean,
 ): RunResult['curve'] {
-  const spread = (values: Float64Array): Float64Array => {
-    if (values.length === signal.length) return values
-    const whole = new Float64Array(signal.length).fill(Number.NaN)
-    whole.set(values, range.first)
-    return whole
-  }
-  const reactionRate = spread(converted.curve.reactionRate_per_s)
-  const kept = decimate([signal, reactionRate])
-  const thin = (values: Float64Array): Float64Array => {
+  const kept =
+    usable === rows ? decimate([rows.signal, spread(curve.reactionRate_per_s, rows, first)]) : rowsOfPools(usable, rows, first, curve)
+  const inWindow = rows.time_s.subarray(first, last + 1)
+  const measured = (values: Float64Array): Float64Array => {
     const thinned = new Float64Array(kept.length)
     for (let k = 0; k < kept.length; k++) thinned[k] = values[kept[k] as number] as number
     return thinned
   }
-  return {
-    time_s: thin(time_s),
-    temperature_K: thin(temperature_K),
-    signal: thin(signal),
-    conversion: thin(spread(converted.curve.conversion)),
-    reactionRate_per_s: thin(reactionRate),
-    baseline: withBaseline && converted.baseline !== null ? thin(spread(converted.baseline)) : new Float64Array(0),
+  const followed = (values: Float64Array): Float64Array => {
+    if (usable === rows) return measured(spread(values, rows, first))
+    const thinned = new Float64Array(kept.length)
+    for (let k = 0; k < kept.length; k++) thinned[k] = valueAt(inWindow, values, usable.time_s[kept[k] as number] as number)
+    return thinned
   }
+  return {
+    time_s: measured(usable.time_s),
+    temperature_K: measured(usable.temperature_K),
+    signal: measured(usable.signal),
+    conversion: followed(curve.conversion),
+    reactionRate_per_s: followed(curve.reactionRate_per_s),
+    baseline: withBaseline && baseline !== null ? followed(baseline) : new Float64Array(0),
+  }
+}
+
+/** Values of the window as a column of the whole run, NaN outside. */
+function spread(values: Float64Array, { signal }: UsableRows, first: number): Float64Array {
+  if (values.length === signal.length) return values
+  const whole = new Float64Array(signal.length).fill(Number.NaN)
+  whole.set(values, first)
+  return whole
+}
+
+/** Rows to draw of a run that was pooled: the extremes of its signal, and the rows nearest to those of its reaction rate. */
+function rowsOfPools(usable: UsableRows, rows: UsableRows, first: number, curve: Converted['curve']): Uint32Array {
+  const kept = new Set(decimate([usable.signal], 500))
+  for (const pool of decimate([curve.reactionRate_per_s], 500)) {
+    kept.add(Math.min(usable.time_s.length - 1, lowerBound(usable.time_s, rows.time_s[first + pool] ?? 0)))
+  }
+  return Uint32Array.from(kept).sort()
 }
