@@ -66,6 +66,7 @@ export function Budget(props: ActivationProps) {
         {methodFacts(shown.profile, levelIndex).map((fact) => (
           <li key={fact}>{fact}</li>
         ))}
+        <li>Mean of Ea, combined interval: {shown.mean?.note ?? 'not worked out for these runs and this range.'}</li>
       </ul>
       <div className="budget-foot">
         <TypedField label="Draws" text={String(settings.draws)} parse={parseDraws} onCommit={(draws) => set({ draws })} />

@@ -70,7 +70,7 @@ export function EnergyProfile(props: ActivationProps) {
       </div>
       {beneath === 'levels' ? (
         <>
-          <MeanLine profile={profile} {...props} />
+          <MeanLine {...props} />
           <LevelTable {...props} />
         </>
       ) : (

@@ -6,7 +6,8 @@ import { TypedField } from '../../sheet/TypedField.tsx'
 import type { ActivationProps } from './ActivationStage.tsx'
 
 /** The mean of Ea over a range of conversion with its own interval, and how far apart the levels in it lie. */
-export function MeanLine({ profile, result, document, actions }: ActivationProps & { readonly profile: ProfileResult }) {
+export function MeanLine({ shown, result, document, actions }: ActivationProps) {
+  const { profile } = shown
   const [from, to] = document.settings.meanRange
   const { Ea_kJ_per_mol: mean, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper } = profile.mean
   const ends = endsOfMean(profile, result.levels)
@@ -16,6 +17,7 @@ export function MeanLine({ profile, result, document, actions }: ActivationProps
     if (meanRange[0] < meanRange[1]) actions.change({ kind: 'set-mean-range', meanRange })
   }
   const half = halfWidth(lower, upper)
+  const combined = decimals(halfWidth(shown.mean?.lower95_kJ_per_mol, shown.mean?.upper95_kJ_per_mol), 1)
   const text = formatWithInterval(mean, lower, upper, half !== null && half < 0.095 ? 2 : 1)
   return (
     <div className="mean-line">
@@ -39,7 +41,9 @@ export function MeanLine({ profile, result, document, actions }: ActivationProps
         <span>not to be had: no level there has a number.</span>
       ) : (
         <output>
-          {isDoubtful ? text : <strong>{text}</strong>} kJ/mol{lower !== null && ' (95 %, Student-t)'}; {levelsOfMean(profile.mean)}
+          {isDoubtful ? text : <strong>{text}</strong>} kJ/mol
+          {lower !== null && ` (95 % Student-t of the scatter${combined === '' ? '' : `; combined ± ${combined}`})`};{' '}
+          {levelsOfMean(profile.mean)}
           {ends !== null && `, ${decimals(ends[0], 1)} to ${decimals(ends[1], 1)}`}
         </output>
       )}

@@ -27,6 +27,7 @@ const combined = {
   standardUncertainty_kJ_per_mol: [13, null],
   lower95_kJ_per_mol: [120, null],
   upper95_kJ_per_mol: [180, null],
+  status: ['ok', 'no-energy'],
 } as const
 const apart: UncertaintyProfile = {
   method: 'starink',
@@ -47,6 +48,7 @@ const shown = (profile: ProfileResult = withScatter, of: UncertaintyProfile | nu
   offers: [],
   kind: 'student-t',
   interval: null,
+  mean: null,
 })
 const groups = budgetGroups(shown(), defaultUncertainty, result.runs, 0)
 
@@ -88,6 +90,18 @@ describe('budget at a level', () => {
     expect(rowOf(defaultUncertainty, [...result.runs, { ...runAt(5, []), heatingRateSource: 'nominal' }], 'heating-rate')).toMatchObject({
       stated: 'statedHeatingRate_share',
     })
+  })
+
+  it('says why a source cannot be told', () => {
+    const without = {
+      ...entry('baseline', 0, false),
+      standardUncertainty_kJ_per_mol: [null, null],
+      reason: 'No other baseline can be drawn.',
+    }
+    const rows = budgetGroups(shown(withScatter, { ...apart, budget: [without] }), defaultUncertainty, result.runs, 0).flatMap(
+      (group) => group.rows,
+    )
+    expect(rows.find((row) => row.id === 'baseline')).toMatchObject({ words: 'No other baseline can be drawn.', u: null })
   })
 
   it('is empty until it is worked out, and has no combined line without a scatter', () => {

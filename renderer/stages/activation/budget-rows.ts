@@ -110,8 +110,9 @@ function statedOf(source: UncertaintySource, runs: readonly RunResult[]): Stated
   return statedKeys[source] ?? null
 }
 
-function wordsOf({ source, magnitude }: BudgetEntry, stated: StatedKey | null, settings: UncertaintySettings): string {
+function wordsOf({ source, magnitude, reason }: BudgetEntry, stated: StatedKey | null, settings: UncertaintySettings): string {
   if (source === 'heating-rate' && stated === null) return magnitude === 'none' ? 'measured' : `measured: ${magnitude}`
+  if (reason !== null) return reason
   if (stated === null) return magnitude
   const what = { temperatureCommon_K: '', temperatureRun_K: '', lag_s: '× heating rate, ', statedHeatingRate_share: 'where only stated, ' }[
     stated

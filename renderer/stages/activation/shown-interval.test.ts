@@ -15,6 +15,7 @@ const interval = (kind: IntervalResult['kind'], lower: readonly (number | null)[
   standardUncertainty_kJ_per_mol: lower.map(() => 1),
   lower95_kJ_per_mol: lower,
   upper95_kJ_per_mol: lower.map((end) => (end === null ? null : end + 10)),
+  status: lower.map((end) => (end === null ? 'no-energy' : 'ok')),
 })
 const apart: UncertaintyProfile = {
   method: 'starink',
@@ -80,6 +81,18 @@ describe('interval of a kind', () => {
     expect(shown('vyazovkin-wight-f')).toMatchObject({ kind: 'student-t', interval: { lower95_kJ_per_mol: [144.5, 145] } })
     expect(shownOf(five, 'starink', null, 'jackknife')).toMatchObject({ kind: 'jackknife', interval: null })
     expect(shownOf(five, 'kas', uncertain, 'student-t')).toBeNull()
+  })
+})
+
+describe('mean with what moves all runs alike', () => {
+  const mean = { Ea_kJ_per_mol: 150.25, standardUncertainty_kJ_per_mol: 2, lower95_kJ_per_mol: 146, upper95_kJ_per_mol: 154.5, note: '' }
+  const known: Uncertain = { ...uncertain, result: { ...uncertain.result, profiles: [{ ...apart, mean }] } }
+
+  it('is there for the range it was worked out for, and for no other', () => {
+    expect(shownOf(result, 'starink', known, 'student-t')?.mean).toBe(mean)
+    expect(shownOf(result, 'starink', uncertain, 'student-t')?.mean).toBeNull()
+    const narrower = { ...result, profiles: [{ ...starink, mean: { ...starink.mean, from: 0.3 } }] }
+    expect(shownOf(narrower, 'starink', known, 'student-t')?.mean).toBeNull()
   })
 })
 

@@ -1,4 +1,5 @@
 import type {
+  CombinedMean,
   IntervalResult,
   LevelStatus,
   Maybe,
@@ -153,6 +154,8 @@ export interface ShownOfMethod {
   readonly offers: readonly IntervalOffer[]
   readonly kind: ShownKind
   readonly interval: ShownInterval | null
+  /** The mean with what moves all runs alike, where it is at hand and of the range that is asked for. */
+  readonly mean: CombinedMean | null
 }
 
 /** Everything the sheet shows of a method's intervals; null where it gave no profile. */
@@ -168,7 +171,10 @@ export function shownOf(
   const programmes = runs.map((run) => run.programmeGroup)
   const offers = intervalOffers(profile, apart, programmes)
   const kind = kindShown(wanted, offers)
-  return { profile, apart, offers, kind, interval: intervalOfKind(profile, apart, kind) }
+  const about = uncertain?.about.result.profiles.find((one) => one.method === method)?.mean
+  const isOfRange = about?.from === profile.mean.from && about.to === profile.mean.to
+  const mean = isOfRange ? (apart?.mean ?? null) : null
+  return { profile, apart, offers, kind, interval: intervalOfKind(profile, apart, kind), mean }
 }
 
 /** The interval of every method, of the kind that is wanted or, where it has none of it, its own. */
