@@ -1,6 +1,6 @@
 import { KineticsError } from '../errors.ts'
 import { lineFit } from '../numerics/line-fit.ts'
-import { areaProportionalBaseline, fitTangent, straightBaseline, tangentAt, type Tangent } from '../signal/baseline.ts'
+import { areaProportionalBaseline, fitTangent, straightBaseline, tangentAt } from '../signal/baseline.ts'
 import { cellMeans } from '../signal/cell-means.ts'
 import { lowerBound } from '../signal/lower-bound.ts'
 import { noiseOf } from '../signal/noise.ts'
@@ -8,7 +8,8 @@ import { findQuietEnds, lowestPeak, type QuietEnds } from '../signal/quiet-ends.
 import type { Column } from '../units/quantity.ts'
 import type { Converted, HeatFlowBaseline } from './converted.ts'
 import { fromPartialArea } from './partial-area.ts'
-import { valueAtEnd } from './plateau.ts'
+import { plateauAtEnd } from './plateau.ts'
+import type { BaselineLine, DrawnBaseline } from './smooth-curve.ts'
 
 /** A flank that has not come down to half the height of the peak where the data end leaves neither width nor baseline to be told. */
 const highestStanding = 0.5
@@ -45,11 +46,12 @@ export function fromHeatFlow(
   const { standing } = quiet
   // At the start a drift that the furnace leaves behind can stand as high, with the whole peak after it: that is for a person to judge.
   if (standing.after > highestStanding) throw cutPeak(label, standing.after)
-  const baseline =
+  const drawn: DrawnBaseline =
     kind === 'straight'
-      ? straightBetweenEnds(time_s, heatFlow)
-      : areaProportional(time_s, heatFlow, tangents(time_s, heatFlow, quiet), label)
-  const converted = fromPartialArea(time_s, temperature_K, heatFlow, baseline, label)
+      ? { passes: 'with-time', lines: endLines(time_s, heatFlow) }
+      : { passes: 'with-conversion', lines: tangents(time_s, heatFlow, quiet) }
+  const baseline = kind === 'straight' ? straightBetweenEnds(time_s, drawn.lines) : areaProportional(time_s, heatFlow, drawn.lines, label)
+  const converted = fromPartialArea(time_s, temperature_K, heatFlow, baseline, label, drawn)
   return {
     ...converted,
     baselineKind: kind,
@@ -84,11 +86,14 @@ const lastPart = 0.2
 
 function levelledAtEnd(time_s: Column<'s'>, temperature_K: Column<'K'>, heatFlow: Float64Array, noise: number, label: string): Converted {
   const n = time_s.length
-  const level = valueAtEnd(time_s, heatFlow, 'end', noise)
+  const { value: level, rows, varianceOfMean } = plateauAtEnd(time_s, heatFlow, 'end', noise)
   const { y } = cellMeans(time_s, heatFlow, 0, n - 1, Math.min(excursionCells, Math.floor(n / 2)))
   const excursion = y.reduce((most, value) => Math.max(most, Math.abs(value - level)), 0)
   if (!(excursion > lowestPeak * noise)) throw noPeak(label)
-  const converted = fromPartialArea(time_s, temperature_K, heatFlow, new Float64Array(n).fill(level), label)
+  const [from_s, to_s] = [time_s[n - rows] ?? Number.NaN, time_s[n - 1] ?? Number.NaN]
+  const line = { end: 'end', from_s, to_s, x: to_s, value: level, slope: 0, hasSlope: false, varianceOfMean } as const
+  const drawn: DrawnBaseline = { passes: 'level', lines: [line] }
+  const converted = fromPartialArea(time_s, temperature_K, heatFlow, new Float64Array(n).fill(level), label, drawn)
   const part = lastPart * ((time_s[n - 1] ?? 0) - (time_s[0] ?? 0))
   const from = Math.min(n - 3, lowerBound(time_s, (time_s[n - 1] ?? 0) - part))
   const { slope, slopeStandardError } = lineFit(time_s.subarray(from), heatFlow.subarray(from))
@@ -97,8 +102,10 @@ function levelledAtEnd(time_s: Column<'s'>, temperature_K: Column<'K'>, heatFlow
   return { ...converted, baselineKind: 'level-at-end', rateAtEnds: { start: converted.rateAtEnds?.start ?? 0, end: drift / excursion } }
 }
 
-function areaProportional(time: Float64Array, heatFlow: Float64Array, ends: readonly [Tangent, Tangent], label: string): Float64Array {
-  const { baseline, status } = areaProportionalBaseline(time, heatFlow, ...ends)
+function areaProportional(time: Float64Array, heatFlow: Float64Array, lines: readonly BaselineLine[], label: string): Float64Array {
+  const [before, after] = lines
+  if (before === undefined || after === undefined) throw new RangeError('an area-proportional baseline needs two tangents')
+  const { baseline, status } = areaProportionalBaseline(time, heatFlow, before, after)
   if (status === 'ok') return baseline
   throw new KineticsError(
     'empty-window',
@@ -108,10 +115,10 @@ function areaProportional(time: Float64Array, heatFlow: Float64Array, ends: read
   )
 }
 
-function tangents(time: Float64Array, heatFlow: Float64Array, { before, after }: QuietEnds): readonly [before: Tangent, after: Tangent] {
+function tangents(time: Float64Array, heatFlow: Float64Array, { before, after }: QuietEnds): readonly BaselineLine[] {
   return [
-    before === null ? levelAt(time, heatFlow, 'start') : fitTangent(time, heatFlow, before.outer, before.inner),
-    after === null ? levelAt(time, heatFlow, 'end') : fitTangent(time, heatFlow, after.inner, after.outer),
+    before === null ? levelAt(time, heatFlow, 'start') : lineThrough(time, heatFlow, 'start', before.outer, before.inner),
+    after === null ? levelAt(time, heatFlow, 'end') : lineThrough(time, heatFlow, 'end', after.inner, after.outer),
   ]
 }
 
@@ -122,15 +129,25 @@ function outermostPart(time: Float64Array, end: 'start' | 'end'): readonly [from
   return end === 'start' ? [start, start + part] : [finish - part, finish]
 }
 
-function levelAt(time: Float64Array, heatFlow: Float64Array, end: 'start' | 'end'): Tangent {
-  const tangent = fitTangent(time, heatFlow, ...outermostPart(time, end))
-  return { ...tangent, slope: 0 }
+function lineThrough(time: Float64Array, heatFlow: Float64Array, end: 'start' | 'end', from_s: number, to_s: number): BaselineLine {
+  return { end, from_s, to_s, ...fitTangent(time, heatFlow, from_s, to_s), hasSlope: true, varianceOfMean: 1 }
 }
 
-function straightBetweenEnds(time: Float64Array, heatFlow: Float64Array): Float64Array {
-  const point = (end: 'start' | 'end'): { x: number; y: number } => {
-    const x = (end === 'start' ? time[0] : time.at(-1)) ?? Number.NaN
-    return { x, y: tangentAt(fitTangent(time, heatFlow, ...outermostPart(time, end)), x) }
-  }
-  return straightBaseline(time, point('start'), point('end'))
+const levelAt = (time: Float64Array, heatFlow: Float64Array, end: 'start' | 'end'): BaselineLine => ({
+  ...lineThrough(time, heatFlow, end, ...outermostPart(time, end)),
+  slope: 0,
+  hasSlope: false,
+})
+
+/** Lines through the outermost rows at either end. */
+const endLines = (time: Float64Array, heatFlow: Float64Array): readonly BaselineLine[] =>
+  (['start', 'end'] as const).map((end) => lineThrough(time, heatFlow, end, ...outermostPart(time, end)))
+
+function straightBetweenEnds(time: Float64Array, lines: readonly BaselineLine[]): Float64Array {
+  const [start, end] = lines.map((line) => {
+    const x = (line.end === 'start' ? time[0] : time.at(-1)) ?? Number.NaN
+    return { x, y: tangentAt(line, x) }
+  })
+  if (start === undefined || end === undefined) throw new RangeError('a straight baseline needs two ends')
+  return straightBaseline(time, start, end)
 }

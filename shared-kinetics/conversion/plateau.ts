@@ -13,6 +13,10 @@ const certainDrift = 3 * Math.sqrt(12)
 export interface EndValue {
   readonly value: number
   readonly standardError: number
+  /** The outermost rows that it was read from. */
+  readonly rows: number
+  /** Its variance for independent noise of 1, times these rows: 1 of a mean, 9 of a parabola's outermost value. */
+  readonly varianceOfMean: number
 }
 
 /** The value of `plateauAtEnd` alone. */
@@ -44,7 +48,7 @@ export function plateauAtEnd(time: Float64Array, y: Float64Array, end: 'start' |
     ) {
       const outermost = time[end === 'start' ? 0 : n - 1] ?? Number.NaN
       const { value } = localPolynomialAt(time, y, outermost, { halfWidth: 0, degree: 2, minimumPoints: rows })
-      return { value, standardError: (3 * noiseOfRows) / Math.sqrt(rows) }
+      return { value, standardError: (3 * noiseOfRows) / Math.sqrt(rows), rows, varianceOfMean: 9 }
     }
     if (rows === rowsInBlock) break
   }
@@ -61,7 +65,8 @@ export function plateauAtEnd(time: Float64Array, y: Float64Array, end: 'start' |
     if (Math.min(Math.abs(next), Math.abs(overnext)) > limit && next * overnext > 0) break
     value += next / (count + 1)
   }
-  return { value, standardError: noise / Math.sqrt(count) }
+  const rows = Math.min(n, Math.round(count * rowsInBlocks(n, rowsInBlock)))
+  return { value, standardError: noise / Math.sqrt(count), rows, varianceOfMean: 1 }
 }
 
 const numberOfBlocks = (n: number, rows: number): number => Math.max(1, Math.floor(n / rows))
@@ -69,6 +74,34 @@ const rowsInBlocks = (n: number, rows: number): number => n / numberOfBlocks(n, 
 
 const blocksOf = (time: Float64Array, y: Float64Array, rows: number): CellMeans =>
   cellMeans(time, y, 0, time.length - 1, numberOfBlocks(time.length, rows))
+
+/** A hundred blocks know their own noise to some 15 %, of the largest of two looks at it: below this the rows are independent. */
+const mostByChance = 1.7
+
+/** Noise of a signal where many rows are averaged, and of one row as far as that tells it. */
+export interface SpreadNoise {
+  /** Variance of the mean of n rows, times n. */
+  readonly perRow: number
+  /** Variance of a single row, at the least. */
+  readonly ofOneRow: number
+}
+
+/**
+ * Noise that a filter has spread over neighbouring rows counts for more than that of independent ones where many are averaged. Told from the means of blocks of a hundredth
+ * of the window; that of independent rows where there are too few rows for so many blocks.
+ */
+export function spreadNoise(time: Float64Array, y: Float64Array, noiseOfRows: number): SpreadNoise {
+  const variance = noiseOfRows ** 2
+  if (!(variance > 0)) return { perRow: variance, ofOneRow: variance }
+  const rows = Math.max(fewestRowsInBlock, Math.ceil(time.length / blocksInWindow))
+  const blocks = blocksOf(time, y, rows)
+  const halves = blocksOf(time, y, rows / 2)
+  const ofHalves = noiseOfMeans(halves, noiseOfRows) ** 2 * halves.samplesPerCell
+  // Blocks half as long have at least half of it, where it is noise; of a curve's own bends they have next to nothing.
+  const perRow = Math.min(noiseOfMeans(blocks, noiseOfRows) ** 2 * blocks.samplesPerCell, 2.5 * ofHalves)
+  const ofMeans = perRow / blocks.samplesPerCell
+  return perRow > mostByChance * variance ? { perRow, ofOneRow: Math.max(variance, ofMeans) } : { perRow: variance, ofOneRow: variance }
+}
 
 /**
  * Standard deviation of the means of blocks. From the means themselves where there are about a hundred, most of which lie outside the reaction or follow it smoothly:

@@ -23,6 +23,8 @@ export interface ConversionCurve {
   readonly noise: number
   /** Standard errors of the two values of the signal that were taken for conversion 0 and 1, as conversions; 0 where there are none. */
   readonly ends: EndErrors
+  /** The baseline that was taken off a heat flow; null where none was. */
+  readonly drawn: DrawnBaseline | null
   /** Time the reaction would take at its largest rate. */
   readonly duration_s: number
   /** Rows between conversion 0.02 and 0.98. */
@@ -34,6 +36,26 @@ export interface ConversionCurve {
 export interface EndErrors {
   readonly start: number
   readonly end: number
+}
+
+/** What a baseline was drawn from: lines through rows at the ends of the window, and what it passes from the one to the other with. */
+export interface DrawnBaseline {
+  readonly passes: 'with-time' | 'with-conversion' | 'level'
+  readonly lines: readonly BaselineLine[]
+}
+
+/** y = value + slope·(time - x) through the rows from one time to another, over the area of the peak: in 1/s and 1/s². */
+export interface BaselineLine {
+  readonly end: 'start' | 'end'
+  readonly from_s: number
+  readonly to_s: number
+  readonly x: number
+  readonly value: number
+  readonly slope: number
+  /** Fitted; else the line is level. */
+  readonly hasSlope: boolean
+  /** Variance of the value for noise of 1, times the number of rows: 1 of a mean. */
+  readonly varianceOfMean: number
 }
 
 const noEnds: EndErrors = { start: 0, end: 0 }
@@ -73,6 +95,7 @@ export function curveFromExtent(
     smoothing,
     noise,
     ends,
+    drawn: null,
     duration_s: shape.duration,
     reaction: shape.reaction,
     gaps: shape.gaps,
@@ -85,12 +108,14 @@ export function curveFromExtent(
  *
  * @param rate - dα/dt, its integral over the window is 1
  * @param conversion - that integral
+ * @param drawn - the baseline that was taken off the signal
  */
 export function curveFromRate(
   time_s: Column<'s'>,
   temperature_K: Column<'K'>,
   rate: Float64Array,
   conversion: Float64Array,
+  drawn: DrawnBaseline | null = null,
 ): ConversionCurve {
   const shape = shapeOf(time_s, conversion)
   const noise = correlatedNoiseOf(time_s, rate, shape.reaction.first, shape.reaction.last, shape.widestStride)
@@ -104,6 +129,7 @@ export function curveFromRate(
     smoothing,
     noise,
     ends: noEnds,
+    drawn,
     duration_s: shape.duration,
     reaction: shape.reaction,
     gaps: shape.gaps,
