@@ -8,6 +8,7 @@ import type {
   UncertaintyProfile,
   UncertaintyResult,
 } from '../../shared-kinetics/tasks/study-result.ts'
+import { studentStatus } from '../../shared-kinetics/tasks/interval-status.ts'
 import { caution } from './caution.ts'
 
 /** What an export is made from: the study, what followed from it, and the program that worked it out. */
@@ -94,6 +95,7 @@ function profileFields(profile: ProfileResult, apart: UncertaintyProfile | undef
     standardError_kJ_per_mol: profile.standardError_kJ_per_mol,
     lower95_kJ_per_mol: profile.lower95_kJ_per_mol,
     upper95_kJ_per_mol: profile.upper95_kJ_per_mol,
+    intervalStatus: studentStatus(profile),
     lnAf_per_s: profile.lnAf_per_s,
     lnAfStandardError: profile.lnAfStandardError,
     covarianceEaLnAf_kJ_per_mol: profile.covarianceEaLnAf_kJ_per_mol,

@@ -1,4 +1,7 @@
 import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
+import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
+import { intervalStatuses, type IntervalStatus } from '../../shared-kinetics/isoconversional/result.ts'
+import { intervalStatusWords, studentStatus } from '../../shared-kinetics/tasks/interval-status.ts'
 import type {
   BudgetEntry,
   CombinedMean,
@@ -16,7 +19,11 @@ export function intervalLines({ result, uncertainty }: ExportSource): string[] {
       const apart = uncertaintyOf(profile, uncertainty)
       return [
         studentLine(profile),
-        ...[...profile.otherIntervals, ...(apart?.intervals ?? [])].map((interval) => otherLine(profile.label, interval)),
+        ...statusLines(`${profile.label}: Student-t interval`, studentStatus(profile), result.levels),
+        ...[...profile.otherIntervals, ...(apart?.intervals ?? [])].flatMap((interval) => [
+          otherLine(profile.label, interval),
+          ...statusLines(`${profile.label}: ${interval.label}`, interval.status, result.levels),
+        ]),
         ...(apart?.budget ?? []).map((entry) => budgetLine(profile.label, entry)),
         ...systematicLines(profile),
         ...lackOfFitLines(profile),
@@ -51,6 +58,29 @@ function studentLine({ label, interval, sources, standardError_kJ_per_mol: error
 function otherLine(label: string, { label: kind, level, approximate, note, sources }: IntervalResult): string {
   const basis = sources.length === 0 ? '' : ` Source: ${sources.join('; ')}`
   return `${label}: ${level * 100} % interval, ${kind}, pointwise${approximate ? ', approximate' : ''}. ${note}${basis}`
+}
+
+/** At which levels an interval says less than its numbers do, or nothing, and why. */
+function statusLines(interval: string, status: readonly IntervalStatus[], levels: readonly number[]): string[] {
+  return intervalStatuses.flatMap((one) => {
+    const words = intervalStatusWords[one]
+    const at = levels.flatMap((_, i) => (status[i] === one ? [i] : []))
+    return words === null || at.length === 0 ? [] : [`${interval} at conversion ${levelRanges(at, levels)}: ${words}`]
+  })
+}
+
+/** `0.05 to 0.2, 0.9`: levels that follow each other as one range. */
+function levelRanges(at: readonly number[], levels: readonly number[]): string {
+  const text = (i: number | undefined): string => levelText(levels[i ?? -1] ?? Number.NaN)
+  const ranges: number[][] = []
+  for (const i of at) {
+    const last = ranges.at(-1)
+    if (last?.at(-1) === i - 1) last.push(i)
+    else ranges.push([i])
+  }
+  return ranges
+    .map((range) => (range.length === 1 ? text(range[0]) : `${text(range[0])} ${range.length === 2 ? 'and' : 'to'} ${text(range.at(-1))}`))
+    .join(', ')
 }
 
 const budgetLine = (label: string, entry: BudgetEntry): string =>

@@ -17,6 +17,7 @@ const intervalOf = (kind: IntervalResult['kind'], label: string): IntervalResult
   standardUncertainty_kJ_per_mol: [1, 2, null],
   lower95_kJ_per_mol: [90, 91, null],
   upper95_kJ_per_mol: [110.5, 111, null],
+  status: ['ok', 'ok', 'no-energy'],
 })
 
 const friedman: ProfileResult = {
@@ -134,5 +135,45 @@ describe('intervals in what is exported', () => {
     )
     expect(textOf(source, 'csv', 1)).not.toContain('Jackknife')
     expect(textOf(source, 'csv', 1)).not.toContain('interval of the mean, scatter and measured')
+  })
+
+  it('give the reason for every end that is not there, and a word where the lower one means nothing', () => {
+    const status: IntervalResult['status'] = ['resamples-without-energy', 'resamples-without-energy', 'no-energy']
+    const missing = {
+      ...intervalOf('bootstrap', 'Bootstrap over runs'),
+      lower95_kJ_per_mol: [null, null, null],
+      upper95_kJ_per_mol: [null, null, null],
+      status,
+    }
+    const outside = {
+      ...intervalOf('vyazovkin-wight-f', 'F-type interval of Vyazovkin and Wight'),
+      upper95_kJ_per_mol: [110.5, null, null],
+      status: ['ok', 'end-outside', 'no-energy'] as const,
+    }
+    const below = { ...friedman, lower95_kJ_per_mol: [-12.5, 91, null] }
+    const two = { ...kas, lower95_kJ_per_mol: [null, null, null], upper95_kJ_per_mol: [null, null, null] }
+    const from: ExportSource = {
+      ...source,
+      result: { ...result, profiles: [below, two, { ...vyazovkin, otherIntervals: [outside] }] },
+      uncertainty: { ...uncertainty, profiles: [{ method: 'vyazovkin', intervals: [missing], budget: [], mean: null }] },
+    }
+    const json = JSON.parse(textOf(from, 'json')) as { profiles: (ProfileResult & { intervalStatus: string[] })[] }
+    expect(json.profiles.map((profile) => profile.intervalStatus)).toEqual([
+      ['reaches-below-zero', 'ok', 'no-energy'],
+      ['too-few-programmes', 'too-few-programmes', 'no-energy'],
+      ['ok', 'ok', 'no-energy'],
+    ])
+    expect(json.profiles[2]?.otherIntervals.map((interval) => interval.status)).toEqual([outside.status, status])
+    const notes = textOf(from, 'csv', 1)
+    const [first, second] = result.levels.map(String)
+    expect(notes).toContain(`Friedman: Student-t interval at conversion ${first}: reaches below 0, where no activation energy lies`)
+    expect(notes).toContain(
+      `Student-t interval at conversion ${first} and ${second}: not to be had with fewer than three distinct programmes`,
+    )
+    expect(notes).toContain(`F-type interval of Vyazovkin and Wight at conversion ${second}: an end lies beyond 1 or 1000 kJ/mol`)
+    expect(notes).toContain(
+      `Bootstrap over runs at conversion ${first} and ${second}: not to be had: more than 1 % of the resamples give no Ea`,
+    )
+    expect(textOf(source, 'csv', 1)).not.toContain('at conversion')
   })
 })

@@ -6,7 +6,7 @@ import { energyGrid, readBetween, type EnergyGrid } from './energy-grid.ts'
 import { phiAround, phiOverRange } from './phi-curve.ts'
 import { findPhiMinimum } from './phi-minimum.ts'
 import { resultColumns } from './result-columns.ts'
-import type { EnergyInterval, IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
+import type { EnergyInterval, IntervalStatus, IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
 import { checkSeries, countProgrammes } from './series-check.ts'
 import type { TimeIntegral } from './time-integral.ts'
 
@@ -67,9 +67,10 @@ function varianceRatioIntervals(
 } {
   const lower95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
   const upper95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
+  const status = Array.from<IntervalStatus>({ length: levels }).fill('no-energy')
   const quantile = fQuantile(0.95, runs - 1, runs - 1)
   return {
-    interval: { kind: 'vyazovkin-wight-f', lower95, upper95 },
+    interval: { kind: 'vyazovkin-wight-f', lower95, upper95, status },
     set(level, Ea, integrals, grid) {
       const read = (energy: number, lnJ: Float64Array, inverseT: Float64Array): void => {
         integrals.forEach((integral, i) => {
@@ -83,6 +84,7 @@ function varianceRatioIntervals(
       })
       lower95[level] = ends.lower95
       upper95[level] = ends.upper95
+      status[level] = ends.status
     },
   }
 }

@@ -70,11 +70,35 @@ export interface LevelPoints {
 export const intervalKinds = ['vyazovkin-wight-f', 'jackknife', 'bootstrap', 'measured-sources', 'combined'] as const
 export type IntervalKind = (typeof intervalKinds)[number]
 
+/** Why an interval has its ends at a level, or has none. */
+export const intervalStatuses = [
+  'ok',
+  /** Both ends are given, the lower one below 0: Ea is not bounded from below by these runs. */
+  'reaches-below-zero',
+  /** The level has no Ea; its own status says why. */
+  'no-energy',
+  'too-few-programmes',
+  /** One end or both lie outside of 1 to 1000 kJ/mol; such an end is not given. */
+  'end-outside',
+  /** The variance has no minimum next to Ea. */
+  'no-minimum',
+  /** Without one of the runs there is no Ea. */
+  'energy-needs-every-run',
+  /** More than 1 % of the resamples, or of the draws, give no Ea. */
+  'resamples-without-energy',
+  'draws-without-energy',
+  /** How uncertain one of the sources is cannot be told there. */
+  'source-unknown',
+] as const
+export type IntervalStatus = (typeof intervalStatuses)[number]
+
 /** Another 95 % interval of the same Ea, pointwise, as long as the levels; NaN where it is not to be had. */
 export interface EnergyInterval {
   readonly kind: IntervalKind
   readonly lower95: Column<'J/mol'>
   readonly upper95: Column<'J/mol'>
+  /** `no-energy` without Ea; `end-outside` where one end or both are NaN for lying too far out; `no-minimum`. */
+  readonly status: readonly IntervalStatus[]
 }
 
 /** Phi(Ea) sampled around its minimum at one level, for drawing. */

@@ -1,4 +1,4 @@
-import type { MethodId, TaskContext } from '../isoconversional/result.ts'
+import type { IntervalStatus, MethodId, TaskContext } from '../isoconversional/result.ts'
 import { drawInterval } from '../uncertainty/draw-interval.ts'
 import type { EnergyModel } from '../uncertainty/energy-model.ts'
 import type { MeasuredSources } from '../uncertainty/measured-sources.ts'
@@ -32,9 +32,17 @@ export function intervalsOfDraws(
         place += part.length
       }
       const { levels } = model
-      return [model.method, intervalResult('measured-sources', drawInterval(all, levels), noteOnDraws(sources, all.length / levels, seed))]
+      const note = noteOnDraws(sources, all.length / levels, seed)
+      const missing = (level: number): IntervalStatus => (isKnown(sources, model.runs, level) ? 'draws-without-energy' : 'source-unknown')
+      return [model.method, intervalResult('measured-sources', drawInterval(all, levels), note, model.Ea, missing)]
     }),
   )
+}
+
+/** Whether a level, and the one before that an increment begins at, have the errors of all their times: from noise and, where there is a choice, from the other baseline. */
+const isKnown = ({ noise, baseline }: MeasuredSources, runs: number, level: number): boolean => {
+  const times = [noise.time_s, ...(baseline === null ? [] : [baseline.time_s])]
+  return times.every((time_s) => !time_s.subarray(Math.max(0, level - 1) * runs, (level + 1) * runs).some(Number.isNaN))
 }
 
 const noteOnDraws = ({ baseline }: MeasuredSources, draws: number, seed: number): string =>

@@ -49,6 +49,17 @@ function studyOf(
   }
 }
 
+/** By kind, for Starink's method at one level. */
+const notesOf = (rates: readonly number[]): ReadonlyMap<string, string> => {
+  const { study, columns } = studyOf(rates)
+  const one = { ...study, settings: { ...study.settings, methods: ['starink' as const], levels: [0.5] } }
+  const [profile] = estimateUncertainty(one, columns, withSeed(1), context).result.profiles
+  return new Map(profile?.intervals.map(({ kind, note }) => [kind, note]))
+}
+
+/** The coverage in percent that a note tells. */
+const told = (note: string | undefined): number => Number(/true value in about (\d+) %/.exec(note ?? '')?.[1])
+
 describe('the uncertainty of a study', () => {
   it('names jackknife and bootstrap for each method, pointwise and approximate, at every level that has an Ea', () => {
     const { study, columns } = studyOf([1, 2, 5, 10, 20])
@@ -92,13 +103,6 @@ describe('the uncertainty of a study', () => {
   })
 
   it('tells of four and of five runs how often their intervals hold, and gives no bootstrap of three programmes', () => {
-    const notesOf = (rates: readonly number[]): ReadonlyMap<string, string> => {
-      const { study, columns } = studyOf(rates)
-      const one = { ...study, settings: { ...study.settings, methods: ['starink' as const], levels: [0.5] } }
-      const [profile] = estimateUncertainty(one, columns, withSeed(1), context).result.profiles
-      return new Map(profile?.intervals.map(({ kind, note }) => [kind, note]))
-    }
-    const told = (note: string | undefined): number => Number(/true value in about (\d+) %/.exec(note ?? '')?.[1])
     const four = notesOf([1, 2, 5, 10])
     expect(four.get('bootstrap')).toContain('34.4 % of the probability')
     expect(four.get('bootstrap')).toContain('too narrow')
@@ -201,6 +205,21 @@ describe('measured sources', () => {
     }
   })
 
+  it('give the reason where draws have no Ea, and where a source cannot be told', () => {
+    const { study, columns } = studyOf([1, 2, 5, 10])
+    const one = { ...study, settings: { ...study.settings, methods: ['vyazovkin' as const] } }
+    const { order } = estimateUncertainty(one, columns, withSeed(1), context)
+    // 100 draws about 150 kJ/mol, of which two have no Ea at the second level and one has none at the third.
+    const draws = Float64Array.from({ length: 100 * levels.length }, (_, k) => 150e3 + (k % 7))
+    for (const k of [1, levels.length + 1, 2]) draws[k] = Number.NaN
+    const statusOf = (of: typeof order) => intervalsOfDraws(of, [[draws]], 1).get('vyazovkin')?.status
+    expect(statusOf(order)).toEqual(['ok', 'draws-without-energy', 'ok', 'ok', 'ok'])
+    const { noise } = order.sources
+    const time_s = noise.time_s.slice() as typeof noise.time_s
+    time_s[4] = Number.NaN
+    expect(statusOf({ ...order, sources: { ...order.sources, noise: { ...noise, time_s } } })?.[1]).toBe('source-unknown')
+  })
+
   it('are combined with the scatter, which they can only widen', () => {
     const { study, columns } = studyOf([1, 2, 5, 10, 20])
     const evaluated = evaluateStudy(study, columns, context)
@@ -215,22 +234,25 @@ describe('measured sources', () => {
   })
 })
 
+const meansOf = (change: { readonly shift_K: number; readonly lag_s: number }): readonly number[] => {
+  const changed = studyOf([1, 2, 5, 10, 20], 1, change)
+  return evaluateStudy(changed.study, changed.columns, context).profiles.map(({ mean }) => mean.Ea_kJ_per_mol ?? Number.NaN)
+}
+
+/** Change of the mean of each method by one unit, between runs changed `step` units to either side. */
+const changeOfMeans = (change: { readonly shift_K: number; readonly lag_s: number }, step: number): readonly number[] => {
+  const [up, down] = [meansOf(change), meansOf({ shift_K: -change.shift_K, lag_s: -change.lag_s })]
+  return up.map((value, m) => (value - (down[m] ?? Number.NaN)) / (2 * step))
+}
+
 describe('the mean of Ea with all that is known of it', () => {
   const rates = [1, 2, 5, 10, 20]
   const { study, columns } = studyOf(rates)
   const evaluated = evaluateStudy(study, columns, context)
-  const meansOf = (change: { readonly shift_K: number; readonly lag_s: number }): readonly number[] => {
-    const changed = studyOf(rates, 1, change)
-    return evaluateStudy(changed.study, changed.columns, context).profiles.map(({ mean }) => mean.Ea_kJ_per_mol ?? Number.NaN)
-  }
 
   it('holds what a shift and a lag common to all runs really do to it, found by evaluating such runs', () => {
-    const of = (change: { readonly shift_K: number; readonly lag_s: number }, step: number): readonly number[] => {
-      const [up, down] = [meansOf(change), meansOf({ shift_K: -change.shift_K, lag_s: -change.lag_s })]
-      return up.map((value, m) => (value - (down[m] ?? Number.NaN)) / (2 * step))
-    }
-    const perKelvin = of({ shift_K: 1, lag_s: 0 }, 1)
-    const perSecond = of({ shift_K: 0, lag_s: 2 }, 2)
+    const perKelvin = changeOfMeans({ shift_K: 1, lag_s: 0 }, 1)
+    const perSecond = changeOfMeans({ shift_K: 0, lag_s: 2 }, 2)
     const { profiles } = estimateUncertainty(study, columns, { ...withSeed(1), temperatureCommon_K: 2, lag_s: 3 }, context).result
     profiles.forEach(({ method, mean }, m) => {
       const scatter = evaluated.profiles[m]?.mean.standardError_kJ_per_mol ?? Number.NaN
@@ -238,10 +260,10 @@ describe('the mean of Ea with all that is known of it', () => {
       const stated = Math.sqrt((mean?.standardUncertainty_kJ_per_mol ?? 0) ** 2 - scatter ** 2)
       expect(mean?.Ea_kJ_per_mol).toBeCloseTo(evaluated.profiles[m]?.mean.Ea_kJ_per_mol ?? Number.NaN, 9)
       // The corrected OFW answers to a shift within 3 %, for all others first order is good to 1 %.
-      expect(Math.abs(stated / real - 1), method).toBeLessThan(0.03)
+      expect(Math.abs(stated / real - 1), `by ${method}`).toBeLessThan(0.03)
       // t(0.975; 3) = 3.1824, z = 1.9600.
       const half = Math.hypot(3.1824 * scatter, 1.96 * stated)
-      expect(((mean?.upper95_kJ_per_mol ?? 0) - (mean?.lower95_kJ_per_mol ?? 0)) / (2 * half), method).toBeCloseTo(1, 3)
+      expect(((mean?.upper95_kJ_per_mol ?? 0) - (mean?.lower95_kJ_per_mol ?? 0)) / (2 * half), `by ${method}`).toBeCloseTo(1, 3)
       expect(mean?.note).toMatch(/common to all runs \(2 K, as stated\).*3 s times the heating rate, as stated/)
     })
   })

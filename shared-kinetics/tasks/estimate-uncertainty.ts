@@ -60,4 +60,4 @@ export function estimateUncertainty(
 }
 
 const combined = (result: IsoconversionalResult, budget: Budget, entries: readonly BudgetEntry[]): IntervalResult =>
-  intervalResult('combined', combinedInterval(result, budget), noteOnCombined(entries))
+  intervalResult('combined', combinedInterval(result, budget), noteOnCombined(entries), result.Ea, () => 'source-unknown')

@@ -1,6 +1,7 @@
-import type { IntervalKind } from '../isoconversional/result.ts'
+import type { IntervalKind, IntervalStatus } from '../isoconversional/result.ts'
 import { sources, type SourceKey } from '../sources.ts'
 import { joulesToKilojoules } from '../units/convert.ts'
+import { intervalStatus } from './interval-status.ts'
 import { maybes } from './maybe.ts'
 import type { IntervalResult } from './study-result.ts'
 
@@ -22,8 +23,19 @@ export interface IntervalColumns {
   readonly upper95: ArrayLike<number>
 }
 
-/** An interval in the terms of `StudyResult`: named by its kind, in kJ/mol, null for what is not to be had. */
-export function intervalResult(kind: IntervalKind, columns: IntervalColumns, note: string): IntervalResult {
+/**
+ * An interval in the terms of `StudyResult`: named by its kind, in kJ/mol, null for what is not to be had, which the status of the level gives the reason for.
+ *
+ * @param Ea - of the levels; NaN where there is none
+ * @param missing - why an end is not there although the level has an Ea
+ */
+export function intervalResult(
+  kind: IntervalKind,
+  columns: IntervalColumns,
+  note: string,
+  Ea: ArrayLike<number>,
+  missing: (level: number) => IntervalStatus,
+): IntervalResult {
   const { label, approximate, sources: keys } = kinds[kind]
   return {
     kind,
@@ -36,6 +48,7 @@ export function intervalResult(kind: IntervalKind, columns: IntervalColumns, not
     standardUncertainty_kJ_per_mol: kilojoules(columns.standardUncertainty),
     lower95_kJ_per_mol: kilojoules(columns.lower95),
     upper95_kJ_per_mol: kilojoules(columns.upper95),
+    status: intervalStatus(Ea, columns.lower95, columns.upper95, missing),
   }
 }
 

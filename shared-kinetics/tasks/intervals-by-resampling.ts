@@ -72,12 +72,12 @@ export function intervalsByResampling(
   if (left !== null) {
     const found = atLevels(ofEach(left), (without, Ea) => jackknife(Ea, without))
     const note = `Each of ${left.length} runs left out once; Student's t with ${left.length - 1} degrees of freedom. Pointwise and approximate${holds(coverage.jackknife)}.`
-    intervals.push(intervalResult('jackknife', columnsOf(found), note))
+    intervals.push(intervalResult('jackknife', columnsOf(found), note, result.Ea, () => 'energy-needs-every-run'))
   }
   if (resamples !== null) {
     const found = atLevels(ofEach(resamples.times), (values) => bootstrap(values, resamples))
     const note = `${howDrawn(resamples, series.runs.length, seed)} 2.5 and 97.5 % points. Pointwise and approximate${holds(coverage.bootstrap)}.`
-    intervals.push(intervalResult('bootstrap', columnsOf(found), note))
+    intervals.push(intervalResult('bootstrap', columnsOf(found), note, result.Ea, () => 'resamples-without-energy'))
   }
   return intervals
 }

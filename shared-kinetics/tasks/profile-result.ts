@@ -41,9 +41,10 @@ export function profileResult(
     lnAfStandardError: maybes(result.lnAfStandardError),
     covarianceEaLnAf_kJ_per_mol: maybes(kilojoules(result.covarianceEaLnAf)),
     lnA_per_s: maybes(result.lnA),
-    otherIntervals: result.otherIntervals.map(({ kind, lower95, upper95 }) =>
-      intervalResult(kind, { standardUncertainty: result.Ea.map(() => Number.NaN), lower95, upper95 }, noteOn(kind, programmeGroup.length)),
-    ),
+    otherIntervals: result.otherIntervals.map(({ kind, lower95, upper95, status }) => {
+      const columns = { standardUncertainty: result.Ea.map(() => Number.NaN), lower95, upper95 }
+      return intervalResult(kind, columns, noteOn(kind, programmeGroup.length), result.Ea, (level) => status[level] ?? 'no-energy')
+    }),
     systematicError_percent: maybes(result.systematicError.map((share) => 100 * share)),
     lackOfFit: lackOfFitResult(result, levels, meanRange, programmeGroup),
     r2: maybes(result.r2),

@@ -1,5 +1,5 @@
 import type { UncertaintySource } from '../uncertainty/measured-sources.ts'
-import type { IntervalKind, LevelStatus, MethodId } from '../isoconversional/result.ts'
+import type { IntervalKind, IntervalStatus, LevelStatus, MethodId } from '../isoconversional/result.ts'
 import type { PeakMethodId } from '../peak-methods/peak-method-info.ts'
 import type { Finding } from '../review/finding.ts'
 import type { Window } from '../series/run.ts'
@@ -87,6 +87,8 @@ export interface IntervalResult {
   readonly standardUncertainty_kJ_per_mol: readonly Maybe[]
   readonly lower95_kJ_per_mol: readonly Maybe[]
   readonly upper95_kJ_per_mol: readonly Maybe[]
+  /** Why a level has no ends, or only one, and where the lower one means nothing. */
+  readonly status: readonly IntervalStatus[]
 }
 
 /** Lack of fit against pure error at each level, where replicates exist: F = (lack-of-fit mean square)/(pure-error mean square) and its p-value. */

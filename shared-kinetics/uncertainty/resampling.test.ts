@@ -188,6 +188,17 @@ function coverageOf(heatingRates: readonly number[]): { readonly jackknife: numb
   return { jackknife: byJackknife / replicates, bootstrap: byBootstrap / replicates }
 }
 
+/** 1/T falls with the logarithm of the heating rate, almost as a straight line. */
+const toldOf = (heatingRates: readonly number[]) => {
+  const groups = heatingRates.map((rate) => heatingRates.indexOf(rate))
+  return designCoverage(
+    heatingRates.map((rate) => -Math.log(rate)),
+    deleteOne(groups),
+    resamplesOf(groups, 1),
+    () => undefined,
+  )
+}
+
 describe('the coverage that is told of the runs at hand', () => {
   // Distinct, unevenly spread and replicated heating rates: what holds for one design does not for another.
   it.each([[[1, 2, 5, 10]], [[2, 5, 10, 10, 10, 20]], [[1, 2, 5, 10, 20]], [[1, 20, 21, 22]], [[2, 5, 5, 10, 20]]])(
@@ -204,24 +215,15 @@ describe('the coverage that is told of the runs at hand', () => {
   )
 
   it('is for distinct programmes about 64 % of four and 87 % of five, and falls where one of them has most of the runs', () => {
-    const at = (heatingRates: readonly number[]) => {
-      const groups = heatingRates.map((rate) => heatingRates.indexOf(rate))
-      return designCoverage(
-        heatingRates.map((rate) => -Math.log(rate)),
-        deleteOne(groups),
-        resamplesOf(groups, 1),
-        () => undefined,
-      )
-    }
     // 4,000 replicates of the same straight line in an independent program (NumPy) gave 0.62 to 0.65, 0.874, and 0.75 and 0.94, 0.76 and 0.91.
-    expect(at([1, 2, 5, 10]).bootstrap).toBeCloseTo(0.63, 1)
-    expect(at([1, 2, 5, 10, 20]).bootstrap).toBeCloseTo(0.87, 1)
-    expect(Math.abs(at([2, 5, 10, 10, 10, 20]).bootstrap - 0.76)).toBeLessThan(0.03)
-    const crowded = at([2, 5, 5, 5, 5, 5, 10, 20])
+    expect(toldOf([1, 2, 5, 10]).bootstrap).toBeCloseTo(0.63, 1)
+    expect(toldOf([1, 2, 5, 10, 20]).bootstrap).toBeCloseTo(0.87, 1)
+    expect(Math.abs(toldOf([2, 5, 10, 10, 10, 20]).bootstrap - 0.76)).toBeLessThan(0.03)
+    const crowded = toldOf([2, 5, 5, 5, 5, 5, 10, 20])
     expect(Math.abs(crowded.bootstrap - 0.76)).toBeLessThan(0.03)
     expect(Math.abs(crowded.jackknife - 0.913)).toBeLessThan(0.02)
     // Nothing is told of what is not given.
-    expect(at([5, 10, 10, 20])).toEqual({ jackknife: Number.NaN, bootstrap: Number.NaN })
+    expect(toldOf([5, 10, 10, 20])).toEqual({ jackknife: Number.NaN, bootstrap: Number.NaN })
   })
 })
 

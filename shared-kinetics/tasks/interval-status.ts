@@ -1,0 +1,45 @@
+import type { IntervalStatus } from '../isoconversional/result.ts'
+import type { Maybe, ProfileResult } from './study-result.ts'
+
+/** What a status says beside an interval, as the end of a sentence on some levels; null where there is nothing to say. */
+export const intervalStatusWords: Readonly<Record<IntervalStatus, string | null>> = {
+  ok: null,
+  'no-energy': null,
+  'reaches-below-zero': 'reaches below 0, where no activation energy lies: these runs do not bound Ea from below',
+  'too-few-programmes': 'not to be had with fewer than three distinct programmes',
+  'end-outside': 'an end lies beyond 1 or 1000 kJ/mol and is not given',
+  'no-minimum': 'not to be had: the variance has no minimum next to Ea',
+  'energy-needs-every-run': 'not to be had: without one of the runs there is no Ea',
+  'resamples-without-energy': 'not to be had: more than 1 % of the resamples give no Ea',
+  'draws-without-energy': 'not to be had: more than 1 % of the draws give no Ea',
+  'source-unknown': 'not to be had: how uncertain one of the sources is cannot be told',
+}
+
+/**
+ * Status of an interval at each level.
+ *
+ * @param Ea - NaN or null where the level has none
+ * @param missing - why an end is not there although the level has an Ea
+ */
+export function intervalStatus(
+  Ea: ArrayLike<Maybe>,
+  lower: ArrayLike<Maybe>,
+  upper: ArrayLike<Maybe>,
+  missing: (level: number) => IntervalStatus,
+): IntervalStatus[] {
+  return Array.from(Ea, (value, level) => {
+    if (!isThere(value)) return 'no-energy'
+    const [from, to] = [lower[level], upper[level]]
+    if (!isThere(from) || !isThere(to)) return missing(level)
+    return from < 0 ? 'reaches-below-zero' : 'ok'
+  })
+}
+
+/** Status of the Student-t interval that a profile has of itself. */
+export const studentStatus = ({
+  Ea_kJ_per_mol: Ea,
+  lower95_kJ_per_mol: lower,
+  upper95_kJ_per_mol: upper,
+}: ProfileResult): IntervalStatus[] => intervalStatus(Ea, lower, upper, () => 'too-few-programmes')
+
+const isThere = (value: Maybe | undefined): value is number => value !== null && value !== undefined && !Number.isNaN(value)
