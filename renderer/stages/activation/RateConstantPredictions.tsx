@@ -55,7 +55,7 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                   >
                     <th scope="row" className="is-number">
                       {temperatureIn(row.temperature_K, shown)}
-                      {row.extrapolation.side !== 'inside' && <span className="is-beyond">{placeWords(row)} the data</span>}
+                      {row.extrapolation.side !== 'inside' && <span className="is-beyond">{placeWords(row)}</span>}
                     </th>
                     <td className="is-number">
                       <PowerOfTen text={scientific(row.rateConstant, 3)} />

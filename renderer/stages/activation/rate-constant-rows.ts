@@ -101,7 +101,7 @@ const distinct = (factors: readonly FactorPer10KResult[]): readonly FactorPer10K
 function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: number, shown: TemperatureUnit): ParameterRow {
   return {
     id: `factor-${i}`,
-    quantity: `Factor per 10 K from ${temperatureIn(from_K, shown, 1)}`,
+    quantity: `Factor per 10 K from ${temperatureIn(from_K, shown)}`,
     unit: '',
     value: factor,
     standardError: null,

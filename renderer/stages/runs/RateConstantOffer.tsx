@@ -9,7 +9,7 @@ import { Half } from '../../sheet/Half.tsx'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
 import { TypedField } from '../../sheet/TypedField.tsx'
 import { useServices } from '../../state/services.ts'
-import type { TableOffer } from '../../state/table-offer.ts'
+import type { TableOffer, TableOrigin } from '../../state/table-offer.ts'
 import type { SheetActions } from '../stage-props.ts'
 import { rateConstantText, temperatureText } from './rate-constant-cells.ts'
 import { joined, temperatureUnitWords } from './rate-constant-edits.ts'
@@ -36,22 +36,24 @@ const pause_ms = 300
 
 function Source({ offer }: OfferProps) {
   const { session } = useServices()
-  const { origin, options } = offer
-  const [text, setText] = useState(origin.kind === 'text' ? origin.text : '')
+  const { origin } = offer
+  // What is being typed belongs to the offer it is typed over; another paste gives another one.
+  const [draft, setDraft] = useState<{ readonly text: string; readonly over: TableOrigin } | null>(null)
   const fieldRef = useRef<HTMLTextAreaElement>(null)
-  const optionsRef = useRef(options)
+  const timerRef = useRef<ReturnType<typeof setTimeout> | undefined>(undefined)
 
-  useEffect(() => {
-    optionsRef.current = options
-  }, [options])
   useEffect(() => {
     fieldRef.current?.focus()
   }, [])
-  useEffect(() => {
-    if (origin.kind !== 'text' || origin.text === text) return
-    const timer = setTimeout(() => void session.offerTable({ kind: 'text', text }, optionsRef.current), pause_ms)
-    return () => clearTimeout(timer)
-  }, [text, origin, session])
+
+  const type = (text: string): void => {
+    setDraft({ text, over: origin })
+    clearTimeout(timerRef.current)
+    timerRef.current = setTimeout(() => {
+      const { offer: current } = session.store.getState()
+      if (current !== null) void session.offerTable({ kind: 'text', text }, current.options)
+    }, pause_ms)
+  }
 
   if (origin.kind === 'file') {
     return (
@@ -70,7 +72,7 @@ function Source({ offer }: OfferProps) {
       title="Rate constants as pasted"
       note="A temperature and a rate constant on each line, with headings or without; from a spreadsheet, a paper or a file."
     >
-      <TextField className="paste-field" value={text} onChange={setText}>
+      <TextField className="paste-field" value={draft?.over === origin ? draft.text : origin.text} onChange={type}>
         <Label>Text of the table</Label>
         <TextArea ref={fieldRef} spellCheck={false} placeholder={'T (°C)\tk (1/s)\n25\t3.46e-5\n35\t1.35e-4'} />
       </TextField>
