@@ -12,6 +12,7 @@ import { createTaskTable } from '../host/task-table.ts'
 import { uploadToHost } from '../host/upload-to-host.ts'
 import { InputError, UsageError, type CliIo } from './cli-io.ts'
 import type { InputFile } from './expand-paths.ts'
+import { createLongWorkNotice } from './long-work-notice.ts'
 import type { ProgressLine } from './progress-line.ts'
 
 export interface AnalysisOrder {
@@ -46,7 +47,17 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
     shell: 'command-line',
     warn: (message) => io.stderr(`${message}\n`),
   })
+  const noticeOfDraws = createLongWorkNotice(
+    () => performance.now(),
+    (line) => {
+      progress.clear()
+      io.stderr(`${line}\n`)
+    },
+    'The draws of measured sources',
+    'Time grows with levels, methods and draws: fewer --levels, --methods or --draws take less.',
+  )
   const stop = host.subscribe((event) => {
+    if (event.kind === 'progress' && event.what === 'measured sources') noticeOfDraws(event)
     if (event.kind === 'progress')
       progress.show(`${event.work === 'import' ? 'Reading' : 'Working out'} ${event.done} of ${event.total}: ${event.what}`)
   })

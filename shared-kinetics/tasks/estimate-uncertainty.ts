@@ -49,6 +49,7 @@ export function estimateUncertainty(
     if (result.Ea.every(Number.isNaN)) return { method: info.id, intervals: resampled, budget: [], mean: null }
     const model = energyModel(series, result)
     models.push(model)
+    context.checkCancelled()
     const budget = budgetOf(model, sources)
     const entries = budgetEntries(budget, sources)
     const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget, entries)] : [])]

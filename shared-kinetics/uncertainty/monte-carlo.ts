@@ -13,8 +13,8 @@ export interface DrawRange {
   readonly to: number
 }
 
-/** Draws between two looks at whether anybody still wants them: a few milliseconds. */
-const drawsBetweenLooks = 10
+/** Draws between two reports of progress: a few milliseconds with a hundred levels. */
+const drawsBetweenReports = 10
 
 /**
  * Ea of every model at every level for draws of the errors that `sources` describes: one array a model, in J/mol, [(draw - from) · levels + level]; NaN where the level
@@ -46,10 +46,9 @@ export function drawEnergies(
   }
   const room = roomFor(runs)
   for (let draw = from; draw < to; draw++) {
-    if ((draw - from) % drawsBetweenLooks === 0) {
-      context.checkCancelled()
-      context.progress(draw - from, to - from)
-    }
+    // With thousands of levels one draw takes tens of milliseconds.
+    context.checkCancelled()
+    if ((draw - from) % drawsBetweenReports === 0) context.progress(draw - from, to - from)
     disturb(disturbance, sources, runs, levels, seed, draw)
     models.forEach((model, m) => {
       const values = energies[m] as Float64Array

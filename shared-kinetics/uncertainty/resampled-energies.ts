@@ -33,8 +33,18 @@ export function resampledEnergies(series: SeriesAtLevels, result: Isoconversiona
     }
   }
   const energies = energiesAtLevels(series, result)
-  return (times) => Float64Array.from(energies, (energyAt) => energyAt(times))
+  return (times) => {
+    const Ea = new Float64Array(energies.length)
+    energies.forEach((energyAt, level) => {
+      if (level % levelsBetweenLooks === 0) context.checkCancelled()
+      Ea[level] = energyAt(times)
+    })
+    return Ea
+  }
 }
+
+/** Some milliseconds of a minimising method. */
+const levelsBetweenLooks = 100
 
 type EnergyAtLevel = (times: ArrayLike<number>) => number
 
