@@ -66,8 +66,13 @@ export function Budget(props: ActivationProps) {
         {methodFacts(shown.profile, levelIndex).map((fact) => (
           <li key={fact}>{fact}</li>
         ))}
-        <li>Mean of Ea, combined interval: {shown.mean?.note ?? 'not worked out for these runs and this range.'}</li>
       </ul>
+      {shown.mean !== null && (
+        <details className="source">
+          <summary>How the combined interval of the mean is made</summary>
+          {shown.mean.note}
+        </details>
+      )}
       <div className="budget-foot">
         <TypedField label="Draws" text={String(settings.draws)} parse={parseDraws} onCommit={(draws) => set({ draws })} />
         <TypedField label="Seed" text={String(settings.seed)} parse={parseSeed} onCommit={(seed) => set({ seed })} />
