@@ -158,7 +158,7 @@ function temperatureExponentOf(series: SeriesAtLevels, method: LineMethodId, lin
   const [x] = line.x_per_K
   const [y] = line.y
   const [run] = series.runs
-  if (x === undefined || y === undefined || run?.programme.kind !== 'constant-heating-rate') return 0
+  if (x === undefined || y === undefined || Number.isNaN(Ea) || run?.programme.kind !== 'constant-heating-rate') return 0
   if (method === 'ofw-corrected') {
     // Its ordinate holds ln p(x) beyond Doyle's line, so that at a given Ea it goes with T as ln beta - ln p(x) does.
     const atMean = (Ea / gasConstant_J_per_mol_K) * (line.x_per_K.reduce((sum, value) => sum + value, 0) / line.x_per_K.length)
