@@ -56,7 +56,7 @@ export function createHost(options: HostOptions): Host {
   const open = async (): Promise<{ workspace: Workspace; handlers: HandlerTable; cancelAll: () => void }> => {
     const store = await openStore(options.dataFolder, randomId(), now, warn)
     const workspace = await createWorkspace({ store, events, randomId, warn })
-    const evaluation = createEvaluation(workspace, pool, events)
+    const evaluation = createEvaluation(workspace, pool, events, shell === 'command-line')
     const uncertainty = createUncertainty(workspace, pool, events)
     const context = { workspace, pool, uploads, events, evaluation, uncertainty, imports, parts, version, shell, randomId }
     const handlers = {

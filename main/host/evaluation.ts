@@ -11,7 +11,8 @@ export interface Evaluation {
   cancel(): void
 }
 
-export function createEvaluation(workspace: Workspace, pool: TaskPool, events: EventHub): Evaluation {
+/** @param withoutPhi - nobody will look at the curves of Phi(Ea) */
+export function createEvaluation(workspace: Workspace, pool: TaskPool, events: EventHub, withoutPhi: boolean): Evaluation {
   let current: { readonly revision: number; readonly result: Promise<StudyResult>; readonly stop: AbortController } | null = null
 
   const start = (revision: number): Promise<StudyResult> => {
@@ -20,7 +21,8 @@ export function createEvaluation(workspace: Workspace, pool: TaskPool, events: E
     const { document } = workspace.session
     const columns = new Map(document.runs.map((run) => [run.columnsKey, workspace.study.columns.get(run.columnsKey)]))
     const report = events.progressOf('evaluate')
-    const input = { study: { runs: document.runs, settings: document.settings, importNotes: document.importNotes }, columns }
+    const study = { runs: document.runs, settings: document.settings, importNotes: document.importNotes, withoutPhi }
+    const input = { study, columns }
     const result = pool.run('evaluate-study', input, {
       signal: stop.signal,
       progress: (done, total) => {

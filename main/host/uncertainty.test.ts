@@ -68,7 +68,7 @@ describe('the uncertainty of the open study', () => {
         .join('\n')
     expect(JSON.parse(await textOf('json', true))).toMatchObject({ uncertainty: { seed: 1, draws: 2000 } })
     expect(JSON.parse(await textOf('json', false))).toMatchObject({ uncertainty: null })
-    expect(await textOf('csv', true)).toContain('Thermal lag, 1 s times the heating rate, as stated')
+    expect(await textOf('csv', true)).toContain('Thermal lag, 1 s times the heating rate, assumed')
   })
 
   it.each([

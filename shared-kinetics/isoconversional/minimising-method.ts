@@ -4,6 +4,7 @@ import { vyazovkinWight } from '../uncertainty/vyazovkin-wight.ts'
 import { column } from '../units/quantity.ts'
 import { energyGrid, readBetween, type EnergyGrid } from './energy-grid.ts'
 import { phiAround, phiOverRange } from './phi-curve.ts'
+import { PhiLater } from './phi-later.ts'
 import { findPhiMinimum } from './phi-minimum.ts'
 import { resultColumns } from './result-columns.ts'
 import type { EnergyInterval, IntervalStatus, IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
@@ -42,13 +43,13 @@ export function minimisingMethod(
         const minimum = findPhiMinimum(integrals, grid, level, columns.t)
         if (typeof minimum === 'string') {
           columns.setStatus(level, minimum)
-          curves.push(phiOverRange(grid, level, integrals.length))
+          curves.push(new PhiLater(() => phiOverRange(grid, level, integrals.length)))
         } else {
           columns.setEnergy(level, minimum.Ea, minimum.standardError, minimum.r2)
           columns.setPoints(level, minimum.points)
           columns.result.systematicError[level] = 0
           varianceRatio?.set(level, minimum.Ea, integrals, grid)
-          curves.push(phiAround(grid, level, integrals.length, minimum, columns.t * minimum.standardError))
+          curves.push(new PhiLater(() => phiAround(grid, level, integrals.length, minimum, columns.t * minimum.standardError)))
         }
       }
       context.progress(level + 1, levels)

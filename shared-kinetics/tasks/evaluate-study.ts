@@ -45,7 +45,7 @@ export function evaluateStudy(
   const profiles = chosen.map((info) => {
     const result = resultOf(info)
     step()
-    return profileResult(info, result, settings.levels, settings.meanRange, groups)
+    return profileResult(info, result, settings.levels, settings.meanRange, groups, study.withoutPhi !== true)
   })
   const { kissinger, peakMethods, leftOut: kissingerLeftOut } = peakResultsOf(runs, signal)
   const result = {

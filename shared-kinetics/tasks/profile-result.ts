@@ -25,6 +25,7 @@ export function profileResult(
   levels: readonly number[],
   meanRange: readonly [number, number],
   programmeGroup: readonly number[],
+  withPhi = true,
 ): ProfileResult {
   const Ea_kJ_per_mol = maybes(kilojoules(result.Ea))
   return {
@@ -55,7 +56,7 @@ export function profileResult(
       slope_K: maybe(line.slope_K),
       intercept: maybe(line.intercept),
     })),
-    phi: result.phi.map((phi) => ({
+    phi: (withPhi ? result.phi : []).map((phi) => ({
       Ea_kJ_per_mol: kilojoules(phi.Ea_J_per_mol),
       phi: Array.from(phi.phi),
       phiMinimum: maybe(phi.phiMinimum),
