@@ -63,7 +63,7 @@ export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Bu
       const s = sensitivity(model, level, i)
       common += s.perKelvin
       ofRuns += s.perKelvin ** 2
-      lag += s.perKelvin * (model.heatingRate_K_per_s[k] as number)
+      lag += s.perLag
       heatingRate += (s.perLnHeatingRate * (heatingRate_share[i] as number)) ** 2
       const now = times(s.perSecond + times(s.perLnReactionRate, noise.lnReactionRateSlope_per_s[k]), noise.time_s[k])
       const before = times(s.perSecondBefore, noise.time_s[k - runs])
@@ -90,6 +90,8 @@ const times = (factor: number, value: number | undefined): number => (factor ===
 /** dEa of an error of one run at one level: by its temperature, the time of the level and of the level before, its ln beta and ln(dα/dt). */
 interface Sensitivity {
   readonly perKelvin: number
+  /** By the lag, in J/(mol s). */
+  readonly perLag: number
   readonly perSecond: number
   readonly perSecondBefore: number
   readonly perLnHeatingRate: number
@@ -105,9 +107,10 @@ function sensitivity(model: EnergyModel, level: number, run: number): Sensitivit
   if (form.kind === 'line') {
     const T = form.temperature_K[k] as number
     // y errs by -s dT/T, and x by -dT/T², which is as good as an error of +slope dT/T² in y.
-    const perKelvin = (gain * ((form.slope_K[level] as number) / T - (form.temperatureExponent[level] as number))) / T
+    const perKelvin = (gain * ((form.slope_K[level] as number) / T - (form.temperatureExponent[k] as number))) / T
     return {
       perKelvin,
+      perLag: perKelvin * (model.heatingRate_K_per_s[k] as number),
       perSecond: gain * (form.perSecond[k] as number) + perKelvin * (model.heatingRate_K_per_s[k] as number),
       perSecondBefore: 0,
       perLnHeatingRate: gain * (form.perLnHeatingRate + (model.timeIsRebuilt[run] === 1 ? form.perLnReactionRate : 0)),
@@ -117,6 +120,7 @@ function sensitivity(model: EnergyModel, level: number, run: number): Sensitivit
   const inverseT = form.inverseT[k] as number
   return {
     perKelvin: (gain * Ea * (inverseT ** 2 + (form.variance[k] as number))) / R,
+    perLag: gain * (form.perLag[k] as number),
     perSecond: gain * (form.perSecond[k] as number),
     perSecondBefore: -gain * (form.perSecondBefore[k] as number),
     perLnHeatingRate: form.holdsHeatingRate[k] === 1 ? -gain : 0,
