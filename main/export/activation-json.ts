@@ -8,6 +8,7 @@ import type {
   UncertaintyProfile,
   UncertaintyResult,
 } from '../../shared-kinetics/tasks/study-result.ts'
+import { intervalsNotGiven } from '../../shared-kinetics/tasks/intervals-not-given.ts'
 import { studentStatus } from '../../shared-kinetics/tasks/interval-status.ts'
 import { caution } from './caution.ts'
 
@@ -37,6 +38,7 @@ export function activationJson({ document, result, program, uncertainty }: Expor
     levels: result.levels,
     profiles: result.profiles.map((profile) => profileFields(profile, uncertaintyOf(profile, uncertainty))),
     uncertainty: uncertainty === undefined ? null : { seed: uncertainty.seed, draws: uncertainty.draws },
+    intervalsNotGiven: uncertainty === undefined ? [] : intervalsNotGiven(result.runs.map((run) => run.programmeGroup)),
     kissinger: result.kissinger,
     peakMethods: result.peakMethods,
     findings: result.findings.map((finding) => findingFields(finding, labelOf)),

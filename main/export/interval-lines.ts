@@ -2,6 +2,7 @@ import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
 import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
 import { intervalStatuses, type IntervalStatus } from '../../shared-kinetics/isoconversional/result.ts'
 import { intervalStatusWords, studentStatus } from '../../shared-kinetics/tasks/interval-status.ts'
+import { intervalsNotGiven } from '../../shared-kinetics/tasks/intervals-not-given.ts'
 import type {
   BudgetEntry,
   CombinedMean,
@@ -15,6 +16,9 @@ import { uncertaintyOf, type ExportSource } from './activation-json.ts'
 export function intervalLines({ result, uncertainty }: ExportSource): string[] {
   const lines = [
     'All intervals are pointwise: each holds for its level by itself, not for the whole curve at once',
+    ...(uncertainty === undefined ? [] : intervalsNotGiven(result.runs.map((run) => run.programmeGroup))).map(
+      ({ label, reason }) => `${label}: not given, ${reason}`,
+    ),
     ...result.profiles.flatMap((profile) => {
       const apart = uncertaintyOf(profile, uncertainty)
       return [

@@ -73,6 +73,13 @@ const source: ExportSource = { document: emptyStudy('study', 'A study'), result,
 const textOf = (from: ExportSource, format: ExportFormat, index = 0): string =>
   new TextDecoder().decode(exportResults(from, format)[index]?.bytes)
 
+/** The result with a run for each programme group. */
+const runsOf = (groups: readonly number[]): StudyResult => {
+  const [run] = result.runs
+  if (run === undefined) throw new Error('there is no run')
+  return { ...result, runs: groups.map((programmeGroup) => ({ ...run, programmeGroup })) }
+}
+
 describe('intervals in what is exported', () => {
   it('stand in the JSON of each profile, named by kind, with those made apart from the evaluation', () => {
     const json = JSON.parse(textOf({ ...source, uncertainty }, 'json')) as { profiles: ProfileResult[]; uncertainty: unknown }
@@ -175,5 +182,22 @@ describe('intervals in what is exported', () => {
       `Bootstrap over runs at conversion ${first} and ${second}: not to be had: more than 1 % of the resamples give no Ea`,
     )
     expect(textOf(source, 'csv', 1)).not.toContain('at conversion')
+  })
+
+  it('say which kinds there are none of, and what they need', () => {
+    const three = { ...source, result: runsOf([0, 0, 1, 1, 2, 2]), uncertainty }
+    expect(JSON.parse(textOf(three, 'json'))).toMatchObject({
+      intervalsNotGiven: [{ kind: 'bootstrap', reason: 'needs 4 distinct programmes, here 3' }],
+    })
+    expect(textOf(three, 'csv', 1)).toContain('Bootstrap over runs: not given, needs 4 distinct programmes, here 3')
+    const few = textOf({ ...source, result: runsOf([0, 1, 2]), uncertainty }, 'csv', 1)
+    expect(few).toContain('Jackknife over runs: not given, needs 4 runs, here 3')
+    expect(textOf({ ...three, result: runsOf([0, 0, 1, 2]) }, 'csv', 1)).toContain(
+      'leaving out a run would leave fewer than 3 distinct programmes',
+    )
+    expect(textOf({ ...three, result: runsOf([0, 1]) }, 'csv', 1)).toContain('combined: not given, needs 3 distinct programmes, here 2')
+    expect(textOf({ ...three, result: runsOf([0, 1, 2, 3]) }, 'csv', 1)).not.toContain('not given')
+    // Nothing was asked for: nothing is missing.
+    expect(textOf({ ...source, result: runsOf([0, 1, 2]) }, 'csv', 1)).not.toContain('not given')
   })
 })

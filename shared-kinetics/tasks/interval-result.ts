@@ -16,6 +16,9 @@ const kinds: Readonly<
   combined: { label: 'Scatter and measured sources combined', approximate: true, sources: ['jcgm-100-2008', 'abernethy-1985'] },
 }
 
+/** What a kind of interval is called. */
+export const labelOfInterval = (kind: IntervalKind): string => kinds[kind].label
+
 /** Columns of an interval in J/mol, as long as the levels; NaN where it is not to be had. */
 export interface IntervalColumns {
   readonly standardUncertainty: ArrayLike<number>

@@ -2,7 +2,7 @@ import { studentTQuantile } from '../numerics/student-t.ts'
 import { fewestProgrammes, programmesIn, type ResampledInterval } from './resamples.ts'
 
 /** Of fewer runs, deleting one leaves less than a line with an error. */
-const fewestRuns = 4
+export const fewestRuns = 4
 
 /** Each run left out once, the others taken once; null with fewer than four runs, or where fewer than three distinct programmes are left without some run. */
 export function deleteOne(programmeGroup: readonly number[]): readonly Uint8Array[] | null {
