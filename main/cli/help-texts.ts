@@ -64,10 +64,13 @@ activation.csv.txt beside it) and activation.svg into DIR; a short table appears
   --window SPEC               for all runs: 430K:870K, 156C:500C, or 10min:90min for holds
   --baseline WORD             under heat flow: ${baselineKinds.join(', ')}
   --uncertainty               also intervals by resampling the runs (jackknife, bootstrap) and from measured
-                              sources (draws, with a budget); for these, standard uncertainties:
+                              sources (draws, with a budget). For these, standard uncertainties; what is not
+                              stated is assumed, and 0 leaves it out:
   --temperature-common T      of all temperatures alike, 0.5K where nothing is stated
   --temperature-run T         of each run's temperatures, 0.5K
   --lag TIME                  of the time the sample lags behind the thermometer, 1s
+                              (--temperature-common and --lag widen every combined interval, assumed or
+                              stated: state what your calibration shows)
   --stated-heating-rate P     of a heating rate that was stated and not measured, 2%
   --draws N                   2000
   --seed N                    start of random numbers, 1

@@ -106,11 +106,32 @@ describe('heating-rate-differs-from-nominal', () => {
 
 const wandering = (share: number): Finding[] => heatingRateNotConstant(oneRun(reviewedRun('a', 10, 0, { heatingRateSpread: share })))
 
+const between = (share: number, halfInterval_kJ_per_mol: number, method: 'kas' | 'friedman' = 'kas'): Finding[] =>
+  heatingRateNotConstant(
+    reviewInput({
+      runs: [reviewedRun('a', 2, 0), reviewedRun('b', 20, 1, { heatingRateSpread: share })],
+      result: { profiles: [profileOf(method, [200, 200, 200], halfInterval_kJ_per_mol)] },
+    }),
+  )
+
 describe('heating-rate-not-constant', () => {
   it('fires beyond 5 %, not at it, nor where nothing was measured', () => {
     expect(shown(wandering(0.07))).toEqual(['note heating-rate-not-constant'])
     expect(wandering(0.05)).toEqual([])
     expect(wandering(Number.NaN)).toEqual([])
+  })
+
+  it('fires from 1 % on where the shift of Ea is more than a third of half the interval of a method of one heating rate', () => {
+    // 3 % over ln 10 is 1.30 %, of 200 kJ/mol 2.6 kJ/mol.
+    const [finding, ...more] = between(0.03, 7)
+    expect(more).toEqual([])
+    expect(finding?.run).toBe('b')
+    expect(finding?.evidence['halfInterval_percent']).toBeCloseTo(3.5, 9)
+    expect(finding?.evidence['EaShift_percent']).toBeCloseTo(1.303, 3)
+    expect(between(0.03, 8)).toEqual([])
+    // A ramp within 1 % is straight, however narrow the interval.
+    expect(between(0.01, 0.01)).toEqual([])
+    expect(between(0.03, 1, 'friedman')).toEqual([])
   })
 })
 

@@ -33,18 +33,22 @@ export function intervalsOfDraws(
       }
       const { levels } = model
       const note = noteOnDraws(sources, all.length / levels, seed)
-      const missing = (level: number): IntervalStatus => (isKnown(sources, model.runs, level) ? 'draws-without-energy' : 'source-unknown')
+      const missing = (level: number): IntervalStatus => (isKnown(sources, model, level) ? 'draws-without-energy' : 'source-unknown')
       return [model.method, intervalResult('measured-sources', drawInterval(all, levels), note, model.Ea, missing)]
     }),
   )
 }
 
-/** Whether a level, and the one before that an increment begins at, have the errors of all their times: from noise and, where there is a choice, from the other baseline. */
-const isKnown = ({ noise, baseline }: MeasuredSources, runs: number, level: number): boolean => {
-  const times = [noise.time_s, ...(baseline === null ? [] : [baseline.time_s])]
-  return times.every((time_s) => !time_s.subarray(Math.max(0, level - 1) * runs, (level + 1) * runs).some(Number.isNaN))
+/** Whether a level has the errors of all that the method uses there: times, also of the level before where an increment begins there, and reaction rates. */
+function isKnown({ noise, baseline }: MeasuredSources, { method, form, runs }: EnergyModel, level: number): boolean {
+  const shifts = [noise, ...(baseline === null ? [] : [baseline])]
+  const first = method === 'vyazovkin-incremental' ? Math.max(0, level - 1) : level
+  const known = (table: Float64Array, from: number): boolean => !table.subarray(from * runs, (level + 1) * runs).some(Number.isNaN)
+  const usesRate = form.kind === 'line' && form.perLnReactionRate !== 0
+  return shifts.every((shift) => known(shift.time_s, first) && (!usesRate || known(shift.lnReactionRate, level)))
 }
 
 const noteOnDraws = ({ baseline }: MeasuredSources, draws: number, seed: number): string =>
   `${draws} draws with seed ${seed} of the errors of temperature, heating rate and signal${baseline === null ? '' : ', and of the choice of baseline'}; ` +
-  '2.5 and 97.5 % points. Pointwise. Holds what is stated about the measurement, and nothing of the scatter that the runs show.'
+  '2.5 and 97.5 % points. Pointwise. Holds what is stated or assumed of the measurement (see the budget), and nothing of the scatter that the runs show.' +
+  (baseline === null || baseline.reason === null ? '' : ` Not to be had here: ${baseline.reason}`)

@@ -10,7 +10,7 @@ import type { GroupedRun } from './series-of-study.ts'
 import type { AnalysisSettings, BaselineKind } from './study-input.ts'
 
 /**
- * What the measured inputs of a series are uncertain by: what a person stated, the error of each heating rate (its own where it was measured), the noise found in
+ * What the measured inputs of a series are uncertain by: what a person stated, the error of each heating rate (where it was measured, that of its line and what it wanders by), the noise found in
  * each signal, and for heat flow by how much the other baseline would move each point, in the window that belongs to it.
  *
  * @param runs - in the order of the series
@@ -73,9 +73,15 @@ function baselineShift(
   return { ...shift, reason: null }
 }
 
-function heatingRateShare({ told: { programme } }: ConvertedRun, stated: StatedUncertainties): number {
+/**
+ * Relative standard uncertainty of a heating rate as the one rate of its run. A measured one errs by no less than it wanders: taken as evenly spread over what some eighth
+ * of the reaction is off, since rows that lie on a bent line tell its mean slope far better than any level sees it.
+ */
+function heatingRateShare({ told: { programme, heatingRateSpread } }: ConvertedRun, stated: StatedUncertainties): number {
   if (programme.kind !== 'constant-heating-rate') return 0
-  return programme.source === 'measured' ? programme.standardError / programme.heatingRate : stated.statedHeatingRate_share
+  if (programme.source !== 'measured') return stated.statedHeatingRate_share
+  const ofLine = programme.standardError / programme.heatingRate
+  return heatingRateSpread > 0 ? Math.max(ofLine, heatingRateSpread / Math.sqrt(3)) : ofLine
 }
 
 /** The other admissible baseline; null for signals without one, and for holds, which have one only. */

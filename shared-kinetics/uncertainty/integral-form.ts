@@ -120,11 +120,12 @@ export function integralForm(
 const startInverseT = ({ temperature_K, history }: RunAtLevels, level: number, fromLevel: boolean): number =>
   1 / ((fromLevel ? temperature_K[level - 1] : history.temperature_K[0]) ?? Number.NaN)
 
+const empty = (length: number): Float64Array => new Float64Array(length).fill(Number.NaN)
+
 function tableOf(series: SeriesAtLevels, integrals: readonly TimeIntegral[], isIncremental: boolean): IntegralTable {
   const runs = series.runs.length
   const levels = series.levels.length
   const places = tableEnergies.length
-  const empty = (length: number): Float64Array => new Float64Array(length).fill(Number.NaN)
   const table = {
     lnJ: empty(levels * places * runs),
     inverseT: empty(levels * places * runs),
