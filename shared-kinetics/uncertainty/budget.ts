@@ -1,5 +1,6 @@
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column, type Column } from '../units/quantity.ts'
+import { disturbedEnergy, roomFor } from './disturbed-energy.ts'
 import type { EnergyModel } from './energy-model.ts'
 import type { MeasuredSources, UncertaintySource } from './measured-sources.ts'
 
@@ -25,7 +26,8 @@ export const shownByScatter: Readonly<Record<UncertaintySource, boolean>> = {
  *
  *   u² = Σ (cᵢ ∂yᵢ/∂q)² u(q)²   where runs err independently,   u = |Σ cᵢ ∂yᵢ/∂q| u(q)   where they err together.
  *
- * The choice of baseline counts as an even distribution between one baseline and the mirror image of the other, u = (difference)/√3. First order: a Monte Carlo of the
+ * The choice of baseline counts as an even distribution between one baseline and the mirror image of the other, u = (difference)/√3, where the difference is that of the Ea
+ * with the other baseline, whose shifts of single runs can be as large as those between heating rates. All else is of first order: a Monte Carlo of the
  * same sources agrees within a few per cent as long as the interval is no more than some 20 % of Ea.
  *
  * @source jcgm-100-2008 5.1, 5.2
@@ -50,6 +52,9 @@ export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Bu
     baseline: empty(),
   }
   const { stated, noise, baseline, heatingRate_share } = sources
+  const room = roomFor(runs)
+  const otherBaseline =
+    baseline === null ? null : { ...baseline, temperature_K: new Float64Array(runs), lnHeatingRate: new Float64Array(runs), lag_s: 0 }
   for (let level = 0; level < levels; level++) {
     if (Number.isNaN(model.Ea[level] ?? Number.NaN)) continue
     let common = 0
@@ -57,7 +62,6 @@ export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Bu
     let lag = 0
     let heatingRate = 0
     let ofNoise = 0
-    let ofBaseline = 0
     for (let i = 0; i < runs; i++) {
       const k = level * runs + i
       const s = sensitivity(model, level, i)
@@ -69,17 +73,14 @@ export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Bu
       const before = times(s.perSecondBefore, noise.time_s[k - runs])
       ofNoise += now ** 2 + before ** 2 + 2 * times(now * before, noise.correlationWithBefore[k])
       ofNoise += times(s.perLnReactionRate, noise.lnReactionRate[k]) ** 2
-      if (baseline !== null) {
-        ofBaseline += times(s.perSecond, baseline.time_s[k]) + times(s.perLnReactionRate, baseline.lnReactionRate[k])
-        ofBaseline += times(s.perSecondBefore, baseline.time_s[k - runs])
-      }
     }
     budget['temperature-common'][level] = common * stated.temperatureCommon_K
     budget['temperature-run'][level] = Math.sqrt(ofRuns) * stated.temperatureRun_K
     budget['temperature-lag'][level] = lag * stated.lag_s
     budget['heating-rate'][level] = Math.sqrt(heatingRate)
     budget['signal-noise'][level] = Math.sqrt(Math.max(0, ofNoise))
-    budget.baseline[level] = ofBaseline / Math.sqrt(3)
+    const Ea = model.Ea[level] as number
+    budget.baseline[level] = otherBaseline === null ? 0 : (disturbedEnergy(model, level, otherBaseline, room) - Ea) / Math.sqrt(3)
   }
   return budget
 }

@@ -75,6 +75,9 @@ export function energyOnHistories(
   const integrate = (e: number): void => {
     integrateByTable(model, form, table, level, disturbance, Ea + R * e, lnJ, u)
   }
+  integrate(0)
+  // An error that cannot be told leaves no answer, wherever it is looked for.
+  if (lnJ.some(Number.isNaN)) return Number.NaN
   const near = R * rootOf(integrate, lnJ, u, Ea)
   return Math.abs(near) <= looksAgain * Ea ? Ea + near : lowestMinimum(integrate, lnJ, u, Ea)
 }
