@@ -20,6 +20,7 @@ export function constantRateIntegral(heatingRate: Quantity<'K/s'>, temperature_K
   return {
     reaches,
     atLevel,
+    passes: (level) => [0, temperature_K[level] ?? Number.NaN],
     atAllLevels(Ea, lnJ, inverseT) {
       // What `atLevel` gives, without an object for each level.
       const perEa = gasConstant_J_per_mol_K / Ea

@@ -16,6 +16,9 @@ export const energies: Float64Array = Float64Array.from({ length: steps + 1 }, (
   g === steps ? largestEa : smallestEa * (largestEa / smallestEa) ** (g / steps),
 )
 
+/** The grid point at or next below an Ea. */
+export const gridPointBelow = (Ea: number): number => Math.min(steps - 1, Math.max(0, Math.floor(stepsPerLog * Math.log(Ea / smallestEa))))
+
 /** ln J and effective 1/T of every run at every level over the grid: one column a run, one row of levels after the other, one row a grid point. Read by the functions below. */
 export interface EnergyGrid {
   readonly levels: number
@@ -55,8 +58,7 @@ export function readGrid(grid: EnergyGrid, g: number, level: number, lnJ: Float6
  * for all runs and cancels in Phi, and the effective 1/T that is the cubic's slope. For drawing and to start a search from, never for a result.
  */
 export function readBetween(grid: EnergyGrid, Ea: number, level: number, lnJ: Float64Array, inverseT: Float64Array): void {
-  const place = stepsPerLog * Math.log(Ea / smallestEa)
-  const g = Math.min(steps - 1, Math.max(0, Math.floor(place)))
+  const g = gridPointBelow(Ea)
   const lower = energies[g] as number
   const width = (energies[g + 1] as number) - lower
   const s = (Ea - lower) / width

@@ -1,14 +1,16 @@
 import { fQuantile } from '../numerics/f-distribution.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
+import { logIntegralTable } from '../uncertainty/log-integral-table.ts'
 import { vyazovkinWight } from '../uncertainty/vyazovkin-wight.ts'
 import { column } from '../units/quantity.ts'
-import { energyGrid, readBetween, type EnergyGrid } from './energy-grid.ts'
-import { phiAround, phiOverRange } from './phi-curve.ts'
+import { energies, energyGrid, gridPointBelow, readBetween, type EnergyGrid } from './energy-grid.ts'
+import { phiAround, phiOverRange, type ReadIntegrals } from './phi-curve.ts'
 import { PhiLater } from './phi-later.ts'
 import { findPhiMinimum } from './phi-minimum.ts'
 import { resultColumns } from './result-columns.ts'
 import type { EnergyInterval, IntervalStatus, IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
 import { checkSeries, countProgrammes } from './series-check.ts'
+import { scanInOrder, scanOverGrid, type SlopeScan } from './slope-scan.ts'
 import type { TimeIntegral } from './time-integral.ts'
 
 /**
@@ -32,24 +34,42 @@ export function minimisingMethod(
     const programmes = countProgrammes(series)
     const enough = programmes >= 2
     const varianceRatio = programmes >= 3 ? varianceRatioIntervals(series.runs.length, levels) : null
-    const grid = enough ? energyGrid(integrals, levels, context) : null
+    // Of J at every grid point only where the runs are no ramps in one order.
+    let grid: EnergyGrid | null = null
+    let near = energies.length >> 1
+    const scanAt = (level: number): SlopeScan | null => {
+      const scan = scanInOrder(integrals, level, near)
+      if (scan !== null) return scan
+      grid ??= energyGrid(integrals, levels, context)
+      return scanOverGrid(grid, level, integrals.length)
+    }
+    const readAt = (level: number): ReadIntegrals => {
+      const over = grid
+      return over === null
+        ? logIntegralTable(integrals, level)
+        : (Ea, lnJ, inverseT) => {
+            readBetween(over, Ea, level, lnJ, inverseT)
+          }
+    }
     for (let level = 0; level < levels; level++) {
       context.checkCancelled()
-      if (grid === null) curves.push(noCurve)
+      if (!enough) curves.push(noCurve)
       else if (!integrals.every((integral) => integral.reaches(level))) {
         columns.setStatus(level, 'level-not-reached')
         curves.push(noCurve)
       } else {
-        const minimum = findPhiMinimum(integrals, grid, level, columns.t)
+        const minimum = findPhiMinimum(integrals, scanAt(level), level, columns.t)
+        const read = readAt(level)
         if (typeof minimum === 'string') {
           columns.setStatus(level, minimum)
-          curves.push(new PhiLater(() => phiOverRange(grid, level, integrals.length)))
+          curves.push(new PhiLater(() => phiOverRange(read, integrals.length)))
         } else {
           columns.setEnergy(level, minimum.Ea, minimum.standardError, minimum.r2)
           columns.setPoints(level, minimum.points)
           columns.result.systematicError[level] = 0
-          varianceRatio?.set(level, minimum.Ea, integrals, grid)
-          curves.push(new PhiLater(() => phiAround(grid, level, integrals.length, minimum, columns.t * minimum.standardError)))
+          near = gridPointBelow(minimum.Ea)
+          varianceRatio?.set(level, minimum.Ea, integrals, read)
+          curves.push(new PhiLater(() => phiAround(read, integrals.length, minimum, columns.t * minimum.standardError)))
         }
       }
       context.progress(level + 1, levels)
@@ -64,7 +84,7 @@ function varianceRatioIntervals(
   levels: number,
 ): {
   readonly interval: EnergyInterval
-  readonly set: (level: number, Ea: number, integrals: readonly TimeIntegral[], grid: EnergyGrid) => void
+  readonly set: (level: number, Ea: number, integrals: readonly TimeIntegral[], nearly: ReadIntegrals) => void
 } {
   const lower95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
   const upper95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
@@ -72,7 +92,7 @@ function varianceRatioIntervals(
   const quantile = fQuantile(0.95, runs - 1, runs - 1)
   return {
     interval: { kind: 'vyazovkin-wight-f', lower95, upper95, status },
-    set(level, Ea, integrals, grid) {
+    set(level, Ea, integrals, nearly) {
       const read = (energy: number, lnJ: Float64Array, inverseT: Float64Array): void => {
         integrals.forEach((integral, i) => {
           const value = integral.atLevel(energy, level)
@@ -80,9 +100,7 @@ function varianceRatioIntervals(
           inverseT[i] = value.inverseT
         })
       }
-      const ends = vyazovkinWight(runs, Ea, quantile, read, (energy, lnJ, inverseT) => {
-        readBetween(grid, energy, level, lnJ, inverseT)
-      })
+      const ends = vyazovkinWight(runs, Ea, quantile, read, nearly)
       lower95[level] = ends.lower95
       upper95[level] = ends.upper95
       status[level] = ends.status

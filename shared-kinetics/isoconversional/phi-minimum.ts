@@ -1,9 +1,10 @@
 import { bracketedRoot, type RootOptions } from '../numerics/root.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
-import { energies, readGrid, type EnergyGrid } from './energy-grid.ts'
+import { energies } from './energy-grid.ts'
 import { phi, phiSlope } from './phi.ts'
 import type { LevelPoints, LevelStatus } from './result.ts'
+import { sameTemperature, type SlopeScan } from './slope-scan.ts'
 import type { TimeIntegral } from './time-integral.ts'
 
 /** A minimum of Phi at one level, with what is read from the integrals there. */
@@ -19,9 +20,6 @@ export interface PhiMinimum {
   readonly flat: boolean
 }
 
-/** Effective temperatures that differ by less than this share are one temperature. */
-const sameTemperature = 1e-9
-
 /** Without an interval, a minimum whose Phi is within this factor of the lowest might be the one meant: the J then differ by as much as an error of some K explains. */
 const mightBeMeant = 1.1
 
@@ -29,24 +27,17 @@ const mightBeMeant = 1.1
  * The minimum of Phi at a level, or why there is none: the root of dPhi/dEa, whose sign is scanned over the grid, inside the bracket of two grid points. Serves any
  * kind of integral, from zero or from level to level.
  *
- * @param grid - of the same integrals
+ * @param scan - of the same integrals at this level; null: `minimum-flat`
  * @param t - quantile of Student's t for the interval, NaN without one
  */
 export function findPhiMinimum(
   integrals: readonly TimeIntegral[],
-  grid: EnergyGrid,
+  scan: SlopeScan | null,
   level: number,
   t: number,
 ): PhiMinimum | Exclude<LevelStatus, 'ok'> {
-  const lnJ = new Float64Array(integrals.length)
-  const inverseT = new Float64Array(integrals.length)
-  const slopes = signsOfSlope(grid, level, lnJ, inverseT)
-  if (slopes === null) return 'minimum-flat'
-
-  const slopeAt = (g: number): number => {
-    readGrid(grid, g, level, lnJ, inverseT)
-    return phiSlope(lnJ, inverseT)
-  }
+  if (scan === null) return 'minimum-flat'
+  const { signs: slopes, slopeAt, phiAt } = scan
   const minima: PhiMinimum[] = []
   for (let g = 1; g < energies.length; g++) {
     if ((slopes[g - 1] as number) < 0 && (slopes[g] as number) >= 0) {
@@ -58,64 +49,12 @@ export function findPhiMinimum(
   const [lowest, ...others] = minima
   if (lowest === undefined) return 'minimum-at-bound'
 
-  const phiAt = (g: number): number => {
-    readGrid(grid, g, level, lnJ, inverseT)
-    return phi(lnJ)
-  }
   const last = energies.length - 1
   const atBounds = [...((slopes[0] as number) > 0 ? [phiAt(0)] : []), ...((slopes[last] as number) < 0 ? [phiAt(last)] : [])]
   if (atBounds.some((value) => value < lowest.phiMinimum)) return 'minimum-at-bound'
   const limit = Number.isNaN(lowest.phiThreshold) ? mightBeMeant * lowest.phiMinimum : lowest.phiThreshold
   if (others.some((other) => other.phiMinimum <= limit) || atBounds.some((value) => value <= lowest.phiThreshold)) return 'several-minima'
   return lowest.flat ? 'minimum-flat' : lowest
-}
-
-/** ln J that differ by less are told apart by the slope itself. */
-const clearlyApart = 1e-6
-
-/**
- * A number of the sign of dPhi/dEa at each grid point; null where the effective temperatures are one temperature throughout. Where the runs stand in one order by ln J
- * and by the effective 1/T, or in opposite orders, every term of dPhi/dEa has the same sign, and no exponential is needed to tell it: so it is away from the minima.
- */
-function signsOfSlope(grid: EnergyGrid, level: number, lnJ: Float64Array, inverseT: Float64Array): Float64Array | null {
-  const n = lnJ.length
-  const signs = new Float64Array(energies.length)
-  let alike = true
-  for (let g = 0; g < energies.length; g++) {
-    readGrid(grid, g, level, lnJ, inverseT)
-    sortTogether(inverseT, lnJ)
-    const coolest = inverseT[n - 1] as number
-    const hottest = inverseT[0] as number
-    alike &&= (coolest - hottest) / coolest < sameTemperature
-    const order = coolest > hottest ? orderOf(lnJ) : 0
-    signs[g] = order === 0 ? phiSlope(lnJ, inverseT) : -order
-  }
-  return alike ? null : signs
-}
-
-/** 1 where the values ascend, -1 where they descend, 0 where they do neither or lie too close to tell. */
-function orderOf(values: Float64Array): number {
-  const first = values[0] as number
-  const last = values[values.length - 1] as number
-  if (Math.abs(last - first) <= clearlyApart) return 0
-  const order = last > first ? 1 : -1
-  for (let i = 1; i < values.length; i++) if (((values[i] as number) - (values[i - 1] as number)) * order < 0) return 0
-  return order
-}
-
-/** Sorts the first column in ascending order, and the other with it. Few runs, nearly always in order already. */
-function sortTogether(keys: Float64Array, values: Float64Array): void {
-  for (let i = 1; i < keys.length; i++) {
-    const key = keys[i] as number
-    const value = values[i] as number
-    let to = i
-    for (; to > 0 && (keys[to - 1] as number) > key; to--) {
-      keys[to] = keys[to - 1] as number
-      values[to] = values[to - 1] as number
-    }
-    keys[to] = key
-    values[to] = value
-  }
 }
 
 function minimumBetween(

@@ -67,9 +67,12 @@ function rampSegments(run: RunAtLevels, first: TimeIntegral): TimeIntegral {
       inverseT: (upper.inverseT - share * lower.inverseT) / (1 - share),
     }
   }
-  return withAllLevels(temperature_K.length, atLevel, (level) =>
-    level === 0 ? first.reaches(0) : temperatureAt(level) > 0 && temperatureAt(level - 1) > 0 && (duration[level] ?? Number.NaN) > 0,
-  )
+  const reaches = (level: number): boolean =>
+    level === 0 ? first.reaches(0) : temperatureAt(level) > 0 && temperatureAt(level - 1) > 0 && (duration[level] ?? Number.NaN) > 0
+  return {
+    ...withAllLevels(temperature_K.length, atLevel, reaches),
+    passes: (level) => [level === 0 ? 0 : temperatureAt(level - 1), temperatureAt(level)],
+  }
 }
 
 /** ln of the mean of exp(-Ea/RT) over the temperatures between two, and the mean of 1/T with that weight. */

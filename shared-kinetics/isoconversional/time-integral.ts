@@ -20,6 +20,8 @@ export interface TimeIntegral {
   readonly atLevel: (Ea: number, level: number) => IntegralValue
   /** At all levels in one pass; entries of levels not reached are left as they are. */
   readonly atAllLevels: (Ea: number, lnJ: Float64Array, inverseT: Float64Array) => void
+  /** The two ends of the temperatures that are passed at one heating rate up to the level, in K, where it is one rate; 0 for an integral from zero. */
+  readonly passes?: (level: number) => readonly [number, number]
 }
 
 /** A local heating rate within this share of the fitted one is that of a straight ramp, noise of the temperature apart. */
