@@ -11,6 +11,8 @@ import type { ConversionCurve } from './smooth-curve.ts'
 
 const levels = [0.05, 0.1, 0.3, 0.5, 0.7, 0.9, 0.95]
 const replicates = 150
+/** What is told is looked at in so many of them. */
+const toldOf = 25
 
 const logistic = (t: number): number => 1 / (1 + Math.exp(-(t - 300) / 20))
 
@@ -44,10 +46,13 @@ function ratios(
     })
     const curve = curveOf(time, temperature, noisy)
     const read = readAtLevels(curve, levels)
-    const at = noiseAtLevels(curve, levels, read)
     rows.forEach((row, i) => {
       row.time.push(read.time_s[i] ?? Number.NaN)
       row.lnRate.push(Math.log(read.reactionRate_per_s[i] ?? Number.NaN))
+    })
+    if (k >= toldOf) continue
+    const at = noiseAtLevels(curve, levels, read, 'sought')
+    rows.forEach((row, i) => {
       row.toldTime.push(at.time_s[i] ?? Number.NaN)
       row.toldRate.push(
         Math.hypot(at.lnReactionRate[i] ?? Number.NaN, (at.lnReactionRateSlope_per_s[i] ?? Number.NaN) * (at.time_s[i] ?? Number.NaN)),
@@ -98,11 +103,18 @@ describe('what noise leaves in the conversion under a baseline drawn through the
     ['straight', 180, 420, 0],
     ['straight', 100, 500, 0],
     ['area-proportional', 180, 420, 0],
+    ['area-proportional', 100, 500, 0],
     ['area-proportional', 0, 900, 0],
     // As a filter leaves it, whose time constant is ten rows.
     ['straight', 0, 700, 0.9],
   ] as const)('is what noisy repetitions show: %s from %i to %i s, autocorrelation %f', (kind, from, to, autocorrelation) => {
     expect(unlike(ratios(from, to, (t) => peak(t) + drift(t), curveUnder(kind), 0.01, autocorrelation))).toEqual([])
+  })
+
+  it('is told to half of what it is where a filter has spread it and tangents are sought in it', () => {
+    const { time } = ratios(0, 700, (t) => peak(t) + drift(t), curveUnder('area-proportional'), 0.01, 0.9)
+    expect(Math.max(...time)).toBeLessThan(2)
+    expect(Math.min(...time)).toBeGreaterThan(0.7)
   })
 
   it('is what noisy repetitions show of a hold, levelled at its end', () => {

@@ -22,8 +22,8 @@ const places = 400
  *
  *   δα(t) = h (F(t) - q F(end)),   F = ∫(ε - Σ w δL)/h dt,   q = ∫dα/h up to t over that up to the end.
  *
- * A line is the least-squares line through its rows, whose mean and slope err independently and go with the noise of the same rows in F. That noise also moves the
- * stretches which tangents are laid through is not held: of a weak peak in a window a few widths long the errors can be twice as large.
+ * A line is the least-squares line through its rows, whose mean and slope err independently and go with the noise of the same rows in F. That noise also decides
+ * which stretches tangents are laid through is not held: in a window a few widths of the peak long the errors can be twice as large (`stretchNoise`).
  *
  * @param curve - of a rate; `drawn` tells its baseline, null the signal's own zero
  */

@@ -4,7 +4,7 @@ import { areaProportionalBaseline, fitTangent, straightBaseline, tangentAt } fro
 import { cellMeans } from '../signal/cell-means.ts'
 import { lowerBound } from '../signal/lower-bound.ts'
 import { noiseOf } from '../signal/noise.ts'
-import { findQuietEnds, lowestPeak, type QuietEnds } from '../signal/quiet-ends.ts'
+import { findQuietEnds, lowestPeak, type QuietStretch } from '../signal/quiet-ends.ts'
 import type { Column } from '../units/quantity.ts'
 import type { Converted, HeatFlowBaseline } from './converted.ts'
 import { fromPartialArea } from './partial-area.ts'
@@ -80,6 +80,8 @@ function cutPeak(label: string, standing: number): KineticsError {
   )
 }
 
+type Stretch = Pick<QuietStretch, 'inner' | 'outer'>
+
 const excursionCells = 200
 /** Part of a hold, at its end, over which its drift is read. */
 const lastPart = 0.2
@@ -115,7 +117,12 @@ function areaProportional(time: Float64Array, heatFlow: Float64Array, lines: rea
   )
 }
 
-function tangents(time: Float64Array, heatFlow: Float64Array, { before, after }: QuietEnds): readonly BaselineLine[] {
+/** The lines before and after a peak: through the straight stretches, and level through the outermost part of an end without one. */
+export function tangents(
+  time: Float64Array,
+  heatFlow: Float64Array,
+  { before, after }: { readonly before: Stretch | null; readonly after: Stretch | null },
+): readonly BaselineLine[] {
   return [
     before === null ? levelAt(time, heatFlow, 'start') : lineThrough(time, heatFlow, 'start', before.outer, before.inner),
     after === null ? levelAt(time, heatFlow, 'end') : lineThrough(time, heatFlow, 'end', after.inner, after.outer),

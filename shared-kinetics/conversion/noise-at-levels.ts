@@ -5,6 +5,7 @@ import { smoothedCorrelation } from '../signal/smoothing-kernel.ts'
 import { valueAt } from '../series/value-at.ts'
 import { column, type Column } from '../units/quantity.ts'
 import type { LevelsRead } from './levels.ts'
+import { stretchNoise } from './stretch-noise.ts'
 import { fewestPoints, type ConversionCurve } from './smooth-curve.ts'
 
 /** What the noise of the signal leaves in the values read at the levels: standard errors, NaN where a level is not reached. */
@@ -29,9 +30,15 @@ export interface NoiseAtLevels {
  * The error of the time is that of α over dα/dt. The noise is the one found in the data (`ConversionCurve.noise`). Where a filter has spread it over neighbouring rows, σ² is
  * that which means of many rows have, times their number (`spreadNoise`); a smoothed value is no worse than a single row.
  *
+ * @param stretches - `sought`: holds that noise decides which stretches tangents are laid through, too (`stretchNoise`), which takes some 20 ms
  * @source cleveland-1979
  */
-export function noiseAtLevels(curve: ConversionCurve, levels: ArrayLike<number>, read: LevelsRead): NoiseAtLevels {
+export function noiseAtLevels(
+  curve: ConversionCurve,
+  levels: ArrayLike<number>,
+  read: LevelsRead,
+  stretches: 'held' | 'sought' = 'held',
+): NoiseAtLevels {
   const { time_s, smoothing, noise, measured } = curve
   const n = levels.length
   const isExtent = measured.kind === 'extent'
@@ -59,14 +66,16 @@ export function noiseAtLevels(curve: ConversionCurve, levels: ArrayLike<number>,
       : ofArea * area.covariance(from, to)
   }
   const rateAt = (time: number): number => valueAt(time_s, curve.reactionRate_per_s, Math.min(end, Math.max(start, time)))
+  const factors = stretches === 'sought' && !isExtent ? stretchNoise(curve, read.time_s, perRow) : null
   for (let i = 0; i < n; i++) {
+    const factor = factors?.[i] ?? 1
     const at = read.time_s[i] ?? Number.NaN
     const rate = read.reactionRate_per_s[i] ?? Number.NaN
     if (Number.isNaN(at) || !(rate > 0)) continue
     const variance = covariance(i, i)
-    time[i] = Math.sqrt(Math.max(0, variance)) / rate
+    time[i] = (factor * Math.sqrt(Math.max(0, variance))) / rate
     slope[i] = (rateAt(at + halfWidth) - rateAt(at - halfWidth)) / (2 * halfWidth * rate)
-    lnReactionRate[i] = Math.sqrt(area === null ? slopesVariance : smoothedVariance + ofArea * area.rateVariance(at)) / rate
+    lnReactionRate[i] = Math.sqrt(area === null ? slopesVariance : smoothedVariance + factor ** 2 * ofArea * area.rateVariance(at)) / rate
     if (Number.isNaN(read.time_s[i - 1] ?? Number.NaN)) continue
     correlationWithBefore[i] = correlationOf(covariance(i - 1, i), variance, covariance(i - 1, i - 1))
   }

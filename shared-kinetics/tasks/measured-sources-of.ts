@@ -32,7 +32,8 @@ export function measuredSourcesOf(
     correlationWithBefore: table(),
   }
   runs.forEach((run, i) => {
-    const at = noiseAtLevels(run.converted.converted.curve, settings.levels, run.levels)
+    context.checkCancelled()
+    const at = noiseAtLevels(run.converted.converted.curve, settings.levels, run.levels, 'sought')
     for (let level = 0; level < levels; level++) {
       const k = level * runs.length + i
       noise.time_s[k] = at.time_s[level] ?? Number.NaN
