@@ -17,6 +17,9 @@ async function hostWithDemo(): Promise<{ readonly host: Host; readonly revision:
   return { host, revision }
 }
 
+const common = (of: UncertaintyResult): number =>
+  of.profiles[0]?.budget.find((entry) => entry.source === 'temperature-common')?.standardUncertainty_kJ_per_mol[5] ?? Number.NaN
+
 describe('the uncertainty of the open study', () => {
   it('has every kind of interval and a budget for each method', async () => {
     const { host, revision } = await hostWithDemo()
@@ -43,8 +46,6 @@ describe('the uncertainty of the open study', () => {
     expect(changed.undo).toBe('stated uncertainties')
     const { result } = await host.call('study.uncertainty', { revision: changed.revision })
     expect(result.draws).toBe(500)
-    const common = (of: UncertaintyResult): number =>
-      of.profiles[0]?.budget.find((entry) => entry.source === 'temperature-common')?.standardUncertainty_kJ_per_mol[5] ?? Number.NaN
     expect(common(result) / common(first.result)).toBeCloseTo(10, 6)
     await expect(host.call('study.uncertainty', { revision })).rejects.toMatchObject({ code: 'revision-conflict' })
   })
