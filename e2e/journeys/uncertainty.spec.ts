@@ -85,6 +85,21 @@ test('where the uncertainty comes from is shown at the level, changed, undone, c
   await expect(page.getByText(/^Saved .*, with every kind of interval\.$/)).toBeVisible()
 })
 
+test('a budget copied right after a change waits for the numbers that belong to it', async ({ sheet, page }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  await sheet.option('Evidence', 'Where the uncertainty comes from').click()
+  await expect.poll(() => u(sheet, 'Thermal lag')).toBeGreaterThan(0)
+  await page.evaluate(() => navigator.clipboard.writeText(''))
+  const field = page.getByRole('textbox', { name: 'Stated: thermal lag' })
+  await field.fill('0 s')
+  await field.press('Enter')
+  await page.getByRole('button', { name: 'Copy budget' }).click()
+  const clipboard = async (): Promise<string> => page.evaluate(() => navigator.clipboard.readText())
+  await expect.poll(clipboard).not.toBe('')
+  expect(await clipboard()).toMatch(/Thermal lag\t0 s [^\t]*\t0\.000\t/)
+})
+
 test('three runs are too few for resampling, and the sheet says so', async ({ sheet, page, folder }) => {
   const files = demoSeries().files.slice(0, 3)
   for (const { fileName, bytes } of files) writeFileSync(join(folder, fileName), bytes)

@@ -2,6 +2,7 @@ import { emptyTable } from '../stages/runs/rate-constant-edits.ts'
 import { runCopyColumns, runRows } from '../stages/runs/run-rows.ts'
 import { levelCopyColumns, levelRows } from '../stages/activation/level-rows.ts'
 import { peakCopyColumns } from '../stages/activation/peak-rows.ts'
+import { areLevelsBehind } from '../stages/activation/levels-behind.ts'
 import { intervalsOf } from '../stages/activation/shown-interval.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
 import { levelQuantity } from '../sheet/at-level.ts'
@@ -9,6 +10,7 @@ import { copyText } from '../sheet/data-table.ts'
 import { nearestLevel } from '../sheet/nearest-level.ts'
 import type { Services } from '../state/services.ts'
 import type { OpenRequest } from '../state/study-session.ts'
+import { isStale } from '../state/study-state.ts'
 import { chosenAmong, comparedAmong } from '../state/view-store.ts'
 import { copyToClipboard, download } from './files-out.ts'
 import { rateConstantTables, showsRateConstants } from './rate-constant-study.ts'
@@ -51,6 +53,13 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
   }
 
   async function copyTable(): Promise<void> {
+    if (isTableBehind({ session, view })) {
+      session.say(
+        'failure',
+        'Nothing was copied: the numbers on show are for the study before the last change. Copy them when they are worked out again.',
+      )
+      return
+    }
     const text = tableOfStage({ session, view })
     if (text === null) session.say('failure', 'There is no table to copy yet.')
     else await copyOut(text)
@@ -89,6 +98,19 @@ export function createSheetActions({ session, view }: Services, openFileDialog: 
       else session.say('failure', `The picture could not be copied: ${failure}`)
     },
   }
+}
+
+/** Whether the table of the stage that is shown holds numbers of another state of the study than its settings. */
+function isTableBehind({ session, view }: Services): boolean {
+  const state = session.store.getState()
+  const { stage, chosenMethod, comparedMethods, interval, beneath } = view.getState()
+  const result = state.evaluated?.result
+  if (state.replica === null || result === undefined || showsRateConstants(state.replica, view.getState())) return false
+  if (stage === 'runs' || beneath === 'peaks') return isStale(state)
+  const available = result.profiles.map((profile) => profile.method)
+  const chosen = chosenAmong(available, chosenMethod)
+  const methods = chosen === null ? [] : [chosen, ...comparedAmong(available, comparedMethods, chosen)]
+  return areLevelsBehind(state, methods, intervalsOf(result, state.uncertain, interval))
 }
 
 /** The table of the stage that is shown, as tab-separated text. */

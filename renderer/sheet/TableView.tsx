@@ -12,7 +12,8 @@ export function TableView({
   children,
 }: {
   readonly label: string
-  readonly copied: () => string
+  /** null while what is on show must not leave the sheet. */
+  readonly copied: () => string | null
   /** Changes when another row becomes the current one. */
   readonly currentRow: number | null
   readonly onKeyDown?: (event: KeyboardEvent) => void
@@ -45,8 +46,9 @@ export function TableView({
   const onCopy = (event: ClipboardEvent): void => {
     const inField = event.target instanceof HTMLInputElement || event.target instanceof HTMLTextAreaElement
     if (inField || window.getSelection()?.isCollapsed === false) return
-    event.clipboardData.setData('text/plain', copied())
     event.preventDefault()
+    const text = copied()
+    if (text !== null) event.clipboardData.setData('text/plain', text)
   }
 
   return (

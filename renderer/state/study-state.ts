@@ -73,6 +73,10 @@ export const initialStudyState: StudyState = {
   recent: [],
 }
 
+/** Whether what was worked out apart from an evaluation is about another state of the study than the document's: a number of it must not stand beside a setting of now. */
+export const isUncertaintyBehind = (state: StudyState): boolean =>
+  state.uncertain !== null && (isStale(state) || state.uncertain.about !== state.evaluated)
+
 /** Whether the results on the screen belong to an earlier state of the study. */
 export function isStale(state: StudyState): boolean {
   const { evaluated, rated, replica } = state

@@ -7,7 +7,9 @@ import { formatLevel } from '../../sheet/format.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import { TypedField } from '../../sheet/TypedField.tsx'
 import { useStudy } from '../../state/services.ts'
+import { isUncertaintyBehind } from '../../state/study-state.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
+import { BehindNote } from './BehindNote.tsx'
 import {
   budgetCopyColumns,
   budgetCopyRows,
@@ -25,18 +27,18 @@ import { parseDraws, parseLag, parseSeed, parseShare, parseTemperatureUncertaint
 export function Budget(props: ActivationProps) {
   const { shown, result, document, levelIndex, level, actions } = props
   const { uncertainty: settings } = document
-  const isBehind = useStudy(({ uncertain, evaluated }) => uncertain?.about !== evaluated)
+  const isBehind = useStudy(isUncertaintyBehind)
   const groups = useMemo(() => budgetGroups(shown, settings, result.runs, levelIndex), [shown, settings, result, levelIndex])
   const set = (part: Partial<UncertaintySettings>): void =>
     actions.change({ kind: 'set-uncertainty', uncertainty: { ...settings, ...part } })
   const heading = `${shown.profile.label} at α ${formatLevel(level)}`
-  const copied = (): string => copyText(budgetCopyColumns(settings, heading), budgetCopyRows(groups))
+  const text = (): string => copyText(budgetCopyColumns(settings, heading), budgetCopyRows(groups))
   return (
     <>
       {groups.length === 0 ? (
         <p className="missing">The sources of uncertainty stand here as soon as they are worked out.</p>
       ) : (
-        <TableView label="Table of sources of uncertainty" copied={copied} currentRow={null}>
+        <TableView label="Table of sources of uncertainty" copied={() => (isBehind ? null : text())} currentRow={null}>
           <table className={isBehind ? 'data-table budget-table is-behind' : 'data-table budget-table'}>
             <caption className="visually-hidden">Where the uncertainty comes from: {heading}</caption>
             <thead>
@@ -77,10 +79,11 @@ export function Budget(props: ActivationProps) {
         <TypedField label="Draws" text={String(settings.draws)} parse={parseDraws} onCommit={(draws) => set({ draws })} />
         <TypedField label="Seed" text={String(settings.seed)} parse={parseSeed} onCommit={(seed) => set({ seed })} />
         {groups.length > 0 && (
-          <Button className="text-button" onPress={() => actions.copyOut(copied())}>
+          <Button className="text-button" isDisabled={isBehind} onPress={() => actions.copyOut(text())}>
             Copy budget
           </Button>
         )}
+        {groups.length > 0 && isBehind && <BehindNote />}
       </div>
       <p className="source">
         {(['temperatureCommon_K', 'temperatureRun_K', 'lag_s'] as const).some((key) => isAssumed(settings, key)) && (

@@ -7,14 +7,18 @@ import { Choice, Choices, type ChoiceOption } from '../../sheet/Choice.tsx'
 import { decimals, formatWithInterval, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { nearestLevel } from '../../sheet/nearest-level.ts'
-import { useColours, useServices, useView } from '../../state/services.ts'
+import { useColours, useServices, useStudy, useView } from '../../state/services.ts'
+import { isStale } from '../../state/study-state.ts'
 import type { Beneath } from '../../state/view-store.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
 import { IntervalChoice, IntervalMaking, IntervalName, UncertaintyWork } from './IntervalChoice.tsx'
 import { LevelTable } from './LevelTable.tsx'
 import { MeanLine } from './MeanLine.tsx'
 import { Peaks } from './Peaks.tsx'
+import { BehindNote } from './BehindNote.tsx'
+import { areLevelsBehind } from './levels-behind.ts'
 import { drawnInterval } from './shown-interval.ts'
+import { useIntervalOf } from './use-shown.ts'
 
 /** The right half: Ea against conversion with its interval, the mean over a range, and beneath it the table, the budget or what the peaks say. */
 export function EnergyProfile(props: ActivationProps) {
@@ -110,8 +114,10 @@ function levelsEvery(step: number): readonly number[] {
   return Array.from({ length: parts - 1 }, (_, i) => (i + 1) / parts)
 }
 
-function Foot({ result, actions, beneath }: ActivationProps & { readonly beneath: Beneath }) {
+function Foot({ result, chosen, compared, actions, beneath }: ActivationProps & { readonly beneath: Beneath }) {
   const { kissinger } = result
+  const intervalOf = useIntervalOf(result)
+  const isBehind = useStudy((state) => (beneath === 'levels' ? areLevelsBehind(state, [chosen, ...compared], intervalOf) : isStale(state)))
   return (
     <div className="half-foot">
       {beneath === 'levels' && kissinger !== null && (
@@ -122,7 +128,8 @@ function Foot({ result, actions, beneath }: ActivationProps & { readonly beneath
         </p>
       )}
       <div className="controls-end">
-        <Button className="text-button" onPress={actions.copyTable}>
+        {isBehind && <BehindNote />}
+        <Button className="text-button" isDisabled={isBehind} onPress={actions.copyTable}>
           Copy table
         </Button>
         <Button className="text-button" onPress={actions.exportTable}>

@@ -3,7 +3,9 @@ import { copyText, type DataColumn } from '../../sheet/data-table.ts'
 import { NumberCell, TableHead } from '../../sheet/DataTable.tsx'
 import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
 import { TableView } from '../../sheet/TableView.tsx'
+import { useStudy } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
+import { areLevelsBehind } from './levels-behind.ts'
 import { useIntervalOf } from './use-shown.ts'
 import { levelColumns, levelCopyColumns, levelRows, type LevelRow } from './level-rows.ts'
 
@@ -16,6 +18,9 @@ export function LevelTable({ result, chosen, compared, shown, levelIndex, action
   const columns = useMemo(() => levelColumns(result, chosen, compared, () => shown.interval), [result, chosen, compared, shown])
 
   const intervalOf = useIntervalOf(result)
+  const methods = [chosen, ...compared]
+  const isBehind = useStudy((state) => areLevelsBehind(state, methods, intervalOf))
+  const className = ['data-table level-table', columns.length > mostInOneLine ? ' has-many' : '', isBehind ? ' is-behind' : ''].join('')
 
   const onKeyDown = (event: KeyboardEvent): void => {
     // The table lists levels downwards, so its arrows run the other way round than the rail's.
@@ -31,11 +36,11 @@ export function LevelTable({ result, chosen, compared, shown, levelIndex, action
   return (
     <TableView
       label="Table of activation energies"
-      copied={() => copyText(levelCopyColumns(result, chosen, compared, intervalOf), rows)}
+      copied={() => (isBehind ? null : copyText(levelCopyColumns(result, chosen, compared, intervalOf), rows))}
       currentRow={levelIndex}
       onKeyDown={onKeyDown}
     >
-      <table className={columns.length > mostInOneLine ? 'data-table level-table has-many' : 'data-table level-table'}>
+      <table className={className}>
         <caption className="visually-hidden">Activation energy at every level of conversion</caption>
         <TableHead columns={columns} />
         <tbody>

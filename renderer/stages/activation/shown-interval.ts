@@ -52,7 +52,7 @@ export const shortKinds: Readonly<Record<ShownKind, string>> = {
 }
 
 /** Kinds that come with an evaluation; the others take longer, and are asked for apart. */
-const isOfEvaluation = (kind: ShownKind): boolean => kind === 'student-t' || kind === 'vyazovkin-wight-f'
+export const isOfEvaluation = (kind: ShownKind): boolean => kind === 'student-t' || kind === 'vyazovkin-wight-f'
 
 /**
  * What resampling and measured sources say of a method, where it is about these very Ea: after a change that leaves Ea alone (a name, a stated uncertainty) what was
