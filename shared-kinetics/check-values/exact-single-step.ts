@@ -25,7 +25,10 @@ export interface ExactReaction {
 /** Temperature in K at which a run heated from T = 0 at a constant rate reaches a conversion: the root of g(alpha) = (A Ea/(R beta)) p(Ea/(R T)), in logarithms. */
 export function exactTemperature({ Ea_J_per_mol: Ea, A_per_s, model }: ExactReaction, heatingRate_K_per_s: number, level: number): number {
   const wanted = Math.log((exactModels[model].g(level) * gasConstant_J_per_mol_K * heatingRate_K_per_s) / (A_per_s * Ea))
-  return bracketedRoot((T) => lnPOfX(Ea / (gasConstant_J_per_mol_K * T)) - wanted, 20, 20_000).x
+  // Far above any temperature of a laboratory: second-order tails at a low Ea/(RT) end there.
+  const found = bracketedRoot((T) => lnPOfX(Ea / (gasConstant_J_per_mol_K * T)) - wanted, 20, 1e6)
+  if (found.status !== 'converged') throw new Error(`no temperature gives conversion ${level} (${found.status})`)
+  return found.x
 }
 
 /** The A in 1/s with which conversion 0.5 is reached at an Ea/(RT) of `x` at 10 K/min, so that a temperature of about Ea/(R x) follows. */
