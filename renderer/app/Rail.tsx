@@ -11,13 +11,12 @@ import { useShown } from '../stages/activation/use-shown.ts'
 import { useView } from '../state/services.ts'
 import { chosenAmong } from '../state/view-store.ts'
 
-/** What the bars mean; of a kind that is still being worked out, that there are none yet. */
+/** What the bars mean; where they stand in for a kind that is still being worked out, that too. */
 function captionOf(widths: readonly Maybe[], mean: Maybe, shown: ShownOfMethod | null): readonly string[] {
   if (shown === null) return []
-  const kind = shortKinds[shown.kind]
-  return shown.interval === null && shown.kind !== 'student-t'
-    ? [`bars: ± 95 %, ${kind}`, 'not worked out yet']
-    : railCaption(widths, mean, kind)
+  const kind = shown.interval?.kind ?? shown.kind
+  const lines = railCaption(widths, mean, shortKinds[kind])
+  return kind === shown.kind ? lines : [...lines, `${shortKinds[shown.kind]}: not worked out yet`]
 }
 
 /** The level rail with what the chosen method says at the level. */

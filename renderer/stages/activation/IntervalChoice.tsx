@@ -40,8 +40,8 @@ export function IntervalName({ shown }: { readonly shown: ShownOfMethod }) {
   if (interval !== null) {
     return (
       <>
-        {interval.label}, {kind === 'student-t' && `n − 2 degrees of freedom (${profile.interval.dof} here), `}
-        {intervalQualities(interval)}.
+        {interval.label}, {interval.kind === 'student-t' && `n − 2 degrees of freedom (${profile.interval.dof} here), `}
+        {intervalQualities(interval)}.{interval.kind !== kind && ` ${capital(shortKinds[kind])}: not worked out yet.`}
       </>
     )
   }

@@ -1,24 +1,22 @@
 import type { ProfileResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { levelsOfMean } from '../../../shared-kinetics/figure/levels-of-mean.ts'
-import { decimals, formatWithInterval, halfWidth } from '../../sheet/format.ts'
+import { decimals } from '../../sheet/format.ts'
 import { parseConversion } from '../../sheet/parse-conversion.ts'
 import { TypedField } from '../../sheet/TypedField.tsx'
 import type { ActivationProps } from './ActivationStage.tsx'
+import { meanShown } from './mean-shown.ts'
 
 /** The mean of Ea over a range of conversion with its own interval, and how far apart the levels in it lie. */
 export function MeanLine({ shown, result, document, actions }: ActivationProps) {
   const { profile } = shown
   const [from, to] = document.settings.meanRange
-  const { Ea_kJ_per_mol: mean, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper } = profile.mean
+  const mean = meanShown(shown)
   const ends = endsOfMean(profile, result.levels)
   // A mean that should not be quoted alone must not stand out.
   const isDoubtful = result.findings.some(({ code, severity }) => code === 'energy-varies' && severity !== 'note')
   const set = (meanRange: [number, number]): void => {
     if (meanRange[0] < meanRange[1]) actions.change({ kind: 'set-mean-range', meanRange })
   }
-  const half = halfWidth(lower, upper)
-  const combined = decimals(halfWidth(shown.mean?.lower95_kJ_per_mol, shown.mean?.upper95_kJ_per_mol), 1)
-  const text = formatWithInterval(mean, lower, upper, half !== null && half < 0.095 ? 2 : 1)
   return (
     <div className="mean-line">
       <span>Mean over α</span>
@@ -41,9 +39,8 @@ export function MeanLine({ shown, result, document, actions }: ActivationProps) 
         <span>not to be had: no level there has a number.</span>
       ) : (
         <output>
-          {isDoubtful ? text : <strong>{text}</strong>} kJ/mol
-          {lower !== null && ` (95 % Student-t of the scatter${combined === '' ? '' : `; combined ± ${combined}`})`};{' '}
-          {levelsOfMean(profile.mean)}
+          {isDoubtful ? mean.text : <strong>{mean.text}</strong>} kJ/mol
+          {mean.words !== '' && ` (${mean.words})`}; {levelsOfMean(profile.mean)}
           {ends !== null && `, ${decimals(ends[0], 1)} to ${decimals(ends[1], 1)}`}
         </output>
       )}

@@ -152,7 +152,9 @@ export interface ShownOfMethod {
   readonly profile: ProfileResult
   readonly apart: UncertaintyProfile | null
   readonly offers: readonly IntervalOffer[]
+  /** The kind that is chosen. */
   readonly kind: ShownKind
+  /** Of the chosen kind or, until that is worked out, Student's t: its own `kind` says which. */
   readonly interval: ShownInterval | null
   /** The mean with what moves all runs alike, where it is at hand and of the range that is asked for. */
   readonly mean: CombinedMean | null
@@ -174,7 +176,8 @@ export function shownOf(
   const about = uncertain?.about.result.profiles.find((one) => one.method === method)?.mean
   const isOfRange = about?.from === profile.mean.from && about.to === profile.mean.to
   const mean = isOfRange ? (apart?.mean ?? null) : null
-  return { profile, apart, offers, kind, interval: intervalOfKind(profile, apart, kind), mean }
+  const interval = intervalOfKind(profile, apart, kind) ?? intervalOfKind(profile, apart, 'student-t')
+  return { profile, apart, offers, kind, interval, mean }
 }
 
 /** The interval of every method, of the kind that is wanted or, where it has none of it, its own. */
