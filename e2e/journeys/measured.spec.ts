@@ -26,6 +26,6 @@ test.describe('measured exports, as the instruments wrote them', () => {
 
     await sheet.goTo('Activation energy')
     const out = await sheet.downloads(2, () => sheet.page.getByRole('button', { name: 'Export table (CSV)' }).click())
-    expect(out.get('activation.csv')).toBe(csvOfCommandLine(files))
+    expect(out.get('activation.csv')).toBe(csvOfCommandLine(files, ['--uncertainty']))
   })
 })
