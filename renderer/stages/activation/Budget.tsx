@@ -48,6 +48,7 @@ export function Budget(props: ActivationProps) {
                 </th>
                 <th scope="col">
                   <span>Stated or found</span>
+                  <span className="unit">standard uncertainty (one standard deviation)</span>
                 </th>
                 <th scope="col" className="is-number">
                   <span>u(Ea)</span>
@@ -87,8 +88,10 @@ export function Budget(props: ActivationProps) {
       </div>
       <p className="source">
         {(['temperatureCommon_K', 'temperatureRun_K', 'lag_s'] as const).some((key) => isAssumed(settings, key)) && (
-          <>What is assumed is common practice and stands in no standard: type what your own calibration shows.</>
+          <>What is assumed is common practice and stands in no standard: type what your own calibration shows. </>
         )}
+        An expanded uncertainty is typed with its k: 0.3 K (k=2). The thermal lag in s is the shift of a calibration standard&rsquo;s onset
+        between two heating rates, over the difference of the rates.
       </p>
     </>
   )

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { defaultUncertainty } from '../../../shared-kinetics/contract/study-document.ts'
 import type { BudgetEntry, ProfileResult, UncertaintyProfile } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
-import { budgetCopyColumns, budgetCopyRows, budgetGroups, statedText, uText, type BudgetRow } from './budget-rows.ts'
+import { budgetCopyColumns, budgetCopyRows, budgetGroups, lagInKelvin, statedText, uText, type BudgetRow } from './budget-rows.ts'
 import { methodFacts } from './method-facts.ts'
 import type { ShownOfMethod } from './shown-interval.ts'
 import { friedman, result, runAt, starink } from './testing/small-result.ts'
@@ -82,7 +82,13 @@ describe('budget at a level', () => {
   it('says in words what nobody has stated, until it is changed', () => {
     expect(wordsOf(defaultUncertainty, 'temperature-run')).toBe('assumed: nobody has stated it')
     expect(wordsOf({ ...defaultUncertainty, temperatureRun_K: 0.2 }, 'temperature-run')).toBe('as stated')
-    expect(wordsOf(defaultUncertainty, 'temperature-lag')).toBe('× heating rate, assumed: nobody has stated it')
+    expect(wordsOf(defaultUncertainty, 'temperature-lag')).toBe('× heating rate: 1 s = 0.333 K at 20 K/min, assumed: nobody has stated it')
+  })
+
+  it('says what a lag means in kelvins at the fastest heating rate: lag times rate', () => {
+    expect(lagInKelvin(1, [runAt(10, []), runAt(100, []), runAt(50, [])])).toBe('1 s = 1.67 K at 100 K/min')
+    expect(lagInKelvin(0.5, [runAt(20, [])])).toBe('0.5 s = 0.167 K at 20 K/min')
+    expect(lagInKelvin(1, [])).toBe('')
   })
 
   it('asks for the uncertainty of a heating rate only where one was stated and not measured', () => {
@@ -114,7 +120,7 @@ describe('budget at a level', () => {
 
   it('is copied with units, what was stated, and where each line counts', () => {
     const lines = copyText(budgetCopyColumns(defaultUncertainty, 'Starink at α 0.05'), budgetCopyRows(groups)).split('\n')
-    expect(lines[0]).toBe('Source, Starink at α 0.05\tStated or found\tu(Ea) (kJ/mol)\tCounts in')
+    expect(lines[0]).toBe('Source, Starink at α 0.05\tStated (standard uncertainty) or found\tu(Ea) (kJ/mol)\tCounts in')
     expect(lines[2]).toBe('temperature-common\t0.5 K assumed: nobody has stated it\t3.000\tcombined uncertainty')
     expect(lines[7]).toBe('signal-noise\tfound in the data: up to 0.4 s\t1.000\tscatter of the runs already')
   })

@@ -78,7 +78,7 @@ export function budgetGroups(
   const rowOf = (entry: BudgetEntry): BudgetRow => {
     const stated = statedOf(entry.source, runs)
     const u = entry.standardUncertainty_kJ_per_mol[levelIndex] ?? null
-    return part({ id: entry.source, label: entry.label, stated, words: wordsOf(entry, stated, settings), u })
+    return part({ id: entry.source, label: entry.label, stated, words: wordsOf(entry, stated, settings, runs), u })
   }
   const sum = (id: 'combined' | 'measured-sources', label: string): BudgetRow => {
     const interval = apart.intervals.find((one) => one.kind === id)
@@ -110,13 +110,26 @@ function statedOf(source: UncertaintySource, runs: readonly RunResult[]): Stated
   return statedKeys[source] ?? null
 }
 
-function wordsOf({ source, magnitude, reason }: BudgetEntry, stated: StatedKey | null, settings: UncertaintySettings): string {
+/** What a lag moves the temperature by at the fastest heating rate, `1 s = 1.67 K at 100 K/min`; empty where no run has a heating rate. */
+export function lagInKelvin(lag_s: number, runs: readonly RunResult[]): string {
+  const fastest = Math.max(...runs.map((run) => run.heatingRate_K_per_min ?? 0), 0)
+  return fastest > 0
+    ? `${number(lag_s)} s = ${number(Number(((lag_s * fastest) / 60).toPrecision(3)))} K at ${number(Number(fastest.toPrecision(3)))} K/min`
+    : ''
+}
+
+function wordsOf(
+  { source, magnitude, reason }: BudgetEntry,
+  stated: StatedKey | null,
+  settings: UncertaintySettings,
+  runs: readonly RunResult[],
+): string {
   if (source === 'heating-rate' && stated === null) return magnitude === 'none' ? 'measured' : `measured: ${magnitude}`
   if (reason !== null) return reason
   if (stated === null) return magnitude
-  const what = { temperatureCommon_K: '', temperatureRun_K: '', lag_s: '× heating rate, ', statedHeatingRate_share: 'where only stated, ' }[
-    stated
-  ]
+  const inKelvin = lagInKelvin(settings.lag_s, runs)
+  const lag = inKelvin === '' ? '× heating rate, ' : `× heating rate: ${inKelvin}, `
+  const what = { temperatureCommon_K: '', temperatureRun_K: '', lag_s: lag, statedHeatingRate_share: 'where only stated, ' }[stated]
   return `${what}${isAssumed(settings, stated) ? 'assumed: nobody has stated it' : 'as stated'}`
 }
 
@@ -144,7 +157,7 @@ export function budgetCopyColumns(settings: UncertaintySettings, heading: string
   })
   return [
     text('source', `Source, ${heading}`, (row) => row.label),
-    text('stated', 'Stated or found', words),
+    text('stated', 'Stated (standard uncertainty) or found', words),
     { id: 'u', heading: 'u(Ea)', unit: 'kJ/mol', numeric: true, text: (row) => uText(row.u), value: (row) => row.u, places: 3 },
     text('group', 'Counts in', (row) => (row.group.id === 'combined' ? 'combined uncertainty' : 'scatter of the runs already')),
   ]

@@ -14,6 +14,18 @@ describe('stated uncertainties as typed', () => {
     expect(parseSeed('0')).toEqual({ ok: true, value: 0 })
   })
 
+  it('are standard uncertainties: an expanded one is divided by the k that stands with it', () => {
+    expect(parseTemperatureUncertainty('0.3 K (k=2)')).toEqual({ ok: true, value: 0.15 })
+    expect(parseTemperatureUncertainty('0,3 (k = 2)')).toEqual({ ok: true, value: 0.15 })
+    expect(parseLag('3 s, k=2')).toEqual({ ok: true, value: 1.5 })
+    expect(parseLag('3 (k=2)')).toEqual({ ok: true, value: 1.5 })
+    expect(parseShare('5 % (k=2.5)')).toEqual({ ok: true, value: 0.02 })
+    for (const text of ['0.3 K (k=0)', '0.3 K (k=)', '0.3 K (k=two)', '0.3 K (k=-2)']) {
+      expect(parseTemperatureUncertainty(text)).toMatchObject({ ok: false, reason: expect.stringContaining('coverage factor') })
+    }
+    expect(parseTemperatureUncertainty('(k=2)').ok).toBe(false)
+  })
+
   it('are refused with a reason where they cannot be meant', () => {
     const refused = [
       parseTemperatureUncertainty('-0.5 K'),
