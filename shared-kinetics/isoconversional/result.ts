@@ -75,6 +75,8 @@ export const intervalStatuses = [
   'ok',
   /** Both ends are given, the lower one below 0: Ea is not bounded from below by these runs. */
   'reaches-below-zero',
+  /** Both ends are given, without what the choice of baseline does: that cannot be told for these runs. */
+  'baseline-left-out',
   /** The level has no Ea; its own status says why. */
   'no-energy',
   'too-few-programmes',

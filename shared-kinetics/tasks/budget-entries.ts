@@ -1,3 +1,4 @@
+import type { IntervalStatus } from '../isoconversional/result.ts'
 import { isAssumed } from '../uncertainty/assumed-uncertainties.ts'
 import { shownByScatter, type Budget } from '../uncertainty/budget.ts'
 import {
@@ -40,15 +41,22 @@ export function budgetEntries(budget: Budget, sources: MeasuredSources): BudgetE
  * @param entries - of the method's budget
  */
 export function noteOnCombined(entries: readonly BudgetEntry[]): string {
-  const added = entries.filter((entry) => !entry.shownByScatter).map((entry) => `${lowerFirst(entry.label)} (${entry.magnitude})`)
-  const missing = entries.flatMap((entry) =>
-    !entry.shownByScatter && entry.reason !== null ? [` Not to be had here: ${entry.reason}`] : [],
-  )
+  const added = entries
+    .filter((entry) => !entry.shownByScatter && entry.reason === null)
+    .map((entry) => `${lowerFirst(entry.label)} (${entry.magnitude})`)
   return (
     `The regression's standard error with what no scatter shows: ${added.join('; ')}. Student's t times the one and the normal quantile times the other, ` +
-    `added in squares. Pointwise, and approximate: the sizes that are stated or assumed count as known exactly.${missing.join('')}`
+    `added in squares. Pointwise, and approximate: the sizes that are stated or assumed count as known exactly.${leftOut(entries)}`
   )
 }
+
+/** What an interval does not hold since nobody can tell it, with the reason, as sentences to put after a note; empty where nothing is left out. */
+export const leftOut = (entries: readonly Pick<BudgetEntry, 'label' | 'reason'>[]): string =>
+  entries.flatMap(({ label, reason }) => (reason === null ? [] : [` The ${lowerFirst(label)} is not in it: ${reason}`])).join('')
+
+/** What is said of an interval from measured sources at a level that has one: whether the choice of baseline is in it. */
+export const givenOf = ({ baseline }: Pick<MeasuredSources, 'baseline'>): IntervalStatus =>
+  baseline === null || baseline.reason === null ? 'ok' : 'baseline-left-out'
 
 const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1)
 

@@ -3,6 +3,7 @@ import { drawInterval } from '../uncertainty/draw-interval.ts'
 import type { EnergyModel } from '../uncertainty/energy-model.ts'
 import type { MeasuredSources } from '../uncertainty/measured-sources.ts'
 import { drawEnergies, type DrawRange } from '../uncertainty/monte-carlo.ts'
+import { givenOf, leftOut } from './budget-entries.ts'
 import { intervalResult } from './interval-result.ts'
 import type { IntervalResult } from './study-result.ts'
 
@@ -34,14 +35,14 @@ export function intervalsOfDraws(
       const { levels } = model
       const note = noteOnDraws(sources, all.length / levels, seed)
       const missing = (level: number): IntervalStatus => (isKnown(sources, model, level) ? 'draws-without-energy' : 'source-unknown')
-      return [model.method, intervalResult('measured-sources', drawInterval(all, levels), note, model.Ea, missing)]
+      return [model.method, intervalResult('measured-sources', drawInterval(all, levels), note, model.Ea, missing, givenOf(sources))]
     }),
   )
 }
 
 /** Whether a level has the errors of all that the method uses there: times, also of the level before where an increment begins there, and reaction rates. */
 function isKnown({ noise, baseline }: MeasuredSources, { method, form, runs }: EnergyModel, level: number): boolean {
-  const shifts = [noise, ...(baseline === null ? [] : [baseline])]
+  const shifts = [noise, ...(baseline === null || baseline.reason !== null ? [] : [baseline])]
   const first = method === 'vyazovkin-incremental' ? Math.max(0, level - 1) : level
   const known = (table: Float64Array, from: number): boolean => !table.subarray(from * runs, (level + 1) * runs).some(Number.isNaN)
   const usesRate = form.kind === 'line' && form.perLnReactionRate !== 0
@@ -49,6 +50,6 @@ function isKnown({ noise, baseline }: MeasuredSources, { method, form, runs }: E
 }
 
 const noteOnDraws = ({ baseline }: MeasuredSources, draws: number, seed: number): string =>
-  `${draws} draws with seed ${seed} of the errors of temperature, heating rate and signal${baseline === null ? '' : ', and of the choice of baseline'}; ` +
+  `${draws} draws with seed ${seed} of the errors of temperature, heating rate and signal${baseline === null || baseline.reason !== null ? '' : ', and of the choice of baseline'}; ` +
   '2.5 and 97.5 % points. Pointwise. Holds what is stated or assumed of the measurement (see the budget), and nothing of the scatter that the runs show.' +
-  (baseline === null || baseline.reason === null ? '' : ` Not to be had here: ${baseline.reason}`)
+  leftOut(baseline === null ? [] : [{ label: 'Choice of baseline', reason: baseline.reason }])

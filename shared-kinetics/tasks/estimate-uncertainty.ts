@@ -1,10 +1,10 @@
 import type { IsoconversionalResult, TaskContext } from '../isoconversional/result.ts'
 import type { RunColumns } from '../series/run.ts'
-import { budgetOf, signedBudgetOf, type Budget } from '../uncertainty/budget.ts'
+import { addedToScatter, budgetOf, signedBudgetOf, type Budget } from '../uncertainty/budget.ts'
 import { combinedInterval } from '../uncertainty/combined-interval.ts'
 import { energyModel, type EnergyModel } from '../uncertainty/energy-model.ts'
-import type { UncertaintySettings } from '../uncertainty/measured-sources.ts'
-import { budgetEntries, noteOnCombined } from './budget-entries.ts'
+import type { MeasuredSources, UncertaintySettings } from '../uncertainty/measured-sources.ts'
+import { budgetEntries, givenOf, noteOnCombined } from './budget-entries.ts'
 import type { DrawOrder } from './draw-uncertainty.ts'
 import { intervalResult } from './interval-result.ts'
 import { intervalsByResampling, resamplingOf, withCoverage } from './intervals-by-resampling.ts'
@@ -52,13 +52,25 @@ export function estimateUncertainty(
     context.checkCancelled()
     const budget = budgetOf(model, sources)
     const entries = budgetEntries(budget, sources)
-    const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget, entries)] : [])]
-    const mean = combinedMeanResult(result, study.settings.levels, study.settings.meanRange, signedBudgetOf(model, sources), entries)
+    const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget, sources, entries)] : [])]
+    const mean = combinedMeanResult(result, study.settings, signedBudgetOf(model, sources), addedToScatter(sources), entries)
     return { method: info.id, intervals, budget: entries, mean }
   })
   context.progress(chosen.length, chosen.length)
   return { result: { levels: study.settings.levels, seed, draws, profiles }, order: { models, sources } }
 }
 
-const combined = (result: IsoconversionalResult, budget: Budget, entries: readonly BudgetEntry[]): IntervalResult =>
-  intervalResult('combined', combinedInterval(result, budget), noteOnCombined(entries), result.Ea, () => 'source-unknown')
+const combined = (
+  result: IsoconversionalResult,
+  budget: Budget,
+  sources: MeasuredSources,
+  entries: readonly BudgetEntry[],
+): IntervalResult =>
+  intervalResult(
+    'combined',
+    combinedInterval(result, budget, addedToScatter(sources)),
+    noteOnCombined(entries),
+    result.Ea,
+    () => 'source-unknown',
+    givenOf(sources),
+  )

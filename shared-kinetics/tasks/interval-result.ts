@@ -31,6 +31,7 @@ export interface IntervalColumns {
  *
  * @param Ea - of the levels; NaN where there is none
  * @param missing - why an end is not there although the level has an Ea
+ * @param given - what is said where both ends are there and above 0
  */
 export function intervalResult(
   kind: IntervalKind,
@@ -38,6 +39,7 @@ export function intervalResult(
   note: string,
   Ea: ArrayLike<number>,
   missing: (level: number) => IntervalStatus,
+  given: IntervalStatus = 'ok',
 ): IntervalResult {
   const { label, approximate, sources: keys } = kinds[kind]
   return {
@@ -51,7 +53,7 @@ export function intervalResult(
     standardUncertainty_kJ_per_mol: kilojoules(columns.standardUncertainty),
     lower95_kJ_per_mol: kilojoules(columns.lower95),
     upper95_kJ_per_mol: kilojoules(columns.upper95),
-    status: intervalStatus(Ea, columns.lower95, columns.upper95, missing),
+    status: intervalStatus(Ea, columns.lower95, columns.upper95, missing, given),
   }
 }
 

@@ -6,6 +6,7 @@ export const intervalStatusWords: Readonly<Record<IntervalStatus, string | null>
   ok: null,
   'no-energy': null,
   'reaches-below-zero': 'reaches below 0, where no activation energy lies: these runs do not bound Ea from below',
+  'baseline-left-out': 'holds nothing of the choice of baseline, since what that does cannot be told for these runs',
   'too-few-programmes': 'not to be had with fewer than three distinct programmes',
   'end-outside': 'an end lies beyond 1 or 1000 kJ/mol and is not given',
   'no-minimum': 'not to be had: the variance has no minimum next to Ea',
@@ -20,18 +21,20 @@ export const intervalStatusWords: Readonly<Record<IntervalStatus, string | null>
  *
  * @param Ea - NaN or null where the level has none
  * @param missing - why an end is not there although the level has an Ea
+ * @param given - what is said where both ends are there and above 0
  */
 export function intervalStatus(
   Ea: ArrayLike<Maybe>,
   lower: ArrayLike<Maybe>,
   upper: ArrayLike<Maybe>,
   missing: (level: number) => IntervalStatus,
+  given: IntervalStatus = 'ok',
 ): IntervalStatus[] {
   return Array.from(Ea, (value, level) => {
     if (!isThere(value)) return 'no-energy'
     const [from, to] = [lower[level], upper[level]]
     if (!isThere(from) || !isThere(to)) return missing(level)
-    return from < 0 ? 'reaches-below-zero' : 'ok'
+    return from < 0 ? 'reaches-below-zero' : given
   })
 }
 

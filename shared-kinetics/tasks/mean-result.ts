@@ -3,8 +3,11 @@ import { studentTQuantile } from '../numerics/student-t.ts'
 import type { Budget } from '../uncertainty/budget.ts'
 import { meanCombined } from '../uncertainty/mean-combined.ts'
 import { meanEnergyStandardError } from '../uncertainty/mean-energy.ts'
+import type { UncertaintySource } from '../uncertainty/measured-sources.ts'
 import { joulesToKilojoules } from '../units/convert.ts'
+import { leftOut } from './budget-entries.ts'
 import { maybe } from './maybe.ts'
+import type { AnalysisSettings } from './study-input.ts'
 import type { BudgetEntry, CombinedMean, MeanEnergy } from './study-result.ts'
 
 /** Levels are compared with the ends of a range within rounding, so that 0.1 belongs to 0.1 … 0.9 however it was made. */
@@ -53,20 +56,21 @@ export function meanResult(
  * The same mean with an interval that holds besides the scatter of the runs what moves them all alike.
  *
  * @param signed - of `signedBudgetOf`
+ * @param sources - those added: `addedToScatter`
  * @param entries - of the method's budget, for the words
  * @returns null where there is no mean, or no interval by the scatter of the runs (fewer than three distinct programmes)
  */
 export function combinedMeanResult(
   result: IsoconversionalResult,
-  levels: readonly number[],
-  range: readonly [number, number],
+  { levels, meanRange }: Pick<AnalysisSettings, 'levels' | 'meanRange'>,
   signed: Budget,
+  sources: readonly UncertaintySource[],
   entries: readonly BudgetEntry[],
 ): CombinedMean | null {
-  const used = levelsInMean(result.Ea, levels, range)
+  const used = levelsInMean(result.Ea, levels, meanRange)
   if (used.length === 0 || result.interval.dof < 1) return null
   const mean = used.reduce((sum, i) => sum + joulesToKilojoules(result.Ea[i] ?? Number.NaN), 0) / used.length
-  const { standardUncertainty, half } = meanCombined(result, signed, used)
+  const { standardUncertainty, half } = meanCombined(result, signed, used, sources)
   return {
     Ea_kJ_per_mol: mean,
     standardUncertainty_kJ_per_mol: maybe(joulesToKilojoules(standardUncertainty)),
@@ -77,11 +81,11 @@ export function combinedMeanResult(
 }
 
 function noteOnCombinedMean(entries: readonly BudgetEntry[], isMissing: boolean): string {
-  const added = entries.filter((entry) => !entry.shownByScatter)
+  const added = entries.filter((entry) => !entry.shownByScatter && entry.reason === null)
   const how =
     `The scatter of the runs with what no scatter shows: ${added.map(({ label, magnitude }) => `${label} (${magnitude})`).join('; ')}. Each of these moves all levels together: ` +
-    "its effects are averaged over the levels with their signs. Student's t times the one and the normal quantile times the other, added in squares; the sizes stated or assumed count as known exactly."
+    "its effects are averaged over the levels with their signs. Student's t times the one and the normal quantile times the other, added in squares; the sizes stated or assumed count as known exactly." +
+    leftOut(entries)
   if (!isMissing) return how
-  const reason = added.find((entry) => entry.reason !== null)?.reason ?? 'one of these sources cannot be told at some level of the mean.'
-  return `${how} Not to be had here: ${reason}`
+  return `${how} Not to be had here: one of these sources cannot be told at some level of the mean.`
 }

@@ -139,20 +139,26 @@ describe('the choice of baseline in the budget', () => {
     expect(most).toBeGreaterThan(2)
   })
 
-  it('is not to be had, with the run named, where one run has no other baseline', () => {
+  it('is unknown, with the run named, where one run has no other baseline; the intervals are given without it and say so', () => {
     const withHold = [...runs, heatFlowRun('hold', holdAt(520, 4000), { info: { label: 'Hold at 520 K' } })]
     const study = studyOf(withHold, { methods: ['friedman', 'vyazovkin'] })
     const { result, order } = estimateUncertainty(study, columnsOf(withHold), stated, context)
     expect(result.profiles.map(({ method }) => method)).toEqual(['friedman', 'vyazovkin'])
     const draws = intervalsOfDraws(order, [drawShare({ ...order, range: { seed: 1, from: 0, to: 100 } }, context)], 1)
-    for (const { budget, intervals, method } of result.profiles) {
+    for (const { budget, intervals, method, mean } of result.profiles) {
       const entry = budget.find(({ source }) => source === 'baseline')
       expect(entry?.reason).toContain('Hold at 520 K')
       expect(entry?.standardUncertainty_kJ_per_mol).toEqual(levels.map(() => null))
       const combined = intervals.find(({ kind }) => kind === 'combined')
-      expect(combined?.upper95_kJ_per_mol).toEqual(levels.map(() => null))
-      expect(combined?.note).toContain('Hold at 520 K')
-      expect(draws.get(method)?.upper95_kJ_per_mol).toEqual(levels.map(() => null))
+      for (const interval of [combined, draws.get(method)]) {
+        expect(interval?.note).toMatch(/The choice of baseline is not in it: .*Hold at 520 K/)
+        expect(interval?.note).not.toMatch(/area-proportional or straight/)
+        levels.forEach((_, i) => expect(interval?.upper95_kJ_per_mol[i]).toBeGreaterThan(interval?.lower95_kJ_per_mol[i] ?? Number.NaN))
+        expect(interval?.status.filter((status) => status !== 'baseline-left-out' && status !== 'reaches-below-zero')).toEqual([])
+        expect(interval?.status).toContain('baseline-left-out')
+      }
+      expect(mean?.upper95_kJ_per_mol).toBeGreaterThan(mean?.Ea_kJ_per_mol ?? Number.NaN)
+      expect(mean?.note).toMatch(/The choice of baseline is not in it: .*Hold at 520 K/)
       // What does not rest on a baseline stays.
       for (const { source, standardUncertainty_kJ_per_mol: u } of budget.filter((one) => one.source !== 'baseline'))
         expect([source, u.every((value) => value !== null && value >= 0)]).toEqual([source, true])

@@ -2,7 +2,7 @@ import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column, type Column } from '../units/quantity.ts'
 import { disturbedEnergy, roomFor } from './disturbed-energy.ts'
 import type { EnergyModel } from './energy-model.ts'
-import type { MeasuredSources, UncertaintySource } from './measured-sources.ts'
+import { uncertaintySources, type MeasuredSources, type UncertaintySource } from './measured-sources.ts'
 
 /** Standard uncertainty of Ea that each source alone brings, one entry a level; NaN without Ea, 0 where the method does not use what the source disturbs. */
 export type Budget = Readonly<Record<UncertaintySource, Column<'J/mol'>>>
@@ -19,6 +19,13 @@ export const shownByScatter: Readonly<Record<UncertaintySource, boolean>> = {
   'signal-noise': true,
   baseline: false,
 }
+
+/**
+ * Sources that a combined interval adds to the scatter. One that cannot be told at all (no other baseline can be drawn under some run) is not among them: whoever shows the
+ * interval says that it is not in it. One that is unknown at single levels stays, and leaves these levels without an interval.
+ */
+export const addedToScatter = ({ baseline }: Pick<MeasuredSources, 'baseline'>): readonly UncertaintySource[] =>
+  uncertaintySources.filter((source) => !shownByScatter[source] && (source !== 'baseline' || baseline === null || baseline.reason === null))
 
 /**
  * Budget of a method's Ea by the law of propagation: with cᵢ the sensitivity of Ea to the ordinate of run i (slope of a regression: (xᵢ - x̄)/Σ(x - x̄)²), and that

@@ -3,7 +3,7 @@ import { studentTQuantile } from '../numerics/student-t.ts'
 import type { IsoconversionalResult } from '../isoconversional/result.ts'
 import { column, type Column } from '../units/quantity.ts'
 import type { UncertaintySource } from './measured-sources.ts'
-import { shownByScatter, type Budget } from './budget.ts'
+import { addedToScatter, type Budget } from './budget.ts'
 
 export interface CombinedInterval {
   readonly standardUncertainty: Column<'J/mol'>
@@ -24,13 +24,17 @@ const z = normalQuantile(0.975)
  * (Welch and Satterthwaite) for one t times u would not do: where the few runs happen to scatter little, se is too small and its share of the freedom as well, so that of three runs
  * such an interval holds the true value in as few as 87 % of cases (simulation).
  *
+ * @param added - the sources summed over: `addedToScatter`
  * @source abernethy-1985
  */
-export function combinedInterval(result: IsoconversionalResult, budget: Budget): CombinedInterval {
+export function combinedInterval(
+  result: IsoconversionalResult,
+  budget: Budget,
+  added: readonly UncertaintySource[] = addedToScatter({ baseline: null }),
+): CombinedInterval {
   const levels = result.Ea.length
   const empty = (): Float64Array => new Float64Array(levels).fill(Number.NaN)
   const combined = { u: empty(), lower: empty(), upper: empty() }
-  const added = (Object.keys(shownByScatter) as UncertaintySource[]).filter((source) => !shownByScatter[source])
   const t = result.interval.dof > 0 ? studentTQuantile(0.975, result.interval.dof) : Number.NaN
   for (let level = 0; level < levels; level++) {
     const Ea = result.Ea[level] as number

@@ -1,9 +1,9 @@
 import type { IsoconversionalResult } from '../isoconversional/result.ts'
 import { normalQuantile } from '../numerics/normal.ts'
 import { studentTQuantile } from '../numerics/student-t.ts'
-import { shownByScatter, type Budget } from './budget.ts'
+import type { Budget } from './budget.ts'
 import { meanEnergyStandardError } from './mean-energy.ts'
-import { uncertaintySources } from './measured-sources.ts'
+import type { UncertaintySource } from './measured-sources.ts'
 
 export interface MeanUncertainty {
   readonly standardUncertainty: number
@@ -23,6 +23,7 @@ const z = normalQuantile(0.975)
  *
  * @param signed - of `signedBudgetOf`
  * @param levels - positions of the levels that enter the mean
+ * @param added - the sources summed over: `addedToScatter`
  * @returns NaN without levels, without a standard error, or where a source cannot be told at one of the levels
  * @source jcgm-100-2008 5.2 (fully correlated quantities add with their signs)
  * @source abernethy-1985
@@ -31,9 +32,9 @@ export function meanCombined(
   { points, interval: { dof } }: IsoconversionalResult,
   signed: Budget,
   levels: readonly number[],
+  added: readonly UncertaintySource[],
 ): MeanUncertainty {
   const se = dof > 0 ? meanEnergyStandardError(levels.flatMap((level) => points[level] ?? [])) : Number.NaN
-  const added = uncertaintySources.filter((source) => !shownByScatter[source])
   const stated = Math.hypot(
     ...added.map((source) => levels.reduce((sum, level) => sum + (signed[source][level] ?? Number.NaN), 0) / levels.length),
   )

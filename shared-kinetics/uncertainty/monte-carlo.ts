@@ -21,7 +21,7 @@ const drawsBetweenReports = 10
  * has no Ea, or a draw has no minimum.
  *
  * All errors are normal with the standard uncertainties given, but the choice of baseline, which moves every run between one baseline and the mirror image of the other,
- * evenly. Every draw has a random stream of its own, so that the numbers are the same however the draws are shared out.
+ * evenly; where no other can be drawn under some run, no draw holds the choice. Every draw has a random stream of its own, so that the numbers are the same however the draws are shared out.
  *
  * @param models - of one series
  * @throws Cancelled, by `context`
@@ -86,7 +86,7 @@ function disturb(
         (noise.lnReactionRateSlope_per_s[k] as number) * (disturbance.time_s[k] ?? Number.NaN)
     }
   }
-  if (baseline === null) return
+  if (baseline === null || baseline.reason !== null) return
   for (let k = 0; k < runs * levels; k++) {
     disturbance.time_s[k] = (disturbance.time_s[k] as number) + choice * (baseline.time_s[k] as number)
     disturbance.lnReactionRate[k] = (disturbance.lnReactionRate[k] as number) + choice * (baseline.lnReactionRate[k] as number)
