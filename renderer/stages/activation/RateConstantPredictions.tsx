@@ -25,7 +25,7 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
         <TypedField
           label="Predict k at"
           text={temperaturesText(table.predictAt_K, shown)}
-          placeholder="25 C, 310 K"
+          placeholder="e.g. 25 C, 310 K"
           parse={(text) => atMost(parseTemperatures(text, shown))}
           onCommit={(predictAt_K) => actions.change({ kind: 'set-rate-constants', table: { ...table, predictAt_K: [...predictAt_K] } })}
         />

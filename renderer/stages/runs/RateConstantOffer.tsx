@@ -155,7 +155,7 @@ function Read({ table, onState }: { readonly table: RateConstantTable; readonly 
           <TypedField
             label="Unit of k, if you know it"
             text=""
-            placeholder="1/s"
+            placeholder="e.g. 1/s"
             parse={(text) => {
               const parsed = parseRateUnit(text)
               return parsed.ok ? { ok: true, value: parsed.value.text } : parsed

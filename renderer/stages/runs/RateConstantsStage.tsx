@@ -53,7 +53,7 @@ function TableHalf({ table, place, actions }: RateConstantsProps) {
           <TypedField
             label="Unit of k"
             text={table.rateUnit}
-            placeholder="1/s"
+            placeholder="e.g. 1/s"
             parse={(text) => (text.trim() === '' ? { ok: true, value: '' } : unitOf(text))}
             onCommit={(rateUnit) => setTable({ ...table, rateUnit })}
           />

@@ -5,7 +5,7 @@ import type { StudyResult } from '../../../shared-kinetics/contract/study-result
 import { parseHeatingRate } from '../../../shared-kinetics/units/parse-quantity.ts'
 import { count } from '../../sheet/format.ts'
 import { TypedField } from '../../sheet/TypedField.tsx'
-import { runsWithoutDirection, runsWithoutHeatingRate } from './questions.ts'
+import { directionSaid, runsWithoutDirection, runsWithoutHeatingRate } from './questions.ts'
 
 interface RunQuestionsProps {
   readonly document: StudyDocument
@@ -27,7 +27,7 @@ export function RunQuestions({ document, result, onChange }: RunQuestionsProps) 
                 label={`Heating rate of ${run.label}`}
                 hideLabel
                 text=""
-                placeholder="10 K/min"
+                placeholder="e.g. 10 K/min"
                 parse={parseHeatingRate}
                 onCommit={(heatingRate_K_per_s) => onChange({ kind: 'set-run-heating-rate', runId: run.id, heatingRate_K_per_s })}
               />
@@ -40,11 +40,33 @@ export function RunQuestions({ document, result, onChange }: RunQuestionsProps) 
   )
 }
 
+/** What was answered stays in sight, and can be changed for all runs at once. */
+function DirectionSaid({ document, result, onChange }: RunQuestionsProps) {
+  const said = directionSaid(document, result)
+  if (said === null) return null
+  const ways = said === 'mixed' ? (['up', 'down'] as const) : ([said === 'up' ? 'down' : 'up'] as const)
+  return (
+    <p className="quiet-question">
+      Exothermic: {said === 'mixed' ? 'up in some runs, down in others' : said}{' '}
+      {ways.map((way) => (
+        <Button
+          key={way}
+          className="link-button"
+          aria-label={`Change exothermic to ${way}${said === 'mixed' ? ' in every run' : ''}`}
+          onPress={() => onChange({ kind: 'set-exothermic', runId: null, exothermic: way })}
+        >
+          {said === 'mixed' ? `all ${way}` : `change to ${way}`}
+        </Button>
+      ))}
+    </p>
+  )
+}
+
 /** No warning: nothing but the sign of the enthalpy waits for the answer. */
 function DirectionQuestion({ document, result, onChange }: RunQuestionsProps) {
   const runs = runsWithoutDirection(document, result)
   const [first] = runs
-  if (first === undefined) return null
+  if (first === undefined) return <DirectionSaid document={document} result={result} onChange={onChange} />
   const settle = (exothermic: 'up' | 'down'): void => {
     if (runs.length === document.runs.length) onChange({ kind: 'set-exothermic', runId: null, exothermic })
     else for (const run of runs) onChange({ kind: 'set-exothermic', runId: run.id, exothermic })

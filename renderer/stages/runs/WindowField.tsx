@@ -52,11 +52,11 @@ export function WindowField({ window, onSet }: { readonly window: Window | null;
     >
       <TextField className="typed-field" value={ends[0]} onChange={(start) => setEnds([start, ends[1]])}>
         <Label>Window from</Label>
-        <Input placeholder="150 C" ref={firstRef} />
+        <Input placeholder="e.g. 150 C" ref={firstRef} />
       </TextField>
       <TextField className="typed-field" value={ends[1]} onChange={(end) => setEnds([ends[0], end])}>
         <Label>to</Label>
-        <Input placeholder="700 K" />
+        <Input placeholder="e.g. 700 K" />
       </TextField>
       <Button className="button" type="submit">
         Set
