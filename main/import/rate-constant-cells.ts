@@ -2,7 +2,9 @@ import type { DecimalSignWord, DelimiterWord } from '../../shared-kinetics/contr
 import { plainSuperscripts } from '../../shared-kinetics/units/plain-superscripts.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { unitOf } from './file-unit.ts'
+import type { Refuse } from './import-refusal.ts'
 import { isMissingMark, isNumber, parseNumber } from './parse-number.ts'
+import { linesWithinLimits } from './rate-constant-limits.ts'
 import { delimiterCharacter, splitCells, withoutEmptyEnd } from './split-cells.ts'
 
 /** A cell of a small table: a number, with a unit behind it where somebody typed one. */
@@ -29,18 +31,16 @@ export interface CellReading {
 
 const preference: readonly DelimiterWord[] = ['tab', 'semicolon', 'comma', 'pipe', 'blanks']
 
-/** The lines of a text that are not blank; powers of ten as papers print them (`2.1×10⁻⁵`, `2.1 x 10^-5`) become `2.1e-5`. */
-export function linesOf(text: string): readonly NumberedLine[] {
-  return text
-    .replace(/^\ufeff/, '')
-    .split(/\r\n|\n|\r/)
-    .map((line, i) => ({ number: i + 1, text: withPlainPowers(line) }))
-    .filter((line) => line.text.trim() !== '')
-}
+/**
+ * The lines of a text that are not blank, within the limits of a table; powers of ten as papers print them (`2.1×10⁻⁵`, `2.1 x 10^-5`) become `2.1e-5`.
+ * @throws ImportRefusal where the text is larger than a table can be
+ */
+export const linesOf = (text: string, refuse: Refuse): readonly NumberedLine[] =>
+  linesWithinLimits(text.replace(/^\ufeff/, ''), refuse).map((line) => ({ number: line.number, text: withPlainPowers(line.text) }))
 
 const withPlainPowers = (line: string): string =>
   line.replaceAll(
-    /(\d)\s*[×x·⋅*]\s*10\s*(?:\^\s*\(?\s*([-+−]?\d{1,3})\s*\)?|([⁻⁺]?[⁰¹²³⁴⁵⁶⁷⁸⁹]{1,3}))/gi,
+    /(\d)\s*[×x·⋅*]\s*10\s*(?:\^\s*(?:\(\s*)?([-+−]?\d{1,3})(?:\s*\))?|([⁻⁺]?[⁰¹²³⁴⁵⁶⁷⁸⁹]{1,3}))/gi,
     (_, digit: string, plain?: string, raised?: string) => {
       const exponent = plain ?? plainSuperscripts(raised ?? '').slice(1)
       return `${digit}e${exponent.replace('−', '-')}`
@@ -61,7 +61,7 @@ export function cellReadings(
     .flatMap((delimiter) => signs.map((decimal) => readingOf(lines, delimiter, decimal)))
     .filter((reading) => reading.score > 0)
     .toSorted((a, b) => b.score - a.score)
-  const rowsParted = Math.max(...readings.filter(({ delimiter }) => delimiter !== 'blanks').map(dataRows))
+  const rowsParted = readings.reduce((most, reading) => (reading.delimiter === 'blanks' ? most : Math.max(most, dataRows(reading))), 0)
   return readings.filter((reading) => reading.delimiter !== 'blanks' || dataRows(reading) > rowsParted)
 }
 
@@ -86,22 +86,35 @@ function readingOf(lines: readonly NumberedLine[], delimiter: DelimiterWord, dec
   return { delimiter, decimal, rows, score, hasSigns }
 }
 
-function cellsOf(text: string, delimiter: DelimiterWord, decimal: DecimalSignWord): readonly string[] {
+function cellsOf(line: string, delimiter: DelimiterWord, decimal: DecimalSignWord): readonly string[] {
+  // A run of blanks means no more than one of them, and patterns would try each way of sharing it out.
+  const text = delimiter === 'tab' ? line.replaceAll(/[^\S\t]{2,}/g, ' ') : line.replaceAll(/\s{2,}/g, ' ')
   if (delimiter !== 'blanks')
     return text.includes(delimiterCharacter[delimiter]) ? withoutEmptyEnd(splitCells(text, delimiter)) : [text.trim()]
   // Where blanks part the cells, a unit belongs to the number before it, and a bracket to the name before it.
-  const joined: string[] = []
+  const joined: string[][] = []
+  let isBracketOpen = false
   for (const cell of splitCells(text, 'blanks')) {
     const last = joined.at(-1)
-    const isUnit = last !== undefined && isNumber(last, decimal) && !isNumber(cell, decimal) && isUnitText(cell)
-    if (last !== undefined && (isUnit || /^[([{/]/.test(cell) || (/[([{][^)\]}]*$/.test(last) && !isNumber(cell, decimal)))) {
-      joined[joined.length - 1] = `${last} ${cell}`
-    } else joined.push(cell)
+    const [only = ''] = last ?? []
+    const isUnit = last?.length === 1 && isNumber(only, decimal) && !isNumber(cell, decimal) && isUnitText(cell)
+    if (last !== undefined && (isUnit || /^[([{/]/.test(cell) || (isBracketOpen && !isNumber(cell, decimal)))) last.push(cell)
+    else {
+      joined.push([cell])
+      isBracketOpen = false
+    }
+    const opened = lastOf(cell, '(', '[', '{')
+    const closed = lastOf(cell, ')', ']', '}')
+    if (opened !== closed) isBracketOpen = opened > closed
   }
-  return joined
+  return joined.map((parts) => parts.join(' '))
 }
 
-export const isUnitText = (text: string): boolean => unitOf(text)?.dimension === 'temperature' || parseRateUnit(text).ok
+const lastOf = (text: string, ...signs: readonly string[]): number => Math.max(...signs.map((sign) => text.lastIndexOf(sign)))
+
+/** A unit is short: a longer text is not looked through for one. */
+export const isUnitText = (text: string): boolean =>
+  text.length <= 60 && (unitOf(text)?.dimension === 'temperature' || parseRateUnit(text).ok)
 
 /** `298.15`, `25 °C`, `25°C`, `3.5e-5 1/s`; null for what is no number with or without a unit. */
 export function numberCell(cell: string, decimal: DecimalSignWord): NumberCell | null {

@@ -2,6 +2,7 @@ import type { RateConstantReadOptions } from '../../shared-kinetics/contract/rat
 import type { RateConstantNote } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { quoted, type Refuse } from './import-refusal.ts'
 import { isUnitText, type CellReading } from './rate-constant-cells.ts'
+import { rateConstantTextLimits } from './rate-constant-limits.ts'
 import { rateConstantHeading, type RateConstantColumn } from './rate-constant-heading.ts'
 
 type Of<Role extends RateConstantColumn['role']> = Extract<RateConstantColumn, { role: Role }>
@@ -35,13 +36,21 @@ export function planRateConstantColumns(
   notes: RateConstantNote[],
 ): RateConstantColumns {
   const first = reading.rows.findIndex((row) => row.isData)
-  const width = Math.max(...reading.rows.filter((row) => row.isData).map((row) => row.cells.length))
+  const width = reading.rows.reduce((widest, row) => (row.isData ? Math.max(widest, row.cells.length) : widest), 0)
   const above = reading.rows.slice(0, first).toReversed()
   const unitRow = above[0]?.cells.filter((cell) => cell !== '').every((cell) => isUnitText(cell) || /^[([].*[)\]]$|^-$/.test(cell)) === true
   const [nearest, next] = above
   const namesRow = unitRow && next !== undefined && next.cells.length >= 2 ? next : nearest
   if (namesRow === undefined) return bareColumns(width, reading.rows[first]?.line ?? 1, options, refuse, notes)
   const units = namesRow === next ? (nearest?.cells ?? []) : []
+  const long = [...namesRow.cells, ...units].find((cell) => cell.length > rateConstantTextLimits.headingCharacters)
+  if (long !== undefined) {
+    throw refuse(
+      namesRow.line,
+      `The heading ${quoted(long)} has ${long.length} characters; at most ${rateConstantTextLimits.headingCharacters} are read.`,
+      'Shorten it to a name and a unit, for example “k (1/s)”.',
+    )
+  }
   const headings = namesRow.cells.map((cell, i) => withUnit(cell.replace(/^#+\s*/, ''), units[i] ?? ''))
   if (headings.length < width) {
     throw refuse(
@@ -114,7 +123,10 @@ function byHeadings(
     notes.push({
       code: 'columns-set-aside',
       severity: 'note',
-      message: `Columns that are neither temperature nor rate constant were set aside: ${other.map((item) => quoted(item.label)).join(', ')}.`,
+      message: `Columns that are neither temperature nor rate constant were set aside: ${other
+        .slice(0, 10)
+        .map((item) => quoted(item.label))
+        .join(', ')}${other.length > 10 ? ', …' : ''}.`,
       evidence: { columns: other.length },
     })
   }

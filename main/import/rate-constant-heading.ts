@@ -142,18 +142,22 @@ function unitPart(rest: string, form: 'k' | 'ln' | 'log10'): UnitPart | null {
   return below.ok ? { ...base, text: below.value.text, isTimes: false, remark: `its unit was read as ${below.value.text}` } : null
 }
 
-/** Without brackets around the whole. */
+/** Without brackets around the whole; one pass, however deep they are. */
 function unwrapped(text: string): string {
-  const match = /^[([{]\s*(.*?)\s*[)\]}]$/.exec(text)
-  const inside = match?.[1]
-  if (inside === undefined) return text
-  let depth = 0
-  for (const sign of inside) {
-    if (/[([{]/.test(sign)) depth++
-    if (/[)\]}]/.test(sign)) depth--
-    if (depth < 0) return text
+  const closedAt = new Map<number, number>()
+  const open: number[] = []
+  for (let i = 0; i < text.length; i++) {
+    if ('([{'.includes(text.charAt(i))) open.push(i)
+    else if (')]}'.includes(text.charAt(i))) closedAt.set(open.pop() ?? -1, i)
   }
-  return unwrapped(inside)
+  let [from, to] = [0, text.length]
+  while (closedAt.get(from) === to - 1) {
+    from++
+    to--
+    while (text[from] === ' ') from++
+    while (to > from && text[to - 1] === ' ') to--
+  }
+  return text.slice(from, to)
 }
 
 function uncertainty(heading: string): RateConstantColumn {

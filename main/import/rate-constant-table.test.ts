@@ -26,6 +26,7 @@ const isTableOrRefusal = (text: string): boolean => {
     return error instanceof ImportRefusal
   }
 }
+const run = (sign: string, times: number): string => sign.repeat(times)
 const pairs = (table: RateConstantTable): number[][] => table.rows.map((row) => [row.temperature_K, row.rateConstant])
 const codes = (table: RateConstantTable): string[] => table.notes.map((note) => note.code)
 
@@ -195,6 +196,58 @@ describe('what is not guessed', () => {
     expect(refusal(`T (K),k (1/s)\n${'300,1\n'.repeat(1001)}`).message).toMatch(/at most 1000/)
     expect(() => readRateConstantFile('t.xlsx', new Uint8Array([0x50, 0x4b, 3, 4, 5]), {})).toThrow(/spreadsheet/)
     expect(() => readRateConstantFile('t.csv', new Uint8Array(), {})).toThrow(/empty/)
+  })
+})
+
+describe('a text that is larger than a table', () => {
+  const rows = '\n300,1\n310,2'
+
+  it.each([
+    ['blanks in a heading', `T (K),k${run(' ', 32_000)}x${rows}`, /line 1: The line has 32008 characters; .* at most 2000\. Keep/],
+    ['brackets in a heading', `T (K),k ${run('(', 8000)}${run(')', 8000)}${rows}`, /line 1: The line has 16008 characters/],
+    ['headings without end', `${run('T (K),', 80_000)}${rows}`, /line 1: The line has 480000 characters/],
+    ['many columns', `${run('T,', 64)}k${rows}`, /line 1: The line has 65 cells; .* at most 64 columns\. Give one row/],
+    ['many columns between blanks', `300${run(' 310', 64)}`, /line 1: The line has 65 cells/],
+    ['a long heading', `T (K),k ${run('x', 200)}${rows}`, /line 1: The heading “k x+…” has 202 characters; at most 200 are read\. Shorten/],
+    ['many remarks', `${run('remark\n', 1200)}T (K),k${rows}`, /line 1201: The text has 1203 lines; .* at most 1000 rows\. Keep/],
+    [
+      'a long file of numbers',
+      run('300,1\n', 200_000),
+      /line 1201: The text has 200000 lines; a table of rate constants holds at most 1000 rows\. Keep/,
+    ],
+  ])('%s is refused by its line', (_, text, message) => {
+    expect(refusal(text).message).toMatch(message)
+  })
+
+  it('within the limits, brackets and blanks are looked through once', () => {
+    const lines = [
+      `k ${run('(', 95)}${run(')', 95)}`,
+      `1x10^${run(' ', 1900)}`,
+      `a${run(' (', 990)}`,
+      `1${run(' \t', 60)}x10${run(' \t', 3)}`,
+      run('( ', 1000),
+    ]
+    for (const line of lines) {
+      expect(isTableOrRefusal(`${run(`${line}\n`, 300)}T (K),k (1/s)${rows}`)).toBe(true)
+      expect(isTableOrRefusal(`T (K),${line}${rows}`)).toBe(true)
+    }
+    expect(rateConstantHeading(`k ${run('(', 8000)}1/s${run(')', 8000)}`)).toMatchObject({ role: 'rate-constant', unit: '1/s' })
+    expect(rateConstantHeading(`k ( ( 1/s )${run(' ', 8000)} )`)).toMatchObject({ role: 'rate-constant', unit: '1/s' })
+    expect(rateConstantHeading('k (1/s) (2)')).toMatchObject({ role: 'unclear' })
+  })
+
+  it('as many lines and columns as allowed are read, and the note on columns stays short', () => {
+    const names = Array.from({ length: 62 }, (_, i) => `a heading that nobody can know, number ${i}`.replace(',', ' '))
+    const table = read(`T (K);k (1/s);${names.join(';').slice(0, 1900)}\n300;1\n310;2`)
+    expect(table.rows).toHaveLength(2)
+    expect(table.notes.every((note) => note.message.length <= 1000)).toBe(true)
+    expect(read(`${run('remark\n', 199)}T (K),k (1/s)\n${run('300,1\n', 1000)}`).rows).toHaveLength(1000)
+  })
+
+  it('blanks part units in brackets from names as before', () => {
+    const table = read('T ( K )   k  ( 1/s )\n298   3.46e-5\n308   1.35e-4')
+    expect(table.rateUnit).toBe('1/s')
+    expect(table.rows.map((row) => row.temperature_K)).toEqual([298, 308])
   })
 })
 

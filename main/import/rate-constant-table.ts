@@ -47,7 +47,7 @@ export function readRateConstantText(input: RateConstantText, options: RateConst
     const stated = parseRateUnit(options.rateUnit)
     if (!stated.ok) throw refuse(null, `The unit stated for the rate constants is not known: ${stated.reason}.`, unitRemedy)
   }
-  const lines = linesOf(input.text)
+  const lines = linesOf(input.text, refuse)
   const readings = cellReadings(lines, options)
   const [best] = readings
   if (best === undefined) {
