@@ -78,7 +78,7 @@ export function EnergyProfile(props: ActivationProps) {
           <LevelTable {...props} />
         </>
       ) : (
-        <Peaks methods={result.peakMethods} />
+        <Peaks methods={result.peakMethods} signal={result.signal} />
       )}
       <Foot {...props} beneath={beneath} />
     </Half>

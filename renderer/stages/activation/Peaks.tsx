@@ -1,13 +1,13 @@
 import { useState, type KeyboardEvent } from 'react'
-import type { PeakMethodResult } from '../../../shared-kinetics/contract/study-result.ts'
+import type { PeakMethodResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
 import { NumberCell } from '../../sheet/DataTable.tsx'
 import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
 import { TableView } from '../../sheet/TableView.tsx'
-import { ownNumbers, peakColumns, peakCopyColumns, peakKey, peakName } from './peak-rows.ts'
+import { ownNumbers, peakColumns, peakCopyColumns, peakKey, peakName, peakNote } from './peak-rows.ts'
 
 /** What the rate peaks, and single runs, say: one row a method, and of the row picked out what to know before relying on it. Up and down, or a click, pick a row. */
-export function Peaks({ methods }: { readonly methods: readonly PeakMethodResult[] }) {
+export function Peaks({ methods, signal }: { readonly methods: readonly PeakMethodResult[]; readonly signal: StudyResult['signal'] }) {
   const [wanted, setWanted] = useState<string | null>(null)
   const found = methods.findIndex((one) => peakKey(one) === wanted)
   const index = found < 0 ? 0 : found
@@ -45,7 +45,11 @@ export function Peaks({ methods }: { readonly methods: readonly PeakMethodResult
                 </th>
               ))}
               <th scope="col">
+                <span>Note</span>
+              </th>
+              <th scope="col">
                 <span>Own numbers</span>
+                <span className="unit">± standard error</span>
               </th>
             </tr>
           </thead>
@@ -55,7 +59,8 @@ export function Peaks({ methods }: { readonly methods: readonly PeakMethodResult
               <tr key={peakKey(row)} aria-current={i === index ? 'true' : undefined} onClick={() => setWanted(peakKey(row))}>
                 <th scope="row">{peakName(row)}</th>
                 {row.applies && peakColumns.map((column) => <NumberCell key={column.id} text={column.text(row)} />)}
-                <td className="peak-own" colSpan={row.applies ? 1 : peakColumns.length + 1}>
+                {row.applies && <td className="peak-note">{peakNote(row, signal)}</td>}
+                <td className="peak-own" colSpan={row.applies ? 1 : peakColumns.length + 2}>
                   {row.applies ? ownNumbers(row) : `Does not apply. ${ownNumbers(row)}`}
                 </td>
               </tr>

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { PeakMethodResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
-import { ownNumbers, peakColumns, peakCopyColumns, peakName } from './peak-rows.ts'
+import { ownNumbers, peakColumns, peakCopyColumns, peakName, peakNote } from './peak-rows.ts'
 
 const e698: PeakMethodResult = {
   method: 'astm-e698',
@@ -63,6 +63,15 @@ describe('rows of peak and single-run methods', () => {
       at('conversion-at-peak-first-order', 0.612),
     ]
     expect(ownNumbers({ ...e698, numbers })).toBe('peaks at α 0.78 to 0.82, of a first-order reaction at 0.61')
+  })
+
+  it('say in the row what nobody may overlook', () => {
+    expect(peakNote({ ...e698, method: 'borchardt-daniels' }, 'heat-flow')).toBe('not to be relied on alone')
+    expect(peakNote({ ...e698, method: 'borchardt-daniels' }, 'mass')).toBe('not to be relied on alone; standard is for DSC')
+    expect(peakNote(e698, 'mass')).toBe('standard is for DSC')
+    expect(peakNote(e698, 'heat-flow')).toBe('')
+    expect(peakNote({ ...e698, method: 'kissinger' }, 'mass')).toBe('')
+    expect(peakNote(nothing, 'mass')).toBe('')
   })
 
   it('name a single-run method by its run', () => {

@@ -1,4 +1,4 @@
-import type { Maybe, PeakMethodNumber, PeakMethodResult } from '../../../shared-kinetics/contract/study-result.ts'
+import type { Maybe, PeakMethodNumber, PeakMethodResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { kelvinToCelsius } from '../../../shared-kinetics/units/convert.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
 import { decimals, formatCelsius, formatInterval, formatLevel, halfWidth } from '../../sheet/format.ts'
@@ -22,7 +22,7 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
   {
     id: 'interval',
     heading: '±\u00a095\u00a0%',
-    unit: 'kJ/mol',
+    unit: 'kJ/mol, Student-t',
     numeric: true,
     text: (row) => formatInterval(row.Ea_kJ_per_mol, row.lower95_kJ_per_mol, row.upper95_kJ_per_mol),
     value: (row) => halfWidth(row.lower95_kJ_per_mol, row.upper95_kJ_per_mol),
@@ -30,8 +30,8 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
   },
   {
     id: 'lnA',
-    heading: 'ln A ± s.e.',
-    unit: 'A in 1/s',
+    heading: 'ln A',
+    unit: '± standard error, A in 1/s',
     numeric: true,
     text: ({ lnA_per_s: lnA, lnAStandardError: error }) => withError(decimals(lnA, 2), decimals(error, 2)),
     value: ({ lnA_per_s: lnA }) => lnA,
@@ -49,6 +49,16 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
 ]
 
 const withError = (text: string, error: string): string => (text === '' || error === '' ? text : `${text} ±\u00a0${error}`)
+
+const standardsForDsc: ReadonlySet<PeakMethodResult['method']> = new Set(['astm-e698', 'astm-e2890', 'borchardt-daniels'])
+
+/** What nobody may overlook who reads no further than the row; the remarks say it at length. */
+export function peakNote({ method, applies }: PeakMethodResult, signal: StudyResult['signal']): string {
+  if (!applies) return ''
+  const alone = method === 'borchardt-daniels' ? ['not to be relied on alone'] : []
+  const dsc = standardsForDsc.has(method) && signal !== null && signal !== 'heat-flow' ? ['standard is for DSC'] : []
+  return [...alone, ...dsc].join('; ')
+}
 
 /** A method's own numbers in words, or the reason why it does not apply. */
 export function ownNumbers({ applies, reason, numbers }: PeakMethodResult): string {
@@ -104,8 +114,8 @@ export function peakCopyColumns(): readonly DataColumn<PeakMethodResult>[] {
     textColumn('run', 'Run', ({ runLabel }) => runLabel ?? 'all'),
     ...[Ea, interval]
       .filter((column) => column !== undefined)
-      .map((column) => ({ ...column, heading: column.id === 'Ea' ? column.heading : '± 95 %, Student-t' })),
-    ...(lnA === undefined ? [] : [{ ...lnA, heading: 'ln A' }]),
+      .map((column) => ({ ...column, heading: column.id === 'Ea' ? column.heading : '± 95 %, Student-t', unit: 'kJ/mol' })),
+    ...(lnA === undefined ? [] : [{ ...lnA, unit: 'A in 1/s' }]),
     numberColumn('lnA-error', 's.e. of ln A', '', ({ lnAStandardError }) => lnAStandardError),
     ...(r2 === undefined ? [] : [r2]),
     numberColumn('confirmation', 'temperature of a half-life of 60 min', '°C', ({ numbers }) => {
