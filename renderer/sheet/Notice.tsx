@@ -10,7 +10,7 @@ export interface NoticeProps {
   readonly onDismiss: () => void
 }
 
-/** One sentence about what was done or what went wrong. What was done lies over the study's name, where no number is read, and nothing moves for it. */
+/** One sentence about what was done or what went wrong. What was done lies beneath the study's name, where no number is read, and nothing moves for it. */
 export function Notice({ kind, text, onDismiss }: NoticeProps) {
   useEffect(() => {
     if (kind === 'failure') return

@@ -17,7 +17,7 @@ export interface TopLineProps {
   readonly onFinding: (severity: Severity) => void
   readonly mark: ReactNode
   readonly menus: ReactNode
-  /** A word about what was just done; it lies over the study's name for its short time. */
+  /** A word about what was just done; it lies beneath the study's name for its short time. */
   readonly notice: ReactNode
 }
 
