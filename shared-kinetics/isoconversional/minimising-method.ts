@@ -1,9 +1,8 @@
 import { fQuantile } from '../numerics/f-distribution.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
-import { logIntegralTable } from '../uncertainty/log-integral-table.ts'
-import { vyazovkinWight } from '../uncertainty/vyazovkin-wight.ts'
 import { column } from '../units/quantity.ts'
 import { energies, energyGrid, gridPointBelow, readBetween, type EnergyGrid } from './energy-grid.ts'
+import { logIntegralTable } from './log-integral-table.ts'
 import { phiAround, phiOverRange, type ReadIntegrals } from './phi-curve.ts'
 import { PhiLater } from './phi-later.ts'
 import { findPhiMinimum } from './phi-minimum.ts'
@@ -12,6 +11,7 @@ import type { EnergyInterval, IntervalStatus, IsoconversionalMethod, LevelPhi, M
 import { checkSeries, countProgrammes } from './series-check.ts'
 import { scanInOrder, scanOverGrid, type SlopeScan } from './slope-scan.ts'
 import type { TimeIntegral } from './time-integral.ts'
+import { vyazovkinWight } from './vyazovkin-wight.ts'
 
 /**
  * Makes a method that takes, at each level, the Ea at the minimum of Phi over the runs' integrals of exp(-Ea/(R T)) dt, which is what tells one such method from

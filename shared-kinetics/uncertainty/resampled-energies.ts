@@ -1,6 +1,7 @@
 import { constantRateIntegral } from '../isoconversional/constant-rate-integral.ts'
 import { largestEa, smallestEa } from '../isoconversional/energy-grid.ts'
 import { heatingRateOf } from '../isoconversional/line-method.ts'
+import { logIntegralTable } from '../isoconversional/log-integral-table.ts'
 import { methods } from '../isoconversional/registry.ts'
 import type { IsoconversionalResult, LevelPoints, MethodId, TaskContext } from '../isoconversional/result.ts'
 import { segmentIntegral } from '../isoconversional/segment-integral.ts'
@@ -9,7 +10,6 @@ import { guardedNewton } from '../numerics/guarded-newton.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { quantity } from '../units/quantity.ts'
-import { logIntegralTable } from './log-integral-table.ts'
 
 /** Ea in J/mol at every level from the runs taken so many times each (0: left out); NaN where they do not determine it, or the method gives none with all runs. */
 export type ResampledEnergies = (times: ArrayLike<number>) => Float64Array

@@ -1,6 +1,6 @@
-import { largestEa, smallestEa } from '../isoconversional/energy-grid.ts'
-import type { TimeIntegral } from '../isoconversional/time-integral.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
+import { largestEa, smallestEa } from './energy-grid.ts'
+import type { TimeIntegral } from './time-integral.ts'
 
 /** Places are 2 % of Ea apart. */
 const lnStep = Math.log(1.02)

@@ -1,10 +1,10 @@
 import { describe, expect, it } from 'vitest'
 import disturbed from '../check-values/computed/disturbed-line.json'
-import { constantRateIntegral } from '../isoconversional/constant-rate-integral.ts'
 import { fQuantile } from '../numerics/f-distribution.ts'
 import { lnPOfX } from '../temperature-integral/p-of-x.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column, quantity } from '../units/quantity.ts'
+import { constantRateIntegral } from './constant-rate-integral.ts'
 import { vyazovkinWight, type LogIntegralReader } from './vyazovkin-wight.ts'
 
 /** Reader of ln J at one level, from heating rates in K/min and temperatures in K. */

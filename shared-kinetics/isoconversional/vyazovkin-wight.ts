@@ -1,6 +1,6 @@
-import { largestEa, smallestEa } from '../isoconversional/energy-grid.ts'
 import { guardedNewton } from '../numerics/guarded-newton.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
+import { largestEa, smallestEa } from './energy-grid.ts'
 
 /** The F-type interval of one level. */
 export interface VarianceRatioInterval {
