@@ -84,7 +84,8 @@ describe('a study saved before studies held measured uncertainties and rate cons
   it('opens from the data folder as well', async () => {
     const { folder, studyId } = await folderOfThen()
     const host = hostOn(folder)
-    await host.call('study.open-recent', { studyId })
+    const { document } = await host.call('study.open-recent', { studyId })
+    expect(document.id).toBe(studyId)
     await expectWhole(host)
   })
 })
