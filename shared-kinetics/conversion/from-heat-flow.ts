@@ -5,6 +5,7 @@ import { cellMeans } from '../signal/cell-means.ts'
 import { lowerBound } from '../signal/lower-bound.ts'
 import { noiseOf } from '../signal/noise.ts'
 import { findQuietEnds, lowestPeak, type QuietStretch } from '../signal/quiet-ends.ts'
+import { kelvinToCelsius } from '../units/convert.ts'
 import type { Column } from '../units/quantity.ts'
 import type { Converted, HeatFlowBaseline } from './converted.ts'
 import { fromPartialArea } from './partial-area.ts'
@@ -45,7 +46,7 @@ export function fromHeatFlow(
   if (!(Math.abs(quiet.height) > lowestPeak * noise)) throw noPeak(label)
   const { standing } = quiet
   // At the start a drift that the furnace leaves behind can stand as high, with the whole peak after it: that is for a person to judge.
-  if (standing.after > highestStanding) throw cutPeak(label, standing.after)
+  if (standing.after > highestStanding) throw cutPeak(label, standing.after, temperature_K)
   const drawn: DrawnBaseline =
     kind === 'straight'
       ? { passes: 'with-time', lines: endLines(time_s, heatFlow) }
@@ -71,14 +72,16 @@ const noPeak = (label: string): KineticsError =>
     },
   )
 
-function cutPeak(label: string, standing: number): KineticsError {
+function cutPeak(label: string, standing: number, temperature_K: Column<'K'>): KineticsError {
   return new KineticsError(
     'empty-window',
     `${label}: at the end of the window the heat flow stands at ${Math.round(100 * standing)} % of the height of its peak, so that neither baseline nor area ` +
-      'can be told. Widen the window to the whole peak, or measure further.',
+      `can be told. The window used is ${inWords(temperature_K[0])} to ${inWords(temperature_K.at(-1))}. Widen the window to the whole peak, or measure further.`,
     { run: label, standingAtEnd: standing },
   )
 }
+
+const inWords = (kelvin = Number.NaN): string => `${kelvin.toFixed(2)} K (${kelvinToCelsius(kelvin).toFixed(2)} °C)`
 
 type Stretch = Pick<QuietStretch, 'inner' | 'outer'>
 

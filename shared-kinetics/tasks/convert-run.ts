@@ -1,3 +1,4 @@
+import { KineticsError } from '../errors.ts'
 import type { Converted } from '../conversion/converted.ts'
 import { fromColumn } from '../conversion/from-column.ts'
 import { fromHeatFlow } from '../conversion/from-heat-flow.ts'
@@ -48,7 +49,7 @@ export interface ConversionSettings {
 }
 
 /** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
-export const convertRunVersion = 4
+export const convertRunVersion = 5
 
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
@@ -59,8 +60,7 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
   const { quantity } = settings
   const usable = usableRows(columns, settings.signalIndex, info.nominalHeatingRate, info.label)
   const rows = pooledRows(usable)
-  const range = rowsToUse(rows, settings, info.label)
-  const converted = convert(rows, range, settings, info.label)
+  const { range, converted } = convertedInWindow(rows, settings, info.label)
   const { reaction } = converted.curve
   const told = tellProgramme(rows.time_s, rows.temperature_K, range.first + reaction.first, range.first + reaction.last, rows.rebuiltFrom)
   return {
@@ -91,6 +91,23 @@ function startOfTheHold(
 
 /** Whether the window that is found is all of the main heating. */
 const foundWhole = ({ quantity, window }: ConversionSettings): boolean => window === null && quantity !== 'heat-flow'
+
+/**
+ * The conversion in the window that was set, or in the one found. That for a straight baseline begins and ends close to the peak, and where it cuts the peak short although
+ * the record goes on, the wider one for tangents is taken.
+ */
+function convertedInWindow(rows: UsableRows, settings: ConversionSettings, label: string): Pick<ConvertedRun, 'range' | 'converted'> {
+  const range = rowsToUse(rows, settings, label)
+  try {
+    return { range, converted: convert(rows, range, settings, label) }
+  } catch (error) {
+    const isFound = settings.window === null && settings.quantity === 'heat-flow' && settings.baseline === 'straight'
+    if (!isFound || !(error instanceof KineticsError) || error.details['standingAtEnd'] === undefined) throw error
+    const wider = findWindow(rows.time_s, rows.temperature_K, rows.signal, 'peak-with-tangents')
+    if (wider.first === range.first && wider.last === range.last) throw error
+    return { range: wider, converted: convert(rows, wider, settings, label) }
+  }
+}
 
 function rowsToUse(rows: UsableRows, { quantity, window, baseline }: ConversionSettings, label: string): RowRange {
   if (window !== null) return rowsInWindow(rows.time_s, rows.temperature_K, window, label)
