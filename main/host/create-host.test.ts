@@ -96,6 +96,34 @@ describe('importing files', () => {
     expect(await labels(host)).toEqual([])
   })
 
+  it.each(['evaluate', 'uncertainty'] as const)('goes on when other work is cancelled: %s', async (work) => {
+    const tasks = sampleTasks()
+    let begun = (): void => undefined
+    const reading = new Promise<void>((resolve) => {
+      begun = resolve
+    })
+    let goOn = (): void => undefined
+    const asked = new Promise<void>((resolve) => {
+      goOn = resolve
+    })
+    const pool = createInProcessPool({
+      ...tasks,
+      'import-file': async (input, context) => {
+        begun()
+        await asked
+        context.checkCancelled()
+        return tasks['import-file'](input, context)
+      },
+    })
+    const host = start({ pool })
+    const importing = importTexts(host, { 'a.csv': 'rate 5' })
+    await reading
+    await host.call('work.cancel', { work })
+    goOn()
+    expect((await importing).refused).toEqual([])
+    expect(await labels(host)).toEqual(['a'])
+  })
+
   it('opens the demo as a study of its own', async () => {
     const host = start()
     await importTexts(host, { 'a.csv': 'rate 5' })

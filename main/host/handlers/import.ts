@@ -6,9 +6,16 @@ export function importHandlers(context: HandlerContext): Pick<HandlerTable, 'run
   return {
     'runs.import': async ({ uploadIds, noteLeftOut }) => importFiles(context, context.uploads.take(uploadIds), noteLeftOut),
     'work.cancel': ({ work }) => {
-      if (work === 'evaluate') context.evaluation.cancel()
-      if (work === 'uncertainty') context.uncertainty.cancel()
-      else for (const running of context.imports) running.abort()
+      switch (work) {
+        case 'evaluate':
+          context.evaluation.cancel()
+          break
+        case 'uncertainty':
+          context.uncertainty.cancel()
+          break
+        default:
+          for (const running of context.imports) running.abort()
+      }
       return {}
     },
   }
