@@ -102,6 +102,30 @@ describe('the worker pool', () => {
     await expect(pool.run('import-file', file('a.csv'))).rejects.toBeInstanceOf(Cancelled)
   })
 
+  it('keeps an evaluation for the worker that has its steps, while that one ends what was cancelled', async () => {
+    start(2)
+    const { emptyStudy } = await import('../../shared-kinetics/contract/study-document.ts')
+    const input = { study: { runs: [], settings: emptyStudy('a').settings }, columns: new Map() }
+    const evaluatedBy = async (): Promise<number | undefined> => (await pool.run('evaluate-study', input)).levels[0]
+    const home = await evaluatedBy()
+    const stop = new AbortController()
+    // Cancelled within the home worker, which has not yet said so when the evaluation is asked for.
+    let again: Promise<number | undefined> | null = null
+    const cancelled = rejectionOf(
+      pool.run('import-file', file('spin'), {
+        signal: stop.signal,
+        progress: () => {
+          if (again !== null) return
+          stop.abort()
+          again = evaluatedBy()
+        },
+      }),
+    )
+    expect(await cancelled).toBeInstanceOf(Cancelled)
+    expect(home).toBeGreaterThan(0)
+    expect(await again).toBe(home)
+  })
+
   it('refuses a task it does not know', async () => {
     const unknown: unknown = await (start() as unknown as { run(name: string, input: unknown): Promise<unknown> })
       .run('toString', {})

@@ -90,7 +90,8 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
     const home = [...slots].find((slot) => slot.known.has(cache))
     if (home !== undefined && cached.has(job.message.task)) {
       if (home.job === null) return home
-      if (cacheOf(home.job.message.task) === cache) return null
+      // A cancelled task of any kind soon gives its worker back, or loses it.
+      if (cacheOf(home.job.message.task) === cache || Atomics.load(home.job.message.cancelFlag, 0) !== 0) return null
     }
     const idle = [...slots].filter((slot) => slot.job === null)
     return idle.find((slot) => slot.known.has(cache)) ?? idle[0] ?? (slots.size < workers ? startWorker() : null)

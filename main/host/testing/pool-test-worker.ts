@@ -1,4 +1,4 @@
-import { parentPort } from 'node:worker_threads'
+import { parentPort, threadId } from 'node:worker_threads'
 import type { ToWorker } from '../../../shared-kinetics/contract/task-messages.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
 import { answerTask } from '../answer-task.ts'
@@ -11,6 +11,8 @@ port?.on('message', (message: ToWorker) => {
   void answerTask(
     {
       ...tasks,
+      // Says which thread it ran in.
+      'evaluate-study': async (input, context) => ({ ...(await tasks['evaluate-study'](input, context)), levels: [threadId] }),
       'import-file': (input, context) => {
         if (input.fileName === 'exit') process.exit(3)
         if (input.fileName === 'throw later') setTimeout(() => void Promise.reject(new Error('lost its way')))
