@@ -1,29 +1,24 @@
-import { KineticsError } from '../../../shared-kinetics/errors.ts'
+import { checkRevision } from './check-revision.ts'
 import type { HandlerContext, HandlerTable } from './handler-table.ts'
 import { tableOf } from './rate-constants.ts'
 
 /** Results of the study, and files made from them. */
 export function evaluateHandlers(context: HandlerContext): Pick<HandlerTable, 'study.evaluate' | 'study.uncertainty' | 'results.export'> {
   const { workspace, evaluation, uncertainty, parts, version } = context
-  const checkRevision = (seen: number): void => {
-    const current = workspace.session.revision
-    if (seen === current) return
-    throw new KineticsError('revision-conflict', 'The study has changed since this page last saw it. Read it again.', { seen, current })
-  }
   return {
     'study.evaluate': async ({ revision }) => {
-      checkRevision(revision)
+      checkRevision(workspace, revision)
       uncertainty.cancelUnless(revision)
       return { revision, result: await evaluation.of(revision) }
     },
     'study.uncertainty': async ({ revision }) => {
-      checkRevision(revision)
+      checkRevision(workspace, revision)
       // First what it rests on: the worker then has every step of it at hand.
       await evaluation.of(revision)
       return { revision, result: await uncertainty.of(revision) }
     },
     'results.export': async ({ revision, format, tableStyle, of, withUncertainty = false }) => {
-      checkRevision(revision)
+      checkRevision(workspace, revision)
       const { document } = workspace.session
       const isTable = of === undefined ? document.runs.length === 0 && document.rateConstants !== null : of === 'rate-constants'
       if (isTable) {

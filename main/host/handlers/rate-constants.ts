@@ -8,6 +8,7 @@ import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts
 import { refusedFile } from '../../import/import-refusal.ts'
 import { RateConstantQuestion } from '../../import/rate-constant-question.ts'
 import { readRateConstantFile, readRateConstantText } from '../../import/rate-constant-table.ts'
+import { checkRevision } from './check-revision.ts'
 import type { HandlerContext, HandlerTable } from './handler-table.ts'
 
 /** Tables of rate constants: read from text or a file, and evaluated. Reading changes nothing. */
@@ -15,11 +16,6 @@ export function rateConstantHandlers(
   context: HandlerContext,
 ): Pick<HandlerTable, 'rate-constants.read-text' | 'rate-constants.read-file' | 'rate-constants.from-holds' | 'rate-constants.evaluate'> {
   const { workspace, pool, uploads } = context
-  const checkRevision = (seen: number): void => {
-    const current = workspace.session.revision
-    if (seen === current) return
-    throw new KineticsError('revision-conflict', 'The study has changed since this page last saw it. Read it again.', { seen, current })
-  }
   return {
     'rate-constants.read-text': ({ text, source = 'pasted', options = {} }) =>
       answer(() =>
@@ -32,7 +28,7 @@ export function rateConstantHandlers(
       return answer(() => readRateConstantFile(file.fileName, new Uint8Array(file.bytes), options))
     },
     'rate-constants.from-holds': async ({ revision, model, zeroInTime = 'free', range = [0.1, 0.9] }) => {
-      checkRevision(revision)
+      checkRevision(workspace, revision)
       const holds = holdsOf(await context.evaluation.of(revision))
       const table = rateConstantsOfHolds(holds, reactionModels[model], { zeroInTime, range: [range[0], range[1]] })
       if (table.rows.length > 0) return { table }
@@ -40,7 +36,7 @@ export function rateConstantHandlers(
       throw new KineticsError('bad-request', `No rate constant can be made from the runs of this study. ${why}`, { runs: holds.length })
     },
     'rate-constants.evaluate': async ({ revision }) => {
-      checkRevision(revision)
+      checkRevision(workspace, revision)
       return { revision, result: await pool.run('evaluate-rate-constants', { table: tableOf(workspace.session.document.rateConstants) }) }
     },
   }
