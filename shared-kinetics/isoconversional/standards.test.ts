@@ -65,7 +65,7 @@ describe('ASTM E1641', () => {
     const [below, here, above] = [at(-0.02), at(0), at(0.02)]
     const perSlope = (above.Ea[0]! - below.Ea[0]!) / (above.lines[0]!.slope_K - below.lines[0]!.slope_K)
     expect(Math.abs(here.points[0]!.energyPerSlope / perSlope - 1)).toBeLessThan(2e-3)
-    // Residuals and 1/T give the standard error of the slope by the textbook's formula.
+    // Residuals and 1/T give the standard error of the slope by the formula of least squares.
     const inverse = scattered.map((value) => 1 / value)
     const mean = inverse.reduce((sum, value) => sum + value / 4, 0)
     const spread = inverse.reduce((sum, value) => sum + (value - mean) ** 2, 0)

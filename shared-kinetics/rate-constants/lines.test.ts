@@ -50,7 +50,7 @@ describe('the Arrhenius line through published tables', () => {
     }
   })
 
-  // Textbook answers are rounded by hand: two to five per cent, unless the book worked with full digits.
+  // Printed answers are rounded by hand: two to five per cent, unless the book worked with full digits.
   it.each(tables.lines.flatMap((table) => ('printed' in table && table.printed !== undefined ? [[table.id, table] as const] : [])))(
     '%s: the printed answer within what rounding by hand allows',
     (_, table) => {

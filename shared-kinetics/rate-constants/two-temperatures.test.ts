@@ -94,7 +94,7 @@ describe('ratios alone', () => {
     })
   })
 
-  it('doubling per 10 K is four times over 20 K and 128 times over 70 K (OpenStax exercise)', () => {
+  it('doubling per 10 K is four times over 20 K and 128 times over 70 K (OpenStax, Chemistry 2e, chapter 12)', () => {
     const { Ea } = energyFromRatio(4, kelvin(300), kelvin(320))
     expect(rateRatio(Ea, kelvin(300), kelvin(320))).toBeCloseTo(4, 12)
     expect(2 ** 7).toBe(128)

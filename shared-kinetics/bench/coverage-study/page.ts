@@ -16,7 +16,7 @@ import {
   type StudiedInterval,
 } from './design.ts'
 import { boundsFor, coverageOf, errorOfShare, isGated, outsideGate } from './gate.ts'
-import { lessonsOf } from './lessons.ts'
+import { conclusionsOf } from './conclusions.ts'
 import type { ShareResult } from './run-share.ts'
 import type { Cell } from './tally.ts'
 import { cellName, errorNames, intervalNames, medianOf, methodName, percent, table } from './words.ts'
@@ -27,7 +27,7 @@ export type Findings = ShareResult['findings']
 export function pageOf(cells: readonly Cell[], findings: Findings, size: { readonly replicates: number; readonly seed: number }): string {
   return `${[
     opening(cells, size),
-    `## What the numbers teach\n\n${lessonsOf(cells, findings)
+    `## What the numbers show\n\n${conclusionsOf(cells, findings)
       .map((lesson) => `- ${lesson}`)
       .join('\n')}`,
     `## Coverage in %\n\nLeast / median / most over the reactions and levels. Cells with * are held to the gate.\n\n${errorKinds

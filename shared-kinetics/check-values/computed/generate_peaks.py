@@ -3,7 +3,7 @@
 lambert-w.json   w of w e^w = e^z by mpmath's own Lambert function
 rate-peaks.json  where the rate of a one-step reaction peaks under a constant heating rate from T = 0, and what each peak method makes of these peaks.
                  Peak: f'(alpha) g(alpha) = -pi(x), pi(x) = x^2 e^x p(x), which follows from d2alpha/dt2 = 0 and g(alpha) = (A E/(R beta)) p(x).
-                 Lines are fitted by the textbook sums in 40 digits; the refined E of ASTM E698 is the root of E h(E/RT) = R S, h = -d ln p/dx = 1/pi, S the
+                 Lines are fitted by the closed-form sums in 40 digits; the refined E of ASTM E698 is the root of E h(E/RT) = R S, h = -d ln p/dx = 1/pi, S the
                  slope of ln beta against 1/Tp with its sign turned, T the peak temperature of the heating rate nearest the geometric middle.
 """
 import json

@@ -13,7 +13,7 @@ const range = (found: readonly Cell[]): string => {
 const median = (found: readonly Cell[]): string => percent(medianOf(found.map(coverageOf)))
 
 /** Sentences on what the study shows, their numbers taken from it. */
-export function lessonsOf(cells: readonly Cell[], findings: Findings): string[] {
+export function conclusionsOf(cells: readonly Cell[], findings: Findings): string[] {
   const of = (interval: StudiedInterval, errors: readonly ErrorKind[], runs: readonly RunCount[] = runCounts, level?: number): Cell[] =>
     cells.filter(
       (cell) =>
