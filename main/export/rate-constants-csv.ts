@@ -115,7 +115,11 @@ function lineRows(line: ArrheniusResult, unit: string, which: string): readonly 
   ]
 }
 
-const expOf = (value: number | null): number | null => (value === null ? null : Math.exp(value))
+/** null where it leaves double precision: 0 would be a value. */
+function expOf(value: number | null): number | null {
+  const power = value === null ? Number.NaN : Math.exp(value)
+  return power > 0 && Number.isFinite(power) ? power : null
+}
 
 const estimateRow = (quantity: string, unit: string, estimate: EstimateResult, temperature_K?: number): QuantityRow => ({
   quantity,
@@ -171,6 +175,16 @@ function predictionRows(row: RateConstantPrediction, unit: string): readonly Qua
   return [
     { ...base, quantity: 'k, predicted', lower: row.lineLower95, upper: row.lineUpper95, intervalOf: 'the line at this temperature' },
     { ...base, quantity: 'k, predicted', lower: row.newLower95, upper: row.newUpper95, intervalOf: 'a new measurement' },
+    {
+      quantity: 'ln k, predicted',
+      label,
+      temperature_K: row.temperature_K,
+      unit: `k in ${unit === '' ? 'unit of k, not stated' : unit}`,
+      value: row.lnK,
+      lower: row.lnLineLower95,
+      upper: row.lnLineUpper95,
+      intervalOf: 'the line at this temperature',
+    },
     { quantity: 'exp(-Ea/RT)', label, temperature_K: row.temperature_K, unit: '', value: row.exponentialFactor },
     { ...factorRow(row.factorPer10K), label },
   ]

@@ -61,9 +61,13 @@ function eyringLines(eyring: NonNullable<RateConstantsResult['eyring']>, unit: T
 }
 
 function predictionLine(row: RateConstantPrediction, unit: string, shown: TemperatureUnit): readonly string[] {
-  if (row.rateConstant === null) return []
+  if (row.lnK === null) return []
   const { side, beyond_K } = row.extrapolation
   const beyond = side === 'inside' ? '' : `; ${digits(beyond_K)} K ${side} the data`
+  if (row.rateConstant === null) {
+    const ofLine = row.lnLineLower95 === null ? '' : ` (line ${range(row.lnLineLower95, row.lnLineUpper95, fixed).slice(2, -1)})`
+    return [`ln k at ${temperature(row.temperature_K, shown)}: ${fixed(row.lnK)}, k is beyond the range of numbers${ofLine}${beyond}`]
+  }
   const ends =
     row.lineLower95 === null || row.newLower95 === null
       ? ''

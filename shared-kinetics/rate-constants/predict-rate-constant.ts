@@ -1,9 +1,13 @@
-import { studentTQuantile } from '../numerics/student-t.ts'
+import { lineConfidenceBand, linePredictionBand } from '../numerics/line-bands.ts'
 import type { Quantity } from '../units/quantity.ts'
 import type { ArrheniusLine } from './arrhenius-line.ts'
+import { expOrNone } from './exp-or-none.ts'
 import { extrapolationOf, type Extrapolation } from './extrapolation.ts'
 
-/** k at a temperature, in the unit of the table; NaN where there is no line, and NaN ends where there is no interval. */
+/**
+ * k at a temperature, in the unit of the table; NaN where there is no line, and NaN ends where there is no interval. A k or an end beyond double precision is
+ * NaN as well, while its logarithm is there.
+ */
 export interface PredictedRateConstant {
   readonly temperature: Quantity<'K'>
   readonly lnK: number
@@ -14,6 +18,11 @@ export interface PredictedRateConstant {
   /** 95 % band of a new measurement: where one more measured k would lie. */
   readonly newLower95: number
   readonly newUpper95: number
+  /** ln of the four ends. */
+  readonly lnLineLower95: number
+  readonly lnLineUpper95: number
+  readonly lnNewLower95: number
+  readonly lnNewUpper95: number
   readonly extrapolation: Extrapolation
 }
 
@@ -30,22 +39,25 @@ export interface PredictedRateConstant {
  * @source draper-smith-1998
  */
 export function predictRateConstant(line: ArrheniusLine, data_K: readonly number[], temperature: Quantity<'K'>): PredictedRateConstant {
-  const { fit } = line
   const found = line.status === 'ok' || line.status === 'without-interval'
-  const fromMean = 1 / temperature - fit.xMean
-  const lnK = found ? fit.valueAtMean + fit.slope * fromMean : Number.NaN
-  const variance = fit.valueAtMeanStandardError ** 2 + (fromMean * fit.slopeStandardError) ** 2
-  const t = line.status === 'ok' ? studentTQuantile(0.975, line.dof) : Number.NaN
-  const ofLine = t * Math.sqrt(variance)
-  const ofNew = t * Math.sqrt(variance + fit.residualStandardDeviation ** 2)
+  const withInterval = line.status === 'ok'
+  const [ofLine, ofNew] = [lineConfidenceBand(line.fit, 1 / temperature), linePredictionBand(line.fit, 1 / temperature)]
+  const lnK = found ? ofLine.value : Number.NaN
+  const [lnLineLower95, lnLineUpper95, lnNewLower95, lnNewUpper95] = withInterval
+    ? [ofLine.lower, ofLine.upper, ofNew.lower, ofNew.upper]
+    : [Number.NaN, Number.NaN, Number.NaN, Number.NaN]
   return {
     temperature,
     lnK,
-    rateConstant: Math.exp(lnK),
-    lineLower95: Math.exp(lnK - ofLine),
-    lineUpper95: Math.exp(lnK + ofLine),
-    newLower95: Math.exp(lnK - ofNew),
-    newUpper95: Math.exp(lnK + ofNew),
+    rateConstant: expOrNone(lnK),
+    lineLower95: expOrNone(lnLineLower95),
+    lineUpper95: expOrNone(lnLineUpper95),
+    newLower95: expOrNone(lnNewLower95),
+    newUpper95: expOrNone(lnNewUpper95),
+    lnLineLower95,
+    lnLineUpper95,
+    lnNewLower95,
+    lnNewUpper95,
     extrapolation: extrapolationOf(data_K, temperature),
   }
 }

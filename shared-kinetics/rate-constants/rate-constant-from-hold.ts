@@ -1,5 +1,6 @@
 import { KineticsError } from '../errors.ts'
 import { lineFit } from '../numerics/line-fit.ts'
+import { lineThroughOrigin } from '../numerics/line-through-origin.ts'
 import { quantity, type Quantity } from '../units/quantity.ts'
 
 /** The conversion of one isothermal run; time from the start of the hold. */
@@ -101,18 +102,7 @@ function freeLine(t: readonly number[], y: readonly number[]): SlopeOfLine {
 }
 
 function throughOrigin(t: readonly number[], y: readonly number[]): SlopeOfLine {
-  const tt = t.reduce((sum, value) => sum + value * value, 0)
-  if (t.length === 0) return noSlope('too-few-rows')
-  if (!(tt > 0)) return noSlope('time-not-distinct')
-  const slope = t.reduce((sum, value, i) => sum + value * (y[i] ?? Number.NaN), 0) / tt
-  const squares = y.reduce((sum, value, i) => sum + (value - slope * (t[i] ?? Number.NaN)) ** 2, 0)
-  const yy = y.reduce((sum, value) => sum + value * value, 0)
-  return {
-    status: 'ok',
-    slope,
-    error: t.length > 1 ? Math.sqrt(squares / (t.length - 1) / tt) : Number.NaN,
-    zero: 0,
-    // Without an intercept, variance is counted from 0.
-    r2: yy > 0 ? 1 - squares / yy : Number.NaN,
-  }
+  const fit = lineThroughOrigin(t, y)
+  if (fit.status !== 'ok') return noSlope(fit.status === 'too-few-points' ? 'too-few-rows' : 'time-not-distinct')
+  return { status: 'ok', slope: fit.slope, error: fit.slopeStandardError, zero: 0, r2: fit.r2 }
 }

@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import tables from '../check-values/published/arrhenius-tables.json' with { type: 'json' }
 import computed from '../check-values/computed/rate-constant-lines.json' with { type: 'json' }
@@ -88,6 +89,43 @@ describe('a table of rate constants, evaluated', () => {
     expect((result.weightedLine?.Ea_kJ_per_mol ?? 0) * 1000).toBeCloseTo(Number(computed.weighted.Ea_J_per_mol), 4)
     expect(result.line.Ea_kJ_per_mol).toBeCloseTo(185.3079, 4)
     expect(evaluateRateConstants(W1).weightedLine).toBeNull()
+  })
+})
+
+describe('far from the data', () => {
+  it('the band keeps to positive temperatures, from coldest to hottest or beyond', () => {
+    const temperature = fc.double({ min: 1, max: 10_000, noNaN: true })
+    fc.assert(
+      fc.property(fc.array(temperature, { maxLength: 5 }), (predictAt_K) => {
+        const { band } = evaluateRateConstants(tableOf('W8', { predictAt_K }))
+        expect(band.temperature_K.every((T) => T > 0 && Number.isFinite(T))).toBe(true)
+        expect(Math.max(...band.temperature_K)).toBeGreaterThanOrEqual(Math.max(338, ...predictAt_K) * (1 - 1e-12))
+        expect(Math.min(...band.temperature_K)).toBeLessThanOrEqual(Math.min(273, ...predictAt_K) * (1 + 1e-12))
+      }),
+      { numRuns: 40 },
+    )
+  })
+
+  it('a k too small for a number is none, and its logarithm stays', () => {
+    const result = evaluateRateConstants(tableOf('W8', { predictAt_K: [10] }))
+    const [at] = result.predictions
+    // ln k = ln A - Ea/(R T) with the published table's own Ea and A.
+    expect(at?.lnK).toBeCloseTo(Math.log(3.8163e13) - 102_897.9 / (8.31446261815324 * 10), 0)
+    expect(at).toMatchObject({ rateConstant: null, lineLower95: null, newUpper95: null, exponentialFactor: null })
+    expect((at?.lnNewLower95 ?? 0) < (at?.lnLineLower95 ?? 0) && (at?.lnLineLower95 ?? 0) < (at?.lnK ?? 0)).toBe(true)
+    expect((at?.lnNewUpper95 ?? 0) > (at?.lnLineUpper95 ?? 0) && (at?.lnLineUpper95 ?? 0) > (at?.lnK ?? 0)).toBe(true)
+    expect(result.findings.map((finding) => finding.code)).toContain('prediction-extrapolated')
+  })
+
+  it('no number of a prediction is 0, however far', () => {
+    fc.assert(
+      fc.property(fc.double({ min: 1, max: 10_000, noNaN: true }), (at) => {
+        const [row] = evaluateRateConstants(tableOf('W8', { predictAt_K: [at] })).predictions
+        expect([row?.rateConstant, row?.lineLower95, row?.newLower95, row?.exponentialFactor, row?.factorPer10K.factor]).not.toContain(0)
+        expect(row?.lnK).not.toBeNull()
+      }),
+      { numRuns: 40 },
+    )
   })
 })
 

@@ -156,10 +156,15 @@ function predictionResult(line: ArrheniusLine, data_K: readonly number[], at: Qu
   return {
     temperature_K: at,
     rateConstant: maybe(predicted.rateConstant),
+    lnK: maybe(predicted.lnK),
     lineLower95: maybe(predicted.lineLower95),
     lineUpper95: maybe(predicted.lineUpper95),
     newLower95: maybe(predicted.newLower95),
     newUpper95: maybe(predicted.newUpper95),
+    lnLineLower95: maybe(predicted.lnLineLower95),
+    lnLineUpper95: maybe(predicted.lnLineUpper95),
+    lnNewLower95: maybe(predicted.lnNewLower95),
+    lnNewUpper95: maybe(predicted.lnNewUpper95),
     exponentialFactor: maybe(exponentialFactor(line.Ea, at)),
     factorPer10K: factorResult(line, at),
     extrapolation: {
@@ -175,15 +180,16 @@ function bandOf(line: ArrheniusLine, data_K: readonly number[], predictAt_K: rea
   const isDrawn = data_K.length > 0 && !Number.isNaN(line.Ea)
   const [low, high] = isDrawn ? [Math.min(...inverse), Math.max(...inverse)] : [0, 0]
   const overhang = (high - low) * 0.04
-  const [from, to] = [low - overhang, high + overhang]
+  // Far hotter predictions stretch 1/T so much that the overhang would pass 1/T = 0.
+  const [from, to] = [Math.max(low - overhang, low / 2), high + overhang]
   const temperature_K = isDrawn ? Array.from({ length: bandPoints }, (_, i) => 1 / (from + ((to - from) * i) / (bandPoints - 1))) : []
   const at = temperature_K.map((T) => predictRateConstant(line, data_K, quantity(T, 'K')))
   return {
     temperature_K,
     lnK: at.map((point) => maybe(point.lnK)),
-    lnLineLower95: at.map((point) => maybe(Math.log(point.lineLower95))),
-    lnLineUpper95: at.map((point) => maybe(Math.log(point.lineUpper95))),
-    lnNewLower95: at.map((point) => maybe(Math.log(point.newLower95))),
-    lnNewUpper95: at.map((point) => maybe(Math.log(point.newUpper95))),
+    lnLineLower95: at.map((point) => maybe(point.lnLineLower95)),
+    lnLineUpper95: at.map((point) => maybe(point.lnLineUpper95)),
+    lnNewLower95: at.map((point) => maybe(point.lnNewLower95)),
+    lnNewUpper95: at.map((point) => maybe(point.lnNewUpper95)),
   }
 }

@@ -81,12 +81,19 @@ export interface FactorPer10KResult {
 
 export interface RateConstantPrediction {
   readonly temperature_K: number
+  /** null where it leaves double precision as well; `lnK` is then there. */
   readonly rateConstant: Maybe
+  readonly lnK: Maybe
   /** 95 % band of the line, and of one more measured k; each temperature by itself. */
   readonly lineLower95: Maybe
   readonly lineUpper95: Maybe
   readonly newLower95: Maybe
   readonly newUpper95: Maybe
+  /** ln of these ends. */
+  readonly lnLineLower95: Maybe
+  readonly lnLineUpper95: Maybe
+  readonly lnNewLower95: Maybe
+  readonly lnNewUpper95: Maybe
   readonly exponentialFactor: Maybe
   readonly factorPer10K: FactorPer10KResult
   readonly extrapolation: { readonly side: 'inside' | 'below' | 'above'; readonly beyond_K: number; readonly beyondInSpans: Maybe }

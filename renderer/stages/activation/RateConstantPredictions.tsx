@@ -58,7 +58,11 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                       {row.extrapolation.side !== 'inside' && <span className="is-beyond">{placeWords(row)}</span>}
                     </th>
                     <td className="is-number">
-                      <PowerOfTen text={scientific(row.rateConstant, 3)} />
+                      {row.rateConstant === null && row.lnK !== null ? (
+                        <span className="soft">ln k {decimals(row.lnK, 1)}</span>
+                      ) : (
+                        <PowerOfTen text={scientific(row.rateConstant, 3)} />
+                      )}
                     </td>
                     {hasBands && <Ends of={row} lower={row.lineLower95} upper={row.lineUpper95} />}
                     {hasBands && <Ends of={row} lower={row.newLower95} upper={row.newUpper95} />}

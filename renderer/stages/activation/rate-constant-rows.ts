@@ -175,6 +175,7 @@ const temperatureColumn = <Row extends { readonly temperature_K: number }>({
 export const predictionCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantPrediction>[] => [
   temperatureColumn(result),
   number('k', 'k predicted', result.rateUnit, (row) => row.rateConstant),
+  number('lnK', 'ln k predicted', '', (row) => row.lnK),
   number('line-lower', 'lower 95 %, line', result.rateUnit, (row) => row.lineLower95),
   number('line-upper', 'upper 95 %, line', result.rateUnit, (row) => row.lineUpper95),
   number('new-lower', 'lower 95 %, new measurement', result.rateUnit, (row) => row.newLower95),

@@ -8,7 +8,7 @@ const far = 0.5
 
 /** Fires once where temperatures asked for lie beyond the data, with how far; a caution where one lies more than half the span of 1/T beyond. */
 export function predictionExtrapolated({ result: { predictions, span } }: RateConstantReview): Finding[] {
-  const beyond = predictions.filter((at) => at.extrapolation.side !== 'inside' && at.rateConstant !== null)
+  const beyond = predictions.filter((at) => at.extrapolation.side !== 'inside' && at.lnK !== null)
   const farthest = beyond.toSorted((a, b) => reach(b) - reach(a))[0]
   if (farthest === undefined || span === null) return []
   const isFar = reach(farthest) > far
