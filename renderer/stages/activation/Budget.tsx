@@ -19,6 +19,7 @@ import {
   uText,
   type BudgetGroup,
   type StatedKey,
+  withStated,
 } from './budget-rows.ts'
 import { methodFacts } from './method-facts.ts'
 import { parseDraws, parseLag, parseSeed, parseShare, parseTemperatureUncertainty } from './parse-uncertainty.ts'
@@ -30,7 +31,7 @@ export function Budget(props: ActivationProps) {
   const isBehind = useStudy(isUncertaintyBehind)
   const groups = useMemo(() => budgetGroups(shown, settings, result.runs, levelIndex), [shown, settings, result, levelIndex])
   const set = (part: Partial<UncertaintySettings>): void =>
-    actions.change({ kind: 'set-uncertainty', uncertainty: { ...settings, ...part } })
+    actions.change({ kind: 'set-uncertainty', uncertainty: withStated(settings, part) })
   const heading = `${shown.profile.label} at α ${formatLevel(level)}`
   const text = (): string => copyText(budgetCopyColumns(settings, heading), budgetCopyRows(groups))
   return (

@@ -2,7 +2,16 @@ import { describe, expect, it } from 'vitest'
 import { defaultUncertainty } from '../../../shared-kinetics/contract/study-document.ts'
 import type { BudgetEntry, ProfileResult, UncertaintyProfile } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
-import { budgetCopyColumns, budgetCopyRows, budgetGroups, lagInKelvin, statedText, uText, type BudgetRow } from './budget-rows.ts'
+import {
+  budgetCopyColumns,
+  budgetCopyRows,
+  budgetGroups,
+  lagInKelvin,
+  statedText,
+  uText,
+  type BudgetRow,
+  withStated,
+} from './budget-rows.ts'
 import { methodFacts } from './method-facts.ts'
 import type { ShownOfMethod } from './shown-interval.ts'
 import { friedman, result, runAt, starink } from './testing/small-result.ts'
@@ -81,6 +90,9 @@ describe('budget at a level', () => {
 
   it('says in words what nobody has stated, until it is changed', () => {
     expect(wordsOf(defaultUncertainty, 'temperature-run')).toBe('assumed: nobody has stated it')
+    const typed = withStated(withStated(defaultUncertainty, { temperatureRun_K: defaultUncertainty.temperatureRun_K }), { seed: 3 })
+    expect(wordsOf(typed, 'temperature-run')).toBe('as stated')
+    expect(wordsOf(typed, 'temperature-common')).toBe('assumed: nobody has stated it')
     expect(wordsOf({ ...defaultUncertainty, temperatureRun_K: 0.2 }, 'temperature-run')).toBe('as stated')
     expect(wordsOf(defaultUncertainty, 'temperature-lag')).toBe('× heating rate: 1 s = 0.333 K at 20 K/min, assumed: nobody has stated it')
   })
@@ -89,6 +101,7 @@ describe('budget at a level', () => {
     expect(lagInKelvin(1, [runAt(10, []), runAt(100, []), runAt(50, [])])).toBe('1 s = 1.67 K at 100 K/min')
     expect(lagInKelvin(0.5, [runAt(20, [])])).toBe('0.5 s = 0.167 K at 20 K/min')
     expect(lagInKelvin(1, [])).toBe('')
+    expect(lagInKelvin(0, [runAt(20, [])])).toBe('')
   })
 
   it('asks for the uncertainty of a heating rate only where one was stated and not measured', () => {

@@ -43,8 +43,15 @@ const statedKeys: Partial<Readonly<Record<UncertaintySource, StatedKey>>> = {
   'heating-rate': 'statedHeatingRate_share',
 }
 
-/** Whether a value is the assumption made where nobody has stated anything. */
-export const isAssumed = (settings: UncertaintySettings, key: StatedKey): boolean => settings[key] === defaultUncertainty[key]
+/** Whether a value is the assumption made because nobody has stated anything. */
+export const isAssumed = (settings: UncertaintySettings, key: StatedKey): boolean =>
+  settings.stated?.includes(key) !== true && settings[key] === defaultUncertainty[key]
+
+/** The settings with what was typed, which from then on is stated, be it what was assumed before or not. */
+export function withStated(settings: UncertaintySettings, typed: Partial<UncertaintySettings>): UncertaintySettings {
+  const stated = Object.values(statedKeys).filter((key) => settings.stated?.includes(key) === true || key in typed)
+  return { ...settings, ...typed, ...(stated.length === 0 ? {} : { stated }) }
+}
 
 const number = (value: number): string => String(Number(value.toPrecision(6)))
 
@@ -110,10 +117,10 @@ function statedOf(source: UncertaintySource, runs: readonly RunResult[]): Stated
   return statedKeys[source] ?? null
 }
 
-/** What a lag moves the temperature by at the fastest heating rate, `1 s = 1.67 K at 100 K/min`; empty where no run has a heating rate. */
+/** What a lag moves the temperature by at the fastest heating rate, `1 s = 1.67 K at 100 K/min`; empty without a lag and where no run has a heating rate. */
 export function lagInKelvin(lag_s: number, runs: readonly RunResult[]): string {
   const fastest = Math.max(...runs.map((run) => run.heatingRate_K_per_min ?? 0), 0)
-  return fastest > 0
+  return fastest > 0 && lag_s > 0
     ? `${number(lag_s)} s = ${number(Number(((lag_s * fastest) / 60).toPrecision(3)))} K at ${number(Number(fastest.toPrecision(3)))} K/min`
     : ''
 }

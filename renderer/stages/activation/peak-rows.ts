@@ -22,7 +22,7 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
   {
     id: 'interval',
     heading: '±\u00a095\u00a0%',
-    unit: 'kJ/mol, Student-t',
+    unit: 'kJ/mol, Student\u2011t',
     numeric: true,
     text: (row) => formatInterval(row.Ea_kJ_per_mol, row.lower95_kJ_per_mol, row.upper95_kJ_per_mol),
     value: (row) => halfWidth(row.lower95_kJ_per_mol, row.upper95_kJ_per_mol),
