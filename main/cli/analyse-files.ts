@@ -5,7 +5,7 @@ import { naturalOrder } from '../../shared-kinetics/contract/natural-order.ts'
 import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import { KineticsError } from '../../shared-kinetics/errors.ts'
-import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { StudyResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { createHost, type Host } from '../host/create-host.ts'
 import { createInProcessPool } from '../host/in-process-pool.ts'
 import { createTaskTable } from '../host/task-table.ts'
@@ -31,6 +31,8 @@ export interface AnalysisOrder {
 export interface Analysis {
   readonly document: StudyDocument
   readonly result: StudyResult
+  /** Where it was asked for. */
+  readonly uncertainty?: UncertaintyResult
   readonly files: readonly FileOut[]
 }
 
@@ -72,6 +74,7 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
     const { revision, document } = await host.call('study.read', {})
     const { result } = await host.call('study.evaluate', { revision })
     if (!order.skipUnusable) refuseUnusableRuns(order.files, document, result)
+    const apart = order.withUncertainty ? { uncertainty: (await host.call('study.uncertainty', { revision })).result } : {}
     const out: FileOut[] = []
     for (const format of ['json', 'csv', 'svg'] as const) {
       out.push(
@@ -79,7 +82,7 @@ export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: Pr
           .files,
       )
     }
-    return { document, result, files: out }
+    return { document, result, ...apart, files: out }
   } catch (error) {
     throw error instanceof KineticsError ? new InputError(error.message) : error
   } finally {

@@ -1,5 +1,5 @@
 import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
-import type { IntervalResult, ProfileResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { BudgetEntry, IntervalResult, ProfileResult } from '../../shared-kinetics/tasks/study-result.ts'
 import type { TableStyle } from '../../shared-kinetics/contract/host-api.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
 import { csvTable } from './csv-table.ts'
@@ -13,12 +13,13 @@ interface ResultColumn {
 /**
  * The text of `activation.csv`: one heading row and one row a level; first column `conversion`, then for each method Ea, its standard error, the
  * ends of its 95 % interval and ln[A f], the unit in every heading. After those of all methods come, where a method has them: standard error of ln[A f] and its covariance with
- * Ea, ln A, the systematic error of Ea, and the ends of each other interval, named by its kind. A number that is not to be had is an empty cell.
+ * Ea, ln A, the systematic error of Ea, and the ends of each other interval, named by its kind; last what each source of the budget alone brings to Ea. A number that is not to be had is an empty cell.
  */
 export function activationCsv({ result, uncertainty }: Pick<ExportSource, 'result' | 'uncertainty'>, style: TableStyle): string {
   const columns = [
     ...result.profiles.flatMap(columnsOf),
     ...result.profiles.flatMap((profile) => furtherColumnsOf(profile, uncertaintyOf(profile, uncertainty)?.intervals ?? [])),
+    ...result.profiles.flatMap((profile) => budgetColumnsOf(profile, uncertaintyOf(profile, uncertainty)?.budget ?? [])),
   ]
   const headings = ['conversion', ...columns.map((column) => column.heading)]
   const rows = result.levels.map((level, i) => [Number(levelText(level)), ...columns.map((column) => column.values[i] ?? null)])
@@ -52,5 +53,12 @@ function furtherColumnsOf(profile: ProfileResult, apart: readonly IntervalResult
       { heading: `Ea ${label} ${ascii(interval.label)} upper 95 % (kJ/mol)`, values: interval.upper95_kJ_per_mol },
     ]),
   ]
-  return columns.filter(({ values }) => values.some((value) => value !== null && Number.isFinite(value)))
+  return columns.filter(isThere)
 }
+
+const budgetColumnsOf = ({ label }: ProfileResult, budget: readonly BudgetEntry[]): readonly ResultColumn[] =>
+  budget
+    .map((entry) => ({ heading: `u(Ea) ${ascii(label)} by ${entry.source} (kJ/mol)`, values: entry.standardUncertainty_kJ_per_mol }))
+    .filter(isThere)
+
+const isThere = ({ values }: ResultColumn): boolean => values.some((value) => value !== null && Number.isFinite(value))

@@ -3,14 +3,9 @@ import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
 import { intervalStatuses, type IntervalStatus } from '../../shared-kinetics/isoconversional/result.ts'
 import { intervalStatusWords, studentStatus } from '../../shared-kinetics/tasks/interval-status.ts'
 import { intervalsNotGiven } from '../../shared-kinetics/tasks/intervals-not-given.ts'
-import type {
-  BudgetEntry,
-  CombinedMean,
-  IntervalResult,
-  ProfileResult,
-  UncertaintyProfile,
-} from '../../shared-kinetics/tasks/study-result.ts'
+import type { CombinedMean, IntervalResult, ProfileResult, UncertaintyProfile } from '../../shared-kinetics/tasks/study-result.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
+import { budgetLine } from './budget-lines.ts'
 
 /** Every kind of interval in the table, how it was made, and that it is pointwise; systematic errors and lack of fit beside them. */
 export function intervalLines({ result, uncertainty }: ExportSource): string[] {
@@ -28,7 +23,7 @@ export function intervalLines({ result, uncertainty }: ExportSource): string[] {
           otherLine(profile.label, interval),
           ...statusLines(`${profile.label}: ${interval.label}`, interval.status, result.levels),
         ]),
-        ...(apart?.budget ?? []).map((entry) => budgetLine(profile.label, entry)),
+        ...(apart?.budget ?? []).map((entry) => budgetLine(profile.label, entry, profile.mean, result.levels)),
         ...systematicLines(profile),
         ...lackOfFitLines(profile),
       ]
@@ -86,9 +81,6 @@ function levelRanges(at: readonly number[], levels: readonly number[]): string {
     .map((range) => (range.length === 1 ? text(range[0]) : `${text(range[0])} ${range.length === 2 ? 'and' : 'to'} ${text(range.at(-1))}`))
     .join(', ')
 }
-
-const budgetLine = (label: string, entry: BudgetEntry): string =>
-  `${label}: ${entry.label}, ${entry.magnitude}${entry.shownByScatter ? '; shown by the scatter of the points already' : ''}`
 
 const signed = (percent: number): string => `${percent > 0 ? '+' : ''}${percent.toPrecision(2)} %`
 

@@ -4,7 +4,9 @@ import { profileOf, reviewInput } from '../../shared-kinetics/check-values/revie
 import { emptyStudy } from '../../shared-kinetics/contract/study-document.ts'
 import type { IntervalResult, ProfileResult, StudyResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import type { ExportSource } from './activation-json.ts'
+import { assumptionLines, budgetLine } from './budget-lines.ts'
 import { exportResults, type ExportFormat } from './export-results.ts'
+import { shortTable } from './short-table.ts'
 
 const intervalOf = (kind: IntervalResult['kind'], label: string): IntervalResult => ({
   kind,
@@ -111,9 +113,10 @@ describe('intervals in what is exported', () => {
       'Ea Vyazovkin F-type interval of Vyazovkin and Wight upper 95 % (kJ/mol)',
       'Ea Vyazovkin Jackknife over runs lower 95 % (kJ/mol)',
       'Ea Vyazovkin Jackknife over runs upper 95 % (kJ/mol)',
+      'u(Ea) Vyazovkin by temperature-run (kJ/mol)',
     ])
-    expect(first.slice(1 + 3 * 5)).toEqual(['0.5', '0.9', '-0.42', '90', '110.5', '90', '110.5'])
-    expect(last.slice(1 + 3 * 5)).toEqual(['', '', '', '', '', '', ''])
+    expect(first.slice(1 + 3 * 5)).toEqual(['0.5', '0.9', '-0.42', '90', '110.5', '90', '110.5', '1'])
+    expect(last.slice(1 + 3 * 5)).toEqual(['', '', '', '', '', '', '', ''])
     // Contract: these come first, whatever is added.
     expect(headings.slice(0, 6)).toEqual([
       'conversion',
@@ -132,7 +135,9 @@ describe('intervals in what is exported', () => {
       'Vyazovkin: 95 % interval, F-type interval of Vyazovkin and Wight, pointwise, approximate. How vyazovkin-wight-f was made.',
     )
     expect(notes).toContain('Vyazovkin: 95 % interval, Jackknife over runs, pointwise, approximate.')
-    expect(notes).toContain('Vyazovkin: Temperature, each run, 0.5 K; shown by the scatter of the points already')
+    expect(notes).toContain(
+      'Vyazovkin: Temperature, each run, 0.5 K; shown by the scatter of the points already; u(Ea) 1.00 kJ/mol over conversion',
+    )
     expect(notes).toContain('Kissinger–Akahira–Sunose: systematic error of Ea from its temperature integral -0.42 % to -0.40 %')
     expect(notes).toContain('F(1, 3) = 2.50, p = 0.21')
     expect(notes).toContain('95 % Student-t interval of the mean 97.25 to 103.75 kJ/mol (3 degrees of freedom')
@@ -199,5 +204,33 @@ describe('intervals in what is exported', () => {
     expect(textOf({ ...three, result: runsOf([0, 1, 2, 3]) }, 'csv', 1)).not.toContain('not given')
     // Nothing was asked for: nothing is missing.
     expect(textOf({ ...source, result: runsOf([0, 1, 2]) }, 'csv', 1)).not.toContain('not given')
+  })
+})
+
+describe('what intervals from measured sources rest on', () => {
+  const [entry] = uncertainty.profiles[0]?.budget ?? []
+  const [profile] = uncertainty.profiles
+  if (entry === undefined || profile === undefined) throw new Error('there is no budget')
+
+  it('is told in kJ/mol over the levels of the mean, and as unknown with its reason where it cannot be', () => {
+    const wide = { ...entry, standardUncertainty_kJ_per_mol: [9, 1.5, 3.25, 9] }
+    expect(budgetLine('KAS', wide, { from: 0.2, to: 0.8 }, [0.1, 0.2, 0.8, 0.9])).toMatch(
+      /; u\(Ea\) 1\.50 to 3\.25 kJ\/mol over conversion 0\.2 to 0\.8$/,
+    )
+    const unknown = { ...entry, standardUncertainty_kJ_per_mol: [null, null], reason: 'No other baseline under Run 4.' }
+    expect(budgetLine('KAS', unknown, { from: 0.2, to: 0.8 }, [0.2, 0.8])).toMatch(/u\(Ea\) unknown .*\. No other baseline under Run 4\.$/)
+  })
+
+  it('stands below the table on the screen, beside which the combined interval has a column; neither without it', () => {
+    const budget = [{ ...entry, assumed: true, magnitude: '0.5 K in each run, assumed, nothing stated' }]
+    const apart = { ...uncertainty, profiles: [{ ...profile, intervals: [intervalOf('combined', 'Combined')], budget }] }
+    expect(assumptionLines({ ...apart, profiles: [...apart.profiles, ...apart.profiles] })).toEqual([
+      'Temperature, each run: 0.5 K in each run, assumed, nothing stated',
+    ])
+    const text = shortTable(result, apart)
+    // The larger half of 90 to 110.5 about 100 and of 91 to 111 about 101.
+    expect(text.split('\n').filter((line) => / ±10\.5$| ±10\.0$/.test(line))).toHaveLength(2)
+    expect(text).toContain('Temperature, each run: 0.5 K in each run, assumed, nothing stated')
+    expect(shortTable(result)).not.toMatch(/combined|assumed/)
   })
 })

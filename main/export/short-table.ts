@@ -1,18 +1,28 @@
 import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
 import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
-import type { ProfileResult, StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { ProfileResult, StudyResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { assumptionLines } from './budget-lines.ts'
+import { uncertaintyOf } from './activation-json.ts'
 
-/** The table a terminal shows: Ea of every method at every level, with the larger half of its 95 % interval; a dash where there is no number. */
-export function shortTable(result: StudyResult): string {
+/**
+ * The table a terminal shows: Ea of every method at every level, with the larger half of its 95 % interval; a dash where there is no number. With what was worked out of
+ * measured sources, the larger half of the combined interval stands in a column of its own, and below the table what it rests on that nobody stated.
+ */
+export function shortTable(result: StudyResult, uncertainty?: UncertaintyResult): string {
   const columns = [
     ['conversion', ...result.levels.map((level) => levelText(level))],
-    ...result.profiles.map((profile) => [profile.label, ...result.levels.map((_, i) => cell(profile, i))]),
+    ...result.profiles.flatMap((profile) => [
+      [profile.label, ...result.levels.map((_, i) => cell(profile, i))],
+      ...(uncertainty === undefined ? [] : [['combined', ...combinedCells(profile, uncertainty)]]),
+    ]),
   ]
   const widths = columns.map((column) => Math.max(...column.map((text) => text.length)))
   const rows = ['', ...result.levels].map((_, row) => columns.map((column, c) => (column[row] ?? '').padStart(widths[c] ?? 0)).join('  '))
   return [
     'Ea in kJ/mol, with the larger half of its 95 % interval (Student-t, each level by itself)',
+    ...(uncertainty === undefined ? [] : ['combined: the larger half of the 95 % interval from scatter and measured sources, kJ/mol']),
     ...rows,
+    ...(uncertainty === undefined ? [] : assumptionLines(uncertainty)),
     ...means(result),
     ...kissinger(result),
     ...peakMethods(result),
@@ -25,6 +35,14 @@ function cell(profile: ProfileResult, level: number): string {
   if (Ea === null) return '-'
   const half = halfWidth(Ea, profile.lower95_kJ_per_mol[level] ?? null, profile.upper95_kJ_per_mol[level] ?? null)
   return half === null ? Ea.toFixed(1) : `${Ea.toFixed(1)} ±${intervalText(half)}`
+}
+
+function combinedCells(profile: ProfileResult, uncertainty: UncertaintyResult): readonly string[] {
+  const interval = uncertaintyOf(profile, uncertainty)?.intervals.find(({ kind }) => kind === 'combined')
+  return profile.Ea_kJ_per_mol.map((Ea, i) => {
+    const half = Ea === null ? null : halfWidth(Ea, interval?.lower95_kJ_per_mol[i] ?? null, interval?.upper95_kJ_per_mol[i] ?? null)
+    return half === null ? '-' : `±${intervalText(half)}`
+  })
 }
 
 /** An interval that rounds away is still there. */

@@ -17,7 +17,8 @@ const rounding = 1e-9
 export const levelsInMean = (Ea: ArrayLike<number>, levels: readonly number[], range: readonly [number, number]): number[] =>
   levelsWithin(levels, range).filter((i) => (Ea[i] ?? Number.NaN) > 0)
 
-const levelsWithin = (levels: readonly number[], [from, to]: readonly [number, number]): number[] =>
+/** Positions of the levels inside a range, its ends included. */
+export const levelsWithin = (levels: readonly number[], [from, to]: readonly [number, number]): number[] =>
   levels.flatMap((level, i) => (level >= from - rounding && level <= to + rounding ? [i] : []))
 
 /** What the interval of a mean from the scatter of the runs cannot hold. */

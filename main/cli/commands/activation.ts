@@ -58,10 +58,14 @@ export async function activation(words: readonly string[], io: CliIo): Promise<n
   }
   const quiet = parsed.flag('quiet')
   const files = await expandPaths(parsed.paths)
-  const { result, files: results } = await analyseFiles({ ...order, files, studyName: studyName(files) }, io, createProgressLine(io, quiet))
+  const {
+    result,
+    uncertainty: apart,
+    files: results,
+  } = await analyseFiles({ ...order, files, studyName: studyName(files) }, io, createProgressLine(io, quiet))
   await written(out, results)
   if (!quiet)
-    io.stdout(`${shortTable(result)}\n${findingLines(result)}${join(out, '')}: ${results.map((file) => file.fileName).join(', ')}\n`)
+    io.stdout(`${shortTable(result, apart)}\n${findingLines(result)}${join(out, '')}: ${results.map((file) => file.fileName).join(', ')}\n`)
   const stops = result.findings.some((finding) => finding.severity === 'stop')
   return parsed.flag('strict') && stops ? exitCodes.stopFinding : exitCodes.done
 }
