@@ -47,7 +47,7 @@ export function estimateUncertainty(
     const result = resultOf(info)
     const resampled = intervalsByResampling(series, result, resampling, context)
     if (result.Ea.every(Number.isNaN)) return { method: info.id, intervals: resampled, budget: [], mean: null }
-    const model = energyModel(series, result)
+    const model = energyModel(series, result, context)
     models.push(model)
     context.checkCancelled()
     const budget = budgetOf(model, sources)

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { quiet, seriesOf } from '../check-values/series-of-values.ts'
 import { durationOf, reducedTime, temperatureOf, type Pieces } from '../check-values/simulated-run.ts'
+import { Cancelled } from '../errors.ts'
 import { methods } from '../isoconversional/registry.ts'
 import { randomStream } from '../numerics/random.ts'
 import { bracketedRoot } from '../numerics/root.ts'
@@ -109,6 +110,21 @@ const none: Disturbance = {
 }
 const exact = seriesWith(null)
 const minimising = ['vyazovkin', 'vyazovkin-incremental'] as const
+
+it.each(minimising)('a model by %s on such programmes is given up between any two levels of a run', (method) => {
+  let looks = 0
+  const looked = (least: number) => ({
+    checkCancelled: (): void => {
+      if (++looks > least) throw new Cancelled()
+    },
+  })
+  const result = methods[method].run(exact, quiet)
+  expect(energyModel(exact, result, looked(Number.POSITIVE_INFINITY)).form.kind).toBe('integral')
+  expect(looks).toBeGreaterThan(programmes.length * levels.length)
+  looks = 0
+  expect(() => energyModel(exact, result, looked(20))).toThrow(Cancelled)
+  expect(looks).toBe(21)
+})
 
 describe.each([...minimising, 'friedman'] as const)('errors carried into Ea by %s on programmes of ramp, hold and ramp', (method) => {
   const result = methods[method].run(exact, quiet)

@@ -1,5 +1,5 @@
 import { largestEa } from '../isoconversional/energy-grid.ts'
-import type { IsoconversionalResult, LevelLine, MethodId } from '../isoconversional/result.ts'
+import type { IsoconversionalResult, LevelLine, MethodId, TaskContext } from '../isoconversional/result.ts'
 import { segmentIntegral } from '../isoconversional/segment-integral.ts'
 import { timeIntegral } from '../isoconversional/time-integral.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
@@ -67,8 +67,12 @@ const ordinates: Readonly<Record<LineMethodId, Ordinate>> = {
   'isothermal-integral': { holds: 'time', scale: 1 },
 }
 
-/** The model of a method's result on the series it came from. */
-export function energyModel(series: SeriesAtLevels, result: IsoconversionalResult): EnergyModel {
+/** The model of a method's result on the series it came from. @throws Cancelled, by `context` */
+export function energyModel(
+  series: SeriesAtLevels,
+  result: IsoconversionalResult,
+  context: Pick<TaskContext, 'checkCancelled'> = { checkCancelled: () => undefined },
+): EnergyModel {
   const runs = series.runs.length
   const levels = series.levels.length
   const heatingRate_K_per_s = new Float64Array(runs * levels)
@@ -80,8 +84,9 @@ export function energyModel(series: SeriesAtLevels, result: IsoconversionalResul
   const timeIsRebuilt = Uint8Array.from(series.runs, (run) => (hasRebuiltTime(run) ? 1 : 0))
   const common = { method: result.method, runs, levels, Ea: result.Ea, heatingRate_K_per_s, timeIsRebuilt }
   const { method } = result
-  if (method === 'vyazovkin') return { ...common, form: integralForm(series, result, (run) => timeIntegral(run, largestEa)) }
-  if (method === 'vyazovkin-incremental') return { ...common, form: integralForm(series, result, (run) => segmentIntegral(run, largestEa)) }
+  if (method === 'vyazovkin') return { ...common, form: integralForm(series, result, (run) => timeIntegral(run, largestEa), context) }
+  if (method === 'vyazovkin-incremental')
+    return { ...common, form: integralForm(series, result, (run) => segmentIntegral(run, largestEa), context) }
   return { ...common, form: lineForm(series, result, method) }
 }
 

@@ -1,5 +1,5 @@
 import { largestEa, smallestEa } from '../isoconversional/energy-grid.ts'
-import type { IsoconversionalResult } from '../isoconversional/result.ts'
+import type { IsoconversionalResult, TaskContext } from '../isoconversional/result.ts'
 import { followsRamp, type TimeIntegral } from '../isoconversional/time-integral.ts'
 import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
@@ -58,11 +58,12 @@ export const tableEnergies: Float64Array = Float64Array.from({ length: steps + 1
 /** Step of e over which the moments are taken, as a share of Ea: the third one is then good to some 1e-5 of itself. */
 const step = 0.02
 
-/** The form of a minimising method's result on the series it came from. */
+/** The form of a minimising method's result on the series it came from. Over a measured history each level is an integral of its own. @throws Cancelled */
 export function integralForm(
   series: SeriesAtLevels,
   result: IsoconversionalResult,
   integralOf: (run: RunAtLevels) => TimeIntegral,
+  { checkCancelled }: Pick<TaskContext, 'checkCancelled'>,
 ): IntegralForm {
   const runs = series.runs.length
   const entries = runs * series.levels.length
@@ -82,12 +83,16 @@ export function integralForm(
   }
   const isIncremental = result.method === 'vyazovkin-incremental'
   const R = gasConstant_J_per_mol_K
-  const integrals = series.runs.map(integralOf)
+  const integrals = series.runs.map((run) => {
+    checkCancelled()
+    return integralOf(run)
+  })
   series.runs.forEach((run, i) => {
     const integral = integrals[i] as TimeIntegral
     const isRamp = followsRamp(run)
     result.Ea.forEach((Ea, level) => {
       if (Number.isNaN(Ea)) return
+      checkCancelled()
       const k = level * runs + i
       const fromLevel = isIncremental && level > 0
       const { lnJ, inverseT } = integral.atLevel(Ea, level)
@@ -113,7 +118,7 @@ export function integralForm(
       if (isRamp && (!fromLevel || hasRebuiltTime(run))) form.holdsHeatingRate[k] = 1
     })
   })
-  return { ...form, table: series.runs.every(followsRamp) ? null : tableOf(series, integrals, isIncremental) }
+  return { ...form, table: series.runs.every(followsRamp) ? null : tableOf(series, integrals, isIncremental, checkCancelled) }
 }
 
 /** 1/T at which an integral begins: at the level before, or at the first sample of the history. */
@@ -122,7 +127,12 @@ const startInverseT = ({ temperature_K, history }: RunAtLevels, level: number, f
 
 const empty = (length: number): Float64Array => new Float64Array(length).fill(Number.NaN)
 
-function tableOf(series: SeriesAtLevels, integrals: readonly TimeIntegral[], isIncremental: boolean): IntegralTable {
+function tableOf(
+  series: SeriesAtLevels,
+  integrals: readonly TimeIntegral[],
+  isIncremental: boolean,
+  checkCancelled: () => void,
+): IntegralTable {
   const runs = series.runs.length
   const levels = series.levels.length
   const places = tableEnergies.length
@@ -138,6 +148,7 @@ function tableOf(series: SeriesAtLevels, integrals: readonly TimeIntegral[], isI
   const inverseT = empty(levels)
   integrals.forEach((integral, i) => {
     tableEnergies.forEach((Ea, place) => {
+      checkCancelled()
       integral.atAllLevels(Ea, lnJ, inverseT)
       for (let level = 0; level < levels; level++) {
         const entry = (level * places + place) * runs + i

@@ -219,6 +219,18 @@ describe('draws', () => {
     expect(looks).toBe(4)
   })
 
+  it('look within a draw, at every method and every few hundred levels of it', () => {
+    let looks = 0
+    const context = {
+      checkCancelled: (): void => {
+        looks++
+      },
+      progress: (): void => undefined,
+    }
+    drawEnergies(models, all, { seed: 1, from: 0, to: 1 }, context)
+    expect(looks).toBeGreaterThan(models.length)
+  })
+
   it('have no Ea where the level has none', () => {
     const lone = seriesOf(levels, [
       {

@@ -16,6 +16,9 @@ export interface DrawRange {
 /** Draws between two reports of progress: a few milliseconds with a hundred levels. */
 const drawsBetweenReports = 10
 
+/** With thousands of levels one method of one draw takes tens of milliseconds. */
+const levelsBetweenLooks = 200
+
 /**
  * Ea of every model at every level for draws of the errors that `sources` describes: one array a model, in J/mol, [(draw - from) · levels + level]; NaN where the level
  * has no Ea, or a draw has no minimum.
@@ -46,13 +49,15 @@ export function drawEnergies(
   }
   const room = roomFor(runs)
   for (let draw = from; draw < to; draw++) {
-    // With thousands of levels one draw takes tens of milliseconds.
     context.checkCancelled()
     if ((draw - from) % drawsBetweenReports === 0) context.progress(draw - from, to - from)
     disturb(disturbance, sources, runs, levels, seed, draw)
     models.forEach((model, m) => {
       const values = energies[m] as Float64Array
-      for (let level = 0; level < levels; level++) values[(draw - from) * levels + level] = disturbedEnergy(model, level, disturbance, room)
+      for (let level = 0; level < levels; level++) {
+        if (level % levelsBetweenLooks === 0) context.checkCancelled()
+        values[(draw - from) * levels + level] = disturbedEnergy(model, level, disturbance, room)
+      }
     })
   }
   return energies
