@@ -17,7 +17,7 @@ export function createTaskTable(importOptions: ImportOptions = {}): TaskTable {
     'estimate-uncertainty': ({ study, columns, uncertainty }, context) =>
       taskMap['estimate-uncertainty'](study, columns, uncertainty, context, cache),
     'draw-energies': taskMap['draw-energies'],
-    'intervals-of-draws': ({ order, shares, seed }) => taskMap['intervals-of-draws'](order, shares, seed),
+    'intervals-of-draws': ({ order, shares, seed }, context) => taskMap['intervals-of-draws'](order, shares, seed, context),
     'evaluate-rate-constants': ({ table }) => taskMap['evaluate-rate-constants'](table),
     'import-file': ({ fileName, bytes }, context) => {
       try {

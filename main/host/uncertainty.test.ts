@@ -2,6 +2,7 @@ import { afterEach, describe, expect, it } from 'vitest'
 import { Cancelled } from '../../shared-kinetics/errors.ts'
 import type { UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { createHost, type Host } from './create-host.ts'
+import type { HostTasks, TaskPool } from './host-tasks.ts'
 import { createInProcessPool } from './in-process-pool.ts'
 import { createTaskTable } from './task-table.ts'
 
@@ -10,8 +11,10 @@ afterEach(async () => {
   for (const host of hosts.splice(0)) await host.close({ save: false })
 })
 
-async function hostWithDemo(): Promise<{ readonly host: Host; readonly revision: number }> {
-  const host = createHost({ dataFolder: null, pool: createInProcessPool(createTaskTable()), version: '0', shell: 'command-line' })
+async function hostWithDemo(
+  pool: TaskPool = createInProcessPool(createTaskTable()),
+): Promise<{ readonly host: Host; readonly revision: number }> {
+  const host = createHost({ dataFolder: null, pool, version: '0', shell: 'command-line' })
   hosts.push(host)
   const { revision } = await host.call('study.open-demo', {})
   return { host, revision }
@@ -59,6 +62,71 @@ describe('the uncertainty of the open study', () => {
     await expect(host.call('study.uncertainty', { revision })).rejects.toBeInstanceOf(Cancelled)
     stop()
     expect((await host.call('study.uncertainty', { revision })).result.profiles.length).toBeGreaterThan(0)
+  })
+
+  it('draws in slices, at most two at once, so that other tasks are served between them', async () => {
+    const inner = createInProcessPool(createTaskTable())
+    const ranges: (readonly [number, number])[] = []
+    let atOnce = 0
+    let most = 0
+    const pool: TaskPool = {
+      ...inner,
+      run: async (name, input, options) => {
+        if (name !== 'draw-energies') return inner.run(name, input, options)
+        const { range } = input as HostTasks['draw-energies']['input']
+        ranges.push([range.from, range.to])
+        most = Math.max(most, ++atOnce)
+        try {
+          return await inner.run(name, input, options)
+        } finally {
+          atOnce--
+        }
+      },
+    }
+    const { host, revision } = await hostWithDemo(pool)
+    await host.call('study.uncertainty', { revision })
+    expect(most).toBe(2)
+    expect(Math.max(...ranges.map(([from, to]) => to - from))).toBeLessThanOrEqual(100)
+    // Every draw once, in order.
+    expect(
+      ranges
+        .flat()
+        .filter((_, i) => i % 2 === 0)
+        .slice(1),
+    ).toEqual(ranges.map(([, to]) => to).slice(0, -1))
+    expect(ranges.at(-1)?.[1]).toBe(2000)
+  })
+
+  it('stops the other slices when one fails, and tells no more of them', async () => {
+    const inner = createInProcessPool(createTaskTable())
+    const signals: AbortSignal[] = []
+    const late: (() => void)[] = []
+    const pool: TaskPool = {
+      ...inner,
+      run: async (name, input, options = {}) => {
+        if (name !== 'draw-energies') return inner.run(name, input, options)
+        if (options.signal !== undefined) signals.push(options.signal)
+        if (signals.length === 2) throw new Error('The calculation stopped unexpectedly.')
+        late.push(() => options.progress?.(100, 100))
+        return new Promise((_, reject) => {
+          options.signal?.addEventListener('abort', () => {
+            reject(new Cancelled())
+          })
+        })
+      },
+    }
+    const { host, revision } = await hostWithDemo(pool)
+    const told: string[] = []
+    host.subscribe((event) => {
+      if (event.kind === 'progress' && event.work === 'uncertainty') told.push(event.what)
+    })
+    await expect(host.call('study.uncertainty', { revision })).rejects.toThrow('stopped unexpectedly')
+    expect(signals.map((signal) => signal.aborted)).toEqual([true, true])
+    const before = told.length
+    await new Promise((resolve) => setTimeout(resolve, 150))
+    expect(late).toHaveLength(1)
+    for (const tell of late) tell()
+    expect(told).toHaveLength(before)
   })
 
   it('goes into the exports where it is asked for', async () => {

@@ -1,5 +1,7 @@
 import { Cancelled } from '../../shared-kinetics/errors.ts'
-import type { UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import type { MethodId } from '../../shared-kinetics/isoconversional/result.ts'
+import { drawPlan, noteOnFewerDraws } from '../../shared-kinetics/tasks/draw-uncertainty.ts'
+import type { IntervalResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import type { EventHub } from './event-hub.ts'
 import type { TaskPool } from './host-tasks.ts'
 import type { Workspace } from './workspace.ts'
@@ -13,8 +15,10 @@ export interface Uncertainty {
   cancel(): void
 }
 
-/** Draws are shared out to so many workers. */
-const shares = 2
+/** Slices at work at once. */
+const atOnce = 2
+/** A tenth of a second or so of a common study: imports, saves and evaluations are served between two slices. */
+const drawsInSlice = 100
 
 export function createUncertainty(workspace: Workspace, pool: TaskPool, events: EventHub): Uncertainty {
   let current: { readonly revision: number; readonly result: Promise<UncertaintyResult>; readonly stop: AbortController } | null = null
@@ -22,7 +26,11 @@ export function createUncertainty(workspace: Workspace, pool: TaskPool, events: 
   const estimate = async (signal: AbortSignal): Promise<UncertaintyResult> => {
     const { document } = workspace.session
     const { uncertainty } = document
-    const report = events.progressOf('uncertainty')
+    const reportAll = events.progressOf('uncertainty')
+    // A worker may still tell of work that nobody waits for.
+    const report: typeof reportAll = (...progress) => {
+      if (!signal.aborted) reportAll(...progress)
+    }
     const columns = new Map(document.runs.map((run) => [run.columnsKey, workspace.study.columns.get(run.columnsKey)]))
     const study = { runs: document.runs, settings: document.settings, importNotes: document.importNotes }
     // Resampling is the first half of the way, drawing the second.
@@ -32,20 +40,21 @@ export function createUncertainty(workspace: Workspace, pool: TaskPool, events: 
       { signal, progress: (done, total) => report(done, 2 * total, 'resampled runs') },
     )
     if (order.models.length === 0) return result
-    const drawn = Array.from({ length: shares }, () => 0)
-    const { draws, seed } = uncertainty
-    const parts = await Promise.all(
-      drawn.map(async (_, share) => {
-        const range = { seed, from: Math.floor((share * draws) / shares), to: Math.floor(((share + 1) * draws) / shares) }
-        const progress = (done: number): void => {
-          drawn[share] = done
-          const all = drawn.reduce((sum, some) => sum + some, 0)
-          report(draws + all, 2 * draws, 'measured sources')
-        }
-        return pool.run('draw-energies', { ...order, range }, { signal, progress })
-      }),
-    )
-    const intervals = await pool.run('intervals-of-draws', { order, shares: parts, seed }, { signal })
+    const { draws: asked, seed } = uncertainty
+    const { draws, orders } = drawPlan(order, asked)
+    const intervals = new Map<MethodId, IntervalResult>()
+    const all = draws * orders.length
+    for (const [before, some] of orders.entries()) {
+      const shares = await drawInSlices(
+        draws,
+        async (from, to, progress) => pool.run('draw-energies', { ...some, range: { seed, from, to } }, { signal, progress }),
+        (done) => {
+          report(all + before * draws + done, 2 * all, 'measured sources')
+        },
+      )
+      for (const [method, interval] of await pool.run('intervals-of-draws', { order: some, shares, seed }, { signal }))
+        intervals.set(method, { ...interval, note: interval.note + noteOnFewerDraws(draws, asked) })
+    }
     const profiles = result.profiles.map((profile) => {
       const interval = intervals.get(profile.method)
       return interval === undefined ? profile : { ...profile, intervals: [...profile.intervals, interval] }
@@ -58,8 +67,9 @@ export function createUncertainty(workspace: Workspace, pool: TaskPool, events: 
     const stop = new AbortController()
     const mine = { revision, result: estimate(stop.signal), stop }
     current = mine
-    // A failure is not remembered: asking again tries again.
+    // A failure is not remembered: asking again tries again. What else was running of it is for nothing.
     mine.result.catch(() => {
+      stop.abort()
       if (current === mine) current = null
     })
     return mine.result
@@ -80,4 +90,36 @@ export function createUncertainty(workspace: Workspace, pool: TaskPool, events: 
     },
     cancel,
   }
+}
+
+/** The draws of all slices, in order. The next slice goes to the pool only when one is done, behind whatever else has come to wait there. */
+async function drawInSlices<Slice>(
+  draws: number,
+  draw: (from: number, to: number, progress: (done: number) => void) => Promise<Slice>,
+  report: (done: number) => void,
+): Promise<Slice[]> {
+  const slices: Slice[] = []
+  const drawn: number[] = []
+  let next = 0
+  let failed = false
+  const drawOn = async (): Promise<void> => {
+    while (!failed && next * drawsInSlice < draws) {
+      const slice = next++
+      const from = slice * drawsInSlice
+      const to = Math.min(draws, from + drawsInSlice)
+      const tell = (done: number): void => {
+        drawn[slice] = done
+        report(drawn.reduce((sum, some) => sum + some, 0))
+      }
+      try {
+        slices[slice] = await draw(from, to, tell)
+      } catch (error) {
+        failed = true
+        throw error
+      }
+      tell(to - from)
+    }
+  }
+  await Promise.all(Array.from({ length: atOnce }, drawOn))
+  return slices
 }

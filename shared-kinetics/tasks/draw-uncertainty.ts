@@ -17,11 +17,33 @@ export interface DrawOrder {
 export const drawShare = ({ models, sources, range }: DrawOrder & { readonly range: DrawRange }, context: TaskContext): Float64Array[] =>
   drawEnergies(models, sources, range, context)
 
-/** The interval of each method from all shares, in the order of the shares. */
+/** Drawn energies that are held at once, over draws, levels and methods: 160 MB, and as much again while they are put together. */
+export const mostValuesAtOnce = 2e7
+
+/** How draws are made without holding more than `mostValuesAtOnce` energies: so many methods after each other, which does not change a number, and fewer draws only where one method alone is too much. */
+export function drawPlan({ models, sources }: DrawOrder, draws: number): { readonly draws: number; readonly orders: readonly DrawOrder[] } {
+  const levels = Math.max(1, models[0]?.levels ?? 1)
+  const taken = Math.max(1, Math.min(draws, Math.floor(mostValuesAtOnce / levels)))
+  const methodsAtOnce = Math.max(1, Math.floor(mostValuesAtOnce / (levels * taken)))
+  const orders = Array.from({ length: Math.ceil(models.length / methodsAtOnce) }, (_, i) => ({
+    models: models.slice(i * methodsAtOnce, (i + 1) * methodsAtOnce),
+    sources,
+  }))
+  return { draws: taken, orders }
+}
+
+/** Said beside an interval that rests on fewer draws than were asked for; else empty. */
+export const noteOnFewerDraws = (taken: number, asked: number): string =>
+  taken === asked
+    ? ''
+    : ` ${asked} draws were asked for; with so many levels no more than ${taken} are made. Choose fewer levels for more draws.`
+
+/** The interval of each method from all shares, in the order of the shares. @throws Cancelled, by `context` */
 export function intervalsOfDraws(
   { models, sources }: DrawOrder,
   shares: readonly (readonly Float64Array[])[],
   seed: number,
+  context: Pick<TaskContext, 'checkCancelled'> = { checkCancelled: () => undefined },
 ): ReadonlyMap<MethodId, IntervalResult> {
   return new Map(
     models.map((model, m) => {
@@ -35,7 +57,10 @@ export function intervalsOfDraws(
       const { levels } = model
       const note = noteOnDraws(sources, all.length / levels, seed)
       const missing = (level: number): IntervalStatus => (isKnown(sources, model, level) ? 'draws-without-energy' : 'source-unknown')
-      return [model.method, intervalResult('measured-sources', drawInterval(all, levels), note, model.Ea, missing, givenOf(sources))]
+      return [
+        model.method,
+        intervalResult('measured-sources', drawInterval(all, levels, context.checkCancelled), note, model.Ea, missing, givenOf(sources)),
+      ]
     }),
   )
 }

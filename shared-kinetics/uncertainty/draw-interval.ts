@@ -16,13 +16,15 @@ const leastShare = 0.99
  * in ascending order and between two by the straight line, so that one more draw would lie between the two with probability 0.95, however many there are (from 39 on).
  *
  * @param energies - [draw · levels + level], in J/mol
+ * @throws Cancelled, by `checkCancelled`
  * @source jcgm-101-2008 7.7 (probabilistically symmetric interval)
  */
-export function drawInterval(energies: Float64Array, levels: number): DrawInterval {
+export function drawInterval(energies: Float64Array, levels: number, checkCancelled: () => void = () => undefined): DrawInterval {
   const draws = energies.length / levels
   const out = { u: new Float64Array(levels), lower: new Float64Array(levels), upper: new Float64Array(levels) }
   const values = new Float64Array(draws)
   for (let level = 0; level < levels; level++) {
+    checkCancelled()
     let count = 0
     let mean = 0
     for (let draw = 0; draw < draws; draw++) {
