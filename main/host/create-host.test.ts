@@ -98,18 +98,14 @@ describe('importing files', () => {
 
   it.each(['evaluate', 'uncertainty'] as const)('goes on when other work is cancelled: %s', async (work) => {
     const tasks = sampleTasks()
-    let begun = (): void => undefined
-    const reading = new Promise<void>((resolve) => {
-      begun = resolve
-    })
-    let goOn = (): void => undefined
-    const asked = new Promise<void>((resolve) => {
-      goOn = resolve
-    })
+    const begun: (() => void)[] = []
+    const reading = new Promise<void>((resolve) => begun.push(resolve))
+    const goOn: (() => void)[] = []
+    const asked = new Promise<void>((resolve) => goOn.push(resolve))
     const pool = createInProcessPool({
       ...tasks,
       'import-file': async (input, context) => {
-        begun()
+        for (const tell of begun) tell()
         await asked
         context.checkCancelled()
         return tasks['import-file'](input, context)
@@ -119,7 +115,7 @@ describe('importing files', () => {
     const importing = importTexts(host, { 'a.csv': 'rate 5' })
     await reading
     await host.call('work.cancel', { work })
-    goOn()
+    for (const tell of goOn) tell()
     expect((await importing).refused).toEqual([])
     expect(await labels(host)).toEqual(['a'])
   })

@@ -110,20 +110,20 @@ describe('the worker pool', () => {
     const home = await evaluatedBy()
     const stop = new AbortController()
     // Cancelled within the home worker, which has not yet said so when the evaluation is asked for.
-    let again: Promise<number | undefined> | null = null
+    const again: Promise<number | undefined>[] = []
     const cancelled = rejectionOf(
       pool.run('import-file', file('spin'), {
         signal: stop.signal,
         progress: () => {
-          if (again !== null) return
+          if (again.length > 0) return
           stop.abort()
-          again = evaluatedBy()
+          again.push(evaluatedBy())
         },
       }),
     )
     expect(await cancelled).toBeInstanceOf(Cancelled)
     expect(home).toBeGreaterThan(0)
-    expect(await again).toBe(home)
+    expect(await Promise.all(again)).toEqual([home])
   })
 
   it('refuses a task it does not know', async () => {

@@ -13,7 +13,7 @@ export function importHandlers(context: HandlerContext): Pick<HandlerTable, 'run
         case 'uncertainty':
           context.uncertainty.cancel()
           break
-        default:
+        case 'import':
           for (const running of context.imports) running.abort()
       }
       return {}
