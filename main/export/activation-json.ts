@@ -11,6 +11,7 @@ import type {
 import { intervalsNotGiven } from '../../shared-kinetics/tasks/intervals-not-given.ts'
 import { studentStatus } from '../../shared-kinetics/tasks/interval-status.ts'
 import { caution } from './caution.ts'
+import { preExponentialOf } from './pre-exponential.ts'
 
 /** What an export is made from: the study, what followed from it, and the program that worked it out. */
 export interface ExportSource {
@@ -36,7 +37,7 @@ export function activationJson({ document, result, program, uncertainty }: Expor
     signal: result.signal,
     runs: result.runs.map(runFields),
     levels: result.levels,
-    profiles: result.profiles.map((profile) => profileFields(profile, uncertaintyOf(profile, uncertainty))),
+    profiles: result.profiles.map((profile) => profileFields(profile, result, uncertaintyOf(profile, uncertainty))),
     uncertainty: uncertainty === undefined ? null : { seed: uncertainty.seed, draws: uncertainty.draws },
     intervalsNotGiven: uncertainty === undefined ? [] : intervalsNotGiven(result.runs.map((run) => run.programmeGroup)),
     kissinger: result.kissinger,
@@ -87,7 +88,7 @@ function windowFields(window: Window): Record<string, number | null> {
 export const uncertaintyOf = (profile: ProfileResult, uncertainty: UncertaintyResult | undefined): UncertaintyProfile | undefined =>
   uncertainty?.profiles.find(({ method }) => method === profile.method)
 
-function profileFields(profile: ProfileResult, apart: UncertaintyProfile | undefined): Record<string, unknown> {
+function profileFields(profile: ProfileResult, result: StudyResult, apart: UncertaintyProfile | undefined): Record<string, unknown> {
   return {
     method: profile.method,
     label: profile.label,
@@ -102,6 +103,7 @@ function profileFields(profile: ProfileResult, apart: UncertaintyProfile | undef
     lnAfStandardError: profile.lnAfStandardError,
     covarianceEaLnAf_kJ_per_mol: profile.covarianceEaLnAf_kJ_per_mol,
     lnA_per_s: profile.lnA_per_s,
+    preExponential: preExponentialOf(profile, result),
     systematicError_percent: profile.systematicError_percent,
     r2: profile.r2,
     status: profile.status,

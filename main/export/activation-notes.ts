@@ -5,6 +5,7 @@ import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
 import { caution } from './caution.ts'
 import { intervalLines, meanLines } from './interval-lines.ts'
+import { preExponentialLines } from './pre-exponential.ts'
 import { peakMethodLines } from './peak-method-lines.ts'
 
 /** The text of `activation.csv.txt`, which stands beside the table: caution, intervals, settings, where the runs came from, findings. */
@@ -16,6 +17,7 @@ export function activationNotes(source: ExportSource): string {
     ['Caution', [caution]],
     ['Intervals', intervalLines(source)],
     ['Means', result.profiles.flatMap((profile) => meanLines(profile, uncertaintyOf(profile, source.uncertainty)))],
+    ['Pre-exponential factors by standards', result.profiles.flatMap((profile) => preExponentialLines(profile, result))],
     ['Peak and single-run methods', result.peakMethods.flatMap(peakMethodLines)],
     ['Settings', settingLines(document.settings, result.signal)],
     ['Runs', result.runs.flatMap(runLines)],

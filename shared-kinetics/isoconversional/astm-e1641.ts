@@ -2,6 +2,7 @@ import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import { doyleA, doyleTableSlope } from '../temperature-integral/doyle-table.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { heatingRateOf, lineMethod, temperatureAtLevel, type LineAtLevel, type RefinedLine } from './line-method.ts'
+import { middleHeatingRate } from './middle-heating-rate.ts'
 import type { MethodInfo } from './result.ts'
 
 export const astmE1641Info: MethodInfo = {
@@ -98,9 +99,4 @@ function lnAOf(Ea: number, thermal: number, heatingRate: number, series: SeriesA
   return Math.log((heatingRate * gasConstant_J_per_mol_K * -Math.log1p(-alpha)) / Ea) + Math.LN10 * doyleA(Ea / thermal)
 }
 
-function middleRun({ runs }: SeriesAtLevels): RunAtLevels | undefined {
-  const rates = runs.map(heatingRateOf)
-  const middle = 0.5 * (Math.min(...rates) + Math.max(...rates))
-  const distance = (run: RunAtLevels): number => Math.abs(heatingRateOf(run) - middle)
-  return runs.toSorted((a, b) => distance(a) - distance(b) || heatingRateOf(a) - heatingRateOf(b))[0]
-}
+const middleRun = ({ runs }: SeriesAtLevels): RunAtLevels | undefined => runs[middleHeatingRate(runs.map(heatingRateOf))]
