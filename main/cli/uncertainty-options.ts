@@ -1,5 +1,5 @@
 import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
-import { defaultUncertainty, studyLimits } from '../../shared-kinetics/contract/study-document.ts'
+import { defaultUncertainty, statedKeys, studyLimits } from '../../shared-kinetics/contract/study-document.ts'
 import { parsePercent, parseTemperatureDifference, parseTime, type Parsed } from '../../shared-kinetics/units/parse-quantity.ts'
 import { UsageError } from './cli-io.ts'
 import type { ParsedWords } from './parse-words.ts'
@@ -30,7 +30,8 @@ export function uncertaintyFrom(words: ParsedWords): { readonly wanted: boolean;
     seed: read('seed', (text) => whole('--seed', text, 0, Number.MAX_SAFE_INTEGER)),
   }
   const given = Object.entries(stated).filter(([, value]) => value !== null)
-  const uncertainty = { ...defaultUncertainty, ...Object.fromEntries(given) }
+  const named = statedKeys.filter((key) => stated[key] !== null)
+  const uncertainty = { ...defaultUncertainty, ...Object.fromEntries(given), ...(named.length === 0 ? {} : { stated: named }) }
   return {
     wanted: words.flag('uncertainty') || given.some(([name]) => name !== 'seed'),
     changes: given.length === 0 ? [] : [{ kind: 'set-uncertainty', uncertainty }],

@@ -4,7 +4,7 @@ import type { MethodId } from '../isoconversional/result.ts'
 import type { ImportNote, NominalSource, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity, SignalUnit } from '../series/signal-quantity.ts'
 import type { AnalysisSettings, BaselineKind } from '../tasks/study-input.ts'
-import type { UncertaintySettings } from '../uncertainty/measured-sources.ts'
+import type { StatedUncertainties, UncertaintySettings } from '../uncertainty/measured-sources.ts'
 import { rateConstantTableSchema } from './rate-constant-schema.ts'
 
 /** Limits that keep a hostile or damaged file from exhausting the machine. */
@@ -110,6 +110,14 @@ export const settingsSchema = z.object({
 
 const notNegative = finite.check(z.nonnegative())
 
+/** What a person can state of the measurement. */
+export const statedKeys = namesOf<keyof StatedUncertainties>({
+  temperatureCommon_K: true,
+  temperatureRun_K: true,
+  lag_s: true,
+  statedHeatingRate_share: true,
+})
+
 export const uncertaintySchema = z.object({
   temperatureCommon_K: notNegative,
   temperatureRun_K: notNegative,
@@ -117,6 +125,7 @@ export const uncertaintySchema = z.object({
   statedHeatingRate_share: notNegative.check(z.lt(1)),
   draws: z.int().check(z.gte(100), z.lte(studyLimits.draws)),
   seed: z.int().check(z.nonnegative()),
+  stated: z.optional(z.readonly(z.array(z.enum(statedKeys)).check(z.maxLength(statedKeys.length)))),
 })
 
 /**

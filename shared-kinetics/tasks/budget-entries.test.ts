@@ -29,6 +29,12 @@ describe('entries of a budget', () => {
     expect(defaultUncertainty).toMatchObject(assumedUncertainties)
   })
 
+  it('call stated what somebody has stated to be just what is assumed otherwise', () => {
+    const of = sources({ stated: { ...assumedUncertainties, stated: ['lag_s'] } })
+    expect(entryOf('temperature-lag', of)).toMatchObject({ assumed: false, magnitude: '1 s times the heating rate, as stated' })
+    expect(entryOf('temperature-run', of)).toMatchObject({ assumed: true })
+  })
+
   it('call assumed what nobody has stated, and stated what somebody has', () => {
     const of = sources({ stated: { ...assumedUncertainties, temperatureCommon_K: 0.2 } })
     expect(entryOf('temperature-common', of)).toMatchObject({ assumed: false, magnitude: '0.2 K, as stated' })

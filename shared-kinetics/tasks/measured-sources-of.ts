@@ -3,7 +3,7 @@ import { noiseAtLevels } from '../conversion/noise-at-levels.ts'
 import { KineticsError } from '../errors.ts'
 import type { TaskContext } from '../isoconversional/result.ts'
 import type { RunColumns } from '../series/run.ts'
-import type { BaselineShift, MeasuredSources, StatedUncertainties } from '../uncertainty/measured-sources.ts'
+import type { BaselineShift, MeasuredSources, NamedUncertainties, StatedUncertainties } from '../uncertainty/measured-sources.ts'
 import { column } from '../units/quantity.ts'
 import { convertRun, type ConvertedRun } from './convert-run.ts'
 import type { GroupedRun } from './series-of-study.ts'
@@ -19,7 +19,7 @@ import type { AnalysisSettings, BaselineKind } from './study-input.ts'
 export function measuredSourcesOf(
   runs: readonly GroupedRun[],
   settings: AnalysisSettings,
-  stated: StatedUncertainties,
+  stated: NamedUncertainties,
   columns: ReadonlyMap<string, RunColumns | undefined>,
   context: TaskContext,
 ): MeasuredSources {

@@ -1,4 +1,4 @@
-import type { StatedUncertainties } from './measured-sources.ts'
+import type { NamedUncertainties, StatedUncertainties } from './measured-sources.ts'
 
 /** What is taken where nobody has stated anything: the same numbers as in a new study (`defaultUncertainty` of contract says what they rest on). */
 export const assumedUncertainties: StatedUncertainties = {
@@ -8,5 +8,6 @@ export const assumedUncertainties: StatedUncertainties = {
   statedHeatingRate_share: 0.02,
 }
 
-/** Whether a value is the one that is taken where nobody has stated anything. */
-export const isAssumed = (stated: StatedUncertainties, key: keyof StatedUncertainties): boolean => stated[key] === assumedUncertainties[key]
+/** Whether nobody has stated a value: it was not named, and is the one that is taken where nothing was. */
+export const isAssumed = (stated: NamedUncertainties, key: keyof StatedUncertainties): boolean =>
+  stated.stated?.includes(key) !== true && stated[key] === assumedUncertainties[key]

@@ -23,8 +23,13 @@ export interface StatedUncertainties {
   readonly statedHeatingRate_share: number
 }
 
+/** The same with what somebody named among it: a value that was typed is stated even where it is the one that is assumed otherwise. */
+export interface NamedUncertainties extends StatedUncertainties {
+  readonly stated?: readonly (keyof StatedUncertainties)[] | undefined
+}
+
 /** What is stated, and how many draws of which seed are made of it. */
-export interface UncertaintySettings extends StatedUncertainties {
+export interface UncertaintySettings extends NamedUncertainties {
   readonly draws: number
   /** Of everything drawn at random, resampled runs included; whole, not negative. */
   readonly seed: number
@@ -32,7 +37,7 @@ export interface UncertaintySettings extends StatedUncertainties {
 
 /** Everything that a series' measured inputs are uncertain by: plain data that crosses to a worker. Tables hold one entry a run at each level: [level · runs + run]. */
 export interface MeasuredSources {
-  readonly stated: StatedUncertainties
+  readonly stated: NamedUncertainties
   /** Relative standard uncertainty of each run's heating rate. */
   readonly heatingRate_share: Float64Array
   /** Standard errors from the noise of the signal; the correlation is that with the level before. */
