@@ -15,7 +15,7 @@ export function fewTemperatures({ result: { line } }: RateConstantReview): Findi
       aboutTable({
         code: 'few-temperatures',
         severity: 'stop',
-        title: `${counted}; at least 3 are needed`,
+        title: `${counted}; Ea needs at least 2, an interval 3`,
         message: `${counted} among ${points} rows used. Ea is the slope of ln k over temperatures: add rate constants at two or more other temperatures.`,
         evidence: { temperatures, points },
         basis: 'A line needs two points, an interval three',
@@ -28,7 +28,7 @@ export function fewTemperatures({ result: { line } }: RateConstantReview): Findi
       aboutTable({
         code: 'few-temperatures',
         severity: 'caution',
-        title: `${counted}; at least 3 are needed for an interval`,
+        title: 'No interval: two distinct temperatures',
         message: `${counted}. Through two any line fits, so that Ea has no interval and nothing shows whether ln k is straight. Add a rate constant at a third temperature.`,
         evidence: { temperatures, points },
         basis: 'A line needs two points, an interval three',

@@ -15,7 +15,10 @@ export function tooFewProgrammes({ study, runs }: ReviewInput): Finding[] {
       code: 'too-few-programmes',
       severity: programmes < 2 ? 'stop' : 'caution',
       stage: 'runs',
-      title: `${counted.replace(replicates, '')}; at least ${recommended} are needed`,
+      title:
+        programmes < 2
+          ? `${counted.replace(replicates, '')}; Ea needs at least 2, an interval ${recommended}`
+          : 'No interval: two distinct temperature programmes',
       message:
         programmes < 2
           ? `${counted}. Isoconversional methods compare runs at one conversion and need at least two, better three to five. Add runs at other heating rates or hold temperatures.`
