@@ -40,7 +40,7 @@ const headings = [
 ]
 
 /**
- * The text of `rate-constants.csv`: one heading row and one row a quantity: Ea, ln A and A, transition-state parameters, factors per 10 K, then each measured and
+ * The text of `rate-constants.csv`: one heading row and one row a quantity: Ea, ln A and A, transition-state parameters, Ea and ln A between neighbouring temperatures, factors per 10 K, then each measured and
  * each predicted k with its temperature. What is not to be had is an empty cell.
  */
 export function rateConstantsCsv(result: RateConstantsResult, style: TableStyle): string {
@@ -49,6 +49,7 @@ export function rateConstantsCsv(result: RateConstantsResult, style: TableStyle)
     ...lineRows(result.line, unit, ''),
     ...(result.weightedLine === null ? [] : lineRows(result.weightedLine, unit, ', weighted by stated uncertainties')),
     ...eyringRows(result),
+    ...betweenRows(result),
     ...result.factorsPer10K.map((factor) => ({ ...factorRow(factor), label: placeOf(factor.from_K, result) })),
     ...measuredRows(result),
     ...result.predictions.flatMap((row) => predictionRows(row, unit)),
@@ -141,6 +142,21 @@ function eyringRows({ eyring }: RateConstantsResult): readonly QuantityRow[] {
     estimateRow(`Gibbs energy of activation${state}`, 'kJ/mol', eyring.gibbs_kJ_per_mol, eyring.gibbsAt_K),
   ]
 }
+
+/** The temperature is the colder of the two; the label names both. Two temperatures leave no interval. */
+const betweenRows = ({ betweenTemperatures, rateUnit }: RateConstantsResult): readonly QuantityRow[] =>
+  betweenTemperatures.flatMap(({ from_K, to_K, Ea_kJ_per_mol, lnA }) => {
+    const place = { label: `${Number(from_K.toFixed(3))} K to ${Number(to_K.toFixed(3))} K`, temperature_K: from_K }
+    return [
+      { ...place, quantity: 'Ea between two temperatures', unit: 'kJ/mol', value: Ea_kJ_per_mol },
+      {
+        ...place,
+        quantity: 'ln A between two temperatures',
+        unit: `A in ${rateUnit === '' ? 'unit of k, not stated' : rateUnit}`,
+        value: lnA,
+      },
+    ]
+  })
 
 const factorRow = ({ from_K, factor, lower95, upper95 }: FactorPer10KResult): QuantityRow => ({
   quantity: 'factor per 10 K, from this temperature',

@@ -27,6 +27,7 @@ export function rateConstantsJson({ document, result, program }: RateConstantsSo
     line: result.line,
     weightedLine: result.weightedLine,
     eyring: result.eyring,
+    betweenTemperatures: result.betweenTemperatures,
     factorsPer10K: result.factorsPer10K,
     predictions: result.predictions,
     curvature: result.curvature,

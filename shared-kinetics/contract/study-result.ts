@@ -30,6 +30,7 @@ export type {
   EstimateResult,
   EyringResult,
   FactorPer10KResult,
+  BetweenTemperaturesResult,
   RateConstantPrediction,
   RateConstantRowResult,
   RateConstantsResult,

@@ -1,6 +1,7 @@
 import { KineticsError } from '../errors.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { quantity, type Quantity } from '../units/quantity.ts'
+import { isSameTemperature } from './rate-constant-point.ts'
 
 export interface EnergyFromRatio {
   readonly status: 'ok' | 'temperatures-not-distinct'
@@ -24,7 +25,12 @@ export function energyFromRatio(ratio: number, from: Quantity<'K'>, to: Quantity
     if (!(value > 0) || !Number.isFinite(value))
       throw new KineticsError('not-finite', `The ${what} must be a number above 0, and is ${value}.`, {})
   }
-  if (Math.abs(to - from) <= 0.01) return { status: 'temperatures-not-distinct', Ea: quantity(Number.NaN, 'J/mol') }
+  return energyFromLnRatio(Math.log(ratio), from, to)
+}
+
+/** The same from ln of the ratio, which is there where the ratio itself leaves double precision; temperatures above 0. */
+export function energyFromLnRatio(lnRatio: number, from: Quantity<'K'>, to: Quantity<'K'>): EnergyFromRatio {
+  if (isSameTemperature(from, to)) return { status: 'temperatures-not-distinct', Ea: quantity(Number.NaN, 'J/mol') }
   // (T₂ - T₁)/(T₁ T₂) instead of 1/T₁ - 1/T₂: close temperatures lose no digits.
-  return { status: 'ok', Ea: quantity((gasConstant_J_per_mol_K * Math.log(ratio) * from * to) / (to - from), 'J/mol') }
+  return { status: 'ok', Ea: quantity((gasConstant_J_per_mol_K * lnRatio * from * to) / (to - from), 'J/mol') }
 }

@@ -30,12 +30,15 @@ export function checkRateConstants(points: readonly RateConstantPoint[]): void {
 const isPositive = (value: number): boolean => value > 0 && Number.isFinite(value)
 
 /** Temperatures within a hundredth of a kelvin are one: replicates are set to the same temperature, not measured at it. */
+export const isSameTemperature = (one: number, other: number): boolean => Math.abs(other - one) <= 0.01
+
+/** How many there are, with replicates counted once. */
 export function distinctTemperatures(points: readonly RateConstantPoint[]): number {
   const ascending = points.map((point) => point.temperature).toSorted((a, b) => a - b)
   let count = 0
   let last = Number.NEGATIVE_INFINITY
   for (const temperature of ascending) {
-    if (temperature - last <= 0.01) continue
+    if (isSameTemperature(last, temperature)) continue
     count += 1
     last = temperature
   }

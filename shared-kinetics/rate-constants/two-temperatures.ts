@@ -1,6 +1,6 @@
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import type { Quantity } from '../units/quantity.ts'
-import { energyFromRatio, type EnergyFromRatio } from './energy-from-ratio.ts'
+import { energyFromLnRatio, type EnergyFromRatio } from './energy-from-ratio.ts'
 import { checkRateConstants, type RateConstantPoint } from './rate-constant-point.ts'
 
 export interface TwoTemperatures {
@@ -19,6 +19,7 @@ export interface TwoTemperatures {
  */
 export function twoTemperatures(one: RateConstantPoint, other: RateConstantPoint): TwoTemperatures {
   checkRateConstants([one, other])
-  const { status, Ea } = energyFromRatio(other.rateConstant / one.rateConstant, one.temperature, other.temperature)
-  return { status, Ea, lnA: Math.log(one.rateConstant) + Ea / (gasConstant_J_per_mol_K * one.temperature) }
+  const lnK = Math.log(one.rateConstant)
+  const { status, Ea } = energyFromLnRatio(Math.log(other.rateConstant) - lnK, one.temperature, other.temperature)
+  return { status, Ea, lnA: lnK + Ea / (gasConstant_J_per_mol_K * one.temperature) }
 }

@@ -63,6 +63,24 @@ describe('a table of rate constants, evaluated', () => {
     expect(perMinute.eyring?.entropy_J_per_mol_K.value).toBeCloseTo(perSecond.eyring?.entropy_J_per_mol_K.value ?? 0, 8)
   })
 
+  it('between neighbouring temperatures Ea is that of the two rows, and with two rows that of the line', () => {
+    const W8 = tableOf('W8')
+    const { betweenTemperatures, line } = evaluateRateConstants({ ...W8, rows: W8.rows.slice(1, 3) })
+    expect(betweenTemperatures).toHaveLength(1)
+    // 298 and 308 K: R ln(1.35e-4/3.46e-5)/(1/298 - 1/308).
+    expect(betweenTemperatures[0]?.Ea_kJ_per_mol).toBeCloseTo((8.31446261815324e-3 * Math.log(1.35e-4 / 3.46e-5)) / (1 / 298 - 1 / 308), 9)
+    expect(line.Ea_kJ_per_mol).toBeCloseTo(betweenTemperatures[0]?.Ea_kJ_per_mol ?? 0, 9)
+    expect(line.lnA).toBeCloseTo(betweenTemperatures[0]?.lnA ?? 0, 9)
+    expect(evaluateRateConstants(W8).betweenTemperatures.map(({ from_K, to_K }) => [from_K, to_K])).toEqual([
+      [273, 298],
+      [298, 308],
+      [308, 318],
+      [318, 328],
+      [328, 338],
+    ])
+    expect(evaluateRateConstants({ ...W8, rows: W8.rows.slice(0, 1) }).betweenTemperatures).toEqual([])
+  })
+
   it('says the standard state of an entropy that needs one', () => {
     const result = evaluateRateConstants(tableOf('W1', { rateUnit: 'L/(mol min)' }))
     expect(result.eyring?.standardStateOf).toBe('L/(mol s)')

@@ -1,4 +1,5 @@
 import { arrheniusLine, arrheniusLineSources, type ArrheniusLine, type Weighting } from '../rate-constants/arrhenius-line.ts'
+import { betweenTemperatures } from '../rate-constants/between-temperatures.ts'
 import { exponentialFactor } from '../rate-constants/exponential-factor.ts'
 import { eyringLine, eyringLineSources, type Estimate } from '../rate-constants/eyring-line.ts'
 import { factorPer10K } from '../rate-constants/factor-per-10-k.ts'
@@ -47,6 +48,12 @@ export function evaluateRateConstants(table: RateConstantTable): RateConstantsRe
     line: lineResult(line, 'none', rateUnit),
     weightedLine: isStated ? lineResult(arrheniusLine(points, 'stated-uncertainties'), 'stated-uncertainties', rateUnit) : null,
     eyring: eyringResult(points, rateUnit),
+    betweenTemperatures: betweenTemperatures(points).map(({ from, to, Ea, lnA }) => ({
+      from_K: from,
+      to_K: to,
+      Ea_kJ_per_mol: maybe(joulesToKilojoules(Ea)),
+      lnA: maybe(lnA),
+    })),
     factorsPer10K: factorTemperatures(data_K).map((from) => factorResult(line, from)),
     predictions: table.predictAt_K.map((at) => predictionResult(line, data_K, quantity(at, 'K'))),
     band: bandOf(line, data_K, table.predictAt_K),

@@ -79,6 +79,14 @@ export interface FactorPer10KResult {
   readonly upper95: Maybe
 }
 
+/** Ea = R ln(k₂/k₁)/(1/T₁ - 1/T₂) from one temperature to the next hotter one; two points leave no interval. ln A is in the unit of k. */
+export interface BetweenTemperaturesResult {
+  readonly from_K: number
+  readonly to_K: number
+  readonly Ea_kJ_per_mol: Maybe
+  readonly lnA: Maybe
+}
+
 export interface RateConstantPrediction {
   readonly temperature_K: number
   /** null where it leaves double precision as well; `lnK` is then there. */
@@ -124,6 +132,8 @@ export interface RateConstantsResult {
   readonly weightedLine: ArrheniusResult | null
   /** null where there is no line. */
   readonly eyring: EyringResult | null
+  /** From the coldest temperature used to the hottest, each to its neighbour; replicates by the mean of their ln k. Empty for one temperature. */
+  readonly betweenTemperatures: readonly BetweenTemperaturesResult[]
   /** From 25 to 35 °C, and over the middle of the data. */
   readonly factorsPer10K: readonly FactorPer10KResult[]
   /** In the order of `predictAt_K`. */

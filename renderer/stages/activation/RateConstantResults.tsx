@@ -6,6 +6,7 @@ import { copyText } from '../../sheet/data-table.ts'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
 import { TableView } from '../../sheet/TableView.tsx'
 import type { RatedProps } from './RateConstantsActivation.tsx'
+import { RateConstantPairs } from './RateConstantPairs.tsx'
 import { RateConstantPredictions } from './RateConstantPredictions.tsx'
 import { errorText, parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
 
@@ -25,6 +26,7 @@ export function RateConstantResults(props: RatedProps) {
         </>
       )}
       <RateConstantPredictions {...props} />
+      {rated.betweenTemperatures.length > 1 && <RateConstantPairs rated={rated} />}
       <div className="half-foot">
         <p className="source">{sourcesOf(rated)}</p>
         <div className="controls-end">

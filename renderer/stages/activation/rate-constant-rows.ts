@@ -1,5 +1,6 @@
 import type {
   ArrheniusResult,
+  BetweenTemperaturesResult,
   EstimateResult,
   FactorPer10KResult,
   Maybe,
@@ -136,6 +137,7 @@ export function residualText(residual: Maybe): string {
 export function copiedTables(result: RateConstantsResult): string {
   return [
     copyText(parameterCopyColumns, parameterRows(result)),
+    ...(result.betweenTemperatures.length === 0 ? [] : [copyText(betweenCopyColumns(result), result.betweenTemperatures)]),
     ...(result.predictions.length === 0 ? [] : [copyText(predictionCopyColumns(result), result.predictions)]),
     copyText(rowCopyColumns(result), result.rows),
   ].join('\n\n')
@@ -171,6 +173,16 @@ const temperatureColumn = <Row extends { readonly temperature_K: number }>({
   temperatureUnitShown: shown,
 }: RateConstantsResult): DataColumn<Row> =>
   number('temperature', 'T', temperatureUnitWords[shown], (row) => Number(inUnit(row.temperature_K, shown).toFixed(6)))
+
+export const betweenCopyColumns = ({
+  temperatureUnitShown: shown,
+  rateUnit,
+}: RateConstantsResult): readonly DataColumn<BetweenTemperaturesResult>[] => [
+  number('from', 'from T', temperatureUnitWords[shown], (row) => Number(inUnit(row.from_K, shown).toFixed(6))),
+  number('to', 'to T', temperatureUnitWords[shown], (row) => Number(inUnit(row.to_K, shown).toFixed(6))),
+  number('Ea', 'Ea', 'kJ/mol', (row) => row.Ea_kJ_per_mol),
+  number('lnA', 'ln A', `A in ${rateUnit === '' ? 'unit of k' : rateUnit}`, (row) => row.lnA),
+]
 
 export const predictionCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantPrediction>[] => [
   temperatureColumn(result),
