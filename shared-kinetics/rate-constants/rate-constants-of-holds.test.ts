@@ -22,6 +22,9 @@ const energyOf = (model: keyof typeof reactionModels, zeroInTime: 'fixed' | 'fre
   return arrheniusLine(rows.map((row) => ({ temperature: quantity(row.temperature_K, 'K'), rateConstant: row.rateConstant })))
 }
 
+const noteOf = (of: readonly HoldAtLevels[], zeroInTime: 'fixed' | 'free') =>
+  rateConstantsOfHolds(of, reactionModels.F1, { zeroInTime, range: [0.1, 0.9] }).notes[0]
+
 describe('rate constants of isothermal runs', () => {
   it('under the true model give Ea and A back', () => {
     for (const zeroInTime of ['fixed', 'free'] as const) {
@@ -49,5 +52,24 @@ describe('rate constants of isothermal runs', () => {
     expect(table.notes[0]?.evidence).toMatchObject({ model: 'F1', convertedBeforeHold: 0.01 })
     expect(table.notes[1]?.message).toMatch(/backward/)
     expect(rateConstantsOfHolds([], reactionModels.F1, { zeroInTime: 'free', range: [0.1, 0.9] }).rows).toEqual([])
+  })
+
+  it('say where each fitted zero in time lies, as it was put into the runs', () => {
+    const zeros = [-120, 45, 0, 300]
+    const shifted = holds.map((hold, i) => ({ ...hold, time_s: Array.from(hold.time_s, (t) => t + (zeros[i] ?? 0)) }))
+    const free = noteOf(shifted, 'free')
+    expect(free?.message).toMatch(/zero in time fitted \(hold 390 −120 s, hold 400 45 s, hold 410 0 s, hold 420 300 s\)/)
+    expect(free?.evidence['leastZero_s']).toBeCloseTo(-120, 6)
+    expect(free?.evidence['greatestZero_s']).toBeCloseTo(300, 6)
+    expect(noteOf(holds, 'fixed')?.evidence).toMatchObject({ leastZero_s: 0, greatestZero_s: 0 })
+    // A note holds at most 1000 characters.
+    const many = Array.from({ length: 40 }, (_, i) => ({
+      ...(shifted[1] as HoldAtLevels),
+      label: `a run with a very long name, number ${i}`,
+    }))
+    for (const model of Object.values(reactionModels)) {
+      const { notes } = rateConstantsOfHolds(many, model, { zeroInTime: 'free', range: [0.1, 0.9] })
+      expect(notes.every(({ message }) => message.length <= 1000)).toBe(true)
+    }
   })
 })

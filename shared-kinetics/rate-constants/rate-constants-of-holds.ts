@@ -63,7 +63,8 @@ function modelNote(usable: readonly ReadHold[], model: ReactionModel, { zeroInTi
   if (usable.length === 0) return []
   const worst = Math.min(...usable.map(({ k }) => k.r2))
   const before = Math.max(0, ...usable.map(({ hold }) => (Number.isNaN(hold.conversionBeforeHold) ? 0 : hold.conversionBeforeHold)))
-  const zero = zeroInTime === 'fixed' ? 'zero in time at the start of the hold' : 'zero in time fitted'
+  const zeros_s = usable.map(({ k }) => k.zero_s as number)
+  const zero = zeroInTime === 'fixed' ? 'zero in time at the start of the hold' : `zero in time fitted (${zerosText(usable)})`
   return [
     {
       code: 'model-assumed',
@@ -71,10 +72,30 @@ function modelNote(usable: readonly ReadHold[], model: ReactionModel, { zeroInTi
       message:
         `k rests on a chosen model, ${model.label} (${model.code}), g = ${model.equations.g} = k t, over conversion ${range[0]} to ${range[1]}, ${zero}; least r² of g against t ` +
         `${Number(worst.toPrecision(5))}, at most ${Number((100 * before).toPrecision(2))} % converted before a hold began. Ea hardly depends on the model, A does; a straight g does not show that the model is right.`,
-      evidence: { model: model.code, leastR2: worst, convertedBeforeHold: before, runs: usable.length },
+      evidence: {
+        model: model.code,
+        leastR2: worst,
+        convertedBeforeHold: before,
+        runs: usable.length,
+        leastZero_s: Math.min(...zeros_s),
+        greatestZero_s: Math.max(...zeros_s),
+      },
     },
   ]
 }
+
+/** Where the line of each run meets g = 0, from the start of its hold: before it where the run reacted on the way up, behind it after an induction time. */
+function zerosText(usable: readonly ReadHold[]): string {
+  const most = 10
+  const each = usable.slice(0, most).map(({ hold: { label }, k }) => {
+    const name = label.length > 24 ? `${label.slice(0, 23)}…` : label
+    return `${name} ${secondsText(k.zero_s)} s`
+  })
+  return `${each.join(', ')}${usable.length > most ? ', …' : ''}`
+}
+
+const secondsText = (value: number): string =>
+  String(Number(Math.abs(value) < 1 ? value.toFixed(2) : value.toPrecision(3))).replace('-', '−')
 
 function leftOutNote(read: readonly ReadHold[]): readonly RateConstantNote[] {
   const without = read.flatMap(({ hold, k }) => (k.status === 'ok' ? [] : [`${hold.label} (${whyNot[k.status]})`]))
