@@ -73,6 +73,11 @@ describe('narrow-heating-rate-spread', () => {
 const ratesDiffer = (rate: number, nominal: number, change: Partial<ReviewedRun['result']> = {}): Finding[] =>
   heatingRateDiffersFromNominal(oneRun(reviewedRun('a', rate, 0, { result: { nominalHeatingRate_K_per_min: nominal, ...change } })))
 
+const runsAt = (rates: readonly number[]) =>
+  heatingRateDiffersFromNominal(
+    reviewInput({ runs: rates.map((rate, i) => reviewedRun(`r${i}`, rate, i, { result: { nominalHeatingRate_K_per_min: 10 } })) }),
+  )
+
 describe('heating-rate-differs-from-nominal', () => {
   it('fires beyond 3 %, either way, with both numbers', () => {
     const [finding] = ratesDiffer(10.42, 10)
@@ -86,6 +91,16 @@ describe('heating-rate-differs-from-nominal', () => {
   it('is silent at 3 %', () => {
     expect(ratesDiffer(103, 100)).toEqual([])
     expect(ratesDiffer(103.01, 100)).toHaveLength(1)
+  })
+
+  it('speaks once for more than three runs, with the numbers of each, and apart for a slipped unit', () => {
+    expect(runsAt([11, 9, 12])).toHaveLength(3)
+    const [slip, one, ...more] = runsAt([11, 9, 12, 10.5, 10, 600])
+    expect(more).toEqual([])
+    expect(slip).toMatchObject({ severity: 'stop', run: 'r5' })
+    expect(one).toMatchObject({ severity: 'caution', run: null, title: expect.stringMatching(/^4 runs .*20 %$/) as unknown })
+    const numbers = Object.entries(one?.evidence ?? {}).filter(([key]) => key.endsWith('measured_K_per_min'))
+    expect(numbers.map(([, value]) => value)).toEqual([11, 9, 12, 10.5])
   })
 
   it('is a stop that names the unit of time where the two are a factor of 60 apart, within a tenth', () => {

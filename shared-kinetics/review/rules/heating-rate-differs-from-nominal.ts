@@ -7,9 +7,15 @@ const allowed = 0.03
 const unitSlip = 60
 const slipTolerance = 0.1
 
-/** Fires where a measured constant heating rate is more than 3 % off the nominal one; never for holds and general programmes, nor where time was rebuilt. */
+/** From more runs than this one finding speaks for all of them. */
+const mostApart = 3
+
+/**
+ * Fires where a measured constant heating rate is more than 3 % off the nominal one; never for holds and general programmes, nor where time was rebuilt. More than three such
+ * runs share one finding; a slipped unit of time always has its own.
+ */
 export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] {
-  return runs.flatMap(({ info, result }): Finding[] => {
+  const found = runs.flatMap(({ info, result }): Finding[] => {
     const measured = result.heatingRate_K_per_min
     const nominal = result.nominalHeatingRate_K_per_min
     if (result.heatingRateSource !== 'measured' || measured === null || nominal === null) return []
@@ -35,7 +41,29 @@ export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] 
       },
     ]
   })
+  const off = found.filter(({ severity }) => severity === 'caution')
+  const [first] = off
+  if (first === undefined || off.length <= mostApart) return found
+  const isLabelUnique = new Set(runs.map(({ info }) => info.label)).size === runs.length
+  const label = (run: string | null): string => (isLabelUnique ? runs.find(({ info }) => info.id === run)?.info.label : run) ?? ''
+  const each = off.map((one) => `${label(one.run)} ${of('measured_K_per_min', one)} (nominal ${of('nominal_K_per_min', one)})`)
+  const most = Math.max(...off.map(({ evidence }) => Math.abs(Number(evidence['difference_percent']))))
+  return [
+    ...found.filter((one) => !off.includes(one)),
+    {
+      ...first,
+      title: `${off.length} runs heated at another rate than the nominal one, by up to ${percent(most / 100)}`,
+      message: `Over the reaction T(t) rises, in K/min, by: ${each.join('; ')}. Ea is calculated with the measured rates; the nominal ones would shift it.`,
+      run: null,
+      evidence: Object.fromEntries([
+        ['runs', off.length],
+        ...off.flatMap(({ run, evidence }) => Object.entries(evidence).map(([key, value]) => [`${label(run)}: ${key}`, value])),
+      ]) as Finding['evidence'],
+    },
+  ]
 }
+
+const of = (key: string, { evidence }: Finding): string => digits(Number(evidence[key]), 4)
 
 const quoted = (text = ''): string => (text.trim() === '' ? '' : ` (“${text.trim()}”)`)
 
