@@ -4,7 +4,7 @@ import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { unitOf } from './file-unit.ts'
 import type { Refuse } from './import-refusal.ts'
 import { isMissingMark, isNumber, parseNumber } from './parse-number.ts'
-import { linesWithinLimits } from './rate-constant-limits.ts'
+import { linesWithinLimits, rateConstantTextLimits } from './rate-constant-limits.ts'
 import { delimiterCharacter, splitCells, withoutEmptyEnd } from './split-cells.ts'
 
 /** A cell of a small table: a number, with a unit behind it where somebody typed one. */
@@ -73,6 +73,8 @@ function readingOf(lines: readonly NumberedLine[], delimiter: DelimiterWord, dec
   const isUnquotedComma = delimiter === 'comma' && decimal === 'comma'
   const rows = lines.map(({ number, text }) => {
     const cells = cellsOf(text, delimiter, decimal)
+    // Words of a remark, which no sign but blanks parts into so many.
+    if (cells.length > rateConstantTextLimits.cells) return { line: number, cells, isData: false }
     const filled = cells.filter((cell) => cell !== '' && !isMissingMark(cell))
     const numbers = filled.filter((cell) => numberCell(cell, decimal) !== null)
     const others = filled.length - numbers.length
@@ -123,7 +125,8 @@ export function numberCell(cell: string, decimal: DecimalSignWord): NumberCell |
   const whole = parseNumber(trimmed, 0, trimmed.length, decimal)
   if (!Number.isNaN(whole)) return { value: whole, unitText: '' }
   const match = /^(\S+)\s+(.+)$/.exec(trimmed) ?? /^([-+−]?[\d.,]+(?:e[-+−]?\d+)?)([°ºa-z%].*)$/i.exec(trimmed)
-  const [number, unitText] = [match?.[1] ?? '', match?.[2] ?? '']
+  if (match === null) return null
+  const [, number = '', unitText = ''] = match
   if (!isUnitText(unitText)) return null
   const value = parseNumber(number, 0, number.length, decimal)
   return number === '' || Number.isNaN(value) ? null : { value, unitText }

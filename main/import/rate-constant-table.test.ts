@@ -226,6 +226,7 @@ describe('a text that is larger than a table', () => {
       `a${run(' (', 990)}`,
       `1${run(' \t', 60)}x10${run(' \t', 3)}`,
       run('( ', 1000),
+      `${run('1 ', 60)}${run('a ', 900)}`,
     ]
     for (const line of lines) {
       expect(isTableOrRefusal(`${run(`${line}\n`, 300)}T (K),k (1/s)${rows}`)).toBe(true)
