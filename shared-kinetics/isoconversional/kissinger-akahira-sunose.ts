@@ -1,5 +1,5 @@
-import { heatingRateOf, lineMethod, temperatureAtLevel } from './line-method.ts'
 import type { MethodInfo } from './result.ts'
+import { scaledLineMethod } from './scaled-line-method.ts'
 
 export const kissingerAkahiraSunoseInfo: MethodInfo = {
   id: 'kas',
@@ -25,12 +25,4 @@ export const kissingerAkahiraSunoseInfo: MethodInfo = {
  * @source akahira-sunose-1971
  * @source kissinger-1957
  */
-export const kissingerAkahiraSunose = lineMethod({
-  info: kissingerAkahiraSunoseInfo,
-  temperature: temperatureAtLevel,
-  ordinate: (run, level) => Math.log(heatingRateOf(run)) - 2 * Math.log(temperatureAtLevel(run, level)),
-  withoutOrdinate: 'line-not-determined',
-  slopeFactor: -1,
-  interceptIsLnAf: false,
-  integral: { temperatureExponent: 2, divisor: 1 },
-})
+export const kissingerAkahiraSunose = scaledLineMethod(kissingerAkahiraSunoseInfo, { temperatureExponent: 2, divisor: 1 })

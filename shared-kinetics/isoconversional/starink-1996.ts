@@ -1,5 +1,5 @@
-import { heatingRateOf, lineMethod, temperatureAtLevel } from './line-method.ts'
 import type { MethodInfo } from './result.ts'
+import { scaledLineMethod } from './scaled-line-method.ts'
 
 export const starink1996Info: MethodInfo = {
   id: 'starink-1996',
@@ -28,12 +28,4 @@ const divisor = 1.0037
  *
  * @source starink-1996
  */
-export const starink1996 = lineMethod({
-  info: starink1996Info,
-  temperature: temperatureAtLevel,
-  ordinate: (run, level) => Math.log(heatingRateOf(run)) - temperatureExponent * Math.log(temperatureAtLevel(run, level)),
-  withoutOrdinate: 'line-not-determined',
-  slopeFactor: -divisor,
-  interceptIsLnAf: false,
-  integral: { temperatureExponent, divisor },
-})
+export const starink1996 = scaledLineMethod(starink1996Info, { temperatureExponent, divisor })

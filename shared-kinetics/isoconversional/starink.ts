@@ -1,5 +1,5 @@
-import { heatingRateOf, lineMethod, temperatureAtLevel } from './line-method.ts'
 import type { MethodInfo } from './result.ts'
+import { scaledLineMethod } from './scaled-line-method.ts'
 
 export const starinkInfo: MethodInfo = {
   id: 'starink',
@@ -29,12 +29,4 @@ const divisor = 1.0008
  *
  * @source starink-2003
  */
-export const starink = lineMethod({
-  info: starinkInfo,
-  temperature: temperatureAtLevel,
-  ordinate: (run, level) => Math.log(heatingRateOf(run)) - temperatureExponent * Math.log(temperatureAtLevel(run, level)),
-  withoutOrdinate: 'line-not-determined',
-  slopeFactor: -divisor,
-  interceptIsLnAf: false,
-  integral: { temperatureExponent, divisor },
-})
+export const starink = scaledLineMethod(starinkInfo, { temperatureExponent, divisor })

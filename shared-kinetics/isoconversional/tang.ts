@@ -1,5 +1,5 @@
-import { heatingRateOf, lineMethod, temperatureAtLevel } from './line-method.ts'
 import type { MethodInfo } from './result.ts'
+import { scaledLineMethod } from './scaled-line-method.ts'
 
 export const tangInfo: MethodInfo = {
   id: 'tang',
@@ -29,12 +29,4 @@ const divisor = 1.00145033
  *
  * @source tang-2003
  */
-export const tang = lineMethod({
-  info: tangInfo,
-  temperature: temperatureAtLevel,
-  ordinate: (run, level) => Math.log(heatingRateOf(run)) - temperatureExponent * Math.log(temperatureAtLevel(run, level)),
-  withoutOrdinate: 'line-not-determined',
-  slopeFactor: -divisor,
-  interceptIsLnAf: false,
-  integral: { temperatureExponent, divisor },
-})
+export const tang = scaledLineMethod(tangInfo, { temperatureExponent, divisor })
