@@ -67,6 +67,22 @@ export function lineFit(x: ArrayLike<number>, y: ArrayLike<number>): LineFit {
   let residualSumOfSquares = 0
   for (let i = 0; i < n; i++) residualSumOfSquares += (at(y, i) - yMean - slope * (at(x, i) - xMean)) ** 2
 
+  return fittedLine({ n, xMean, yMean, slope, xx, yy, residualSumOfSquares })
+}
+
+/** What a line is known by: means, slope, and sums of squares about the means and about the line, weighted or not. */
+export interface LineSums {
+  readonly n: number
+  readonly xMean: number
+  readonly yMean: number
+  readonly slope: number
+  readonly xx: number
+  readonly yy: number
+  readonly residualSumOfSquares: number
+}
+
+/** The line with its standard errors from its sums; weights then add up to n. */
+export function fittedLine({ n, xMean, yMean, slope, xx, yy, residualSumOfSquares }: LineSums): LineFit {
   const dof = n - 2
   const s = dof > 0 ? Math.sqrt(residualSumOfSquares / dof) : Number.NaN
   return {

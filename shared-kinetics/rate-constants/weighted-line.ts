@@ -1,5 +1,5 @@
 import { KineticsError } from '../errors.ts'
-import { lineFit, type LineFit } from '../numerics/line-fit.ts'
+import { fittedLine, lineFit, type LineFit } from '../numerics/line-fit.ts'
 
 /**
  * A straight line through n points whose errors differ: least Σ w (y - intercept - slope·x)², with weights taken relative to their mean.
@@ -33,23 +33,7 @@ export function weightedLine(x: ArrayLike<number>, y: ArrayLike<number>, weights
   const yy = weightedSum((i) => (at(y, i) - yMean) ** 2)
   const slope = weightedSum((i) => (at(x, i) - xMean) * (at(y, i) - yMean)) / xx
   const residualSumOfSquares = weightedSum((i) => (at(y, i) - yMean - slope * (at(x, i) - xMean)) ** 2)
-  const s = n > 2 ? Math.sqrt(residualSumOfSquares / (n - 2)) : Number.NaN
-  return {
-    status: 'ok',
-    n,
-    dof: n - 2,
-    slope,
-    intercept: yMean - slope * xMean,
-    xMean,
-    valueAtMean: yMean,
-    slopeStandardError: s / Math.sqrt(xx),
-    interceptStandardError: s * Math.sqrt(1 / n + (xMean * xMean) / xx),
-    valueAtMeanStandardError: s / Math.sqrt(n),
-    covariance: (-xMean * s * s) / xx,
-    residualStandardDeviation: s,
-    residualSumOfSquares,
-    r2: yy > 0 ? 1 - residualSumOfSquares / yy : Number.NaN,
-  }
+  return fittedLine({ n, xMean, yMean, slope, xx, yy, residualSumOfSquares })
 }
 
 const at = (values: ArrayLike<number>, i: number): number => values[i] ?? Number.NaN
