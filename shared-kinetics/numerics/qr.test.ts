@@ -36,6 +36,14 @@ describe('QR with column pivoting', () => {
     )
   })
 
+  it('keeps a right-hand side its length where a column holds nothing but the smallest of numbers', () => {
+    const tiny = Number.MIN_VALUE
+    const a = Float64Array.from([0, 0, 0, tiny, tiny])
+    const b = Float64Array.from([0, 0, 0, 0, 2])
+    qrInPlace(a, b, m, 1, true)
+    expect(normOf(b)).toBeCloseTo(2, 14)
+  })
+
   it('shows dependent columns as a vanishing diagonal', () => {
     const a = Float64Array.from([1, 2, 3, 4, 5, 2, 0, 1, 0, 1, 3, 2, 4, 4, 6])
     qrInPlace(a, new Float64Array(m), m, n, true)

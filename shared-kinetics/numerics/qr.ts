@@ -14,8 +14,12 @@ export function qrInPlace(a: Float64Array, b: Float64Array, m: number, n: number
   const order = Int32Array.from({ length: n }, (_, j) => j)
   for (let k = 0; k < n; k++) {
     if (pivoting) bringLargestForward(a, m, n, k, order)
+    const largest = largestOf(a, k * m + k, m - k)
+    if (largest === 0) continue
+    // Divided by a power of two first, which costs no digit: the norm of a column of subnormal numbers is too coarse to make a unit vector of it.
+    const scale = 2 ** Math.floor(Math.log2(largest))
+    for (let i = k; i < m; i++) a[k * m + i] = at(a, k * m + i) / scale
     const norm = normOf(a, k * m + k, m - k)
-    if (norm === 0) continue
     const head = at(a, k * m + k)
     const diagonal = head > 0 ? -norm : norm
     // The reflection is I - v vᵀ/|v_k| with v = (column - diagonal·e_k)/norm; v stands below the diagonal until it is used up.
@@ -24,7 +28,7 @@ export function qrInPlace(a: Float64Array, b: Float64Array, m: number, n: number
     a[k * m + k] = vk
     for (let j = k + 1; j < n; j++) reflect(a, k * m + k, a, j * m + k, m - k, 1 / Math.abs(vk))
     reflect(a, k * m + k, b, k, m - k, 1 / Math.abs(vk))
-    a[k * m + k] = diagonal
+    a[k * m + k] = diagonal * scale
   }
   return order
 }
@@ -53,12 +57,17 @@ export function solveUpperTransposed(r: Float64Array, stride: number, n: number,
 
 /** Euclidean norm of `length` elements from `from` on, safe against overflow and underflow of the squares. */
 export function normOf(values: ArrayLike<number>, from = 0, length = values.length - from): number {
-  let largest = 0
-  for (let i = 0; i < length; i++) largest = Math.max(largest, Math.abs(at(values, from + i)))
+  const largest = largestOf(values, from, length)
   if (largest === 0 || !Number.isFinite(largest)) return largest
   let sum = 0
   for (let i = 0; i < length; i++) sum += (at(values, from + i) / largest) ** 2
   return largest * Math.sqrt(sum)
+}
+
+function largestOf(values: ArrayLike<number>, from: number, length: number): number {
+  let largest = 0
+  for (let i = 0; i < length; i++) largest = Math.max(largest, Math.abs(at(values, from + i)))
+  return largest
 }
 
 function bringLargestForward(a: Float64Array, m: number, n: number, k: number, order: Int32Array): void {
