@@ -8,8 +8,8 @@ import type {
   UncertaintyProfile,
   UncertaintyResult,
 } from '../../shared-kinetics/tasks/study-result.ts'
-import { intervalsNotGiven } from '../../shared-kinetics/tasks/intervals-not-given.ts'
-import { studentStatus } from '../../shared-kinetics/tasks/interval-status.ts'
+import { intervalsNotGiven } from '../../shared-kinetics/figure/intervals-not-given.ts'
+import { studentStatus } from '../../shared-kinetics/figure/interval-status.ts'
 import { caution } from './caution.ts'
 import { preExponentialOf } from './pre-exponential.ts'
 

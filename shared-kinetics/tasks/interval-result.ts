@@ -1,7 +1,7 @@
 import type { IntervalKind, IntervalStatus } from '../isoconversional/result.ts'
 import { sources, type SourceKey } from '../sources.ts'
 import { joulesToKilojoules } from '../units/convert.ts'
-import { intervalStatus } from './interval-status.ts'
+import { intervalStatus } from '../figure/interval-status.ts'
 import { maybes } from './maybe.ts'
 import type { IntervalResult } from './study-result.ts'
 

@@ -5,10 +5,10 @@ import { methods } from '../isoconversional/registry.ts'
 import type { IntervalStatus, MethodId } from '../isoconversional/result.ts'
 import { randomStream } from '../numerics/random.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
-import { intervalsByResampling, resamplingOf } from './intervals-by-resampling.ts'
+import { intervalsByResampling, resamplingOf } from '../tasks/intervals-by-resampling.ts'
 import { intervalStatusWords, studentStatus } from './interval-status.ts'
-import { profileResult } from './profile-result.ts'
-import type { IntervalResult } from './study-result.ts'
+import { profileResult } from '../tasks/profile-result.ts'
+import type { IntervalResult } from '../tasks/study-result.ts'
 
 const step = { Ea_J_per_mol: 60_000, A_per_s: 1e5, share: 1 }
 const rates = [2, 5, 10, 20]

@@ -1,5 +1,5 @@
 import type { IntervalStatus } from '../isoconversional/result.ts'
-import type { Maybe, ProfileResult } from './study-result.ts'
+import type { Maybe, ProfileResult } from '../tasks/study-result.ts'
 
 /** What a status says beside an interval, as the end of a sentence on some levels; null where there is nothing to say. */
 export const intervalStatusWords: Readonly<Record<IntervalStatus, string | null>> = {
@@ -44,5 +44,19 @@ export const studentStatus = ({
   lower95_kJ_per_mol: lower,
   upper95_kJ_per_mol: upper,
 }: ProfileResult): IntervalStatus[] => intervalStatus(Ea, lower, upper, () => 'too-few-programmes')
+
+/** What is to be said of the Student-t interval of a single Ea, of a mean over levels or of a line through peaks; null where there is nothing to say. */
+export function studentWords({
+  Ea_kJ_per_mol: Ea,
+  lower95_kJ_per_mol: lower,
+  upper95_kJ_per_mol: upper,
+}: {
+  readonly Ea_kJ_per_mol: Maybe
+  readonly lower95_kJ_per_mol: Maybe
+  readonly upper95_kJ_per_mol: Maybe
+}): string | null {
+  const [status = 'no-energy'] = intervalStatus([Ea], [lower], [upper], () => 'too-few-programmes')
+  return intervalStatusWords[status]
+}
 
 const isThere = (value: Maybe | undefined): value is number => value !== null && value !== undefined && !Number.isNaN(value)
