@@ -11,6 +11,7 @@ export interface RunToReview {
   readonly info?: Partial<RunInfo>
   readonly result?: Partial<RunResult>
   readonly heatingRateSpread?: number
+  readonly steadiness?: ReviewedRun['steadiness']
   readonly rateAtEnds?: ReviewedRun['rateAtEnds']
   readonly baselineKind?: ReviewedRun['baselineKind']
   readonly sampling?: Partial<ReviewedRun['sampling']>
@@ -66,6 +67,7 @@ export function reviewedRun(id: string, rate_K_per_min: number, group: number, c
     info,
     result,
     heatingRateSpread: change.heatingRateSpread ?? 0.01,
+    steadiness: change.steadiness ?? { deviation_K: 0.3, lastDigit_K: Number.NaN },
     rateAtEnds: change.rateAtEnds ?? { start: 0, end: 0 },
     baselineKind: change.baselineKind ?? null,
     sampling,

@@ -14,6 +14,7 @@ export const findingCodes = [
   'outside-scope-of-standard',
   'signal-chosen',
   'time-rebuilt',
+  'temperature-not-measured',
   'window-cuts-reaction',
   'baseline-replaced',
   'gap-in-reaction',

@@ -4,6 +4,7 @@ import type { Sampling } from '../conversion/sampling.ts'
 import type { KineticsError } from '../errors.ts'
 import type { MethodId } from '../isoconversional/result.ts'
 import type { RunInfo } from '../series/run.ts'
+import type { Steadiness } from '../series/steadiness.ts'
 import type { StudyInput } from '../tasks/study-input.ts'
 import type { StudyResult, RunResult } from '../tasks/study-result.ts'
 
@@ -13,6 +14,7 @@ export interface ReviewedRun {
   readonly result: RunResult
   /** Largest distance of the local heating rate from the fitted one, as a share; NaN where there is none. */
   readonly heatingRateSpread: number
+  readonly steadiness: Steadiness
   readonly rateAtEnds: RateAtEnds | null
   /** The baseline that was drawn under a heat flow; null for other signals. */
   readonly baselineKind: HeatFlowBaseline | null

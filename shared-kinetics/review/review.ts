@@ -26,6 +26,7 @@ import { runUnusable } from './rules/run-unusable.ts'
 import { runsDoNotAgree } from './rules/runs-do-not-agree.ts'
 import { samplingCoarse } from './rules/sampling-coarse.ts'
 import { signalChosen } from './rules/signal-chosen.ts'
+import { temperatureNotMeasured } from './rules/temperature-not-measured.ts'
 import { timeRebuilt } from './rules/time-rebuilt.ts'
 import { singleRunEnergyDiffers } from './rules/single-run-energy-differs.ts'
 import { tooFewProgrammes } from './rules/too-few-programmes.ts'
@@ -61,6 +62,7 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   heatingRateNotConstant,
   signalChosen,
   timeRebuilt,
+  temperatureNotMeasured,
   exothermicDirectionUnknown,
   rowsSetAside,
   importNotes,

@@ -11,6 +11,7 @@ import { isHold, startOfHold, timeOfHold } from '../series/hold.ts'
 import { mainHeating, type RowRange } from '../series/main-heating.ts'
 import type { RunColumns, RunInfo, Window } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
+import { steadinessOf, unknownSteadiness, type Steadiness } from '../series/steadiness.ts'
 import { tellProgramme, type ToldProgramme } from '../series/tell-programme.ts'
 import { pooledRows } from '../series/pooled-rows.ts'
 import { usableRows, type UsableRows } from '../series/usable-rows.ts'
@@ -29,6 +30,8 @@ export interface ConvertedRun {
   readonly range: RowRange
   readonly converted: Converted
   readonly told: ToldProgramme
+  /** Of the rows as measured, pooled or not; unknown where time was rebuilt. */
+  readonly steadiness: Steadiness
   readonly window: Window
   /** Temperature at which the main heating of the run begins. */
   readonly heatingStart_K: number
@@ -49,7 +52,7 @@ export interface ConversionSettings {
 }
 
 /** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
-export const convertRunVersion = 5
+export const convertRunVersion = 6
 
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
@@ -68,6 +71,7 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
     range,
     converted,
     told,
+    steadiness: steadinessWhileReacting(usable, converted, told),
     window: windowUsed(rows, range, settings.window, told.programme.kind === 'constant-heating-rate'),
     heatingStart_K: rows.temperature_K[foundWhole(settings) ? range.first : mainHeating(rows.temperature_K).first] ?? Number.NaN,
     peak_K: peakTemperature(converted.curve),
@@ -75,6 +79,13 @@ export function convertRun(info: RunInfo, columns: RunColumns, settings: Convers
     ...startOfTheHold(told, converted),
     curve: curveToDraw(usable, rows, range, converted, quantity === 'heat-flow'),
   }
+}
+
+function steadinessWhileReacting(usable: UsableRows, { curve }: Converted, { programme }: ToldProgramme): Steadiness {
+  if (usable.rebuiltFrom !== null) return unknownSteadiness
+  const [from, to] = [curve.time_s[curve.reaction.first] ?? Number.NaN, curve.time_s[curve.reaction.last] ?? Number.NaN]
+  const rows = { first: lowerBound(usable.time_s, from), last: Math.min(usable.time_s.length - 1, lowerBound(usable.time_s, to)) }
+  return steadinessOf(usable.time_s, usable.temperature_K, rows, programme)
 }
 
 function startOfTheHold(

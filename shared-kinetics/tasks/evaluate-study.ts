@@ -64,6 +64,7 @@ export function evaluateStudy(
       info,
       result: itemAt(result.runs, i),
       heatingRateSpread: converted.told.heatingRateSpread,
+      steadiness: converted.steadiness,
       rateAtEnds: converted.converted.rateAtEnds,
       baselineKind: converted.converted.baselineKind,
       sampling: converted.sampling,
