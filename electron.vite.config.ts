@@ -1,28 +1,23 @@
 import react from '@vitejs/plugin-react'
-import { chmod } from 'node:fs/promises'
-import { join } from 'node:path'
 import { defineConfig } from 'electron-vite'
 import type { Plugin } from 'vite'
+import { buildCommandLine } from './main/cli/build-command-line.ts'
 
-// The host also runs under plain Node 20 (browser shell, command line), so the main bundle must not use later syntax.
+// The host also runs under plain Node 20 (browser shell), so the main bundle must not use later syntax.
 const node = 'node20.19'
 
-/** npm makes the command executable when it installs; a later build must leave it so. */
-const executableCommand: Plugin = {
-  name: 'executable-command',
-  writeBundle: async ({ dir }) => chmod(join(dir ?? '', 'cli.js'), 0o755),
-}
+/** The command line is a script of its own, without chunks. */
+const commandLine: Plugin = { name: 'command-line', writeBundle: async ({ dir }) => buildCommandLine(import.meta.dirname, dir ?? '') }
 
 export default defineConfig({
   main: {
-    plugins: [executableCommand],
+    plugins: [commandLine],
     build: {
       target: node,
       sourcemap: true,
       rolldownOptions: {
         input: {
           app: 'main/electron/app.ts',
-          cli: 'main/cli/cli.ts',
           start: 'main/cli/start.ts',
           'worker-entry': 'main/host/worker-entry.ts',
         },

@@ -9,7 +9,7 @@ const place = mkdtempSync(join(tmpdir(), 'without-electron-'))
 afterAll(() => rmSync(place, { recursive: true, force: true }))
 
 const cli = (...args: string[]) =>
-  spawnSync(process.execPath, [join(place, 'out/main/cli.js'), ...args], {
+  spawnSync(process.execPath, [join(place, 'out/main/cli.cjs'), ...args], {
     cwd: place,
     encoding: 'utf8',
     env: { ...process.env, NODE_PATH: '' },
@@ -31,13 +31,13 @@ function firstOrderRun(heatingRate_K_per_min: number): string {
 
 describe('the built command line, with nothing but Node beside it', () => {
   beforeAll(() => {
-    expect(existsSync(join(root, 'out/main/cli.js')), 'run `npm run build` first').toBe(true)
+    expect(existsSync(join(root, 'out/main/cli.cjs')), 'run `npm run build` first').toBe(true)
     cpSync(join(root, 'out'), join(place, 'out'), { recursive: true })
     cpSync(join(root, 'package.json'), join(place, 'package.json'))
   })
 
   it.skipIf(process.platform === 'win32')('can be run by its name after every build', () => {
-    const run = spawnSync(join(root, 'out/main/cli.js'), ['--version'], { encoding: 'utf8' })
+    const run = spawnSync(join(root, 'out/main/cli.cjs'), ['--version'], { encoding: 'utf8' })
     expect([run.error, run.status]).toEqual([undefined, 0])
   })
 

@@ -8,7 +8,7 @@ import { root } from './program.ts'
 export function csvOfCommandLine(paths: readonly string[], options: readonly string[] = []): string {
   const out = mkdtempSync(join(tmpdir(), 'rampfold-table-'))
   try {
-    const run = spawnSync(process.execPath, [join(root, 'out/main/cli.js'), 'activation', ...paths, '--out', out, ...options], {
+    const run = spawnSync(process.execPath, [join(root, 'out/main/cli.cjs'), 'activation', ...paths, '--out', out, ...options], {
       encoding: 'utf8',
     })
     if (run.status !== 0) throw new Error(run.stderr)

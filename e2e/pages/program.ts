@@ -6,7 +6,7 @@ import { test as base } from '@playwright/test'
 import { Sheet } from './sheet.ts'
 
 export const root = resolve(import.meta.dirname, '../..')
-const cli = join(root, 'out/main/cli.js')
+const cli = join(root, 'out/main/cli.cjs')
 
 /** A running browser shell of its own, on a data folder of its own. */
 export interface Program {

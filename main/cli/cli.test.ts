@@ -9,6 +9,8 @@ import Papa from 'papaparse'
 import { build } from 'vite'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { demoSeries } from '../demo/demo-series.ts'
+import { buildCommandLine } from './build-command-line.ts'
+import { codeCacheOf } from './load-script.ts'
 import { run } from './run.ts'
 
 const root = resolve(import.meta.dirname, '../..')
@@ -29,15 +31,16 @@ beforeAll(async () => {
       target: 'node20.19',
       outDir: join(place, 'out/main'),
       rolldownOptions: {
-        input: { cli: join(root, 'main/cli/cli.ts'), 'worker-entry': join(root, 'main/host/worker-entry.ts') },
+        input: { 'worker-entry': join(root, 'main/host/worker-entry.ts') },
         output: { entryFileNames: '[name].js', chunkFileNames: 'chunks/[name]-[hash].js' },
       },
     },
   })
+  await buildCommandLine(root, join(place, 'out/main'))
   await cp(join(root, 'package.json'), join(place, 'package.json'))
   await mkdir(join(place, 'out/renderer'))
   await writeFile(join(place, 'out/renderer/index.html'), '<!doctype html><html><head><title>page</title></head></html>')
-  cli = join(place, 'out/main/cli.js')
+  cli = join(place, 'out/main/cli.cjs')
   demo = join(place, 'demo')
   await mkdir(demo)
   for (const { fileName, bytes } of demoSeries().files) await writeFile(join(demo, fileName), bytes)
@@ -54,6 +57,38 @@ function rampfold(...words: readonly string[]): Outcome {
   const { status, stdout, stderr } = spawnSync(process.execPath, [cli, ...words], { encoding: 'utf8', cwd: place })
   return { code: status, stdout, stderr }
 }
+
+const script = (): string => join(place, 'out/main/command-line.cjs')
+/** What a call prints before its findings and the folder it wrote to. */
+const table = (stdout: string): string => stdout.split('\n\n')[0] ?? ''
+
+describe('the code that is kept of the command line', () => {
+  it('is taken by another process of the same Node', () => {
+    const take = `const { readFileSync } = require('node:fs')
+      const [file, cache] = process.argv.slice(1)
+      const script = new (require('node:vm').Script)(readFileSync(file, 'latin1'), { filename: file, cachedData: readFileSync(cache) })
+      process.stdout.write(String(script.cachedDataRejected))`
+    const { stdout } = spawnSync(process.execPath, ['-e', take, script(), codeCacheOf(script())], { encoding: 'utf8' })
+    expect(stdout).toBe('false')
+  })
+
+  it('is not needed', async () => {
+    const alone = join(place, 'without-kept-code')
+    await mkdir(alone)
+    for (const name of ['package.json', 'out/main/cli.cjs', 'out/main/command-line.cjs']) await cp(join(place, name), join(alone, name))
+    const withKept = rampfold('activation', demo, '--out', join(place, 'with'))
+    const without = spawnSync(process.execPath, [join(alone, 'out/main/cli.cjs'), 'activation', demo, '--out', join(place, 'without')], {
+      encoding: 'utf8',
+    })
+    expect([without.status, without.stderr]).toEqual([0, ''])
+    expect(table(without.stdout)).toContain('Vyazovkin')
+    expect(table(without.stdout)).toBe(table(withKept.stdout))
+  })
+
+  it('and the script it belongs to is ASCII, since it is read as such', async () => {
+    expect((await readFile(script())).every((byte) => byte < 128)).toBe(true)
+  })
+})
 
 const io = {
   stderrIsTerminal: false,

@@ -16,7 +16,7 @@ const bundles = join(root, 'out/bench')
 const { values: words } = parseArgs({ options: { rounds: { type: 'string', default: '9' }, write: { type: 'boolean', default: false } } })
 const rounds = Math.max(3, Number.parseInt(words.rounds, 10) || 9)
 
-const commandLine = join(root, 'out/main/cli.js')
+const commandLine = join(root, 'out/main/cli.cjs')
 if (!existsSync(commandLine)) {
   console.error('There is no built command line to measure. Run npm run build first.')
   process.exit(1)
