@@ -51,7 +51,7 @@ function settingLines(settings: AnalysisSettings, signal: string | null): string
 function runLines(run: RunResult): string[] {
   return [
     `${run.label}: ${run.fileName}, column ${run.column}, SHA-256 ${run.sha256}`,
-    `  ${programmeText(run)}; ${run.rows} rows; window ${windowText(run.window)}${run.peak_K === null ? '' : `; peak ${celsius(run.peak_K)}`}${enthalpyText(
+    `  ${programmeText(run)}; ${run.rows} rows; window ${windowText(run.window)}${run.peak_K === null ? '' : `; peak ${kelvinAndCelsius(run.peak_K)}`}${enthalpyText(
       run,
     )}`,
   ]
@@ -70,14 +70,14 @@ function programmeText(run: RunResult): string {
     const spread = error === null ? '' : `, standard error ${error.toPrecision(2)} K/min`
     return `heating rate ${run.heatingRate_K_per_min.toFixed(3)} K/min (${run.heatingRateSource ?? 'stated'}${spread}${nominal})`
   }
-  if (run.programme === 'isothermal' && run.holdTemperature_K !== null) return `isothermal at ${celsius(run.holdTemperature_K)}`
+  if (run.programme === 'isothermal' && run.holdTemperature_K !== null) return `isothermal at ${kelvinAndCelsius(run.holdTemperature_K)}`
   return `general temperature programme${nominal}`
 }
 
 const windowText = (window: Window): string =>
   window.kind === 'temperature'
-    ? `${window.start_K.toFixed(2)} to ${window.end_K.toFixed(2)} K`
+    ? `${kelvinAndCelsius(window.start_K)} to ${kelvinAndCelsius(window.end_K)}`
     : `${(window.start_s / 60).toFixed(3)} to ${(window.end_s / 60).toFixed(3)} min`
 
-const celsius = (kelvin: number): string => `${kelvinToCelsius(kelvin).toFixed(2)} °C`
+const kelvinAndCelsius = (kelvin: number): string => `${kelvin.toFixed(2)} K (${kelvinToCelsius(kelvin).toFixed(2)} °C)`
 const oneLine = (text: string): string => text.replaceAll(/\s*[\r\n]+\s*/g, ' ')

@@ -223,7 +223,7 @@ describe('peak and single-run methods in exports', () => {
     const notes = textOf('csv', 1)
     expect(notes).toContain(
       '  ASTM E698: Ea 209.25 kJ/mol, standard error 2.13 (95 % Student-t, 3 degrees of freedom: 202.5 to 216.0), ln A 34.25, standard error 0.38 (A in 1/s), ' +
-        'temperature of a half-life of 60 min 134.50 °C, standard error 0.50 K, D 1.063, Ea before it is refined 210.50 kJ/mol. Method: ASTM E698\n' +
+        'temperature of a half-life of 60 min 407.65 K (134.50 °C), standard error 0.50 K, D 1.063, Ea before it is refined 210.50 kJ/mol. Method: ASTM E698\n' +
         '    To confirm: age a sample for 60 min at 134.5 °C.\n',
     )
     expect(notes).toContain('  Augis–Bennett: does not apply. It is made for crystallisation.\n')
@@ -358,6 +358,7 @@ describe('activation.csv', () => {
     expect(notes).toContain('Ozawa–Flynn–Wall: no standard error and no interval')
     expect(notes).toContain(`SHA-256 ${'ab'.repeat(32)}`)
     expect(notes).toContain('heating rate 10.420 K/min (measured, standard error 0.010 K/min, nominal 10 K/min)')
+    expect(notes).toContain('window 430.00 K (156.85 °C) to 870.00 K (596.85 °C); peak 640.10 K (366.95 °C)')
     expect(notes).toContain('window 0.000 to 10.000 min')
     expect(notes).toContain('caution, heating-rate-differs-from-nominal')
     expect(notes).toContain('Line one line two')

@@ -33,7 +33,7 @@ function numberText({ label, value, standardError, unit }: PeakMethodNumber): st
   const error = (digits: number): string => (standardError === null ? '' : `, standard error ${standardError.toFixed(digits)}`)
   switch (unit) {
     case 'K':
-      return [`${label} ${kelvinToCelsius(value).toFixed(2)} °C${standardError === null ? '' : `${error(2)} K`}`]
+      return [`${label} ${value.toFixed(2)} K (${kelvinToCelsius(value).toFixed(2)} °C)${standardError === null ? '' : `${error(2)} K`}`]
     case 'kJ/mol':
       return [`${label} ${value.toFixed(2)} kJ/mol${error(2)}`]
     case '1':

@@ -6,6 +6,9 @@ export const digits = (value: number, significant = 3): string => String(Number(
 
 export const percent = (share: number): string => `${digits(100 * share, 2)} %`
 
+/** In both units, since a file may have either (or °F). */
+export const celsiusAndKelvin = (kelvin: number): string => `${celsius(kelvin)} (${kelvin.toFixed(1)} K)`
+
 export const celsius = (kelvin: number): string => `${(Math.round(kelvinToCelsius(kelvin) * 10) / 10).toFixed(1)} °C`
 
 /** `a`, `a and b`, `a, b and c`. */

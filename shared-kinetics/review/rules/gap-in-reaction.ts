@@ -1,6 +1,6 @@
 import type { Finding } from '../finding.ts'
 import type { ReviewInput } from '../review-input.ts'
-import { celsius, digits, list, percent } from '../words.ts'
+import { celsiusAndKelvin, digits, list, percent } from '../words.ts'
 
 /** Fires for each run whose rows leave out a notable part of the reaction. */
 export function gapInReaction({ result, runs }: ReviewInput): Finding[] {
@@ -10,7 +10,7 @@ export function gapInReaction({ result, runs }: ReviewInput): Finding[] {
     const where = list(
       gaps.map(
         ({ from_K, to_K, conversionBefore, conversionAfter }) =>
-          `from ${celsius(from_K)} to ${celsius(to_K)} (conversion ${digits(conversionBefore, 2)} to ${digits(conversionAfter, 2)})`,
+          `from ${celsiusAndKelvin(from_K)} to ${celsiusAndKelvin(to_K)} (conversion ${digits(conversionBefore, 2)} to ${digits(conversionAfter, 2)})`,
       ),
     )
     const ofArea = result.signal === 'heat-flow' || result.signal === 'heat-release'

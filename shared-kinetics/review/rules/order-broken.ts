@@ -1,6 +1,6 @@
 import type { Finding } from '../finding.ts'
 import type { ReviewedRun, ReviewInput } from '../review-input.ts'
-import { celsius, digits, levelsInWords, list, mean, programmesOf } from '../words.ts'
+import { celsiusAndKelvin, digits, levelsInWords, list, mean, programmesOf } from '../words.ts'
 
 /**
  * Fires for two neighbouring constant heating rates where the faster one does not reach some level at a higher temperature than the slower one. Replicates are
@@ -22,7 +22,7 @@ export function orderBroken({ result, runs }: ReviewInput): Finding[] {
         stage: 'activation',
         title: `${rate(faster)} K/min is not later than ${rate(slower)} K/min at conversion ${levelsInWords(broken.map(({ level }) => level))}`,
         message:
-          `At conversion ${digits(worst.level)} ${names(faster)} ${faster.length === 1 ? 'stands' : 'stand'} at ${celsius(temperatureAt(faster, at))}, the slower ${names(slower)} at ${celsius(temperatureAt(slower, at))}; ` +
+          `At conversion ${digits(worst.level)} ${names(faster)} ${faster.length === 1 ? 'stands' : 'stand'} at ${celsiusAndKelvin(temperatureAt(faster, at))}, the slower ${names(slower)} at ${celsiusAndKelvin(temperatureAt(slower, at))}; ` +
           'a faster run should stand higher. Ea there is not to be relied on. Compare their windows, baselines, masses and temperature calibration; leave the wrong run out.',
         run: faster[0]?.info.id ?? null,
         level: worst.level,
