@@ -106,7 +106,7 @@ test('three runs are too few for resampling, and the sheet says so', async ({ sh
   await sheet.chooseFiles(files.map(({ fileName }) => join(folder, fileName)))
   await sheet.settled()
   await sheet.goTo('Activation energy')
-  await expect(page.getByText('Jackknife, bootstrap: needs four runs, here 3.')).toBeVisible()
+  await expect(page.getByText('Jackknife: needs 4 runs, here 3. Bootstrap: needs 4 distinct programmes, here 3.')).toBeVisible()
   await expect(sheet.option('Interval', 'Jackknife')).toBeDisabled()
 })
 

@@ -1,7 +1,6 @@
 import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
-import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
-import { intervalStatuses, type IntervalStatus } from '../../shared-kinetics/isoconversional/result.ts'
-import { intervalStatusWords, studentStatus } from '../../shared-kinetics/figure/interval-status.ts'
+import type { IntervalStatus } from '../../shared-kinetics/isoconversional/result.ts'
+import { intervalRemarks, studentStatus } from '../../shared-kinetics/figure/interval-status.ts'
 import { intervalsNotGiven } from '../../shared-kinetics/figure/intervals-not-given.ts'
 import type { CombinedMean, IntervalResult, ProfileResult, UncertaintyProfile } from '../../shared-kinetics/tasks/study-result.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
@@ -60,27 +59,8 @@ function otherLine(label: string, { label: kind, level, approximate, note, sourc
 }
 
 /** At which levels an interval says less than its numbers do, or nothing, and why. */
-function statusLines(interval: string, status: readonly IntervalStatus[], levels: readonly number[]): string[] {
-  return intervalStatuses.flatMap((one) => {
-    const words = intervalStatusWords[one]
-    const at = levels.flatMap((_, i) => (status[i] === one ? [i] : []))
-    return words === null || at.length === 0 ? [] : [`${interval} at conversion ${levelRanges(at, levels)}: ${words}`]
-  })
-}
-
-/** `0.05 to 0.2, 0.9`: levels that follow each other as one range. */
-function levelRanges(at: readonly number[], levels: readonly number[]): string {
-  const text = (i: number | undefined): string => levelText(levels[i ?? -1] ?? Number.NaN)
-  const ranges: number[][] = []
-  for (const i of at) {
-    const last = ranges.at(-1)
-    if (last?.at(-1) === i - 1) last.push(i)
-    else ranges.push([i])
-  }
-  return ranges
-    .map((range) => (range.length === 1 ? text(range[0]) : `${text(range[0])} ${range.length === 2 ? 'and' : 'to'} ${text(range.at(-1))}`))
-    .join(', ')
-}
+const statusLines = (interval: string, status: readonly IntervalStatus[], levels: readonly number[]): string[] =>
+  intervalRemarks(status, levels).map((remark) => `${interval} at conversion ${remark.levels}: ${remark.words}`)
 
 const signed = (percent: number): string => `${percent > 0 ? '+' : ''}${percent.toPrecision(2)} %`
 

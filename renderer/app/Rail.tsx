@@ -6,7 +6,7 @@ import { decimals, formatInterval, formatLevel, formatWithInterval, halfWidth, s
 import { LevelRail } from '../sheet/LevelRail.tsx'
 import { railBars, railCaption } from '../sheet/rail-bars.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
-import { shortKinds, type ShownOfMethod } from '../stages/activation/shown-interval.ts'
+import { intervalWordsAt, shortKinds, type ShownOfMethod } from '../stages/activation/shown-interval.ts'
 import { useShown } from '../stages/activation/use-shown.ts'
 import { useView } from '../state/services.ts'
 import { chosenAmong } from '../state/view-store.ts'
@@ -57,11 +57,13 @@ export function Rail({
   const [slowest = '', fastest = slowest] = programmes.map(({ runs }) => formatAt(meanAtLevel(runs, levelIndex, quantity), quantity))
   const range = programmeRange(programmes.map(({ name }) => name))
   const word = status === undefined || status === 'ok' ? '' : statusWords[status]
+  const words = intervalWordsAt(ends ?? null, levelIndex)
   const spoken = [
     formatLevel(level),
     Ea === ''
       ? word
       : `Ea ${Ea}${interval === '' ? '' : `, ${ends === null || ends === undefined ? '' : shortKinds[ends.kind]} interval ${interval}`} kJ/mol`,
+    words === null ? '' : `interval: ${words}`,
     slowest === '' || fastest === '' ? '' : `${slowest} to ${fastest} ${quantity.unit} at ${range.replace('…', 'to')}`,
   ]
     .filter((part) => part !== '')
@@ -75,7 +77,11 @@ export function Rail({
           <span className="is-word">{word}</span>
         ) : (
           <>
-            Ea <strong>{formatWithInterval(profile?.Ea_kJ_per_mol[levelIndex], lower, upper)}</strong> kJ/mol
+            Ea{' '}
+            <strong {...(words === null ? {} : { className: 'has-remark', title: `Interval: ${words}` })}>
+              {formatWithInterval(profile?.Ea_kJ_per_mol[levelIndex], lower, upper)}
+            </strong>{' '}
+            kJ/mol
           </>
         )}
         {r2 !== '' && (

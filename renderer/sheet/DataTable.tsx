@@ -22,13 +22,58 @@ export function TableHead<Row>({ columns, end }: { readonly columns: readonly Da
   )
 }
 
-/** A cell of numbers, or of the words that stand where a number is not to be had. */
-export function NumberCell({ text, children }: { readonly text: string; readonly children?: ReactNode }) {
+/** A cell of numbers, or of the words that stand where a number is not to be had. A remark on it shows when it is pointed at, and is heard. */
+export function NumberCell({
+  text,
+  remark = null,
+  children,
+}: {
+  readonly text: string
+  readonly remark?: string | null
+  readonly children?: ReactNode
+}) {
   const isWord = text !== '' && !/\d/.test(text)
   return (
-    <td className={isWord ? 'is-number is-word' : 'is-number'}>
-      {text}
+    <td className={isWord ? 'is-number is-word' : 'is-number'} {...(remark === null ? {} : { title: remark })}>
+      {remark === null ? (
+        text
+      ) : (
+        <>
+          <span className="has-remark">{text}</span>
+          <span className="visually-hidden">, {remark}</span>
+        </>
+      )}
       {children}
     </td>
+  )
+}
+
+/** The heading of a column of numbers: quantity and, beneath it, unit. */
+export const NumberHeading = ({ text, unit = '' }: { readonly text: string; readonly unit?: string }) => (
+  <th scope="col" className="is-number">
+    <span>{text}</span>
+    <span className="unit">{unit}</span>
+  </th>
+)
+
+/** Whether a row counts. */
+export function UseBox({
+  row,
+  isUsed,
+  onUse,
+}: {
+  /** Counted from 0. */
+  readonly row: number
+  readonly isUsed: boolean
+  readonly onUse: (use: boolean) => void
+}) {
+  return (
+    <input
+      type="checkbox"
+      className="use-box"
+      aria-label={`Use row ${row + 1}`}
+      checked={isUsed}
+      onChange={(event) => onUse(event.target.checked)}
+    />
   )
 }

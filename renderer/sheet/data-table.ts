@@ -6,6 +6,8 @@ export interface DataColumn<Row> {
   readonly unit: string
   readonly numeric: boolean
   readonly text: (row: Row) => string
+  /** What must be known of the cell beside its text; null where there is nothing. */
+  readonly remark?: (row: Row) => string | null
   /** For the clipboard: a number, a text, or null for an empty cell. */
   readonly value: (row: Row) => number | string | null
   /** Decimals of a number on the clipboard: one more than on the screen. Without it a number keeps eight digits. */

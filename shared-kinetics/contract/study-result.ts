@@ -22,7 +22,7 @@ export type {
   UncertaintyProfile,
   UncertaintyResult,
 } from '../tasks/study-result.ts'
-export type { IntervalKind } from '../isoconversional/result.ts'
+export type { IntervalKind, IntervalStatus } from '../isoconversional/result.ts'
 export type { UncertaintySettings, UncertaintySource } from '../uncertainty/measured-sources.ts'
 export type { RateConstantNote, RateConstantRow, RateConstantTable, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 export type {

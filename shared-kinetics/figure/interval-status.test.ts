@@ -6,7 +6,7 @@ import type { IntervalStatus, MethodId } from '../isoconversional/result.ts'
 import { randomStream } from '../numerics/random.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
 import { intervalsByResampling, resamplingOf } from '../tasks/intervals-by-resampling.ts'
-import { intervalStatusWords, studentStatus } from './interval-status.ts'
+import { intervalRemarks, intervalStatusWords, studentStatus, studentWords } from './interval-status.ts'
 import { profileResult } from '../tasks/profile-result.ts'
 import type { IntervalResult } from '../tasks/study-result.ts'
 
@@ -90,5 +90,25 @@ describe('the status of an interval', () => {
       levels.map((level) => rates.slice(0, 2).map((rate) => temperatureAt([step], rate / 60, level))),
     )
     expect(studentStatus(intervalsOf('starink', two).profile)).toEqual(levels.map(() => 'too-few-programmes'))
+  })
+})
+
+describe('remarks on an interval', () => {
+  it('name the levels that follow each other as one range', () => {
+    const status: IntervalStatus[] = ['reaches-below-zero', 'reaches-below-zero', 'reaches-below-zero', 'ok', 'end-outside', 'no-energy']
+    const remarks = intervalRemarks(status, [0.05, 0.1, 0.15, 0.2, 0.25, 0.3])
+    expect(remarks.map(({ at, levels }) => [at, levels])).toEqual([
+      [[0, 1, 2], '0.05 to 0.15'],
+      [[4], '0.25'],
+    ])
+    expect(remarks.map(({ words }) => words)).toEqual([intervalStatusWords['reaches-below-zero'], intervalStatusWords['end-outside']])
+  })
+
+  it('of a single Ea say that its interval is missing or reaches below 0, and nothing without an Ea', () => {
+    const of = (Ea: number | null, lower: number | null, upper: number | null) =>
+      studentWords({ Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper })
+    expect([of(100, 90, 110), of(null, null, null)]).toEqual([null, null])
+    expect(of(100, null, null)).toBe('not to be had with fewer than three distinct programmes')
+    expect(of(100, -5, 205)).toMatch(/^reaches below 0/)
   })
 })

@@ -1,5 +1,6 @@
-import type { IntervalStatus } from '../isoconversional/result.ts'
+import { intervalStatuses, type IntervalStatus } from '../isoconversional/result.ts'
 import type { Maybe, ProfileResult } from '../tasks/study-result.ts'
+import { levelText } from './nice-axis.ts'
 
 /** What a status says beside an interval, as the end of a sentence on some levels; null where there is nothing to say. */
 export const intervalStatusWords: Readonly<Record<IntervalStatus, string | null>> = {
@@ -45,18 +46,48 @@ export const studentStatus = ({
   upper95_kJ_per_mol: upper,
 }: ProfileResult): IntervalStatus[] => intervalStatus(Ea, lower, upper, () => 'too-few-programmes')
 
-/** What is to be said of the Student-t interval of a single Ea, of a mean over levels or of a line through peaks; null where there is nothing to say. */
-export function studentWords({
-  Ea_kJ_per_mol: Ea,
-  lower95_kJ_per_mol: lower,
-  upper95_kJ_per_mol: upper,
-}: {
+/** An Ea that stands by itself, with its interval. */
+export interface SingleEnergy {
   readonly Ea_kJ_per_mol: Maybe
   readonly lower95_kJ_per_mol: Maybe
   readonly upper95_kJ_per_mol: Maybe
-}): string | null {
+}
+
+/** What is to be said of the Student-t interval of a mean over levels, or of a line through peaks; null where there is nothing to say. */
+export function studentWords({ Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper }: SingleEnergy): string | null {
   const [status = 'no-energy'] = intervalStatus([Ea], [lower], [upper], () => 'too-few-programmes')
   return intervalStatusWords[status]
+}
+
+/** What is to be said of an interval at some of its levels. */
+export interface IntervalRemark {
+  /** Indices of the levels. */
+  readonly at: readonly number[]
+  /** The levels in words, `0.05 to 0.2, 0.9`. */
+  readonly levels: string
+  readonly words: string
+}
+
+/** At which levels an interval says less than its numbers do, or nothing, and why. */
+export const intervalRemarks = (status: readonly IntervalStatus[], levels: readonly number[]): IntervalRemark[] =>
+  intervalStatuses.flatMap((one) => {
+    const words = intervalStatusWords[one]
+    const at = levels.flatMap((_, i) => (status[i] === one ? [i] : []))
+    return words === null || at.length === 0 ? [] : [{ at, levels: levelRanges(at, levels), words }]
+  })
+
+/** Levels that follow each other as one range. */
+function levelRanges(at: readonly number[], levels: readonly number[]): string {
+  const text = (i: number | undefined): string => levelText(levels[i ?? -1] ?? Number.NaN)
+  const ranges: number[][] = []
+  for (const i of at) {
+    const last = ranges.at(-1)
+    if (last?.at(-1) === i - 1) last.push(i)
+    else ranges.push([i])
+  }
+  return ranges
+    .map((range) => (range.length === 1 ? text(range[0]) : `${text(range[0])} ${range.length === 2 ? 'and' : 'to'} ${text(range.at(-1))}`))
+    .join(', ')
 }
 
 const isThere = (value: Maybe | undefined): value is number => value !== null && value !== undefined && !Number.isNaN(value)

@@ -1,6 +1,7 @@
 import { useMemo } from 'react'
 import { Button } from 'react-aria-components'
 import { activationAtLevel, activationFigure } from '../../../shared-kinetics/figure/activation-figure.ts'
+import { studentWords } from '../../../shared-kinetics/figure/interval-status.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
 import { MethodSample } from '../../charts/MethodSample.tsx'
 import { Choice, Choices, type ChoiceOption } from '../../sheet/Choice.tsx'
@@ -11,7 +12,7 @@ import { useColours, useServices, useStudy, useView } from '../../state/services
 import { isStale } from '../../state/study-state.ts'
 import type { Beneath } from '../../state/view-store.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
-import { IntervalChoice, IntervalMaking, IntervalName, UncertaintyWork } from './IntervalChoice.tsx'
+import { IntervalChoice, IntervalMaking, IntervalName, IntervalRemarks, UncertaintyWork } from './IntervalChoice.tsx'
 import { LevelTable } from './LevelTable.tsx'
 import { MeanLine } from './MeanLine.tsx'
 import { Peaks } from './Peaks.tsx'
@@ -67,7 +68,12 @@ export function EnergyProfile(props: ActivationProps) {
         onCopied={actions.pictureCopied}
       />
       {figure.note !== undefined && <p className="chart-note">{figure.note}</p>}
-      {beneath === 'levels' && <IntervalMaking shown={shown} />}
+      {beneath === 'levels' && (
+        <>
+          <IntervalMaking shown={shown} />
+          <IntervalRemarks shown={shown} levels={result.levels} levelIndex={levelIndex} />
+        </>
+      )}
       <UncertaintyWork />
       <div className="beneath">
         <Choice label="Table" options={beneathOptions} value={beneath} onChange={(next) => view.setState({ beneath: next })} />
@@ -116,6 +122,7 @@ function levelsEvery(step: number): readonly number[] {
 
 function Foot({ result, chosen, compared, actions, beneath }: ActivationProps & { readonly beneath: Beneath }) {
   const { kissinger } = result
+  const kissingerWords = kissinger === null ? null : studentWords(kissinger)
   const intervalOf = useIntervalOf(result)
   const isBehind = useStudy((state) => (beneath === 'levels' ? areLevelsBehind(state, [chosen, ...compared], intervalOf) : isStale(state)))
   return (
@@ -125,6 +132,7 @@ function Foot({ result, chosen, compared, actions, beneath }: ActivationProps & 
           Kissinger (peaks): Ea{' '}
           <strong>{formatWithInterval(kissinger.Ea_kJ_per_mol, kissinger.lower95_kJ_per_mol, kissinger.upper95_kJ_per_mol)}</strong> kJ/mol,
           ln A <strong>{decimals(kissinger.lnA_per_s, 2)}</strong> (A in 1/s).
+          {kissingerWords !== null && ` Its interval: ${kissingerWords}.`}
         </p>
       )}
       <div className="controls-end">

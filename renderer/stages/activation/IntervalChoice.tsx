@@ -1,4 +1,5 @@
 import { Button } from 'react-aria-components'
+import { intervalRemarks } from '../../../shared-kinetics/figure/interval-status.ts'
 import { Choice } from '../../sheet/Choice.tsx'
 import { useServices, useStudy } from '../../state/services.ts'
 import { isStale } from '../../state/study-state.ts'
@@ -52,6 +53,29 @@ export function IntervalName({ shown }: { readonly shown: ShownOfMethod }) {
 /** How the interval was made; the regression's own says it in its name. */
 export function IntervalMaking({ shown: { interval } }: { readonly shown: ShownOfMethod }) {
   return interval === null || interval.kind === 'student-t' ? null : <p className="chart-note">{interval.note}</p>
+}
+
+/** At which levels the interval says less than its numbers do, or nothing, and why; what holds at the current level stands out. */
+export function IntervalRemarks({
+  shown: { interval },
+  levels,
+  levelIndex,
+}: {
+  readonly shown: ShownOfMethod
+  readonly levels: readonly number[]
+  readonly levelIndex: number
+}) {
+  const remarks = interval === null ? [] : intervalRemarks(interval.status, levels)
+  if (remarks.length === 0) return null
+  return (
+    <ul className="interval-remarks" aria-label="Remarks on the interval">
+      {remarks.map(({ at, levels: where, words }) => (
+        <li key={words} className={at.includes(levelIndex) ? 'is-current' : undefined}>
+          Interval at α {where}: {words}.
+        </li>
+      ))}
+    </ul>
+  )
 }
 
 /** The slow intervals on their way, or the way to have them worked out. Nothing stands here when they are there, or are there in a moment. */

@@ -42,6 +42,7 @@ export function MeanLine({ shown, result, document, actions }: ActivationProps) 
           {isDoubtful ? mean.text : <strong>{mean.text}</strong>} kJ/mol
           {mean.words !== '' && ` (${mean.words})`}; {levelsOfMean(profile.mean)}
           {ends !== null && `, ${decimals(ends[0], 1)} to ${decimals(ends[1], 1)}`}
+          {mean.remark !== null && <span className="mean-remark">Interval of the mean: {mean.remark}.</span>}
         </output>
       )}
     </div>

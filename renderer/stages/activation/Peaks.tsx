@@ -58,7 +58,8 @@ export function Peaks({ methods, signal }: { readonly methods: readonly PeakMeth
               // oxlint-disable-next-line jsx-a11y/click-events-have-key-events, jsx-a11y/no-noninteractive-element-interactions -- the table's own keys do the same
               <tr key={peakKey(row)} aria-current={i === index ? 'true' : undefined} onClick={() => setWanted(peakKey(row))}>
                 <th scope="row">{peakName(row)}</th>
-                {row.applies && peakColumns.map((column) => <NumberCell key={column.id} text={column.text(row)} />)}
+                {row.applies &&
+                  peakColumns.map((column) => <NumberCell key={column.id} text={column.text(row)} remark={column.remark?.(row) ?? null} />)}
                 {row.applies && <td className="peak-note">{peakNote(row, signal)}</td>}
                 <td className="peak-own" colSpan={row.applies ? 1 : peakColumns.length + 2}>
                   {row.applies ? ownNumbers(row) : `Does not apply. ${ownNumbers(row)}`}

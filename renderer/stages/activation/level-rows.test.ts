@@ -13,6 +13,9 @@ const jackknife = (lower: readonly (number | null)[], upper: readonly (number | 
   sources: [],
   lower95_kJ_per_mol: lower,
   upper95_kJ_per_mol: upper,
+  status: lower.map((end, i) =>
+    (end ?? upper[i] ?? null) === null ? 'no-energy' : end === null ? 'end-outside' : end < 0 ? 'reaches-below-zero' : 'ok',
+  ),
 })
 const headings = (profile: ProfileResult): readonly string[] =>
   levelColumns({ ...result, profiles: [profile] }, profile.method, []).map((column) => column.heading)
@@ -66,6 +69,30 @@ describe('table of levels', () => {
     expect(head).toContain('± 95 % Friedman, jackknife (kJ/mol)')
     expect(head).toContain('Ea Starink, upper end 95 %, jackknife (kJ/mol)')
     expect(levelCopyColumns(result, 'friedman', [], () => null).some((column) => column.id.startsWith('interval'))).toBe(false)
+  })
+
+  it('says of an interval why an end is not there or means nothing, where it stands and where it is copied', () => {
+    const wide = jackknife([-3, null], [301, null])
+    const open: ShownInterval = { ...wide, status: ['reaches-below-zero', 'energy-needs-every-run'] }
+    const column = levelColumns(result, 'starink', [], () => open).find(({ id }) => id === 'interval-starink')
+    expect(rows.map((row) => column?.text(row))).toEqual(['152.0', 'none'])
+    expect(rows.map((row) => column?.remark?.(row))).toEqual([
+      'reaches below 0, where no activation energy lies: these runs do not bound Ea from below',
+      'not to be had: without one of the runs there is no Ea',
+    ])
+    const copied = copyText(
+      levelCopyColumns(result, 'starink', [], () => open),
+      rows,
+    ).split('\n')
+    expect(copied[0]).toMatch(/\tStatus Starink\tInterval Starink, jackknife$/)
+    expect(copied[1]).toMatch(/\tok\treaches below 0, [^\t]*$/)
+    expect(copied[2]).toMatch(/\tok\tnot to be had: without one of the runs there is no Ea$/)
+  })
+
+  it('has nothing to say of an interval that is complete', () => {
+    const column = levelColumns(result, 'starink', []).find(({ id }) => id === 'interval-starink')
+    expect(rows.map((row) => column?.remark?.(row))).toEqual([null, null])
+    expect(levelCopyColumns(result, 'starink', []).some(({ id }) => id === 'remark-starink')).toBe(false)
   })
 
   it('shows the slowest and the fastest programme as the mean over its replicates, without a number of a replicate', () => {

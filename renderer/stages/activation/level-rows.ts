@@ -12,7 +12,7 @@ import {
   shortMethodNames,
   statusWords,
 } from '../../sheet/format.ts'
-import { intervalOfKind, shortKinds, type ShownInterval } from './shown-interval.ts'
+import { intervalOfKind, intervalWordsAt, shortKinds, type ShownInterval } from './shown-interval.ts'
 
 /** One level of the table, by its index in `StudyResult.levels`. */
 export interface LevelRow {
@@ -65,7 +65,9 @@ export function levelCopyColumns(
       : [energyColumn(first), ...copiedInterval(first, intervalOf(first)), ...copiedLnAf(first), ...furtherColumns(first)]),
     ...others.flatMap((profile) => [energyColumn(profile), ...copiedInterval(profile, intervalOf(profile))]),
     ...endColumns(result),
-    ...(first === undefined ? [] : [first, ...others].map(statusColumn)),
+    ...(first === undefined
+      ? []
+      : [first, ...others].flatMap((profile) => [statusColumn(profile), ...remarkColumn(profile, intervalOf(profile))])),
   ]
 }
 
@@ -101,7 +103,9 @@ const intervalColumn = (profile: ProfileResult, interval: ShownInterval | null, 
   unit: 'kJ/mol',
   numeric: true,
   text: ({ index }) =>
-    formatInterval(profile.Ea_kJ_per_mol[index], interval?.lower95_kJ_per_mol[index], interval?.upper95_kJ_per_mol[index]),
+    formatInterval(profile.Ea_kJ_per_mol[index], interval?.lower95_kJ_per_mol[index], interval?.upper95_kJ_per_mol[index]) ||
+    (intervalWordsAt(interval, index) === null ? '' : 'none'),
+  remark: ({ index }) => intervalWordsAt(interval, index),
   value: ({ index }) => halfWidth(interval?.lower95_kJ_per_mol[index], interval?.upper95_kJ_per_mol[index]),
   places: 2,
 })
@@ -163,6 +167,14 @@ const statusColumn = (profile: ProfileResult): DataColumn<LevelRow> => {
   const status = ({ index }: LevelRow): string => statusWords[profile.status[index] ?? 'level-not-reached'] || 'ok'
   const heading = `Status ${shortMethodNames[profile.method]}`
   return { id: `status-${profile.method}`, heading, unit: '', numeric: false, text: status, value: status }
+}
+
+/** Why an interval has no ends at a level, or ends that say less than they seem to; none where there is nothing to say at any level. */
+function remarkColumn(profile: ProfileResult, interval: ShownInterval | null): readonly DataColumn<LevelRow>[] {
+  if (interval === null || interval.status.every((_, index) => intervalWordsAt(interval, index) === null)) return []
+  const words = ({ index }: LevelRow): string => intervalWordsAt(interval, index) ?? ''
+  const heading = `Interval ${shortMethodNames[profile.method]}, ${shortKinds[interval.kind]}`
+  return [{ id: `remark-${profile.method}`, heading, unit: '', numeric: false, text: words, value: words }]
 }
 
 /** Where the slowest and the fastest programme reach the level, as a mean over their replicates. */

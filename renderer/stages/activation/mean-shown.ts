@@ -1,3 +1,4 @@
+import { intervalStatusWords, studentWords } from '../../../shared-kinetics/figure/interval-status.ts'
 import { decimals, formatWithInterval, halfWidth } from '../../sheet/format.ts'
 import { shortKinds, type ShownOfMethod } from './shown-interval.ts'
 
@@ -6,6 +7,8 @@ export interface MeanShown {
   readonly text: string
   /** Of which kind that interval is, and what else there is or is not; empty where the mean has no interval. */
   readonly words: string
+  /** Why it has no interval, or one that says less than it seems to; null where there is nothing to say. */
+  readonly remark: string | null
 }
 
 /**
@@ -21,16 +24,17 @@ export function meanShown({ profile, mean: combined, kind }: ShownOfMethod): Mea
   if (kind === 'combined' && combined !== null && combinedHalf !== null) {
     const beside = scatterHalf === null ? '' : `; Student-t of the scatter alone ± ${decimals(scatterHalf, 1)}`
     const text = formatWithInterval(Ea, combined.lower95_kJ_per_mol, combined.upper95_kJ_per_mol, places(combinedHalf))
-    return { text, words: `95 % combined${beside}` }
+    return { text, words: `95 % combined${beside}`, remark: studentWords(combined) }
   }
   const text = formatWithInterval(Ea, lower, upper, places(scatterHalf))
-  if (lower === null) return { text, words: '' }
-  return { text, words: `95 % Student-t of the scatter${besideScatter(kind, combined, combinedHalf)}` }
+  const remark = studentWords(profile.mean)
+  if (lower === null) return { text, words: '', remark }
+  return { text, words: `95 % Student-t of the scatter${besideScatter(kind, combined, combinedHalf)}`, remark }
 }
 
 function besideScatter(kind: ShownOfMethod['kind'], mean: ShownOfMethod['mean'], combinedHalf: number | null): string {
   const combined = combinedHalf === null ? '' : `; combined ± ${decimals(combinedHalf, 1)}`
-  if (kind === 'combined') return mean === null ? '; combined not worked out yet' : '; combined not to be had'
+  if (kind === 'combined') return mean === null ? '; combined not worked out yet' : `; combined ${intervalStatusWords['source-unknown']}`
   return kind === 'student-t' ? combined : `${combined}; a mean has no ${shortKinds[kind]} interval`
 }
 

@@ -1,5 +1,6 @@
 import type { Maybe, ProfileResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { decimals, formatSigned } from '../../sheet/format.ts'
+import { intervalKinds, intervalOfKind, intervalWordsAt, shortKinds, type ShownOfMethod } from './shown-interval.ts'
 
 /** What else is to be known of a method's Ea at a level, in sentences: its own error, lack of fit against replicates, and its pre-exponential. */
 export function methodFacts(profile: ProfileResult, levelIndex: number): readonly string[] {
@@ -7,6 +8,14 @@ export function methodFacts(profile: ProfileResult, levelIndex: number): readonl
     (fact) => fact !== null,
   )
 }
+
+/** What is to be said at a level of each kind of interval that the method has. */
+export const intervalFacts = ({ profile, apart }: Pick<ShownOfMethod, 'profile' | 'apart'>, levelIndex: number): readonly string[] =>
+  intervalKinds.flatMap((kind) => {
+    const words = intervalWordsAt(intervalOfKind(profile, apart, kind), levelIndex)
+    const name = shortKinds[kind]
+    return words === null ? [] : [`${name.charAt(0).toUpperCase()}${name.slice(1)} interval: ${words}.`]
+  })
 
 function systematic({ systematicError_percent: errors }: ProfileResult, levelIndex: number): string | null {
   const percent = errors[levelIndex] ?? null

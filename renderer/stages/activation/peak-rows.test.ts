@@ -54,6 +54,21 @@ describe('rows of peak and single-run methods', () => {
     expect(peakColumns.map((column) => column.text(nothing))).toEqual(['', '', '', ''])
   })
 
+  it('say why a row has no interval, or one that reaches below 0', () => {
+    const [, column] = peakColumns
+    const two: PeakMethodResult = { ...e698, standardError_kJ_per_mol: null, lower95_kJ_per_mol: null, upper95_kJ_per_mol: null, dof: 0 }
+    expect([e698, two].map((row) => [column?.text(row), column?.remark?.(row)])).toEqual([
+      ['8.4', null],
+      ['none', 'not to be had with fewer than three distinct programmes'],
+    ])
+    expect(column?.remark?.({ ...e698, lower95_kJ_per_mol: -20, upper95_kJ_per_mol: 375.66 })).toMatch(/^reaches below 0/)
+    expect(column?.remark?.(nothing)).toBeNull()
+    const [head, first] = copyText(peakCopyColumns(), [two])
+      .split('\n')
+      .map((line) => line.split('\t'))
+    expect(first?.[head?.indexOf('On the interval') ?? -1]).toBe('not to be had with fewer than three distinct programmes')
+  })
+
   it('give own numbers in words, temperatures in °C, or the reason why a method does not apply', () => {
     expect(ownNumbers(e698)).toBe('D = −d ln p/dx: 1.05; temperature of a half-life of 60 min 277.0 ±\u00a00.6 °C')
     expect(ownNumbers(nothing)).toBe('It is made for crystallisation, which does not change the mass.')

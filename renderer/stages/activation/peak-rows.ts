@@ -1,4 +1,5 @@
 import type { Maybe, PeakMethodNumber, PeakMethodResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { studentWords } from '../../../shared-kinetics/figure/interval-status.ts'
 import { kelvinToCelsius } from '../../../shared-kinetics/units/convert.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
 import { decimals, formatCelsius, formatInterval, formatLevel, halfWidth } from '../../sheet/format.ts'
@@ -24,7 +25,9 @@ export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
     heading: '±\u00a095\u00a0%',
     unit: 'kJ/mol, Student\u2011t',
     numeric: true,
-    text: (row) => formatInterval(row.Ea_kJ_per_mol, row.lower95_kJ_per_mol, row.upper95_kJ_per_mol),
+    text: (row) =>
+      formatInterval(row.Ea_kJ_per_mol, row.lower95_kJ_per_mol, row.upper95_kJ_per_mol) || (studentWords(row) === null ? '' : 'none'),
+    remark: studentWords,
     value: (row) => halfWidth(row.lower95_kJ_per_mol, row.upper95_kJ_per_mol),
     places: 2,
   },
@@ -115,6 +118,7 @@ export function peakCopyColumns(): readonly DataColumn<PeakMethodResult>[] {
     ...[Ea, interval]
       .filter((column) => column !== undefined)
       .map((column) => ({ ...column, heading: column.id === 'Ea' ? column.heading : '± 95 %, Student-t', unit: 'kJ/mol' })),
+    textColumn('interval-remark', 'On the interval', (row) => studentWords(row) ?? ''),
     ...(lnA === undefined ? [] : [{ ...lnA, unit: 'A in 1/s' }]),
     numberColumn('lnA-error', 's.e. of ln A', '', ({ lnAStandardError }) => lnAStandardError),
     ...(r2 === undefined ? [] : [r2]),

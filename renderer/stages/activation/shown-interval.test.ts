@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import type { IntervalResult, ProfileResult, UncertaintyProfile } from '../../../shared-kinetics/contract/study-result.ts'
 import type { Uncertain } from '../../state/study-state.ts'
-import { intervalKinds, intervalOffers, intervalOfKind, shownOf, uncertaintyOf } from './shown-interval.ts'
+import { intervalFacts } from './method-facts.ts'
+import { intervalKinds, intervalOffers, intervalOfKind, intervalWordsAt, shownOf, uncertaintyOf } from './shown-interval.ts'
 import { friedman, result, runAt, starink } from './testing/small-result.ts'
 
 const interval = (kind: IntervalResult['kind'], lower: readonly (number | null)[], approximate = true): IntervalResult => ({
@@ -48,14 +49,18 @@ describe('kinds of interval that are offered', () => {
 
   it('say why a kind is not to be had', () => {
     expect(reasonOf(starink, null, fiveRuns, 'vyazovkin-wight-f')).toContain('minimise Φ')
-    expect(reasonOf(starink, null, [1, 2, 3], 'jackknife')).toBe('needs four runs, here 3')
-    expect(reasonOf(starink, null, [1, 2, 3], 'bootstrap')).toBe('needs four runs, here 3')
-    expect(reasonOf(starink, null, [1, 1, 2, 3], 'jackknife')).toContain('fewer than three distinct programmes')
-    expect(reasonOf(starink, null, [1, 1, 2, 3], 'bootstrap')).toBe('needs four distinct programmes, here 3')
+    expect(reasonOf(starink, null, [1, 2, 3], 'jackknife')).toBe('needs 4 runs, here 3')
+    expect(reasonOf(starink, null, [1, 2, 3], 'bootstrap')).toBe('needs 4 distinct programmes, here 3')
+    expect(reasonOf(starink, null, [1, 1, 2, 3], 'jackknife')).toContain('fewer than 3 distinct programmes')
+    expect(reasonOf(starink, null, [1, 1, 2, 3], 'bootstrap')).toBe('needs 4 distinct programmes, here 3')
     expect(reasonOf(starink, null, [1, 1, 2, 3, 4], 'bootstrap')).toBeNull()
     expect(reasonOf(starink, apart, fiveRuns, 'measured-sources')).toBe('not to be had for these runs')
+    const every: IntervalResult = { ...interval('jackknife', [null, null]), status: ['energy-needs-every-run', 'energy-needs-every-run'] }
+    expect(reasonOf(starink, { ...apart, intervals: [every] }, fiveRuns, 'jackknife')).toBe(
+      'not to be had: without one of the runs there is no Ea',
+    )
     const two: ProfileResult = { ...starink, lower95_kJ_per_mol: [null, null], upper95_kJ_per_mol: [null, null] }
-    expect(reasonOf(two, null, [1, 2], 'student-t')).toBe('needs three distinct programmes, here 2')
+    expect(reasonOf(two, null, [1, 2], 'student-t')).toBe('needs 3 distinct programmes, here 2')
     expect(reasonOf(two, null, [1, 2], 'measured-sources')).toBeNull()
   })
 })
@@ -72,6 +77,24 @@ describe('interval of a kind', () => {
     expect(intervalOfKind(minimising, null, 'vyazovkin-wight-f')?.upper95_kJ_per_mol).toEqual([153, 154])
     expect(intervalOfKind(starink, null, 'jackknife')).toBeNull()
     expect(intervalOfKind(starink, { ...apart, intervals: [interval('jackknife', [null, null])] }, 'jackknife')).toBeNull()
+  })
+
+  it('says at each level why an end is not there, or means nothing', () => {
+    const wide: ProfileResult = { ...starink, lower95_kJ_per_mol: [-1, 145] }
+    expect([0, 1].map((level) => intervalWordsAt(intervalOfKind(wide, null, 'student-t'), level))).toEqual([
+      expect.stringMatching(/^reaches below 0/),
+      null,
+    ])
+    const open: IntervalResult = { ...interval('vyazovkin-wight-f', [null, 144]), status: ['end-outside', 'ok'] }
+    const drawn: IntervalResult = { ...interval('combined', [140, 142]), status: ['baseline-left-out', 'baseline-left-out'] }
+    const facts = (level: number) =>
+      intervalFacts({ profile: { ...wide, otherIntervals: [open] }, apart: { ...apart, intervals: [drawn] } }, level)
+    expect(facts(0)).toEqual([
+      expect.stringMatching(/^Student-t interval: reaches below 0/),
+      'F-type interval: an end lies beyond 1 or 1000 kJ/mol and is not given.',
+      expect.stringMatching(/^Combined interval: holds nothing of the choice of baseline/),
+    ])
+    expect(facts(1)).toEqual([expect.stringMatching(/^Combined interval: /)])
   })
 
   it('is the wanted one where the method can have it, else its own, also until the wanted one is worked out', () => {

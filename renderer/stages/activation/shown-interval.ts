@@ -1,6 +1,7 @@
 import type {
   CombinedMean,
   IntervalResult,
+  IntervalStatus,
   LevelStatus,
   Maybe,
   MethodId,
@@ -9,6 +10,8 @@ import type {
   UncertaintyProfile,
 } from '../../../shared-kinetics/contract/study-result.ts'
 import type { DrawnInterval } from '../../../shared-kinetics/figure/activation-figure.ts'
+import { intervalStatusWords, studentStatus } from '../../../shared-kinetics/figure/interval-status.ts'
+import { tooFewForInterval } from '../../../shared-kinetics/figure/intervals-not-given.ts'
 import type { Uncertain } from '../../state/study-state.ts'
 import type { ShownKind } from '../../state/view-store.ts'
 
@@ -23,6 +26,8 @@ export interface ShownInterval {
   readonly sources: readonly string[]
   readonly lower95_kJ_per_mol: readonly Maybe[]
   readonly upper95_kJ_per_mol: readonly Maybe[]
+  /** Why a level has no ends, or only one, and where the lower one means nothing. */
+  readonly status: readonly IntervalStatus[]
 }
 
 /** A kind of interval as it is offered. */
@@ -74,9 +79,12 @@ export function uncertaintyOf(uncertain: Uncertain | null, profile: ProfileResul
  */
 export function intervalOfKind(profile: ProfileResult, apart: UncertaintyProfile | null, kind: ShownKind): ShownInterval | null {
   if (kind === 'student-t') return hasInterval(profile) ? studentT(profile) : null
-  const found = [...profile.otherIntervals, ...(apart?.intervals ?? [])].find((one) => one.kind === kind)
-  return found === undefined || !hasInterval(found) ? null : withLabel(found)
+  const found = resultOfKind(profile, apart, kind)
+  return found === undefined || !hasInterval(found) ? null : { ...found, kind }
 }
+
+const resultOfKind = (profile: ProfileResult, apart: UncertaintyProfile | null, kind: ShownKind): IntervalResult | undefined =>
+  [...profile.otherIntervals, ...(apart?.intervals ?? [])].find((one) => one.kind === kind)
 
 /** The kind that is shown: the wanted one, or the method's own where it can have none of the wanted kind. */
 export function kindShown(wanted: ShownKind, offers: readonly IntervalOffer[]): ShownKind {
@@ -92,26 +100,16 @@ export function intervalOffers(
   return intervalKinds.map((kind) => {
     const isHad = intervalOfKind(profile, apart, kind) !== null
     const isToCome = apart === null && !isOfEvaluation(kind)
-    const reason = isHad ? null : (tooFewRuns(kind, programmes) ?? (isToCome ? null : noneOfKind(kind, profile)))
+    const reason = isHad ? null : (tooFewForInterval(kind, programmes) ?? (isToCome ? null : noneOfKind(kind, profile, apart)))
     return { kind, reason }
   })
 }
 
-/** Counts that a kind asks for, known before anything is worked out. */
-function tooFewRuns(kind: ShownKind, programmes: readonly number[]): string | null {
-  const distinct = new Set(programmes).size
-  if (distinct < 3 && kind !== 'measured-sources') return `needs three distinct programmes, here ${distinct}`
-  if (kind !== 'jackknife' && kind !== 'bootstrap') return null
-  if (programmes.length < 4) return `needs four runs, here ${programmes.length}`
-  // All three would have to be in every resample, which then hardly differ.
-  if (kind === 'bootstrap') return distinct < 4 ? `needs four distinct programmes, here ${distinct}` : null
-  const leavesThree = programmes.every((left) => distinct - (programmes.filter((one) => one === left).length === 1 ? 1 : 0) >= 3)
-  return leavesThree ? null : 'leaving out a run would leave fewer than three distinct programmes'
-}
-
-function noneOfKind(kind: ShownKind, profile: ProfileResult): string {
+function noneOfKind(kind: ShownKind, profile: ProfileResult, apart: UncertaintyProfile | null): string {
   if (kind === 'vyazovkin-wight-f' && profile.evidence === 'line') return 'belongs to methods that minimise Φ: Vyazovkin, incremental'
-  return profile.status.some((status: LevelStatus) => status === 'ok') ? 'not to be had for these runs' : 'no level has an Ea'
+  if (profile.status.every((status: LevelStatus) => status !== 'ok')) return 'no level has an Ea'
+  const words = (resultOfKind(profile, apart, kind)?.status ?? []).flatMap((status) => intervalStatusWords[status] ?? [])
+  return words.length === 0 ? 'not to be had for these runs' : [...new Set(words)].join('; ')
 }
 
 function hasInterval({
@@ -129,17 +127,14 @@ const studentT = (profile: ProfileResult): ShownInterval => ({
   sources: [],
   lower95_kJ_per_mol: profile.lower95_kJ_per_mol,
   upper95_kJ_per_mol: profile.upper95_kJ_per_mol,
+  status: studentStatus(profile),
 })
 
-const withLabel = ({ kind, label, approximate, note, sources, lower95_kJ_per_mol, upper95_kJ_per_mol }: IntervalResult): ShownInterval => ({
-  kind,
-  label,
-  approximate,
-  note,
-  sources,
-  lower95_kJ_per_mol,
-  upper95_kJ_per_mol,
-})
+/** What is to be said of an interval at a level: why an end is not there, or means nothing; null where there is nothing to say. */
+export function intervalWordsAt(interval: ShownInterval | null, levelIndex: number): string | null {
+  const status = interval?.status[levelIndex]
+  return status === undefined ? null : intervalStatusWords[status]
+}
 
 /** The interval as figures draw it. */
 export const drawnInterval = (interval: ShownInterval | null): DrawnInterval | null =>
