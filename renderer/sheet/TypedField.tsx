@@ -1,4 +1,4 @@
-import { Fragment, useState, type ReactNode } from 'react'
+import { Fragment, useRef, useState, type ReactNode } from 'react'
 import { FieldError, Input, Label, TextArea, TextField } from 'react-aria-components'
 import type { Parsed } from '../../shared-kinetics/units/parse-quantity.ts'
 
@@ -12,6 +12,7 @@ export function TypedField<T>({
   text,
   placeholder = '',
   wraps = false,
+  countsUnchanged = false,
   parse,
   onCommit,
 }: {
@@ -22,18 +23,24 @@ export function TypedField<T>({
   readonly placeholder?: string
   /** Long text goes on in further lines instead of being cut. */
   readonly wraps?: boolean
+  /** Typing what stands there already says something, as where it was only assumed. */
+  readonly countsUnchanged?: boolean
   readonly parse: (text: string) => Parsed<T>
   readonly onCommit: (value: T) => void
 }) {
   const [draft, setDraft] = useState<string | null>(null)
   const [reason, setReason] = useState<string | null>(null)
 
+  // React tells of no change where the same text is put over itself.
+  const isTypedRef = useRef(false)
+
   const commit = (): void => {
-    if (draft === null || draft.trim() === text.trim()) {
+    const isUnchanged = draft === null || draft.trim() === text.trim()
+    if (isUnchanged && !(countsUnchanged && isTypedRef.current)) {
       revert()
       return
     }
-    const parsed = parse(draft)
+    const parsed = parse(draft ?? text)
     if (!parsed.ok) {
       setReason(parsed.reason)
       return
@@ -43,6 +50,7 @@ export function TypedField<T>({
   }
 
   const revert = (): void => {
+    isTypedRef.current = false
     setDraft(null)
     setReason(null)
   }
@@ -55,6 +63,9 @@ export function TypedField<T>({
       isInvalid={reason !== null}
       validationBehavior="aria"
       onChange={setDraft}
+      onInput={() => {
+        isTypedRef.current = true
+      }}
       onBlur={commit}
       onKeyDown={(event) => {
         if (event.key === 'Enter') {

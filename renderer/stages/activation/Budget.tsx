@@ -21,7 +21,7 @@ import {
   type StatedKey,
   withStated,
 } from './budget-rows.ts'
-import { methodFacts } from './method-facts.ts'
+import { intervalFacts, methodFacts } from './method-facts.ts'
 import { parseDraws, parseLag, parseSeed, parseShare, parseTemperatureUncertainty } from './parse-uncertainty.ts'
 
 /** Where the uncertainty of the chosen method comes from at the level, and what the method's own numbers are worth there. */
@@ -67,7 +67,7 @@ export function Budget(props: ActivationProps) {
         </TableView>
       )}
       <ul className="method-facts">
-        {methodFacts(shown.profile, levelIndex).map((fact) => (
+        {[...intervalFacts(shown, levelIndex), ...methodFacts(shown.profile, levelIndex)].map((fact) => (
           <li key={fact}>{fact}</li>
         ))}
       </ul>
@@ -161,6 +161,7 @@ function StatedField({
       hideLabel
       text={statedText(settings, stated)}
       parse={parsers[stated]}
+      countsUnchanged={isAssumed(settings, stated)}
       onCommit={(value) => onState({ [stated]: value })}
     />
   )
