@@ -1,7 +1,7 @@
-import { memo, useMemo, type KeyboardEvent } from 'react'
+import { memo, useMemo } from 'react'
 import { copyText, type DataColumn } from '../../sheet/data-table.ts'
 import { NumberCell, TableHead } from '../../sheet/DataTable.tsx'
-import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
+import { rowKeys } from '../../sheet/row-keys.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import { useStudy } from '../../state/services.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
@@ -22,23 +22,12 @@ export function LevelTable({ result, chosen, compared, shown, levelIndex, action
   const isBehind = useStudy((state) => areLevelsBehind(state, methods, intervalOf))
   const className = ['data-table level-table', columns.length > mostInOneLine ? ' has-many' : '', isBehind ? ' is-behind' : ''].join('')
 
-  const onKeyDown = (event: KeyboardEvent): void => {
-    // The table lists levels downwards, so its arrows run the other way round than the rail's.
-    const key = { ArrowDown: 'ArrowRight', ArrowUp: 'ArrowLeft', PageDown: 'PageUp', PageUp: 'PageDown', Home: 'Home', End: 'End' }[
-      event.key
-    ]
-    const target = key === undefined || event.ctrlKey || event.metaKey ? null : levelAfterKey(key, levelIndex, rows.length)
-    if (target === null) return
-    event.preventDefault()
-    actions.moveLevel(target)
-  }
-
   return (
     <TableView
       label="Table of activation energies"
       copied={() => (isBehind ? null : copyText(levelCopyColumns(result, chosen, compared, intervalOf), rows))}
       currentRow={levelIndex}
-      onKeyDown={onKeyDown}
+      onKeyDown={rowKeys(levelIndex, rows.length, actions.moveLevel)}
     >
       <table className={className}>
         <caption className="visually-hidden">Activation energy at every level of conversion</caption>
@@ -69,7 +58,7 @@ const Row = memo(function Row({ row, columns, current, onPick }: RowProps) {
         {first?.text(row)}
       </th>
       {rest.map((column) => (
-        <NumberCell key={column.id} text={column.text(row)} />
+        <NumberCell key={column.id} text={column.text(row)} remark={column.remark?.(row) ?? null} />
       ))}
     </tr>
   )

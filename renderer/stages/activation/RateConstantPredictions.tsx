@@ -2,6 +2,7 @@ import type { Maybe, RateConstantPrediction } from '../../../shared-kinetics/con
 import { rateConstantLimits } from '../../../shared-kinetics/contract/rate-constant-schema.ts'
 import type { Parsed } from '../../../shared-kinetics/units/parse-quantity.ts'
 import { copyText } from '../../sheet/data-table.ts'
+import { NumberHeading } from '../../sheet/DataTable.tsx'
 import { decimals } from '../../sheet/format.ts'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
 import { mantissaAndPower, scientific } from '../../sheet/scientific.ts'
@@ -37,12 +38,12 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
               <caption className="visually-hidden">Predicted rate constants</caption>
               <thead>
                 <tr>
-                  <Heading text="T" unit="" />
-                  <Heading text="k" unit={rateUnit} />
-                  {hasBands && <Heading text="95 %, line" unit={rateUnit} />}
-                  {hasBands && <Heading text="95 %, new k" unit={rateUnit} />}
-                  <Heading text="exp(−Ea/RT)" unit="" />
-                  <Heading text="Factor" unit="per 10 K" />
+                  <NumberHeading text="T" />
+                  <NumberHeading text="k" unit={rateUnit} />
+                  {hasBands && <NumberHeading text="95 %, line" unit={rateUnit} />}
+                  {hasBands && <NumberHeading text="95 %, new k" unit={rateUnit} />}
+                  <NumberHeading text="exp(−Ea/RT)" />
+                  <NumberHeading text="Factor" unit="per 10 K" />
                 </tr>
               </thead>
               <tbody>
@@ -81,15 +82,6 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
         <p className="chart-note">Beyond the measured temperatures the bands hold only as far as the same reaction goes on there.</p>
       )}
     </>
-  )
-}
-
-function Heading({ text, unit }: { readonly text: string; readonly unit: string }) {
-  return (
-    <th scope="col" className="is-number">
-      <span>{text}</span>
-      <span className="unit">{unit}</span>
-    </th>
   )
 }
 

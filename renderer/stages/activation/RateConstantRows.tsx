@@ -1,7 +1,7 @@
-import type { KeyboardEvent } from 'react'
 import { copyText } from '../../sheet/data-table.ts'
-import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
+import { NumberHeading, UseBox } from '../../sheet/DataTable.tsx'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
+import { rowKeys } from '../../sheet/row-keys.ts'
 import { scientific } from '../../sheet/scientific.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import { useServices } from '../../state/services.ts'
@@ -18,22 +18,12 @@ export function RateConstantRows({ table, rated, place, actions }: RatedProps) {
   const hasLabel = table.rows.some((row) => row.label !== null)
   const go = (index: number): void => view.setState({ rateConstant: { kind: 'row', index } })
 
-  const onKeyDown = (event: KeyboardEvent): void => {
-    const key = { ArrowDown: 'ArrowRight', ArrowUp: 'ArrowLeft', PageDown: 'PageUp', PageUp: 'PageDown', Home: 'Home', End: 'End' }[
-      event.key
-    ]
-    const target = key === undefined || event.ctrlKey || event.metaKey ? null : levelAfterKey(key, current ?? -1, table.rows.length)
-    if (target === null) return
-    event.preventDefault()
-    go(target)
-  }
-
   return (
     <TableView
       label="Table of rate constants and their line"
       copied={() => copyText(rowCopyColumns(rated), rated.rows)}
       currentRow={current}
-      onKeyDown={onKeyDown}
+      onKeyDown={rowKeys(current, table.rows.length, go)}
     >
       <table className="data-table level-table rate-rows">
         <caption className="visually-hidden">Rate constants, the line, and how far they lie from it</caption>
@@ -42,11 +32,11 @@ export function RateConstantRows({ table, rated, place, actions }: RatedProps) {
             <th scope="col">
               <span>Use</span>
             </th>
-            <Heading text="T" unit={temperatureUnitWords[shown]} />
-            <Heading text="k" unit={rateUnit} />
-            <Heading text="k of the line" unit={rateUnit} />
-            <Heading text="ln k − line" unit="" />
-            <Heading text="exp(−Ea/RT)" unit="" />
+            <NumberHeading text="T" unit={temperatureUnitWords[shown]} />
+            <NumberHeading text="k" unit={rateUnit} />
+            <NumberHeading text="k of the line" unit={rateUnit} />
+            <NumberHeading text="ln k − line" />
+            <NumberHeading text="exp(−Ea/RT)" />
             {hasLabel && (
               <th scope="col">
                 <span>Label</span>
@@ -68,12 +58,10 @@ export function RateConstantRows({ table, rated, place, actions }: RatedProps) {
                 onClick={() => go(i)}
               >
                 <td>
-                  <input
-                    type="checkbox"
-                    className="use-box"
-                    aria-label={`Use row ${i + 1}`}
-                    checked={row.use}
-                    onChange={(event) => actions.change({ kind: 'set-rate-constants', table: withUse(table, i, event.target.checked) })}
+                  <UseBox
+                    row={i}
+                    isUsed={row.use}
+                    onUse={(use) => actions.change({ kind: 'set-rate-constants', table: withUse(table, i, use) })}
                   />
                 </td>
                 <th scope="row" className="is-number">
@@ -90,15 +78,6 @@ export function RateConstantRows({ table, rated, place, actions }: RatedProps) {
         </tbody>
       </table>
     </TableView>
-  )
-}
-
-function Heading({ text, unit }: { readonly text: string; readonly unit: string }) {
-  return (
-    <th scope="col" className="is-number">
-      <span>{text}</span>
-      <span className="unit">{unit}</span>
-    </th>
   )
 }
 

@@ -2,11 +2,12 @@ import { memo, useEffect, useId, useRef, useState, type ClipboardEvent, type Foc
 import { Button } from 'react-aria-components'
 import type { RateConstantRow, RateConstantTable } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
+import { NumberHeading, UseBox } from '../../sheet/DataTable.tsx'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
 import { TableView } from '../../sheet/TableView.tsx'
 import { rateConstantText, temperatureText } from './rate-constant-cells.ts'
 import { gridCopyColumns } from './rate-constant-copy.ts'
-import { cellTexts, enterCell, enterRow, gridColumns, type GridColumn } from './rate-constant-entry.ts'
+import { cellTexts, enterCell, enterRow, gridColumns, type GridColumn, type RowTexts } from './rate-constant-entry.ts'
 import { hasOwnNumbers, temperatureUnitWords, withoutRow, withUse } from './rate-constant-edits.ts'
 
 export interface RateConstantGridProps {
@@ -39,9 +40,9 @@ export function RateConstantGrid(props: RateConstantGridProps) {
             <th scope="col">
               <span>Use</span>
             </th>
-            <Heading text="Temperature" unit={temperatureUnitWords[table.temperatureUnitShown]} />
-            <Heading text="k" unit={kUnit} />
-            <Heading text="u(k)" unit="or %" />
+            <NumberHeading text="Temperature" unit={temperatureUnitWords[table.temperatureUnitShown]} />
+            <NumberHeading text="k" unit={kUnit} />
+            <NumberHeading text="u(k)" unit="or %" />
             <th scope="col">
               <span>Label</span>
             </th>
@@ -62,15 +63,6 @@ export function RateConstantGrid(props: RateConstantGridProps) {
   )
 }
 
-function Heading({ text, unit }: { readonly text: string; readonly unit: string }) {
-  return (
-    <th scope="col" className="is-number">
-      <span>{text}</span>
-      <span className="unit">{unit}</span>
-    </th>
-  )
-}
-
 interface RowProps extends RateConstantGridProps {
   readonly row: RateConstantRow
   readonly index: number
@@ -78,28 +70,22 @@ interface RowProps extends RateConstantGridProps {
 }
 
 const Row = memo(function Row({ table, row, index, isCurrent, onTable, onPoint, onPasteTable }: RowProps) {
-  const [drafts, setDrafts] = useState<Drafts>(none)
-  const [reasons, setReasons] = useState<Drafts>(none)
-  const errorId = useId()
+  const typing = useTyping()
   const texts = cellTexts(row, table)
   const editable = hasOwnNumbers(table)
 
-  const settle = (column: GridColumn): void => {
-    setDrafts((all) => without(all, column))
-    setReasons((all) => without(all, column))
-  }
   const commit = (column: GridColumn): void => {
-    const draft = drafts[column]
+    const draft = typing.drafts[column]
     if (draft === undefined || draft.trim() === texts[column]) {
-      settle(column)
+      typing.settle(column)
       return
     }
     const entered = enterCell(table, index, column, draft)
     if (!entered.ok) {
-      setReasons((all) => ({ ...all, [column]: entered.reason }))
+      typing.refuseCell(column, entered.reason)
       return
     }
-    settle(column)
+    typing.settle(column)
     onTable(entered.value)
   }
 
@@ -107,13 +93,7 @@ const Row = memo(function Row({ table, row, index, isCurrent, onTable, onPoint, 
     <>
       <tr aria-current={isCurrent ? 'true' : undefined} className={row.use ? undefined : 'is-unused'} onFocus={() => onPoint(index)}>
         <td>
-          <input
-            type="checkbox"
-            className="use-box"
-            aria-label={`Use row ${index + 1}`}
-            checked={row.use}
-            onChange={(event) => onTable(withUse(table, index, event.target.checked))}
-          />
+          <UseBox row={index} isUsed={row.use} onUse={(use) => onTable(withUse(table, index, use))} />
         </td>
         {gridColumns.map((column) =>
           editable || column === 'label' ? (
@@ -121,12 +101,11 @@ const Row = memo(function Row({ table, row, index, isCurrent, onTable, onPoint, 
               key={column}
               column={column}
               rowIndex={index}
-              name={`${columnWords[column]}, row ${index + 1}`}
-              text={drafts[column] ?? texts[column]}
-              errorId={reasons[column] === undefined ? null : errorId}
-              onType={(text) => setDrafts((all) => ({ ...all, [column]: text }))}
+              where={`row ${index + 1}`}
+              text={texts[column]}
+              typing={typing}
               onCommit={() => commit(column)}
-              onRevert={() => settle(column)}
+              onRevert={() => typing.settle(column)}
               onPasteTable={onPasteTable}
             />
           ) : (
@@ -143,7 +122,7 @@ const Row = memo(function Row({ table, row, index, isCurrent, onTable, onPoint, 
           )}
         </td>
       </tr>
-      <Reasons id={errorId} reasons={reasons} />
+      <Reasons typing={typing} />
     </>
   )
 })
@@ -163,31 +142,25 @@ function FixedCell({
 
 /** The row that waits at the end: it counts as soon as temperature and k can be read. */
 function NewRow({ table, onTable, onPasteTable }: RateConstantGridProps) {
-  const [drafts, setDrafts] = useState<Drafts>(none)
-  const [reasons, setReasons] = useState<Drafts>(none)
-  const errorId = useId()
+  const typing = useTyping()
   const rowRef = useRef<HTMLTableRowElement>(null)
   const isFirst = table.rows.length === 0
   useEffect(() => {
     if (isFirst) rowRef.current?.querySelector<HTMLElement>('input')?.focus()
   }, [isFirst])
-  const isBlank = gridColumns.every((column) => (drafts[column] ?? '').trim() === '')
+  const isBlank = gridColumns.every((column) => (typing.drafts[column] ?? '').trim() === '')
 
-  const clear = (): void => {
-    setDrafts(none)
-    setReasons(none)
-  }
   const enter = (): boolean => {
     if (isBlank) {
-      clear()
+      typing.clear()
       return false
     }
-    const entered = enterRow(table, drafts)
+    const entered = enterRow(table, typing.drafts)
     if (!entered.ok) {
-      setReasons(entered.reasons)
+      typing.refuseRow(entered.reasons)
       return false
     }
-    clear()
+    typing.clear()
     onTable(entered.table)
     return true
   }
@@ -204,25 +177,20 @@ function NewRow({ table, onTable, onPasteTable }: RateConstantGridProps) {
             key={column}
             column={column}
             rowIndex={table.rows.length}
-            name={`${columnWords[column]}, new row`}
+            where="new row"
+            text=""
+            typing={typing}
             placeholder={table.rows.length === 0 ? placeholders[column] : column === 'temperature' ? 'add a row' : ''}
-            text={drafts[column] ?? ''}
-            errorId={reasons[column] === undefined ? null : errorId}
-            onType={(text) => {
-              setDrafts((all) => ({ ...all, [column]: text }))
-              setReasons((all) => without(all, column))
-            }}
-            onCommit={() => undefined}
             onEnter={() => {
               if (enter()) rowRef.current?.querySelector<HTMLElement>('input[data-column="temperature"]')?.focus()
             }}
-            onRevert={clear}
+            onRevert={typing.clear}
             onPasteTable={onPasteTable}
           />
         ))}
         <td>{''}</td>
       </tr>
-      <Reasons id={errorId} reasons={reasons} />
+      <Reasons typing={typing} />
     </>
   )
 }
@@ -237,19 +205,19 @@ const placeholders: Readonly<Record<GridColumn, string>> = {
 interface CellProps {
   readonly column: GridColumn
   readonly rowIndex: number
-  readonly name: string
+  /** The row, in words. */
+  readonly where: string
+  /** What stands there as long as nobody types. */
   readonly text: string
+  readonly typing: Typing
   readonly placeholder?: string
-  /** Where the reason stands why the text cannot be meant; null where it can. */
-  readonly errorId: string | null
-  readonly onType: (text: string) => void
-  readonly onCommit: () => void
+  readonly onCommit?: () => void
   readonly onEnter?: () => void
   readonly onRevert: () => void
   readonly onPasteTable: (text: string) => void
 }
 
-function Cell({ column, rowIndex, name, text, placeholder = '', errorId, onType, onCommit, onEnter, onRevert, onPasteTable }: CellProps) {
+function Cell({ column, rowIndex, where, text, typing, placeholder = '', onCommit, onEnter, onRevert, onPasteTable }: CellProps) {
   const onKeyDown = (event: KeyboardEvent<HTMLInputElement>): void => {
     if (event.ctrlKey || event.metaKey || event.altKey) return
     if (event.key === 'Escape') onRevert()
@@ -270,15 +238,15 @@ function Cell({ column, rowIndex, name, text, placeholder = '', errorId, onType,
     <td className={column === 'label' ? undefined : 'is-number'}>
       <input
         className="grid-cell"
-        aria-label={name}
+        aria-label={`${columnWords[column]}, ${where}`}
         data-row={rowIndex}
         data-column={column}
-        value={text}
+        value={typing.drafts[column] ?? text}
         placeholder={placeholder}
         autoComplete="off"
         spellCheck={false}
-        {...(errorId === null ? {} : { 'aria-invalid': true, 'aria-describedby': errorId })}
-        onChange={(event) => onType(event.target.value)}
+        {...(typing.reasons[column] === undefined ? {} : { 'aria-invalid': true, 'aria-describedby': typing.errorId })}
+        onChange={(event) => typing.type(column, event.target.value)}
         onBlur={onCommit}
         onKeyDown={onKeyDown}
         onPaste={onPaste}
@@ -293,13 +261,13 @@ function focusCell(from: HTMLElement, row: number, column: GridColumn): void {
   cell?.select()
 }
 
-function Reasons({ id, reasons }: { readonly id: string; readonly reasons: Drafts }) {
+function Reasons({ typing: { errorId, reasons } }: { readonly typing: Typing }) {
   const said = gridColumns.flatMap((column) => (reasons[column] === undefined ? [] : `${columnWords[column]}: ${reasons[column]}`))
   if (said.length === 0) return null
   return (
     <tr className="grid-reasons">
       <td colSpan={6}>
-        <p id={id} role="alert" className="field-error">
+        <p id={errorId} role="alert" className="field-error">
           {said.join(' ')}
         </p>
       </td>
@@ -307,10 +275,48 @@ function Reasons({ id, reasons }: { readonly id: string; readonly reasons: Draft
   )
 }
 
-type Drafts = Readonly<Partial<Record<GridColumn, string>>>
-const none: Drafts = {}
+/** What is being typed into the cells of a row. */
+interface Typing {
+  readonly drafts: RowTexts
+  /** By column, why it cannot be meant. */
+  readonly reasons: RowTexts
+  /** Where the reasons stand. */
+  readonly errorId: string
+  readonly type: (column: GridColumn, text: string) => void
+  readonly refuseCell: (column: GridColumn, reason: string) => void
+  readonly refuseRow: (reasons: RowTexts) => void
+  /** Takes back what is typed in a cell, or in all. */
+  readonly settle: (column: GridColumn) => void
+  readonly clear: () => void
+}
 
-function without(drafts: Drafts, column: GridColumn): Drafts {
-  const { [column]: _, ...others } = drafts
+const none: RowTexts = {}
+
+function useTyping(): Typing {
+  const [drafts, setDrafts] = useState(none)
+  const [reasons, setReasons] = useState(none)
+  return {
+    drafts,
+    reasons,
+    errorId: useId(),
+    type: (column, text) => {
+      setDrafts((all) => ({ ...all, [column]: text }))
+      setReasons((all) => without(all, column))
+    },
+    refuseCell: (column, reason) => setReasons((all) => ({ ...all, [column]: reason })),
+    refuseRow: setReasons,
+    settle: (column) => {
+      setDrafts((all) => without(all, column))
+      setReasons((all) => without(all, column))
+    },
+    clear: () => {
+      setDrafts(none)
+      setReasons(none)
+    },
+  }
+}
+
+function without(texts: RowTexts, column: GridColumn): RowTexts {
+  const { [column]: _, ...others } = texts
   return others
 }
