@@ -14,9 +14,8 @@ const field = (): HTMLInputElement => {
 }
 /** As a browser does it when a text is typed over the whole of the old one. */
 const type = (text: string): void => {
-  const { set } = Object.getOwnPropertyDescriptor(HTMLInputElement.prototype, 'value') ?? {}
   act(() => {
-    set?.call(field(), text)
+    Reflect.set(HTMLInputElement.prototype, 'value', text, field())
     field().dispatchEvent(new InputEvent('input', { bubbles: true }))
   })
 }

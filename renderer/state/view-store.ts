@@ -6,8 +6,8 @@ export type Theme = 'system' | 'light' | 'dark'
 
 /** The interval that chart, table, rail and read-out show: the regression's own, or another kind. */
 export type ShownKind = 'student-t' | IntervalKind
-/** What the left half of the activation stage shows: what Ea is read from, or where its uncertainty comes from. */
-export type Evidence = 'fit' | 'budget'
+/** What the left half of the activation stage shows: what Ea is read from at the level, where its uncertainty comes from, or the line through the rate peaks. */
+export type Evidence = 'fit' | 'budget' | 'peaks'
 /** The table beneath Ea against conversion. */
 export type Beneath = 'levels' | 'peaks'
 
@@ -30,6 +30,8 @@ export interface ViewState {
   readonly interval: ShownKind
   readonly evidence: Evidence
   readonly beneath: Beneath
+  /** The row picked out among the peak and single-run methods, by its key; null for the first. */
+  readonly peakRow: string | null
   /** null takes temperature for constant heating rates and time for everything else. */
   readonly against: 'temperature' | 'time' | null
   /** What the Activation energy stage shows of a study that holds rate constants made from its runs. */
@@ -48,6 +50,7 @@ const initialViewState: ViewState = {
   interval: 'student-t',
   evidence: 'fit',
   beneath: 'levels',
+  peakRow: null,
   against: null,
   basis: 'runs',
   rateConstant: { kind: 'row', index: 0 },

@@ -93,6 +93,9 @@ describe('the status of an interval', () => {
   })
 })
 
+const of = (Ea: number | null, lower: number | null, upper: number | null): string | null =>
+  studentWords({ Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper })
+
 describe('remarks on an interval', () => {
   it('name the levels that follow each other as one range', () => {
     const status: IntervalStatus[] = ['reaches-below-zero', 'reaches-below-zero', 'reaches-below-zero', 'ok', 'end-outside', 'no-energy']
@@ -105,8 +108,6 @@ describe('remarks on an interval', () => {
   })
 
   it('of a single Ea say that its interval is missing or reaches below 0, and nothing without an Ea', () => {
-    const of = (Ea: number | null, lower: number | null, upper: number | null) =>
-      studentWords({ Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper })
     expect([of(100, 90, 110), of(null, null, null)]).toEqual([null, null])
     expect(of(100, null, null)).toBe('not to be had with fewer than three distinct programmes')
     expect(of(100, -5, 205)).toMatch(/^reaches below 0/)

@@ -79,12 +79,13 @@ function lineProfile(result: StudyResult, methodId: MethodId): ProfileResult | u
 
 const levelName = (result: StudyResult, levelIndex: number): string => `α ${levelText(result.levels[levelIndex] ?? Number.NaN)}`
 
-interface Point {
+export interface Point {
   readonly x: number
   readonly y: number
 }
 
-function pointOf(line: LineResult, run: number, shift: number): Point | null {
+/** A run's point as drawn, its ordinate moved by `shift`; null where the run has none. */
+export function pointOf(line: LineResult, run: number, shift: number): Point | null {
   const x = line.x_per_K[run] ?? null
   const y = line.y[run] ?? null
   return x === null || y === null ? null : { x: x * 1000, y: y + shift }
@@ -94,7 +95,7 @@ const pointsOf = (line: LineResult, shift: number): Point[] =>
   line.x_per_K.map((_, run) => pointOf(line, run, shift)).filter((point) => point !== null)
 
 /** The fitted line over its own points and a little beyond; null where the line is not determined. */
-function drawnLine(line: LineResult, shift: number): { readonly x: readonly number[]; readonly y: readonly number[] } | null {
+export function drawnLine(line: LineResult, shift: number): { readonly x: readonly number[]; readonly y: readonly number[] } | null {
   const { slope_K, intercept } = line
   const [low, high] = extentOf(line.x_per_K)
   if (slope_K === null || intercept === null || !Number.isFinite(low)) return null

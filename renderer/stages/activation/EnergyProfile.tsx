@@ -76,7 +76,18 @@ export function EnergyProfile(props: ActivationProps) {
       )}
       <UncertaintyWork />
       <div className="beneath">
-        <Choice label="Table" options={beneathOptions} value={beneath} onChange={(next) => view.setState({ beneath: next })} />
+        <Choice
+          label="Table"
+          options={beneathOptions}
+          value={beneath}
+          onChange={(next) =>
+            // What the numbers are read from stands at the left.
+            view.setState(({ evidence }) => ({
+              beneath: next,
+              evidence: next === 'peaks' ? 'peaks' : evidence === 'peaks' ? 'fit' : evidence,
+            }))
+          }
+        />
       </div>
       {beneath === 'levels' ? (
         <>

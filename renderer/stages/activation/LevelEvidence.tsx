@@ -1,76 +1,146 @@
-import { useMemo } from 'react'
+import { useMemo, type ReactNode } from 'react'
 import { methodsOnRequest } from '../../../shared-kinetics/contract/methods-on-request.ts'
-import type { RunResult } from '../../../shared-kinetics/contract/study-result.ts'
-import { runNames, runTones } from '../../../shared-kinetics/figure/run-place.ts'
+import type { PeakMethodResult, RunResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { phiFigure } from '../../../shared-kinetics/figure/phi-figure.ts'
 import { straightLinesAtLevel, straightLinesFigure } from '../../../shared-kinetics/figure/straight-lines-figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
-import { RunMarker } from '../../charts/RunMarker.tsx'
 import { formatAtLevel, levelQuantity, type LevelQuantity } from '../../sheet/at-level.ts'
-import { Choice, Choices } from '../../sheet/Choice.tsx'
+import { Choice, Choices, type ChoiceOption } from '../../sheet/Choice.tsx'
 import { count, decimals, formatLevel, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { useColours, useServices, useView } from '../../state/services.ts'
+import type { Evidence } from '../../state/view-store.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
 import { BasisChoice } from './BasisChoice.tsx'
 import { Budget } from './Budget.tsx'
-import { isReportBasis, readingOf, scopeWords } from './method-words.tsx'
+import { isReportBasis, peakReadings, readingOf, scopeWords } from './method-words.tsx'
 import { methodsWith } from './methods-with.ts'
+import { PeakEvidence } from './PeakEvidence.tsx'
+import { peakKey, pickedPeaks } from './peak-rows.ts'
+import { RunLegend } from './RunLegend.tsx'
 import { drawnInterval } from './shown-interval.ts'
 
-/** The left half: what the chosen method's Ea is read from (its straight lines, or Phi(Ea) at the level), or where the uncertainty of it comes from. */
+/** The left half: what the chosen method's Ea is read from (its straight lines, or Phi(Ea) at the level), where the uncertainty of it comes from, or the line through the peaks. */
 export function LevelEvidence(props: ActivationProps) {
-  const { result, chosen, level, shown } = props
-  const { view } = useServices()
-  const evidence = useView((state) => state.evidence)
-  const { profile, interval } = shown
-  const minimising = profile.evidence === 'minimum'
-  const fit = minimising ? `Φ(Ea) at α ${formatLevel(level)}` : 'Straight lines at each conversion'
-  const sources = [...profile.sources, ...(interval?.sources ?? [])]
+  const { result, actions } = props
+  const wanted = useView((state) => state.evidence)
+  const peaks = pickedPeaks(
+    result.peakMethods,
+    useView((state) => state.peakRow),
+  )
+  const evidence = peaks === null && wanted === 'peaks' ? 'fit' : wanted
+  const head = headOf(props, evidence, peaks)
   return (
-    <Half
-      side="evidence"
-      title={evidence === 'budget' ? `Where the uncertainty comes from at α\u00a0${formatLevel(level)}` : fit}
-      note={
-        evidence === 'budget' ? (
-          <>{profile.label}: the standard uncertainty of Ea that each source brings alone; bars as long as its square.</>
-        ) : (
-          <>
-            {profile.label}: {readingOf(chosen)}. {count(result.runs.length, 'run')}, {count(result.levels.length, 'level')}.
-          </>
-        )
-      }
-    >
+    <Half side="evidence" title={head.title} note={head.note}>
       <div className="controls">
         {props.document.rateConstants !== null && <BasisChoice />}
-        <Choice
-          label="Method"
-          options={result.profiles.map((one) => ({ id: one.method, text: shortMethodNames[one.method], name: wholeMethodName(one) }))}
-          value={chosen}
-          onChange={(chosenMethod) => view.setState({ chosenMethod })}
-        />
-        <MethodsOnRequest {...props} />
-        <Choice
-          label="Evidence"
-          options={[
-            { id: 'fit', text: minimising ? 'Φ(Ea)' : 'Straight lines' },
-            { id: 'budget', text: 'Where the uncertainty comes from' },
-          ]}
-          value={evidence}
-          onChange={(next) => view.setState({ evidence: next })}
-        />
+        {evidence === 'peaks' ? <PeakChoice {...props} peaks={peaks} /> : <MethodChoice {...props} />}
+        <EvidenceChoice {...props} evidence={evidence} />
       </div>
-      <Scope {...props} />
-      {evidence === 'budget' ? (
-        <Budget {...props} />
-      ) : (
-        <>
-          {minimising ? <Phi {...props} /> : <Lines {...props} />}
-          <RunLegend {...props} />
-        </>
-      )}
-      {sources.length > 0 && <p className="source">{sources.join('; ')}</p>}
+      {evidence !== 'peaks' && <Scope {...props} />}
+      {evidence === 'budget' && <Budget {...props} />}
+      {evidence === 'fit' && <Fit {...props} />}
+      {evidence === 'peaks' && peaks !== null && <PeakEvidence result={result} peaks={peaks} actions={actions} />}
+      {head.sources.length > 0 && <p className="source">{head.sources.join('; ')}</p>}
     </Half>
+  )
+}
+
+/** What stands above the evidence, and where it is published. */
+interface Head {
+  readonly title: string
+  readonly note: ReactNode
+  readonly sources: readonly string[]
+}
+
+function headOf({ result, chosen, level, shown }: ActivationProps, evidence: Evidence, peaks: PeakMethodResult | null): Head {
+  const { profile, interval } = shown
+  const sources = [...profile.sources, ...(interval?.sources ?? [])]
+  if (evidence === 'peaks' && peaks !== null) {
+    const note = (
+      <>
+        {peaks.label}: {peakReadings[peaks.method]}. {count(result.runs.length, 'run')}.
+      </>
+    )
+    return { title: 'Straight line through the peaks', note, sources: peaks.sources }
+  }
+  if (evidence === 'budget') {
+    const note = <>{profile.label}: the standard uncertainty of Ea that each source brings alone; bars as long as its square.</>
+    return { title: `Where the uncertainty comes from at α\u00a0${formatLevel(level)}`, note, sources }
+  }
+  const note = (
+    <>
+      {profile.label}: {readingOf(chosen)}. {count(result.runs.length, 'run')}, {count(result.levels.length, 'level')}.
+    </>
+  )
+  return { title: isMinimising(shown) ? `Φ(Ea) at α ${formatLevel(level)}` : 'Straight lines at each conversion', note, sources }
+}
+
+const isMinimising = ({ profile }: ActivationProps['shown']): boolean => profile.evidence === 'minimum'
+
+function MethodChoice(props: ActivationProps) {
+  const { view } = useServices()
+  return (
+    <>
+      <Choice
+        label="Method"
+        options={props.result.profiles.map((one) => ({ id: one.method, text: shortMethodNames[one.method], name: wholeMethodName(one) }))}
+        value={props.chosen}
+        onChange={(chosenMethod) => view.setState({ chosenMethod })}
+      />
+      <MethodsOnRequest {...props} />
+    </>
+  )
+}
+
+/** Methods that have a line through the peaks; single-run methods are picked in the table. */
+function PeakChoice({ result, peaks }: ActivationProps & { readonly peaks: PeakMethodResult | null }) {
+  const { view } = useServices()
+  const lined = result.peakMethods.filter((one) => one.line !== null)
+  const isLined = peaks !== null && lined.includes(peaks)
+  return (
+    <Choice
+      label="Peak method"
+      options={lined.map((one) => ({ id: peakKey(one), text: one.label }))}
+      value={isLined ? peakKey(peaks) : null}
+      onChange={(peakRow) => view.setState({ peakRow })}
+    />
+  )
+}
+
+/** With the line through the peaks goes their table at the right. */
+function EvidenceChoice({ result, shown, evidence }: ActivationProps & { readonly evidence: Evidence }) {
+  const { view } = useServices()
+  const options: readonly ChoiceOption<Evidence>[] = [
+    { id: 'fit', text: isMinimising(shown) ? 'Φ(Ea)' : 'Straight lines' },
+    { id: 'budget', text: 'Where the uncertainty comes from' },
+    ...(result.peakMethods.length === 0 ? [] : [{ id: 'peaks', text: 'Line through the peaks' } as const]),
+  ]
+  return (
+    <Choice
+      label="Evidence"
+      options={options}
+      value={evidence}
+      onChange={(next) => view.setState(({ beneath }) => ({ evidence: next, beneath: next === 'peaks' ? 'peaks' : beneath }))}
+    />
+  )
+}
+
+function Fit(props: ActivationProps) {
+  const { result, chosen, levelIndex, shown } = props
+  const quantity = levelQuantity(result)
+  return (
+    <>
+      {isMinimising(shown) ? <Phi {...props} /> : <Lines {...props} />}
+      <RunLegend result={result}>
+        {(run) => (
+          <>
+            <span className="run-legend-stand">{standText(formatAtLevel(run, levelIndex, quantity), quantity)}</span>
+            {chosen === 'isothermal-integral' && <span className="run-legend-stand">{holdText(run)}</span>}
+          </>
+        )}
+      </RunLegend>
+    </>
   )
 }
 
@@ -137,27 +207,6 @@ function Phi({ result, chosen, shown, levelIndex, actions }: ActivationProps) {
     [result, chosen, levelIndex, kind, interval],
   )
   return <FigureChart figure={figure} overlay={noMarks} colours={colours} onCopied={actions.pictureCopied} />
-}
-
-/** Each run with the temperature at which it reaches the level: the numbers behind the points. */
-function RunLegend({ result, levelIndex, chosen }: ActivationProps) {
-  const colours = useColours()
-  const names = runNames(result.runs)
-  const tones = runTones(result)
-  const quantity = levelQuantity(result)
-  return (
-    <ul className="run-legend" aria-label="Runs">
-      {result.runs.map((run, i) => (
-        <li key={run.runId}>
-          <RunMarker index={i} colour={colours.run(tones[i]?.place ?? 0)} />
-          <span>
-            {names[i]} <span className="run-legend-stand">{standText(formatAtLevel(run, levelIndex, quantity), quantity)}</span>
-            {chosen === 'isothermal-integral' && <span className="run-legend-stand">{holdText(run)}</span>}
-          </span>
-        </li>
-      ))}
-    </ul>
-  )
 }
 
 /** Where the time of a hold is counted from, and what was lost by then: what the isothermal integral rests on. */

@@ -1,33 +1,30 @@
-import { useState, type KeyboardEvent } from 'react'
 import type { PeakMethodResult, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
 import { NumberCell } from '../../sheet/DataTable.tsx'
-import { levelAfterKey } from '../../sheet/level-rail-keys.ts'
+import { rowKeys } from '../../sheet/row-keys.ts'
 import { TableView } from '../../sheet/TableView.tsx'
-import { ownNumbers, peakColumns, peakCopyColumns, peakKey, peakName, peakNote } from './peak-rows.ts'
+import { useServices, useView } from '../../state/services.ts'
+import { ownNumbers, peakColumns, peakCopyColumns, peakKey, peakName, peakNote, pickedPeaks } from './peak-rows.ts'
 
-/** What the rate peaks, and single runs, say: one row a method, and of the row picked out what to know before relying on it. Up and down, or a click, pick a row. */
+/** What the rate peaks, and single runs, say: one row a method, and of the row picked out what to know before relying on it. Up and down, or a click, pick a row, and its line stands at the left. */
 export function Peaks({ methods, signal }: { readonly methods: readonly PeakMethodResult[]; readonly signal: StudyResult['signal'] }) {
-  const [wanted, setWanted] = useState<string | null>(null)
-  const found = methods.findIndex((one) => peakKey(one) === wanted)
-  const index = found < 0 ? 0 : found
-  const current = methods[index]
-  const onKeyDown = (event: KeyboardEvent): void => {
-    const key = { ArrowDown: 'ArrowRight', ArrowUp: 'ArrowLeft', Home: 'Home', End: 'End' }[event.key]
-    const target = key === undefined || event.ctrlKey || event.metaKey ? null : levelAfterKey(key, index, methods.length)
-    const row = target === null ? undefined : methods[target]
-    if (row === undefined) return
-    event.preventDefault()
-    setWanted(peakKey(row))
+  const { view } = useServices()
+  const current = pickedPeaks(
+    methods,
+    useView((state) => state.peakRow),
+  )
+  const pick = (row: PeakMethodResult | undefined): void => {
+    if (row !== undefined) view.setState({ peakRow: peakKey(row), evidence: 'peaks' })
   }
-  if (current === undefined) return <p className="missing">There is no peak of the reaction rate to read anything from.</p>
+  if (current === null) return <p className="missing">There is no peak of the reaction rate to read anything from.</p>
+  const index = methods.indexOf(current)
   return (
     <>
       <TableView
         label="Table of peak and single-run methods"
         copied={() => copyText(peakCopyColumns(), methods)}
         currentRow={index}
-        onKeyDown={onKeyDown}
+        onKeyDown={rowKeys(index, methods.length, (row) => pick(methods[row]))}
       >
         <table className="data-table level-table peak-table">
           <caption className="visually-hidden">
@@ -56,7 +53,7 @@ export function Peaks({ methods, signal }: { readonly methods: readonly PeakMeth
           <tbody>
             {methods.map((row, i) => (
               // oxlint-disable-next-line jsx-a11y/click-events-have-key-events, jsx-a11y/no-noninteractive-element-interactions -- the table's own keys do the same
-              <tr key={peakKey(row)} aria-current={i === index ? 'true' : undefined} onClick={() => setWanted(peakKey(row))}>
+              <tr key={peakKey(row)} aria-current={i === index ? 'true' : undefined} onClick={() => pick(row)}>
                 <th scope="row">{peakName(row)}</th>
                 {row.applies &&
                   peakColumns.map((column) => <NumberCell key={column.id} text={column.text(row)} remark={column.remark?.(row) ?? null} />)}

@@ -1,5 +1,5 @@
 import { Fragment, type ReactNode } from 'react'
-import type { MethodId } from '../../../shared-kinetics/contract/study-result.ts'
+import type { MethodId, PeakMethodResult } from '../../../shared-kinetics/contract/study-result.ts'
 
 /** How Ea is read from each method's evidence, in one line. */
 const readings: Readonly<Record<MethodId, string>> = {
@@ -15,6 +15,18 @@ const readings: Readonly<Record<MethodId, string>> = {
   tang: 'ln(β/T^1.894661) against 1000/T; the slope is −1.00145 Ea/R',
   'astm-e1641': 'log β against 1000/T; the slope is −b Ea/R, b refined by Doyle’s table',
   'iso-11358-2': 'log β against 1000/T; the slope is −0.4567 Ea/R',
+}
+
+/** How Ea is read from the peaks of the reaction rate, or from a single run. */
+export const peakReadings: Readonly<Record<PeakMethodResult['method'], string>> = {
+  kissinger: 'ln(β/Tp²) against 1000/Tp; the slope is −Ea/R',
+  'astm-e698': 'log β against 1000/Tp; the slope is −D Ea/(2.303 R), D refined at Ea/(RT)',
+  'astm-e2890': 'ln(β/Tp²) against 1000/Tp; the slope is −Ea/R',
+  'ozawa-peak': 'ln β against 1000/Tp; the slope is −1.052 Ea/R',
+  'ozawa-peak-corrected': 'ln β against 1000/Tp; the slope is −h Ea/R, h that of −ln p at Ea/(RT)',
+  'augis-bennett': 'ln(β/(Tp − T0)) against 1000/Tp, T0 where the heating began; the slope is −Ea/R',
+  'augis-bennett-without-start': 'ln(β/Tp) against 1000/Tp; the slope is −Ea/R',
+  'borchardt-daniels': 'ln(dα/dt) of one run against 1/T and ln(1 − α) together',
 }
 
 export type ReportBasis = Extract<MethodId, 'astm-e1641' | 'iso-11358-2'>

@@ -9,6 +9,10 @@ export const peakName = ({ label, runLabel }: PeakMethodResult): string => (runL
 
 export const peakKey = ({ method, runId }: PeakMethodResult): string => `${method} ${runId ?? ''}`
 
+/** The row picked out; the first where that one is gone. */
+export const pickedPeaks = (methods: readonly PeakMethodResult[], key: string | null): PeakMethodResult | null =>
+  methods.find((one) => peakKey(one) === key) ?? methods[0] ?? null
+
 /** Numbers of a row's method as the table shows them; the unit stands in the head. */
 export const peakColumns: readonly DataColumn<PeakMethodResult>[] = [
   {
