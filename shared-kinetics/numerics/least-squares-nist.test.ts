@@ -26,17 +26,30 @@ type Model = (b: Float64Array, x: number) => number
 const parameter = (b: Float64Array, k: number): number => b[k - 1] ?? Number.NaN
 const saturating: Model = (b, x) => parameter(b, 1) * (1 - Math.exp(-parameter(b, 2) * x))
 const rational: Model = (b, x) => (parameter(b, 1) * (x * x + x * parameter(b, 2))) / (x * x + x * parameter(b, 3) + parameter(b, 4))
-const sets: readonly { readonly name: string; readonly set: CertifiedSet; readonly model: Model; readonly digits: number }[] = [
-  { name: 'Misra1a', set: misra1a, model: saturating, digits: 8 },
-  { name: 'DanWood', set: danwood, model: (b, x) => parameter(b, 1) * x ** parameter(b, 2), digits: 8 },
-  { name: 'BoxBOD', set: boxbod, model: saturating, digits: 8 },
-  { name: 'MGH09', set: mgh09, model: rational, digits: 8 },
-  { name: 'MGH10', set: mgh10, model: (b, x) => parameter(b, 1) * Math.exp(parameter(b, 2) / (x + parameter(b, 3))), digits: 8 },
+const sets: readonly {
+  readonly name: string
+  readonly set: CertifiedSet
+  readonly model: Model
+  readonly digits: number
+  readonly digitsOfDeviations?: number
+}[] = [
+  { name: 'Misra1a', set: misra1a, model: saturating, digits: 9.5 },
+  { name: 'DanWood', set: danwood, model: (b, x) => parameter(b, 1) * x ** parameter(b, 2), digits: 9.5 },
+  { name: 'BoxBOD', set: boxbod, model: saturating, digits: 9.5 },
+  { name: 'MGH09', set: mgh09, model: rational, digits: 9.5 },
+  {
+    name: 'MGH10',
+    set: mgh10,
+    model: (b, x) => parameter(b, 1) * Math.exp(parameter(b, 2) / (x + parameter(b, 3))),
+    digits: 9.5,
+    // Its three columns are nearly dependent, which costs the covariance two digits.
+    digitsOfDeviations: 8,
+  },
   {
     name: 'Eckerle4',
     set: eckerle4,
     model: (b, x) => (parameter(b, 1) / parameter(b, 2)) * Math.exp(-0.5 * ((x - parameter(b, 3)) / parameter(b, 2)) ** 2),
-    digits: 8,
+    digits: 9.5,
   },
   {
     name: 'Thurber',
@@ -44,7 +57,7 @@ const sets: readonly { readonly name: string; readonly set: CertifiedSet; readon
     model: (b, x) =>
       (parameter(b, 1) + x * (parameter(b, 2) + x * (parameter(b, 3) + x * parameter(b, 4)))) /
       (1 + x * (parameter(b, 5) + x * (parameter(b, 6) + x * parameter(b, 7)))),
-    digits: 7,
+    digits: 9.5,
   },
 ]
 
@@ -75,19 +88,23 @@ const digitsOf = (values: ArrayLike<number>, certified: readonly string[]): numb
 
 const cases = sets.flatMap((entry) => [0, 1].flatMap((start) => (['plain', 'log'] as const).map((scale) => ({ ...entry, start, scale }))))
 
+// Certified to eleven digits.
 describe('least squares on the nonlinear NIST data sets', () => {
-  it.each(cases)('arrives at $name from start $start with $scale parameters', ({ set, model, digits, start, scale }) => {
-    const result = fit(set, model, set.starts[start] ?? [], scale)
-    const { certified } = set
-    expect(result.status).toBe('converged')
-    expect(result.dof).toBe(certified.dof)
-    expect(digitsOf(result.parameters, certified.parameters)).toBeGreaterThan(digits)
-    expect(digitsOf(result.standardDeviations, certified.standardDeviations)).toBeGreaterThan(6)
-    expect(digitsOf([result.residualSumOfSquares], [certified.residualSumOfSquares])).toBeGreaterThan(10)
-    // Not kept for every set: it follows from the sum of squares.
-    const s = certified.residualStandardDeviation ?? String(Math.sqrt(Number(certified.residualSumOfSquares) / certified.dof))
-    expect(digitsOf([result.residualStandardDeviation], [s])).toBeGreaterThan(10)
-  })
+  it.each(cases)(
+    'arrives at $name from start $start with $scale parameters',
+    ({ set, model, digits, digitsOfDeviations = 9.5, start, scale }) => {
+      const result = fit(set, model, set.starts[start] ?? [], scale)
+      const { certified } = set
+      expect(result.status).toBe('converged')
+      expect(result.dof).toBe(certified.dof)
+      expect(digitsOf(result.parameters, certified.parameters)).toBeGreaterThan(digits)
+      expect(digitsOf(result.standardDeviations, certified.standardDeviations)).toBeGreaterThan(digitsOfDeviations)
+      expect(digitsOf([result.residualSumOfSquares], [certified.residualSumOfSquares])).toBeGreaterThan(10)
+      // Not kept for every set: it follows from the sum of squares.
+      const s = certified.residualStandardDeviation ?? String(Math.sqrt(Number(certified.residualSumOfSquares) / certified.dof))
+      expect(digitsOf([result.residualStandardDeviation], [s])).toBeGreaterThan(10)
+    },
+  )
 
   it('does not call the valley of MGH09 that falls to 1.02734e-3 at infinity a minimum', () => {
     // The certified set's known trap: b2 tends to -14.07 while b1, b3 and b4 run away together.

@@ -81,6 +81,8 @@ describe('the mean kinetic temperature', () => {
   it('hardly depends on which gas constant the convention was made with', () => {
     // USP <1160>: 83.144 kJ/mol and 8.3144 J/(mol K), or 83.14472 and 8.314472, are both 10,000 K; with the gas constant of 2019, 9999.9247 K.
     expect(conventionalEnergy / R).toBe(10_000)
+    expect(83_144 / 8.3144).toBeCloseTo(10_000, 10)
+    expect(83_144.72 / 8.314472).toBeCloseTo(10_000, 10)
     expect(inHalfUnits(83_144 / R, '9999.9247')).toBeLessThanOrEqual(1)
     for (const { celsius } of kinetic.rows) {
       const T = celsius.map(celsiusToKelvin)

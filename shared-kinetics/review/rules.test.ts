@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import twoSteps from '../check-values/computed/two-independent-steps.json'
 import { profileOf, reviewedRun, reviewInput } from '../check-values/review-input-of.ts'
 import { KineticsError } from '../errors.ts'
 import { sources } from '../sources.ts'
@@ -86,6 +87,12 @@ describe('heating-rate-differs-from-nominal', () => {
     expect(finding?.evidence).toMatchObject({ measured_K_per_min: 10.42, nominal_K_per_min: 10 })
     expect(finding?.message).toContain('4.2 % faster')
     expect(ratesDiffer(9.6, 10)).toHaveLength(1)
+  })
+
+  it('names both rates of open data whose file says 50 K/min and whose T(t) says 73.9', () => {
+    const [finding] = ratesDiffer(73.9, 50)
+    expect(finding).toMatchObject({ severity: 'caution', title: expect.stringMatching(/heated at 73\.9 K\/min, nominal 50$/) as unknown })
+    expect(finding?.message).toContain('48 % faster')
   })
 
   it('is silent at 3 %', () => {
@@ -305,6 +312,26 @@ describe('energy-varies', () => {
     expect(shown(energySpread(89.9, 110.1))).toEqual(['caution energy-varies'])
     expect(energySpread(85, 115)[0]?.evidence).toMatchObject({ method: 'vyazovkin', spread_kJ_per_mol: 30 })
     expect(energySpread(85, 115)[0]?.title).toBe('Ea varies by 30 % of its mean')
+  })
+
+  it('sees Ea of two independent steps, computed to 20 digits, spread by 29 % of its mean', () => {
+    const table = twoSteps.levels.map((row) => Number(row.friedman))
+    const change = { levels: twoSteps.levels.map(({ level }) => level), profiles: [profileOf('friedman', table, 0.01)] }
+    const [finding] = energyVaries(reviewInput({ result: change }))
+    expect(finding?.title).toBe('Ea varies by 29 % of its mean')
+    expect(finding?.evidence['spread_kJ_per_mol']).toBeCloseTo(117.557 - 87.63089, 9)
+  })
+
+  // Tables of Ea at 0.05 to 0.95 as printed in J. Chem. 2022, art. 3514358, table 3; means and spreads recomputed.
+  it.each([
+    ['KAS', [268, 297, 290, 281, 279, 286, 274, 264, 254, 250, 245, 233, 229, 222, 215, 214, 218, 223, 233], 251.316, '33 %'],
+    ['Friedman', [296, 324, 292, 265, 284, 273, 248, 239, 219, 197, 209, 214, 199, 201, 188, 219, 225, 230, 249], 240.579, '57 %'],
+  ] as const)('says of a published table of Ea by %s that it is not of one step', (_, table, mean, share) => {
+    const change = { levels: table.map((_unused, i) => (i + 1) / 20), profiles: [profileOf('friedman', table, 1)] }
+    const [finding] = energyVaries(reviewInput({ result: change }))
+    expect(finding?.severity).toBe('caution')
+    expect(finding?.title).toBe(`Ea varies by ${share} of its mean`)
+    expect(finding?.evidence['mean_kJ_per_mol']).toBeCloseTo(mean, 3)
   })
 
   it('looks at Vyazovkin before Friedman, and says nothing without a profile', () => {
