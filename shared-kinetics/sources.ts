@@ -87,6 +87,10 @@ export const sources = {
   'anderson-1965': 'D. G. Anderson, J. Assoc. Comput. Mach. 12 (1965) 547 (mixing of successive iterates; cited from memory)',
   'bates-watts-1981':
     'D. M. Bates, D. G. Watts, Technometrics 23 (1981) 179 (relative offset as a criterion of convergence; cited from memory)',
+  'wald-wolfowitz-1940': 'A. Wald, J. Wolfowitz, Ann. Math. Stat. 11 (1940) 147 (runs of signs; cited from memory)',
+  'swed-eisenhart-1943': 'F. S. Swed, C. Eisenhart, Ann. Math. Stat. 14 (1943) 66 (runs of signs, exact; cited from memory)',
+  'bates-watts-1988':
+    'D. M. Bates, D. G. Watts, Nonlinear Regression Analysis and Its Applications (1988), ch. 2 and 3 (covariance by linearisation; errors after a transformation; cited from memory)',
   'golub-van-loan-1996': 'G. H. Golub, C. F. Van Loan, Matrix Computations (3rd ed., 1996), ch. 5 (QR; cited from memory)',
   'dennis-schnabel-1983':
     'J. E. Dennis, R. B. Schnabel, Numerical Methods for Unconstrained Optimization (1983), ch. 5 (derivatives by differences; cited from memory)',

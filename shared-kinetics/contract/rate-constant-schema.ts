@@ -25,6 +25,54 @@ const positive = finite.check(z.positive())
 // Colder or hotter than any reaction is measured; and a temperature that was meant in another unit.
 const temperature_K = positive.check(z.lte(10_000))
 
+const share = finite.check(z.gte(0), z.lte(1))
+const maybe = z.nullable(finite)
+
+const holdFitsSchema = z.object({
+  model: text,
+  method: z.literal('least-squares-of-conversion'),
+  zeroInTime: z.enum(['free', 'fixed']),
+  range: z.tuple([share, share]),
+  holds: z
+    .array(
+      z.object({
+        label: text,
+        temperature_K,
+        rateConstant_per_s: positive,
+        standardError_per_s: maybe,
+        zero_s: finite,
+        zeroStandardError_s: maybe,
+        linearisedRateConstant_per_s: positive,
+        linearisedR2: maybe,
+        residualStandardDeviation: maybe,
+        greatestResidual: finite,
+        rows: z.int(),
+        dof: z.int(),
+        signRuns: z.int(),
+        signRunsProbability: maybe,
+        isSystematic: z.boolean(),
+      }),
+    )
+    .check(z.maxLength(rateConstantLimits.rows)),
+  dof: z.int(),
+  varianceRatioLimit: maybe,
+  models: z
+    .array(
+      z.object({
+        model: text,
+        label: text,
+        status: z.enum(['ok', 'not-converged', 'model-does-not-apply']),
+        residualSumOfSquares: maybe,
+        residualStandardDeviation: maybe,
+        varianceRatio: maybe,
+        fits: z.boolean(),
+        Ea_kJ_per_mol: maybe,
+        lnA_per_s: maybe,
+      }),
+    )
+    .check(z.maxLength(100)),
+})
+
 export const rateConstantTableSchema = z.object({
   rows: z
     .array(
@@ -51,6 +99,8 @@ export const rateConstantTableSchema = z.object({
       }),
     )
     .check(z.maxLength(rateConstantLimits.notes)),
+  /** Only in tables made from isothermal runs, and not in those saved before models were compared. */
+  holdFits: z.optional(holdFitsSchema),
 })
 
 /** What a person says about a table of rate constants; whatever is left out must stand in the table, and is asked for where it does not. */
@@ -89,8 +139,6 @@ const modelSchema = z.enum(
     L2: true,
   }),
 )
-
-const share = finite.check(z.gte(0), z.lte(1))
 
 /** How rate constants are made from the isothermal runs of a study: the model, whether the zero in time is fitted (so where left out), the range of conversion (0.1 to 0.9). */
 export const fromHoldsSchema = z.strictObject({

@@ -24,6 +24,7 @@ export type {
 } from '../tasks/study-result.ts'
 export type { IntervalKind, IntervalStatus } from '../isoconversional/result.ts'
 export type { UncertaintySettings, UncertaintySource } from '../uncertainty/measured-sources.ts'
+export type { FitOfHold, FitOfModel, FitsOfHolds } from '../rate-constants/fits-of-holds.ts'
 export type { RateConstantNote, RateConstantRow, RateConstantTable, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 export type {
   ArrheniusResult,

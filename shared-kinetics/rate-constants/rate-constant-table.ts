@@ -1,3 +1,5 @@
+import type { FitsOfHolds } from './fits-of-holds.ts'
+
 /** One row of a table of rate constants, in SI but for k, whose unit is that of the table. */
 export interface RateConstantRow {
   readonly temperature_K: number
@@ -33,4 +35,6 @@ export interface RateConstantTable {
   /** `name` of the file, or of what the rows were made from. */
   readonly source: { readonly kind: RateConstantSource; readonly name: string | null; readonly sha256: string | null }
   readonly notes: readonly RateConstantNote[]
+  /** Where the table was made from isothermal runs: how the model follows them, and what other models leave. */
+  readonly holdFits?: FitsOfHolds | undefined
 }

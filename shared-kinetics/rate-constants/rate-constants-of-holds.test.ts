@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { rateConstantTableSchema } from '../contract/rate-constant-schema.ts'
 import { reactionModels } from '../reaction-models/registry.ts'
 import { quantity } from '../units/quantity.ts'
 import { arrheniusLine } from './arrhenius-line.ts'
@@ -50,6 +51,10 @@ describe('rate constants of isothermal runs', () => {
     expect(table.rows.map((row) => row.label)).toEqual(['hold 390', 'hold 400', 'hold 410', 'hold 420'])
     expect(table.notes.map((note) => note.code)).toEqual(['model-assumed', 'rows-set-aside'])
     expect(table.notes[0]?.evidence).toMatchObject({ model: 'F1', convertedBeforeHold: 0.01 })
+    expect(table.notes[0]?.message).toMatch(/nonlinear least squares/)
+    expect(table.holdFits).toMatchObject({ model: 'F1', method: 'least-squares-of-conversion', zeroInTime: 'free', range: [0.1, 0.9] })
+    expect(table.holdFits?.holds.map((hold) => hold.label)).toEqual(['hold 390', 'hold 400', 'hold 410', 'hold 420'])
+    expect(rateConstantTableSchema.parse(JSON.parse(JSON.stringify(table)))).toEqual(table)
     expect(table.notes[1]?.message).toMatch(/backward/)
     expect(rateConstantsOfHolds([], reactionModels.F1, { zeroInTime: 'free', range: [0.1, 0.9] }).rows).toEqual([])
   })
@@ -63,7 +68,7 @@ describe('rate constants of isothermal runs', () => {
     expect(free?.evidence['greatestZero_s']).toBeCloseTo(300, 6)
     expect(noteOf(holds, 'fixed')?.evidence).toMatchObject({ leastZero_s: 0, greatestZero_s: 0 })
     // A note holds at most 1000 characters.
-    const many = Array.from({ length: 40 }, (_, i) => ({
+    const many = Array.from({ length: 12 }, (_, i) => ({
       ...(shifted[1] as HoldAtLevels),
       label: `a run with a very long name, number ${i}`,
     }))

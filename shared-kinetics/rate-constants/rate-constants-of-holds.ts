@@ -1,42 +1,29 @@
 import type { ReactionModel } from '../reaction-models/model.ts'
-import { quantity } from '../units/quantity.ts'
-import { rateConstantFromHold, type HoldOptions, type RateConstantFromHold } from './rate-constant-from-hold.ts'
+import { fitsOfHolds, readHold, type HoldAtLevels, type ReadHold } from './fits-of-holds.ts'
+import type { HoldOptions } from './hold-rows.ts'
+import type { RateConstantFromHold } from './rate-constant-from-hold.ts'
 import type { RateConstantNote, RateConstantTable } from './rate-constant-table.ts'
 
-/** An isothermal run read at levels of conversion; NaN where a level was not reached. */
-export interface HoldAtLevels {
-  readonly label: string
-  readonly temperature_K: number
-  /** Time from the start of the hold. */
-  readonly time_s: ArrayLike<number>
-  readonly conversion: ArrayLike<number>
-  /** Conversion lost before the hold began; NaN where it is not known. */
-  readonly conversionBeforeHold: number
-}
+export type { HoldAtLevels }
 
 const whyNot: Readonly<Record<Exclude<RateConstantFromHold['status'], 'ok'>, string>> = {
   'too-few-rows': 'too few levels of conversion lie in the range',
   'time-not-distinct': 'its levels are all reached at one time',
   'not-positive': 'g does not rise with time',
+  'not-converged': 'the fit of its conversion found no minimum',
+  'model-does-not-apply': 'the model has no zero in time of its own; let it be fitted',
 }
 
 /**
- * The rate constants of isothermal runs under one chosen model, as a table of k in 1/s: `rateConstantFromHold` of each, at its levels. The model, the range and the
- * straightness of g against t are said in a note, and so are runs that gave no k. No uncertainty of k is entered: neighbouring levels of one run are not
- * independent, and the standard error of their line would pretend to be one.
+ * The rate constants of isothermal runs under one chosen model, as a table of k in 1/s: `rateConstantFromHold` of each, at its levels, by nonlinear least squares of
+ * conversion. The model, the range and how the fits came out are said in a note, and so are runs that gave no k; `holdFits` holds the fits and the ranking of models.
+ * No uncertainty of k is entered: neighbouring levels of one run are not independent, and the standard error of their fit would pretend to be one.
  *
  * @throws KineticsError `bad-option` where the range is not inside [0, 1] or empty
  * @source ictac-2011
  */
 export function rateConstantsOfHolds(holds: readonly HoldAtLevels[], model: ReactionModel, options: HoldOptions): RateConstantTable {
-  const read = holds.map((hold) => ({
-    hold,
-    k: rateConstantFromHold(
-      { temperature: quantity(hold.temperature_K, 'K'), time_s: hold.time_s, conversion: hold.conversion },
-      model.g,
-      options,
-    ),
-  }))
+  const read = holds.map((hold) => readHold(hold, model, options))
   const usable = read.filter(({ k }) => k.status === 'ok')
   return {
     rows: usable.map(({ hold, k }) => ({
@@ -51,30 +38,31 @@ export function rateConstantsOfHolds(holds: readonly HoldAtLevels[], model: Reac
     predictAt_K: [],
     source: { kind: 'isothermal-runs', name: `${model.label} (${model.code})`, sha256: null },
     notes: [...modelNote(usable, model, options), ...leftOutNote(read)],
+    ...(usable.length === 0 ? {} : { holdFits: fitsOfHolds(usable, model, options) }),
   }
-}
-
-interface ReadHold {
-  readonly hold: HoldAtLevels
-  readonly k: RateConstantFromHold
 }
 
 function modelNote(usable: readonly ReadHold[], model: ReactionModel, { zeroInTime, range }: HoldOptions): readonly RateConstantNote[] {
   if (usable.length === 0) return []
-  const worst = Math.min(...usable.map(({ k }) => k.r2))
+  const worst = Math.min(...usable.map(({ k }) => k.linearised.r2))
   const before = Math.max(0, ...usable.map(({ hold }) => (Number.isNaN(hold.conversionBeforeHold) ? 0 : hold.conversionBeforeHold)))
   const zeros_s = usable.map(({ k }) => k.zero_s as number)
   const zero = zeroInTime === 'fixed' ? 'zero in time at the start of the hold' : `zero in time fitted (${zerosText(usable)})`
+  const scatter = Math.max(0, ...usable.map(({ k }) => (Number.isNaN(k.residualStandardDeviation) ? 0 : k.residualStandardDeviation)))
+  const fromLine = Math.max(...usable.map(({ k }) => Math.abs(k.linearised.rateConstant_per_s / k.rateConstant - 1)))
   return [
     {
       code: 'model-assumed',
       severity: 'note',
       message:
-        `k rests on a chosen model, ${model.label} (${model.code}), g = ${model.equations.g} = k t, over conversion ${range[0]} to ${range[1]}, ${zero}; least r² of g against t ` +
-        `${Number(worst.toPrecision(5))}, at most ${Number((100 * before).toPrecision(2))} % converted before a hold began. Ea hardly depends on the model, A does; a straight g does not show that the model is right.`,
+        `k rests on a chosen model, ${model.label} (${model.code}), g = ${model.equations.g} = k t, over conversion ${range[0]} to ${range[1]}, ${zero}. Conversion itself was fitted against time (nonlinear least squares; ` +
+        `standard deviation at most ${short(scatter)}); the line of g gives k within ${short(100 * fromLine)} %. At most ${short(100 * before)} % converted before a hold began. ` +
+        'Ea hardly depends on the model, A does; a good fit does not show that the model is right.',
       evidence: {
         model: model.code,
         leastR2: worst,
+        greatestResidualStandardDeviation: scatter,
+        greatestDifferenceFromLine: fromLine,
         convertedBeforeHold: before,
         runs: usable.length,
         leastZero_s: Math.min(...zeros_s),
@@ -84,7 +72,9 @@ function modelNote(usable: readonly ReadHold[], model: ReactionModel, { zeroInTi
   ]
 }
 
-/** Where the line of each run meets g = 0, from the start of its hold: before it where the run reacted on the way up, behind it after an induction time. */
+const short = (value: number): string => (value < 1e-5 ? '0' : String(Number(value.toPrecision(2))))
+
+/** Where the reaction of each run begins, from the start of its hold: before it where the run reacted on the way up, behind it after an induction time. */
 function zerosText(usable: readonly ReadHold[]): string {
   const most = 10
   const each = usable.slice(0, most).map(({ hold: { label }, k }) => {

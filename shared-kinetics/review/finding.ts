@@ -49,6 +49,8 @@ export const findingCodes = [
   'rate-unit-missing',
   'heading-read-as',
   'model-assumed',
+  'model-fits-badly',
+  'other-models-fit-better',
 ] as const
 export type FindingCode = (typeof findingCodes)[number]
 

@@ -2,6 +2,7 @@ import { arrheniusLine, arrheniusLineSources, type ArrheniusLine, type Weighting
 import { betweenTemperatures } from '../rate-constants/between-temperatures.ts'
 import { exponentialFactor } from '../rate-constants/exponential-factor.ts'
 import { eyringLine, eyringLineSources, type Estimate } from '../rate-constants/eyring-line.ts'
+import { expOrNone } from '../rate-constants/exp-or-none.ts'
 import { factorPer10K } from '../rate-constants/factor-per-10-k.ts'
 import { lineCurvature } from '../rate-constants/line-curvature.ts'
 import { predictRateConstant } from '../rate-constants/predict-rate-constant.ts'
@@ -61,6 +62,7 @@ export function evaluateRateConstants(table: RateConstantTable): RateConstantsRe
       curvature.status === 'tested'
         ? { t: curvature.t, threshold: curvature.threshold, dof: curvature.dof, isCurved: curvature.isCurved }
         : null,
+    holdFits: table.source.kind === 'isothermal-runs' ? (table.holdFits ?? null) : null,
   }
   return { ...result, findings: reviewRateConstants({ table, result }) }
 }
@@ -84,7 +86,6 @@ function rowResult(row: RateConstantRow, line: ArrheniusLine): RateConstantsResu
 }
 
 function lineResult(line: ArrheniusLine, weighting: Weighting, unit: RateUnit | null): ArrheniusResult {
-  const A = Math.exp(line.lnA)
   return {
     weighting,
     status: line.status,
@@ -99,7 +100,9 @@ function lineResult(line: ArrheniusLine, weighting: Weighting, unit: RateUnit | 
     lnAStandardError: maybe(line.lnAStandardError),
     lnALower95: maybe(line.lnALower95),
     lnAUpper95: maybe(line.lnAUpper95),
-    A: A > 0 ? maybe(A) : null,
+    A: maybe(expOrNone(line.lnA)),
+    ALower95: maybe(expOrNone(line.lnALower95)),
+    AUpper95: maybe(expOrNone(line.lnAUpper95)),
     lnA_per_s: unit?.isPerTimeOnly === true ? maybe(line.lnA + Math.log(unit.perSecond)) : null,
     covarianceEaLnA_kJ_per_mol: maybe(joulesToKilojoules(line.covarianceEaLnA)),
     slope_K: Number.isNaN(line.Ea) ? null : maybe(line.fit.slope),

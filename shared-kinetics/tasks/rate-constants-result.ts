@@ -1,4 +1,5 @@
 import type { ArrheniusStatus, Weighting } from '../rate-constants/arrhenius-line.ts'
+import type { FitsOfHolds } from '../rate-constants/fits-of-holds.ts'
 import type { RateConstantSource, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 import type { Finding } from '../review/finding.ts'
 import type { Maybe } from './study-result.ts'
@@ -29,6 +30,9 @@ export interface ArrheniusResult {
   readonly lnAUpper95: Maybe
   /** null where ln A leaves double precision. */
   readonly A: Maybe
+  /** exp of the ends of ln A, so that they lie unequally far from A; null without an interval, or where they leave double precision. */
+  readonly ALower95: Maybe
+  readonly AUpper95: Maybe
   /** ln of A in 1/s; null where k is not per time only, or its unit was not stated. */
   readonly lnA_per_s: Maybe
   readonly covarianceEaLnA_kJ_per_mol: Maybe
@@ -141,5 +145,7 @@ export interface RateConstantsResult {
   readonly band: RateConstantBand
   /** t test of a quadratic term in 1/T; null where it cannot be tested. */
   readonly curvature: { readonly t: number; readonly threshold: number; readonly dof: number; readonly isCurved: boolean } | null
+  /** Where the table was made from isothermal runs: the fit of each hold under the chosen model, and the models ranked; else null. */
+  readonly holdFits: FitsOfHolds | null
   readonly findings: readonly Finding[]
 }
