@@ -1,9 +1,11 @@
 import { Cancelled } from '../../shared-kinetics/errors.ts'
 import type { MethodId } from '../../shared-kinetics/isoconversional/result.ts'
-import { drawPlan, noteOnFewerDraws } from '../../shared-kinetics/tasks/draw-uncertainty.ts'
+import { drawPlan, drawsToBeginWith, noteOnFewerDraws, type DrawOrder } from '../../shared-kinetics/tasks/draw-uncertainty.ts'
 import type { IntervalResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { drawInSlices } from './draw-slices.ts'
 import type { EventHub } from './event-hub.ts'
 import type { TaskPool } from './host-tasks.ts'
+import { inLanes } from './in-lanes.ts'
 import type { Workspace } from './workspace.ts'
 
 /** The intervals of the open study that take longer than an evaluation: worked out once a revision, shared by all who ask. */
@@ -15,12 +17,13 @@ export interface Uncertainty {
   cancel(): void
 }
 
-/** Slices at work at once. */
-const atOnce = 2
-/** A tenth of a second or so of a common study: imports, saves and evaluations are served between two slices. */
-const drawsInSlice = 100
-
-export function createUncertainty(workspace: Workspace, pool: TaskPool, events: EventHub): Uncertainty {
+/** @param clock - in ms */
+export function createUncertainty(
+  workspace: Workspace,
+  pool: TaskPool,
+  events: EventHub,
+  clock: () => number = () => performance.now(),
+): Uncertainty {
   let current: { readonly revision: number; readonly result: Promise<UncertaintyResult>; readonly stop: AbortController } | null = null
 
   const estimate = async (signal: AbortSignal): Promise<UncertaintyResult> => {
@@ -43,17 +46,33 @@ export function createUncertainty(workspace: Workspace, pool: TaskPool, events: 
     const { draws: asked, seed } = uncertainty
     const { draws, orders } = drawPlan(order, asked)
     const intervals = new Map<MethodId, IntervalResult>()
+    const intervalOf = async (alone: DrawOrder, shares: readonly (readonly Float64Array[])[]): Promise<void> => {
+      for (const [method, interval] of await pool.run('intervals-of-draws', { order: alone, shares, seed }, { signal }))
+        intervals.set(method, { ...interval, note: interval.note + noteOnFewerDraws(draws, asked) })
+    }
     const all = draws * orders.length
     for (const [before, some] of orders.entries()) {
-      const shares = await drawInSlices(
+      const shares = await drawInSlices({
         draws,
-        async (from, to, progress) => pool.run('draw-energies', { ...some, range: { seed, from, to } }, { signal, progress }),
-        (done) => {
+        first: drawsToBeginWith(some),
+        clock,
+        draw: async (from, to, progress) => pool.run('draw-energies', { ...some, range: { seed, from, to } }, { signal, progress }),
+        report: (done) => {
           report(all + before * draws + done, 2 * all, 'measured sources')
         },
-      )
-      for (const [method, interval] of await pool.run('intervals-of-draws', { order: some, shares, seed }, { signal }))
-        intervals.set(method, { ...interval, note: interval.note + noteOnFewerDraws(draws, asked) })
+      })
+      const orderOfEach = some.models.map((model) => ({ ...some, models: [model] }))
+      let next = 0
+      await inLanes(() => {
+        const m = next++
+        const alone = orderOfEach[m]
+        return alone === undefined
+          ? null
+          : intervalOf(
+              alone,
+              shares.map((share) => share.slice(m, m + 1)),
+            )
+      })
     }
     const profiles = result.profiles.map((profile) => {
       const interval = intervals.get(profile.method)
@@ -90,36 +109,4 @@ export function createUncertainty(workspace: Workspace, pool: TaskPool, events: 
     },
     cancel,
   }
-}
-
-/** The draws of all slices, in order. The next slice goes to the pool only when one is done, behind whatever else has come to wait there. */
-async function drawInSlices<Slice>(
-  draws: number,
-  draw: (from: number, to: number, progress: (done: number) => void) => Promise<Slice>,
-  report: (done: number) => void,
-): Promise<Slice[]> {
-  const slices: Slice[] = []
-  const drawn: number[] = []
-  let next = 0
-  let failed = false
-  const drawOn = async (): Promise<void> => {
-    while (!failed && next * drawsInSlice < draws) {
-      const slice = next++
-      const from = slice * drawsInSlice
-      const to = Math.min(draws, from + drawsInSlice)
-      const tell = (done: number): void => {
-        drawn[slice] = done
-        report(drawn.reduce((sum, some) => sum + some, 0))
-      }
-      try {
-        slices[slice] = await draw(from, to, tell)
-      } catch (error) {
-        failed = true
-        throw error
-      }
-      tell(to - from)
-    }
-  }
-  await Promise.all(Array.from({ length: atOnce }, drawOn))
-  return slices
 }

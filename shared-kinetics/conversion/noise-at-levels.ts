@@ -31,6 +31,7 @@ export interface NoiseAtLevels {
  * that which means of many rows have, times their number (`spreadNoise`); a smoothed value is no worse than a single row.
  *
  * @param stretches - `sought`: holds that noise decides which stretches tangents are laid through, too (`stretchNoise`), which takes some 20 ms
+ * @throws Cancelled, by `checkCancelled`
  * @source cleveland-1979
  */
 export function noiseAtLevels(
@@ -38,6 +39,7 @@ export function noiseAtLevels(
   levels: ArrayLike<number>,
   read: LevelsRead,
   stretches: 'held' | 'sought' = 'held',
+  checkCancelled: () => void = () => undefined,
 ): NoiseAtLevels {
   const { time_s, smoothing, noise, measured } = curve
   const n = levels.length
@@ -66,8 +68,9 @@ export function noiseAtLevels(
       : ofArea * area.covariance(from, to)
   }
   const rateAt = (time: number): number => valueAt(time_s, curve.reactionRate_per_s, Math.min(end, Math.max(start, time)))
-  const factors = stretches === 'sought' && !isExtent ? stretchNoise(curve, read.time_s, perRow) : null
+  const factors = stretches === 'sought' && !isExtent ? stretchNoise(curve, read.time_s, perRow, checkCancelled) : null
   for (let i = 0; i < n; i++) {
+    checkCancelled()
     const factor = factors?.[i] ?? 1
     const at = read.time_s[i] ?? Number.NaN
     const rate = read.reactionRate_per_s[i] ?? Number.NaN

@@ -21,8 +21,14 @@ const madToStandardDeviation = 1.482602218505602
  *
  * @param perRow - variance of the noise of a row, as means of many rows have it
  * @returns one factor a time, not below 1
+ * @throws Cancelled, by `checkCancelled`
  */
-export function stretchNoise(curve: ConversionCurve, times_s: ArrayLike<number>, perRow: number): Float64Array {
+export function stretchNoise(
+  curve: ConversionCurve,
+  times_s: ArrayLike<number>,
+  perRow: number,
+  checkCancelled: () => void = () => undefined,
+): Float64Array {
   const { drawn } = curve
   const factors = new Float64Array(times_s.length).fill(1)
   const [before, after] = drawn?.lines ?? []
@@ -56,6 +62,7 @@ export function stretchNoise(curve: ConversionCurve, times_s: ArrayLike<number>,
   const free: number[][] = []
   const held: number[][] = []
   for (let k = 0; k < repetitions; k++) {
+    checkCancelled()
     const random = randomStream(1, k)
     const error = clean.map(() => noise * random.normal())
     const noisy = clean.map((value, i) => value + (error[i] as number))
@@ -63,6 +70,7 @@ export function stretchNoise(curve: ConversionCurve, times_s: ArrayLike<number>,
     held.push(conversionShifts(error, tangents(time, noisy, cleanEnds), cleanLines))
   }
   for (let i = 0; i < factors.length; i++) {
+    checkCancelled()
     const ratio = spread(free, i) / spread(held, i)
     factors[i] = ratio > 1 ? ratio : 1
   }

@@ -17,20 +17,38 @@ export interface DrawOrder {
 export const drawShare = ({ models, sources, range }: DrawOrder & { readonly range: DrawRange }, context: TaskContext): Float64Array[] =>
   drawEnergies(models, sources, range, context)
 
-/** Drawn energies that are held at once, over draws, levels and methods: 160 MB, and as much again while they are put together. */
+/** Drawn energies that are held at once, over draws, levels and methods: 160 MB. */
 export const mostValuesAtOnce = 2e7
 
-/** How draws are made without holding more than `mostValuesAtOnce` energies: so many methods after each other, which does not change a number, and fewer draws only where one method alone is too much. */
+/**
+ * How draws are made without holding more than `mostValuesAtOnce` energies, and without a single draw that takes long: methods after each other, which does not change a number, and
+ * fewer draws only where one method alone is too much to hold.
+ */
 export function drawPlan({ models, sources }: DrawOrder, draws: number): { readonly draws: number; readonly orders: readonly DrawOrder[] } {
   const levels = Math.max(1, models[0]?.levels ?? 1)
   const taken = Math.max(1, Math.min(draws, Math.floor(mostValuesAtOnce / levels)))
   const methodsAtOnce = Math.max(1, Math.floor(mostValuesAtOnce / (levels * taken)))
-  const orders = Array.from({ length: Math.ceil(models.length / methodsAtOnce) }, (_, i) => ({
-    models: models.slice(i * methodsAtOnce, (i + 1) * methodsAtOnce),
-    sources,
-  }))
-  return { draws: taken, orders }
+  const together: EnergyModel[][] = []
+  for (const model of models) {
+    const group = together.at(-1)
+    if (group === undefined || group.length === methodsAtOnce || workOfAll([...group, model]) > workInSlice) together.push([model])
+    else group.push(model)
+  }
+  return { draws: taken, orders: together.map((group) => ({ models: group, sources })) }
 }
+
+/**
+ * Draws that take some 40 ms in a thread that has never drawn, for the first slices of a plan: one where even that takes longer. Counted are the runs at each level of each method; where
+ * a method's integrals follow measured histories, each costs about ten times as much.
+ */
+export function drawsToBeginWith({ models }: DrawOrder): number {
+  return Math.max(1, Math.floor(workInSlice / Math.max(1, workOfAll(models))))
+}
+
+const workInSlice = 160_000
+
+const workOfAll = (models: readonly EnergyModel[]): number =>
+  models.reduce((sum, { levels, runs, form }) => sum + levels * runs * (form.kind === 'integral' && form.table !== null ? 10 : 1), 0)
 
 /** Said beside an interval that rests on fewer draws than were asked for; else empty. */
 export const noteOnFewerDraws = (taken: number, asked: number): string =>
@@ -48,18 +66,13 @@ export function intervalsOfDraws(
   return new Map(
     models.map((model, m) => {
       const parts = shares.map((share) => share[m] ?? new Float64Array(0))
-      const all = new Float64Array(parts.reduce((sum, part) => sum + part.length, 0))
-      let place = 0
-      for (const part of parts) {
-        all.set(part, place)
-        place += part.length
-      }
       const { levels } = model
-      const note = noteOnDraws(sources, all.length / levels, seed)
+      const draws = parts.reduce((sum, part) => sum + part.length, 0) / levels
+      const note = noteOnDraws(sources, draws, seed)
       const missing = (level: number): IntervalStatus => (isKnown(sources, model, level) ? 'draws-without-energy' : 'source-unknown')
       return [
         model.method,
-        intervalResult('measured-sources', drawInterval(all, levels, context.checkCancelled), note, model.Ea, missing, givenOf(sources)),
+        intervalResult('measured-sources', drawInterval(parts, levels, context.checkCancelled), note, model.Ea, missing, givenOf(sources)),
       ]
     }),
   )

@@ -1,9 +1,10 @@
 import type { IsoconversionalResult, TaskContext } from '../isoconversional/result.ts'
 import type { RunColumns } from '../series/run.ts'
-import { addedToScatter, budgetOf, signedBudgetOf, type Budget } from '../uncertainty/budget.ts'
+import { addedToScatter, signedBudgetOf, withoutSigns, type Budget } from '../uncertainty/budget.ts'
 import { combinedInterval } from '../uncertainty/combined-interval.ts'
 import { energyModel, type EnergyModel } from '../uncertainty/energy-model.ts'
 import type { MeasuredSources, UncertaintySettings } from '../uncertainty/measured-sources.ts'
+import { onSharedMemory } from '../uncertainty/shared-memory.ts'
 import { budgetEntries, givenOf, noteOnCombined } from './budget-entries.ts'
 import type { DrawOrder } from './draw-uncertainty.ts'
 import { intervalResult } from './interval-result.ts'
@@ -15,7 +16,7 @@ import { seriesOfStudy } from './series-of-study.ts'
 import type { StudyInput } from './study-input.ts'
 import type { BudgetEntry, IntervalResult, UncertaintyProfile, UncertaintyResult } from './study-result.ts'
 
-/** What resampling and propagation say, and what the draws of measured sources are to be made from (`drawShare`, `intervalsOfDraws`). */
+/** What resampling and propagation say, and what the draws of measured sources are to be made from (`drawShare`, `intervalsOfDraws`), on memory that threads share. */
 export interface UncertaintyEstimate {
   readonly result: UncertaintyResult
   readonly order: DrawOrder
@@ -48,16 +49,17 @@ export function estimateUncertainty(
     const resampled = intervalsByResampling(series, result, resampling, context)
     if (result.Ea.every(Number.isNaN)) return { method: info.id, intervals: resampled, budget: [], mean: null }
     const model = energyModel(series, result, context)
-    models.push(model)
     context.checkCancelled()
-    const budget = budgetOf(model, sources)
+    models.push(onSharedMemory(model))
+    const signed = signedBudgetOf(model, sources, context.checkCancelled)
+    const budget = withoutSigns(signed)
     const entries = budgetEntries(budget, sources)
     const intervals = [...resampled, ...(result.interval.dof > 0 ? [combined(result, budget, sources, entries)] : [])]
-    const mean = combinedMeanResult(result, study.settings, signedBudgetOf(model, sources), addedToScatter(sources), entries)
+    const mean = combinedMeanResult(result, study.settings, signed, addedToScatter(sources), entries)
     return { method: info.id, intervals, budget: entries, mean }
   })
   context.progress(chosen.length, chosen.length)
-  return { result: { levels: study.settings.levels, seed, draws, profiles }, order: { models, sources } }
+  return { result: { levels: study.settings.levels, seed, draws, profiles }, order: { models, sources: onSharedMemory(sources) } }
 }
 
 const combined = (

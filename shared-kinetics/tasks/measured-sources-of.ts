@@ -33,7 +33,7 @@ export function measuredSourcesOf(
   }
   runs.forEach((run, i) => {
     context.checkCancelled()
-    const at = noiseAtLevels(run.converted.converted.curve, settings.levels, run.levels, 'sought')
+    const at = noiseAtLevels(run.converted.converted.curve, settings.levels, run.levels, 'sought', context.checkCancelled)
     for (let level = 0; level < levels; level++) {
       const k = level * runs.length + i
       noise.time_s[k] = at.time_s[level] ?? Number.NaN

@@ -39,15 +39,27 @@ export const addedToScatter = ({ baseline }: Pick<MeasuredSources, 'baseline'>):
  *
  * @source jcgm-100-2008 5.1, 5.2
  */
-export function budgetOf(model: EnergyModel, sources: MeasuredSources): Budget {
-  const budget = signedBudgetOf(model, sources)
-  for (const column of Object.values(budget))
-    for (let level = 0; level < column.length; level++) column[level] = Math.abs(column[level] as number)
-  return budget
+export const budgetOf = (model: EnergyModel, sources: MeasuredSources): Budget => withoutSigns(signedBudgetOf(model, sources))
+
+/** The budget that belongs to a signed one. */
+export function withoutSigns(signed: Budget): Budget {
+  const of = (source: UncertaintySource): Column<'J/mol'> => column(signed[source].map(Math.abs), 'J/mol')
+  return {
+    'temperature-common': of('temperature-common'),
+    'temperature-run': of('temperature-run'),
+    'temperature-lag': of('temperature-lag'),
+    'heating-rate': of('heating-rate'),
+    'signal-noise': of('signal-noise'),
+    baseline: of('baseline'),
+  }
 }
 
-/** The same, but what moves all runs together with the sign of its effect on Ea: that is what is added up over levels, where the effect on a mean is asked for. */
-export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Budget {
+/**
+ * The same, but what moves all runs together with the sign of its effect on Ea: that is what is added up over levels, where the effect on a mean is asked for.
+ *
+ * @throws Cancelled, by `checkCancelled`
+ */
+export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources, checkCancelled: () => void = () => undefined): Budget {
   const { levels, runs } = model
   const empty = (): Column<'J/mol'> => column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
   const budget = {
@@ -63,6 +75,7 @@ export function signedBudgetOf(model: EnergyModel, sources: MeasuredSources): Bu
   const otherBaseline =
     baseline === null ? null : { ...baseline, temperature_K: new Float64Array(runs), lnHeatingRate: new Float64Array(runs), lag_s: 0 }
   for (let level = 0; level < levels; level++) {
+    checkCancelled()
     if (Number.isNaN(model.Ea[level] ?? Number.NaN)) continue
     let common = 0
     let ofRuns = 0

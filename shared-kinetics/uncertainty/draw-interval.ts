@@ -15,23 +15,25 @@ const leastShare = 0.99
  * Standard deviation, and the quantiles 0.025 and 0.975, of the draws at each level; NaN where there is none. The quantile p of M draws stands at place p(M + 1) of them,
  * in ascending order and between two by the straight line, so that one more draw would lie between the two with probability 0.95, however many there are (from 39 on).
  *
- * @param energies - [draw · levels + level], in J/mol
+ * @param shares - of the draws: each [draw · levels + level], in J/mol
  * @throws Cancelled, by `checkCancelled`
  * @source jcgm-101-2008 7.7 (probabilistically symmetric interval)
  */
-export function drawInterval(energies: Float64Array, levels: number, checkCancelled: () => void = () => undefined): DrawInterval {
-  const draws = energies.length / levels
+export function drawInterval(shares: readonly Float64Array[], levels: number, checkCancelled: () => void = () => undefined): DrawInterval {
+  const draws = shares.reduce((sum, share) => sum + share.length, 0) / levels
   const out = { u: new Float64Array(levels), lower: new Float64Array(levels), upper: new Float64Array(levels) }
   const values = new Float64Array(draws)
   for (let level = 0; level < levels; level++) {
     checkCancelled()
     let count = 0
     let mean = 0
-    for (let draw = 0; draw < draws; draw++) {
-      const Ea = energies[draw * levels + level] as number
-      if (Number.isNaN(Ea)) continue
-      values[count++] = Ea
-      mean += (Ea - mean) / count
+    for (const share of shares) {
+      for (let k = level; k < share.length; k += levels) {
+        const Ea = share[k] as number
+        if (Number.isNaN(Ea)) continue
+        values[count++] = Ea
+        mean += (Ea - mean) / count
+      }
     }
     const sorted = values.subarray(0, count).sort()
     const enough = count > 1 && count >= leastShare * draws

@@ -129,7 +129,7 @@ describe.each(onRamps)('errors of the measurement carried into Ea by %s', (metho
     const model = modelOf(method)
     const budget = budgetOf(model, alone[source])
     const [energies] = drawEnergies([model], alone[source], { seed: 3, from: 0, to: 3000 }, quiet)
-    const { standardUncertainty } = drawInterval(energies ?? new Float64Array(0), levels.length)
+    const { standardUncertainty } = drawInterval([energies ?? new Float64Array(0)], levels.length)
     levels.forEach((_, level) => {
       const told = budget[source][level] ?? Number.NaN
       const drawn = standardUncertainty[level] ?? Number.NaN
@@ -182,7 +182,7 @@ describe('a stated heating rate that time was rebuilt from', () => {
       })
     }
     const [energies] = drawEnergies([model], alone['heating-rate'], { seed: 3, from: 0, to: 3000 }, quiet)
-    const { standardUncertainty } = drawInterval(energies ?? new Float64Array(0), levels.length)
+    const { standardUncertainty } = drawInterval([energies ?? new Float64Array(0)], levels.length)
     const told = budgetOf(model, alone['heating-rate'])['heating-rate']
     levels.forEach((_, level) => expect((standardUncertainty[level] ?? Number.NaN) / (told[level] ?? Number.NaN)).toBeCloseTo(1, 1))
   })
@@ -254,31 +254,28 @@ describe('draws', () => {
     }
     const [energies] = drawEnergies([model], quietSources, { seed: 1, from: 0, to: 10 }, quiet)
     for (const Ea of energies ?? []) expect(Ea).toBeNaN()
-    expect(drawInterval(energies ?? new Float64Array(0), 4).lower95[0]).toBeNaN()
+    expect(drawInterval([energies ?? new Float64Array(0)], 4).lower95[0]).toBeNaN()
   })
 
   it('have quantiles between which one more draw lies with probability 0.95, however few they are', () => {
     const random = randomStream(13)
     const sets = 4000
     const inside = Array.from({ length: sets }, () => {
-      const { lower95, upper95 } = drawInterval(Float64Array.from({ length: 59 }, random.normal), 1)
+      const { lower95, upper95 } = drawInterval([Float64Array.from({ length: 59 }, random.normal)], 1)
       const another = random.normal()
       return (lower95[0] ?? 0) <= another && another <= (upper95[0] ?? 0)
     }).filter(Boolean).length
     // Four standard errors of a share of 4000.
     expect(Math.abs(inside / sets - 0.95)).toBeLessThan(0.014)
     // At places 1 and 39 of 39: the first and the last.
-    const { lower95, upper95 } = drawInterval(
-      Float64Array.from({ length: 39 }, (_, i) => 39 - i),
-      1,
-    )
+    const { lower95, upper95 } = drawInterval([Float64Array.from({ length: 39 }, (_, i) => 39 - i)], 1)
     expect([lower95[0], upper95[0]]).toEqual([1, 39])
   })
 
   it('have the quantiles of the normal distribution where they are normal', () => {
     const random = randomStream(9)
     const normals = Float64Array.from({ length: 40_000 }, () => 100 + 3 * random.normal())
-    const { standardUncertainty, lower95, upper95 } = drawInterval(normals, 1)
+    const { standardUncertainty, lower95, upper95 } = drawInterval([normals], 1)
     expect(standardUncertainty[0]).toBeCloseTo(3, 1)
     // Φ⁻¹(0.975) = 1.959964 (Abramowitz & Stegun 1964, table 26.1).
     expect(lower95[0]).toBeCloseTo(100 - 3 * 1.959964, 0)

@@ -3,6 +3,7 @@ import { randomStream } from '../numerics/random.ts'
 import { disturbedEnergy, roomFor, type Disturbance } from './disturbed-energy.ts'
 import type { EnergyModel } from './energy-model.ts'
 import type { MeasuredSources } from './measured-sources.ts'
+import { sharedZeros } from './shared-memory.ts'
 
 /** Which draws of which seed; work is shared out by ranges of draws. */
 export interface DrawRange {
@@ -16,12 +17,12 @@ export interface DrawRange {
 /** Draws between two reports of progress: a few milliseconds with a hundred levels. */
 const drawsBetweenReports = 10
 
-/** With thousands of levels one method of one draw takes tens of milliseconds. */
-const levelsBetweenLooks = 200
+/** Of hundreds of runs whose lowest minimum is sought anew, a level takes some milliseconds. */
+const levelsBetweenLooks = 8
 
 /**
  * Ea of every model at every level for draws of the errors that `sources` describes: one array a model, in J/mol, [(draw - from) · levels + level]; NaN where the level
- * has no Ea, or a draw has no minimum.
+ * has no Ea, or a draw has no minimum. They lie on memory that threads share.
  *
  * All errors are normal with the standard uncertainties given, but the choice of baseline, which moves every run between one baseline and the mirror image of the other,
  * evenly; where no other can be drawn under some run, no draw holds the choice. Every draw has a random stream of its own, so that the numbers are the same however the draws are shared out.
@@ -39,7 +40,7 @@ export function drawEnergies(
   const [first] = models
   if (first === undefined) return []
   const { runs, levels } = first
-  const energies = models.map(() => new Float64Array((to - from) * levels))
+  const energies = models.map(() => sharedZeros((to - from) * levels))
   const disturbance: Disturbance = {
     temperature_K: new Float64Array(runs),
     lnHeatingRate: new Float64Array(runs),
@@ -51,7 +52,7 @@ export function drawEnergies(
   for (let draw = from; draw < to; draw++) {
     context.checkCancelled()
     if ((draw - from) % drawsBetweenReports === 0) context.progress(draw - from, to - from)
-    disturb(disturbance, sources, runs, levels, seed, draw)
+    disturb(disturbance, sources, runs, levels, seed, draw, context.checkCancelled)
     models.forEach((model, m) => {
       const values = energies[m] as Float64Array
       for (let level = 0; level < levels; level++) {
@@ -70,6 +71,7 @@ function disturb(
   levels: number,
   seed: number,
   draw: number,
+  checkCancelled: () => void,
 ): void {
   const random = randomStream(seed, draw)
   const common = stated.temperatureCommon_K * random.normal()
@@ -80,6 +82,7 @@ function disturb(
     disturbance.lnHeatingRate[i] = (heatingRate_share[i] as number) * random.normal()
   }
   for (let i = 0; i < runs; i++) {
+    checkCancelled()
     let before = 0
     for (let level = 0; level < levels; level++) {
       const k = level * runs + i

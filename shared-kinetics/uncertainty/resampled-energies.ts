@@ -36,15 +36,12 @@ export function resampledEnergies(series: SeriesAtLevels, result: Isoconversiona
   return (times) => {
     const Ea = new Float64Array(energies.length)
     energies.forEach((energyAt, level) => {
-      if (level % levelsBetweenLooks === 0) context.checkCancelled()
+      context.checkCancelled()
       Ea[level] = energyAt(times)
     })
     return Ea
   }
 }
-
-/** Some milliseconds of a minimising method. */
-const levelsBetweenLooks = 100
 
 type EnergyAtLevel = (times: ArrayLike<number>) => number
 

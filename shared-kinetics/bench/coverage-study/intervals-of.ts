@@ -54,7 +54,7 @@ export const sourceIntervals: IntervalMaker = ({ series, results, sources, seedO
   const models = results.map((result) => energyModel(series, result))
   const draws = drawEnergies(models, sources, { seed: seedOfDraws, from: 0, to: drawsPerReplicate }, quiet)
   return results.map((result, m) => ({
-    'measured-sources': ends(drawInterval(draws[m] ?? new Float64Array(0), levels.length)),
+    'measured-sources': ends(drawInterval(draws.slice(m, m + 1), levels.length)),
     combined: ends(combinedInterval(result, budgetOf(energyModelAt(models, m), sources))),
   }))
 }
