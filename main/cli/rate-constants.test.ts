@@ -149,13 +149,13 @@ describe('rampfold rate-constants', () => {
   })
 
   it('isothermal runs under a chosen model become rate constants', async () => {
-    // Exact first-order holds: alpha = 1 - exp(-k t), Ea 100 kJ/mol, A 1e11 1/s.
+    // Exact first-order holds to their end: alpha = 1 - exp(-k t), Ea 100 kJ/mol, A 1e11 1/s.
     const folder = join(place, 'holds')
     await mkdir(folder)
     for (const T of [370, 380, 390, 400]) {
       const k = 1e11 * Math.exp(-100e3 / (8.31446261815324 * T))
-      const rows = Array.from({ length: 400 }, (_, i) => {
-        const t = (i * 6) / k / 400
+      const rows = Array.from({ length: 1600 }, (_, i) => {
+        const t = (i * 16) / k / 1600
         return `${t.toPrecision(12)},${T.toFixed(2)},${(10 * (1 - 0.5 * (1 - Math.exp(-k * t)))).toFixed(9)}`
       })
       await writeFile(join(folder, `hold ${T} K.csv`), `time (s),temperature (K),mass (mg)\n${rows.join('\n')}\n`)
@@ -173,6 +173,23 @@ describe('rampfold rate-constants', () => {
     expect((json.line['Ea_kJ_per_mol'] ?? 0) / 100).toBeCloseTo(1, 3)
     expect(json.line['lnA_per_s'] ?? 0).toBeCloseTo(Math.log(1e11), 1)
     expect(JSON.stringify(json['findings'])).toMatch(/model-assumed/)
+    expect(JSON.stringify(json['findings'])).not.toMatch(/model-fits-badly|other-models-fit-better/)
+    expect(json['holdFits']).toMatchObject({
+      model: 'F1',
+      method: 'least-squares-of-conversion',
+      models: { 0: { model: 'F1', fits: true } },
+    })
+    const wrong = await rampfold('rate-constants', folder, '--model', 'R2', '--out', out)
+    expect(wrong.stdout).toMatch(/caution: R2 does not follow 4 of 4 holds/)
+    expect(wrong.stdout).toMatch(/caution: F1 fits the holds better than R2/)
+    expect(wrong.stdout).toMatch(/systematic residuals: hold 370 K, hold 380 K, hold 390 K, hold 400 K/)
+    expect(wrong.stdout).toMatch(/by reaction model: F1 .*R2 0\.\d+.*; R2 is number \d+ of 21\n/)
+    expect(wrong.stdout).toMatch(/models that fit the holds .*: F1\n/)
+    const beside = await readFile(join(out, 'rate-constants.csv.txt'), 'utf8')
+    expect(beside).toMatch(/hold 370 K, 96\.85 °C: k .* runs of signs, chance .*: systematic/)
+    expect(beside).toMatch(/ 1\. F1 \(First order\): sum of squares .*, fits; Ea (?:99\.9|100\.0)\d kJ\/mol/)
+    expect(beside).toMatch(/R2 \(Contracting cylinder\), chosen: /)
+    expect(beside).toMatch(/caution, model-fits-badly: .*hold 370 K/)
     const noHolds = join(place, 'no-holds.csv')
     await writeFile(
       noHolds,

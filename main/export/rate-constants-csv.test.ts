@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import type { RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { evaluateRateConstants } from '../../shared-kinetics/tasks/evaluate-rate-constants.ts'
 import { rateConstantsCsv } from './rate-constants-csv.ts'
-import { rateConstantLines } from './rate-constants-lines.ts'
+import { rateConstantLines, rateConstantsShortTable } from './rate-constants-lines.ts'
 
 // F. Daniels, E. H. Johnston, J. Am. Chem. Soc. 43 (1921) 53: N2O5, three of their rate constants.
 const table: RateConstantTable = {
@@ -35,6 +35,36 @@ describe('the exported table of rate constants', () => {
     expect(rateConstantLines(result).find((line) => line.startsWith('ln k at 10 K'))).toMatch(
       /k is beyond the range of numbers \(line .* to .*\); 288 K below the data/,
     )
+  })
+
+  it('gives A with the interval of ln A carried over, unequal to both sides', () => {
+    const { line } = result
+    const [row] = rowsOf('A')
+    expect(Number(cell(row, 'lower 95 %')) / Math.exp(line.lnALower95 ?? Number.NaN)).toBeCloseTo(1, 5)
+    expect(Number(cell(row, 'upper 95 %')) / Math.exp(line.lnAUpper95 ?? Number.NaN)).toBeCloseTo(1, 5)
+    const [A, lower, upper] = [line.A ?? 0, line.ALower95 ?? 0, line.AUpper95 ?? 0]
+    expect((A / lower) * (A / upper)).toBeCloseTo(1, 9)
+    expect(upper - A).toBeGreaterThan(A - lower)
+    expect(rateConstantLines(result).find((text) => text.startsWith('ln A:'))).toMatch(/, A \d.*e\d+ 1\/s \(.* to .*\)$/)
+  })
+
+  it('lists Ea between neighbouring temperatures in lines too, all of them beside the table and the first on a terminal', () => {
+    const between = rateConstantLines(result).filter((line) => line.startsWith('Ea between'))
+    // R ln(1.35e-4/3.46e-5)/(1/298 - 1/308) and R ln(4.98e-4/1.35e-4)/(1/308 - 1/318), by hand.
+    expect(between[0]).toMatch(/^Ea between 298 K \(24\.85 °C\) and 308 K \(34\.85 °C\): 103\.\d\d kJ\/mol, ln A 31\.\d\d$/)
+    expect(between).toHaveLength(2)
+    const many = evaluateRateConstants({
+      ...table,
+      rows: Array.from({ length: 40 }, (_, i) => ({
+        ...(table.rows[0] as (typeof table.rows)[number]),
+        temperature_K: 300 + i,
+        rateConstant: Math.exp(i / 10),
+      })),
+    })
+    expect(rateConstantLines(many).filter((line) => line.startsWith('Ea between'))).toHaveLength(39)
+    const short = rateConstantsShortTable(many).split('\n')
+    expect(short.filter((line) => line.startsWith('Ea between'))).toHaveLength(12)
+    expect(short).toContain('and between 27 further pairs of neighbouring temperatures')
   })
 
   it('gives Ea between each two neighbouring temperatures', () => {

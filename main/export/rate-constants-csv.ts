@@ -109,17 +109,11 @@ function lineRows(line: ArrheniusResult, unit: string, which: string): readonly 
       quantity: `A${which}`,
       unit: inUnit,
       value: line.A,
-      lower: expOf(line.lnALower95),
-      upper: expOf(line.lnAUpper95),
+      lower: line.ALower95,
+      upper: line.AUpper95,
       intervalOf: parameter,
     },
   ]
-}
-
-/** null where it leaves double precision: 0 would be a value. */
-function expOf(value: number | null): number | null {
-  const power = value === null ? Number.NaN : Math.exp(value)
-  return power > 0 && Number.isFinite(power) ? power : null
 }
 
 const estimateRow = (quantity: string, unit: string, estimate: EstimateResult, temperature_K?: number): QuantityRow => ({

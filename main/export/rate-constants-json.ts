@@ -31,6 +31,7 @@ export function rateConstantsJson({ document, result, program }: RateConstantsSo
     factorsPer10K: result.factorsPer10K,
     predictions: result.predictions,
     curvature: result.curvature,
+    holdFits: result.holdFits,
     findings: result.findings.map(({ code, severity, title, message, evidence, basis, sources }) => ({
       code,
       severity,

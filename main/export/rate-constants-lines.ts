@@ -1,3 +1,4 @@
+import { holdFitsShort } from './hold-fits-lines.ts'
 import type {
   ArrheniusResult,
   EstimateResult,
@@ -7,8 +8,11 @@ import type {
 import type { TemperatureUnit } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 
+/** Pairs of neighbouring temperatures that a terminal shows; the text beside a table holds all. */
+const shortPairs = 12
+
 /** What follows from a table of rate constants, in a few lines for a terminal and for the text beside a table. */
-export function rateConstantLines(result: RateConstantsResult): readonly string[] {
+export function rateConstantLines(result: RateConstantsResult, mostPairs = Number.POSITIVE_INFINITY): readonly string[] {
   const { line, weightedLine, eyring, rateUnit } = result
   if (line.Ea_kJ_per_mol === null) return ['Ea: none']
   return [
@@ -22,6 +26,7 @@ export function rateConstantLines(result: RateConstantsResult): readonly string[
           ],
     ),
     ...(eyring === null ? [] : eyringLines(eyring, result.temperatureUnitShown)),
+    ...betweenLines(result, mostPairs),
     ...result.predictions.flatMap((row) => predictionLine(row, rateUnit, result.temperatureUnitShown)),
   ]
 }
@@ -30,18 +35,33 @@ export function rateConstantLines(result: RateConstantsResult): readonly string[
 export const rateConstantsShortTable = (result: RateConstantsResult): string =>
   [
     `${result.line.points} rate constants at ${result.line.distinctTemperatures} temperatures${result.rateUnit === '' ? '' : `, in ${result.rateUnit}`}; in brackets 95 % intervals (Student-t, each by itself)`,
-    ...rateConstantLines(result),
+    ...rateConstantLines(result, shortPairs),
+    ...holdFitsShort(result),
     '',
   ].join('\n')
 
 function arrheniusLines(line: ArrheniusResult, unit: string, which: string): readonly string[] {
   const { Ea_kJ_per_mol: Ea, lnA } = line
   if (Ea === null || lnA === null) return []
-  const A = line.A === null ? '' : `, A ${digits(line.A)}${unit === '' ? '' : ` ${unit}`}`
+  const A = line.A === null ? '' : `, A ${digits(line.A)}${unit === '' ? '' : ` ${unit}`}${range(line.ALower95, line.AUpper95, digits)}`
   return [
     `Ea${which}: ${fixed(Ea)} kJ/mol${error(line.standardError_kJ_per_mol, fixed)}${range(line.lower95_kJ_per_mol, line.upper95_kJ_per_mol, fixed)}`,
     `ln A${which}: ${fixed(lnA)}${error(line.lnAStandardError, fixed)}${range(line.lnALower95, line.lnAUpper95, fixed)}${A}`,
   ]
+}
+
+/** Two temperatures leave no interval. */
+function betweenLines({ betweenTemperatures: pairs, temperatureUnitShown: unit }: RateConstantsResult, most: number): readonly string[] {
+  const shown = pairs
+    .slice(0, most)
+    .flatMap(({ from_K, to_K, Ea_kJ_per_mol: Ea, lnA }) =>
+      Ea === null
+        ? []
+        : [
+            `Ea between ${temperature(from_K, unit)} and ${temperature(to_K, unit)}: ${fixed(Ea)} kJ/mol${lnA === null ? '' : `, ln A ${fixed(lnA)}`}`,
+          ],
+    )
+  return pairs.length > most ? [...shown, `and between ${pairs.length - most} further pairs of neighbouring temperatures`] : shown
 }
 
 const estimateLine = (name: string, estimate: EstimateResult, unit: string): string[] =>

@@ -1,5 +1,6 @@
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import { caution } from './caution.ts'
+import { holdLines, modelLines } from './hold-fits-lines.ts'
 import { runsBehind, type RateConstantsSource } from './rate-constants-json.ts'
 import { rateConstantLines } from './rate-constants-lines.ts'
 
@@ -10,6 +11,8 @@ export function rateConstantsNotes({ document, result, program }: RateConstantsS
   const sections: readonly (readonly [string, readonly string[]])[] = [
     ['Caution', [caution]],
     ['Found', rateConstantLines(result)],
+    ['Holds', holdLines(result)],
+    ['Reaction models', modelLines(result)],
     ['Intervals', intervalLines(result)],
     [
       'Table',

@@ -64,7 +64,7 @@ function closerModels(used: readonly FitOfHold[], { model, models, varianceRatio
       title: `${best?.model} fits the holds better than ${model}`,
       message:
         `${model} leaves a standard deviation of conversion of ${digits(chosen.residualStandardDeviation ?? Number.NaN)}, ${best?.model} ${digits(best?.residualStandardDeviation ?? Number.NaN)}` +
-        `${chosen.varianceRatio === null ? '' : `; the ratio of variances is ${digits(chosen.varianceRatio)}, above ${digits(limit)}`}. Within that limit: ${fitting
+        `${chosen.varianceRatio === null ? '' : `; the ratio of variances is ${ratio(chosen.varianceRatio)}, above ${digits(limit)}`}. Within that limit: ${fitting
           .slice(0, 10)
           .map((other) => other.model)
           .join(
@@ -84,3 +84,6 @@ function closerModels(used: readonly FitOfHold[], { model, models, varianceRatio
     }),
   ]
 }
+
+/** Where the closest model leaves next to nothing, the ratio has no end. */
+const ratio = (value: number): string => (value < 1e6 ? digits(value) : value.toExponential(0).replace('e+', 'e'))
