@@ -1,4 +1,5 @@
 import { demoSeries } from '../../main/demo/demo-series.ts'
+import { underConstantRate } from '../../shared-kinetics/check-values/exact-simulation.ts'
 import { writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import type { Sheet } from '../pages/sheet.ts'
@@ -108,6 +109,88 @@ test('three runs are too few for resampling, and the sheet says so', async ({ sh
   await sheet.goTo('Activation energy')
   await expect(page.getByText('Jackknife: needs 4 runs, here 3. Bootstrap: needs 4 distinct programmes, here 3.')).toBeVisible()
   await expect(sheet.option('Interval', 'Jackknife')).toBeDisabled()
+})
+
+/** A first-order mass loss heated at a constant rate, its thermometer off by so many kelvin. */
+function massLoss(rate_K_per_min: number, error_K: number): string {
+  const step = { Ea_J_per_mol: 60_000, A_per_s: 1e5, share: 1 }
+  const rows = Array.from({ length: 401 }, (_, i) => {
+    const { conversion } = underConstantRate([step], rate_K_per_min / 60, 300 + i)
+    return `${((60 * i) / rate_K_per_min).toFixed(2)},${(300 + i + error_K - 273.15).toFixed(2)},${(10 - 7 * conversion).toFixed(5)}`
+  })
+  return ['Time (s),Temperature (°C),Mass (mg)', ...rows, ''].join('\n')
+}
+
+test('an interval that reaches below 0 says so where it stands, is heard and is copied', async ({ sheet, page, folder }) => {
+  const paths = [2, 5, 10].map((rate) => join(folder, `loss ${rate} K per min.csv`))
+  for (const [i, path] of paths.entries()) writeFileSync(path, massLoss([2, 5, 10][i] ?? 0, i === 1 ? 25 : 0))
+  await sheet.chooseFiles(paths)
+  await sheet.settled()
+  await sheet.goTo('Activation energy')
+  const words = /reaches below 0, where no activation energy lies: these runs do not bound Ea from below/
+  await expect(page.getByRole('list', { name: 'Remarks on the interval' })).toHaveText(words)
+  await expect(sheet.currentRow.getByRole('cell').nth(1)).toHaveAttribute('title', words)
+  await expect(sheet.currentRow.getByRole('cell').nth(1)).toContainText(words)
+  await expect(sheet.rail).toHaveAttribute('aria-valuetext', words)
+  await expect(page.getByText(/^Interval of the mean: reaches below 0/)).toBeVisible()
+  await page.getByRole('button', { name: 'Copy table' }).click()
+  await expect.poll(() => page.evaluate(() => navigator.clipboard.readText())).toMatch(words)
+  await sheet.option('Evidence', 'Where the uncertainty comes from').click()
+  await expect(page.getByText(/^Student-t interval: reaches below 0/)).toBeVisible()
+  await sheet.option('Table', 'Peaks and single runs').click()
+  await expect(sheet.peakTable.getByRole('row', { name: /^Kissinger/ })).toContainText(words)
+})
+
+test('the value that was assumed, typed by a person, is stated from then on', async ({ sheet, page }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  await sheet.option('Evidence', 'Where the uncertainty comes from').click()
+  const common = sheet.budgetRow('Temperature, common to all runs')
+  await expect(common).toContainText('assumed: nobody has stated it')
+  const field = page.getByRole('textbox', { name: 'Stated: temperature, common to all runs' })
+  await expect(field).toHaveValue('0.5 K')
+  await field.focus()
+  await page.keyboard.press('Enter')
+  await expect(common).toContainText('assumed: nobody has stated it')
+  await page.keyboard.press('Control+A')
+  await page.keyboard.type('0.5 K')
+  await page.keyboard.press('Enter')
+  await expect(common).toContainText('as stated')
+  await expect(field).toHaveValue('0.5 K')
+  await expect(sheet.budgetRow('Temperature, run by run')).toContainText('assumed: nobody has stated it')
+  const out = await sheet.downloads(2, () => page.getByRole('button', { name: 'Export table (CSV)' }).click())
+  expect(out.get('activation.csv.txt')).toMatch(/common to all runs[^\n]*0\.5 K, as stated/i)
+  expect(out.get('activation.csv.txt')).toMatch(/0\.5 K in each run, assumed, nothing stated/)
+  await page.getByRole('button', { name: 'Undo: stated uncertainties' }).click()
+  await expect(common).toContainText('assumed: nobody has stated it')
+})
+
+test('the line through the peaks stands at the left while a peak method is looked at', async ({ sheet, page }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  await sheet.option('Table', 'Peaks and single runs').click()
+  await expect(sheet.chart('Straight line through the peaks')).toBeVisible()
+  const left = page.getByRole('region', { name: 'Straight line through the peaks' })
+  await expect(left).toContainText('Kissinger: ln(β/Tp²) against 1000/Tp; the slope is −Ea/R.')
+  const Ea =
+    (await sheet.peakTable
+      .getByRole('row', { name: /^Kissinger/ })
+      .getByRole('cell')
+      .first()
+      .textContent()) ?? ''
+  await expect(left).toContainText(new RegExp(`Ea ${Ea} ± [\\d.]+ kJ/mol \\(95 % Student-t, 3 degrees of freedom\\)`))
+  expect(await sheet.told('Straight line through the peaks')).toMatch(/2 K\/min: 1000\/Tp 1\.\d+ 1\/K, ln\(β\/Tp²\) −?-?12\.\d+/)
+
+  await sheet.option('Method', 'ASTM E698').click()
+  await expect(sheet.peakTable.getByRole('row', { name: /^ASTM E698/ })).toHaveAttribute('aria-current', 'true')
+  await expect(left).toContainText('ASTM E698: log β against 1000/Tp')
+  await sheet.peakTable.getByRole('row', { name: /^Augis–Bennett Does/ }).click()
+  await expect(left).toContainText('There is no line to draw.')
+
+  await sheet.option('Table', 'Every level').click()
+  await expect(sheet.chart('Straight lines at each conversion')).toBeVisible()
+  await sheet.option('Evidence', 'Peaks').click()
+  await expect(sheet.peakTable).toBeVisible()
 })
 
 test('peaks and single runs stand in a table of their own, with what to know before relying on them', async ({ sheet, page }) => {

@@ -26,21 +26,19 @@ export function TableView({
     const [space, frame] = [spaceRef.current, frameRef.current]
     const table = frame?.querySelector('table')
     if (space === null || frame === null || table === null || table === undefined) return
-    const observer = new ResizeObserver(() => showWholeRows(space, frame))
+    const settle = (): void => {
+      showWholeRows(space, frame)
+      showCurrentRow(frame)
+    }
+    const observer = new ResizeObserver(settle)
     observer.observe(space)
     observer.observe(table)
-    showWholeRows(space, frame)
+    settle()
     return () => observer.disconnect()
   }, [])
 
   useEffect(() => {
-    const { current: frame } = frameRef
-    const row = frame?.querySelector<HTMLElement>('tr[aria-current="true"]')
-    if (frame === null || row === null || row === undefined || currentRow === null) return
-    const head = frame.querySelector('thead')?.offsetHeight ?? 0
-    const [top, bottom] = [row.offsetTop - head, row.offsetTop + row.offsetHeight]
-    if (top < frame.scrollTop) frame.scrollTop = top - row.offsetHeight
-    else if (bottom > frame.scrollTop + frame.clientHeight) frame.scrollTop = bottom - frame.clientHeight + row.offsetHeight
+    if (frameRef.current !== null && currentRow !== null) showCurrentRow(frameRef.current)
   }, [currentRow])
 
   const onCopy = (event: ClipboardEvent): void => {
@@ -59,6 +57,15 @@ export function TableView({
       </section>
     </div>
   )
+}
+
+function showCurrentRow(frame: HTMLElement): void {
+  const row = frame.querySelector<HTMLElement>('tr[aria-current="true"]')
+  if (row === null) return
+  const head = frame.querySelector('thead')?.offsetHeight ?? 0
+  const [top, bottom] = [row.offsetTop - head, row.offsetTop + row.offsetHeight]
+  if (top < frame.scrollTop) frame.scrollTop = top - row.offsetHeight
+  else if (bottom > frame.scrollTop + frame.clientHeight) frame.scrollTop = Math.min(top, bottom - frame.clientHeight + row.offsetHeight)
 }
 
 /** Makes the frame as tall as whole rows fill it, so that none is cut by its lower edge; the scroll snap keeps them whole at the head. */

@@ -66,7 +66,9 @@ function NoProfile({ result, document, actions }: StageProps) {
         <p className="missing">
           Ea, its interval and the table stand here as soon as two distinct programmes can be compared; an interval needs three.
         </p>
-        {result !== null && result.peakMethods.length > 0 && <Peaks methods={result.peakMethods} signal={result.signal} />}
+        {result !== null && result.peakMethods.length > 0 && (
+          <Peaks methods={result.peakMethods} signal={result.signal} hasRemarksBeside={false} />
+        )}
       </Half>
     </>
   )

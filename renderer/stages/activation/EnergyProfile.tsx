@@ -26,6 +26,7 @@ export function EnergyProfile(props: ActivationProps) {
   const { result, chosen, compared, shown, levelIndex, actions } = props
   const { view } = useServices()
   const beneath = useView((state) => state.beneath)
+  const evidence = useView((state) => state.evidence)
   const colours = useColours()
   const { profile, interval } = shown
   const methods = useMemo(() => [chosen, ...compared], [chosen, compared])
@@ -95,7 +96,7 @@ export function EnergyProfile(props: ActivationProps) {
           <LevelTable {...props} />
         </>
       ) : (
-        <Peaks methods={result.peakMethods} signal={result.signal} />
+        <Peaks methods={result.peakMethods} signal={result.signal} hasRemarksBeside={evidence === 'peaks'} />
       )}
       <Foot {...props} beneath={beneath} />
     </Half>

@@ -13,10 +13,10 @@ import type { Evidence } from '../../state/view-store.ts'
 import type { ActivationProps } from './ActivationStage.tsx'
 import { BasisChoice } from './BasisChoice.tsx'
 import { Budget } from './Budget.tsx'
-import { isReportBasis, peakReadings, readingOf, scopeWords } from './method-words.tsx'
+import { isReportBasis, peakReadings, readingOf, scopeWords, shortPeakNames } from './method-words.tsx'
 import { methodsWith } from './methods-with.ts'
 import { PeakEvidence } from './PeakEvidence.tsx'
-import { peakKey, pickedPeaks } from './peak-rows.ts'
+import { peakKey, peakName, pickedPeaks } from './peak-rows.ts'
 import { RunLegend } from './RunLegend.tsx'
 import { drawnInterval } from './shown-interval.ts'
 
@@ -59,10 +59,10 @@ function headOf({ result, chosen, level, shown }: ActivationProps, evidence: Evi
   if (evidence === 'peaks' && peaks !== null) {
     const note = (
       <>
-        {peaks.label}: {peakReadings[peaks.method]}. {count(result.runs.length, 'run')}.
+        {peakName(peaks)}: {peakReadings[peaks.method]}.
       </>
     )
-    return { title: 'Straight line through the peaks', note, sources: peaks.sources }
+    return { title: peaks.runId === null ? 'Straight line through the peaks' : 'A single run', note, sources: [] }
   }
   if (evidence === 'budget') {
     const note = <>{profile.label}: the standard uncertainty of Ea that each source brings alone; bars as long as its square.</>
@@ -100,8 +100,8 @@ function PeakChoice({ result, peaks }: ActivationProps & { readonly peaks: PeakM
   const isLined = peaks !== null && lined.includes(peaks)
   return (
     <Choice
-      label="Peak method"
-      options={lined.map((one) => ({ id: peakKey(one), text: one.label }))}
+      label="Method"
+      options={lined.map((one) => ({ id: peakKey(one), text: shortPeakNames[one.method], name: one.label }))}
       value={isLined ? peakKey(peaks) : null}
       onChange={(peakRow) => view.setState({ peakRow })}
     />
@@ -114,7 +114,7 @@ function EvidenceChoice({ result, shown, evidence }: ActivationProps & { readonl
   const options: readonly ChoiceOption<Evidence>[] = [
     { id: 'fit', text: isMinimising(shown) ? 'Φ(Ea)' : 'Straight lines' },
     { id: 'budget', text: 'Where the uncertainty comes from' },
-    ...(result.peakMethods.length === 0 ? [] : [{ id: 'peaks', text: 'Line through the peaks' } as const]),
+    ...(result.peakMethods.length === 0 ? [] : [{ id: 'peaks', text: 'Peaks' } as const]),
   ]
   return (
     <Choice

@@ -3,10 +3,10 @@ import type { PeakMethodResult, StudyResult } from '../../../shared-kinetics/con
 import { studentWords } from '../../../shared-kinetics/figure/interval-status.ts'
 import { peakLineFigure } from '../../../shared-kinetics/figure/peak-line-figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
-import { decimals, formatCelsius, formatWithInterval } from '../../sheet/format.ts'
+import { count, decimals, formatCelsius, formatWithInterval } from '../../sheet/format.ts'
 import { useColours } from '../../state/services.ts'
 import type { SheetActions } from '../stage-props.ts'
-import { ownNumbers, peakName } from './peak-rows.ts'
+import { PeakRemarks } from './Peaks.tsx'
 import { RunLegend } from './RunLegend.tsx'
 
 const noMarks = [] as const
@@ -23,36 +23,48 @@ export function PeakEvidence({
 }) {
   const colours = useColours()
   const figure = useMemo(() => peakLineFigure(result, peaks), [result, peaks])
-  if (!peaks.applies)
+  if (!peaks.applies || peaks.line === null)
     return (
-      <p className="missing">
-        {peakName(peaks)} does not apply: {ownNumbers(peaks)}
-      </p>
+      <>
+        <p className="missing">
+          {peaks.applies
+            ? `${peaks.label} reads Ea from the points of one run: no line goes through the peaks.`
+            : 'There is no line to draw.'}
+        </p>
+        {peaks.applies && <Reading peaks={peaks} />}
+        <PeakRemarks peaks={peaks} />
+      </>
     )
-  if (peaks.line === null)
-    return <p className="missing">{peakName(peaks)} reads Ea from the points of one run; no line goes through the peaks of all runs.</p>
-  const remark = studentWords(peaks)
   return (
     <>
       <FigureChart figure={figure} overlay={noMarks} colours={colours} onCopied={actions.pictureCopied} />
       <RunLegend result={result}>
-        {({ peak_K }) => <span className="run-legend-stand">{peak_K === null ? 'no peak' : `peak ${formatCelsius(peak_K)} °C`}</span>}
+        {({ peak_K }) => <span className="run-legend-stand">{peak_K === null ? 'no peak' : `peak ${formatCelsius(peak_K)}\u00a0°C`}</span>}
       </RunLegend>
-      <p className="peak-reading">
-        Ea <strong>{formatWithInterval(peaks.Ea_kJ_per_mol, peaks.lower95_kJ_per_mol, peaks.upper95_kJ_per_mol)}</strong> kJ/mol
-        {peaks.dof > 0 && ` (95 % Student-t, n − 2 degrees of freedom, ${peaks.dof} here)`}
-        {peaks.lnA_per_s !== null && (
-          <>
-            , ln A <strong>{decimals(peaks.lnA_per_s, 2)}</strong> (A in 1/s)
-          </>
-        )}
-        {peaks.r2 !== null && (
-          <>
-            , r² <strong>{decimals(peaks.r2, 5)}</strong>
-          </>
-        )}
-        .{remark !== null && <span className="mean-remark">Its interval: {remark}.</span>}
-      </p>
+      <Reading peaks={peaks} />
+      <PeakRemarks peaks={peaks} />
     </>
+  )
+}
+
+/** What the method reads, in words. */
+function Reading({ peaks }: { readonly peaks: PeakMethodResult }) {
+  const remark = studentWords(peaks)
+  return (
+    <p className="peak-reading">
+      Ea <strong>{formatWithInterval(peaks.Ea_kJ_per_mol, peaks.lower95_kJ_per_mol, peaks.upper95_kJ_per_mol)}</strong> kJ/mol
+      {peaks.dof > 0 && ` (95 % Student-t, ${count(peaks.dof, 'degree')} of freedom)`}
+      {peaks.lnA_per_s !== null && (
+        <>
+          , ln A <strong>{decimals(peaks.lnA_per_s, 2)}</strong> (A in 1/s)
+        </>
+      )}
+      {peaks.r2 !== null && (
+        <>
+          , r²&nbsp;<strong>{decimals(peaks.r2, 5)}</strong>
+        </>
+      )}
+      .{remark !== null && <span className="mean-remark">Its interval: {remark}.</span>}
+    </p>
   )
 }

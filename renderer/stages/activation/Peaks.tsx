@@ -7,7 +7,16 @@ import { useServices, useView } from '../../state/services.ts'
 import { ownNumbers, peakColumns, peakCopyColumns, peakKey, peakName, peakNote, pickedPeaks } from './peak-rows.ts'
 
 /** What the rate peaks, and single runs, say: one row a method, and of the row picked out what to know before relying on it. Up and down, or a click, pick a row, and its line stands at the left. */
-export function Peaks({ methods, signal }: { readonly methods: readonly PeakMethodResult[]; readonly signal: StudyResult['signal'] }) {
+export function Peaks({
+  methods,
+  signal,
+  hasRemarksBeside,
+}: {
+  readonly methods: readonly PeakMethodResult[]
+  readonly signal: StudyResult['signal']
+  /** They stand at the left, under the line. */
+  readonly hasRemarksBeside: boolean
+}) {
   const { view } = useServices()
   const current = pickedPeaks(
     methods,
@@ -42,9 +51,6 @@ export function Peaks({ methods, signal }: { readonly methods: readonly PeakMeth
                 </th>
               ))}
               <th scope="col">
-                <span>Note</span>
-              </th>
-              <th scope="col">
                 <span>Own numbers</span>
                 <span className="unit">± standard error</span>
               </th>
@@ -57,8 +63,8 @@ export function Peaks({ methods, signal }: { readonly methods: readonly PeakMeth
                 <th scope="row">{peakName(row)}</th>
                 {row.applies &&
                   peakColumns.map((column) => <NumberCell key={column.id} text={column.text(row)} remark={column.remark?.(row) ?? null} />)}
-                {row.applies && <td className="peak-note">{peakNote(row, signal)}</td>}
-                <td className="peak-own" colSpan={row.applies ? 1 : peakColumns.length + 2}>
+                <td className="peak-own" colSpan={row.applies ? 1 : peakColumns.length + 1}>
+                  <PeakNote text={peakNote(row, signal)} />
                   {row.applies ? ownNumbers(row) : `Does not apply. ${ownNumbers(row)}`}
                 </td>
               </tr>
@@ -66,12 +72,19 @@ export function Peaks({ methods, signal }: { readonly methods: readonly PeakMeth
           </tbody>
         </table>
       </TableView>
-      <div className="peak-remarks" aria-live="polite">
-        <p>
-          <strong>{peakName(current)}.</strong> {current.applies ? current.remarks.join(' ') : ownNumbers(current)}
-        </p>
-        <p className="source">{current.sources.join('; ')}</p>
-      </div>
+      {!hasRemarksBeside && <PeakRemarks peaks={current} />}
     </>
   )
 }
+
+const PeakNote = ({ text }: { readonly text: string }) => (text === '' ? null : <span className="peak-note">{text}</span>)
+
+/** What to know before relying on a row, and where its method is published. */
+export const PeakRemarks = ({ peaks }: { readonly peaks: PeakMethodResult }) => (
+  <div className="peak-remarks" aria-live="polite">
+    <p>
+      <strong>{peakName(peaks)}.</strong> {peaks.applies ? peaks.remarks.join(' ') : ownNumbers(peaks)}
+    </p>
+    <p className="source">{peaks.sources.join('; ')}</p>
+  </div>
+)

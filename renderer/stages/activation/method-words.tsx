@@ -17,6 +17,18 @@ const readings: Readonly<Record<MethodId, string>> = {
   'iso-11358-2': 'log β against 1000/T; the slope is −0.4567 Ea/R',
 }
 
+/** Names short enough for a button; the whole name is `PeakMethodResult.label`. */
+export const shortPeakNames: Readonly<Record<PeakMethodResult['method'], string>> = {
+  kissinger: 'Kissinger',
+  'astm-e698': 'ASTM E698',
+  'astm-e2890': 'ASTM E2890',
+  'ozawa-peak': 'Ozawa',
+  'ozawa-peak-corrected': 'Ozawa corrected',
+  'augis-bennett': 'Augis–Bennett',
+  'augis-bennett-without-start': 'without T0',
+  'borchardt-daniels': 'Borchardt–Daniels',
+}
+
 /** How Ea is read from the peaks of the reaction rate, or from a single run. */
 export const peakReadings: Readonly<Record<PeakMethodResult['method'], string>> = {
   kissinger: 'ln(β/Tp²) against 1000/Tp; the slope is −Ea/R',
@@ -26,7 +38,7 @@ export const peakReadings: Readonly<Record<PeakMethodResult['method'], string>> 
   'ozawa-peak-corrected': 'ln β against 1000/Tp; the slope is −h Ea/R, h that of −ln p at Ea/(RT)',
   'augis-bennett': 'ln(β/(Tp − T0)) against 1000/Tp, T0 where the heating began; the slope is −Ea/R',
   'augis-bennett-without-start': 'ln(β/Tp) against 1000/Tp; the slope is −Ea/R',
-  'borchardt-daniels': 'ln(dα/dt) of one run against 1/T and ln(1 − α) together',
+  'borchardt-daniels': 'ln(dα/dt) of one run against 1/T and ln(1\u00a0−\u00a0α) together',
 }
 
 export type ReportBasis = Extract<MethodId, 'astm-e1641' | 'iso-11358-2'>
