@@ -5,6 +5,7 @@ import { endProgrammes, meanAtLevel, programmeRange } from '../sheet/end-program
 import { decimals, formatInterval, formatLevel, formatWithInterval, halfWidth, statusWords } from '../sheet/format.ts'
 import { LevelRail } from '../sheet/LevelRail.tsx'
 import { railBars, railCaption } from '../sheet/rail-bars.ts'
+import { Remarked } from '../sheet/Remarked.tsx'
 import type { SheetActions } from '../stages/stage-props.ts'
 import { intervalWordsAt, shortKinds, type ShownOfMethod } from '../stages/activation/shown-interval.ts'
 import { useShown } from '../stages/activation/use-shown.ts'
@@ -78,8 +79,10 @@ export function Rail({
         ) : (
           <>
             Ea{' '}
-            <strong {...(words === null ? {} : { className: 'has-remark', title: `Interval: ${words}` })}>
-              {formatWithInterval(profile?.Ea_kJ_per_mol[levelIndex], lower, upper)}
+            <strong>
+              <Remarked remark={words === null ? null : `interval: ${words}`}>
+                {formatWithInterval(profile?.Ea_kJ_per_mol[levelIndex], lower, upper)}
+              </Remarked>
             </strong>{' '}
             kJ/mol
           </>

@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react'
 import type { DataColumn } from './data-table.ts'
+import { Remarked } from './Remarked.tsx'
 
 /** The head of a table: quantity and, beneath it, unit. `end` names a last column of buttons to those who hear the screen. */
 export function TableHead<Row>({ columns, end }: { readonly columns: readonly DataColumn<Row>[]; readonly end?: string }) {
@@ -35,14 +36,7 @@ export function NumberCell({
   const isWord = text !== '' && !/\d/.test(text)
   return (
     <td className={isWord ? 'is-number is-word' : 'is-number'} {...(remark === null ? {} : { title: remark })}>
-      {remark === null ? (
-        text
-      ) : (
-        <>
-          <span className="has-remark">{text}</span>
-          <span className="visually-hidden">, {remark}</span>
-        </>
-      )}
+      <Remarked remark={remark}>{text}</Remarked>
       {children}
     </td>
   )

@@ -8,6 +8,7 @@ import { Choice, Choices, type ChoiceOption } from '../../sheet/Choice.tsx'
 import { decimals, formatWithInterval, shortMethodNames, wholeMethodName } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { nearestLevel } from '../../sheet/nearest-level.ts'
+import { Remarked } from '../../sheet/Remarked.tsx'
 import { useColours, useServices, useStudy, useView } from '../../state/services.ts'
 import { isStale } from '../../state/study-state.ts'
 import type { Beneath } from '../../state/view-store.ts'
@@ -142,9 +143,12 @@ function Foot({ result, chosen, compared, actions, beneath }: ActivationProps & 
       {beneath === 'levels' && kissinger !== null && (
         <p>
           Kissinger (peaks): Ea{' '}
-          <strong>{formatWithInterval(kissinger.Ea_kJ_per_mol, kissinger.lower95_kJ_per_mol, kissinger.upper95_kJ_per_mol)}</strong> kJ/mol,
-          ln A <strong>{decimals(kissinger.lnA_per_s, 2)}</strong> (A in 1/s).
-          {kissingerWords !== null && ` Its interval: ${kissingerWords}.`}
+          <strong>
+            <Remarked remark={kissingerWords === null ? null : `interval: ${kissingerWords}`}>
+              {formatWithInterval(kissinger.Ea_kJ_per_mol, kissinger.lower95_kJ_per_mol, kissinger.upper95_kJ_per_mol)}
+            </Remarked>
+          </strong>{' '}
+          kJ/mol, ln A <strong>{decimals(kissinger.lnA_per_s, 2)}</strong> (A in 1/s).
         </p>
       )}
       <div className="controls-end">
