@@ -1,9 +1,9 @@
 import type { DecimalSignWord, DelimiterWord } from '../../shared-kinetics/contract/import-options.ts'
-import { plainSuperscripts } from '../../shared-kinetics/units/plain-superscripts.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { unitOf } from './file-unit.ts'
 import type { Refuse } from './import-refusal.ts'
-import { isMissingMark, isNumber, parseNumber } from './parse-number.ts'
+import { isMissingMark, parseNumber } from './parse-number.ts'
+import { cellWithPlainPowers, lineWithLoweredPowers, withPlainPowers } from './plain-powers.ts'
 import { linesWithinLimits, rateConstantTextLimits } from './rate-constant-limits.ts'
 import { delimiterCharacter, splitCells, withoutEmptyEnd } from './split-cells.ts'
 
@@ -38,15 +38,6 @@ const preference: readonly DelimiterWord[] = ['tab', 'semicolon', 'comma', 'pipe
 export const linesOf = (text: string, refuse: Refuse): readonly NumberedLine[] =>
   linesWithinLimits(text.replace(/^\ufeff/, ''), refuse).map((line) => ({ number: line.number, text: withPlainPowers(line.text) }))
 
-const withPlainPowers = (line: string): string =>
-  line.replaceAll(
-    /(\d)\s*[×x·⋅*]\s*10\s*(?:\^\s*(?:\(\s*)?([-+−]?\d{1,3})(?:\s*\))?|([⁻⁺]?[⁰¹²³⁴⁵⁶⁷⁸⁹]{1,3}))/gi,
-    (_, digit: string, plain?: string, raised?: string) => {
-      const exponent = plain ?? plainSuperscripts(raised ?? '').slice(1)
-      return `${digit}e${exponent.replace('−', '-')}`
-    },
-  )
-
 /**
  * Every way of reading the lines that gives rows of two numbers, the best first; two of the same score are both possible. Blanks part cells only where no
  * other sign parts as many rows: in a label such as “batch 1” they do not.
@@ -71,8 +62,9 @@ function readingOf(lines: readonly NumberedLine[], delimiter: DelimiterWord, dec
   let score = 0
   let hasSigns = false
   const isUnquotedComma = delimiter === 'comma' && decimal === 'comma'
+  const named = delimiter === 'blanks' ? wordsOfHeading(lines, decimal) : 0
   const rows = lines.map(({ number, text }) => {
-    const cells = cellsOf(text, delimiter, decimal)
+    const cells = cellsOf(text, delimiter, decimal, named)
     // Words of a remark, which no sign but blanks parts into so many.
     if (cells.length > rateConstantTextLimits.cells) return { line: number, cells, isData: false }
     const filled = cells.filter((cell) => cell !== '' && !isMissingMark(cell))
@@ -88,19 +80,38 @@ function readingOf(lines: readonly NumberedLine[], delimiter: DelimiterWord, dec
   return { delimiter, decimal, rows, score, hasSigns }
 }
 
-function cellsOf(line: string, delimiter: DelimiterWord, decimal: DecimalSignWord): readonly string[] {
+/** How many cells blanks part in the line above the first with two numbers; 0 where there is none. */
+function wordsOfHeading(lines: readonly NumberedLine[], decimal: DecimalSignWord): number {
+  let above = 0
+  for (const { text } of lines) {
+    const cells = joinedWords(text.replaceAll(/\s{2,}/g, ' '), decimal)
+    if (cells.length <= rateConstantTextLimits.cells && cells.filter((cell) => numberCell(cell, decimal) !== null).length >= 2) return above
+    above = cells.length
+  }
+  return 0
+}
+
+/** @param named - where blanks part the cells, so many stand in the heading */
+function cellsOf(line: string, delimiter: DelimiterWord, decimal: DecimalSignWord, named: number): readonly string[] {
   // A run of blanks means no more than one of them, and patterns would try each way of sharing it out.
   const text = delimiter === 'tab' ? line.replaceAll(/[^\S\t]{2,}/g, ' ') : line.replaceAll(/\s{2,}/g, ' ')
   if (delimiter !== 'blanks')
     return text.includes(delimiterCharacter[delimiter]) ? withoutEmptyEnd(splitCells(text, delimiter)) : [text.trim()]
-  // Where blanks part the cells, a unit belongs to the number before it, and a bracket to the name before it.
+  const lowered = lineWithLoweredPowers(text)
+  const words = lowered === text ? [] : joinedWords(text, decimal)
+  // A row of as many words as there are headings is parted by its blanks, whatever sign stands between them.
+  return words.length > 0 && words.length === named ? words : joinedWords(lowered, decimal)
+}
+
+/** The cells of a line that blanks part: a unit belongs to the number before it, and a bracket to the name before it. */
+function joinedWords(text: string, decimal: DecimalSignWord): readonly string[] {
   const joined: string[][] = []
   let isBracketOpen = false
   for (const cell of splitCells(text, 'blanks')) {
     const last = joined.at(-1)
     const [only = ''] = last ?? []
-    const isUnit = last?.length === 1 && isNumber(only, decimal) && !isNumber(cell, decimal) && isUnitText(cell)
-    if (last !== undefined && (isUnit || /^[([{/]/.test(cell) || (isBracketOpen && !isNumber(cell, decimal)))) last.push(cell)
+    const isUnit = last?.length === 1 && isBareNumber(only, decimal) && !isBareNumber(cell, decimal) && isUnitText(cell)
+    if (last !== undefined && (isUnit || /^[([{/]/.test(cell) || (isBracketOpen && !isBareNumber(cell, decimal)))) last.push(cell)
     else {
       joined.push([cell])
       isBracketOpen = false
@@ -118,9 +129,11 @@ const lastOf = (text: string, ...signs: readonly string[]): number => Math.max(.
 export const isUnitText = (text: string): boolean =>
   text.length <= 60 && (unitOf(text)?.dimension === 'temperature' || parseRateUnit(text).ok)
 
-/** `298.15`, `25 °C`, `25°C`, `3.5e-5 1/s`; null for what is no number with or without a unit. */
+const isBareNumber = (cell: string, decimal: DecimalSignWord): boolean => numberCell(cell, decimal)?.unitText === ''
+
+/** `298.15`, `25 °C`, `25°C`, `3.5e-5 1/s`, `3.5 × 10−5 1/s`; null for what is no number with or without a unit. */
 export function numberCell(cell: string, decimal: DecimalSignWord): NumberCell | null {
-  const trimmed = cell.trim()
+  const trimmed = cellWithPlainPowers(cell.trim())
   if (trimmed === '') return null
   const whole = parseNumber(trimmed, 0, trimmed.length, decimal)
   if (!Number.isNaN(whole)) return { value: whole, unitText: '' }

@@ -129,6 +129,100 @@ describe('the same rate constants in many spellings', () => {
   })
 })
 
+describe('powers of ten as they come from a printed page', () => {
+  const spellings = [
+    '7.87 × 10−7',
+    '7.87 x 10-7',
+    '7.87 × 10–7',
+    '7.87 x 10^-7',
+    '7.87·10⁻⁷',
+    '7.87 · 10 ⁻⁷',
+    '7.87\u00a0×\u00a010−7',
+    '7.87\u2009∙\u200910^−7',
+    '7.87 × 10^{-7}',
+    '7.87 x 10^(−7)',
+    '7.87*10**-7',
+    '7.87E−7',
+  ]
+  const layouts = [
+    ['tab', 'T (K)\tk (1/s)\n298\tX\n308\t1e-4'],
+    ['semicolon', 'T (K);k (1/s)\n298;X\n308;1e-4'],
+    ['comma', 'T (K),k (1/s)\n298,X\n308,1e-4'],
+    ['pipe', 'T (K)|k (1/s)\n298|1e-4\n308|X'],
+    ['blanks', 'T(K) k(1/s)\n298 X\n308 1e-4'],
+    ['blanks, k first', 'k(1/s)  T(K)\nX  298\n1e-4  308'],
+    ['blanks, units behind', '298 K X 1/s\n308 K 1e-4 1/s'],
+    ['tab, unit behind', 'T (K)\tk\n298\tX 1/s\n308\t1e-4 1/s'],
+  ] as const
+  it.each(layouts)('are read in cells parted by %s', (_, text) => {
+    for (const spelling of spellings) {
+      const ks = read(text.replace('X', spelling)).rows.map((row) => row.rateConstant)
+      expect(ks.toSorted((a, b) => a - b)).toEqual([7.87e-7, 1e-4])
+    }
+  })
+
+  it('a blank before the sign is one number in a cell, and with a decimal comma as well', () => {
+    expect(pairs(read('T (K)\tk (1/s)\n298\t7.87 × 10 −7\n308\t1e-4'))[0]).toEqual([298, 7.87e-7])
+    expect(pairs(read('T (K);k (1/s)\n298,5;7,87 × 10 − 7\n308,5;1,5·10−4'))).toEqual([
+      [298.5, 7.87e-7],
+      [308.5, 1.5e-4],
+    ])
+  })
+
+  it('a power alone is a number', () => {
+    for (const text of ['T (K);k (1/s)\n298;10⁻⁷\n308;10^-4', 'T(K) k(1/s)\n298 10^−7\n308 10⁻⁴', '298 K 10⁻⁷ 1/s\n308 K 10^-4 1/s']) {
+      expect(pairs(read(text))).toEqual([
+        [298, 1e-7],
+        [308, 1e-4],
+      ])
+    }
+  })
+
+  it('blanks that part cells keep parting them', () => {
+    // A sample x, a count of 10 and a logarithm stand beside each other.
+    expect(pairs(read('T(K) sample n ln(k)\n298 x 10 -7\n308 x 10 -5'))).toEqual([
+      [298, Math.exp(-7)],
+      [308, Math.exp(-5)],
+    ])
+    // Two columns of numbers, the second negative; nothing is multiplied.
+    expect(pairs(read('T(K) ln(k)\n298 -10\n308 -7'))).toEqual([
+      [298, Math.exp(-10)],
+      [308, Math.exp(-7)],
+    ])
+    expect(pairs(read('T(K)\tn\tln(k)\n298\t7 x 10\t-7\n308\t7 x 10\t-5'))).toEqual([
+      [298, Math.exp(-7)],
+      [308, Math.exp(-5)],
+    ])
+    // A tab between 10 and its power parts cells whatever stands around it.
+    expect(refusal('T (K)\tk (1/s)\n298\t7.87 × 10\t^-7\n308\t1e-4').message).toMatch(/line/)
+    expect(refusal('T(K) k(1/s)\n298 7.87 × 10   −7\n308 7.87 × 10   −6').message).toMatch(/line 1: The rows have 5 cells/)
+    // A sample x of a batch 10-7 stands under headings of its own.
+    expect(pairs(read('T(K) sample batch k(1/s)\n298 x 10-7 3.4e-5\n308 x 10-8 3.4e-4'))).toEqual([
+      [298, 3.4e-5],
+      [308, 3.4e-4],
+    ])
+  })
+
+  it('labels keep their words', () => {
+    const table = read('T (K);k (1/s);sample\n298;1e-5;sieve 5 × 10–20\n308;1e-4;5 x 10-20')
+    expect(table.rows.map((row) => row.label)).toEqual(['sieve 5 × 10–20', '5 x 10-20'])
+  })
+
+  it.each(['7.87 × 107', '7.87 x 10 7', '7.87·1012'])('%s may be a product or a power, and is asked about by its line', (cell) => {
+    for (const layout of ['T (K)\tk (1/s)\n298\tX\n308\t1e-4', 'T(K) k(1/s)\n298 X\n308 1e-4', '298 K; X 1/s\n308 K; 2 1/s']) {
+      const { message, line, remedy } = refusal(layout.replace('X', cell))
+      expect(message).toMatch(/raised digits were lost/)
+      expect(line).toBe(layout.startsWith('T') ? 2 : 1)
+      expect(remedy).toMatch(/7\.87e7/)
+    }
+  })
+
+  it('what is behind a sign and no power is not taken for one', () => {
+    expect(refusal('T (K);k (1/s)\n298;7.87 × 10−7.5\n308;1e-4').message).toMatch(/line/)
+    expect(refusal('T (K);k (1/s)\n298;10−7\n308;1e-4\n318;2e-4').message).toMatch(/line/)
+  })
+})
+
 describe('what is not guessed', () => {
   it('a unit of temperature that nobody stated is asked for, and taken when stated', () => {
     for (const text of ['T,k (1/s)\n298,3.46e-5\n308,1.35e-4', '298 3.46e-5\n308 1.35e-4']) {

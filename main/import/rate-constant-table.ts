@@ -3,9 +3,10 @@ import { rateConstantLimits, type RateConstantReadOptions } from '../../shared-k
 import type { RateConstantNote, RateConstantSource, RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { decodeText } from './decode-text.ts'
-import { ImportRefusal, type Refuse } from './import-refusal.ts'
+import { ImportRefusal, quoted, type Refuse } from './import-refusal.ts'
+import { hasPowerWithoutSign } from './plain-powers.ts'
 import { refuseBinary } from './refuse-binary.ts'
-import { cellReadings, linesOf, type CellReading } from './rate-constant-cells.ts'
+import { cellReadings, linesOf, type CellReading, type NumberedLine } from './rate-constant-cells.ts'
 import { planRateConstantColumns } from './rate-constant-columns.ts'
 import { RateConstantQuestion, unitRemedy, type Ask } from './rate-constant-question.ts'
 import { readRateConstantRows } from './rate-constant-rows.ts'
@@ -48,6 +49,30 @@ export function readRateConstantText(input: RateConstantText, options: RateConst
     if (!stated.ok) throw refuse(null, `The unit stated for the rate constants is not known: ${stated.reason}.`, unitRemedy)
   }
   const lines = linesOf(input.text, refuse)
+  try {
+    return readLines(lines, input, options, refuse, ask)
+  } catch (error) {
+    // What a power without its sign makes of the cells is no help to anybody.
+    const lost =
+      error instanceof ImportRefusal && !(error instanceof RateConstantQuestion)
+        ? lines.find(({ text }) => hasPowerWithoutSign(text))
+        : undefined
+    if (lost === undefined) throw error
+    throw refuse(
+      lost.number,
+      `${quoted(lost.text)} holds a power of ten whose raised digits were lost: “× 107” may be 10^7 or a hundred and seven.`,
+      'Write it as 7.87e7 or 7.87 × 10^7.',
+    )
+  }
+}
+
+function readLines(
+  lines: readonly NumberedLine[],
+  input: RateConstantText,
+  options: RateConstantReadOptions,
+  refuse: Refuse,
+  ask: Ask,
+): RateConstantTable {
   const readings = cellReadings(lines, options)
   const [best] = readings
   if (best === undefined) {
