@@ -56,7 +56,8 @@ export interface SingleCurveFit {
  *
  * NOT a way to choose a model or to find Ea: on one curve nearly every model gives nearly a straight line, each with another Ea. First-order data give A2, A3 and A4
  * with r² above 0.999997 at about a half, a third and a fifth of the true Ea. Ea comes from several heating rates (the isoconversional methods); the pairs of Ea and
- * ln A that the wrong models give serve the compensation line (`compensationLine`), which is what this is for.
+ * ln A that the wrong models give serve the compensation line (`compensationLine`), which is what this is for. Errors of ln g are far from equal along a curve:
+ * `fittedConversionCurve` fits conversion itself, from this line.
  *
  * @param curve - rows in any order; those whose alpha is not inside (0, 1), or whose g is not a positive finite number, are not used
  * @throws KineticsError `no-heating-rate`, `column-length`, `not-finite` where a used temperature is not a positive number
