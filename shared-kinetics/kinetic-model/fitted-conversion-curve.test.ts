@@ -27,6 +27,7 @@ const curve = (temperature_K: number[], conversion: number[]): ConversionCurve =
   temperature_K,
   conversion,
 })
+const of = (T: number[], alpha: number[], code: ReactionModelCode = 'F1') => fittedConversionCurve(curve(T, alpha), reactionModels[code])
 
 describe('conversion of one curve, fitted', () => {
   it('gives Ea and ln A of the right model back from exact curves', () => {
@@ -95,8 +96,6 @@ describe('conversion of one curve, fitted', () => {
   })
 
   it('says why it has no numbers', () => {
-    const of = (T: number[], alpha: number[], code: ReactionModelCode = 'F1') =>
-      fittedConversionCurve(curve(T, alpha), reactionModels[code])
     expect(of([500, 510], [0.4, 0.5], 'B1')).toMatchObject({ status: 'model-does-not-apply', Ea: Number.NaN })
     expect(of([500], [0.4]).status).toBe('too-few-points')
     expect(of([500, 510], [0.5, 0.4]).status).toBe('energy-not-positive')
