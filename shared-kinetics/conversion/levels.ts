@@ -23,15 +23,17 @@ export interface LevelsRead {
  * several times is read at the crossing nearest to that of its never-falling (isotonic) fit: neither the first nor the last, which noise would push outwards.
  *
  * @param levels - inside (0, 1)
+ * @throws Cancelled, by `checkCancelled`
  * @source fritsch-carlson-1980; barlow-1972
  */
-export function readAtLevels(curve: ConversionCurve, levels: ArrayLike<number>): LevelsRead {
+export function readAtLevels(curve: ConversionCurve, levels: ArrayLike<number>, checkCancelled: () => void = () => undefined): LevelsRead {
   const rising = risingFit(curve)
   const temperature = temperatureReader(curve)
   const time_s = new Float64Array(levels.length).fill(Number.NaN)
   const temperature_K = new Float64Array(levels.length).fill(Number.NaN)
   const reactionRate_per_s = new Float64Array(levels.length).fill(Number.NaN)
   for (let i = 0; i < levels.length; i++) {
+    checkCancelled()
     const time = crossing(curve, rising, levels[i] ?? Number.NaN)
     if (Number.isNaN(time)) continue
     time_s[i] = time

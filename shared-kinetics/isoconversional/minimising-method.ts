@@ -1,5 +1,5 @@
 import { fQuantile } from '../numerics/f-distribution.ts'
-import type { SeriesAtLevels } from '../series/series-at-levels.ts'
+import type { RunAtLevels } from '../series/series-at-levels.ts'
 import { column } from '../units/quantity.ts'
 import { energies, energyGrid, gridPointBelow, readBetween, type EnergyGrid } from './energy-grid.ts'
 import { logIntegralTable } from './log-integral-table.ts'
@@ -10,7 +10,7 @@ import { resultColumns } from './result-columns.ts'
 import type { EnergyInterval, IntervalStatus, IsoconversionalMethod, LevelPhi, MethodInfo } from './result.ts'
 import { checkSeries, countProgrammes } from './series-check.ts'
 import { scanInOrder, scanOverGrid, type SlopeScan } from './slope-scan.ts'
-import type { TimeIntegral } from './time-integral.ts'
+import { interruptible, type TimeIntegral } from './time-integral.ts'
 import { vyazovkinWight } from './vyazovkin-wight.ts'
 
 /**
@@ -19,18 +19,20 @@ import { vyazovkinWight } from './vyazovkin-wight.ts'
  * integrals are not approximated, so that the systematic error is 0. Besides the interval of the linearised regression it gives, with three or more distinct programmes,
  * that of Vyazovkin and Wight.
  *
- * @param integralsOf - one integral a run, in the order of the runs
+ * @param integralOf - what is integrated of a run
  */
-export function minimisingMethod(
-  info: MethodInfo,
-  integralsOf: (series: SeriesAtLevels) => readonly TimeIntegral[],
-): IsoconversionalMethod {
+export function minimisingMethod(info: MethodInfo, integralOf: (run: RunAtLevels) => TimeIntegral): IsoconversionalMethod {
   return (series, context) => {
     checkSeries(info, series)
     const levels = series.levels.length
     const curves: LevelPhi[] = []
     const columns = resultColumns(info, series, [], curves)
-    const integrals = integralsOf(series)
+    const integrals = series.runs.map((run) => {
+      context.checkCancelled()
+      return integralOf(run)
+    })
+    // Curves are read after this call, perhaps by another that its cancel is nothing to: not through these.
+    const watched = integrals.map((integral, i) => interruptible(integral, series.runs[i] as RunAtLevels, context.checkCancelled))
     const programmes = countProgrammes(series)
     const enough = programmes >= 2
     const varianceRatio = programmes >= 3 ? varianceRatioIntervals(series.runs.length, levels) : null
@@ -58,7 +60,7 @@ export function minimisingMethod(
         columns.setStatus(level, 'level-not-reached')
         curves.push(noCurve)
       } else {
-        const minimum = findPhiMinimum(integrals, scanAt(level), level, columns.t)
+        const minimum = findPhiMinimum(watched, scanAt(level), level, columns.t)
         const read = readAt(level)
         if (typeof minimum === 'string') {
           columns.setStatus(level, minimum)
@@ -68,7 +70,7 @@ export function minimisingMethod(
           columns.setPoints(level, minimum.points)
           columns.result.systematicError[level] = 0
           near = gridPointBelow(minimum.Ea)
-          varianceRatio?.set(level, minimum.Ea, integrals, read)
+          varianceRatio?.set(level, minimum.Ea, watched, read)
           curves.push(new PhiLater(() => phiAround(read, integrals.length, minimum, columns.t * minimum.standardError)))
         }
       }

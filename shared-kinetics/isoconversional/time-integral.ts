@@ -24,6 +24,22 @@ export interface TimeIntegral {
   readonly passes?: (level: number) => readonly [number, number]
 }
 
+/**
+ * The same integral, but before each one over a measured history, which is a sum over thousands of nodes, it is asked whether anyone still waits. One in closed form is too quick to ask.
+ *
+ * @throws Cancelled, by `checkCancelled`
+ */
+export function interruptible(integral: TimeIntegral, run: RunAtLevels, checkCancelled: () => void): TimeIntegral {
+  if (followsRamp(run)) return integral
+  return {
+    ...integral,
+    atLevel: (Ea, level) => {
+      checkCancelled()
+      return integral.atLevel(Ea, level)
+    },
+  }
+}
+
 /** A local heating rate within this share of the fitted one is that of a straight ramp, noise of the temperature apart. */
 const straightWithin = 0.01
 

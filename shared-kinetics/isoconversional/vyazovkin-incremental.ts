@@ -33,6 +33,4 @@ export const vyazovkinIncrementalInfo: MethodInfo = {
  *
  * @source vyazovkin-2001
  */
-export const vyazovkinIncremental = minimisingMethod(vyazovkinIncrementalInfo, (series) =>
-  series.runs.map((run) => segmentIntegral(run, largestEa)),
-)
+export const vyazovkinIncremental = minimisingMethod(vyazovkinIncrementalInfo, (run) => segmentIntegral(run, largestEa))

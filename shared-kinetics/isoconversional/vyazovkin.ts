@@ -36,4 +36,4 @@ export const vyazovkinInfo: MethodInfo = {
  * @source vyazovkin-dollimore-1996
  * @source vyazovkin-1997
  */
-export const vyazovkin = minimisingMethod(vyazovkinInfo, (series) => series.runs.map((run) => timeIntegral(run, largestEa)))
+export const vyazovkin = minimisingMethod(vyazovkinInfo, (run) => timeIntegral(run, largestEa))

@@ -68,8 +68,11 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
   importNotes,
 ]
 
-/** Everything the rules notice: stops first, then cautions, then notes; within a severity in the order of the rules. */
-export function review(input: ReviewInput): Finding[] {
-  const findings = rules.flatMap((rule) => rule(input))
+/** Everything the rules notice: stops first, then cautions, then notes; within a severity in the order of the rules. @throws Cancelled, by `checkCancelled` */
+export function review(input: ReviewInput, checkCancelled: () => void = () => undefined): Finding[] {
+  const findings = rules.flatMap((rule) => {
+    checkCancelled()
+    return rule(input)
+  })
   return severities.flatMap((severity) => findings.filter((finding) => finding.severity === severity))
 }

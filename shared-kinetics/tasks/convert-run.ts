@@ -57,13 +57,21 @@ export const convertRunVersion = 6
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
  *
- * @throws KineticsError where the run cannot be used; the message names the run and what to do
+ * @throws KineticsError where the run cannot be used; the message names the run and what to do. Cancelled, by `checkCancelled`
  */
-export function convertRun(info: RunInfo, columns: RunColumns, settings: ConversionSettings): ConvertedRun {
+export function convertRun(
+  info: RunInfo,
+  columns: RunColumns,
+  settings: ConversionSettings,
+  checkCancelled: () => void = () => undefined,
+): ConvertedRun {
   const { quantity } = settings
   const usable = usableRows(columns, settings.signalIndex, info.nominalHeatingRate, info.label)
+  checkCancelled()
   const rows = pooledRows(usable)
-  const { range, converted } = convertedInWindow(rows, settings, info.label)
+  checkCancelled()
+  const { range, converted } = convertedInWindow(rows, settings, info.label, checkCancelled)
+  checkCancelled()
   const { reaction } = converted.curve
   const told = tellProgramme(rows.time_s, rows.temperature_K, range.first + reaction.first, range.first + reaction.last, rows.rebuiltFrom)
   return {
@@ -107,8 +115,14 @@ const foundWhole = ({ quantity, window }: ConversionSettings): boolean => window
  * The conversion in the window that was set, or in the one found. That for a straight baseline begins and ends close to the peak, and where it cuts the peak short although
  * the record goes on, the wider one for tangents is taken.
  */
-function convertedInWindow(rows: UsableRows, settings: ConversionSettings, label: string): Pick<ConvertedRun, 'range' | 'converted'> {
+function convertedInWindow(
+  rows: UsableRows,
+  settings: ConversionSettings,
+  label: string,
+  checkCancelled: () => void,
+): Pick<ConvertedRun, 'range' | 'converted'> {
   const range = rowsToUse(rows, settings, label)
+  checkCancelled()
   try {
     return { range, converted: convert(rows, range, settings, label) }
   } catch (error) {

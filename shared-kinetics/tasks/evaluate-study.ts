@@ -45,54 +45,63 @@ export function evaluateStudy(
   const profiles = chosen.map((info) => {
     const result = resultOf(info)
     step()
-    return profileResult(info, result, settings.levels, settings.meanRange, groups, study.withoutPhi !== true)
+    return profileResult(info, result, settings.levels, settings.meanRange, groups, study.withoutPhi !== true, context.checkCancelled)
   })
-  const { kissinger, peakMethods, leftOut: kissingerLeftOut } = peakResultsOf(runs, signal)
+  const { kissinger, peakMethods, leftOut: kissingerLeftOut } = peakResultsOf(runs, signal, context.checkCancelled)
   const result = {
     levels: settings.levels,
     signal,
     signalsToChooseFrom: toChooseFrom,
-    runs: runs.map((run) => runResult(run.info, run.signal, run.converted, run.levels, run.group)),
+    runs: runs.map((run) => {
+      context.checkCancelled()
+      return runResult(run.info, run.signal, run.converted, run.levels, run.group)
+    }),
     profiles,
     kissinger,
     peakMethods,
   }
-  const findings = review({
-    study,
-    result,
-    runs: runs.map(({ info, converted, levels }, i) => ({
-      info,
-      result: itemAt(result.runs, i),
-      heatingRateSpread: converted.told.heatingRateSpread,
-      steadiness: converted.steadiness,
-      rateAtEnds: converted.converted.rateAtEnds,
-      baselineKind: converted.converted.baselineKind,
-      sampling: converted.sampling,
-      timeNoiseAtLevel_s: noiseAtLevels(converted.converted.curve, settings.levels, levels).time_s,
-    })),
-    unusable,
-    leftOut: runs.length === 0 ? [] : [...leftOut, ...kissingerLeftOut],
-  })
+  const findings = review(
+    {
+      study,
+      result,
+      runs: runs.map(({ info, converted, levels }, i) => ({
+        info,
+        result: itemAt(result.runs, i),
+        heatingRateSpread: converted.told.heatingRateSpread,
+        steadiness: converted.steadiness,
+        rateAtEnds: converted.converted.rateAtEnds,
+        baselineKind: converted.converted.baselineKind,
+        sampling: converted.sampling,
+        timeNoiseAtLevel_s: noiseAtLevels(converted.converted.curve, settings.levels, levels, 'held', context.checkCancelled).time_s,
+      })),
+      unusable,
+      leftOut: runs.length === 0 ? [] : [...leftOut, ...kissingerLeftOut],
+    },
+    context.checkCancelled,
+  )
   step()
   return { ...result, findings }
 }
 
 const methodsByDefault = Object.values(methods).filter(({ info }) => info.byDefault).length
 
-function peakResultsOf(runs: readonly GroupedRun[], signal: SignalQuantity | null): PeakResults {
+function peakResultsOf(runs: readonly GroupedRun[], signal: SignalQuantity | null, checkCancelled: () => void): PeakResults {
   return applyPeakMethods(
-    runs.map(({ info, signal: measured, converted: { converted, told, heatingStart_K, peak_K }, group }) => ({
-      runId: info.id,
-      label: info.label,
-      programme: told.programme,
-      programmeGroup: group,
-      peak_K,
-      conversionAtPeak: conversionAtTemperature(converted.curve, peak_K),
-      halfHeights: halfHeights(converted.curve, peak_K),
-      start: quantity(heatingStart_K, 'K'),
-      heat: heatOf(info, measured, converted.area),
-      points: pointsOfRun(converted.curve),
-    })),
+    runs.map(({ info, signal: measured, converted: { converted, told, heatingStart_K, peak_K }, group }) => {
+      checkCancelled()
+      return {
+        runId: info.id,
+        label: info.label,
+        programme: told.programme,
+        programmeGroup: group,
+        peak_K,
+        conversionAtPeak: conversionAtTemperature(converted.curve, peak_K),
+        halfHeights: halfHeights(converted.curve, peak_K),
+        start: quantity(heatingStart_K, 'K'),
+        heat: heatOf(info, measured, converted.area),
+        points: pointsOfRun(converted.curve),
+      }
+    }),
     signal,
   )
 }

@@ -62,7 +62,7 @@ function baselineShift(
   const shift = { time_s: column(table(), 's'), lnReactionRate: table() }
   for (const [i, run] of runs.entries()) {
     context.checkCancelled()
-    const other = withOtherBaseline(run, settings, columns.get(run.info.columnsKey))
+    const other = withOtherBaseline(run, settings, columns.get(run.info.columnsKey), context.checkCancelled)
     if (typeof other === 'string') return { time_s: column(table(), 's'), lnReactionRate: table(), reason: other }
     for (let level = 0; level < levels; level++) {
       const k = level * runs.length + i
@@ -96,20 +96,30 @@ function otherKind({ converted: { converted } }: GroupedRun): BaselineKind | nul
  *
  * @returns a sentence where there is none for this run
  */
-function withOtherBaseline(run: GroupedRun, settings: AnalysisSettings, columns: RunColumns | undefined): LevelsRead | string {
+function withOtherBaseline(
+  run: GroupedRun,
+  settings: AnalysisSettings,
+  columns: RunColumns | undefined,
+  checkCancelled: () => void,
+): LevelsRead | string {
   const { info, signal } = run
   const baseline = otherKind(run)
   if (baseline === null || columns === undefined) {
     return `${info.label} has no other baseline to compare with, so that what the choice of baseline does cannot be told. Evaluate it apart from the runs that have a choice.`
   }
   try {
-    const other = convertRun(info, columns, {
-      quantity: signal.quantity,
-      signalIndex: info.signals.indexOf(signal),
-      window: info.window ?? settings.window,
-      baseline,
-    })
-    return readAtLevels(other.converted.curve, settings.levels)
+    const other = convertRun(
+      info,
+      columns,
+      {
+        quantity: signal.quantity,
+        signalIndex: info.signals.indexOf(signal),
+        window: info.window ?? settings.window,
+        baseline,
+      },
+      checkCancelled,
+    )
+    return readAtLevels(other.converted.curve, settings.levels, checkCancelled)
   } catch (error) {
     if (!(error instanceof KineticsError)) throw error
     return `The ${baseline} baseline cannot be drawn under ${info.label}, so that what the choice of baseline does cannot be told. ${error.message}`

@@ -18,6 +18,7 @@ function kilojoules(values: Float64Array): number[] {
  * A method's result in the terms of `StudyResult`: kJ/mol, null for what is not to be had, and the mean over a range of conversion.
  *
  * @param programmeGroup - one a run; replicates share a number
+ * @throws Cancelled, by `checkCancelled`
  */
 export function profileResult(
   info: MethodInfo,
@@ -26,6 +27,7 @@ export function profileResult(
   meanRange: readonly [number, number],
   programmeGroup: readonly number[],
   withPhi = true,
+  checkCancelled: () => void = () => undefined,
 ): ProfileResult {
   const Ea_kJ_per_mol = maybes(kilojoules(result.Ea))
   return {
@@ -56,12 +58,16 @@ export function profileResult(
       slope_K: maybe(line.slope_K),
       intercept: maybe(line.intercept),
     })),
-    phi: (withPhi ? result.phi : []).map((phi) => ({
-      Ea_kJ_per_mol: kilojoules(phi.Ea_J_per_mol),
-      phi: Array.from(phi.phi),
-      phiMinimum: maybe(phi.phiMinimum),
-      phiThreshold: maybe(phi.phiThreshold),
-    })),
+    // Each curve is worked out when it is first read.
+    phi: (withPhi ? result.phi : []).map((phi) => {
+      checkCancelled()
+      return {
+        Ea_kJ_per_mol: kilojoules(phi.Ea_J_per_mol),
+        phi: Array.from(phi.phi),
+        phiMinimum: maybe(phi.phiMinimum),
+        phiThreshold: maybe(phi.phiThreshold),
+      }
+    }),
     mean: meanResult(result, levels, meanRange),
   }
 }

@@ -52,7 +52,7 @@ export function seriesOfStudy(
   for (const info of used) {
     context.checkCancelled()
     try {
-      if (signal !== null) read.push(readRun(info, columns.get(info.columnsKey), signal, settings, cache))
+      if (signal !== null) read.push(readRun(info, columns.get(info.columnsKey), signal, settings, cache, context.checkCancelled))
     } catch (error) {
       if (!(error instanceof KineticsError)) throw error
       unusable.push({ info, error })
@@ -108,6 +108,7 @@ function readRun(
   quantity: SignalQuantity,
   settings: AnalysisSettings,
   cache: EvaluationCache,
+  checkCancelled: () => void,
 ): ReadRun {
   if (columns === undefined) {
     throw new KineticsError('unknown-run', `The measured columns of ${info.label} are not here. Add its file again.`, { run: info.label })
@@ -135,11 +136,11 @@ function readRun(
   const converted = remember(
     cache,
     conversionKey,
-    () => convertRun(info, columns, { quantity, signalIndex, window, baseline: settings.baseline }),
+    () => convertRun(info, columns, { quantity, signalIndex, window, baseline: settings.baseline }, checkCancelled),
     memoryOf,
   )
   const key = JSON.stringify([conversionKey, 'levels', readVersion, settings.levels])
-  const levels = remember(cache, key, () => readAtLevels(converted.converted.curve, settings.levels), memoryOf)
+  const levels = remember(cache, key, () => readAtLevels(converted.converted.curve, settings.levels, checkCancelled), memoryOf)
   return { info, signal, converted, levels, key }
 }
 

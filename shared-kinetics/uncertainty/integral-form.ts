@@ -1,6 +1,6 @@
 import { largestEa, smallestEa } from '../isoconversional/energy-grid.ts'
 import type { IsoconversionalResult, TaskContext } from '../isoconversional/result.ts'
-import { followsRamp, type TimeIntegral } from '../isoconversional/time-integral.ts'
+import { followsRamp, interruptible, type TimeIntegral } from '../isoconversional/time-integral.ts'
 import type { RunAtLevels, SeriesAtLevels } from '../series/series-at-levels.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { hasRebuiltTime, localHeatingRate } from './local-heating-rate.ts'
@@ -85,7 +85,7 @@ export function integralForm(
   const R = gasConstant_J_per_mol_K
   const integrals = series.runs.map((run) => {
     checkCancelled()
-    return integralOf(run)
+    return interruptible(integralOf(run), run, checkCancelled)
   })
   series.runs.forEach((run, i) => {
     const integral = integrals[i] as TimeIntegral

@@ -82,9 +82,9 @@ function disturb(
     disturbance.lnHeatingRate[i] = (heatingRate_share[i] as number) * random.normal()
   }
   for (let i = 0; i < runs; i++) {
-    checkCancelled()
     let before = 0
     for (let level = 0; level < levels; level++) {
+      if (level % levelsBetweenLooks === 0) checkCancelled()
       const k = level * runs + i
       const correlation = noise.correlationWithBefore[k] as number
       before = correlation * before + Math.sqrt(Math.max(0, 1 - correlation * correlation)) * random.normal()

@@ -5,7 +5,7 @@ import { logIntegralTable } from '../isoconversional/log-integral-table.ts'
 import { methods } from '../isoconversional/registry.ts'
 import type { IsoconversionalResult, LevelPoints, MethodId, TaskContext } from '../isoconversional/result.ts'
 import { segmentIntegral } from '../isoconversional/segment-integral.ts'
-import { timeIntegral, type TimeIntegral } from '../isoconversional/time-integral.ts'
+import { interruptible, timeIntegral, type TimeIntegral } from '../isoconversional/time-integral.ts'
 import { guardedNewton } from '../numerics/guarded-newton.ts'
 import type { SeriesAtLevels } from '../series/series-at-levels.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
@@ -32,7 +32,7 @@ export function resampledEnergies(series: SeriesAtLevels, result: Isoconversiona
       return methods[method].run({ ...series, runs }, silent).Ea
     }
   }
-  const energies = energiesAtLevels(series, result)
+  const energies = energiesAtLevels(series, result, context.checkCancelled)
   return (times) => {
     const Ea = new Float64Array(energies.length)
     energies.forEach((energyAt, level) => {
@@ -49,12 +49,19 @@ const searched = { lower: smallestEa, upper: largestEa, relativeTolerance: 1e-9 
 
 const none: EnergyAtLevel = () => Number.NaN
 
-function energiesAtLevels(series: SeriesAtLevels, { method, Ea, points, status }: IsoconversionalResult): EnergyAtLevel[] {
+function energiesAtLevels(
+  series: SeriesAtLevels,
+  { method, Ea, points, status }: IsoconversionalResult,
+  checkCancelled: () => void,
+): EnergyAtLevel[] {
   const where = (make: (Ea: number, points: LevelPoints, level: number) => EnergyAtLevel): EnergyAtLevel[] =>
     points.map((atLevel, level) => (status[level] === 'ok' ? make(Ea[level] ?? Number.NaN, atLevel, level) : none))
   if (method === 'vyazovkin' || method === 'vyazovkin-incremental') {
     const integralOf = method === 'vyazovkin' ? timeIntegral : segmentIntegral
-    const integrals = series.runs.map((run) => integralOf(run, largestEa))
+    const integrals = series.runs.map((run) => {
+      checkCancelled()
+      return interruptible(integralOf(run, largestEa), run, checkCancelled)
+    })
     return where((value, _, level) => weightedMinimum(value, integrals, level))
   }
   if (method === 'ofw-corrected') {
