@@ -38,7 +38,9 @@ await build({
     rolldownOptions: {
       input: {
         phases: join(here, 'phases.ts'),
-        'draw-order': join(here, 'draw-order.ts'),
+        'study-to-measure': join(here, 'study-to-measure.ts'),
+        'share-columns': join(root, 'main/study/share-columns.ts'),
+        uncertainty: join(root, 'main/host/uncertainty.ts'),
         'read-export': join(root, 'main/import/read-export.ts'),
         'worker-pool': join(root, 'main/host/worker-pool.ts'),
       },
@@ -83,10 +85,13 @@ function round() {
 
 /** What the peer does not do: the figure, and the milliseconds that are asked for. */
 const alone = {
-  first_ms: ['2,000 draws of measured sources, nonlinear method, 99 levels, two workers: their start included', 1000],
+  first_ms: ['2,000 draws of measured sources, nonlinear method, 99 levels, two workers: the first in a process', 1000],
   warm_ms: ['The same after the first call', 1000],
-  cancel_ms: ['From a cancel to its answer, the slowest of five', 100],
-  blocked_ms: ["Longest time the host's own thread was busy meanwhile", null],
+  cancel_ms: ['From a cancel to two free workers, all methods, 99 levels: the slowest of nine at any stage', 100],
+  blocked_ms: ["Longest time the host's own thread was busy with the draws of the nonlinear method", null],
+  largeCancel_ms: ['From a cancel to two free workers, all methods, 2,000 levels: the slowest of eight', 100],
+  largeSlice_ms: ['Longest slice of draws there, behind which other work waits', null],
+  largeBlocked_ms: ["Longest time the host's own thread was busy there", null],
 }
 
 /** What is compared, and the ratio that is asked for. */

@@ -38,14 +38,16 @@ export function drawPlan({ models, sources }: DrawOrder, draws: number): { reado
 }
 
 /**
- * Draws that take some 40 ms in a thread that has never drawn, for the first slices of a plan: one where even that takes longer. Counted are the runs at each level of each method; where
+ * Draws that take no more than some 40 ms in a thread that has never drawn, for the first slices of a plan: one where even that takes longer. Counted are the runs at each level of each method; where
  * a method's integrals follow measured histories, each costs about ten times as much.
  */
 export function drawsToBeginWith({ models }: DrawOrder): number {
-  return Math.max(1, Math.floor(workInSlice / Math.max(1, workOfAll(models))))
+  return Math.max(1, Math.floor(workToBeginWith / Math.max(1, workOfAll(models))))
 }
 
 const workInSlice = 160_000
+/** Code that runs for the first time is some four times as slow. */
+const workToBeginWith = 40_000
 
 const workOfAll = (models: readonly EnergyModel[]): number =>
   models.reduce((sum, { levels, runs, form }) => sum + levels * runs * (form.kind === 'integral' && form.table !== null ? 10 : 1), 0)
