@@ -1,6 +1,6 @@
 import type { RateConstantsResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
-import { decimals } from '../../sheet/format.ts'
+import { decimals, formatSigned } from '../../sheet/format.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import { betweenCopyColumns, placesOf, temperatureIn } from './rate-constant-rows.ts'
 
@@ -9,7 +9,7 @@ export function RateConstantPairs({ rated }: { readonly rated: RateConstantsResu
   const { betweenTemperatures: pairs, temperatureUnitShown: shown, line } = rated
   const places = placesOf(line.standardError_kJ_per_mol)
   return (
-    <div className="prediction-space">
+    <div className="prediction-space pairs-space">
       <TableView label="Table between two temperatures" copied={() => copyText(betweenCopyColumns(rated), pairs)} currentRow={null}>
         <table className="data-table parameter-table prediction-table">
           <caption className="visually-hidden">Between two temperatures</caption>
@@ -37,7 +37,7 @@ export function RateConstantPairs({ rated }: { readonly rated: RateConstantsResu
                 <td className="is-number">
                   {pair.Ea_kJ_per_mol === null || line.Ea_kJ_per_mol === null
                     ? ''
-                    : decimals(pair.Ea_kJ_per_mol - line.Ea_kJ_per_mol, places)}
+                    : formatSigned(pair.Ea_kJ_per_mol - line.Ea_kJ_per_mol, places)}
                 </td>
                 <td className="is-number">{decimals(pair.lnA, places)}</td>
               </tr>

@@ -9,13 +9,18 @@ export function methodFacts(profile: ProfileResult, levelIndex: number): readonl
   )
 }
 
-/** What is to be said at a level of each kind of interval that the method has. */
-export const intervalFacts = ({ profile, apart }: Pick<ShownOfMethod, 'profile' | 'apart'>, levelIndex: number): readonly string[] =>
-  intervalKinds.flatMap((kind) => {
+/** What is to be said at a level of the kinds of interval that the method has, once for all of which it holds: `Student-t, combined interval: …`. */
+export function intervalFacts({ profile, apart }: Pick<ShownOfMethod, 'profile' | 'apart'>, levelIndex: number): readonly string[] {
+  const namesByWords = new Map<string, string[]>()
+  for (const kind of intervalKinds) {
     const words = intervalWordsAt(intervalOfKind(profile, apart, kind), levelIndex)
-    const name = shortKinds[kind]
-    return words === null ? [] : [`${name.charAt(0).toUpperCase()}${name.slice(1)} interval: ${words}.`]
+    if (words !== null) namesByWords.set(words, [...(namesByWords.get(words) ?? []), shortKinds[kind]])
+  }
+  return [...namesByWords].map(([words, names]) => {
+    const kinds = names.join(', ')
+    return `${kinds.charAt(0).toUpperCase()}${kinds.slice(1)} interval: ${words}.`
   })
+}
 
 function systematic({ systematicError_percent: errors }: ProfileResult, levelIndex: number): string | null {
   const percent = errors[levelIndex] ?? null

@@ -95,6 +95,10 @@ describe('interval of a kind', () => {
       expect.stringMatching(/^Combined interval: holds nothing of the choice of baseline/),
     ])
     expect(facts(1)).toEqual([expect.stringMatching(/^Combined interval: /)])
+    const below: IntervalResult = { ...interval('combined', [-5, 142]), status: ['reaches-below-zero', 'ok'] }
+    expect(intervalFacts({ profile: wide, apart: { ...apart, intervals: [below] } }, 0)).toEqual([
+      expect.stringMatching(/^Student-t, combined interval: reaches below 0/),
+    ])
   })
 
   it('is the wanted one where the method can have it, else its own, also until the wanted one is worked out', () => {
