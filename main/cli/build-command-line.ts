@@ -33,7 +33,7 @@ const bundle = async (root: string, outDir: string, name: string): Promise<unkno
       emptyOutDir: false,
       rolldownOptions: {
         input: { [name]: join(root, `main/cli/${name}.ts`) },
-        output: { format: 'cjs', entryFileNames: '[name].cjs', codeSplitting: false },
+        output: { format: 'cjs', entryFileNames: '[name].cjs', codeSplitting: false, dynamicImportInCjs: false },
       },
     },
   })

@@ -1,4 +1,4 @@
-import { readdir, readFile, stat } from 'node:fs/promises'
+import { readdirSync, readFileSync, statSync, type Dirent, type Stats } from 'node:fs'
 import { basename, join, resolve } from 'node:path'
 import { exportsAmong, exportSuffixWords } from '../../shared-kinetics/contract/export-names.ts'
 import { largestUploadBytes } from '../../shared-kinetics/contract/host-api.ts'
@@ -18,33 +18,21 @@ export interface InputFile {
  * named twice is taken once.
  * @throws InputError for a path that is not there, a folder without exports, or a file that cannot be read
  */
-export async function expandPaths(paths: readonly string[], alsoSuffixes = /$^/): Promise<readonly InputFile[]> {
-  const found: string[] = []
-  for (const path of paths) found.push(...(await filesOf(path, alsoSuffixes)))
-  const seen = new Set<string>()
-  const once = found.filter((path) => {
-    const known = seen.has(resolve(path))
-    seen.add(resolve(path))
-    return !known
-  })
-  const files: InputFile[] = []
-  for (const path of once) files.push({ path, fileName: basename(path), bytes: await bytesOf(path) })
-  return files
+export function expandPaths(paths: readonly string[], alsoSuffixes = /$^/): readonly InputFile[] {
+  const once = new Map<string, string>()
+  for (const path of paths.flatMap((named) => filesOf(named, alsoSuffixes))) if (!once.has(resolve(path))) once.set(resolve(path), path)
+  return [...once.values()].map((path) => ({ path, fileName: basename(path), bytes: bytesOf(path) }))
 }
 
-async function filesOf(path: string, alsoSuffixes: RegExp): Promise<readonly string[]> {
-  const entry = await stat(path).catch((error: unknown) => {
-    throw cannotRead(path, error)
-  })
-  if (!entry.isDirectory()) {
+function filesOf(path: string, alsoSuffixes: RegExp): readonly string[] {
+  if (!statOf(path).isDirectory()) {
     if (isSavedCopy(path) && !alsoSuffixes.test(path))
       throw new InputError(`${path}: this is a saved study. Open it with: rampfold open ${path}`)
     return [path]
   }
-  const entries = await readdir(path, { withFileTypes: true }).catch((error: unknown) => {
-    throw cannotRead(path, error)
-  })
-  const files = entries.filter((inside) => !inside.isDirectory()).map((inside) => inside.name)
+  const files = entriesOf(path)
+    .filter((inside) => !inside.isDirectory())
+    .map((inside) => inside.name)
   const names = exportsAmong(files, alsoSuffixes)
   if (names.length === 0) {
     throw new InputError(`${path}: there are no exports in this folder. Name a folder that holds ${exportSuffixWords}, or name the files.`)
@@ -54,15 +42,22 @@ async function filesOf(path: string, alsoSuffixes: RegExp): Promise<readonly str
 
 const isSavedCopy = (path: string): boolean => path.toLowerCase().endsWith(savedCopySuffix)
 
-async function bytesOf(path: string): Promise<Uint8Array<ArrayBuffer>> {
+// Read at once, one after the other: there is nothing else to do before the last byte is here.
+const statOf = (path: string): Stats => orRefuse(path, () => statSync(path))
+const entriesOf = (path: string): readonly Dirent[] => orRefuse(path, () => readdirSync(path, { withFileTypes: true }))
+
+function bytesOf(path: string): Uint8Array<ArrayBuffer> {
+  if (statOf(path).size > largestUploadBytes) {
+    throw new InputError(`${path}: the file is larger than ${largestUploadBytes / 2 ** 20} MiB. Export the run with fewer rows.`)
+  }
+  return orRefuse(path, () => new Uint8Array(readFileSync(path)))
+}
+
+function orRefuse<Found>(path: string, find: () => Found): Found {
   try {
-    const { size } = await stat(path)
-    if (size > largestUploadBytes) {
-      throw new InputError(`${path}: the file is larger than ${largestUploadBytes / 2 ** 20} MiB. Export the run with fewer rows.`)
-    }
-    return new Uint8Array(await readFile(path))
+    return find()
   } catch (error) {
-    throw error instanceof InputError ? error : cannotRead(path, error)
+    throw cannotRead(path, error)
   }
 }
 

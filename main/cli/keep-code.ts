@@ -24,6 +24,7 @@ void (async () => {
       version: '0',
       workerUrl: nowhere,
       rendererUrl: nowhere,
+      helper: null,
     }
     for (const words of [
       ['inspect', runs],

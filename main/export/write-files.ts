@@ -23,7 +23,7 @@ export async function writeFiles(folder: string, files: readonly FileOut[]): Pro
   const passing = files.map((file) => join(folder, `.${file.fileName}${suffix}`))
   try {
     for (const file of files) await mustNotBeFolder(join(folder, file.fileName))
-    for (const [i, file] of files.entries()) await writeWhole(passing[i] ?? '', file.bytes)
+    await allSettled(files.map(async (file, i) => writeWhole(passing[i] ?? '', file.bytes)))
     for (const [i, file] of files.entries()) await rename(passing[i] ?? '', join(folder, file.fileName))
   } catch (error) {
     await Promise.all(passing.map(async (path) => rm(path, { force: true }).catch(() => undefined)))
@@ -61,6 +61,11 @@ async function mustNotBeFolder(path: string): Promise<void> {
   const found = await stat(path).catch(() => null)
   if (found?.isDirectory() === true)
     throw new WriteRefusal(`${path} cannot be written: a folder has that name. Move it, or choose another folder.`)
+}
+
+/** Each waits for the disk, so they wait together; and none is still at work when the first failure is told. */
+async function allSettled(works: readonly Promise<void>[]): Promise<void> {
+  for (const outcome of await Promise.allSettled(works)) if (outcome.status === 'rejected') throw outcome.reason
 }
 
 async function writeWhole(path: string, bytes: Uint8Array): Promise<void> {

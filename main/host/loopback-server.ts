@@ -1,4 +1,4 @@
-import { createServer, type IncomingMessage, type Server, type ServerResponse } from 'node:http'
+import type { IncomingMessage, Server, ServerResponse } from 'node:http'
 import type { AddressInfo } from 'node:net'
 import { httpPaths, uploadChunkBytes, type HostEvent } from '../../shared-kinetics/contract/host-api.ts'
 import { encodeFailure } from '../../shared-kinetics/contract/wire-answer.ts'
@@ -32,6 +32,8 @@ const heartbeat_ms = 25_000
 /** Serves pages, requests and events on 127.0.0.1 alone, to whoever holds this start's secret. */
 export async function startLoopbackServer({ host, files, secret, port = 0 }: LoopbackServerOptions): Promise<LoopbackServer> {
   const streams = new Set<ServerResponse>()
+  // Loaded when a server is asked for: the command line starts faster without.
+  const { createServer } = await import('node:http')
   const server = createServer()
   await listen(server, port)
   const taken = (server.address() as AddressInfo).port

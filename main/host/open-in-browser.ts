@@ -1,8 +1,7 @@
-import { spawn } from 'node:child_process'
-
 /** Asks the system to open an address in its browser. It is printed as well, so a system that cannot is no failure. */
-export function openInBrowser(address: string): void {
+export async function openInBrowser(address: string): Promise<void> {
   const [command, words] = commandFor(process.platform, address)
+  const { spawn } = await import('node:child_process')
   const child = spawn(command, words, { stdio: 'ignore', detached: true })
   child.on('error', () => undefined)
   child.unref()

@@ -28,7 +28,7 @@ export interface BrowserShellOptions {
   readonly dataFolder?: string | null
   /** For tests: other workers than the program's own, and another browser than the system's. */
   readonly pool?: TaskPool
-  readonly browse?: (address: string) => void
+  readonly browse?: (address: string) => unknown
 }
 
 export interface BrowserShell {
@@ -96,7 +96,7 @@ export async function startBrowserShell(options: BrowserShellOptions): Promise<B
   print(`Rampfold is open at ${server.address}`)
   print('It runs until you press Ctrl+C here. The address works on this machine only.')
   // Every account of this machine can read what a program is started with.
-  if (options.openBrowser) (options.browse ?? openInBrowser)(server.addressForOnce())
+  if (options.openBrowser) await (options.browse ?? openInBrowser)(server.addressForOnce())
   return { address: server.address, host, close, closed }
 }
 

@@ -42,36 +42,32 @@ export function localPolynomial(
   options: LocalPolynomialOptions,
 ): { readonly value: Float64Array; readonly slope: Float64Array } {
   const rowsInHalfWidth = (options.halfWidth * (x.length - 1)) / ((x.at(-1) ?? 0) - (x[0] ?? 0))
-  if (rowsInHalfWidth > manyRows) return throughNodes(x, meansOfCells(x, y, options.halfWidth / cellsPerHalfWidth), options)
   const value = new Float64Array(x.length)
   const slope = new Float64Array(x.length)
-  const fitAt = localFit({ x, y, within: null }, options)
-  for (let i = 0; i < x.length; i++) {
-    const fit = fitAt(x[i] as number)
-    value[i] = fit.value
-    slope[i] = fit.slope
+  const many = rowsInHalfWidth > manyRows
+  const samples = many ? meansOfCells(x, y, options.halfWidth / cellsPerHalfWidth) : { x, y, within: null }
+  const atNode = localFit(samples, options)
+  const atRow = localFit(samples, options)
+  const closely = options.closely ?? { first: 0, last: x.length - 1 }
+  const part = (first: number, last: number, nodes: number): void => {
+    if (rowsInHalfWidth > 2 * nodes) partThroughNodes(x, first, last, options.halfWidth / nodes, atNode, atRow, value, slope)
+    else for (let i = first; i <= last; i++) fitRow(x, i, atRow, value, slope)
   }
+  part(0, closely.first - 1, nodesWhereItMattersLittle)
+  part(closely.first, closely.last, nodesPerHalfWidth)
+  part(closely.last + 1, x.length - 1, nodesWhereItMattersLittle)
   return { value, slope }
+}
+
+function fitRow(x: Float64Array, i: number, atRow: (at: number) => LocalFit, value: Float64Array, slope: Float64Array): void {
+  const fit = atRow(x[i] as number)
+  value[i] = fit.value
+  slope[i] = fit.slope
 }
 
 /** The same at one place, which need not be one of the x. */
 export const localPolynomialAt = (x: Float64Array, y: Float64Array, at: number, options: LocalPolynomialOptions): LocalFit =>
   localFit({ x, y, within: null }, options)(at)
-
-/** Value and slope at every x, from regressions of `samples` at nodes. */
-function throughNodes(x: Float64Array, samples: Samples, options: LocalPolynomialOptions): { value: Float64Array; slope: Float64Array } {
-  const value = new Float64Array(x.length)
-  const slope = new Float64Array(x.length)
-  const last = x.length - 1
-  const first = options.closely?.first ?? 0
-  const end = options.closely?.last ?? last
-  const atNode = localFit(samples, options)
-  const atRow = localFit(samples, options)
-  partThroughNodes(x, 0, first - 1, options.halfWidth / nodesWhereItMattersLittle, atNode, atRow, value, slope)
-  partThroughNodes(x, first, end, options.halfWidth / nodesPerHalfWidth, atNode, atRow, value, slope)
-  partThroughNodes(x, end + 1, last, options.halfWidth / nodesWhereItMattersLittle, atNode, atRow, value, slope)
-  return { value, slope }
-}
 
 /** Rows `firstRow` to `lastRow`, with nodes at most `width` apart. */
 function partThroughNodes(
@@ -96,9 +92,7 @@ function partThroughNodes(
   for (let i = firstRow; i <= lastRow; ) {
     const at = x[i] as number
     if (!(step > 0) || (i > firstRow && at - (x[i - 1] as number) > step)) {
-      const fit = atRow(at)
-      value[i] = fit.value
-      slope[i] = fit.slope
+      fitRow(x, i, atRow, value, slope)
       i++
       continue
     }

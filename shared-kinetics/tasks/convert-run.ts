@@ -15,17 +15,16 @@ import { steadinessOf, unknownSteadiness, type Steadiness } from '../series/stea
 import { tellProgramme, type ToldProgramme } from '../series/tell-programme.ts'
 import { pooledRows } from '../series/pooled-rows.ts'
 import { usableRows, type UsableRows } from '../series/usable-rows.ts'
-import { valueAt } from '../series/value-at.ts'
-import { decimate } from '../signal/decimate.ts'
 import { lowerBound } from '../signal/lower-bound.ts'
 import { column } from '../units/quantity.ts'
 import type { BaselineKind } from './study-input.ts'
-import type { RunResult } from './study-result.ts'
 
 /** One run with its conversion: everything that does not depend on levels, methods or other runs. */
 export interface ConvertedRun {
   /** Those of a long run pooled (`pooledRows`). */
   readonly rows: UsableRows
+  /** How many they were before. */
+  readonly measuredRows: number
   /** Rows inside the window. */
   readonly range: RowRange
   readonly converted: Converted
@@ -41,7 +40,6 @@ export interface ConvertedRun {
   /** Where a hold begins, on the run's own clock, and the conversion lost by then to the heating up; NaN for other programmes. */
   readonly holdStart_s: number
   readonly conversionBeforeHold: number
-  readonly curve: RunResult['curve']
 }
 
 export interface ConversionSettings {
@@ -52,7 +50,7 @@ export interface ConversionSettings {
 }
 
 /** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
-export const convertRunVersion = 6
+export const convertRunVersion = 7
 
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
@@ -65,7 +63,6 @@ export function convertRun(
   settings: ConversionSettings,
   checkCancelled: () => void = () => undefined,
 ): ConvertedRun {
-  const { quantity } = settings
   const usable = usableRows(columns, settings.signalIndex, info.nominalHeatingRate, info.label)
   checkCancelled()
   const rows = pooledRows(usable)
@@ -76,6 +73,7 @@ export function convertRun(
   const told = tellProgramme(rows.time_s, rows.temperature_K, range.first + reaction.first, range.first + reaction.last, rows.rebuiltFrom)
   return {
     rows,
+    measuredRows: usable.time_s.length,
     range,
     converted,
     told,
@@ -85,7 +83,6 @@ export function convertRun(
     peak_K: peakTemperature(converted.curve),
     sampling: samplingOf(rows, range.first, converted.curve, usable.time_s.length / rows.time_s.length, info.label),
     ...startOfTheHold(told, converted),
-    curve: curveToDraw(usable, rows, range, converted, quantity === 'heat-flow'),
   }
 }
 
@@ -173,53 +170,4 @@ function windowUsed(
   const end_s = time_s[last] ?? Number.NaN
   if (asked?.kind !== 'time') return { kind: 'time', start_s, end_s }
   return { kind: 'time', start_s: first > 0 ? asked.start_s : start_s, end_s: last < time_s.length - 1 ? asked.end_s : end_s }
-}
-
-/** The run as it was measured, thinned, with its conversion where it has one. */
-function curveToDraw(
-  usable: UsableRows,
-  rows: UsableRows,
-  { first, last }: RowRange,
-  { curve, baseline }: Converted,
-  withBaseline: boolean,
-): RunResult['curve'] {
-  const kept =
-    usable === rows ? decimate([rows.signal, spread(curve.reactionRate_per_s, rows, first)]) : rowsOfPools(usable, rows, first, curve)
-  const inWindow = rows.time_s.subarray(first, last + 1)
-  const measured = (values: Float64Array): Float64Array => {
-    const thinned = new Float64Array(kept.length)
-    for (let k = 0; k < kept.length; k++) thinned[k] = values[kept[k] as number] as number
-    return thinned
-  }
-  const followed = (values: Float64Array): Float64Array => {
-    if (usable === rows) return measured(spread(values, rows, first))
-    const thinned = new Float64Array(kept.length)
-    for (let k = 0; k < kept.length; k++) thinned[k] = valueAt(inWindow, values, usable.time_s[kept[k] as number] as number)
-    return thinned
-  }
-  return {
-    time_s: measured(usable.time_s),
-    temperature_K: measured(usable.temperature_K),
-    signal: measured(usable.signal),
-    conversion: followed(curve.conversion),
-    reactionRate_per_s: followed(curve.reactionRate_per_s),
-    baseline: withBaseline && baseline !== null ? followed(baseline) : new Float64Array(0),
-  }
-}
-
-/** Values of the window as a column of the whole run, NaN outside. */
-function spread(values: Float64Array, { signal }: UsableRows, first: number): Float64Array {
-  if (values.length === signal.length) return values
-  const whole = new Float64Array(signal.length).fill(Number.NaN)
-  whole.set(values, first)
-  return whole
-}
-
-/** Rows to draw of a run that was pooled: the extremes of its signal, and the rows nearest to those of its reaction rate. */
-function rowsOfPools(usable: UsableRows, rows: UsableRows, first: number, curve: Converted['curve']): Uint32Array {
-  const kept = new Set(decimate([usable.signal], 500))
-  for (const pool of decimate([curve.reactionRate_per_s], 500)) {
-    kept.add(Math.min(usable.time_s.length - 1, lowerBound(usable.time_s, rows.time_s[first + pool] ?? 0)))
-  }
-  return Uint32Array.from(kept).sort()
 }

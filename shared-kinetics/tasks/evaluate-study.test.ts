@@ -428,29 +428,35 @@ describe('steps are remembered', () => {
     const runs = atRates([2, 5, 10])
     const cache: EvaluationCache = new Map()
     const kinds = (): Record<string, number> => {
-      const count: Record<string, number> = { convert: 0, levels: 0, method: 0 }
+      const count: Record<string, number> = { convert: 0, levels: 0, method: 0, draw: 0 }
       for (const key of cache.keys()) {
-        const kind = key.startsWith('method') ? 'method' : key.includes('"levels"') ? 'levels' : 'convert'
+        const kind = key.startsWith('method')
+          ? 'method'
+          : key.startsWith('["draw"')
+            ? 'draw'
+            : key.includes('"levels"')
+              ? 'levels'
+              : 'convert'
         count[kind] = (count[kind] ?? 0) + 1
       }
       return count
     }
     const first = evaluate(runs, { methods: ['friedman'] }, cache)
-    expect(kinds()).toEqual({ convert: 3, levels: 3, method: 1 })
+    expect(kinds()).toEqual({ convert: 3, levels: 3, method: 1, draw: 3 })
     evaluate(runs, { methods: ['friedman', 'kas'] }, cache)
-    expect(kinds()).toEqual({ convert: 3, levels: 3, method: 2 })
+    expect(kinds()).toEqual({ convert: 3, levels: 3, method: 2, draw: 3 })
     evaluate(runs, { methods: ['friedman'], levels: [0.5] }, cache)
-    expect(kinds()).toEqual({ convert: 3, levels: 6, method: 3 })
+    expect(kinds()).toEqual({ convert: 3, levels: 6, method: 3, draw: 3 })
     evaluate(runs, { methods: ['friedman'], meanRange: [0.2, 0.8], baseline: 'straight' }, cache)
-    expect(kinds()).toEqual({ convert: 3, levels: 6, method: 3 })
+    expect(kinds()).toEqual({ convert: 3, levels: 6, method: 3, draw: 3 })
     const relabelled = runs.map((run, i) => (i === 0 ? { ...run, info: { ...run.info, label: 'Renamed' } } : run))
     expect(evaluate(relabelled, { methods: ['friedman'] }, cache).runs[0]?.label).toBe('Renamed')
-    expect(kinds()).toEqual({ convert: 3, levels: 6, method: 3 })
+    expect(kinds()).toEqual({ convert: 3, levels: 6, method: 3, draw: 3 })
     const narrower = runs.map((run, i) =>
       i === 0 ? { ...run, info: { ...run.info, window: { kind: 'temperature', start_K: 400, end_K: 800 } as const } } : run,
     )
     evaluate(narrower, { methods: ['friedman'] }, cache)
-    expect(kinds()).toEqual({ convert: 4, levels: 7, method: 4 })
+    expect(kinds()).toEqual({ convert: 4, levels: 7, method: 4, draw: 4 })
     expect(evaluate(runs, { methods: ['friedman'] }, cache)).toEqual(first)
     expect(evaluate(runs, { methods: ['friedman'] })).toEqual(first)
   })

@@ -9,12 +9,13 @@ import { pointsOfRun } from './apply-borchardt-daniels.ts'
 import { applyPeakMethods, type PeakResults } from './apply-peak-methods.ts'
 import { conversionAtTemperature } from './conversion-at-temperature.ts'
 import { halfHeights } from './half-heights.ts'
-import type { EvaluationCache } from './memo.ts'
+import { curveToDraw, noCurve } from './curve-to-draw.ts'
+import { memoryOf, remember, type EvaluationCache } from './memo.ts'
 import { profileResult } from './profile-result.ts'
 import { runResult } from './run-result.ts'
 import { seriesOfStudy, type GroupedRun } from './series-of-study.ts'
 import type { StudyInput } from './study-input.ts'
-import type { StudyResult } from './study-result.ts'
+import type { RunResult, StudyResult } from './study-result.ts'
 
 /**
  * Everything that follows from a study: raw columns to conversion, to runs read at common levels, to Ea by every method asked for, to findings.
@@ -45,8 +46,13 @@ export function evaluateStudy(
   const profiles = chosen.map((info) => {
     const result = resultOf(info)
     step()
-    return profileResult(info, result, settings.levels, settings.meanRange, groups, study.withoutPhi !== true, context.checkCancelled)
+    return profileResult(info, result, settings.levels, settings.meanRange, groups, study.withoutCurves !== true, context.checkCancelled)
   })
+  const curveOf = ({ info, order, converted }: GroupedRun): RunResult['curve'] => {
+    const measured = columns.get(info.columnsKey)
+    if (study.withoutCurves === true || measured === undefined) return noCurve
+    return remember(cache, JSON.stringify(['draw', drawVersion, order.key]), () => curveToDraw(order, measured, converted), memoryOf)
+  }
   const { kissinger, peakMethods, leftOut: kissingerLeftOut } = peakResultsOf(runs, signal, context.checkCancelled)
   const result = {
     levels: settings.levels,
@@ -54,7 +60,7 @@ export function evaluateStudy(
     signalsToChooseFrom: toChooseFrom,
     runs: runs.map((run) => {
       context.checkCancelled()
-      return runResult(run.info, run.signal, run.converted, run.levels, run.group)
+      return runResult(run.info, run.signal, run.converted, run.levels, run.group, curveOf(run))
     }),
     profiles,
     kissinger,
@@ -82,6 +88,9 @@ export function evaluateStudy(
   step()
   return { ...result, findings }
 }
+
+/** Bump when `curveToDraw` gives other points: remembered ones of another version are not used. */
+const drawVersion = 1
 
 const methodsByDefault = Object.values(methods).filter(({ info }) => info.byDefault).length
 

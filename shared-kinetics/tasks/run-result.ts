@@ -7,7 +7,14 @@ import { maybe, maybes } from './maybe.ts'
 import type { Maybe, RunResult } from './study-result.ts'
 
 /** One evaluated run in the terms of `StudyResult`. */
-export function runResult(info: RunInfo, signal: SignalInfo, run: ConvertedRun, read: LevelsRead, programmeGroup: number): RunResult {
+export function runResult(
+  info: RunInfo,
+  signal: SignalInfo,
+  run: ConvertedRun,
+  read: LevelsRead,
+  programmeGroup: number,
+  curve: RunResult['curve'],
+): RunResult {
   const { programme } = run.told
   const constant = programme.kind === 'constant-heating-rate' ? programme : null
   const perGram = areaPerGram(info, signal, run.converted.area)
@@ -39,7 +46,7 @@ export function runResult(info: RunInfo, signal: SignalInfo, run: ConvertedRun, 
     timeAtLevel_s: maybes(read.time_s),
     reactionRateAtLevel_per_s: maybes(read.reactionRate_per_s),
     signalAtLevel: Array.from(read.time_s, (time) => maybe(valueAt(run.rows.time_s, run.rows.signal, time))),
-    curve: run.curve,
+    curve,
   }
 }
 

@@ -9,9 +9,10 @@ import type { SignalQuantity } from '../series/signal-quantity.ts'
 import { column, type Column } from '../units/quantity.ts'
 import { applyMethod, chooseMethods } from './apply-methods.ts'
 import { chooseSignal } from './choose-signal.ts'
-import { convertRun, convertRunVersion, type ConvertedRun } from './convert-run.ts'
+import { conversionOrder, type ConversionOrder } from './conversion-order.ts'
+import { convertRun, type ConvertedRun } from './convert-run.ts'
 import { memoryOf, remember, type EvaluationCache } from './memo.ts'
-import type { AnalysisSettings, StudyInput } from './study-input.ts'
+import type { StudyInput } from './study-input.ts'
 import { withoutLateHolds } from './without-late-holds.ts'
 
 /** A study's runs converted, read at the levels and put together, and the methods that are to be run on them. */
@@ -38,12 +39,13 @@ export interface StudySeries {
  * @throws KineticsError `bad-levels`; Cancelled
  */
 export function seriesOfStudy(
-  { runs: all, settings }: StudyInput,
+  study: StudyInput,
   columns: ReadonlyMap<string, RunColumns | undefined>,
   context: TaskContext,
   cache: EvaluationCache,
   step: () => void = () => undefined,
 ): StudySeries {
+  const { runs: all, settings } = study
   checkLevels(settings.levels)
   const used = all.filter((run) => run.use)
   const { signal, toChooseFrom } = chooseSignal(used, settings.signal)
@@ -52,7 +54,7 @@ export function seriesOfStudy(
   for (const info of used) {
     context.checkCancelled()
     try {
-      if (signal !== null) read.push(readRun(info, columns.get(info.columnsKey), signal, settings, cache, context.checkCancelled))
+      if (signal !== null) read.push(readRun(info, columns.get(info.columnsKey), signal, study, cache, context.checkCancelled))
     } catch (error) {
       if (!(error instanceof KineticsError)) throw error
       unusable.push({ info, error })
@@ -92,6 +94,7 @@ const readVersion = 1
 export interface ReadRun {
   readonly info: RunInfo
   readonly signal: SignalInfo
+  readonly order: ConversionOrder
   readonly converted: ConvertedRun
   readonly levels: LevelsRead
   /** Names everything that the two before depend on. */
@@ -106,42 +109,19 @@ function readRun(
   info: RunInfo,
   columns: RunColumns | undefined,
   quantity: SignalQuantity,
-  settings: AnalysisSettings,
+  study: StudyInput,
   cache: EvaluationCache,
   checkCancelled: () => void,
 ): ReadRun {
   if (columns === undefined) {
     throw new KineticsError('unknown-run', `The measured columns of ${info.label} are not here. Add its file again.`, { run: info.label })
   }
-  const signalIndex = info.signals.findIndex((signal) => signal.quantity === quantity)
-  const signal = info.signals[signalIndex]
-  if (signal === undefined) {
-    throw new KineticsError(
-      'no-signal',
-      `${info.label} has no ${quantity.replace('-', ' ')} column. Choose a signal that all runs have, or leave this run out.`,
-      { run: info.label, signal: quantity },
-    )
-  }
-  const window = info.window ?? settings.window
-  const conversionKey = JSON.stringify([
-    'convert',
-    convertRunVersion,
-    info.columnsKey,
-    signalIndex,
-    quantity,
-    window,
-    quantity === 'heat-flow' ? settings.baseline : null,
-    info.hasTime ? null : info.nominalHeatingRate,
-  ])
-  const converted = remember(
-    cache,
-    conversionKey,
-    () => convertRun(info, columns, { quantity, signalIndex, window, baseline: settings.baseline }, checkCancelled),
-    memoryOf,
-  )
-  const key = JSON.stringify([conversionKey, 'levels', readVersion, settings.levels])
-  const levels = remember(cache, key, () => readAtLevels(converted.converted.curve, settings.levels, checkCancelled), memoryOf)
-  return { info, signal, converted, levels, key }
+  const order = conversionOrder(info, quantity, study)
+  const converted = remember(cache, order.key, () => convertRun(info, columns, order.settings, checkCancelled), memoryOf)
+  const { levels: asked } = study.settings
+  const key = JSON.stringify([order.key, 'levels', readVersion, asked])
+  const levels = remember(cache, key, () => readAtLevels(converted.converted.curve, asked, checkCancelled), memoryOf)
+  return { info, signal: order.signal, order, converted, levels, key }
 }
 
 /** Slow programmes first; replicates in the order in which the study has them. */

@@ -27,6 +27,6 @@ export interface StudyInput {
   readonly settings: AnalysisSettings
   /** Notes that belong to no run: files that were left out on request. */
   readonly importNotes?: readonly ImportNote[]
-  /** Nobody will look at Phi(Ea): its curves are left out of the profiles. */
-  readonly withoutPhi?: boolean
+  /** Nobody will look at a chart of the runs or of Phi(Ea): their curves are left empty. */
+  readonly withoutCurves?: boolean
 }

@@ -57,7 +57,7 @@ export async function activation(words: readonly string[], io: CliIo): Promise<n
     tableStyle: tableStyleOption(parsed.value('decimal'), parsed.value('separator')),
   }
   const quiet = parsed.flag('quiet')
-  const files = await expandPaths(parsed.paths)
+  const files = expandPaths(parsed.paths)
   const {
     result,
     uncertainty: apart,

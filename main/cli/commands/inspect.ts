@@ -32,7 +32,7 @@ export async function inspect(words: readonly string[], io: CliIo): Promise<numb
   const parsed = parseWords('inspect', words, { json: 'flag', ...importOptionKinds })
   if (parsed.paths.length === 0) throw new UsageError('inspect needs a file or a folder: rampfold inspect PATH….')
   const tasks = createTaskTable(importOptionsFrom(parsed))
-  const files = await expandPaths(parsed.paths)
+  const files = expandPaths(parsed.paths)
   const progress = createProgressLine(io, false)
   const inspected: InspectedFile[] = []
   const refused: RefusedFile[] = []
@@ -53,7 +53,7 @@ const plainContext: TaskContext = { checkCancelled: () => undefined, progress: (
 const stageOfRuns = (finding: Finding): boolean => finding.stage === 'runs' && finding.code !== 'too-few-programmes'
 
 async function inspectRun(run: ImportedRun, tasks: TaskTable): Promise<InspectedRun> {
-  const study = { runs: [run.info], settings: defaultSettings }
+  const study = { runs: [run.info], settings: defaultSettings, withoutCurves: true }
   try {
     const result = await tasks['evaluate-study']({ study, columns: new Map([[run.info.columnsKey, run.columns]]) }, plainContext)
     return { run, result: result.runs[0] ?? null, findings: result.findings.filter(stageOfRuns) }

@@ -7,7 +7,7 @@ import { parseWords } from '../parse-words.ts'
 /** `rampfold open`: the browser shell, until it is ended. */
 export async function open(words: readonly string[], io: CliIo): Promise<number> {
   const parsed = parseWords('open', words, { 'no-browser': 'flag' })
-  const files = parsed.paths.length === 0 ? [] : await expandPaths(parsed.paths, /\.rampfold$/i)
+  const files = parsed.paths.length === 0 ? [] : expandPaths(parsed.paths, /\.rampfold$/i)
   try {
     const shell = await startBrowserShell({
       workerUrl: io.workerUrl,

@@ -30,7 +30,7 @@ export async function rateConstants(words: readonly string[], io: CliIo): Promis
       `rate-constants takes one table, and ${parsed.paths.length} paths are named. Put all rows into one file; or name a kinetic model with --model, if these are isothermal runs.`,
     )
   }
-  const files = await expandPaths(parsed.paths)
+  const files = expandPaths(parsed.paths)
   if (order.from.kind === 'table' && files.length > 1) {
     throw new InputError(
       `${parsed.paths[0]}: this folder holds ${files.length} files, and one table is read. Name the file; or name a kinetic model with --model, if these are isothermal runs.`,

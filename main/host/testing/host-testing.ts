@@ -91,6 +91,7 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
       result: { levels: study.settings.levels, seed, draws, profiles: [] },
       order: { models: [], sources: noSources },
     }),
+    'convert-run': () => null,
     'draw-energies': () => [],
     'intervals-of-draws': () => new Map(),
     'evaluate-study': async ({ study, columns }, context) => {
