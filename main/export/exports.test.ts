@@ -127,6 +127,7 @@ const e698: PeakMethodResult = {
   lnA_per_s: 34.25,
   lnAStandardError: 0.375,
   covarianceEaLnA_kJ_per_mol: 0.75,
+  covarianceWithOrder: null,
   r2: 0.999,
   numbers: [
     { key: 'confirmation-temperature', label: 'temperature of a half-life of 60 min', value: 407.65, standardError: 0.5, unit: 'K' },
@@ -151,6 +152,7 @@ const doesNotApply: PeakMethodResult = {
   lnA_per_s: null,
   lnAStandardError: null,
   covarianceEaLnA_kJ_per_mol: null,
+  covarianceWithOrder: null,
   r2: null,
   numbers: [],
   remarks: [],

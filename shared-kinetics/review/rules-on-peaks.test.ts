@@ -20,6 +20,7 @@ const nothing: PeakMethodResult = {
   lnA_per_s: null,
   lnAStandardError: null,
   covarianceEaLnA_kJ_per_mol: null,
+  covarianceWithOrder: null,
   r2: null,
   numbers: [],
   remarks: [],

@@ -84,6 +84,8 @@ function resultOf({ peakMethods }: StudyResult, method: string): PeakMethodResul
 
 const numberOf = ({ numbers }: PeakMethodResult, key: string): number => numbers.find((number) => number.key === key)?.value ?? Number.NaN
 
+const correlation = (covariance: number | null | undefined, a = Number.NaN, b = Number.NaN): number => (covariance ?? Number.NaN) / (a * b)
+
 describe('peak and single-run methods on simulated runs', () => {
   it('by heat flow, first order: every method in its order, each near what theory says of it', () => {
     const result = evaluate(ramps(first, 'heat-flow', { exothermic: 'up' }))
@@ -105,7 +107,10 @@ describe('peak and single-run methods on simulated runs', () => {
   })
 
   it('ASTM E698 tells where half of the reaction is over in 60 min, and how to confirm it', () => {
-    const e698 = resultOf(evaluate(ramps(first, 'heat-flow', { exothermic: 'up' })), 'astm-e698')
+    const result = evaluate(ramps(first, 'heat-flow', { exothermic: 'up' }))
+    const e698 = resultOf(result, 'astm-e698')
+    // Of 2, 5, 10 and 20 K/min, 5 lies nearest to their geometric mean of 6.7.
+    expect(numberOf(e698, 'peak-at-middle-rate')).toBeCloseTo(result.runs[1]?.peak_K ?? 0, 8)
     const T = numberOf(e698, 'confirmation-temperature')
     // At the true Ea and A: k = ln 2/3600 s.
     const expected = step.Ea_J_per_mol / (gasConstant_J_per_mol_K * Math.log((step.A_per_s * 3600) / Math.LN2))
@@ -127,6 +132,16 @@ describe('peak and single-run methods on simulated runs', () => {
       expect(Math.abs(numberOf(run, 'order') - 2)).toBeLessThan(0.03)
       expect(Math.abs((run.lnA_per_s ?? 0) - Math.log(1e12))).toBeLessThan(0.4)
       expect(run.dof).toBe(14)
+      // Rate and order at the middle of the points are known far better than either alone: Ea, ln Z and n go together, and the matrix has the determinant of one that can be.
+      const [e, z, n] = [run.standardError_kJ_per_mol, run.lnAStandardError, run.numbers[0]?.standardError].map(
+        (error) => error ?? Number.NaN,
+      )
+      const ez = correlation(run.covarianceEaLnA_kJ_per_mol, e, z)
+      const en = correlation(run.covarianceWithOrder?.Ea_kJ_per_mol, e, n)
+      const zn = correlation(run.covarianceWithOrder?.lnA, z, n)
+      expect(Math.min(ez, en, zn)).toBeGreaterThan(0.9)
+      expect(Math.max(ez, en, zn)).toBeLessThanOrEqual(1)
+      expect(1 + 2 * ez * en * zn - ez ** 2 - en ** 2 - zn ** 2).toBeGreaterThan(-1e-9)
       expect(run.remarks.join(' ')).toMatch(/not to be relied on.*one heating rate is never enough/)
     }
   })

@@ -147,6 +147,12 @@ function e698Result(runs: readonly PeakRun[], peaks: readonly FullRatePeak[], si
       peakMethodNumber('first-estimate', 'Ea before it is refined', joulesToKilojoules(estimate.firstEstimate), 'kJ/mol'),
       peakMethodNumber('D', 'D = −d ln p/dx', estimate.D, '1'),
       peakMethodNumber(
+        'peak-at-middle-rate',
+        'peak temperature for D and Z, of the heating rate nearest the middle',
+        estimate.middlePeak,
+        'K',
+      ),
+      peakMethodNumber(
         'confirmation-temperature',
         'temperature of a half-life of 60 min',
         estimate.confirmationTemperature,

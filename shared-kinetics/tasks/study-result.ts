@@ -222,6 +222,7 @@ export type PeakMethodNumberKey =
   | 'conversion-at-peak-first-order'
   | 'first-estimate'
   | 'D'
+  | 'peak-at-middle-rate'
   | 'confirmation-temperature'
   | 'order'
   | 'avrami-exponent-lowest'
@@ -249,6 +250,11 @@ export interface PeakMethodResult {
   readonly lnA_per_s: Maybe
   readonly lnAStandardError: Maybe
   readonly covarianceEaLnA_kJ_per_mol: Maybe
+  /**
+   * Covariances of Ea and of ln A with the reaction order where all three come out of one fit (Borchardt–Daniels); null elsewhere. With the standard errors they are the whole matrix,
+   * which the error of a rate at some temperature and conversion needs.
+   */
+  readonly covarianceWithOrder: { readonly Ea_kJ_per_mol: Maybe; readonly lnA: Maybe } | null
   readonly r2: Maybe
   readonly numbers: readonly PeakMethodNumber[]
   /** What to know before relying on it, in sentences: scope, assumptions, how to confirm it. */

@@ -19,6 +19,7 @@ const e698: PeakMethodResult = {
   lnA_per_s: 30.322,
   lnAStandardError: 0.538,
   covarianceEaLnA_kJ_per_mol: 1.4,
+  covarianceWithOrder: null,
   r2: 0.999411,
   numbers: [
     { key: 'D', label: 'D = −d ln p/dx', value: 1.05497, standardError: null, unit: '1' },
