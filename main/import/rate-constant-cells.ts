@@ -1,9 +1,9 @@
 import type { DecimalSignWord, DelimiterWord } from '../../shared-kinetics/contract/import-options.ts'
+import { cellWithPlainPowers, lineWithLoweredPowers, withPlainPowers } from '../../shared-kinetics/units/plain-powers.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { unitOf } from './file-unit.ts'
 import type { Refuse } from './import-refusal.ts'
 import { isMissingMark, parseNumber } from './parse-number.ts'
-import { cellWithPlainPowers, lineWithLoweredPowers, withPlainPowers } from './plain-powers.ts'
 import { linesWithinLimits, rateConstantTextLimits } from './rate-constant-limits.ts'
 import { delimiterCharacter, splitCells, withoutEmptyEnd } from './split-cells.ts'
 

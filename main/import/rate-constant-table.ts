@@ -1,10 +1,10 @@
 import { createHash } from 'node:crypto'
 import { rateConstantLimits, type RateConstantReadOptions } from '../../shared-kinetics/contract/rate-constant-schema.ts'
 import type { RateConstantNote, RateConstantSource, RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
+import { hasPowerWithoutSign, powerWithoutSign } from '../../shared-kinetics/units/plain-powers.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { decodeText } from './decode-text.ts'
 import { ImportRefusal, quoted, type Refuse } from './import-refusal.ts'
-import { hasPowerWithoutSign } from './plain-powers.ts'
 import { refuseBinary } from './refuse-binary.ts'
 import { cellReadings, linesOf, type CellReading, type NumberedLine } from './rate-constant-cells.ts'
 import { planRateConstantColumns } from './rate-constant-columns.ts'
@@ -58,11 +58,7 @@ export function readRateConstantText(input: RateConstantText, options: RateConst
         ? lines.find(({ text }) => hasPowerWithoutSign(text))
         : undefined
     if (lost === undefined) throw error
-    throw refuse(
-      lost.number,
-      `${quoted(lost.text)} holds a power of ten whose raised digits were lost: “× 107” may be 10^7 or a hundred and seven.`,
-      'Write it as 7.87e7 or 7.87 × 10^7.',
-    )
+    throw refuse(lost.number, `${quoted(lost.text)} ${powerWithoutSign.reason}`, powerWithoutSign.remedy)
   }
 }
 

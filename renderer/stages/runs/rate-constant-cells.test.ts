@@ -59,6 +59,18 @@ describe('cells of a table of rate constants', () => {
       expect([text, parseCellRateConstant(text, '1/s').ok]).toEqual([text, false])
   })
 
+  it('ask about a power of ten that lost its height and sign, as a paste does', () => {
+    for (const text of ['7.87 × 107', '7.87 x 10 7', '7.87·1012', '7,87*107 1/s']) {
+      const reason = expect.stringContaining('“× 107” may be 10^7 or a hundred and seven. Write it as 7.87e7 or 7.87 × 10^7.') as unknown
+      expect([text, parseCellRateConstant(text, '1/s')]).toEqual([text, { ok: false, reason }])
+      expect([text, parseCellUncertainty(text, { rateConstant: 1 }, '1/s')]).toEqual([text, { ok: false, reason }])
+    }
+    for (const text of ['7.87e7', '7.87 × 10^7', '7.87×10⁷', '7,87*10**7', '7.87·10^{7} s⁻¹', '7.87 × 10+7 1/s'])
+      expect([text, parseCellRateConstant(text, '1/s')]).toEqual([text, { ok: true, value: { rateConstant: 7.87e7, rateUnit: '1/s' } }])
+    // A sign says that it is a power, as a page that lost the height prints it.
+    expect(parseCellRateConstant('7.87 × 10−7', '1/s')).toMatchObject({ ok: true, value: { rateConstant: 7.87e-7 } })
+  })
+
   it('take an uncertainty in the unit of k or as a share of it, or none', () => {
     expect(parseCellUncertainty('5 %', { rateConstant: 2e-4 }, '1/s')).toEqual({ ok: true, value: 1e-5 })
     expect(parseCellUncertainty('2e-6', { rateConstant: 2e-4 }, '')).toEqual({ ok: true, value: 2e-6 })

@@ -1,6 +1,6 @@
 import type { RateConstantRow, TemperatureUnit } from '../../../shared-kinetics/contract/study-result.ts'
 import { parseTemperature, type Parsed } from '../../../shared-kinetics/units/parse-quantity.ts'
-import { plainSuperscripts } from '../../../shared-kinetics/units/plain-superscripts.ts'
+import { cellWithPlainPowers, hasPowerWithoutSign, powerWithoutSign, withPlainPowers } from '../../../shared-kinetics/units/plain-powers.ts'
 import { parseRateUnit } from '../../../shared-kinetics/units/rate-unit.ts'
 import { inUnit, ratioOfUnits, temperatureUnitWords } from './rate-constant-edits.ts'
 
@@ -26,6 +26,8 @@ export interface CellRateConstant {
 
 /** `3.46e-5`, `3,46·10⁻⁵`, `2.1e-3 1/min`: a unit of the same kind is converted to the table's own. */
 export function parseCellRateConstant(text: string, rateUnit: string): Parsed<CellRateConstant> {
+  const lost = lostPower(text)
+  if (lost !== null) return lost
   const split = splitNumber(text)
   if (split === null) return no(text.trim() === '' ? 'A rate constant is missing.' : `“${text.trim()}” is no number; write k as 3.46e-5.`)
   if (!(split.number > 0)) return no(`A rate constant is greater than 0; ${text.trim()} has no logarithm.`)
@@ -42,6 +44,8 @@ export function parseCellRateConstant(text: string, rateUnit: string): Parsed<Ce
 /** One standard uncertainty of k: in the unit of k, or as a share of it (`5 %`); empty for none. */
 export function parseCellUncertainty(text: string, row: Pick<RateConstantRow, 'rateConstant'>, rateUnit: string): Parsed<number | null> {
   if (text.trim() === '') return { ok: true, value: null }
+  const lost = lostPower(text)
+  if (lost !== null) return lost
   const split = splitNumber(text)
   if (split === null) return no(`“${text.trim()}” is no number; write u(k) as 2e-6 or as 5 %.`)
   if (!(split.number > 0)) return no('An uncertainty is greater than 0; leave the cell empty where there is none.')
@@ -79,18 +83,22 @@ export function rateConstantText(value: number | null): string {
   return digits < 1e-2 || digits >= 1e5 ? digits.toExponential().replace('e+', 'e') : String(digits)
 }
 
-const shape = /^([+-]?(?:\d+(?:[.,]\d*)?|[.,]\d+))\s*(?:e([+-]?\d+)|[x×·*]\s*10\s*\^?\s*\(?([+-]?\d+)\)?)?\s*(.*)$/i
+const shape = /^([+-]?(?:\d+(?:[.,]\d*)?|[.,]\d+))(?:e([+-]?\d+))?\s*(.*)$/i
 
-/** A number with decimal point or comma and, perhaps, a power of ten, and what stands behind it; null for what is no number. */
+/**
+ * A number with decimal point or comma and, perhaps, a power of ten, and what stands behind it; null for what is no number. Powers of ten are read as in a table that is
+ * pasted.
+ */
 function splitNumber(text: string): { readonly number: number; readonly rest: string } | null {
-  const written = text.trim().replaceAll('−', '-')
-  // Raised digits belong to the number only behind its 10; behind a unit they are the unit's own.
-  const plain = written.replace(/(10)\^?([⁺⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+)/, (_, ten: string, raised: string) => `${ten}${plainSuperscripts(raised)}`)
+  const plain = cellWithPlainPowers(withPlainPowers(text.trim())).replaceAll('−', '-')
   const match = shape.exec(plain)
   if (match === null) return null
-  const exponent = match[2] ?? match[3] ?? '0'
-  const number = Number(`${(match[1] ?? '').replace(',', '.')}e${exponent}`)
-  return Number.isFinite(number) ? { number, rest: (match[4] ?? '').trim() } : null
+  const number = Number(`${(match[1] ?? '').replace(',', '.')}e${match[2] ?? '0'}`)
+  return Number.isFinite(number) ? { number, rest: (match[3] ?? '').trim() } : null
 }
+
+/** Why a number cannot be told: its power of ten lost height and sign; null for any other text. */
+const lostPower = (text: string): { readonly ok: false; readonly reason: string } | null =>
+  hasPowerWithoutSign(withPlainPowers(text)) ? no(`“${text.trim()}” ${powerWithoutSign.reason} ${powerWithoutSign.remedy}`) : null
 
 const sentence = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)

@@ -1,4 +1,4 @@
-import { plainSuperscripts } from '../../shared-kinetics/units/plain-superscripts.ts'
+import { plainSuperscripts } from './plain-superscripts.ts'
 
 // A blank here is any but a tab, which parts cells.
 const times = '[×✕✖x·⋅∙•∗*]'
@@ -39,3 +39,9 @@ export const lineWithLoweredPowers = (line: string): string =>
 
 /** `7.87 × 107`: a power without height and sign, or a product. */
 export const hasPowerWithoutSign = (line: string): boolean => withoutSign.test(line)
+
+/** What is said of it, behind the text that holds it, and the way out. */
+export const powerWithoutSign = {
+  reason: 'holds a power of ten whose raised digits were lost: “× 107” may be 10^7 or a hundred and seven.',
+  remedy: 'Write it as 7.87e7 or 7.87 × 10^7.',
+} as const
