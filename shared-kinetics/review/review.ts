@@ -33,7 +33,7 @@ import { tooFewProgrammes } from './rules/too-few-programmes.ts'
 import { unequalVariance } from './rules/unequal-variance.ts'
 import { windowCutsReaction } from './rules/window-cuts-reaction.ts'
 
-const rules: readonly ((input: ReviewInput) => Finding[])[] = [
+const rules: readonly ((input: ReviewInput, checkCancelled: () => void) => Finding[])[] = [
   runUnusable,
   tooFewProgrammes,
   narrowHeatingRateSpread,
@@ -72,7 +72,7 @@ const rules: readonly ((input: ReviewInput) => Finding[])[] = [
 export function review(input: ReviewInput, checkCancelled: () => void = () => undefined): Finding[] {
   const findings = rules.flatMap((rule) => {
     checkCancelled()
-    return rule(input)
+    return rule(input, checkCancelled)
   })
   return severities.flatMap((severity) => findings.filter((finding) => finding.severity === severity))
 }

@@ -35,13 +35,17 @@ const straightWithin = 0.05
  *
  * The lines are ln(beta/T²) against 1/T where all heating rates are constant within 5 %, else ln(dalpha/dt) against 1/T.
  *
+ * @throws Cancelled, by `checkCancelled`
  * @source cook-weisberg-1982
  */
-export function runsAtOdds({ result, runs }: ReviewInput, leastChange: number): RunAtOdds[] {
+export function runsAtOdds({ result, runs }: ReviewInput, leastChange: number, checkCancelled: () => void): RunAtOdds[] {
   const n = runs.length
   if (n < fewestRuns) return []
   const limit = studentTQuantile(1 - error / (2 * n), n - 3)
-  const lines = result.levels.flatMap((level, at) => linesWithout(runs, level, at))
+  const lines = result.levels.flatMap((level, at) => {
+    checkCancelled()
+    return linesWithout(runs, level, at)
+  })
   return runs.flatMap((run, i): RunAtOdds[] => {
     const off = lines.filter(({ points, Ea_kJ_per_mol: Ea }) => {
       const point = points[i]

@@ -10,11 +10,11 @@ import { digits, percent } from '../words.ts'
  * Fires where the median half interval is more than 10 % of Ea, but would not be with the 1.96 of many runs in place of Student's t: the width is for want of runs.
  * Where it would be too, or one run is at odds with the others, `runs-do-not-agree` speaks.
  */
-export function intervalWideBecauseFewRuns(input: ReviewInput): Finding[] {
+export function intervalWideBecauseFewRuns(input: ReviewInput, checkCancelled: () => void = () => undefined): Finding[] {
   const profile = leadingProfile(input.result.profiles)
   const half = profile === undefined ? null : halfIntervalOf(profile)
   if (profile === undefined || half === null || half.share <= wideInterval || half.shareOfMany > wideInterval) return []
-  if (runsAtOdds(input, 0).length > 0) return []
+  if (runsAtOdds(input, 0, checkCancelled).length > 0) return []
   const { dof } = profile.interval
   const next = studentTQuantile(0.975, dof + 1)
   return [

@@ -9,8 +9,8 @@ const leastChange = 0.05
  * Fires, with five runs or more, for a run that lies off the lines through the others beyond chance, to one side at more than half of the levels, and without which Ea
  * is different by more than 5 %.
  */
-export function outlierRun(input: ReviewInput): Finding[] {
-  return runsAtOdds(input, leastChange).map(({ run, levels, judged, limit, example }): Finding => {
+export function outlierRun(input: ReviewInput, checkCancelled: () => void = () => undefined): Finding[] {
+  return runsAtOdds(input, leastChange, checkCancelled).map(({ run, levels, judged, limit, example }): Finding => {
     const [without, whole] = [digits(example.EaWithout_kJ_per_mol), digits(example.EaWith_kJ_per_mol)]
     return {
       code: 'outlier-run',

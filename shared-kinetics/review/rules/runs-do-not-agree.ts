@@ -9,11 +9,11 @@ import { percent } from '../words.ts'
  * Fires where the median half interval is more than 10 % of Ea, and would be even with the 1.96 of many runs, or one run is at odds with the others: the runs do not agree
  * about Ea. Names that run.
  */
-export function runsDoNotAgree(input: ReviewInput): Finding[] {
+export function runsDoNotAgree(input: ReviewInput, checkCancelled: () => void = () => undefined): Finding[] {
   const profile = leadingProfile(input.result.profiles)
   const half = profile === undefined ? null : halfIntervalOf(profile)
   if (profile === undefined || half === null || half.share <= wideInterval) return []
-  const [odd] = runsAtOdds(input, 0)
+  const [odd] = runsAtOdds(input, 0, checkCancelled)
   if (half.shareOfMany <= wideInterval && odd === undefined) return []
   const runs = profile.interval.dof + 2
   return [
