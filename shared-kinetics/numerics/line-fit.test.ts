@@ -73,8 +73,16 @@ describe('a line fit', () => {
           points.map(([x]) => x + a),
           points.map(([, y]) => y + b),
         )
-        expect(Math.abs(shifted.slope - plain.slope)).toBeLessThan(1e-11)
-        expect(Math.abs(shifted.slopeStandardError - plain.slopeStandardError)).toBeLessThan(1e-10)
+        // Shifted values are rounded by up to h = 2^-49 (half a unit in the last place of 16 to 32): xy changes by h(Σ|dx| + Σ|dy|), xx by 2hΣ|dx|.
+        const h = 2 ** -49
+        const dx = points.reduce((sum, [x]) => sum + Math.abs(x - plain.xMean), 0)
+        const dy = points.reduce((sum, [, y]) => sum + Math.abs(y - plain.valueAtMean), 0)
+        const xx = points.reduce((sum, [x]) => sum + (x - plain.xMean) ** 2, 0)
+        const rounding = (h * (dy + (1 + 2 * Math.abs(plain.slope)) * dx)) / xx
+        expect(Math.abs(shifted.slope - plain.slope)).toBeLessThan(2 * rounding)
+        // Each residual changes by no more than h, h times the slope and what the slope itself changes by.
+        const ofResiduals = Math.sqrt(points.length) * h * (1 + Math.abs(plain.slope)) + 2 * rounding * Math.sqrt(xx)
+        expect(Math.abs(shifted.slopeStandardError - plain.slopeStandardError)).toBeLessThan((2 * ofResiduals) / Math.sqrt(xx))
       }),
     )
   })
