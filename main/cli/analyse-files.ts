@@ -7,7 +7,6 @@ import type { StudyDocument } from '../../shared-kinetics/contract/study-documen
 import { KineticsError } from '../../shared-kinetics/errors.ts'
 import type { StudyResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { createHost, type Host } from '../host/create-host.ts'
-import { createHelpedPool } from '../host/helped-pool.ts'
 import { createInProcessPool } from '../host/in-process-pool.ts'
 import { createTaskTable } from '../host/task-table.ts'
 import { uploadToHost } from '../host/upload-to-host.ts'
@@ -38,15 +37,14 @@ export interface Analysis {
 }
 
 /**
- * Reads files, settles the study, works it out and makes every export, by the same handlers that answer a window. The work is done in this thread,
- * with conversions in the helper where there is one.
+ * Reads files, settles the study, works it out and makes every export, by the same handlers that answer a window. One short run does not earn a
+ * worker thread, so the work is done in this one.
  * @throws InputError for a file or run that cannot be used (unless those are to be skipped), UsageError where heating rates do not fit the runs
  */
 export async function analyseFiles(order: AnalysisOrder, io: CliIo, progress: ProgressLine): Promise<Analysis> {
-  const tasks = createTaskTable(order.importOptions)
   const host = createHost({
     dataFolder: null,
-    pool: io.helper === null ? createInProcessPool(tasks) : createHelpedPool(tasks, io.helper),
+    pool: createInProcessPool(createTaskTable(order.importOptions)),
     version: io.version,
     shell: 'command-line',
     warn: (message) => io.stderr(`${message}\n`),

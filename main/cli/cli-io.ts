@@ -1,5 +1,3 @@
-import type { Worker } from 'node:worker_threads'
-
 /** What the command line touches of the process around it; tests put their own in place. */
 export interface CliIo {
   readonly stdout: (text: string) => void
@@ -10,8 +8,6 @@ export interface CliIo {
   /** Where the built worker and the built pages lie; only an entry file of the program knows. */
   readonly workerUrl: URL
   readonly rendererUrl: URL
-  /** A thread that answers tasks beside this one; null where there is none. */
-  readonly helper: Worker | null
 }
 
 export const exitCodes = { done: 0, inputUnusable: 1, wordsOff: 2, stopFinding: 3 } as const

@@ -95,7 +95,6 @@ const io = {
   version: '0.0.0',
   workerUrl: new URL('file:///nowhere/worker-entry.js'),
   rendererUrl: new URL('file:///nowhere/renderer/'),
-  helper: null,
 }
 
 const plain = (text: string): void => {

@@ -1,38 +1,17 @@
 #!/usr/bin/env node
 import { readFileSync } from 'node:fs'
-import { availableParallelism } from 'node:os'
 import { join } from 'node:path'
 import { isatty } from 'node:tty'
 import { pathToFileURL } from 'node:url'
-import { isMainThread, parentPort, Worker } from 'node:worker_threads'
 import type * as CommandLine from './command-line.ts'
 import { loadScript } from './load-script.ts'
 
 // Its place in the build (out/main/cli.cjs) is what the addresses below count from.
 const place = import.meta.dirname
+const { version } = JSON.parse(readFileSync(join(place, '../../package.json'), 'utf8')) as { readonly version: string }
+const { run } = loadScript(join(place, 'command-line.cjs')).exports as unknown as typeof CommandLine
+
 let watched = false
-const words = process.argv.slice(2)
-// Begun before anything else, so that it stands when the first file is read.
-const helper = isMainThread && words[0] === 'activation' && availableParallelism() > 1 ? new Worker(import.meta.filename) : null
-
-const { run, serveTasks } = loadScript(join(place, 'command-line.cjs')).exports as unknown as typeof CommandLine
-
-if (parentPort !== null) serveTasks(parentPort)
-else void callOnce()
-
-async function callOnce(): Promise<void> {
-  const { version } = JSON.parse(readFileSync(join(place, '../../package.json'), 'utf8')) as { readonly version: string }
-  process.exitCode = await run(words, {
-    stdout: writeOut,
-    stderr: (text) => void process.stderr.write(text),
-    stderrIsTerminal: isatty(2),
-    version,
-    workerUrl: pathToFileURL(join(place, 'worker-entry.js')),
-    rendererUrl: pathToFileURL(join(place, '../renderer/')),
-    helper,
-  })
-  await helper?.terminate()
-}
 
 function writeOut(text: string): void {
   // A reader such as `head` that has seen enough is no failure.
@@ -46,3 +25,14 @@ function writeOut(text: string): void {
   }
   process.stdout.write(text)
 }
+
+void (async () => {
+  process.exitCode = await run(process.argv.slice(2), {
+    stdout: writeOut,
+    stderr: (text) => void process.stderr.write(text),
+    stderrIsTerminal: isatty(2),
+    version,
+    workerUrl: pathToFileURL(join(place, 'worker-entry.js')),
+    rendererUrl: pathToFileURL(join(place, '../renderer/')),
+  })
+})()

@@ -1,4 +1,3 @@
 // All that the command line is made of, as the one script that `cli.ts` loads.
 export { demoSeries } from '../demo/demo-series.ts'
 export { run } from './run.ts'
-export { serveTasks } from './serve-tasks.ts'

@@ -24,7 +24,6 @@ void (async () => {
       version: '0',
       workerUrl: nowhere,
       rendererUrl: nowhere,
-      helper: null,
     }
     for (const words of [
       ['inspect', runs],

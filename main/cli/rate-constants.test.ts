@@ -21,7 +21,6 @@ async function rampfold(...words: readonly string[]): Promise<{ code: number; st
     version: '0.0.0',
     workerUrl: new URL('file:///nowhere/worker-entry.js'),
     rendererUrl: new URL('file:///nowhere/renderer/'),
-    helper: null,
   })
   return { code, stdout, stderr }
 }

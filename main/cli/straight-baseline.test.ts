@@ -23,7 +23,6 @@ it.skipIf(!existsSync(folder))(
       version: '0.0.0',
       workerUrl: new URL('file:///nowhere/worker-entry.js'),
       rendererUrl: new URL('file:///nowhere/renderer/'),
-      helper: null,
     }
     const words = ['activation', ...names.map((name) => join(folder, name)), '--baseline', 'straight', '--methods', 'kas', '--out', out]
     expect([await run(words, io), errors.join('')]).toEqual([0, ''])

@@ -1,10 +1,7 @@
 import { Cancelled } from '../../shared-kinetics/errors.ts'
-import type { RunColumns } from '../../shared-kinetics/series/run.ts'
-import type { StudyInput } from '../../shared-kinetics/tasks/study-input.ts'
 import type { StudyResult } from '../../shared-kinetics/tasks/study-result.ts'
-import { createConversions } from './conversions.ts'
 import type { EventHub } from './event-hub.ts'
-import type { ImportedRun, TaskPool } from './host-tasks.ts'
+import type { TaskPool } from './host-tasks.ts'
 import type { Workspace } from './workspace.ts'
 
 /** The results of the open study: worked out once a revision, shared by all who ask. */
@@ -12,41 +9,26 @@ export interface Evaluation {
   /** Rejects with `Cancelled` when a newer revision is asked for, or `cancel` is called. */
   of(revision: number): Promise<StudyResult>
   cancel(): void
-  /** A run that was read while others still are: its conversion is begun, as the settings stand. */
-  begin(run: ImportedRun): void
 }
 
 /** @param withoutCurves - nobody will look at a chart of the runs or of Phi(Ea) */
 export function createEvaluation(workspace: Workspace, pool: TaskPool, events: EventHub, withoutCurves: boolean): Evaluation {
-  const conversions = createConversions(pool)
   let current: { readonly revision: number; readonly result: Promise<StudyResult>; readonly stop: AbortController } | null = null
-
-  const evaluated = async (study: StudyInput, columns: ReadonlyMap<string, RunColumns>, signal: AbortSignal): Promise<StudyResult> => {
-    const report = events.progressOf('evaluate')
-    const converted = await conversions.missing(study, columns, signal, (done, total) => {
-      report(done, total, 'conversion')
-    })
-    const result = await pool.run(
-      'evaluate-study',
-      { study, columns, converted },
-      {
-        signal,
-        progress: (done, total) => {
-          report(done, total, 'activation energy')
-        },
-      },
-    )
-    conversions.handedOver(converted.keys())
-    return result
-  }
 
   const start = (revision: number): Promise<StudyResult> => {
     current?.stop.abort()
     const stop = new AbortController()
     const { document } = workspace.session
     const columns = new Map(document.runs.map((run) => [run.columnsKey, workspace.study.columns.get(run.columnsKey)]))
+    const report = events.progressOf('evaluate')
     const study = { runs: document.runs, settings: document.settings, importNotes: document.importNotes, withoutCurves }
-    const result = evaluated(study, columns, stop.signal)
+    const input = { study, columns }
+    const result = pool.run('evaluate-study', input, {
+      signal: stop.signal,
+      progress: (done, total) => {
+        report(done, total, 'activation energy')
+      },
+    })
     const mine = { revision, result, stop }
     current = mine
     // A failure is not remembered: asking again tries again.
@@ -65,9 +47,6 @@ export function createEvaluation(workspace: Workspace, pool: TaskPool, events: E
     cancel: () => {
       current?.stop.abort()
       current = null
-    },
-    begin: ({ info, columns }) => {
-      conversions.begin({ runs: [info], settings: workspace.session.document.settings }, columns)
     },
   }
 }

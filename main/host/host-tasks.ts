@@ -2,8 +2,6 @@ import type { MethodId, TaskContext } from '../../shared-kinetics/isoconversiona
 import type { RunColumns, RunInfo } from '../../shared-kinetics/series/run.ts'
 import type { RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import type { RateConstantsResult } from '../../shared-kinetics/tasks/rate-constants-result.ts'
-import type { ConversionOrder } from '../../shared-kinetics/tasks/conversion-order.ts'
-import type { ConvertedRun } from '../../shared-kinetics/tasks/convert-run.ts'
 import type { DrawOrder } from '../../shared-kinetics/tasks/draw-uncertainty.ts'
 import type { UncertaintyEstimate } from '../../shared-kinetics/tasks/estimate-uncertainty.ts'
 import type { StudyInput } from '../../shared-kinetics/tasks/study-input.ts'
@@ -20,18 +18,8 @@ export interface ImportedRun {
 
 /** Everything a worker can be asked: input and answer of each task, as they travel over worker_threads. */
 export interface HostTasks {
-  /** One run to its conversion, on shared memory; null where it cannot be converted, which the evaluation will say. */
-  'convert-run': {
-    input: { readonly order: ConversionOrder; readonly columns: RunColumns }
-    answer: ConvertedRun | null
-  }
-  /** `converted`: what `convert-run` has given, by the keys of its orders; the rest is converted on the way. */
   'evaluate-study': {
-    input: {
-      readonly study: StudyInput
-      readonly columns: ReadonlyMap<string, RunColumns>
-      readonly converted?: ReadonlyMap<string, ConvertedRun>
-    }
+    input: { readonly study: StudyInput; readonly columns: ReadonlyMap<string, RunColumns> }
     answer: StudyResult
   }
   /** What resampling and the budget say, and what draws are to be made from; as slow as it is, it looks at its flag often. */

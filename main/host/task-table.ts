@@ -1,10 +1,8 @@
 import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import { readExport } from '../import/read-export.ts'
 import { refusedFile } from '../import/import-refusal.ts'
-import { KineticsError } from '../../shared-kinetics/errors.ts'
-import { memoryOf, remember, type EvaluationCache } from '../../shared-kinetics/tasks/memo.ts'
+import type { EvaluationCache } from '../../shared-kinetics/tasks/memo.ts'
 import { taskMap } from '../../shared-kinetics/tasks/task-map.ts'
-import { shareArrays } from '../study/share-arrays.ts'
 import { shareColumns } from '../study/share-columns.ts'
 import type { TaskTable } from './host-tasks.ts'
 
@@ -15,18 +13,7 @@ import type { TaskTable } from './host-tasks.ts'
 export function createTaskTable(importOptions: ImportOptions = {}): TaskTable {
   const cache: EvaluationCache = new Map()
   return {
-    'convert-run': ({ order, columns }, context) => {
-      try {
-        return shareArrays(taskMap['convert-run'](order.info, columns, order.settings, context.checkCancelled))
-      } catch (error) {
-        if (error instanceof KineticsError) return null
-        throw error
-      }
-    },
-    'evaluate-study': ({ study, columns, converted }, context) => {
-      for (const [key, run] of converted ?? []) remember(cache, key, () => run, memoryOf)
-      return taskMap['evaluate-study'](study, columns, context, cache)
-    },
+    'evaluate-study': ({ study, columns }, context) => taskMap['evaluate-study'](study, columns, context, cache),
     'estimate-uncertainty': ({ study, columns, uncertainty }, context) =>
       taskMap['estimate-uncertainty'](study, columns, uncertainty, context, cache),
     'draw-energies': taskMap['draw-energies'],

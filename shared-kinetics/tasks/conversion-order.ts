@@ -1,7 +1,6 @@
 import { KineticsError } from '../errors.ts'
 import type { RunInfo, SignalInfo } from '../series/run.ts'
 import type { SignalQuantity } from '../series/signal-quantity.ts'
-import { chooseSignal } from './choose-signal.ts'
 import { convertRunVersion, type ConversionSettings } from './convert-run.ts'
 import type { StudyInput } from './study-input.ts'
 
@@ -40,12 +39,4 @@ export function conversionOrder(info: RunInfo, quantity: SignalQuantity, { setti
     info.hasTime ? null : info.nominalHeatingRate,
   ])
   return { info, signal, settings: { quantity, signalIndex, window, baseline: settings.baseline }, key }
-}
-
-/** The orders of all runs of a study that are used and have the signal that is analysed. */
-export function conversionOrders(study: StudyInput): readonly ConversionOrder[] {
-  const used = study.runs.filter((run) => run.use)
-  const { signal } = chooseSignal(used, study.settings.signal)
-  if (signal === null) return []
-  return used.filter((info) => info.signals.some(({ quantity }) => quantity === signal)).map((info) => conversionOrder(info, signal, study))
 }

@@ -1,4 +1,3 @@
-import { convertRun } from './convert-run.ts'
 import { drawShare, intervalsOfDraws } from './draw-uncertainty.ts'
 import { estimateUncertainty } from './estimate-uncertainty.ts'
 import { evaluateRateConstants } from './evaluate-rate-constants.ts'
@@ -6,7 +5,6 @@ import { evaluateStudy } from './evaluate-study.ts'
 
 /** Everything in shared-kinetics that is worth a worker, by the name it is asked for. */
 export const taskMap = {
-  'convert-run': convertRun,
   'evaluate-study': evaluateStudy,
   'evaluate-rate-constants': evaluateRateConstants,
   'estimate-uncertainty': estimateUncertainty,

@@ -88,7 +88,7 @@ interface ReadRun {
 }
 
 async function readExports(
-  { pool, events, evaluation }: HandlerContext,
+  { pool, events }: HandlerContext,
   exports: readonly UploadedFile[],
   signal: AbortSignal,
 ): Promise<{ runs: readonly ReadRun[]; refused: readonly RefusedFile[] }> {
@@ -98,7 +98,6 @@ async function readExports(
     exports.map(async ({ fileName, bytes }) => {
       const answer = await pool.run('import-file', { fileName, bytes }, { signal })
       done += 1
-      if (answer.kind === 'runs') for (const run of answer.runs) evaluation.begin(run)
       report(done, exports.length, fileName)
       return { answer, bytes }
     }),

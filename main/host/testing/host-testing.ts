@@ -91,7 +91,6 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
       result: { levels: study.settings.levels, seed, draws, profiles: [] },
       order: { models: [], sources: noSources },
     }),
-    'convert-run': () => null,
     'draw-energies': () => [],
     'intervals-of-draws': () => new Map(),
     'evaluate-study': async ({ study, columns }, context) => {
