@@ -38,7 +38,9 @@ describe('rules on rows and windows', () => {
     const gap = { from_K: 545, to_K: 565, conversionBefore: 0.25, conversionAfter: 0.65 }
     const [found] = gapInReaction(withThird({ sampling: { gaps: [gap] } }))
     expect(found?.severity).toBe('caution')
-    expect(found?.message).toMatch(/leave out 40 % of the reaction: from 271.9 °C \(545.0 K\) to 291.9 °C \(565.0 K\) \(conversion 0.25 to 0.65\)/)
+    expect(found?.message).toMatch(
+      /leave out 40 % of the reaction: from 271.9 °C \(545.0 K\) to 291.9 °C \(565.0 K\) \(conversion 0.25 to 0.65\)/,
+    )
   })
 
   it.each([
