@@ -1,6 +1,7 @@
 import { demoSeries } from '../../main/demo/demo-series.ts'
 import { writeFileSync } from 'node:fs'
 import { join } from 'node:path'
+import type { Locator } from '@playwright/test'
 import type { Sheet } from '../pages/sheet.ts'
 import { expect, test } from '../pages/program.ts'
 
@@ -214,4 +215,42 @@ test('peaks and single runs stand in a table of their own, with what to know bef
   await expect(page.getByText(/To confirm: age a sample for 60 min.*does not replace tests/)).toBeVisible()
   await page.getByRole('button', { name: 'Copy table' }).click()
   await expect.poll(() => page.evaluate(() => navigator.clipboard.readText())).toMatch(/^Method\tRun\tEa \(kJ\/mol\)/)
+})
+
+/** Of the rows of a table that its head or its lower edge cuts: how far they reach beyond either. */
+const rowsCut = (frame: Locator): Promise<readonly number[]> =>
+  frame.evaluate((element) => {
+    const { top, bottom } = element.getBoundingClientRect()
+    const head = top + (element.querySelector('thead')?.offsetHeight ?? 0)
+    return [...element.querySelectorAll('tbody tr')].flatMap((row) => {
+      const box = row.getBoundingClientRect()
+      const above = box.bottom > head + 2 && box.top < head - 2
+      const below = box.top < bottom - 2 && box.bottom > bottom + 2
+      return above || below ? [box.top - head, box.bottom - bottom] : []
+    })
+  })
+
+test('no row of the peak methods is cut, whichever is picked out', async ({ sheet, page }) => {
+  await sheet.openDemo()
+  await sheet.goTo('Activation energy')
+  await page.getByRole('radio', { name: 'Peaks and single runs' }).click()
+  const frame = page.getByRole('region', { name: 'Table of peak and single-run methods' })
+  const rows = await sheet.peakTable.getByRole('row').count()
+  expect(rows).toBeGreaterThan(6)
+  await frame.focus()
+  for (const key of [
+    ...Array.from({ length: rows - 2 }, () => 'ArrowDown'),
+    'Home',
+    'End',
+    ...Array.from({ length: rows - 2 }, () => 'ArrowUp'),
+  ]) {
+    await page.keyboard.press(key)
+    await expect(sheet.peakTable.locator('tr[aria-current="true"]')).toBeInViewport({ ratio: 0.9 })
+    await expect.poll(() => rowsCut(frame)).toEqual([])
+  }
+  await frame.hover()
+  for (const notches of [60, 140, 90, -70, 400, -160]) {
+    await page.mouse.wheel(0, notches)
+    await expect.poll(() => rowsCut(frame)).toEqual([])
+  }
 })

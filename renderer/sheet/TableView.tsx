@@ -1,4 +1,5 @@
 import { useEffect, useLayoutEffect, useRef, type ClipboardEvent, type KeyboardEvent, type ReactNode } from 'react'
+import { firstRowToShow, rowAt, wholeRowsFrom } from './whole-rows.ts'
 
 /**
  * The frame of a table: it scrolls inside, takes the focus, copies itself as tab-separated text when nothing in it is selected, and keeps the
@@ -22,23 +23,35 @@ export function TableView({
   const spaceRef = useRef<HTMLDivElement>(null)
   const frameRef = useRef<HTMLElement>(null)
 
+  const settledRef = useRef<Measured | null>(null)
+
   useLayoutEffect(() => {
     const [space, frame] = [spaceRef.current, frameRef.current]
     const table = frame?.querySelector('table')
     if (space === null || frame === null || table === null || table === undefined) return
     const settle = (): void => {
-      showWholeRows(space, frame)
-      showCurrentRow(frame)
+      const scrolled = frame.scrollTop
+      settledRef.current = measured(space, frame)
+      fitWithCurrent(frame, settledRef.current, scrolled)
+    }
+    const fitWhereScrolled = (): void => {
+      const { current } = settledRef
+      if (current !== null) fitFrom(frame, current, rowAt(current.heights, frame.scrollTop))
     }
     const observer = new ResizeObserver(settle)
     observer.observe(space)
     observer.observe(table)
+    frame.addEventListener('scrollend', fitWhereScrolled)
     settle()
-    return () => observer.disconnect()
+    return () => {
+      observer.disconnect()
+      frame.removeEventListener('scrollend', fitWhereScrolled)
+    }
   }, [])
 
   useEffect(() => {
-    if (frameRef.current !== null && currentRow !== null) showCurrentRow(frameRef.current)
+    const [frame, settled] = [frameRef.current, settledRef.current]
+    if (frame !== null && settled !== null && currentRow !== null) fitWithCurrent(frame, settled, frame.scrollTop)
   }, [currentRow])
 
   const onCopy = (event: ClipboardEvent): void => {
@@ -59,34 +72,43 @@ export function TableView({
   )
 }
 
-function showCurrentRow(frame: HTMLElement): void {
-  const row = frame.querySelector<HTMLElement>('tr[aria-current="true"]')
-  if (row === null) return
-  const head = frame.querySelector('thead')?.offsetHeight ?? 0
-  const [top, bottom] = [row.offsetTop - head, row.offsetTop + row.offsetHeight]
-  if (top < frame.scrollTop) frame.scrollTop = top - row.offsetHeight
-  else if (bottom > frame.scrollTop + frame.clientHeight) frame.scrollTop = Math.min(top, bottom - frame.clientHeight + row.offsetHeight)
+/** Heights of a frame and of what stands in it. */
+interface Measured {
+  readonly heights: readonly number[]
+  readonly head: number
+  /** The lower border and, where the table is too wide, the scroll bar. */
+  readonly edge: number
+  /** For rows. */
+  readonly room: number
 }
 
-/** Makes the frame as tall as whole rows fill it, so that none is cut by its lower edge; the scroll snap keeps them whole at the head. */
-function showWholeRows(space: HTMLElement, frame: HTMLElement): void {
-  const scrolled = frame.scrollTop
+/** Lets the frame grow as far as there is room, and takes its measure. */
+function measured(space: HTMLElement, frame: HTMLElement): Measured {
   frame.style.maxHeight = 'none'
   delete frame.dataset.cut
   const head = frame.querySelector('thead')?.getBoundingClientRect().height ?? 0
   frame.style.setProperty('--table-head', `${head}px`)
-  // The lower border and, where the table is too wide, the scroll bar.
   const edge = frame.offsetHeight - frame.clientHeight
-  const room = space.clientHeight - head - edge
-  const rows = Array.from(frame.querySelectorAll('tbody tr'), (row) => row.getBoundingClientRect().height)
-  let shown = 0
-  for (const [i, height] of rows.entries()) {
-    if (i > 0 && shown + height > room + 0.5) {
-      frame.style.maxHeight = `${head + shown + edge}px`
-      frame.scrollTop = scrolled
-      frame.dataset.cut = ''
-      break
-    }
-    shown += height
-  }
+  const heights = Array.from(frame.querySelectorAll('tbody tr'), (row) => row.getBoundingClientRect().height)
+  return { heights, head, edge, room: space.clientHeight - head - edge }
+}
+
+/** As `fitFrom`, scrolled so far that the current row is in sight. */
+function fitWithCurrent(frame: HTMLElement, settled: Measured, scrolled: number): void {
+  const { heights, room } = settled
+  const present = rowAt(heights, scrolled)
+  const current = Array.from(frame.querySelectorAll('tbody tr')).findIndex((row) => row.getAttribute('aria-current') === 'true')
+  fitFrom(frame, settled, current < 0 ? present : firstRowToShow(heights, room, present, current))
+}
+
+/**
+ * Makes the frame as tall as whole rows fill it, so that none is cut by its lower edge; the scroll snap keeps them whole at the head. Rows may differ in height, so that the
+ * frame is fitted anew wherever it was scrolled to.
+ */
+function fitFrom(frame: HTMLElement, { heights, head, edge, room }: Measured, row: number): void {
+  const { first, shown, height } = wholeRowsFrom(heights, room, row)
+  if (shown === heights.length) return
+  frame.style.maxHeight = `${head + height + edge}px`
+  frame.scrollTop = heights.slice(0, first).reduce((sum, one) => sum + one, 0)
+  frame.dataset.cut = ''
 }
