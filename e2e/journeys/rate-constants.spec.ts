@@ -30,6 +30,7 @@ test('a pasted table gives Ea, a unit is changed and taken back, and the exporte
   await rates.take()
   await rates.goTo('Activation energy')
   expect(await rates.parameter('Ea kJ/mol')).toEqual(['102.90', '0.47', '101.59', '104.21'])
+  await expect(page.getByText(/^A 3\.82 × 1013 1\/s \(95 %: /)).toBeVisible()
   expect(numberIn((await rates.parameter('A 1/s'))[0])).toBe(3.82e13)
   await expect(page.getByText('r² 0.99992')).toBeVisible()
 
@@ -167,6 +168,29 @@ test('isothermal runs give rate constants with a chosen model, beside their Ea a
   await page.getByRole('button', { name: 'Make the table' }).click()
   await rates.settled()
   expect(numberIn((await rates.parameter('Ea kJ/mol'))[0])).toBeCloseTo(100, 1)
+
+  // The model of the simulation follows the holds; one that does not is said to, and the ranking leads back.
+  await expect(rates.model('F1')).toContainText('chosen')
+  await expect(rates.model('F1')).toContainText('fits')
+  await page.getByRole('button', { name: 'Take D1', exact: true }).click()
+  await rates.settled()
+  await expect(rates.model('D1')).toContainText('chosen')
+  await expect(page.getByRole('heading', { name: 'D1 does not follow 3 of 3 holds' })).toBeVisible()
+  await expect(page.getByRole('heading', { name: 'F1 fits the holds better than D1' })).toBeVisible()
+  await page.getByRole('radio', { name: 'Fits of the holds' }).click()
+  await expect(rates.holdTable.getByRole('row')).toHaveCount(4)
+  await expect(rates.holdTable.getByText('systematic', { exact: true })).toHaveCount(3)
+  await page.getByRole('region', { name: 'Table of fits of the holds' }).press('End')
+  await expect(rates.readOut).toContainText('140 °C')
+  await expect(rates.holdTable.locator('tr[aria-current="true"]')).toContainText('hold 140 C')
+  expect(await axeFaults(page)).toEqual([])
+  await page.getByRole('tab', { name: 'Runs' }).click()
+  await page.getByRole('button', { name: 'Make them again…' }).click()
+  await expect(page.getByLabel('Kinetic model')).toHaveValue('D1')
+  await expect(page.getByText(/models that fit the holds .*: F1\./)).toBeVisible()
+  await page.getByRole('button', { name: /^Undo/ }).click()
+  await page.getByRole('button', { name: 'Show their line' }).click()
+  await expect(rates.model('F1')).toContainText('chosen')
   await page.getByRole('radio', { name: 'Levels of conversion' }).click()
   await expect(sheet.rail).toBeVisible()
   await page.getByRole('radio', { name: 'Rate constants' }).click()
@@ -199,6 +223,23 @@ for (const colorScheme of ['light', 'dark'] as const) {
     })
   })
 }
+
+test('a power that lost its height is asked about in a cell, and an interval that reaches below 0 is said to bound nothing', async ({
+  sheet,
+  page,
+}) => {
+  const rates = new RateConstantSheet(page)
+  await expect(sheet.openDemoButton).toBeVisible()
+  // Hardly any change from 300 to 320 K, and k up and down by a factor of two: no line bounds Ea from below.
+  await rates.paste('T (K)\tk (1/s)\n300\t1e-5\n306\t2e-5\n313\t1e-5\n320\t1.8e-5\n')
+  await rates.take()
+  await rates.cell('k', 1).fill('7.87 × 107')
+  await page.keyboard.press('Enter')
+  await expect(page.getByRole('alert')).toContainText('“× 107” may be 10^7 or a hundred and seven')
+  await page.keyboard.press('Escape')
+  await rates.goTo('Activation energy')
+  await expect(page.getByText(/The interval of Ea reaches below 0, .* these rate constants do not bound Ea from below/)).toBeVisible()
+})
 
 test('nothing scrolls sideways at 900 by 600 and at twice the size', async ({ sheet, page }) => {
   const rates = new RateConstantSheet(page)

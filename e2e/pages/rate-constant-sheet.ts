@@ -57,6 +57,16 @@ export class RateConstantSheet {
     return row.getByRole('cell').allTextContents()
   }
 
+  /** The row of a reaction model in the ranking. */
+  model(code: string): Locator {
+    const table = this.page.getByRole('table', { name: 'Reaction models, the closest to the holds first' })
+    return table.getByRole('row').filter({ has: this.page.getByText(code, { exact: true }) })
+  }
+
+  get holdTable(): Locator {
+    return this.page.getByRole('table', { name: /^How .* follows the holds$/ })
+  }
+
   get predictions(): Locator {
     return this.page.getByRole('table', { name: 'Predicted rate constants' })
   }

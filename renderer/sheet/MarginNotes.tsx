@@ -19,8 +19,10 @@ export function MarginNotes({
   readonly settled: boolean
   readonly onShow: (finding: Finding) => void
 }) {
+  // It scrolls, so it must be reached by keyboard (WCAG 2.1.1); a note that leads somewhere is reached anyhow.
+  const isReached = findings.some((finding) => finding.run !== null || finding.level !== null)
   return (
-    <aside className="margin" aria-labelledby="margin-title">
+    <aside className="margin" aria-labelledby="margin-title" tabIndex={isReached ? undefined : 0}>
       <h2 id="margin-title" className="margin-title">
         Findings on this stage
       </h2>

@@ -10,6 +10,10 @@ export type ShownKind = 'student-t' | IntervalKind
 export type Evidence = 'fit' | 'budget' | 'peaks'
 /** The table beneath Ea against conversion. */
 export type Beneath = 'levels' | 'peaks'
+/** The table beneath the line of rate constants: how far each lies from it or, where they were made from holds, how the model follows each hold. */
+export type BeneathLine = 'rows' | 'holds'
+/** The table beneath the numbers of that line. */
+export type BeneathNumbers = 'models' | 'pairs'
 
 /** A row or a prediction of the table of rate constants, by its place in the study. */
 export interface RateConstantPlace {
@@ -37,6 +41,8 @@ export interface ViewState {
   /** What the Activation energy stage shows of a study that holds rate constants made from its runs. */
   readonly basis: 'runs' | 'rate-constants'
   readonly rateConstant: RateConstantPlace
+  readonly beneathLine: BeneathLine
+  readonly beneathNumbers: BeneathNumbers
   /** The run that a finding or a row points at. */
   readonly pointedRun: string | null
   readonly theme: Theme
@@ -54,6 +60,8 @@ const initialViewState: ViewState = {
   against: null,
   basis: 'runs',
   rateConstant: { kind: 'row', index: 0 },
+  beneathLine: 'rows',
+  beneathNumbers: 'models',
   pointedRun: null,
   theme: 'system',
 }

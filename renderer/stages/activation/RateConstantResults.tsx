@@ -1,14 +1,19 @@
 import { Button } from 'react-aria-components'
 import type { RateConstantsResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { Choice } from '../../sheet/Choice.tsx'
 import { count, decimals, formatInterval } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
 import { copyText } from '../../sheet/data-table.ts'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
+import { Remarked } from '../../sheet/Remarked.tsx'
+import { scientific } from '../../sheet/scientific.ts'
 import { TableView } from '../../sheet/TableView.tsx'
+import { useServices, useView } from '../../state/services.ts'
 import type { RatedProps } from './RateConstantsActivation.tsx'
 import { RateConstantPairs } from './RateConstantPairs.tsx'
 import { RateConstantPredictions } from './RateConstantPredictions.tsx'
-import { errorText, parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
+import { ReactionModels } from './ReactionModels.tsx'
+import { errorText, lowerEndWords, parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
 
 /** The right half: Ea, A and what follows from them, and k at the temperatures asked for. */
 export function RateConstantResults(props: RatedProps) {
@@ -26,7 +31,7 @@ export function RateConstantResults(props: RatedProps) {
         </>
       )}
       <RateConstantPredictions {...props} />
-      {rated.betweenTemperatures.length > 1 && <RateConstantPairs rated={rated} />}
+      <BeneathNumbers {...props} />
       <div className="half-foot">
         <p className="source">{sourcesOf(rated)}</p>
         <div className="controls-end">
@@ -49,22 +54,69 @@ export function RateConstantResults(props: RatedProps) {
   )
 }
 
+/** Reaction models where the table was made from holds, Ea from temperature to temperature where there are more than two: a choice where there is both. */
+function BeneathNumbers(props: RatedProps) {
+  const { view } = useServices()
+  const { rated } = props
+  const { holdFits: fits } = rated
+  const wanted = useView((state) => state.beneathNumbers)
+  const hasPairs = rated.betweenTemperatures.length > 1
+  if (fits === null) return hasPairs ? <RateConstantPairs rated={rated} /> : null
+  return (
+    <>
+      {hasPairs && (
+        <div className="controls">
+          <Choice
+            label="Beneath"
+            options={[
+              { id: 'models', text: 'Reaction models' },
+              { id: 'pairs', text: 'Between two temperatures' },
+            ]}
+            value={wanted}
+            onChange={(beneathNumbers) => view.setState({ beneathNumbers })}
+          />
+        </div>
+      )}
+      {hasPairs && wanted === 'pairs' ? <RateConstantPairs rated={rated} /> : <ReactionModels {...props} fits={fits} />}
+    </>
+  )
+}
+
 const exportWords = { csv: 'table', json: 'results', svg: 'figure' } as const
 
-function Headline({ rated: { line } }: { readonly rated: RateConstantsResult }) {
+function Headline({ rated: { line, rateUnit } }: { readonly rated: RateConstantsResult }) {
+  const below = lowerEndWords(line)
   const { Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, standardError_kJ_per_mol: error } = line
   const places = placesOf(error)
   const interval = formatInterval(Ea, lower, upper, places)
   return (
-    <p className="rate-headline">
-      Ea{' '}
-      <strong>
-        {decimals(Ea, places)}
-        {interval !== '' && ` ± ${interval}`}
-      </strong>{' '}
-      kJ/mol
-      {error !== null && interval !== '' && <span className="soft"> (95 %; standard error {errorText(error, places)})</span>}
-    </p>
+    <>
+      <p className="rate-headline">
+        Ea{' '}
+        <strong>
+          {decimals(Ea, places)}
+          {interval !== '' && ` ± ${interval}`}
+        </strong>{' '}
+        kJ/mol
+        {error !== null && interval !== '' && <span className="soft"> (95 %; standard error {errorText(error, places)})</span>}
+      </p>
+      {below !== null && <p className="rate-below">The interval of Ea {below}.</p>}
+      {line.A !== null && (
+        <p className="rate-factor">
+          A{' '}
+          <strong>
+            <PowerOfTen text={scientific(line.A, 3)} />
+          </strong>{' '}
+          {rateUnit === '' ? 'in the unit of k' : rateUnit}
+          {line.ALower95 !== null && line.AUpper95 !== null && (
+            <span className="soft">
+              {' '}
+              (95 %: <PowerOfTen text={scientific(line.ALower95, 3)} /> … <PowerOfTen text={scientific(line.AUpper95, 3)} />)
+            </span>
+          )}
+        </p>
+      )}
+    </>
   )
 }
 
@@ -110,7 +162,9 @@ function Parameters({ rated }: { readonly rated: RateConstantsResult }) {
                   <>
                     <td className="is-number">{row.formatError(row.standardError)}</td>
                     <td className="is-number">
-                      <PowerOfTen text={row.format(row.lower)} />
+                      <Remarked remark={row.lowerRemark}>
+                        <PowerOfTen text={row.format(row.lower)} />
+                      </Remarked>
                     </td>
                     <td className="is-number">
                       <PowerOfTen text={row.format(row.upper)} />

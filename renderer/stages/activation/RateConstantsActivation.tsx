@@ -4,13 +4,16 @@ import type { RateConstantsResult, RateConstantTable } from '../../../shared-kin
 import { arrheniusAtRow, arrheniusFigure } from '../../../shared-kinetics/figure/arrhenius-figure.ts'
 import type { Mark } from '../../../shared-kinetics/figure/figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
+import { Choice } from '../../sheet/Choice.tsx'
 import { count } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
-import { useColours, useServices } from '../../state/services.ts'
+import { useColours, useServices, useView } from '../../state/services.ts'
 import type { RateConstantPlace } from '../../state/view-store.ts'
 import type { RateConstantsProps } from '../runs/RateConstantsStage.tsx'
 import { sourceWords } from '../runs/RateConstantReading.tsx'
 import { BasisChoice } from './BasisChoice.tsx'
+import { HoldFits } from './HoldFits.tsx'
+import { holdNote } from './hold-fit-rows.ts'
 import { RateConstantResults } from './RateConstantResults.tsx'
 import { RateConstantRows } from './RateConstantRows.tsx'
 import { nearestStop, rateConstantStops } from './rate-constant-stops.ts'
@@ -38,6 +41,8 @@ export function RateConstantsActivation(props: RateConstantsProps & { readonly h
 function Evidence(props: RatedProps) {
   const { table, rated, place, hasRuns, actions } = props
   const { view } = useServices()
+  const beneath = useView((state) => state.beneathLine)
+  const fits = rated.holdFits
   const colours = useColours()
   const figure = useMemo(() => arrheniusFigure(rated), [rated])
   const overlay = useMemo(() => marksAt(rated, place), [rated, place])
@@ -48,16 +53,34 @@ function Evidence(props: RatedProps) {
   }
   return (
     <Half side="evidence" title="Arrhenius line" note={<LineNote table={table} rated={rated} />}>
-      {hasRuns && (
+      {(hasRuns || fits !== null) && (
         <div className="controls">
-          <BasisChoice />
+          {hasRuns && <BasisChoice />}
+          {fits !== null && (
+            <Choice
+              label="Beneath"
+              options={[
+                { id: 'rows', text: 'Rate constants and line', name: 'Rate constants and their line' },
+                { id: 'holds', text: 'Fits of the holds' },
+              ]}
+              value={beneath}
+              onChange={(beneathLine) => view.setState({ beneathLine })}
+            />
+          )}
         </div>
       )}
       <FigureChart figure={figure} overlay={overlay} colours={colours} onPick={onPick} onCopied={actions.pictureCopied} />
       {rated.line.interval.dof > 0 && (
         <p className="chart-note">Shaded: 95 % band of the line and, wider, of one new k; pointwise in temperature.</p>
       )}
-      <RateConstantRows {...props} />
+      {fits !== null && beneath === 'holds' ? (
+        <>
+          <p className="chart-note">{holdNote(fits)}</p>
+          <HoldFits {...props} fits={fits} />
+        </>
+      ) : (
+        <RateConstantRows {...props} />
+      )}
     </Half>
   )
 }

@@ -13,6 +13,7 @@ import { decimals } from '../../sheet/format.ts'
 import { scientific } from '../../sheet/scientific.ts'
 import { copyText, type DataColumn } from '../../sheet/data-table.ts'
 import { inUnit, temperatureUnitWords } from '../runs/rate-constant-edits.ts'
+import { holdCopyColumns, modelCopyColumns } from './hold-fit-rows.ts'
 
 /** A quantity that follows from the line, as it stands in the table of results; its texts may hold powers of ten as `1e-5`. */
 export interface ParameterRow {
@@ -23,6 +24,8 @@ export interface ParameterRow {
   readonly standardError: Maybe
   readonly lower: Maybe
   readonly upper: Maybe
+  /** What must be known of the lower end; null where there is nothing. */
+  readonly lowerRemark: string | null
   readonly format: (value: Maybe) => string
   readonly formatError: (value: Maybe) => string
 }
@@ -48,15 +51,18 @@ export function parameterRows(result: RateConstantsResult): readonly ParameterRo
 
 const threeDigits = (value: Maybe): string => scientific(value, 3)
 
-function lineRows(line: ArrheniusResult, rateUnit: string, which: string): readonly ParameterRow[] {
+export function lineRows(line: ArrheniusResult, rateUnit: string, which: string): readonly ParameterRow[] {
   const unit = rateUnit === '' ? 'unit of k' : rateUnit
   return [
-    measured(`Ea${which}`, `Ea${which}`, 'kJ/mol', {
-      value: line.Ea_kJ_per_mol,
-      standardError: line.standardError_kJ_per_mol,
-      lower95: line.lower95_kJ_per_mol,
-      upper95: line.upper95_kJ_per_mol,
-    }),
+    {
+      ...measured(`Ea${which}`, `Ea${which}`, 'kJ/mol', {
+        value: line.Ea_kJ_per_mol,
+        standardError: line.standardError_kJ_per_mol,
+        lower95: line.lower95_kJ_per_mol,
+        upper95: line.upper95_kJ_per_mol,
+      }),
+      lowerRemark: lowerEndWords(line),
+    },
     measured(`lnA${which}`, `ln A${which}`, `(A in ${unit})`, {
       value: line.lnA,
       standardError: line.lnAStandardError,
@@ -69,8 +75,9 @@ function lineRows(line: ArrheniusResult, rateUnit: string, which: string): reado
       unit,
       value: line.A,
       standardError: null,
-      lower: expOf(line.lnALower95),
-      upper: expOf(line.lnAUpper95),
+      lower: line.ALower95,
+      upper: line.AUpper95,
+      lowerRemark: null,
       format: threeDigits,
       formatError: threeDigits,
     },
@@ -80,12 +87,16 @@ function lineRows(line: ArrheniusResult, rateUnit: string, which: string): reado
 const estimateRow = (id: string, quantity: string, unit: string, estimate: EstimateResult): ParameterRow =>
   measured(id, quantity, unit, estimate)
 
+/** What is to be said of an interval of Ea that reaches below 0; null of any other. */
+export const lowerEndWords = ({ lower95_kJ_per_mol: lower }: Pick<ArrheniusResult, 'lower95_kJ_per_mol'>): string | null =>
+  lower !== null && lower < 0 ? 'reaches below 0, where no activation energy lies: these rate constants do not bound Ea from below' : null
+
 /** With as many decimals as leave two digits of the standard error, one at least and three at most. */
 function measured(id: string, quantity: string, unit: string, { value, standardError, lower95, upper95 }: EstimateResult): ParameterRow {
   const places = placesOf(standardError)
   const format = (number: Maybe): string => decimals(number, places)
   const formatError = (error: Maybe): string => errorText(error, places)
-  return { id, quantity, unit, value, standardError, lower: lower95, upper: upper95, format, formatError }
+  return { id, quantity, unit, value, standardError, lower: lower95, upper: upper95, lowerRemark: null, format, formatError }
 }
 
 export const placesOf = (standardError: Maybe): number =>
@@ -108,14 +119,10 @@ function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: 
     standardError: null,
     lower: lower95,
     upper: upper95,
+    lowerRemark: null,
     format: threeDigits,
     formatError: threeDigits,
   }
-}
-
-const expOf = (value: Maybe): Maybe => {
-  const power = value === null ? Number.NaN : Math.exp(value)
-  return Number.isFinite(power) && power > 0 ? power : null
 }
 
 /** A temperature with its unit, to so many decimals of it at most. */
@@ -140,6 +147,12 @@ export function copiedTables(result: RateConstantsResult): string {
     ...(result.betweenTemperatures.length === 0 ? [] : [copyText(betweenCopyColumns(result), result.betweenTemperatures)]),
     ...(result.predictions.length === 0 ? [] : [copyText(predictionCopyColumns(result), result.predictions)]),
     copyText(rowCopyColumns(result), result.rows),
+    ...(result.holdFits === null
+      ? []
+      : [
+          copyText(holdCopyColumns(result.holdFits, result.temperatureUnitShown), result.holdFits.holds),
+          copyText(modelCopyColumns(result.holdFits), result.holdFits.models),
+        ]),
   ].join('\n\n')
 }
 
@@ -167,6 +180,7 @@ export const parameterCopyColumns: readonly DataColumn<ParameterRow>[] = [
   number('error', 'standard error', '', (row) => row.standardError),
   number('lower', 'lower 95 %', '', (row) => row.lower),
   number('upper', 'upper 95 %', '', (row) => row.upper),
+  word('remark', 'remark', (row) => row.lowerRemark ?? ''),
 ]
 
 const temperatureColumn = <Row extends { readonly temperature_K: number }>({

@@ -1,6 +1,5 @@
 import { useState } from 'react'
 import { Button } from 'react-aria-components'
-import type { RequestInput } from '../../../shared-kinetics/contract/host-api.ts'
 import type { RateConstantTable, StudyResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { Choice } from '../../sheet/Choice.tsx'
 import { count, decimals } from '../../sheet/format.ts'
@@ -8,35 +7,9 @@ import { parseConversion } from '../../sheet/parse-conversion.ts'
 import { TypedField } from '../../sheet/TypedField.tsx'
 import { useServices } from '../../state/services.ts'
 import type { SheetActions } from '../stage-props.ts'
-
-type FromHolds = RequestInput<'rate-constants.from-holds'>
-type Model = FromHolds['model']
-
-/** Models in the order of the common list, with their whole names. */
-const modelWords: Readonly<Record<Model, string>> = {
-  F1: 'F1, first order',
-  'F3/2': 'F3/2, order 3/2',
-  F2: 'F2, second order',
-  F3: 'F3, third order',
-  F0: 'F0, zero order',
-  'A3/2': 'A3/2, Avrami–Erofeev, n = 3/2',
-  A2: 'A2, Avrami–Erofeev, n = 2',
-  A3: 'A3, Avrami–Erofeev, n = 3',
-  A4: 'A4, Avrami–Erofeev, n = 4',
-  R2: 'R2, contracting area',
-  R3: 'R3, contracting volume',
-  D1: 'D1, one-dimensional diffusion',
-  D2: 'D2, two-dimensional diffusion',
-  D3: 'D3, Jander',
-  D4: 'D4, Ginstling–Brounshtein',
-  'P2/3': 'P2/3, power law, n = 2/3',
-  P2: 'P2, power law, n = 2',
-  P3: 'P3, power law, n = 3',
-  P4: 'P4, power law, n = 4',
-  B1: 'B1, Prout–Tompkins',
-  L2: 'L2, random scission',
-}
-const models = Object.keys(modelWords) as readonly Model[]
+import { modelOf, type ModelCode } from './hold-models.ts'
+import { modelOptions, rankingWords } from './hold-ranking.ts'
+import { useRateConstantsOfHolds } from './use-rate-constants-of-holds.ts'
 
 /** The way from isothermal runs to a table of rate constants; nothing is shown for a series without holds. */
 export function HoldsToRateConstants({
@@ -88,14 +61,16 @@ function HoldsForm({
   readonly actions: SheetActions
   readonly onDone: () => void
 }) {
-  const { session, view } = useServices()
-  const [model, setModel] = useState<Model>('F1')
-  const [zeroInTime, setZeroInTime] = useState<'free' | 'fixed'>('free')
-  const [[from, to], setRange] = useState<readonly [number, number]>([0.1, 0.9])
-  const make = async (): Promise<void> => {
-    const answer = await session.ask('rate-constants.from-holds', { model, zeroInTime, range: [from, to] })
-    if (answer === null) return
-    actions.change({ kind: 'set-rate-constants', table: { ...answer.table, predictAt_K: [...(table?.predictAt_K ?? [])] } })
+  const { view } = useServices()
+  const make = useRateConstantsOfHolds(table, actions)
+  // What was chosen before is where one goes on.
+  const before = table?.holdFits
+  const [model, setModel] = useState<ModelCode>(modelOf(before?.model ?? '') ?? 'F1')
+  const [zeroInTime, setZeroInTime] = useState<'free' | 'fixed'>(before?.zeroInTime ?? 'free')
+  const [[from, to], setRange] = useState<readonly [number, number]>(before?.range ?? [0.1, 0.9])
+  const ranked = before?.zeroInTime === zeroInTime && before.range[0] === from && before.range[1] === to ? before : null
+  const submit = async (): Promise<void> => {
+    if (!(await make({ model, zeroInTime, range: [from, to] }))) return
     view.setState({ stage: 'activation', basis: 'rate-constants', rateConstant: { kind: 'row', index: 0 } })
     onDone()
   }
@@ -104,15 +79,15 @@ function HoldsForm({
       className="holds-form"
       onSubmit={(event) => {
         event.preventDefault()
-        void make()
+        void submit()
       }}
     >
       <label>
         Kinetic model{' '}
-        <select value={model} onChange={(event) => setModel(models.find((one) => one === event.target.value) ?? 'F1')}>
-          {models.map((one) => (
-            <option key={one} value={one}>
-              {modelWords[one]}
+        <select value={model} onChange={(event) => setModel(modelOf(event.target.value) ?? 'F1')}>
+          {modelOptions(ranked).map(({ code, text }) => (
+            <option key={code} value={code}>
+              {text}
             </option>
           ))}
         </select>
@@ -133,6 +108,11 @@ function HoldsForm({
       <Button className="button" type="submit">
         Make the table
       </Button>
+      <p className="holds-ranking">
+        {ranked === null
+          ? 'Whichever model is chosen, all of the list are fitted to the holds and ranked.'
+          : `${rankingWords(ranked)} A fit does not show that a model is right.`}
+      </p>
     </form>
   )
 }

@@ -1,0 +1,98 @@
+import { describe, expect, it } from 'vitest'
+import type { ArrheniusResult, FitOfHold, FitsOfHolds } from '../../../shared-kinetics/contract/study-result.ts'
+import { copyText } from '../../sheet/data-table.ts'
+import { holdCopyColumns, residualWords, rowOfHold } from './hold-fit-rows.ts'
+import { lineRows, lowerEndWords } from './rate-constant-rows.ts'
+
+// F. Daniels, E. H. Johnston, J. Am. Chem. Soc. 43 (1921) 53, N2O5, written down from memory and recomputed with NumPy: ln A 31.2730 ± 0.1829, t(0.975; 4) 2.7764.
+const line: ArrheniusResult = {
+  weighting: 'none',
+  status: 'ok',
+  points: 6,
+  distinctTemperatures: 6,
+  interval: { kind: 'student-t', level: 0.95, dof: 4 },
+  Ea_kJ_per_mol: 102.9,
+  standardError_kJ_per_mol: 0.47,
+  lower95_kJ_per_mol: 101.59,
+  upper95_kJ_per_mol: 104.21,
+  lnA: 31.273,
+  lnAStandardError: 0.1829,
+  lnALower95: 30.7652,
+  lnAUpper95: 31.7808,
+  A: 3.8163e13,
+  ALower95: 2.297e13,
+  AUpper95: 6.342e13,
+  lnA_per_s: 31.273,
+  covarianceEaLnA_kJ_per_mol: null,
+  slope_K: null,
+  r2: 0.9999,
+  residualStandardDeviation: 0.03,
+  reducedChiSquare: null,
+  sources: [],
+}
+
+describe('the numbers of the line', () => {
+  it('give A with the ends the result has, unequally far from it', () => {
+    const A = lineRows(line, '1/s', '').find(({ id }) => id === 'A')
+    expect([A?.value, A?.lower, A?.upper]).toEqual([3.8163e13, 2.297e13, 6.342e13])
+    const beyond = lineRows({ ...line, ALower95: null, AUpper95: null }, '1/s', '').find(({ id }) => id === 'A')
+    expect([beyond?.lower, beyond?.upper]).toEqual([null, null])
+  })
+
+  it('say of an interval of Ea that reaches below 0 that it bounds nothing from below, and nothing of any other', () => {
+    expect(lowerEndWords({ lower95_kJ_per_mol: -0.1 })).toMatch(/^reaches below 0, .* do not bound Ea from below$/)
+    for (const lower of [0, 12, null]) expect(lowerEndWords({ lower95_kJ_per_mol: lower })).toBeNull()
+    const remarks = lineRows({ ...line, lower95_kJ_per_mol: -3 }, '1/s', '').map(({ lowerRemark }) => lowerRemark !== null)
+    expect(remarks).toEqual([true, false, false])
+  })
+})
+
+const hold: FitOfHold = {
+  label: 'hold 120 C',
+  temperature_K: 393.15,
+  rateConstant_per_s: 5.84e-5,
+  standardError_per_s: 1.4e-6,
+  zero_s: 640.9,
+  zeroStandardError_s: 55.3,
+  linearisedRateConstant_per_s: 5.5e-5,
+  linearisedR2: 0.99,
+  residualStandardDeviation: 0.0255,
+  greatestResidual: 0.047,
+  rows: 17,
+  dof: 15,
+  signRuns: 4,
+  signRunsProbability: 0.0053,
+  isSystematic: true,
+}
+const fits: Omit<FitsOfHolds, 'zeroInTime'> = {
+  model: 'D1',
+  method: 'least-squares-of-conversion',
+  range: [0.1, 0.9],
+  holds: [hold],
+  dof: 15,
+  varianceRatioLimit: 2.4,
+  models: [],
+}
+
+describe('fits of holds', () => {
+  it('say whether residuals are systematic, or that it cannot be told', () => {
+    expect(residualWords(hold)).toBe('systematic')
+    expect(residualWords({ ...hold, isSystematic: false })).toBe('not systematic')
+    expect(residualWords({ ...hold, isSystematic: false, signRunsProbability: null })).toBe('too few rows for a runs test')
+  })
+
+  it('belong to the rate constant of their name and temperature, while it stands in the table', () => {
+    const row = { temperature_K: 393.15, rateConstant: 1, standardUncertainty: null, label: 'hold 120 C', use: true }
+    expect(rowOfHold({ rows: [{ ...row, temperature_K: 403.15 }, row] }, hold)).toBe(1)
+    expect(rowOfHold({ rows: [{ ...row, label: null }] }, hold)).toBe(-1)
+  })
+
+  it('are copied with units and with every number; the zero only where it was fitted', () => {
+    const [head = '', cells = ''] = copyText(holdCopyColumns({ ...fits, zeroInTime: 'free' }, 'C'), [hold]).split('\n')
+    const at = (heading: string): string | undefined => cells.split('\t')[head.split('\t').indexOf(heading)]
+    expect(
+      ['T (°C)', 'k, D1 (1/s)', 's.e. of k (1/s)', 'zero in time (s)', 'greatest residual of conversion', 'residuals'].map(at),
+    ).toEqual(['120', '0.0000584', '0.0000014', '640.9', '0.047', 'systematic'])
+    expect(copyText(holdCopyColumns({ ...fits, zeroInTime: 'fixed' }, 'C'), [hold])).not.toContain('zero')
+  })
+})
