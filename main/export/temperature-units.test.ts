@@ -33,7 +33,7 @@ function exported(unit: string): { readonly notes: string; readonly csv: string;
   })
   const study = { ...emptyStudy('study'), runs: runs.map(({ info }) => info), settings: { ...defaultSettings, levels: [0.2, 0.5, 0.8] } }
   const result = evaluateStudy(study, new Map(runs.map(({ info, columns }) => [info.columnsKey, columns])), context)
-  const source = { document: study, result, program: { name: 'rampfold', version: '0' } }
+  const source = { document: study, result, program: { name: 'rampfold' as const, version: '0' } }
   const [csv, notes] = exportResults(source, 'csv').map(({ bytes }) => new TextDecoder().decode(bytes))
   return {
     csv: csv ?? '',

@@ -102,6 +102,15 @@ describe('the worker pool', () => {
     await expect(pool.run('import-file', file('a.csv'))).rejects.toBeInstanceOf(Cancelled)
   })
 
+  it('tells whoever cancels at once, also where the thread has not even started', async () => {
+    start(1)
+    const stop = new AbortController()
+    const cancelled = rejectionOf(pool.run('import-file', file('spin'), { signal: stop.signal }))
+    stop.abort()
+    const nextTurn = new Promise((resolve) => setImmediate(resolve, 'later'))
+    expect(await Promise.race([cancelled, nextTurn])).toBeInstanceOf(Cancelled)
+  })
+
   it('keeps an evaluation for the worker that has its steps, while that one ends what was cancelled', async () => {
     start(2)
     const { emptyStudy } = await import('../../shared-kinetics/contract/study-document.ts')

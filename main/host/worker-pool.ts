@@ -126,14 +126,12 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
       const settled = new AbortController()
       const answer = new Promise<unknown>((resolve, reject) => {
         const job: Job = { message, options, resolve, reject }
+        // Whoever waits is told at once; the worker gives itself back at its next look at the flag.
         const stop = (): void => {
           Atomics.store(cancelFlag, 0, 1)
           const place = waiting.indexOf(job)
-          if (place < 0) {
-            endIfDeaf(job)
-            return
-          }
-          waiting.splice(place, 1)
+          if (place < 0) endIfDeaf(job)
+          else waiting.splice(place, 1)
           reject(new Cancelled())
         }
         options.signal?.addEventListener('abort', stop, { signal: settled.signal })
