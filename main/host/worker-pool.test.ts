@@ -3,11 +3,10 @@ import { createHash } from 'node:crypto'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { buildForTests } from './testing/build-for-tests.ts'
 import { rejectionOf, textBytes } from './testing/host-testing.ts'
-import type { TaskPool } from './host-tasks.ts'
-import { createWorkerPool } from './worker-pool.ts'
+import { createWorkerPool, type WorkerPool } from './worker-pool.ts'
 
 let built: Awaited<ReturnType<typeof buildForTests>>
-let pool: TaskPool
+let pool: WorkerPool
 
 beforeAll(async () => {
   built = await buildForTests(new URL('./testing/pool-test-worker.ts', import.meta.url))
@@ -109,6 +108,15 @@ describe('the worker pool', () => {
     stop.abort()
     const nextTurn = new Promise((resolve) => setImmediate(resolve, 'later'))
     expect(await Promise.race([cancelled, nextTurn])).toBeInstanceOf(Cancelled)
+    let idle = false
+    const whenIdle = (async () => {
+      await pool.whenIdle()
+      idle = true
+    })()
+    await cancelled
+    expect(idle).toBe(false)
+    await whenIdle
+    await pool.whenIdle()
   })
 
   it('keeps an evaluation for the worker that has its steps, while that one ends what was cancelled', async () => {

@@ -11,6 +11,11 @@ export interface WorkerPoolOptions {
   readonly workers?: number
 }
 
+export interface WorkerPool extends TaskPool {
+  /** Resolves when no worker is at work: a task that was cancelled has rejected before its worker has seen it. */
+  whenIdle(): Promise<void>
+}
+
 /** A cancelled task that is still running after so long is ended with its worker. */
 const cancelPatience_ms = 2000
 
@@ -33,9 +38,10 @@ interface Slot {
  * worker that ran its kind before, since that one's cache is warm. A worker that dies fails the task it was running; the next
  * task gets a new one.
  */
-export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions): TaskPool {
+export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions): WorkerPool {
   const slots = new Set<Slot>()
   const waiting: Job[] = []
+  let whoWaitsForIdle: (() => void)[] = []
   let lastId = 0
   let closed = false
 
@@ -57,6 +63,8 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
 
   const take = (slot: Slot, message: FromWorker): void => {
     const { job } = slot
+    // A worker that is being ended keeps the process alive until it has.
+    if (closed) return
     if (message.kind === 'ready' || job === null || message.id !== job.message.id) return
     if (message.kind === 'progress') {
       job.options.progress?.(message.done, message.total)
@@ -67,6 +75,7 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
     if (message.kind === 'answer') job.resolve(message.value)
     else job.reject(errorOfFailure(message.failure))
     pump()
+    tellIdle()
   }
 
   const lose = (slot: Slot, why: string): void => {
@@ -75,6 +84,14 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
     slot.job?.reject(unwanted ? new Cancelled() : new Error(`The calculation stopped unexpectedly (${why}). Try it again.`))
     void slot.worker.terminate()
     pump()
+    tellIdle()
+  }
+
+  const isIdle = (): boolean => waiting.length === 0 && [...slots].every((slot) => slot.job === null)
+  const tellIdle = (): void => {
+    if (!isIdle()) return
+    for (const tell of whoWaitsForIdle) tell()
+    whoWaitsForIdle = []
   }
 
   /** A task that does not look at its flag must not hold up the next one: its worker is ended, cache and all. */
@@ -144,12 +161,18 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
         settled.abort()
       }
     },
+    whenIdle: async () =>
+      new Promise((resolve) => {
+        whoWaitsForIdle.push(resolve)
+        tellIdle()
+      }),
     close: async () => {
       closed = true
       for (const job of waiting.splice(0)) job.reject(new Cancelled())
       const ending = [...slots].map(async (slot) => slot.worker.terminate())
       for (const slot of slots) slot.job?.reject(new Cancelled())
       slots.clear()
+      tellIdle()
       await Promise.all(ending)
     },
   }

@@ -26,13 +26,11 @@ const columns = new Map(runs.map((run) => [run.info.columnsKey, shareColumns(run
 function watchedPool() {
   const pool = createWorkerPool({ workerUrl: pathToFileURL(workerEntry), workers: 2 })
   const done = []
-  const running = new Set()
   return {
     ...pool,
     done,
     run: async (name, input, options = {}) => {
       const task = { name, asked: performance.now(), began: Number.NaN }
-      running.add(task)
       const progress = (...told) => {
         if (Number.isNaN(task.began)) task.began = performance.now()
         options.progress?.(...told)
@@ -40,14 +38,13 @@ function watchedPool() {
       try {
         return await pool.run(name, input, { ...options, progress })
       } finally {
-        running.delete(task)
         done.push({ ...task, over: performance.now() })
       }
     },
-    /** When the last task gave its worker back. */
+    /** When the last worker is free. */
     free: async () => {
-      while (running.size > 0) await wait(1)
-      return Math.max(...done.map(({ over }) => over))
+      await pool.whenIdle()
+      return performance.now()
     },
   }
 }
