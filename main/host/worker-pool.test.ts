@@ -18,7 +18,7 @@ afterEach(async () => {
   await pool.close()
 })
 
-const start = (workers = 2): TaskPool => {
+const start = (workers = 2): WorkerPool => {
   pool = createWorkerPool({ workerUrl: built.url, workers })
   return pool
 }
