@@ -60,18 +60,18 @@ export function minimisingMethod(info: MethodInfo, integralOf: (run: RunAtLevels
         columns.setStatus(level, 'level-not-reached')
         curves.push(noCurve)
       } else {
-        const minimum = findPhiMinimum(watched, scanAt(level), level, columns.t)
-        const read = readAt(level)
+        const scan = scanAt(level)
+        const minimum = findPhiMinimum(watched, scan, level, columns.t)
         if (typeof minimum === 'string') {
           columns.setStatus(level, minimum)
-          curves.push(new PhiLater(() => phiOverRange(read, integrals.length)))
+          curves.push(new PhiLater(() => phiOverRange(readAt(level), integrals.length)))
         } else {
           columns.setEnergy(level, minimum.Ea, minimum.standardError, minimum.r2)
           columns.setPoints(level, minimum.points)
           columns.result.systematicError[level] = 0
           near = gridPointBelow(minimum.Ea)
-          varianceRatio?.set(level, minimum.Ea, watched, read)
-          curves.push(new PhiLater(() => phiAround(read, integrals.length, minimum, columns.t * minimum.standardError)))
+          varianceRatio?.set(level, minimum.Ea, watched, scan?.readBetween)
+          curves.push(new PhiLater(() => phiAround(readAt(level), integrals.length, minimum, columns.t * minimum.standardError)))
         }
       }
       context.progress(level + 1, levels)
@@ -86,7 +86,7 @@ function varianceRatioIntervals(
   levels: number,
 ): {
   readonly interval: EnergyInterval
-  readonly set: (level: number, Ea: number, integrals: readonly TimeIntegral[], nearly: ReadIntegrals) => void
+  readonly set: (level: number, Ea: number, integrals: readonly TimeIntegral[], nearly: ReadIntegrals | undefined) => void
 } {
   const lower95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')
   const upper95 = column(new Float64Array(levels).fill(Number.NaN), 'J/mol')

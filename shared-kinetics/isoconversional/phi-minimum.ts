@@ -1,8 +1,10 @@
-import { bracketedRoot, type RootOptions } from '../numerics/root.ts'
+import { guardedNewton } from '../numerics/guarded-newton.ts'
+import { bracketedRoot } from '../numerics/root.ts'
 import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import { column } from '../units/quantity.ts'
 import { energies } from './energy-grid.ts'
 import { phi, phiSlope } from './phi.ts'
+import type { ReadIntegrals } from './phi-curve.ts'
 import type { LevelPoints, LevelStatus } from './result.ts'
 import { sameTemperature, type SlopeScan } from './slope-scan.ts'
 import type { TimeIntegral } from './time-integral.ts'
@@ -37,12 +39,12 @@ export function findPhiMinimum(
   t: number,
 ): PhiMinimum | Exclude<LevelStatus, 'ok'> {
   if (scan === null) return 'minimum-flat'
-  const { signs: slopes, slopeAt, phiAt } = scan
+  const { signs: slopes, slopeAt, phiAt, readBetween } = scan
   const minima: PhiMinimum[] = []
   for (let g = 1; g < energies.length; g++) {
     if ((slopes[g - 1] as number) < 0 && (slopes[g] as number) >= 0) {
-      const ends = { fLower: slopeAt(g - 1), fUpper: slopeAt(g) }
-      minima.push(minimumBetween(integrals, level, energies[g - 1] as number, energies[g] as number, ends, t))
+      const bracket = { lower: energies[g - 1] as number, upper: energies[g] as number, fLower: slopeAt(g - 1), fUpper: slopeAt(g) }
+      minima.push(minimumBetween(integrals, level, bracket, readBetween, t))
     }
   }
   minima.sort((a, b) => a.phiMinimum - b.phiMinimum)
@@ -57,14 +59,7 @@ export function findPhiMinimum(
   return lowest.flat ? 'minimum-flat' : lowest
 }
 
-function minimumBetween(
-  integrals: readonly TimeIntegral[],
-  level: number,
-  lower: number,
-  upper: number,
-  ends: RootOptions,
-  t: number,
-): PhiMinimum {
+function minimumBetween(integrals: readonly TimeIntegral[], level: number, bracket: Bracket, nearly: ReadIntegrals, t: number): PhiMinimum {
   const n = integrals.length
   const lnJ = new Float64Array(n)
   const inverseT = new Float64Array(n)
@@ -79,7 +74,10 @@ function minimumBetween(
     integrate(Ea)
     return phiSlope(lnJ, inverseT)
   }
-  const { x: Ea } = bracketedRoot(slope, lower, upper, { ...ends, relativeTolerance: 1e-12 })
+  const Ea = rootOf(slope, bracket, (energy) => {
+    nearly(energy, lnJ, inverseT)
+    return phiSlope(lnJ, inverseT)
+  })
   integrate(Ea)
   const { standardError, s, r2 } = linearised(Ea, lnJ, inverseT)
   const phiMinimum = phi(lnJ)
@@ -91,11 +89,38 @@ function minimumBetween(
     r2,
     points: {
       x_per_K: column(inverseT, '1/K'),
-      residual: lnJ.map((value) => value - meanOf(lnJ)),
+      residual: lessTheirMean(lnJ),
       energyPerSlope: -gasConstant_J_per_mol_K,
     },
     flat: !(relativeSpread(inverseT) >= sameTemperature),
   }
+}
+
+/** Two Ea with the values of dPhi/dEa there, of unlike sign. */
+interface Bracket {
+  readonly lower: number
+  readonly upper: number
+  readonly fLower: number
+  readonly fUpper: number
+}
+
+/** Share of Ea: a slope by differences over it is good to some 1e-4, and a step of Newton's method that is smaller than `lastStep` leaves an error of 1e-4 of itself. */
+const difference = 1e-4
+const lastStep = 1e-8
+
+/**
+ * The root of f inside its bracket. Each value of f costs an integral a run, those of `nearly` next to nothing: its root is where the search starts, its slope the one that
+ * steps are taken by, so that two or three values do. Where that does not arrive, Brent's method does.
+ */
+function rootOf(f: (Ea: number) => number, { lower, upper, fLower, fUpper }: Bracket, nearly: (Ea: number) => number): number {
+  const { x: start } = bracketedRoot(nearly, lower, upper, { fLower, fUpper, relativeTolerance: difference })
+  if (!Number.isNaN(start)) {
+    const h = difference * start
+    const slope = (nearly(start + h) - nearly(start - h)) / (2 * h)
+    const { x } = guardedNewton((Ea) => ({ value: f(Ea), slope }), start, { lower, upper, relativeTolerance: lastStep })
+    if (!Number.isNaN(x)) return x
+  }
+  return bracketedRoot(f, lower, upper, { fLower, fUpper, relativeTolerance: 1e-12 }).x
 }
 
 /** Standard error in J/mol, residual standard deviation and r2 of the linearised regression, ln J + Ea u/R against u; not finite with two runs. */
@@ -121,10 +146,25 @@ export function linearised(
   return { s, standardError: (gasConstant_J_per_mol_K * s) / Math.sqrt(spread), r2: 1 - residual / total }
 }
 
-const meanOf = (values: Float64Array): number => values.reduce((sum, value) => sum + value / values.length, 0)
+function meanOf(values: Float64Array): number {
+  let mean = 0
+  for (let i = 0; i < values.length; i++) mean += (values[i] as number) / values.length
+  return mean
+}
+
+function lessTheirMean(values: Float64Array): Float64Array {
+  const mean = meanOf(values)
+  const rest = new Float64Array(values.length)
+  for (let i = 0; i < rest.length; i++) rest[i] = (values[i] as number) - mean
+  return rest
+}
 
 function relativeSpread(values: Float64Array): number {
-  const highest = values.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY)
-  const lowest = values.reduce((a, b) => Math.min(a, b), Number.POSITIVE_INFINITY)
+  let highest = Number.NEGATIVE_INFINITY
+  let lowest = Number.POSITIVE_INFINITY
+  for (let i = 0; i < values.length; i++) {
+    highest = Math.max(highest, values[i] as number)
+    lowest = Math.min(lowest, values[i] as number)
+  }
   return (highest - lowest) / highest
 }

@@ -1,5 +1,7 @@
-import { energies, readGrid, type EnergyGrid } from './energy-grid.ts'
+import { energies, gridPointBelow, readBetween, readGrid, type EnergyGrid } from './energy-grid.ts'
+import { cubicBetween, type IntegralsAt } from './log-integral-table.ts'
 import { phi, phiSlope } from './phi.ts'
+import type { ReadIntegrals } from './phi-curve.ts'
 import type { TimeIntegral } from './time-integral.ts'
 
 /** dPhi/dEa over the grid of Ea at one level. */
@@ -9,6 +11,8 @@ export interface SlopeScan {
   /** dPhi/dEa up to a positive factor, and Phi, at grid point g. */
   readonly slopeAt: (g: number) => number
   readonly phiAt: (g: number) => number
+  /** ln J and the effective 1/T between grid points, in any order of the runs: to start a search from, never for a result. */
+  readonly readBetween: ReadIntegrals
 }
 
 /** Effective temperatures that differ by less than this share are one temperature. */
@@ -47,6 +51,9 @@ export function scanOverGrid(grid: EnergyGrid, level: number, runs: number): Slo
       read(g)
       return phi(lnJ)
     },
+    readBetween: (Ea, lnJs, inverseTs) => {
+      readBetween(grid, Ea, level, lnJs, inverseTs)
+    },
   }
 }
 
@@ -63,18 +70,19 @@ export function scanInOrder(integrals: readonly TimeIntegral[], level: number, n
   if (inOrder === null) return null
   const n = inOrder.length
   const last = energies.length - 1
-  const known = new Map<number, { readonly lnJ: Float64Array; readonly inverseT: Float64Array; readonly order: number }>()
-  const at = (g: number) => {
+  const known = new Map<number, IntegralsInOrder>()
+  const at = (g: number): IntegralsInOrder => {
     const before = known.get(g)
     if (before !== undefined) return before
     const lnJ = new Float64Array(n)
     const inverseT = new Float64Array(n)
+    const Ea = energies[g] as number
     for (let i = 0; i < n; i++) {
-      const value = (inOrder[i] as TimeIntegral).atLevel(energies[g] as number, level)
+      const value = (inOrder[i] as TimeIntegral).atLevel(Ea, level)
       lnJ[i] = value.lnJ
       inverseT[i] = value.inverseT
     }
-    const made = { lnJ, inverseT, order: orderOf(lnJ) }
+    const made = { Ea, lnJ, inverseT, order: orderOf(lnJ) }
     known.set(g, made)
     return made
   }
@@ -82,7 +90,7 @@ export function scanInOrder(integrals: readonly TimeIntegral[], level: number, n
   const lastOf = (holds: (g: number) => boolean): number => {
     let yes = -1
     let no = last + 1
-    for (const probe of [near - 1, near + 2]) {
+    for (const probe of [near, near + 1]) {
       if (probe <= yes || probe >= no) continue
       if (holds(probe)) yes = probe
       else no = probe
@@ -99,23 +107,42 @@ export function scanInOrder(integrals: readonly TimeIntegral[], level: number, n
   const slopeAt = (g: number): number => phiSlope(at(g).lnJ, at(g).inverseT)
   const signs = new Float64Array(last + 1)
   for (let g = 0; g <= last; g++) signs[g] = g <= below ? -1 : g >= above ? 1 : slopeAt(g)
-  return { signs, slopeAt, phiAt: (g) => phi(at(g).lnJ) }
+  return {
+    signs,
+    slopeAt,
+    phiAt: (g) => phi(at(g).lnJ),
+    readBetween: (Ea, lnJ, inverseT) => {
+      const g = gridPointBelow(Ea)
+      cubicBetween(at(g), at(g + 1), Ea, lnJ, inverseT)
+    },
+  }
+}
+
+interface IntegralsInOrder extends IntegralsAt {
+  readonly order: number
 }
 
 /** The integrals by the temperatures they pass, hottest first; null where these are not known, two of them are one, or their two ends stand in different orders. */
-function hottestFirst(integrals: readonly TimeIntegral[], level: number): TimeIntegral[] | null {
-  const passed: { readonly integral: TimeIntegral; readonly from: number; readonly to: number }[] = []
+function hottestFirst(integrals: readonly TimeIntegral[], level: number): readonly TimeIntegral[] | null {
+  const inOrder: TimeIntegral[] = []
+  const tos: number[] = []
+  const froms: number[] = []
   for (const integral of integrals) {
     const range = integral.passes?.(level)
     if (range === undefined) return null
-    passed.push({ integral, from: Math.min(...range), to: Math.max(...range) })
+    const to = Math.max(range[0], range[1])
+    // Few runs, slow to fast and so cool to hot as a rule: each goes before those there are.
+    let place = 0
+    while (place < tos.length && (tos[place] as number) > to) place++
+    inOrder.splice(place, 0, integral)
+    tos.splice(place, 0, to)
+    froms.splice(place, 0, Math.min(range[0], range[1]))
   }
-  passed.sort((a, b) => b.to - a.to)
-  for (let i = 1; i < passed.length; i++) {
-    const [hotter, cooler] = [passed[i - 1] as (typeof passed)[number], passed[i] as (typeof passed)[number]]
-    if (!(hotter.to - cooler.to > sameTemperature * hotter.to) || !(hotter.from >= cooler.from)) return null
+  for (let i = 1; i < tos.length; i++) {
+    const [hotter, cooler] = [tos[i - 1] as number, tos[i] as number]
+    if (!(hotter - cooler > sameTemperature * hotter) || !((froms[i - 1] as number) >= (froms[i] as number))) return null
   }
-  return passed.map(({ integral }) => integral)
+  return inOrder
 }
 
 /** 1 where the values ascend, -1 where they descend, 0 where they do neither or lie too close to tell. */

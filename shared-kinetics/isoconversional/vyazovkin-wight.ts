@@ -52,7 +52,7 @@ export function vyazovkinWight(
 ): VarianceRatioInterval {
   const lnJ = new Float64Array(n)
   const inverseT = new Float64Array(n)
-  const range = { lower: smallestEa, upper: largestEa }
+  const excess = new Float64Array(n)
 
   /** The minimum next to a start. */
   const leastVariance = (
@@ -63,11 +63,11 @@ export function vyazovkinWight(
     const { x } = guardedNewton(
       (energy) => {
         from(energy, lnJ, inverseT)
-        last = varianceOf(lnJ, inverseT)
+        last = varianceOf(lnJ, inverseT, excess)
         return { value: last.slope, slope: last.curvature }
       },
       start,
-      { ...range, relativeTolerance: lastStepAtMinimum },
+      { lower: smallestEa, upper: largestEa, relativeTolerance: lastStepAtMinimum },
     )
     // S² at the root, from where the last step set out.
     const value = Math.max(0, last.value - (0.5 * last.slope ** 2) / last.curvature)
@@ -78,12 +78,12 @@ export function vyazovkinWight(
     guardedNewton(
       (energy) => {
         from(energy, lnJ, inverseT)
-        const variance = varianceOf(lnJ, inverseT)
+        const variance = varianceOf(lnJ, inverseT, excess)
         const distance = Math.sqrt(Math.max(0, variance.value / minimum.value - 1))
         return { value: distance - Math.sqrt(fQuantile - 1), slope: variance.slope / (2 * minimum.value * distance) }
       },
       start,
-      { ...range, ...(side < 0 ? { upper: minimum.Ea } : { lower: minimum.Ea }), relativeTolerance: lastStepAtEnd },
+      { lower: side < 0 ? smallestEa : minimum.Ea, upper: side < 0 ? minimum.Ea : largestEa, relativeTolerance: lastStepAtEnd },
     ).x
 
   const about = leastVariance(nearly, Ea)
@@ -118,8 +118,13 @@ interface Variance {
   readonly curvature: number
 }
 
-function varianceOf(lnJ: Float64Array, inverseT: Float64Array): Variance {
+/** @param excess - room for one number a run */
+function varianceOf(lnJ: Float64Array, inverseT: Float64Array, excess: Float64Array): Variance {
   const n = lnJ.length
+  let mean = 0
+  for (let i = 0; i < n; i++) mean += (lnJ[i] as number) / n
+  // Jᵢ over the geometric mean of all J, less 1: Jᵢ/Jⱼ - 1 then costs no exponential, and its digits count from the spread of the J.
+  for (let i = 0; i < n; i++) excess[i] = Math.expm1((lnJ[i] as number) - mean)
   let value = 0
   let slope = 0
   let curvature = 0
@@ -127,8 +132,9 @@ function varianceOf(lnJ: Float64Array, inverseT: Float64Array): Variance {
     for (let j = 0; j < i; j++) {
       // d ln(Jᵢ/Jⱼ)/dEa, and Jᵢ/Jⱼ - 1 both ways.
       const change = ((inverseT[j] as number) - (inverseT[i] as number)) / gasConstant_J_per_mol_K
-      const up = Math.expm1((lnJ[i] as number) - (lnJ[j] as number))
-      const down = Math.expm1((lnJ[j] as number) - (lnJ[i] as number))
+      const difference = (excess[i] as number) - (excess[j] as number)
+      const up = difference / (1 + (excess[j] as number))
+      const down = -difference / (1 + (excess[i] as number))
       value += up * up + down * down
       slope += change * (up * (1 + up) - down * (1 + down))
       curvature += change * change * ((1 + up) * (1 + 2 * up) + (1 + down) * (1 + 2 * down))

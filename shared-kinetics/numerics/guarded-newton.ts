@@ -48,7 +48,7 @@ export function guardedNewton(
     } else {
       if (!Number.isFinite(step)) {
         // Nothing says which way to go: an end of the range may bracket the root.
-        const end = [lower, upper].find((edge) => f(edge).value < 0 !== value < 0)
+        const end = endOfOtherSign(f, value, lower, upper)
         evaluations += 2
         if (end === undefined) return { status: 'outside', x: Number.NaN, evaluations }
         if (value < 0) positive = end
@@ -67,3 +67,10 @@ export function guardedNewton(
   }
   return { status: 'iteration-limit', x: Number.NaN, evaluations: mostEvaluations }
 }
+
+const endOfOtherSign = (
+  f: (x: number) => { readonly value: number; readonly slope: number },
+  value: number,
+  lower: number,
+  upper: number,
+): number | undefined => [lower, upper].find((edge) => f(edge).value < 0 !== value < 0)
