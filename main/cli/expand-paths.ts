@@ -50,7 +50,7 @@ function bytesOf(path: string): Uint8Array<ArrayBuffer> {
   if (statOf(path).size > largestUploadBytes) {
     throw new InputError(`${path}: the file is larger than ${largestUploadBytes / 2 ** 20} MiB. Export the run with fewer rows.`)
   }
-  return orRefuse(path, () => new Uint8Array(readFileSync(path)))
+  return orRefuse(path, () => readFileSync(path))
 }
 
 function orRefuse<Found>(path: string, find: () => Found): Found {

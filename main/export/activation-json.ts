@@ -44,11 +44,9 @@ export function activationJson({ document, result, program, uncertainty }: Expor
     peakMethods: result.peakMethods,
     findings: result.findings.map((finding) => findingFields(finding, labelOf)),
   }
-  return `${JSON.stringify(content, nullForMissing, 1)}\n`
+  // JSON has no NaN: what is not to be had becomes null by itself.
+  return `${JSON.stringify(content, null, 1)}\n`
 }
-
-/** JSON has no NaN; what is not to be had is null. */
-const nullForMissing = (_key: string, value: unknown): unknown => (typeof value === 'number' && !Number.isFinite(value) ? null : value)
 
 function runFields(run: RunResult): Record<string, unknown> {
   return {

@@ -330,7 +330,7 @@ describe('a saved copy', () => {
     const copy = await host.call('study.save-copy', {})
     expect(copy).toMatchObject({ fileName: 'Calcite 1 2.rampfold', mediaType: 'application/zip' })
     await host.call('study.new', {})
-    const [uploadId = ''] = await uploadToHost(host, [{ fileName: copy.fileName, bytes: copy.bytes }])
+    const [uploadId = ''] = await uploadToHost(host, [{ fileName: copy.fileName, bytes: new Uint8Array(copy.bytes) }])
     const answer = await host.call('runs.import', { uploadIds: [uploadId] })
     expect(answer.openedStudy).toBe(true)
     expect(answer.snapshot.document).toEqual({ ...before.document, id: answer.snapshot.document.id })

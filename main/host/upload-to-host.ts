@@ -2,7 +2,7 @@ import { uploadChunkBytes, type HostTransport } from '../../shared-kinetics/cont
 
 export interface FileIn {
   readonly fileName: string
-  readonly bytes: Uint8Array
+  readonly bytes: Uint8Array<ArrayBuffer>
 }
 
 /** Hands files over to a host in pieces, as a page does. @returns their upload ids, for `runs.import` */
@@ -12,7 +12,7 @@ export async function uploadToHost(host: Pick<HostTransport, 'call'>, files: rea
     const { uploadId } = await host.call('upload.begin', { fileName, byteLength: bytes.byteLength })
     uploadIds.push(uploadId)
     for (let at = 0; at < bytes.byteLength; at += uploadChunkBytes) {
-      await host.call('upload.append', { uploadId, bytes: new Uint8Array(bytes.subarray(at, at + uploadChunkBytes)) })
+      await host.call('upload.append', { uploadId, bytes: bytes.subarray(at, at + uploadChunkBytes) })
     }
   }
   return uploadIds
