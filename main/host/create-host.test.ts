@@ -344,7 +344,7 @@ describe('a saved copy', () => {
   it('with exports beside it opens first, and the exports are added to it', async () => {
     const host = start()
     await importTexts(host, { 'a.csv': 'rate 5' })
-    const { bytes } = await host.call('study.save-copy', {})
+    const bytes = new Uint8Array((await host.call('study.save-copy', {})).bytes)
     const uploadIds = await uploadToHost(host, [
       { fileName: 'b.csv', bytes: textBytes('rate 10') },
       { fileName: 'one.rampfold', bytes },
