@@ -58,7 +58,7 @@ export const demoRuns: readonly DemoRun[] = [
 
 export interface DemoSeries {
   readonly name: string
-  readonly files: readonly { readonly fileName: string; readonly bytes: Uint8Array }[]
+  readonly files: readonly { readonly fileName: string; readonly bytes: Uint8Array<ArrayBuffer> }[]
 }
 
 /** The demo series as files, made anew each time: they read like any other export, through the same importer. */
