@@ -10,7 +10,7 @@ import { build } from 'vite'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { demoSeries } from '../demo/demo-series.ts'
 import { buildCommandLine } from './build-command-line.ts'
-import { codeCacheOf } from './load-script.ts'
+import { codeCacheOf, sealBytes, sealed } from './load-script.ts'
 import { run } from './run.ts'
 
 const root = resolve(import.meta.dirname, '../..')
@@ -66,10 +66,15 @@ describe('the code that is kept of the command line', () => {
   it('is taken by another process of the same Node', () => {
     const take = `const { readFileSync } = require('node:fs')
       const [file, cache] = process.argv.slice(1)
-      const script = new (require('node:vm').Script)(readFileSync(file, 'latin1'), { filename: file, cachedData: readFileSync(cache) })
+      const script = new (require('node:vm').Script)(readFileSync(file, 'latin1'), { filename: file, cachedData: readFileSync(cache).subarray(${sealBytes}) })
       process.stdout.write(String(script.cachedDataRejected))`
     const { stdout } = spawnSync(process.execPath, ['-e', take, script(), codeCacheOf(script())], { encoding: 'utf8' })
     expect(stdout).toBe('false')
+  })
+
+  it('is sealed together with the script', async () => {
+    const [text, kept] = [await readFile(script()), await readFile(codeCacheOf(script()))]
+    expect(kept.equals(sealed(text, kept.subarray(sealBytes)))).toBe(true)
   })
 
   it('is not needed', async () => {

@@ -1,8 +1,8 @@
-import { mkdir, mkdtemp, rm, writeFile } from 'node:fs/promises'
+import { mkdir, mkdtemp, readFile, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import type * as CommandLine from './command-line.ts'
-import { codeCacheOf, loadScript } from './load-script.ts'
+import { codeCacheOf, loadScript, sealed } from './load-script.ts'
 
 // Part of the build: the command line does its usual work once, on the demo series, and the code that V8 made for it is kept beside the script.
 void (async () => {
@@ -31,7 +31,7 @@ void (async () => {
     ]) {
       if ((await run(words, io)) !== 0) throw new Error(`${words.join(' ')}: ${messages.join('')}`)
     }
-    await writeFile(codeCacheOf(file), script.createCachedData())
+    await writeFile(codeCacheOf(file), sealed(await readFile(file), script.createCachedData()))
   } finally {
     await rm(folder, { recursive: true, force: true })
   }
