@@ -47,6 +47,12 @@ describe('steadiness of T(t)', () => {
     expect(told(time, exact).deviation_K).toBeLessThan(1e-10)
   })
 
+  it.each([2050, 4100])('knows the last digit of times whatever the number of rows, here %d of them 0.1 s apart', (n) => {
+    const evenTime = column((i) => rounded(0.1 * i, 1), n)
+    const T = column((i) => rounded(400 + 0.1 * i * rate_K_per_s, 4), n)
+    expect(told(evenTime, T).lastDigit_K).toBeCloseTo(1e-4 + 0.1 * rate_K_per_s, 6)
+  })
+
   it('of a measured T(t) is its distance from the line', () => {
     // A sine of ten whole periods, orthogonal to a line but for the sine's moment; slow bending is seen as well.
     const wavy = told(

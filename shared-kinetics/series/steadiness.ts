@@ -60,9 +60,6 @@ function halfRange(values: Float64Array): number {
   return 0.5 * (orderStatistic(ordered, ordered.length - 1 - outermost) - orderStatistic(ordered, outermost))
 }
 
-/** So many rows, evenly spread, show the last digit: it is 0 in all of them for no other reason than that it was not printed. */
-const enoughRows = 200
-
 /** Largest power of ten from 1 down to 1e-6 that the numbers, as printed, are multiples of; 1e-6 where there is none. */
 function decimalStep(values: Float64Array, printed: (value: number) => number): number {
   for (let decimals = 0; decimals < mostDecimals; decimals++) {
@@ -73,8 +70,8 @@ function decimalStep(values: Float64Array, printed: (value: number) => number): 
 }
 
 function areWhole(values: Float64Array, scaled: (value: number) => number): boolean {
-  const every = Math.max(1, Math.floor(values.length / enoughRows))
-  for (let i = 0; i < values.length; i += every) if (!isWhole(scaled(values[i] as number))) return false
+  // Every row: of evenly spaced ones, some picked out evenly may have rounder times than the rest.
+  for (let i = 0; i < values.length; i++) if (!isWhole(scaled(values[i] as number))) return false
   return true
 }
 

@@ -50,7 +50,7 @@ export interface ConversionSettings {
 }
 
 /** Bump when a number that `convertRun` gives changes: remembered steps of another version are not used. */
-export const convertRunVersion = 7
+export const convertRunVersion = 8
 
 /**
  * Raw columns of one run to its conversion, programme and rate peak.
