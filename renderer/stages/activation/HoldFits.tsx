@@ -10,7 +10,8 @@ import { TableView } from '../../sheet/TableView.tsx'
 import { useServices } from '../../state/services.ts'
 import { temperatureText } from '../runs/rate-constant-cells.ts'
 import { temperatureUnitWords } from '../runs/rate-constant-edits.ts'
-import { holdCopyColumns, linearisedWords, residualWords, rowOfHold } from './hold-fit-rows.ts'
+import { rowOfHold } from '../runs/row-of-hold.ts'
+import { holdCopyColumns, linearisedWords, residualWords } from './hold-fit-rows.ts'
 import type { RatedProps } from './RateConstantsActivation.tsx'
 import { placesOf } from './rate-constant-rows.ts'
 
@@ -18,7 +19,7 @@ import { placesOf } from './rate-constant-rows.ts'
 export function HoldFits({ table, place, fits }: RatedProps & { readonly fits: FitsOfHolds }) {
   const { view } = useServices()
   const { temperatureUnitShown: shown } = table
-  const rows = fits.holds.map((hold) => rowOfHold(table, hold))
+  const rows = fits.holds.map((hold) => rowOfHold(table.rows, hold, fits.holds))
   const current = place.kind === 'row' ? rows.indexOf(place.index) : -1
   const go = (hold: number): void => {
     const index = rows[hold] ?? -1

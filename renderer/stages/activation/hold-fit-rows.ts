@@ -1,18 +1,8 @@
-import type {
-  FitOfHold,
-  FitOfModel,
-  FitsOfHolds,
-  RateConstantTable,
-  TemperatureUnit,
-} from '../../../shared-kinetics/contract/study-result.ts'
+import type { FitOfHold, FitOfModel, FitsOfHolds, TemperatureUnit } from '../../../shared-kinetics/contract/study-result.ts'
 import type { DataColumn } from '../../sheet/data-table.ts'
 import { digitsText } from '../../sheet/scientific.ts'
 import { inUnit, temperatureUnitWords } from '../runs/rate-constant-edits.ts'
 import { unfittedWords } from '../runs/hold-ranking.ts'
-
-/** Where the rate constant of a hold stands in the table; -1 where it was taken out. */
-export const rowOfHold = ({ rows }: Pick<RateConstantTable, 'rows'>, hold: FitOfHold): number =>
-  rows.findIndex((row) => row.label === hold.label && row.temperature_K === hold.temperature_K)
 
 /** Whether the residuals of a hold keep one sign in stretches. */
 export const residualWords = ({ signRunsProbability: chance, isSystematic }: FitOfHold): string =>

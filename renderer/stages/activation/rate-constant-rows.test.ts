@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { ArrheniusResult, FitOfHold, FitsOfHolds } from '../../../shared-kinetics/contract/study-result.ts'
 import { copyText } from '../../sheet/data-table.ts'
-import { holdCopyColumns, residualWords, rowOfHold } from './hold-fit-rows.ts'
+import { holdCopyColumns, residualWords } from './hold-fit-rows.ts'
 import { lineRows, lowerEndWords } from './rate-constant-rows.ts'
 
 // F. Daniels, E. H. Johnston, J. Am. Chem. Soc. 43 (1921) 53, N2O5, written down from memory and recomputed with NumPy: ln A 31.2730 ± 0.1829, t(0.975; 4) 2.7764.
@@ -79,12 +79,6 @@ describe('fits of holds', () => {
     expect(residualWords(hold)).toBe('systematic')
     expect(residualWords({ ...hold, isSystematic: false })).toBe('not systematic')
     expect(residualWords({ ...hold, isSystematic: false, signRunsProbability: null })).toBe('too few rows for a runs test')
-  })
-
-  it('belong to the rate constant of their name and temperature, while it stands in the table', () => {
-    const row = { temperature_K: 393.15, rateConstant: 1, standardUncertainty: null, label: 'hold 120 C', use: true }
-    expect(rowOfHold({ rows: [{ ...row, temperature_K: 403.15 }, row] }, hold)).toBe(1)
-    expect(rowOfHold({ rows: [{ ...row, label: null }] }, hold)).toBe(-1)
   })
 
   it('are copied with units and with every number; the zero only where it was fitted', () => {
