@@ -45,6 +45,8 @@ describe('a model that does not follow the holds', () => {
     const table = tableOf('D3', 'R2', 0.002)
     const some = { ...table, rows: table.rows.map((row, i) => ({ ...row, use: i > 1 })) }
     expect(found(some)[0]?.evidence).toMatchObject({ holds: 2 })
+    const renamed = { ...table, rows: table.rows.map((row, i) => ({ ...row, label: `sample ${i}`, use: i > 1 })) }
+    expect(found(renamed)[0]?.evidence).toMatchObject({ holds: 2 })
     const typed = { ...table, source: { kind: 'typed', name: null, sha256: null } } as const
     expect(found(typed)).toEqual([])
     expect(evaluateRateConstants(typed).holdFits).toBeNull()

@@ -1,4 +1,5 @@
 import type { FitOfHold, FitsOfHolds } from '../../rate-constants/fits-of-holds.ts'
+import type { RateConstantRow } from '../../rate-constants/rate-constant-table.ts'
 import type { Finding } from '../finding.ts'
 import { digits } from '../words.ts'
 import { aboutTable, type RateConstantReview } from './rate-constant-review.ts'
@@ -14,11 +15,16 @@ const cautionFrom = 0.01
  */
 export function holdModelFit({ table, result: { holdFits } }: RateConstantReview): Finding[] {
   if (holdFits === null) return []
-  const used = holdFits.holds.filter(({ label, temperature_K }) =>
-    table.rows.some((row) => row.use && row.label === label && row.temperature_K === temperature_K),
+  const used = holdFits.holds.filter((hold) =>
+    table.rows.some((row) => row.use && (isOf(row, hold) || (row.temperature_K === hold.temperature_K && isRenamed(row, holdFits)))),
   )
   return [...systematicResiduals(used, holdFits), ...closerModels(used, holdFits)]
 }
+
+type Named = Pick<RateConstantRow, 'label' | 'temperature_K'>
+
+const isOf = (row: Named, hold: Named): boolean => row.label === hold.label && row.temperature_K === hold.temperature_K
+const isRenamed = (row: Named, { holds }: FitsOfHolds): boolean => !holds.some((hold) => isOf(row, hold))
 
 function systematicResiduals(used: readonly FitOfHold[], { model }: FitsOfHolds): Finding[] {
   const off = used.filter((hold) => hold.isSystematic && hold.greatestResidual > leastSeen)
