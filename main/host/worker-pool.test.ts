@@ -119,6 +119,19 @@ describe('the worker pool', () => {
     await pool.whenIdle()
   })
 
+  it('tells no progress of a task that was cancelled', async () => {
+    const stop = new AbortController()
+    let reports = 0
+    const progress = (): void => {
+      reports++
+      stop.abort()
+    }
+    // Its worker tells of the end of the way as well.
+    await rejectionOf(start(1).run('import-file', file('a.csv'), { signal: stop.signal, progress }))
+    await pool.whenIdle()
+    expect(reports).toBe(1)
+  })
+
   it('keeps an evaluation for the worker that has its steps, while that one ends what was cancelled', async () => {
     start(2)
     const { emptyStudy } = await import('../../shared-kinetics/contract/study-document.ts')

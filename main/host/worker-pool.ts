@@ -67,7 +67,8 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
     if (closed) return
     if (message.kind === 'ready' || job === null || message.id !== job.message.id) return
     if (message.kind === 'progress') {
-      job.options.progress?.(message.done, message.total)
+      // Told of before the worker saw the cancel: whoever asked may be waiting for another answer by now.
+      if (!isCancelled(job)) job.options.progress?.(message.done, message.total)
       return
     }
     slot.job = null
@@ -80,7 +81,7 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
 
   const lose = (slot: Slot, why: string): void => {
     if (!slots.delete(slot)) return
-    const unwanted = closed || (slot.job !== null && Atomics.load(slot.job.message.cancelFlag, 0) !== 0)
+    const unwanted = closed || (slot.job !== null && isCancelled(slot.job))
     slot.job?.reject(unwanted ? new Cancelled() : new Error(`The calculation stopped unexpectedly (${why}). Try it again.`))
     void slot.worker.terminate()
     pump()
@@ -108,7 +109,7 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
     if (home !== undefined && cached.has(job.message.task)) {
       if (home.job === null) return home
       // A cancelled task of any kind soon gives its worker back, or loses it.
-      if (cacheOf(home.job.message.task) === cache || Atomics.load(home.job.message.cancelFlag, 0) !== 0) return null
+      if (cacheOf(home.job.message.task) === cache || isCancelled(home.job)) return null
     }
     const idle = [...slots].filter((slot) => slot.job === null)
     return idle.find((slot) => slot.known.has(cache)) ?? idle[0] ?? (slots.size < workers ? startWorker() : null)
@@ -177,6 +178,8 @@ export function createWorkerPool({ workerUrl, workers = 2 }: WorkerPoolOptions):
     },
   }
 }
+
+const isCancelled = ({ message }: Job): boolean => Atomics.load(message.cancelFlag, 0) !== 0
 
 /** Tasks that keep a cache in their worker and are therefore worth waiting for; both of these keep the same one. */
 const cached: ReadonlySet<string> = new Set<TaskName>(['evaluate-study', 'estimate-uncertainty'])
