@@ -1,6 +1,9 @@
 import type { MethodId, TaskContext } from '../../shared-kinetics/isoconversional/result.ts'
 import type { RunColumns, RunInfo } from '../../shared-kinetics/series/run.ts'
+import type { HoldOptions } from '../../shared-kinetics/rate-constants/hold-rows.ts'
 import type { RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
+import type { HoldAtLevels } from '../../shared-kinetics/rate-constants/rate-constants-of-holds.ts'
+import type { ReactionModelCode } from '../../shared-kinetics/reaction-models/registry.ts'
 import type { RateConstantsResult } from '../../shared-kinetics/tasks/rate-constants-result.ts'
 import type { DrawOrder } from '../../shared-kinetics/tasks/draw-uncertainty.ts'
 import type { UncertaintyEstimate } from '../../shared-kinetics/tasks/estimate-uncertainty.ts'
@@ -33,6 +36,11 @@ export interface HostTasks {
   'intervals-of-draws': {
     input: { readonly order: DrawOrder; readonly shares: readonly (readonly Float64Array[])[]; readonly seed: number }
     answer: ReadonlyMap<MethodId, IntervalResult>
+  }
+  /** Fits every reaction model to every hold: seconds with a thousand levels. */
+  'rate-constants-of-holds': {
+    input: { readonly holds: readonly HoldAtLevels[]; readonly model: ReactionModelCode; readonly options: HoldOptions }
+    answer: RateConstantTable
   }
   'evaluate-rate-constants': { input: { readonly table: RateConstantTable }; answer: RateConstantsResult }
   /** Reads one export. A file that cannot be used is an answer, not a failure. */

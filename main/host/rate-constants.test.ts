@@ -8,7 +8,9 @@ import { KineticsError } from '../../shared-kinetics/errors.ts'
 import type { RateConstantTable } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { openSavedCopy } from '../study/saved-copy.ts'
 import type { Host } from './create-host.ts'
-import { importTexts, rejectionOf, sampleHost, textBytes } from './testing/host-testing.ts'
+import type { TaskPool } from './host-tasks.ts'
+import { createInProcessPool } from './in-process-pool.ts'
+import { importTexts, rejectionOf, sampleHost, sampleTasks, textBytes } from './testing/host-testing.ts'
 import { uploadToHost } from './upload-to-host.ts'
 
 let folder = ''
@@ -40,6 +42,24 @@ const put = async (host: Host, table: RateConstantTable | null): Promise<Request
 }
 
 describe('a table of rate constants in the host', () => {
+  it('is made from holds by a worker, since that can take seconds', async () => {
+    const within = createInProcessPool(sampleTasks())
+    const asked: string[] = []
+    const pool: TaskPool = {
+      run: async (name, ...rest) => {
+        asked.push(name)
+        return within.run(name, ...rest)
+      },
+      close: async () => within.close(),
+    }
+    const host = start({ pool })
+    await importTexts(host, { 'a.csv': 'rate 10' })
+    const { revision } = await host.call('study.read', {})
+    const refused = await rejectionOf(host.call('rate-constants.from-holds', { revision, model: 'F1' }))
+    expect(refused).toMatchObject({ code: 'bad-request', message: expect.stringContaining('None of its runs is isothermal.') as string })
+    expect(asked).toContain('rate-constants-of-holds')
+  })
+
   it('is read, put into the study, evaluated and exported', async () => {
     const host = start()
     const before = await host.call('study.read', {})

@@ -1,6 +1,7 @@
 import type { ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
 import { readExport } from '../import/read-export.ts'
 import { refusedFile } from '../import/import-refusal.ts'
+import { reactionModels } from '../../shared-kinetics/reaction-models/registry.ts'
 import type { EvaluationCache } from '../../shared-kinetics/tasks/memo.ts'
 import { taskMap } from '../../shared-kinetics/tasks/task-map.ts'
 import { shareColumns } from '../study/share-columns.ts'
@@ -18,6 +19,8 @@ export function createTaskTable(importOptions: ImportOptions = {}): TaskTable {
       taskMap['estimate-uncertainty'](study, columns, uncertainty, context, cache),
     'draw-energies': taskMap['draw-energies'],
     'intervals-of-draws': ({ order, shares, seed }, context) => taskMap['intervals-of-draws'](order, shares, seed, context),
+    'rate-constants-of-holds': ({ holds, model, options }, { checkCancelled }) =>
+      taskMap['rate-constants-of-holds'](holds, reactionModels[model], options, checkCancelled),
     'evaluate-rate-constants': ({ table }) => taskMap['evaluate-rate-constants'](table),
     'import-file': ({ fileName, bytes }, context) => {
       try {

@@ -102,17 +102,28 @@ export const readHold = (hold: HoldAtLevels, model: ReactionModel, options: Hold
  * thereby shown to be right.
  *
  * @param read - holds with status `ok` under the chosen model; the other models are fitted to the same rows
+ * @throws Cancelled, by `checkCancelled`
  * @source vyazovkin-wight-1999
  * @source wald-wolfowitz-1940
  * @source cook-weisberg-1982 (sharing out)
  */
-export function fitsOfHolds(read: readonly ReadHold[], model: ReactionModel, options: HoldOptions): FitsOfHolds {
+export function fitsOfHolds(
+  read: readonly ReadHold[],
+  model: ReactionModel,
+  options: HoldOptions,
+  checkCancelled: () => void = () => undefined,
+): FitsOfHolds {
   const dof = read.reduce((sum, { k }) => sum + k.dof, 0)
   const limit = dof > 0 ? fQuantile(0.95, dof, dof) : null
   const fitted = reactionModelCodes.map((code) =>
     fitOfModel(
       reactionModels[code],
-      code === model.code ? read : read.map(({ hold }) => readHold(hold, reactionModels[code], options)),
+      code === model.code
+        ? read
+        : read.map(({ hold }) => {
+            checkCancelled()
+            return readHold(hold, reactionModels[code], options)
+          }),
       dof,
     ),
   )

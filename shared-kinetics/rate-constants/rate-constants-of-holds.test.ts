@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { rateConstantTableSchema } from '../contract/rate-constant-schema.ts'
+import { Cancelled } from '../errors.ts'
 import { reactionModels } from '../reaction-models/registry.ts'
 import { quantity } from '../units/quantity.ts'
 import { arrheniusLine } from './arrhenius-line.ts'
@@ -33,6 +34,19 @@ describe('rate constants of isothermal runs', () => {
       expect(line.Ea / Ea).toBeCloseTo(1, 9)
       expect(line.lnA).toBeCloseTo(Math.log(A), 7)
     }
+  })
+
+  it('stop before any fit of a hold when nobody waits any more', () => {
+    const fits = holds.length * Object.keys(reactionModels).length
+    const make = (last: number): number => {
+      let looks = 0
+      rateConstantsOfHolds(holds, reactionModels.F1, { zeroInTime: 'free', range: [0.1, 0.9] }, () => {
+        if (++looks === last) throw new Cancelled()
+      })
+      return looks
+    }
+    for (const last of [1, holds.length + 1, fits]) expect(() => make(last)).toThrow(Cancelled)
+    expect(make(fits + 1)).toBe(fits)
   })
 
   // D. Zhou, D. J. W. Grant, J. Phys. Chem. A 108 (2004) 4239: isothermal runs give the right Ea with any model; A is another.

@@ -19,11 +19,19 @@ const whyNot: Readonly<Record<Exclude<RateConstantFromHold['status'], 'ok'>, str
  * conversion. The model, the range and how the fits came out are said in a note, and so are runs that gave no k; `holdFits` holds the fits and the ranking of models.
  * No uncertainty of k is entered: neighbouring levels of one run are not independent, and the standard error of their fit would pretend to be one.
  *
- * @throws KineticsError `bad-option` where the range is not inside [0, 1] or empty
+ * @throws KineticsError `bad-option` where the range is not inside [0, 1] or empty; Cancelled, by `checkCancelled`
  * @source ictac-2011
  */
-export function rateConstantsOfHolds(holds: readonly HoldAtLevels[], model: ReactionModel, options: HoldOptions): RateConstantTable {
-  const read = holds.map((hold) => readHold(hold, model, options))
+export function rateConstantsOfHolds(
+  holds: readonly HoldAtLevels[],
+  model: ReactionModel,
+  options: HoldOptions,
+  checkCancelled: () => void = () => undefined,
+): RateConstantTable {
+  const read = holds.map((hold) => {
+    checkCancelled()
+    return readHold(hold, model, options)
+  })
   const usable = read.filter(({ k }) => k.status === 'ok')
   return {
     rows: usable.map(({ hold, k }) => ({
@@ -38,7 +46,7 @@ export function rateConstantsOfHolds(holds: readonly HoldAtLevels[], model: Reac
     predictAt_K: [],
     source: { kind: 'isothermal-runs', name: `${model.label} (${model.code})`, sha256: null },
     notes: [...modelNote(usable, model, options), ...leftOutNote(read)],
-    ...(usable.length === 0 ? {} : { holdFits: fitsOfHolds(usable, model, options) }),
+    ...(usable.length === 0 ? {} : { holdFits: fitsOfHolds(usable, model, options, checkCancelled) }),
   }
 }
 

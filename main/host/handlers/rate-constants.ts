@@ -1,9 +1,8 @@
 import type { RateConstantsRead } from '../../../shared-kinetics/contract/host-api.ts'
 import { rateConstantTableSchema } from '../../../shared-kinetics/contract/rate-constant-schema.ts'
 import { KineticsError } from '../../../shared-kinetics/errors.ts'
-import { rateConstantsOfHolds, type HoldAtLevels } from '../../../shared-kinetics/rate-constants/rate-constants-of-holds.ts'
+import type { HoldAtLevels } from '../../../shared-kinetics/rate-constants/rate-constants-of-holds.ts'
 import type { RateConstantTable } from '../../../shared-kinetics/rate-constants/rate-constant-table.ts'
-import { reactionModels } from '../../../shared-kinetics/reaction-models/registry.ts'
 import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts'
 import { refusedFile } from '../../import/import-refusal.ts'
 import { RateConstantQuestion } from '../../import/rate-constant-question.ts'
@@ -30,7 +29,7 @@ export function rateConstantHandlers(
     'rate-constants.from-holds': async ({ revision, model, zeroInTime = 'free', range = [0.1, 0.9] }) => {
       checkRevision(workspace, revision)
       const holds = holdsOf(await context.evaluation.of(revision))
-      const table = rateConstantsOfHolds(holds, reactionModels[model], { zeroInTime, range: [range[0], range[1]] })
+      const table = await pool.run('rate-constants-of-holds', { holds, model, options: { zeroInTime, range: [range[0], range[1]] } })
       if (table.rows.length > 0) return { table }
       const why = table.notes[0]?.message ?? 'None of its runs is isothermal.'
       throw new KineticsError('bad-request', `No rate constant can be made from the runs of this study. ${why}`, { runs: holds.length })

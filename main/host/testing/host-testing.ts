@@ -2,6 +2,8 @@ import { createHash } from 'node:crypto'
 import type { HostTransport, ImportAnswer } from '../../../shared-kinetics/contract/host-api.ts'
 import { runInfoOf } from '../../../shared-kinetics/check-values/run-info-of.ts'
 import type { RunColumns, RunInfo } from '../../../shared-kinetics/series/run.ts'
+import { rateConstantsOfHolds } from '../../../shared-kinetics/rate-constants/rate-constants-of-holds.ts'
+import { reactionModels } from '../../../shared-kinetics/reaction-models/registry.ts'
 import type { StudyResult } from '../../../shared-kinetics/tasks/study-result.ts'
 import { evaluateRateConstants } from '../../../shared-kinetics/tasks/evaluate-rate-constants.ts'
 import type { MeasuredSources } from '../../../shared-kinetics/uncertainty/measured-sources.ts'
@@ -146,6 +148,8 @@ export function sampleTasks(counts: { evaluations: number; imports: number } = {
         }),
       }
     },
+    'rate-constants-of-holds': ({ holds, model, options }, { checkCancelled }) =>
+      rateConstantsOfHolds(holds, reactionModels[model], options, checkCancelled),
     'evaluate-rate-constants': ({ table }) => evaluateRateConstants(table),
     'pack-saved-copy': (copy) => packSavedCopy(copy),
     'open-saved-copy': ({ bytes }) => openSavedCopy(new Uint8Array(bytes)),
