@@ -17,7 +17,9 @@ export async function buildCommandLine(root: string, outDir: string): Promise<vo
   chmodSync(join(outDir, 'cli.cjs'), 0o755)
   await bundle(root, outDir, 'keep-code')
   const kept = spawnSync(process.execPath, [join(outDir, 'keep-code.cjs')], { stdio: 'inherit' })
-  if (kept.status !== 0) throw new Error('The command line could not be tried after it was built.')
+  if (kept.status === 0) return
+  const why = kept.error?.message ?? `keep-code ended with ${kept.status ?? kept.signal}`
+  console.warn(`The command line will start more slowly: its compiled code could not be kept (${why}).`)
 }
 
 const bundle = async (root: string, outDir: string, name: string): Promise<unknown> =>
@@ -38,5 +40,13 @@ const bundle = async (root: string, outDir: string, name: string): Promise<unkno
     },
   })
 
-/** The same program in ASCII, which is read without decoding; beyond it there is nothing but text in quotation marks, patterns and remarks. */
-const asAscii = (text: string): string => text.replace(/[^\0-\x7f]/g, (unit) => `\\u${unit.charCodeAt(0).toString(16).padStart(4, '0')}`)
+/**
+ * The same program in ASCII, which is read without decoding; beyond it there is nothing but text in quotation marks, patterns and remarks.
+ * @throws Error where a backslash stands before such a character: written as an escape it would mean something else
+ */
+function asAscii(text: string): string {
+  const escaped = /\\[^\0-\x7f].*/.exec(text)
+  if (escaped !== null)
+    throw new Error(`A backslash before a character beyond ASCII cannot be written in ASCII: ${escaped[0].slice(0, 40)}`)
+  return text.replace(/[^\0-\x7f]/g, (unit) => `\\u${unit.charCodeAt(0).toString(16).padStart(4, '0')}`)
+}

@@ -10,9 +10,9 @@ export async function inLanes(next: () => Promise<void> | null): Promise<void> {
   let failed = false
   const lane = async (): Promise<void> => {
     while (!failed) {
-      const work = next()
-      if (work === null) return
       try {
+        const work = next()
+        if (work === null) return
         await work
       } catch (error) {
         failed = true
