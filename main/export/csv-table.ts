@@ -15,13 +15,20 @@ export function tableStyle(decimal: TableStyle['decimal'] = '.', separator?: Tab
   return { decimal, separator: chosen }
 }
 
-/** Text of one table: rows of cells, a number or text each; null is an empty cell. Lines end as RFC 4180 says. */
-export function csvTable(rows: readonly (readonly (number | string | null)[])[], style: TableStyle): string {
+/** A number, a text, or a number written with a power of ten (`-4.393726e-9`), which keeps its digits however small it is; null is an empty cell. */
+export type CsvCell = number | string | null | { readonly withPower: number }
+
+/** Text of one table. Lines end as RFC 4180 says. */
+export function csvTable(rows: readonly (readonly CsvCell[])[], style: TableStyle): string {
   return rows.map((row) => `${row.map((cell) => cellText(cell, style)).join(style.separator)}\r\n`).join('')
 }
 
-function cellText(cell: number | string | null, style: TableStyle): string {
+function cellText(cell: CsvCell, style: TableStyle): string {
   if (cell === null) return ''
+  if (typeof cell === 'object') {
+    const { withPower: value } = cell
+    return Number.isFinite(value) ? value.toExponential(6).replace('.', style.decimal).replace('e+', 'e') : ''
+  }
   if (typeof cell === 'string') return quoted(withoutFormula(cell), style)
   return Number.isFinite(cell) ? plainNumber(cell).replace('.', style.decimal) : ''
 }

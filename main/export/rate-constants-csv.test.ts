@@ -67,6 +67,29 @@ describe('the exported table of rate constants', () => {
     expect(short).toContain('and between 27 further pairs of neighbouring temperatures')
   })
 
+  it('writes negative numbers with a power of ten as numbers, under either decimal sign', () => {
+    // Exact rate constants: what is left of ln k is rounding, of both signs.
+    const exact = evaluateRateConstants({
+      ...table,
+      rows: [298, 303, 308, 318].map((T, i) => ({
+        temperature_K: T,
+        rateConstant: 1e13 * Math.exp(-1e5 / (8.31446261815324 * T)) * (1 + (i - 1.5) * 1e-9),
+        standardUncertainty: null,
+        label: null,
+        use: true,
+      })),
+    })
+    for (const [style, sign] of [
+      [{ separator: ',', decimal: '.' }, /^-?\d(?:\.\d+)?e-\d+$/],
+      [{ separator: ';', decimal: ',' }, /^-?\d(?:,\d+)?e-\d+$/],
+    ] as const) {
+      const rows = Papa.parse<string[]>(rateConstantsCsv(exact, style), { delimiter: style.separator, skipEmptyLines: true }).data
+      const residuals = rows.filter(([name]) => name === 'k, measured').map((row) => cell(row, 'residual of ln k'))
+      expect(residuals.some((text) => text.startsWith('-'))).toBe(true)
+      for (const text of residuals) expect(text).toMatch(sign)
+    }
+  })
+
   it('gives Ea between each two neighbouring temperatures', () => {
     const pairs = rowsOf('Ea between two temperatures')
     expect(pairs.map((row) => cell(row, 'label'))).toEqual(['298 K to 308 K', '308 K to 318 K'])

@@ -7,9 +7,7 @@ import type {
   RateConstantsResult,
 } from '../../shared-kinetics/tasks/rate-constants-result.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
-import { csvTable } from './csv-table.ts'
-
-type Cell = number | string | null
+import { csvTable, type CsvCell } from './csv-table.ts'
 
 /** A quantity in one row of the table. */
 interface QuantityRow {
@@ -54,11 +52,11 @@ export function rateConstantsCsv(result: RateConstantsResult, style: TableStyle)
     ...measuredRows(result),
     ...result.predictions.flatMap((row) => predictionRows(row, unit)),
   ]
-  return csvTable([headings, ...rows.map((row) => cells(row, style))], style)
+  return csvTable([headings, ...rows.map(cells)], style)
 }
 
-function cells(row: QuantityRow, style: TableStyle): readonly Cell[] {
-  const number = (value: number | null | undefined): Cell => numberCell(value ?? null, style)
+function cells(row: QuantityRow): readonly CsvCell[] {
+  const number = (value: number | null | undefined): CsvCell => numberCell(value ?? null)
   const T = row.temperature_K
   return [
     row.quantity,
@@ -76,10 +74,10 @@ function cells(row: QuantityRow, style: TableStyle): readonly Cell[] {
 }
 
 /** Very small and very large numbers keep their digits by a power of ten, which spreadsheets read as a number. */
-function numberCell(value: number | null, { decimal }: TableStyle): Cell {
+function numberCell(value: number | null): CsvCell {
   if (value === null || !Number.isFinite(value)) return null
   const size = Math.abs(value)
-  return size !== 0 && (size < 1e-4 || size >= 1e9) ? value.toExponential(6).replace('.', decimal).replace('e+', 'e') : value
+  return size !== 0 && (size < 1e-4 || size >= 1e9) ? { withPower: value } : value
 }
 
 const parameter = 'the parameter, Student-t'
