@@ -1,7 +1,10 @@
+import { safetyCaution } from '../../shared-kinetics/tasks/safety-caution.ts'
 import { exitCodes, InputError, UsageError, type CliIo } from './cli-io.ts'
 
 interface Command {
   readonly help: string
+  /** It prints calculated values: the caution closes them, unless the call is quiet. */
+  readonly givesValues: boolean
   readonly load: () => Promise<(words: readonly string[], io: CliIo) => Promise<number>>
 }
 
@@ -9,10 +12,14 @@ interface Command {
 async function commands(): Promise<Readonly<Record<string, Command>>> {
   const help = await import('./help-texts.ts')
   return {
-    inspect: { help: help.inspectHelp, load: async () => (await import('./commands/inspect.ts')).inspect },
-    activation: { help: help.activationHelp, load: async () => (await import('./commands/activation.ts')).activation },
-    'rate-constants': { help: help.rateConstantsHelp, load: async () => (await import('./commands/rate-constants.ts')).rateConstants },
-    open: { help: help.openHelp, load: async () => (await import('./commands/open.ts')).open },
+    inspect: { help: help.inspectHelp, givesValues: false, load: async () => (await import('./commands/inspect.ts')).inspect },
+    activation: { help: help.activationHelp, givesValues: true, load: async () => (await import('./commands/activation.ts')).activation },
+    'rate-constants': {
+      help: help.rateConstantsHelp,
+      givesValues: true,
+      load: async () => (await import('./commands/rate-constants.ts')).rateConstants,
+    },
+    open: { help: help.openHelp, givesValues: false, load: async () => (await import('./commands/open.ts')).open },
   }
 }
 
@@ -58,5 +65,7 @@ async function runCommand(argv: readonly string[], io: CliIo): Promise<number> {
     io.stdout(command.help)
     return exitCodes.done
   }
-  return (await command.load())(words, io)
+  const code = await (await command.load())(words, io)
+  if (command.givesValues && !asked.includes('--quiet')) io.stdout(`${safetyCaution}\n`)
+  return code
 }

@@ -10,6 +10,9 @@ const unitsPerMillimetre = 4
 const textSize = 12
 const lineHeight = 18
 const averageGlyph = 6.3
+/** The caution at the foot is set smaller than the rest. */
+const footSize = 9.5
+const footLineHeight = 13
 
 export interface PrintSize {
   readonly width_mm: number
@@ -27,7 +30,9 @@ export function figureSvg(figure: Figure, size: PrintSize = defaultPrintSize): s
   const width = size.width_mm * unitsPerMillimetre
   const legend = legendRows(figure.marks, width - 88)
   const noteLines = figure.note === undefined ? [] : [figure.note]
-  const height = size.height_mm * unitsPerMillimetre + (legend.length + noteLines.length) * lineHeight
+  const foot = linesOf(caution, Math.floor((width - 88) / ((averageGlyph * footSize) / textSize)))
+  const heightAboveFoot = size.height_mm * unitsPerMillimetre + (legend.length + noteLines.length) * lineHeight
+  const height = heightAboveFoot + (foot.length + 1) * footLineHeight
   const [x, y] = [axisOf(figure, 'x'), axisOf(figure, 'y')]
   const plot = plotOn(width, size.height_mm * unitsPerMillimetre, figure, x, y)
   const parts = [
@@ -47,11 +52,23 @@ export function figureSvg(figure: Figure, size: PrintSize = defaultPrintSize): s
     text(axisTitle(figure.y), 18, (plot.top + plot.bottom) / 2, { anchor: 'middle', turned: true }),
     ...legend.flatMap((row, line) => row.map((entry) => legendEntry(entry, plot.left, plot.bottom + 60 + line * lineHeight))),
     ...noteLines.map((note, line) => text(note, plot.left, plot.bottom + 60 + (legend.length + line) * lineHeight, { colour: softInk })),
+    ...foot.map((line, i) => text(line, plot.left, heightAboveFoot + (i + 1) * footLineHeight, { colour: softInk, size: footSize })),
   ]
   return (
     `<?xml version="1.0" encoding="UTF-8"?>\n<svg xmlns="http://www.w3.org/2000/svg" version="1.1" width="${size.width_mm}mm" ` +
     `height="${height / unitsPerMillimetre}mm" viewBox="0 0 ${width} ${height}">\n${parts.filter((part) => part !== '').join('\n')}\n</svg>\n`
   )
+}
+
+/** Words in lines of at most so many letters. */
+function linesOf(words: string, most: number): readonly string[] {
+  const lines: string[] = []
+  for (const word of words.split(' ')) {
+    const last = lines.at(-1)
+    if (last === undefined || last.length + 1 + word.length > most) lines.push(word)
+    else lines[lines.length - 1] = `${last} ${word}`
+  }
+  return lines
 }
 
 const isChosenMethod = (mark: Mark): boolean => mark.kind === 'points' && mark.tone.kind === 'method' && mark.tone.index === 0
