@@ -34,9 +34,16 @@ describe('outside-scope-of-standard', () => {
   it('holds Ea/(RT) against the range its constants are made for', () => {
     // 80 kJ/mol at 600 to 640 K: 15 to 16.
     expect(messages({ runs: atRates([1, 2, 5, 10]), result: standards(80) })).toEqual([
-      expect.stringMatching(/Ea\/\(RT\) is 15 to 16, its constants are made for 20 to 60/),
+      expect.stringMatching(/Ea\/\(RT\) is 15 to 16, and its constants are made for 20 to 60/),
     ])
     expect(messages({ runs: atRates([1, 2, 5, 10]), result: standards(30) })).toHaveLength(2)
+  })
+
+  it('keeps several reasons apart', () => {
+    const [e1641] = messages({ runs: atRates([2, 5, 10]), result: standards(30) })
+    expect(e1641).toMatch(
+      /Here there are 3 distinct heating rates, fewer than 4; Ea\/\(RT\) is [\d.]+ to [\d.]+, and its constants are made for 8 to 60\. Its Ea/,
+    )
   })
 
   it('tells a second maximum of the rate', () => {

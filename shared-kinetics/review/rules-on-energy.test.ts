@@ -268,6 +268,33 @@ describe('heating-rate-not-constant', () => {
     const [alone] = heatingRateNotConstant(reviewInput({ runs: [reviewedRun('b', 20, 1, { heatingRateSpread: 0.1 })] }))
     expect(alone?.evidence['EaShift_percent']).toBeNull()
   })
+
+  // 2 and 20 K/min: a share s of the heating rate may move Ea by s/ln 10.
+  const twoRates = (spread: number, half: number) =>
+    heatingRateNotConstant(
+      reviewInput({
+        runs: [reviewedRun('a', 2, 0, { heatingRateSpread: spread }), reviewedRun('b', 20, 1, { heatingRateSpread: spread / 2 })],
+        result: { profiles: [profileOf('starink', [100, 100, 100], half)] },
+      }),
+    )
+
+  it('is a caution where that is no less than half the interval, else a note', () => {
+    const spread = 0.02 * Math.LN10
+    expect(twoRates(spread, 2)).toMatchObject([{ severity: 'caution' }])
+    expect(twoRates(spread, 2)[0]?.message).toMatch(/off by up to 2 %, no less than half of their 95 % interval \(2 %\)/)
+    expect(twoRates(spread, 2.2)).toMatchObject([{ severity: 'note' }])
+  })
+
+  it('is one finding for all runs and methods, with the share of each run', () => {
+    const [finding, ...more] = twoRates(0.12, 5)
+    expect(more).toEqual([])
+    expect(finding).toMatchObject({
+      run: null,
+      evidence: { runs: 2, spread_percent: 12 },
+      title: '2 runs: heating rates wander by up to 12 %',
+    })
+    expect(Object.values(finding?.evidence ?? {})).toContain(6)
+  })
 })
 
 describe('the rules on Ea', () => {

@@ -8,10 +8,10 @@ const unitSlip = 60
 const slipTolerance = 0.1
 
 /** From more runs than this one finding speaks for all of them. */
-const mostApart = 3
+const mostApart = 2
 
 /**
- * Fires where a measured constant heating rate is more than 3 % off the nominal one; never for holds and general programmes, nor where time was rebuilt. More than three such
+ * Fires where a measured constant heating rate is more than 3 % off the nominal one; never for holds and general programmes, nor where time was rebuilt. More than two such
  * runs share one finding; a slipped unit of time always has its own.
  */
 export function heatingRateDiffersFromNominal({ runs }: ReviewInput): Finding[] {

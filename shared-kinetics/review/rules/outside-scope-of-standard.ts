@@ -51,7 +51,7 @@ export function outsideScopeOfStandard({ result, runs }: ReviewInput): Finding[]
       ...outside(
         x,
         scope.x,
-        (from, to) => `Ea/(RT) is ${digits(from, 2)} to ${digits(to, 2)}, its constants are made for ${scope.x[0]} to ${scope.x[1]}`,
+        (from, to) => `Ea/(RT) is ${digits(from, 2)} to ${digits(to, 2)}, and its constants are made for ${scope.x[0]} to ${scope.x[1]}`,
       ),
     ]
     if (reasons.length === 0) return []
@@ -62,7 +62,7 @@ export function outsideScopeOfStandard({ result, runs }: ReviewInput): Finding[]
         stage: 'activation',
         title: `Outside the scope of ${profile.label}`,
         message:
-          `${profile.label} is made for ${scope.words}. Here ${list(reasons)}. Its Ea is worked out nevertheless, but a report should not call it a result by that ` +
+          `${profile.label} is made for ${scope.words}. Here ${reasons.join('; ')}. Its Ea is worked out nevertheless, but a report should not call it a result by that ` +
           'standard. Use Starink or Vyazovkin, which are not bound to it.',
         run: null,
         level: null,

@@ -36,7 +36,7 @@ export function temperatureNotMeasured({ runs }: ReviewInput): Finding[] {
           : `Temperature of ${whose} is a programme, not a measurement`,
       message:
         `${seen(largest, found.length - holds, holds)}${named}. A measured sample temperature lags, scatters and answers to the heat of the reaction. Of this one nothing of the ` +
-        'kind can be seen, and Ea carries the error of lag and self-heating without a sign. Export the measured sample temperature where there is one.',
+        'kind can be seen: how far lag and self-heating move Ea cannot be told from these data. Export the measured sample temperature where there is one.',
       run: found.length === 1 ? first.info.id : null,
       level: null,
       evidence: {
