@@ -83,7 +83,7 @@ function HoldsForm({
       }}
     >
       <label>
-        Kinetic model{' '}
+        Reaction model{' '}
         <select value={model} onChange={(event) => setModel(modelOf(event.target.value) ?? 'F1')}>
           {modelOptions(ranked).map(({ code, text }) => (
             <option key={code} value={code}>

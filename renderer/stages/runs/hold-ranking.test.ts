@@ -42,9 +42,9 @@ describe('the ranking beside the choice of a model', () => {
         .slice(0, 3)
         .map(({ text }) => text),
     ).toEqual([
-      'F1, first order: standard deviation 1.23e−5, fits',
-      'A2, Avrami–Erofeev, n = 2: standard deviation 0.0375',
-      'D1, one-dimensional diffusion: the fit found no minimum',
+      'F1 – First order: standard deviation 1.23e−5, fits',
+      'A2 – Avrami–Erofeev, n = 2: standard deviation 0.0375',
+      'D1 – One-dimensional diffusion: the fit found no minimum',
     ])
   })
 

@@ -15,12 +15,12 @@ export const unfittedWords: Readonly<Record<FitOfModel['status'], string>> = {
 
 /** The models to choose from: those that were ranked in that order, each with what it leaves; else as the common list has them. */
 export function modelOptions(ranked: FitsOfHolds | null): readonly { readonly code: ModelCode; readonly text: string }[] {
-  if (ranked === null) return models.map((code) => ({ code, text: modelWords[code] }))
+  if (ranked === null) return models.map((code) => ({ code, text: modelWords(code) }))
   const rows = ranked.models.flatMap((fit) => {
     const code = modelOf(fit.model)
-    return code === undefined ? [] : [{ code, text: `${modelWords[code]}: ${leftBy(fit)}` }]
+    return code === undefined ? [] : [{ code, text: `${modelWords(code)}: ${leftBy(fit)}` }]
   })
-  return [...rows, ...models.filter((code) => rows.every((row) => row.code !== code)).map((code) => ({ code, text: modelWords[code] }))]
+  return [...rows, ...models.filter((code) => rows.every((row) => row.code !== code)).map((code) => ({ code, text: modelWords(code) }))]
 }
 
 function leftBy(fit: FitOfModel): string {
