@@ -1,12 +1,12 @@
 import { useMemo } from 'react'
 import { niceTicks } from '../../shared-kinetics/figure/nice-axis.ts'
-import type { Maybe, RateConstantsResult, RateConstantTable, TemperatureUnit } from '../../shared-kinetics/contract/study-result.ts'
+import type { RateConstantsResult, RateConstantTable, TemperatureUnit } from '../../shared-kinetics/contract/study-result.ts'
 import { PowerOfTen } from '../sheet/PowerOfTen.tsx'
-import { railBars } from '../sheet/rail-bars.ts'
+import { rateBars, rateCaption } from '../sheet/rail-bars.ts'
 import { RailStrip, type RailMark } from '../sheet/RailStrip.tsx'
 import { mantissaAndPower, scientific } from '../sheet/scientific.ts'
 import { bandHalfWidth, rateConstantStops, stopAt, type RateConstantStop } from '../stages/activation/rate-constant-stops.ts'
-import { errorText, placeWords, residualText, temperatureIn } from '../stages/activation/rate-constant-rows.ts'
+import { placeWords, residualText, temperatureIn } from '../stages/activation/rate-constant-rows.ts'
 import { inUnit, toKelvin } from '../stages/runs/rate-constant-edits.ts'
 import { useServices, useView } from '../state/services.ts'
 
@@ -19,7 +19,7 @@ export function RateConstantRail({ table, rated }: { readonly table: RateConstan
   const place = useView((state) => state.rateConstant)
   const stops = useMemo(() => rateConstantStops(table), [table])
   const widths = useMemo(() => stops.map((stop) => bandHalfWidth(rated, stop.temperature_K)), [stops, rated])
-  const bars = useMemo(() => railBars(widths), [widths])
+  const bars = useMemo(() => rateBars(widths), [widths])
   const index = stopAt(stops, place)
   const current = stops[index]
   const { temperatureUnitShown: shown } = table
@@ -36,7 +36,7 @@ export function RateConstantRail({ table, rated }: { readonly table: RateConstan
       name="Temperature rail"
       label="Temperature"
       number={temperatureIn(current.temperature_K, shown, 1)}
-      caption={captionOf(widths)}
+      caption={rateCaption(widths)}
       slider={{ name: 'Temperature of the table', least: 1, greatest: stops.length, now: index + 1, spoken: readOut.spoken }}
       stops={stops.map((stop, i) => ({
         key: `${stop.place.kind}-${stop.place.index}`,
@@ -76,14 +76,6 @@ function axisOf(stops: readonly RateConstantStop[], unit: TemperatureUnit): Rail
     text: String(Number(value.toPrecision(6))).replace('-', '−'),
   }))
   return { shareOf, ticks: ticks.filter(({ share }) => share >= 0 && share <= 1) }
-}
-
-function captionOf(widths: readonly Maybe[]): readonly string[] {
-  const known = widths.filter((width) => width !== null)
-  if (known.length === 0) return []
-  const widest = Math.max(...known)
-  const words = widest < 0.7 ? `${errorText(100 * Math.expm1(widest), 1)} % of k` : `factor ${scientific(Math.exp(widest), 3)}`
-  return ['bars: ± 95 % of the line', `widest ${words}`]
 }
 
 interface ReadOut {

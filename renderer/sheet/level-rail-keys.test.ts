@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { levelAfterKey } from './level-rail-keys.ts'
 import { nearestLevel } from './nearest-level.ts'
-import { railBars, railCaption } from './rail-bars.ts'
+import { railBars, railCaption, rateBars, rateCaption } from './rail-bars.ts'
 
 describe('keys of the level rail (WAI-ARIA slider pattern)', () => {
   it.each([
@@ -60,6 +60,17 @@ describe('bars of the rail', () => {
     expect(railCaption([2, 31.04, 20], 200, 'Student-t')[1]).toBe('tallest 31.0 kJ/mol')
     expect(railCaption([10, 10, 10, 10, 1000], 200, 'Student-t').slice(1)).toEqual(['full height 40.0 kJ/mol', '1 wider, cut at the dots'])
     expect(railCaption([null, null], 200, 'Student-t')).toEqual([])
+  })
+
+  it('stay low where bands of k are narrow: full height is 5 % of k at least, and what is cut is said', () => {
+    const narrow = [Math.log(1.0004), Math.log(1.00025)]
+    expect(rateBars(narrow).every(({ height }) => height !== null && height < 0.01)).toBe(true)
+    expect(rateCaption(narrow)).toEqual(['bars: ± 95 % of the line', 'full height 5.0 % of k, widest < 0.1 % of k'])
+    expect(rateCaption([Math.log(1.08), Math.log(1.137)])[1]).toBe('tallest 13.7 % of k')
+    const far = [0.02, 0.02, 0.02, 0.02, 1.2]
+    expect(rateBars(far)[4]).toEqual({ height: 1, cut: true })
+    expect(rateCaption(far).slice(1)).toEqual(['full height 8.3 % of k, widest factor 3.32', '1 wider, cut at the dots'])
+    expect(rateCaption([null])).toEqual([])
   })
 
   it('cut one hopeless level instead of flattening the others', () => {
