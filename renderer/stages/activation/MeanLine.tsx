@@ -12,7 +12,7 @@ export function MeanLine({ shown, result, document, actions }: ActivationProps) 
   const [from, to] = document.settings.meanRange
   const mean = meanShown(shown)
   const ends = endsOfMean(profile, result.levels)
-  // A mean that should not be quoted alone must not stand out.
+  // Such a mean must not stand out, and says so itself: it may be read or photographed without the finding.
   const isDoubtful = result.findings.some(({ code, severity }) => code === 'energy-varies' && severity !== 'note')
   const set = (meanRange: [number, number]): void => {
     if (meanRange[0] < meanRange[1]) actions.change({ kind: 'set-mean-range', meanRange })
@@ -40,6 +40,7 @@ export function MeanLine({ shown, result, document, actions }: ActivationProps) 
       ) : (
         <output>
           {isDoubtful ? mean.text : <strong>{mean.text}</strong>} kJ/mol
+          {isDoubtful && <span className="not-alone">, not to be quoted alone</span>}
           {mean.words !== '' && ` (${mean.words})`}; {levelsOfMean(profile.mean)}
           {ends !== null && `, ${decimals(ends[0], 1)} to ${decimals(ends[1], 1)}`}
           {mean.remark !== null && <span className="mean-remark">Interval of the mean: {mean.remark}.</span>}
