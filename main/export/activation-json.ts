@@ -8,8 +8,10 @@ import type {
   UncertaintyProfile,
   UncertaintyResult,
 } from '../../shared-kinetics/tasks/study-result.ts'
+import { meanCaution } from '../../shared-kinetics/figure/mean-not-alone.ts'
 import { intervalsNotGiven } from '../../shared-kinetics/figure/intervals-not-given.ts'
 import { studentStatus } from '../../shared-kinetics/figure/interval-status.ts'
+import { assumedShareLines } from './budget-lines.ts'
 import { caution } from './caution.ts'
 import { preExponentialOf } from './pre-exponential.ts'
 
@@ -107,8 +109,10 @@ function profileFields(profile: ProfileResult, result: StudyResult, apart: Uncer
     status: profile.status,
     mean: profile.mean,
     meanCombined: apart?.mean ?? null,
+    meanCaution: meanCaution(result.findings),
     otherIntervals: [...profile.otherIntervals, ...(apart?.intervals ?? [])],
     budget: apart?.budget ?? [],
+    budgetRemarks: apart === undefined ? [] : assumedShareLines(profile, apart, result.levels),
     lackOfFit: profile.lackOfFit,
   }
 }

@@ -1,6 +1,7 @@
 import type { AnalysisSettings } from '../../shared-kinetics/tasks/study-input.ts'
 import type { Window } from '../../shared-kinetics/series/run.ts'
 import type { RunResult } from '../../shared-kinetics/tasks/study-result.ts'
+import { meanCaution } from '../../shared-kinetics/figure/mean-not-alone.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
 import { caution } from './caution.ts'
@@ -16,7 +17,10 @@ export function activationNotes(source: ExportSource): string {
   const sections: readonly (readonly [string, readonly string[]])[] = [
     ['Caution', [caution]],
     ['Intervals', intervalLines(source)],
-    ['Means', result.profiles.flatMap((profile) => meanLines(profile, uncertaintyOf(profile, source.uncertainty)))],
+    [
+      'Means',
+      result.profiles.flatMap((profile) => meanLines(profile, uncertaintyOf(profile, source.uncertainty), meanCaution(result.findings))),
+    ],
     ['Pre-exponential factors by standards', result.profiles.flatMap((profile) => preExponentialLines(profile, result))],
     ['Peak and single-run methods', result.peakMethods.flatMap(peakMethodLines)],
     ['Settings', settingLines(document.settings, result.signal)],

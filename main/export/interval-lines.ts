@@ -4,7 +4,7 @@ import { intervalRemarks, studentStatus } from '../../shared-kinetics/figure/int
 import { intervalsNotGiven } from '../../shared-kinetics/figure/intervals-not-given.ts'
 import type { CombinedMean, IntervalResult, ProfileResult, UncertaintyProfile } from '../../shared-kinetics/tasks/study-result.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
-import { budgetLine } from './budget-lines.ts'
+import { assumedShareLines, budgetLine, combinedLines } from './budget-lines.ts'
 
 /** Every kind of interval in the table, how it was made, and that it is pointwise; systematic errors and lack of fit beside them. */
 export function intervalLines({ result, uncertainty }: ExportSource): string[] {
@@ -23,6 +23,8 @@ export function intervalLines({ result, uncertainty }: ExportSource): string[] {
           ...statusLines(`${profile.label}: ${interval.label}`, interval.status, result.levels),
         ]),
         ...(apart?.budget ?? []).map((entry) => budgetLine(profile.label, entry, profile.mean, result.levels)),
+        ...(apart === undefined ? [] : combinedLines(profile, apart, result.levels)),
+        ...(apart === undefined ? [] : assumedShareLines(profile, apart, result.levels).map((line) => `${profile.label}: ${line}`)),
         ...systematicLines(profile),
         ...lackOfFitLines(profile),
       ]
@@ -80,8 +82,16 @@ function lackOfFitLines({ label, lackOfFit }: ProfileResult): string[] {
   ]
 }
 
-/** The mean of Ea over the range, with its interval where there is one and what that does not hold; then the one that holds the measured sources too. */
-export function meanLines({ label, mean, interval }: ProfileResult, apart: UncertaintyProfile | undefined): string[] {
+/**
+ * The mean of Ea over the range, with its interval where there is one and what that does not hold; then the one that holds the measured sources too.
+ *
+ * @param caution - what stands beside every mean: `meanCaution`
+ */
+export function meanLines(
+  { label, mean, interval }: ProfileResult,
+  apart: UncertaintyProfile | undefined,
+  caution: string | null = null,
+): string[] {
   const { from, to, Ea_kJ_per_mol: Ea, spread_kJ_per_mol: spread, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, note } = mean
   if (Ea === null || spread === null) return []
   const ends =
@@ -89,14 +99,15 @@ export function meanLines({ label, mean, interval }: ProfileResult, apart: Uncer
       ? ''
       : `, 95 % Student-t interval of the mean ${lower.toFixed(2)} to ${upper.toFixed(2)} kJ/mol (${interval.dof} degrees of freedom)`
   const left = ends === '' ? '' : `. ${note}`
+  const beside = caution === null ? '' : `; ${caution}`
   return [
-    `${label}: ${Ea.toFixed(2)} kJ/mol over conversion ${from} to ${to} (${levelsOfMean(mean)})${ends}, spread ${spread.toFixed(2)} kJ/mol${left}`,
-    ...(apart === undefined || apart.mean === null ? [] : [combinedMeanLine(label, apart.mean)]),
+    `${label}: ${Ea.toFixed(2)} kJ/mol over conversion ${from} to ${to} (${levelsOfMean(mean)})${ends}, spread ${spread.toFixed(2)} kJ/mol${beside}${left}`,
+    ...(apart === undefined || apart.mean === null ? [] : [combinedMeanLine(label, apart.mean, beside)]),
   ]
 }
 
-function combinedMeanLine(label: string, mean: CombinedMean): string {
+function combinedMeanLine(label: string, mean: CombinedMean, beside: string): string {
   const { Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, note } = mean
   const ends = lower === null || upper === null ? 'not to be had' : `${lower.toFixed(2)} to ${upper.toFixed(2)} kJ/mol`
-  return `${label}: ${Ea.toFixed(2)} kJ/mol, 95 % interval of the mean, scatter and measured sources combined, ${ends}. ${note}`
+  return `${label}: ${Ea.toFixed(2)} kJ/mol, 95 % interval of the mean, scatter and measured sources combined, ${ends}${beside}. ${note}`
 }

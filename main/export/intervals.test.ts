@@ -233,4 +233,74 @@ describe('what intervals from measured sources rest on', () => {
     expect(text).toContain('Temperature, each run: 0.5 K in each run, assumed, nothing stated')
     expect(shortTable(result)).not.toMatch(/combined|assumed/)
   })
+
+  // u 1 and 2 kJ/mol of the combined interval: 0.8 and 1.6 are 64 % of its variance, 0.6 and 1.2 are 36 %.
+  const assuming = (share: number, change: Partial<typeof entry> = {}): UncertaintyResult => {
+    const u = [Math.sqrt(share), 2 * Math.sqrt(share), null]
+    const lag = {
+      ...entry,
+      source: 'temperature-lag',
+      label: 'Thermal lag',
+      magnitude: '1 s times the heating rate, assumed, nothing stated',
+    } as const
+    const budget = [{ ...lag, assumed: true, shownByScatter: false, standardUncertainty_kJ_per_mol: u, ...change }]
+    return { ...uncertainty, profiles: [{ ...profile, intervals: [intervalOf('combined', 'Combined')], budget }] }
+  }
+
+  it('is named where it is assumed and makes most of the combined interval', () => {
+    const said =
+      'Thermal lag, 1 s times the heating rate, is assumed: nobody has stated it, and it makes 64 % of the variance of the combined interval. State your own (--lag'
+    expect(shortTable(result, assuming(0.64))).toContain(said)
+    expect(textOf({ ...source, uncertainty: assuming(0.64) }, 'csv', 1)).toContain(`Vyazovkin: ${said}`)
+    const json = JSON.parse(textOf({ ...source, uncertainty: assuming(0.64) }, 'json')) as { profiles: { budgetRemarks: string[] }[] }
+    expect(json.profiles.map(({ budgetRemarks }) => budgetRemarks)).toEqual([[], [], [expect.stringContaining(said)]])
+    for (const less of [assuming(0.36), assuming(0.64, { assumed: false }), assuming(0.64, { shownByScatter: true })])
+      expect(shortTable(result, less)).not.toContain('of the variance')
+  })
+
+  it('is given beside half the interval, with the reason why that is not 1.96 times as much', () => {
+    expect(textOf({ ...source, uncertainty: assuming(0.36) }, 'csv', 1)).toMatch(
+      /Vyazovkin: combined, u\(Ea\) 1\.00 to 2\.00 kJ\/mol and half the 95 % interval 10\.00 to 10\.50 kJ\/mol .*no fixed multiple of u: Student's t/,
+    )
+  })
+})
+
+describe('the mean of Ea', () => {
+  const varies = (intervals: string): StudyResult['findings'] => [
+    {
+      code: 'energy-varies',
+      severity: 'caution',
+      stage: 'activation',
+      title: 'Ea varies',
+      message: 'Ea varies.',
+      run: null,
+      level: null,
+      evidence: { intervals },
+      basis: 'A rule',
+      sources: [],
+    },
+  ]
+  const caution = 'not to be quoted alone: Ea varies'
+
+  it('has the half of its interval on the screen, and of the combined one where that was asked for', () => {
+    // 97.25 to 103.75 about 100.5; combined 96.25 to 104.75 about the same.
+    const [withScatter, withAll] = [shortTable(result), shortTable(result, uncertainty)]
+    expect(withScatter).toMatch(/\nMean over conversion 0\.1 to 0\.9, kJ\/mol: Friedman 100\.5 \(2 of 3 levels/)
+    expect(withScatter).toMatch(/; Kissinger–Akahira–Sunose 100\.5 ±3\.3 \(/)
+    expect(withAll).toMatch(/; Vyazovkin 100\.5, combined ±4\.3 \(/)
+  })
+
+  it('is not to be quoted alone where Ea varies by more than noise', () => {
+    for (const intervals of ['apart', 'none']) {
+      const varying = { ...result, findings: varies(intervals) }
+      expect(shortTable(varying)).toContain(`kJ/mol, ${caution}: Friedman`)
+      const notes = textOf({ ...source, result: varying, uncertainty }, 'csv', 1)
+      expect(notes.split(caution)).toHaveLength(result.profiles.length + 2)
+      expect(JSON.parse(textOf({ ...source, result: varying }, 'json'))).toMatchObject({ profiles: [{ meanCaution: caution }, {}, {}] })
+    }
+    for (const findings of [[], varies('overlap')]) {
+      expect(shortTable({ ...result, findings })).not.toContain(caution)
+      expect(textOf({ ...source, result: { ...result, findings } }, 'csv', 1)).not.toContain(caution)
+    }
+  })
 })

@@ -1,7 +1,8 @@
 import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
 import { levelText } from '../../shared-kinetics/figure/nice-axis.ts'
+import { meanCaution } from '../../shared-kinetics/figure/mean-not-alone.ts'
 import type { ProfileResult, StudyResult, UncertaintyResult } from '../../shared-kinetics/tasks/study-result.ts'
-import { assumptionLines } from './budget-lines.ts'
+import { assumedSharesOfAll, assumptionLines } from './budget-lines.ts'
 import { uncertaintyOf } from './activation-json.ts'
 
 /**
@@ -22,8 +23,8 @@ export function shortTable(result: StudyResult, uncertainty?: UncertaintyResult)
     'Ea in kJ/mol, with the larger half of its 95 % interval (Student-t, each level by itself)',
     ...(uncertainty === undefined ? [] : ['combined: the larger half of the 95 % interval from scatter and measured sources, kJ/mol']),
     ...rows,
-    ...(uncertainty === undefined ? [] : assumptionLines(uncertainty)),
-    ...means(result),
+    ...(uncertainty === undefined ? [] : [...assumptionLines(uncertainty), ...assumedSharesOfAll(result.profiles, uncertainty)]),
+    ...means(result, uncertainty),
     ...kissinger(result),
     ...peakMethods(result),
     '',
@@ -45,6 +46,8 @@ function combinedCells(profile: ProfileResult, uncertainty: UncertaintyResult): 
   })
 }
 
+const plusMinus = (half: number | null): string => (half === null ? '' : ` ±${intervalText(half)}`)
+
 /** An interval that rounds away is still there. */
 const intervalText = (half: number): string => (half < 0.05 ? '<0.1' : half.toFixed(1))
 
@@ -52,16 +55,25 @@ function halfWidth(Ea: number, lower: number | null, upper: number | null): numb
   return lower === null || upper === null ? null : Math.max(Ea - lower, upper - Ea)
 }
 
-function means(result: StudyResult): string[] {
-  const texts = result.profiles.flatMap(({ label, mean }) =>
-    mean.Ea_kJ_per_mol === null
-      ? []
-      : [`${label} ${mean.Ea_kJ_per_mol.toFixed(1)}${mean.levelsUsed < mean.levelsInRange ? ` (${levelsOfMean(mean)})` : ''}`],
-  )
+/** Each mean with the larger half of its 95 % interval: by the scatter of the runs, then combined with measured sources where those were worked out. */
+function means(result: StudyResult, uncertainty: UncertaintyResult | undefined): string[] {
+  const texts = result.profiles.flatMap((profile) => {
+    const { label, mean } = profile
+    const Ea = mean.Ea_kJ_per_mol
+    if (Ea === null) return []
+    const half = halfWidth(Ea, mean.lower95_kJ_per_mol, mean.upper95_kJ_per_mol)
+    const combined = uncertaintyOf(profile, uncertainty)?.mean ?? null
+    const halfCombined = combined === null ? null : halfWidth(Ea, combined.lower95_kJ_per_mol, combined.upper95_kJ_per_mol)
+    const levels = mean.levelsUsed < mean.levelsInRange ? ` (${levelsOfMean(mean)})` : ''
+    return [`${label} ${Ea.toFixed(1)}${plusMinus(half)}${halfCombined === null ? '' : `, combined${plusMinus(halfCombined)}`}${levels}`]
+  })
   const range = result.profiles[0]?.mean
+  const caution = meanCaution(result.findings)
   return range === undefined || texts.length === 0
     ? []
-    : [`Mean over conversion ${levelText(range.from)} to ${levelText(range.to)}: ${texts.join(', ')}`]
+    : [
+        `Mean over conversion ${levelText(range.from)} to ${levelText(range.to)}, kJ/mol${caution === null ? '' : `, ${caution}`}: ${texts.join('; ')}`,
+      ]
 }
 
 function kissinger({ kissinger: k }: StudyResult): string[] {
