@@ -81,6 +81,25 @@ describe('a table of rate constants, evaluated', () => {
     expect(evaluateRateConstants({ ...W8, rows: W8.rows.slice(0, 1) }).betweenTemperatures).toEqual([])
   })
 
+  it('two temperatures: no interval, with its reason, unless u(k) is stated', () => {
+    const W8 = tableOf('W8', { predictAt_K: [300] })
+    const bare = evaluateRateConstants({ ...W8, rows: W8.rows.slice(1, 3) })
+    expect(bare).toMatchObject({
+      line: { intervalStatus: 'two-temperatures', lnAIntervalStatus: 'two-temperatures' },
+      predictions: [{ intervalStatus: 'two-temperatures', lineLower95: null }],
+      betweenTemperatures: [{ intervalStatus: 'two-temperatures', lower95_kJ_per_mol: null }],
+    })
+    const rows = W8.rows.slice(1, 3).map((row, i) => ({ ...row, standardUncertainty: row.rateConstant * (i === 0 ? 0.03 : 0.04) }))
+    const [pair] = evaluateRateConstants({ ...W8, rows }).betweenTemperatures
+    // Relative 3 and 4 % make 5 % of the ratio: u(Ea) = R 0.05/(1/298 - 1/308), by JCGM 100, 5.1.2.
+    const u = (8.31446261815324e-3 * 0.05) / (1 / 298 - 1 / 308)
+    expect(pair?.standardUncertainty_kJ_per_mol).toBeCloseTo(u, 9)
+    expect((pair?.upper95_kJ_per_mol ?? 0) - (pair?.Ea_kJ_per_mol ?? 0)).toBeCloseTo(1.959964 * u, 5)
+    // By finite differences of ln A = ln k1 + Ea/(R T1).
+    const lnA = (y1: number, y2: number): number => y1 + (y2 - y1) / (1 / 298 - 1 / 308) / 298
+    expect(pair?.lnAStandardUncertainty).toBeCloseTo(Math.hypot(0.03 * (lnA(1, 0) - lnA(0, 0)), 0.04 * (lnA(0, 1) - lnA(0, 0))), 9)
+  })
+
   it('says the standard state of an entropy that needs one', () => {
     const result = evaluateRateConstants(tableOf('W1', { rateUnit: 'L/(mol min)' }))
     expect(result.eyring?.standardStateOf).toBe('L/(mol s)')
@@ -183,6 +202,18 @@ describe('what is noticed about a table', () => {
     expect(codes(tableOf('W4'))).toContain('caution lines-not-straight')
     expect(codes(tableOf('W8', { predictAt_K: [345] }))).toEqual(['note prediction-extrapolated'])
     expect(codes(tableOf('W8', { predictAt_K: [500] }))).toEqual(['caution prediction-extrapolated'])
+    const far = evaluateRateConstants(tableOf('W8', { predictAt_K: [345, 100.05, 500] }))
+    // 1/100.05 - 1/273 over 1/273 - 1/338 is 8.99.
+    expect(far.findings).toMatchObject([
+      {
+        severity: 'stop',
+        title: '3 predictions lie beyond the data, -173.1 °C the farthest: 173 K below the data, 9 of their span in 1/T',
+      },
+    ])
+    expect(far.predictions.map(({ factorPer10K }) => factorPer10K.isWithinData)).toEqual([false, false, false])
+    // 328 to 338 K ends at the hottest temperature, 335 to 345 K beyond it.
+    const near = evaluateRateConstants(tableOf('W8', { predictAt_K: [328, 335] }))
+    expect(near.predictions.map(({ factorPer10K }) => factorPer10K.isWithinData)).toEqual([true, false])
     expect(codes(tableOf('W8', { predictAt_K: [273, 300, 338] }))).toEqual([])
     expect(codes(tableOf('W8', { rateUnit: '' }))).toEqual(['note rate-unit-missing'])
     const W8 = tableOf('W8')

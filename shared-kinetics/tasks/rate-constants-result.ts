@@ -1,5 +1,6 @@
 import type { ArrheniusStatus, Weighting } from '../rate-constants/arrhenius-line.ts'
 import type { FitsOfHolds } from '../rate-constants/fits-of-holds.ts'
+import type { RateIntervalStatus } from '../rate-constants/interval-status.ts'
 import type { RateConstantSource, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 import type { Finding } from '../review/finding.ts'
 import type { Maybe } from './study-result.ts'
@@ -20,6 +21,10 @@ export interface ArrheniusResult {
   readonly distinctTemperatures: number
   /** Each parameter by itself. `dof` is n - 2, and 0 where fewer than three distinct temperatures leave no interval. */
   readonly interval: { readonly kind: 'student-t'; readonly level: 0.95; readonly dof: number }
+  /** Whether Ea has an interval; where the model does not follow the holds it is of the scatter only (see `lnAIntervalStatus`). */
+  readonly intervalStatus: RateIntervalStatus
+  /** Whether ln A and A have one: a reaction model that does not follow the holds leaves them none, nor a standard error. */
+  readonly lnAIntervalStatus: RateIntervalStatus
   readonly Ea_kJ_per_mol: Maybe
   readonly standardError_kJ_per_mol: Maybe
   readonly lower95_kJ_per_mol: Maybe
@@ -49,6 +54,10 @@ export interface ArrheniusResult {
 export interface EyringResult {
   readonly status: 'ok' | 'without-interval'
   readonly dof: number
+  /** Of the enthalpy. */
+  readonly intervalStatus: RateIntervalStatus
+  /** Of entropy and Gibbs energy, which rest on A. */
+  readonly entropyIntervalStatus: RateIntervalStatus
   readonly enthalpy_kJ_per_mol: EstimateResult
   /** null where the unit of k was not stated. */
   readonly entropy_J_per_mol_K: EstimateResult
@@ -63,7 +72,12 @@ export interface EyringResult {
 export interface RateConstantRowResult {
   readonly temperature_K: number
   readonly rateConstant: number
+  /** As stated; it is what may weight the line. */
   readonly standardUncertainty: Maybe
+  /** Of a k fitted to a hold: from the covariance of that fit, rows taken as independent; it weights nothing. null elsewhere. */
+  readonly fitStandardError: Maybe
+  /** The reaction model that k was fitted under; null for a k that was not fitted here. */
+  readonly fittedUnder: string | null
   readonly label: string | null
   readonly use: boolean
   readonly lnK: number
@@ -78,17 +92,27 @@ export interface RateConstantRowResult {
 export interface FactorPer10KResult {
   /** k(from + 10 K)/k(from). */
   readonly from_K: number
+  /** Both ends of the 10 K lie between the coldest and the hottest temperature used. */
+  readonly isWithinData: boolean
   readonly factor: Maybe
   readonly lower95: Maybe
   readonly upper95: Maybe
 }
 
-/** Ea = R ln(k₂/k₁)/(1/T₁ - 1/T₂) from one temperature to the next hotter one; two points leave no interval. ln A is in the unit of k. */
+/** Ea = R ln(k₂/k₁)/(1/T₁ - 1/T₂) from one temperature to the next hotter one; two points leave no interval but that of the stated uncertainties of k. ln A is in the unit of k. */
 export interface BetweenTemperaturesResult {
   readonly from_K: number
   readonly to_K: number
   readonly Ea_kJ_per_mol: Maybe
   readonly lnA: Maybe
+  /** `ok` where u(k) was stated for each row of both temperatures; the ends are then ± 1.96 standard uncertainties. */
+  readonly intervalStatus: RateIntervalStatus
+  readonly standardUncertainty_kJ_per_mol: Maybe
+  readonly lower95_kJ_per_mol: Maybe
+  readonly upper95_kJ_per_mol: Maybe
+  readonly lnAStandardUncertainty: Maybe
+  readonly lnALower95: Maybe
+  readonly lnAUpper95: Maybe
 }
 
 export interface RateConstantPrediction {
@@ -96,6 +120,7 @@ export interface RateConstantPrediction {
   /** null where it leaves double precision as well; `lnK` is then there. */
   readonly rateConstant: Maybe
   readonly lnK: Maybe
+  readonly intervalStatus: RateIntervalStatus
   /** 95 % band of the line, and of one more measured k; each temperature by itself. */
   readonly lineLower95: Maybe
   readonly lineUpper95: Maybe
@@ -147,5 +172,7 @@ export interface RateConstantsResult {
   readonly curvature: { readonly t: number; readonly threshold: number; readonly dof: number; readonly isCurved: boolean } | null
   /** Where the table was made from isothermal runs: the fit of each hold under the chosen model, and the models ranked; else null. */
   readonly holdFits: FitsOfHolds | null
+  /** null where the table was not made from holds; false withholds the intervals of A and of predicted k. */
+  readonly modelFollowsHolds: boolean | null
   readonly findings: readonly Finding[]
 }

@@ -36,6 +36,52 @@ describe('a model that does not follow the holds', () => {
     expect(better?.sources).toEqual(['vyazovkin-wight-1999'])
   })
 
+  it('leaves A and predicted k without an interval, keeps that of Ea, and stops a prediction', () => {
+    const wrong = { ...tableOf('F1', 'D3', 0), predictAt_K: [298.15, 400] }
+    const result = evaluateRateConstants(wrong)
+    expect(found(wrong).map(({ severity, code }) => `${severity} ${code}`)).toEqual([
+      'stop model-fits-badly',
+      'stop other-models-fit-better',
+    ])
+    expect(result.modelFollowsHolds).toBe(false)
+    expect(result.line).toMatchObject({
+      intervalStatus: 'ok',
+      lnAIntervalStatus: 'model-does-not-follow-holds',
+      lnAStandardError: null,
+      lnALower95: null,
+      ALower95: null,
+      AUpper95: null,
+    })
+    // The runs are exact, Ea 110 kJ/mol: a wrong model moves every k by one factor.
+    expect(result.line.Ea_kJ_per_mol).toBeCloseTo(110, 3)
+    expect(result.line.lower95_kJ_per_mol).not.toBeNull()
+    const none = {
+      intervalStatus: 'model-does-not-follow-holds',
+      lineLower95: null,
+      lineUpper95: null,
+      newLower95: null,
+      lnNewUpper95: null,
+    }
+    expect(result.predictions).toMatchObject([none, none])
+    expect(result.eyring).toMatchObject({ intervalStatus: 'ok', entropyIntervalStatus: 'model-does-not-follow-holds' })
+    expect(result.eyring?.gibbs_kJ_per_mol.lower95).toBeNull()
+    expect(result.band.lnLineLower95.every((end) => end === null)).toBe(true)
+    const right = evaluateRateConstants({ ...tableOf('F1', 'F1', 0.002), predictAt_K: [400] })
+    expect(right).toMatchObject({ modelFollowsHolds: true, predictions: [{ intervalStatus: 'ok' }], line: { lnAIntervalStatus: 'ok' } })
+    expect(right.predictions[0]?.lineLower95).not.toBeNull()
+  })
+
+  it('shows the standard error of each fitted k, and of none that was typed over', () => {
+    const table = tableOf('F1', 'F1', 0.002)
+    const rows = table.rows.map((row, i) => (i === 1 ? { ...row, rateConstant: row.rateConstant * 2 } : row))
+    const result = evaluateRateConstants({ ...table, rows })
+    expect(result.rows.map(({ fittedUnder }) => fittedUnder)).toEqual(['F1', null, 'F1', 'F1'])
+    expect(result.rows.map(({ fitStandardError }) => fitStandardError)).toEqual(
+      table.holdFits?.holds.map((hold, i) => (i === 1 ? null : hold.standardError_per_s)),
+    )
+    expect(result.weightedLine).toBeNull()
+  })
+
   it('is not, where the model is the true one', () => {
     expect(found(tableOf('D3', 'D3', 0.002))).toEqual([])
     expect(found(tableOf('F1', 'F1', 0))).toEqual([])

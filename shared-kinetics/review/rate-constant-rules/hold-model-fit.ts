@@ -1,34 +1,23 @@
 import type { FitOfHold, FitsOfHolds } from '../../rate-constants/fits-of-holds.ts'
-import type { RateConstantRow } from '../../rate-constants/rate-constant-table.ts'
+import { holdsInUse, holdsNotFollowed, isVarianceBeyondLimit, misfitOfCaution } from '../../rate-constants/model-of-holds.ts'
 import type { Finding } from '../finding.ts'
 import { digits } from '../words.ts'
 import { aboutTable, type RateConstantReview } from './rate-constant-review.ts'
 
-/** Conversion is not measured closer: 1 µg of 10 mg. What a model misses by less is not said. */
-const leastSeen = 1e-4
-/** A misfit of a hundredth of the reaction moves k by about as much. */
-const cautionFrom = 0.01
-
 /**
  * Fires where the chosen model does not follow the holds that rate constants were made from: residuals of conversion that keep one sign in stretches (runs test), and a
- * residual variance above that of the closest model by more than F allows.
+ * residual variance above that of the closest model by more than F allows. Where k is to be predicted with such a model, it is a stop: the prediction carries the error of the model whole.
  */
-export function holdModelFit({ table, result: { holdFits } }: RateConstantReview): Finding[] {
+export function holdModelFit({ table, result: { holdFits, predictions } }: RateConstantReview): Finding[] {
   if (holdFits === null) return []
-  const used = holdFits.holds.filter((hold) =>
-    table.rows.some((row) => row.use && (isOf(row, hold) || (row.temperature_K === hold.temperature_K && isRenamed(row, holdFits)))),
-  )
-  return [...systematicResiduals(used, holdFits), ...closerModels(used, holdFits)]
+  const used = holdsInUse(table.rows, holdFits)
+  const severity = predictions.some((at) => at.lnK !== null) ? 'stop' : 'caution'
+  return [...systematicResiduals(used, holdFits, severity), ...closerModels(used, holdFits, severity)]
 }
 
-type Named = Pick<RateConstantRow, 'label' | 'temperature_K'>
-
-const isOf = (row: Named, hold: Named): boolean => row.label === hold.label && row.temperature_K === hold.temperature_K
-const isRenamed = (row: Named, { holds }: FitsOfHolds): boolean => !holds.some((hold) => isOf(row, hold))
-
-function systematicResiduals(used: readonly FitOfHold[], { model }: FitsOfHolds): Finding[] {
-  const off = used.filter((hold) => hold.isSystematic && hold.greatestResidual > leastSeen)
-  const [worst] = off.toSorted((a, b) => b.greatestResidual - a.greatestResidual)
+function systematicResiduals(used: readonly FitOfHold[], { model }: FitsOfHolds, severe: 'stop' | 'caution'): Finding[] {
+  const worst = holdsNotFollowed(used)[0]
+  const off = used.filter((hold) => holdsNotFollowed(used).includes(hold))
   if (worst === undefined) return []
   const named = off.slice(0, 10).map(({ label, signRuns, rows, signRunsProbability, greatestResidual }) => {
     const chance = signRunsProbability === null ? '' : `, chance ${digits(signRunsProbability)}`
@@ -37,7 +26,7 @@ function systematicResiduals(used: readonly FitOfHold[], { model }: FitsOfHolds)
   return [
     aboutTable({
       code: 'model-fits-badly',
-      severity: worst.greatestResidual >= cautionFrom ? 'caution' : 'note',
+      severity: worst.greatestResidual >= misfitOfCaution ? severe : 'note',
       title: `${model} does not follow ${off.length === 1 ? 'a hold' : `${off.length} of ${used.length} holds`}`,
       message:
         `The conversion differs from the model ${model} systematically: ${named.join('; ')}${off.length > 10 ? '; …' : ''}. k then means little beyond a time scale, and A and conversions predicted with the model are wrong. ` +
@@ -51,22 +40,22 @@ function systematicResiduals(used: readonly FitOfHold[], { model }: FitsOfHolds)
         probability: worst.signRunsProbability,
       },
       basis:
-        'Runs test of the residuals in the order of time, p < 0.05 shared out among the holds; caution from 0.01 of conversion on (common practice)',
+        'Runs test of the residuals in the order of time, p < 0.05 shared out among the holds; caution from 0.01 of conversion on, a stop where k is predicted with it (common practice)',
       sources: ['wald-wolfowitz-1940', 'swed-eisenhart-1943', 'cook-weisberg-1982'],
     }),
   ]
 }
 
-function closerModels(used: readonly FitOfHold[], { model, models, varianceRatioLimit: limit }: FitsOfHolds): Finding[] {
+function closerModels(used: readonly FitOfHold[], fits: FitsOfHolds, severity: 'stop' | 'caution'): Finding[] {
+  const { model, models, varianceRatioLimit: limit } = fits
   const chosen = models.find((other) => other.model === model)
   const fitting = models.filter((other) => other.fits)
-  if (used.length === 0 || limit === null || chosen === undefined || chosen.fits || fitting.length === 0) return []
-  if (!((chosen.residualStandardDeviation ?? 0) > leastSeen)) return []
+  if (used.length === 0 || limit === null || chosen === undefined || !isVarianceBeyondLimit(fits)) return []
   const [best] = fitting
   return [
     aboutTable({
       code: 'other-models-fit-better',
-      severity: 'caution',
+      severity,
       title: `${best?.model} fits the holds better than ${model}`,
       message:
         `${model} leaves a standard deviation of conversion of ${digits(chosen.residualStandardDeviation ?? Number.NaN)}, ${best?.model} ${digits(best?.residualStandardDeviation ?? Number.NaN)}` +
@@ -75,7 +64,7 @@ function closerModels(used: readonly FitOfHold[], { model, models, varianceRatio
           .map((other) => other.model)
           .join(
             ', ',
-          )}${fitting.length > 10 ? ', …' : ''}. Ea hardly depends on the model, A does: take one of these unless the mechanism is known.`,
+          )}${fitting.length > 10 ? ', …' : ''}. Ea hardly depends on the model, A does: take one of these unless the mechanism is known.${severity === 'stop' ? ` k predicted under ${model} is as wrong as its A.` : ''}`,
       evidence: {
         model,
         closest: best?.model ?? null,
@@ -85,7 +74,8 @@ function closerModels(used: readonly FitOfHold[], { model, models, varianceRatio
         models: models.length,
         fitting: fitting.length,
       },
-      basis: 'Ratio of residual variances above F(0.95; dof, dof); rows taken as independent',
+      basis:
+        'Ratio of residual variances above F(0.95; dof, dof); rows taken as independent; a stop where k is predicted (common practice)',
       sources: ['vyazovkin-wight-1999'],
     }),
   ]
