@@ -29,7 +29,7 @@ export function Messages({ stale }: { readonly stale: boolean }) {
   )
 }
 
-/** What was just done, for the top line. */
+/** What was just done: at the foot of the margin or, where that stands beneath the halves, on a line of its own at the foot of the stage. */
 export function DoneNotice() {
   const { session } = useServices()
   const notice = useStudy((state) => state.notice)

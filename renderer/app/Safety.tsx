@@ -1,9 +1,6 @@
-/** Said wherever a number may be used to store, ship, dry, cure or heat something. */
+import { safetyCaution } from '../../shared-kinetics/figure/result-words.ts'
+
+/** Said wherever a number may be used to store, ship, dry, cure or heat something. It has a place of its own that nothing scrolls away. */
 export function Safety() {
-  return (
-    <p className="safety">
-      A calculated value is an estimate for planning; it does not replace tests on the real amount, package and plant; follow local codes
-      and the judgement of licensed or otherwise competent people.
-    </p>
-  )
+  return <p className="safety">{safetyCaution}</p>
 }

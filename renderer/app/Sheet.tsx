@@ -11,6 +11,7 @@ import { RunsStage } from '../stages/runs/RunsStage.tsx'
 import type { SheetActions, StageProps } from '../stages/stage-props.ts'
 import { MarginNotes, findingElementId } from '../sheet/MarginNotes.tsx'
 import { nearestLevel } from '../sheet/nearest-level.ts'
+import { nextFinding } from '../sheet/next-finding.ts'
 import { ProgramMark } from '../sheet/ProgramMark.tsx'
 import { StudyMenu, ThemeMenu } from '../sheet/StudyMenu.tsx'
 import { TopLine } from '../sheet/TopLine.tsx'
@@ -38,6 +39,7 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
   const basis = useView((state) => state.basis)
   const place = useView((state) => state.rateConstant)
   const recent = useStudy((state) => state.recent)
+  const continued = useStudy((state) => state.continued)
   const stale = useStudy(isStale)
   const jump = useJump()
   const { document } = replica
@@ -54,6 +56,10 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
     () => ({ document, result, levelIndex, level, actions }),
     [document, result, levelIndex, level, actions],
   )
+  const here = isOfTable ? tableFindings : runFindings
+  const isHere = (finding: Finding): boolean => finding.stage === stage && here.includes(finding)
+  // The rail of a table stands on both stages, and reads out what is predicted.
+  const hasSafety = stage === 'activation' || (isOfTable && (table?.predictAt_K.length ?? 0) > 0)
 
   useEffect(() => {
     window.document.title = `${document.name} – Rampfold`
@@ -72,14 +78,15 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
         hasRuns={hasRuns}
         rateConstants={table?.rows.length ?? null}
         actions={actions}
-        onFinding={(severity) => jump.toNext(severity, findings, tableFindings)}
-        notice={<DoneNotice />}
+        onFinding={(severity) => jump.toNext(severity, findings, tableFindings, isHere)}
+        continuedFrom={continued?.studyId === document.id ? continued.changedAt : null}
         mark={<ProgramMark paper={paper} />}
         menus={
           <>
             <StudyMenu
               recent={recent}
               currentStudyId={document.id}
+              continuedFrom={continued?.studyId === document.id ? continued.changedAt : null}
               hasResults={(result !== null && result.profiles.length > 0) || (table?.rows.length ?? 0) > 0}
               hasRuns={hasRuns || table !== null}
               actions={actions}
@@ -90,6 +97,7 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
         }
       />
       <Messages stale={stale} />
+      <DoneNotice />
       {hasRuns || table !== null ? (
         <>
           <main className={stale ? 'stage is-stale' : 'stage'} aria-busy={stale}>
@@ -108,13 +116,13 @@ export function Sheet({ replica, actions, paper }: { readonly replica: Replica; 
               )}
             </TabPanel>
             <MarginNotes
-              findings={(isOfTable ? tableFindings : runFindings).filter((finding) => finding.stage === stage)}
+              findings={here.filter(isHere)}
               all={findings}
               settled={isOfTable ? rated !== null : result !== null}
               onShow={jump.toPlace}
             />
-            {stage === 'activation' && <Safety />}
           </main>
+          {hasSafety && <Safety />}
           {isOfTable && table !== null && rated !== null && offer === null && <RateConstantRail table={table} rated={rated} />}
           {!isOfTable && result !== null && result.runs.length > 0 && level !== null && (
             <Rail result={result} levelIndex={levelIndex} level={level} actions={actions} />
@@ -154,10 +162,9 @@ function useJump() {
   )
 
   const toNext = useCallback(
-    (severity: Severity, findings: readonly Finding[], ofTable: readonly Finding[]): void => {
-      const same = findings.filter((finding) => finding.severity === severity)
-      const next = same[(same.findIndex((finding) => finding === lastRef.current) + 1) % same.length]
-      if (next === undefined) return
+    (severity: Severity, findings: readonly Finding[], ofTable: readonly Finding[], isHere: (finding: Finding) => boolean): void => {
+      const next = nextFinding(findings, severity, lastRef.current, isHere)
+      if (next === null) return
       lastRef.current = next
       toPlace(next)
       view.setState({ basis: ofTable.includes(next) ? 'rate-constants' : 'runs' })

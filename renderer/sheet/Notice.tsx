@@ -10,7 +10,7 @@ export interface NoticeProps {
   readonly onDismiss: () => void
 }
 
-/** One sentence about what was done or what went wrong. What was done lies beneath the study's name, where no number is read, and nothing moves for it. */
+/** One sentence about what was done or what went wrong. What was done has a place at the foot of the margin, so that it covers nothing. */
 export function Notice({ kind, text, onDismiss }: NoticeProps) {
   useEffect(() => {
     if (kind === 'failure') return

@@ -10,6 +10,7 @@ const shownRecent = 8
 export function StudyMenu({
   recent,
   currentStudyId,
+  continuedFrom,
   hasResults,
   hasRuns,
   actions,
@@ -17,6 +18,8 @@ export function StudyMenu({
 }: {
   readonly recent: readonly RecentStudy[]
   readonly currentStudyId: string
+  /** When it was last changed before this window opened on it; null for one that was begun or opened here. */
+  readonly continuedFrom: string | null
   readonly hasResults: boolean
   readonly hasRuns: boolean
   readonly actions: SheetActions
@@ -38,6 +41,7 @@ export function StudyMenu({
           </MenuItem>
           <MenuItem className="menu-item" onAction={actions.newStudy} textValue="New study">
             <Text slot="label">New study</Text>
+            {continuedFrom !== null && <Text slot="description">instead of the one continued from {formatMoment(continuedFrom)}</Text>}
           </MenuItem>
           <Separator className="menu-rule" />
           <MenuItem id="save" className="menu-item" onAction={actions.saveCopy} textValue="Save a copy">

@@ -4,7 +4,7 @@ import type { StudySnapshot } from '../../shared-kinetics/contract/host-api.ts'
 import type { StudyDocument } from '../../shared-kinetics/contract/study-document.ts'
 import type { Finding, Severity } from '../../shared-kinetics/contract/study-result.ts'
 import type { SheetActions } from '../stages/stage-props.ts'
-import { count } from './format.ts'
+import { count, formatMoment } from './format.ts'
 
 export interface TopLineProps {
   readonly document: StudyDocument
@@ -17,8 +17,8 @@ export interface TopLineProps {
   readonly onFinding: (severity: Severity) => void
   readonly mark: ReactNode
   readonly menus: ReactNode
-  /** A word about what was just done; it lies beneath the study's name for its short time. */
-  readonly notice: ReactNode
+  /** When the study was last changed before this window opened on it; null for one that was begun or opened here. */
+  readonly continuedFrom: string | null
 }
 
 const severities = [
@@ -28,7 +28,18 @@ const severities = [
 ] as const
 
 /** The top line: what this is, where one is, what was noticed, what can be undone. */
-export function TopLine({ document, snapshot, findings, hasRuns, rateConstants, actions, onFinding, mark, menus, notice }: TopLineProps) {
+export function TopLine({
+  document,
+  snapshot,
+  findings,
+  hasRuns,
+  rateConstants,
+  actions,
+  onFinding,
+  mark,
+  menus,
+  continuedFrom,
+}: TopLineProps) {
   return (
     <header className="top-line">
       <div className="top-study">
@@ -36,10 +47,16 @@ export function TopLine({ document, snapshot, findings, hasRuns, rateConstants, 
           {mark}
           Rampfold
         </h1>
-        <StudyName name={document.name} onRename={(name) => actions.change({ kind: 'rename-study', name })} />
+        <div className="study-and-when">
+          <StudyName name={document.name} onRename={(name) => actions.change({ kind: 'rename-study', name })} />
+          {continuedFrom !== null && (
+            <span className="continued" title="This study was stored, and goes on where it was left. “New study” stands in the Study menu.">
+              continued from {formatMoment(continuedFrom)}
+            </span>
+          )}
+        </div>
         {hasRuns && <span className="run-count">{count(document.runs.length, 'run')}</span>}
         {!hasRuns && rateConstants !== null && <span className="run-count">{count(rateConstants, 'rate constant')}</span>}
-        {notice}
       </div>
       {(hasRuns || rateConstants !== null) && (
         <TabList className="stages" aria-label="Stages">

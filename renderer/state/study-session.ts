@@ -12,6 +12,7 @@ import { rateConstantLimits, type RateConstantReadOptions } from '../../shared-k
 import type { StudyChange } from '../../shared-kinetics/contract/study-change.ts'
 import { Cancelled, KineticsError } from '../../shared-kinetics/errors.ts'
 import { HostUnreachable } from '../transport/host-unreachable.ts'
+import { continuedStudy } from './continued-study.ts'
 import { createEvaluator } from './evaluator.ts'
 import { importFiles } from './import-files.ts'
 import { rebased, replicaOf, withChange, withFirstAnswered } from './replica.ts'
@@ -226,6 +227,8 @@ export function createStudySession(transport: HostTransport): StudySession {
       unsubscribe ??= transport.subscribe(hear, explain)
       await refresh()
       await readRecent()
+      const { replica, recent } = get()
+      set({ continued: continuedStudy(recent, replica?.document.id, new Date()) })
     },
     change(change) {
       const { replica } = get()
@@ -241,7 +244,7 @@ export function createStudySession(transport: HostTransport): StudySession {
           request.name === 'study.open-recent'
             ? await transport.call('study.open-recent', { studyId: request.studyId })
             : await transport.call(request.name, {})
-        set({ refused: [], notice: null, offer: null })
+        set({ refused: [], notice: null, offer: null, continued: null })
         adopt(answer)
       }),
     offerTable,

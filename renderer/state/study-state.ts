@@ -56,6 +56,8 @@ export interface StudyState {
   /** One sentence about the last thing that went wrong or was done; null when dismissed. */
   readonly notice: { readonly kind: 'failure' | 'done'; readonly text: string } | null
   readonly recent: readonly RecentStudy[]
+  /** The stored study that this window opened on, with when it was last changed before; null where it began with an empty one. */
+  readonly continued: RecentStudy | null
 }
 
 export const initialStudyState: StudyState = {
@@ -71,6 +73,7 @@ export const initialStudyState: StudyState = {
   refused: [],
   notice: null,
   recent: [],
+  continued: null,
 }
 
 /** Whether what was worked out apart from an evaluation is about another state of the study than the document's: a number of it must not stand beside a setting of now. */
