@@ -6,7 +6,7 @@ import { rateBars, rateCaption } from '../sheet/rail-bars.ts'
 import { RailStrip, type RailMark } from '../sheet/RailStrip.tsx'
 import { mantissaAndPower, scientific } from '../sheet/scientific.ts'
 import { bandHalfWidth, rateConstantStops, stopAt, type RateConstantStop } from '../stages/activation/rate-constant-stops.ts'
-import { placeWords, residualText, temperatureIn } from '../stages/activation/rate-constant-rows.ts'
+import { modelRemark, placeWords, residualText, temperatureIn } from '../stages/activation/rate-constant-rows.ts'
 import { inUnit, toKelvin } from '../stages/runs/rate-constant-edits.ts'
 import { useServices, useView } from '../state/services.ts'
 
@@ -91,11 +91,12 @@ function readOutOf({ place, temperature_K }: RateConstantStop, table: RateConsta
   const row = place.kind === 'row' ? table.rows[place.index] : undefined
   const result = place.kind === 'row' ? rated.rows[place.index] : undefined
   const name = row === undefined ? 'k predicted' : (row.label ?? (row.use ? 'k' : 'k, not used'))
+  const remark = prediction === undefined ? null : modelRemark(rated)
   const k = scientific(row?.rateConstant ?? prediction?.rateConstant, 3)
   const residual = residualText(result?.residual ?? null)
   const further =
     prediction !== undefined
-      ? `${placeWords(prediction)}${prediction.extrapolation.side === 'inside' ? '' : ' the data'}; × ${scientific(prediction.factorPer10K.factor, 3)} per 10 K`
+      ? `${remark === null ? '' : `${remark}; `}${placeWords(prediction)}${prediction.extrapolation.side === 'inside' ? '' : ' the data'}; × ${scientific(prediction.factorPer10K.factor, 3)} per 10 K`
       : residual === ''
         ? ''
         : `ln k − line ${residual}`

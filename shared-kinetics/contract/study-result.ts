@@ -25,6 +25,7 @@ export type {
 export type { IntervalKind, IntervalStatus } from '../isoconversional/result.ts'
 export type { UncertaintySettings, UncertaintySource } from '../uncertainty/measured-sources.ts'
 export type { FitOfHold, FitOfModel, FitsOfHolds } from '../rate-constants/fits-of-holds.ts'
+export type { RateIntervalStatus } from '../rate-constants/interval-status.ts'
 export type { RateConstantNote, RateConstantRow, RateConstantTable, TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 export type {
   ArrheniusResult,

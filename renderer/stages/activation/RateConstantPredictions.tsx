@@ -1,17 +1,18 @@
 import type { Maybe, RateConstantPrediction } from '../../../shared-kinetics/contract/study-result.ts'
 import { rateConstantLimits } from '../../../shared-kinetics/contract/rate-constant-schema.ts'
 import type { Parsed } from '../../../shared-kinetics/units/parse-quantity.ts'
-import { copyText } from '../../sheet/data-table.ts'
+import { noIntervalWords } from '../../../shared-kinetics/figure/result-words.ts'
 import { NumberHeading } from '../../sheet/DataTable.tsx'
 import { decimals } from '../../sheet/format.ts'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
+import { Remarked } from '../../sheet/Remarked.tsx'
 import { mantissaAndPower, scientific } from '../../sheet/scientific.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import { TypedField } from '../../sheet/TypedField.tsx'
 import { useServices } from '../../state/services.ts'
 import { parseTemperatures, temperaturesText } from '../runs/rate-constant-cells.ts'
 import type { RatedProps } from './RateConstantsActivation.tsx'
-import { placeWords, predictionCopyColumns, temperatureIn } from './rate-constant-rows.ts'
+import { copiedPredictions, modelRemark, notWithinData, placeWords, temperatureIn } from './rate-constant-rows.ts'
 
 /** k at temperatures that were not measured, or that were: with the band of the line and that of one more measurement. */
 export function RateConstantPredictions({ table, rated, place, actions }: RatedProps) {
@@ -19,6 +20,7 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
   const { temperatureUnitShown: shown, rateUnit } = table
   const { predictions } = rated
   const hasBands = predictions.some((row) => row.lineLower95 !== null)
+  const remark = modelRemark(rated)
   const current = place.kind === 'prediction' ? place.index : null
   return (
     <>
@@ -33,7 +35,7 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
       </div>
       {predictions.length > 0 && (
         <div className="prediction-space">
-          <TableView label="Table of predictions" copied={() => copyText(predictionCopyColumns(rated), predictions)} currentRow={current}>
+          <TableView label="Table of predictions" copied={() => copiedPredictions(rated)} currentRow={current}>
             <table className="data-table level-table prediction-table">
               <caption className="visually-hidden">Predicted rate constants</caption>
               <thead>
@@ -42,6 +44,11 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                   <NumberHeading text="k" unit={rateUnit} />
                   {hasBands && <NumberHeading text="95 %, line" unit={rateUnit} />}
                   {hasBands && <NumberHeading text="95 %, new k" unit={rateUnit} />}
+                  {!hasBands && (
+                    <th scope="col">
+                      <span>95 %</span>
+                    </th>
+                  )}
                   <NumberHeading text="exp(−Ea/RT)" />
                   <NumberHeading text="Factor" unit="per 10 K" />
                 </tr>
@@ -64,13 +71,19 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                       ) : (
                         <PowerOfTen text={scientific(row.rateConstant, 3)} />
                       )}
+                      {remark !== null && row.lnK !== null && <span className="rate-remark is-beneath">{remark}</span>}
                     </td>
                     {hasBands && <Ends of={row} lower={row.lineLower95} upper={row.lineUpper95} />}
                     {hasBands && <Ends of={row} lower={row.newLower95} upper={row.newUpper95} />}
+                    {!hasBands && <td className="no-interval">{noIntervalWords(row.intervalStatus) ?? 'no interval'}</td>}
                     <td className="is-number">
                       <PowerOfTen text={scientific(row.exponentialFactor, 3)} />
                     </td>
-                    <td className="is-number">{scientific(row.factorPer10K.factor, 3)}</td>
+                    <td className="is-number">
+                      <Remarked remark={row.factorPer10K.isWithinData ? null : notWithinData}>
+                        {scientific(row.factorPer10K.factor, 3)}
+                      </Remarked>
+                    </td>
                   </tr>
                 ))}
               </tbody>
@@ -87,7 +100,8 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
 
 /** Both ends in the power of ten of k itself, so that they can be held against it at a glance. */
 function Ends({ of, lower, upper }: { readonly of: RateConstantPrediction; readonly lower: Maybe; readonly upper: Maybe }) {
-  if (lower === null || upper === null || of.rateConstant === null) return <td>{''}</td>
+  if (lower === null || upper === null || of.rateConstant === null)
+    return <td className="no-interval">{noIntervalWords(of.intervalStatus) ?? 'no interval'}</td>
   const [, power] = mantissaAndPower(scientific(of.rateConstant, 3))
   const scale = power === '' ? 1 : 10 ** Number(power.replace('−', '-'))
   const end = (value: number): string => decimals(value / scale, placesAt(value / scale))

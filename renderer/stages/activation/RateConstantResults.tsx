@@ -1,5 +1,6 @@
 import { Button } from 'react-aria-components'
 import type { RateConstantsResult } from '../../../shared-kinetics/contract/study-result.ts'
+import { noIntervalWords, scatterOnlyWords } from '../../../shared-kinetics/figure/result-words.ts'
 import { Choice } from '../../sheet/Choice.tsx'
 import { count, decimals, formatInterval } from '../../sheet/format.ts'
 import { Half } from '../../sheet/Half.tsx'
@@ -13,7 +14,7 @@ import type { RatedProps } from './RateConstantsActivation.tsx'
 import { RateConstantPairs } from './RateConstantPairs.tsx'
 import { RateConstantPredictions } from './RateConstantPredictions.tsx'
 import { ReactionModels } from './ReactionModels.tsx'
-import { errorText, lowerEndWords, parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
+import { errorText, lowerEndWords, modelRemark, parameterCopyColumns, parameterRows, placesOf } from './rate-constant-rows.ts'
 
 /** The right half: Ea, A and what follows from them, and k at the temperatures asked for. */
 export function RateConstantResults(props: RatedProps) {
@@ -84,7 +85,9 @@ function BeneathNumbers(props: RatedProps) {
 
 const exportWords = { csv: 'table', json: 'results', svg: 'figure' } as const
 
-function Headline({ rated: { line, rateUnit } }: { readonly rated: RateConstantsResult }) {
+function Headline({ rated }: { readonly rated: RateConstantsResult }) {
+  const { line, rateUnit } = rated
+  const remark = modelRemark(rated)
   const below = lowerEndWords(line)
   const { Ea_kJ_per_mol: Ea, lower95_kJ_per_mol: lower, upper95_kJ_per_mol: upper, standardError_kJ_per_mol: error } = line
   const places = placesOf(error)
@@ -98,7 +101,15 @@ function Headline({ rated: { line, rateUnit } }: { readonly rated: RateConstants
           {interval !== '' && ` ± ${interval}`}
         </strong>{' '}
         kJ/mol
-        {error !== null && interval !== '' && <span className="soft"> (95 %; standard error {errorText(error, places)})</span>}
+        {error !== null && interval !== '' && (
+          <span className="soft">
+            {' '}
+            ({remark === null ? '95 %' : '95 % of the scatter only'}; standard error{'\u00a0'}
+            {errorText(error, places)})
+          </span>
+        )}
+        {interval === '' && <span className="soft"> ({noIntervalWords(line.intervalStatus) ?? 'no interval'})</span>}
+        {remark !== null && <span className="rate-remark"> {remark}</span>}
       </p>
       {below !== null && <p className="rate-below">The interval of Ea {below}.</p>}
       {line.A !== null && (
@@ -108,12 +119,18 @@ function Headline({ rated: { line, rateUnit } }: { readonly rated: RateConstants
             <PowerOfTen text={scientific(line.A, 3)} />
           </strong>{' '}
           {rateUnit === '' ? 'in the unit of k' : rateUnit}
-          {line.ALower95 !== null && line.AUpper95 !== null && (
+          {line.ALower95 === null || line.AUpper95 === null ? (
+            <span className="soft">
+              {' '}
+              ({noIntervalWords(line.lnAIntervalStatus) ?? 'no interval: its ends cannot be written as numbers'})
+            </span>
+          ) : (
             <span className="soft">
               {' '}
               (95 %: <PowerOfTen text={scientific(line.ALower95, 3)} /> … <PowerOfTen text={scientific(line.AUpper95, 3)} />)
             </span>
           )}
+          {remark !== null && <span className="rate-remark"> {remark}</span>}
         </p>
       )}
     </>
@@ -154,11 +171,17 @@ function Parameters({ rated }: { readonly rated: RateConstantsResult }) {
               <tr key={row.id}>
                 <th scope="row">
                   {row.quantity} {row.unit !== '' && <span className="soft">{row.unit}</span>}
+                  {row.remark !== null && <span className="rate-remark is-beneath">{row.remark}</span>}
                 </th>
                 <td className="is-number">
                   <PowerOfTen text={row.format(row.value)} />
                 </td>
-                {hasIntervals && (
+                {hasIntervals && row.noInterval !== null && row.lower === null && row.upper === null && (
+                  <td colSpan={3} className="is-number no-interval">
+                    {row.noInterval}
+                  </td>
+                )}
+                {hasIntervals && !(row.noInterval !== null && row.lower === null && row.upper === null) && (
                   <>
                     <td className="is-number">{row.formatError(row.standardError)}</td>
                     <td className="is-number">
@@ -181,10 +204,13 @@ function Parameters({ rated }: { readonly rated: RateConstantsResult }) {
 }
 
 /** Names the interval for what it is. */
-function intervalNote({ line }: RateConstantsResult): string {
+function intervalNote(rated: RateConstantsResult): string {
+  const { line } = rated
   const { dof } = line.interval
   if (line.Ea_kJ_per_mol === null) return ''
   if (dof < 1) return 'No interval: it needs rate constants at three temperatures or more.'
+  if (modelRemark(rated) !== null)
+    return `Ea: 95 % Student-t, n − 2 degrees of freedom (${dof} here), ${scatterOnlyWords}. A and predicted k have no interval.`
   return `95 % Student-t, n − 2 degrees of freedom (${dof} here), each parameter by itself; bands pointwise in temperature.`
 }
 

@@ -7,8 +7,10 @@ import type {
   RateConstantPrediction,
   RateConstantRowResult,
   RateConstantsResult,
+  RateIntervalStatus,
   TemperatureUnit,
 } from '../../../shared-kinetics/contract/study-result.ts'
+import { noIntervalWords, safetyCaution } from '../../../shared-kinetics/figure/result-words.ts'
 import { decimals } from '../../sheet/format.ts'
 import { scientific } from '../../sheet/scientific.ts'
 import { copyText, type DataColumn } from '../../sheet/data-table.ts'
@@ -26,6 +28,10 @@ export interface ParameterRow {
   readonly upper: Maybe
   /** What must be known of the lower end; null where there is nothing. */
   readonly lowerRemark: string | null
+  /** What must be known of the value, beside its name; null where there is nothing. */
+  readonly remark: string | null
+  /** Why no ends stand here; null where they do. */
+  readonly noInterval: string | null
   readonly format: (value: Maybe) => string
   readonly formatError: (value: Maybe) => string
 }
@@ -33,15 +39,20 @@ export interface ParameterRow {
 /** Ea, ln A, A, the transition-state parameters and the factors per 10 K; then, where there is one, the weighted line. */
 export function parameterRows(result: RateConstantsResult): readonly ParameterRow[] {
   const { line, weightedLine, eyring, factorsPer10K, temperatureUnitShown: shown } = result
+  const model = modelNotFollowed(result)
   return [
-    ...lineRows(line, result.rateUnit, ''),
-    ...(weightedLine === null ? [] : lineRows(weightedLine, result.rateUnit, ', weighted')),
+    ...lineRows(line, result.rateUnit, '', model),
+    ...(weightedLine === null ? [] : lineRows(weightedLine, result.rateUnit, ', weighted', model)),
     ...(eyring === null
       ? []
       : [
-          estimateRow('enthalpy', 'ΔH‡', 'kJ/mol', eyring.enthalpy_kJ_per_mol),
-          estimateRow('entropy', 'ΔS‡', 'J/(mol K)', eyring.entropy_J_per_mol_K),
-          estimateRow('gibbs', `ΔG‡ at ${temperatureIn(eyring.gibbsAt_K, shown)}`, 'kJ/mol', eyring.gibbs_kJ_per_mol),
+          withReason(estimateRow('enthalpy', 'ΔH‡', 'kJ/mol', eyring.enthalpy_kJ_per_mol), eyring.intervalStatus, null),
+          withReason(estimateRow('entropy', 'ΔS‡', 'J/(mol K)', eyring.entropy_J_per_mol_K), eyring.entropyIntervalStatus, model),
+          withReason(
+            estimateRow('gibbs', `ΔG‡ at ${temperatureIn(eyring.gibbsAt_K, shown)}`, 'kJ/mol', eyring.gibbs_kJ_per_mol),
+            eyring.entropyIntervalStatus,
+            model,
+          ),
         ].filter((row) => row.value !== null)),
     ...distinct(factorsPer10K)
       .map((factor, i) => factorRow(factor, i, shown))
@@ -51,24 +62,34 @@ export function parameterRows(result: RateConstantsResult): readonly ParameterRo
 
 const threeDigits = (value: Maybe): string => scientific(value, 3)
 
-export function lineRows(line: ArrheniusResult, rateUnit: string, which: string): readonly ParameterRow[] {
+/** @param model - the reaction model under which A was made, where it does not follow the holds; else null */
+export function lineRows(line: ArrheniusResult, rateUnit: string, which: string, model: string | null): readonly ParameterRow[] {
   const unit = rateUnit === '' ? 'unit of k' : rateUnit
+  const { intervalStatus, lnAIntervalStatus } = line
   return [
     {
-      ...measured(`Ea${which}`, `Ea${which}`, 'kJ/mol', {
-        value: line.Ea_kJ_per_mol,
-        standardError: line.standardError_kJ_per_mol,
-        lower95: line.lower95_kJ_per_mol,
-        upper95: line.upper95_kJ_per_mol,
-      }),
+      ...withReason(
+        measured(`Ea${which}`, `Ea${which}`, 'kJ/mol', {
+          value: line.Ea_kJ_per_mol,
+          standardError: line.standardError_kJ_per_mol,
+          lower95: line.lower95_kJ_per_mol,
+          upper95: line.upper95_kJ_per_mol,
+        }),
+        intervalStatus,
+        null,
+      ),
       lowerRemark: lowerEndWords(line),
     },
-    measured(`lnA${which}`, `ln A${which}`, `(A in ${unit})`, {
-      value: line.lnA,
-      standardError: line.lnAStandardError,
-      lower95: line.lnALower95,
-      upper95: line.lnAUpper95,
-    }),
+    withReason(
+      measured(`lnA${which}`, `ln A${which}`, `(A in ${unit})`, {
+        value: line.lnA,
+        standardError: line.lnAStandardError,
+        lower95: line.lnALower95,
+        upper95: line.lnAUpper95,
+      }),
+      lnAIntervalStatus,
+      model,
+    ),
     {
       id: `A${which}`,
       quantity: `A${which}`,
@@ -78,11 +99,37 @@ export function lineRows(line: ArrheniusResult, rateUnit: string, which: string)
       lower: line.ALower95,
       upper: line.AUpper95,
       lowerRemark: null,
+      remark: model === null ? null : underModel(model),
+      noInterval: line.A === null ? null : noIntervalWords(lnAIntervalStatus),
       format: threeDigits,
       formatError: threeDigits,
     },
   ]
 }
+
+/** The reaction model that does not follow the holds that k was made from; null where it does, or k was not made from holds. */
+export const modelNotFollowed = ({
+  modelFollowsHolds,
+  holdFits,
+}: Pick<RateConstantsResult, 'modelFollowsHolds' | 'holdFits'>): string | null =>
+  modelFollowsHolds === false ? (holdFits?.model ?? 'a reaction model') : null
+
+/** Said beside every number that is as wrong as the model that it rests on. */
+export const underModel = (model: string): string => `under ${model}, which does not follow the holds`
+
+/** The same of a result; null where the model follows the holds. */
+export function modelRemark(result: Pick<RateConstantsResult, 'modelFollowsHolds' | 'holdFits'>): string | null {
+  const model = modelNotFollowed(result)
+  return model === null ? null : underModel(model)
+}
+
+const joinedWords = (...words: readonly (string | null)[]): string => words.filter((one) => one !== null).join('; ')
+
+const withReason = (row: ParameterRow, status: RateIntervalStatus, model: string | null): ParameterRow => ({
+  ...row,
+  remark: model === null ? row.remark : underModel(model),
+  noInterval: row.value === null ? null : noIntervalWords(status),
+})
 
 const estimateRow = (id: string, quantity: string, unit: string, estimate: EstimateResult): ParameterRow =>
   measured(id, quantity, unit, estimate)
@@ -96,7 +143,20 @@ function measured(id: string, quantity: string, unit: string, { value, standardE
   const places = placesOf(standardError)
   const format = (number: Maybe): string => decimals(number, places)
   const formatError = (error: Maybe): string => errorText(error, places)
-  return { id, quantity, unit, value, standardError, lower: lower95, upper: upper95, lowerRemark: null, format, formatError }
+  return {
+    id,
+    quantity,
+    unit,
+    value,
+    standardError,
+    lower: lower95,
+    upper: upper95,
+    lowerRemark: null,
+    remark: null,
+    noInterval: null,
+    format,
+    formatError,
+  }
 }
 
 export const placesOf = (standardError: Maybe): number =>
@@ -104,13 +164,20 @@ export const placesOf = (standardError: Maybe): number =>
 
 /** A standard error that is there but too small to be shown is said to be so, never 0. */
 export const errorText = (error: Maybe, places: number): string =>
-  error !== null && error > 0 && error < 0.5 * 10 ** -places ? `< ${(10 ** -places).toFixed(places)}` : decimals(error, places)
+  error !== null && error > 0 && error < 0.5 * 10 ** -places ? `<\u00a0${(10 ** -places).toFixed(places)}` : decimals(error, places)
 
 /** The factor over the middle of the data says nothing new where that begins at the same temperature. */
 const distinct = (factors: readonly FactorPer10KResult[]): readonly FactorPer10KResult[] =>
   factors.filter(({ from_K }, i) => factors.findIndex((other) => Math.abs(other.from_K - from_K) < 0.5) === i)
 
-function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: number, shown: TemperatureUnit): ParameterRow {
+/** Said of a factor per 10 K whose 10 K reach beyond the temperatures used. */
+export const notWithinData = 'not within the data'
+
+function factorRow(
+  { from_K, isWithinData, factor, lower95, upper95 }: FactorPer10KResult,
+  i: number,
+  shown: TemperatureUnit,
+): ParameterRow {
   return {
     id: `factor-${i}`,
     quantity: `Factor per 10 K from ${temperatureIn(from_K, shown)}`,
@@ -120,6 +187,8 @@ function factorRow({ from_K, factor, lower95, upper95 }: FactorPer10KResult, i: 
     lower: lower95,
     upper: upper95,
     lowerRemark: null,
+    remark: isWithinData ? null : notWithinData,
+    noInterval: null,
     format: threeDigits,
     formatError: threeDigits,
   }
@@ -140,6 +209,10 @@ export function residualText(residual: Maybe): string {
   return text === '' || text.startsWith('−') ? text : `+${text}`
 }
 
+/** The table of predictions as tab-separated text, with what is to be said wherever a prediction may be used. */
+export const copiedPredictions = (result: RateConstantsResult): string =>
+  [copyText(predictionCopyColumns(result), result.predictions), safetyCaution].join('\n\n')
+
 /** All tables of the stage, one below the other, as tab-separated text. */
 export function copiedTables(result: RateConstantsResult): string {
   return [
@@ -153,6 +226,7 @@ export function copiedTables(result: RateConstantsResult): string {
           copyText(holdCopyColumns(result.holdFits, result.temperatureUnitShown), result.holdFits.holds),
           copyText(modelCopyColumns(result.holdFits), result.holdFits.models),
         ]),
+    ...(result.predictions.length === 0 ? [] : [safetyCaution]),
   ].join('\n\n')
 }
 
@@ -180,7 +254,7 @@ export const parameterCopyColumns: readonly DataColumn<ParameterRow>[] = [
   number('error', 'standard error', '', (row) => row.standardError),
   number('lower', 'lower 95 %', '', (row) => row.lower),
   number('upper', 'upper 95 %', '', (row) => row.upper),
-  word('remark', 'remark', (row) => row.lowerRemark ?? ''),
+  word('remark', 'remark', (row) => joinedWords(row.remark, row.noInterval, row.lowerRemark)),
 ]
 
 const temperatureColumn = <Row extends { readonly temperature_K: number }>({
@@ -209,6 +283,7 @@ export const predictionCopyColumns = (result: RateConstantsResult): readonly Dat
   number('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
   number('factor', 'factor per 10 K from T', '', (row) => row.factorPer10K.factor),
   word('where', 'to the data', placeWords),
+  word('remark', 'remark', (row) => (row.lnK === null ? '' : joinedWords(modelRemark(result), noIntervalWords(row.intervalStatus)))),
 ]
 
 export const rowCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantRowResult>[] => [
