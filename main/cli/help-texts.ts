@@ -2,13 +2,14 @@ import { decimalSignWords, delimiterWords, encodingWords } from '../../shared-ki
 import { baselineKinds } from '../../shared-kinetics/tasks/study-input.ts'
 import { methodsOnRequest } from '../../shared-kinetics/contract/methods-on-request.ts'
 import { methodIds, type MethodId } from '../../shared-kinetics/isoconversional/result.ts'
+import { reactionModelCodes } from '../../shared-kinetics/reaction-models/registry.ts'
 import { signalQuantities } from '../../shared-kinetics/series/signal-quantity.ts'
 
 const onRequest: readonly MethodId[] = methodsOnRequest
 
-/** A list that goes on under its first word, five words a line. */
-const listed = (words: readonly string[]): string =>
-  words.map((word, i) => (i === 0 ? word : i % 5 === 0 ? `,\n${' '.repeat(30)}${word}` : `, ${word}`)).join('')
+/** A list that goes on under its first word, so many words a line. */
+const listed = (words: readonly string[], aLine = 5): string =>
+  words.map((word, i) => (i === 0 ? word : i % aLine === 0 ? `,\n${' '.repeat(30)}${word}` : `, ${word}`)).join('')
 
 export const generalHelp = `rampfold <command> [paths] [options]
 
@@ -95,7 +96,8 @@ isothermal runs, and k of each is read from g(alpha) = k t under that model.
 
   --out DIR                   where the files go; those of these names are replaced, others left alone
   --at LIST                   temperatures at which k is predicted, with their unit: "25C,310K"
-  --model CODE                of isothermal runs: F1, A2, R3, D3, …
+  --model CODE                reaction model of isothermal runs:
+${' '.repeat(30)}${listed(reactionModelCodes, 12)}
   --zero-in-time WORD         with --model: free (default, fitted), fixed (the start of each hold)
   --range SPEC                with --model: conversions used, 0.1:0.9 (default)
   --temperature-unit WORD     K, C, F: for a table that does not say

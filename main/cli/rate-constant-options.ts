@@ -1,7 +1,7 @@
 import { rateConstantLimits, type RateConstantReadOptions } from '../../shared-kinetics/contract/rate-constant-schema.ts'
 import type { TableStyle } from '../../shared-kinetics/contract/host-api.ts'
 import { decimalSignWords, delimiterWords, encodingWords, type ImportOptions } from '../../shared-kinetics/contract/import-options.ts'
-import { temperatureUnits } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
+import { temperatureUnits, type TemperatureUnit } from '../../shared-kinetics/rate-constants/rate-constant-table.ts'
 import { reactionModelCodes, type ReactionModelCode } from '../../shared-kinetics/reaction-models/registry.ts'
 import { parseTemperature } from '../../shared-kinetics/units/parse-quantity.ts'
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
@@ -36,7 +36,8 @@ export interface RunsOrder {
 
 export interface RateConstantOrder {
   readonly from: { readonly kind: 'table'; readonly options: RateConstantReadOptions } | RunsOrder
-  readonly predictAt_K: readonly number[]
+  /** With the unit that each was asked in. */
+  readonly predictAt: readonly { readonly temperature_K: number; readonly unit: TemperatureUnit }[]
   readonly tableStyle: TableStyle
 }
 
@@ -50,13 +51,13 @@ export function rateConstantOrder(words: ParsedWords): RateConstantOrder {
   if (stray !== undefined) {
     throw new UsageError(
       model === undefined
-        ? `--${stray} is for isothermal runs; name their kinetic model with --model.`
+        ? `--${stray} is for isothermal runs; name their reaction model with --model.`
         : `--${stray} is for a table, and with --model the paths are runs.`,
     )
   }
   return {
     from: model === undefined ? { kind: 'table', options: readOptions(words) } : runsOrder(model, words),
-    predictAt_K: predictAt(words.value('at')),
+    predictAt: predictAt(words.value('at')),
     tableStyle: tableStyleOption(words.value('decimal'), words.value('separator')),
   }
 }
@@ -106,7 +107,7 @@ const temperatureUnitOption = (text: string | undefined): (typeof temperatureUni
   text === undefined ? undefined : oneOf('--temperature-unit', text.replace(/^(?:°|deg)\s*/i, '').toUpperCase(), temperatureUnits)
 
 /** Temperatures at which k is to be predicted: `25C,310K`, each with its unit, since 25 and 310 may be either. A decimal comma needs semicolons between them. */
-function predictAt(text: string | undefined): readonly number[] {
+function predictAt(text: string | undefined): RateConstantOrder['predictAt'] {
   if (text === undefined) return []
   const parts = text
     .split(text.includes(';') ? ';' : ',')
@@ -120,6 +121,6 @@ function predictAt(text: string | undefined): readonly number[] {
     const parsed = parseTemperature(part)
     if (!parsed.ok) throw new UsageError(`--at: ${parsed.reason}.`)
     if (parsed.value > 10_000) throw new UsageError(`--at: ${part} is hotter than any rate constant is predicted for.`)
-    return parsed.value
+    return { temperature_K: parsed.value, unit: /f\w*\s*$/i.test(part) ? 'F' : /k\w*\s*$/i.test(part) ? 'K' : 'C' }
   })
 }

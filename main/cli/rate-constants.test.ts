@@ -4,6 +4,7 @@ import { join } from 'node:path'
 import Papa from 'papaparse'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import tables from '../../shared-kinetics/check-values/published/arrhenius-tables.json' with { type: 'json' }
+import { reactionModelCodes } from '../../shared-kinetics/reaction-models/registry.ts'
 import { run } from './run.ts'
 
 let place = ''
@@ -75,7 +76,7 @@ describe('rampfold rate-constants', () => {
     )
     expect(stdout).toMatch(/1 note|caution: A prediction/)
     const csv = Papa.parse<string[]>(await readFile(join(out, 'rate-constants.csv'), 'utf8'), { skipEmptyLines: true }).data
-    expect(new Set(csv.map((row) => row.length))).toEqual(new Set([11]))
+    expect(new Set(csv.map((row) => row.length))).toEqual(new Set([12]))
     expect(csv.find((row) => row[0] === 'Ea')?.slice(4, 9)).toEqual(['kJ/mol', '102.8979', '0.4713285', '101.5892', '104.2065'])
     expect(csv.filter((row) => row[0] === 'k, measured').map((row) => [Number(row[2]), Number(row[5])])).toEqual(
       (N2O5?.temperature_K ?? []).map((T, i) => [T, N2O5?.k[i]]),
@@ -173,6 +174,7 @@ describe('rampfold rate-constants', () => {
     expect((json.line['Ea_kJ_per_mol'] ?? 0) / 100).toBeCloseTo(1, 3)
     expect(json.line['lnA_per_s'] ?? 0).toBeCloseTo(Math.log(1e11), 1)
     expect(JSON.stringify(json['findings'])).toMatch(/model-assumed/)
+    expect(JSON.stringify(json['findings'])).toMatch(/g = -ln\(1 - alpha\) = k t/)
     expect(JSON.stringify(json['findings'])).not.toMatch(/model-fits-badly|other-models-fit-better/)
     expect(json['holdFits']).toMatchObject({
       model: 'F1',
@@ -190,6 +192,39 @@ describe('rampfold rate-constants', () => {
     expect(beside).toMatch(/ 1\. F1 \(First order\): sum of squares .*, fits; Ea (?:99\.9|100\.0)\d kJ\/mol/)
     expect(beside).toMatch(/R2 \(Contracting cylinder\), chosen: /)
     expect(beside).toMatch(/caution, model-fits-badly: .*hold 370 K/)
+    const predicted = await rampfold('rate-constants', folder, '--model', 'R2', '--at', '25C', '--out', out, '--strict')
+    expect(predicted.code).toBe(3)
+    const why = 'no interval: the reaction model does not follow the holds'
+    const lines = predicted.stdout.split('\n')
+    for (const start of ['ln A: ', 'entropy of activation', 'Gibbs energy', 'k at 25 °C'])
+      expect(lines.find((line) => line.startsWith(start))).toMatch(
+        /^(?!.* to ).*; no interval: the reaction model does not follow the holds/,
+      )
+    expect(lines.find((line) => line.startsWith('Ea: '))).toMatch(
+      /\d\), of the scatter only: the reaction model does not follow the holds$/,
+    )
+    expect(predicted.stdout).toMatch(/stop: R2 does not follow 4 of 4 holds/)
+    const table = Papa.parse<Record<string, string>>(await readFile(join(out, 'rate-constants.csv'), 'utf8'), { header: true }).data
+    const row = (quantity: string): Record<string, string> => table.find((other) => other['quantity'] === quantity) ?? {}
+    for (const quantity of ['ln A', 'A', 'k, predicted', 'ln k, predicted'])
+      expect(row(quantity)).toMatchObject({ 'lower 95 %': '', 'upper 95 %': '', 'interval of': '', remark: why })
+    expect(table.filter((other) => other['quantity'] === 'k, predicted')).toHaveLength(1)
+    expect(row('Ea')['remark']).toMatch(/^of the scatter only/)
+    const wrongJson = await jsonOf(out)
+    expect(wrongJson).toMatchObject({
+      modelFollowsHolds: false,
+      line: { lnAIntervalStatus: 'model-does-not-follow-holds', ALower95: null, intervalStatus: 'ok' },
+      predictions: [{ intervalStatus: 'model-does-not-follow-holds', lineLower95: null }],
+    })
+    // The k of each hold with the standard error that its fit gave.
+    const { holds } = wrongJson['holdFits'] as { readonly holds: readonly { readonly standardError_per_s: number }[] }
+    const fitted = table.filter((other) => other['quantity'] === 'k, fitted under R2')
+    expect(fitted).toHaveLength(4)
+    fitted.forEach((other, i) => {
+      expect(Number(other['standard error']) / (holds[i]?.standardError_per_s ?? Number.NaN)).toBeCloseTo(1, 5)
+    })
+    expect(wrongJson['rows']).toMatchObject(holds.map((hold) => ({ fitStandardError: hold.standardError_per_s, fittedUnder: 'R2' })))
+    expect(await readFile(join(out, 'rate-constants.csv.txt'), 'utf8')).toContain(why)
     const noHolds = join(place, 'no-holds.csv')
     await writeFile(
       noHolds,
@@ -198,6 +233,36 @@ describe('rampfold rate-constants', () => {
     const refused = await rampfold('rate-constants', noHolds, '--model', 'F1', '--out', out)
     expect(refused.code).toBe(1)
     expect(refused.stderr).toMatch(/None of its runs is isothermal/)
+  })
+
+  it('answers a prediction in the unit it was asked in, and says why two temperatures leave no interval', async () => {
+    const path = await tableFile('two.csv', 'T (°F),k (1/s)\n77,3.46e-5\n95,1.35e-4\n')
+    const out = join(place, 'two')
+    const { code, stdout } = await rampfold('rate-constants', path, '--out', out, '--at', '5C,300K,80F')
+    expect(code).toBe(0)
+    const why = 'no interval: two temperatures'
+    expect(stdout).toMatch(/^k at 5 °C: [^(]*; no interval: two temperatures; 20 K below the data/m)
+    expect(stdout).toMatch(/^k at 300 K \(26\.85 °C\): [^(]*; no interval: two temperatures$/m)
+    expect(stdout).toMatch(/^k at 80 °F: /m)
+    expect(stdout).toMatch(/^Ea: [\d.]+ kJ\/mol; no interval: two temperatures$/m)
+    const table = Papa.parse<Record<string, string>>(await readFile(join(out, 'rate-constants.csv'), 'utf8'), { header: true }).data
+    const predicted = table.filter((row) => row['quantity'] === 'k, predicted')
+    expect(predicted.map((row) => [row['interval of'], row['remark']])).toEqual([
+      ['', why],
+      ['', why],
+      ['', why],
+    ])
+    expect(await jsonOf(out)).toMatchObject({ predictions: [{ intervalStatus: 'two-temperatures' }, {}, {}] })
+    const stated = await tableFile('two-stated.csv', 'T (K),k (1/s),u(k) (1/s)\n298,3.46e-5,1e-6\n308,1.35e-4,4e-6\n')
+    // R √(0.0289² + 0.0296²)/(1/298 - 1/308) by hand.
+    expect((await rampfold('rate-constants', stated, '--out', out)).stdout).toMatch(
+      /^Ea between 298 K .* 103\.\d\d kJ\/mol, standard uncertainty 3\.16 \(\d+\.\d\d to \d+\.\d\d\) by the stated uncertainties/m,
+    )
+  })
+
+  it('names every reaction model in its help', async () => {
+    const { stdout } = await rampfold('rate-constants', '--help')
+    for (const code of reactionModelCodes) expect(stdout).toMatch(new RegExp(`[ ,]${code}[,\\s]`))
   })
 
   it('a row that cannot be used is named with file and line', async () => {

@@ -32,6 +32,7 @@ export function rateConstantsJson({ document, result, program }: RateConstantsSo
     predictions: result.predictions,
     curvature: result.curvature,
     holdFits: result.holdFits,
+    modelFollowsHolds: result.modelFollowsHolds,
     findings: result.findings.map(({ code, severity, title, message, evidence, basis, sources }) => ({
       code,
       severity,

@@ -45,14 +45,18 @@ function originOf({ kind, name }: RateConstantsSource['result']['source']): stri
   }
 }
 
-function intervalLines({ line, weightedLine, eyring }: RateConstantsSource['result']): readonly string[] {
+function intervalLines({ line, weightedLine, eyring, modelFollowsHolds }: RateConstantsSource['result']): readonly string[] {
   const { dof } = line.interval
   const own =
     dof === 0
       ? ['no interval: fewer than three distinct temperatures']
       : [
           `unweighted line of ln k on 1/T: 95 % Student-t intervals, ${dof} degrees of freedom, each parameter and each temperature by itself. Method: ${line.sources.join('; ')}`,
-          `covariance of Ea and ln A: ${line.covarianceEaLnA_kJ_per_mol?.toPrecision(6) ?? 'none'} kJ/mol`,
+          ...(modelFollowsHolds === false
+            ? [
+                'Ea, enthalpy of activation and factors per 10 K: of the scatter of ln k only; A, entropy and Gibbs energy of activation and predicted k: no interval: the reaction model does not follow the holds',
+              ]
+            : [`covariance of Ea and ln A: ${line.covarianceEaLnA_kJ_per_mol?.toPrecision(6) ?? 'none'} kJ/mol`]),
         ]
   const weighted =
     weightedLine === null

@@ -5,7 +5,7 @@ import { rateRatio } from './rate-ratio.ts'
 
 /**
  * Ea from two times that do the same at two temperatures ("30 min at 63 °C equals 15 s at 74 °C"). A given extent of reaction is reached when k t has a given
- * value, so k₂/k₁ = t₁/t₂, whatever the kinetic model is, as long as it is one and the same.
+ * value, so k₂/k₁ = t₁/t₂, whatever the reaction model is, as long as it is one and the same.
  *
  * @param time - s, or any other unit as long as both times have it
  * @throws KineticsError `not-finite`

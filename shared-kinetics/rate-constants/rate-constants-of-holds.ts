@@ -63,7 +63,7 @@ function modelNote(usable: readonly ReadHold[], model: ReactionModel, { zeroInTi
       code: 'model-assumed',
       severity: 'note',
       message:
-        `k rests on a chosen model, ${model.label} (${model.code}), g = ${model.equations.g} = k t, over conversion ${range[0]} to ${range[1]}, ${zero}. Conversion itself was fitted against time (nonlinear least squares; ` +
+        `k rests on a chosen model, ${model.label} (${model.code}), ${equationOf(model)}, over conversion ${range[0]} to ${range[1]}, ${zero}. Conversion itself was fitted against time (nonlinear least squares; ` +
         `standard deviation at most ${short(scatter)}); the line of g gives k within ${short(100 * fromLine)} %. At most ${short(100 * before)} % converted before a hold began. ` +
         'Ea hardly depends on the model, A does; a good fit does not show that the model is right.',
       evidence: {
@@ -80,7 +80,14 @@ function modelNote(usable: readonly ReadHold[], model: ReactionModel, { zeroInTi
   ]
 }
 
-const short = (value: number): string => (value < 1e-5 ? '0' : String(Number(value.toPrecision(2))))
+/** g(alpha) = k t with nothing left to look up: L written out, and n with its number, which stands in the code. */
+function equationOf({ code, equations: { g } }: ReactionModel): string {
+  const written = g === 'L' ? '-ln(1 - alpha)' : g.replaceAll(/\bL\b/g, '[-ln(1 - alpha)]')
+  return `g = ${written} = k t${/\bn\b/.test(g) ? `, n = ${code.slice(1)}` : ''}`
+}
+
+/** Three digits as in the ranking of models; by a power of ten where zeros would have to be counted. */
+const short = (value: number): string => (value !== 0 && value < 1e-3 ? value.toExponential(2) : String(Number(value.toPrecision(3))))
 
 /** Where the reaction of each run begins, from the start of its hold: before it where the run reacted on the way up, behind it after an induction time. */
 function zerosText(usable: readonly ReadHold[]): string {

@@ -27,13 +27,13 @@ export async function rateConstants(words: readonly string[], io: CliIo): Promis
   const order = rateConstantOrder(parsed)
   if (order.from.kind === 'table' && parsed.paths.length > 1) {
     throw new UsageError(
-      `rate-constants takes one table, and ${parsed.paths.length} paths are named. Put all rows into one file; or name a kinetic model with --model, if these are isothermal runs.`,
+      `rate-constants takes one table, and ${parsed.paths.length} paths are named. Put all rows into one file; or name a reaction model with --model, if these are isothermal runs.`,
     )
   }
   const files = expandPaths(parsed.paths)
   if (order.from.kind === 'table' && files.length > 1) {
     throw new InputError(
-      `${parsed.paths[0]}: this folder holds ${files.length} files, and one table is read. Name the file; or name a kinetic model with --model, if these are isothermal runs.`,
+      `${parsed.paths[0]}: this folder holds ${files.length} files, and one table is read. Name the file; or name a reaction model with --model, if these are isothermal runs.`,
     )
   }
   const { result, files: results } = await evaluate(files, order, io)
@@ -44,7 +44,7 @@ export async function rateConstants(words: readonly string[], io: CliIo): Promis
   }
   if (!parsed.flag('quiet'))
     io.stdout(
-      `${rateConstantsShortTable(result)}\n${findingLines(result)}${join(out, '')}: ${results.map(({ fileName }) => fileName).join(', ')}\n`,
+      `${rateConstantsShortTable(result, new Map(order.predictAt.map((at) => [at.temperature_K, at.unit])))}\n${findingLines(result)}${join(out, '')}: ${results.map(({ fileName }) => fileName).join(', ')}\n`,
     )
   const stops = result.findings.some((finding) => finding.severity === 'stop')
   return parsed.flag('strict') && stops ? exitCodes.stopFinding : exitCodes.done
@@ -52,7 +52,7 @@ export async function rateConstants(words: readonly string[], io: CliIo): Promis
 
 async function evaluate(
   files: readonly InputFile[],
-  { from, predictAt_K, tableStyle }: RateConstantOrder,
+  { from, predictAt, tableStyle }: RateConstantOrder,
   io: CliIo,
 ): Promise<{ readonly result: RateConstantsResult; readonly files: readonly FileOut[] }> {
   const importOptions = from.kind === 'runs' ? from.importOptions : {}
@@ -66,7 +66,7 @@ async function evaluate(
   try {
     const read = from.kind === 'table' ? await readTable(host, files, from.options) : await tableOfRuns(host, files, from)
     const { revision } = await host.call('study.read', {})
-    const change = { kind: 'set-rate-constants', table: { ...read, predictAt_K } } as const
+    const change = { kind: 'set-rate-constants', table: { ...read, predictAt_K: predictAt.map((at) => at.temperature_K) } } as const
     const snapshot = await host.call('study.change', { revision, change })
     const { result } = await host.call('rate-constants.evaluate', { revision: snapshot.revision })
     const out: FileOut[] = []
