@@ -129,14 +129,42 @@ function refuseUnusableRuns(files: readonly InputFile[], document: StudyDocument
   const unusable = result.findings.filter((finding) => finding.code === 'run-unusable')
   if (unusable.length === 0) return
   const fileOf = bySha256(files)
-  const lines = unusable.map((finding) => {
+  const withoutSignal = runsWithoutSignal(document, result)
+  const lines = unusable.flatMap((finding) => {
+    if (withoutSignal !== null && withoutSignal.runIds.has(finding.run ?? '')) return []
     const run = document.runs.find((candidate) => candidate.id === finding.run)
     const path = run === undefined ? '' : `${fileOf.get(run.file.sha256)?.path ?? run.file.name}: `
     // The path stands for the label; and here nothing was left out: the whole call is refused.
     const reason = finding.message.replace(`${run?.label ?? ''}: `, '').replace(/ The run was left out:.*$/s, '')
-    return `${path}${sentence(reason)}`
+    return [`${path}${sentence(reason)}`]
   })
-  throw new InputError(`${lines.join('\n')}\nOr leave unusable runs out with --skip-unusable.`)
+  const all = withoutSignal === null ? lines : [withoutSignal.words, ...lines]
+  throw new InputError(`${all.join('\n')}\nOr leave unusable runs out with --skip-unusable.`)
+}
+
+/** Several runs that lack the signal which is analysed are one matter: runs of different kinds, or a signal to be named. */
+function runsWithoutSignal(
+  { runs }: StudyDocument,
+  { signal, findings }: StudyResult,
+): { readonly runIds: ReadonlySet<string>; readonly words: string } | null {
+  if (signal === null) return null
+  const used = runs.filter((run) => run.use)
+  const quantities = (run: StudyDocument['runs'][number]): readonly string[] => run.signals.map(({ quantity }) => quantity)
+  const unusable = new Set(findings.flatMap(({ code, run }) => (code === 'run-unusable' && run !== null ? [run] : [])))
+  const lacking = used.filter((run) => unusable.has(run.id) && !quantities(run).includes(signal))
+  if (lacking.length < 2) return null
+  const theirs = [...new Set(lacking.flatMap(quantities))]
+  const common = theirs.filter((quantity) => used.every((run) => quantities(run).includes(quantity)))
+  const remedy =
+    common.length === 0
+      ? 'No signal is in all runs: they are of different kinds. Name only the files of one kind'
+      : `Name a signal that all runs have: ${common.map((quantity) => `--signal ${quantity}`).join(' or ')}`
+  return {
+    runIds: new Set(lacking.map(({ id }) => id)),
+    words:
+      `${lacking.length} of ${used.length} runs have no ${signal.replace('-', ' ')} column but ${theirs.map((one) => one.replace('-', ' ')).join(', ')}: ` +
+      `${lacking.map(({ label }) => label).join(', ')}. ${remedy}.`,
+  }
 }
 
 const sentence = (text: string): string => (/[.!?]$/.test(text.trim()) ? text.trim() : `${text.trim()}.`)

@@ -2,6 +2,7 @@ import { readdirSync, readFileSync, statSync, type Dirent, type Stats } from 'no
 import { basename, join, resolve } from 'node:path'
 import { exportsAmong, exportSuffixWords } from '../../shared-kinetics/contract/export-names.ts'
 import { largestUploadBytes } from '../../shared-kinetics/contract/host-api.ts'
+import { naturalOrder } from '../../shared-kinetics/contract/natural-order.ts'
 import { savedCopySuffix } from '../study/saved-copy-suffix.ts'
 import { InputError } from './cli-io.ts'
 
@@ -30,15 +31,23 @@ function filesOf(path: string, alsoSuffixes: RegExp): readonly string[] {
       throw new InputError(`${path}: this is a saved study. Open it with: rampfold open ${path}`)
     return [path]
   }
-  const files = entriesOf(path)
-    .filter((inside) => !inside.isDirectory())
-    .map((inside) => inside.name)
+  const inside = entriesOf(path)
+  const files = inside.filter((entry) => !entry.isDirectory()).map((entry) => entry.name)
   const names = exportsAmong(files, alsoSuffixes)
   if (names.length === 0) {
-    throw new InputError(`${path}: there are no exports in this folder. Name a folder that holds ${exportSuffixWords}, or name the files.`)
+    const folders = inside.filter((entry) => entry.isDirectory()).map((entry) => entry.name)
+    const searched =
+      folders.length === 0 ? '' : ` Its sub-folders (${few(folders.toSorted(naturalOrder))}) are not searched: name those you mean.`
+    throw new InputError(
+      `${path}: there are no exports in this folder.${searched} Name a folder that holds ${exportSuffixWords}, or name the files.`,
+    )
   }
   return names.map((name) => join(path, name))
 }
+
+const mostNamed = 3
+const few = (names: readonly string[]): string =>
+  names.length <= mostNamed ? names.join(', ') : `${names.slice(0, mostNamed).join(', ')} and ${names.length - mostNamed} more`
 
 const isSavedCopy = (path: string): boolean => path.toLowerCase().endsWith(savedCopySuffix)
 

@@ -1,5 +1,6 @@
 import type { RefusedFile } from '../../shared-kinetics/contract/host-api.ts'
 import type { RunInfo } from '../../shared-kinetics/series/run.ts'
+import { isOnlyRounding } from '../export/heating-rate-error.ts'
 import { extentOf } from '../../shared-kinetics/figure/nice-axis.ts'
 import { kelvinToCelsius, perSecondToPerMinute } from '../../shared-kinetics/units/convert.ts'
 import type { InspectedFile, InspectedRun } from './commands/inspect.ts'
@@ -19,12 +20,11 @@ export function inspectText({ file, runs }: InspectedFile): string {
 
 function runText({ run: { info, columns }, result, findings }: InspectedRun, all: readonly InspectedRun[]): string[] {
   const [coldest, hottest] = extentOf(columns.temperature_K).map(kelvinToCelsius)
-  const duration_min = columns.time_s === null ? null : ((columns.time_s.at(-1) ?? 0) - (columns.time_s[0] ?? 0)) / 60
   const ownDecisions = all[0]?.run.info === info ? [] : info.importDecisions.filter((one) => !hasDecision(all[0]?.run.info, one))
   const segments = temperatureSegments(columns)
   const rows: string[][] = [
     ['rows', String(info.rows), ''],
-    ['time', duration_min === null ? 'none' : `${duration_min.toFixed(2)} min`, ''],
+    ['time', ...timeTexts(columns.time_s)],
     ['temperature', `${coldest?.toFixed(1)} to ${hottest?.toFixed(1)} °C`, ''],
     ...segments.map((segment, i) => [
       `segment ${i + 1}`,
@@ -33,7 +33,8 @@ function runText({ run: { info, columns }, result, findings }: InspectedRun, all
     ]),
     ...info.signals.map(({ quantity, label, fileUnit }) => [quantity, label, fileUnit === '' ? 'no unit' : `in ${fileUnit}`]),
     ...ownDecisions.map(({ step, value, reason }) => [step, value, reason]),
-    ['heating rate', measuredText(result), nominalText(info)],
+    ['heating rate', measuredText(result, findings.length > 0), nominalText(info)],
+    ...ofReaction(result, segments.length),
     ...(info.initialMass_kg === null ? [] : [['sample mass', `${(info.initialMass_kg * 1e6).toPrecision(4)} mg`, '']]),
     ...(info.exothermic === null ? [] : [['exothermic', info.exothermic, '']]),
     ...info.metadata.map(({ key, value }) => [key, value, '']),
@@ -42,24 +43,45 @@ function runText({ run: { info, columns }, result, findings }: InspectedRun, all
   return [`  run ${info.label}`, ...table(rows).map((line) => `  ${line}`), ...notes]
 }
 
+/** How long it takes, and where its clock begins and ends where that is not at 0: segments go by that clock. */
+function timeTexts(time_s: Float64Array | null): readonly [string, string] {
+  if (time_s === null) return ['none', '']
+  const [start, end] = [time_s[0] ?? 0, time_s.at(-1) ?? 0]
+  return [`${((end - start) / 60).toFixed(2)} min`, minutes(start) === '0.0' ? '' : `${minutes(start)} to ${minutes(end)} min in the file`]
+}
+
+/** A heating rate is that of the reaction; segments are means from end to end, with the furnace's start and stop in them. */
+function ofReaction(result: InspectedRun['result'], segments: number): string[][] {
+  if (result === null || segments === 0 || result.programme !== 'constant-heating-rate' || result.heatingRateSource !== 'measured')
+    return []
+  const { window } = result
+  const range =
+    window.kind === 'temperature'
+      ? `${kelvinToCelsius(window.start_K).toFixed(1)} to ${kelvinToCelsius(window.end_K).toFixed(1)} °C`
+      : `${minutes(window.start_s)} to ${minutes(window.end_s)} min`
+  return [['  fitted over', range, 'the window of the reaction; a segment gives its mean from end to end']]
+}
+
 const minutes = (time_s: number): string => (time_s / 60).toFixed(1)
 
 function segmentText({ kind, start_K, end_K, start_s, end_s }: TemperatureSegment): string {
   const rate_K_per_min = (Math.abs(end_K - start_K) / (end_s - start_s)) * 60
   return kind === 'hold'
     ? `hold at ${kelvinToCelsius((start_K + end_K) / 2).toFixed(1)} °C`
-    : `${kind} at ${rate_K_per_min.toFixed(1)} K/min to ${kelvinToCelsius(end_K).toFixed(1)} °C`
+    : `${kind} at ${rate_K_per_min.toFixed(1)} K/min on average to ${kelvinToCelsius(end_K).toFixed(1)} °C`
 }
 
 const hasDecision = (info: RunInfo | undefined, one: RunInfo['importDecisions'][number]): boolean =>
   info?.importDecisions.some((other) => other.step === one.step && other.value === one.value) ?? false
 
-function measuredText(result: InspectedRun['result']): string {
-  if (result === null) return 'not measured'
+function measuredText(result: InspectedRun['result'], isReasonBelow: boolean): string {
+  if (result === null) return isReasonBelow ? 'of the reaction: not worked out, see below' : 'of the reaction: not worked out'
   if (result.programme === 'isothermal' && result.holdTemperature_K !== null)
     return `hold at ${kelvinToCelsius(result.holdTemperature_K).toFixed(2)} °C`
   if (result.programme !== 'constant-heating-rate' || result.heatingRate_K_per_min === null) return 'no constant heating rate'
   const error = result.heatingRateStandardError_K_per_min
+  if (error !== null && isOnlyRounding(error, result.heatingRate_K_per_min))
+    return `${result.heatingRate_K_per_min.toFixed(3)} K/min, set or calculated, not measured`
   return `${result.heatingRate_K_per_min.toFixed(3)}${error === null ? '' : ` ±${errorText(error)}`} K/min, ${result.heatingRateSource ?? 'stated'}`
 }
 

@@ -5,6 +5,7 @@ import { meanCaution } from '../../shared-kinetics/figure/mean-not-alone.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 import { uncertaintyOf, type ExportSource } from './activation-json.ts'
 import { caution } from './caution.ts'
+import { isOnlyRounding } from './heating-rate-error.ts'
 import { intervalLines, meanLines } from './interval-lines.ts'
 import { preExponentialLines } from './pre-exponential.ts'
 import { peakMethodLines } from './peak-method-lines.ts'
@@ -71,8 +72,11 @@ function programmeText(run: RunResult): string {
   const nominal = run.nominalHeatingRate_K_per_min === null ? '' : `, nominal ${run.nominalHeatingRate_K_per_min} K/min`
   if (run.programme === 'constant-heating-rate' && run.heatingRate_K_per_min !== null) {
     const error = run.heatingRateStandardError_K_per_min
+    const rate = `heating rate ${run.heatingRate_K_per_min.toFixed(3)} K/min`
+    if (error !== null && isOnlyRounding(error, run.heatingRate_K_per_min))
+      return `${rate} (of a temperature set or calculated, its error not measured${nominal})`
     const spread = error === null ? '' : `, standard error ${error.toPrecision(2)} K/min`
-    return `heating rate ${run.heatingRate_K_per_min.toFixed(3)} K/min (${run.heatingRateSource ?? 'stated'}${spread}${nominal})`
+    return `${rate} (${run.heatingRateSource ?? 'stated'}${spread}${nominal})`
   }
   if (run.programme === 'isothermal' && run.holdTemperature_K !== null) return `isothermal at ${kelvinAndCelsius(run.holdTemperature_K)}`
   return `general temperature programme${nominal}`

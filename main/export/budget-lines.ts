@@ -21,8 +21,7 @@ export function budgetLine(
   const range = `over conversion ${from} to ${to}`
   if (of.length === 0)
     return `${label}: ${entry.label}, ${entry.magnitude}${shown}; u(Ea) unknown ${range}${entry.reason === null ? '' : `. ${entry.reason}`}`
-  const [least, most] = [Math.min(...of).toFixed(2), Math.max(...of).toFixed(2)]
-  return `${label}: ${entry.label}, ${entry.magnitude}${shown}; u(Ea) ${least === most ? least : `${least} to ${most}`} kJ/mol ${range}`
+  return `${label}: ${entry.label}, ${entry.magnitude}${shown}; u(Ea) ${leastToMost(of)} kJ/mol ${range}`
 }
 
 /** What intervals rest on that nobody stated, and what they do not hold, one line each; the same for all methods, so each once. */
@@ -83,11 +82,12 @@ export function combinedLines(
     return u === null || energy === null || upper === null ? [] : [{ u, half: upper - energy }]
   })
   if (known.length === 0) return []
-  const range = (values: readonly number[]): string => {
-    const [least, largest] = [Math.min(...values).toFixed(2), Math.max(...values).toFixed(2)]
-    return least === largest ? least : `${least} to ${largest}`
-  }
   return [
-    `${label}: combined, u(Ea) ${range(known.map(({ u }) => u))} kJ/mol and half the 95 % interval ${range(known.map(({ half }) => half))} kJ/mol over conversion ${from} to ${to}; ${whyNotAMultiple}`,
+    `${label}: combined, u(Ea) ${leastToMost(known.map(({ u }) => u))} kJ/mol and half the 95 % interval ${leastToMost(known.map(({ half }) => half))} kJ/mol over conversion ${from} to ${to}; ${whyNotAMultiple}`,
   ]
+}
+
+function leastToMost(values: readonly number[]): string {
+  const [least, most] = [Math.min(...values).toFixed(2), Math.max(...values).toFixed(2)]
+  return least === most ? least : `${least} to ${most}`
 }

@@ -265,21 +265,22 @@ describe('what intervals from measured sources rest on', () => {
   })
 })
 
+const varies = (intervals: string): StudyResult['findings'] => [
+  {
+    code: 'energy-varies',
+    severity: 'caution',
+    stage: 'activation',
+    title: 'Ea varies',
+    message: 'Ea varies.',
+    run: null,
+    level: null,
+    evidence: { intervals },
+    basis: 'A rule',
+    sources: [],
+  },
+]
+
 describe('the mean of Ea', () => {
-  const varies = (intervals: string): StudyResult['findings'] => [
-    {
-      code: 'energy-varies',
-      severity: 'caution',
-      stage: 'activation',
-      title: 'Ea varies',
-      message: 'Ea varies.',
-      run: null,
-      level: null,
-      evidence: { intervals },
-      basis: 'A rule',
-      sources: [],
-    },
-  ]
   const caution = 'not to be quoted alone: Ea varies'
 
   it('has the half of its interval on the screen, and of the combined one where that was asked for', () => {
