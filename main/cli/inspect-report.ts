@@ -59,7 +59,7 @@ function ofReaction(result: InspectedRun['result'], segments: number): string[][
     window.kind === 'temperature'
       ? `${kelvinToCelsius(window.start_K).toFixed(1)} to ${kelvinToCelsius(window.end_K).toFixed(1)} °C`
       : `${minutes(window.start_s)} to ${minutes(window.end_s)} min`
-  return [['  fitted over', range, 'the window of the reaction; a segment gives its mean from end to end']]
+  return [['  fitted over', range, 'the window of the reaction, ± one standard error; a segment gives its mean from end to end']]
 }
 
 const minutes = (time_s: number): string => (time_s / 60).toFixed(1)

@@ -246,6 +246,20 @@ describe('peak and single-run methods in exports', () => {
     expect(peakMethodLines(bare)[0]).toBe('ASTM E698: Ea 209.25 kJ/mol, no interval, no A. Method: ASTM E698')
   })
 
+  it('say what the conversions at the peaks mean', () => {
+    const at = (key: 'lowest' | 'highest' | 'first-order', value: number) =>
+      ({ key: `conversion-at-peak-${key}`, label: key, value, standardError: null, unit: '1' }) as const
+    const lines = peakMethodLines({
+      ...e698,
+      numbers: [at('lowest', 0.48), at('highest', 0.55), at('first-order', 0.62)],
+      remarks: ['Confirm it.'],
+    })
+    expect(lines.slice(1)).toEqual([
+      expect.stringMatching(/^ {2}Peaks at conversion 0\.48 to 0\.55: about alike .* is off\.$/),
+      '  Confirm it.',
+    ])
+  })
+
   it('stand in the short table where they apply, single runs in one line with their caution', () => {
     const table = shortTable({
       ...result,

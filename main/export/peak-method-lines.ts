@@ -1,3 +1,4 @@
+import { peakConversionWords } from '../../shared-kinetics/figure/peak-conversion-words.ts'
 import type { PeakMethodNumber, PeakMethodResult } from '../../shared-kinetics/tasks/study-result.ts'
 import { kelvinToCelsius } from '../../shared-kinetics/units/convert.ts'
 
@@ -7,7 +8,7 @@ export function peakMethodLines(result: PeakMethodResult): string[] {
   if (!result.applies) return [`${name}: does not apply. ${result.reason ?? ''}`]
   return [
     `${name}: ${[energyText(result), lnAText(result), ...result.numbers.flatMap(numberText)].join(', ')}. Method: ${result.sources.join('; ')}`,
-    ...result.remarks.map((remark) => `  ${remark}`),
+    ...[peakConversionWords(result.numbers) ?? [], result.remarks].flat().map((remark) => `  ${remark}`),
   ]
 }
 
