@@ -159,6 +159,9 @@ const doesNotApply: PeakMethodResult = {
   line: null,
 }
 
+const at = (key: 'lowest' | 'highest' | 'first-order', value: number) =>
+  ({ key: `conversion-at-peak-${key}`, label: key, value, standardError: null, unit: '1' }) as const
+
 const singleRun: PeakMethodResult = {
   ...e698,
   method: 'borchardt-daniels',
@@ -247,8 +250,6 @@ describe('peak and single-run methods in exports', () => {
   })
 
   it('say what the conversions at the peaks mean', () => {
-    const at = (key: 'lowest' | 'highest' | 'first-order', value: number) =>
-      ({ key: `conversion-at-peak-${key}`, label: key, value, standardError: null, unit: '1' }) as const
     const lines = peakMethodLines({
       ...e698,
       numbers: [at('lowest', 0.48), at('highest', 0.55), at('first-order', 0.62)],
