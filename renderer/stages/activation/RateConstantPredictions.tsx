@@ -1,7 +1,6 @@
 import type { Maybe, RateConstantPrediction } from '../../../shared-kinetics/contract/study-result.ts'
 import { rateConstantLimits } from '../../../shared-kinetics/contract/rate-constant-schema.ts'
 import type { Parsed } from '../../../shared-kinetics/units/parse-quantity.ts'
-import { noIntervalWords } from '../../../shared-kinetics/figure/result-words.ts'
 import { NumberHeading } from '../../sheet/DataTable.tsx'
 import { decimals } from '../../sheet/format.ts'
 import { PowerOfTen } from '../../sheet/PowerOfTen.tsx'
@@ -12,7 +11,7 @@ import { TypedField } from '../../sheet/TypedField.tsx'
 import { useServices } from '../../state/services.ts'
 import { parseTemperatures, temperaturesText } from '../runs/rate-constant-cells.ts'
 import type { RatedProps } from './RateConstantsActivation.tsx'
-import { copiedPredictions, modelRemark, notWithinData, placeWords, temperatureIn } from './rate-constant-rows.ts'
+import { copiedPredictions, modelNotFollowed, notWithinData, placeWords, reasonWords, temperatureIn } from './rate-constant-rows.ts'
 
 /** k at temperatures that were not measured, or that were: with the band of the line and that of one more measurement. */
 export function RateConstantPredictions({ table, rated, place, actions }: RatedProps) {
@@ -20,7 +19,7 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
   const { temperatureUnitShown: shown, rateUnit } = table
   const { predictions } = rated
   const hasBands = predictions.some((row) => row.lineLower95 !== null)
-  const remark = modelRemark(rated)
+  const model = modelNotFollowed(rated)
   const current = place.kind === 'prediction' ? place.index : null
   return (
     <>
@@ -71,11 +70,10 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
                       ) : (
                         <PowerOfTen text={scientific(row.rateConstant, 3)} />
                       )}
-                      {remark !== null && row.lnK !== null && <span className="rate-remark is-beneath">{remark}</span>}
                     </td>
                     {hasBands && <Ends of={row} lower={row.lineLower95} upper={row.lineUpper95} />}
                     {hasBands && <Ends of={row} lower={row.newLower95} upper={row.newUpper95} />}
-                    {!hasBands && <td className="no-interval">{noIntervalWords(row.intervalStatus) ?? 'no interval'}</td>}
+                    {!hasBands && <NoInterval of={row} model={model} />}
                     <td className="is-number">
                       <PowerOfTen text={scientific(row.exponentialFactor, 3)} />
                     </td>
@@ -98,20 +96,34 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
   )
 }
 
+/** Why no interval stands beside k, and with it the mark of a k that is as wrong as its model. */
+function NoInterval({ of, model }: { readonly of: RateConstantPrediction; readonly model: string | null }) {
+  if (of.lnK === null) return <td className="no-interval">not to be had</td>
+  const words = reasonWords(of.intervalStatus, model)
+  return (
+    <td className={model === null ? 'no-interval' : 'no-interval is-off'}>
+      {words ?? 'no interval: its ends cannot be written as numbers'}
+    </td>
+  )
+}
+
 /** Both ends in the power of ten of k itself, so that they can be held against it at a glance. */
 function Ends({ of, lower, upper }: { readonly of: RateConstantPrediction; readonly lower: Maybe; readonly upper: Maybe }) {
-  if (lower === null || upper === null || of.rateConstant === null)
-    return <td className="no-interval">{noIntervalWords(of.intervalStatus) ?? 'no interval'}</td>
+  if (lower === null || upper === null || of.rateConstant === null) return <NoInterval of={of} model={null} />
   const [, power] = mantissaAndPower(scientific(of.rateConstant, 3))
   const scale = power === '' ? 1 : 10 ** Number(power.replace('−', '-'))
   const end = (value: number): string => decimals(value / scale, placesAt(value / scale))
   return (
-    <td className="is-number">
-      {end(lower)} … {end(upper)}
+    <td className="is-number prediction-ends">
+      <span className="prediction-range">
+        {end(lower)} … {end(upper)}
+      </span>
       {power !== '' && (
         <>
           {' '}
-          × 10<sup>{power}</sup>
+          <span className="prediction-range">
+            × 10<sup>{power}</sup>
+          </span>
         </>
       )}
     </td>

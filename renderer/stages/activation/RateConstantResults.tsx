@@ -122,7 +122,11 @@ function Headline({ rated }: { readonly rated: RateConstantsResult }) {
           {line.ALower95 === null || line.AUpper95 === null ? (
             <span className="soft">
               {' '}
-              ({noIntervalWords(line.lnAIntervalStatus) ?? 'no interval: its ends cannot be written as numbers'})
+              (
+              {remark === null
+                ? (noIntervalWords(line.lnAIntervalStatus) ?? 'no interval: its ends cannot be written as numbers')
+                : 'no interval'}
+              )
             </span>
           ) : (
             <span className="soft">
@@ -171,13 +175,13 @@ function Parameters({ rated }: { readonly rated: RateConstantsResult }) {
               <tr key={row.id}>
                 <th scope="row">
                   {row.quantity} {row.unit !== '' && <span className="soft">{row.unit}</span>}
-                  {row.remark !== null && <span className="rate-remark is-beneath">{row.remark}</span>}
+                  {row.remark !== null && row.noInterval === null && <span className="rate-remark is-beneath">{row.remark}</span>}
                 </th>
                 <td className="is-number">
                   <PowerOfTen text={row.format(row.value)} />
                 </td>
                 {hasIntervals && row.noInterval !== null && row.lower === null && row.upper === null && (
-                  <td colSpan={3} className="is-number no-interval">
+                  <td colSpan={3} className={row.remark === null ? 'is-number no-interval' : 'is-number no-interval is-off'}>
                     {row.noInterval}
                   </td>
                 )}

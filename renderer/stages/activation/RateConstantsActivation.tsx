@@ -70,7 +70,7 @@ function Evidence(props: RatedProps) {
         </div>
       )}
       <FigureChart figure={figure} overlay={overlay} colours={colours} onPick={onPick} onCopied={actions.pictureCopied} />
-      {rated.line.interval.dof > 0 && (
+      {rated.band.lnLineLower95.some((end) => end !== null) && (
         <p className="chart-note">Shaded: 95 % band of the line and, wider, of one new k; pointwise in temperature.</p>
       )}
       {fits !== null && beneath === 'holds' ? (

@@ -57,7 +57,7 @@ describe('numbers that rest on a model which does not follow the holds', () => {
   it('say so beside A and ln A, with the reason why no ends stand there; Ea keeps its own', () => {
     for (const id of ['A', 'lnA']) {
       expect(of(id)?.remark).toBe('under D3, which does not follow the holds')
-      expect(of(id)?.noInterval).toBe('no interval: the reaction model does not follow the holds')
+      expect(of(id)?.noInterval).toBe('no interval: D3 does not follow the holds')
     }
     expect([of('Ea')?.remark, of('Ea')?.noInterval]).toEqual([null, null])
   })
@@ -67,10 +67,7 @@ describe('numbers that rest on a model which does not follow the holds', () => {
     expect(copied.map((cells) => cells.split('\t').at(-1))).toEqual([
       'remark',
       '',
-      ...Array.from(
-        { length: 2 },
-        () => 'under D3, which does not follow the holds; no interval: the reaction model does not follow the holds',
-      ),
+      ...Array.from({ length: 2 }, () => 'no interval: D3 does not follow the holds'),
     ])
   })
 

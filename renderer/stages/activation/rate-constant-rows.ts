@@ -100,7 +100,7 @@ export function lineRows(line: ArrheniusResult, rateUnit: string, which: string,
       upper: line.AUpper95,
       lowerRemark: null,
       remark: model === null ? null : underModel(model),
-      noInterval: line.A === null ? null : noIntervalWords(lnAIntervalStatus),
+      noInterval: line.A === null ? null : reasonWords(lnAIntervalStatus, model),
       format: threeDigits,
       formatError: threeDigits,
     },
@@ -123,12 +123,16 @@ export function modelRemark(result: Pick<RateConstantsResult, 'modelFollowsHolds
   return model === null ? null : underModel(model)
 }
 
+/** Why there is no interval, with the name of the reaction model where it is because of that; null where there is one. */
+export const reasonWords = (status: RateIntervalStatus, model: string | null): string | null =>
+  status === 'model-does-not-follow-holds' && model !== null ? `no interval: ${model} does not follow the holds` : noIntervalWords(status)
+
 const joinedWords = (...words: readonly (string | null)[]): string => words.filter((one) => one !== null).join('; ')
 
 const withReason = (row: ParameterRow, status: RateIntervalStatus, model: string | null): ParameterRow => ({
   ...row,
   remark: model === null ? row.remark : underModel(model),
-  noInterval: row.value === null ? null : noIntervalWords(status),
+  noInterval: row.value === null ? null : reasonWords(status, model),
 })
 
 const estimateRow = (id: string, quantity: string, unit: string, estimate: EstimateResult): ParameterRow =>
@@ -254,7 +258,7 @@ export const parameterCopyColumns: readonly DataColumn<ParameterRow>[] = [
   number('error', 'standard error', '', (row) => row.standardError),
   number('lower', 'lower 95 %', '', (row) => row.lower),
   number('upper', 'upper 95 %', '', (row) => row.upper),
-  word('remark', 'remark', (row) => joinedWords(row.remark, row.noInterval, row.lowerRemark)),
+  word('remark', 'remark', (row) => joinedWords(row.noInterval ?? row.remark, row.lowerRemark)),
 ]
 
 const temperatureColumn = <Row extends { readonly temperature_K: number }>({
@@ -283,7 +287,9 @@ export const predictionCopyColumns = (result: RateConstantsResult): readonly Dat
   number('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
   number('factor', 'factor per 10 K from T', '', (row) => row.factorPer10K.factor),
   word('where', 'to the data', placeWords),
-  word('remark', 'remark', (row) => (row.lnK === null ? '' : joinedWords(modelRemark(result), noIntervalWords(row.intervalStatus)))),
+  word('remark', 'remark', (row) =>
+    row.lnK === null ? '' : (reasonWords(row.intervalStatus, modelNotFollowed(result)) ?? modelRemark(result) ?? ''),
+  ),
 ]
 
 export const rowCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantRowResult>[] => [
