@@ -149,7 +149,6 @@ function runsWithoutSignal(
 ): { readonly runIds: ReadonlySet<string>; readonly words: string } | null {
   if (signal === null) return null
   const used = runs.filter((run) => run.use)
-  const quantities = (run: StudyDocument['runs'][number]): readonly string[] => run.signals.map(({ quantity }) => quantity)
   const unusable = new Set(findings.flatMap(({ code, run }) => (code === 'run-unusable' && run !== null ? [run] : [])))
   const lacking = used.filter((run) => unusable.has(run.id) && !quantities(run).includes(signal))
   if (lacking.length < 2) return null
@@ -166,5 +165,7 @@ function runsWithoutSignal(
       `${lacking.map(({ label }) => label).join(', ')}. ${remedy}.`,
   }
 }
+
+const quantities = (run: StudyDocument['runs'][number]): readonly string[] => run.signals.map(({ quantity }) => quantity)
 
 const sentence = (text: string): string => (/[.!?]$/.test(text.trim()) ? text.trim() : `${text.trim()}.`)

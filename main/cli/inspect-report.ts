@@ -50,7 +50,7 @@ function timeTexts(time_s: Float64Array | null): readonly [string, string] {
   return [`${((end - start) / 60).toFixed(2)} min`, minutes(start) === '0.0' ? '' : `${minutes(start)} to ${minutes(end)} min in the file`]
 }
 
-/** A heating rate is that of the reaction; segments are means from end to end, with the furnace's start and stop in them. */
+/** A heating rate is that of the reaction: the line through T(t) over its window, which is not the rate of a whole segment. */
 function ofReaction(result: InspectedRun['result'], segments: number): string[][] {
   if (result === null || segments === 0 || result.programme !== 'constant-heating-rate' || result.heatingRateSource !== 'measured')
     return []
@@ -59,16 +59,16 @@ function ofReaction(result: InspectedRun['result'], segments: number): string[][
     window.kind === 'temperature'
       ? `${kelvinToCelsius(window.start_K).toFixed(1)} to ${kelvinToCelsius(window.end_K).toFixed(1)} °C`
       : `${minutes(window.start_s)} to ${minutes(window.end_s)} min`
-  return [['  fitted over', range, 'the window of the reaction, ± one standard error; a segment gives its mean from end to end']]
+  return [['  fitted over', range, 'the window of the reaction, ± one standard error; a segment has its median rate']]
 }
 
 const minutes = (time_s: number): string => (time_s / 60).toFixed(1)
 
-function segmentText({ kind, start_K, end_K, start_s, end_s }: TemperatureSegment): string {
-  const rate_K_per_min = (Math.abs(end_K - start_K) / (end_s - start_s)) * 60
+/** A hold is told by its end: at its beginning the furnace may still be on its way. */
+function segmentText({ kind, end_K, rate_K_per_s }: TemperatureSegment): string {
   return kind === 'hold'
-    ? `hold at ${kelvinToCelsius((start_K + end_K) / 2).toFixed(1)} °C`
-    : `${kind} at ${rate_K_per_min.toFixed(1)} K/min on average to ${kelvinToCelsius(end_K).toFixed(1)} °C`
+    ? `hold at ${kelvinToCelsius(end_K).toFixed(1)} °C`
+    : `${kind} at ${Math.abs(perSecondToPerMinute(rate_K_per_s)).toFixed(1)} K/min to ${kelvinToCelsius(end_K).toFixed(1)} °C`
 }
 
 const hasDecision = (info: RunInfo | undefined, one: RunInfo['importDecisions'][number]): boolean =>

@@ -40,6 +40,19 @@ describe('segments of a temperature programme', () => {
     }
   })
 
+  it('has the rate of a ramp even where it begins and ends between two of the places looked at, and tells the hold behind it as one', () => {
+    // A look each 0.505 min: the ramp begins and ends in the middle of a step.
+    const pieces = [
+      { rate_K_per_min: 0, minutes: 30.25 },
+      { rate_K_per_min: 20, minutes: 12 },
+      { rate_K_per_min: 0, minutes: 58.75 },
+    ]
+    const segments = temperatureSegments(columnsOf(pieces))
+    expect(segments.map((segment) => segment.kind)).toEqual(['hold', 'heating', 'hold'])
+    expect((segments[1]?.rate_K_per_s ?? Number.NaN) * 60).toBeCloseTo(20, 0)
+    expect(segments[2]?.end_K).toBeCloseTo(540, 0)
+  })
+
   it('takes a cooling that slows down for one', () => {
     const pieces = [10, -40, -20, -10, -5].map((rate_K_per_min) => ({ rate_K_per_min, minutes: 10 }))
     expect(temperatureSegments(columnsOf(pieces)).map((segment) => segment.kind)).toEqual(['heating', 'cooling'])

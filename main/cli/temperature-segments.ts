@@ -7,6 +7,8 @@ export interface TemperatureSegment {
   readonly end_s: number
   readonly start_K: number
   readonly end_K: number
+  /** Median over the stretch, so that a furnace's start and stop do not count; of a cooling that slows down the mean. Negative where it cools. */
+  readonly rate_K_per_s: number
 }
 
 const nodes = 200
@@ -27,9 +29,9 @@ export function temperatureSegments({ time_s, temperature_K }: RunColumns): read
   const rates = Array.from({ length: nodes }, (_, i) => ((T[i + 1] ?? 0) - (T[i] ?? 0)) / step)
   const segments = boundaries(rates).map(([first, last]): TemperatureSegment => {
     const [start_K, end_K] = [T[first] ?? 0, T[last] ?? 0]
-    const rate = (end_K - start_K) / ((last - first) * step)
+    const rate = median(rates.slice(first, last))
     const kind = Math.abs(rate) <= smallest_K_per_s ? 'hold' : rate > 0 ? 'heating' : 'cooling'
-    return { kind, start_s: start + first * step, end_s: start + last * step, start_K, end_K }
+    return { kind, start_s: start + first * step, end_s: start + last * step, start_K, end_K, rate_K_per_s: rate }
   })
   return withCoolingJoined(segments)
 }
@@ -40,7 +42,12 @@ function withCoolingJoined(segments: readonly TemperatureSegment[]): readonly Te
   for (const segment of segments) {
     const before = joined.at(-1)
     if (before?.kind === 'cooling' && segment.kind === 'cooling')
-      joined.splice(-1, 1, { ...before, end_s: segment.end_s, end_K: segment.end_K })
+      joined.splice(-1, 1, {
+        ...before,
+        end_s: segment.end_s,
+        end_K: segment.end_K,
+        rate_K_per_s: (segment.end_K - before.start_K) / (segment.end_s - before.start_s),
+      })
     else joined.push(segment)
   }
   return joined

@@ -1,4 +1,4 @@
-import { assumedShares, assumedShareText, whyNotAMultiple } from '../../shared-kinetics/figure/assumed-share.ts'
+import { assumedShares, assumedShareText } from '../../shared-kinetics/figure/assumed-share.ts'
 import { levelsWithin } from '../../shared-kinetics/tasks/mean-result.ts'
 import type {
   BudgetEntry,
@@ -69,7 +69,7 @@ export function assumedSharesOfAll(profiles: readonly ProfileResult[], { profile
 const howToState = (source: UncertaintySource): string => statedWith[source] ?? 'in the budget on the sheet'
 const percent = (share: number): string => `${(100 * share).toFixed(0)} %`
 
-/** Standard uncertainty and half interval of the combined one over the levels of the mean, and why the one is no multiple of the other. */
+/** Standard uncertainty and half interval of the combined one over the levels of the mean. */
 export function combinedLines(
   { label, mean: { from, to }, Ea_kJ_per_mol: Ea }: ProfileResult,
   apart: UncertaintyProfile,
@@ -83,7 +83,7 @@ export function combinedLines(
   })
   if (known.length === 0) return []
   return [
-    `${label}: combined, u(Ea) ${leastToMost(known.map(({ u }) => u))} kJ/mol and half the 95 % interval ${leastToMost(known.map(({ half }) => half))} kJ/mol over conversion ${from} to ${to}; ${whyNotAMultiple}`,
+    `${label}: combined, u(Ea) ${leastToMost(known.map(({ u }) => u))} kJ/mol and half the 95 % interval ${leastToMost(known.map(({ half }) => half))} kJ/mol over conversion ${from} to ${to}`,
   ]
 }
 

@@ -1,5 +1,6 @@
 import { levelsOfMean } from '../../shared-kinetics/figure/levels-of-mean.ts'
 import type { IntervalStatus } from '../../shared-kinetics/isoconversional/result.ts'
+import { whyNotAMultiple } from '../../shared-kinetics/figure/assumed-share.ts'
 import { intervalRemarks, studentStatus } from '../../shared-kinetics/figure/interval-status.ts'
 import { intervalsNotGiven } from '../../shared-kinetics/figure/intervals-not-given.ts'
 import type { CombinedMean, IntervalResult, ProfileResult, UncertaintyProfile } from '../../shared-kinetics/tasks/study-result.ts'
@@ -13,6 +14,9 @@ export function intervalLines({ result, uncertainty }: ExportSource): string[] {
     ...(uncertainty === undefined ? [] : intervalsNotGiven(result.runs.map((run) => run.programmeGroup))).map(
       ({ label, reason }) => `${label}: not given, ${reason}`,
     ),
+    ...(uncertainty?.profiles.some(({ intervals }) => intervals.some(({ kind }) => kind === 'combined')) === true
+      ? [`Combined interval and its standard uncertainty u: ${whyNotAMultiple}`]
+      : []),
     ...result.profiles.flatMap((profile) => {
       const apart = uncertaintyOf(profile, uncertainty)
       return [
