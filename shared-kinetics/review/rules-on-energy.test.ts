@@ -258,6 +258,15 @@ describe('exothermic-direction-unknown', () => {
   })
 })
 
+// 2 and 20 K/min: a share s of the heating rate may move Ea by s/ln 10.
+const twoRates = (spread: number, half: number) =>
+  heatingRateNotConstant(
+    reviewInput({
+      runs: [reviewedRun('a', 2, 0, { heatingRateSpread: spread }), reviewedRun('b', 20, 1, { heatingRateSpread: spread / 2 })],
+      result: { profiles: [profileOf('starink', [100, 100, 100], half)] },
+    }),
+  )
+
 describe('heating-rate-not-constant', () => {
   it('says how far Ea may be off: the share over ln(fastest/slowest)', () => {
     const runs = [reviewedRun('a', 2, 0), reviewedRun('b', 20, 1, { heatingRateSpread: 0.1 })]
@@ -268,15 +277,6 @@ describe('heating-rate-not-constant', () => {
     const [alone] = heatingRateNotConstant(reviewInput({ runs: [reviewedRun('b', 20, 1, { heatingRateSpread: 0.1 })] }))
     expect(alone?.evidence['EaShift_percent']).toBeNull()
   })
-
-  // 2 and 20 K/min: a share s of the heating rate may move Ea by s/ln 10.
-  const twoRates = (spread: number, half: number) =>
-    heatingRateNotConstant(
-      reviewInput({
-        runs: [reviewedRun('a', 2, 0, { heatingRateSpread: spread }), reviewedRun('b', 20, 1, { heatingRateSpread: spread / 2 })],
-        result: { profiles: [profileOf('starink', [100, 100, 100], half)] },
-      }),
-    )
 
   it('is a caution where that is no less than half the interval, else a note', () => {
     const spread = 0.02 * Math.LN10
