@@ -60,28 +60,27 @@ export function rateConstantsCsv(result: RateConstantsResult, style: TableStyle)
 }
 
 function cells(row: QuantityRow): readonly CsvCell[] {
-  const number = (value: number | null | undefined): CsvCell => numberCell(value ?? null)
   const T = row.temperature_K
   return [
     row.quantity,
     row.label ?? null,
-    T === undefined ? null : number(T),
-    T === undefined ? null : number(Number(kelvinToCelsius(T).toFixed(6))),
+    T === undefined ? null : numberCell(T),
+    T === undefined ? null : numberCell(Number(kelvinToCelsius(T).toFixed(6))),
     row.unit === '' ? null : row.unit,
-    number(row.value),
-    number(row.standardError),
-    number(row.lower),
-    number(row.upper),
+    numberCell(row.value),
+    numberCell(row.standardError),
+    numberCell(row.lower),
+    numberCell(row.upper),
     // Nothing is the interval of anything where there are no ends.
     row.lower === null && row.upper === null ? null : (row.intervalOf ?? null),
-    number(row.residual),
+    numberCell(row.residual),
     row.remark ?? null,
   ]
 }
 
 /** Very small and very large numbers keep their digits by a power of ten, which spreadsheets read as a number. */
-function numberCell(value: number | null): CsvCell {
-  if (value === null || !Number.isFinite(value)) return null
+function numberCell(value: number | null | undefined): CsvCell {
+  if (value === null || value === undefined || !Number.isFinite(value)) return null
   const size = Math.abs(value)
   return size !== 0 && (size < 1e-4 || size >= 1e9) ? { withPower: value } : value
 }

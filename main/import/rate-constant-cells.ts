@@ -5,6 +5,7 @@ import { unitOf } from './file-unit.ts'
 import type { Refuse } from './import-refusal.ts'
 import { isMissingMark, parseNumber } from './parse-number.ts'
 import { linesWithinLimits, rateConstantTextLimits } from './rate-constant-limits.ts'
+import { writtenWithUncertainty, type WrittenWithUncertainty } from './value-with-uncertainty.ts'
 import { delimiterCharacter, splitCells, withoutEmptyEnd } from './split-cells.ts'
 
 /** A cell of a small table: a number, with a unit behind it where somebody typed one. */
@@ -12,6 +13,8 @@ export interface NumberCell {
   readonly value: number
   /** Empty where there is none. */
   readonly unitText: string
+  /** Written into the same cell: of the value, or as a fraction of it. */
+  readonly uncertainty?: { readonly value: number; readonly isRelative: boolean; readonly form: WrittenWithUncertainty['form'] }
 }
 
 /** A line that is not blank; `number` counts from 1. */
@@ -72,7 +75,9 @@ function readingOf(lines: readonly NumberedLine[], delimiter: DelimiterWord, dec
     const others = filled.length - numbers.length
     const isLikeData = numbers.length >= 2 && numbers.length >= others && !(isUnquotedComma && !text.includes('"'))
     if (isLikeData) {
-      score += numbers.length - 0.9 * others
+      // Commas of decimals part “7,87 ± 0,3” into what looks like more numbers than there are.
+      const split = delimiter === 'comma' ? numbers.filter((cell) => numberCell(cell, decimal)?.uncertainty !== undefined).length : 0
+      score += numbers.length - split - 0.9 * others
       hasSigns ||= numbers.some((cell) => /[.,]/.test(cell))
     }
     return { line: number, cells, isData: isLikeData }
@@ -97,11 +102,18 @@ function cellsOf(line: string, delimiter: DelimiterWord, decimal: DecimalSignWor
   const text = delimiter === 'tab' ? line.replaceAll(/[^\S\t]{2,}/g, ' ') : line.replaceAll(/\s{2,}/g, ' ')
   if (delimiter !== 'blanks')
     return text.includes(delimiterCharacter[delimiter]) ? withoutEmptyEnd(splitCells(text, delimiter)) : [text.trim()]
-  const lowered = lineWithLoweredPowers(text)
+  const lowered = joinedUncertainties(lineWithLoweredPowers(text))
   const words = lowered === text ? [] : joinedWords(text, decimal)
   // A row of as many words as there are headings is parted by its blanks, whatever sign stands between them.
   return words.length > 0 && words.length === named ? words : joinedWords(lowered, decimal)
 }
+
+/** An uncertainty belongs to the number before it. */
+const joinedUncertainties = (text: string): string =>
+  text
+    .replaceAll(/(?<=[\d)]) ?(±|\+\/-) ?(?=\d)/g, '$1')
+    .replaceAll(/(?<=\d\)) ?([×·x*]) ?(?=10)/g, '$1')
+    .replaceAll(/(?<=\d) (?=%)/g, '')
 
 /** The cells of a line that blanks part: a unit belongs to the number before it, and a bracket to the name before it. */
 function joinedWords(text: string, decimal: DecimalSignWord): readonly string[] {
@@ -131,8 +143,26 @@ export const isUnitText = (text: string): boolean =>
 
 const isBareNumber = (cell: string, decimal: DecimalSignWord): boolean => numberCell(cell, decimal)?.unitText === ''
 
-/** `298.15`, `25 °C`, `25°C`, `3.5e-5 1/s`, `3.5 × 10−5 1/s`; null for what is no number with or without a unit. */
+/** `298.15`, `25 °C`, `25°C`, `3.5e-5 1/s`, `3.5 × 10−5 1/s`, `2.94(8)e-6`, `2.9e-6 ± 1e-7`; null for what is no number with or without a unit. */
 export function numberCell(cell: string, decimal: DecimalSignWord): NumberCell | null {
+  const plain = plainNumberCell(cell, decimal)
+  if (plain !== null || !/±|\+\/-|\d ?\(\d/.test(cell)) return plain
+  const written = writtenWithUncertainty(cell.trim(), decimal)
+  if (written === null) return null
+  const [number, uncertainty] = [plainNumberCell(written.number, decimal), plainNumberCell(written.uncertainty, decimal)]
+  if (number === null || uncertainty === null) return null
+  // A unit behind both stands behind the second.
+  const unitText = number.unitText === '' ? uncertainty.unitText : number.unitText
+  if (uncertainty.unitText !== '' && uncertainty.unitText !== unitText) return null
+  const { form, isPercent } = written
+  return {
+    value: number.value,
+    unitText,
+    uncertainty: { value: isPercent ? uncertainty.value / 100 : uncertainty.value, isRelative: isPercent, form },
+  }
+}
+
+function plainNumberCell(cell: string, decimal: DecimalSignWord): NumberCell | null {
   const trimmed = cellWithPlainPowers(cell.trim())
   if (trimmed === '') return null
   const whole = parseNumber(trimmed, 0, trimmed.length, decimal)

@@ -56,10 +56,15 @@ export function planRateConstantColumns(
     throw refuse(
       namesRow.line,
       `The rows have ${width} cells but this line names ${headings.length}.`,
-      'Name every column; a decimal comma needs another delimiter than the comma.',
+      widthRemedy[reading.delimiter] ?? 'Name every column.',
     )
   }
   return byHeadings(headings, namesRow.line, width, refuse, notes)
+}
+
+const widthRemedy: Partial<Record<CellReading['delimiter'], string>> = {
+  comma: 'Name every column; a decimal comma needs another delimiter than the comma.',
+  blanks: 'Blanks were taken to part the cells: put tabs or semicolons between them, or name every column.',
 }
 
 /** The units of a row of units go behind the names, unless a name has its own. */

@@ -282,8 +282,9 @@ describe('what is not guessed', () => {
   it('rows without a rate constant, lines behind the table and other columns are set aside and said', () => {
     const table = read('T (K),k (1/s),colour\n298,3.46e-5,red\n308,,red\n318,4.98e-4,red\nmeasured in May,,')
     expect(table.rows).toHaveLength(2)
-    expect(codes(table)).toEqual(['columns-set-aside', 'rows-set-aside'])
-    expect(table.notes[1]?.message).toMatch(/line 3, 5/)
+    expect(codes(table)).toEqual(['columns-set-aside', 'rows-set-aside', 'rows-set-aside'])
+    expect(table.notes[1]?.message).toMatch(/^A line without a rate constant .*\(line 3\)/)
+    expect(table.notes[2]?.message).toMatch(/^A line behind the table .*\(line 5\)/)
   })
 
   it('more rows than a table holds are refused, a file that is no text too', () => {
@@ -343,6 +344,97 @@ describe('a text that is larger than a table', () => {
     const table = read('T ( K )   k  ( 1/s )\n298   3.46e-5\n308   1.35e-4')
     expect(table.rateUnit).toBe('1/s')
     expect(table.rows.map((row) => row.temperature_K)).toEqual([298, 308])
+  })
+})
+
+describe('one decimal sign in a table', () => {
+  it.each([
+    ['T (°C);k (1/s)\n25,0;7,87 x 10-7\n35,0;2,94E−6\n45,0;1.050e-5', 4, /“1\.050e-5” has a decimal point, the table a decimal comma/],
+    ['T (°C);k (1/s)\n25,0;7,87e-7\n35,0;2.94e-6\n45,0;1,050e-5', 3, /“2\.94e-6” has a decimal point, the table a decimal comma/],
+    ['25,0 °C;7,87e-7\n35,0 °C;2,94e-6\n45,0 °C;1.050e-5', 3, /“1\.050e-5” has a decimal point/],
+    ['45,0 °C;1.050e-5\n25,0 °C;7,87e-7\n35,0 °C;2,94e-6', 1, /“1\.050e-5” has a decimal point/],
+    ['T (°C);k (1/s)\n25.0;7.87e-7\n35.0;2.94e-6\n45.0;1,05e-5', 4, /“1,05e-5” has a decimal comma, the table a decimal point/],
+    ['T (°C);k (1/s);u(k) (1/s)\n25,0;7,87e-7;1,1e-8\n35,0;2,94e-6;4.2e-8\n45,0;1,050e-5;1,1e-7', 3, /“4\.2e-8” has a decimal point/],
+  ])('%j', (text, line, reason) => {
+    const refused = refusal(text)
+    expect(refused.line).toBe(line)
+    expect(refused.reason).toMatch(reason)
+  })
+
+  it('a slip in the last row is refused, a remark behind the table set aside', () => {
+    const rows = 'T (K)\tk (1/s)\n298\t3.46e-5\n308\t1.35e-4'
+    expect(refusal(`${rows}\n318\t4.98e-4O`)).toMatchObject({
+      line: 4,
+      reason: expect.stringMatching(/4\.98e-4O.* is no number/) as unknown,
+    })
+    for (const remark of ['measured in 2019', '3\treplicates each', '5 replicates each'])
+      expect(read(`${rows}\n${remark}`).rows).toHaveLength(2)
+  })
+})
+
+const uncertainties = (text: string): unknown[] =>
+  read(text).rows.map(({ rateConstant, standardUncertainty }) => [digits(rateConstant), digits(standardUncertainty ?? Number.NaN)])
+
+describe('an uncertainty in the cell of k', () => {
+  it.each([
+    ['T (°C)\tk (1/s)\n25\t7.87 × 10−7 ± 0.3 × 10−7\n35\t2.94 × 10−6 ± 0.1 × 10−6', 'plus-minus'],
+    ['T (°C)\tk (1/s)\n25\t(7.87 ± 0.3) × 10^-7\n35\t(2.94 +/- 0.1)×10⁻⁶', 'plus-minus'],
+    ['T (°C);k (1/s)\n25,0;7,87e-7 ± 0,3e-7\n35,0;2,94e-6 ± 0,1e-6', 'plus-minus'],
+    ['T (°C);k (10^-7 1/s)\n25,0;7,87 ± 0,3\n35,0;29,4 ± 1,0', 'plus-minus'],
+    ['T (°C),k (1/s)\n25,7.87e-7 ± 0.3e-7\n35,2.94e-6 ± 0.1e-6', 'plus-minus'],
+    ['T(°C) k(1/s)\n25 7.87e-7 ± 0.3e-7\n35 2.94e-6 ± 0.1e-6', 'plus-minus'],
+    ['T (°C)\tk (1/s)\n25\t7.87(30) × 10−7\n35\t2.94(10) × 10^-6', 'brackets'],
+    ['T (°C);k (1/s)\n25,0;7,87(0,30)e-7\n35,0;2,94(10)e-6', 'brackets'],
+    ['T(°C) k(1/s)\n25 7.87(30)e-7\n35 2.94(10) × 10−6', 'brackets'],
+    ['T (°C)\tk\n25\t7.87(30) × 10−7 1/s\n35\t2.94(10) × 10−6 1/s', 'brackets'],
+  ])('%j is read, and said', (text, form) => {
+    // Concise notation after JCGM 100:2008, 7.2.2: 7.87(30) is 7.87 with a standard uncertainty of 0.30.
+    expect(uncertainties(text)).toEqual([
+      [7.87e-7, 3e-8],
+      [2.94e-6, 1e-7],
+    ])
+    expect(read(text).notes.filter(({ code }) => code === 'uncertainty-read-as')).toMatchObject([
+      { severity: form === 'brackets' ? 'note' : 'caution' },
+    ])
+  })
+
+  it('percent is of k, in the cell or in a column of its own', () => {
+    const wanted = [
+      [2e-6, 1e-7],
+      [4e-6, 1e-7],
+    ]
+    expect(uncertainties('T (K)\tk (1/s)\n300\t2e-6 ± 5 %\n310\t4e-6 ± 2.5%')).toEqual(wanted)
+    expect(uncertainties('T (K)\tk (1/s)\t±\n300\t2e-6\t5 %\n310\t4e-6\t2.5 %')).toEqual(wanted)
+    expect(uncertainties('T(K) k(1/s) ±\n300 2e-6 5 %\n310 4e-6 2.5 %')).toEqual(wanted)
+  })
+
+  it('of ln k it is relative', () => {
+    const [row] = read('T (K)\tln k\n300\t-10.00(5)\n310\t-9.00(5)').rows
+    expect((row?.standardUncertainty ?? 0) / (row?.rateConstant ?? 0)).toBeCloseTo(0.05, 12)
+  })
+
+  it('a power behind one of both is refused by its line, and so is an uncertainty of 0', () => {
+    const unclear = refusal('T (°C)\tk (1/s)\n25\t7.87e-7\n35\t2.94 ± 0.1 × 10−6\n45\t1.05e-5')
+    expect([unclear.line, unclear.reason]).toEqual([
+      3,
+      expect.stringMatching(/only one of the number and its uncertainty has a power of ten/),
+    ])
+    expect(refusal('T (K)\tk (1/s)\n300\t2e-6 ± 0e-6\n310\t4e-6 ± 0e-6').reason).toMatch(/is not above 0/)
+    expect(refusal('T (K)\tk (1/s)\n300\t2.94 ± 0.1 × 10−6\n310\t4.94 ± 0.1 × 10−6').reason).toMatch(/only one of the number/)
+  })
+
+  it('an uncertainty of temperature is set aside, and said', () => {
+    const table = read('T (°C)\tk (1/s)\n25.0 ± 0.1\t2e-6\n35.0 ± 0.1\t4e-6')
+    expect(pairs(table).map((row) => row.map(digits))).toEqual([
+      [298.15, 2e-6],
+      [308.15, 4e-6],
+    ])
+    expect(table.notes).toMatchObject([{ code: 'uncertainty-read-as', message: expect.stringMatching(/temperature/) as unknown }])
+  })
+
+  it('more cells than headings has the reason of the sign that parts them', () => {
+    expect(refusal('T (K) k (1/s)\n300 2e-6 7 9\n310 4e-6 7 9').remedy).toMatch(/Blanks were taken to part the cells/)
+    expect(refusal('T (K)\tk (1/s)\n300\t2e-6\t7\n310\t4e-6\t7').remedy).not.toMatch(/comma/)
   })
 })
 

@@ -5,11 +5,13 @@ import { hasPowerWithoutSign, powerWithoutSign } from '../../shared-kinetics/uni
 import { parseRateUnit } from '../../shared-kinetics/units/rate-unit.ts'
 import { decodeText } from './decode-text.ts'
 import { ImportRefusal, quoted, type Refuse } from './import-refusal.ts'
+import { refuseMixedSigns } from './mixed-decimal-signs.ts'
 import { refuseBinary } from './refuse-binary.ts'
 import { cellReadings, linesOf, type CellReading, type NumberedLine } from './rate-constant-cells.ts'
 import { planRateConstantColumns } from './rate-constant-columns.ts'
 import { RateConstantQuestion, unitRemedy, type Ask } from './rate-constant-question.ts'
 import { readRateConstantRows } from './rate-constant-rows.ts'
+import { isPowerUnclear, powerUnclear } from './value-with-uncertainty.ts'
 import { textOf } from './text-bytes.ts'
 
 export interface RateConstantText {
@@ -52,11 +54,13 @@ export function readRateConstantText(input: RateConstantText, options: RateConst
   try {
     return readLines(lines, input, options, refuse, ask)
   } catch (error) {
-    // What a power without its sign makes of the cells is no help to anybody.
-    const lost =
-      error instanceof ImportRefusal && !(error instanceof RateConstantQuestion)
-        ? lines.find(({ text }) => hasPowerWithoutSign(text))
-        : undefined
+    if (!(error instanceof ImportRefusal) || error instanceof RateConstantQuestion) throw error
+    // What a power without its sign, or one behind an uncertainty only, makes of the cells is no help to anybody.
+    for (const { number, text } of lines) {
+      const cell = text.split(/[\t;|]/).find(isPowerUnclear)
+      if (cell !== undefined) throw refuse(number, `In ${quoted(cell.trim())} ${powerUnclear.reason}`, powerUnclear.remedy)
+    }
+    const lost = lines.find(({ text }) => hasPowerWithoutSign(text))
     if (lost === undefined) throw error
     throw refuse(lost.number, `${quoted(lost.text)} ${powerWithoutSign.reason}`, powerWithoutSign.remedy)
   }
@@ -114,6 +118,7 @@ function tableFrom(
   ask: Ask,
 ): RateConstantTable {
   const notes: RateConstantNote[] = []
+  refuseMixedSigns(reading, refuse)
   const columns = planRateConstantColumns(reading, options, refuse, notes)
   const read = readRateConstantRows(reading, columns, options, { refuse, ask, notes })
   return {

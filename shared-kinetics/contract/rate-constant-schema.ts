@@ -15,6 +15,7 @@ const noteCodeSchema = z.enum(
     'columns-set-aside': true,
     'heading-missing': true,
     'heading-read-as': true,
+    'uncertainty-read-as': true,
     'model-assumed': true,
   }),
 )

@@ -12,7 +12,7 @@ export interface RateConstantRow {
 
 /** Something that a person should know about how a table was read. */
 export interface RateConstantNote {
-  readonly code: 'rows-set-aside' | 'columns-set-aside' | 'heading-missing' | 'heading-read-as' | 'model-assumed'
+  readonly code: 'rows-set-aside' | 'columns-set-aside' | 'heading-missing' | 'heading-read-as' | 'uncertainty-read-as' | 'model-assumed'
   readonly severity: 'caution' | 'note'
   readonly message: string
   readonly evidence: Readonly<Record<string, string | number | null>>

@@ -48,6 +48,7 @@ export const findingCodes = [
   'energy-implausible',
   'rate-unit-missing',
   'heading-read-as',
+  'uncertainty-read-as',
   'model-assumed',
   'model-fits-badly',
   'other-models-fit-better',

@@ -93,9 +93,10 @@ function intervalStatusOf(status: ArrheniusLine['status'], isWithheld = false): 
   return isWithheld ? 'model-does-not-follow-holds' : 'ok'
 }
 
+const kilojoules = (value: number): number | null => maybe(joulesToKilojoules(quantity(value, 'J/mol')))
+
 function betweenResult(pair: BetweenTemperatures, isWithheld: boolean): BetweenTemperaturesResult {
   const z = normalQuantile(0.975)
-  const kilojoules = (value: number): number | null => maybe(joulesToKilojoules(quantity(value, 'J/mol')))
   const lnAError = isWithheld ? Number.NaN : pair.lnAStandardUncertainty
   return {
     from_K: pair.from,

@@ -7,6 +7,7 @@ const titles: Readonly<Record<RateConstantNote['code'], string>> = {
   'columns-set-aside': 'Columns set aside while reading',
   'heading-missing': 'No row of headings',
   'heading-read-as': 'How a heading was read',
+  'uncertainty-read-as': 'How an uncertainty was read',
   'model-assumed': 'Rate constants rest on a chosen model',
 }
 
@@ -20,7 +21,7 @@ export function tableNotes({ table, result }: RateConstantReview): Finding[] {
         note.code === 'model-assumed'
           ? 'A model is assumed where k is read from a run'
           : 'Nothing is guessed silently while a table is read',
-      sources: note.code === 'model-assumed' ? ['ictac-2011'] : [],
+      sources: note.code === 'model-assumed' ? ['ictac-2011'] : note.code === 'uncertainty-read-as' ? ['jcgm-100-2008'] : [],
     }),
   )
   if (result.rateUnit !== '') return notes
