@@ -1,6 +1,6 @@
 import { useMemo, type ReactNode } from 'react'
 import { methodsOnRequest } from '../../../shared-kinetics/contract/methods-on-request.ts'
-import type { PeakMethodResult, RunResult } from '../../../shared-kinetics/contract/study-result.ts'
+import type { MethodId, PeakMethodResult, RunResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { phiFigure } from '../../../shared-kinetics/figure/phi-figure.ts'
 import { straightLinesAtLevel, straightLinesFigure } from '../../../shared-kinetics/figure/straight-lines-figure.ts'
 import { FigureChart } from '../../charts/FigureChart.tsx'
@@ -84,8 +84,10 @@ function MethodChoice(props: ActivationProps) {
     <>
       <Choice
         label="Method"
-        options={props.result.profiles.map((one) => ({ id: one.method, text: shortMethodNames[one.method], name: wholeMethodName(one) }))}
-        value={props.chosen}
+        options={props.result.profiles
+          .filter((one) => !isOnRequest(one.method))
+          .map((one) => ({ id: one.method, text: shortMethodNames[one.method], name: wholeMethodName(one) }))}
+        value={isOnRequest(props.chosen) ? null : props.chosen}
         onChange={(chosenMethod) => view.setState({ chosenMethod })}
       />
       <MethodsOnRequest {...props} />
@@ -144,8 +146,13 @@ function Fit(props: ActivationProps) {
   )
 }
 
-/** Other forms of a method, and the standards that a report may have to follow: worked out, and shown, once they are asked for. */
-function MethodsOnRequest({ result, actions }: ActivationProps) {
+const isOnRequest = (method: MethodId): boolean => methodsOnRequest.some((id) => id === method)
+
+/**
+ * Other forms of a method, and the standards that a report may have to follow. They have rows of their own, and stand in no other: the first press works one out and shows
+ * it, one on what was worked out shows it again, one on what is shown leaves it.
+ */
+function MethodsOnRequest({ result, chosen, actions }: ActivationProps) {
   const { view } = useServices()
   if (result.runs.some((run) => run.programme !== 'constant-heating-rate')) return null
   const worked = result.profiles.map((one) => one.method)
@@ -154,14 +161,13 @@ function MethodsOnRequest({ result, actions }: ActivationProps) {
     <Choices
       label={label}
       options={offered.map((id) => ({ id, text: shortMethodNames[id] }))}
-      values={offered.filter((id) => wanted.includes(id))}
+      values={offered.filter((id) => id === chosen)}
       onChange={(ids) => {
-        const added = ids.find((id) => !wanted.includes(id))
-        if (added !== undefined) view.setState({ chosenMethod: added })
-        actions.change({
-          kind: 'set-methods',
-          methods: methodsWith(worked, [...wanted.filter((id) => !offered.includes(id)), ...ids]),
-        })
+        const shown = ids.find((id) => id !== chosen)
+        if (shown !== undefined) view.setState({ chosenMethod: shown })
+        if (shown !== undefined && wanted.includes(shown)) return
+        const kept = shown === undefined ? wanted.filter((id) => id !== chosen) : [...wanted, shown]
+        actions.change({ kind: 'set-methods', methods: methodsWith(worked, kept) })
       }}
     />
   )
@@ -184,7 +190,7 @@ function Scope({ result, chosen }: ActivationProps) {
     <p className={outside === undefined ? 'scope' : 'scope is-outside'}>
       {outside === undefined
         ? `${shortMethodNames[chosen]} is made for ${scopeWords[chosen]}. The runs are of that kind as far as signal, temperatures, heating rates and the maxima of the rate tell.`
-        : outside.message}
+        : `The runs are not all that ${shortMethodNames[chosen]} is made for; what lies outside stands among the findings.`}
     </p>
   )
 }

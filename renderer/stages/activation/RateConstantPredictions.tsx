@@ -122,7 +122,7 @@ function Ends({ of, lower, upper }: { readonly of: RateConstantPrediction; reado
         <>
           {' '}
           <span className="prediction-range">
-            × 10<sup>{power}</sup>
+            ×{'\u00a0'}10<sup>{power}</sup>
           </span>
         </>
       )}
