@@ -55,11 +55,22 @@ export function cellReadings(
     .flatMap((delimiter) => signs.map((decimal) => readingOf(lines, delimiter, decimal)))
     .filter((reading) => reading.score > 0)
     .toSorted((a, b) => b.score - a.score)
-  const rowsParted = readings.reduce((most, reading) => (reading.delimiter === 'blanks' ? most : Math.max(most, dataRows(reading))), 0)
-  return readings.filter((reading) => reading.delimiter !== 'blanks' || dataRows(reading) > rowsParted)
+  const rowsParted = (besides: DelimiterWord | null): number =>
+    readings.reduce(
+      (most, { delimiter, rows }) => (delimiter === 'blanks' || delimiter === besides ? most : Math.max(most, dataRows({ rows }))),
+      0,
+    )
+  // The commas of “298,0 3,46e-5” part it as well, though into what is no number.
+  return readings.filter(
+    (reading) => reading.delimiter !== 'blanks' || dataRows(reading) > rowsParted(isAllDecimalCommas(reading) ? 'comma' : null),
+  )
 }
 
-const dataRows = ({ rows }: CellReading): number => rows.filter((row) => row.isData).length
+const isAllDecimalCommas = ({ decimal, rows }: CellReading): boolean =>
+  decimal === 'comma' &&
+  rows.every(({ cells, isData }) => !isData || cells.every((cell) => numberCell(cell, decimal) !== null && cell.includes(',')))
+
+const dataRows = ({ rows }: Pick<CellReading, 'rows'>): number => rows.filter((row) => row.isData).length
 
 function readingOf(lines: readonly NumberedLine[], delimiter: DelimiterWord, decimal: DecimalSignWord): CellReading {
   let score = 0

@@ -49,6 +49,7 @@ describe('the same rate constants in many spellings', () => {
     ['semicolon and decimal comma', 'T [K];k [s^-1]\r\n298;3,46e-5\r\n308;1,35E-4\r\n318;0,000498\r\n'],
     ['blanks', 'T(K)  k(1/s)\n298 3.46e-5\n308 1.35e-4\n318 4.98e-4'],
     ['tabs, and labels with blanks', 'T (K)\tk (1/s)\tsample\n298\t3.46e-5\tbatch 1\n308\t1.35e-4\tbatch 2\n318\t4.98e-4\tbatch 3'],
+    ['blanks and decimal comma', 'T(K) k(1/s)\n298,0 3,46e-5\n308,0 1,35e-4\n318,0 4,98e-4'],
     ['pipe', 'temperature_K|k_per_s\n298|3.46e-5\n308|1.35e-4\n318|4.98e-4'],
     ['°C', 'T (°C),k (s⁻¹)\n24.85,3.46e-5\n34.85,1.35e-4\n44.85,4.98e-4'],
     ['°F', 'Temperature (degF),rate constant (1/s)\n76.73,3.46e-5\n94.73,1.35e-4\n112.73,4.98e-4'],

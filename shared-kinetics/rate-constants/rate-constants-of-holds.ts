@@ -17,7 +17,7 @@ const whyNot: Readonly<Record<Exclude<RateConstantFromHold['status'], 'ok'>, str
 /**
  * The rate constants of isothermal runs under one chosen model, as a table of k in 1/s: `rateConstantFromHold` of each, at its levels, by nonlinear least squares of
  * conversion. The model, the range and how the fits came out are said in a note, and so are runs that gave no k; `holdFits` holds the fits and the ranking of models.
- * No uncertainty of k is entered: neighbouring levels of one run are not independent, and the standard error of their fit would pretend to be one.
+ * No uncertainty of k is entered: neighbouring levels of one run are not independent, and the standard error of their fit, which stands in `holdFits` and is shown beside k, would pretend to be one.
  *
  * @throws KineticsError `bad-option` where the range is not inside [0, 1] or empty; Cancelled, by `checkCancelled`
  * @source ictac-2011
