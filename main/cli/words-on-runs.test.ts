@@ -59,6 +59,9 @@ describe('runs of different kinds in one call', () => {
       /2 of 5 runs have no mass column but heat flow: .+, .+\. No signal is in all runs: .* Name only the files of one kind\./,
     )
     expect(err).toContain('--skip-unusable')
+    const skipping = await call('activation', join(place, 'mixed'), '--skip-unusable', '--out', join(place, 'out'))
+    expect(skipping.code).toBe(0)
+    expect(skipping.out.match(/^stop: .*$/gm)).toEqual([expect.stringMatching(/^stop: 2 runs cannot be used: .+, .+$/)])
   })
 
   it('are told which signal they share', async () => {

@@ -106,10 +106,19 @@ function findingLines(result: StudyResult): string {
     const found = result.findings.filter((finding) => finding.severity === severity)
     if (found.length === 0) return []
     if (severity === 'note') return [`${found.length} ${found.length === 1 ? 'note' : 'notes'}, see activation.csv.txt`]
-    return found.map((finding) => {
+    const leftOut = found.filter(({ code }) => code === 'run-unusable')
+    const together =
+      leftOut.length < 2
+        ? []
+        : [
+            `${severity}: ${leftOut.length} runs cannot be used: ${leftOut.map(({ title }) => title.replace(/ cannot be used$/, '')).join(', ')}`,
+          ]
+    const apart = found.filter((finding) => together.length === 0 || !leftOut.includes(finding))
+    const lines = apart.map((finding) => {
       const label = result.runs.find((run) => run.runId === finding.run)?.label
       return `${severity}: ${finding.title}${label === undefined || finding.title.includes(label) ? '' : ` (${label})`}`
     })
+    return [...together, ...lines]
   })
   return lines.length === 0 ? '' : `${lines.join('\n')}\n\n`
 }
