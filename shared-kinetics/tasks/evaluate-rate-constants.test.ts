@@ -227,7 +227,7 @@ describe('what is noticed about a table', () => {
 
 describe('the Arrhenius figure', () => {
   it('holds points, line, bands and predictions within its axes', () => {
-    const W8 = tableOf('W8', { predictAt_K: [400] })
+    const W8 = tableOf('W8', { predictAt_K: [400], temperatureUnitShown: 'C' })
     const figure = arrheniusFigure(evaluateRateConstants({ ...W8, rows: W8.rows.map((row, i) => ({ ...row, use: i !== 1 })) }))
     expect(figure.marks.map((mark) => mark.name)).toEqual([
       '95 % band, new measurement',
