@@ -21,6 +21,11 @@ export interface RateConstantPlace {
   readonly index: number
 }
 
+export interface TypedPredictions {
+  readonly text: string
+  readonly temperatures_K: readonly number[]
+}
+
 /** What is looked at and how. Never part of the study, never undone. */
 export interface ViewState {
   readonly stage: Stage
@@ -41,6 +46,8 @@ export interface ViewState {
   /** What the Activation energy stage shows of a study that holds rate constants made from its runs. */
   readonly basis: 'runs' | 'rate-constants'
   readonly rateConstant: RateConstantPlace
+  /** Temperatures as somebody typed them, whatever their units, and what they were read as; they stand in the field while the study asks for just these. */
+  readonly typedPredictions: TypedPredictions | null
   readonly beneathLine: BeneathLine
   readonly beneathNumbers: BeneathNumbers
   /** The run that a finding or a row points at. */
@@ -60,6 +67,7 @@ const initialViewState: ViewState = {
   against: null,
   basis: 'runs',
   rateConstant: { kind: 'row', index: 0 },
+  typedPredictions: null,
   beneathLine: 'rows',
   beneathNumbers: 'models',
   pointedRun: null,

@@ -13,37 +13,36 @@ export interface DrawnInterval {
 
 /**
  * Ea against conversion: the chosen method first, with the band of its interval, the other methods of `methodIds` behind it by line style and
- * marker. A level without a number breaks the line. Methods that gave no profile are passed over.
+ * marker, with theirs where it is given. A level without a number breaks the line. Methods that gave no profile are passed over.
  *
  * @param drawn - the interval of the chosen method; its regression's own where left out, none where null
+ * @param besideOf - the interval of another method; none where left out
  */
 export function activationFigure(
   result: StudyResult,
   methodIds: readonly MethodId[],
   chosen: MethodId,
   drawn?: DrawnInterval | null,
+  besideOf: (profile: ProfileResult) => DrawnInterval | null = () => null,
 ): Figure {
   const profiles = profilesInOrder(result, methodIds, chosen)
   const [first] = profiles
-  const interval = drawnOf(first, drawn)
+  const intervals = profiles.map((profile, index) => (index === 0 ? drawnOf(profile, drawn) : besideOf(profile)))
   const marks: Mark[] = []
-  if (first !== undefined && interval !== null && interval.lower95_kJ_per_mol.some((end) => end !== null)) {
+  // The chosen method's band is drawn over the others'.
+  for (const [index, profile] of [...profiles.entries()].toReversed()) {
+    const interval = intervals[index] ?? null
+    if (interval === null || interval.lower95_kJ_per_mol.every((end) => end === null)) continue
     const [lower, upper] = [numbers(interval.lower95_kJ_per_mol), numbers(interval.upper95_kJ_per_mol)]
-    marks.push({
-      kind: 'band',
-      name: `95 % interval (${interval.name}), ${first.label}`,
-      tone: { kind: 'method', index: 0 },
-      x: result.levels,
-      lower,
-      upper,
-    })
+    const name = `95 % interval (${interval.name}), ${profile.label}`
+    marks.push({ kind: 'band', name, tone: { kind: 'method', index }, x: result.levels, lower, upper })
   }
   for (const [index, profile] of profiles.entries()) {
     const y = numbers(profile.Ea_kJ_per_mol)
     marks.push({ kind: 'points', name: profile.label, tone: { kind: 'method', index }, x: result.levels, y, joined: true })
   }
   const fences = outerFences(profiles)
-  const { min, max } = energyAxis(profiles, interval, fences)
+  const { min, max } = energyAxis(profiles, intervals, fences)
   const note = beyondText(result, first, min, max)
   return {
     id: 'activation-energy',
@@ -102,17 +101,17 @@ function outerFences(profiles: readonly ProfileResult[]): readonly [number, numb
   return [quantile(0.25) - reach, quantile(0.75) + reach]
 }
 
-/** Every Ea that is not far out is on the axis; its chosen interval too, unless it is so wide that the curve in it could no longer be read. */
+/** Every Ea that is not far out is on the axis; its interval that is drawn too, unless it is so wide that the curve in it could no longer be read. */
 function energyAxis(
   profiles: readonly ProfileResult[],
-  interval: DrawnInterval | null,
+  intervals: readonly (DrawnInterval | null)[],
   [below, above]: readonly [number, number],
 ): { readonly min: number; readonly max: number } {
   const isNear = (Ea: Maybe | undefined): boolean => Ea !== null && Ea !== undefined && Ea >= below && Ea <= above
   const [low, high] = extentOf(profiles.flatMap((profile) => profile.Ea_kJ_per_mol.filter(isNear)))
-  const [first] = profiles
-  const near = (ends: readonly Maybe[] | undefined): readonly Maybe[] => (ends ?? []).filter((_, i) => isNear(first?.Ea_kJ_per_mol[i]))
-  const [lower, upper] = extentOf(near(interval?.lower95_kJ_per_mol), near(interval?.upper95_kJ_per_mol))
+  const near = (ends: 'lower95_kJ_per_mol' | 'upper95_kJ_per_mol'): readonly Maybe[] =>
+    profiles.flatMap(({ Ea_kJ_per_mol: Ea }, at) => (intervals[at]?.[ends] ?? []).filter((_, i) => isNear(Ea[i])))
+  const [lower, upper] = extentOf(near('lower95_kJ_per_mol'), near('upper95_kJ_per_mol'))
   const room = Math.max(high - low, 0.15 * Math.abs(high))
   return niceAxis(
     Number.isFinite(lower) ? Math.max(Math.min(low, lower), low - room) : low,

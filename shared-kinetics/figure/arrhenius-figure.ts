@@ -5,7 +5,7 @@ import { extentOf, niceAxis } from './nice-axis.ts'
 import { inverseTemperatureAxis } from './straight-lines-figure.ts'
 
 /**
- * ln k against 1000/T with °C along the opposite edge: the points, their line, its 95 % band and that of a new measurement, and the predictions asked for
+ * ln k against 1000/T with temperature, in the table's unit, along the opposite edge: the points, their line, its 95 % band and that of a new measurement, and the predictions asked for
  * with the band of a new measurement as bars. Rows not used are faint.
  */
 export function arrheniusFigure(result: RateConstantsResult): Figure {
@@ -54,7 +54,7 @@ export function arrheniusFigure(result: RateConstantsResult): Figure {
     id: 'arrhenius',
     title: 'Arrhenius line',
     description: describe(result),
-    x: inverseTemperatureAxis(allX),
+    x: inverseTemperatureAxis(allX, result.temperatureUnitShown),
     y: {
       label: 'ln k',
       unit: result.rateUnit === '' ? 'unit of k not stated' : `k in ${result.rateUnit}`,

@@ -8,7 +8,7 @@ import { niceAxis, niceTicks, tickText } from './nice-axis.ts'
 import { phiFigure } from './phi-figure.ts'
 import { runNames, runPlaces } from './run-place.ts'
 import { signalsAtLevel, signalsFigure } from './signals-figure.ts'
-import { straightLinesAtLevel, straightLinesFigure } from './straight-lines-figure.ts'
+import { inverseTemperatureAxis, straightLinesAtLevel, straightLinesFigure } from './straight-lines-figure.ts'
 
 const levels = [0.25, 0.5, 0.75]
 const rates_K_per_min = [2, 5, 10, 10, 20]
@@ -272,6 +272,17 @@ describe('straight lines figure', () => {
     }
   })
 
+  it('reads it in K or °F where a table is in these', () => {
+    // 0 °F is 459.67 °R.
+    const toKelvin = { K: (T: number) => T, F: (T: number) => (T + 459.67) / 1.8 }
+    for (const unit of ['K', 'F'] as const) {
+      const { second } = inverseTemperatureAxis([1.8, 2], unit)
+      expect(second?.unit).toBe(unit === 'K' ? 'K' : '°F')
+      expect(second?.ticks.length).toBeGreaterThanOrEqual(3)
+      for (const { at, text } of second?.ticks ?? []) expect(1000 / at).toBeCloseTo(toKelvin[unit](Number(text)), 6)
+    }
+  })
+
   it('gives the current level in ink with a point a run in its own tone, and nothing where there is no line', () => {
     const marks = straightLinesAtLevel(result, 'starink', 1)
     expect(marksOf(marks, 'line').map((line) => line.tone.kind)).toEqual(['ink'])
@@ -352,6 +363,17 @@ describe('activation figure', () => {
     expect(Array.from(marksOf(figure.marks, 'points')[0]?.y ?? [])).toEqual([120, 140, Number.NaN])
     expect(figure.x).toMatchObject({ min: 0, max: 1 })
     expect(isOnAxes(figure)(0.5, 120 - 3.18) && isOnAxes(figure)(0.5, 141)).toBe(true)
+  })
+
+  it('draws the interval of a method beside it in its own tone, where it is given, and on the axis', () => {
+    const beside = { name: 'Student-t', lower95_kJ_per_mol: [110, 111, 112], upper95_kJ_per_mol: [130, 131, 132] }
+    const figure = activationFigure(result, ['starink', 'friedman'], 'starink', null, ({ method }) =>
+      method === 'friedman' ? beside : null,
+    )
+    const bands = marksOf(figure.marks, 'band')
+    expect(bands.map((band) => [band.tone, Array.from(band.upper)])).toEqual([[{ kind: 'method', index: 1 }, [130, 131, 132]]])
+    expect(isOnAxes(figure)(0.5, 111)).toBe(true)
+    expect(marksOf(activationFigure(result, ['starink', 'friedman'], 'starink', null).marks, 'band')).toEqual([])
   })
 
   it('draws another interval of the chosen method in place of its own, and none where there is none', () => {

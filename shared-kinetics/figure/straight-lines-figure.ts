@@ -1,6 +1,7 @@
 import type { MethodId } from '../isoconversional/result.ts'
+import type { TemperatureUnit } from '../rate-constants/rate-constant-table.ts'
 import type { LineResult, ProfileResult, StudyResult } from '../tasks/study-result.ts'
-import { celsiusToKelvin, kelvinToCelsius } from '../units/convert.ts'
+import { celsiusToKelvin, fahrenheitToKelvin, kelvinToCelsius } from '../units/convert.ts'
 import type { Axis, Figure, Mark } from './figure.ts'
 import { extentOf, levelText, niceAxis, niceStep, tickText } from './nice-axis.ts'
 import { runNames, runTones } from './run-place.ts'
@@ -104,20 +105,42 @@ export function drawnLine(line: LineResult, shift: number): { readonly x: readon
   return { x: ends.map((x) => x * 1000), y: ends.map((x) => intercept + slope_K * x + shift) }
 }
 
-/** The axis of 1000/T around values of it, with round °C along the opposite edge. */
-export function inverseTemperatureAxis(x: readonly number[]): Axis {
+/** The axis of 1000/T around values of it, with round temperatures along the opposite edge, in °C where nothing else is asked for. */
+export function inverseTemperatureAxis(x: readonly number[], unit: TemperatureUnit = 'C'): Axis {
   const [low, high] = extentOf(x)
   const { min, max } = niceAxis(low, high)
-  return { label: '1000/T', unit: '1/K', min, max, second: { label: 'Temperature', unit: '°C', ticks: celsiusTicks(min, max) } }
+  return {
+    label: '1000/T',
+    unit: '1/K',
+    min,
+    max,
+    second: { label: 'Temperature', unit: scales[unit].unit, ticks: temperatureTicks(min, max, scales[unit]) },
+  }
 }
 
-function celsiusTicks(min: number, max: number): readonly { readonly at: number; readonly text: string }[] {
+interface TemperatureScale {
+  readonly unit: string
+  readonly fromKelvin: (temperature_K: number) => number
+  readonly toKelvin: (temperature: number) => number
+}
+
+const scales: Readonly<Record<TemperatureUnit, TemperatureScale>> = {
+  K: { unit: 'K', fromKelvin: (T) => T, toKelvin: (T) => T },
+  C: { unit: '°C', fromKelvin: kelvinToCelsius, toKelvin: celsiusToKelvin },
+  F: { unit: '°F', fromKelvin: (T) => kelvinToCelsius(T) * 1.8 + 32, toKelvin: fahrenheitToKelvin },
+}
+
+function temperatureTicks(
+  min: number,
+  max: number,
+  { fromKelvin, toKelvin }: TemperatureScale,
+): readonly { readonly at: number; readonly text: string }[] {
   if (!(min > 0)) return []
-  const [coldest, hottest] = [kelvinToCelsius(1000 / max), kelvinToCelsius(1000 / min)]
+  const [coldest, hottest] = [fromKelvin(1000 / max), fromKelvin(1000 / min)]
   const step = niceStep((hottest - coldest) / 6)
   const ticks: { at: number; text: string }[] = []
   for (let i = Math.ceil(coldest / step - 1e-9); i * step <= hottest + step * 1e-9; i += 1) {
-    ticks.push({ at: 1000 / celsiusToKelvin(i * step), text: tickText(i * step, step) })
+    ticks.push({ at: 1000 / toKelvin(i * step), text: tickText(i * step, step) })
   }
   return ticks.toReversed()
 }

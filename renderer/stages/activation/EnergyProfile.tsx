@@ -30,9 +30,13 @@ export function EnergyProfile(props: ActivationProps) {
   const evidence = useView((state) => state.evidence)
   const colours = useColours()
   const { profile, interval } = shown
+  const intervalOf = useIntervalOf(result)
   const methods = useMemo(() => [chosen, ...compared], [chosen, compared])
   const drawn = useMemo(() => drawnInterval(interval), [interval])
-  const figure = useMemo(() => activationFigure(result, methods, chosen, drawn), [result, methods, chosen, drawn])
+  const figure = useMemo(
+    () => activationFigure(result, methods, chosen, drawn, (profile) => drawnInterval(intervalOf(profile))),
+    [result, methods, chosen, drawn, intervalOf],
+  )
   const overlay = useMemo(() => activationAtLevel(result, methods, chosen, levelIndex, drawn), [result, methods, chosen, levelIndex, drawn])
   const others = result.profiles.filter((one) => one.method !== chosen)
   return (

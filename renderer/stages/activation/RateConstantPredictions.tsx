@@ -8,8 +8,9 @@ import { Remarked } from '../../sheet/Remarked.tsx'
 import { mantissaAndPower, scientific } from '../../sheet/scientific.ts'
 import { TableView } from '../../sheet/TableView.tsx'
 import { TypedField } from '../../sheet/TypedField.tsx'
-import { useServices } from '../../state/services.ts'
-import { parseTemperatures, temperaturesText } from '../runs/rate-constant-cells.ts'
+import { useServices, useView } from '../../state/services.ts'
+import type { TypedPredictions } from '../../state/view-store.ts'
+import { parseTemperatures, predictionsText } from '../runs/rate-constant-cells.ts'
 import type { RatedProps } from './RateConstantsActivation.tsx'
 import { copiedPredictions, modelNotFollowed, notWithinData, placeWords, reasonWords, temperatureIn } from './rate-constant-rows.ts'
 
@@ -17,6 +18,7 @@ import { copiedPredictions, modelNotFollowed, notWithinData, placeWords, reasonW
 export function RateConstantPredictions({ table, rated, place, actions }: RatedProps) {
   const { view } = useServices()
   const { temperatureUnitShown: shown, rateUnit } = table
+  const typed = useView((state) => state.typedPredictions)
   const { predictions } = rated
   const hasBands = predictions.some((row) => row.lineLower95 !== null)
   const model = modelNotFollowed(rated)
@@ -26,10 +28,13 @@ export function RateConstantPredictions({ table, rated, place, actions }: RatedP
       <div className="predict-at">
         <TypedField
           label="Predict k at"
-          text={temperaturesText(table.predictAt_K, shown)}
+          text={predictionsText(table.predictAt_K, shown, typed)}
           placeholder="e.g. 25 C, 310 K"
-          parse={(text) => atMost(parseTemperatures(text, shown))}
-          onCommit={(predictAt_K) => actions.change({ kind: 'set-rate-constants', table: { ...table, predictAt_K: [...predictAt_K] } })}
+          parse={(text) => typedAs(text, atMost(parseTemperatures(text, shown)))}
+          onCommit={(typedPredictions) => {
+            view.setState({ typedPredictions })
+            actions.change({ kind: 'set-rate-constants', table: { ...table, predictAt_K: [...typedPredictions.temperatures_K] } })
+          }}
         />
       </div>
       {predictions.length > 0 && (
@@ -132,6 +137,9 @@ function Ends({ of, lower, upper }: { readonly of: RateConstantPrediction; reado
 
 /** Three digits. */
 const placesAt = (value: number): number => Math.max(0, 2 - Math.floor(Math.log10(Math.abs(value) || 1)))
+
+const typedAs = (text: string, parsed: Parsed<readonly number[]>): Parsed<TypedPredictions> =>
+  parsed.ok ? { ok: true, value: { text: text.trim(), temperatures_K: parsed.value } } : parsed
 
 const atMost = (parsed: Parsed<readonly number[]>): Parsed<readonly number[]> =>
   parsed.ok && parsed.value.length > rateConstantLimits.predictions

@@ -6,6 +6,7 @@ import {
   parseCellTemperature,
   parseCellUncertainty,
   parseTemperatures,
+  predictionsText,
   rateConstantText,
   temperaturesText,
   temperatureText,
@@ -140,5 +141,21 @@ describe('changes to a table of rate constants', () => {
   it('say of a file’s table that its numbers are no longer the file’s', () => {
     const file: RateConstantTable = { ...table, source: { kind: 'file', name: 'k.csv', sha256: 'a'.repeat(64) } }
     expect(withNumbers(file, 0, { rateConstant: 1 }).source).toEqual({ kind: 'typed', name: 'k.csv, then changed by hand', sha256: null })
+  })
+})
+
+describe('the field of predictions', () => {
+  const asked = parseTemperatures('5 C, 60 C', 'F')
+  const temperatures_K = asked.ok ? asked.value : []
+
+  it('keeps what was typed in another unit than the table’s', () => {
+    expect(temperatures_K).toEqual([278.15, 333.15])
+    expect(predictionsText(temperatures_K, 'F', { text: '5 C, 60 C', temperatures_K })).toBe('5 C, 60 C')
+  })
+
+  it('shows the temperatures in the table’s unit where nobody typed them here, or the study asks for others by now', () => {
+    expect(predictionsText(temperatures_K, 'F', null)).toBe('41 °F; 140 °F')
+    expect(predictionsText([278.15], 'F', { text: '5 C, 60 C', temperatures_K })).toBe('41 °F')
+    expect(predictionsText([278.15, 300], 'K', { text: '5 C, 60 C', temperatures_K })).toBe('278.15 K; 300 K')
   })
 })

@@ -72,6 +72,16 @@ export function parseTemperatures(text: string, unit: TemperatureUnit): Parsed<r
 export const temperaturesText = (temperatures_K: readonly number[], unit: TemperatureUnit): string =>
   temperatures_K.map((T) => `${temperatureText(T, unit)} ${temperatureUnitWords[unit]}`).join('; ')
 
+/** What stands in the field of predictions: what was typed, as long as the study asks for just that; else the temperatures in the table's unit. */
+export function predictionsText(
+  temperatures_K: readonly number[],
+  unit: TemperatureUnit,
+  typed: { readonly text: string; readonly temperatures_K: readonly number[] } | null,
+): string {
+  const isAsTyped = typed?.temperatures_K.length === temperatures_K.length && typed.temperatures_K.every((T, i) => T === temperatures_K[i])
+  return isAsTyped ? typed.text : temperaturesText(temperatures_K, unit)
+}
+
 /** The number as it stands in a cell: nothing of a conversion's rounding, nothing lost of what was typed. */
 export const temperatureText = (temperature_K: number, unit: TemperatureUnit): string =>
   String(Number(inUnit(temperature_K, unit).toFixed(6))).replace('-', '−')
