@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { firstOrderPeakConversion } from '../peak-methods/first-order-peak.ts'
-import { quantity } from '../units/quantity.ts'
+import { gasConstant_J_per_mol_K } from '../units/constants.ts'
 import type { PeakMethodNumber } from '../tasks/study-result.ts'
 import { peakConversionWords } from './peak-conversion-words.ts'
 
@@ -12,7 +12,7 @@ const number = (key: PeakMethodNumber['key'], value: number | null): PeakMethodN
   unit: '1',
 })
 // 150 kJ/mol at 600 K, exact for first order: about 0.62.
-const first = firstOrderPeakConversion(quantity(150_000, 'J/mol'), quantity(600, 'K'))
+const first = firstOrderPeakConversion(150_000 / (gasConstant_J_per_mol_K * 600))
 const wordsOf = (lowest: number | null, highest: number): string | null =>
   peakConversionWords([
     number('conversion-at-peak-lowest', lowest),
