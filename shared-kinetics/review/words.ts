@@ -1,8 +1,16 @@
 import { kelvinToCelsius } from '../units/convert.ts'
 import type { ReviewedRun } from './review-input.ts'
 
-/** Numbers as sentences give them: so many significant digits, no padding. */
-export const digits = (value: number, significant = 3): string => String(Number(value.toPrecision(significant)))
+/** Numbers as sentences give them: so many significant digits, no padding; very large and very small ones with a raised power of ten. */
+export function digits(value: number, significant = 3): string {
+  const rounded = Number(value.toPrecision(significant))
+  const size = Math.abs(rounded)
+  if (!Number.isFinite(size) || size === 0 || (size >= 1e-6 && size < 1e7)) return String(rounded)
+  const [mantissa = '', power = ''] = rounded.toExponential().split('e')
+  return `${mantissa} × 10${raised(String(Number(power)))}`
+}
+
+const raised = (power: string): string => power.replace(/[-\d]/g, (sign) => (sign === '-' ? '⁻' : ('⁰¹²³⁴⁵⁶⁷⁸⁹'[Number(sign)] ?? sign)))
 
 export const percent = (share: number): string => `${digits(100 * share, 2)} %`
 

@@ -4,6 +4,9 @@ import type { Finding } from '../finding.ts'
 import { digits } from '../words.ts'
 import { aboutTable, type RateConstantReview } from './rate-constant-review.ts'
 
+/** Of the holds that a sentence speaks of, worst first; the table has them all. */
+const mostNamed = 2
+
 /**
  * Fires where the chosen model does not follow the holds that rate constants were made from: residuals of conversion that keep one sign in stretches (runs test), and a
  * residual variance above that of the closest model by more than F allows. Where k is to be predicted with such a model, it is a stop: the prediction carries the error of the model whole.
@@ -16,10 +19,10 @@ export function holdModelFit({ table, result: { holdFits, predictions } }: RateC
 }
 
 function systematicResiduals(used: readonly FitOfHold[], { model }: FitsOfHolds, severe: 'stop' | 'caution'): Finding[] {
-  const worst = holdsNotFollowed(used)[0]
-  const off = used.filter((hold) => holdsNotFollowed(used).includes(hold))
+  const off = holdsNotFollowed(used)
+  const [worst] = off
   if (worst === undefined) return []
-  const named = off.slice(0, 10).map(({ label, signRuns, rows, signRunsProbability, greatestResidual }) => {
+  const named = off.slice(0, mostNamed).map(({ label, signRuns, rows, signRunsProbability, greatestResidual }) => {
     const chance = signRunsProbability === null ? '' : `, chance ${digits(signRunsProbability)}`
     return `${label} (${signRuns} stretches of one sign in ${rows} rows${chance}; up to ${digits(greatestResidual)} of conversion off)`
   })
@@ -29,7 +32,7 @@ function systematicResiduals(used: readonly FitOfHold[], { model }: FitsOfHolds,
       severity: worst.greatestResidual >= misfitOfCaution ? severe : 'note',
       title: `${model} does not follow ${off.length === 1 ? 'a hold' : `${off.length} of ${used.length} holds`}`,
       message:
-        `The conversion differs from the model ${model} systematically: ${named.join('; ')}${off.length > 10 ? '; …' : ''}. k then means little beyond a time scale, and A and conversions predicted with the model are wrong. ` +
+        `The conversion differs from the model ${model} systematically: ${named.join('; ')}${off.length > mostNamed ? `; and ${off.length - mostNamed} more` : ''}. k then means little beyond a time scale, and A and conversions predicted with the model are wrong. ` +
         'Choose a model that fits (see the ranking), narrow the range of conversion, let the zero in time be fitted, or look for more than one reaction.',
       evidence: {
         model,
@@ -82,4 +85,4 @@ function closerModels(used: readonly FitOfHold[], fits: FitsOfHolds, severity: '
 }
 
 /** Where the closest model leaves next to nothing, the ratio has no end. */
-const ratio = (value: number): string => (value < 1e6 ? digits(value) : value.toExponential(0).replace('e+', 'e'))
+const ratio = (value: number): string => digits(value, value < 1e6 ? 3 : 1)
