@@ -185,7 +185,7 @@ describe('rampfold rate-constants', () => {
     expect(wrong.stdout).toMatch(/caution: R2 does not follow 4 of 4 holds/)
     expect(wrong.stdout).toMatch(/caution: F1 fits the holds better than R2/)
     expect(wrong.stdout).toMatch(/systematic residuals: hold 370 K, hold 380 K, hold 390 K, hold 400 K/)
-    expect(wrong.stdout).toMatch(/by reaction model: F1 .*R2 0\.\d+.*; R2 is number \d+ of 21\n/)
+    expect(wrong.stdout).toMatch(/by reaction model: F1 .*R2 0\.\d+.*; R2 is number \d+ of 21 over all 4 holds, left out or not\n/)
     expect(wrong.stdout).toMatch(/models that fit the holds .*: F1\n/)
     const beside = await readFile(join(out, 'rate-constants.csv.txt'), 'utf8')
     expect(beside).toMatch(/hold 370 K, 96\.85 °C: k .* runs of signs, chance .*: systematic/)

@@ -18,7 +18,7 @@ export function holdFitsShort({ holdFits }: WithFits): readonly string[] {
     ...(shown.length === 0
       ? []
       : [
-          `standard deviation of conversion by reaction model: ${shown.map((other) => `${other.model} ${small(other.residualStandardDeviation)}`).join(', ')}; ${model} is number ${rank + 1} of ${models.length}`,
+          `standard deviation of conversion by reaction model: ${shown.map((other) => `${other.model} ${small(other.residualStandardDeviation)}`).join(', ')}; ${model} is number ${rank + 1} of ${models.length} over all ${holdFits.holds.length} holds, left out or not`,
           `models that fit the holds (${limitText(holdFits)}): ${fitting.join(', ')}`,
         ]),
   ]

@@ -49,7 +49,9 @@ describe('the ranking beside the choice of a model', () => {
   })
 
   it('places the chosen model, and names those within the limit', () => {
-    expect(rankingWords(ranked)).toBe('A2 is number 2 of 3; models that fit the holds (ratio of variances of 1.53, F(0.95; 60, 60)): F1.')
+    expect(rankingWords(ranked)).toBe(
+      'A2 is number 2 of 3 over all 0 holds, left out or not; models that fit the holds (ratio of variances of 1.53, F(0.95; 60, 60)): F1.',
+    )
     expect(limitWords({ varianceRatioLimit: null, dof: 0 })).toBe('no degree of freedom left')
     expect(rankingWords({ ...ranked, varianceRatioLimit: null, dof: 0, models: [fit('A2', 0.1, false)] })).toContain(': none.')
   })

@@ -33,7 +33,7 @@ function leftBy(fit: FitOfModel): string {
 export function rankingWords(fits: FitsOfHolds): string {
   const { model, models: ranked } = fits
   const rank = ranked.findIndex((other) => other.model === model)
-  const place = rank < 0 ? '' : `${model} is number ${rank + 1} of ${ranked.length}; `
+  const place = rank < 0 ? '' : `${model} is number ${rank + 1} of ${ranked.length} over all ${fits.holds.length} holds, left out or not; `
   const fitting = ranked.filter((other) => other.fits).map((other) => other.model)
   return `${place}models that fit the holds (${limitWords(fits)}): ${fitting.length === 0 ? 'none' : fitting.join(', ')}.`
 }
