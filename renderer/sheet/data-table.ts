@@ -14,6 +14,25 @@ export interface DataColumn<Row> {
   readonly places?: number | ((row: Row) => number)
 }
 
+/** A column of numbers as they are, null an empty cell. */
+export const numberColumn = <Row>(id: string, heading: string, unit: string, value: (row: Row) => number | null): DataColumn<Row> => ({
+  id,
+  heading,
+  unit,
+  numeric: true,
+  text: (row) => String(value(row) ?? ''),
+  value,
+})
+
+export const wordColumn = <Row>(id: string, heading: string, text: (row: Row) => string): DataColumn<Row> => ({
+  id,
+  heading,
+  unit: '',
+  numeric: false,
+  text,
+  value: text,
+})
+
 /**
  * The table as tab-separated text with units in its headings. Numbers stand with a decimal point and with one digit more than the screen
  * shows; what is not to be had is an empty cell; a text that a spreadsheet would take for a formula is led by an apostrophe.

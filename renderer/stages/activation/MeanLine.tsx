@@ -1,5 +1,6 @@
 import type { ProfileResult } from '../../../shared-kinetics/contract/study-result.ts'
 import { levelsOfMean } from '../../../shared-kinetics/figure/levels-of-mean.ts'
+import { meanCaution } from '../../../shared-kinetics/figure/mean-not-alone.ts'
 import { decimals } from '../../sheet/format.ts'
 import { parseConversion } from '../../sheet/parse-conversion.ts'
 import { TypedField } from '../../sheet/TypedField.tsx'
@@ -13,7 +14,7 @@ export function MeanLine({ shown, result, document, actions }: ActivationProps) 
   const mean = meanShown(shown)
   const ends = endsOfMean(profile, result.levels)
   // Such a mean must not stand out, and says so itself: it may be read or photographed without the finding.
-  const isDoubtful = result.findings.some(({ code, severity }) => code === 'energy-varies' && severity !== 'note')
+  const isDoubtful = meanCaution(result.findings) !== null
   const set = (meanRange: [number, number]): void => {
     if (meanRange[0] < meanRange[1]) actions.change({ kind: 'set-mean-range', meanRange })
   }

@@ -13,7 +13,7 @@ import type {
 import { noIntervalWords, safetyCaution } from '../../../shared-kinetics/figure/result-words.ts'
 import { decimals } from '../../sheet/format.ts'
 import { scientific } from '../../sheet/scientific.ts'
-import { copyText, type DataColumn } from '../../sheet/data-table.ts'
+import { copyText, numberColumn, wordColumn, type DataColumn } from '../../sheet/data-table.ts'
 import { inUnit, temperatureUnitWords } from '../runs/rate-constant-edits.ts'
 import { holdCopyColumns, modelCopyColumns } from './hold-fit-rows.ts'
 
@@ -234,71 +234,54 @@ export function copiedTables(result: RateConstantsResult): string {
   ].join('\n\n')
 }
 
-const number = <Row>(id: string, heading: string, unit: string, value: (row: Row) => Maybe): DataColumn<Row> => ({
-  id,
-  heading,
-  unit,
-  numeric: true,
-  text: (row) => String(value(row) ?? ''),
-  value,
-})
-const word = <Row>(id: string, heading: string, text: (row: Row) => string): DataColumn<Row> => ({
-  id,
-  heading,
-  unit: '',
-  numeric: false,
-  text,
-  value: text,
-})
-
 export const parameterCopyColumns: readonly DataColumn<ParameterRow>[] = [
-  word('quantity', 'quantity', (row) => row.quantity),
-  word('unit', 'unit', (row) => row.unit),
-  number('value', 'value', '', (row) => row.value),
-  number('error', 'standard error', '', (row) => row.standardError),
-  number('lower', 'lower 95 %', '', (row) => row.lower),
-  number('upper', 'upper 95 %', '', (row) => row.upper),
-  word('remark', 'remark', (row) => joinedWords(row.noInterval ?? row.remark, row.lowerRemark)),
+  wordColumn('quantity', 'quantity', (row) => row.quantity),
+  wordColumn('unit', 'unit', (row) => row.unit),
+  numberColumn('value', 'value', '', (row) => row.value),
+  numberColumn('error', 'standard error', '', (row) => row.standardError),
+  numberColumn('lower', 'lower 95 %', '', (row) => row.lower),
+  numberColumn('upper', 'upper 95 %', '', (row) => row.upper),
+  wordColumn('remark', 'remark', (row) => joinedWords(row.noInterval ?? row.remark, row.lowerRemark)),
 ]
 
 const temperatureColumn = <Row extends { readonly temperature_K: number }>({
   temperatureUnitShown: shown,
 }: RateConstantsResult): DataColumn<Row> =>
-  number('temperature', 'T', temperatureUnitWords[shown], (row) => Number(inUnit(row.temperature_K, shown).toFixed(6)))
+  numberColumn('temperature', 'T', temperatureUnitWords[shown], (row) => Number(inUnit(row.temperature_K, shown).toFixed(6)))
 
 export const betweenCopyColumns = ({
   temperatureUnitShown: shown,
   rateUnit,
 }: RateConstantsResult): readonly DataColumn<BetweenTemperaturesResult>[] => [
-  number('from', 'from T', temperatureUnitWords[shown], (row) => Number(inUnit(row.from_K, shown).toFixed(6))),
-  number('to', 'to T', temperatureUnitWords[shown], (row) => Number(inUnit(row.to_K, shown).toFixed(6))),
-  number('Ea', 'Ea', 'kJ/mol', (row) => row.Ea_kJ_per_mol),
-  number('lnA', 'ln A', `A in ${rateUnit === '' ? 'unit of k' : rateUnit}`, (row) => row.lnA),
+  numberColumn('from', 'from T', temperatureUnitWords[shown], (row) => Number(inUnit(row.from_K, shown).toFixed(6))),
+  numberColumn('to', 'to T', temperatureUnitWords[shown], (row) => Number(inUnit(row.to_K, shown).toFixed(6))),
+  numberColumn('Ea', 'Ea', 'kJ/mol', (row) => row.Ea_kJ_per_mol),
+  numberColumn('lnA', 'ln A', `A in ${rateUnit === '' ? 'unit of k' : rateUnit}`, (row) => row.lnA),
 ]
 
 export const predictionCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantPrediction>[] => [
   temperatureColumn(result),
-  number('k', 'k predicted', result.rateUnit, (row) => row.rateConstant),
-  number('lnK', 'ln k predicted', '', (row) => row.lnK),
-  number('line-lower', 'lower 95 %, line', result.rateUnit, (row) => row.lineLower95),
-  number('line-upper', 'upper 95 %, line', result.rateUnit, (row) => row.lineUpper95),
-  number('new-lower', 'lower 95 %, new measurement', result.rateUnit, (row) => row.newLower95),
-  number('new-upper', 'upper 95 %, new measurement', result.rateUnit, (row) => row.newUpper95),
-  number('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
-  number('factor', 'factor per 10 K from T', '', (row) => row.factorPer10K.factor),
-  word('where', 'to the data', placeWords),
-  word('remark', 'remark', (row) =>
+  numberColumn('k', 'k predicted', result.rateUnit, (row) => row.rateConstant),
+  numberColumn('lnK', 'ln k predicted', '', (row) => row.lnK),
+  numberColumn('line-lower', 'lower 95 %, line', result.rateUnit, (row) => row.lineLower95),
+  numberColumn('line-upper', 'upper 95 %, line', result.rateUnit, (row) => row.lineUpper95),
+  numberColumn('new-lower', 'lower 95 %, new measurement', result.rateUnit, (row) => row.newLower95),
+  numberColumn('new-upper', 'upper 95 %, new measurement', result.rateUnit, (row) => row.newUpper95),
+  numberColumn('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
+  numberColumn('factor', 'factor per 10 K from T', '', (row) => row.factorPer10K.factor),
+  wordColumn('where', 'to the data', placeWords),
+  wordColumn('remark', 'remark', (row) =>
     row.lnK === null ? '' : (reasonWords(row.intervalStatus, modelNotFollowed(result)) ?? modelRemark(result) ?? ''),
   ),
 ]
 
 export const rowCopyColumns = (result: RateConstantsResult): readonly DataColumn<RateConstantRowResult>[] => [
   temperatureColumn(result),
-  number('k', 'k measured', result.rateUnit, (row) => row.rateConstant),
-  number('uncertainty', 'u(k)', result.rateUnit, (row) => row.standardUncertainty),
-  number('fitted', 'k of the line', result.rateUnit, (row) => row.fittedRateConstant),
-  number('residual', 'ln k - line', '', (row) => row.residual),
-  number('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
-  word('use', 'use', (row) => (row.use ? 'yes' : 'no')),
-  word('label', 'label', (row) => row.label ?? ''),
+  numberColumn('k', 'k measured', result.rateUnit, (row) => row.rateConstant),
+  numberColumn('uncertainty', 'u(k)', result.rateUnit, (row) => row.standardUncertainty),
+  numberColumn('fitted', 'k of the line', result.rateUnit, (row) => row.fittedRateConstant),
+  numberColumn('residual', 'ln k - line', '', (row) => row.residual),
+  numberColumn('exponential', 'exp(-Ea/RT)', '', (row) => row.exponentialFactor),
+  wordColumn('use', 'use', (row) => (row.use ? 'yes' : 'no')),
+  wordColumn('label', 'label', (row) => row.label ?? ''),
 ]
